@@ -1,0 +1,22 @@
+/** A study explained without computing it: sizes, memory and time per level. */
+export interface StudyExplanation {
+  readonly formula: string;
+  readonly electrons: number;
+  readonly points: number;
+  readonly functions: number;
+  /** orbitals kept out of the CI by `frozenCore` */
+  readonly frozenOrbitals: number;
+  /** repulsion integrals stored, 8-fold packed */
+  readonly repulsionIntegrals: number;
+  readonly levels: readonly LevelExplanation[];
+}
+
+export interface LevelExplanation {
+  readonly level: string;
+  /** CI levels only */
+  readonly determinants?: number;
+  /** rough, for one point */
+  readonly bytes: number;
+  /** rough, for one point on one core */
+  readonly seconds: number;
+}

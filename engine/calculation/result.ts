@@ -1,0 +1,159 @@
+import type { Harmonics, ShellDefinition } from '../basis/contracted-gaussian';
+import type { Vector3 } from '../molecule/molecule';
+import type { Termination } from '../termination';
+import type { CompleteStudy, StudyAtom } from './study';
+
+/*
+ * The results file (`NAME.results.json`). Energies in hartree, dipole moments in e·bohr, coordinates in the
+ * study's unit. Optional fields are absent where a number does not exist; a level that failed is present with
+ * `converged: false`, its last numbers and the reason.
+ */
+
+export interface StudyResults {
+  readonly format: 'farwell/results';
+  readonly version: 1;
+  readonly study: CompleteStudy;
+  readonly program: { readonly name: 'farwell'; readonly version: string };
+  readonly basis: BasisDescription;
+  readonly points: readonly PointResult[];
+  readonly findings: Readonly<Record<string, LevelFindings>>;
+  /** what concerns the whole curve rather than one point */
+  readonly cautions: readonly Caution[];
+}
+
+/** The numbers of the basis set used, per element of the molecule. */
+export interface BasisDescription {
+  readonly name: string;
+  readonly harmonics: Harmonics;
+  readonly functions: number;
+  readonly shells: Readonly<Record<string, readonly ShellDefinition[]>>;
+  /** the papers that the numbers come from */
+  readonly citations: readonly string[];
+  readonly notes: readonly string[];
+}
+
+export interface PointResult {
+  /** in the study's unit or in degrees; null for a single point */
+  readonly coordinate: number | null;
+  /** in the study's unit */
+  readonly atoms: readonly StudyAtom[];
+  readonly nuclearRepulsion: number;
+  readonly levels: Readonly<Record<string, LevelResult>>;
+  readonly cautions: readonly Caution[];
+}
+
+/** Where a number should not be trusted, and why. */
+export interface Caution {
+  readonly code: string;
+  /** one plain sentence of what it means for this result */
+  readonly message: string;
+  /** the level concerned; absent: all */
+  readonly level?: string;
+}
+
+export type LevelResult = HartreeFockResult | SinglesResult | CorrelatedResult | FailedLevel;
+
+/** A level that could not be computed at all at this point, because something before it failed. */
+export interface FailedLevel {
+  readonly kind: 'failed';
+  readonly converged: false;
+  readonly termination: Termination | { readonly kind: 'refused'; readonly message: string };
+}
+
+export interface HartreeFockResult {
+  readonly kind: 'hartreeFock';
+  readonly energy: number;
+  readonly converged: boolean;
+  readonly termination: Termination;
+  readonly iterations: number;
+  readonly orbitalEnergies: readonly number[];
+  /** e·bohr, about the origin of the study's coordinates, for ions too */
+  readonly dipole: Vector3;
+  /** lowest eigenvalue of the singlet (real) and triplet orbital Hessians; negative: not a minimum */
+  readonly stability?: { readonly singlet: number; readonly triplet: number };
+}
+
+export type SpinName = 'singlet' | 'doublet' | 'triplet' | 'quartet' | 'quintet' | 'sextet' | 'septet' | 'mixed';
+
+export interface SinglesState {
+  readonly energy: number;
+  /** above the RHF energy */
+  readonly excitation: number;
+  readonly spin: 'singlet' | 'triplet';
+  /** length form; 0 for triplets */
+  readonly oscillatorStrength: number;
+  /** ⟨0|−r|state⟩, e·bohr */
+  readonly transitionDipole: Vector3;
+  readonly leading: readonly { readonly from: number; readonly to: number; readonly weight: number }[];
+}
+
+export interface SinglesResult {
+  readonly kind: 'singles';
+  readonly converged: boolean;
+  readonly termination: Termination;
+  /** in order of energy, `study.states` of each spin as far as they exist */
+  readonly states: readonly SinglesState[];
+}
+
+/** A determinant in a CI vector; spatial orbitals counted from 0 over all orbitals, frozen ones included. */
+export interface LeadingDeterminant {
+  readonly coefficient: number;
+  readonly weight: number;
+  readonly alpha: readonly number[];
+  readonly beta: readonly number[];
+}
+
+export interface CorrelatedState {
+  readonly energy: number;
+  /** above this level's lowest state */
+  readonly excitation: number;
+  readonly spin: SpinName;
+  readonly sSquared: number;
+  readonly referenceWeight: number;
+  readonly residual: number;
+  readonly dipole: Vector3;
+  readonly naturalOccupations: readonly number[];
+  readonly leading: readonly LeadingDeterminant[];
+}
+
+export interface CorrelatedResult {
+  readonly kind: 'correlated';
+  /** of the lowest state, as all the fields that follow */
+  readonly energy: number;
+  /** energy minus the RHF energy */
+  readonly correlation: number;
+  readonly converged: boolean;
+  readonly termination: Termination;
+  readonly iterations: number;
+  readonly determinants: number;
+  readonly referenceWeight: number;
+  readonly sSquared: number;
+  readonly spin: SpinName;
+  /** falling, frozen orbitals included with 2 */
+  readonly naturalOccupations: readonly number[];
+  readonly dipole: Vector3;
+  /** energy + (1 − c0²)·correlation (Langhoff, Davidson 1974); truncated CI only, not variational */
+  readonly davidsonCorrected?: number;
+  readonly states: readonly CorrelatedState[];
+}
+
+/** What can be read off one level's curve. Distances and energies of freshly computed points, not of a fit. */
+export interface LevelFindings {
+  readonly minimum:
+    | {
+        readonly kind: 'found';
+        /** study unit; every scanned bond at this length */
+        readonly equilibriumDistance: number;
+        readonly energy: number;
+        /** how far the distance may be off, study unit */
+        readonly uncertainty: number;
+      }
+    /** the lowest computed point is the first or last of the range */
+    | { readonly kind: 'atEdge'; readonly coordinate: number }
+    /** several minima: the coordinates of the computed points nearest to them */
+    | { readonly kind: 'several'; readonly near: readonly number[] }
+    /** too few converged points, or no scan of a distance */
+    | { readonly kind: 'none'; readonly reason: string };
+  /** E(last computed distance) − E(minimum): depth against the far end of this curve, not against fragments */
+  readonly wellDepth?: { readonly value: number; readonly against: 'farEnd'; readonly farEnd: number };
+}
