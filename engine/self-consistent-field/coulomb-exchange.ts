@@ -1,0 +1,71 @@
+/**
+ * Coulomb and exchange matrices of a density:
+ * J(μ,ν) = Σ_λσ (μν|λσ) D(λ,σ),  K(μ,ν) = Σ_λσ (μλ|νσ) D(λ,σ).
+ *
+ * One pass over the packed integrals in memory order; each stands for its up to eight equal ones.
+ *
+ * @param density - n×n, symmetric, row-major
+ * @param repulsion - (μν|λσ), 8-fold packed (see `packedPair`)
+ * @param coulomb - n×n, overwritten
+ * @param exchange - n×n, overwritten
+ *
+ * Cost: O(n⁴/8) for each, no allocation.
+ * Symbols: A. Szabo, N. S. Ostlund, Modern Quantum Chemistry, eq. (3.154), J and K parts apart.
+ */
+export function coulombExchangeInto(
+  density: Float64Array,
+  repulsion: Float64Array,
+  n: number,
+  coulomb: Float64Array,
+  exchange: Float64Array,
+): void {
+  coulomb.fill(0);
+  exchange.fill(0);
+  let place = 0;
+  for (let i = 0; i < n; i++) {
+    const rowI = i * n;
+    for (let j = 0; j <= i; j++) {
+      const rowJ = j * n;
+      const densityIJ = 2 * density[rowI + j];
+      // equal indices stand for fewer than eight integrals
+      const weightIJ = i === j ? 0.5 : 1;
+      let coulombIJ = 0;
+      for (let k = 0; k <= i; k++) {
+        const rowK = k * n;
+        const last = k === i ? j : k;
+        let exchangeIK = 0;
+        let exchangeJK = 0;
+        const densityIK = density[rowI + k];
+        const densityJK = density[rowJ + k];
+        for (let l = 0; l <= last; l++) {
+          let value = weightIJ * repulsion[place++];
+          if (k === l) value *= 0.5;
+          if (l === j && k === i) value *= 0.5;
+          coulombIJ += value * density[rowK + l];
+          coulomb[rowK + l] += value * densityIJ;
+          exchangeIK += value * density[rowJ + l];
+          exchangeJK += value * density[rowI + l];
+          exchange[rowI + l] += value * densityJK;
+          exchange[rowJ + l] += value * densityIK;
+        }
+        exchange[rowI + k] += exchangeIK;
+        exchange[rowJ + k] += exchangeJK;
+      }
+      coulomb[rowI + j] += 2 * coulombIJ;
+    }
+  }
+  addTransposeInto(coulomb, n);
+  addTransposeInto(exchange, n);
+}
+
+/** A ← A + Aᵀ. */
+function addTransposeInto(matrix: Float64Array, n: number): void {
+  for (let i = 0; i < n; i++) {
+    matrix[i * n + i] *= 2;
+    for (let j = 0; j < i; j++) {
+      const sum = matrix[i * n + j] + matrix[j * n + i];
+      matrix[i * n + j] = sum;
+      matrix[j * n + i] = sum;
+    }
+  }
+}
