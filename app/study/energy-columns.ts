@@ -1,0 +1,81 @@
+import type { LevelResult, PointResult, SpinName, StudyResults } from '#engine';
+
+/** The energy of one state of one level at one point. */
+export interface EnergyEntry {
+  /** hartree; the last value of the iteration where it did not converge */
+  readonly energy: number;
+  readonly converged: boolean;
+  /** energy minus the RHF energy; lowest states of correlated levels only */
+  readonly correlation?: number;
+  readonly spin?: SpinName;
+}
+
+/** One energy that a study gives at every point: the lowest state of a level, or a further one. */
+export interface EnergyColumn {
+  /** as in the header of tables: `RHF`, `CIS singlet 1`, `FCI state 2` */
+  readonly label: string;
+  readonly level: string;
+  readonly isExcited: boolean;
+  /** undefined where the level has no number at that point */
+  readonly entryAt: (point: PointResult) => EnergyEntry | undefined;
+}
+
+/**
+ * The energies of a study in the order of tables: every level in study order (CIS, which has no ground state
+ * of its own, as its singlets and triplets), then the further states of correlated levels.
+ */
+export function energyColumns(results: StudyResults): readonly EnergyColumn[] {
+  const { levels } = results.study;
+  return [
+    ...levels.flatMap((level) => (level === 'CIS' ? singlesColumns(results, level) : [lowestState(level)])),
+    ...levels.flatMap((level) => furtherStates(results, level)),
+  ];
+}
+
+function lowestState(level: string): EnergyColumn {
+  return {
+    label: level,
+    level,
+    isExcited: false,
+    entryAt: ({ levels }) => {
+      const result = levels[level];
+      if (result?.kind === 'hartreeFock') return { energy: result.energy, converged: result.converged };
+      if (result?.kind !== 'correlated') return undefined;
+      const { energy, converged, correlation, spin } = result;
+      return { energy, converged, correlation, spin };
+    },
+  };
+}
+
+function singlesColumns(results: StudyResults, level: string): EnergyColumn[] {
+  return (['singlet', 'triplet'] as const).flatMap((spin) => {
+    const ofSpin = (result: LevelResult | undefined) =>
+      result?.kind === 'singles' ? result.states.filter((state) => state.spin === spin) : [];
+    const count = Math.max(0, ...results.points.map(({ levels }) => ofSpin(levels[level]).length));
+    return Array.from({ length: count }, (_, index) => ({
+      label: `${level} ${spin} ${index + 1}`,
+      level,
+      isExcited: true,
+      entryAt: ({ levels }: PointResult) => stateEntry(levels[level], ofSpin(levels[level])[index]),
+    }));
+  });
+}
+
+function furtherStates(results: StudyResults, level: string): EnergyColumn[] {
+  const statesOf = (result: LevelResult | undefined) => (result?.kind === 'correlated' ? result.states : []);
+  const count = Math.max(0, ...results.points.map(({ levels }) => statesOf(levels[level]).length));
+  return Array.from({ length: Math.max(0, count - 1) }, (_, index) => ({
+    label: `${level} state ${index + 2}`,
+    level,
+    isExcited: true,
+    entryAt: ({ levels }) => stateEntry(levels[level], statesOf(levels[level])[index + 1]),
+  }));
+}
+
+function stateEntry(
+  result: LevelResult | undefined,
+  state: { readonly energy: number; readonly spin: SpinName } | undefined,
+): EnergyEntry | undefined {
+  if (!result || !state) return undefined;
+  return { energy: state.energy, converged: result.converged, spin: state.spin };
+}
