@@ -1,4 +1,4 @@
-import type { LevelResult, PointResult, SpinName, StudyResults } from '#engine';
+import type { LevelResult, PointResult, SpinName } from '#engine';
 
 /** The energy of one state of one level at one point. */
 export interface EnergyEntry {
@@ -20,11 +20,17 @@ export interface EnergyColumn {
   readonly entryAt: (point: PointResult) => EnergyEntry | undefined;
 }
 
+/** What is needed of results; a computation under way has it too. */
+export interface EnergyTable {
+  readonly study: { readonly levels: readonly string[] };
+  readonly points: readonly PointResult[];
+}
+
 /**
  * The energies of a study in the order of tables: every level in study order (CIS, which has no ground state
  * of its own, as its singlets and triplets), then the further states of correlated levels.
  */
-export function energyColumns(results: StudyResults): readonly EnergyColumn[] {
+export function energyColumns(results: EnergyTable): readonly EnergyColumn[] {
   const { levels } = results.study;
   return [
     ...levels.flatMap((level) => (level === 'CIS' ? singlesColumns(results, level) : [lowestState(level)])),
@@ -47,7 +53,7 @@ function lowestState(level: string): EnergyColumn {
   };
 }
 
-function singlesColumns(results: StudyResults, level: string): EnergyColumn[] {
+function singlesColumns(results: EnergyTable, level: string): EnergyColumn[] {
   return (['singlet', 'triplet'] as const).flatMap((spin) => {
     const ofSpin = (result: LevelResult | undefined) =>
       result?.kind === 'singles' ? result.states.filter((state) => state.spin === spin) : [];
@@ -61,7 +67,7 @@ function singlesColumns(results: StudyResults, level: string): EnergyColumn[] {
   });
 }
 
-function furtherStates(results: StudyResults, level: string): EnergyColumn[] {
+function furtherStates(results: EnergyTable, level: string): EnergyColumn[] {
   const statesOf = (result: LevelResult | undefined) => (result?.kind === 'correlated' ? result.states : []);
   const count = Math.max(0, ...results.points.map(({ levels }) => statesOf(levels[level]).length));
   return Array.from({ length: Math.max(0, count - 1) }, (_, index) => ({
