@@ -81,12 +81,9 @@ export function addScaledInto(y: Float64Array, factor: number, x: Float64Array):
   for (let i = 0; i < y.length; i++) y[i] += factor * x[i];
 }
 
+/** Largest |aᵢ|; NaN if any is, so that a broken vector cannot pass as a small one. */
 export function maximumAbsolute(a: Float64Array): number {
   let largest = 0;
-  for (let i = 0; i < a.length; i++) {
-    const size = Math.abs(a[i]);
-    // written so that NaN is kept rather than passed over
-    if (!(size <= largest)) largest = size;
-  }
+  for (let i = 0; i < a.length; i++) largest = Math.max(largest, Math.abs(a[i]));
   return largest;
 }

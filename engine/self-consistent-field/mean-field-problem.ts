@@ -1,0 +1,28 @@
+/** Everything that a self-consistent field needs of a molecule at one geometry; matrices n×n row-major. */
+export interface MeanFieldProblem {
+  readonly functionCount: number;
+  readonly overlap: Float64Array;
+  /** kinetic energy and attraction by the nuclei, hartree */
+  readonly coreHamiltonian: Float64Array;
+  /** (μν|λσ), 8-fold packed, hartree */
+  readonly repulsion: Float64Array;
+  readonly nuclearRepulsion: number;
+}
+
+export interface SelfConsistencyOptions {
+  /** largest energy change between the last two iterations, hartree */
+  readonly energyTolerance: number;
+  /** largest element of the commutator FDS − SDF in orthonormal functions, hartree */
+  readonly gradientTolerance: number;
+  /** iterations with extrapolation before the second-order minimiser takes over */
+  readonly extrapolatedIterations: number;
+  readonly minimiserIterations: number;
+}
+
+export const DEFAULT_SELF_CONSISTENCY: SelfConsistencyOptions = Object.freeze({
+  energyTolerance: 1e-10,
+  // The energy error is quadratic in the gradient; dipoles and CI energies are first order in it.
+  gradientTolerance: 1e-8,
+  extrapolatedIterations: 60,
+  minimiserIterations: 100,
+});

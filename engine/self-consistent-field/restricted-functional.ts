@@ -1,0 +1,138 @@
+import { congruence, dot, multiply, multiplyLeftTransposed } from '../linear-algebra/dense';
+import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
+import { coulombExchangeInto } from './coulomb-exchange';
+import type { MeanFieldProblem } from './mean-field-problem';
+import type { RotationFunctional, RotationPoint } from './minimiser';
+import { rotateOrbitals } from './orbital-rotation';
+import { buildDensity } from './orbitals';
+
+/** A closed-shell determinant with what its energy and its derivatives need. */
+export interface RestrictedPoint extends RotationPoint {
+  /** n×m, occupied orbitals first; diagonal in F within the occupied and within the virtual orbitals */
+  readonly coefficients: Float64Array;
+  /** diagonal of the Fock matrix in these orbitals */
+  readonly orbitalEnergies: Float64Array;
+  readonly fock: Float64Array;
+  /** of one spin */
+  readonly density: Float64Array;
+}
+
+/**
+ * Energy of a closed-shell determinant as a function of orbital rotations κ(a,i) (virtual × occupied):
+ * E(κ) = E + g·κ + ½ κ·Hκ + … with g = 4F(a,i) and
+ * H = 4[δ(ε_a − ε_i) + 4(ai|bj) − (ab|ij) − (aj|bi)], the real singlet orbital Hessian.
+ *
+ * Source: R. Seeger, J. A. Pople, J. Chem. Phys. 66, 3045 (1977); T. Helgaker, P. Jørgensen, J. Olsen,
+ * Molecular Electronic-Structure Theory, sec. 10.1 and 10.2.
+ */
+export class RestrictedFunctional implements RotationFunctional<RestrictedPoint> {
+  private readonly coulomb: Float64Array;
+  private readonly exchange: Float64Array;
+
+  constructor(
+    readonly problem: MeanFieldProblem,
+    readonly occupied: number,
+    readonly orbitalCount: number,
+  ) {
+    this.coulomb = new Float64Array(problem.functionCount ** 2);
+    this.exchange = new Float64Array(problem.functionCount ** 2);
+  }
+
+  /** F = h + 2J − K of a one-spin density, and the energy of that density. */
+  fockAndEnergy(density: Float64Array): { fock: Float64Array; energy: number } {
+    const { coreHamiltonian, repulsion, functionCount, nuclearRepulsion } = this.problem;
+    coulombExchangeInto(density, repulsion, functionCount, this.coulomb, this.exchange);
+    const fock = coreHamiltonian.map((h, i) => h + 2 * this.coulomb[i] - this.exchange[i]);
+    return { fock, energy: nuclearRepulsion + dot(density, coreHamiltonian) + dot(density, fock) };
+  }
+
+  evaluate(coefficients: Float64Array): RestrictedPoint {
+    const { functionCount: n } = this.problem;
+    const m = this.orbitalCount;
+    const o = this.occupied;
+    const density = buildDensity(coefficients, n, m, o);
+    const { fock, energy } = this.fockAndEnergy(density);
+    const { orbitals, orbitalEnergies } = this.semicanonical(fock, coefficients);
+    const inOrbitals = congruence(fock, orbitals, n, m);
+    const gradient = new Float64Array((m - o) * o);
+    const curvature = new Float64Array((m - o) * o);
+    for (let a = o; a < m; a++) {
+      for (let i = 0; i < o; i++) {
+        gradient[(a - o) * o + i] = 4 * inOrbitals[a * m + i];
+        curvature[(a - o) * o + i] = 4 * (orbitalEnergies[a] - orbitalEnergies[i]);
+      }
+    }
+    return { coefficients: orbitals, orbitalEnergies, fock, density, energy, gradient, curvature };
+  }
+
+  rotate(point: RestrictedPoint, rotation: Float64Array): Float64Array {
+    return rotateOrbitals(point.coefficients, rotation, this.problem.functionCount, this.orbitalCount, this.occupied);
+  }
+
+  hessianProduct(point: RestrictedPoint, x: Float64Array): Float64Array {
+    return this.responseProduct(point, x, 'singlet').map((value) => 4 * value);
+  }
+
+  /**
+   * (A + B)x of the singlet or triplet orbital Hessian:
+   * (ε_a − ε_i)x + [4(ai|bj)] − (ab|ij) − (aj|bi), the bracket for singlets only.
+   */
+  responseProduct(point: RestrictedPoint, x: Float64Array, spin: 'singlet' | 'triplet'): Float64Array {
+    const { functionCount: n, repulsion } = this.problem;
+    const m = this.orbitalCount;
+    const o = this.occupied;
+    const virtual = m - o;
+    const occupiedPart = columns(point.coefficients, n, m, 0, o);
+    const virtualPart = columns(point.coefficients, n, m, o, m);
+    const half = multiply(virtualPart, multiply(x, transpose(occupiedPart, n, o), virtual, o, n), n, virtual, n);
+    const change = new Float64Array(n * n);
+    for (let i = 0; i < n; i++) for (let j = 0; j < n; j++) change[i * n + j] = half[i * n + j] + half[j * n + i];
+    coulombExchangeInto(change, repulsion, n, this.coulomb, this.exchange);
+    const coulombFactor = spin === 'singlet' ? 2 : 0;
+    const field = this.coulomb.map((j, i) => coulombFactor * j - this.exchange[i]);
+    const product = multiplyLeftTransposed(virtualPart, multiply(field, occupiedPart, n, n, o), virtual, n, o);
+    for (let a = 0; a < virtual; a++) {
+      for (let i = 0; i < o; i++) {
+        product[a * o + i] += (point.orbitalEnergies[o + a] - point.orbitalEnergies[i]) * x[a * o + i];
+      }
+    }
+    return product;
+  }
+
+  /** Turns occupied and virtual orbitals among themselves so that F is diagonal in each; the energy stays. */
+  private semicanonical(
+    fock: Float64Array,
+    coefficients: Float64Array,
+  ): { orbitals: Float64Array; orbitalEnergies: Float64Array } {
+    const { functionCount: n } = this.problem;
+    const m = this.orbitalCount;
+    const orbitals = new Float64Array(n * m);
+    const orbitalEnergies = new Float64Array(m);
+    for (const [first, end] of [
+      [0, this.occupied],
+      [this.occupied, m],
+    ] as const) {
+      const size = end - first;
+      if (size === 0) continue;
+      const block = columns(coefficients, n, m, first, end);
+      const { values, vectors } = symmetricEigen(congruence(fock, block, n, size), size);
+      const turned = multiply(block, vectors, n, size, size);
+      for (let i = 0; i < n; i++) for (let k = 0; k < size; k++) orbitals[i * m + first + k] = turned[i * size + k];
+      orbitalEnergies.set(values, first);
+    }
+    return { orbitals, orbitalEnergies };
+  }
+}
+
+function columns(matrix: Float64Array, n: number, m: number, first: number, end: number): Float64Array {
+  const size = end - first;
+  const part = new Float64Array(n * size);
+  for (let i = 0; i < n; i++) part.set(matrix.subarray(i * m + first, i * m + end), i * size);
+  return part;
+}
+
+function transpose(matrix: Float64Array, rows: number, columnCount: number): Float64Array {
+  const turned = new Float64Array(matrix.length);
+  for (let i = 0; i < rows; i++) for (let j = 0; j < columnCount; j++) turned[j * rows + i] = matrix[i * columnCount + j];
+  return turned;
+}
