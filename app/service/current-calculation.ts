@@ -1,0 +1,63 @@
+import type { PreparedStudy } from '#engine';
+import { runStudy } from '../calculation/run-study';
+import { type Log, serializeError } from './answer';
+import type { Post } from './service';
+
+/** At most one calculation at a time: it has all cores, and the window shows one study. */
+export interface CurrentCalculation {
+  /** Cancels the one before. @returns the number under which its events are posted */
+  start(prepared: PreparedStudy): number;
+  /** @returns whether it was still running */
+  cancel(id: number): boolean;
+  dispose(): void;
+}
+
+export function createCurrentCalculation(workers: number, post: Post, log?: Log): CurrentCalculation {
+  let lastId = 0;
+  let running: { readonly id: number; readonly abort: AbortController } | undefined;
+
+  /** Says so at once, and lets nothing that is still on its way be posted afterwards. */
+  function cancelRunning(): void {
+    if (running === undefined) return;
+    const { id, abort } = running;
+    running = undefined;
+    abort.abort();
+    post('calculation:finished', { id, outcome: { kind: 'cancelled' } });
+  }
+
+  async function run(id: number, prepared: PreparedStudy, signal: AbortSignal): Promise<void> {
+    const outcome = await runStudy(
+      { prepared },
+      {
+        workers,
+        signal,
+        onPoint: (index, { result }) => {
+          if (!signal.aborted) post('calculation:point', { id, index, point: result });
+        },
+        onProgress: (progress) => {
+          if (!signal.aborted) post('calculation:progress', { id, ...progress });
+        },
+      },
+    ).catch((error: unknown) => ({ kind: 'failed', error: serializeError(error, log) }) as const);
+    if (signal.aborted) return;
+    running = undefined;
+    post('calculation:finished', { id, outcome });
+  }
+
+  return {
+    start(prepared) {
+      cancelRunning();
+      lastId += 1;
+      const abort = new AbortController();
+      running = { id: lastId, abort };
+      void run(lastId, prepared, abort.signal);
+      return lastId;
+    },
+    cancel(id) {
+      if (running?.id !== id) return false;
+      cancelRunning();
+      return true;
+    },
+    dispose: cancelRunning,
+  };
+}
