@@ -1,0 +1,32 @@
+import type { CompleteStudy, LevelFindings, PointCarry, PointResult } from '#engine';
+import type { SerializedError } from '../contract/requests';
+
+/** What a worker is started with. */
+export interface WorkerStart {
+  readonly study: CompleteStudy;
+  /** text of the basis-set file, if the study names one */
+  readonly basisFileText?: string;
+}
+
+/** What a worker is asked for. */
+export type WorkerRequest =
+  /** points in this order, each starting from the one before it, the first from `guess` */
+  | { readonly kind: 'points'; readonly indices: readonly number[]; readonly guess?: PointCarry | undefined }
+  | { readonly kind: 'minimum'; readonly level: string; readonly points: readonly PointResult[] };
+
+/** A computed point with what its neighbour starts from, if it gave something to start from. */
+export interface FinishedPoint {
+  readonly result: PointResult;
+  readonly carry?: PointCarry | undefined;
+}
+
+export type Finding = { readonly seconds: number } & (
+  | ({ readonly kind: 'point'; readonly index: number } & FinishedPoint)
+  | { readonly kind: 'minimum'; readonly level: string; readonly findings: LevelFindings }
+);
+
+/** What a worker answers: findings as they come, then that it is free again or why it gave up. */
+export type WorkerReply =
+  | Finding
+  | { readonly kind: 'free' }
+  | { readonly kind: 'failed'; readonly error: SerializedError };

@@ -1,0 +1,71 @@
+export interface Progress {
+  readonly stage: 'points' | 'minima';
+  readonly done: number;
+  readonly total: number;
+  /** absent until it can be estimated */
+  readonly secondsLeft?: number;
+}
+
+/** Follows one stage of a calculation. */
+export interface ProgressTracker {
+  /** @param seconds - that one more piece took on one worker */
+  finished(seconds: number): void;
+  stop(): void;
+}
+
+/** So that the time left keeps running down while a long piece is computed. */
+const HEARTBEAT_MS = 1000;
+
+/** Tells `onProgress` at once, at every finished piece, and every second in between. */
+export function trackProgress(
+  { stage, total, done, workers }: Pick<Progress, 'stage' | 'total' | 'done'> & { readonly workers: number },
+  onProgress: (progress: Progress) => void = () => undefined,
+): ProgressTracker {
+  const timeLeft = estimateTimeLeft(workers);
+  const report = () => {
+    const secondsLeft = timeLeft.secondsLeft(total - done);
+    onProgress({ stage, done, total, ...(secondsLeft !== undefined && { secondsLeft }) });
+  };
+  const heartbeat = setInterval(report, HEARTBEAT_MS);
+  report();
+  return {
+    finished(seconds) {
+      done++;
+      timeLeft.finished(seconds);
+      report();
+    },
+    stop: () => clearInterval(heartbeat),
+  };
+}
+
+/** Tells how long a stage will still take, from how long its finished pieces took. */
+interface TimeLeft {
+  /** @param seconds - that one piece took on one worker */
+  finished(seconds: number): void;
+  /** undefined until a piece is finished */
+  secondsLeft(remaining: number): number | undefined;
+}
+
+/**
+ * Assumes that what remains costs as much as what is finished did on average: points of a scan differ little.
+ *
+ * @param workers - that share the pieces
+ * @param now - clock in milliseconds
+ */
+export function estimateTimeLeft(workers: number, now: () => number = () => performance.now()): TimeLeft {
+  let pieces = 0;
+  let total = 0;
+  let lastFinished = 0;
+  return {
+    finished(seconds) {
+      pieces++;
+      total += seconds;
+      lastFinished = now();
+    },
+    secondsLeft(remaining) {
+      if (pieces === 0) return undefined;
+      const atLastFinished = ((total / pieces) * remaining) / Math.max(1, Math.min(workers, remaining));
+      return Math.max(0, atLastFinished - (now() - lastFinished) / 1000);
+    },
+  };
+}

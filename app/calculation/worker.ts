@@ -1,0 +1,13 @@
+import { parentPort, workerData } from 'node:worker_threads';
+import type { WorkerStart } from './messages';
+import { serve } from './serve';
+
+const port = parentPort;
+if (!port) throw new Error('This file runs as a worker thread only.');
+serve(
+  {
+    post: (reply) => port.postMessage(reply),
+    onMessage: (listener) => void port.on('message', listener),
+  },
+  workerData as WorkerStart,
+);
