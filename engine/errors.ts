@@ -1,15 +1,22 @@
 /** Every way the engine can refuse a request, with the facts its message is made of. */
 export interface EngineErrorDetails {
   'molecule.empty': Record<string, never>;
+  'molecule.coordinate': { readonly atom: number; readonly value: number };
+  'molecule.charge': { readonly charge: number };
   'molecule.unknownElement': { readonly symbol: string; readonly nearest?: string };
   'molecule.unknownIsotope': { readonly symbol: string; readonly isotope: number };
-  'molecule.atomsCoincide': { readonly first: number; readonly second: number; readonly distanceBohr: number };
+  'molecule.atomsCoincide': {
+    readonly first: number;
+    readonly second: number;
+    readonly distanceBohr: number;
+  };
   'molecule.noElectrons': { readonly electrons: number };
   'molecule.spinMismatch': { readonly electrons: number; readonly multiplicity: number };
   'scan.atomIndex': { readonly index: number; readonly atoms: number };
   'scan.ring': { readonly bond: readonly [number, number] };
   'scan.tornTwoWays': { readonly atom: number };
   'scan.value': { readonly value: number };
+  'scan.count': { readonly count: number };
   'scan.undefinedCoordinate': { readonly reason: string };
   'basis.unknown': { readonly name: string; readonly nearest?: string };
   'basis.elementMissing': { readonly basis: string; readonly symbol: string };
@@ -20,8 +27,12 @@ export interface EngineErrorDetails {
   'basis.linearlyDependent': { readonly smallestEigenvalue: number; readonly threshold: number };
   'basis.tooFewFunctions': { readonly functions: number; readonly orbitalsNeeded: number };
   'level.unknown': { readonly level: string; readonly nearest?: string };
+  'level.none': Record<string, never>;
+  'level.twice': { readonly level: string };
   'level.needsClosedShell': { readonly level: string; readonly multiplicity: number };
   'level.tooFewOrbitals': { readonly level: string; readonly orbitals: number };
+  'study.states': { readonly states: number };
+  'study.convergence': { readonly tolerance: number };
   'study.tooLarge': { readonly bytes: number; readonly limit: number };
 }
 

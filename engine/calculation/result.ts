@@ -53,11 +53,14 @@ export interface Caution {
 
 export type LevelResult = HartreeFockResult | SinglesResult | CorrelatedResult | FailedLevel;
 
+/** Why a level's numbers are not final; a CI built on orbitals that did not converge is not final either. */
+export type LevelTermination = Termination | { readonly kind: 'orbitalsNotConverged' };
+
 /** A level that could not be computed at all at this point, because something before it failed. */
 export interface FailedLevel {
   readonly kind: 'failed';
   readonly converged: false;
-  readonly termination: Termination | { readonly kind: 'refused'; readonly message: string };
+  readonly termination: LevelTermination | { readonly kind: 'refused'; readonly message: string };
 }
 
 export interface HartreeFockResult {
@@ -90,7 +93,7 @@ export interface SinglesState {
 export interface SinglesResult {
   readonly kind: 'singles';
   readonly converged: boolean;
-  readonly termination: Termination;
+  readonly termination: LevelTermination;
   /** in order of energy, `study.states` of each spin as far as they exist */
   readonly states: readonly SinglesState[];
 }
@@ -123,7 +126,7 @@ export interface CorrelatedResult {
   /** energy minus the RHF energy */
   readonly correlation: number;
   readonly converged: boolean;
-  readonly termination: Termination;
+  readonly termination: LevelTermination;
   readonly iterations: number;
   readonly determinants: number;
   readonly referenceWeight: number;

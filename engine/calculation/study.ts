@@ -1,4 +1,6 @@
-import type { Harmonics, ShellDefinition } from '../basis/contracted-gaussian';
+import type { BasisRequest } from '../basis/basis-request';
+
+export type { BasisRequest, EvenTemperedShells } from '../basis/basis-request';
 
 /**
  * A study as its file spells it out (`NAME.study.json`): what is to be computed. Lengths are in
@@ -43,38 +45,13 @@ export type ScanCoordinate =
   | { readonly dihedral: readonly [number, number, number, number] };
 
 export type StudyScan =
-  | { readonly coordinate: ScanCoordinate; readonly from: number; readonly to: number; readonly count: number }
+  | {
+      readonly coordinate: ScanCoordinate;
+      readonly from: number;
+      readonly to: number;
+      readonly count: number;
+    }
   | { readonly coordinate: ScanCoordinate; readonly values: readonly number[] };
-
-/** Uncontracted exponents smallest·ratio^k, k = 0 … count − 1. */
-export interface EvenTemperedShells {
-  readonly angularMomentum: number;
-  readonly smallest: number;
-  readonly ratio: number;
-  readonly count: number;
-}
-
-export type BasisRequest =
-  | string
-  | {
-      readonly name: string;
-      /** Slater exponents by element and shell (`1s`, `2sp`, `3sp`), for STO-nG */
-      readonly scaleFactors: Readonly<Record<string, Readonly<Record<string, number>>>>;
-    }
-  | {
-      readonly name: string;
-      readonly shells: Readonly<Record<string, readonly ShellDefinition[]>>;
-      readonly harmonics?: Harmonics | undefined;
-    }
-  | {
-      readonly name: string;
-      readonly evenTempered: Readonly<Record<string, readonly EvenTemperedShells[]>>;
-      readonly harmonics?: Harmonics | undefined;
-    }
-  | {
-      /** path of a basis set in the open MolSSI JSON schema, relative to the study file */
-      readonly file: string;
-    };
 
 /** A study with every default filled in, so that the results file says what was really run. */
 export interface CompleteStudy extends Study {

@@ -1,0 +1,93 @@
+import type { RestrictedSolution } from '../self-consistent-field/restricted';
+import type { PreparedStudy } from './prepare-study';
+import type { Caution, LevelResult, PointResult } from './result';
+
+/** A triplet Hessian eigenvalue below this, hartree, counts as an instability. */
+const TRIPLET_INSTABILITY = -1e-5;
+/** Below this weight of the reference a single determinant no longer describes the state. */
+export const LOW_REFERENCE_WEIGHT = 0.9;
+
+/** What to mistrust at one point. */
+export function pointCautions(
+  meanField: RestrictedSolution,
+  levels: Readonly<Record<string, LevelResult>>,
+): readonly Caution[] {
+  const cautions: Caution[] = [];
+  const { stability, orthogonalisation } = meanField;
+  if (stability && stability.triplet < TRIPLET_INSTABILITY) {
+    cautions.push({
+      code: 'rhf.unstable',
+      message:
+        'The RHF determinant is unstable: one with different orbitals for different spins lies lower, ' +
+        'so the pairing forced by RHF makes its energy too high here.',
+    });
+  }
+  if (orthogonalisation.dropped > 0) {
+    cautions.push({
+      code: 'basis.nearlyDependent',
+      message:
+        `${orthogonalisation.dropped} combination${orthogonalisation.dropped === 1 ? '' : 's'} of basis functions ` +
+        `left out: nearly linearly dependent (smallest overlap eigenvalue ${orthogonalisation.smallestEigenvalue.toExponential(1)}).`,
+    });
+  }
+  for (const [level, result] of Object.entries(levels)) {
+    if (!result.converged) {
+      cautions.push({
+        code: 'level.unconverged',
+        level,
+        message: `${level} did not converge here; its numbers are the last ones reached and not results.`,
+      });
+    }
+    if (result.kind === 'correlated' && result.referenceWeight < LOW_REFERENCE_WEIGHT) {
+      const isFull = result.davidsonCorrected === undefined;
+      cautions.push({
+        code: 'reference.weightLow',
+        level,
+        message:
+          `The RHF determinant has a weight of only ${result.referenceWeight.toFixed(2)} in ${level}: ` +
+          (isFull
+            ? 'a single determinant does not describe the molecule here.'
+            : 'excitations from it alone do not describe the molecule here.'),
+      });
+    }
+  }
+  return cautions;
+}
+
+/** What to mistrust about the curve as a whole. */
+export function studyCautions(prepared: PreparedStudy, points: readonly PointResult[]): readonly Caution[] {
+  const cautions: Caution[] = [];
+  if (prepared.levels.some((level) => level.kind === 'singles')) {
+    cautions.push({
+      code: 'cis.noGroundState',
+      level: 'CIS',
+      message:
+        'Single excitations do not mix with the RHF determinant (Brillouin’s theorem): CIS gives excited states, ' +
+        'and its ground state is RHF itself.',
+    });
+  }
+  if (/^STO-\dG$/i.test(prepared.basisSet.name)) {
+    cautions.push({
+      code: 'basis.minimal',
+      message:
+        'A minimal basis shows how the methods differ; its distances and well depths are not to be compared with ' +
+        'measured ones.',
+    });
+  }
+  if (prepared.study.scan && 'bonds' in prepared.study.scan.coordinate) {
+    cautions.push({
+      code: 'depth.farEnd',
+      message:
+        'Well depths are taken against the last computed distance, not against separate fragments. Where safety ' +
+        'depends on a bond strength, use measured data.',
+    });
+  }
+  const unconverged = points.filter((point) => Object.values(point.levels).some((level) => !level.converged)).length;
+  if (unconverged > 0) {
+    cautions.push({
+      code: 'level.unconverged',
+      message: `At ${unconverged} of ${points.length} points some level did not converge; those numbers are marked.`,
+    });
+  }
+  return cautions;
+}

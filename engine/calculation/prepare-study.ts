@@ -1,0 +1,172 @@
+import type { BasisSet } from '../basis/basis-set';
+import { placeBasis } from '../basis/place-basis';
+import { resolveBasis } from '../basis/resolve-basis';
+import { EngineError } from '../errors';
+import { buildMolecule, electronCount } from '../molecule/build-molecule';
+import type { Molecule } from '../molecule/molecule';
+import { checkScan, geometryAt } from '../molecule/scan-coordinate';
+import { scanValues } from '../molecule/scan-values';
+import { frozenOrbitalCount } from './frozen-core';
+import { findLevel, type Level } from './levels';
+import type { CompleteStudy, Study, StudyAtom, StudyMolecule } from './study';
+
+/** A study that has been checked and can be computed point by point. */
+export interface PreparedStudy {
+  /** with every default filled in */
+  readonly study: CompleteStudy;
+  readonly levels: readonly Level[];
+  /** one a point, in the study's order; a single null without a scan */
+  readonly coordinates: readonly (number | null)[];
+  readonly basisSet: BasisSet;
+  readonly electrons: number;
+  readonly functionCount: number;
+  readonly frozenOrbitals: number;
+  /** the atoms at a value of the scan coordinate, in the study's unit */
+  geometryAt(coordinate: number | null): readonly StudyAtom[];
+  /** the same in atomic units */
+  moleculeAt(coordinate: number | null): Molecule;
+}
+
+export type Preparation =
+  | { readonly ok: true; readonly prepared: PreparedStudy }
+  | { readonly ok: false; readonly errors: readonly EngineError[] };
+
+export interface PrepareOptions {
+  /** text of the basis-set file that the study names, where it names one */
+  readonly basisFileText?: string;
+}
+
+const DEFAULT_ENERGY_TOLERANCE = 1e-10;
+/** Below this, rounding in sums of integrals makes convergence a matter of luck. */
+const TIGHTEST_ENERGY_TOLERANCE = 1e-13;
+const LOOSEST_ENERGY_TOLERANCE = 1e-4;
+/** More states than this of one level are taken for a mistake. */
+const MOST_STATES = 50;
+
+/**
+ * Checks a study completely – molecule, every geometry of the scan, basis, levels – and fills its defaults in.
+ *
+ * @returns the prepared study, or all that is wrong with it, each with its place
+ */
+export function prepareStudy(study: Study, options: PrepareOptions = {}): Preparation {
+  const errors: EngineError[] = [];
+  const collect = <T>(step: () => T): T | undefined => {
+    try {
+      return step();
+    } catch (error) {
+      if (!(error instanceof EngineError)) throw error;
+      errors.push(error);
+      return undefined;
+    }
+  };
+
+  const built = buildMolecule(study.molecule);
+  if (!built.ok) errors.push(...built.errors);
+  const levels = study.levels.map((name, i) => collect(() => findLevel(name, `levels[${i}]`)));
+  const states = study.states ?? 1;
+  collect(() => checkOptions(study, states));
+  // What follows needs a sound molecule.
+  if (!built.ok) return { ok: false, errors };
+
+  const { molecule } = built;
+  const symbols = [...new Set(molecule.atoms.map((atom) => atom.symbol))];
+  const basisSet = collect(() =>
+    resolveBasis(study.basis, symbols, options.basisFileText === undefined ? {} : { fileText: options.basisFileText }),
+  );
+  const functionCount = basisSet && collect(() => placeBasis(basisSet, molecule).functionCount);
+  collect(() => requireClosedShell(study, molecule));
+  if (functionCount !== undefined) collect(() => requireFunctions(functionCount, electronCount(molecule)));
+  if (study.scan) errors.push(...checkScan(study.molecule, study.scan));
+  if (errors.length > 0 || !basisSet || functionCount === undefined) return { ok: false, errors };
+
+  const complete: CompleteStudy = {
+    ...study,
+    molecule: { ...study.molecule, charge: molecule.charge, multiplicity: molecule.multiplicity },
+    states,
+    frozenCore: study.frozenCore ?? false,
+    convergence: { energy: study.convergence?.energy ?? DEFAULT_ENERGY_TOLERANCE },
+  };
+  return {
+    ok: true,
+    prepared: {
+      study: complete,
+      levels: levels.filter((level) => level !== undefined),
+      coordinates: study.scan ? scanValues(study.scan) : [null],
+      basisSet,
+      electrons: electronCount(molecule),
+      functionCount,
+      frozenOrbitals: complete.frozenCore ? frozenOrbitalCount(molecule) : 0,
+      geometryAt: (coordinate) => geometryOf(complete, coordinate).atoms,
+      moleculeAt: (coordinate) => moleculeOf(complete, coordinate),
+    },
+  };
+}
+
+function geometryOf(study: Study, coordinate: number | null): StudyMolecule {
+  if (coordinate === null || !study.scan) return study.molecule;
+  return geometryAt(study.molecule, study.scan.coordinate, coordinate);
+}
+
+function moleculeOf(study: Study, coordinate: number | null): Molecule {
+  const built = buildMolecule(geometryOf(study, coordinate));
+  if (!built.ok) throw built.errors[0];
+  return built.molecule;
+}
+
+function requireClosedShell(study: Study, molecule: Molecule): void {
+  if (molecule.multiplicity === 1) return;
+  throw new EngineError(
+    'level.needsClosedShell',
+    `${study.levels.join(', ')} need all electrons paired, but the multiplicity is ${molecule.multiplicity}.`,
+    'Choose multiplicity 1 with an even number of electrons; change the charge by one if the count is odd.',
+    { level: study.levels.join(', '), multiplicity: molecule.multiplicity },
+    'molecule.multiplicity',
+  );
+}
+
+function requireFunctions(functionCount: number, electrons: number): void {
+  const orbitalsNeeded = Math.ceil(electrons / 2);
+  if (functionCount >= orbitalsNeeded) return;
+  throw new EngineError(
+    'basis.tooFewFunctions',
+    `The basis has ${functionCount} functions, but ${electrons} electrons need at least ${orbitalsNeeded} orbitals.`,
+    'Take a larger basis set, or one made for these elements.',
+    { functions: functionCount, orbitalsNeeded },
+    'basis',
+  );
+}
+
+function checkOptions(study: Study, states: number): void {
+  if (study.levels.length === 0) {
+    throw new EngineError('level.none', 'The study names no level.', 'Name at least one, such as RHF.', {}, 'levels');
+  }
+  const twice = study.levels.find((level, i) => study.levels.indexOf(level) !== i);
+  if (twice !== undefined) {
+    throw new EngineError(
+      'level.twice',
+      `The level ${twice} is listed twice.`,
+      'List each level once.',
+      { level: twice },
+      `levels[${study.levels.lastIndexOf(twice)}]`,
+    );
+  }
+  if (!Number.isInteger(states) || states < 1 || states > MOST_STATES) {
+    throw new EngineError(
+      'study.states',
+      `“states” must be a whole number from 1 to ${MOST_STATES}; it is ${states}.`,
+      'Give the number of lowest states wanted of each level.',
+      { states },
+      'states',
+    );
+  }
+  const tolerance = study.convergence?.energy ?? DEFAULT_ENERGY_TOLERANCE;
+  if (!(tolerance >= TIGHTEST_ENERGY_TOLERANCE && tolerance <= LOOSEST_ENERGY_TOLERANCE)) {
+    throw new EngineError(
+      'study.convergence',
+      `An energy tolerance of ${tolerance} hartree cannot be used.`,
+      `Choose one from ${TIGHTEST_ENERGY_TOLERANCE} to ${LOOSEST_ENERGY_TOLERANCE} hartree, or leave it out.`,
+      { tolerance },
+      'convergence.energy',
+    );
+  }
+}
