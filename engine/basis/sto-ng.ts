@@ -1,0 +1,66 @@
+import type { BasisSet, Citation } from './basis-set';
+import type { ShellDefinition } from './contracted-gaussian';
+import { elementMissing } from './element-missing';
+import { mergeScaleFactors, type ScaleFactorRequest } from './scale-factors';
+import { fitSlaterShell, type SlaterFit, type SlaterShell } from './slater-fit';
+
+const FIRST_PAPER: Citation = {
+  key: 'hehre1969a',
+  text: 'W. J. Hehre, R. F. Stewart, J. A. Pople, J. Chem. Phys. 51, 2657–2664 (1969), doi:10.1063/1.1672392',
+};
+const SECOND_PAPER: Citation = {
+  key: 'hehre1970a',
+  text: 'W. J. Hehre, R. Ditchfield, R. F. Stewart, J. A. Pople, J. Chem. Phys. 52, 2769–2773 (1970), doi:10.1063/1.1673374',
+};
+
+/**
+ * STO-nG: every Slater function of exponent ζ of the atom as a least-squares fit of n Gaussians, α = ζ²·α(ζ = 1).
+ * The numbers come from our own fit at full precision, not from a table.
+ *
+ * @param gaussians - n, from 1 to 6
+ * @param symbols - the elements wanted, H to Ar
+ * @param scaleFactors - Slater exponents in place of the standard molecular ones, by element and shell
+ * @throws EngineError `basis.elementMissing` beyond Ar, `basis.scaleFactor`
+ */
+export function stoNgBasisSet(
+  gaussians: number,
+  symbols: readonly string[],
+  scaleFactors: ScaleFactorRequest = {},
+): BasisSet {
+  const name = `STO-${gaussians}G`;
+  const factors = mergeScaleFactors(scaleFactors);
+  const fits = new Map<SlaterShell, SlaterFit>();
+  const fitted = (shell: SlaterShell): SlaterFit => {
+    const fit = fits.get(shell) ?? fitSlaterShell(shell, gaussians);
+    fits.set(shell, fit);
+    return fit;
+  };
+  const elements = [...new Set(symbols)].map((symbol): [string, ShellDefinition[]] => {
+    if (!Object.hasOwn(factors, symbol)) throw elementMissing(name, symbol, Object.keys(factors));
+    const shells = Object.entries(factors[symbol]) as [SlaterShell, number][];
+    return [symbol, shells.flatMap(([shell, zeta]) => scaledShells(fitted(shell), zeta))];
+  });
+  const changed = Object.entries(scaleFactors).flatMap(([symbol, shells]) =>
+    symbols.includes(symbol)
+      ? Object.entries(shells).map(([shell, zeta]) => `${symbol} ${shell} ${zeta}`)
+      : [],
+  );
+  return {
+    name,
+    harmonics: 'spherical',
+    elements: Object.fromEntries(elements),
+    citations: [FIRST_PAPER, SECOND_PAPER],
+    notes:
+      changed.length === 0 ? [] : [`Slater exponents other than the standard ones: ${changed.join(', ')}.`],
+  };
+}
+
+/** A fit stretched to the Slater exponent ζ, one shell for each angular momentum. */
+function scaledShells(fit: SlaterFit, zeta: number): ShellDefinition[] {
+  const exponents = fit.exponents.map((exponent) => exponent * zeta * zeta);
+  return fit.coefficients.map((coefficients, angularMomentum) => ({
+    angularMomentum,
+    exponents,
+    coefficients,
+  }));
+}
