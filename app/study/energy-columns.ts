@@ -14,6 +14,8 @@ export interface EnergyEntry {
 export interface EnergyColumn {
   /** as in the header of tables: `RHF`, `CIS singlet 1`, `FCI state 2` */
   readonly label: string;
+  /** what it shares with others of its kind: `RHF`, `CIS singlets`, `FCI, higher states` */
+  readonly family: string;
   readonly level: string;
   readonly isExcited: boolean;
   /** undefined where the level has no number at that point */
@@ -41,6 +43,7 @@ export function energyColumns(results: EnergyTable): readonly EnergyColumn[] {
 function lowestState(level: string): EnergyColumn {
   return {
     label: level,
+    family: level,
     level,
     isExcited: false,
     entryAt: ({ levels }) => {
@@ -60,6 +63,7 @@ function singlesColumns(results: EnergyTable, level: string): EnergyColumn[] {
     const count = Math.max(0, ...results.points.map(({ levels }) => ofSpin(levels[level]).length));
     return Array.from({ length: count }, (_, index) => ({
       label: `${level} ${spin} ${index + 1}`,
+      family: `${level} ${spin}s`,
       level,
       isExcited: true,
       entryAt: ({ levels }: PointResult) => stateEntry(levels[level], ofSpin(levels[level])[index]),
@@ -72,6 +76,7 @@ function furtherStates(results: EnergyTable, level: string): EnergyColumn[] {
   const count = Math.max(0, ...results.points.map(({ levels }) => statesOf(levels[level]).length));
   return Array.from({ length: Math.max(0, count - 1) }, (_, index) => ({
     label: `${level} state ${index + 2}`,
+    family: `${level}, higher states`,
     level,
     isExcited: true,
     entryAt: ({ levels }) => stateEntry(levels[level], statesOf(levels[level])[index + 1]),

@@ -1,0 +1,225 @@
+import type { StudyResults } from '#engine';
+import { type CurvePoint, type CurveSeries, curveSeries } from './curve-series';
+import { type CurveStyle, FAINT_INK, FILE_COLOURS, styleOfLevel, TRIPLET_DASH } from './figure-style';
+import { coordinateHeading, type ScannedCoordinate, sharedCoordinate } from './scanned-coordinate';
+
+export interface DrawnPoint {
+  readonly x: number;
+  readonly y: number;
+  readonly converged: boolean;
+}
+
+/** A curve of one panel, ready to draw: what to draw where is decided here, how in figure-specification.ts. */
+export interface DrawnCurve {
+  readonly style: CurveStyle;
+  /** excited states are thin and have no markers */
+  readonly isExcited: boolean;
+  /** in order of x */
+  readonly points: readonly DrawnPoint[];
+  /** the converged points that carry a marker */
+  readonly marked: readonly DrawnPoint[];
+  readonly minimum?: { readonly x: number; readonly y: number };
+}
+
+export interface LegendEntry {
+  readonly label: string;
+  readonly style: CurveStyle;
+  readonly kind: 'curve' | 'excited' | 'file';
+}
+
+export interface PlannedPanel {
+  /** one line each */
+  readonly title: readonly string[];
+  readonly range: readonly [number, number];
+  readonly curves: readonly DrawnCurve[];
+}
+
+export interface FigurePlan {
+  readonly coordinateTitle: string;
+  readonly coordinateRange: readonly [number, number];
+  readonly energies: PlannedPanel;
+  /** absent where no level gives a correlation energy */
+  readonly correlation?: PlannedPanel;
+  readonly legend: readonly LegendEntry[];
+  /** what the marks mean, as far as they occur */
+  readonly key: readonly string[];
+}
+
+/** Curves with more points than this carry a marker on every second, third, … point. */
+const MARKERS_PER_CURVE = 11;
+/** Room around the curves, as a fraction of their range. */
+const MARGIN = 0.06;
+/** Room above the far end of the curves for the repulsive wall, as a fraction of the well's depth. */
+const WALL_SHARE = 0.3;
+
+/**
+ * What the figure of some results shows: curves, ranges, legend.
+ *
+ * Energies are absolute where all files are about the same atoms and charge, else above each level's own lowest
+ * point. The repulsive wall may leave the frame, so that the well keeps its room.
+ *
+ * @returns the plan, or why there is nothing to draw
+ * @throws ReportError `report.coordinatesDiffer`
+ */
+export function planFigure(
+  results: readonly StudyResults[],
+  names: readonly string[],
+): { readonly plan: FigurePlan } | { readonly reason: string } {
+  const shared = sharedCoordinate(results, names);
+  if (shared.kind === 'none') return { reason: 'A single geometry has no curve to draw.' };
+  const isAbsolute = new Set(results.map(composition)).size === 1;
+  const all = curveSeries(results, names, shared);
+  const series = (isAbsolute ? all : all.map((one) => aboveMinimum(one, all))).filter(
+    ({ points }) => points.length > 0,
+  );
+  if (series.length === 0) return { reason: 'No level gave an energy at any point.' };
+
+  const levels = [...new Set(series.map(({ level }) => level))];
+  const styleOf = ({ level, file, family }: CurveSeries): CurveStyle => {
+    const ofLevel = styleOfLevel(level, levels);
+    const style = family === 'CIS triplets' ? { ...ofLevel, dash: TRIPLET_DASH } : ofLevel;
+    return results.length === 1 ? style : { ...style, colour: FILE_COLOURS[file % FILE_COLOURS.length]! };
+  };
+  const energies = series.map((one, index) => drawnCurve(one, index, styleOf(one), ({ energy }) => energy));
+  const correlation = series.flatMap((one, index) =>
+    one.points.some((point) => point.correlation !== undefined)
+      ? [drawnCurve({ ...one, minimum: undefined }, index, styleOf(one), (point) => point.correlation)]
+      : [],
+  );
+  return {
+    plan: {
+      coordinateTitle: coordinateHeading(shared),
+      coordinateRange: padded(
+        rangeOf(energies.flatMap(({ points }) => points.map(({ x }) => x))),
+        MARGIN / 2,
+      ),
+      energies: {
+        title: [isAbsolute ? 'Energy (hartree)' : 'Energy above minimum (hartree)'],
+        range: energyRange(energies, shared),
+        curves: energies,
+      },
+      ...(correlation.length > 0
+        ? {
+            correlation: {
+              title: ['Correlation', 'energy (hartree)'],
+              range: correlationRange(correlation),
+              curves: correlation,
+            },
+          }
+        : {}),
+      legend: legendOf(series, names, styleOf),
+      key: keyOf(energies),
+    },
+  };
+}
+
+const composition = ({ study }: StudyResults): string =>
+  [
+    ...study.molecule.atoms
+      .filter(({ ghost }) => !ghost)
+      .map(({ element }) => element)
+      .sort(),
+    study.molecule.charge,
+  ].join(' ');
+
+/** CIS energies are counted from the RHF minimum, which they are excitations from. */
+function aboveMinimum(one: CurveSeries, all: readonly CurveSeries[]): CurveSeries {
+  const home = one.level === 'CIS' ? 'RHF' : one.level;
+  const own =
+    all.find(({ file, level, isExcited }) => file === one.file && level === home && !isExcited) ?? one;
+  const converged = own.points.filter((point) => point.converged);
+  const zero = Math.min(...(converged.length > 0 ? converged : own.points).map(({ energy }) => energy));
+  const lowered = own.minimum && Math.min(zero, own.minimum.energy);
+  const shift = lowered ?? zero;
+  return {
+    ...one,
+    points: one.points.map((point) => ({ ...point, energy: point.energy - shift })),
+    ...(one.minimum ? { minimum: { ...one.minimum, energy: one.minimum.energy - shift } } : {}),
+  };
+}
+
+function drawnCurve(
+  one: Omit<CurveSeries, 'minimum'> & { readonly minimum?: CurveSeries['minimum'] | undefined },
+  index: number,
+  style: CurveStyle,
+  heightOf: (point: CurvePoint) => number | undefined,
+): DrawnCurve {
+  const points = one.points
+    .flatMap((point): DrawnPoint[] => {
+      const y = heightOf(point);
+      return y === undefined ? [] : [{ x: point.coordinate, y, converged: point.converged }];
+    })
+    .sort((a, b) => a.x - b.x);
+  const every = Math.ceil(points.length / MARKERS_PER_CURVE);
+  return {
+    style,
+    isExcited: one.isExcited,
+    points,
+    // staggered, so that the markers of curves that lie on one another are all seen
+    marked: one.isExcited
+      ? []
+      : points.filter(({ converged }, place) => converged && (place + index) % every === 0),
+    ...(one.minimum ? { minimum: { x: one.minimum.coordinate, y: one.minimum.energy } } : {}),
+  };
+}
+
+/** Converged points decide; unconverged ones only where there is nothing else. */
+function trusted(points: readonly DrawnPoint[]): readonly DrawnPoint[] {
+  const converged = points.filter((point) => point.converged);
+  return converged.length > 0 ? converged : points;
+}
+
+function energyRange(curves: readonly DrawnCurve[], shared: ScannedCoordinate): readonly [number, number] {
+  const shown = curves.flatMap((curve) => {
+    const points = trusted(curve.points);
+    if (shared.kind !== 'distance') return points.map(({ y }) => y);
+    const lowest = points.reduce((a, b) => (b.y < a.y ? b : a));
+    return points.filter(({ x }) => x >= lowest.x).map(({ y }) => y);
+  });
+  const everything = rangeOf(curves.flatMap((curve) => trusted(curve.points).map(({ y }) => y)));
+  const [low, high] = rangeOf(shown);
+  const top = Math.min(everything[1], high + WALL_SHARE * (high - low));
+  return padded([low, top > low ? top : everything[1]], MARGIN);
+}
+
+function correlationRange(curves: readonly DrawnCurve[]): readonly [number, number] {
+  const [low, high] = rangeOf([0, ...curves.flatMap((curve) => trusted(curve.points).map(({ y }) => y))]);
+  return [padded([low, high], MARGIN)[0], high > 0 ? padded([low, high], MARGIN)[1] : 0];
+}
+
+const rangeOf = (values: readonly number[]): [number, number] => [Math.min(...values), Math.max(...values)];
+
+/** A range of no width (one point, or a flat curve) is given some. */
+function padded([low, high]: readonly [number, number], share: number): [number, number] {
+  const room = share * (high - low || Math.abs(high) * 0.01 || 1);
+  return [low - room, high + room];
+}
+
+/** One entry a family of curves; of several files, whose colour is the file, the entries of families are grey. */
+function legendOf(
+  series: readonly CurveSeries[],
+  names: readonly string[],
+  styleOf: (one: CurveSeries) => CurveStyle,
+): readonly LegendEntry[] {
+  const several = names.length > 1;
+  const files = names.map((label, file): LegendEntry => {
+    const colour = FILE_COLOURS[file % FILE_COLOURS.length]!;
+    return { label, style: { colour, dash: [], shape: 'circle' }, kind: 'file' };
+  });
+  const firstOfFamily = new Map(series.toReversed().map((one) => [one.family, one]));
+  const families = [...new Set(series.map(({ family }) => family))].map((family): LegendEntry => {
+    const one = firstOfFamily.get(family)!;
+    const style = several ? { ...styleOf(one), colour: FAINT_INK } : styleOf(one);
+    return { label: family, style, kind: one.isExcited ? 'excited' : 'curve' };
+  });
+  return several ? [...files, ...families] : families;
+}
+
+function keyOf(curves: readonly DrawnCurve[]): readonly string[] {
+  return [
+    ...(curves.some(({ minimum }) => minimum) ? ['Bars mark the minima.'] : []),
+    ...(curves.some(({ points }) => points.some(({ converged }) => !converged))
+      ? ['Crosses: not converged.']
+      : []),
+  ];
+}
