@@ -26,7 +26,7 @@ const DENSITY_TOLERANCE = 1e-5;
 export function atomicDensity(atom: Atom, shells: readonly PlacedShell[], harmonics: PlacedBasis['harmonics']): Float64Array {
   const basis = isolate(shells, harmonics);
   const n = basis.functionCount;
-  let density = new Float64Array(n * n);
+  let density: Float64Array = new Float64Array(n * n);
   if (atom.nuclearCharge === 0) return density;
 
   const overlap = overlapMatrix(basis);

@@ -36,9 +36,9 @@ function exponential(matrix: Float64Array, m: number): Float64Array {
   }
   const squarings = Math.max(0, Math.ceil(Math.log2(Math.max(norm, 1e-300) / 0.25)));
   const scaled = matrix.map((value) => value / 2 ** squarings);
-  let result = new Float64Array(m * m);
+  let result: Float64Array = new Float64Array(m * m);
   for (let i = 0; i < m; i++) result[i * m + i] = 1;
-  let term = result;
+  let term: Float64Array = result;
   // 0.25¹³/13! < 1e-17
   for (let order = 1; order <= 13; order++) {
     term = multiply(term, scaled, m, m, m).map((value) => value / order);

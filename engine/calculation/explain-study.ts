@@ -1,0 +1,79 @@
+import { placeBasis } from '../basis/place-basis';
+import { configurationInteractionBytes, countDeterminants } from '../configuration-interaction/size';
+import type { LevelExplanation, StudyExplanation } from './explanation';
+import type { Level } from './levels';
+import type { PreparedStudy } from './prepare-study';
+
+/*
+ * Costs measured with `npm run bench` on one core of a 2.x GHz server of 2024; they only need to tell seconds from
+ * hours. Unit: seconds.
+ */
+const PER_PRIMITIVE_INTEGRAL = 4e-9;
+const PER_INTEGRAL = 4e-8;
+const PER_FOCK_ELEMENT = 3e-9;
+const PER_TRANSFORMATION_STEP = 2e-9;
+const PER_CONNECTION = 1.5e-9;
+const FIELD_ITERATIONS = 30;
+const EIGENVALUE_ITERATIONS = 14;
+
+/** Sizes, memory and time of a study, without computing it. */
+export function explainStudy(prepared: PreparedStudy): StudyExplanation {
+  const { functionCount: n, electrons, frozenOrbitals, study } = prepared;
+  const pairs = (n * (n + 1)) / 2;
+  const repulsionIntegrals = (pairs * (pairs + 1)) / 2;
+  const field: Omit<LevelExplanation, 'level'> = {
+    bytes: 8 * repulsionIntegrals + 8 * 40 * n * n,
+    seconds:
+      repulsionIntegrals * (PER_INTEGRAL + PER_PRIMITIVE_INTEGRAL * meanPrimitives(prepared) ** 4) +
+      FIELD_ITERATIONS * repulsionIntegrals * PER_FOCK_ELEMENT,
+  };
+  const active = n - frozenOrbitals;
+  const activeElectrons = electrons / 2 - frozenOrbitals;
+  const transformed = {
+    bytes: field.bytes + 8 * repulsionIntegrals,
+    seconds: field.seconds + PER_TRANSFORMATION_STEP * n ** 5,
+  };
+
+  const explainLevel = (level: Level): LevelExplanation => {
+    if (level.kind === 'hartreeFock') return { level: level.name, ...field };
+    const virtual = active - activeElectrons;
+    if (level.kind === 'singles') {
+      const singles = activeElectrons * virtual;
+      return {
+        level: level.name,
+        determinants: 2 * singles,
+        bytes: transformed.bytes + 16 * Math.min(singles, 500) ** 2,
+        seconds: transformed.seconds + PER_CONNECTION * singles ** 2 * EIGENVALUE_ITERATIONS,
+      };
+    }
+    const determinants = countDeterminants(active, activeElectrons, activeElectrons, level.maximumRank);
+    const singles = activeElectrons * virtual;
+    const doubles = (activeElectrons * (activeElectrons - 1) * virtual * (virtual - 1)) / 4;
+    const connections = Math.min(determinants, singles * singles + 2 * (singles + doubles) + 1);
+    return {
+      level: level.name,
+      determinants,
+      bytes:
+        transformed.bytes +
+        configurationInteractionBytes(active, activeElectrons, activeElectrons, level.maximumRank, study.states),
+      seconds:
+        transformed.seconds + study.states * EIGENVALUE_ITERATIONS * determinants * connections * PER_CONNECTION,
+    };
+  };
+
+  return {
+    electrons,
+    points: prepared.coordinates.length,
+    functions: n,
+    frozenOrbitals,
+    repulsionIntegrals,
+    levels: prepared.levels.map(explainLevel),
+  };
+}
+
+/** Primitives of a function, averaged over the molecule's functions. */
+function meanPrimitives(prepared: PreparedStudy): number {
+  const basis = placeBasis(prepared.basisSet, prepared.moleculeAt(prepared.coordinates[0]));
+  const total = basis.shells.reduce((sum, shell) => sum + shell.functionCount * shell.exponents.length, 0);
+  return total / basis.functionCount;
+}
