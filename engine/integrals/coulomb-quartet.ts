@@ -1,0 +1,240 @@
+import { boysFunctionInto } from '../special-functions/boys-function';
+import { hermiteCoulombInto } from './hermite-coulomb';
+import { type QuartetLayout, quartetLayout } from './quartet-layout';
+import type { ShellPair } from './shell-pair';
+
+/** Ket primitives whose Hermite integrals are held at once; keeps them in the first-level cache for s and p. */
+const BATCH = 36;
+
+/** Work arrays of the quartet kernel, grown as needed and used again for every quartet. */
+export class QuartetWorkspace {
+  hermite: Float64Array = new Float64Array(0);
+  ketSums: Float64Array = new Float64Array(0);
+  braSums: Float64Array = new Float64Array(0);
+  row: Float64Array = new Float64Array(0);
+  half: Float64Array = new Float64Array(0);
+  /** the integrals of the last quartet: bra products × ket products, row-major */
+  block: Float64Array = new Float64Array(0);
+
+  reserve(bra: ShellPair, ket: ShellPair, layout: QuartetLayout): void {
+    this.hermite = grown(this.hermite, BATCH * layout.hermiteCount);
+    this.ketSums = grown(this.ketSums, layout.ketSumCount);
+    this.braSums = grown(this.braSums, layout.braSumCount);
+    this.row = grown(this.row, ket.layout.columnCount);
+    this.half = grown(this.half, bra.layout.columnCount * ket.productCount);
+    this.block = grown(this.block, bra.productCount * ket.productCount);
+  }
+}
+
+function grown(array: Float64Array, length: number): Float64Array {
+  return array.length >= length ? array : new Float64Array(length);
+}
+
+/**
+ * All integrals (ab|cd) of a quartet of contracted shells, left in `workspace.block`.
+ *
+ * For each primitive product of the bra, Hermite Coulomb integrals with all primitive products of the ket are
+ * made and contracted factor by factor; then the bra is contracted the same way; only then, once a quartet, are
+ * Hermite terms turned into function products (see {@link productExpansion}).
+ *
+ * @param primitiveThreshold - pairs of primitive products whose estimated integral is below this are skipped
+ *
+ * Source: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978), eqs. (3.31)–(3.33); order of contraction
+ * after P. M. W. Gill, J. A. Pople, Int. J. Quantum Chem. 40, 753 (1991).
+ */
+export function coulombQuartet(
+  bra: ShellPair,
+  ket: ShellPair,
+  workspace: QuartetWorkspace,
+  primitiveThreshold: number,
+): void {
+  const layout = quartetLayout(bra.layout, ket.layout);
+  workspace.reserve(bra, ket, layout);
+  if (layout.degree === 0) {
+    workspace.block[0] = sphericalQuartet(bra, ket, primitiveThreshold) * bra.values[0] * ket.values[0];
+    return;
+  }
+  const { hermite, ketSums, braSums } = workspace;
+  braSums.fill(0, 0, layout.braSumCount);
+  for (let i = 0; i < bra.primitiveCount; i++) {
+    const ketCount = significantPrimitives(ket, primitiveThreshold / bra.bounds[i]);
+    if (ketCount === 0) break;
+    ketSums.fill(0, 0, layout.ketSumCount);
+    for (let start = 0; start < ketCount; start += BATCH) {
+      const count = Math.min(BATCH, ketCount - start);
+      hermiteBatch(bra, i, ket, start, count, layout, hermite);
+      contractKet(layout, hermite, count, ket.signedFactors, start, ketSums);
+    }
+    contractBra(layout, ketSums, bra.factors, i, braSums);
+  }
+  expandKet(bra.layout.columnCount, ket, layout.gather, braSums, workspace.row, workspace.half);
+  expandBra(bra, ket.productCount, workspace.half, workspace.block);
+}
+
+/** Primitive products are sorted by size, so the significant ones come first. */
+function significantPrimitives(pair: ShellPair, threshold: number): number {
+  let count = pair.primitiveCount;
+  while (count > 0 && pair.bounds[count - 1] < threshold) count--;
+  return count;
+}
+
+const boysValue = new Float64Array(1);
+
+/** (ss|ss): Σ factors F_0(αR²) / √(p + q). */
+function sphericalQuartet(bra: ShellPair, ket: ShellPair, primitiveThreshold: number): number {
+  let sum = 0;
+  for (let i = 0; i < bra.primitiveCount; i++) {
+    const p = bra.exponents[i];
+    const px = bra.centreX[i];
+    const py = bra.centreY[i];
+    const pz = bra.centreZ[i];
+    const count = significantPrimitives(ket, primitiveThreshold / bra.bounds[i]);
+    let inner = 0;
+    for (let j = 0; j < count; j++) {
+      const q = ket.exponents[j];
+      const x = px - ket.centreX[j];
+      const y = py - ket.centreY[j];
+      const z = pz - ket.centreZ[j];
+      const total = p + q;
+      boysFunctionInto(0, ((p * q) / total) * (x * x + y * y + z * z), boysValue);
+      inner += (ket.factors[j] / Math.sqrt(total)) * boysValue[0];
+    }
+    sum += bra.factors[i] * inner;
+  }
+  return sum;
+}
+
+/** Hermite Coulomb integrals of one bra primitive with `count` ket primitives, count × hermiteCount. */
+function hermiteBatch(
+  bra: ShellPair,
+  braPrimitive: number,
+  ket: ShellPair,
+  start: number,
+  count: number,
+  layout: QuartetLayout,
+  hermite: Float64Array,
+): void {
+  const { degree, hermiteCount } = layout;
+  const p = bra.exponents[braPrimitive];
+  const px = bra.centreX[braPrimitive];
+  const py = bra.centreY[braPrimitive];
+  const pz = bra.centreZ[braPrimitive];
+  for (let k = 0; k < count; k++) {
+    const j = start + k;
+    const q = ket.exponents[j];
+    const total = p + q;
+    hermiteCoulombInto(
+      degree,
+      (p * q) / total,
+      px - ket.centreX[j],
+      py - ket.centreY[j],
+      pz - ket.centreZ[j],
+      1 / Math.sqrt(total),
+      hermite,
+      k * hermiteCount,
+    );
+  }
+}
+
+/** ketSums[factor, n] += Σ_k factors[k, factor] · hermite[k, n], four primitives at a time. */
+function contractKet(
+  layout: QuartetLayout,
+  hermite: Float64Array,
+  count: number,
+  factors: Float64Array,
+  start: number,
+  ketSums: Float64Array,
+): void {
+  const { ketFactorCount, hermiteCount, ketStart, ketLength, ketTarget } = layout;
+  for (let factor = 0; factor < ketFactorCount; factor++) {
+    const target = ketTarget[factor];
+    const end = target + ketLength[factor];
+    let source = ketStart[factor];
+    let at = start * ketFactorCount + factor;
+    let k = 0;
+    for (; k + 3 < count; k += 4) {
+      const f0 = factors[at];
+      const f1 = factors[at + ketFactorCount];
+      const f2 = factors[at + 2 * ketFactorCount];
+      const f3 = factors[at + 3 * ketFactorCount];
+      let s0 = source;
+      let s1 = s0 + hermiteCount;
+      let s2 = s1 + hermiteCount;
+      let s3 = s2 + hermiteCount;
+      for (let n = target; n < end; n++) {
+        ketSums[n] += f0 * hermite[s0++] + f1 * hermite[s1++] + f2 * hermite[s2++] + f3 * hermite[s3++];
+      }
+      at += 4 * ketFactorCount;
+      source += 4 * hermiteCount;
+    }
+    for (; k < count; k++) {
+      const f0 = factors[at];
+      let s0 = source;
+      for (let n = target; n < end; n++) ketSums[n] += f0 * hermite[s0++];
+      at += ketFactorCount;
+      source += hermiteCount;
+    }
+  }
+}
+
+/** braSums[bra factor, ket factor, n] += factors[bra factor] · ketSums[ket factor, n] */
+function contractBra(
+  layout: QuartetLayout,
+  ketSums: Float64Array,
+  factors: Float64Array,
+  primitive: number,
+  braSums: Float64Array,
+): void {
+  const { braFactorCount, ketFactorCount, braSource, braLength, braTarget } = layout;
+  let block = 0;
+  for (let i = 0; i < braFactorCount; i++) {
+    const factor = factors[primitive * braFactorCount + i];
+    for (let j = 0; j < ketFactorCount; j++, block++) {
+      let source = braSource[block];
+      const end = source + braLength[block];
+      let target = braTarget[block];
+      while (source < end) braSums[target++] += factor * ketSums[source++];
+    }
+  }
+}
+
+/** half[bra column, cd] = Σ_(ket column) values[cd, ket column] · braSums[gather[bra column, ket column]] */
+function expandKet(
+  braColumns: number,
+  ket: ShellPair,
+  gather: Int32Array,
+  braSums: Float64Array,
+  row: Float64Array,
+  half: Float64Array,
+): void {
+  const { productCount, rowStart, columns, values } = ket;
+  const ketColumns = ket.layout.columnCount;
+  let at = 0;
+  let target = 0;
+  for (let i = 0; i < braColumns; i++) {
+    for (let j = 0; j < ketColumns; j++) row[j] = braSums[gather[at++]];
+    let entry = 0;
+    for (let product = 0; product < productCount; product++) {
+      const end = rowStart[product + 1];
+      let sum = 0;
+      for (; entry < end; entry++) sum += values[entry] * row[columns[entry]];
+      half[target++] = sum;
+    }
+  }
+}
+
+/** block[ab, cd] = Σ_(bra column) values[ab, bra column] · half[bra column, cd] */
+function expandBra(bra: ShellPair, ketProducts: number, half: Float64Array, block: Float64Array): void {
+  const { productCount, rowStart, columns, values } = bra;
+  block.fill(0, 0, productCount * ketProducts);
+  let entry = 0;
+  for (let product = 0; product < productCount; product++) {
+    const start = product * ketProducts;
+    const end = start + ketProducts;
+    for (; entry < rowStart[product + 1]; entry++) {
+      const value = values[entry];
+      let source = columns[entry] * ketProducts;
+      for (let n = start; n < end; n++) block[n] += value * half[source++];
+    }
+  }
+}

@@ -1,0 +1,89 @@
+import type { PlacedBasis } from '../basis/contracted-gaussian';
+import { coulombQuartet, QuartetWorkspace } from './coulomb-quartet';
+import { packedPair } from './orbital-integrals';
+import { buildShellPairs, type ShellPair } from './shell-pair';
+
+export interface ElectronRepulsionOptions {
+  /**
+   * hartree; a quartet of shells is left at zero if the Schwarz inequality bounds its integrals by less. The
+   * default keeps energies right to 1e-9 hartree with margin.
+   */
+  readonly schwarzThreshold?: number;
+}
+
+export const ELECTRON_REPULSION_DEFAULTS: Required<ElectronRepulsionOptions> = Object.freeze({
+  schwarzThreshold: 1e-13,
+});
+
+/** Pairs of primitives are skipped at a smaller size than quartets, since up to some thousand add up in one integral. */
+const PRIMITIVE_TO_QUARTET_THRESHOLD = 1e-4;
+
+/**
+ * Electron-repulsion integrals (μν|λσ) = ∬ μ(1)ν(1) r₁₂⁻¹ λ(2)σ(2), chemists' order.
+ *
+ * @param basis - n functions; centres in bohr, exponents in bohr⁻²
+ * @returns 8-fold packed, index `packedPair(packedPair(μ, ν), packedPair(λ, σ))`, in hartree; of length m(m + 1)/2
+ * with m = n(n + 1)/2
+ *
+ * Source: kernel, see {@link coulombQuartet}; screening |(ab|cd)|² ≤ (ab|ab)(cd|cd): M. Häser, R. Ahlrichs,
+ * J. Comput. Chem. 10, 104 (1989).
+ * Accuracy: 1e-13 hartree absolute for normalised functions, checked in tests/engine/integrals/electron-repulsion.test.ts.
+ * Cost: O(n⁴/8) time and memory.
+ */
+export function electronRepulsionTensor(
+  basis: PlacedBasis,
+  options: ElectronRepulsionOptions = ELECTRON_REPULSION_DEFAULTS,
+): Float64Array {
+  const { schwarzThreshold } = { ...ELECTRON_REPULSION_DEFAULTS, ...options };
+  const pairCount = (basis.functionCount * (basis.functionCount + 1)) / 2;
+  const tensor = new Float64Array((pairCount * (pairCount + 1)) / 2);
+  const workspace = new QuartetWorkspace();
+  const primitiveThreshold = schwarzThreshold * PRIMITIVE_TO_QUARTET_THRESHOLD;
+  const pairs = buildShellPairs(basis);
+  const bounds = pairs.map((pair) => schwarzBound(pair, workspace));
+  const places = pairs.map(productPlaces);
+  for (let i = 0; i < pairs.length; i++) {
+    for (let j = 0; j <= i; j++) {
+      if (bounds[i] * bounds[j] < schwarzThreshold) continue;
+      coulombQuartet(pairs[i], pairs[j], workspace, primitiveThreshold);
+      scatterInto(tensor, workspace.block, places[i], places[j]);
+    }
+  }
+  return tensor;
+}
+
+/** √ of the largest (ab|ab) of the pair. */
+function schwarzBound(pair: ShellPair, workspace: QuartetWorkspace): number {
+  coulombQuartet(pair, pair, workspace, 0);
+  let largest = 0;
+  for (let product = 0; product < pair.productCount; product++) {
+    largest = Math.max(largest, Math.abs(workspace.block[product * pair.productCount + product]));
+  }
+  return Math.sqrt(largest);
+}
+
+/** packed index of each function product of the pair */
+function productPlaces({ first, second, productCount }: ShellPair): Int32Array {
+  const places = new Int32Array(productCount);
+  let at = 0;
+  for (let i = 0; i < first.functionCount; i++) {
+    for (let j = 0; j < second.functionCount; j++) {
+      places[at++] = packedPair(first.firstFunction + i, second.firstFunction + j);
+    }
+  }
+  return places;
+}
+
+function scatterInto(
+  tensor: Float64Array,
+  block: Float64Array,
+  braPlaces: Int32Array,
+  ketPlaces: Int32Array,
+): void {
+  let at = 0;
+  for (let i = 0; i < braPlaces.length; i++) {
+    for (let j = 0; j < ketPlaces.length; j++) {
+      tensor[packedPair(braPlaces[i], ketPlaces[j])] = block[at++];
+    }
+  }
+}
