@@ -1,4 +1,4 @@
-import type { BasisDescription, PointResult, SerializedEngineError, Study, StudyExplanation, StudyResults } from '#engine';
+import type { BasisDescription, BasisSetEntry, PointResult, SerializedEngineError, Study, StudyExplanation, StudyResults } from '#engine';
 
 /** An error as it crosses from the host to the window. */
 export interface SerializedError {
@@ -29,11 +29,7 @@ export interface SampleSummary {
   readonly sentence: string;
 }
 
-export interface BasisSummary {
-  readonly name: string;
-  readonly elements: readonly string[];
-  readonly description: string;
-}
+export type BasisSummary = BasisSetEntry;
 
 export interface ProgramDescription {
   readonly version: string;

@@ -1,5 +1,6 @@
-import { placeBasis, shellFunctionCount } from '../basis/place-basis';
 import type { BasisSet } from '../basis/basis-set';
+import { findBasisSet, listBasisSets } from '../basis/library-index';
+import { placeBasis, shellFunctionCount } from '../basis/place-basis';
 import type { PreparedStudy } from './prepare-study';
 import type { BasisDescription } from './result';
 
@@ -9,8 +10,15 @@ export function describeBasisUsed(prepared: PreparedStudy): BasisDescription {
   return describe(prepared.basisSet, placeBasis(prepared.basisSet, molecule).functionCount);
 }
 
-/** A basis set by itself: `functions` counts one atom of each element. */
-export function describeBasisSet(basisSet: BasisSet): BasisDescription {
+/**
+ * A basis set from the library, for all elements that it has; `functions` counts one atom of each.
+ *
+ * @throws EngineError `basis.unknown`
+ */
+export function describeBasis(name: string): BasisDescription {
+  const { name: fullName } = findBasisSet(name, []);
+  const entry = listBasisSets().find((candidate) => candidate.name === fullName);
+  const basisSet = findBasisSet(fullName, entry?.elements ?? []);
   const functions = Object.values(basisSet.elements)
     .flat()
     .reduce((sum, shell) => sum + shellFunctionCount(shell.angularMomentum, basisSet.harmonics), 0);

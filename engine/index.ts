@@ -1,0 +1,54 @@
+/** The only door into the engine. */
+export type { BasisRequest, EvenTemperedShells } from './basis/basis-request';
+export { type BasisSetEntry, listBasisSets } from './basis/library-index';
+export { LOW_REFERENCE_WEIGHT, studyCautions } from './calculation/cautions';
+export {
+  type ComputedPoint,
+  type ComputePointOptions,
+  computePoint,
+  type PointCarry,
+} from './calculation/compute-point';
+export { describeBasis, describeBasisUsed } from './calculation/describe-basis';
+export { explainStudy } from './calculation/explain-study';
+export type { LevelExplanation, StudyExplanation } from './calculation/explanation';
+export { findLevelMinimum } from './calculation/find-level-minimum';
+export { LEVEL_NAMES } from './calculation/levels';
+export { type Preparation, type PreparedStudy, type PrepareOptions, prepareStudy } from './calculation/prepare-study';
+export type {
+  BasisDescription,
+  Caution,
+  CorrelatedResult,
+  CorrelatedState,
+  FailedLevel,
+  HartreeFockResult,
+  LeadingDeterminant,
+  LevelFindings,
+  LevelResult,
+  LevelTermination,
+  PointResult,
+  SinglesResult,
+  SinglesState,
+  SpinName,
+  StudyResults,
+} from './calculation/result';
+export type {
+  CompleteStudy,
+  LengthUnit,
+  ScanCoordinate,
+  Study,
+  StudyAtom,
+  StudyMolecule,
+  StudyScan,
+} from './calculation/study';
+export type { Harmonics, ShellDefinition } from './basis/contracted-gaussian';
+export {
+  BOHR_IN_ANGSTROM,
+  DALTON_IN_ELECTRON_MASSES,
+  DIPOLE_IN_DEBYE,
+  HARTREE_IN_EV,
+  HARTREE_IN_KJ_PER_MOL,
+  HARTREE_IN_WAVENUMBERS,
+} from './constants';
+export { EngineError, type EngineErrorCode, type EngineErrorDetails, type SerializedEngineError } from './errors';
+export type { Vector3 } from './molecule/molecule';
+export { type RunControl, type Termination, UNATTENDED } from './termination';
