@@ -84,7 +84,7 @@ export async function fetchElectron(
   clearInterval(watch);
   rmSync(temporary, { recursive: true, force: true });
   if (status === 0) return { ok: true };
-  return { ok: false, reason: isStalled ? 'the download does not arrive' : firstLine(output()) };
+  return { ok: false, reason: isStalled ? 'the download does not arrive' : reasonIn(output()) };
 }
 
 /** Shows the window in Electron and waits for its end. @returns the reason if no window came up */
@@ -94,7 +94,7 @@ export async function runElectron(program: string, root: string, signal: AbortSi
   const output = tail(child.stderr);
   const status = await ended(child);
   const hasFailed = status !== 0 && !signal.aborted && Date.now() - started < EARLY_EXIT_MS;
-  return hasFailed ? { ok: false, reason: firstLine(output()) } : { ok: true };
+  return hasFailed ? { ok: false, reason: reasonIn(output()) } : { ok: true };
 }
 
 function ended(child: ReturnType<typeof spawn>): Promise<number | null> {
@@ -113,10 +113,11 @@ function tail(stream: NodeJS.ReadableStream): () => string {
   return () => text;
 }
 
-function firstLine(text: string): string {
-  const line = text.split('\n').find((candidate) => candidate.trim() !== '');
-  // without the class of an error or the place in Chromium's sources
-  return line?.trim().replace(/^(\w*Error: |\[[^\]]*\] ?)+/, '') ?? 'no reason was given';
+/** The line that names the error, without its class or its place in Chromium's sources. */
+function reasonIn(output: string): string {
+  const lines = output.split('\n').map((line) => line.trim());
+  const telling = lines.find((line) => /\w*Error: |FATAL|ERROR/.test(line)) ?? lines.find((line) => line !== '');
+  return telling?.replace(/^(\w*Error: |\[[^\]]*\] ?)+/, '') ?? 'no reason was given';
 }
 
 function sizeOfFolder(folder: string): number {

@@ -8,6 +8,7 @@ const COMMANDS: ReadonlySet<string> = new Set([
   '--help',
   '-h',
   '--version',
+  '-V',
 ]);
 
 /**
