@@ -13,7 +13,6 @@ import {
   existsSync,
   mkdirSync,
   readdirSync,
-  readFileSync,
   renameSync,
   rmSync,
   statSync,
@@ -30,7 +29,7 @@ const stamp = join(out, 'build-stamp');
 
 /** Programs that run in Node or in Electron's main process; they share chunks. */
 const NODE_ENTRIES = {
-  farwell: 'app/cli/main.ts',
+  farwell: 'app/cli/farwell.ts',
   start: 'app/browser-host/start.ts',
   'electron-main': 'app/main/main.ts',
   benchmark: 'tests/benchmarks/main.ts',
@@ -61,7 +60,10 @@ const outputs = await Promise.all([
   buildForNode(WORKER_ENTRIES, { format: 'es', codeSplitting: false }),
   buildForNode(PRELOAD_ENTRIES, { format: 'cjs', entryFileNames: '[name].cjs', codeSplitting: false }),
   buildRenderer(),
-]);
+]).catch((error) => {
+  console.error(error.message);
+  process.exit(1);
+});
 const written = writeAll(outputs.flat());
 removeStale(written);
 writeFileSync(stamp, '');

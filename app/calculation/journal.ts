@@ -18,11 +18,13 @@ import { sha256 } from './study-key';
 export interface Journal {
   /** points taken over from an earlier run */
   readonly finished: ReadonlyMap<number, FinishedPoint>;
+  /** points in it, taken over and appended */
+  readonly size: number;
   /** returns when the point is in the hands of the operating system, where a killed process cannot lose it */
   append(index: number, point: FinishedPoint): void;
-  close(): void;
-  /** closes and deletes, once the results are safe elsewhere */
+  /** deletes the file, once the results are safe elsewhere */
   remove(): void;
+  close(): void;
 }
 
 /** Longest stretch of work that a power cut can take: waiting for the disk at each point would slow small studies. */
@@ -48,22 +50,24 @@ export function openJournal(path: string, key: string): Journal {
   if (validBytes === 0) write(header);
   fsyncSync(file);
   let lastSync = performance.now();
+  let { size } = finished;
 
   return {
     finished,
+    get size() {
+      return size;
+    },
     append(index, point) {
       write(journalLine(index, point));
+      size++;
       if (performance.now() - lastSync < SYNC_EVERY_MS) return;
       fsyncSync(file);
       lastSync = performance.now();
     },
+    remove: () => rmSync(path),
     close() {
       fsyncSync(file);
       closeSync(file);
-    },
-    remove() {
-      closeSync(file);
-      rmSync(path);
     },
   };
 }

@@ -1,0 +1,57 @@
+import { availableParallelism } from 'node:os';
+import { explainStudy, type StudyExplanation } from '#engine';
+import { readStudyFile } from '../calculation/read-study-file';
+import { studySentence } from '../study/sentence';
+import type { Invocation } from './arguments';
+import { EXIT, type ExitCode } from './exit-codes';
+import type { Terminal } from './terminal';
+import { alignedTable, bytesText, counted, durationText, refusalText } from './wording';
+
+/** `farwell check`: says what a study is and costs, without computing it. */
+export async function checkCommand(
+  { study }: Extract<Invocation, { kind: 'check' }>,
+  terminal: Terminal,
+): Promise<ExitCode> {
+  const file = await readStudyFile(study);
+  if (!file.ok) {
+    terminal.say(refusalText(study, file.issues));
+    return EXIT.refused;
+  }
+  const explanation = explanationText(explainStudy(file.prepared), availableParallelism());
+  await terminal.print(`${studySentence(file.prepared.study)}\n\n${explanation}\n`);
+  return EXIT.done;
+}
+
+/** @param cores - that share the points */
+export function explanationText(explanation: StudyExplanation, cores: number): string {
+  const { electrons, functions, frozenOrbitals, repulsionIntegrals, points, levels } = explanation;
+  const facts = [
+    ['electrons', String(electrons)],
+    ['basis functions', whole(functions)],
+    ...(frozenOrbitals > 0 ? [['frozen core orbitals', String(frozenOrbitals)]] : []),
+    ['repulsion integrals', whole(repulsionIntegrals)],
+    ['points', whole(points)],
+  ];
+  const table = [
+    ['level', 'determinants', 'memory', 'time a point'],
+    ...levels.map(({ level, determinants, bytes, seconds }) => [
+      level,
+      determinants === undefined ? '–' : whole(determinants),
+      bytesText(bytes),
+      durationText(seconds),
+    ]),
+  ];
+  const lanes = Math.min(cores, points);
+  const total = (levels.reduce((sum, { seconds }) => sum + seconds, 0) * points) / lanes;
+  return [
+    alignedTable(facts),
+    '',
+    alignedTable(table),
+    '',
+    `All points: roughly ${durationText(total)} on ${counted(lanes, 'core')}. Memory is for one point; each core has its own.`,
+  ].join('\n');
+}
+
+function whole(count: number): string {
+  return count.toLocaleString('en-GB');
+}

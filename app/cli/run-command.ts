@@ -1,0 +1,170 @@
+import { mkdir } from 'node:fs/promises';
+import { dirname, join } from 'node:path';
+import type { StudyResults } from '#engine';
+import { type Journal, openJournal } from '../calculation/journal';
+import { acquireLock } from '../calculation/output-lock';
+import { readStudyFile, type StudyFile } from '../calculation/read-study-file';
+import { type RunOutcome, runStudy } from '../calculation/run-study';
+import { studyKey } from '../calculation/study-key';
+import { resultsJson, writeResults } from '../calculation/write-results';
+import type { SerializedError, StudyIssue } from '../contract/requests';
+import { studySentence } from '../study/sentence';
+import type { Invocation } from './arguments';
+import { EXIT, type ExitCode } from './exit-codes';
+import { progressDisplay } from './progress-display';
+import { cautionLines, findingsLines, unconvergedLines } from './run-summary';
+import type { Terminal } from './terminal';
+import { counted, refusalText } from './wording';
+
+type RunInvocation = Extract<Invocation, { kind: 'run' }>;
+type ReadableStudy = Extract<StudyFile, { ok: true }>;
+
+/** `farwell run`: computes a study, and writes its results or prints them. */
+export async function runCommand(
+  invocation: RunInvocation,
+  terminal: Terminal,
+  signal: AbortSignal,
+): Promise<ExitCode> {
+  const file = await readStudyFile(invocation.study);
+  if (!file.ok) {
+    terminal.say(refusalText(invocation.study, file.issues));
+    return EXIT.refused;
+  }
+  terminal.say(studySentence(file.prepared.study));
+  return invocation.print
+    ? runToOutput(file, invocation, terminal, signal)
+    : runToFolder(file, invocation, terminal, signal);
+}
+
+async function runToOutput(
+  file: ReadableStudy,
+  invocation: RunInvocation,
+  terminal: Terminal,
+  signal: AbortSignal,
+): Promise<ExitCode> {
+  const outcome = await compute(file, invocation, terminal, signal);
+  if (outcome.kind === 'failed') return sayFailure(outcome.error, invocation.study, terminal);
+  if (outcome.kind === 'cancelled') {
+    terminal.say('Interrupted. With --print nothing is kept; without it the finished points are.');
+    return EXIT.interrupted;
+  }
+  await terminal.print(resultsJson(outcome.results));
+  return saySummary(outcome.results, terminal);
+}
+
+async function runToFolder(
+  file: ReadableStudy,
+  invocation: RunInvocation,
+  terminal: Terminal,
+  signal: AbortSignal,
+): Promise<ExitCode> {
+  const folder = invocation.out ?? dirname(invocation.study);
+  const refusal = await prepareFolder(folder);
+  if (refusal) {
+    terminal.say(refusalText('--out', [refusal]));
+    return EXIT.refused;
+  }
+  const lockPath = join(folder, `${file.name}.lock`);
+  const lock = acquireLock(lockPath);
+  if (lock.kind === 'taken') {
+    terminal.say(
+      `farwell: ${lock.by} is computing ${file.name} into this folder.\n` +
+        `  Wait for it, or choose another folder with --out. If it is gone, delete ${lockPath}.`,
+    );
+    return EXIT.failed;
+  }
+  try {
+    return await runWithJournal(file, invocation, folder, terminal, signal);
+  } finally {
+    lock.release();
+  }
+}
+
+async function prepareFolder(folder: string): Promise<StudyIssue | undefined> {
+  try {
+    await mkdir(folder, { recursive: true });
+    return undefined;
+  } catch (error) {
+    if (!['EEXIST', 'ENOTDIR'].includes((error as NodeJS.ErrnoException).code ?? '')) throw error;
+    return {
+      code: 'folder.isFile',
+      place: '',
+      message: `“${folder}” is not a folder.`,
+      remedy: 'Give a folder; it is made if it does not exist.',
+    };
+  }
+}
+
+async function runWithJournal(
+  file: ReadableStudy,
+  invocation: RunInvocation,
+  folder: string,
+  terminal: Terminal,
+  signal: AbortSignal,
+): Promise<ExitCode> {
+  const key = studyKey(file.prepared);
+  // with the key in its name, the journal of an earlier wording of the study is neither mixed in nor lost
+  const journal = openJournal(join(folder, `${file.name}.partial-${key.slice(0, 8)}.jsonl`), key);
+  const kept = () => `${journal.size} of ${counted(file.prepared.coordinates.length, 'point')}`;
+  try {
+    if (journal.size > 0) terminal.say(`Going on from ${kept()} computed before.`);
+    const outcome = await compute(file, invocation, terminal, signal, journal);
+    if (outcome.kind === 'failed') {
+      const exit = sayFailure(outcome.error, invocation.study, terminal);
+      terminal.say(`  Finished and kept: ${kept()}.`);
+      return exit;
+    }
+    if (outcome.kind === 'cancelled') {
+      terminal.say(`Interrupted. Finished and kept: ${kept()}; the same command goes on from there.`);
+      return EXIT.interrupted;
+    }
+    const paths = await writeResults(outcome.results, folder, file.name);
+    journal.remove();
+    await terminal.print(`${paths.join('\n')}\n`);
+    return saySummary(outcome.results, terminal);
+  } finally {
+    journal.close();
+  }
+}
+
+async function compute(
+  { prepared, basisFileText }: ReadableStudy,
+  { workers }: RunInvocation,
+  terminal: Terminal,
+  signal: AbortSignal,
+  journal?: Journal,
+): Promise<RunOutcome> {
+  const display = progressDisplay(terminal);
+  try {
+    return await runStudy(
+      { prepared, ...(basisFileText !== undefined && { basisFileText }) },
+      {
+        signal,
+        onProgress: display.show,
+        ...(workers !== undefined && { workers }),
+        ...(journal && { finished: journal.finished, onPoint: journal.append }),
+      },
+    );
+  } finally {
+    display.end();
+  }
+}
+
+/** Failures that the study is not to blame for; any other comes from the engine and refuses the study. */
+const OWN_FAILURES: ReadonlySet<string> = new Set(['internal', 'calculation.workerDied']);
+
+function sayFailure(error: SerializedError, study: string, terminal: Terminal): ExitCode {
+  if (!OWN_FAILURES.has(error.code)) {
+    terminal.say(refusalText(study, [error]));
+    return EXIT.refused;
+  }
+  terminal.say(`farwell: ${error.message}\n  ${error.remedy}`);
+  return EXIT.failed;
+}
+
+function saySummary(results: StudyResults, terminal: Terminal): ExitCode {
+  const unconverged = unconvergedLines(results);
+  for (const line of [...findingsLines(results), ...cautionLines(results), ...unconverged])
+    terminal.say(line);
+  return unconverged.length === 0 ? EXIT.done : EXIT.unconverged;
+}

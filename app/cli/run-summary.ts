@@ -1,0 +1,80 @@
+import type { LevelFindings, LevelResult, StudyResults } from '#engine';
+import { coordinateText } from '../calculation/coordinate-text';
+import { counted } from './wording';
+
+/** More lines of a kind than this would hide everything else; the results file has them all. */
+const MOST_LINES = 12;
+
+/** One line for every point and level that did not converge: where, and why. */
+export function unconvergedLines({ study, points }: StudyResults): readonly string[] {
+  const lines = points.flatMap((point) =>
+    Object.entries(point.levels)
+      .filter(([, result]) => !result.converged)
+      .map(([level, result]) => {
+        const place = point.coordinate === null ? '' : ` at ${coordinateText(study, point.coordinate)}`;
+        return `${level} did not converge${place}: ${reasonText(result.termination)}.`;
+      }),
+  );
+  const more = lines.length - MOST_LINES;
+  return more > 1
+    ? [...lines.slice(0, MOST_LINES), `… and ${more} more, marked in the results file.`]
+    : lines;
+}
+
+function reasonText(termination: LevelResult['termination']): string {
+  switch (termination.kind) {
+    case 'iterationLimit':
+      return `not done after ${counted(termination.limit, 'iteration')}`;
+    case 'stagnated':
+      return `no progress for ${counted(termination.iterationsWithoutProgress, 'iteration')}`;
+    case 'notFinite':
+      return `the ${termination.quantity} became infinite or undefined`;
+    case 'refused':
+      return termination.message.replace(/\.$/, '');
+    case 'cancelled':
+      return 'it was cancelled';
+    case 'converged':
+      return 'what it builds on did not converge';
+  }
+}
+
+/** What can be read off each level's curve. */
+export function findingsLines({ study, findings }: StudyResults): readonly string[] {
+  if (!study.scan) return [];
+  return study.levels.flatMap((level) => {
+    const text = findings[level] && minimumText(findings[level], study);
+    return text === undefined ? [] : [`${level}: ${text}`];
+  });
+}
+
+function minimumText(
+  { minimum, wellDepth }: LevelFindings,
+  study: StudyResults['study'],
+): string | undefined {
+  switch (minimum.kind) {
+    case 'found': {
+      const distance = coordinateText(study, Number(minimum.equilibriumDistance.toFixed(5)));
+      const depth = wellDepth
+        ? `, ${wellDepth.value.toFixed(6)} hartree below the curve at ${coordinateText(study, wellDepth.farEnd)}`
+        : '';
+      return `minimum of ${minimum.energy.toFixed(6)} hartree at ${distance}${depth}`;
+    }
+    case 'atEdge':
+      return `lowest at the end of the range, ${coordinateText(study, minimum.coordinate)}: no minimum inside`;
+    case 'several':
+      return `several minima, near ${minimum.near.map((value) => coordinateText(study, value)).join(' and ')}`;
+    case 'none':
+      return undefined;
+  }
+}
+
+/** What to mistrust about the curve, and whether there is more to read about single points. */
+export function cautionLines({ cautions, points }: StudyResults): readonly string[] {
+  const withCautions = points.filter((point) => point.cautions.length > 0).length;
+  return [
+    ...cautions.map(({ message }) => `Caution: ${message}`),
+    ...(withCautions === 0
+      ? []
+      : [`Cautions at ${withCautions} of ${counted(points.length, 'point')}: see the results file.`]),
+  ];
+}
