@@ -1,6 +1,5 @@
 /** A study explained without computing it: sizes, memory and time per level. */
 export interface StudyExplanation {
-  readonly formula: string;
   readonly electrons: number;
   readonly points: number;
   readonly functions: number;

@@ -1,0 +1,234 @@
+import { z } from 'zod';
+import type {
+  BasisRequest,
+  ScanCoordinate,
+  ShellDefinition,
+  Study,
+  StudyAtom,
+  StudyMolecule,
+  StudyScan,
+} from '#engine';
+
+/*
+ * The form of a study file. What an issue says is made here: every leaf carries one sentence end that says what it
+ * must be ("must be a whole number from 2 to 10 000"), which `explainIssues` completes with place and value.
+ * Whether elements, basis sets and levels exist and fit together is for the engine to say.
+ */
+
+// the window's content-security policy forbids code made from text
+z.config({ jitless: true });
+
+/** Level names of the field, whether or not this version computes them: a typo must not look like a missing method. */
+export const LEVEL_NAMES = ['RHF', 'UHF', 'ROHF', 'MP2', 'CIS', 'CISD', 'CISDT', 'CISDTQ', 'FCI'] as const;
+
+/** What a refused value carries for `explainIssues` beyond its sentence. */
+export interface IssueParams {
+  readonly code: 'study.unknownKey' | 'level.unknown';
+  /** the words that would have been right */
+  readonly known: readonly string[];
+}
+
+function leaf<T>(expectation: string, isRight: (value: unknown) => boolean) {
+  return z.custom<T>(isRight, { error: `must be ${expectation}` });
+}
+
+const isFiniteNumber = (value: unknown): value is number =>
+  typeof value === 'number' && Number.isFinite(value);
+const isIndex = (value: unknown): value is number => Number.isInteger(value) && (value as number) >= 0;
+const withSpaces = (value: number) => String(value).replace(/\B(?=(\d{3})+$)/g, ' ');
+
+const number = leaf<number>('a number', isFiniteNumber);
+const positive = leaf<number>('a number above 0', (value) => isFiniteNumber(value) && value > 0);
+const yesOrNo = leaf<boolean>('true or false', (value) => typeof value === 'boolean');
+
+function wholeNumber(smallest: number, largest: number) {
+  return leaf<number>(
+    `a whole number from ${withSpaces(smallest)} to ${withSpaces(largest)}`,
+    (value) => Number.isInteger(value) && (value as number) >= smallest && (value as number) <= largest,
+  );
+}
+
+function text(longest: number) {
+  return leaf<string>(
+    `a text of at most ${withSpaces(longest)} characters`,
+    (value) => typeof value === 'string' && value.length <= longest,
+  );
+}
+
+const name = leaf<string>(
+  'a name of 1 to 200 characters',
+  (value) => typeof value === 'string' && value.trim() !== '' && value.length <= 200,
+);
+
+/** A list of different atom numbers, such as the two ends of a bond. */
+function atomIndices<T>(count: number, example: string) {
+  return leaf<T>(
+    `${count} different atom numbers counted from 0, such as ${example}`,
+    (value) =>
+      Array.isArray(value) && value.length === count && value.every(isIndex) && new Set(value).size === count,
+  );
+}
+
+function list<T>(item: z.ZodType<T>, what: string, most: number) {
+  const expectation = `must be a list of 1 to ${withSpaces(most)} ${what}`;
+  return z.array(item, { error: expectation }).min(1, expectation).max(most, expectation);
+}
+
+/** An object with these keys and no others: every further key is an issue of its own that knows the right ones. */
+function closed<S extends z.ZodRawShape>(shape: S, known: readonly string[] = Object.keys(shape)) {
+  const params: IssueParams = { code: 'study.unknownKey', known };
+  const unknownKey = z.custom<never>(() => false, { params: { ...params } });
+  // a catch-all that nothing passes adds no keys to the type
+  return z.object(shape, { error: 'must be an object { … }' }).catchall(unknownKey) as unknown as ReturnType<
+    typeof z.strictObject<S>
+  >;
+}
+
+/** Picks the schema by what the value looks like, so that its issues speak of the form that was meant. */
+function oneOf<T>(choose: (value: unknown) => z.ZodType<T>): z.ZodType<T> {
+  return z.unknown().transform((value, context): T => {
+    const result = choose(value).safeParse(value);
+    if (result.success) return result.data;
+    for (const issue of result.error.issues) context.issues.push({ ...issue, input: value } as never);
+    return z.NEVER;
+  });
+}
+
+const hasKey = (value: unknown, ...keys: readonly string[]) =>
+  typeof value === 'object' && value !== null && keys.some((key) => Object.hasOwn(value, key));
+
+const atom: z.ZodType<StudyAtom> = closed({
+  element: leaf<string>(
+    'an element symbol such as "He"',
+    (value) => typeof value === 'string' && value.length <= 50,
+  ),
+  at: leaf<[number, number, number]>(
+    'three numbers [x, y, z]',
+    (value) => Array.isArray(value) && value.length === 3 && value.every(isFiniteNumber),
+  ),
+  isotope: wholeNumber(1, 300).optional(),
+  ghost: yesOrNo.optional(),
+});
+
+const molecule: z.ZodType<StudyMolecule> = closed({
+  unit: leaf<'angstrom' | 'bohr'>(
+    '"angstrom" or "bohr"',
+    (value) => value === 'angstrom' || value === 'bohr',
+  ),
+  atoms: list(atom, 'atoms', 100),
+  charge: wholeNumber(-100, 100).optional(),
+  multiplicity: wholeNumber(1, 100).optional(),
+});
+
+const COORDINATES = ['bonds', 'angle', 'dihedral'];
+const bonds = closed({ bonds: list(atomIndices<[number, number]>(2, '[0, 1]'), 'bonds', 100) }, COORDINATES);
+const angle = closed({ angle: atomIndices<[number, number, number]>(3, '[1, 0, 2]') }, COORDINATES);
+const dihedral = closed(
+  { dihedral: atomIndices<[number, number, number, number]>(4, '[0, 1, 2, 3]') },
+  COORDINATES,
+);
+const coordinate = oneOf<ScanCoordinate>((value) => {
+  if (hasKey(value, 'bonds')) return bonds;
+  if (hasKey(value, 'angle')) return angle;
+  return hasKey(value, 'dihedral') ? dihedral : bonds;
+});
+
+const MOST_POINTS = 10_000;
+const scanKeys = ['coordinate', 'from', 'to', 'count', 'values'];
+const spaced = closed({ coordinate, from: number, to: number, count: wholeNumber(2, MOST_POINTS) }, scanKeys);
+const listed = closed({ coordinate, values: list(number, 'values', MOST_POINTS) }, scanKeys);
+const scan = oneOf<StudyScan>((value) => {
+  if (!hasKey(value, 'values')) return spaced;
+  if (!hasKey(value, 'from', 'to', 'count')) return listed;
+  return z.custom<StudyScan>(() => false, {
+    error: 'must have either "values" or "from", "to" and "count", not both',
+  });
+});
+
+const harmonics = leaf<'spherical' | 'cartesian'>(
+  '"spherical" or "cartesian"',
+  (value) => value === 'spherical' || value === 'cartesian',
+);
+const angularMomentum = wholeNumber(0, 10);
+const shell: z.ZodType<ShellDefinition> = closed({
+  angularMomentum,
+  exponents: list(positive, 'exponents', 100),
+  coefficients: list(number, 'coefficients', 100),
+}).refine(({ exponents, coefficients }) => exponents.length === coefficients.length, {
+  error: 'must have as many coefficients as exponents',
+  path: ['coefficients'],
+});
+const evenTemperedShell = closed({
+  angularMomentum,
+  smallest: positive,
+  ratio: leaf<number>('a number above 1', (value) => isFiniteNumber(value) && value > 1),
+  count: wholeNumber(1, 100),
+});
+
+/** A value for every element symbol. */
+function byElement<T>(item: z.ZodType<T>) {
+  return z.record(z.string(), item, { error: 'must be an object with element symbols as keys' });
+}
+
+const BASIS_KEYS = ['name', 'scaleFactors', 'shells', 'evenTempered', 'harmonics', 'file'];
+const basisForms = {
+  scaleFactors: closed(
+    {
+      name,
+      scaleFactors: byElement(
+        z.record(z.string(), positive, { error: 'must be an object such as { "1s": 1.24 }' }),
+      ),
+    },
+    BASIS_KEYS,
+  ),
+  shells: closed(
+    { name, shells: byElement(list(shell, 'shells', 100)), harmonics: harmonics.optional() },
+    BASIS_KEYS,
+  ),
+  evenTempered: closed(
+    { name, evenTempered: byElement(list(evenTemperedShell, 'shells', 20)), harmonics: harmonics.optional() },
+    BASIS_KEYS,
+  ),
+  file: closed({ file: name }, BASIS_KEYS),
+};
+const basis = oneOf<BasisRequest>((value) => {
+  if (typeof value === 'string') return name;
+  const form = (['scaleFactors', 'shells', 'evenTempered', 'file'] as const).find((key) =>
+    hasKey(value, key),
+  );
+  if (form) return basisForms[form];
+  return typeof value === 'object' && value !== null && !Array.isArray(value)
+    ? basisForms.shells
+    : z.custom<BasisRequest>(() => false, { error: 'must be the name of a basis set or an object { … }' });
+});
+
+const levelParams: IssueParams = { code: 'level.unknown', known: LEVEL_NAMES };
+const level = z.custom<string>((value) => (LEVEL_NAMES as readonly unknown[]).includes(value), {
+  error: `must be one of ${LEVEL_NAMES.join(', ')}`,
+  params: { ...levelParams },
+});
+
+/** @see Study */
+export const studySchema: z.ZodType<Study> = closed({
+  format: z.literal('farwell/study'),
+  version: z.literal(1),
+  title: text(200).optional(),
+  notes: text(20_000).optional(),
+  molecule,
+  scan: scan.optional(),
+  basis,
+  levels: list(level, 'levels', LEVEL_NAMES.length).refine(
+    (levels) => new Set(levels).size === levels.length,
+    {
+      error: 'must not name a level twice',
+    },
+  ),
+  states: wholeNumber(1, 100).optional(),
+  frozenCore: yesOrNo.optional(),
+  convergence: closed({
+    energy: leaf<number>(
+      'a number from 1e-13 to 1e-4 (hartree)',
+      (value) => isFiniteNumber(value) && value >= 1e-13 && value <= 1e-4,
+    ).optional(),
+  }).optional(),
+});
