@@ -1,0 +1,74 @@
+import { describe, expect, it } from 'vitest';
+import { nuclearAttractionMatrix } from '../../../engine/integrals/nuclear-attraction';
+import {
+  attractionByQuadrature,
+  cartesianFunctions,
+  contracted,
+  placedBasis,
+} from '../../support/gaussian-integrals';
+import { heliumHydride, hydrogenMolecule, SZABO_OSTLUND } from '../../support/minimal-molecules';
+
+describe('nuclearAttractionMatrix', () => {
+  it('independent: s to g on different centres, two nuclei, through 1/r = 2/√π ∫ exp(−u²r²) du', () => {
+    const basis = placedBasis([
+      { centre: [0.1, -0.2, 0.3], l: 0, exponents: [0.9, 0.2], coefficients: [0.4, 0.7] },
+      { centre: [0.5, 0.4, -0.6], l: 1, exponents: [0.8, 2.1], coefficients: [0.6, 0.5] },
+      { centre: [-0.4, 0.7, 0.2], l: 2, exponents: [0.6] },
+      { centre: [0.3, 0.1, 0.9], l: 3, exponents: [0.5] },
+      { centre: [0.0, -0.5, 0.4], l: 4, exponents: [0.7] },
+    ]);
+    const nuclei = [
+      { charge: 3, position: [0.1, -0.2, 0.3] as const },
+      { charge: 1.5, position: [0.9, 0.2, -0.4] as const },
+    ];
+    const functions = cartesianFunctions(basis);
+    const matrix = nuclearAttractionMatrix(basis, nuclei);
+    for (let i = 0; i < functions.length; i++) {
+      for (let j = 0; j <= i; j++) {
+        const expected = contracted([functions[i], functions[j]], ([a, b]) =>
+          nuclei.reduce((sum, n) => sum - n.charge * attractionByQuadrature(a, b, n.position), 0),
+        );
+        expect(Math.abs(matrix[i * functions.length + j] - expected)).toBeLessThan(2e-12);
+      }
+    }
+  });
+
+  it.each([
+    [
+      'H2',
+      hydrogenMolecule,
+      0,
+      [
+        ['0 0', '-1.2266'],
+        ['0 1', '-0.5974'],
+        ['1 1', '-0.6538'],
+      ],
+    ],
+    [
+      'HeH+, attraction to He',
+      heliumHydride,
+      0,
+      [
+        ['0 0', '-4.1398'],
+        ['0 1', '-1.1029'],
+        ['1 1', '-1.2652'],
+      ],
+    ],
+    [
+      'HeH+, attraction to H',
+      heliumHydride,
+      1,
+      [
+        ['0 0', '-0.6772'],
+        ['0 1', '-0.4113'],
+        ['1 1', '-1.2266'],
+      ],
+    ],
+  ] as const)('published: %s', (_name, molecule, nucleus, values) => {
+    const matrix = nuclearAttractionMatrix(molecule.basis, [molecule.nuclei[nucleus]]);
+    for (const [place, printed] of values) {
+      const [i, j] = place.split(' ').map(Number);
+      expect(matrix[i * 2 + j]).toMatchPublished({ printed, unit: 'hartree', source: SZABO_OSTLUND });
+    }
+  });
+});
