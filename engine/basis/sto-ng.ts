@@ -1,17 +1,12 @@
-import type { BasisSet, Citation } from './basis-set';
+import type { BasisSet } from './basis-set';
 import type { ShellDefinition } from './contracted-gaussian';
 import { elementMissing } from './element-missing';
+import { citation } from './published-set';
 import { mergeScaleFactors, type ScaleFactorRequest } from './scale-factors';
 import { fitSlaterShell, type SlaterFit, type SlaterShell } from './slater-fit';
 
-const FIRST_PAPER: Citation = {
-  key: 'hehre1969a',
-  text: 'W. J. Hehre, R. F. Stewart, J. A. Pople, J. Chem. Phys. 51, 2657–2664 (1969), doi:10.1063/1.1672392',
-};
-const SECOND_PAPER: Citation = {
-  key: 'hehre1970a',
-  text: 'W. J. Hehre, R. Ditchfield, R. F. Stewart, J. A. Pople, J. Chem. Phys. 52, 2769–2773 (1970), doi:10.1063/1.1673374',
-};
+/** How many Gaussians a Slater function can be fitted by. */
+export const STO_SIZES: readonly number[] = [1, 2, 3, 4, 5, 6];
 
 /**
  * STO-nG: every Slater function of exponent ζ of the atom as a least-squares fit of n Gaussians, α = ζ²·α(ζ = 1).
@@ -49,7 +44,7 @@ export function stoNgBasisSet(
     name,
     harmonics: 'spherical',
     elements: Object.fromEntries(elements),
-    citations: [FIRST_PAPER, SECOND_PAPER],
+    citations: [citation('hehre1969a'), citation('hehre1970a')],
     notes:
       changed.length === 0 ? [] : [`Slater exponents other than the standard ones: ${changed.join(', ')}.`],
   };
