@@ -54,7 +54,7 @@ export function openPool(size: number, start: () => WorkerConnection): WorkerPoo
     return new Promise((resolve, reject) => {
       worker.listen({
         onReply: (reply) => {
-          if (reply.kind === 'failed') return reject(new CalculationFailure(reply.error));
+          if (reply.kind === 'failed') return reject(new CalculationFailure(failedAt(task, reply.error)));
           if (reply.kind === 'free') {
             idle.push(worker);
             return resolve(undefined);
@@ -103,6 +103,10 @@ export function openPool(size: number, start: () => WorkerConnection): WorkerPoo
       workers.clear();
     },
   };
+}
+
+function failedAt(task: Task, error: SerializedError): SerializedError {
+  return { ...error, message: `${error.message} This happened while computing ${task.current()}.` };
 }
 
 function workerDied(place: string, reason: string): SerializedError {

@@ -33,8 +33,10 @@ function reasonText(termination: LevelResult['termination']): string {
       return termination.message.replace(/\.$/, '');
     case 'cancelled':
       return 'it was cancelled';
+    // a level whose own iteration converged is unconverged only through its orbitals
+    case 'orbitalsNotConverged':
     case 'converged':
-      return 'what it builds on did not converge';
+      return 'the orbitals that it builds on did not converge';
   }
 }
 

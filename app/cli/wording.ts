@@ -19,9 +19,10 @@ export function durationText(seconds: number): string {
   if (seconds < 90) return `${Math.round(seconds)} s`;
   const minutes = Math.round(seconds / 60);
   if (minutes < 90) return `${minutes} min`;
-  const hours = Math.round(minutes / 10) / 6;
-  if (hours < 48) return `${Math.floor(hours)} h ${Math.round((hours % 1) * 60)} min`;
-  return `${Math.round(hours / 24).toLocaleString('en-GB')} days`;
+  const tenMinutes = Math.round(minutes / 10);
+  const hours = Math.floor(tenMinutes / 6);
+  if (hours >= 48) return `${Math.round(hours / 24).toLocaleString('en-GB')} days`;
+  return tenMinutes % 6 === 0 ? `${hours} h` : `${hours} h ${(tenMinutes % 6) * 10} min`;
 }
 
 /** `64 kB`, `1.5 GB` */

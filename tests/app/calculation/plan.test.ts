@@ -1,0 +1,53 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import type { FinishedPoint } from '../../../app/calculation/messages';
+import { planRuns, RUN_LENGTH } from '../../../app/calculation/plan';
+
+const finishedPoint = (index: number): FinishedPoint => ({
+  result: { coordinate: index, atoms: [], nuclearRepulsion: 0, levels: {}, cautions: [] },
+  carry: { occupiedOrbitals: Float64Array.of(index) },
+});
+const finishedAt = (indices: readonly number[]) =>
+  new Map(indices.map((index) => [index, finishedPoint(index)]));
+
+describe('planRuns', () => {
+  it('cuts a scan into runs of the same length, the last one shorter', () => {
+    const runs = planRuns(2 * RUN_LENGTH + 1, new Map());
+    expect(runs.map(({ indices }) => indices.length)).toEqual([RUN_LENGTH, RUN_LENGTH, 1]);
+    expect(runs.every(({ guess }) => guess === undefined)).toBe(true);
+  });
+
+  it('goes on inside a run from the orbitals of the last finished point', () => {
+    const [run] = planRuns(RUN_LENGTH, finishedAt([0, 1]));
+    expect(run?.indices[0]).toBe(2);
+    expect(run?.guess?.occupiedOrbitals).toEqual(Float64Array.of(1));
+  });
+
+  it('does not hand orbitals from one run to the next', () => {
+    const [run] = planRuns(2 * RUN_LENGTH, finishedAt([...Array(RUN_LENGTH).keys()]));
+    expect(run).toEqual({
+      indices: Array.from({ length: RUN_LENGTH }, (_, i) => RUN_LENGTH + i),
+      guess: undefined,
+    });
+  });
+
+  it('leaves out nothing and repeats nothing, and each point has the same predecessor as in an unbroken run', () => {
+    const scan = fc
+      .integer({ min: 1, max: 40 })
+      .chain((points) => fc.tuple(fc.constant(points), fc.uniqueArray(fc.nat({ max: points - 1 }))));
+    fc.assert(
+      fc.property(scan, ([points, finished]) => {
+        const runs = planRuns(points, finishedAt(finished));
+        const planned = runs.flatMap(({ indices }) => indices);
+        expect([...planned, ...finished].sort((a, b) => a - b)).toEqual([...Array(points).keys()]);
+        for (const { indices, guess } of runs) {
+          indices.forEach((index, position) => {
+            const predecessor = position === 0 ? guess?.occupiedOrbitals[0] : indices[position - 1];
+            expect(predecessor).toBe(index % RUN_LENGTH === 0 ? undefined : index - 1);
+          });
+        }
+      }),
+      { seed: 20261201 },
+    );
+  });
+});
