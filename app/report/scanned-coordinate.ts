@@ -53,6 +53,10 @@ export function coordinateScale(results: StudyResults, shared: ScannedCoordinate
 export const coordinateHeading = ({ label, unit }: ScannedCoordinate): string =>
   unit ? `${label} (${unit})` : label;
 
+/** `0.7414 Å`, `104.5°`: without the noise of evenly spaced doubles */
+export const coordinateText = (value: number, unit: string): string =>
+  `${Number(value.toFixed(6))}${unit === '°' ? '' : ' '}${unit}`;
+
 const DESCRIPTIONS = {
   distance: 'a scan of a distance',
   angle: 'a scan of an angle',

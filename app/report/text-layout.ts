@@ -1,10 +1,11 @@
-/** Advances of characters in units of the type size, on the wide side of the usual sans-serif faces. */
+/** Advances of characters in units of the type size, about those of the widest of the usual sans-serif faces. */
 const ADVANCES: readonly { readonly characters: RegExp; readonly advance: number }[] = [
-  { characters: /[ijlt.,:;'()\s]/, advance: 0.28 },
-  { characters: /[A-LN-VX-Z0-9+−–]/, advance: 0.57 },
-  { characters: /[mwMW]/, advance: 0.8 },
+  { characters: /[fijlt.,:;'()\s]/, advance: 0.28 },
+  { characters: /[r-]/, advance: 0.34 },
+  { characters: /[mwMW]/, advance: 0.83 },
+  { characters: /[A-Z]/, advance: 0.69 },
 ];
-const OTHER_ADVANCE = 0.51;
+const OTHER_ADVANCE = 0.55;
 
 /** Width of a line of text, estimated so that figures come out the same on every machine. */
 export function textWidth(text: string, size: number): number {

@@ -1,0 +1,59 @@
+import type { LevelFindings, StudyResults } from '#engine';
+import { coordinateText } from './scanned-coordinate';
+
+/** What was read off the curves, a row a level, as text to be printed. */
+export interface FindingsRow {
+  readonly file: string;
+  readonly level: string;
+  readonly minimum: string;
+  /** hartree */
+  readonly energyAtMinimum: string;
+  /** hartree, against the far end of the curve */
+  readonly depth: string;
+}
+
+export const FINDINGS_HEADINGS = [
+  'Level',
+  'Minimum',
+  'Energy there (hartree)',
+  'Depth against the far end (hartree)',
+] as const;
+
+const ENERGY_DECIMALS = 6;
+const FEWEST_DISTANCE_DECIMALS = 2;
+const MOST_DISTANCE_DECIMALS = 6;
+
+export function findingsRows(results: StudyResults, file: string, unit: string): readonly FindingsRow[] {
+  return results.study.levels.flatMap((level): FindingsRow[] => {
+    const findings = results.findings[level];
+    if (!findings) return [];
+    const { minimum, wellDepth } = findings;
+    return [
+      {
+        file,
+        level,
+        minimum: minimumText(minimum, unit),
+        energyAtMinimum: minimum.kind === 'found' ? minimum.energy.toFixed(ENERGY_DECIMALS) : '',
+        depth: wellDepth
+          ? `${wellDepth.value.toFixed(ENERGY_DECIMALS)} (at ${coordinateText(wellDepth.farEnd, unit)})`
+          : '',
+      },
+    ];
+  });
+}
+
+function minimumText(minimum: LevelFindings['minimum'], unit: string): string {
+  switch (minimum.kind) {
+    case 'found': {
+      const digits = Math.ceil(-Math.log10(Math.max(minimum.uncertainty, Number.MIN_VALUE)));
+      const decimals = Math.min(MOST_DISTANCE_DECIMALS, Math.max(FEWEST_DISTANCE_DECIMALS, digits));
+      return `${minimum.equilibriumDistance.toFixed(decimals)} ${unit}`;
+    }
+    case 'atEdge':
+      return `lowest at the edge of the range, ${coordinateText(minimum.coordinate, unit)}`;
+    case 'several':
+      return `several, near ${minimum.near.map((place) => coordinateText(place, unit)).join(', ')}`;
+    case 'none':
+      return `none: ${minimum.reason}`;
+  }
+}

@@ -1,0 +1,162 @@
+import type { PointResult, StudyResults } from '#engine';
+import { type EnergyColumn, type EnergyEntry, energyColumns } from '../study/energy-columns';
+import { coordinateHeading, coordinateScale, sharedCoordinate } from './scanned-coordinate';
+
+/** Energies and correlation energies as a table to be printed; minus signs and dashes are left to the format. */
+export interface ResultTable {
+  readonly coordinateHeading: string;
+  /** columns that share a quantity (and, of several files, the file) */
+  readonly blocks: readonly TableBlock[];
+  readonly rows: readonly TableRow[];
+  /** sentences that explain what stands in the cells */
+  readonly notes: readonly string[];
+}
+
+export interface TableBlock {
+  /** name of the file, empty for a single one */
+  readonly file: string;
+  readonly quantity: string;
+  readonly columns: readonly string[];
+}
+
+export interface TableRow {
+  readonly coordinate: string;
+  /** a number, or one of the two marks below */
+  readonly cells: readonly string[];
+}
+
+export const NOT_CONVERGED = 'n.c.';
+export const NOT_COMPUTED = '';
+
+/** More decimals say nothing at the usual thresholds, and make columns too wide. */
+const MOST_DECIMALS = 8;
+const LEAST_DECIMALS = 3;
+/** Of coordinates; evenly spaced scans have endless decimals. */
+const MOST_COORDINATE_DECIMALS = 6;
+
+/**
+ * One row for every coordinate that any of the files has, in rising order; one column for every energy and for
+ * every correlation energy.
+ *
+ * @throws ReportError `report.coordinatesDiffer`
+ */
+export function resultTable(results: readonly StudyResults[], names: readonly string[]): ResultTable {
+  const shared = sharedCoordinate(results, names);
+  const decimals = Math.min(...results.map(energyDecimals));
+  const columns = results.flatMap((file, index) =>
+    fileColumns(file, results.length > 1 ? (names[index] ?? '') : ''),
+  );
+  const pointsByCoordinate = results.map((file) => {
+    const scale = coordinateScale(file, shared);
+    return new Map(file.points.map((point) => [scaledKey(point, scale), point]));
+  });
+  const keys = [...new Set(pointsByCoordinate.flatMap((points) => [...points.keys()]))].sort((a, b) => a - b);
+  const coordinateDecimals = decimalsOf(keys);
+  const rows = keys.map(
+    (key): TableRow => ({
+      coordinate: shared.kind === 'none' ? 'as given' : key.toFixed(coordinateDecimals),
+      cells: results.flatMap((file, index) => {
+        const point = pointsByCoordinate[index]?.get(key);
+        return columns
+          .filter((column) => column.results === file)
+          .map(({ valueAt }) => cellText(point && valueAt(point), decimals));
+      }),
+    }),
+  );
+  return {
+    coordinateHeading: coordinateHeading(shared),
+    blocks: blocksOf(columns),
+    rows,
+    notes: notesOf(results, rows),
+  };
+}
+
+/** Two digits short of the convergence threshold, so that every printed digit is converged. */
+function energyDecimals({ study }: StudyResults): number {
+  const digits = Math.floor(-Math.log10(study.convergence.energy)) - 1;
+  return Math.min(MOST_DECIMALS, Math.max(LEAST_DECIMALS, digits));
+}
+
+interface TableColumn {
+  readonly results: StudyResults;
+  readonly file: string;
+  readonly quantity: string;
+  readonly label: string;
+  readonly valueAt: (
+    point: PointResult,
+  ) => { readonly value: number; readonly converged: boolean } | undefined;
+}
+
+function fileColumns(results: StudyResults, file: string): readonly TableColumn[] {
+  const columns = energyColumns(results);
+  const tableColumn = (
+    { label, entryAt }: EnergyColumn,
+    quantity: string,
+    pick: (entry: EnergyEntry) => number | undefined,
+  ): TableColumn => ({
+    results,
+    file,
+    quantity,
+    label,
+    valueAt: (point) => {
+      const entry = entryAt(point);
+      const value = entry && pick(entry);
+      return value === undefined ? undefined : { value, converged: entry?.converged ?? false };
+    },
+  });
+  const hasCorrelation = ({ entryAt }: EnergyColumn) =>
+    results.points.some((point) => entryAt(point)?.correlation !== undefined);
+  return [
+    ...columns.map((column) => tableColumn(column, 'Energy (hartree)', ({ energy }) => energy)),
+    ...columns
+      .filter(hasCorrelation)
+      .map((column) => tableColumn(column, 'Correlation energy (hartree)', ({ correlation }) => correlation)),
+  ];
+}
+
+function blocksOf(columns: readonly TableColumn[]): readonly TableBlock[] {
+  const blocks: { file: string; quantity: string; columns: string[] }[] = [];
+  for (const { file, quantity, label } of columns) {
+    const last = blocks.at(-1);
+    if (last?.file === file && last.quantity === quantity) last.columns.push(label);
+    else blocks.push({ file, quantity, columns: [label] });
+  }
+  return blocks;
+}
+
+function cellText(
+  entry: { readonly value: number; readonly converged: boolean } | undefined,
+  decimals: number,
+): string {
+  if (!entry) return NOT_COMPUTED;
+  return entry.converged && Number.isFinite(entry.value) ? entry.value.toFixed(decimals) : NOT_CONVERGED;
+}
+
+/** Rounded, so that equal distances of several files meet in one row in spite of the last bits of a conversion. */
+const scaledKey = ({ coordinate }: PointResult, scale: number): number =>
+  coordinate === null ? 0 : Number((coordinate * scale).toFixed(9));
+
+function decimalsOf(values: readonly number[]): number {
+  const isExact = (decimals: number) =>
+    values.every((value) => Math.abs(Number(value.toFixed(decimals)) - value) < 1e-10);
+  return (
+    Array.from({ length: MOST_COORDINATE_DECIMALS }, (_, decimals) => decimals).find(isExact) ??
+    MOST_COORDINATE_DECIMALS
+  );
+}
+
+function notesOf(results: readonly StudyResults[], rows: readonly TableRow[]): readonly string[] {
+  const cells = rows.flatMap((row) => row.cells);
+  return [
+    ...(cells.includes(NOT_CONVERGED)
+      ? [
+          `${NOT_CONVERGED}: the iteration did not converge; the number it ended with is in the results file only.`,
+        ]
+      : []),
+    ...(results.some(({ study }) => study.levels.includes('CIS'))
+      ? [
+          'CIS describes excited states and gives no correlation energy of the ground state (Brillouin’s theorem); its energies are those of its states.',
+        ]
+      : []),
+  ];
+}

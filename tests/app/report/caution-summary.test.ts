@@ -1,0 +1,27 @@
+import { describe, expect, it } from 'vitest';
+import { cautionSummary } from '../../../app/report/caution-summary';
+import { sampleResults } from '../../support/sample-results';
+
+const asAngstrom = (coordinate: number) => `${coordinate} Å`;
+
+describe('cautionSummary', () => {
+  it('says a caution that many points share once, with where it holds', () => {
+    expect(cautionSummary(sampleResults(), asAngstrom)).toEqual([
+      'RHF between 2.1 Å and 4 Å (20 points): The closed-shell solution is not the lowest one here: breaking the spin pairing lowers the energy.',
+    ]);
+  });
+
+  it('keeps cautions of different levels apart, and those of the whole curve without a place', () => {
+    const results = sampleResults();
+    const point = {
+      ...results.points[0]!,
+      cautions: ['CISD', 'FCI'].map((level) => ({ code: 'x', level, message: 'm.' })),
+    };
+    const whole = { code: 'basis.dependent', message: 'Two functions were dropped.' };
+    expect(cautionSummary({ ...results, points: [point], cautions: [whole] }, asAngstrom)).toEqual([
+      'Two functions were dropped.',
+      'CISD at 0.4 Å: m.',
+      'FCI at 0.4 Å: m.',
+    ]);
+  });
+});
