@@ -2,7 +2,6 @@ import { readFile } from 'node:fs/promises';
 import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
 import { app, BrowserWindow, ipcMain, Menu, protocol, session } from 'electron';
-import { runCommandLine } from '../cli/main';
 import { createService } from '../service/service';
 import { commandLineOf } from './command-line';
 import { registerRequests } from './ipc-handlers';
@@ -16,6 +15,8 @@ const PROGRAM_FOLDER = join(import.meta.dirname, '..');
 
 const commandLine = commandLineOf(process.argv, app.isPackaged);
 if (commandLine !== undefined) {
+  // loaded here only: the window needs none of it
+  const { runCommandLine } = await import('../cli/main');
   app.dock?.hide();
   app.exit(await runCommandLine(commandLine));
 } else if (app.requestSingleInstanceLock()) {
