@@ -1,7 +1,7 @@
 import { closeSync, fsyncSync, ftruncateSync, openSync, readFileSync, rmSync, writeSync } from 'node:fs';
 import { deserialize, serialize } from 'node:v8';
 import type { FinishedPoint } from './messages';
-import { sha256 } from './study-key';
+import { sha256 } from './sha256';
 
 /*
  * The journal of a run: what survives when the run is interrupted, killed, or the machine stops.

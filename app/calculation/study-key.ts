@@ -1,6 +1,6 @@
-import { createHash } from 'node:crypto';
 import { describeBasisUsed, type PreparedStudy } from '#engine';
 import { PROGRAM } from './program';
+import { sha256 } from './sha256';
 
 /**
  * Names everything that a point's numbers depend on: two runs with the same key compute the same points.
@@ -13,10 +13,6 @@ export function studyKey(prepared: PreparedStudy): string {
   const { title: _title, notes: _notes, ...study } = prepared.study;
   const { harmonics, shells } = describeBasisUsed(prepared);
   return sha256(canonicalJson({ study, program: PROGRAM, harmonics, shells }));
-}
-
-export function sha256(text: string): string {
-  return createHash('sha256').update(text).digest('hex');
 }
 
 /** JSON with the keys of every object in alphabetical order. */

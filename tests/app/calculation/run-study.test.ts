@@ -1,0 +1,165 @@
+import { describe, expect, it } from 'vitest';
+import { type PreparedStudy, prepareStudy, type Study } from '#engine';
+import type { FinishedPoint, WorkerRequest } from '../../../app/calculation/messages';
+import type { Progress } from '../../../app/calculation/progress';
+import { type RunOptions, runStudy } from '../../../app/calculation/run-study';
+import { serve } from '../../../app/calculation/serve';
+import type { StartWorker } from '../../../app/calculation/worker-thread';
+
+const study: Study = {
+  format: 'farwell/study',
+  version: 1,
+  molecule: {
+    unit: 'bohr',
+    atoms: [
+      { element: 'He', at: [0, 0, 0] },
+      { element: 'H', at: [0, 0, 1.4632] },
+    ],
+    charge: 1,
+  },
+  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.9, to: 5.1, count: 10 },
+  basis: 'STO-3G',
+  levels: ['RHF', 'CIS', 'FCI'],
+};
+
+function prepared(changes: Partial<Study> = {}): PreparedStudy {
+  const preparation = prepareStudy({ ...study, ...changes });
+  if (!preparation.ok) throw preparation.errors[0];
+  return preparation.prepared;
+}
+
+/** A worker in this thread: the server itself, with messages cloned and delayed as a thread would. */
+const startHere: StartWorker = (start) => {
+  let hasEnded = false;
+  let onReply: Parameters<ReturnType<StartWorker>['listen']>[0]['onReply'] = () => undefined;
+  let onRequest: (request: WorkerRequest) => void = () => undefined;
+  const deliver = <T>(message: T, to: () => (message: T) => void) => {
+    const copy = structuredClone(message);
+    setImmediate(() => hasEnded || to()(copy));
+  };
+  serve(
+    {
+      post: (reply) => deliver(reply, () => onReply),
+      onMessage: (listener) => {
+        onRequest = listener;
+      },
+    },
+    structuredClone(start),
+  );
+  return {
+    post: (request) => deliver(request, () => onRequest),
+    listen: (listeners) => {
+      onReply = listeners.onReply;
+    },
+    end: () => {
+      hasEnded = true;
+    },
+  };
+};
+
+async function resultsOf(options: RunOptions = {}, changes: Partial<Study> = {}) {
+  const outcome = await runStudy({ prepared: prepared(changes) }, { startWorker: startHere, ...options });
+  if (outcome.kind !== 'done') throw new Error(JSON.stringify(outcome));
+  return outcome.results;
+}
+
+describe('runStudy', () => {
+  it('gives every point in the order of the scan, and findings and basis for the study as run', async () => {
+    const results = await resultsOf({ workers: 3 });
+    expect(results.points.map(({ coordinate }) => coordinate)).toEqual(prepared().coordinates);
+    for (const { levels } of results.points) {
+      expect(Object.keys(levels)).toEqual(study.levels);
+      expect(Object.values(levels).every(({ converged }) => converged)).toBe(true);
+    }
+    expect(Object.keys(results.findings)).toEqual(study.levels);
+    expect(results.findings['FCI']?.minimum.kind).toBe('found');
+    expect(results.study).toMatchObject({ ...study, molecule: { charge: 1, multiplicity: 1 }, states: 1 });
+    expect(results.basis).toMatchObject({ name: 'STO-3G', functions: 2 });
+  });
+
+  it('gives the same numbers to the last bit with any number of workers', async () => {
+    expect(await resultsOf({ workers: 1 })).toEqual(await resultsOf({ workers: 4 }));
+  });
+
+  it('gives the same numbers to the last bit wherever it was interrupted, and computes no point twice', async () => {
+    const unbroken = await resultsOf();
+    const all = new Map<number, FinishedPoint>();
+    await resultsOf({ onPoint: (index, point) => all.set(index, point) });
+    for (const known of [[0], [0, 1, 2], [0, 1, 2, 3], [4, 5, 8], [...all.keys()]]) {
+      const finished = new Map(known.map((index) => [index, all.get(index)!]));
+      const computed: number[] = [];
+      expect(await resultsOf({ workers: 2, finished, onPoint: (index) => computed.push(index) })).toEqual(unbroken);
+      expect(computed.sort((a, b) => a - b)).toEqual([...all.keys()].filter((i) => !known.includes(i)).sort((a, b) => a - b));
+    }
+  });
+
+  it('tells how far it is, first for the points, then for the minima', async () => {
+    const told: Progress[] = [];
+    const finished = new Map<number, FinishedPoint>();
+    await resultsOf({ onPoint: (index, point) => index < 3 && finished.set(index, point) });
+    await resultsOf({ workers: 1, finished, onProgress: (progress) => told.push(progress) });
+    const points = told.filter(({ stage }) => stage === 'points');
+    expect(points.map(({ done }) => done)).toEqual([3, 4, 5, 6, 7, 8, 9, 10]);
+    expect(points[0]?.secondsLeft).toBeUndefined();
+    expect(points[1]?.secondsLeft).toBeGreaterThan(0);
+    expect(points.at(-1)?.secondsLeft).toBe(0);
+    expect(told.slice(points.length).map(({ done, total }) => [done, total])).toEqual([0, 1, 2, 3].map((done) => [done, 3]));
+  });
+
+  it('stops at once when it is cancelled, and says nothing afterwards', async () => {
+    const cancel = new AbortController();
+    let points = 0;
+    const outcome = await runStudy(
+      { prepared: prepared() },
+      {
+        startWorker: startHere,
+        signal: cancel.signal,
+        onPoint: () => {
+          points++;
+          if (points === 3) cancel.abort();
+        },
+      },
+    );
+    expect(outcome).toEqual({ kind: 'cancelled' });
+    await new Promise((resolve) => setTimeout(resolve, 50));
+    expect(points).toBe(3);
+    expect(await runStudy({ prepared: prepared() }, { startWorker: startHere, signal: cancel.signal })).toEqual({
+      kind: 'cancelled',
+    });
+  });
+
+  it('gives the same numbers although a worker died on the way', async () => {
+    let deaths = 0;
+    const startMortal: StartWorker = (start) => {
+      const worker = startHere(start);
+      return {
+        ...worker,
+        listen: ({ onReply, onDeath }) =>
+          worker.listen({
+            onDeath,
+            onReply: (reply) => {
+              if (deaths > 0 || reply.kind !== 'point' || reply.index !== 5) return onReply(reply);
+              deaths++;
+              worker.end();
+              onDeath('it was shot');
+            },
+          }),
+      };
+    };
+    expect(await resultsOf({ startWorker: startMortal, workers: 2 })).toEqual(await resultsOf());
+    expect(deaths).toBe(1);
+  });
+
+  it('fails with the error of whoever keeps the points', async () => {
+    const onPoint = () => {
+      throw new Error('disk full');
+    };
+    await expect(resultsOf({ onPoint })).rejects.toThrow('disk full');
+  });
+
+  it('computes a single geometry', async () => {
+    const { points, findings } = await resultsOf({}, { scan: undefined, levels: ['RHF'] });
+    expect(points.map(({ coordinate }) => coordinate)).toEqual([null]);
+    expect(findings['RHF']?.minimum.kind).toBe('none');
+  });
+});

@@ -1,0 +1,55 @@
+import { type ChildProcess, execFileSync, spawn } from 'node:child_process';
+import { once } from 'node:events';
+import { join } from 'node:path';
+
+const ROOT = join(import.meta.dirname, '..', '..');
+const FARWELL = join(ROOT, 'out', 'farwell.js');
+
+/** Brings `out/` up to date with the sources; costs nothing if it is. */
+export function buildProgram(): void {
+  execFileSync(process.execPath, [join(ROOT, 'app', 'build.mjs'), '--if-changed'], { stdio: ['ignore', 'ignore', 'inherit'] });
+}
+
+export interface Ended {
+  /** exit status, or the name of the signal that ended the process */
+  readonly status: number | NodeJS.Signals;
+  readonly stdout: string;
+  readonly stderr: string;
+}
+
+export interface RunningProgram {
+  readonly process: ChildProcess;
+  readonly ended: Promise<Ended>;
+  /** resolves when standard error holds the text */
+  saw(text: string): Promise<void>;
+}
+
+/** Starts the built `farwell` as a child process. */
+export function startFarwell(...argv: readonly string[]): RunningProgram {
+  const child = spawn(process.execPath, [FARWELL, ...argv], { stdio: ['ignore', 'pipe', 'pipe'] });
+  let stdout = '';
+  let stderr = '';
+  child.stdout.setEncoding('utf8').on('data', (text: string) => {
+    stdout += text;
+  });
+  child.stderr.setEncoding('utf8').on('data', (text: string) => {
+    stderr += text;
+  });
+  const ended = once(child, 'close').then(([code, signal]: (number | NodeJS.Signals | null)[]) => ({
+    status: code ?? signal ?? 'SIGKILL',
+    stdout,
+    stderr,
+  })) as Promise<Ended>;
+  return {
+    process: child,
+    ended,
+    async saw(text) {
+      while (!stderr.includes(text) && child.exitCode === null) await once(child.stderr, 'data');
+    },
+  };
+}
+
+/** Runs the built `farwell` to its end. */
+export function farwell(...argv: readonly string[]): Promise<Ended> {
+  return startFarwell(...argv).ended;
+}
