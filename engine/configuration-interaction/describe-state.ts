@@ -1,0 +1,77 @@
+import { dot } from '../linear-algebra/dense';
+import { type DeterminantSpace, determinantAt } from './determinant-space';
+import { occupiedOrbitals } from './determinants';
+import { naturalOrbitals, oneParticleDensity } from './one-particle-density';
+import { applySpinSquared, type SpinName, spinName } from './spin';
+
+/** A determinant of a CI vector; active orbitals counted from 0. */
+export interface WeightedDeterminant {
+  readonly coefficient: number;
+  readonly weight: number;
+  readonly alpha: readonly number[];
+  readonly beta: readonly number[];
+}
+
+export interface ConfigurationInteractionState {
+  /** hartree, core energy included */
+  readonly energy: number;
+  /** ‖Hc − Ec‖, hartree */
+  readonly residual: number;
+  readonly sSquared: number;
+  readonly spin: SpinName;
+  /** weight of the reference determinant */
+  readonly referenceWeight: number;
+  /** falling weight: the largest `LEADING_COUNT` above `LEADING_WEIGHT` */
+  readonly leading: readonly WeightedDeterminant[];
+  /** spin-summed one-particle density over active orbitals, n×n row-major */
+  readonly density: Float64Array;
+  /** of the active orbitals, falling */
+  readonly naturalOccupations: readonly number[];
+}
+
+export const LEADING_COUNT = 8;
+export const LEADING_WEIGHT = 1e-3;
+
+/**
+ * What one normalised CI vector says. The sign of the vector is chosen so that the coefficient of largest size is
+ * positive.
+ */
+export function describeState(
+  space: DeterminantSpace,
+  vector: Float64Array,
+  energy: number,
+  residual: number,
+): ConfigurationInteractionState {
+  const product = new Float64Array(vector.length);
+  applySpinSquared(space, vector, product);
+  const sSquared = dot(vector, product);
+  const density = oneParticleDensity(space, vector);
+  return {
+    energy,
+    residual,
+    sSquared,
+    spin: spinName(sSquared),
+    referenceWeight: vector[0] ** 2,
+    leading: leadingDeterminants(space, vector),
+    density,
+    naturalOccupations: Array.from(naturalOrbitals(density, space.orbitalCount).values),
+  };
+}
+
+function leadingDeterminants(space: DeterminantSpace, vector: Float64Array): WeightedDeterminant[] {
+  const places: number[] = [];
+  for (let place = 0; place < vector.length; place++) {
+    if (vector[place] ** 2 > LEADING_WEIGHT) places.push(place);
+  }
+  places.sort((a, b) => vector[b] ** 2 - vector[a] ** 2 || a - b);
+  const sign = vector[places[0]] < 0 ? -1 : 1;
+  return places.slice(0, LEADING_COUNT).map((place) => {
+    const { alpha, beta } = determinantAt(space, place);
+    return {
+      coefficient: sign * vector[place],
+      weight: vector[place] ** 2,
+      alpha: occupiedOrbitals(alpha),
+      beta: occupiedOrbitals(beta),
+    };
+  });
+}

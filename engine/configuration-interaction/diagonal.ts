@@ -1,0 +1,87 @@
+import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
+import type { DeterminantSpace } from './determinant-space';
+import { isOccupied, occupiedOrbitals } from './determinants';
+import { stringEnergy } from './same-spin';
+import { type StringSpace, stringAt } from './string-space';
+
+/**
+ * ⟨D|H|D⟩ averaged over all ways to give the open shells of D their spins (M fixed), for every determinant of the
+ * space, hartree. Determinants that differ only in those spins share one value; so a preconditioner made of it
+ * commutes with S² and never mixes spins.
+ *
+ * The average replaces −K(ij) of open shells with equal spins by −f·K(ij) for every pair of open shells, where f
+ * is the fraction of pairs with equal spins.
+ */
+export function spinAveragedDiagonal(space: DeterminantSpace, integrals: OrbitalIntegrals): Float64Array {
+  const n = space.orbitalCount;
+  const coulomb = new Float64Array(n * n);
+  const exchange = new Float64Array(n * n);
+  for (let p = 0; p < n; p++) {
+    for (let q = 0; q < n; q++) {
+      coulomb[p * n + q] = integrals.twoElectron[packedPair(packedPair(p, p), packedPair(q, q))];
+      exchange[p * n + q] = integrals.twoElectron[packedPair(packedPair(p, q), packedPair(p, q))];
+    }
+  }
+  const alpha = describeStrings(space.alpha, integrals);
+  const beta = space.beta === space.alpha ? alpha : describeStrings(space.beta, integrals);
+  const betaCoulomb = new Float64Array(n);
+  const openAlpha = new Int32Array(n);
+  const openBeta = new Int32Array(n);
+  const diagonal = new Float64Array(space.dimension);
+
+  for (let b = 0; b < space.beta.count; b++) {
+    const betaOccupied = beta.occupied[b];
+    const betaString = stringAt(space.beta, b);
+    for (let p = 0; p < n; p++) {
+      let sum = 0;
+      for (const j of betaOccupied) sum += coulomb[p * n + j];
+      betaCoulomb[p] = sum;
+    }
+    const start = space.rows.start[b];
+    for (let a = 0; start + a < space.rows.start[b + 1]; a++) {
+      let value = integrals.coreEnergy + alpha.energy[a] + beta.energy[b];
+      let alphaOpen = 0;
+      let betaOpen = 0;
+      for (const i of alpha.occupied[a]) {
+        value += betaCoulomb[i];
+        if (!isOccupied(betaString, i)) openAlpha[alphaOpen++] = i;
+      }
+      const alphaString = alpha.string[a];
+      for (const i of betaOccupied) if (!isOccupied(alphaString, i)) openBeta[betaOpen++] = i;
+      diagonal[start + a] =
+        value + averagingCorrection(exchange, n, openAlpha, alphaOpen, openBeta, betaOpen);
+    }
+  }
+  return diagonal;
+}
+
+function describeStrings(space: StringSpace, integrals: OrbitalIntegrals) {
+  const string = Array.from({ length: space.count }, (_, place) => stringAt(space, place));
+  const occupied = string.map(occupiedOrbitals);
+  const energy = Float64Array.from(occupied, (orbitals) => stringEnergy(orbitals, integrals));
+  return { string, occupied, energy };
+}
+
+/** Equal-spin exchange of the open shells as it is, against its average. */
+function averagingCorrection(
+  exchange: Float64Array,
+  n: number,
+  openAlpha: Int32Array,
+  alphaOpen: number,
+  openBeta: Int32Array,
+  betaOpen: number,
+): number {
+  const open = alphaOpen + betaOpen;
+  if (open < 2) return 0;
+  let equal = 0;
+  for (let i = 1; i < alphaOpen; i++)
+    for (let j = 0; j < i; j++) equal += exchange[openAlpha[i] * n + openAlpha[j]];
+  for (let i = 1; i < betaOpen; i++)
+    for (let j = 0; j < i; j++) equal += exchange[openBeta[i] * n + openBeta[j]];
+  let opposite = 0;
+  for (let i = 0; i < alphaOpen; i++) {
+    for (let j = 0; j < betaOpen; j++) opposite += exchange[openAlpha[i] * n + openBeta[j]];
+  }
+  const fraction = (alphaOpen * (alphaOpen - 1) + betaOpen * (betaOpen - 1)) / (open * (open - 1));
+  return equal - fraction * (equal + opposite);
+}

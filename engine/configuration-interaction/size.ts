@@ -1,0 +1,80 @@
+import { davidsonVectorCount } from '../linear-algebra/davidson';
+import { wordsOf } from './determinants';
+import { countSameSpinEntries, countSingleReplacements } from './replacements';
+import { highestRank } from './string-space';
+
+/**
+ * Guess vectors beyond the states wanted, at most. They keep a state from being missed whose symmetry or spin
+ * the lowest guesses lack.
+ */
+export const MAXIMUM_GUARDS = 4;
+
+/** Basis vectors of the eigensolver: room for several steps of every state before it must collapse. */
+export function basisVectorLimit(guesses: number): number {
+  return 2 * guesses + 8;
+}
+
+/**
+ * Number of determinants up to an excitation rank, counted in spin orbitals against the lowest determinant.
+ *
+ * @param rankLimit - Infinity, or at least the number of electrons, for full CI
+ * @returns exact; the nearest double where there are more than 2⁵³
+ */
+export function countDeterminants(
+  orbitalCount: number,
+  alphaElectrons: number,
+  betaElectrons: number,
+  rankLimit: number,
+): number {
+  const alpha = countStrings(orbitalCount, alphaElectrons, rankLimit);
+  const beta = countStrings(orbitalCount, betaElectrons, rankLimit);
+  let total = 0n;
+  alpha.forEach((alphaCount, alphaRank) => {
+    beta.forEach((betaCount, betaRank) => {
+      if (alphaRank + betaRank <= rankLimit) total += alphaCount * betaCount;
+    });
+  });
+  return Number(total);
+}
+
+/** Strings of each rank. */
+function countStrings(orbitalCount: number, electrons: number, rankLimit: number): bigint[] {
+  const ranks = highestRank(orbitalCount, electrons, rankLimit) + 1;
+  return Array.from({ length: ranks }, (_, k) => choose(electrons, k) * choose(orbitalCount - electrons, k));
+}
+
+function choose(n: number, k: number): bigint {
+  let value = 1n;
+  for (let i = 1; i <= k; i++) value = (value * BigInt(n - k + i)) / BigInt(i);
+  return value;
+}
+
+/** Per replacement: two orders of a pair or target, a source and a sign. */
+const BYTES_PER_REPLACEMENT = 2 * (4 + 4 + 1);
+/** Column and value, twice while the lists are cut to length. */
+const BYTES_PER_SAME_SPIN_ENTRY = 2 * (4 + 8);
+/** Vectors beside the eigensolver's: the diagonal, two transposed ones, one gathered. */
+const WORKING_VECTORS = 4;
+
+/** Upper bound of the memory that `solveConfigurationInteraction` takes, in bytes; integrals not included. */
+export function configurationInteractionBytes(
+  orbitalCount: number,
+  alphaElectrons: number,
+  betaElectrons: number,
+  rankLimit: number,
+  states: number,
+): number {
+  const determinants = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, rankLimit);
+  const vectors = davidsonVectorCount(basisVectorLimit(states + MAXIMUM_GUARDS)) + WORKING_VECTORS;
+  const spins = alphaElectrons === betaElectrons ? [alphaElectrons] : [alphaElectrons, betaElectrons];
+  let bytes = 8 * determinants * vectors;
+  for (const electrons of spins) {
+    const virtuals = orbitalCount - electrons;
+    const strings = countStrings(orbitalCount, electrons, rankLimit).map(Number);
+    const count = strings.reduce((sum, ofRank) => sum + ofRank, 0);
+    bytes += count * (4 * wordsOf(orbitalCount) + 4 * orbitalCount);
+    bytes += BYTES_PER_REPLACEMENT * countSingleReplacements(electrons, virtuals, strings);
+    bytes += BYTES_PER_SAME_SPIN_ENTRY * countSameSpinEntries(electrons, virtuals, strings);
+  }
+  return bytes;
+}

@@ -1,0 +1,77 @@
+import type { DeterminantSpace } from './determinant-space';
+import { rankChange } from './replacements';
+
+export type SpinName =
+  | 'singlet'
+  | 'doublet'
+  | 'triplet'
+  | 'quartet'
+  | 'quintet'
+  | 'sextet'
+  | 'septet'
+  | 'mixed';
+
+const NAMES: readonly SpinName[] = [
+  'singlet',
+  'doublet',
+  'triplet',
+  'quartet',
+  'quintet',
+  'sextet',
+  'septet',
+];
+
+/**
+ * How far ⟨S²⟩ may lie from S(S + 1) for a state to bear the name of spin S. A converged state of a space that
+ * is closed under spin has ⟨S²⟩ right to about 1e-9; truncated open-shell spaces lack some partners.
+ */
+export const SPIN_NAME_TOLERANCE = 1e-3;
+
+/**
+ * @returns 'mixed' where ⟨S²⟩ is not S(S + 1) of any S within `SPIN_NAME_TOLERANCE`, or S is above 3
+ */
+export function spinName(sSquared: number): SpinName {
+  const twiceSpin = Math.round(Math.sqrt(Math.max(0, 1 + 4 * sSquared)) - 1);
+  const exact = (twiceSpin / 2) * (twiceSpin / 2 + 1);
+  if (Math.abs(sSquared - exact) > SPIN_NAME_TOLERANCE) return 'mixed';
+  return NAMES[twiceSpin] ?? 'mixed';
+}
+
+/**
+ * product ← P S² P·vector, P the projector on the space: S² leads out of a truncated open-shell space, yet
+ * ⟨Ψ|S²|Ψ⟩ of a vector inside needs no more than this and is exact.
+ *
+ * S² = M(M + 1) + N(β) − Σ over p, q of a†(qα)a(pα) a†(pβ)a(qβ), M = (N(α) − N(β))/2.
+ */
+export function applySpinSquared(space: DeterminantSpace, vector: Float64Array, product: Float64Array): void {
+  const { alpha, beta, alphaReplacements, betaReplacements, rows, orbitalCount: n } = space;
+  const { byPairStart, pairSource, pairTarget, pairSign, pairCountUpToRank } = alphaReplacements;
+  const ranks = alpha.maximumRank + 1;
+  const projection = (alpha.electrons - beta.electrons) / 2;
+  const diagonal = projection * (projection + 1) + beta.electrons;
+  for (let i = 0; i < vector.length; i++) product[i] = diagonal * vector[i];
+
+  for (let target = 0; target < beta.count; target++) {
+    const targetStart = rows.start[target];
+    const targetLimit = space.maximumRank - beta.ranks[target];
+    for (
+      let e = betaReplacements.byStringStart[target];
+      e < betaReplacements.byStringStart[target + 1];
+      e++
+    ) {
+      const source = betaReplacements.source[e];
+      const p = Math.trunc(betaReplacements.pair[e] / n);
+      const q = betaReplacements.pair[e] % n;
+      const opposite = q * n + p;
+      const limit = Math.min(targetLimit, space.maximumRank - beta.ranks[source] + rankChange(alpha, q, p));
+      if (limit < 0) continue;
+      const first = byPairStart[opposite];
+      const last = first + pairCountUpToRank[opposite * ranks + Math.min(limit, ranks - 1)];
+      const sourceStart = rows.start[source];
+      const sign = betaReplacements.sign[e];
+      for (let k = first; k < last; k++) {
+        product[targetStart + pairTarget[k]] -= sign * pairSign[k] * vector[sourceStart + pairSource[k]];
+      }
+    }
+  }
+}

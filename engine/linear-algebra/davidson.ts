@@ -1,0 +1,262 @@
+import type { RunControl, Termination } from '../termination';
+import { addScaledInto, dot } from './dense';
+import { symmetricEigen } from './symmetric-eigen';
+import { VectorBlock } from './vector-block';
+
+/** A large symmetric matrix as its action on vectors of length `dimension`. */
+export interface DavidsonProblem {
+  readonly dimension: number;
+  /** product ← matrix·vector */
+  apply(vector: Float64Array, product: Float64Array): void;
+  /** result ← (M − shift)⁻¹·vector with M near the matrix and denominators kept off zero */
+  precondition(vector: Float64Array, shift: number, result: Float64Array): void;
+  /** at least as many as roots, linearly independent; what is beyond `roots` guards against missed roots */
+  readonly guesses: readonly Float64Array[];
+}
+
+export interface DavidsonOptions {
+  readonly roots: number;
+  /** largest ‖matrix·x − λx‖ of a converged root */
+  readonly residualTolerance: number;
+  readonly maximumIterations: number;
+  /** most basis vectors held at a time, at least twice the guesses; memory: `davidsonVectorCount` */
+  readonly maximumVectors: number;
+  readonly control: RunControl;
+  /** what progress is reported as */
+  readonly stage: string;
+}
+
+export interface DavidsonResult {
+  /** rising; `roots` of them, and those degenerate with the last one; fewer if it ended before there were any */
+  readonly values: Float64Array;
+  /** orthonormal, one per value */
+  readonly vectors: readonly Float64Array[];
+  readonly residuals: Float64Array;
+  readonly iterations: number;
+  readonly termination: Termination;
+}
+
+/** Roots this close to the last wanted one, in the matrix's unit, are converged along with it. */
+export const DEGENERACY_TOLERANCE = 1e-6;
+/** A guard is given up only where so many times its estimated fall would not bring it to the wanted roots. */
+const GUARD_SAFETY = 2;
+/** A direction of unit length that keeps less than this beside the basis brings nothing but rounding errors. */
+const SMALLEST_NEW_DIRECTION = 1e-9;
+/** Stagnated: so many iterations without a new lowest residual. */
+const PATIENCE = 30;
+
+/** How many vectors of length `dimension` are held: basis, products, and three for the correction. */
+export function davidsonVectorCount(maximumVectors: number): number {
+  return 2 * maximumVectors + 3;
+}
+
+/**
+ * Lowest eigenvalues and eigenvectors of a large symmetric matrix by Davidson's method, several at a time.
+ *
+ * Every iteration diagonalises the matrix within the basis, and adds for each unfinished root x with residual
+ * r = (A − θ)x the direction (M − θ)⁻¹r − ε(M − θ)⁻¹x with ε such that it is orthogonal to x. Without the
+ * second term a preconditioner that is nearly exact returns x itself; with it, denominators near zero do no harm.
+ * At the limit of vectors the basis collapses onto its lowest third.
+ *
+ * Missed roots: the guesses beyond `roots` are guards. A guard is improved like a root until its value, less
+ * twice the fall r·(M − θ)⁻¹r that perturbation theory estimates, lies above the highest wanted root. Roots
+ * degenerate with the last wanted one count as wanted, so that a cut through a degenerate set gives all of it.
+ *
+ * Sources: E. R. Davidson, J. Comput. Phys. 17, 87 (1975); the second term: J. Olsen, P. Jørgensen, J. Simons,
+ * Chem. Phys. Lett. 169, 463 (1990).
+ *
+ * @throws RangeError if there are fewer guesses than roots
+ */
+export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOptions): DavidsonResult {
+  const roots = Math.min(options.roots, problem.dimension);
+  const subspace = new Subspace(problem);
+  for (const guess of problem.guesses) subspace.extend(guess);
+  const followed = subspace.size;
+  if (followed < roots) throw new RangeError('lowestEigenpairs: fewer independent guesses than roots');
+  const maximumVectors = Math.max(options.maximumVectors, 2 * followed);
+
+  let bestResidual = Number.POSITIVE_INFINITY;
+  let withoutProgress = 0;
+  for (let iteration = 1; ; iteration++) {
+    const finish = (termination: Termination) => ({
+      ...subspace.result(roots),
+      iterations: iteration,
+      termination,
+    });
+    if (!subspace.diagonalise()) return finish({ kind: 'notFinite', quantity: 'matrix–vector product' });
+    const wanted = subspace.countThroughDegenerate(roots);
+    const candidates = Math.min(subspace.size, Math.max(wanted, followed));
+    if (subspace.size + candidates > maximumVectors) {
+      subspace.collapse(Math.max(candidates, Math.floor(maximumVectors / 3)));
+    }
+
+    const highest = subspace.values[wanted - 1];
+    const unfinished: number[] = [];
+    let worst = 0;
+    let worstUnfinished = 0;
+    for (let k = 0; k < candidates; k++) {
+      const norm = subspace.residual(k);
+      if (k < wanted) worst = Math.max(worst, norm);
+      if (norm <= options.residualTolerance) continue;
+      const lowestExpected = subspace.values[k] - GUARD_SAFETY * subspace.estimatedFall();
+      if (k >= wanted && lowestExpected > highest + DEGENERACY_TOLERANCE) continue;
+      unfinished.push(k);
+      worstUnfinished = Math.max(worstUnfinished, norm);
+    }
+    options.control.report({ stage: options.stage, iteration, residual: worst });
+
+    withoutProgress = worstUnfinished < bestResidual ? 0 : withoutProgress + 1;
+    bestResidual = Math.min(bestResidual, worstUnfinished);
+    if (unfinished.length === 0) return finish({ kind: 'converged' });
+    if (iteration >= options.maximumIterations) return finish({ kind: 'iterationLimit', limit: iteration });
+    if (options.control.isCancelled()) return finish({ kind: 'cancelled' });
+
+    const isExtended = subspace.correct(unfinished);
+    if (!isExtended || withoutProgress >= PATIENCE) {
+      return finish({ kind: 'stagnated', iterationsWithoutProgress: withoutProgress });
+    }
+  }
+}
+
+/** Basis, products of the matrix with it, and the matrix within it. */
+class Subspace {
+  readonly #problem: DavidsonProblem;
+  readonly #basis: VectorBlock;
+  readonly #products: VectorBlock;
+  readonly #ritz: Float64Array;
+  readonly #residual: Float64Array;
+  readonly #correction: Float64Array;
+  /** size×size, row-major */
+  #matrix: Float64Array = new Float64Array(0);
+  /** of the last diagonalisation; columns over the basis as it was then */
+  #coefficients: Float64Array = new Float64Array(0);
+  #columns = 0;
+  values: Float64Array = new Float64Array(0);
+
+  constructor(problem: DavidsonProblem) {
+    this.#problem = problem;
+    this.#basis = new VectorBlock(problem.dimension);
+    this.#products = new VectorBlock(problem.dimension);
+    this.#ritz = new Float64Array(problem.dimension);
+    this.#residual = new Float64Array(problem.dimension);
+    this.#correction = new Float64Array(problem.dimension);
+  }
+
+  get size(): number {
+    return this.#basis.size;
+  }
+
+  /** False if the direction has nothing that the basis lacks. */
+  extend(direction: Float64Array): boolean {
+    const size = this.size;
+    if (size === this.#problem.dimension) return false;
+    const vector = this.#basis.spare();
+    vector.set(direction);
+    if (!this.#basis.orthonormalise(vector, SMALLEST_NEW_DIRECTION)) return false;
+    this.#basis.append();
+    const product = this.#products.append();
+    this.#problem.apply(vector, product);
+
+    const bordered = new Float64Array((size + 1) ** 2);
+    for (let i = 0; i < size; i++) {
+      bordered.set(this.#matrix.subarray(i * size, (i + 1) * size), i * (size + 1));
+    }
+    for (let i = 0; i <= size; i++) {
+      const element = dot(this.#basis.at(i), product);
+      bordered[i * (size + 1) + size] = element;
+      bordered[size * (size + 1) + i] = element;
+    }
+    this.#matrix = bordered;
+    return true;
+  }
+
+  /** False if the matrix is not finite. */
+  diagonalise(): boolean {
+    if (!this.#matrix.every(Number.isFinite)) return false;
+    const { values, vectors } = symmetricEigen(this.#matrix, this.size);
+    this.values = values;
+    this.#coefficients = vectors;
+    this.#columns = this.size;
+    return true;
+  }
+
+  /** `count`, or more if further values are degenerate with the last. */
+  countThroughDegenerate(count: number): number {
+    const limit = this.values[count - 1] + DEGENERACY_TOLERANCE;
+    while (count < this.values.length && this.values[count] <= limit) count++;
+    return count;
+  }
+
+  /** Replaces the basis by the lowest `kept` eigenvectors in it. */
+  collapse(kept: number): void {
+    this.#basis.rotate(this.#coefficients, this.#columns, kept);
+    this.#products.rotate(this.#coefficients, this.#columns, kept);
+    this.values = this.values.slice(0, kept);
+    this.#columns = kept;
+    this.#matrix = new Float64Array(kept * kept);
+    this.#coefficients = new Float64Array(kept * kept);
+    for (let k = 0; k < kept; k++) {
+      this.#matrix[k * kept + k] = this.values[k];
+      this.#coefficients[k * kept + k] = 1;
+    }
+  }
+
+  /** Forms eigenvector k and its residual; returns the residual's length. */
+  residual(k: number): number {
+    const size = this.#columns;
+    this.#basis.combineInto(this.#ritz, this.#coefficients, size, size, k);
+    this.#products.combineInto(this.#residual, this.#coefficients, size, size, k);
+    addScaledInto(this.#residual, -this.values[k], this.#ritz);
+    this.#problem.precondition(this.#residual, this.values[k], this.#correction);
+    return Math.sqrt(dot(this.#residual, this.#residual));
+  }
+
+  /** How far the value whose residual was formed last would fall, by second-order perturbation theory. */
+  estimatedFall(): number {
+    return Math.abs(dot(this.#residual, this.#correction));
+  }
+
+  /** Adds the correction of each listed eigenvector; false if none of them brought anything new. */
+  correct(unfinished: readonly number[]): boolean {
+    let isExtended = false;
+    for (const k of unfinished) {
+      this.residual(k);
+      const ritz = this.#ritz;
+      const scratch = this.#residual;
+      this.#problem.precondition(ritz, this.values[k], scratch);
+      const overlap = dot(ritz, scratch);
+      if (overlap !== 0) addScaledInto(this.#correction, -dot(ritz, this.#correction) / overlap, scratch);
+      if (this.extend(this.#correction)) isExtended = true;
+    }
+    return isExtended;
+  }
+
+  /** Ends the use of the subspace: its basis becomes the eigenvectors. */
+  result(roots: number): Pick<DavidsonResult, 'values' | 'vectors' | 'residuals'> {
+    if (this.values.length === 0) return { values: this.values, vectors: [], residuals: new Float64Array(0) };
+    const count = this.countThroughDegenerate(Math.min(roots, this.values.length));
+    const residuals = Float64Array.from({ length: count }, (_, k) => this.residual(k));
+    this.#basis.rotate(this.#coefficients, this.#columns, count);
+    return {
+      values: this.values.slice(0, count),
+      vectors: Array.from({ length: count }, (_, k) => this.#basis.at(k)),
+      residuals,
+    };
+  }
+}
+
+/** (diagonal − shift)⁻¹ applied element by element, no denominator smaller in size than `smallest`. */
+export function preconditionDiagonally(
+  diagonal: Float64Array,
+  smallest: number,
+): (vector: Float64Array, shift: number, result: Float64Array) => void {
+  return (vector, shift, result) => {
+    for (let i = 0; i < vector.length; i++) result[i] = vector[i] / offZero(diagonal[i] - shift, smallest);
+  };
+}
+
+/** The number, moved away from zero to at least `smallest` in size. */
+export function offZero(value: number, smallest: number): number {
+  if (Math.abs(value) >= smallest) return value;
+  return value < 0 ? -smallest : smallest;
+}

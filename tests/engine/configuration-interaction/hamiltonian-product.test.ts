@@ -1,0 +1,88 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import {
+  buildDeterminantSpace,
+  determinantAt,
+} from '../../../engine/configuration-interaction/determinant-space';
+import {
+  GATHER_BLOCK,
+  prepareHamiltonianProduct,
+} from '../../../engine/configuration-interaction/hamiltonian-product';
+import { hamiltonianElement } from '../../../engine/configuration-interaction/matrix-elements';
+import { randomArray, seededRandom } from '../../support/random';
+import { randomOrbitalIntegrals } from '../../support/random-orbital-integrals';
+
+/** Rows of the plain product that are worked out; they are spread evenly over a larger space. */
+const ROWS = 150;
+
+/** Largest deviation of the fast product from the sum over matrix elements, relative to the largest element. */
+function deviation(
+  n: number,
+  alpha: number,
+  beta: number,
+  rank: number,
+  seed: number,
+  species: number[] = [],
+): number {
+  const integrals = randomOrbitalIntegrals(n, seed, { species });
+  const space = buildDeterminantSpace(n, alpha, beta, rank);
+  const vector = randomArray(space.dimension, seededRandom(seed + 1));
+  const product = new Float64Array(space.dimension).fill(Number.NaN);
+  prepareHamiltonianProduct(space, integrals).apply(vector, product);
+  const determinants = Array.from({ length: space.dimension }, (_, place) => determinantAt(space, place));
+  let largest = 0;
+  let scale = 0;
+  const step = Math.max(1, Math.floor(space.dimension / ROWS));
+  determinants.forEach((left, i) => {
+    if (i % step !== 0) return;
+    const expected = determinants.reduce(
+      (sum, right, j) => sum + hamiltonianElement(left, right, integrals) * vector[j],
+      0,
+    );
+    largest = Math.max(largest, Math.abs(product[i] - expected));
+    scale = Math.max(scale, Math.abs(expected));
+  });
+  return largest / scale;
+}
+
+describe('prepareHamiltonianProduct', () => {
+  it('identity: equals the plain Slater–Condon sum for any electron counts and excitation rank', () => {
+    const cases = fc
+      .integer({ min: 1, max: 6 })
+      .chain((n) =>
+        fc.tuple(
+          fc.constant(n),
+          fc.integer({ min: 0, max: n }),
+          fc.integer({ min: 0, max: n }),
+          fc.constantFrom(1, 2, 3, 4, Number.POSITIVE_INFINITY),
+          fc.nat(10_000),
+        ),
+      );
+    fc.assert(
+      fc.property(cases, ([n, alpha, beta, rank, seed]) => {
+        expect(deviation(n, alpha, beta, rank, seed)).toBeLessThan(1e-11);
+      }),
+      { seed: 4, numRuns: 120 },
+    );
+  });
+
+  it.each([
+    [8, 4, 3, 3],
+    [9, 3, 3, 2],
+    [8, 5, 2, 4],
+    [12, 2, 2, Number.POSITIVE_INFINITY],
+  ])('identity: equals the plain sum, %i orbitals, %i + %i electrons, rank %d', (n, alpha, beta, rank) => {
+    expect(deviation(n, alpha, beta, rank, 99)).toBeLessThan(1e-11);
+  });
+
+  it('identity: equals the plain sum where more replacements than one block are gathered', () => {
+    // a†p ap with p among 6 electrons in 12 orbitals leaves C(11, 5) = 462 strings as they are
+    expect(462).toBeGreaterThan(GATHER_BLOCK);
+    expect(deviation(12, 6, 1, Number.POSITIVE_INFINITY, 3)).toBeLessThan(1e-11);
+    expect(deviation(12, 1, 6, 4, 3)).toBeLessThan(1e-11);
+  });
+
+  it('identity: equals the plain sum where symmetry makes most integrals vanish', () => {
+    expect(deviation(7, 3, 3, Number.POSITIVE_INFINITY, 8, [0, 1, 2, 3, 0, 1, 2])).toBeLessThan(1e-11);
+  });
+});

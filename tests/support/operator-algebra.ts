@@ -1,0 +1,153 @@
+import { type OrbitalIntegrals, packedPair } from '../../engine/integrals/orbital-integrals';
+
+/*
+ * Electrons by brute force: creation and annihilation operators acting one after another on occupation-number
+ * vectors. Shares nothing with the engine but the order of the operators in a determinant: alpha before beta, each
+ * by rising orbital. A vector maps occupations (bit p: alpha in orbital p; bit n + p: beta) to coefficients.
+ */
+
+export type OccupationVector = Map<bigint, number>;
+
+export interface Occupation {
+  readonly alpha: readonly number[];
+  readonly beta: readonly number[];
+}
+
+export function occupationBits({ alpha, beta }: Occupation, orbitalCount: number): bigint {
+  let bits = 0n;
+  for (const p of alpha) bits |= 1n << BigInt(p);
+  for (const p of beta) bits |= 1n << BigInt(orbitalCount + p);
+  return bits;
+}
+
+/** Sign of moving an operator past all occupied spin orbitals that stand before it. */
+function signBefore(bits: bigint, spinOrbital: number): number {
+  let sign = 1;
+  for (let below = bits & ((1n << BigInt(spinOrbital)) - 1n); below > 0n; below &= below - 1n) sign = -sign;
+  return sign;
+}
+
+function act(vector: OccupationVector, spinOrbital: number, create: boolean): OccupationVector {
+  const result: OccupationVector = new Map();
+  const bit = 1n << BigInt(spinOrbital);
+  for (const [bits, coefficient] of vector) {
+    if (((bits & bit) !== 0n) === create) continue;
+    result.set(bits ^ bit, signBefore(bits, spinOrbital) * coefficient);
+  }
+  return result;
+}
+
+/** Operators written left to right as on paper: the last acts first. */
+export function applyOperators(
+  operators: readonly { readonly create: boolean; readonly spinOrbital: number }[],
+  vector: OccupationVector,
+): OccupationVector {
+  return operators.reduceRight((state, { create, spinOrbital }) => act(state, spinOrbital, create), vector);
+}
+
+/** ⟨left| a†…a |right⟩ of one determinant each. */
+function matrixElement(
+  left: bigint,
+  operators: readonly { readonly create: boolean; readonly spinOrbital: number }[],
+  right: bigint,
+): number {
+  return applyOperators(operators, new Map([[right, 1]])).get(left) ?? 0;
+}
+
+const creates = (spinOrbital: number) => ({ create: true, spinOrbital });
+const annihilates = (spinOrbital: number) => ({ create: false, spinOrbital });
+
+/** All spin orbitals occupied in a determinant: those that an operator can annihilate, or have created. */
+function spinOrbitalsOf({ alpha, beta }: Occupation, n: number): number[] {
+  return [...alpha, ...beta.map((p) => n + p)];
+}
+
+/** Σ f(pq) a†(pσ) a(qσ). */
+export function bruteOneElectron(
+  left: Occupation,
+  right: Occupation,
+  operator: Float64Array,
+  n: number,
+): number {
+  let sum = 0;
+  for (const p of spinOrbitalsOf(left, n)) {
+    for (const q of spinOrbitalsOf(right, n)) {
+      if (p < n !== q < n) continue;
+      const sign = matrixElement(
+        occupationBits(left, n),
+        [creates(p), annihilates(q)],
+        occupationBits(right, n),
+      );
+      sum += sign * operator[(p % n) * n + (q % n)];
+    }
+  }
+  return sum;
+}
+
+/** Core energy + Σ h(pq) a†(pσ)a(qσ) + ½ Σ (pq|rs) a†(pσ)a†(rτ)a(sτ)a(qσ). */
+export function bruteHamiltonian(left: Occupation, right: Occupation, integrals: OrbitalIntegrals): number {
+  const n = integrals.orbitalCount;
+  const leftBits = occupationBits(left, n);
+  const rightBits = occupationBits(right, n);
+  let sum =
+    (leftBits === rightBits ? integrals.coreEnergy : 0) +
+    bruteOneElectron(left, right, integrals.oneElectron, n);
+  for (const p of spinOrbitalsOf(left, n)) {
+    for (const r of spinOrbitalsOf(left, n)) {
+      for (const q of spinOrbitalsOf(right, n)) {
+        for (const s of spinOrbitalsOf(right, n)) {
+          if (p < n !== q < n || r < n !== s < n) continue;
+          const sign = matrixElement(
+            leftBits,
+            [creates(p), creates(r), annihilates(s), annihilates(q)],
+            rightBits,
+          );
+          if (sign === 0) continue;
+          const place = packedPair(packedPair(p % n, q % n), packedPair(r % n, s % n));
+          sum += 0.5 * sign * integrals.twoElectron[place];
+        }
+      }
+    }
+  }
+  return sum;
+}
+
+/** S₋S₊ + S_z(S_z + 1) with S₊ = Σ a†(pα) a(pβ). */
+export function bruteSpinSquared(left: Occupation, right: Occupation, n: number): number {
+  const leftBits = occupationBits(left, n);
+  const rightBits = occupationBits(right, n);
+  const projection = (right.alpha.length - right.beta.length) / 2;
+  let sum = leftBits === rightBits ? projection * (projection + 1) : 0;
+  for (let p = 0; p < n; p++) {
+    for (let q = 0; q < n; q++) {
+      const operators = [creates(n + p), annihilates(p), creates(q), annihilates(n + q)];
+      sum += matrixElement(leftBits, operators, rightBits);
+    }
+  }
+  return sum;
+}
+
+/** Every way to choose k of 0 … n − 1. */
+export function choices(n: number, k: number): number[][] {
+  if (k === 0) return [[]];
+  if (n < k) return [];
+  return [...choices(n - 1, k), ...choices(n - 1, k - 1).map((chosen) => [...chosen, n - 1])];
+}
+
+/** All determinants up to an excitation rank from the lowest one, in no particular order. */
+export function allOccupations(n: number, alpha: number, beta: number, maximumRank: number): Occupation[] {
+  const rank = (occupied: readonly number[]) => occupied.filter((p) => p >= occupied.length).length;
+  return choices(n, alpha).flatMap((a) =>
+    choices(n, beta)
+      .filter((b) => rank(a) + rank(b) <= maximumRank)
+      .map((b) => ({ alpha: a, beta: b })),
+  );
+}
+
+/** The matrix of an operator over determinants, row-major. */
+export function operatorMatrix(
+  determinants: readonly Occupation[],
+  element: (left: Occupation, right: Occupation) => number,
+): Float64Array {
+  return Float64Array.from(determinants.flatMap((left) => determinants.map((right) => element(left, right))));
+}
