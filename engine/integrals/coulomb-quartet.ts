@@ -1,13 +1,10 @@
-import { boysFunctionInto } from '../special-functions/boys-function';
-import { hermiteCoulombInto } from './hermite-coulomb';
+import { HERMITE_BATCH, HermiteCoulombArguments, hermiteCoulombInto } from './hermite-coulomb';
 import { type QuartetLayout, quartetLayout } from './quartet-layout';
 import type { ShellPair } from './shell-pair';
 
-/** Ket primitives whose Hermite integrals are held at once; keeps them in the first-level cache for s and p. */
-const BATCH = 36;
-
 /** Work arrays of the quartet kernel, grown as needed and used again for every quartet. */
 export class QuartetWorkspace {
+  readonly batch = new HermiteCoulombArguments();
   hermite: Float64Array = new Float64Array(0);
   ketSums: Float64Array = new Float64Array(0);
   braSums: Float64Array = new Float64Array(0);
@@ -17,7 +14,7 @@ export class QuartetWorkspace {
   block: Float64Array = new Float64Array(0);
 
   reserve(bra: ShellPair, ket: ShellPair, layout: QuartetLayout): void {
-    this.hermite = grown(this.hermite, BATCH * layout.hermiteCount);
+    this.hermite = grown(this.hermite, HERMITE_BATCH * layout.hermiteCount);
     this.ketSums = grown(this.ketSums, layout.ketSumCount);
     this.braSums = grown(this.braSums, layout.braSumCount);
     this.row = grown(this.row, ket.layout.columnCount);
@@ -51,18 +48,20 @@ export function coulombQuartet(
   const layout = quartetLayout(bra.layout, ket.layout);
   workspace.reserve(bra, ket, layout);
   if (layout.degree === 0) {
-    workspace.block[0] = sphericalQuartet(bra, ket, primitiveThreshold) * bra.values[0] * ket.values[0];
+    workspace.block[0] =
+      sphericalQuartet(bra, ket, workspace, primitiveThreshold) * bra.values[0] * ket.values[0];
     return;
   }
-  const { hermite, ketSums, braSums } = workspace;
+  const { batch, hermite, ketSums, braSums } = workspace;
   braSums.fill(0, 0, layout.braSumCount);
   for (let i = 0; i < bra.primitiveCount; i++) {
     const ketCount = significantPrimitives(ket, primitiveThreshold / bra.bounds[i]);
     if (ketCount === 0) break;
     ketSums.fill(0, 0, layout.ketSumCount);
-    for (let start = 0; start < ketCount; start += BATCH) {
-      const count = Math.min(BATCH, ketCount - start);
-      hermiteBatch(bra, i, ket, start, count, layout, hermite);
+    for (let start = 0; start < ketCount; start += HERMITE_BATCH) {
+      const count = Math.min(HERMITE_BATCH, ketCount - start);
+      fillBatch(bra, i, ket, start, count, batch);
+      hermiteCoulombInto(layout.degree, batch, count, hermite);
       contractKet(layout, hermite, count, ket.signedFactors, start, ketSums);
     }
     contractBra(layout, ketSums, bra.factors, i, braSums);
@@ -78,43 +77,37 @@ function significantPrimitives(pair: ShellPair, threshold: number): number {
   return count;
 }
 
-const boysValue = new Float64Array(1);
-
-/** (ss|ss): Σ factors F_0(αR²) / √(p + q). */
-function sphericalQuartet(bra: ShellPair, ket: ShellPair, primitiveThreshold: number): number {
+/** (ss|ss): one factor and one Hermite integral a primitive quartet, no sums to keep apart. */
+function sphericalQuartet(
+  bra: ShellPair,
+  ket: ShellPair,
+  { batch, hermite }: QuartetWorkspace,
+  primitiveThreshold: number,
+): number {
   let sum = 0;
   for (let i = 0; i < bra.primitiveCount; i++) {
-    const p = bra.exponents[i];
-    const px = bra.centreX[i];
-    const py = bra.centreY[i];
-    const pz = bra.centreZ[i];
-    const count = significantPrimitives(ket, primitiveThreshold / bra.bounds[i]);
+    const ketCount = significantPrimitives(ket, primitiveThreshold / bra.bounds[i]);
     let inner = 0;
-    for (let j = 0; j < count; j++) {
-      const q = ket.exponents[j];
-      const x = px - ket.centreX[j];
-      const y = py - ket.centreY[j];
-      const z = pz - ket.centreZ[j];
-      const total = p + q;
-      boysFunctionInto(0, ((p * q) / total) * (x * x + y * y + z * z), boysValue);
-      inner += (ket.factors[j] / Math.sqrt(total)) * boysValue[0];
+    for (let start = 0; start < ketCount; start += HERMITE_BATCH) {
+      const count = Math.min(HERMITE_BATCH, ketCount - start);
+      fillBatch(bra, i, ket, start, count, batch);
+      hermiteCoulombInto(0, batch, count, hermite);
+      for (let k = 0; k < count; k++) inner += ket.factors[start + k] * hermite[k];
     }
     sum += bra.factors[i] * inner;
   }
   return sum;
 }
 
-/** Hermite Coulomb integrals of one bra primitive with `count` ket primitives, count × hermiteCount. */
-function hermiteBatch(
+/** One bra primitive with `count` ket primitives: a = pq/(p + q), P − Q and 1/√(p + q). */
+function fillBatch(
   bra: ShellPair,
   braPrimitive: number,
   ket: ShellPair,
   start: number,
   count: number,
-  layout: QuartetLayout,
-  hermite: Float64Array,
+  batch: HermiteCoulombArguments,
 ): void {
-  const { degree, hermiteCount } = layout;
   const p = bra.exponents[braPrimitive];
   const px = bra.centreX[braPrimitive];
   const py = bra.centreY[braPrimitive];
@@ -122,17 +115,12 @@ function hermiteBatch(
   for (let k = 0; k < count; k++) {
     const j = start + k;
     const q = ket.exponents[j];
-    const total = p + q;
-    hermiteCoulombInto(
-      degree,
-      (p * q) / total,
-      px - ket.centreX[j],
-      py - ket.centreY[j],
-      pz - ket.centreZ[j],
-      1 / Math.sqrt(total),
-      hermite,
-      k * hermiteCount,
-    );
+    const inverse = 1 / (p + q);
+    batch.exponent[k] = p * q * inverse;
+    batch.x[k] = px - ket.centreX[j];
+    batch.y[k] = py - ket.centreY[j];
+    batch.z[k] = pz - ket.centreZ[j];
+    batch.prefactor[k] = Math.sqrt(inverse);
   }
 }
 

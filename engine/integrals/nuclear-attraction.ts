@@ -1,7 +1,7 @@
 import type { PlacedBasis } from '../basis/contracted-gaussian';
 import type { Vector3 } from '../molecule/molecule';
 import { cartesianCount } from './cartesian-components';
-import { hermiteCoulombInto } from './hermite-coulomb';
+import { HERMITE_BATCH, HermiteCoulombArguments, hermiteCoulombInto } from './hermite-coulomb';
 import { hermiteStart } from './hermite-index';
 import { buildShellPairs, type ShellPair } from './shell-pair';
 
@@ -47,25 +47,30 @@ export function nuclearAttractionMatrix(basis: PlacedBasis, nuclei: readonly Poi
 /** Attraction of every Hermite column of the pair, contracted over primitives and nuclei. */
 function attractionColumns(pair: ShellPair, nuclei: readonly PointCharge[]): Float64Array {
   const { degree, factorDegrees, columnStart, columnCount } = pair.layout;
-  const hermite = new Float64Array(hermiteStart(degree + 1));
+  const width = hermiteStart(degree + 1);
+  const hermite = new Float64Array(HERMITE_BATCH * width);
+  const batch = new HermiteCoulombArguments();
   const columns = new Float64Array(columnCount);
-  for (let i = 0; i < pair.primitiveCount; i++) {
-    for (const { charge, position } of nuclei) {
-      hermiteCoulombInto(
-        degree,
-        pair.exponents[i],
-        pair.centreX[i] - position[0],
-        pair.centreY[i] - position[1],
-        pair.centreZ[i] - position[2],
-        -charge * ATTRACTION_FROM_PAIR_PREFACTOR,
-        hermite,
-        0,
-      );
+  const total = pair.primitiveCount * nuclei.length;
+  for (let start = 0; start < total; start += HERMITE_BATCH) {
+    const count = Math.min(HERMITE_BATCH, total - start);
+    for (let k = 0; k < count; k++) {
+      const i = Math.floor((start + k) / nuclei.length);
+      const { charge, position } = nuclei[(start + k) % nuclei.length];
+      batch.exponent[k] = pair.exponents[i];
+      batch.x[k] = pair.centreX[i] - position[0];
+      batch.y[k] = pair.centreY[i] - position[1];
+      batch.z[k] = pair.centreZ[i] - position[2];
+      batch.prefactor[k] = -charge * ATTRACTION_FROM_PAIR_PREFACTOR;
+    }
+    hermiteCoulombInto(degree, batch, count, hermite);
+    for (let k = 0; k < count; k++) {
+      const factors = Math.floor((start + k) / nuclei.length) * factorDegrees.length;
       for (let factor = 0; factor < factorDegrees.length; factor++) {
-        const value = pair.factors[i * factorDegrees.length + factor];
-        const source = hermiteStart(factorDegrees[factor]);
-        const count = cartesianCount(factorDegrees[factor]);
-        for (let index = 0; index < count; index++) {
+        const value = pair.factors[factors + factor];
+        const source = k * width + hermiteStart(factorDegrees[factor]);
+        const length = cartesianCount(factorDegrees[factor]);
+        for (let index = 0; index < length; index++) {
           columns[columnStart[factor] + index] += value * hermite[source + index];
         }
       }
