@@ -5,9 +5,10 @@ const KEY_ORDER = [
   'format version title notes molecule scan basis levels states frozenCore convergence',
   'unit atoms charge multiplicity',
   'element at isotope ghost',
-  'coordinate from to count values',
+  'coordinate from to',
   'name file scaleFactors shells evenTempered harmonics',
   'angularMomentum exponents coefficients smallest ratio',
+  'count values',
 ]
   .join(' ')
   .split(' ');

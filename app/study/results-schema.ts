@@ -1,0 +1,180 @@
+import { z } from 'zod';
+import type { LevelFindings, LevelResult, PointResult, StudyResults } from '#engine';
+import { studySchema } from './schema';
+
+/*
+ * The form of a results file: enough to open a file that someone else wrote without a surprise further on. Keys
+ * that a later version may add are kept.
+ */
+
+/** JSON has no NaN and writes null for it, as the last energy of an iteration that ran away may be. */
+const number = z.union([z.number(), z.null().transform(() => Number.NaN)]);
+const numbers = z.array(number);
+const vector = z.tuple([number, number, number]);
+
+const iterationEnds = [
+  z.looseObject({ kind: z.literal('converged') }),
+  z.looseObject({ kind: z.literal('iterationLimit'), limit: z.number() }),
+  z.looseObject({ kind: z.literal('stagnated'), iterationsWithoutProgress: z.number() }),
+  z.looseObject({ kind: z.literal('notFinite'), quantity: z.string() }),
+  z.looseObject({ kind: z.literal('cancelled') }),
+] as const;
+const levelEnds = [...iterationEnds, z.looseObject({ kind: z.literal('orbitalsNotConverged') })] as const;
+const termination = z.discriminatedUnion('kind', iterationEnds);
+const levelTermination = z.discriminatedUnion('kind', levelEnds);
+
+const spin = z.enum(['singlet', 'doublet', 'triplet', 'quartet', 'quintet', 'sextet', 'septet', 'mixed']);
+
+const hartreeFock = z.looseObject({
+  kind: z.literal('hartreeFock'),
+  energy: number,
+  converged: z.boolean(),
+  termination,
+  iterations: z.number(),
+  orbitalEnergies: numbers,
+  dipole: vector,
+  stability: z.looseObject({ singlet: number, triplet: number }).exactOptional(),
+});
+
+const singles = z.looseObject({
+  kind: z.literal('singles'),
+  converged: z.boolean(),
+  termination: levelTermination,
+  states: z.array(
+    z.looseObject({
+      energy: number,
+      excitation: number,
+      spin: z.enum(['singlet', 'triplet']),
+      oscillatorStrength: number,
+      transitionDipole: vector,
+      leading: z.array(z.looseObject({ from: z.number(), to: z.number(), weight: number })),
+    }),
+  ),
+});
+
+const correlatedState = z.looseObject({
+  energy: number,
+  excitation: number,
+  spin,
+  sSquared: number,
+  referenceWeight: number,
+  residual: number,
+  dipole: vector,
+  naturalOccupations: numbers,
+  leading: z.array(
+    z.looseObject({
+      coefficient: number,
+      weight: number,
+      alpha: z.array(z.number()),
+      beta: z.array(z.number()),
+    }),
+  ),
+});
+
+const correlated = z.looseObject({
+  kind: z.literal('correlated'),
+  energy: number,
+  correlation: number,
+  converged: z.boolean(),
+  termination: levelTermination,
+  iterations: z.number(),
+  determinants: z.number(),
+  referenceWeight: number,
+  sSquared: number,
+  spin,
+  naturalOccupations: numbers,
+  dipole: vector,
+  davidsonCorrected: number.exactOptional(),
+  states: z.array(correlatedState),
+});
+
+const failed = z.looseObject({
+  kind: z.literal('failed'),
+  converged: z.literal(false),
+  termination: z.discriminatedUnion('kind', [
+    ...levelEnds,
+    z.looseObject({ kind: z.literal('refused'), message: z.string() }),
+  ]),
+});
+
+const level: z.ZodType<LevelResult> = z.discriminatedUnion('kind', [
+  hartreeFock,
+  singles,
+  correlated,
+  failed,
+]);
+
+const cautions = z.array(
+  z.looseObject({ code: z.string(), message: z.string(), level: z.string().exactOptional() }),
+);
+
+const point: z.ZodType<PointResult> = z.looseObject({
+  coordinate: z.number().nullable(),
+  atoms: z.array(
+    z.looseObject({
+      element: z.string(),
+      at: z.tuple([z.number(), z.number(), z.number()]),
+      isotope: z.number().optional(),
+      ghost: z.boolean().optional(),
+    }),
+  ),
+  nuclearRepulsion: z.number(),
+  levels: z.record(z.string(), level),
+  cautions,
+});
+
+const findings: z.ZodType<LevelFindings> = z.looseObject({
+  minimum: z.discriminatedUnion('kind', [
+    z.looseObject({
+      kind: z.literal('found'),
+      equilibriumDistance: z.number(),
+      energy: z.number(),
+      uncertainty: z.number(),
+    }),
+    z.looseObject({ kind: z.literal('atEdge'), coordinate: z.number() }),
+    z.looseObject({ kind: z.literal('several'), near: z.array(z.number()) }),
+    z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+  ]),
+  wellDepth: z
+    .looseObject({ value: z.number(), against: z.literal('farEnd'), farEnd: z.number() })
+    .exactOptional(),
+});
+
+/** The study as run has its defaults filled in. */
+const completeStudy = z.intersection(
+  studySchema,
+  z.looseObject({
+    molecule: z.looseObject({ charge: z.number(), multiplicity: z.number() }),
+    states: z.number(),
+    frozenCore: z.boolean(),
+    convergence: z.looseObject({ energy: z.number() }),
+  }),
+);
+
+/** @see StudyResults */
+export const resultsSchema: z.ZodType<StudyResults> = z.looseObject({
+  format: z.literal('farwell/results'),
+  version: z.literal(1),
+  study: completeStudy,
+  program: z.looseObject({ name: z.literal('farwell'), version: z.string() }),
+  basis: z.looseObject({
+    name: z.string(),
+    harmonics: z.enum(['spherical', 'cartesian']),
+    functions: z.number(),
+    shells: z.record(
+      z.string(),
+      z.array(
+        z.looseObject({
+          angularMomentum: z.number(),
+          exponents: z.array(z.number()),
+          coefficients: z.array(z.number()),
+        }),
+      ),
+    ),
+    citations: z.array(z.string()),
+    notes: z.array(z.string()),
+  }),
+  points: z.array(point),
+  findings: z.record(z.string(), findings),
+  cautions,
+});
