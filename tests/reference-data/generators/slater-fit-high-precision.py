@@ -1,8 +1,7 @@
 """Least-squares Gaussian fits of Slater functions in 40-digit arithmetic (needs mpmath).
 
-Independent of engine/basis: overlaps come from the upward recurrence that starts from the error function, and the
-stationary point is found on the whole set of unknowns (exponents, coefficients, multipliers of the norms) by mpmath's
-own Newton solver with numerical derivatives. Writes ../slater-fit-high-precision.json. Run from this folder:
+Independent of engine/basis: the error function is mpmath's, and the exponents are found as the root of the slope by
+mpmath's own solver, with derivatives by differences. Writes ../slater-fit-high-precision.json. Run from this folder:
     python3 slater-fit-high-precision.py
 """
 import json
@@ -54,7 +53,7 @@ def best(n, l, exponents):
 
 
 def slope(n, l, exponents):
-    """derivative of the best overlap by each ln a: the coefficients stay, being stationary; Hellmann-Feynman"""
+    """derivative of the best overlap by each ln a: the coefficients stay, being stationary"""
     overlap, c = best(n, l, exponents)
     p = l + mp.mpf(3) / 2
     result = []
