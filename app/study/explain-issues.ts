@@ -4,8 +4,12 @@ import { nearest } from './nearest';
 import { type Path, placeOf } from './place';
 import type { IssueParams } from './schema';
 
+/** More issues than this help nobody. */
+const MOST_ISSUES = 50;
+
 /**
- * Puts what a schema found into plain words: place, what is wrong with which value, line, and what to do.
+ * Puts what a schema found into plain words: place, what is wrong with which value, line, and what to do; at most
+ * `MOST_ISSUES` of them.
  *
  * @param value - what the schema was given
  * @param lineOf - line of a path in the file
@@ -15,7 +19,9 @@ export function explainIssues(
   value: unknown,
   lineOf: (path: Path) => number,
 ): readonly StudyIssue[] {
-  const explained = issues.map((issue) => explain(issue, issue.path as Path, value, lineOf));
+  const explained = issues
+    .slice(0, MOST_ISSUES)
+    .map((issue) => explain(issue, issue.path as Path, value, lineOf));
   // a misspelt key is one mistake, not also a missing one
   const meant = new Set(explained.map(({ meantPlace }) => meantPlace));
   return explained
