@@ -43,7 +43,7 @@ export function squareRoot(value: FixedPoint): FixedPoint {
 export function solvePositiveDefinite(
   matrix: readonly (readonly FixedPoint[])[],
   rightHandSide: readonly FixedPoint[],
-) {
+): FixedPoint[] {
   const n = rightHandSide.length;
   const rows = matrix.map((row, i) => [...row, rightHandSide[i]]);
   for (let pivot = 0; pivot < n; pivot++) {

@@ -33,14 +33,17 @@ export const STANDARD_SCALE_FACTORS: Readonly<Record<string, ElementScaleFactors
   Ar: { '1s': 17.4, '2sp': 6.74, '3sp': 2.33 },
 };
 
+/** Slater exponents outside, bohr⁻¹, are taken for a mistake. */
+export const SCALE_FACTOR_RANGE = { smallest: 0.01, largest: 1000 } as const;
+
 /** Slater exponents that a study sets, by element and shell; as read, so keys and values may be anything. */
 export type ScaleFactorRequest = Readonly<Record<string, Readonly<Record<string, number>>>>;
 
 /**
  * Standard Slater exponents with those of the study in their place.
  *
- * @throws EngineError `basis.scaleFactor` for an element or shell that STO-nG does not have, or a value that is not
- * positive and finite
+ * @throws EngineError `basis.scaleFactor` for an element or shell that STO-nG does not have, or a value outside
+ * SCALE_FACTOR_RANGE
  */
 export function mergeScaleFactors(
   request: ScaleFactorRequest,
@@ -74,11 +77,12 @@ function checkFactor(symbol: string, standard: ElementScaleFactors, shell: strin
       place,
     );
   }
-  if (!(value > 0 && Number.isFinite(value))) {
+  if (!(value >= SCALE_FACTOR_RANGE.smallest && value <= SCALE_FACTOR_RANGE.largest)) {
     throw new EngineError(
       'basis.scaleFactor',
-      `The Slater exponent ${value} of ${symbol} ${shell} is not a positive number.`,
-      `Give a positive number; the standard value is ${standard[shell as SlaterShell]}.`,
+      `The Slater exponent ${value} of ${symbol} ${shell} cannot be used.`,
+      `Give a number from ${SCALE_FACTOR_RANGE.smallest} to ${SCALE_FACTOR_RANGE.largest}; ` +
+        `the standard value is ${standard[shell as SlaterShell]}.`,
       { symbol, shell },
       place,
     );

@@ -30,6 +30,12 @@ function scatter(digits: string) {
 
 /** The scaled tables fill eight significant digits up with zeros to seven decimals. */
 function eightDigits(digits: string) {
+  if (digits === '23.8088610') {
+    return {
+      tolerance: 5.1e-6,
+      because: 'the open data set prints 23.80886605 for the same exponent, see SOURCES.md',
+    };
+  }
   const digitsBeforePoint = digits.indexOf('.');
   if (digitsBeforePoint === 1) return {};
   const because = 'the table carries eight significant digits, filled up with zeros to seven decimals';
