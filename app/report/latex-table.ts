@@ -2,6 +2,8 @@ import { latexText } from './latex-text';
 import type { ReportContent } from './report-content';
 import { NOT_COMPUTED, NOT_CONVERGED, type ResultTable, type TableBlock } from './result-table';
 
+/** Wider tables are set in small type. */
+const COLUMNS_AT_FULL_SIZE = 6;
 /** Longer tables are set with longtable, which breaks across pages. */
 const ROWS_ON_A_PAGE = 42;
 
@@ -13,6 +15,7 @@ export function latexTable({ files, table }: ReportContent): string {
     ...files.map(({ name, sentence }) => (name ? `${name}: ${sentence}` : sentence)),
     ...table.notes,
   ].join(' ');
+  const size = columns.length > COLUMNS_AT_FULL_SIZE ? ['\\footnotesize'] : [];
   const head = headRows(table);
   const body = table.rows.map(
     ({ coordinate, cells }) => `${[coordinate, ...cells].map(latexCell).join(' & ')} \\\\`,
@@ -20,6 +23,8 @@ export function latexTable({ files, table }: ReportContent): string {
   const lines = isLong
     ? [
         '% \\usepackage{booktabs,longtable}',
+        '{',
+        ...size,
         `\\begin{longtable}{${columns}}`,
         `\\caption{${latexText(caption)}}\\\\`,
         '\\toprule',
@@ -30,12 +35,14 @@ export function latexTable({ files, table }: ReportContent): string {
         '\\endfoot',
         ...body,
         '\\end{longtable}',
+        '}',
       ]
     : [
         '% \\usepackage{booktabs}',
         '\\begin{table}',
         '\\centering',
         `\\caption{${latexText(caption)}}`,
+        ...size,
         `\\begin{tabular}{${columns}}`,
         '\\toprule',
         ...head,
@@ -48,23 +55,45 @@ export function latexTable({ files, table }: ReportContent): string {
   return `${lines.join('\n')}\n`;
 }
 
-/** One line for quantities that span their columns, one for the columns; of several files, one more above. */
+/** A line for the quantities that span their columns, one for the columns; of several files, one more above. */
 function headRows({ coordinateHeading, blocks }: ResultTable): string[] {
-  const rules: string[] = [];
-  let column = 2;
-  for (const block of blocks) {
-    rules.push(`\\cmidrule(lr){${column}-${column + block.columns.length - 1}}`);
-    column += block.columns.length;
-  }
-  const spanning = (textOf: (block: TableBlock) => string) =>
-    ` & ${blocks.map((block) => `\\multicolumn{${block.columns.length}}{c}{${latexText(textOf(block))}}`).join(' & ')} \\\\`;
+  const spanning = (spans: readonly Span[]) =>
+    ` & ${spans.map(({ text, width }) => `\\multicolumn{${width}}{c}{${latexText(text)}}`).join(' & ')} \\\\`;
+  const rulesUnder = (spans: readonly Span[]) => {
+    let column = 2;
+    return spans
+      .map(({ width }) => {
+        const rule = `\\cmidrule(lr){${column}-${column + width - 1}}`;
+        column += width;
+        return rule;
+      })
+      .join(' ');
+  };
+  const files = fileSpans(blocks);
+  const quantities = blocks.map(({ quantity, columns }) => ({ text: quantity, width: columns.length }));
   const labels = blocks.flatMap((block) => block.columns.map(latexText));
   return [
-    ...(blocks.some(({ file }) => file) ? [spanning(({ file }) => file)] : []),
-    spanning(({ quantity }) => quantity),
-    rules.join(' '),
+    ...(blocks.some(({ file }) => file) ? [spanning(files), rulesUnder(files)] : []),
+    spanning(quantities),
+    rulesUnder(quantities),
     `${[latexText(coordinateHeading), ...labels].join(' & ')} \\\\`,
   ];
+}
+
+interface Span {
+  readonly text: string;
+  readonly width: number;
+}
+
+/** Neighbouring blocks of one file become one span. */
+function fileSpans(blocks: readonly TableBlock[]): readonly Span[] {
+  const spans: { text: string; width: number }[] = [];
+  for (const block of blocks) {
+    const last = spans.at(-1);
+    if (last?.text === block.file) last.width += block.columns.length;
+    else spans.push({ text: block.file, width: block.columns.length });
+  }
+  return spans;
 }
 
 function latexCell(cell: string): string {

@@ -1,20 +1,24 @@
 import { FINDINGS_HEADINGS } from './findings-table';
-import { type ReportContent, type ReportedFile, SAFETY_NOTE } from './report-content';
+import {
+  DIGITS_NOTE,
+  type ReportContent,
+  type ReportedFile,
+  reportHeading,
+  SAFETY_NOTE,
+} from './report-content';
 import { NOT_COMPUTED, type ResultTable } from './result-table';
+import { withMinus } from './text-escapes';
 
 /** The report as Markdown: study sentence as heading, energies, notes, findings, cautions, method. */
 export function markdownReport(content: ReportContent): string {
   const { files, table, findings, withoutFigure } = content;
-  const [first] = files;
-  const heading =
-    files.length === 1 ? (first?.sentence ?? '') : `Comparison of ${listOf(files.map(({ name }) => name))}`;
   const sections = [
-    `# ${escapeMarkdown(heading)}`,
+    `# ${escapeMarkdown(reportHeading(content))}`,
     ...files.flatMap(introduction),
     ...(withoutFigure ? [`No figure: ${escapeMarkdown(withoutFigure)}`] : []),
     '## Energies',
     energyTable(table),
-    ...table.notes.map(escapeMarkdown),
+    ...[...table.notes, DIGITS_NOTE].map(escapeMarkdown),
     ...(findings.length > 0 ? ['## Findings', findingsTable(content), escapeMarkdown(SAFETY_NOTE)] : []),
     ...bulletSection('## Cautions', files, ({ cautions }) => cautions),
     ...bulletSection('## Method', files, ({ method }) => method),
@@ -38,8 +42,8 @@ function energyTable({ coordinateHeading, blocks, rows }: ResultTable): string {
     }),
   );
   const body = rows.map(({ coordinate, cells }) => [
-    signed(coordinate),
-    ...cells.map((cell) => (cell === NOT_COMPUTED ? '–' : signed(cell))),
+    withMinus(coordinate),
+    ...cells.map((cell) => (cell === NOT_COMPUTED ? '–' : withMinus(cell))),
   ]);
   return tableText([coordinateHeading, ...headings], body, 'right');
 }
@@ -50,8 +54,8 @@ function findingsTable({ files, findings }: ReportContent): string {
     ...(several ? [file] : []),
     level,
     minimum,
-    signed(energyAtMinimum),
-    signed(depth),
+    withMinus(energyAtMinimum),
+    withMinus(depth),
   ]);
   return tableText([...(several ? ['File'] : []), ...FINDINGS_HEADINGS], body, 'left');
 }
@@ -78,13 +82,6 @@ function bulletSection(
   );
   return lines.length > 0 ? [heading, lines.join('\n')] : [];
 }
-
-function listOf(items: readonly string[]): string {
-  return items.length < 2 ? items.join('') : `${items.slice(0, -1).join(', ')} and ${items.at(-1)}`;
-}
-
-/** With a true minus sign. */
-const signed = (number: string): string => number.replace(/^-/, '−');
 
 /** Text from outside cannot become markup, nor break out of its line or cell. */
 const escapeMarkdown = (text: string): string =>

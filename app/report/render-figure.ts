@@ -3,6 +3,7 @@ import { createRequire } from 'node:module';
 import { crc32 } from 'node:zlib';
 import { initWasm, Resvg } from '@resvg/resvg-wasm';
 import { parse, type Spec, View } from 'vega';
+import { escapeMarkup } from './text-escapes';
 
 export interface FigureText {
   /** short name of the picture, for screen readers */
@@ -34,7 +35,7 @@ export async function renderSvg(
     const opening =
       `<svg xmlns="http://www.w3.org/2000/svg" version="1.1" role="img" width="${widthMillimetres}mm"` +
       ` height="${heightMillimetres.toFixed(2)}mm" viewBox="0 0 ${width} ${height}">` +
-      `<title>${escapeXml(text.title)}</title><desc>${escapeXml(text.description)}</desc>`;
+      `<title>${escapeMarkup(text.title)}</title><desc>${escapeMarkup(text.description)}</desc>`;
     return drawing.replace(/<svg[^>]*>/, () => opening);
   } finally {
     view.finalize();
@@ -89,6 +90,3 @@ function withResolution(png: Uint8Array): Uint8Array {
   chunk.writeUInt32BE(crc32(body), 4 + body.length);
   return Buffer.concat([png.subarray(0, PNG_HEADER_LENGTH), chunk, png.subarray(PNG_HEADER_LENGTH)]);
 }
-
-const ENTITIES: Readonly<Record<string, string>> = { '&': '&amp;', '<': '&lt;', '>': '&gt;' };
-const escapeXml = (text: string): string => text.replace(/[&<>]/g, (character) => ENTITIES[character]!);

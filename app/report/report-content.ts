@@ -24,6 +24,9 @@ export interface ReportedFile {
   readonly method: readonly string[];
 }
 
+/** Said under every table of energies. */
+export const DIGITS_NOTE = 'All digits are in the CSV file.';
+
 /** Said beside every well depth. */
 export const SAFETY_NOTE =
   'Energies of a model in a finite basis, not measured data: for decisions about safety rely on measurements, the rules in force and qualified judgement.';
@@ -47,6 +50,13 @@ export function reportContent(
     findings: results.flatMap((file, index) => findingsRows(file, nameOf(index), unitOf(file))),
     ...(withoutFigure === undefined ? {} : { withoutFigure }),
   };
+}
+
+/** The study sentence, or what is compared. */
+export function reportHeading({ files }: ReportContent): string {
+  const names = files.map(({ name }) => name);
+  if (files.length === 1) return files[0]?.sentence ?? '';
+  return `Comparison of ${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
 }
 
 function reportedFile(results: StudyResults, name: string, sentence: string): ReportedFile {

@@ -28,8 +28,8 @@ export interface TableRow {
 export const NOT_CONVERGED = 'n.c.';
 export const NOT_COMPUTED = '';
 
-/** More decimals say nothing at the usual thresholds, and make columns too wide. */
-const MOST_DECIMALS = 8;
+/** A microhartree; more makes columns too wide for a page, and is in the CSV. */
+const MOST_DECIMALS = 6;
 const LEAST_DECIMALS = 3;
 /** Of coordinates; evenly spaced scans have endless decimals. */
 const MOST_COORDINATE_DECIMALS = 6;

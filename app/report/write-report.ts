@@ -6,6 +6,7 @@ import { studyCsv } from '../study/csv';
 import { studySentence } from '../study/sentence';
 import { planFigure } from './figure-plan';
 import { figureSpecification } from './figure-specification';
+import { htmlReport } from './html-report';
 import { latexTable } from './latex-table';
 import { markdownReport } from './markdown-table';
 import { renderPng, renderSvg } from './render-figure';
@@ -13,13 +14,14 @@ import { reportContent } from './report-content';
 
 /** One column of a journal and the whole page. */
 const WIDTHS_MILLIMETRES = [85, 170] as const;
+const HTML_FIGURE_MILLIMETRES = 170;
 /** Longer than that, file names of comparisons stop being names. */
 const LONGEST_NAME = 80;
 
 /**
  * Writes the report of one study, or of several to be compared, into a folder that is made if need be: figures
- * (SVG and PNG, two widths), a CSV a results file, a Markdown report and a LaTeX table. A single geometry has no
- * figure; the Markdown report says so.
+ * (SVG and PNG, two widths), a CSV a results file, the report as HTML and as Markdown, a LaTeX table. A single
+ * geometry has no figure, and the report says so.
  *
  * @param names - one a results file, without folder and endings
  * @returns the paths written
@@ -40,17 +42,24 @@ export async function writeReport(
     .map((sentence, index) => ended(results.length > 1 ? `${distinct[index]}: ${sentence}` : sentence))
     .join(' ');
 
-  const files = new Map<string, string | Uint8Array>();
-  for (const [index, file] of results.entries()) files.set(`${distinct[index]}.csv`, studyCsv(file));
-  files.set(`${base}.report.md`, markdownReport(content));
-  files.set(`${base}.table.tex`, latexTable(content));
+  const svgs = new Map<number, string>();
   if ('plan' in figure) {
     for (const widthMillimetres of WIDTHS_MILLIMETRES) {
       const specification = figureSpecification(figure.plan, { widthMillimetres, caption });
-      const svg = await renderSvg(specification, widthMillimetres, { title: joined, description: caption });
-      files.set(`${base}.figure-${widthMillimetres}mm.svg`, svg);
-      files.set(`${base}.figure-${widthMillimetres}mm.png`, await renderPng(svg, widthMillimetres));
+      svgs.set(
+        widthMillimetres,
+        await renderSvg(specification, widthMillimetres, { title: joined, description: caption }),
+      );
     }
+  }
+  const files = new Map<string, string | Uint8Array>();
+  for (const [index, file] of results.entries()) files.set(`${distinct[index]}.csv`, studyCsv(file));
+  files.set(`${base}.report.md`, markdownReport(content));
+  files.set(`${base}.report.html`, htmlReport(content, svgs.get(HTML_FIGURE_MILLIMETRES)));
+  files.set(`${base}.table.tex`, latexTable(content));
+  for (const [widthMillimetres, svg] of svgs) {
+    files.set(`${base}.figure-${widthMillimetres}mm.svg`, svg);
+    files.set(`${base}.figure-${widthMillimetres}mm.png`, await renderPng(svg, widthMillimetres));
   }
   await mkdir(outDir, { recursive: true });
   const paths: string[] = [];

@@ -25,7 +25,7 @@ describe('latexTable', () => {
     );
     expect(single).toContain('\\cmidrule(lr){2-4} \\cmidrule(lr){5-6}');
     expect(single).toContain('\\caption{Pull the H--H bond of H\\textsubscript{2}.}');
-    expect(single).toMatch(/\$0\.4\$ & \$-\d\.\d{8}\$/);
+    expect(single).toMatch(/\$0\.4\$ & \$-\d\.\d{6}\$/);
   });
 
   it('names the files above their columns in a comparison, and breaks a long table across pages', () => {
@@ -35,6 +35,6 @@ describe('latexTable', () => {
     const table = latexTable(content);
     expect(table).toContain('\\begin{longtable}{rrr}');
     expect(table).toContain('\\multicolumn{1}{c}{a\\_1} & \\multicolumn{1}{c}{b}');
-    expect(table).toMatch(/\$0\.40\$ & \$-\d\.\d{8}\$ & -- \\\\/);
+    expect(table).toMatch(/\$0\.40\$ & \$-\d\.\d{6}\$ & -- \\\\/);
   });
 });

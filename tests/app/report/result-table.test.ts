@@ -14,8 +14,8 @@ describe('resultTable', () => {
     const full = results.points[3]!.levels.FCI;
     if (full?.kind !== 'correlated') throw new Error('sample changed');
     expect(table.rows[3]).toMatchObject({ coordinate: '0.7' });
-    expect(table.rows[3]!.cells[2]).toBe(full.energy.toFixed(8));
-    expect(table.rows[3]!.cells[4]).toBe(full.correlation.toFixed(8));
+    expect(table.rows[3]!.cells[2]).toBe(full.energy.toFixed(6));
+    expect(table.rows[3]!.cells[4]).toBe(full.correlation.toFixed(6));
   });
 
   it('prints no digit that the threshold does not cover', () => {

@@ -13,7 +13,7 @@ beforeEach(async () => {
 afterEach(() => rm(folder, { recursive: true, force: true }));
 
 describe('writeReport', () => {
-  it('writes figures, CSV, Markdown and LaTeX, nothing else, and says where', async () => {
+  it('writes figures, CSV, report and LaTeX table, nothing else, and says where', async () => {
     const paths = await writeReport([sampleResults()], ['h2'], join(folder, 'new', 'reports'));
     const names = paths.map((path) => basename(path));
     expect(names.toSorted()).toEqual([
@@ -22,6 +22,7 @@ describe('writeReport', () => {
       'h2.figure-170mm.svg',
       'h2.figure-85mm.png',
       'h2.figure-85mm.svg',
+      'h2.report.html',
       'h2.report.md',
       'h2.table.tex',
     ]);
@@ -45,7 +46,7 @@ describe('writeReport', () => {
     const { scan: _, ...study } = results.study;
     const single = { ...results, study, points: [{ ...results.points[3]!, coordinate: null }] };
     const names = (await writeReport([single], ['h2'], folder)).map((path) => basename(path));
-    expect(names).toEqual(['h2.csv', 'h2.report.md', 'h2.table.tex']);
+    expect(names).toEqual(['h2.csv', 'h2.report.md', 'h2.report.html', 'h2.table.tex']);
   });
 
   it('leaves nothing behind where the results share no axis', async () => {
