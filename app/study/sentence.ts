@@ -42,7 +42,7 @@ export function sentenceParts(study: Study): readonly SentencePart[] {
           plain(' '),
           ...rangeParts(scan, 'bonds' in scan.coordinate ? (molecule.unit === 'bohr' ? ' bohr' : ' Å') : '°'),
         ]
-      : [plain('Compute '), moleculePart, plain(' at the geometry given')]),
+      : [plain('Compute '), moleculePart, plain(' at '), value('bonds', 'scan', 'the geometry given')]),
     plain(', in '),
     value('basis', 'basis', basisText(study.basis)),
     plain(', with '),

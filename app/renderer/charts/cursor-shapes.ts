@@ -1,0 +1,48 @@
+import type { Shape } from 'plotly.js-dist';
+import { correlationCurves, energyCurves, positions } from './curves';
+import type { FigureRequest } from './figure';
+
+const RING_RADIUS_PIXELS = 7;
+
+/** The cursor: a line through both charts and a ring around every level's number at that geometry. */
+export function cursorShapes(request: FigureRequest, index: number | undefined): Partial<Shape>[] {
+  const x =
+    index === undefined
+      ? null
+      : (positions(request.study, request.points, request.lengthUnit)[index] ?? null);
+  if (index === undefined || x === null) return [];
+  const ring = (y: number, axis: 'y' | 'y2'): Partial<Shape> => ({
+    type: 'circle',
+    xref: 'x',
+    yref: axis,
+    xsizemode: 'pixel',
+    ysizemode: 'pixel',
+    xanchor: x,
+    yanchor: y,
+    x0: -RING_RADIUS_PIXELS,
+    x1: RING_RADIUS_PIXELS,
+    y0: -RING_RADIUS_PIXELS,
+    y1: RING_RADIUS_PIXELS,
+    line: { color: request.theme.cursor, width: 1.5 },
+  });
+  const rings = (curves: ReturnType<typeof correlationCurves>, axis: 'y' | 'y2') =>
+    curves
+      .filter(({ level }) => !request.hiddenLevels.includes(level))
+      .flatMap(({ values }) => (typeof values[index] === 'number' ? [ring(values[index], axis)] : []));
+  const line: Partial<Shape> = {
+    type: 'line',
+    xref: 'x',
+    yref: 'paper',
+    x0: x,
+    x1: x,
+    y0: 0,
+    y1: 1,
+    layer: 'below',
+    line: { color: request.theme.cursor, width: 1.5 },
+  };
+  return [
+    line,
+    ...rings(energyCurves(request.study, request.points, request).curves, 'y'),
+    ...rings(correlationCurves(request.study, request.points, request.energyUnit), 'y2'),
+  ];
+}

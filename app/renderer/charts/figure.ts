@@ -1,0 +1,247 @@
+import type { Dash, Data, Layout } from 'plotly.js-dist';
+import type { Study } from '#engine';
+import { ENERGY_UNITS, LENGTH_UNITS } from '../units';
+import type { ChartTheme } from './chart-theme';
+import {
+  type Curve,
+  type CurveOptions,
+  correlationCurves,
+  energyCurves,
+  type Points,
+  positions,
+  scansLength,
+} from './curves';
+import { type CurveLook, curveLook } from './palette';
+
+export interface FigureRequest extends CurveOptions {
+  readonly study: Study;
+  readonly points: Points;
+  readonly hiddenLevels: readonly string[];
+  readonly theme: ChartTheme;
+  /** changes when a zoom made by the user no longer makes sense */
+  readonly zoomKey: string;
+}
+
+export interface Figure {
+  readonly data: readonly Data[];
+  readonly layout: Partial<Layout>;
+}
+
+/** Vertical shares of the two charts and of the strip of cautions, from the bottom. */
+const CAUTION_BAND = [0, 0.035] as const;
+const CORRELATION_BAND = [0, 0.33] as const;
+const ENERGY_BAND = [0.385, 1] as const;
+/** what the strip of cautions takes from the chart above it */
+const STRIP_SHARE = 0.085;
+
+/**
+ * Energies above, correlation energies below, cautions at the foot, over one axis of distance, so that a zoom
+ * of one is a zoom of all.
+ */
+export function buildFigure(request: FigureRequest): Figure {
+  const { study, points, theme } = request;
+  const x = positions(study, points, request.lengthUnit);
+  const isShown = ({ level }: Curve) => !request.hiddenLevels.includes(level);
+  const energies = energyCurves(study, points, request).curves.filter(isShown);
+  const correlations = correlationCurves(study, points, request.energyUnit).filter(isShown);
+  const hasCautions = points.some((point) => (point?.cautions.length ?? 0) > 0);
+  const draw = (curve: Curve, axis: 'y' | 'y2') => tracesOf(curve, x, axis, request);
+
+  return {
+    data: [
+      ...drawingOrder(energies).flatMap((curve) => draw(curve, 'y')),
+      ...drawingOrder(correlations).flatMap((curve) => draw(curve, 'y2')),
+      ...(hasCautions ? [cautionTrace(x, points, theme)] : []),
+    ],
+    layout: {
+      font: { family: theme.fontFamily, size: theme.fontSize, color: theme.text },
+      paper_bgcolor: theme.paper,
+      plot_bgcolor: theme.plot,
+      margin: { l: 64, r: 14, t: 10, b: 44 },
+      showlegend: false,
+      dragmode: 'zoom',
+      // the nearest point shows by a line under the pointer; a click puts the cursor there
+      hovermode: 'x',
+      hoverdistance: -1,
+      spikedistance: -1,
+      uirevision: request.zoomKey,
+      xaxis: {
+        ...axisLook(theme),
+        anchor: hasCautions ? 'y3' : 'y2',
+        title: title(axisTitle(study, request), theme),
+        ...fullRange(study, x, request),
+        showspikes: true,
+        spikemode: 'across',
+        spikesnap: 'hovered data',
+        spikecolor: theme.axis,
+        spikedash: 'solid',
+        spikethickness: 1,
+      },
+      yaxis: {
+        ...axisLook(theme),
+        domain: [...ENERGY_BAND],
+        title: title(energyTitle(request), theme),
+        automargin: true,
+      },
+      yaxis2: {
+        ...axisLook(theme),
+        domain: [CORRELATION_BAND[0] + (hasCautions ? STRIP_SHARE : 0), CORRELATION_BAND[1]],
+        title: title(`Correlation, ${ENERGY_UNITS[request.energyUnit].symbol}`, theme),
+        automargin: true,
+      },
+      ...(hasCautions && {
+        yaxis3: {
+          domain: [...CAUTION_BAND],
+          range: [-1, 1],
+          fixedrange: true,
+          showgrid: false,
+          zeroline: false,
+          tickvals: [0],
+          ticktext: ['Cautions'],
+          tickfont: { color: theme.caution },
+          ticks: '',
+        },
+      }),
+    },
+  };
+}
+
+const title = (text: string, theme: ChartTheme) => ({
+  text,
+  standoff: 10,
+  font: { size: theme.fontSize, color: theme.quietText },
+});
+
+const axisLook = (theme: ChartTheme) => ({
+  gridcolor: theme.grid,
+  linecolor: theme.axis,
+  tickcolor: theme.axis,
+  tickfont: { color: theme.text },
+  showline: true,
+  ticks: 'outside' as const,
+  ticklen: 4,
+  zeroline: false,
+  exponentformat: 'power' as const,
+});
+
+function axisTitle(study: Study, { lengthUnit }: CurveOptions): string {
+  if (study.scan === undefined) return 'Geometry as given';
+  const { coordinate } = study.scan;
+  if ('angle' in coordinate) return 'Angle, °';
+  if ('dihedral' in coordinate) return 'Dihedral angle, °';
+  const bonds = coordinate.bonds.length > 1 ? 'Bond lengths' : 'Bond length';
+  return `${bonds}, ${LENGTH_UNITS[lengthUnit].symbol}`;
+}
+
+function energyTitle({ energyReference, energyUnit }: CurveOptions): string {
+  const { symbol } = ENERGY_UNITS[energyUnit];
+  switch (energyReference) {
+    case 'absolute':
+      return `Energy, ${symbol}`;
+    case 'ownMinimum':
+      return `Energy above own minimum, ${symbol}`;
+    case 'farEnd':
+      return `Energy against far end, ${symbol}`;
+  }
+}
+
+/** The whole scan from the start, so that the axis does not creep while points arrive; 3 % of air at each end. */
+function fullRange(
+  study: Study,
+  x: readonly (number | null)[],
+  request: FigureRequest,
+): { range?: [number, number] } {
+  const ends =
+    study.scan === undefined || 'values' in study.scan
+      ? x.filter((value) => value !== null)
+      : positionsOfEnds(study, study.scan, request);
+  if (ends.length === 0) return {};
+  const low = Math.min(...ends);
+  const high = Math.max(...ends);
+  const air = low === high ? 0.5 : 0.03 * (high - low);
+  return { range: [low - air, high + air] };
+}
+
+function positionsOfEnds(
+  study: Study,
+  { from, to }: { readonly from: number; readonly to: number },
+  { lengthUnit }: CurveOptions,
+): readonly number[] {
+  const scale = scansLength(study)
+    ? LENGTH_UNITS[lengthUnit].perBohr / LENGTH_UNITS[study.molecule.unit].perBohr
+    : 1;
+  return [from * scale, to * scale];
+}
+
+/** The complete CI, the one solid line, first: what is drawn later, dashed, stays visible on top of it. */
+const drawingOrder = (curves: readonly Curve[]): readonly Curve[] =>
+  [...curves].sort((a, b) => Number(b.level === 'FCI') - Number(a.level === 'FCI'));
+
+/** The line of the converged points, and open crosses, not joined, for the others. */
+function tracesOf(
+  curve: Curve,
+  x: readonly (number | null)[],
+  axis: 'y' | 'y2',
+  request: FigureRequest,
+): Data[] {
+  const look = curveLook(curve.level, request.study.levels, request.theme.ground);
+  const shared = {
+    type: 'scatter' as const,
+    x: [...x],
+    xaxis: 'x',
+    yaxis: axis,
+    legendgroup: curve.label,
+    showlegend: axis === 'y',
+    hoverinfo: 'none' as const,
+  };
+  const converged = curve.values.map((value, index) => (curve.isConverged[index] ? value : null));
+  const unconverged = curve.values.map((value, index) => (curve.isConverged[index] ? null : value));
+  const line: Data = {
+    ...shared,
+    name: curve.label,
+    mode: 'lines+markers',
+    y: converged,
+    connectgaps: false,
+    line: { color: look.colour, dash: dashText(look.dash), width: curve.isExcited ? 1.2 : look.width },
+    marker: convergedMarker(look, curve),
+    opacity: curve.isExcited ? 0.85 : 1,
+  };
+  if (unconverged.every((value) => value === null)) return [line];
+  const crosses: Data = {
+    ...shared,
+    name: `${curve.label}, not converged`,
+    mode: 'markers',
+    y: unconverged,
+    marker: { symbol: 'x-thin-open', size: 10, color: look.colour, line: { color: look.colour, width: 2 } },
+  };
+  return [line, crosses];
+}
+
+/** Plotly takes any pattern of pixels here, which its types do not say. */
+const dashText = (dash: readonly number[]): Dash =>
+  (dash.length === 0 ? 'solid' : dash.map((length) => `${length}px`).join(',')) as Dash;
+
+function convergedMarker(look: CurveLook, curve: Curve) {
+  const count = curve.values.length;
+  const size = count <= 60 ? 6 : count <= 150 ? 4.5 : 3;
+  return {
+    symbol: curve.isExcited ? (`${look.shape}-open` as const) : look.shape,
+    size: curve.isExcited ? size - 1 : size,
+    color: look.colour,
+  };
+}
+
+function cautionTrace(x: readonly (number | null)[], points: Points, theme: ChartTheme): Data {
+  return {
+    type: 'scatter',
+    mode: 'markers',
+    name: 'Cautions',
+    x: [...x],
+    y: points.map((point) => ((point?.cautions.length ?? 0) > 0 ? 0 : null)),
+    hoverinfo: 'none',
+    xaxis: 'x',
+    yaxis: 'y3',
+    showlegend: false,
+    marker: { symbol: 'triangle-up', size: 8, color: theme.caution },
+  };
+}

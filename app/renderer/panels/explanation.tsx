@@ -1,0 +1,32 @@
+import type { StudyExplanation } from '#engine';
+import { formatBytes, formatDuration, formatFixed } from '../numbers';
+import { useWindowState } from '../state/window-context';
+import type { Check } from '../state/window-state';
+
+/** What the study asks of the machine, in one line, before it is computed. */
+export function Explanation({ check }: { readonly check: Check }) {
+  const workers = useWindowState(({ catalogue }) => catalogue.program?.workers ?? 1);
+  const result = check.kind === 'judged' ? check.result : check.last;
+  if (result === undefined || !result.ok) return <p className="explanation">&nbsp;</p>;
+  return <p className="explanation">{explanationText(result.explanation, workers)}</p>;
+}
+
+export function explanationText(explanation: StudyExplanation, workers: number): string {
+  const { electrons, functions, frozenOrbitals, points, levels } = explanation;
+  const determinants = levels.flatMap(({ level, determinants: count }) =>
+    count === undefined ? [] : [`${level} ${formatFixed(count, 0)}`],
+  );
+  const seconds = (points * levels.reduce((sum, level) => sum + level.seconds, 0)) / workers;
+  const bytes = Math.max(0, ...levels.map((level) => level.bytes));
+  return [
+    plural(electrons, 'electron'),
+    plural(functions, 'basis function'),
+    ...(frozenOrbitals > 0 ? [plural(frozenOrbitals, 'frozen orbital')] : []),
+    plural(points, 'point'),
+    ...(determinants.length > 0 ? [`determinants ${determinants.join(', ')}`] : []),
+    `${seconds < 1 ? '' : 'about '}${formatDuration(seconds)}, ${formatBytes(bytes)}`,
+  ].join(' · ');
+}
+
+const plural = (count: number, noun: string): string =>
+  `${formatFixed(count, 0)} ${noun}${count === 1 ? '' : 's'}`;

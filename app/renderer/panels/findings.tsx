@@ -1,0 +1,149 @@
+import type { LengthUnit, LevelFindings, Study } from '#engine';
+import { groupCautions, neighbourRuns } from '../charts/cautions';
+import { scansLength } from '../charts/curves';
+import { LevelSwatch } from '../charts/level-swatch';
+import { formatFixed, formatPlain } from '../numbers';
+import { useWindowState } from '../state/window-context';
+import type { Run } from '../state/window-state';
+import { convertLength, ENERGY_UNITS, type EnergyUnit, LENGTH_UNITS, toEnergyUnit } from '../units';
+
+/** What can be read off each level's curve, and where it should not be trusted. */
+export function Findings() {
+  const run = useWindowState((state) => state.run);
+  const view = useWindowState((state) => state.view);
+  if (run === undefined) return <p className="empty">Nothing has been computed yet.</p>;
+  const { study, results } = run;
+  const lengthUnit = view.lengthUnit ?? study.molecule.unit;
+  return (
+    <div className="findings">
+      {results === undefined ? (
+        <p className="empty">Findings are read off the finished curve.</p>
+      ) : (
+        <>
+          {study.levels.map((level) => {
+            const findings = results.findings[level];
+            return findings === undefined ? null : (
+              <section key={level} className="finding">
+                <h3>
+                  <LevelSwatch level={level} levels={study.levels} /> {level}
+                </h3>
+                <FindingFacts {...{ findings, study, lengthUnit, energyUnit: view.energyUnit }} />
+              </section>
+            );
+          })}
+          {Object.values(results.findings).some(({ wellDepth }) => wellDepth !== undefined) && (
+            <p className="safety">
+              Well depths are computed, against the far end of this curve. Where safety hangs on a bond’s
+              strength, go by measured data, local rules and qualified judgement.
+            </p>
+          )}
+        </>
+      )}
+      <CautionList run={run} lengthUnit={lengthUnit} />
+    </div>
+  );
+}
+
+interface FindingFactsProps {
+  readonly findings: LevelFindings;
+  readonly study: Study;
+  readonly lengthUnit: LengthUnit;
+  readonly energyUnit: EnergyUnit;
+}
+
+function FindingFacts({ findings, study, lengthUnit, energyUnit }: FindingFactsProps) {
+  const { symbol, decimals } = ENERGY_UNITS[energyUnit];
+  const { minimum, wellDepth } = findings;
+  const where = positionText(study, lengthUnit);
+  return (
+    <dl className="facts">
+      {minimum.kind === 'found' ? (
+        <>
+          <div>
+            <dt>Equilibrium distance</dt>
+            <dd>
+              {where(minimum.equilibriumDistance, 6)}
+              <span className="hint"> ± {where(minimum.uncertainty, 1)}</span>
+            </dd>
+          </div>
+          <div>
+            <dt>Energy there</dt>
+            <dd>
+              {formatFixed(toEnergyUnit(minimum.energy, energyUnit), decimals)} {symbol}
+            </dd>
+          </div>
+        </>
+      ) : (
+        <p className="absent">{whyNoMinimum(minimum, where)}</p>
+      )}
+      {wellDepth === undefined ? (
+        minimum.kind === 'found' && <p className="absent">No well depth: the far end has not converged.</p>
+      ) : (
+        <div>
+          <dt>Well depth, against {where(wellDepth.farEnd, 5)}</dt>
+          <dd>
+            {formatFixed(toEnergyUnit(wellDepth.value, energyUnit), decimals)} {symbol}
+          </dd>
+        </div>
+      )}
+    </dl>
+  );
+}
+
+type PositionText = (value: number, significant: number) => string;
+
+const positionText =
+  (study: Study, lengthUnit: LengthUnit): PositionText =>
+  (value, significant) =>
+    scansLength(study)
+      ? `${formatPlain(convertLength(value, study.molecule.unit, lengthUnit), significant)} ${LENGTH_UNITS[lengthUnit].symbol}`
+      : `${formatPlain(value, significant)}°`;
+
+export function whyNoMinimum(
+  minimum: Exclude<LevelFindings['minimum'], { readonly kind: 'found' }>,
+  where: PositionText,
+): string {
+  switch (minimum.kind) {
+    case 'atEdge':
+      return `No minimum inside the range: the lowest point is its edge, ${where(minimum.coordinate, 5)}. Widen the range there.`;
+    case 'several':
+      return `Several minima, near ${minimum.near.map((place) => where(place, 5)).join(', ')}. Narrow the range to one of them.`;
+    case 'none':
+      return `No minimum: ${minimum.reason}.`;
+  }
+}
+
+function CautionList({ run, lengthUnit }: { readonly run: Run; readonly lengthUnit: LengthUnit }) {
+  const groups = groupCautions(run.points);
+  const whole = run.results?.cautions ?? [];
+  if (groups.length === 0 && whole.length === 0) return null;
+  const where = positionText(run.study, lengthUnit);
+  const at = (index: number) => {
+    const coordinate = run.points[index]?.coordinate ?? null;
+    return coordinate === null ? '' : where(coordinate, 4);
+  };
+  return (
+    <section>
+      <h3>Cautions</h3>
+      <ul className="cautions">
+        {whole.map(({ code, level, message }) => (
+          <li key={`${code} ${level}`}>
+            {level === undefined ? '' : <strong>{level}: </strong>}
+            {message}
+          </li>
+        ))}
+        {groups.map(({ caution: { code, level, message }, at: indices }) => (
+          <li key={`${code} ${level}`}>
+            {level === undefined ? '' : <strong>{level}: </strong>}
+            {message}{' '}
+            <span className="hint">
+              {neighbourRuns(indices)
+                .map(([first, last]) => (first === last ? at(first) : `${at(first)} to ${at(last)}`))
+                .join(', ')}
+            </span>
+          </li>
+        ))}
+      </ul>
+    </section>
+  );
+}

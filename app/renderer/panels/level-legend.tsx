@@ -1,0 +1,32 @@
+import { ToggleButton } from 'react-aria-components';
+import { LevelSwatch } from '../charts/level-swatch';
+import { useController, useWindowState } from '../state/window-context';
+import type { Run } from '../state/window-state';
+
+/** The levels with their lines; each can be taken off the charts and put back. */
+export function LevelLegend({ run: { study, points } }: { readonly run: Run }) {
+  const hidden = useWindowState(({ view }) => view.hiddenLevels);
+  const controller = useController();
+  const hasUnconverged = points.some(
+    (point) => point !== undefined && Object.values(point.levels).some(({ converged }) => !converged),
+  );
+  return (
+    <div className="legend" role="group" aria-label="Levels drawn">
+      {study.levels.map((level) => (
+        <ToggleButton
+          key={level}
+          className="legendEntry"
+          isSelected={!hidden.includes(level)}
+          onChange={(isShown) =>
+            controller.changeView({
+              hiddenLevels: isShown ? hidden.filter((name) => name !== level) : [...hidden, level],
+            })
+          }
+        >
+          <LevelSwatch level={level} levels={study.levels} /> {level}
+        </ToggleButton>
+      ))}
+      {hasUnconverged && <span className="hint">× not converged, not joined to the curve</span>}
+    </div>
+  );
+}

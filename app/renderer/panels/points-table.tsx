@@ -1,0 +1,71 @@
+import { energyColumns } from '../../study/energy-columns';
+import { positions, scansLength } from '../charts/curves';
+import { formatFixed, formatPlain } from '../numbers';
+import { cursorIndex } from '../state/cursor';
+import { useController, useWindowState } from '../state/window-context';
+import { ENERGY_UNITS, LENGTH_UNITS, toEnergyUnit } from '../units';
+
+/** All energies of all points; a click puts the cursor on a row. */
+export function PointsTable() {
+  const run = useWindowState((state) => state.run);
+  const view = useWindowState((state) => state.view);
+  const controller = useController();
+  if (run === undefined) return <p className="empty">Nothing has been computed yet.</p>;
+  const { study, points } = run;
+  const lengthUnit = view.lengthUnit ?? study.molecule.unit;
+  const x = positions(study, points, lengthUnit);
+  const columns = energyColumns({ study, points: points.filter((point) => point !== undefined) });
+  const { symbol, decimals } = ENERGY_UNITS[view.energyUnit];
+  const cursor = cursorIndex(run, view.cursor);
+  return (
+    <div className="pointsTable" tabIndex={0} role="region" aria-label="All points">
+      <table className="numbers">
+        <caption>Energies, {symbol}; × not converged, △ caution</caption>
+        <thead>
+          <tr>
+            <th scope="col">
+              {scansLength(study) ? LENGTH_UNITS[lengthUnit].symbol : study.scan ? '°' : 'Point'}
+            </th>
+            {columns.map(({ label }) => (
+              <th scope="col" key={label}>
+                {label}
+              </th>
+            ))}
+          </tr>
+        </thead>
+        <tbody>
+          {points.map((point, index) =>
+            point === undefined ? null : (
+              // biome-ignore lint/suspicious/noArrayIndexKey: a point's number is its identity
+              <tr
+                key={index}
+                aria-current={index === cursor || undefined}
+                onClick={() => controller.changeView({ cursor: index })}
+              >
+                <th scope="row">
+                  {point.cautions.length > 0 && (
+                    <span className="cautionMark" title="caution">
+                      △
+                    </span>
+                  )}
+                  {x[index] == null ? 'as given' : formatPlain(x[index], 7)}
+                </th>
+                {columns.map(({ label, entryAt }) => {
+                  const entry = entryAt(point);
+                  return (
+                    <td key={label} data-unconverged={(entry !== undefined && !entry.converged) || undefined}>
+                      {entry === undefined
+                        ? '–'
+                        : formatFixed(toEnergyUnit(entry.energy, view.energyUnit), decimals)}
+                      {entry !== undefined && !entry.converged && ' ×'}
+                    </td>
+                  );
+                })}
+              </tr>
+            ),
+          )}
+        </tbody>
+      </table>
+    </div>
+  );
+}

@@ -1,0 +1,260 @@
+import type { ReactNode } from 'react';
+import type {
+  CorrelatedResult,
+  CorrelatedState,
+  HartreeFockResult,
+  LevelResult,
+  SinglesResult,
+} from '#engine';
+import { LevelSwatch } from '../../charts/level-swatch';
+import { formatFixed, formatScientific } from '../../numbers';
+import { ENERGY_UNITS, type EnergyUnit, toEnergyUnit } from '../../units';
+import { describeDeterminant } from './describe-determinant';
+import { describeTermination } from './describe-termination';
+
+interface LevelDetailsProps {
+  readonly level: string;
+  readonly levels: readonly string[];
+  readonly result: LevelResult;
+  readonly energyUnit: EnergyUnit;
+}
+
+/** Everything else that a level gives at the point. */
+export function LevelDetails({ level, levels, result, energyUnit }: LevelDetailsProps) {
+  return (
+    <details className="detailBlock" open>
+      <summary>
+        <LevelSwatch level={level} levels={levels} /> <strong>{level}</strong>
+        <span className={result.converged ? 'hint' : 'notConverged'}> {describeTermination(result)}</span>
+      </summary>
+      {result.kind === 'hartreeFock' && <HartreeFockFacts result={result} unit={energyUnit} />}
+      {result.kind === 'singles' && <SinglesStates result={result} unit={energyUnit} />}
+      {result.kind === 'correlated' && <CorrelatedFacts result={result} unit={energyUnit} />}
+    </details>
+  );
+}
+
+function Facts({ facts }: { readonly facts: readonly (readonly [ReactNode, ReactNode] | undefined)[] }) {
+  return (
+    <dl className="facts">
+      {facts.map((fact, index) =>
+        fact === undefined ? null : (
+          // biome-ignore lint/suspicious/noArrayIndexKey: the list of facts of a kind of level is fixed
+          <div key={index}>
+            <dt>{fact[0]}</dt>
+            <dd>{fact[1]}</dd>
+          </div>
+        ),
+      )}
+    </dl>
+  );
+}
+
+const energyText = (value: number, unit: EnergyUnit): string =>
+  `${formatFixed(toEnergyUnit(value, unit), ENERGY_UNITS[unit].decimals)} ${ENERGY_UNITS[unit].symbol}`;
+
+function dipoleFact([x, y, z]: readonly [number, number, number]): readonly [ReactNode, ReactNode] {
+  const size = formatFixed(Math.hypot(x, y, z), 5);
+  return [
+    <abbr key="dipole" title="About the origin of the study’s coordinates">
+      Dipole moment, e·a₀
+    </abbr>,
+    `${size}  (${[x, y, z].map((component) => formatFixed(component, 5)).join(', ')})`,
+  ];
+}
+
+function HartreeFockFacts({
+  result,
+  unit,
+}: {
+  readonly result: HartreeFockResult;
+  readonly unit: EnergyUnit;
+}) {
+  return (
+    <>
+      <Facts
+        facts={[
+          ['Iterations', result.iterations],
+          dipoleFact(result.dipole),
+          result.stability && [
+            <abbr
+              key="stability"
+              title="Lowest eigenvalues of the orbital Hessian; a negative one means that a lower solution exists"
+            >
+              Stability, Eₕ
+            </abbr>,
+            `singlet ${formatFixed(result.stability.singlet, 5)}, triplet ${formatFixed(result.stability.triplet, 5)}`,
+          ],
+        ]}
+      />
+      <NumberList
+        name={`Orbital energies, ${ENERGY_UNITS[unit].symbol}`}
+        values={result.orbitalEnergies.map((energy) =>
+          formatFixed(toEnergyUnit(energy, unit), unit === 'hartree' ? 5 : 3),
+        )}
+      />
+    </>
+  );
+}
+
+/** Numbers counted from 0, as the results file counts them. */
+function NumberList({ name, values }: { readonly name: string; readonly values: readonly string[] }) {
+  return (
+    <div className="numberList">
+      <h3>{name}</h3>
+      <ol start={0}>
+        {values.map((value, index) => (
+          // biome-ignore lint/suspicious/noArrayIndexKey: the index is what is counted
+          <li key={index}>
+            <span className="ordinal">{index}</span> {value}
+          </li>
+        ))}
+      </ol>
+    </div>
+  );
+}
+
+function SinglesStates({ result, unit }: { readonly result: SinglesResult; readonly unit: EnergyUnit }) {
+  const { symbol, decimals } = ENERGY_UNITS[unit];
+  return (
+    <table className="numbers">
+      <thead>
+        <tr>
+          <th scope="col">State</th>
+          <th scope="col">Energy, {symbol}</th>
+          <th scope="col">
+            <abbr title="Above the RHF energy">Excitation</abbr>
+          </th>
+          <th scope="col">
+            <abbr title="Oscillator strength, length form">f</abbr>
+          </th>
+          <th scope="col">Leading</th>
+        </tr>
+      </thead>
+      <tbody>
+        {result.states.map((state, index) => (
+          // biome-ignore lint/suspicious/noArrayIndexKey: states are counted in order of energy
+          <tr key={index}>
+            <th scope="row">
+              {index + 1} {state.spin}
+            </th>
+            <td>{formatFixed(toEnergyUnit(state.energy, unit), decimals)}</td>
+            <td>{formatFixed(toEnergyUnit(state.excitation, unit), Math.min(decimals, 6))}</td>
+            <td>{formatFixed(state.oscillatorStrength, 4)}</td>
+            <td className="words">
+              {state.leading
+                .slice(0, 2)
+                .map(({ from, to, weight }) => `${from} → ${to} (${formatFixed(weight, 2)})`)
+                .join(', ')}
+            </td>
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  );
+}
+
+function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; readonly unit: EnergyUnit }) {
+  const [ground] = result.states;
+  return (
+    <>
+      <Facts
+        facts={[
+          ['Spin', result.spin],
+          ['Determinants', formatFixed(result.determinants, 0)],
+          ['Iterations', result.iterations],
+          ground && ['Residual, Eₕ', formatScientific(ground.residual)],
+          dipoleFact(result.dipole),
+          result.davidsonCorrected === undefined
+            ? undefined
+            : [
+                <abbr
+                  key="davidson"
+                  title="Energy with the estimate (1 − c₀²) × correlation for what the truncation leaves out (Langhoff, Davidson 1974); not an upper bound"
+                >
+                  Davidson-corrected
+                </abbr>,
+                energyText(result.davidsonCorrected, unit),
+              ],
+        ]}
+      />
+      <NumberList
+        name="Natural occupations"
+        values={result.naturalOccupations.map((occupation) => formatFixed(occupation, 5))}
+      />
+      {ground !== undefined && <LeadingDeterminants state={ground} />}
+      {result.states.length > 1 && <States states={result.states} unit={unit} />}
+    </>
+  );
+}
+
+function LeadingDeterminants({ state }: { readonly state: CorrelatedState }) {
+  if (state.leading.length === 0) return null;
+  return (
+    <table className="numbers">
+      <thead>
+        <tr>
+          <th scope="col">
+            <abbr title="Moves out of the orbitals filled in the reference; orbitals are counted from 0">
+              Leading determinants
+            </abbr>
+          </th>
+          <th scope="col">Coefficient</th>
+          <th scope="col">Weight</th>
+        </tr>
+      </thead>
+      <tbody>
+        {state.leading.map((determinant) => (
+          <tr key={`${determinant.alpha.join()} ${determinant.beta.join()}`}>
+            <th scope="row">{describeDeterminant(determinant)}</th>
+            <td>{formatFixed(determinant.coefficient, 6)}</td>
+            <td>{formatFixed(determinant.weight, 6)}</td>
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  );
+}
+
+function States({
+  states,
+  unit,
+}: {
+  readonly states: readonly CorrelatedState[];
+  readonly unit: EnergyUnit;
+}) {
+  const { symbol, decimals } = ENERGY_UNITS[unit];
+  return (
+    <table className="numbers">
+      <thead>
+        <tr>
+          <th scope="col">State</th>
+          <th scope="col">Energy, {symbol}</th>
+          <th scope="col">
+            <abbr title="Above this level’s lowest state">Excitation</abbr>
+          </th>
+          <th scope="col">c₀²</th>
+          <th scope="col">⟨S²⟩</th>
+          <th scope="col">Leading</th>
+        </tr>
+      </thead>
+      <tbody>
+        {states.map((state, index) => (
+          // biome-ignore lint/suspicious/noArrayIndexKey: states are counted in order of energy
+          <tr key={index}>
+            <th scope="row">
+              {index + 1} {state.spin}
+            </th>
+            <td>{formatFixed(toEnergyUnit(state.energy, unit), decimals)}</td>
+            <td>{formatFixed(toEnergyUnit(state.excitation, unit), Math.min(decimals, 6))}</td>
+            <td>{formatFixed(state.referenceWeight, 4)}</td>
+            <td>{formatFixed(state.sSquared, 4)}</td>
+            <td className="words">
+              {state.leading[0] === undefined ? '' : describeDeterminant(state.leading[0])}
+            </td>
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  );
+}
