@@ -1,6 +1,10 @@
+import { contractRuns } from './contraction-runs';
 import { HERMITE_BATCH, HermiteCoulombArguments, hermiteCoulombInto } from './hermite-coulomb';
 import { type QuartetLayout, quartetLayout } from './quartet-layout';
 import type { ShellPair } from './shell-pair';
+
+/** Bra primitives whose contracted kets are held at once. */
+const BRA_BATCH = 12;
 
 /** Work arrays of the quartet kernel, grown as needed and used again for every quartet. */
 export class QuartetWorkspace {
@@ -15,7 +19,7 @@ export class QuartetWorkspace {
 
   reserve(bra: ShellPair, ket: ShellPair, layout: QuartetLayout): void {
     this.hermite = grown(this.hermite, HERMITE_BATCH * layout.hermiteCount);
-    this.ketSums = grown(this.ketSums, layout.ketSumCount);
+    this.ketSums = grown(this.ketSums, BRA_BATCH * layout.ketSumCount);
     this.braSums = grown(this.braSums, layout.braSumCount);
     this.row = grown(this.row, ket.layout.columnCount);
     this.half = grown(this.half, bra.layout.columnCount * ket.productCount);
@@ -53,18 +57,44 @@ export function coulombQuartet(
     return;
   }
   const { batch, hermite, ketSums, braSums } = workspace;
+  const braFactorCount = bra.layout.factorDegrees.length;
+  const ketFactorCount = ket.layout.factorDegrees.length;
+  const braCount = significantPrimitives(bra, primitiveThreshold / ket.bounds[0]);
   braSums.fill(0, 0, layout.braSumCount);
-  for (let i = 0; i < bra.primitiveCount; i++) {
-    const ketCount = significantPrimitives(ket, primitiveThreshold / bra.bounds[i]);
-    if (ketCount === 0) break;
-    ketSums.fill(0, 0, layout.ketSumCount);
-    for (let start = 0; start < ketCount; start += HERMITE_BATCH) {
-      const count = Math.min(HERMITE_BATCH, ketCount - start);
-      fillBatch(bra, i, ket, start, count, batch);
-      hermiteCoulombInto(layout.degree, batch, count, hermite);
-      contractKet(layout, hermite, count, ket.signedFactors, start, ketSums);
+  for (let braStart = 0; braStart < braCount; braStart += BRA_BATCH) {
+    const rows = Math.min(BRA_BATCH, braCount - braStart);
+    ketSums.fill(0, 0, rows * layout.ketSumCount);
+    for (let row = 0; row < rows; row++) {
+      const i = braStart + row;
+      const ketCount = significantPrimitives(ket, primitiveThreshold / bra.bounds[i]);
+      for (let start = 0; start < ketCount; start += HERMITE_BATCH) {
+        const count = Math.min(HERMITE_BATCH, ketCount - start);
+        fillBatch(bra, i, ket, start, count, batch);
+        hermiteCoulombInto(layout.degree, batch, count, hermite);
+        contractRuns(
+          layout.ketRuns,
+          ket.signedFactors,
+          ketFactorCount,
+          start,
+          hermite,
+          layout.hermiteCount,
+          count,
+          ketSums,
+          row * layout.ketSumCount,
+        );
+      }
     }
-    contractBra(layout, ketSums, bra.factors, i, braSums);
+    contractRuns(
+      layout.braRuns,
+      bra.factors,
+      braFactorCount,
+      braStart,
+      ketSums,
+      layout.ketSumCount,
+      rows,
+      braSums,
+      0,
+    );
   }
   expandKet(bra.layout.columnCount, ket, layout.gather, braSums, workspace.row, workspace.half);
   expandBra(bra, ket.productCount, workspace.half, workspace.block);
@@ -121,68 +151,6 @@ function fillBatch(
     batch.y[k] = py - ket.centreY[j];
     batch.z[k] = pz - ket.centreZ[j];
     batch.prefactor[k] = Math.sqrt(inverse);
-  }
-}
-
-/** ketSums[factor, n] += Σ_k factors[k, factor] · hermite[k, n], four primitives at a time. */
-function contractKet(
-  layout: QuartetLayout,
-  hermite: Float64Array,
-  count: number,
-  factors: Float64Array,
-  start: number,
-  ketSums: Float64Array,
-): void {
-  const { ketFactorCount, hermiteCount, ketStart, ketLength, ketTarget } = layout;
-  for (let factor = 0; factor < ketFactorCount; factor++) {
-    const target = ketTarget[factor];
-    const end = target + ketLength[factor];
-    let source = ketStart[factor];
-    let at = start * ketFactorCount + factor;
-    let k = 0;
-    for (; k + 3 < count; k += 4) {
-      const f0 = factors[at];
-      const f1 = factors[at + ketFactorCount];
-      const f2 = factors[at + 2 * ketFactorCount];
-      const f3 = factors[at + 3 * ketFactorCount];
-      let s0 = source;
-      let s1 = s0 + hermiteCount;
-      let s2 = s1 + hermiteCount;
-      let s3 = s2 + hermiteCount;
-      for (let n = target; n < end; n++) {
-        ketSums[n] += f0 * hermite[s0++] + f1 * hermite[s1++] + f2 * hermite[s2++] + f3 * hermite[s3++];
-      }
-      at += 4 * ketFactorCount;
-      source += 4 * hermiteCount;
-    }
-    for (; k < count; k++) {
-      const f0 = factors[at];
-      let s0 = source;
-      for (let n = target; n < end; n++) ketSums[n] += f0 * hermite[s0++];
-      at += ketFactorCount;
-      source += hermiteCount;
-    }
-  }
-}
-
-/** braSums[bra factor, ket factor, n] += factors[bra factor] · ketSums[ket factor, n] */
-function contractBra(
-  layout: QuartetLayout,
-  ketSums: Float64Array,
-  factors: Float64Array,
-  primitive: number,
-  braSums: Float64Array,
-): void {
-  const { braFactorCount, ketFactorCount, braSource, braLength, braTarget } = layout;
-  let block = 0;
-  for (let i = 0; i < braFactorCount; i++) {
-    const factor = factors[primitive * braFactorCount + i];
-    for (let j = 0; j < ketFactorCount; j++, block++) {
-      let source = braSource[block];
-      const end = source + braLength[block];
-      let target = braTarget[block];
-      while (source < end) braSums[target++] += factor * ketSums[source++];
-    }
   }
 }
 

@@ -1,4 +1,5 @@
 import { cartesianCount, cartesianIndex } from './cartesian-components';
+import { type PackedRuns, packRuns } from './contraction-runs';
 import { hermiteStart } from './hermite-index';
 import type { PairLayout } from './pair-layout';
 
@@ -8,17 +9,11 @@ export interface QuartetLayout {
   readonly degree: number;
   /** their number */
   readonly hermiteCount: number;
-  readonly braFactorCount: number;
-  readonly ketFactorCount: number;
-  /** for each factor of the ket: the run of Hermite integrals it multiplies, and where the products are summed */
-  readonly ketStart: Int32Array;
-  readonly ketLength: Int32Array;
-  readonly ketTarget: Int32Array;
+  /** contraction of the ket: Hermite integrals → one run of sums for each factor of the ket */
+  readonly ketRuns: PackedRuns;
   readonly ketSumCount: number;
-  /** for each factor of the bra and of the ket, bra first: the run of ket sums it multiplies, and their target */
-  readonly braSource: Int32Array;
-  readonly braLength: Int32Array;
-  readonly braTarget: Int32Array;
+  /** contraction of the bra: sums of the ket → one run for each factor of the bra and of the ket */
+  readonly braRuns: PackedRuns;
   readonly braSumCount: number;
   /** bra columns × ket columns: place of the sum that belongs to both */
   readonly gather: Int32Array;
@@ -33,52 +28,40 @@ export function quartetLayout(bra: PairLayout, ket: PairLayout): QuartetLayout {
 }
 
 function buildLayout(bra: PairLayout, ket: PairLayout): QuartetLayout {
-  const braFactorCount = bra.factorDegrees.length;
-  const ketFactorCount = ket.factorDegrees.length;
-  const ketStart = new Int32Array(ketFactorCount);
-  const ketLength = new Int32Array(ketFactorCount);
-  const ketTarget = new Int32Array(ketFactorCount);
   let ketSumCount = 0;
-  ket.factorDegrees.forEach((degree, factor) => {
-    ketStart[factor] = hermiteStart(degree);
-    ketLength[factor] = hermiteStart(degree + bra.degree + 1) - hermiteStart(degree);
-    ketTarget[factor] = ketSumCount;
-    ketSumCount += ketLength[factor];
+  const ketRuns = ket.factorDegrees.map((degree, factor) => {
+    const source = hermiteStart(degree);
+    const length = hermiteStart(degree + bra.degree + 1) - source;
+    const target = ketSumCount;
+    ketSumCount += length;
+    return { factor, source, length, target };
   });
-
-  const braSource = new Int32Array(braFactorCount * ketFactorCount);
-  const braLength = new Int32Array(braFactorCount * ketFactorCount);
-  const braTarget = new Int32Array(braFactorCount * ketFactorCount);
   let braSumCount = 0;
-  bra.factorDegrees.forEach((braDegree, i) => {
-    ket.factorDegrees.forEach((ketDegree, j) => {
-      const at = i * ketFactorCount + j;
-      braSource[at] = ketTarget[j] + hermiteStart(braDegree + ketDegree) - hermiteStart(ketDegree);
-      braLength[at] = cartesianCount(braDegree + ketDegree);
-      braTarget[at] = braSumCount;
-      braSumCount += braLength[at];
-    });
-  });
+  const braRuns = ketRuns.flatMap((ketRun, ketFactor) =>
+    bra.factorDegrees.map((braDegree, factor) => {
+      const degree = braDegree + ket.factorDegrees[ketFactor];
+      const source = ketRun.target + hermiteStart(degree) - ketRun.source;
+      const length = cartesianCount(degree);
+      const target = braSumCount;
+      braSumCount += length;
+      return { factor, source, length, target };
+    }),
+  );
 
   const gather = new Int32Array(bra.columnCount * ket.columnCount);
   let at = 0;
   forEachColumn(bra, (braFactor, [, v, w]) => {
     forEachColumn(ket, (ketFactor, [, y, z]) => {
-      gather[at++] = braTarget[braFactor * ketFactorCount + ketFactor] + cartesianIndex(v + y, w + z);
+      gather[at++] =
+        braRuns[ketFactor * bra.factorDegrees.length + braFactor].target + cartesianIndex(v + y, w + z);
     });
   });
   return {
     degree: bra.degree + ket.degree,
     hermiteCount: hermiteStart(bra.degree + ket.degree + 1),
-    braFactorCount,
-    ketFactorCount,
-    ketStart,
-    ketLength,
-    ketTarget,
+    ketRuns: packRuns(ketRuns),
     ketSumCount,
-    braSource,
-    braLength,
-    braTarget,
+    braRuns: packRuns(braRuns),
     braSumCount,
     gather,
   };
