@@ -2,7 +2,7 @@ export interface Progress {
   readonly stage: 'points' | 'minima';
   readonly done: number;
   readonly total: number;
-  /** absent until it can be estimated */
+  /** absent as long as it cannot be estimated */
   readonly secondsLeft?: number;
 }
 
@@ -42,7 +42,7 @@ export function trackProgress(
 interface TimeLeft {
   /** @param seconds - that one piece took on one worker */
   finished(seconds: number): void;
-  /** undefined until a piece is finished */
+  /** undefined until a piece is finished, and while the pieces under way take longer than those before */
   secondsLeft(remaining: number): number | undefined;
 }
 
@@ -65,7 +65,8 @@ export function estimateTimeLeft(workers: number, now: () => number = () => perf
     secondsLeft(remaining) {
       if (pieces === 0) return undefined;
       const atLastFinished = ((total / pieces) * remaining) / Math.max(1, Math.min(workers, remaining));
-      return Math.max(0, atLastFinished - (now() - lastFinished) / 1000);
+      const seconds = atLastFinished - (now() - lastFinished) / 1000;
+      return seconds >= 0 ? seconds : undefined;
     },
   };
 }

@@ -1,7 +1,7 @@
 import { SingleBar } from 'cli-progress';
 import type { Progress } from '../calculation/progress';
 import type { Terminal } from './terminal';
-import { durationText } from './wording';
+import { counted, durationText } from './wording';
 
 /** Shows how far a calculation is. */
 export interface ProgressDisplay {
@@ -18,12 +18,10 @@ export function progressDisplay(
   return terminal.screen ? drawnBar(terminal.screen) : plainLines(terminal, now);
 }
 
-const STAGE_NAMES: Readonly<Record<Progress['stage'], string>> = { points: 'points', minima: 'minima' };
-
 function drawnBar(stream: NodeJS.WriteStream): ProgressDisplay {
   const bar = new SingleBar({
     stream,
-    format: '{bar}  {value} of {total} {stage}{left}',
+    format: '{bar}  {text}',
     barCompleteChar: '━',
     barIncompleteChar: '·',
     barsize: 32,
@@ -34,7 +32,7 @@ function drawnBar(stream: NodeJS.WriteStream): ProgressDisplay {
   });
   return {
     show(progress) {
-      const payload = { stage: STAGE_NAMES[progress.stage], left: leftText(progress) };
+      const payload = { text: progressText(progress) };
       if (!bar.isActive) bar.start(progress.total, progress.done, payload);
       bar.setTotal(progress.total);
       bar.update(progress.done, payload);
@@ -45,20 +43,34 @@ function drawnBar(stream: NodeJS.WriteStream): ProgressDisplay {
 
 /** Seldom enough for a log file of a long run. */
 const LINE_EVERY_MS = 10_000;
+/** A sign of life where nothing new can be told. */
+const SAME_LINE_EVERY_MS = 120_000;
 
 function plainLines({ say }: Terminal, now: () => number): ProgressDisplay {
-  let lastLine = now();
+  let lastTime = now();
+  let lastCount = '';
   return {
     show(progress) {
-      const isComplete = progress.done === progress.total && progress.stage === 'points';
-      if (!isComplete && now() - lastLine < LINE_EVERY_MS) return;
-      lastLine = now();
-      say(`${progress.done} of ${progress.total} ${STAGE_NAMES[progress.stage]}${leftText(progress)}`);
+      const count = countText(progress);
+      const everyPointIsDone = progress.stage === 'points' && progress.done === progress.total;
+      const pause = everyPointIsDone ? 0 : count === lastCount ? SAME_LINE_EVERY_MS : LINE_EVERY_MS;
+      if (now() - lastTime < pause) return;
+      lastTime = now();
+      lastCount = count;
+      say(progressText(progress));
     },
     end: () => undefined,
   };
 }
 
-function leftText({ done, total, secondsLeft }: Progress): string {
-  return secondsLeft === undefined || done === total ? '' : `, about ${durationText(secondsLeft)} left`;
+function progressText(progress: Progress): string {
+  const { done, total, secondsLeft } = progress;
+  if (secondsLeft === undefined || done === total) return countText(progress);
+  return `${countText(progress)}, ${secondsLeft < 1 ? '' : 'about '}${durationText(secondsLeft)} left`;
+}
+
+function countText({ stage, done, total }: Progress): string {
+  return stage === 'points'
+    ? `${done} of ${counted(total, 'point')}`
+    : `minimum of ${done} of ${counted(total, 'curve')}`;
 }

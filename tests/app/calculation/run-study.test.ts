@@ -72,7 +72,7 @@ describe('runStudy', () => {
       expect(Object.values(levels).every(({ converged }) => converged)).toBe(true);
     }
     expect(Object.keys(results.findings)).toEqual(study.levels);
-    expect(results.findings['FCI']?.minimum.kind).toBe('found');
+    expect(results.findings.FCI?.minimum.kind).toBe('found');
     expect(results.study).toMatchObject({ ...study, molecule: { charge: 1, multiplicity: 1 }, states: 1 });
     expect(results.basis).toMatchObject({ name: 'STO-3G', functions: 2 });
   });
@@ -88,8 +88,12 @@ describe('runStudy', () => {
     for (const known of [[0], [0, 1, 2], [0, 1, 2, 3], [4, 5, 8], [...all.keys()]]) {
       const finished = new Map(known.map((index) => [index, all.get(index)!]));
       const computed: number[] = [];
-      expect(await resultsOf({ workers: 2, finished, onPoint: (index) => computed.push(index) })).toEqual(unbroken);
-      expect(computed.sort((a, b) => a - b)).toEqual([...all.keys()].filter((i) => !known.includes(i)).sort((a, b) => a - b));
+      expect(await resultsOf({ workers: 2, finished, onPoint: (index) => computed.push(index) })).toEqual(
+        unbroken,
+      );
+      expect(computed.sort((a, b) => a - b)).toEqual(
+        [...all.keys()].filter((i) => !known.includes(i)).sort((a, b) => a - b),
+      );
     }
   });
 
@@ -103,7 +107,9 @@ describe('runStudy', () => {
     expect(points[0]?.secondsLeft).toBeUndefined();
     expect(points[1]?.secondsLeft).toBeGreaterThan(0);
     expect(points.at(-1)?.secondsLeft).toBe(0);
-    expect(told.slice(points.length).map(({ done, total }) => [done, total])).toEqual([0, 1, 2, 3].map((done) => [done, 3]));
+    expect(told.slice(points.length).map(({ done, total }) => [done, total])).toEqual(
+      [0, 1, 2, 3].map((done) => [done, 3]),
+    );
   });
 
   it('stops at once when it is cancelled, and says nothing afterwards', async () => {
@@ -123,7 +129,9 @@ describe('runStudy', () => {
     expect(outcome).toEqual({ kind: 'cancelled' });
     await new Promise((resolve) => setTimeout(resolve, 50));
     expect(points).toBe(3);
-    expect(await runStudy({ prepared: prepared() }, { startWorker: startHere, signal: cancel.signal })).toEqual({
+    expect(
+      await runStudy({ prepared: prepared() }, { startWorker: startHere, signal: cancel.signal }),
+    ).toEqual({
       kind: 'cancelled',
     });
   });
@@ -160,6 +168,6 @@ describe('runStudy', () => {
   it('computes a single geometry', async () => {
     const { points, findings } = await resultsOf({}, { scan: undefined, levels: ['RHF'] });
     expect(points.map(({ coordinate }) => coordinate)).toEqual([null]);
-    expect(findings['RHF']?.minimum.kind).toBe('none');
+    expect(findings.RHF?.minimum.kind).toBe('none');
   });
 });

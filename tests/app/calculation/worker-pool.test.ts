@@ -129,7 +129,12 @@ describe('openPool', () => {
     const failure = done.catch((error: unknown) => error);
     await workers[0]!.reply({
       kind: 'failed',
-      error: { code: 'basis.linearlyDependent', place: 'basis', message: 'Too dependent.', remedy: 'Another.' },
+      error: {
+        code: 'basis.linearlyDependent',
+        place: 'basis',
+        message: 'Too dependent.',
+        remedy: 'Another.',
+      },
     });
     expect(((await failure) as CalculationFailure).error).toEqual({
       code: 'basis.linearlyDependent',

@@ -22,6 +22,15 @@ describe('progressDisplay', () => {
     expect(watched.said).toEqual(['2 of 40 points, about 6 min left']);
     display.show({ stage: 'points', done: 40, total: 40, secondsLeft: 0 });
     expect(watched.said.at(-1)).toBe('40 of 40 points');
+    display.show({ stage: 'minima', done: 0, total: 1 });
+    now = 20_000;
+    display.show({ stage: 'minima', done: 0, total: 1 });
+    now = 50_000;
+    display.show({ stage: 'minima', done: 0, total: 1 });
+    expect(watched.said.slice(2)).toEqual(['minimum of 0 of 1 curve']);
+    now = 200_000;
+    display.show({ stage: 'minima', done: 0, total: 1 });
+    expect(watched.said).toHaveLength(4);
     display.end();
   });
 
