@@ -1,5 +1,5 @@
 import { BOHR_IN_ANGSTROM } from '../constants';
-import { EngineError, type EngineErrorDetails } from '../errors';
+import { EngineError } from '../errors';
 import { findElement, isotopeMassDalton, requireElement } from './elements';
 import type { Atom, Molecule, Vector3 } from './molecule';
 import { distance } from './vector';
@@ -63,7 +63,7 @@ export function buildMolecule(input: MoleculeInput): BuiltMolecule {
       ),
     );
   }
-  errors.push(...coincidingAtoms(input).map((pair) => coincidenceError(pair, input.atoms)));
+  errors.push(...checkDistances(input));
 
   const charge = input.charge ?? 0;
   if (!Number.isInteger(charge)) {
@@ -127,35 +127,26 @@ function buildAtom(input: AtomInput, index: number, scale: number, errors: Engin
   ];
 }
 
-/** Pairs of atoms nearer than `SMALLEST_DISTANCE`. Ghosts count too: functions on top of an atom's are linearly dependent. */
-export function coincidingAtoms({
-  unit,
-  atoms,
-}: Pick<MoleculeInput, 'unit' | 'atoms'>): EngineErrorDetails['molecule.atomsCoincide'][] {
-  const scale = bohrPerUnit(unit);
-  const pairs = [];
+/** Ghosts count too: functions on top of an atom's are linearly dependent. */
+function checkDistances({ unit, atoms }: MoleculeInput): EngineError[] {
+  const errors: EngineError[] = [];
   for (let second = 1; second < atoms.length; second++) {
     for (let first = 0; first < second; first++) {
-      const distanceBohr = distance(atoms[first].at, atoms[second].at) * scale;
-      if (distanceBohr < SMALLEST_DISTANCE) pairs.push({ first, second, distanceBohr });
+      const distanceBohr = distance(atoms[first].at, atoms[second].at) * bohrPerUnit(unit);
+      if (!(distanceBohr < SMALLEST_DISTANCE)) continue;
+      errors.push(
+        new EngineError(
+          'molecule.atomsCoincide',
+          `Atoms ${first} (${atoms[first].element}) and ${second} (${atoms[second].element}) are ` +
+            `${Number(distanceBohr.toPrecision(3))} bohr apart.`,
+          `Move them at least ${SMALLEST_DISTANCE} bohr apart, or remove one.`,
+          { first, second, distanceBohr },
+          `molecule.atoms[${second}].at`,
+        ),
+      );
     }
   }
-  return pairs;
-}
-
-function coincidenceError(
-  details: EngineErrorDetails['molecule.atomsCoincide'],
-  atoms: readonly AtomInput[],
-): EngineError {
-  const { first, second, distanceBohr } = details;
-  return new EngineError(
-    'molecule.atomsCoincide',
-    `Atoms ${first} (${atoms[first].element}) and ${second} (${atoms[second].element}) are ` +
-      `${Number(distanceBohr.toPrecision(3))} bohr apart.`,
-    `Move them at least ${SMALLEST_DISTANCE} bohr apart, or remove one.`,
-    details,
-    `molecule.atoms[${second}].at`,
-  );
+  return errors;
 }
 
 const SPIN_WORDS = ['singlet', 'doublet', 'triplet', 'quartet', 'quintet', 'sextet', 'septet'];
@@ -206,7 +197,7 @@ export function nuclearRepulsion({ atoms }: Pick<Molecule, 'atoms'>): number {
   for (let a = 1; a < atoms.length; a++) {
     for (let b = 0; b < a; b++) {
       const charges = atoms[a].nuclearCharge * atoms[b].nuclearCharge;
-      // two ghosts may share a place in a molecule that was not built here: 0/0
+      // a ghost may share an atom's place where no study was checked: 0/0
       if (charges !== 0) energy += charges / distance(atoms[a].position, atoms[b].position);
     }
   }

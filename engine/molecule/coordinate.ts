@@ -21,6 +21,11 @@ export function chainOf(coordinate: TurnCoordinate): readonly number[] {
   return 'angle' in coordinate ? coordinate.angle : coordinate.dihedral;
 }
 
+/** Where an angle or dihedral stands in a study. */
+export function turnPlace(coordinate: TurnCoordinate): string {
+  return 'angle' in coordinate ? 'scan.coordinate.angle' : 'scan.coordinate.dihedral';
+}
+
 /** The pairs of atoms that a coordinate takes for bonded. */
 export function listedPairs(coordinate: Coordinate): readonly AtomPair[] {
   if ('bonds' in coordinate) return coordinate.bonds;

@@ -2,18 +2,12 @@ import { EngineError } from '../errors';
 import {
   type AtomInput,
   bohrPerUnit,
-  coincidingAtoms,
+  buildMolecule,
   LARGEST_COORDINATE,
   type MoleculeInput,
 } from './build-molecule';
-import {
-  type Coordinate,
-  chainOf,
-  DEGREE,
-  listedPairs,
-  measureCoordinate,
-  type TurnCoordinate,
-} from './coordinate';
+import { checkCoordinate } from './check-coordinate';
+import { type Coordinate, chainOf, DEGREE, measureCoordinate, type TurnCoordinate } from './coordinate';
 import type { Vector3 } from './molecule';
 import { type Motion, planMotions } from './scan-motion';
 import { type ScanRange, scanValues } from './scan-values';
@@ -27,21 +21,6 @@ import { add, cross, length, rotate, scale, subtract } from './vector';
 
 export type ScanInput = { readonly coordinate: Coordinate } & ScanRange;
 
-/** Within this of 0 or 180 degrees three atoms leave their plane, and so the axis to turn about, undefined. */
-const LINEAR_WITHIN_DEGREES = 1e-4;
-
-/**
- * Everything that keeps a coordinate from being scanned, each with its place in the study.
- *
- * Codes: `scan.atomIndex` (no such atom, an atom or bond named twice), `scan.undefinedCoordinate` (nothing listed,
- * three atoms in a line at the start), `scan.ring` and `scan.tornTwoWays` (see `planMotions`).
- */
-export function checkCoordinate(molecule: MoleculeInput, coordinate: Coordinate): readonly EngineError[] {
-  const errors = checkIndices(molecule.atoms, coordinate);
-  if (errors.length > 0) return errors;
-  return [...checkBent(molecule, coordinate), ...planMotions(molecule, coordinate).errors];
-}
-
 /**
  * Everything that keeps a scan from being run: `checkCoordinate`, then the first problem with its values (codes of
  * `scanValues`; `scan.value` for one that no geometry can have or that puts two atoms at one place).
@@ -52,16 +31,7 @@ export function checkScan(molecule: MoleculeInput, scan: ScanInput): readonly En
     const values = scanValues(scan);
     if (errors.length > 0) return errors;
     values.forEach((value, index) => {
-      const place =
-        'values' in scan
-          ? `scan.values[${index}]`
-          : index === 0
-            ? 'scan.from'
-            : index === values.length - 1
-              ? 'scan.to'
-              : 'scan';
-      checkValue(molecule, scan.coordinate, value, place);
-      checkApart(geometryAt(molecule, scan.coordinate, value), value, place);
+      checkPoint(molecule, scan.coordinate, value, valuePlace(scan, index, values.length));
     });
   } catch (error) {
     if (!(error instanceof EngineError)) throw error;
@@ -130,95 +100,39 @@ function turn(
   );
 }
 
-function checkIndices(atoms: readonly AtomInput[], coordinate: Coordinate): EngineError[] {
-  const groups: readonly { readonly place: string; readonly indices: readonly number[] }[] =
-    'bonds' in coordinate
-      ? coordinate.bonds.map((indices, bond) => ({ place: `scan.coordinate.bonds[${bond}]`, indices }))
-      : [{ place: `scan.coordinate.${Object.keys(coordinate)[0]}`, indices: chainOf(coordinate) }];
-  if (groups.length === 0) {
-    return [
-      undefinedCoordinate(
-        'No bond is listed.',
-        'List at least one bond, such as [0, 1].',
-        'scan.coordinate.bonds',
-      ),
-    ];
-  }
-  const fault = (index: number, place: string, message: string, remedy: string) =>
-    new EngineError('scan.atomIndex', message, remedy, { index, atoms: atoms.length }, place);
-  const seen = new Set<string>();
-  return groups.flatMap(({ place, indices }) => {
-    const errors = indices.flatMap((index, position) => {
-      const there = `${place}[${position}]`;
-      if (!atoms[index]) {
-        const remedy = `Atoms are counted from 0; this molecule's last one is ${atoms.length - 1}.`;
-        return [fault(index, there, `There is no atom ${index}.`, remedy)];
-      }
-      return indices.indexOf(index) < position
-        ? [fault(index, there, `Atom ${index} is named twice.`, 'Name different atoms.')]
-        : [];
-    });
-    const key = [...indices].sort((a, b) => a - b).join();
-    if (seen.has(key))
-      errors.push(fault(indices[0], place, 'This bond is listed twice.', 'Remove one of the two.'));
-    seen.add(key);
-    return errors;
-  });
+function valuePlace(scan: ScanInput, index: number, count: number): string {
+  if ('values' in scan) return `scan.values[${index}]`;
+  if (index === 0) return 'scan.from';
+  return index === count - 1 ? 'scan.to' : 'scan';
 }
 
-/** An angle, or either angle inside a dihedral, must not be a straight line. */
-function checkBent(molecule: MoleculeInput, coordinate: Coordinate): EngineError[] {
-  const pairs = listedPairs(coordinate);
-  if ('bonds' in coordinate) return [];
-  return pairs.slice(1).flatMap(([apex, end], index) => {
-    const start = pairs[index][0];
-    const [degrees] = measureCoordinate(molecule, { angle: [start, apex, end] });
-    if (Math.min(degrees, 180 - degrees) > LINEAR_WITHIN_DEGREES) return [];
-    return [
-      undefinedCoordinate(
-        `Atoms ${start}, ${apex} and ${end} are in a line, so the plane in which to turn is undefined.`,
-        'Start from a geometry in which they are bent a little.',
-        `scan.coordinate.${Object.keys(coordinate)[0]}`,
-      ),
-    ];
-  });
-}
-
-function undefinedCoordinate(reason: string, remedy: string, place: string): EngineError {
-  return new EngineError('scan.undefinedCoordinate', reason, remedy, { reason }, place);
-}
-
-function checkValue({ unit }: MoleculeInput, coordinate: Coordinate, value: number, place: string): void {
-  const largestLength = LARGEST_COORDINATE / bohrPerUnit(unit);
-  const [isPossible, message, remedy] =
-    'bonds' in coordinate
-      ? [
-          value > 0 && value <= largestLength,
-          `A bond cannot be ${value} long.`,
-          `Choose lengths above 0 and up to ${Math.floor(largestLength)}.`,
-        ]
-      : 'angle' in coordinate
-        ? [
-            value > 0 && value <= 180,
-            `An angle cannot be ${value}°.`,
-            'Choose angles above 0 and up to 180 degrees.',
-          ]
-        : [
-            Math.abs(value) <= 360,
-            `A dihedral of ${value}° is out of range.`,
-            'Choose dihedrals from −360 to 360 degrees.',
-          ];
-  if (!isPossible) throw new EngineError('scan.value', message, remedy, { value }, place);
-}
-
-function checkApart(molecule: MoleculeInput, value: number, place: string): void {
-  const [pair] = coincidingAtoms(molecule);
-  if (!pair) return;
+function checkPoint(molecule: MoleculeInput, coordinate: Coordinate, value: number, place: string): void {
+  checkValue(molecule, coordinate, value, place);
+  const built = buildMolecule(geometryAt(molecule, coordinate, value));
+  if (built.ok) return;
+  const message = `At ${value}: ${built.errors[0].message}`;
   throw new EngineError(
     'scan.value',
-    `At ${value} atoms ${pair.first} and ${pair.second} are ${Number(pair.distanceBohr.toPrecision(3))} bohr apart.`,
+    message,
     'Choose a range that keeps the atoms apart.',
     { value },
     place,
   );
+}
+
+function checkValue({ unit }: MoleculeInput, coordinate: Coordinate, value: number, place: string): void {
+  const refuse = (message: string, remedy: string): never => {
+    throw new EngineError('scan.value', message, remedy, { value }, place);
+  };
+  if ('bonds' in coordinate) {
+    const longest = LARGEST_COORDINATE / bohrPerUnit(unit);
+    if (value > 0 && value <= longest) return;
+    refuse(`A bond cannot be ${value} long.`, `Choose lengths above 0 and up to ${Math.floor(longest)}.`);
+  }
+  if ('angle' in coordinate) {
+    if (value > 0 && value <= 180) return;
+    refuse(`An angle cannot be ${value}°.`, 'Choose angles above 0 and up to 180 degrees.');
+  }
+  if (Math.abs(value) <= 360) return;
+  refuse(`A dihedral of ${value}° is out of range.`, 'Choose dihedrals from −360 to 360 degrees.');
 }

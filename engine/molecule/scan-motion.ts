@@ -7,6 +7,7 @@ import {
   chainOf,
   listedPairs,
   type TurnCoordinate,
+  turnPlace,
 } from './coordinate';
 
 /** A part of the molecule that moves as one when a bond is cut. */
@@ -85,8 +86,7 @@ function planTurn(
   const motion = smallestPart(connectivity, [before, after]);
   if (motion) return { motions: [motion], errors: [] };
   const ring = connectivity.path(...after, [after])!;
-  const place = 'angle' in coordinate ? 'scan.coordinate.angle' : 'scan.coordinate.dihedral';
-  return { motions: [], errors: [ringError(molecule, after, ring, place)] };
+  return { motions: [], errors: [ringError(molecule, after, ring, turnPlace(coordinate))] };
 }
 
 /** Of the parts beyond the second end of each bond, the smallest, or the last of these; undefined if rings leave none. */

@@ -1,14 +1,10 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { MoleculeInput } from '../../../engine/molecule/build-molecule';
+import { checkCoordinate } from '../../../engine/molecule/check-coordinate';
 import { type Coordinate, measureCoordinate } from '../../../engine/molecule/coordinate';
 import type { Vector3 } from '../../../engine/molecule/molecule';
-import {
-  checkCoordinate,
-  checkScan,
-  geometryAt,
-  scanGeometries,
-} from '../../../engine/molecule/scan-coordinate';
+import { checkScan, geometryAt, scanGeometries } from '../../../engine/molecule/scan-coordinate';
 import { add, distance, rotate } from '../../../engine/molecule/vector';
 
 const SEED = 20261201;
