@@ -122,6 +122,7 @@ function correlationInput(
     states: prepared.study.states,
     energyTolerance: prepared.study.convergence.energy,
     meanFieldEnergy: meanField.energy,
+    memoryLimit: prepared.memoryLimit,
     orbitalsConverged: meanField.termination.kind === 'converged',
     control,
   };

@@ -6,6 +6,7 @@ import { buildMolecule, electronCount } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
 import { checkScan, geometryAt } from '../molecule/scan-coordinate';
 import { scanValues } from '../molecule/scan-values';
+import { explainStudy } from './explain-study';
 import { frozenOrbitalCount } from './frozen-core';
 import { findLevel, type Level } from './levels';
 import type { CompleteStudy, Study, StudyAtom, StudyMolecule } from './study';
@@ -21,6 +22,8 @@ export interface PreparedStudy {
   readonly electrons: number;
   readonly functionCount: number;
   readonly frozenOrbitals: number;
+  /** bytes that one point may take */
+  readonly memoryLimit: number;
   /** the atoms at a value of the scan coordinate, in the study's unit */
   geometryAt(coordinate: number | null): readonly StudyAtom[];
   /** the same in atomic units */
@@ -33,8 +36,12 @@ export type Preparation =
 
 export interface PrepareOptions {
   /** text of the basis-set file that the study names, where it names one */
-  readonly basisFileText?: string;
+  readonly basisFileText?: string | undefined;
+  /** bytes that one point may take; a level that needs more is refused. Default 4 GiB */
+  readonly memoryLimit?: number | undefined;
 }
+
+export const DEFAULT_MEMORY_LIMIT = 4 * 2 ** 30;
 
 const DEFAULT_ENERGY_TOLERANCE = 1e-10;
 /** Below this, rounding in sums of integrals makes convergence a matter of luck. */
@@ -71,7 +78,7 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
   const { molecule } = built;
   const symbols = [...new Set(molecule.atoms.map((atom) => atom.symbol))];
   const basisSet = collect(() =>
-    resolveBasis(study.basis, symbols, options.basisFileText === undefined ? {} : { fileText: options.basisFileText }),
+    resolveBasis(study.basis, symbols, { fileText: options.basisFileText }),
   );
   const functionCount = basisSet && collect(() => placeBasis(basisSet, molecule).functionCount);
   collect(() => requireClosedShell(study, molecule));
@@ -86,20 +93,39 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
     frozenCore: study.frozenCore ?? false,
     convergence: { energy: study.convergence?.energy ?? DEFAULT_ENERGY_TOLERANCE },
   };
-  return {
-    ok: true,
-    prepared: {
-      study: complete,
-      levels: levels.filter((level) => level !== undefined),
-      coordinates: study.scan ? scanValues(study.scan) : [null],
-      basisSet,
-      electrons: electronCount(molecule),
-      functionCount,
-      frozenOrbitals: complete.frozenCore ? frozenOrbitalCount(molecule) : 0,
-      geometryAt: (coordinate) => geometryOf(complete, coordinate).atoms,
-      moleculeAt: (coordinate) => moleculeOf(complete, coordinate),
-    },
+  const prepared: PreparedStudy = {
+    study: complete,
+    levels: levels.filter((level) => level !== undefined),
+    coordinates: study.scan ? scanValues(study.scan) : [null],
+    basisSet,
+    electrons: electronCount(molecule),
+    functionCount,
+    // highly charged ions may have fewer electrons than their cores
+    frozenOrbitals: complete.frozenCore ? Math.min(frozenOrbitalCount(molecule), electronCount(molecule) / 2) : 0,
+    memoryLimit: options.memoryLimit ?? DEFAULT_MEMORY_LIMIT,
+    geometryAt: (coordinate) => geometryOf(complete, coordinate).atoms,
+    moleculeAt: (coordinate) => moleculeOf(complete, coordinate),
   };
+  errors.push(...checkMemory(prepared));
+  return errors.length > 0 ? { ok: false, errors } : { ok: true, prepared };
+}
+
+/** Memory is counted before any of it is taken. */
+function checkMemory(prepared: PreparedStudy): EngineError[] {
+  return explainStudy(prepared).levels.flatMap(({ level, bytes, determinants }, i) => {
+    if (bytes <= prepared.memoryLimit) return [];
+    const gibibytes = (size: number) => `${(size / 2 ** 30).toFixed(1)} GiB`;
+    const count = determinants === undefined ? '' : ` (${determinants.toLocaleString('en-GB')} determinants)`;
+    return [
+      new EngineError(
+        'study.tooLarge',
+        `${level}${count} needs about ${gibibytes(bytes)} a point; ${gibibytes(prepared.memoryLimit)} are allowed.`,
+        'Choose a lower excitation rank, a smaller basis set, a frozen core or fewer states.',
+        { bytes, limit: prepared.memoryLimit },
+        `levels[${i}]`,
+      ),
+    ];
+  });
 }
 
 function geometryOf(study: Study, coordinate: number | null): StudyMolecule {
