@@ -94,7 +94,7 @@ function unknownBasis(name: string): EngineError<'basis.unknown'> {
   const nearest = nearestOf(name, known);
   return new EngineError(
     'basis.unknown',
-    `There is no basis set “${name}”.`,
+    `There is no basis set “${name.length > 40 ? `${name.slice(0, 40)}…` : name}”.`,
     nearest === undefined
       ? `Choose one of ${listBasisSets()
           .map((entry) => entry.name)

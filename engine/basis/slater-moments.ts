@@ -1,5 +1,7 @@
 /** 2z√(2k) at the start of the recurrence: an error of the start value reaches k = 0 damped by exp(−32). */
 const DAMPING = 16;
+/** Enough for α = 1e3; a search that strays beyond loses digits rather than time. */
+const LONGEST_RECURRENCE = 600_000;
 
 /**
  * Radial moments of a Slater function of exponent 1 times a Gaussian: I(k) = ∫₀^∞ r^k exp(−r − αr²) dr for
@@ -11,7 +13,7 @@ const DAMPING = 16;
  * run downwards, i^(k−1)erfc = 2z iᵏerfc + 2(k+1) i^(k+1)erfc adds positive terms only. It ends at
  * i⁻¹erfc(z) = (2/√π) exp(−z²), which fixes the scale without any error function.
  *
- * Cost: about 128 α steps of the recurrence.
+ * Cost: about 512 α steps of the recurrence.
  *
  * @param exponent - Gaussian exponent α in bohr⁻², from 1e-3 to 1e3
  * @param highest - largest k wanted
@@ -23,7 +25,7 @@ const DAMPING = 16;
  */
 export function slaterGaussianMoments(exponent: number, highest: number): Float64Array {
   const z = 0.5 / Math.sqrt(exponent);
-  const start = highest + 40 + Math.ceil(0.5 * (DAMPING / z) ** 2);
+  const start = Math.min(highest + 40 + Math.ceil(0.5 * (DAMPING / z) ** 2), LONGEST_RECURRENCE);
   // iᵏerfc / i^(k−1)erfc, at the start from its limit of large k
   let ratio = 1 / (z + Math.sqrt(z * z + 2 * start + 2));
   const ratios = new Float64Array(highest + 1);

@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { primitiveOverlap } from '../../../engine/basis/normalisation';
 import { bestOverlap, type SlaterFunction } from '../../../engine/basis/slater-overlap';
-import { preciseOverlap } from '../../../engine/basis/slater-overlap-precise';
 import { integrateOverRadius } from '../../support/radial-quadrature';
 
 const TARGETS: readonly SlaterFunction[] = [
@@ -72,15 +71,6 @@ describe.each(TARGETS)('bestOverlap with n = $principal, l = $angularMomentum', 
         const difference = (up.gradient.get(k, 0) - down.gradient.get(k, 0)) / (2 * h);
         expect(best.hessian.get(j, k)).toBeCloseTo(difference, 8);
       }
-    }
-  });
-
-  it('independent: the 60-digit form gives the same overlap, slope and coefficients', () => {
-    const precise = preciseOverlap(target, EXPONENTS);
-    expect(1 - precise.deficit).toBeCloseTo(best.value, 14);
-    for (const j of EXPONENTS.keys()) {
-      expect(precise.gradient[j]).toBeCloseTo(best.gradient.get(j, 0), 13);
-      expect(precise.coefficients[j]).toBeCloseTo(best.coefficients[j], 13);
     }
   });
 
