@@ -165,8 +165,10 @@ function syntaxIssue(json: string, unclosed: readonly OpenBracket[]): StudyIssue
   const token = /^[\w.+-]+|^[\s\S]/.exec(json.slice(offset))?.[0] ?? '';
   const { line, column } = position(json, offset);
   const place = `line ${line}`;
-  const isHalfWord = ['true', 'false', 'null'].some((word) => word.startsWith(token));
-  if (offset + (isHalfWord ? token.length : 0) >= json.trimEnd().length) {
+  const isUnfinished =
+    ['true', 'false', 'null'].some((word) => word.startsWith(token)) ||
+    /^-?\d*(\.\d*)?(e[+-]?)?$/i.test(token);
+  if (offset + (isUnfinished ? token.length : 0) >= json.trimEnd().length) {
     const open = unclosed.at(-1);
     const before = open
       ? `before the ${open.bracket} of line ${position(json, open.offset).line} is closed`

@@ -191,15 +191,24 @@ const basisForms = {
   ),
   file: closed({ file: name }, BASIS_KEYS),
 };
+/** An object that spells out no basis set: a misspelt key says it all, else the lack of one is the issue. */
+const formlessBasis = closed(
+  { name: z.unknown().optional(), harmonics: z.unknown().optional() },
+  BASIS_KEYS,
+).refine(() => false, {
+  error: 'must have "scaleFactors", "shells", "evenTempered" or "file", or be the name alone',
+  when: ({ issues }) => issues.length === 0,
+});
 const basis = oneOf<BasisRequest>((value) => {
   if (typeof value === 'string') return name;
   const form = (['scaleFactors', 'shells', 'evenTempered', 'file'] as const).find((key) =>
     hasKey(value, key),
   );
   if (form) return basisForms[form];
-  return typeof value === 'object' && value !== null && !Array.isArray(value)
-    ? basisForms.shells
-    : z.custom<BasisRequest>(() => false, { error: 'must be the name of a basis set or an object { … }' });
+  if (typeof value === 'object' && value !== null && !Array.isArray(value)) {
+    return formlessBasis as unknown as z.ZodType<BasisRequest>;
+  }
+  return z.custom<BasisRequest>(() => false, { error: 'must be the name of a basis set or an object { … }' });
 });
 
 const levelParams: IssueParams = { code: 'level.unknown', known: LEVEL_NAMES };
