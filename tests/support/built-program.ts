@@ -7,7 +7,9 @@ const FARWELL = join(ROOT, 'out', 'farwell.js');
 
 /** Brings `out/` up to date with the sources; costs nothing if it is. */
 export function buildProgram(): void {
-  execFileSync(process.execPath, [join(ROOT, 'app', 'build.mjs'), '--if-changed'], { stdio: ['ignore', 'ignore', 'inherit'] });
+  execFileSync(process.execPath, [join(ROOT, 'app', 'build.mjs'), '--if-changed'], {
+    stdio: ['ignore', 'ignore', 'inherit'],
+  });
 }
 
 export interface Ended {
