@@ -1,3 +1,4 @@
+import { boysFunctionsInto } from '../special-functions/boys-function';
 import { contractRuns } from './contraction-runs';
 import { HERMITE_BATCH, HermiteCoulombArguments, hermiteCoulombInto } from './hermite-coulomb';
 import { type QuartetLayout, quartetLayout } from './quartet-layout';
@@ -107,22 +108,36 @@ function significantPrimitives(pair: ShellPair, threshold: number): number {
   return count;
 }
 
-/** (ss|ss): one factor and one Hermite integral a primitive quartet, no sums to keep apart. */
+/** (ss|ss) = Σ factors F_0(aR²)/√(p + q): nothing to expand, so the sum is taken as the arguments are made. */
 function sphericalQuartet(
   bra: ShellPair,
   ket: ShellPair,
   { batch, hermite }: QuartetWorkspace,
   primitiveThreshold: number,
 ): number {
+  const { exponent: boysArguments, prefactor } = batch;
   let sum = 0;
   for (let i = 0; i < bra.primitiveCount; i++) {
     const ketCount = significantPrimitives(ket, primitiveThreshold / bra.bounds[i]);
+    const p = bra.exponents[i];
+    const px = bra.centreX[i];
+    const py = bra.centreY[i];
+    const pz = bra.centreZ[i];
     let inner = 0;
     for (let start = 0; start < ketCount; start += HERMITE_BATCH) {
       const count = Math.min(HERMITE_BATCH, ketCount - start);
-      fillBatch(bra, i, ket, start, count, batch);
-      hermiteCoulombInto(0, batch, count, hermite);
-      for (let k = 0; k < count; k++) inner += ket.factors[start + k] * hermite[k];
+      for (let k = 0; k < count; k++) {
+        const j = start + k;
+        const q = ket.exponents[j];
+        const x = px - ket.centreX[j];
+        const y = py - ket.centreY[j];
+        const z = pz - ket.centreZ[j];
+        const inverse = 1 / (p + q);
+        boysArguments[k] = p * q * inverse * (x * x + y * y + z * z);
+        prefactor[k] = ket.factors[j] * Math.sqrt(inverse);
+      }
+      boysFunctionsInto(0, boysArguments, count, hermite);
+      for (let k = 0; k < count; k++) inner += prefactor[k] * hermite[k];
     }
     sum += bra.factors[i] * inner;
   }
