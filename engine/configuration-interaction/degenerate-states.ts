@@ -58,6 +58,30 @@ export function diagonaliseWithin(
   return expectations;
 }
 
+/** An operator that tells degenerate states apart; expectation values within `tolerance` count as equal. */
+export interface DistinguishingOperator {
+  readonly tolerance: number;
+  apply(vector: Float64Array, product: Float64Array): void;
+}
+
+/**
+ * Makes the states of every degenerate set eigenvectors of the first operator, those still equal eigenvectors of
+ * the second, and so on. In place; energies become expectation values.
+ */
+export function makeDegenerateStatesDefinite(
+  energies: Float64Array,
+  vectors: readonly Float64Array[],
+  energyTolerance: number,
+  operators: readonly DistinguishingOperator[],
+): void {
+  let runs = splitRuns([{ first: 0, last: vectors.length }], energies, energyTolerance);
+  for (const { tolerance, apply } of operators) {
+    runs = runs.filter((run) => run.last - run.first > 1);
+    if (runs.length === 0) return;
+    runs = splitRuns(runs, diagonaliseWithin(runs, energies, vectors, apply), tolerance);
+  }
+}
+
 function rotate(vectors: readonly Float64Array[], rotation: Float64Array): void {
   const size = vectors.length;
   const before = vectors.map((vector) => vector.slice());

@@ -1,16 +1,12 @@
-import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { offZero } from '../linear-algebra/davidson';
 import { multiply } from '../linear-algebra/dense';
 import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
 import { diagonaliseWithin, splitRuns } from './degenerate-states';
-import { type DeterminantSpace, determinantAt } from './determinant-space';
-import type { Determinant } from './determinants';
-import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
 import { MAXIMUM_GUARDS } from './size';
 
 /**
- * The determinants of lowest spin-averaged energy, with H diagonalised among them: where the guesses come from,
- * and the part of the preconditioner that is exact. A model space of all determinants is the dense solution.
+ * The basis states of lowest diagonal energy, with H diagonalised among them: where the guesses come from, and
+ * the part of the preconditioner that is exact. A model space of all basis states is the dense solution.
  */
 export interface ModelSpace {
   /** places in the CI vector */
@@ -32,20 +28,35 @@ const GUARD_WINDOW = 0.5;
 /** Preconditioner denominators are kept at least this far from zero, hartree. */
 const SMALLEST_DENOMINATOR = 1e-2;
 
+/** Elements of H, and of S² where states have spins to tell, among a few basis states. */
+export interface ModelElements {
+  hamiltonian(i: number, j: number): number;
+  spinSquared?(i: number, j: number): number;
+}
+
+/**
+ * @param diagonal - by whose values the places are chosen, hartree
+ * @param size - about how many
+ * @param elementsAmong - the elements among the places chosen, i and j counting in their list
+ */
 export function buildModelSpace(
-  space: DeterminantSpace,
   diagonal: Float64Array,
-  integrals: OrbitalIntegrals,
   size: number,
+  elementsAmong: (places: Int32Array) => ModelElements,
 ): ModelSpace {
   const places = lowestPlaces(diagonal, size);
-  const determinants = Array.from(places, (place) => determinantAt(space, place));
+  const elements = elementsAmong(places);
   const count = places.length;
-  const hamiltonian = denseMatrix(determinants, (left, right) => hamiltonianElement(left, right, integrals));
+  const hamiltonian = symmetricMatrix(count, elements.hamiltonian);
   const found: { energy: number; vector: Float64Array; sector: string }[] = [];
   coupledBlocks(hamiltonian, count).forEach((members, block) => {
-    for (const state of diagonaliseBlock(hamiltonian, determinants, members)) {
-      found.push({ energy: state.energy, vector: state.vector, sector: `${block}:${state.twiceSpin}` });
+    for (const { energy, vector, spin } of diagonaliseBlock(
+      hamiltonian,
+      count,
+      members,
+      elements.spinSquared,
+    )) {
+      found.push({ energy, vector, sector: `${block}:${spin}` });
     }
   });
   found.sort((a, b) => a.energy - b.energy);
@@ -73,15 +84,11 @@ function lowestPlaces(diagonal: Float64Array, size: number): Int32Array {
   return Int32Array.from(places);
 }
 
-function denseMatrix(
-  determinants: readonly Determinant[],
-  element: (left: Determinant, right: Determinant) => number,
-): Float64Array {
-  const n = determinants.length;
+function symmetricMatrix(n: number, element: (i: number, j: number) => number): Float64Array {
   const matrix = new Float64Array(n * n);
   for (let i = 0; i < n; i++) {
     for (let j = 0; j <= i; j++) {
-      const value = element(determinants[i], determinants[j]);
+      const value = element(i, j);
       matrix[i * n + j] = value;
       matrix[j * n + i] = value;
     }
@@ -109,37 +116,31 @@ function coupledBlocks(matrix: Float64Array, n: number): number[][] {
   return blocks;
 }
 
-/** Eigenvectors of one block, of pure spin also where spins are degenerate. */
+/** Eigenvectors of one block, of pure spin also where spins are degenerate; `spin` is ⟨S²⟩ rounded. */
 function diagonaliseBlock(
   hamiltonian: Float64Array,
-  determinants: readonly Determinant[],
-  members: number[],
+  n: number,
+  members: readonly number[],
+  spinSquared: ModelElements['spinSquared'],
 ) {
-  const n = determinants.length;
   const size = members.length;
-  const block = new Float64Array(size * size);
-  members.forEach((i, row) => {
-    members.forEach((j, column) => {
-      block[row * size + column] = hamiltonian[i * n + j];
-    });
-  });
+  const block = symmetricMatrix(size, (row, column) => hamiltonian[members[row] * n + members[column]]);
   const { values, vectors: columns } = symmetricEigen(block, size);
   const vectors = Array.from({ length: size }, (_, k) => values.map((_, i) => columns[i * size + k]));
-  const spinSquared = denseMatrix(
-    members.map((i) => determinants[i]),
-    spinSquaredElement,
-  );
-  const runs = splitRuns([{ first: 0, last: size }], values, UNCOUPLED);
-  const spins = diagonaliseWithin(runs, values, vectors, (vector, product) => {
-    product.set(multiply(spinSquared, vector, size, size, 1));
-  });
+  let spins: Float64Array = new Float64Array(size);
+  if (spinSquared) {
+    const operator = symmetricMatrix(size, (row, column) => spinSquared(members[row], members[column]));
+    const runs = splitRuns([{ first: 0, last: size }], values, UNCOUPLED);
+    spins = diagonaliseWithin(runs, values, vectors, (vector, product) => {
+      product.set(multiply(operator, vector, size, size, 1));
+    });
+  }
   return vectors.map((vector, k) => {
     const whole = new Float64Array(n);
     members.forEach((i, row) => {
       whole[i] = vector[row];
     });
-    const twiceSpin = Math.round(Math.sqrt(Math.max(0, 1 + 4 * spins[k])) - 1);
-    return { energy: values[k], vector: whole, twiceSpin };
+    return { energy: values[k], vector: whole, spin: Math.round(spins[k]) };
   });
 }
 
@@ -164,12 +165,13 @@ export function chooseGuesses(model: ModelSpace, states: number): number[] {
   return chosen;
 }
 
-/** A model vector spread over the CI space, into `vector`. */
-export function spreadModelVector(model: ModelSpace, k: number, vector: Float64Array): void {
-  vector.fill(0);
+/** A model vector as a vector of the whole space. */
+export function spreadModelVector(model: ModelSpace, k: number, dimension: number): Float64Array {
+  const vector = new Float64Array(dimension);
   model.places.forEach((place, i) => {
     vector[place] = model.vectors[k][i];
   });
+  return vector;
 }
 
 /**

@@ -1,16 +1,16 @@
 import { EngineError } from '../errors';
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
-import { type DavidsonResult, DEGENERACY_TOLERANCE, lowestEigenpairs } from '../linear-algebra/davidson';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
-import { diagonaliseWithin, splitRuns } from './degenerate-states';
+import type { DistinguishingOperator } from './degenerate-states';
 import { type ConfigurationInteractionState, describeState } from './describe-state';
-import { buildDeterminantSpace, type DeterminantSpace } from './determinant-space';
+import { buildDeterminantSpace, type DeterminantSpace, determinantAt } from './determinant-space';
 import { occupiedOrbitals } from './determinants';
 import { spinAveragedDiagonal } from './diagonal';
 import { type HamiltonianProduct, prepareHamiltonianProduct } from './hamiltonian-product';
-import { buildModelSpace, chooseGuesses, modelPreconditioner, spreadModelVector } from './model-space';
-import { basisVectorLimit, configurationInteractionBytes, countDeterminants } from './size';
+import { findLowestStates } from './lowest-states';
+import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
+import { configurationInteractionBytes, countDeterminants } from './size';
 import { applySpinSquared } from './spin';
 import { stringAt } from './string-space';
 
@@ -45,13 +45,6 @@ const DEFAULTS = Object.freeze({
   control: UNATTENDED,
 });
 
-/**
- * Determinants in the model space that starts the iteration, and at the same time the largest space that is
- * diagonalised directly instead.
- */
-export const MODEL_SPACE_SIZE = 300;
-/** Model vectors per state wanted, at least. */
-const MODEL_VECTORS_PER_STATE = 10;
 /** ⟨S²⟩ this close counts as the same spin when degenerate states are told apart. */
 const SAME_SPIN = 1e-3;
 
@@ -79,19 +72,34 @@ export function solveConfigurationInteraction(
   const { alphaElectrons, betaElectrons, maximumRank } = settings;
   const space = buildDeterminantSpace(integrals.orbitalCount, alphaElectrons, betaElectrons, maximumRank);
   const product = prepareHamiltonianProduct(space, integrals);
-  const { iterations, termination, ...found } = findStates(space, product, integrals, settings);
+  const found = findLowestStates(
+    {
+      dimension: space.dimension,
+      diagonal: spinAveragedDiagonal(space, integrals),
+      apply: product.apply,
+      elementsAmong: (places) => {
+        const determinants = Array.from(places, (place) => determinantAt(space, place));
+        return {
+          hamiltonian: (i, j) => hamiltonianElement(determinants[i], determinants[j], integrals),
+          spinSquared: (i, j) => spinSquaredElement(determinants[i], determinants[j]),
+        };
+      },
+      distinguishing: distinguishingOperators(space),
+    },
+    { ...settings, stage: 'configuration interaction' },
+  );
 
-  const energies = found.values;
-  const vectors = found.vectors;
-  makeDegenerateStatesDefinite(space, energies, vectors);
   const scratch = new Float64Array(space.dimension);
-  const states = vectors
-    .slice(0, settings.states)
-    .map((vector, k) =>
-      describeState(space, vector, energies[k], residualNorm(product, vector, energies[k], scratch)),
-    )
-    .sort((a, b) => a.energy - b.energy);
-  return { determinants: space.dimension, states, termination, iterations };
+  const states = found.vectors.map((vector, k) => {
+    const energy = found.values[k];
+    return describeState(space, vector, energy, residualNorm(product, vector, energy, scratch));
+  });
+  return {
+    determinants: space.dimension,
+    states,
+    termination: found.termination,
+    iterations: found.iterations,
+  };
 }
 
 function checkOptions(
@@ -125,76 +133,25 @@ function checkOptions(
   }
 }
 
-function findStates(
-  space: DeterminantSpace,
-  product: HamiltonianProduct,
-  integrals: OrbitalIntegrals,
-  settings: Required<ConfigurationInteractionOptions>,
-): Pick<DavidsonResult, 'values' | 'vectors' | 'iterations' | 'termination'> {
-  const diagonal = spinAveragedDiagonal(space, integrals);
-  if (!diagonal.every(Number.isFinite)) {
-    return {
-      values: new Float64Array(0),
-      vectors: [],
-      iterations: 0,
-      termination: { kind: 'notFinite', quantity: 'Hamiltonian' },
-    };
-  }
-  const size = Math.max(MODEL_SPACE_SIZE, MODEL_VECTORS_PER_STATE * settings.states);
-  const model = buildModelSpace(space, diagonal, integrals, size);
-  if (model.places.length === space.dimension) {
-    const wanted = Math.min(settings.states, space.dimension);
-    const limit = model.energies[wanted - 1] + DEGENERACY_TOLERANCE;
-    const values = model.energies.filter((energy) => energy <= limit);
-    // the model space has its own order of determinants only where it is a part of the space
-    const vectors = model.vectors.slice(0, values.length);
-    return { values, vectors, iterations: 0, termination: { kind: 'converged' } };
-  }
-
-  const guesses = chooseGuesses(model, settings.states);
-  return lowestEigenpairs(
+/**
+ * Spin first; among states of one spin then the square of Σ √(p + 1)·n(p): the sum tells π(x) from π(y), its square
+ * also x² − y² from xy. What the operator is does not matter, as long as it follows the orbitals.
+ */
+function distinguishingOperators(space: DeterminantSpace): DistinguishingOperator[] {
+  let labels: Float64Array | undefined;
+  return [
+    { tolerance: SAME_SPIN, apply: (vector, product) => applySpinSquared(space, vector, product) },
     {
-      dimension: space.dimension,
-      apply: product.apply,
-      precondition: modelPreconditioner(model, diagonal),
-      guesses: guesses.map((k) => {
-        const guess = new Float64Array(space.dimension);
-        spreadModelVector(model, k, guess);
-        return guess;
-      }),
+      tolerance: 0,
+      apply: (vector, product) => {
+        labels ??= occupationLabels(space);
+        for (let i = 0; i < product.length; i++) product[i] = labels[i] ** 2 * vector[i];
+      },
     },
-    {
-      roots: settings.states,
-      residualTolerance: settings.residualTolerance,
-      maximumIterations: settings.maximumIterations,
-      maximumVectors: basisVectorLimit(guesses.length),
-      control: settings.control,
-      stage: 'configuration interaction',
-    },
-  );
+  ];
 }
 
-/** In place: degenerate vectors become eigenvectors of S², and of Σ √(p + 1)·n(p) within equal spin. */
-function makeDegenerateStatesDefinite(
-  space: DeterminantSpace,
-  energies: Float64Array,
-  vectors: readonly Float64Array[],
-): void {
-  if (vectors.length < 2) return;
-  const byEnergy = splitRuns([{ first: 0, last: vectors.length }], energies, DEGENERACY_TOLERANCE);
-  const degenerate = byEnergy.filter((run) => run.last - run.first > 1);
-  const spins = diagonaliseWithin(degenerate, energies, vectors, (vector, result) =>
-    applySpinSquared(space, vector, result),
-  );
-  const bySpin = splitRuns(degenerate, spins, SAME_SPIN).filter((run) => run.last - run.first > 1);
-  if (bySpin.length === 0) return;
-  const label = occupationLabels(space);
-  diagonaliseWithin(bySpin, energies, vectors, (vector, result) => {
-    for (let i = 0; i < result.length; i++) result[i] = label[i] * vector[i];
-  });
-}
-
-/** Σ over the electrons of a determinant of √(p + 1): tells π(x) from π(y) however they are numbered. */
+/** Σ over the electrons of a determinant of √(p + 1). */
 function occupationLabels(space: DeterminantSpace): Float64Array {
   const sumOver = (orbitals: number[]) => orbitals.reduce((sum, p) => sum + Math.sqrt(p + 1), 0);
   const alpha = Float64Array.from({ length: space.alpha.count }, (_, a) =>

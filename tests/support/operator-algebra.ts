@@ -112,6 +112,33 @@ export function bruteHamiltonian(left: Occupation, right: Occupation, integrals:
   return sum;
 }
 
+/** H on a vector, operator by operator; for Hamiltonians with few integrals that are not zero. */
+export function applyHamiltonian(vector: OccupationVector, integrals: OrbitalIntegrals): OccupationVector {
+  const n = integrals.orbitalCount;
+  const result: OccupationVector = new Map();
+  const add = (factor: number, operators: Parameters<typeof applyOperators>[0]) => {
+    for (const [bits, value] of applyOperators(operators, vector)) {
+      result.set(bits, (result.get(bits) ?? 0) + factor * value);
+    }
+  };
+  add(integrals.coreEnergy, []);
+  for (let p = 0; p < 2 * n; p++) {
+    for (let q = 0; q < 2 * n; q++) {
+      if (p < n !== q < n) continue;
+      const single = integrals.oneElectron[(p % n) * n + (q % n)];
+      if (single !== 0) add(single, [creates(p), annihilates(q)]);
+      for (let r = 0; r < 2 * n; r++) {
+        for (let s = 0; s < 2 * n; s++) {
+          if (r < n !== s < n) continue;
+          const value = integrals.twoElectron[packedPair(packedPair(p % n, q % n), packedPair(r % n, s % n))];
+          if (value !== 0) add(value / 2, [creates(p), creates(r), annihilates(s), annihilates(q)]);
+        }
+      }
+    }
+  }
+  return result;
+}
+
 /** S₋S₊ + S_z(S_z + 1) with S₊ = Σ a†(pα) a(pβ). */
 export function bruteSpinSquared(left: Occupation, right: Occupation, n: number): number {
   const leftBits = occupationBits(left, n);

@@ -1,0 +1,106 @@
+import { type DavidsonResult, DEGENERACY_TOLERANCE, lowestEigenpairs } from '../linear-algebra/davidson';
+import type { RunControl } from '../termination';
+import { type DistinguishingOperator, makeDegenerateStatesDefinite } from './degenerate-states';
+import {
+  buildModelSpace,
+  chooseGuesses,
+  type ModelElements,
+  type ModelSpace,
+  modelPreconditioner,
+  spreadModelVector,
+} from './model-space';
+import { basisVectorLimit } from './size';
+
+/** A Hamiltonian over many basis states, of which the lowest eigenvectors are wanted. */
+export interface StateProblem {
+  readonly dimension: number;
+  /** energies of the basis states, or what stands for them in a preconditioner, hartree */
+  readonly diagonal: Float64Array;
+  apply(vector: Float64Array, product: Float64Array): void;
+  elementsAmong(places: Int32Array): ModelElements;
+  /** how degenerate states are told apart */
+  readonly distinguishing: readonly DistinguishingOperator[];
+}
+
+export interface StateSettings {
+  readonly states: number;
+  readonly residualTolerance: number;
+  readonly maximumIterations: number;
+  readonly control: RunControl;
+  readonly stage: string;
+}
+
+export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iterations' | 'termination'>;
+
+/**
+ * Basis states in the model space that starts the iteration, and at the same time the largest problem that is
+ * diagonalised directly instead.
+ */
+export const MODEL_SPACE_SIZE = 300;
+/** Energies this close, in hartree, are not put in order. */
+const SAME_ENERGY = 1e-9;
+/** Model vectors per state wanted, at least. */
+const MODEL_VECTORS_PER_STATE = 10;
+
+/**
+ * The lowest states, rising, with definite members of every degenerate set: directly where the problem is small,
+ * by Davidson's method where not. A degenerate set that `states` cuts is converged as a whole before it is cut,
+ * so that the cut takes the same members every time. Fewer states where there are no more.
+ */
+export function findLowestStates(problem: StateProblem, settings: StateSettings): LowestStates {
+  if (!problem.diagonal.every(Number.isFinite)) {
+    const termination = { kind: 'notFinite', quantity: 'Hamiltonian' } as const;
+    return { values: new Float64Array(0), vectors: [], iterations: 0, termination };
+  }
+  const size = Math.max(MODEL_SPACE_SIZE, MODEL_VECTORS_PER_STATE * settings.states);
+  const model = buildModelSpace(problem.diagonal, size, (places) => problem.elementsAmong(places));
+  const isWhole = model.places.length === problem.dimension;
+  const found = isWhole ? takeLowest(model, settings.states) : iterate(problem, model, settings);
+  makeDegenerateStatesDefinite(found.values, found.vectors, DEGENERACY_TOLERANCE, problem.distinguishing);
+
+  const order = orderByEnergy(found.values).slice(0, settings.states);
+  return {
+    ...found,
+    values: Float64Array.from(order, (k) => found.values[k]),
+    vectors: order.map((k) => found.vectors[k]),
+  };
+}
+
+/** Rising, but degenerate neighbours stay as they are: rounding must not choose between them. */
+function orderByEnergy(energies: Float64Array): number[] {
+  const order = Array.from(energies.keys());
+  for (let last = 1; last < order.length; last++) {
+    for (let k = last; k > 0 && energies[order[k - 1]] > energies[order[k]] + SAME_ENERGY; k--) {
+      [order[k - 1], order[k]] = [order[k], order[k - 1]];
+    }
+  }
+  return order;
+}
+
+/** From a model space that is the whole space. */
+function takeLowest(model: ModelSpace, states: number): LowestStates {
+  const last = Math.min(states, model.energies.length) - 1;
+  const values = model.energies.filter((energy) => energy <= model.energies[last] + DEGENERACY_TOLERANCE);
+  const vectors = model.vectors.slice(0, values.length);
+  return { values, vectors, iterations: 0, termination: { kind: 'converged' } };
+}
+
+function iterate(problem: StateProblem, model: ModelSpace, settings: StateSettings): LowestStates {
+  const guesses = chooseGuesses(model, settings.states);
+  return lowestEigenpairs(
+    {
+      dimension: problem.dimension,
+      apply: (vector, product) => problem.apply(vector, product),
+      precondition: modelPreconditioner(model, problem.diagonal),
+      guesses: guesses.map((k) => spreadModelVector(model, k, problem.dimension)),
+    },
+    {
+      roots: settings.states,
+      residualTolerance: settings.residualTolerance,
+      maximumIterations: settings.maximumIterations,
+      maximumVectors: basisVectorLimit(guesses.length),
+      control: settings.control,
+      stage: settings.stage,
+    },
+  );
+}
