@@ -36,4 +36,16 @@ describe('kineticMatrix', () => {
       }
     }
   });
+
+  it('identity: oscillator ground states of each degree l have ⟨T⟩ = (l + 3/2) a, from 1e-3 to 1e5', () => {
+    for (let l = 0; l <= 4; l++) {
+      for (const a of [1e-3, 0.7, 1e5]) {
+        const basis = placedBasis([{ centre: [0.4, -2, 1], l, exponents: [a] }], 'spherical');
+        const matrix = kineticMatrix(basis);
+        for (let i = 0; i < basis.functionCount; i++) {
+          expect(matrix[i * (basis.functionCount + 1)] / ((l + 1.5) * a)).toBeCloseTo(1, 13);
+        }
+      }
+    }
+  });
 });

@@ -71,4 +71,26 @@ describe('nuclearAttractionMatrix', () => {
       expect(matrix[i * 2 + j]).toMatchPublished({ printed, unit: 'hartree', source: SZABO_OSTLUND });
     }
   });
+
+  it('identity: an s function on the nucleus has V = −2Z √(2a/π), from 1e-3 to 1e5', () => {
+    const centre = [0.4, -2, 1] as const;
+    for (const a of [1e-3, 0.7, 1e5]) {
+      const basis = placedBasis([{ centre, l: 0, exponents: [a] }]);
+      const [value] = nuclearAttractionMatrix(basis, [{ charge: 3, position: centre }]);
+      expect(value / (-6 * Math.sqrt((2 * a) / Math.PI))).toBeCloseTo(1, 13);
+    }
+  });
+
+  it('identity: from 100 bohr away a p function is a charge and a quadrupole, −V = 1/R + 1/(2aR³) along its axis', () => {
+    const a = 0.8;
+    const basis = placedBasis([{ centre: [0, 0, 0], l: 1, exponents: [a] }]);
+    const matrix = nuclearAttractionMatrix(basis, [{ charge: 1, position: [0, 0, 100] }]);
+    expect(Math.abs(matrix[8] + 1 / 100 + 1 / (2 * a * 1e6))).toBeLessThan(1e-15);
+    expect(Math.abs(matrix[0] + 1 / 100 - 1 / (4 * a * 1e6))).toBeLessThan(1e-15);
+  });
+
+  it('identity: a ghost attracts nothing', () => {
+    const ghost = { charge: 0, position: [0, 0, 0] as const };
+    expect([...nuclearAttractionMatrix(hydrogenMolecule.basis, [ghost])]).toEqual([0, 0, 0, 0]);
+  });
 });
