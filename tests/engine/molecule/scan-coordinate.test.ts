@@ -1,7 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { MoleculeInput } from '../../../engine/molecule/build-molecule';
-import { checkCoordinate } from '../../../engine/molecule/check-coordinate';
 import { type Coordinate, measureCoordinate } from '../../../engine/molecule/coordinate';
 import type { Vector3 } from '../../../engine/molecule/molecule';
 import { checkScan, geometryAt, scanGeometries } from '../../../engine/molecule/scan-coordinate';
@@ -28,9 +27,6 @@ const METHANOL = molecule(
   ['H', -0.36, -0.51, -0.89],
   ['H', 1.74, 0.45, 0.78],
 );
-
-const codes = (input: MoleculeInput, coordinate: Coordinate) =>
-  checkCoordinate(input, coordinate).map(({ code, place }) => ({ code, place }));
 
 /** All distances among some atoms, as the shape that must not change. */
 function shape({ atoms }: MoleculeInput, indices: readonly number[]): number[] {
@@ -208,89 +204,6 @@ describe('geometryAt, angles and dihedrals', () => {
       }),
       { seed: SEED },
     );
-  });
-
-  it('identity: a dihedral is positive where the far bond is clockwise of the near one, seen along the middle', () => {
-    // looking along +z with x to the right, y points down: from x to y is clockwise
-    const twisted = molecule(['H', 1, 0, 0], ['O', 0, 0, 0], ['O', 0, 0, 1.4], ['H', 0, 1, 1.4]);
-    expectSame(measureCoordinate(twisted, { dihedral: [0, 1, 2, 3] }), [90], 1e-12);
-  });
-});
-
-describe('checkCoordinate', () => {
-  const H3 = molecule(['H', 0, 0, 0], ['H', 0.873, 0, 0], ['H', 0.4365, 0.756, 0]);
-
-  it('identity: a bond in a ring is refused and the ring is named', () => {
-    const [error] = checkCoordinate(H3, { bonds: [[0, 1]] });
-    expect(error).toMatchObject({
-      code: 'scan.ring',
-      place: 'scan.coordinate.bonds[0]',
-      details: { bond: [0, 1] },
-    });
-    expect(error.message).toBe(
-      'The bond between H (atom 0) and H (atom 1) is part of a ring: H (atom 0) – H (atom 2) – H (atom 1).',
-    );
-  });
-
-  it('identity: listed bonds that close a ring among themselves would tear an atom two ways', () => {
-    const open = molecule(['H', 0, 0, 0], ['H', 0.8, 0, 0], ['O', 0.4, 4, 0]);
-    const errors = checkCoordinate(open, {
-      bonds: [
-        [0, 2],
-        [1, 2],
-      ],
-    });
-    expect(errors.map(({ code, details }) => ({ code, details }))).toEqual([
-      { code: 'scan.tornTwoWays', details: { atom: 2 } },
-      { code: 'scan.tornTwoWays', details: { atom: 2 } },
-    ]);
-  });
-
-  it('identity: an angle inside a ring cannot be turned, one at its edge can', () => {
-    expect(codes(H3, { angle: [0, 1, 2] })).toEqual([{ code: 'scan.ring', place: 'scan.coordinate.angle' }]);
-    const tailed = molecule(
-      ...(H3.atoms.map(({ element, at }) => [element, ...at]) as [string, ...Vector3][]),
-      ['O', -0.6, -0.7, 0],
-    );
-    expect(codes(tailed, { angle: [1, 0, 3] })).toEqual([]);
-    expectSame(
-      measureCoordinate(geometryAt(tailed, { angle: [1, 0, 3] }, 120), { angle: [1, 0, 3] }),
-      [120],
-      1e-9,
-    );
-  });
-
-  it('identity: straight angles are refused, alone and inside a dihedral', () => {
-    const line = molecule(['H', 0, 0, -1], ['C', 0, 0, 0], ['C', 0, 0, 1.2], ['H', 0, 0.5, 2.1]);
-    expect(codes(line, { angle: [0, 1, 2] })).toEqual([
-      { code: 'scan.undefinedCoordinate', place: 'scan.coordinate.angle' },
-    ]);
-    expect(codes(line, { dihedral: [0, 1, 2, 3] })).toEqual([
-      { code: 'scan.undefinedCoordinate', place: 'scan.coordinate.dihedral' },
-    ]);
-  });
-
-  it('identity: atoms that do not exist, and atoms or bonds named twice, are refused with their place', () => {
-    expect(
-      codes(WATER, {
-        bonds: [
-          [0, 3],
-          [1, 1],
-          [0, 1],
-          [1, 0],
-        ],
-      }),
-    ).toEqual([
-      { code: 'scan.atomIndex', place: 'scan.coordinate.bonds[0][1]' },
-      { code: 'scan.atomIndex', place: 'scan.coordinate.bonds[1][1]' },
-      { code: 'scan.atomIndex', place: 'scan.coordinate.bonds[3]' },
-    ]);
-    expect(codes(WATER, { bonds: [] })).toEqual([
-      { code: 'scan.undefinedCoordinate', place: 'scan.coordinate.bonds' },
-    ]);
-    expect(codes(WATER, { angle: [1, 0, -1] })).toEqual([
-      { code: 'scan.atomIndex', place: 'scan.coordinate.angle[2]' },
-    ]);
   });
 });
 
