@@ -1,4 +1,4 @@
-import { mkdir } from 'node:fs/promises';
+import { mkdir, stat } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import type { StudyResults } from '#engine';
 import { type Journal, openJournal } from '../calculation/journal';
@@ -82,7 +82,7 @@ async function runToFolder(
 
 async function prepareFolder(folder: string): Promise<StudyIssue | undefined> {
   try {
-    await mkdir(folder, { recursive: true });
+    await makeFolder(folder);
     return undefined;
   } catch (error) {
     if (!['EEXIST', 'ENOTDIR'].includes((error as NodeJS.ErrnoException).code ?? '')) throw error;
@@ -92,6 +92,19 @@ async function prepareFolder(folder: string): Promise<StudyIssue | undefined> {
       message: `“${folder}” is not a folder.`,
       remedy: 'Give a folder; it is made if it does not exist.',
     };
+  }
+}
+
+/** Unlike Node's own recursive way, this does not try for ever where a system says that a folder's parent is missing. */
+async function makeFolder(folder: string): Promise<void> {
+  try {
+    await mkdir(folder);
+  } catch (error) {
+    const { code } = error as NodeJS.ErrnoException;
+    if (code === 'ENOENT' && dirname(folder) !== folder) {
+      await makeFolder(dirname(folder));
+      await mkdir(folder);
+    } else if (code !== 'EEXIST' || !(await stat(folder)).isDirectory()) throw error;
   }
 }
 

@@ -2,9 +2,11 @@ import type { StudyIssue } from '../contract/requests';
 
 /** What was refused, every issue with its place, and what to do about it. */
 export function refusalText(subject: string, issues: readonly StudyIssue[]): string {
-  const lines = issues.map(
-    ({ place, message, remedy }) => `  ${place === '' ? '' : `${place}: `}${message}\n    ${remedy}`,
-  );
+  const lines = issues.map(({ place, message, remedy }) => {
+    // many messages name the place themselves
+    const prefix = message.includes(place) ? '' : `${place}: `;
+    return `  ${prefix}${message}\n    ${remedy}`;
+  });
   return [`farwell: ${subject} was refused.`, ...lines].join('\n');
 }
 

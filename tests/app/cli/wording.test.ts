@@ -2,13 +2,14 @@ import { describe, expect, it } from 'vitest';
 import { alignedTable, bytesText, counted, durationText, refusalText } from '../../../app/cli/wording';
 
 describe('wording', () => {
-  it('writes every issue of a refusal with its place and remedy', () => {
+  it('writes every issue of a refusal with its place, once, and its remedy', () => {
     const text = refusalText('a.study.json', [
       { code: 'x', place: 'scan.count', message: 'It is 0.', remedy: 'Give more.' },
+      { code: 'x', place: 'scan.from', message: 'scan.from is 0.', remedy: 'Give more.' },
       { code: 'y', place: '', message: 'It is no study.', remedy: 'Give a study.' },
     ]);
     expect(text).toBe(
-      'farwell: a.study.json was refused.\n  scan.count: It is 0.\n    Give more.\n  It is no study.\n    Give a study.',
+      'farwell: a.study.json was refused.\n  scan.count: It is 0.\n    Give more.\n  scan.from is 0.\n    Give more.\n  It is no study.\n    Give a study.',
     );
   });
 
