@@ -1,7 +1,14 @@
 import type { Caution, StudyResults } from '#engine';
 
+interface CautionAt {
+  readonly caution: Caution;
+  /** undefined for the whole curve, or a single geometry */
+  readonly coordinate: number | undefined;
+}
+
 /**
- * The cautions of a results file as sentences: those that many points share are said once, with where they hold.
+ * The cautions of a results file as sentences: those that many points share are said once, with where they hold;
+ * where their words differ from point to point, as at the first and as at the last.
  *
  * @param coordinateText - a coordinate of the study as printed, unit included
  */
@@ -9,32 +16,42 @@ export function cautionSummary(
   results: StudyResults,
   coordinateText: (coordinate: number) => string,
 ): readonly string[] {
-  const groups = new Map<string, { readonly caution: Caution; readonly places: number[] }>();
-  const add = (caution: Caution, place?: number) => {
-    const key = `${caution.code} ${caution.level ?? ''}`;
-    const group = groups.get(key) ?? { caution, places: [] };
-    if (place !== undefined) group.places.push(place);
-    groups.set(key, group);
-  };
-  for (const caution of results.cautions) add(caution);
-  for (const { coordinate, cautions } of results.points) {
-    for (const caution of cautions) add(caution, coordinate ?? undefined);
+  const all: CautionAt[] = [
+    ...results.cautions.map((caution) => ({ caution, coordinate: undefined })),
+    ...results.points.flatMap(({ coordinate, cautions }) =>
+      cautions.map((caution) => ({ caution, coordinate: coordinate ?? undefined })),
+    ),
+  ];
+  const groups = new Map<string, CautionAt[]>();
+  for (const one of all) {
+    const key = `${one.caution.code} ${one.caution.level ?? ''}`;
+    groups.set(key, [...(groups.get(key) ?? []), one]);
   }
-  return [...groups.values()].map(({ caution, places }) => {
-    const subject = caution.level
-      ? `${caution.level}${placesText(places, coordinateText)}`
-      : placesText(places, coordinateText).trim();
-    return subject ? `${capitalised(subject)}: ${caution.message}` : caution.message;
-  });
+  return [...groups.values()].map((group) => sentenceOf(group, coordinateText));
 }
 
-/** ` at 2 Å`, ` from 2 Å to 4 Å (21 points)` */
+function sentenceOf(group: readonly CautionAt[], coordinateText: (coordinate: number) => string): string {
+  const first = group[0]!;
+  const last = group.at(-1)!;
+  const where = placesText(
+    group.flatMap(({ coordinate }) => (coordinate === undefined ? [] : [coordinate])),
+    coordinateText,
+  );
+  const subject = capitalised([first.caution.level, where].filter(Boolean).join(' '));
+  const ending =
+    last.caution.message !== first.caution.message && last.coordinate !== undefined
+      ? ` At ${coordinateText(last.coordinate)}: ${last.caution.message}`
+      : '';
+  return `${subject ? `${subject}: ` : ''}${first.caution.message}${ending}`;
+}
+
+/** `at 2 Å`, `between 2 Å and 4 Å (21 points)` */
 function placesText(places: readonly number[], coordinateText: (coordinate: number) => string): string {
   if (places.length === 0) return '';
   const low = Math.min(...places);
   const high = Math.max(...places);
-  if (low === high) return ` at ${coordinateText(low)}`;
-  return ` between ${coordinateText(low)} and ${coordinateText(high)} (${places.length} points)`;
+  if (low === high) return `at ${coordinateText(low)}`;
+  return `between ${coordinateText(low)} and ${coordinateText(high)} (${places.length} points)`;
 }
 
 const capitalised = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

@@ -1,6 +1,13 @@
 import type { StudyResults } from '#engine';
 import { type CurvePoint, type CurveSeries, curveSeries } from './curve-series';
-import { type CurveStyle, FAINT_INK, FILE_COLOURS, styleOfLevel, TRIPLET_DASH } from './figure-style';
+import {
+  type CurveStyle,
+  FAINT_INK,
+  FILE_COLOURS,
+  HIGHER_STATE_DASH,
+  styleOfLevel,
+  TRIPLET_DASH,
+} from './figure-style';
 import { coordinateHeading, type ScannedCoordinate, sharedCoordinate } from './scanned-coordinate';
 
 export interface DrawnPoint {
@@ -75,9 +82,10 @@ export function planFigure(
   if (series.length === 0) return { reason: 'No level gave an energy at any point.' };
 
   const levels = [...new Set(series.map(({ level }) => level))];
-  const styleOf = ({ level, file, family }: CurveSeries): CurveStyle => {
+  const styleOf = ({ level, file, family, isExcited }: CurveSeries): CurveStyle => {
     const ofLevel = styleOfLevel(level, levels);
-    const style = family === 'CIS triplets' ? { ...ofLevel, dash: TRIPLET_DASH } : ofLevel;
+    const dash = isExcited ? excitedDash(family) : ofLevel.dash;
+    const style = { ...ofLevel, dash };
     return results.length === 1 ? style : { ...style, colour: FILE_COLOURS[file % FILE_COLOURS.length]! };
   };
   const energies = series.map((one, index) => drawnCurve(one, index, styleOf(one), ({ energy }) => energy));
@@ -111,6 +119,11 @@ export function planFigure(
       key: keyOf(energies),
     },
   };
+}
+
+function excitedDash(family: string): readonly number[] {
+  if (family === 'CIS singlets') return [];
+  return family === 'CIS triplets' ? TRIPLET_DASH : HIGHER_STATE_DASH;
 }
 
 const composition = ({ study }: StudyResults): string =>
@@ -212,7 +225,10 @@ function legendOf(
     const style = several ? { ...styleOf(one), colour: FAINT_INK } : styleOf(one);
     return { label: family, style, kind: one.isExcited ? 'excited' : 'curve' };
   });
-  return several ? [...files, ...families] : families;
+  const lowestFirst = families.toSorted(
+    (a, b) => Number(a.kind === 'excited') - Number(b.kind === 'excited'),
+  );
+  return several ? [...files, ...lowestFirst] : lowestFirst;
 }
 
 function keyOf(curves: readonly DrawnCurve[]): readonly string[] {

@@ -23,8 +23,9 @@ export interface CurveStyle {
   readonly shape: MarkerShape;
 }
 
-/** Of excited states of CIS, the triplets are dashed. */
+/** Of excited states, the singlets of CIS are solid. */
 export const TRIPLET_DASH: readonly number[] = [2, 1.4];
+export const HIGHER_STATE_DASH: readonly number[] = [5, 1.2, 0.8, 1.2];
 
 /** Full CI is solid, as the curve that the others are measured by. */
 const LEVEL_STYLES: Readonly<Record<string, CurveStyle>> = {

@@ -26,7 +26,8 @@ const MOST_DISTANCE_DECIMALS = 6;
 export function findingsRows(results: StudyResults, file: string, unit: string): readonly FindingsRow[] {
   return results.study.levels.flatMap((level): FindingsRow[] => {
     const findings = results.findings[level];
-    if (!findings) return [];
+    // its curves are excited states only
+    if (!findings || level === 'CIS') return [];
     const { minimum, wellDepth } = findings;
     return [
       {

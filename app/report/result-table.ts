@@ -154,9 +154,7 @@ function notesOf(results: readonly StudyResults[], rows: readonly TableRow[]): r
         ]
       : []),
     ...(results.some(({ study }) => study.levels.includes('CIS'))
-      ? [
-          'CIS describes excited states and gives no correlation energy of the ground state (Brillouin’s theorem); its energies are those of its states.',
-        ]
+      ? ['CIS has no correlation energy: its energies are those of excited states (Brillouin’s theorem).']
       : []),
   ];
 }

@@ -175,10 +175,9 @@ export interface BasisComparisonRow extends PublishedRow {
   readonly basis: string;
 }
 
-/** Ionisation energies by Koopmans' theorem, at the standard geometries; hartree. */
+/** Ionisation energies by Koopmans' theorem, at the standard geometries; hartree. One row is in SOURCES.md only. */
 export const KOOPMANS_IONISATION: readonly BasisComparisonRow[] = [
   { ...read('H2O', 'ionisation from 1b1', '0.391', 'hartree', ''), basis: 'STO-3G' },
-  { ...recalled('N2', 'ionisation from 3σg', '0.540', 'hartree', 'Sec. 3.7 tables'), basis: 'STO-3G' },
   { ...recalled('N2', 'ionisation from 1πu', '0.573', 'hartree', 'Sec. 3.7 tables'), basis: 'STO-3G' },
   { ...recalled('H2O', 'ionisation from 1b1', '0.500', 'hartree', 'Sec. 3.7 tables'), basis: '4-31G' },
 ];

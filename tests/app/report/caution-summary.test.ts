@@ -24,4 +24,15 @@ describe('cautionSummary', () => {
       'FCI at 0.4 Å: m.',
     ]);
   });
+
+  it('gives the words of the first and of the last point where they differ', () => {
+    const sample = sampleResults();
+    const points = [0, 1, 2].map((index) => ({
+      ...sample.points[index]!,
+      cautions: [{ code: 'weight', level: 'FCI', message: `Weight 0.${9 - index}.` }],
+    }));
+    expect(cautionSummary({ ...sample, points }, asAngstrom)).toEqual([
+      'FCI between 0.4 Å and 0.6 Å (3 points): Weight 0.9. At 0.6 Å: Weight 0.7.',
+    ]);
+  });
 });
