@@ -14,7 +14,7 @@ export type CartesianFunction = readonly { readonly coefficient: number; readonl
 
 const hermite = gaussHermite(12);
 const legendre = gaussLegendre(80);
-const AXES = [0, 1, 2] as const;
+const AXES: readonly number[] = [0, 1, 2];
 
 /** A shell to be placed: coefficients multiply normalised primitives. */
 export interface ShellSketch {
