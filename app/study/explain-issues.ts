@@ -1,11 +1,9 @@
 import type { z } from 'zod';
 import type { StudyIssue } from '../contract/requests';
+import { MOST_ISSUES } from './json-text';
 import { nearest } from './nearest';
 import { type Path, placeOf } from './place';
 import type { IssueParams } from './schema';
-
-/** More issues than this help nobody. */
-const MOST_ISSUES = 50;
 
 /**
  * Puts what a schema found into plain words: place, what is wrong with which value, line, and what to do; at most

@@ -117,4 +117,13 @@ describe('readJson', () => {
     expect(issues('['.repeat(LONGEST_TEXT))).toMatchObject([{ code: 'json.tooDeep' }]);
     expect(issues('{"a":'.repeat(100_000))).toMatchObject([{ code: 'json.tooDeep' }]);
   });
+
+  it('reads the longest text there may be, whatever it consists of', () => {
+    const filled = (unit: string) => unit.repeat(Math.floor((LONGEST_TEXT - 10) / unit.length));
+    expect(readJson(`"${filled('a')}"`)).toMatchObject({ ok: true });
+    expect(readJson(`"${filled('\\\\')}"`)).toMatchObject({ ok: true });
+    expect(message(`"${filled('\\"')}`)).toContain('The text ends');
+    expect(issues(`[${filled('"\n",')}1]`)).toHaveLength(1);
+    expect(issues(`{${filled('"a":1,')}"b":1}`)).toHaveLength(50);
+  });
 });
