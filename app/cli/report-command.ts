@@ -1,5 +1,6 @@
 import { dirname } from 'node:path';
 import { readResultsFile } from '../calculation/read-results-file';
+import { ReportError } from '../report/report-error';
 import type { Invocation } from './arguments';
 import { EXIT, type ExitCode } from './exit-codes';
 import type { Terminal } from './terminal';
@@ -21,11 +22,17 @@ export async function reportCommand(
   }
   // drawing needs far more code than everything else, and only here
   const { writeReport } = await import('../report/write-report');
-  const written = await writeReport(
-    files.map(({ results }) => results),
-    files.map(({ name }) => name),
-    out ?? dirname(paths[0] ?? '.'),
-  );
-  await terminal.print(`${written.join('\n')}\n`);
-  return EXIT.done;
+  try {
+    const written = await writeReport(
+      files.map(({ results }) => results),
+      files.map(({ name }) => name),
+      out ?? dirname(paths[0] ?? '.'),
+    );
+    await terminal.print(`${written.join('\n')}\n`);
+    return EXIT.done;
+  } catch (error) {
+    if (!(error instanceof ReportError)) throw error;
+    terminal.say(refusalText('the report', [error]));
+    return EXIT.refused;
+  }
 }
