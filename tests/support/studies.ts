@@ -1,36 +1,52 @@
-import type { Study } from '#engine';
+import {
+  type ComputedPoint,
+  type CorrelatedResult,
+  computePoint,
+  type HartreeFockResult,
+  type LengthUnit,
+  type PreparedStudy,
+  prepareStudy,
+  type SinglesResult,
+  type Study,
+  type StudyAtom,
+} from '#engine';
 
-/** A proton leaves helium: two electrons, computed in an instant. */
-export const helium: Study = {
-  format: 'farwell/study',
-  version: 1,
-  title: 'A proton leaves helium',
-  molecule: {
-    unit: 'angstrom',
-    atoms: [
-      { element: 'He', at: [0, 0, 0] },
-      { element: 'H', at: [0, 0, 0.7743] },
-    ],
-    charge: 1,
-  },
-  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.4, to: 4, count: 10 },
-  basis: 'STO-3G',
-  levels: ['RHF', 'CIS', 'CISD', 'FCI'],
-};
+export type Place = readonly [number, number, number];
 
-/** Nitrogen is pulled apart: long enough to be interrupted. */
-export const nitrogen: Study = {
-  format: 'farwell/study',
-  version: 1,
-  molecule: {
-    unit: 'angstrom',
-    atoms: [
-      { element: 'N', at: [0, 0, 0] },
-      { element: 'N', at: [0, 0, 1.1] },
-    ],
-  },
-  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.9, to: 2, count: 14 },
-  basis: 'STO-3G',
-  levels: ['RHF', 'FCI'],
-  frozenCore: true,
-};
+export const atom = (element: string, x = 0, y = 0, z = 0): StudyAtom => ({ element, at: [x, y, z] });
+
+/** A single-point study; lengths in bohr unless said. */
+export function study(atoms: readonly StudyAtom[], changes: Partial<Study> & { charge?: number; unit?: LengthUnit } = {}): Study {
+  const { charge = 0, unit = 'bohr', ...rest } = changes;
+  return {
+    format: 'farwell/study',
+    version: 1,
+    molecule: { unit, atoms, charge },
+    basis: 'STO-3G',
+    levels: ['RHF'],
+    ...rest,
+  };
+}
+
+export function prepare(request: Study): PreparedStudy {
+  const preparation = prepareStudy(request);
+  if (!preparation.ok) throw preparation.errors[0];
+  return preparation.prepared;
+}
+
+/** The point of a study without a scan. */
+export function compute(request: Study): ComputedPoint['result'] {
+  return computePoint(prepare(request), null).result;
+}
+
+export const hartreeFock = (point: ComputedPoint['result']) => point.levels.RHF as HartreeFockResult;
+export const singles = (point: ComputedPoint['result']) => point.levels.CIS as SinglesResult;
+export const correlated = (point: ComputedPoint['result'], level = 'FCI') => point.levels[level] as CorrelatedResult;
+
+/** H–X–H and the like: water at an O–H distance and an angle in degrees, symmetric about z. */
+export function waterAtoms(distance: number, degrees: number): StudyAtom[] {
+  const half = (degrees * Math.PI) / 360;
+  const x = distance * Math.sin(half);
+  const z = distance * Math.cos(half);
+  return [atom('O'), atom('H', x, 0, z), atom('H', -x, 0, z)];
+}
