@@ -52,6 +52,8 @@ const started = Date.now();
 if (process.argv.includes('--if-changed') && existsSync(stamp) && newestSource() < statSync(stamp).mtimeMs)
   process.exit(0);
 
+// whoever calls (a test runner, say) may be in another mode, and packages would be bundled in theirs
+process.env.NODE_ENV = 'production';
 const { build } = await import('vite');
 const shared = { configFile: false, root, logLevel: 'warn' };
 

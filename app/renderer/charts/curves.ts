@@ -81,7 +81,7 @@ const columnsOf = (study: Study, points: Points): readonly EnergyColumn[] =>
 function curve(
   { label, level, isExcited, entryAt }: EnergyColumn,
   points: Points,
-  valueOf: (entry: EnergyEntry) => number | null,
+  value: (entry: EnergyEntry) => number | null,
 ): Curve {
   const entries = points.map((point) => (point === undefined ? undefined : entryAt(point)));
   return {
@@ -89,8 +89,8 @@ function curve(
     level,
     isExcited,
     values: entries.map((entry) => {
-      const value = entry === undefined ? null : valueOf(entry);
-      return value === null || Number.isFinite(value) ? value : null;
+      const drawn = entry === undefined ? null : value(entry);
+      return drawn === null || Number.isFinite(drawn) ? drawn : null;
     }),
     isConverged: entries.map((entry) => entry?.converged ?? false),
   };

@@ -20,6 +20,8 @@ export interface FigureRequest extends CurveOptions {
   readonly theme: ChartTheme;
   /** changes when a zoom made by the user no longer makes sense */
   readonly zoomKey: string;
+  /** of the whole drawing, in pixels */
+  readonly size: { readonly width: number; readonly height: number };
 }
 
 export interface Figure {
@@ -27,12 +29,12 @@ export interface Figure {
   readonly layout: Partial<Layout>;
 }
 
-/** Vertical shares of the two charts and of the strip of cautions, from the bottom. */
-const CAUTION_BAND = [0, 0.035] as const;
-const CORRELATION_BAND = [0, 0.33] as const;
-const ENERGY_BAND = [0.385, 1] as const;
-/** what the strip of cautions takes from the chart above it */
-const STRIP_SHARE = 0.085;
+/** What the charts leave free, in pixels. */
+const MARGIN = { l: 64, r: 14, t: 10, b: 46 } as const;
+const GAP = 26;
+const CAUTION_STRIP = 18;
+/** of the height that the two charts share */
+const CORRELATION_SHARE = 0.35;
 
 /**
  * Energies above, correlation energies below, cautions at the foot, over one axis of distance, so that a zoom
@@ -45,6 +47,7 @@ export function buildFigure(request: FigureRequest): Figure {
   const energies = energyCurves(study, points, request).curves.filter(isShown);
   const correlations = correlationCurves(study, points, request.energyUnit).filter(isShown);
   const hasCautions = points.some((point) => (point?.cautions.length ?? 0) > 0);
+  const bands = bandsOf(request.size.height, hasCautions);
   const draw = (curve: Curve, axis: 'y' | 'y2') => tracesOf(curve, x, axis, request);
 
   return {
@@ -57,7 +60,9 @@ export function buildFigure(request: FigureRequest): Figure {
       font: { family: theme.fontFamily, size: theme.fontSize, color: theme.text },
       paper_bgcolor: theme.paper,
       plot_bgcolor: theme.plot,
-      margin: { l: 64, r: 14, t: 10, b: 44 },
+      margin: MARGIN,
+      width: request.size.width,
+      height: request.size.height,
       showlegend: false,
       dragmode: 'zoom',
       // the nearest point shows by a line under the pointer; a click puts the cursor there
@@ -79,19 +84,19 @@ export function buildFigure(request: FigureRequest): Figure {
       },
       yaxis: {
         ...axisLook(theme),
-        domain: [...ENERGY_BAND],
+        domain: bands.energy,
         title: title(energyTitle(request), theme),
         automargin: true,
       },
       yaxis2: {
         ...axisLook(theme),
-        domain: [CORRELATION_BAND[0] + (hasCautions ? STRIP_SHARE : 0), CORRELATION_BAND[1]],
+        domain: bands.correlation,
         title: title(`Correlation, ${ENERGY_UNITS[request.energyUnit].symbol}`, theme),
         automargin: true,
       },
       ...(hasCautions && {
         yaxis3: {
-          domain: [...CAUTION_BAND],
+          domain: bands.cautions,
           range: [-1, 1],
           fixedrange: true,
           showgrid: false,
@@ -103,6 +108,25 @@ export function buildFigure(request: FigureRequest): Figure {
         },
       }),
     },
+  };
+}
+
+interface Bands {
+  readonly energy: [number, number];
+  readonly correlation: [number, number];
+  readonly cautions: [number, number];
+}
+
+/** The vertical shares of the charts and of the strip, from the bottom. */
+function bandsOf(height: number, hasCautions: boolean): Bands {
+  const inner = Math.max(1, height - MARGIN.t - MARGIN.b);
+  const strip = hasCautions ? (CAUTION_STRIP + GAP / 2) / inner : 0;
+  const gap = GAP / inner;
+  const middle = strip + CORRELATION_SHARE * Math.max(0, 1 - strip - gap);
+  return {
+    cautions: [0, Math.min(1, CAUTION_STRIP / inner)],
+    correlation: [strip, middle],
+    energy: [Math.min(1, middle + gap), 1],
   };
 }
 

@@ -31,10 +31,12 @@ export function PlotlyChart({ data, layout, shapes, onPick }: PlotlyChartProps) 
   return <div ref={place} className="plotlyChart" />;
 }
 
-const CONFIG = { displayModeBar: false, responsive: true, doubleClick: 'reset', showTips: false } as const;
+const CONFIG = { displayModeBar: false, responsive: false, doubleClick: 'reset', showTips: false } as const;
 
 /** After a whole drawing the window has this many times as long for everything else, however slow the machine. */
 const REST_FACTOR = 3;
+/** Long enough for a press or a key to get in; what has arrived is not held back longer. */
+const LONGEST_REST_MS = 400;
 
 /** Draws the latest of what it is shown, at most once a frame; a moved cursor redraws only the shapes. */
 class Painter {
@@ -92,7 +94,7 @@ class Painter {
         if (typeof x === 'number') this.#onPick(x);
       });
     const now = performance.now();
-    this.#restsUntil = now + REST_FACTOR * (now - started);
+    this.#restsUntil = now + Math.min(LONGEST_REST_MS, REST_FACTOR * (now - started));
   }
 }
 

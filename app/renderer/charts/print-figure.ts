@@ -16,10 +16,14 @@ export interface PrintFigure extends Figure {
 }
 
 /** Both charts for paper: white ground, legend on top, the study sentence as caption below. */
-export function printFigure(request: Omit<FigureRequest, 'theme' | 'zoomKey'>, caption: string): PrintFigure {
-  const { data, layout } = buildFigure({ ...request, theme: PRINT_CHART, zoomKey: '' });
+export function printFigure(
+  request: Omit<FigureRequest, 'theme' | 'zoomKey' | 'size'>,
+  caption: string,
+): PrintFigure {
   const lines = wrap(caption, CAPTION_LINE_LENGTH);
   const captionHeight = lines.length * CAPTION_LINE_HEIGHT;
+  const size = { width: WIDTH, height: PLOT_HEIGHT + captionHeight };
+  const { data, layout } = buildFigure({ ...request, theme: PRINT_CHART, zoomKey: '', size });
   const print: Partial<Layout> = {
     ...layout,
     showlegend: true,
@@ -41,7 +45,7 @@ export function printFigure(request: Omit<FigureRequest, 'theme' | 'zoomKey'>, c
       },
     ],
   };
-  return { data, layout: print, width: WIDTH, height: PLOT_HEIGHT + captionHeight };
+  return { data, layout: print, ...size };
 }
 
 export async function figureAsSvg({ data, layout, width, height }: PrintFigure): Promise<string> {

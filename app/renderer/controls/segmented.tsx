@@ -6,11 +6,14 @@ interface SegmentedProps<K extends string> {
   readonly options: readonly { readonly key: K; readonly text: ReactNode; readonly name?: string }[];
   readonly chosen: K;
   readonly onChoose: (key: K) => void;
+  /** for editors, where fields beside it have labels too */
+  readonly isLabelShown?: boolean;
 }
 
 /** One of a few, all in view. */
-export function Segmented<K extends string>({ label, options, chosen, onChoose }: SegmentedProps<K>) {
-  return (
+export function Segmented<K extends string>(props: SegmentedProps<K>) {
+  const { label, options, chosen, onChoose, isLabelShown = false } = props;
+  const choice = (
     <ToggleButtonGroup
       aria-label={label}
       className="segmented"
@@ -28,5 +31,12 @@ export function Segmented<K extends string>({ label, options, chosen, onChoose }
         </ToggleButton>
       ))}
     </ToggleButtonGroup>
+  );
+  if (!isLabelShown) return choice;
+  return (
+    <div className="labelledSegments">
+      <span aria-hidden="true">{label}</span>
+      {choice}
+    </div>
   );
 }

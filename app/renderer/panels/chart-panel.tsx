@@ -1,10 +1,12 @@
-import { useMemo } from 'react';
+import { useMemo, useRef } from 'react';
 import { DARK_CHART, LIGHT_CHART } from '../charts/chart-theme';
 import { cursorShapes } from '../charts/cursor-shapes';
 import { energyCurves, positions } from '../charts/curves';
 import { buildFigure, type FigureRequest } from '../charts/figure';
 import { PlotlyChart } from '../charts/plotly-chart';
 import { useGround } from '../charts/use-ground';
+import { useMedia } from '../controls/use-media';
+import { useSize } from '../controls/use-size';
 import { type CursorMove, cursorIndex, moveCursor } from '../state/cursor';
 import { useController, useWindowState } from '../state/window-context';
 import type { Run, View } from '../state/window-state';
@@ -34,7 +36,11 @@ export function ChartPanel() {
       ) : (
         <>
           <LevelLegend run={run} />
-          <Charts run={run} view={view} />
+          {run.study.scan === undefined ? (
+            <p className="empty">One geometry has no curve: its numbers stand beside.</p>
+          ) : (
+            <Charts run={run} view={view} />
+          )}
           <RunNotes run={run} />
         </>
       )}
@@ -45,21 +51,26 @@ export function ChartPanel() {
 function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
   const controller = useController();
   const ground = useGround();
+  const place = useRef<HTMLDivElement>(null);
+  const size = useSize(place);
+  const fontSize = useChartFontSize();
   const { study, points } = run;
   const { energyUnit, energyReference, hiddenLevels } = view;
   const lengthUnit = view.lengthUnit ?? study.molecule.unit;
-  const request: FigureRequest = useMemo(
-    () => ({
+  const hasPoints = points.some((point) => point !== undefined);
+  const request = useMemo(
+    (): FigureRequest => ({
       study,
       points,
       energyUnit,
       energyReference,
       lengthUnit,
       hiddenLevels,
-      theme: ground === 'dark' ? DARK_CHART : LIGHT_CHART,
+      theme: { ...(ground === 'dark' ? DARK_CHART : LIGHT_CHART), fontSize },
       zoomKey: [run.text, energyUnit, energyReference, lengthUnit].join('|'),
+      size: size ?? UNMEASURED,
     }),
-    [study, points, energyUnit, energyReference, lengthUnit, hiddenLevels, ground, run.text],
+    [study, points, energyUnit, energyReference, lengthUnit, hiddenLevels, ground, fontSize, run.text, size],
   );
   const figure = useMemo(() => buildFigure(request), [request]);
   const index = cursorIndex(run, view.cursor);
@@ -69,6 +80,7 @@ function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
   return (
     <>
       <div
+        ref={place}
         className="charts"
         role="slider"
         tabIndex={0}
@@ -85,12 +97,14 @@ function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
           controller.changeView({ cursor: moveCursor(run, index, move) });
         }}
       >
-        <PlotlyChart
-          data={figure.data}
-          layout={figure.layout}
-          shapes={shapes}
-          onPick={(picked) => controller.changeView({ cursor: nearestIndex(x, picked) })}
-        />
+        {size !== undefined && hasPoints && (
+          <PlotlyChart
+            data={figure.data}
+            layout={figure.layout}
+            shapes={shapes}
+            onPick={(picked) => controller.changeView({ cursor: nearestIndex(x, picked) })}
+          />
+        )}
       </div>
       {missing.length > 0 && (
         <p className="chartNote">
@@ -99,4 +113,13 @@ function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
       )}
     </>
   );
+}
+
+const UNMEASURED = { width: 0, height: 0 };
+
+/** The charts' letters keep step with the window's, which grow with its room. */
+function useChartFontSize(): number {
+  const isWide = useMedia('(min-width: 1800px)');
+  const isVeryWide = useMedia('(min-width: 2400px)');
+  return isVeryWide ? 16 : isWide ? 14 : 13;
 }

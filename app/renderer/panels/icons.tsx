@@ -1,3 +1,5 @@
+import type { ReactNode } from 'react';
+
 /** The program's mark: a curve that falls into its well and parts for good. */
 export function Mark() {
   return (
@@ -14,11 +16,18 @@ export function Mark() {
   );
 }
 
-const ICON = { viewBox: '0 0 16 16', width: 15, height: 15, 'aria-hidden': true } as const;
+/** Beside a name that says the same. */
+function Icon({ children }: { readonly children: ReactNode }) {
+  return (
+    <svg viewBox="0 0 16 16" width="15" height="15" aria-hidden="true">
+      {children}
+    </svg>
+  );
+}
 
 export function LightIcon() {
   return (
-    <svg {...ICON}>
+    <Icon>
       <circle cx="8" cy="8" r="3" fill="none" stroke="currentColor" strokeWidth="1.5" />
       <path
         d="M8 1v2M8 13v2M1 8h2M13 8h2M3 3l1.4 1.4M11.6 11.6L13 13M3 13l1.4-1.4M11.6 4.4L13 3"
@@ -26,13 +35,13 @@ export function LightIcon() {
         strokeWidth="1.5"
         strokeLinecap="round"
       />
-    </svg>
+    </Icon>
   );
 }
 
 export function DarkIcon() {
   return (
-    <svg {...ICON}>
+    <Icon>
       <path
         d="M13 10.2A5.8 5.8 0 0 1 5.8 3a5.8 5.8 0 1 0 7.2 7.2z"
         fill="none"
@@ -40,15 +49,15 @@ export function DarkIcon() {
         strokeWidth="1.5"
         strokeLinejoin="round"
       />
-    </svg>
+    </Icon>
   );
 }
 
 export function SystemIcon() {
   return (
-    <svg {...ICON}>
+    <Icon>
       <circle cx="8" cy="8" r="6" fill="none" stroke="currentColor" strokeWidth="1.5" />
       <path d="M8 2a6 6 0 0 1 0 12z" fill="currentColor" />
-    </svg>
+    </Icon>
   );
 }

@@ -11,7 +11,7 @@ export function LevelLegend({ run: { study, points } }: { readonly run: Run }) {
     (point) => point !== undefined && Object.values(point.levels).some(({ converged }) => !converged),
   );
   return (
-    <div className="legend" role="group" aria-label="Levels drawn">
+    <fieldset className="legend" aria-label="Levels drawn">
       {study.levels.map((level) => (
         <ToggleButton
           key={level}
@@ -27,6 +27,6 @@ export function LevelLegend({ run: { study, points } }: { readonly run: Run }) {
         </ToggleButton>
       ))}
       {hasUnconverged && <span className="hint">× not converged, not joined to the curve</span>}
-    </div>
+    </fieldset>
   );
 }

@@ -1,5 +1,6 @@
 import { energyColumns } from '../../study/energy-columns';
 import { positions, scansLength } from '../charts/curves';
+import { numbered } from '../numbered';
 import { formatFixed, formatPlain } from '../numbers';
 import { cursorIndex } from '../state/cursor';
 import { useController, useWindowState } from '../state/window-context';
@@ -18,7 +19,7 @@ export function PointsTable() {
   const { symbol, decimals } = ENERGY_UNITS[view.energyUnit];
   const cursor = cursorIndex(run, view.cursor);
   return (
-    <div className="pointsTable" tabIndex={0} role="region" aria-label="All points">
+    <div className="pointsTable">
       <table className="numbers">
         <caption>Energies, {symbol}; × not converged, △ caution</caption>
         <thead>
@@ -34,9 +35,8 @@ export function PointsTable() {
           </tr>
         </thead>
         <tbody>
-          {points.map((point, index) =>
+          {numbered(points).map(({ number: index, item: point }) =>
             point === undefined ? null : (
-              // biome-ignore lint/suspicious/noArrayIndexKey: a point's number is its identity
               <tr
                 key={index}
                 aria-current={index === cursor || undefined}

@@ -44,14 +44,12 @@ export function LevelsEditor({ draft, issues, onEdit }: LevelsEditorProps) {
       <div className="fieldRow">
         <LabelledField
           label="Lowest states of each CI level"
-          className="short"
           value={draft.states}
           isWrong={issues.some(({ place }) => place === 'states')}
           onChange={(states) => onEdit((current) => ({ ...current, states }))}
         />
         <LabelledField
           label="Energies converged to, hartree"
-          className="short"
           placeholder="usual"
           value={draft.energyConvergence}
           isWrong={issues.some(({ place }) => place.startsWith('convergence'))}

@@ -4,6 +4,7 @@ import type { StudyIssue } from '../../contract/requests';
 import { Check } from '../controls/check';
 import { LabelledField } from '../controls/labelled-field';
 import { Segmented } from '../controls/segmented';
+import { numbered } from '../numbered';
 import { type AtomDraft, EMPTY_ATOM, type StudyDraft } from '../state/draft';
 import { type PastedAtoms, readPastedAtoms } from '../state/pasted-atoms';
 import { withoutAtom } from '../state/without-atom';
@@ -27,7 +28,8 @@ export function MoleculeEditor({ draft, issues, onEdit }: MoleculeEditorProps) {
     <div className="moleculeEditor">
       <div className="fieldRow">
         <Segmented
-          label="Unit of every length"
+          isLabelShown
+          label="Lengths in"
           options={[
             { key: 'angstrom', text: 'Å', name: 'ångström' },
             { key: 'bohr', text: 'a₀', name: 'bohr' },
@@ -67,9 +69,7 @@ export function MoleculeEditor({ draft, issues, onEdit }: MoleculeEditorProps) {
           </tr>
         </thead>
         <tbody>
-          {draft.atoms.map((atom, index) => (
-            // atoms have no identity but their number, which the whole study counts by
-            // biome-ignore lint/suspicious/noArrayIndexKey: the index is the identity
+          {numbered(draft.atoms).map(({ number: index, item: atom }) => (
             <AtomRow
               key={index}
               index={index}

@@ -2,6 +2,7 @@ import { Fragment, type ReactNode } from 'react';
 import type { StudyIssue } from '../../contract/requests';
 import { type SentencePartName, sentenceParts } from '../../study/sentence';
 import { LabelledField } from '../controls/labelled-field';
+import { numbered } from '../numbered';
 import type { ScanDraft, StudyDraft } from '../state/draft';
 import { BasisEditor } from './basis-editor';
 import { CoordinateEditor } from './coordinate-editor';
@@ -25,10 +26,9 @@ export function StudySentence({ draft, issues, onEdit }: StudySentenceProps) {
   const placed = placeIssues(issues, parts);
   return (
     <>
-      <p className="sentence">
-        {parts.map(({ text, part }, index) => (
-          // biome-ignore lint/suspicious/noArrayIndexKey: the words of a sentence stand in order
-          <Fragment key={part ?? index}>
+      <div className="sentence">
+        {numbered(parts).map(({ number, item: { text, part } }) => (
+          <Fragment key={part ?? number}>
             {part === undefined ? (
               text
             ) : (
@@ -42,7 +42,7 @@ export function StudySentence({ draft, issues, onEdit }: StudySentenceProps) {
             )}
           </Fragment>
         ))}
-      </p>
+      </div>
       <IssueNote at="study" issues={placed.get('study') ?? []} />
     </>
   );

@@ -20,6 +20,9 @@ export interface Surroundings {
   readonly saveFile: (file: FileToSave) => Promise<void>;
 }
 
+/** Shown when nothing was typed before: hydrogen, done in a moment. */
+const FIRST_SAMPLE = 'h2';
+
 /** What is computed without being asked for: a few seconds of work at most. */
 const UNASKED_SECONDS = 4;
 
@@ -69,7 +72,8 @@ export class WindowController {
     });
     for (const reply of [program, samples, bases])
       if (!reply.ok) this.#refuse('The program’s lists cannot be read', [reply.error]);
-    const firstSample = samples.ok ? samples.value[0] : undefined;
+    const known = samples.ok ? samples.value : [];
+    const firstSample = known.find(({ id }) => id === FIRST_SAMPLE) ?? known[0];
     if (draft !== undefined) await this.#showDraft(draft);
     else if (firstSample !== undefined) await this.openSample(firstSample.id);
   }

@@ -7,6 +7,7 @@ import type {
   SinglesResult,
 } from '#engine';
 import { LevelSwatch } from '../../charts/level-swatch';
+import { numbered } from '../../numbered';
 import { formatFixed, formatScientific } from '../../numbers';
 import { ENERGY_UNITS, type EnergyUnit, toEnergyUnit } from '../../units';
 import { describeDeterminant } from './describe-determinant';
@@ -37,10 +38,9 @@ export function LevelDetails({ level, levels, result, energyUnit }: LevelDetails
 function Facts({ facts }: { readonly facts: readonly (readonly [ReactNode, ReactNode] | undefined)[] }) {
   return (
     <dl className="facts">
-      {facts.map((fact, index) =>
+      {numbered(facts).map(({ number, item: fact }) =>
         fact === undefined ? null : (
-          // biome-ignore lint/suspicious/noArrayIndexKey: the list of facts of a kind of level is fixed
-          <div key={index}>
+          <div key={number}>
             <dt>{fact[0]}</dt>
             <dd>{fact[1]}</dd>
           </div>
@@ -103,10 +103,9 @@ function NumberList({ name, values }: { readonly name: string; readonly values: 
     <div className="numberList">
       <h3>{name}</h3>
       <ol start={0}>
-        {values.map((value, index) => (
-          // biome-ignore lint/suspicious/noArrayIndexKey: the index is what is counted
-          <li key={index}>
-            <span className="ordinal">{index}</span> {value}
+        {numbered(values).map(({ number, item: value }) => (
+          <li key={number}>
+            <span className="ordinal">{number}</span> {value}
           </li>
         ))}
       </ol>
@@ -132,11 +131,10 @@ function SinglesStates({ result, unit }: { readonly result: SinglesResult; reado
         </tr>
       </thead>
       <tbody>
-        {result.states.map((state, index) => (
-          // biome-ignore lint/suspicious/noArrayIndexKey: states are counted in order of energy
-          <tr key={index}>
+        {numbered(result.states).map(({ number, item: state }) => (
+          <tr key={number}>
             <th scope="row">
-              {index + 1} {state.spin}
+              {number + 1} {state.spin}
             </th>
             <td>{formatFixed(toEnergyUnit(state.energy, unit), decimals)}</td>
             <td>{formatFixed(toEnergyUnit(state.excitation, unit), Math.min(decimals, 6))}</td>
@@ -239,11 +237,10 @@ function States({
         </tr>
       </thead>
       <tbody>
-        {states.map((state, index) => (
-          // biome-ignore lint/suspicious/noArrayIndexKey: states are counted in order of energy
-          <tr key={index}>
+        {numbered(states).map(({ number, item: state }) => (
+          <tr key={number}>
             <th scope="row">
-              {index + 1} {state.spin}
+              {number + 1} {state.spin}
             </th>
             <td>{formatFixed(toEnergyUnit(state.energy, unit), decimals)}</td>
             <td>{formatFixed(toEnergyUnit(state.excitation, unit), Math.min(decimals, 6))}</td>

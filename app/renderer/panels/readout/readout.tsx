@@ -1,6 +1,7 @@
 import { Button } from 'react-aria-components';
 import type { PointResult } from '#engine';
 import { scansLength } from '../../charts/curves';
+import { numbered } from '../../numbered';
 import { formatFixed, formatPlain } from '../../numbers';
 import { type CursorMove, cursorIndex, moveCursor } from '../../state/cursor';
 import { useController, useWindowState } from '../../state/window-context';
@@ -101,16 +102,14 @@ function Geometry({ point, unit }: { readonly point: PointResult; readonly unit:
           </tr>
         </thead>
         <tbody>
-          {point.atoms.map(({ element, at, isotope, ghost }, index) => (
-            // biome-ignore lint/suspicious/noArrayIndexKey: an atom's number is its identity
-            <tr key={index}>
+          {numbered(point.atoms).map(({ number, item: { element, at, isotope, ghost } }) => (
+            <tr key={number}>
               <th scope="row">
-                {index} {isotope === undefined ? '' : <sup>{isotope}</sup>}
+                {number} {isotope === undefined ? '' : <sup>{isotope}</sup>}
                 {element}
                 {ghost ? ' (ghost)' : ''}
               </th>
-              {at.map((value, axis) => (
-                // biome-ignore lint/suspicious/noArrayIndexKey: x, y, z
+              {numbered(at).map(({ number: axis, item: value }) => (
                 <td key={axis}>{formatFixed(value, 6)}</td>
               ))}
             </tr>
