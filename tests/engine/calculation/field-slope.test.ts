@@ -51,7 +51,7 @@ describe('dipole moments', () => {
       const down = energiesInField(-h);
       return { rhf: -(up.rhf - down.rhf) / (2 * h), fci: -(up.fci - down.fci) / (2 * h) };
     };
-    const [near, far] = [slope(2e-3), slope(4e-3)];
+    const [near, far] = [slope(2e-4), slope(4e-4)];
     // central differences extrapolated to fourth order
     expect(Math.abs((4 * near.rhf - far.rhf) / 3 - hartreeFock(point).dipole[2])).toBeLessThan(1e-7);
     expect(Math.abs((4 * near.fci - far.fci) / 3 - correlated(point).dipole[2])).toBeLessThan(1e-7);
