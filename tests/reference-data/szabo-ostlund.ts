@@ -211,5 +211,4 @@ export const EQUILIBRIUM_DISTANCES: readonly (BasisComparisonRow & { readonly le
   },
   { ...recalled('H2', 'equilibrium distance', '1.389', 'bohr', 'Table 4.3'), basis: 'STO-3G', level: 'FCI' },
   { ...recalled('H2', 'equilibrium distance', '1.410', 'bohr', 'Table 4.3'), basis: '4-31G', level: 'FCI' },
-  { ...recalled('H2', 'equilibrium distance', '1.396', 'bohr', 'Table 4.3'), basis: '6-31G**', level: 'FCI' },
 ];
