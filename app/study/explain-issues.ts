@@ -3,7 +3,7 @@ import type { StudyIssue } from '../contract/requests';
 import { MOST_ISSUES } from './json-text';
 import { nearest } from './nearest';
 import { type Path, placeOf } from './place';
-import type { IssueParams } from './schema';
+import type { IssueParams } from './schema-fields';
 
 /**
  * Puts what a schema found into plain words: place, what is wrong with which value, line, and what to do; at most

@@ -8,98 +8,30 @@ import type {
   StudyMolecule,
   StudyScan,
 } from '#engine';
+import {
+  closed,
+  countingNumber,
+  hasKey,
+  type IssueParams,
+  integer,
+  isFiniteNumber,
+  leaf,
+  list,
+  name,
+  number,
+  oneOf,
+  text,
+  wholeNumber,
+  yesOrNo,
+} from './schema-fields';
 
 /*
- * The form of a study file. What an issue says is made here: every leaf carries one sentence end that says what it
- * must be ("must be a whole number from 2 to 10 000"), which `explainIssues` completes with place and value.
- * Whether elements, basis sets and levels exist, are within bounds and fit together is for the engine to say.
+ * The form of a study file. Whether elements, basis sets and levels exist, are within bounds and fit together is
+ * for the engine to say.
  */
-
-// the window's content-security policy forbids code made from text
-z.config({ jitless: true });
 
 /** Level names of the field, whether or not this version computes them: a typo must not look like a missing method. */
 export const LEVEL_NAMES = ['RHF', 'UHF', 'ROHF', 'MP2', 'CIS', 'CISD', 'CISDT', 'CISDTQ', 'FCI'] as const;
-
-/** What a refused value carries for `explainIssues` beyond its sentence. */
-export interface IssueParams {
-  readonly code: 'study.unknownKey' | 'level.unknown';
-  /** the words that would have been right */
-  readonly known: readonly string[];
-}
-
-function leaf<T>(expectation: string, isRight: (value: unknown) => boolean) {
-  return z.custom<T>(isRight, { error: `must be ${expectation}` });
-}
-
-const isFiniteNumber = (value: unknown): value is number =>
-  typeof value === 'number' && Number.isFinite(value);
-const isIndex = (value: unknown): value is number => Number.isInteger(value) && (value as number) >= 0;
-const withSpaces = (value: number) => String(value).replace(/\B(?=(\d{3})+$)/g, ' ');
-
-const number = leaf<number>('a number', isFiniteNumber);
-const integer = leaf<number>('a whole number', (value) => Number.isSafeInteger(value));
-const countingNumber = leaf<number>(
-  'a whole number above 0',
-  (value) => Number.isSafeInteger(value) && (value as number) > 0,
-);
-const yesOrNo = leaf<boolean>('true or false', (value) => typeof value === 'boolean');
-
-function wholeNumber(smallest: number, largest: number) {
-  return leaf<number>(
-    `a whole number from ${withSpaces(smallest)} to ${withSpaces(largest)}`,
-    (value) => Number.isInteger(value) && (value as number) >= smallest && (value as number) <= largest,
-  );
-}
-
-function text(longest: number) {
-  return leaf<string>(
-    `a text of at most ${withSpaces(longest)} characters`,
-    (value) => typeof value === 'string' && value.length <= longest,
-  );
-}
-
-const name = leaf<string>(
-  'a name of 1 to 200 characters',
-  (value) => typeof value === 'string' && value.trim() !== '' && value.length <= 200,
-);
-
-/** A list of different atom numbers, such as the two ends of a bond. */
-function atomIndices<T>(count: number, example: string) {
-  return leaf<T>(
-    `${count} different atom numbers counted from 0, such as ${example}`,
-    (value) =>
-      Array.isArray(value) && value.length === count && value.every(isIndex) && new Set(value).size === count,
-  );
-}
-
-function list<T>(item: z.ZodType<T>, what: string, most: number) {
-  const expectation = `must be a list of 1 to ${withSpaces(most)} ${what}`;
-  return z.array(item, { error: expectation }).min(1, expectation).max(most, expectation);
-}
-
-/** An object with these keys and no others: every further key is an issue of its own that knows the right ones. */
-function closed<S extends z.ZodRawShape>(shape: S, known: readonly string[] = Object.keys(shape)) {
-  const params: IssueParams = { code: 'study.unknownKey', known };
-  const unknownKey = z.custom<never>(() => false, { params: { ...params } });
-  // a catch-all that nothing passes adds no keys to the type
-  return z.object(shape, { error: 'must be an object { … }' }).catchall(unknownKey) as unknown as ReturnType<
-    typeof z.strictObject<S>
-  >;
-}
-
-/** Picks the schema by what the value looks like, so that its issues speak of the form that was meant. */
-function oneOf<T>(choose: (value: unknown) => z.ZodType<T>): z.ZodType<T> {
-  return z.unknown().transform((value, context): T => {
-    const result = choose(value).safeParse(value);
-    if (result.success) return result.data;
-    for (const issue of result.error.issues) context.issues.push({ ...issue, input: value } as never);
-    return z.NEVER;
-  });
-}
-
-const hasKey = (value: unknown, ...keys: readonly string[]) =>
-  typeof value === 'object' && value !== null && keys.some((key) => Object.hasOwn(value, key));
 
 const atom: z.ZodType<StudyAtom> = closed({
   element: leaf<string>(
@@ -123,6 +55,17 @@ const molecule: z.ZodType<StudyMolecule> = closed({
   charge: integer.optional(),
   multiplicity: countingNumber.optional(),
 });
+
+const isIndex = (value: unknown): value is number => Number.isInteger(value) && (value as number) >= 0;
+
+/** A list of different atom numbers, such as the two ends of a bond. */
+function atomIndices<T>(count: number, example: string) {
+  return leaf<T>(
+    `${count} different atom numbers counted from 0, such as ${example}`,
+    (value) =>
+      Array.isArray(value) && value.length === count && value.every(isIndex) && new Set(value).size === count,
+  );
+}
 
 const COORDINATES = ['bonds', 'angle', 'dihedral'];
 const bonds = closed({ bonds: list(atomIndices<[number, number]>(2, '[0, 1]'), 'bonds', 100) }, COORDINATES);
