@@ -10,7 +10,11 @@ import {
   type StudyMolecule,
 } from '#engine';
 import { HYDROGEN_SINGLES } from '../../reference-data/closed-forms';
-import { WATER_DOUBLE_ZETA, WATER_GEOMETRY } from '../../reference-data/saxe-schaefer-handy';
+import {
+  WATER_CISD_SHARE,
+  WATER_DOUBLE_ZETA,
+  WATER_GEOMETRY,
+} from '../../reference-data/saxe-schaefer-handy';
 import {
   HELIUM_HYDRIDE,
   HYDROGEN_CORRELATION,
@@ -153,5 +157,11 @@ describe('H2O in the double-zeta basis', () => {
 
   it('published: CISD total energy, all electrons correlated', () => {
     expect(levelOf(point, 'CISD', 'correlated').energy).toMatchPublished(WATER_DOUBLE_ZETA.CISD);
+  });
+
+  it('published: share of the full-CI correlation energy that CISD recovers', () => {
+    const { energy, correlation } = levelOf(point, 'CISD', 'correlated');
+    const fullCorrelation = Number(WATER_DOUBLE_ZETA.FCI.printed) - (energy - correlation);
+    expect((100 * correlation) / fullCorrelation).toMatchPublished(WATER_CISD_SHARE);
   });
 });
