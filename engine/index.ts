@@ -28,7 +28,6 @@ export type {
   PointResult,
   SinglesResult,
   SinglesState,
-  SpinName,
   StudyResults,
 } from './calculation/result';
 export type {
@@ -41,6 +40,7 @@ export type {
   StudyScan,
 } from './calculation/study';
 export type { Harmonics, ShellDefinition } from './basis/contracted-gaussian';
+export type { SpinName } from './configuration-interaction/spin';
 export {
   BOHR_IN_ANGSTROM,
   DALTON_IN_ELECTRON_MASSES,

@@ -82,7 +82,9 @@ export function studyCautions(prepared: PreparedStudy, points: readonly PointRes
         'depends on a bond strength, use measured data.',
     });
   }
-  const unconverged = points.filter((point) => Object.values(point.levels).some((level) => !level.converged)).length;
+  const unconverged = points.filter((point) =>
+    Object.values(point.levels).some((level) => !level.converged),
+  ).length;
   if (unconverged > 0) {
     cautions.push({
       code: 'level.unconverged',

@@ -5,7 +5,11 @@ import { nuclearDipole } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
 import { superposeAtomicDensities } from '../self-consistent-field/initial-guess';
 import { DEFAULT_SELF_CONSISTENCY } from '../self-consistent-field/mean-field-problem';
-import { type RestrictedSolution, type StartingPoint, solveRestricted } from '../self-consistent-field/restricted';
+import {
+  type RestrictedSolution,
+  type StartingPoint,
+  solveRestricted,
+} from '../self-consistent-field/restricted';
 import { type RunControl, UNATTENDED } from '../termination';
 import { pointCautions } from './cautions';
 import { type CorrelationInput, computeCorrelated, computeSingles, hartreeFockResult } from './level-results';
@@ -75,7 +79,9 @@ export function computePoint(
       levels,
       cautions: pointCautions(meanField, levels),
     },
-    ...(meanField.termination.kind === 'converged' && { carry: { occupiedOrbitals: occupiedOf(meanField, prepared) } }),
+    ...(meanField.termination.kind === 'converged' && {
+      carry: { occupiedOrbitals: occupiedOf(meanField, prepared) },
+    }),
   };
 }
 
@@ -83,7 +89,10 @@ function needsOrbitalIntegrals(levels: readonly Level[]): boolean {
   return levels.some((level) => level.kind !== 'hartreeFock');
 }
 
-function occupiedOf(meanField: RestrictedSolution, { electrons, functionCount }: PreparedStudy): Float64Array {
+function occupiedOf(
+  meanField: RestrictedSolution,
+  { electrons, functionCount }: PreparedStudy,
+): Float64Array {
   const occupied = electrons / 2;
   const m = meanField.orbitalCount;
   const part = new Float64Array(functionCount * occupied);
@@ -114,7 +123,9 @@ function correlationInput(
   });
   return {
     integrals: orbitalIntegrals,
-    dipole: dipole.map((matrix) => transformOneElectron(matrix, meanField.coefficients, n, meanField.orbitalCount)),
+    dipole: dipole.map((matrix) =>
+      transformOneElectron(matrix, meanField.coefficients, n, meanField.orbitalCount),
+    ),
     nuclearDipole: nuclearDipole(molecule),
     orbitalCount: meanField.orbitalCount,
     frozen,

@@ -55,9 +55,16 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
       determinants,
       bytes:
         transformed.bytes +
-        configurationInteractionBytes(active, activeElectrons, activeElectrons, level.maximumRank, study.states),
+        configurationInteractionBytes(
+          active,
+          activeElectrons,
+          activeElectrons,
+          level.maximumRank,
+          study.states,
+        ),
       seconds:
-        transformed.seconds + study.states * EIGENVALUE_ITERATIONS * determinants * connections * PER_CONNECTION,
+        transformed.seconds +
+        study.states * EIGENVALUE_ITERATIONS * determinants * connections * PER_CONNECTION,
     };
   };
 

@@ -38,7 +38,11 @@ export function findLevelMinimum(
     guess = carry ?? guess;
     return groundEnergy(result.levels[level]);
   };
-  const minimum = findCurveMinimum(curve, energyAt, molecule.unit === 'bohr' ? SPACING_BOHR : SPACING_ANGSTROM);
+  const minimum = findCurveMinimum(
+    curve,
+    energyAt,
+    molecule.unit === 'bohr' ? SPACING_BOHR : SPACING_ANGSTROM,
+  );
   switch (minimum.kind) {
     case 'found': {
       const { x, energy, uncertainty } = minimum;

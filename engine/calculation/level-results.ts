@@ -1,6 +1,6 @@
+import type { ConfigurationInteractionState } from '../configuration-interaction/describe-state';
 import { solveSingles } from '../configuration-interaction/singles';
 import { solveConfigurationInteraction } from '../configuration-interaction/solve';
-import type { ConfigurationInteractionState } from '../configuration-interaction/describe-state';
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { dot } from '../linear-algebra/dense';
 import { nuclearDipole } from '../molecule/build-molecule';
@@ -74,7 +74,11 @@ export function computeSingles(input: CorrelationInput): SinglesResult {
       spin: state.spin,
       oscillatorStrength: state.oscillatorStrength,
       transitionDipole: state.transitionDipole,
-      leading: state.leading.map(({ from, to, weight }) => ({ from: from + frozen, to: to + frozen, weight })),
+      leading: state.leading.map(({ from, to, weight }) => ({
+        from: from + frozen,
+        to: to + frozen,
+        weight,
+      })),
     })),
   };
 }
@@ -150,7 +154,9 @@ function stateResult(
 }
 
 function onOrbitals(input: CorrelationInput, termination: Termination): LevelTermination {
-  return input.orbitalsConverged || termination.kind !== 'converged' ? termination : { kind: 'orbitalsNotConverged' };
+  return input.orbitalsConverged || termination.kind !== 'converged'
+    ? termination
+    : { kind: 'orbitalsNotConverged' };
 }
 
 /** Rows and columns of the active orbitals, which follow the frozen ones. */

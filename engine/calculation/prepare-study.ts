@@ -77,9 +77,7 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
 
   const { molecule } = built;
   const symbols = [...new Set(molecule.atoms.map((atom) => atom.symbol))];
-  const basisSet = collect(() =>
-    resolveBasis(study.basis, symbols, { fileText: options.basisFileText }),
-  );
+  const basisSet = collect(() => resolveBasis(study.basis, symbols, { fileText: options.basisFileText }));
   const functionCount = basisSet && collect(() => placeBasis(basisSet, molecule).functionCount);
   collect(() => requireClosedShell(study, molecule));
   if (functionCount !== undefined) collect(() => requireFunctions(functionCount, electronCount(molecule)));
@@ -101,7 +99,9 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
     electrons: electronCount(molecule),
     functionCount,
     // highly charged ions may have fewer electrons than their cores
-    frozenOrbitals: complete.frozenCore ? Math.min(frozenOrbitalCount(molecule), electronCount(molecule) / 2) : 0,
+    frozenOrbitals: complete.frozenCore
+      ? Math.min(frozenOrbitalCount(molecule), electronCount(molecule) / 2)
+      : 0,
     memoryLimit: options.memoryLimit ?? DEFAULT_MEMORY_LIMIT,
     geometryAt: (coordinate) => geometryOf(complete, coordinate).atoms,
     moleculeAt: (coordinate) => moleculeOf(complete, coordinate),
@@ -164,7 +164,13 @@ function requireFunctions(functionCount: number, electrons: number): void {
 
 function checkOptions(study: Study, states: number): void {
   if (study.levels.length === 0) {
-    throw new EngineError('level.none', 'The study names no level.', 'Name at least one, such as RHF.', {}, 'levels');
+    throw new EngineError(
+      'level.none',
+      'The study names no level.',
+      'Name at least one, such as RHF.',
+      {},
+      'levels',
+    );
   }
   const twice = study.levels.find((level, i) => study.levels.indexOf(level) !== i);
   if (twice !== undefined) {

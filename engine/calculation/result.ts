@@ -1,4 +1,5 @@
 import type { Harmonics, ShellDefinition } from '../basis/contracted-gaussian';
+import type { SpinName } from '../configuration-interaction/spin';
 import type { Vector3 } from '../molecule/molecule';
 import type { Termination } from '../termination';
 import type { CompleteStudy, StudyAtom } from './study';
@@ -75,8 +76,6 @@ export interface HartreeFockResult {
   /** lowest eigenvalue of the singlet (real) and triplet orbital Hessians; negative: not a minimum */
   readonly stability?: { readonly singlet: number; readonly triplet: number };
 }
-
-export type SpinName = 'singlet' | 'doublet' | 'triplet' | 'quartet' | 'quintet' | 'sextet' | 'septet' | 'mixed';
 
 export interface SinglesState {
   readonly energy: number;

@@ -1,6 +1,5 @@
 import type { BasisRequest } from '../basis/basis-request';
 
-
 /**
  * A study as its file spells it out (`NAME.study.json`): what is to be computed. Lengths are in
  * `molecule.unit`, angles in degrees, energies in hartree; atoms are counted from 0.

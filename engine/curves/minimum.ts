@@ -69,7 +69,7 @@ function vertexOfParabola(points: readonly { x: number; energy: number }[]): num
   const [a, b, c] = points;
   const left = (b.x - a.x) * (b.energy - c.energy);
   const right = (b.x - c.x) * (b.energy - a.energy);
-  return b.x - 0.5 * ((b.x - a.x) * left - (b.x - c.x) * right) / (left - right);
+  return b.x - (0.5 * ((b.x - a.x) * left - (b.x - c.x) * right)) / (left - right);
 }
 
 function refine(

@@ -23,7 +23,11 @@ const DENSITY_TOLERANCE = 1e-5;
  *
  * Source: the start from atomic densities, J. Almlöf, K. Faegri, K. Korsell, J. Comput. Chem. 3, 385 (1982).
  */
-export function atomicDensity(atom: Atom, shells: readonly PlacedShell[], harmonics: PlacedBasis['harmonics']): Float64Array {
+export function atomicDensity(
+  atom: Atom,
+  shells: readonly PlacedShell[],
+  harmonics: PlacedBasis['harmonics'],
+): Float64Array {
   const basis = isolate(shells, harmonics);
   const n = basis.functionCount;
   let density: Float64Array = new Float64Array(n * n);
@@ -31,7 +35,9 @@ export function atomicDensity(atom: Atom, shells: readonly PlacedShell[], harmon
 
   const overlap = overlapMatrix(basis);
   const core = kineticMatrix(basis);
-  const attraction = nuclearAttractionMatrix(basis, [{ charge: atom.nuclearCharge, position: atom.position }]);
+  const attraction = nuclearAttractionMatrix(basis, [
+    { charge: atom.nuclearCharge, position: atom.position },
+  ]);
   for (let i = 0; i < n * n; i++) core[i] += attraction[i];
   const repulsion = electronRepulsionTensor(basis);
 
@@ -93,7 +99,10 @@ function occupySpherically(
     if (electrons === 0 || k === 0) return;
     const components = 2 * momentum + 1;
     const radialFock = averageOverComponents(fock, n, shells, components);
-    const { transformation, orbitalCount } = orthogonalise(averageOverComponents(overlap, n, shells, components), k);
+    const { transformation, orbitalCount } = orthogonalise(
+      averageOverComponents(overlap, n, shells, components),
+      k,
+    );
     const { coefficients } = diagonaliseFock(radialFock, transformation, k, orbitalCount);
 
     const occupations = new Float64Array(orbitalCount);
@@ -104,7 +113,8 @@ function occupySpherically(
     }
     const weighted = coefficients.map((c, place) => c * occupations[place % orbitalCount]);
     const transposed = new Float64Array(orbitalCount * k);
-    for (let a = 0; a < k; a++) for (let i = 0; i < orbitalCount; i++) transposed[i * k + a] = coefficients[a * orbitalCount + i];
+    for (let a = 0; a < k; a++)
+      for (let i = 0; i < orbitalCount; i++) transposed[i * k + a] = coefficients[a * orbitalCount + i];
     const radial = multiply(weighted, transposed, k, orbitalCount, k);
     for (let a = 0; a < k; a++) {
       for (let b = 0; b < k; b++) {

@@ -45,9 +45,14 @@ export function minimiseOverRotations<P extends RotationPoint>(
   for (let iteration = 0; iteration < options.maximumIterations; iteration++) {
     const residual = maximumAbsolute(point.gradient);
     control.report({ stage: 'orbitals', iteration, residual });
-    if (residual <= options.gradientTolerance) return { point, iterations: iteration, termination: { kind: 'converged' } };
+    if (residual <= options.gradientTolerance)
+      return { point, iterations: iteration, termination: { kind: 'converged' } };
     if (!Number.isFinite(residual)) {
-      return { point, iterations: iteration, termination: { kind: 'notFinite', quantity: 'orbital gradient' } };
+      return {
+        point,
+        iterations: iteration,
+        termination: { kind: 'notFinite', quantity: 'orbital gradient' },
+      };
     }
     if (control.isCancelled()) return { point, iterations: iteration, termination: { kind: 'cancelled' } };
 
@@ -62,7 +67,11 @@ export function minimiseOverRotations<P extends RotationPoint>(
     }
     if (ratio < 0.25 && !withinNoise) radius *= 0.35;
     if (radius < SMALLEST_RADIUS) {
-      return { point, iterations: iteration + 1, termination: { kind: 'stagnated', iterationsWithoutProgress: 1 } };
+      return {
+        point,
+        iterations: iteration + 1,
+        termination: { kind: 'stagnated', iterationsWithoutProgress: 1 },
+      };
     }
   }
   return {
@@ -109,7 +118,12 @@ function trustRegionStep<P extends RotationPoint>(
 }
 
 /** Positive t at which ‖step + t·direction‖ in the scaled norm reaches the radius. */
-function distanceToEdge(step: Float64Array, direction: Float64Array, scale: Float64Array, radius: number): number {
+function distanceToEdge(
+  step: Float64Array,
+  direction: Float64Array,
+  scale: Float64Array,
+  radius: number,
+): number {
   let ss = 0;
   let sd = 0;
   let dd = 0;

@@ -14,7 +14,12 @@ export function diagonaliseFock(fock: Float64Array, x: Float64Array, n: number, 
 }
 
 /** D = Σ_i C_i C_iᵀ over the first `occupied` orbitals (one electron each), n×n. */
-export function buildDensity(coefficients: Float64Array, n: number, m: number, occupied: number): Float64Array {
+export function buildDensity(
+  coefficients: Float64Array,
+  n: number,
+  m: number,
+  occupied: number,
+): Float64Array {
   const density = new Float64Array(n * n);
   for (let mu = 0; mu < n; mu++) {
     for (let nu = 0; nu <= mu; nu++) {
@@ -43,7 +48,8 @@ export function reorthonormalise(
   if (!(values[0] > 1e-6)) return undefined;
   const scaled = new Float64Array(k * k);
   const inverseRoot = new Float64Array(k * k);
-  for (let i = 0; i < k; i++) for (let j = 0; j < k; j++) scaled[i * k + j] = vectors[i * k + j] / Math.sqrt(values[j]);
+  for (let i = 0; i < k; i++)
+    for (let j = 0; j < k; j++) scaled[i * k + j] = vectors[i * k + j] / Math.sqrt(values[j]);
   for (let i = 0; i < k; i++) {
     for (let j = 0; j < k; j++) {
       let sum = 0;

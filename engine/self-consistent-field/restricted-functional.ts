@@ -66,7 +66,13 @@ export class RestrictedFunctional implements RotationFunctional<RestrictedPoint>
   }
 
   rotate(point: RestrictedPoint, rotation: Float64Array): Float64Array {
-    return rotateOrbitals(point.coefficients, rotation, this.problem.functionCount, this.orbitalCount, this.occupied);
+    return rotateOrbitals(
+      point.coefficients,
+      rotation,
+      this.problem.functionCount,
+      this.orbitalCount,
+      this.occupied,
+    );
   }
 
   hessianProduct(point: RestrictedPoint, x: Float64Array): Float64Array {
@@ -84,13 +90,26 @@ export class RestrictedFunctional implements RotationFunctional<RestrictedPoint>
     const virtual = m - o;
     const occupiedPart = columns(point.coefficients, n, m, 0, o);
     const virtualPart = columns(point.coefficients, n, m, o, m);
-    const half = multiply(virtualPart, multiply(x, transpose(occupiedPart, n, o), virtual, o, n), n, virtual, n);
+    const half = multiply(
+      virtualPart,
+      multiply(x, transpose(occupiedPart, n, o), virtual, o, n),
+      n,
+      virtual,
+      n,
+    );
     const change = new Float64Array(n * n);
-    for (let i = 0; i < n; i++) for (let j = 0; j < n; j++) change[i * n + j] = half[i * n + j] + half[j * n + i];
+    for (let i = 0; i < n; i++)
+      for (let j = 0; j < n; j++) change[i * n + j] = half[i * n + j] + half[j * n + i];
     coulombExchangeInto(change, repulsion, n, this.coulomb, this.exchange);
     const coulombFactor = spin === 'singlet' ? 2 : 0;
     const field = this.coulomb.map((j, i) => coulombFactor * j - this.exchange[i]);
-    const product = multiplyLeftTransposed(virtualPart, multiply(field, occupiedPart, n, n, o), virtual, n, o);
+    const product = multiplyLeftTransposed(
+      virtualPart,
+      multiply(field, occupiedPart, n, n, o),
+      virtual,
+      n,
+      o,
+    );
     for (let a = 0; a < virtual; a++) {
       for (let i = 0; i < o; i++) {
         product[a * o + i] += (point.orbitalEnergies[o + a] - point.orbitalEnergies[i]) * x[a * o + i];
@@ -117,7 +136,8 @@ export class RestrictedFunctional implements RotationFunctional<RestrictedPoint>
       const block = columns(coefficients, n, m, first, end);
       const { values, vectors } = symmetricEigen(congruence(fock, block, n, size), size);
       const turned = multiply(block, vectors, n, size, size);
-      for (let i = 0; i < n; i++) for (let k = 0; k < size; k++) orbitals[i * m + first + k] = turned[i * size + k];
+      for (let i = 0; i < n; i++)
+        for (let k = 0; k < size; k++) orbitals[i * m + first + k] = turned[i * size + k];
       orbitalEnergies.set(values, first);
     }
     return { orbitals, orbitalEnergies };
@@ -133,6 +153,7 @@ function columns(matrix: Float64Array, n: number, m: number, first: number, end:
 
 function transpose(matrix: Float64Array, rows: number, columnCount: number): Float64Array {
   const turned = new Float64Array(matrix.length);
-  for (let i = 0; i < rows; i++) for (let j = 0; j < columnCount; j++) turned[j * rows + i] = matrix[i * columnCount + j];
+  for (let i = 0; i < rows; i++)
+    for (let j = 0; j < columnCount; j++) turned[j * rows + i] = matrix[i * columnCount + j];
   return turned;
 }

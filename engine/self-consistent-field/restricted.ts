@@ -2,7 +2,11 @@ import { EngineError } from '../errors';
 import { congruence, maximumAbsolute, multiply } from '../linear-algebra/dense';
 import type { RunControl, Termination } from '../termination';
 import { CommutatorExtrapolation } from './convergence-acceleration';
-import { DEFAULT_SELF_CONSISTENCY, type MeanFieldProblem, type SelfConsistencyOptions } from './mean-field-problem';
+import {
+  DEFAULT_SELF_CONSISTENCY,
+  type MeanFieldProblem,
+  type SelfConsistencyOptions,
+} from './mean-field-problem';
 import { minimiseOverRotations } from './minimiser';
 import { buildDensity, diagonaliseFock, reorthonormalise } from './orbitals';
 import { type Orthogonalisation, orthogonalise } from './orthogonalisation';
@@ -153,7 +157,8 @@ class Attempt {
 
   private firstFock(start: StartingPoint): Float64Array | undefined {
     const n = this.functional.problem.functionCount;
-    if (start.kind === 'density') return this.functional.fockAndEnergy(start.density.map((value) => value / 2)).fock;
+    if (start.kind === 'density')
+      return this.functional.fockAndEnergy(start.density.map((value) => value / 2)).fock;
     const o = this.functional.occupied;
     const orbitals = reorthonormalise(start.coefficients, this.functional.problem.overlap, n, o);
     if (orbitals === undefined) return undefined;
@@ -196,7 +201,10 @@ class Attempt {
       this.functional,
       start,
       // g = 4F(a,i), the commutator's element in these orbitals is 2F(a,i) at most
-      { gradientTolerance: 2 * this.options.gradientTolerance, maximumIterations: this.options.minimiserIterations },
+      {
+        gradientTolerance: 2 * this.options.gradientTolerance,
+        maximumIterations: this.options.minimiserIterations,
+      },
       this.control,
     );
     this.iterations += iterations;
@@ -209,7 +217,8 @@ class Attempt {
     const { transformation: x, orbitalCount: m } = this.orthogonalisation;
     const fds = multiply(multiply(point.fock, point.density, n, n, n), overlap, n, n, n);
     const error = new Float64Array(n * n);
-    for (let i = 0; i < n; i++) for (let j = 0; j < n; j++) error[i * n + j] = fds[i * n + j] - fds[j * n + i];
+    for (let i = 0; i < n; i++)
+      for (let j = 0; j < n; j++) error[i * n + j] = fds[i * n + j] - fds[j * n + i];
     return congruence(error, x, n, m);
   }
 }

@@ -33,7 +33,8 @@ export function lowestOrbitalHessian(
       precondition: (vector, shift, result) => {
         for (let k = 0; k < vector.length; k++) {
           const denominator = diagonal[k] - shift;
-          result[k] = vector[k] / (Math.abs(denominator) < SMALLEST_DENOMINATOR ? SMALLEST_DENOMINATOR : denominator);
+          result[k] =
+            vector[k] / (Math.abs(denominator) < SMALLEST_DENOMINATOR ? SMALLEST_DENOMINATOR : denominator);
         }
       },
       guesses: startingVectors(diagonal),

@@ -16,7 +16,10 @@ export type Place = readonly [number, number, number];
 export const atom = (element: string, x = 0, y = 0, z = 0): StudyAtom => ({ element, at: [x, y, z] });
 
 /** A single-point study; lengths in bohr unless said. */
-export function study(atoms: readonly StudyAtom[], changes: Partial<Study> & { charge?: number; unit?: LengthUnit } = {}): Study {
+export function study(
+  atoms: readonly StudyAtom[],
+  changes: Partial<Study> & { charge?: number; unit?: LengthUnit } = {},
+): Study {
   const { charge = 0, unit = 'bohr', ...rest } = changes;
   return {
     format: 'farwell/study',
@@ -41,7 +44,8 @@ export function compute(request: Study): ComputedPoint['result'] {
 
 export const hartreeFock = (point: ComputedPoint['result']) => point.levels.RHF as HartreeFockResult;
 export const singles = (point: ComputedPoint['result']) => point.levels.CIS as SinglesResult;
-export const correlated = (point: ComputedPoint['result'], level = 'FCI') => point.levels[level] as CorrelatedResult;
+export const correlated = (point: ComputedPoint['result'], level = 'FCI') =>
+  point.levels[level] as CorrelatedResult;
 
 /** H–X–H and the like: water at an O–H distance and an angle in degrees, symmetric about z. */
 export function waterAtoms(distance: number, degrees: number): StudyAtom[] {

@@ -1,6 +1,15 @@
 import { describe, expect, it } from 'vitest';
 import type { StudyAtom } from '#engine';
-import { atom, compute, correlated, hartreeFock, type Place, singles, study, waterAtoms } from '../../support/studies';
+import {
+  atom,
+  compute,
+  correlated,
+  hartreeFock,
+  type Place,
+  singles,
+  study,
+  waterAtoms,
+} from '../../support/studies';
 
 const ALL = ['RHF', 'CIS', 'CISD', 'FCI'];
 const NONE: Place = [0, 0, 0];
@@ -11,7 +20,9 @@ function moved(atoms: readonly StudyAtom[], by: Place): StudyAtom[] {
   const [c, s] = [Math.cos(1.1), Math.sin(1.1)];
   return atoms.map(({ element, at }) => {
     const along = at.reduce((sum, value, k) => sum + value * axis[k], 0);
-    const cross = [0, 1, 2].map((k) => axis[(k + 1) % 3] * at[(k + 2) % 3] - axis[(k + 2) % 3] * at[(k + 1) % 3]);
+    const cross = [0, 1, 2].map(
+      (k) => axis[(k + 1) % 3] * at[(k + 2) % 3] - axis[(k + 2) % 3] * at[(k + 1) % 3],
+    );
     const turned = [0, 1, 2].map((k) => at[k] * c + cross[k] * s + axis[k] * along * (1 - c) + by[k]);
     return atom(element, turned[0], turned[1], turned[2]);
   });
@@ -77,11 +88,17 @@ describe('dipole moments', () => {
     const atoms = [atom('He'), atom('H', 0, 0, 1.4632)];
     const levels = ['RHF', 'CISD', 'FCI'];
     const at = (by: Place) =>
-      compute(study(atoms.map(({ element, at: [x, y, z] }) => atom(element, x + by[0], y + by[1], z + by[2])), { charge: 1, levels }));
+      compute(
+        study(
+          atoms.map(({ element, at: [x, y, z] }) => atom(element, x + by[0], y + by[1], z + by[2])),
+          { charge: 1, levels },
+        ),
+      );
     const home = at(NONE);
     const away = at([1.5, -2, 0.25]);
     for (const level of levels) {
-      const dipole = (point: typeof home) => (level === 'RHF' ? hartreeFock(point) : correlated(point, level)).dipole;
+      const dipole = (point: typeof home) =>
+        (level === 'RHF' ? hartreeFock(point) : correlated(point, level)).dipole;
       expectEqual(
         dipole(home).map((value, k) => value + [1.5, -2, 0.25][k]),
         dipole(away),
@@ -106,8 +123,11 @@ describe('order of methods', () => {
   ])('identity: RHF ≥ CISD ≥ CISDT ≥ CISDTQ ≥ FCI for %s', (_, atoms, charge) => {
     const levels = ['RHF', 'CISD', 'CISDT', 'CISDTQ', 'FCI'];
     const point = compute(study(atoms, { levels, charge }));
-    const sequence = levels.map((level) => (level === 'RHF' ? hartreeFock(point) : correlated(point, level)).energy);
-    for (let k = 1; k < sequence.length; k++) expect(sequence[k]).toBeLessThanOrEqual(sequence[k - 1] + 1e-11);
+    const sequence = levels.map(
+      (level) => (level === 'RHF' ? hartreeFock(point) : correlated(point, level)).energy,
+    );
+    for (let k = 1; k < sequence.length; k++)
+      expect(sequence[k]).toBeLessThanOrEqual(sequence[k - 1] + 1e-11);
     expect(sequence[1]).toBeLessThan(sequence[0] - 1e-3);
   });
 

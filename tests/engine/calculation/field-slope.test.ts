@@ -23,7 +23,12 @@ function energiesInField(field: number): { rhf: number; fci: number } {
     nuclearRepulsion: problem.nuclearRepulsion - field * nuclearDipole(molecule)[2],
   };
   const start = { kind: 'density', density: superposeAtomicDensities(molecule, basis) } as const;
-  const options = { energyTolerance: 1e-13, gradientTolerance: 1e-10, extrapolatedIterations: 60, minimiserIterations: 60 };
+  const options = {
+    energyTolerance: 1e-13,
+    gradientTolerance: 1e-10,
+    extrapolatedIterations: 60,
+    minimiserIterations: 60,
+  };
   const solution = solveRestricted(inField, prepared.electrons, [start], UNATTENDED, options);
   const integrals = transformToOrbitals({
     oneElectron: inField.coreHamiltonian,

@@ -25,7 +25,8 @@ function errorFunction(x: number): number {
 }
 
 /** F0(t) = ½√(π/t)·erf(√t). */
-const boys = (t: number) => (t < 1e-8 ? 1 - t / 3 : 0.5 * Math.sqrt(Math.PI / t) * errorFunction(Math.sqrt(t)));
+const boys = (t: number) =>
+  t < 1e-8 ? 1 - t / 3 : 0.5 * Math.sqrt(Math.PI / t) * errorFunction(Math.sqrt(t));
 
 type Primitive = { readonly a: number; readonly w: number; readonly z: number };
 
@@ -51,7 +52,8 @@ function closedForm(distance: number) {
   const core = (i: number, j: number) =>
     sumPairs(i, j, (x) => {
       const kinetic = x.reduced * (3 - 2 * x.reduced * x.r2) * (Math.PI / x.s) ** 1.5;
-      const attraction = [0, distance].reduce((sum, z) => sum + boys(x.s * (x.z - z) ** 2), 0) * ((2 * Math.PI) / x.s);
+      const attraction =
+        [0, distance].reduce((sum, z) => sum + boys(x.s * (x.z - z) ** 2), 0) * ((2 * Math.PI) / x.s);
       return x.weight * (kinetic - attraction);
     });
   const repulsion = (i: number, j: number, k: number, l: number) =>
@@ -90,24 +92,29 @@ function closedForm(distance: number) {
 }
 
 describe('H2 in a minimal basis', () => {
-  it.each([0.2, 0.5, 1, 1.4, 2, 3, 5, 7, 10, 30, 100])('independent: RHF, CIS, CISD and full CI equal the closed form at %f bohr', (r) => {
-    const expected = closedForm(r);
-    // the expansion above is printed to ten digits, which the energies inherit
-    const tolerance = 2e-9;
-    const basis = {
-      name: 'printed STO-3G',
-      shells: { H: [{ angularMomentum: 0, exponents: EXPONENTS, coefficients: WEIGHTS }] },
-    };
-    const point = compute(study([atom('H'), atom('H', 0, 0, r)], { levels: ['RHF', 'CIS', 'CISD', 'FCI'], basis }));
-    expect(Math.abs(hartreeFock(point).energy - expected.rhf)).toBeLessThan(tolerance);
-    for (const level of ['CISD', 'FCI']) {
-      expect(Math.abs(correlated(point, level).energy - expected.fci)).toBeLessThan(tolerance);
-    }
-    const [triplet, singlet] = singles(point).states;
-    expect([triplet.spin, singlet.spin]).toEqual(['triplet', 'singlet']);
-    expect(Math.abs(triplet.excitation - expected.triplet)).toBeLessThan(tolerance);
-    expect(Math.abs(singlet.excitation - expected.singlet)).toBeLessThan(tolerance);
-  });
+  it.each([0.2, 0.5, 1, 1.4, 2, 3, 5, 7, 10, 30, 100])(
+    'independent: RHF, CIS, CISD and full CI equal the closed form at %f bohr',
+    (r) => {
+      const expected = closedForm(r);
+      // the expansion above is printed to ten digits, which the energies inherit
+      const tolerance = 2e-9;
+      const basis = {
+        name: 'printed STO-3G',
+        shells: { H: [{ angularMomentum: 0, exponents: EXPONENTS, coefficients: WEIGHTS }] },
+      };
+      const point = compute(
+        study([atom('H'), atom('H', 0, 0, r)], { levels: ['RHF', 'CIS', 'CISD', 'FCI'], basis }),
+      );
+      expect(Math.abs(hartreeFock(point).energy - expected.rhf)).toBeLessThan(tolerance);
+      for (const level of ['CISD', 'FCI']) {
+        expect(Math.abs(correlated(point, level).energy - expected.fci)).toBeLessThan(tolerance);
+      }
+      const [triplet, singlet] = singles(point).states;
+      expect([triplet.spin, singlet.spin]).toEqual(['triplet', 'singlet']);
+      expect(Math.abs(triplet.excitation - expected.triplet)).toBeLessThan(tolerance);
+      expect(Math.abs(singlet.excitation - expected.singlet)).toBeLessThan(tolerance);
+    },
+  );
 
   it('identity: far apart full CI is two hydrogen atoms, and RHF is half ionic', () => {
     const { fci, rhf } = closedForm(1000);

@@ -1,0 +1,24 @@
+/** One line of the benchmark: our rate beside a yardstick measured in the same run. */
+export interface Measurement {
+  readonly name: string;
+  readonly ours: number;
+  readonly yardstick: number;
+  /** of both rates */
+  readonly unit: string;
+  /** what the yardstick is */
+  readonly against: string;
+}
+
+/** Calls a second, after a warm-up, over at least `seconds`. */
+export function callsPerSecond(work: () => void, seconds = 0.7): number {
+  const warmUntil = performance.now() + 200;
+  do work();
+  while (performance.now() < warmUntil);
+  const start = performance.now();
+  let calls = 0;
+  do {
+    work();
+    calls++;
+  } while (performance.now() - start < 1000 * seconds);
+  return (1000 * calls) / (performance.now() - start);
+}
