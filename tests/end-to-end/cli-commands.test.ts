@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
 import manifest from '../../package.json';
 import { buildProgram, farwell } from '../support/built-program';
-import { helium, nitrogen } from '../support/studies';
+import { helium, nitrogen } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
 beforeAll(buildProgram);

@@ -2,7 +2,7 @@ import { closeSync, ftruncateSync, openSync, readdirSync, writeFileSync } from '
 import { join } from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { buildProgram, farwell } from '../support/built-program';
-import { helium } from '../support/studies';
+import { helium } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
 beforeAll(buildProgram);

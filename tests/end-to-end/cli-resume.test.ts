@@ -2,7 +2,7 @@ import { existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { buildProgram, farwell, type RunningProgram, startFarwell } from '../support/built-program';
-import { nitrogen } from '../support/studies';
+import { nitrogen } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
 const folder = temporaryFolder();

@@ -5,7 +5,7 @@ import type { Study, StudyResults } from '#engine';
 import { studyCsv } from '../../app/study/csv';
 import { parseResults } from '../../app/study/parse-results';
 import { buildProgram, farwell, startFarwell } from '../support/built-program';
-import { helium } from '../support/studies';
+import { helium } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
 beforeAll(buildProgram);

@@ -1,0 +1,36 @@
+import type { Study } from '#engine';
+
+/** A proton leaves helium: two electrons, computed in an instant. */
+export const helium: Study = {
+  format: 'farwell/study',
+  version: 1,
+  title: 'A proton leaves helium',
+  molecule: {
+    unit: 'angstrom',
+    atoms: [
+      { element: 'He', at: [0, 0, 0] },
+      { element: 'H', at: [0, 0, 0.7743] },
+    ],
+    charge: 1,
+  },
+  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.4, to: 4, count: 10 },
+  basis: 'STO-3G',
+  levels: ['RHF', 'CIS', 'CISD', 'FCI'],
+};
+
+/** Nitrogen is pulled apart: long enough to be interrupted. */
+export const nitrogen: Study = {
+  format: 'farwell/study',
+  version: 1,
+  molecule: {
+    unit: 'angstrom',
+    atoms: [
+      { element: 'N', at: [0, 0, 0] },
+      { element: 'N', at: [0, 0, 1.1] },
+    ],
+  },
+  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.9, to: 2, count: 14 },
+  basis: 'STO-3G',
+  levels: ['RHF', 'FCI'],
+  frozenCore: true,
+};
