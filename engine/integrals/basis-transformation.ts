@@ -13,7 +13,7 @@ const cache = new Map<string, ShellTransformation>();
 
 /**
  * Transformation from bare Cartesian products to the functions of a shell, in the order and with the
- * normalisation that {@link PlacedShell} promises: contraction coefficients normalise x^l, and this matrix brings
+ * normalisation that `PlacedShell` promises: contraction coefficients normalise x^l, and this matrix brings
  * every function to norm 1.
  *
  * @param l - angular momentum ≥ 0; s and p are the same in both kinds

@@ -1,3 +1,5 @@
+import { contractRow, contractTwoRows } from './contraction';
+
 /**
  * A contraction over primitives, target[t + n] += Σ_k factors[k, f] · source[k, s + n] for n = 0 … length − 1, as a list
  * of runs. Two factors that multiply the same numbers share a run, which halves the reading.
@@ -56,7 +58,7 @@ export function contractRuns(
     const first = targetStart + runs[run + 3];
     if (runs[run + 4] >= 0) {
       const second = targetStart + runs[run + 4];
-      contractTwo(
+      contractTwoRows(
         factors,
         factorAt,
         factorCount,
@@ -70,7 +72,7 @@ export function contractRuns(
         length,
       );
     } else {
-      contractOne(
+      contractRow(
         factors,
         factorAt,
         factorCount,
@@ -83,89 +85,5 @@ export function contractRuns(
         length,
       );
     }
-  }
-}
-
-/** Three primitives at a time: each sum is then read and written a third as often. */
-function contractOne(
-  factors: Float64Array,
-  factorAt: number,
-  factorStep: number,
-  source: Float64Array,
-  sourceAt: number,
-  sourceStep: number,
-  count: number,
-  target: Float64Array,
-  first: number,
-  length: number,
-): void {
-  let at = factorAt;
-  let base = sourceAt;
-  let k = 0;
-  for (; k + 2 < count; k += 3) {
-    const f0 = factors[at];
-    const f1 = factors[at + factorStep];
-    const f2 = factors[at + 2 * factorStep];
-    const base1 = base + sourceStep;
-    const base2 = base1 + sourceStep;
-    for (let n = 0; n < length; n++) {
-      target[first + n] += f0 * source[base + n] + f1 * source[base1 + n] + f2 * source[base2 + n];
-    }
-    at += 3 * factorStep;
-    base += 3 * sourceStep;
-  }
-  for (; k < count; k++) {
-    const f0 = factors[at];
-    for (let n = 0; n < length; n++) target[first + n] += f0 * source[base + n];
-    at += factorStep;
-    base += sourceStep;
-  }
-}
-
-function contractTwo(
-  factors: Float64Array,
-  factorAt: number,
-  factorStep: number,
-  source: Float64Array,
-  sourceAt: number,
-  sourceStep: number,
-  count: number,
-  target: Float64Array,
-  first: number,
-  second: number,
-  length: number,
-): void {
-  let at = factorAt;
-  let base = sourceAt;
-  let k = 0;
-  for (; k + 2 < count; k += 3) {
-    const f0 = factors[at];
-    const f1 = factors[at + factorStep];
-    const f2 = factors[at + 2 * factorStep];
-    const g0 = factors[at + 1];
-    const g1 = factors[at + factorStep + 1];
-    const g2 = factors[at + 2 * factorStep + 1];
-    const base1 = base + sourceStep;
-    const base2 = base1 + sourceStep;
-    for (let n = 0; n < length; n++) {
-      const s0 = source[base + n];
-      const s1 = source[base1 + n];
-      const s2 = source[base2 + n];
-      target[first + n] += f0 * s0 + f1 * s1 + f2 * s2;
-      target[second + n] += g0 * s0 + g1 * s1 + g2 * s2;
-    }
-    at += 3 * factorStep;
-    base += 3 * sourceStep;
-  }
-  for (; k < count; k++) {
-    const f0 = factors[at];
-    const g0 = factors[at + 1];
-    for (let n = 0; n < length; n++) {
-      const s0 = source[base + n];
-      target[first + n] += f0 * s0;
-      target[second + n] += g0 * s0;
-    }
-    at += factorStep;
-    base += sourceStep;
   }
 }

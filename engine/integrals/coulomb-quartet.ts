@@ -41,7 +41,7 @@ function grown(array: Float64Array, length: number): Float64Array {
  *
  * @param primitiveThreshold - pairs of primitive products whose estimated integral is below this are skipped
  *
- * Source: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978), eqs. (3.31)–(3.33); order of contraction
+ * Source: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978); order of contraction
  * after P. M. W. Gill, J. A. Pople, Int. J. Quantum Chem. 40, 753 (1991).
  */
 export function coulombQuartet(

@@ -1,7 +1,7 @@
 import type { PlacedBasis } from '../basis/contracted-gaussian';
 import { coulombQuartet, QuartetWorkspace } from './coulomb-quartet';
 import { packedPair } from './orbital-integrals';
-import { buildShellPairs, type ShellPair } from './shell-pair';
+import { type ShellPair, shellPairs } from './shell-pair';
 
 export interface ElectronRepulsionOptions {
   /**
@@ -39,7 +39,7 @@ export function electronRepulsionTensor(
   const tensor = new Float64Array((pairCount * (pairCount + 1)) / 2);
   const workspace = new QuartetWorkspace();
   const primitiveThreshold = schwarzThreshold * PRIMITIVE_TO_QUARTET_THRESHOLD;
-  const pairs = buildShellPairs(basis);
+  const pairs = shellPairs(basis);
   const bounds = pairs.map((pair) => schwarzBound(pair, workspace));
   const places = pairs.map(productPlaces);
   for (let i = 0; i < pairs.length; i++) {

@@ -31,7 +31,7 @@ const recursion = buildRecursion();
  * @param degree - 0 … 16
  * @param target - count × hermiteStart(degree + 1), row-major, columns in the order of {@link hermiteStart}
  *
- * Source: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978), eqs. (4.6)–(4.8).
+ * Source: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978).
  * Cost: O(degree⁴) an argument; allocates nothing.
  */
 export function hermiteCoulombInto(

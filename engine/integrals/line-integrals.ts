@@ -5,7 +5,7 @@ import type { Vector3 } from '../molecule/molecule';
  * S_ij^e = ∫ (x − A)^i (x − O)^e (x − B)^j exp(−a(x − A)² − b(x − B)²) dx,
  * of which overlap, kinetic energy and moments are sums of products.
  *
- * Source: S. Obara, A. Saika, J. Chem. Phys. 84, 3963 (1986), eqs. (A2), (A5).
+ * Source: S. Obara, A. Saika, J. Chem. Phys. 84, 3963 (1986).
  */
 export class LineIntegrals {
   private readonly highestMoment: number;

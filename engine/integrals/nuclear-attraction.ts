@@ -3,7 +3,8 @@ import type { Vector3 } from '../molecule/molecule';
 import { cartesianCount } from './cartesian-components';
 import { HERMITE_BATCH, HermiteCoulombArguments, hermiteCoulombInto } from './hermite-coulomb';
 import { hermiteStart } from './hermite-index';
-import { buildShellPairs, type ShellPair } from './shell-pair';
+import { placeSymmetric } from './separable-operator';
+import { type ShellPair, shellPairs } from './shell-pair';
 
 /** A point charge: in e, at a place in bohr. */
 export interface PointCharge {
@@ -21,25 +22,22 @@ const ATTRACTION_FROM_PAIR_PREFACTOR = Math.SQRT2 * Math.PI ** -0.25;
  * @param nuclei - charges in e, positions in bohr; charge 0 (a ghost) costs nothing
  * @returns n×n symmetric, row-major Float64Array of length n², in hartree
  *
- * Source: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978), eqs. (3.20)–(3.22).
+ * Source: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978).
  * Cost: O(n² · nuclei); allocates n².
  */
 export function nuclearAttractionMatrix(basis: PlacedBasis, nuclei: readonly PointCharge[]): Float64Array {
   const n = basis.functionCount;
   const matrix = new Float64Array(n * n);
   const charged = nuclei.filter(({ charge }) => charge !== 0);
-  for (const pair of buildShellPairs(basis)) {
+  for (const pair of shellPairs(basis)) {
     const columns = attractionColumns(pair, charged);
+    const block = new Float64Array(pair.productCount);
     for (let product = 0; product < pair.productCount; product++) {
-      let sum = 0;
       for (let entry = pair.rowStart[product]; entry < pair.rowStart[product + 1]; entry++) {
-        sum += pair.values[entry] * columns[pair.columns[entry]];
+        block[product] += pair.values[entry] * columns[pair.columns[entry]];
       }
-      const row = pair.first.firstFunction + Math.floor(product / pair.second.functionCount);
-      const column = pair.second.firstFunction + (product % pair.second.functionCount);
-      matrix[row * n + column] = sum;
-      matrix[column * n + row] = sum;
     }
+    placeSymmetric(matrix, n, block, pair.first, pair.second);
   }
   return matrix;
 }

@@ -1,3 +1,4 @@
+import { transposedProductInto } from './contraction';
 import { type OrbitalIntegrals, packedPair } from './orbital-integrals';
 
 /** Integrals over basis functions and the orbitals to bring them to. */
@@ -66,7 +67,7 @@ export function transformOneElectron(
   return result;
 }
 
-/** result = CᵀMC; `half` holds MC. */
+/** result = CᵀMC for symmetric M; `half` holds MC, n×m. */
 function congruenceInto(
   matrix: Float64Array,
   coefficients: Float64Array,
@@ -75,35 +76,11 @@ function congruenceInto(
   half: Float64Array,
   result: Float64Array,
 ): void {
-  half.fill(0);
-  for (let mu = 0; mu < n; mu++) {
-    for (let nu = 0; nu < n; nu++) {
-      addScaled(half, mu * m, matrix[mu * n + nu], coefficients, nu * m, m);
-    }
-  }
-  result.fill(0);
-  for (let mu = 0; mu < n; mu++) {
-    for (let p = 0; p < m; p++) {
-      // the lower triangle only
-      addScaled(result, p * m, coefficients[mu * m + p], half, mu * m, p + 1);
-    }
-  }
+  transposedProductInto(matrix, n, coefficients, m, n, half);
+  transposedProductInto(coefficients, m, half, m, n, result, true);
   for (let p = 0; p < m; p++) {
     for (let q = 0; q < p; q++) result[q * m + p] = result[p * m + q];
   }
-}
-
-/** target[i] += factor · source[i] over runs of `count` numbers. */
-function addScaled(
-  target: Float64Array,
-  targetStart: number,
-  factor: number,
-  source: Float64Array,
-  sourceStart: number,
-  count: number,
-): void {
-  if (factor === 0) return;
-  for (let i = 0; i < count; i++) target[targetStart + i] += factor * source[sourceStart + i];
 }
 
 function transformTwoElectron(

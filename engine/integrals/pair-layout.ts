@@ -14,6 +14,8 @@ export interface PairLayout {
   readonly factorDegrees: readonly number[];
   readonly columnStart: readonly number[];
   readonly columnCount: number;
+  /** factor that each column belongs to */
+  readonly columnFactor: readonly number[];
   /** Hermite index (t, u, v) of each column */
   readonly columnPowers: readonly CartesianPowers[];
   readonly expansion: ProductExpansion;
@@ -60,17 +62,22 @@ function buildLayout(
     return factorDegrees.length - 1;
   });
   const columnStart: number[] = [];
+  const columnFactor: number[] = [];
   const columnPowers: CartesianPowers[] = [];
-  for (const degree of factorDegrees) {
+  factorDegrees.forEach((degree, factor) => {
     columnStart.push(columnPowers.length);
-    columnPowers.push(...cartesianComponents(degree));
-  }
+    for (const powers of cartesianComponents(degree)) {
+      columnFactor.push(factor);
+      columnPowers.push(powers);
+    }
+  });
   return {
     id,
     degree: firstL + secondL,
     factorDegrees,
     columnStart,
     columnCount: columnPowers.length,
+    columnFactor,
     columnPowers,
     expansion,
     targetFactor,

@@ -45,7 +45,7 @@ const cache = new Map<string, ProductExpansion>();
  * times (−b/p)^M (a/p)^N (1/2p)^k X^(M+N). Terms that share M, N and degree share their exponent dependence, so that
  * contraction over primitives can be done on Hermite integrals before any function product is formed.
  *
- * Source: recursion: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978), eq. (2.20); contraction before
+ * Source: recursion: L. E. McMurchie, E. R. Davidson, J. Comput. Phys. 26, 218 (1978); contraction before
  * transformation: P. M. W. Gill, J. A. Pople, Int. J. Quantum Chem. 40, 753 (1991).
  */
 export function productExpansion(firstL: number, secondL: number): ProductExpansion {

@@ -49,11 +49,10 @@ function buildLayout(bra: PairLayout, ket: PairLayout): QuartetLayout {
   );
 
   const gather = new Int32Array(bra.columnCount * ket.columnCount);
-  let at = 0;
-  forEachColumn(bra, (braFactor, [, v, w]) => {
-    forEachColumn(ket, (ketFactor, [, y, z]) => {
-      gather[at++] =
-        braRuns[ketFactor * bra.factorDegrees.length + braFactor].target + cartesianIndex(v + y, w + z);
+  bra.columnPowers.forEach(([, v, w], row) => {
+    ket.columnPowers.forEach(([, y, z], column) => {
+      const run = braRuns[ket.columnFactor[column] * bra.factorDegrees.length + bra.columnFactor[row]];
+      gather[row * ket.columnCount + column] = run.target + cartesianIndex(v + y, w + z);
     });
   });
   return {
@@ -65,15 +64,4 @@ function buildLayout(bra: PairLayout, ket: PairLayout): QuartetLayout {
     braSumCount,
     gather,
   };
-}
-
-function forEachColumn(
-  layout: PairLayout,
-  visit: (factor: number, powers: PairLayout['columnPowers'][number]) => void,
-): void {
-  layout.factorDegrees.forEach((degree, factor) => {
-    for (let i = 0; i < cartesianCount(degree); i++) {
-      visit(factor, layout.columnPowers[layout.columnStart[factor] + i]);
-    }
-  });
 }

@@ -10,7 +10,7 @@ import type { ExpansionFactor } from './product-expansion';
  * large side; against the largest partner that occurs (about 20 for an exponent of 1e5) an integral changes by less
  * than 1e-16.
  */
-export const NEGLIGIBLE_PRODUCT = 1e-18;
+const NEGLIGIBLE_PRODUCT = 1e-18;
 
 /** √2 π^(5/4): squared, the constant of the Coulomb integral of two s products, 2 π^(5/2) / (p q √(p + q)). */
 const COULOMB_PREFACTOR = Math.SQRT2 * Math.PI ** 1.25;
@@ -54,8 +54,19 @@ interface PrimitiveProduct {
   readonly bound: number;
 }
 
-/** Every pair of shells i ≥ j that has a product worth keeping. */
-export function buildShellPairs(basis: PlacedBasis): ShellPair[] {
+const pairsOfBasis = new WeakMap<PlacedBasis, readonly ShellPair[]>();
+
+/** Every pair of shells i ≥ j that has a product worth keeping; made once a basis and kept as long as it lives. */
+export function shellPairs(basis: PlacedBasis): readonly ShellPair[] {
+  let pairs = pairsOfBasis.get(basis);
+  if (!pairs) {
+    pairs = buildShellPairs(basis);
+    pairsOfBasis.set(basis, pairs);
+  }
+  return pairs;
+}
+
+function buildShellPairs(basis: PlacedBasis): ShellPair[] {
   const pairs: ShellPair[] = [];
   basis.shells.forEach((first, i) => {
     for (const second of basis.shells.slice(0, i + 1)) {
@@ -66,6 +77,7 @@ export function buildShellPairs(basis: PlacedBasis): ShellPair[] {
   return pairs;
 }
 
+/** Data of one pair; `primitiveCount` is 0 if no product of primitives is worth keeping. */
 export function buildShellPair(first: PlacedShell, second: PlacedShell, harmonics: Harmonics): ShellPair {
   const [x, y, z] = first.centre.map((value, axis) => value - second.centre[axis]);
   const isConcentric = x === 0 && y === 0 && z === 0;
@@ -135,7 +147,7 @@ function primitiveArrays(
   const signedFactors = new Float64Array(count * factorCount);
   products.forEach(({ firstExponent: a, secondExponent: b, prefactor, bound }, i) => {
     const p = a + b;
-    // P from the nearer centre keeps P − A exact for concentric pairs and far from the origin
+    // A + (b/p)(B − A) rather than (aA + bB)/p: exact where A = B
     const along = b / p;
     exponents[i] = p;
     centreX[i] = first.centre[0] + along * (second.centre[0] - first.centre[0]);
