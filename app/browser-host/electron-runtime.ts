@@ -116,7 +116,8 @@ function tail(stream: NodeJS.ReadableStream): () => string {
 /** The line that names the error, without its class or its place in Chromium's sources. */
 function reasonIn(output: string): string {
   const lines = output.split('\n').map((line) => line.trim());
-  const telling = lines.find((line) => /\w*Error: |FATAL|ERROR/.test(line)) ?? lines.find((line) => line !== '');
+  const telling =
+    lines.find((line) => /\w*Error: |FATAL|ERROR/.test(line)) ?? lines.find((line) => line !== '');
   return telling?.replace(/^(\w*Error: |\[[^\]]*\] ?)+/, '') ?? 'no reason was given';
 }
 

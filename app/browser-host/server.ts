@@ -4,6 +4,7 @@ import { createServer, type IncomingMessage, type ServerResponse } from 'node:ht
 import type { AddressInfo } from 'node:net';
 import type { Reply } from '../contract/requests';
 import { answer } from '../service/answer';
+import { WINDOW_OUT_OF_STEP } from '../service/refusal';
 import type { Post, Service } from '../service/service';
 import { contentTypeOf, pageHeaders, resolveWindowFile } from '../service/window-files';
 import { type Access, admit } from './access';
@@ -159,6 +160,6 @@ const UNREADABLE: Reply<never> = {
     code: 'request.malformed',
     place: '',
     message: 'The request is not readable as JSON.',
-    remedy: 'Close the window and start the program again, so that both are of the same version.',
+    remedy: WINDOW_OUT_OF_STEP,
   },
 };

@@ -1,7 +1,7 @@
 import { EngineError } from '#engine';
 import type { Handlers, Reply, SerializedError } from '../contract/requests';
 import { isRequestName, PAYLOADS } from './payloads';
-import { Refusal } from './refusal';
+import { Refusal, WINDOW_OUT_OF_STEP } from './refusal';
 
 /** Where an unforeseen error is written in full; the window only learns that there was one. */
 export type Log = (text: string) => void;
@@ -32,8 +32,8 @@ async function handle(handlers: Handlers, name: unknown, payload: unknown): Prom
     throw new Refusal({
       code: 'request.unknown',
       place: '',
-      message: `There is no request named “${String(name).slice(0, 80)}”.`,
-      remedy: 'Close the window and start the program again, so that both are of the same version.',
+      message: `There is no request named “${typeof name === 'string' ? name.slice(0, 80) : typeof name}”.`,
+      remedy: WINDOW_OUT_OF_STEP,
     });
   }
   const parsed = PAYLOADS[name].safeParse(payload);
@@ -43,7 +43,7 @@ async function handle(handlers: Handlers, name: unknown, payload: unknown): Prom
       code: 'request.malformed',
       place: issue?.path.join('.') ?? '',
       message: `The request “${name}” does not have the form it should have: ${issue?.message ?? 'unreadable'}.`,
-      remedy: 'Close the window and start the program again, so that both are of the same version.',
+      remedy: WINDOW_OUT_OF_STEP,
     });
   }
   // the table of payloads is checked against the contract, so the parsed value is what this handler takes

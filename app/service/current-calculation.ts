@@ -1,6 +1,6 @@
 import type { PreparedStudy } from '#engine';
 import { runStudy } from '../calculation/run-study';
-import { type Log, serializeError } from './answer';
+import { serializeError } from './answer';
 import type { Post } from './service';
 
 /** At most one calculation at a time: it has all cores, and the window shows one study. */
@@ -12,7 +12,7 @@ export interface CurrentCalculation {
   dispose(): void;
 }
 
-export function createCurrentCalculation(workers: number, post: Post, log?: Log): CurrentCalculation {
+export function createCurrentCalculation(workers: number, post: Post): CurrentCalculation {
   let lastId = 0;
   let running: { readonly id: number; readonly abort: AbortController } | undefined;
 
@@ -38,7 +38,7 @@ export function createCurrentCalculation(workers: number, post: Post, log?: Log)
           if (!signal.aborted) post('calculation:progress', { id, ...progress });
         },
       },
-    ).catch((error: unknown) => ({ kind: 'failed', error: serializeError(error, log) }) as const);
+    ).catch((error: unknown) => ({ kind: 'failed', error: serializeError(error) }) as const);
     if (signal.aborted) return;
     running = undefined;
     post('calculation:finished', { id, outcome });

@@ -15,7 +15,9 @@ export const PAYLOADS = {
   'study:check': studyText,
   'calculation:start': studyText,
   'calculation:cancel': calculation,
-} satisfies { readonly [C in RequestName]: z.ZodType<Parameters<Requests[C]>[0]> };
+} satisfies {
+  readonly [C in RequestName]: z.ZodType<Parameters<Requests[C]>[0]>;
+};
 
 export function isRequestName(name: unknown): name is RequestName {
   return typeof name === 'string' && Object.hasOwn(PAYLOADS, name);

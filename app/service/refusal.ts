@@ -14,3 +14,7 @@ export class Refusal extends Error {
     this.remedy = remedy;
   }
 }
+
+/** For a message that our own window could not have sent. */
+export const WINDOW_OUT_OF_STEP =
+  'Close the window and start the program again, so that both are of the same version.';

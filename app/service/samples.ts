@@ -14,7 +14,11 @@ export async function listSamples(folder: string): Promise<readonly SampleSummar
     ids.map(async (id) => {
       const parsed = parseStudy(await readSample(folder, id));
       if (!parsed.ok) throw new Error(`The sample ${id} is refused: ${parsed.issues[0]?.message}`);
-      return { id, title: parsed.study.title ?? id, sentence: studySentence(parsed.study) };
+      return {
+        id,
+        title: parsed.study.title ?? id,
+        sentence: studySentence(parsed.study),
+      };
     }),
   );
 }

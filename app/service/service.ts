@@ -38,7 +38,10 @@ export function createService({ host, workers, samplesFolder, post }: ServiceOpt
         const read = readStudy(text);
         // the window checks before it starts and shows every issue then; here the first one says enough
         if (!read.ok) throw new Refusal(read.issues[0] ?? UNREADABLE_STUDY);
-        return { id: calculation.start(read.prepared), points: read.prepared.coordinates.length };
+        return {
+          id: calculation.start(read.prepared),
+          points: read.prepared.coordinates.length,
+        };
       },
       'calculation:cancel': ({ id }) => ({ cancelled: calculation.cancel(id) }),
     },

@@ -2,6 +2,7 @@ import { explainStudy, type PreparedStudy, prepareStudy } from '#engine';
 import type { StudyCheck, StudyIssue } from '../contract/requests';
 import { parseStudy } from '../study/parse-study';
 import { studySentence } from '../study/sentence';
+import { serializeError } from './answer';
 
 /** A study read from its text and accepted by the engine, or everything that is wrong with it. */
 export type ReadStudy =
@@ -19,7 +20,7 @@ export function readStudy(text: string): ReadStudy {
   if (preparation.ok) return preparation;
   return {
     ok: false,
-    issues: preparation.errors.map(({ code, place, message, remedy }) => ({ code, place, message, remedy })),
+    issues: preparation.errors.map((error) => serializeError(error)),
   };
 }
 
@@ -27,7 +28,12 @@ export function checkStudy(text: string): StudyCheck {
   const read = readStudy(text);
   if (!read.ok) return read;
   const { study } = read.prepared;
-  return { ok: true, study, sentence: studySentence(study), explanation: explainStudy(read.prepared) };
+  return {
+    ok: true,
+    study,
+    sentence: studySentence(study),
+    explanation: explainStudy(read.prepared),
+  };
 }
 
 /** The window hands over the text of a study and not its place on the disk, so there is no place to look from. */

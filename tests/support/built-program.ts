@@ -3,7 +3,6 @@ import { once } from 'node:events';
 import { join } from 'node:path';
 
 const ROOT = join(import.meta.dirname, '..', '..');
-const FARWELL = join(ROOT, 'out', 'farwell.js');
 
 /** Brings `out/` up to date with the sources; costs nothing if it is. */
 export function buildProgram(): void {
@@ -26,9 +25,20 @@ export interface RunningProgram {
   saw(text: string): Promise<void>;
 }
 
-/** Starts the built `farwell` as a child process. */
-export function startFarwell(...argv: readonly string[]): RunningProgram {
-  const child = spawn(process.execPath, [FARWELL, ...argv], { stdio: ['ignore', 'pipe', 'pipe'] });
+/**
+ * Starts a program of `out/` as a child process.
+ *
+ * @param environment - instead of the tests' own
+ */
+export function startProgram(
+  name: string,
+  argv: readonly string[],
+  environment: NodeJS.ProcessEnv = process.env,
+): RunningProgram {
+  const child = spawn(process.execPath, [join(ROOT, 'out', name), ...argv], {
+    stdio: ['ignore', 'pipe', 'pipe'],
+    env: environment,
+  });
   let stdout = '';
   let stderr = '';
   child.stdout.setEncoding('utf8').on('data', (text: string) => {
@@ -49,6 +59,11 @@ export function startFarwell(...argv: readonly string[]): RunningProgram {
       while (!stderr.includes(text) && child.exitCode === null) await once(child.stderr, 'data');
     },
   };
+}
+
+/** Starts the built `farwell`. */
+export function startFarwell(...argv: readonly string[]): RunningProgram {
+  return startProgram('farwell.js', argv);
 }
 
 /** Runs the built `farwell` to its end. */

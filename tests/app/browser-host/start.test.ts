@@ -1,46 +1,43 @@
-import { type ChildProcess, execFileSync, spawn } from 'node:child_process';
-import { once } from 'node:events';
 import { afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { buildProgram, type RunningProgram, startProgram } from '../../support/built-program';
 
 /* `npm start` as it is started: the built file, as a process of its own. */
 
-beforeAll(() => {
-  execFileSync(process.execPath, ['app/build.mjs', '--if-changed']);
-});
+beforeAll(buildProgram);
 
-const children: ChildProcess[] = [];
+const started: RunningProgram[] = [];
 afterEach(() => {
-  for (const child of children.splice(0)) child.kill('SIGKILL');
+  for (const program of started.splice(0)) program.process.kill('SIGKILL');
 });
 
 /** Without a display, so that nothing opens on the screen of whoever runs the tests. */
-function start(...args: string[]) {
-  const { DISPLAY: _, WAYLAND_DISPLAY: __, ...env } = process.env;
-  const child = spawn(process.execPath, ['out/start.js', ...args], {
-    env,
-    stdio: ['ignore', 'pipe', 'pipe'],
+function start(...argv: string[]): RunningProgram {
+  const { DISPLAY: _, WAYLAND_DISPLAY: __, ...environment } = process.env;
+  const program = startProgram('start.js', argv, environment);
+  started.push(program);
+  return program;
+}
+
+/** Starts, and reads the address once it is served. */
+async function serve(...argv: string[]) {
+  const program = start(...argv);
+  let stdout = '';
+  program.process.stdout?.on('data', (text) => {
+    stdout += text;
   });
-  children.push(child);
-  const output = { out: '', err: '' };
-  child.stdout.on('data', (chunk) => {
-    output.out += chunk;
-  });
-  child.stderr.on('data', (chunk) => {
-    output.err += chunk;
-  });
-  const ended = once(child, 'close').then(([status, signal]) => ({ status, signal, ...output }));
-  const serving = async () => {
-    while (!output.err.includes('Ctrl+C')) await Promise.race([once(child.stderr, 'data'), ended]);
-    return output.out.trim();
-  };
-  return { child, output, ended, serving };
+  await program.saw('Ctrl+C');
+  return { ...program, stdout, address: stdout.trim() };
+}
+
+async function endOf({ process, ended }: RunningProgram) {
+  process.kill('SIGTERM');
+  return ended;
 }
 
 describe('npm start', () => {
   it('with --no-open prints nothing but an address on standard output, and serves the window there', async () => {
-    const { output, serving } = start('--no-open');
-    const address = await serving();
-    expect(output.out).toMatch(/^http:\/\/127\.0\.0\.1:\d+\/[\w-]{40,}\/\n$/);
+    const { stdout, address } = await serve('--no-open');
+    expect(stdout).toMatch(/^http:\/\/127\.0\.0\.1:\d+\/[\w-]{40,}\/\n$/);
     const page = await fetch(address);
     expect(page.status).toBe(200);
     expect(await page.text()).toMatch(/<!doctype html>/i);
@@ -50,43 +47,38 @@ describe('npm start', () => {
   it.each(['SIGINT', 'SIGTERM'] as const)(
     'ends at %s with status 0 and leaves nobody serving',
     async (signal) => {
-      const { child, ended, serving } = start('--no-open');
-      const address = await serving();
-      child.kill(signal);
-      expect(await ended).toMatchObject({ status: 0, signal: null });
+      const { process, ended, address } = await serve('--no-open');
+      process.kill(signal);
+      expect(await ended).toMatchObject({ status: 0 });
       await expect(fetch(address)).rejects.toThrow();
     },
   );
 
   it('refuses an option that it does not have, and shows those that it has', async () => {
-    const { ended } = start('--no-opne');
-    const { status, err, out } = await ended;
+    const { status, stdout, stderr } = await start('--no-opne').ended;
     expect(status).toBe(2);
-    expect(err).toContain('--no-opne');
-    expect(err).toContain('--no-open');
-    expect(err).not.toContain('    at ');
-    expect(out).toBe('');
+    expect(stderr).toContain('--no-opne');
+    expect(stderr).toContain('--no-open');
+    expect(stderr).not.toContain('    at ');
+    expect(stdout).toBe('');
   });
 
   it('shows its options when asked', async () => {
     expect(await start('--help').ended).toMatchObject({
       status: 0,
-      out: expect.stringContaining('--browser'),
+      stdout: expect.stringContaining('--browser'),
     });
   });
 });
 
 describe.runIf(process.platform === 'linux')('npm start without a display', () => {
   it('says in one line why there is no desktop window, and serves the same window for a browser', async () => {
-    const { output, serving } = start();
-    const address = await serving();
-    expect(output.err.split('\n')[0]).toMatch(/no display.*browser/);
-    expect((await fetch(address)).status).toBe(200);
+    const program = await serve();
+    expect((await fetch(program.address)).status).toBe(200);
+    expect((await endOf(program)).stderr.split('\n')[0]).toMatch(/no display.*browser/);
   });
 
   it('asks to open the address by hand where no browser can be started', async () => {
-    const { output, serving } = start('--browser');
-    await serving();
-    expect(output.err).toMatch(/open the address/);
+    expect((await endOf(await serve('--browser'))).stderr).toMatch(/open the address/);
   });
 });

@@ -9,14 +9,16 @@ const FORBIDDEN_LOG = (text: string) => {
 
 describe('answer', () => {
   it('gives the handler’s value, waited for', async () => {
-    const handlers = quietHandlers({ 'calculation:cancel': async ({ id }) => ({ cancelled: id === 4 }) });
+    const handlers = quietHandlers({
+      'calculation:cancel': async ({ id }) => ({ cancelled: id === 4 }),
+    });
     expect(await answer(handlers, 'calculation:cancel', { id: 4 }, FORBIDDEN_LOG)).toEqual({
       ok: true,
       value: { cancelled: true },
     });
   });
 
-  it.each(['files:read', '__proto__', 'constructor', '', 7, null, undefined, {}])(
+  it.each(['files:read', '__proto__', 'constructor', '', 7, null, undefined, {}, { toString: 1 }])(
     'refuses the name %j',
     async (name) => {
       expect(await answer(quietHandlers(), name, undefined, FORBIDDEN_LOG)).toMatchObject({

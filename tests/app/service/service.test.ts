@@ -1,12 +1,15 @@
 import { mkdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { afterEach, describe, expect, it, vi } from 'vitest';
+import { afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
 import type { Study } from '#engine';
 import type { EventName, Events } from '../../../app/contract/requests';
 import { createService, type Service } from '../../../app/service/service';
+import { buildProgram } from '../../support/built-program';
 import { temporaryFolder } from '../../support/temporary-folder';
 
-type Posted = { readonly [E in EventName]: { readonly name: E; readonly payload: Events[E] } }[EventName];
+type Posted = {
+  readonly [E in EventName]: { readonly name: E; readonly payload: Events[E] };
+}[EventName];
 
 const SAMPLES = join(temporaryFolder(), 'samples');
 mkdirSync(SAMPLES);
@@ -37,13 +40,21 @@ function studyText(changes: Partial<Study> = {}): string {
 const LONG = studyText({
   basis: {
     name: 'long',
-    evenTempered: { H: [{ angularMomentum: 0, smallest: 0.02, ratio: 1.9, count: 14 }] },
+    evenTempered: {
+      H: [{ angularMomentum: 0, smallest: 0.02, ratio: 1.9, count: 14 }],
+    },
   },
   scan: { coordinate: { bonds: [[0, 1]] }, from: 1, to: 3, count: 2000 },
 });
 
+// the service's workers are threads of the built program
+beforeAll(buildProgram);
+
 const services: Service[] = [];
-function openService(): { readonly service: Service; readonly posted: readonly Posted[] } {
+function openService(): {
+  readonly service: Service;
+  readonly posted: readonly Posted[];
+} {
   const posted: Posted[] = [];
   const service = createService({
     host: 'browser',
@@ -121,12 +132,20 @@ describe('study:check', () => {
     ['an unknown key', studyText({ scann: 1 } as never)],
     [
       'an element that does not exist',
-      studyText({ molecule: { unit: 'bohr', atoms: [{ element: 'Xx', at: [0, 0, 0] }] }, scan: undefined }),
+      studyText({
+        molecule: { unit: 'bohr', atoms: [{ element: 'Xx', at: [0, 0, 0] }] },
+        scan: undefined,
+      }),
     ],
     [
       'a multiplicity that the electrons do not allow',
       studyText({
-        molecule: { unit: 'bohr', atoms: [{ element: 'H', at: [0, 0, 0] }], charge: -1, multiplicity: 2 },
+        molecule: {
+          unit: 'bohr',
+          atoms: [{ element: 'H', at: [0, 0, 0] }],
+          charge: -1,
+          multiplicity: 2,
+        },
         scan: undefined,
       }),
     ],
@@ -145,7 +164,13 @@ describe('study:check', () => {
 
   it('says that a basis set in another file is out of the window’s reach', async () => {
     expect(await check(studyText({ basis: { file: 'mine.json' } }))).toMatchObject({
-      issues: [{ code: 'basis.file', place: 'basis.file', message: expect.stringContaining('mine.json') }],
+      issues: [
+        {
+          code: 'basis.file',
+          place: 'basis.file',
+          message: expect.stringContaining('mine.json'),
+        },
+      ],
     });
   });
 });
@@ -153,7 +178,9 @@ describe('study:check', () => {
 describe('a calculation', () => {
   it('posts every point once, progress, and the results at the end', async () => {
     const { service, posted } = openService();
-    const { id, points } = await service.handlers['calculation:start']({ text: studyText() });
+    const { id, points } = await service.handlers['calculation:start']({
+      text: studyText(),
+    });
     expect(points).toBe(5);
     await vi.waitFor(() => expect(finished(posted, id)).toHaveLength(1), 30_000);
     expect(posted.at(-1)?.name).toBe('calculation:finished');
@@ -182,7 +209,9 @@ describe('a calculation', () => {
       () => expect(posted.some(({ name }) => name === 'calculation:point')).toBe(true),
       30_000,
     );
-    expect(await service.handlers['calculation:cancel']({ id })).toEqual({ cancelled: true });
+    expect(await service.handlers['calculation:cancel']({ id })).toEqual({
+      cancelled: true,
+    });
     expect(posted.at(-1)).toEqual({
       name: 'calculation:finished',
       payload: { id, outcome: { kind: 'cancelled' } },
@@ -190,13 +219,17 @@ describe('a calculation', () => {
     const count = posted.length;
     await new Promise((resolve) => setTimeout(resolve, 300));
     expect(posted.length).toBe(count);
-    expect(await service.handlers['calculation:cancel']({ id })).toEqual({ cancelled: false });
+    expect(await service.handlers['calculation:cancel']({ id })).toEqual({
+      cancelled: false,
+    });
   });
 
   it('cancels the one before', async () => {
     const { service, posted } = openService();
     const first = await service.handlers['calculation:start']({ text: LONG });
-    const second = await service.handlers['calculation:start']({ text: studyText() });
+    const second = await service.handlers['calculation:start']({
+      text: studyText(),
+    });
     expect(second.id).not.toBe(first.id);
     expect(finished(posted, first.id)).toEqual([{ id: first.id, outcome: { kind: 'cancelled' } }]);
     await vi.waitFor(
@@ -209,7 +242,9 @@ describe('a calculation', () => {
     const { service } = openService();
     const { id } = await service.handlers['calculation:start']({ text: LONG });
     expect(await service.handlers['calculation:cancel']({ id: id + 1 })).toEqual({ cancelled: false });
-    expect(await service.handlers['calculation:cancel']({ id })).toEqual({ cancelled: true });
+    expect(await service.handlers['calculation:cancel']({ id })).toEqual({
+      cancelled: true,
+    });
   });
 
   it('ends with the service', async () => {
