@@ -56,7 +56,7 @@ export const INK = '#222222';
 export const FAINT_INK = '#555555';
 export const GRID = '#E4E4E4';
 /** The name of the bundled face comes first, then what common systems have. */
-export const FONT = "'Source Sans 3', 'Helvetica Neue', Arial, sans-serif";
+export const FONT = "'Source Sans 3', 'Helvetica Neue', Arial, 'Liberation Sans', 'Noto Sans', sans-serif";
 /** Type sizes in points. */
 export const LABEL_SIZE = 7;
 export const TITLE_SIZE = 8;

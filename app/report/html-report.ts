@@ -12,16 +12,17 @@ import { escapeMarkup, withMinus } from './text-escapes';
 /** For screen and paper; nothing is loaded from elsewhere. */
 const STYLE = `
 :root { color-scheme: light dark; --rule: #8886; --faint: #777; }
-body { font: 15px/1.5 'Source Sans 3', 'Helvetica Neue', Arial, sans-serif; max-width: 62rem; margin: 2rem auto; padding: 0 1rem; }
+body { font: 15px/1.5 'Source Sans 3', 'Helvetica Neue', Arial, 'Liberation Sans', 'Noto Sans', sans-serif; max-width: 62rem; margin: 2rem auto; padding: 0 1rem; }
 h1 { font-size: 1.35rem; font-weight: 600; line-height: 1.3; }
 h2 { font-size: 1.05rem; font-weight: 600; margin-top: 2rem; }
 figure { margin: 1.5rem 0; background: white; padding: 1rem; width: fit-content; }
 figure svg { max-width: 100%; height: auto; }
 .wide { overflow-x: auto; }
 table { border-collapse: collapse; font-variant-numeric: tabular-nums; border-block: 1.5px solid; }
-th { font-weight: 600; text-align: right; padding: .15rem .6rem; }
+th { font-weight: 600; text-align: right; vertical-align: bottom; padding: .15rem .6rem; }
+tbody th { font-weight: inherit; padding-block: .05rem; }
 thead tr:last-child th { border-bottom: 1px solid; }
-th[colspan] { text-align: center; border-bottom: 1px solid var(--rule); }
+th[colspan] { text-align: center; white-space: nowrap; border-bottom: 1px solid var(--rule); }
 td { text-align: right; padding: .05rem .6rem; white-space: nowrap; }
 .words td, .words th { text-align: left; white-space: normal; }
 .note, footer { color: var(--faint); font-size: .9rem; }
