@@ -37,7 +37,7 @@ function grown(array: Float64Array, length: number): Float64Array {
  *
  * For each primitive product of the bra, Hermite Coulomb integrals with all primitive products of the ket are
  * made and contracted factor by factor; then the bra is contracted the same way; only then, once a quartet, are
- * Hermite terms turned into function products (see {@link productExpansion}).
+ * Hermite terms turned into function products (see `productExpansion`).
  *
  * @param primitiveThreshold - pairs of primitive products whose estimated integral is below this are skipped
  *

@@ -27,7 +27,7 @@ const PRIMITIVE_TO_QUARTET_THRESHOLD = 1e-4;
  *
  * Source: kernel, see {@link coulombQuartet}; screening |(ab|cd)|² ≤ (ab|ab)(cd|cd): M. Häser, R. Ahlrichs,
  * J. Comput. Chem. 10, 104 (1989).
- * Accuracy: 1e-13 hartree absolute for normalised functions, checked in tests/engine/integrals/electron-repulsion.test.ts.
+ * Accuracy: 2e-13 hartree, or relative for integrals above 1 hartree, checked in tests/engine/integrals/electron-repulsion.test.ts.
  * Cost: O(n⁴/8) time and memory.
  */
 export function electronRepulsionTensor(

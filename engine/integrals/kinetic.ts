@@ -25,7 +25,7 @@ const KINETIC: SeparableOperator = {
  * @param basis - n functions; centres in bohr, exponents in bohr⁻²
  * @returns n×n symmetric, row-major Float64Array of length n², in hartree
  *
- * Source: see {@link LineIntegrals}.   Cost: O(n²); allocates n².
+ * Source: see `LineIntegrals`.   Cost: O(n²); allocates n².
  */
 export function kineticMatrix(basis: PlacedBasis): Float64Array {
   return separableMatrices(basis, KINETIC)[0];

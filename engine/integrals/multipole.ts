@@ -26,7 +26,7 @@ const SECOND: readonly Moments[] = [
  * @param origin - O, bohr
  * @returns x, y, z; each n×n symmetric, row-major, in bohr
  *
- * Source: see {@link LineIntegrals}.   Cost: O(n²); allocates 3n².
+ * Source: see `LineIntegrals`.   Cost: O(n²); allocates 3n².
  */
 export function dipoleMatrices(
   basis: PlacedBasis,
@@ -42,7 +42,7 @@ export function dipoleMatrices(
  * @param origin - O, bohr
  * @returns xx, xy, xz, yy, yz, zz; each n×n symmetric, row-major, in bohr²
  *
- * Source: see {@link LineIntegrals}.   Cost: O(n²); allocates 6n².
+ * Source: see `LineIntegrals`.   Cost: O(n²); allocates 6n².
  */
 export function secondMomentMatrices(
   basis: PlacedBasis,

@@ -17,7 +17,7 @@ const OVERLAP: SeparableOperator = {
  * @param basis - n functions; centres in bohr, exponents in bohr⁻²
  * @returns n×n symmetric, row-major Float64Array of length n²; diagonal 1 for normalised functions
  *
- * Source: see {@link LineIntegrals}.   Cost: O(n²); allocates n².
+ * Source: see `LineIntegrals`.   Cost: O(n²); allocates n².
  */
 export function overlapMatrix(basis: PlacedBasis): Float64Array {
   return separableMatrices(basis, OVERLAP)[0];
