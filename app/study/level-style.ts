@@ -1,29 +1,34 @@
 /*
  * How levels look in every figure, in the window and on paper. Colours are from P. Tol, Colour Schemes, SRON
  * technical note SRON/EPS/TN/09-002, issue 3.2 (2021), made to be told apart by colour-blind readers: the
- * "bright" scheme on white, the "light" scheme on dark grounds. Dashes and markers say the same once more for
+ * "muted" scheme on white, the "light" scheme on dark grounds. Dashes and markers say the same once more for
  * prints in grey.
  */
 
-/** "bright" */
-const BLUE = '#4477AA';
-const RED = '#EE6677';
-const GREEN = '#228833';
-const YELLOW = '#CCBB44';
-const CYAN = '#66CCEE';
-const PURPLE = '#AA3377';
+/** "muted" */
+const INDIGO = '#332288';
+const CYAN = '#88CCEE';
+const GREEN = '#117733';
+const OLIVE = '#999933';
+const SAND = '#DDCC77';
+const ROSE = '#CC6677';
+const WINE = '#882255';
+const PURPLE = '#AA4499';
 
 /** "light" */
 const LIGHT_BLUE = '#77AADD';
 const LIGHT_CYAN = '#99DDFF';
 const MINT = '#44BB99';
+const PEAR = '#BBCC33';
 const LIGHT_YELLOW = '#EEDD88';
 const ORANGE = '#EE8866';
 const PINK = '#FFAABB';
+const PALE_GREY = '#DDDDDD';
 
 export type MarkerShape = 'circle' | 'square' | 'triangle-up' | 'triangle-down' | 'diamond';
 
 export interface LevelStyle {
+  /** on white */
   readonly colour: string;
   readonly colourOnDark: string;
   /** lengths of strokes and gaps in points; empty: a solid line */
@@ -32,7 +37,7 @@ export interface LevelStyle {
 }
 
 const RESTRICTED: LevelStyle = {
-  colour: BLUE,
+  colour: INDIGO,
   colourOnDark: LIGHT_BLUE,
   dash: [6, 1.6, 1.2, 1.6],
   shape: 'triangle-up',
@@ -43,22 +48,21 @@ const LEVEL_STYLES: Readonly<Record<string, LevelStyle>> = {
   RHF: RESTRICTED,
   ROHF: RESTRICTED,
   UHF: { colour: CYAN, colourOnDark: LIGHT_CYAN, dash: [2.4, 1.6], shape: 'triangle-down' },
+  MP2: { colour: SAND, colourOnDark: LIGHT_YELLOW, dash: [1.2, 1.2], shape: 'diamond' },
   CIS: { colour: PURPLE, colourOnDark: PINK, dash: [1.2, 1.6], shape: 'diamond' },
-  MP2: { colour: YELLOW, colourOnDark: LIGHT_YELLOW, dash: [1.2, 1.2], shape: 'diamond' },
-  CISD: { colour: RED, colourOnDark: ORANGE, dash: [4, 2], shape: 'square' },
+  CISD: { colour: ROSE, colourOnDark: ORANGE, dash: [4, 2], shape: 'square' },
+  CISDT: { colour: OLIVE, colourOnDark: PEAR, dash: [2.4, 1.6], shape: 'triangle-down' },
+  CISDTQ: {
+    colour: WINE,
+    colourOnDark: PALE_GREY,
+    dash: [5, 1.6, 1.2, 1.6, 1.2, 1.6],
+    shape: 'diamond',
+  },
   FCI: { colour: GREEN, colourOnDark: MINT, dash: [], shape: 'circle' },
 };
 
-const OTHER_LEVELS: readonly LevelStyle[] = [
-  { colour: PURPLE, colourOnDark: PINK, dash: [1.6, 1.6], shape: 'diamond' },
-  { colour: YELLOW, colourOnDark: LIGHT_YELLOW, dash: [7, 2], shape: 'triangle-down' },
-  { colour: CYAN, colourOnDark: LIGHT_CYAN, dash: [5, 1.6, 1.2, 1.6, 1.2, 1.6], shape: 'square' },
-];
+/** For a level that this version does not know, from a file of a newer one. */
+const UNKNOWN: LevelStyle = { colour: '#666666', colourOnDark: PALE_GREY, dash: [1, 1], shape: 'circle' };
 
-/** A level looks the same in every figure; `levels` only orders those that have no look of their own. */
-export function styleOfLevel(level: string, levels: readonly string[]): LevelStyle {
-  const own = LEVEL_STYLES[level];
-  if (own) return own;
-  const place = levels.filter((other) => !(other in LEVEL_STYLES)).indexOf(level);
-  return OTHER_LEVELS[Math.max(0, place) % OTHER_LEVELS.length]!;
-}
+/** A level looks the same in every figure. */
+export const styleOfLevel = (level: string): LevelStyle => LEVEL_STYLES[level] ?? UNKNOWN;

@@ -208,7 +208,7 @@ function tracesOf(
   axis: 'y' | 'y2',
   request: FigureRequest,
 ): Data[] {
-  const look = curveLook(curve.level, request.study.levels, request.theme.ground);
+  const look = curveLook(curve.level, request.theme.ground);
   const shared = {
     type: 'scatter' as const,
     x: [...x],

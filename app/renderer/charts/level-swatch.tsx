@@ -3,14 +3,8 @@ import { curveLook } from './palette';
 import { useGround } from './use-ground';
 
 /** A level's line and marker, as in the charts. */
-export function LevelSwatch({
-  level,
-  levels,
-}: {
-  readonly level: string;
-  readonly levels: readonly string[];
-}) {
-  const { colour, width, dash, shape } = curveLook(level, levels, useGround());
+export function LevelSwatch({ level }: { readonly level: string }) {
+  const { colour, width, dash, shape } = curveLook(level, useGround());
   return (
     <svg className="swatch" viewBox="0 0 36 12" width="36" height="12" aria-hidden="true">
       <line

@@ -14,8 +14,8 @@ export interface CurveLook {
 /** The dashes are made for lines a point wide; the lines on screens are wider. */
 const PIXELS_PER_POINT = 1.7;
 
-export function curveLook(level: string, levels: readonly string[], ground: Ground): CurveLook {
-  const style: LevelStyle = styleOfLevel(level, levels);
+export function curveLook(level: string, ground: Ground): CurveLook {
+  const style: LevelStyle = styleOfLevel(level);
   return {
     colour: ground === 'dark' ? style.colourOnDark : style.colour,
     dash: style.dash.map((length) => Math.round(length * PIXELS_PER_POINT * 10) / 10),

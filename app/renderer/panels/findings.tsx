@@ -25,7 +25,7 @@ export function Findings() {
             return findings === undefined ? null : (
               <section key={level} className="finding">
                 <h3>
-                  <LevelSwatch level={level} levels={study.levels} /> {level}
+                  <LevelSwatch level={level} /> {level}
                 </h3>
                 <FindingFacts {...{ findings, study, lengthUnit, energyUnit: view.energyUnit }} />
               </section>

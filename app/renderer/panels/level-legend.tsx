@@ -23,7 +23,7 @@ export function LevelLegend({ run: { study, points } }: { readonly run: Run }) {
             })
           }
         >
-          <LevelSwatch level={level} levels={study.levels} /> {level}
+          <LevelSwatch level={level} /> {level}
         </ToggleButton>
       ))}
       {hasUnconverged && <span className="hint">× not converged, not joined to the curve</span>}

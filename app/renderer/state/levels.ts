@@ -3,6 +3,8 @@ export const LEVELS = [
   { name: 'RHF', description: 'restricted Hartree–Fock: one determinant, electrons in pairs' },
   { name: 'CIS', description: 'single excitations: excited states only' },
   { name: 'CISD', description: 'single and double excitations' },
+  { name: 'CISDT', description: 'up to triple excitations' },
+  { name: 'CISDTQ', description: 'up to quadruple excitations' },
   { name: 'FCI', description: 'all excitations: exact within the basis set' },
 ] as const;
 

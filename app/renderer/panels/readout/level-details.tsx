@@ -15,17 +15,16 @@ import { describeTermination } from './describe-termination';
 
 interface LevelDetailsProps {
   readonly level: string;
-  readonly levels: readonly string[];
   readonly result: LevelResult;
   readonly energyUnit: EnergyUnit;
 }
 
 /** Everything else that a level gives at the point. */
-export function LevelDetails({ level, levels, result, energyUnit }: LevelDetailsProps) {
+export function LevelDetails({ level, result, energyUnit }: LevelDetailsProps) {
   return (
     <details className="detailBlock" open>
       <summary>
-        <LevelSwatch level={level} levels={levels} /> <strong>{level}</strong>
+        <LevelSwatch level={level} /> <strong>{level}</strong>
         <span className={result.converged ? 'hint' : 'notConverged'}> {describeTermination(result)}</span>
       </summary>
       {result.kind === 'hartreeFock' && <HartreeFockFacts result={result} unit={energyUnit} />}

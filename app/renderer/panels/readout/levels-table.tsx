@@ -32,7 +32,7 @@ export function LevelsTable({ point, levels, energyUnit }: LevelsTableProps) {
           return (
             <tr key={level} data-unconverged={(result !== undefined && !result.converged) || undefined}>
               <th scope="row">
-                <LevelSwatch level={level} levels={levels} /> {level}
+                <LevelSwatch level={level} /> {level}
               </th>
               {cells(result, energyUnit, decimals)}
             </tr>

@@ -53,13 +53,7 @@ export function Readout() {
       {run.study.levels.map((level) => {
         const result = point.levels[level];
         return result === undefined ? null : (
-          <LevelDetails
-            key={level}
-            level={level}
-            result={result}
-            levels={run.study.levels}
-            energyUnit={view.energyUnit}
-          />
+          <LevelDetails key={level} level={level} result={result} energyUnit={view.energyUnit} />
         );
       })}
       <Geometry point={point} unit={run.study.molecule.unit} />
