@@ -18,7 +18,7 @@ describe('answer', () => {
     });
   });
 
-  it.each(['files:read', '__proto__', 'constructor', '', 7, null, undefined, {}, { toString: 1 }])(
+  it.each<unknown>(['files:read', '__proto__', 'constructor', '', 7, null, undefined, {}, { toString: 1 }])(
     'refuses the name %j',
     async (name) => {
       expect(await answer(quietHandlers(), name, undefined, FORBIDDEN_LOG)).toMatchObject({
