@@ -1,5 +1,6 @@
 import type { StudyResults } from '#engine';
 import { type CurvePoint, type CurveSeries, curveSeries } from './curve-series';
+import { coordinateRange, correlationRange, energyRange } from './figure-ranges';
 import {
   type CurveStyle,
   FAINT_INK,
@@ -8,7 +9,7 @@ import {
   styleOfLevel,
   TRIPLET_DASH,
 } from './figure-style';
-import { coordinateHeading, type ScannedCoordinate, sharedCoordinate } from './scanned-coordinate';
+import { coordinateHeading, sharedCoordinate } from './scanned-coordinate';
 
 export interface DrawnPoint {
   readonly x: number;
@@ -54,10 +55,6 @@ export interface FigurePlan {
 
 /** Curves with more points than this carry a marker on every second, third, … point. */
 const MARKERS_PER_CURVE = 11;
-/** Room around the curves, as a fraction of their range. */
-const MARGIN = 0.06;
-/** Room above the far end of the curves for the repulsive wall, as a fraction of the well's depth. */
-const WALL_SHARE = 0.3;
 
 /**
  * What the figure of some results shows: curves, ranges, legend.
@@ -88,22 +85,22 @@ export function planFigure(
     const style = { ...ofLevel, dash };
     return results.length === 1 ? style : { ...style, colour: FILE_COLOURS[file % FILE_COLOURS.length]! };
   };
-  const energies = series.map((one, index) => drawnCurve(one, index, styleOf(one), ({ energy }) => energy));
+  const energies = series.map((one, index) => ({
+    ...drawnCurve(one, index, styleOf(one), ({ energy }) => energy),
+    ...(one.minimum ? { minimum: { x: one.minimum.coordinate, y: one.minimum.energy } } : {}),
+  }));
   const correlation = series.flatMap((one, index) =>
     one.points.some((point) => point.correlation !== undefined)
-      ? [drawnCurve({ ...one, minimum: undefined }, index, styleOf(one), (point) => point.correlation)]
+      ? [drawnCurve(one, index, styleOf(one), (point) => point.correlation)]
       : [],
   );
   return {
     plan: {
       coordinateTitle: coordinateHeading(shared),
-      coordinateRange: padded(
-        rangeOf(energies.flatMap(({ points }) => points.map(({ x }) => x))),
-        MARGIN / 2,
-      ),
+      coordinateRange: coordinateRange(energies),
       energies: {
         title: [isAbsolute ? 'Energy (hartree)' : 'Energy above minimum (hartree)'],
-        range: energyRange(energies, shared),
+        range: energyRange(energies, shared.kind),
         curves: energies,
       },
       ...(correlation.length > 0
@@ -142,8 +139,7 @@ function aboveMinimum(one: CurveSeries, all: readonly CurveSeries[]): CurveSerie
     all.find(({ file, level, isExcited }) => file === one.file && level === home && !isExcited) ?? one;
   const converged = own.points.filter((point) => point.converged);
   const zero = Math.min(...(converged.length > 0 ? converged : own.points).map(({ energy }) => energy));
-  const lowered = own.minimum && Math.min(zero, own.minimum.energy);
-  const shift = lowered ?? zero;
+  const shift = own.minimum ? Math.min(zero, own.minimum.energy) : zero;
   return {
     ...one,
     points: one.points.map((point) => ({ ...point, energy: point.energy - shift })),
@@ -152,7 +148,7 @@ function aboveMinimum(one: CurveSeries, all: readonly CurveSeries[]): CurveSerie
 }
 
 function drawnCurve(
-  one: Omit<CurveSeries, 'minimum'> & { readonly minimum?: CurveSeries['minimum'] | undefined },
+  one: CurveSeries,
   index: number,
   style: CurveStyle,
   heightOf: (point: CurvePoint) => number | undefined,
@@ -172,40 +168,7 @@ function drawnCurve(
     marked: one.isExcited
       ? []
       : points.filter(({ converged }, place) => converged && (place + index) % every === 0),
-    ...(one.minimum ? { minimum: { x: one.minimum.coordinate, y: one.minimum.energy } } : {}),
   };
-}
-
-/** Converged points decide; unconverged ones only where there is nothing else. */
-function trusted(points: readonly DrawnPoint[]): readonly DrawnPoint[] {
-  const converged = points.filter((point) => point.converged);
-  return converged.length > 0 ? converged : points;
-}
-
-function energyRange(curves: readonly DrawnCurve[], shared: ScannedCoordinate): readonly [number, number] {
-  const shown = curves.flatMap((curve) => {
-    const points = trusted(curve.points);
-    if (shared.kind !== 'distance') return points.map(({ y }) => y);
-    const lowest = points.reduce((a, b) => (b.y < a.y ? b : a));
-    return points.filter(({ x }) => x >= lowest.x).map(({ y }) => y);
-  });
-  const everything = rangeOf(curves.flatMap((curve) => trusted(curve.points).map(({ y }) => y)));
-  const [low, high] = rangeOf(shown);
-  const top = Math.min(everything[1], high + WALL_SHARE * (high - low));
-  return padded([low, top > low ? top : everything[1]], MARGIN);
-}
-
-function correlationRange(curves: readonly DrawnCurve[]): readonly [number, number] {
-  const [low, high] = rangeOf([0, ...curves.flatMap((curve) => trusted(curve.points).map(({ y }) => y))]);
-  return [padded([low, high], MARGIN)[0], high > 0 ? padded([low, high], MARGIN)[1] : 0];
-}
-
-const rangeOf = (values: readonly number[]): [number, number] => [Math.min(...values), Math.max(...values)];
-
-/** A range of no width (one point, or a flat curve) is given some. */
-function padded([low, high]: readonly [number, number], share: number): [number, number] {
-  const room = share * (high - low || Math.abs(high) * 0.01 || 1);
-  return [low - room, high + room];
 }
 
 /** One entry a family of curves; of several files, whose colour is the file, the entries of families are grey. */
@@ -219,11 +182,12 @@ function legendOf(
     const colour = FILE_COLOURS[file % FILE_COLOURS.length]!;
     return { label, style: { colour, dash: [], shape: 'circle' }, kind: 'file' };
   });
-  const firstOfFamily = new Map(series.toReversed().map((one) => [one.family, one]));
-  const families = [...new Set(series.map(({ family }) => family))].map((family): LegendEntry => {
-    const one = firstOfFamily.get(family)!;
+  const firstOfFamily = series.filter(
+    ({ family }, index) => series.findIndex((other) => other.family === family) === index,
+  );
+  const families = firstOfFamily.map((one): LegendEntry => {
     const style = several ? { ...styleOf(one), colour: FAINT_INK } : styleOf(one);
-    return { label: family, style, kind: one.isExcited ? 'excited' : 'curve' };
+    return { label: one.family, style, kind: one.isExcited ? 'excited' : 'curve' };
   });
   const lowestFirst = families.toSorted(
     (a, b) => Number(a.kind === 'excited') - Number(b.kind === 'excited'),

@@ -43,7 +43,7 @@ const MOST_COORDINATE_DECIMALS = 6;
 export function resultTable(results: readonly StudyResults[], names: readonly string[]): ResultTable {
   const shared = sharedCoordinate(results, names);
   const decimals = Math.min(...results.map(energyDecimals));
-  const columns = results.flatMap((file, index) =>
+  const columnsByFile = results.map((file, index) =>
     fileColumns(file, results.length > 1 ? (names[index] ?? '') : ''),
   );
   const pointsByCoordinate = results.map((file) => {
@@ -55,17 +55,15 @@ export function resultTable(results: readonly StudyResults[], names: readonly st
   const rows = keys.map(
     (key): TableRow => ({
       coordinate: shared.kind === 'none' ? 'as given' : key.toFixed(coordinateDecimals),
-      cells: results.flatMap((file, index) => {
+      cells: columnsByFile.flatMap((columns, index) => {
         const point = pointsByCoordinate[index]?.get(key);
-        return columns
-          .filter((column) => column.results === file)
-          .map(({ valueAt }) => cellText(point && valueAt(point), decimals));
+        return columns.map(({ valueAt }) => cellText(point && valueAt(point), decimals));
       }),
     }),
   );
   return {
     coordinateHeading: coordinateHeading(shared),
-    blocks: blocksOf(columns),
+    blocks: blocksOf(columnsByFile.flat()),
     rows,
     notes: notesOf(results, rows),
   };
@@ -78,7 +76,6 @@ function energyDecimals({ study }: StudyResults): number {
 }
 
 interface TableColumn {
-  readonly results: StudyResults;
   readonly file: string;
   readonly quantity: string;
   readonly label: string;
@@ -94,7 +91,6 @@ function fileColumns(results: StudyResults, file: string): readonly TableColumn[
     quantity: string,
     pick: (entry: EnergyEntry) => number | undefined,
   ): TableColumn => ({
-    results,
     file,
     quantity,
     label,

@@ -2,10 +2,7 @@
  * Advances of characters in units of the type size, about those of the widest of the usual sans-serif faces: a
  * figure opened on a machine without the bundled one must not run out of its page.
  */
-const ADVANCES: readonly {
-  readonly characters: RegExp;
-  readonly advance: number;
-}[] = [
+const ADVANCES: readonly { readonly characters: RegExp; readonly advance: number }[] = [
   { characters: /[fijlt.,:;'()\s]/, advance: 0.33 },
   { characters: /[r-]/, advance: 0.41 },
   { characters: /[mwMW]/, advance: 0.92 },
@@ -37,10 +34,7 @@ export function flowRows(
   widths: readonly number[],
   rowWidth: number,
   gap: number,
-): {
-  readonly places: readonly { readonly x: number; readonly row: number }[];
-  readonly rows: number;
-} {
+): { readonly places: readonly { readonly x: number; readonly row: number }[]; readonly rows: number } {
   let x = 0;
   let row = 0;
   const places = widths.map((width) => {

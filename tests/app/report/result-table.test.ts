@@ -65,6 +65,11 @@ describe('resultTable', () => {
     expect(table.rows.at(-1)!.cells[0]).toBe(NOT_COMPUTED);
   });
 
+  it('keeps to one set of columns a file when one file is named twice', () => {
+    const results = sampleResults(['RHF']);
+    expect(resultTable([results, results], ['a', 'b']).rows[0]!.cells).toHaveLength(2);
+  });
+
   it('prints evenly spaced distances without the noise of their last bits', () => {
     const rows = resultTable([sampleResults(['RHF'])], ['h2']).rows;
     expect(rows.map(({ coordinate }) => coordinate).slice(0, 4)).toEqual(['0.4', '0.5', '0.6', '0.7']);
