@@ -120,13 +120,15 @@ interface Bands {
 /** The vertical shares of the charts and of the strip, from the bottom. */
 function bandsOf(height: number, hasCautions: boolean): Bands {
   const inner = Math.max(1, height - MARGIN.t - MARGIN.b);
-  const strip = hasCautions ? (CAUTION_STRIP + GAP / 2) / inner : 0;
-  const gap = GAP / inner;
-  const middle = strip + CORRELATION_SHARE * Math.max(0, 1 - strip - gap);
+  const wanted = GAP + (hasCautions ? CAUTION_STRIP + GAP / 2 : 0);
+  // in a drawing too small for charts, what stands between them shrinks first
+  const perPixel = Math.min(1 / inner, 0.5 / wanted);
+  const strip = hasCautions ? (CAUTION_STRIP + GAP / 2) * perPixel : 0;
+  const middle = strip + CORRELATION_SHARE * (1 - wanted * perPixel);
   return {
-    cautions: [0, Math.min(1, CAUTION_STRIP / inner)],
+    cautions: [0, CAUTION_STRIP * perPixel],
     correlation: [strip, middle],
-    energy: [Math.min(1, middle + gap), 1],
+    energy: [middle + GAP * perPixel, 1],
   };
 }
 

@@ -39,7 +39,5 @@ const ATOM_FIELDS: Readonly<Record<string, string>> = {
   '.element': 'The element',
   '.isotope': 'The isotope',
   '.ghost': 'The ghost mark',
-  '.at[0]': 'x',
-  '.at[1]': 'y',
-  '.at[2]': 'z',
+  '.at': 'The position',
 };

@@ -7,6 +7,7 @@ import { Segmented } from '../controls/segmented';
 import { numbered } from '../numbered';
 import { type AtomDraft, EMPTY_ATOM, type StudyDraft } from '../state/draft';
 import { type PastedAtoms, readPastedAtoms } from '../state/pasted-atoms';
+import { numberOrText } from '../state/study-text';
 import { withoutAtom } from '../state/without-atom';
 
 interface MoleculeEditorProps {
@@ -127,7 +128,9 @@ function AtomRow({ index, atom, issues, onEdit, onRemove }: AtomRowProps) {
             isLabelHidden
             className="coordinate"
             value={atom.at[component] ?? ''}
-            isWrong={isAt(issues, `${place}.at[${component}]`)}
+            isWrong={
+              isAt(issues, `${place}.at`) && typeof numberOrText(atom.at[component] ?? '') !== 'number'
+            }
             onChange={(value) => {
               const [x, y, z] = atom.at.map((old, other) => (other === component ? value : old));
               onEdit(index, { at: [x ?? '', y ?? '', z ?? ''] });

@@ -37,7 +37,18 @@ describe('numbers as the window writes them', () => {
   });
 
   it('says durations and sizes in round words', () => {
-    expect([0.2, 8.4, 180, 7800].map(formatDuration)).toEqual(['under a second', '8 s', '3 min', '2 h 10 min']);
-    expect([0, 640, 1800, 486_123, 1.24e9].map(formatBytes)).toEqual(['0 B', '640 B', '1.8 kB', '486 kB', '1.2 GB']);
+    expect([0.2, 8.4, 180, 7800].map(formatDuration)).toEqual([
+      'under a second',
+      '8 s',
+      '3 min',
+      '2 h 10 min',
+    ]);
+    expect([0, 640, 1800, 486_123, 1.24e9].map(formatBytes)).toEqual([
+      '0 B',
+      '640 B',
+      '1.8 kB',
+      '486 kB',
+      '1.2 GB',
+    ]);
   });
 });

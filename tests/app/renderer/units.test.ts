@@ -12,7 +12,10 @@ describe('units shown in the window', () => {
 
   it('converts lengths there and back, and leaves equal units bit by bit', () => {
     expect(convertLength(1, 'bohr', 'angstrom')).toBeCloseTo(0.529177210544, 12);
-    expect(convertLength(convertLength(0.7743, 'angstrom', 'bohr'), 'bohr', 'angstrom')).toBeCloseTo(0.7743, 14);
+    expect(convertLength(convertLength(0.7743, 'angstrom', 'bohr'), 'bohr', 'angstrom')).toBeCloseTo(
+      0.7743,
+      14,
+    );
     expect(convertLength(0.1 + 0.2, 'angstrom', 'angstrom')).toBe(0.1 + 0.2);
   });
 

@@ -34,7 +34,10 @@ function openWindow(options: { secondsPerPoint?: number; remembered?: Remembered
   return { host, store, controller, settle, named, memory: () => remembered };
 }
 
-const setTo = (to: string) => (draft: (typeof INITIAL_STATE)['draft']) => ({ ...draft, scan: { ...draft.scan, to } });
+const setTo = (to: string) => (draft: (typeof INITIAL_STATE)['draft']) => ({
+  ...draft,
+  scan: { ...draft.scan, to },
+});
 
 describe('the window', () => {
   it('begins with the first sample, computed at once because it is quick', async () => {
@@ -61,7 +64,10 @@ describe('the window', () => {
     controller.edit(setTo('six'));
     await settle();
     expect(store.get().draft.scan.to).toBe('six');
-    expect(store.get().check).toMatchObject({ kind: 'judged', result: { ok: false, issues: [{ place: 'scan.to' }] } });
+    expect(store.get().check).toMatchObject({
+      kind: 'judged',
+      result: { ok: false, issues: [{ place: 'scan.to' }] },
+    });
     const reopened = openWindow({ remembered: memory() });
     await reopened.controller.begin();
     expect(reopened.store.get().draft.scan.to).toBe('six');

@@ -26,7 +26,9 @@ describe('the cursor', () => {
 
   it('ignores points that have not converged when it looks for the lowest', () => {
     const unconverged = points.map((point, index) =>
-      index === 3 ? { ...point, levels: { FCI: { ...point.levels.FCI!, converged: false } as never } } : point,
+      index === 3
+        ? { ...point, levels: { FCI: { ...point.levels.FCI!, converged: false } as never } }
+        : point,
     );
     expect(cursorIndex(run({ points: unconverged }), undefined)).toBe(4);
   });

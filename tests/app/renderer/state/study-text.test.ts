@@ -18,7 +18,10 @@ describe('a study in the window', () => {
     ['an angle', { scan: { coordinate: { angle: [1, 0, 2] }, from: 60, to: 180, count: 7 } }],
     ['a dihedral', { scan: { coordinate: { dihedral: [2, 0, 1, 3] }, from: 0, to: 180, count: 7 } }],
     ['no scan', { scan: undefined }],
-    ['own shells', { basis: { name: 'mine', shells: { H: [{ angularMomentum: 0, exponents: [1], coefficients: [1] }] } } }],
+    [
+      'own shells',
+      { basis: { name: 'mine', shells: { H: [{ angularMomentum: 0, exponents: [1], coefficients: [1] }] } } },
+    ],
     ['notes and a frozen core', { notes: 'two\nlines', frozenCore: true, states: 3 }],
     [
       'an isotope and a ghost',
