@@ -63,8 +63,9 @@ export function estimateTimeLeft(workers: number, now: () => number = () => perf
       lastFinished = now();
     },
     secondsLeft(remaining) {
+      if (remaining === 0) return 0;
       if (pieces === 0) return undefined;
-      const atLastFinished = ((total / pieces) * remaining) / Math.max(1, Math.min(workers, remaining));
+      const atLastFinished = ((total / pieces) * remaining) / Math.min(workers, remaining);
       const seconds = atLastFinished - (now() - lastFinished) / 1000;
       return seconds >= 0 ? seconds : undefined;
     },

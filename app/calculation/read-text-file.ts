@@ -1,3 +1,4 @@
+import { isUtf8 } from 'node:buffer';
 import { readFile, stat } from 'node:fs/promises';
 import type { StudyIssue } from '../contract/requests';
 
@@ -34,20 +35,20 @@ export async function readTextFile(path: string, kind: FileKind, place = ''): Pr
         'Check that this is the right file.',
       );
     }
-    return { ok: true, text: new TextDecoder('utf-8', { fatal: true }).decode(await readFile(path)) };
+    const bytes = await readFile(path);
+    if (!isUtf8(bytes))
+      return refuse('notText', `${kind.name} “${path}” is not UTF-8 text.`, 'Save it as UTF-8.');
+    return { ok: true, text: bytes.toString('utf8').replace(/^\ufeff/, '') };
   } catch (error) {
     const { code, message } = error as NodeJS.ErrnoException;
     if (code === 'ENOENT')
       return refuse('missing', `There is no file “${path}”.`, 'Check the name and the folder.');
     if (code === 'EACCES')
       return refuse('forbidden', `“${path}” may not be read.`, 'Ask for the right to read it.');
-    if (code === 'ERR_ENCODING_INVALID_ENCODED_DATA') {
-      return refuse('notText', `${kind.name} “${path}” is not UTF-8 text.`, 'Save it as UTF-8.');
-    }
     return refuse('unreadable', `“${path}” cannot be read: ${message}.`, 'Check the path.');
   }
 }
 
 function megabytes(bytes: number): string {
-  return `${(bytes / 1e6).toLocaleString('en-GB', { maximumSignificantDigits: 3 })} MB`;
+  return `${Number((bytes / 1e6).toPrecision(3))} MB`;
 }

@@ -5,7 +5,7 @@ import { studySentence } from '../study/sentence';
 import type { Invocation } from './arguments';
 import { EXIT, type ExitCode } from './exit-codes';
 import type { Terminal } from './terminal';
-import { alignedTable, bytesText, counted, durationText, refusalText } from './wording';
+import { alignedTable, bytesText, counted, durationText, grouped, refusalText } from './wording';
 
 /** `farwell check`: says what a study is and costs, without computing it. */
 export async function checkCommand(
@@ -27,16 +27,16 @@ export function explanationText(explanation: StudyExplanation, cores: number): s
   const { electrons, functions, frozenOrbitals, repulsionIntegrals, points, levels } = explanation;
   const facts = [
     ['electrons', String(electrons)],
-    ['basis functions', whole(functions)],
+    ['basis functions', grouped(functions)],
     ...(frozenOrbitals > 0 ? [['frozen core orbitals', String(frozenOrbitals)]] : []),
-    ['repulsion integrals', whole(repulsionIntegrals)],
-    ['points', whole(points)],
+    ['repulsion integrals', grouped(repulsionIntegrals)],
+    ['points', grouped(points)],
   ];
   const table = [
     ['level', 'determinants', 'memory', 'time a point'],
     ...levels.map(({ level, determinants, bytes, seconds }) => [
       level,
-      determinants === undefined ? '–' : whole(determinants),
+      determinants === undefined ? '–' : grouped(determinants),
       bytesText(bytes),
       durationText(seconds),
     ]),
@@ -50,8 +50,4 @@ export function explanationText(explanation: StudyExplanation, cores: number): s
     '',
     `All points: roughly ${durationText(total)} on ${counted(lanes, 'core')}. Memory is for one point; each core has its own.`,
   ].join('\n');
-}
-
-function whole(count: number): string {
-  return count.toLocaleString('en-GB');
 }

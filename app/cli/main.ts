@@ -19,11 +19,15 @@ export async function runCommandLine(argv: readonly string[]): Promise<ExitCode>
     interruption.abort();
   };
   for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) process.on(signal, interrupt);
+  const fail = (error: unknown): ExitCode => {
+    terminal.say(`farwell: ${unforeseenText(error)}`);
+    return EXIT.failed;
+  };
+  process.on('uncaughtException', (error) => process.exit(fail(error)));
   try {
     return await perform(invocation, terminal, interruption.signal);
   } catch (error) {
-    terminal.say(`farwell: ${unforeseenText(error)}`);
-    return EXIT.failed;
+    return fail(error);
   }
 }
 

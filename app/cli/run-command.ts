@@ -12,7 +12,7 @@ import { studySentence } from '../study/sentence';
 import type { Invocation } from './arguments';
 import { EXIT, type ExitCode } from './exit-codes';
 import { progressDisplay } from './progress-display';
-import { cautionLines, findingsLines, unconvergedLines } from './run-summary';
+import { summarise } from './run-summary';
 import type { Terminal } from './terminal';
 import { counted, refusalText } from './wording';
 
@@ -176,8 +176,7 @@ function sayFailure(error: SerializedError, study: string, terminal: Terminal): 
 }
 
 function saySummary(results: StudyResults, terminal: Terminal): ExitCode {
-  const unconverged = unconvergedLines(results);
-  for (const line of [...findingsLines(results), ...cautionLines(results), ...unconverged])
-    terminal.say(line);
-  return unconverged.length === 0 ? EXIT.done : EXIT.unconverged;
+  const { lines, exit } = summarise(results);
+  for (const line of lines) terminal.say(line);
+  return exit;
 }

@@ -1,12 +1,25 @@
 import type { LevelFindings, LevelResult, StudyResults } from '#engine';
 import { coordinateText } from '../calculation/coordinate-text';
+import { EXIT, type ExitCode } from './exit-codes';
 import { counted } from './wording';
 
 /** More lines of a kind than this would hide everything else; the results file has them all. */
 const MOST_LINES = 12;
 
+/** What is said about a finished study, and with which status it ends. */
+export function summarise(results: StudyResults): {
+  readonly lines: readonly string[];
+  readonly exit: ExitCode;
+} {
+  const unconverged = unconvergedLines(results);
+  return {
+    lines: [...findingsLines(results), ...cautionLines(results), ...unconverged],
+    exit: unconverged.length === 0 ? EXIT.done : EXIT.unconverged,
+  };
+}
+
 /** One line for every point and level that did not converge: where, and why. */
-export function unconvergedLines({ study, points }: StudyResults): readonly string[] {
+function unconvergedLines({ study, points }: StudyResults): readonly string[] {
   const lines = points.flatMap((point) =>
     Object.entries(point.levels)
       .filter(([, result]) => !result.converged)
@@ -41,7 +54,7 @@ function reasonText(termination: LevelResult['termination']): string {
 }
 
 /** What can be read off each level's curve. */
-export function findingsLines({ study, findings }: StudyResults): readonly string[] {
+function findingsLines({ study, findings }: StudyResults): readonly string[] {
   if (!study.scan) return [];
   return study.levels.flatMap((level) => {
     const text = findings[level] && minimumText(findings[level], study);
@@ -71,7 +84,7 @@ function minimumText(
 }
 
 /** What to mistrust about the curve, and whether there is more to read about single points. */
-export function cautionLines({ cautions, points }: StudyResults): readonly string[] {
+function cautionLines({ cautions, points }: StudyResults): readonly string[] {
   const withCautions = points.filter((point) => point.cautions.length > 0).length;
   return [
     ...cautions.map(({ message }) => `Caution: ${message}`),

@@ -15,6 +15,13 @@ export function counted(count: number, thing: string): string {
   return `${count} ${thing}${count === 1 ? '' : 's'}`;
 }
 
+/** A number with its thousands set apart: `3,136`. Node's own way takes 30 ms to get ready. */
+export function grouped(value: number): string {
+  const [whole = '', fraction] = String(value).split('.');
+  const groups = whole.replace(/\B(?=(\d{3})+$)/g, ',');
+  return fraction === undefined ? groups : `${groups}.${fraction}`;
+}
+
 /** A duration in words, to the precision that an estimate has: `under 1 s`, `25 s`, `3 min`, `2 h 10 min`. */
 export function durationText(seconds: number): string {
   if (seconds < 1) return 'under 1 s';
@@ -23,7 +30,7 @@ export function durationText(seconds: number): string {
   if (minutes < 90) return `${minutes} min`;
   const tenMinutes = Math.round(minutes / 10);
   const hours = Math.floor(tenMinutes / 6);
-  if (hours >= 48) return `${Math.round(hours / 24).toLocaleString('en-GB')} days`;
+  if (hours >= 48) return `${grouped(Math.round(hours / 24))} days`;
   return tenMinutes % 6 === 0 ? `${hours} h` : `${hours} h ${(tenMinutes % 6) * 10} min`;
 }
 
@@ -32,7 +39,7 @@ export function bytesText(bytes: number): string {
   const units = ['kB', 'MB', 'GB', 'TB', 'PB'];
   const power = Math.max(0, Math.min(units.length - 1, Math.floor(Math.log10(bytes) / 3) - 1));
   const value = bytes / 1000 ** (power + 1);
-  return `${value < 0.1 ? 'under 0.1' : value.toLocaleString('en-GB', { maximumSignificantDigits: 2 })} ${units[power]}`;
+  return `${value < 0.1 ? 'under 0.1' : grouped(Number(value.toPrecision(2)))} ${units[power]}`;
 }
 
 /** Lines with columns of equal width: the first to the left, the others to the right. */

@@ -129,8 +129,7 @@ describe('farwell check and run refuse', () => {
         }),
       ),
     );
-    for (const place of ['states', 'molecule.multiplicity'])
-      expect(text).toContain(`  ${place}`);
+    for (const place of ['states', 'molecule.multiplicity']) expect(text).toContain(`  ${place}`);
   });
 });
 

@@ -31,9 +31,9 @@ async function midway(out: string, running: RunningProgram): Promise<void> {
 
 async function expectToGoOn(out: string): Promise<void> {
   const kept = journalLines(out).length;
-  expect(kept).toBeLessThan(14);
+  expect(kept).toBeLessThan(9);
   const { status, stderr } = await farwell('run', study, '--out', out);
-  expect(stderr).toContain(`Going on from ${kept} of 14 points`);
+  expect(stderr).toContain(`Going on from ${kept} of 9 points`);
   expect(status).toBe(0);
   expect(filesIn(out)).toEqual(expected);
   expect(readdirSync(out).sort()).toEqual(['nitrogen.csv', 'nitrogen.results.json']);
@@ -82,7 +82,7 @@ describe('farwell run, interrupted', () => {
       expect(status).toBe(3);
       expect(stdout).toBe('');
       expect(stderr.trimEnd().split('\n').at(-1)).toBe(
-        `Interrupted. Finished and kept: ${journalLines(out).length} of 14 points; the same command goes on from there.`,
+        `Interrupted. Finished and kept: ${journalLines(out).length} of 9 points; the same command goes on from there.`,
       );
       await expectToGoOn(out);
     },

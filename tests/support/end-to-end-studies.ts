@@ -29,7 +29,7 @@ export const nitrogen: Study = {
       { element: 'N', at: [0, 0, 1.1] },
     ],
   },
-  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.9, to: 2, count: 14 },
+  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.9, to: 2, count: 9 },
   basis: 'STO-3G',
   levels: ['RHF', 'FCI'],
   frozenCore: true,

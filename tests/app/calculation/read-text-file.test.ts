@@ -30,11 +30,11 @@ describe('readTextFile', () => {
   it('refuses a file above the limit by its size, without reading it', async () => {
     const path = join(folder, 'sparse');
     const file = openSync(path, 'w');
-    ftruncateSync(file, 2 ** 40);
+    ftruncateSync(file, 5e9);
     closeSync(file);
     const { code, message } = await refusal(path);
     expect(code).toBe('file.tooLarge');
-    expect(message).toContain('1,100,000 MB');
+    expect(message).toContain('5000 MB');
   });
 
   it('accepts a file of exactly the limit', async () => {

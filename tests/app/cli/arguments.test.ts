@@ -1,6 +1,8 @@
+import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { HELP, type Invocation, parseArguments } from '../../../app/cli/arguments';
-import manifest from '../../../package.json';
+
+const { version } = JSON.parse(readFileSync('package.json', 'utf8')) as { version: string };
 
 function misuse(...argv: string[]): Extract<Invocation, { kind: 'misuse' }> {
   const invocation = parseArguments(argv);
@@ -40,7 +42,7 @@ describe('parseArguments', () => {
     for (const argv of [['--help'], ['-h'], ['help'], ['help', 'run'], ['run', '--help']]) {
       expect(parseArguments(argv)).toEqual({ kind: 'show', text: HELP });
     }
-    expect(parseArguments(['--version'])).toEqual({ kind: 'show', text: `${manifest.version}\n` });
+    expect(parseArguments(['--version'])).toEqual({ kind: 'show', text: `${version}\n` });
   });
 
   it('refuses a missing or unknown command, and names the one that may be meant', () => {

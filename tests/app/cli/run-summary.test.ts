@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { StudyResults } from '#engine';
-import { cautionLines, findingsLines, unconvergedLines } from '../../../app/cli/run-summary';
+import { summarise } from '../../../app/cli/run-summary';
 import { hartreeFock, sampleResults } from '../../support/sample-results';
 
 const results = sampleResults();
@@ -16,13 +16,18 @@ function withUnconverged(count: number): StudyResults {
   };
 }
 
-describe('unconvergedLines', () => {
-  it('is empty when everything converged', () => {
-    expect(unconvergedLines(results)).toEqual([]);
+const linesAbout = (about: RegExp, of: StudyResults) =>
+  summarise(of).lines.filter((line) => about.test(line));
+
+describe('summarise', () => {
+  it('ends with status 0 when everything converged, and with 1 otherwise', () => {
+    expect(summarise(results).exit).toBe(0);
+    expect(summarise(withUnconverged(1)).exit).toBe(1);
   });
 
-  it('says which level, where and why', () => {
-    expect(unconvergedLines(withUnconverged(1))).toEqual([
+  it('says which level did not converge, where and why', () => {
+    expect(linesAbout(/not converge/, results)).toEqual([]);
+    expect(linesAbout(/not converge/, withUnconverged(1))).toEqual([
       'RHF did not converge at 0.4 Å: not done after 200 iterations.',
     ]);
   });
@@ -34,7 +39,7 @@ describe('unconvergedLines', () => {
       converged: false,
       termination: { kind: 'orbitalsNotConverged' },
     } as const;
-    const lines = unconvergedLines({
+    const lines = linesAbout(/not converge/, {
       ...results,
       points: [{ ...point!, coordinate: null, levels: { FCI: failed } }],
     });
@@ -42,16 +47,12 @@ describe('unconvergedLines', () => {
   });
 
   it('counts the rest of many', () => {
-    const lines = unconvergedLines(withUnconverged(37));
-    expect(lines).toHaveLength(13);
-    expect(lines.at(-1)).toContain('25 more');
+    expect(linesAbout(/not converge/, withUnconverged(37))).toHaveLength(12);
+    expect(summarise(withUnconverged(37)).lines.at(-1)).toBe('… and 25 more, marked in the results file.');
   });
-});
 
-describe('findingsLines', () => {
   it('gives the minimum of a level with its depth, or says that the lowest point is at the end', () => {
-    const lines = findingsLines(results);
-    expect(lines).toEqual([
+    expect(linesAbout(/^(RHF|CISD|FCI):/, results)).toEqual([
       'RHF: lowest at the end of the range, 0.4 Å: no minimum inside',
       expect.stringMatching(
         /^FCI: minimum of -1\.170000 hartree at 0\.74 Å, 0\.16\d{4} hartree below the curve at 4 Å$/,
@@ -59,16 +60,14 @@ describe('findingsLines', () => {
     ]);
   });
 
-  it('has nothing to say about a single point', () => {
+  it('has nothing to say about a single point that converged', () => {
     const { scan: _, ...study } = results.study;
-    expect(findingsLines({ ...results, study })).toEqual([]);
+    expect(summarise({ ...results, study, points: results.points.slice(0, 1) }).lines).toEqual([]);
   });
-});
 
-describe('cautionLines', () => {
-  it('writes out what concerns the whole curve and counts the points with cautions', () => {
-    const lines = cautionLines({ ...results, cautions: [{ code: 'a', message: 'Too coarse.' }] });
-    expect(lines).toEqual(['Caution: Too coarse.', 'Cautions at 20 of 37 points: see the results file.']);
-    expect(cautionLines({ ...results, points: results.points.slice(0, 3) })).toEqual([]);
+  it('writes out the cautions for the whole curve and counts the points with cautions', () => {
+    expect(linesAbout(/^Caution/, { ...results, cautions: [{ code: 'a', message: 'Too coarse.' }] })).toEqual(
+      ['Caution: Too coarse.', 'Cautions at 20 of 37 points: see the results file.'],
+    );
   });
 });

@@ -1,5 +1,12 @@
 import { describe, expect, it } from 'vitest';
-import { alignedTable, bytesText, counted, durationText, refusalText } from '../../../app/cli/wording';
+import {
+  alignedTable,
+  bytesText,
+  counted,
+  durationText,
+  grouped,
+  refusalText,
+} from '../../../app/cli/wording';
 
 describe('wording', () => {
   it('writes every issue of a refusal with its place, once, and its remedy', () => {
@@ -11,6 +18,11 @@ describe('wording', () => {
     expect(text).toBe(
       'farwell: a.study.json was refused.\n  scan.count: It is 0.\n    Give more.\n  scan.from is 0.\n    Give more.\n  It is no study.\n    Give a study.',
     );
+  });
+
+  it('sets thousands apart', () => {
+    const numbers = [0, 999, 1000, 1234567, -12345, 1234.56789];
+    expect(numbers.map(grouped)).toEqual(['0', '999', '1,000', '1,234,567', '-12,345', '1,234.56789']);
   });
 
   it('counts', () => {
