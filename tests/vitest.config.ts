@@ -7,6 +7,8 @@ export default defineConfig({
   root,
   test: {
     include: ['tests/**/*.test.ts', 'tests/**/*.test.tsx'],
+    // what is tried as a process or in a browser is the build; one build serves every file
+    globalSetup: ['tests/support/build-once.ts'],
     setupFiles: ['tests/support/published.ts'],
     testTimeout: 60_000,
     hookTimeout: 120_000,

@@ -28,7 +28,8 @@ export type Decision =
  * Decides whether a request comes from our own page.
  *
  * The token keeps out other programs and other people's pages; the Host header keeps out a page whose name was
- * made to point at 127.0.0.1; the Origin header keeps out a page that learnt the token.
+ * made to point at 127.0.0.1; the Origin header, which a browser sends with every POST, keeps out a page that
+ * learnt the token. A request without one comes from no page, so the token is what counts.
  */
 export function admit(request: IncomingRequest, access: Access): Decision {
   const { headers } = request;
@@ -36,8 +37,6 @@ export function admit(request: IncomingRequest, access: Access): Decision {
   if (headers.host !== access.host) return refuse(403, 'This address belongs to one host only.');
   if (headers.origin !== undefined && headers.origin !== origin)
     return refuse(403, 'Other origins are refused.');
-  // browsers send it with every POST, and only the page itself has reason to post
-  if (request.method === 'POST' && headers.origin === undefined) return refuse(403, 'The origin is missing.');
   if (headers['sec-fetch-site'] === 'cross-site') return refuse(403, 'Other sites are refused.');
 
   const path = request.url.split(/[?#]/, 1)[0] ?? '';

@@ -30,7 +30,8 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
   const active = n - frozenOrbitals;
   const activeElectrons = electrons / 2 - frozenOrbitals;
   const transformed = {
-    bytes: field.bytes + 8 * repulsionIntegrals,
+    // half-transformed over all pairs of functions and orbitals, then the packed result
+    bytes: field.bytes + 8 * (pairs * pairs + repulsionIntegrals),
     seconds: field.seconds + PER_TRANSFORMATION_STEP * n ** 5,
   };
 

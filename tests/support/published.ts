@@ -22,7 +22,8 @@ export function printedTolerance(printed: string): number {
 expect.extend({
   toMatchPublished(actual: number, value: PublishedValue) {
     if (!value.source.trim()) throw new Error('a published value needs its source');
-    if (value.tolerance !== undefined && !value.because) throw new Error('a tolerance override needs a reason');
+    if (value.tolerance !== undefined && !value.because)
+      throw new Error('a tolerance override needs a reason');
     const tolerance = value.tolerance ?? printedTolerance(value.printed) * (1 + 1e-9);
     const difference = Math.abs(actual - Number(value.printed));
     return {

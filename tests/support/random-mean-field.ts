@@ -13,7 +13,9 @@ export function randomMeanFieldProblem(n: number, seed: number): MeanFieldProble
     k % (n + 1) === 0 ? -6 + 1.5 * Math.floor(k / n) : 0.3 * value,
   );
   const pairs = (n * (n + 1)) / 2;
-  const vectors = Array.from({ length: 2 * n }, () => randomArray(pairs, random).map((value) => 0.25 * value));
+  const vectors = Array.from({ length: 2 * n }, () =>
+    randomArray(pairs, random).map((value) => 0.25 * value),
+  );
   const repulsion = new Float64Array((pairs * (pairs + 1)) / 2);
   for (let pq = 0; pq < pairs; pq++) {
     for (let rs = 0; rs <= pq; rs++) {

@@ -45,9 +45,14 @@ describe('admit', () => {
     },
   );
 
-  it('refuses a post without an origin', () => {
-    const post = { method: 'POST', url: `/${ACCESS.token}/requests`, headers: { host: ACCESS.host } };
-    expect(admit(post, ACCESS)).toMatchObject({ admitted: false, status: 403 });
+  it('admits a post without an origin, which no page can send, for its token alone', () => {
+    const headers = { origin: undefined };
+    expect(admit(request({ method: 'POST', headers }), ACCESS)).toMatchObject({ admitted: true });
+    const url = '/a-guess/requests';
+    expect(admit(request({ method: 'POST', url, headers }), ACCESS)).toMatchObject({
+      admitted: false,
+      status: 404,
+    });
   });
 
   it('refuses what another site sends', () => {

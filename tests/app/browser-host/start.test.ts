@@ -1,9 +1,7 @@
-import { afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { buildProgram, type RunningProgram, startProgram } from '../../support/built-program';
+import { afterEach, describe, expect, it } from 'vitest';
+import { type RunningProgram, startProgram } from '../../support/built-program';
 
 /* `npm start` as it is started: the built file, as a process of its own. */
-
-beforeAll(buildProgram);
 
 const started: RunningProgram[] = [];
 afterEach(() => {

@@ -1,10 +1,9 @@
 import { mkdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
+import { afterEach, describe, expect, it, vi } from 'vitest';
 import type { Study } from '#engine';
 import type { EventName, Events } from '../../../app/contract/requests';
 import { createService, type Service } from '../../../app/service/service';
-import { buildProgram } from '../../support/built-program';
 import { temporaryFolder } from '../../support/temporary-folder';
 
 type Posted = {
@@ -48,7 +47,6 @@ const LONG = studyText({
 });
 
 // the service's workers are threads of the built program
-beforeAll(buildProgram);
 
 const services: Service[] = [];
 function openService(): {

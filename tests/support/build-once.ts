@@ -1,0 +1,1 @@
+export { buildProgram as setup } from './built-program';
