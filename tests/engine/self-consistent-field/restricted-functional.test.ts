@@ -11,7 +11,13 @@ const problem = randomMeanFieldProblem(N, 11);
 const functional = new RestrictedFunctional(problem, OCCUPIED, N);
 const point = functional.evaluate(orthogonalise(problem.overlap, N).transformation);
 const direction = randomArray((N - OCCUPIED) * OCCUPIED, seededRandom(5));
-const along = (t: number) => functional.evaluate(functional.rotate(point, direction.map((value) => t * value)));
+const along = (t: number) =>
+  functional.evaluate(
+    functional.rotate(
+      point,
+      direction.map((value) => t * value),
+    ),
+  );
 
 describe('RestrictedFunctional', () => {
   it('identity: rotated orbitals stay orthonormal', () => {
@@ -40,8 +46,12 @@ describe('RestrictedFunctional', () => {
   it('identity: the Hessians are symmetric', () => {
     const other = randomArray(direction.length, seededRandom(6));
     for (const spin of ['singlet', 'triplet'] as const) {
-      const left = functional.responseProduct(point, direction, spin).reduce((sum, v, k) => sum + v * other[k], 0);
-      const right = functional.responseProduct(point, other, spin).reduce((sum, v, k) => sum + v * direction[k], 0);
+      const left = functional
+        .responseProduct(point, direction, spin)
+        .reduce((sum, v, k) => sum + v * other[k], 0);
+      const right = functional
+        .responseProduct(point, other, spin)
+        .reduce((sum, v, k) => sum + v * direction[k], 0);
       expect(Math.abs(left - right)).toBeLessThan(1e-12);
     }
   });
