@@ -1,4 +1,5 @@
 import { type DavidsonResult, DEGENERACY_TOLERANCE, lowestEigenpairs } from '../linear-algebra/davidson';
+import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { RunControl } from '../termination';
 import { type DistinguishingOperator, makeDegenerateStatesDefinite } from './degenerate-states';
 import {
@@ -9,7 +10,7 @@ import {
   modelPreconditioner,
   spreadModelVector,
 } from './model-space';
-import { basisVectorLimit } from './size';
+import { basisVectorLimit, guessLimit } from './size';
 
 /** A Hamiltonian over many basis states, of which the lowest eigenvectors are wanted. */
 export interface StateProblem {
@@ -50,7 +51,12 @@ const MODEL_VECTORS_PER_STATE = 10;
 export function findLowestStates(problem: StateProblem, settings: StateSettings): LowestStates {
   if (!problem.diagonal.every(Number.isFinite)) {
     const termination = { kind: 'notFinite', quantity: 'Hamiltonian' } as const;
-    return { values: new Float64Array(0), vectors: [], iterations: 0, termination };
+    return {
+      values: new Float64Array(0),
+      vectors: [],
+      iterations: 0,
+      termination,
+    };
   }
   const size = Math.max(MODEL_SPACE_SIZE, MODEL_VECTORS_PER_STATE * settings.states);
   const model = buildModelSpace(problem.diagonal, size, (places) => problem.elementsAmong(places));
@@ -86,21 +92,52 @@ function takeLowest(model: ModelSpace, states: number): LowestStates {
 }
 
 function iterate(problem: StateProblem, model: ModelSpace, settings: StateSettings): LowestStates {
-  const guesses = chooseGuesses(model, settings.states);
+  const precondition = modelPreconditioner(model, problem.diagonal);
+  const guesses = selectGuesses(problem, model, precondition, settings.states);
   return lowestEigenpairs(
     {
       dimension: problem.dimension,
       apply: (vector, product) => problem.apply(vector, product),
-      precondition: modelPreconditioner(model, problem.diagonal),
+      precondition,
       guesses: guesses.map((k) => spreadModelVector(model, k, problem.dimension)),
     },
     {
       roots: settings.states,
       residualTolerance: settings.residualTolerance,
       maximumIterations: settings.maximumIterations,
-      maximumVectors: basisVectorLimit(guesses.length),
+      maximumVectors: basisVectorLimit(settings.states),
       control: settings.control,
       stage: settings.stage,
     },
   );
+}
+
+/**
+ * The lowest model vectors and as many guards as are allowed. Where there are more, one product with H tells by
+ * second-order perturbation theory which of them lead to the lowest states.
+ */
+function selectGuesses(
+  problem: StateProblem,
+  model: ModelSpace,
+  precondition: ReturnType<typeof modelPreconditioner>,
+  states: number,
+): number[] {
+  const { lowest, guards } = chooseGuesses(model, states);
+  const places = guessLimit(states) - lowest.length;
+  if (guards.length <= places) return [...lowest, ...guards];
+
+  const residual = new Float64Array(problem.dimension);
+  const correction = new Float64Array(problem.dimension);
+  const estimated = guards.map((k) => {
+    const guess = spreadModelVector(model, k, problem.dimension);
+    problem.apply(guess, residual);
+    addScaledInto(residual, -model.energies[k], guess);
+    precondition(residual, model.energies[k], correction);
+    return {
+      k,
+      energy: model.energies[k] - Math.abs(dot(residual, correction)),
+    };
+  });
+  estimated.sort((a, b) => a.energy - b.energy);
+  return [...lowest, ...estimated.slice(0, places).map(({ k }) => k)];
 }

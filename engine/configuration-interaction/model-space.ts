@@ -2,7 +2,6 @@ import { offZero } from '../linear-algebra/davidson';
 import { multiply } from '../linear-algebra/dense';
 import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
 import { diagonaliseWithin, splitRuns } from './degenerate-states';
-import { MAXIMUM_GUARDS } from './size';
 
 /**
  * The basis states of lowest diagonal energy, with H diagonalised among them: where the guesses come from, and
@@ -17,14 +16,18 @@ export interface ModelSpace {
   readonly vectors: readonly Float64Array[];
   /** equal for vectors of the same block of H and the same spin */
   readonly sectors: readonly string[];
+  /** lowest diagonal energy among `places` */
+  readonly lowestDiagonal: number;
 }
 
 /** Spin-averaged energies this close, in hartree, belong to one configuration, which is not torn. */
 const SAME_CONFIGURATION = 1e-9;
 /** Matrix elements below this, in hartree, do not join determinants into one block. */
 const UNCOUPLED = 1e-10;
-/** Guards come from sectors whose lowest model energy is less than this above the highest state wanted, hartree. */
+/** Guards are taken up to this far above the highest state wanted, hartree … */
 const GUARD_WINDOW = 0.5;
+/** … and so many times the energy by which the model's lowest state lies below its lowest single configuration. */
+const CORRELATION_FACTOR = 2;
 /** Preconditioner denominators are kept at least this far from zero, hartree. */
 const SMALLEST_DENOMINATOR = 1e-2;
 
@@ -65,6 +68,7 @@ export function buildModelSpace(
     energies: Float64Array.from(found, (state) => state.energy),
     vectors: found.map((state) => state.vector),
     sectors: found.map((state) => state.sector),
+    lowestDiagonal: places.reduce((low, place) => Math.min(low, diagonal[place]), Number.POSITIVE_INFINITY),
   };
 }
 
@@ -144,25 +148,33 @@ function diagonaliseBlock(
   });
 }
 
+/** Model vectors by their number. */
+export interface GuessChoice {
+  /** the lowest `states`, and the one after them */
+  readonly lowest: readonly number[];
+  /** the next one of every sector in which a lower state may hide than the model shows */
+  readonly guards: readonly number[];
+}
+
 /**
- * Which model vectors to start from: the lowest `states`, the next one, and the lowest of every other sector
- * near in energy, `MAXIMUM_GUARDS` at most beyond the states. A product with H never leaves the sectors of the
- * guesses, so a sector without a guess can have no root.
+ * Which model vectors to start from. A product with H never leaves the sectors of the guesses, so a sector without
+ * a guess can have no root. What the model lacks differs from sector to sector, the more the stronger the
+ * configurations mix: so the window for guards grows with the correlation that the model shows.
  */
-export function chooseGuesses(model: ModelSpace, states: number): number[] {
+export function chooseGuesses(model: ModelSpace, states: number): GuessChoice {
   const total = model.energies.length;
-  const wanted = Math.min(states, total);
-  const chosen = Array.from({ length: wanted }, (_, k) => k);
-  const sectors = new Set(chosen.map((k) => model.sectors[k]));
-  const window = model.energies[wanted - 1] + GUARD_WINDOW;
-  for (let k = wanted; k < total && chosen.length < wanted + MAXIMUM_GUARDS; k++) {
-    const isNext = k === wanted;
-    const isNewSector = !sectors.has(model.sectors[k]) && model.energies[k] < window;
-    if (!isNext && !isNewSector) continue;
-    chosen.push(k);
-    sectors.add(model.sectors[k]);
+  const lowest = Array.from({ length: Math.min(states + 1, total) }, (_, k) => k);
+  const correlation = model.lowestDiagonal - model.energies[0];
+  const highestWanted = model.energies[Math.min(states, total) - 1];
+  const limit = highestWanted + GUARD_WINDOW + CORRELATION_FACTOR * correlation;
+  const guards: number[] = [];
+  const guarded = new Set<string>();
+  for (let k = lowest.length; k < total && model.energies[k] < limit; k++) {
+    if (guarded.has(model.sectors[k])) continue;
+    guards.push(k);
+    guarded.add(model.sectors[k]);
   }
-  return chosen;
+  return { lowest, guards };
 }
 
 /** A model vector as a vector of the whole space. */

@@ -112,7 +112,13 @@ export function findSingleReplacements(space: StringSpace): SingleReplacements {
     }
     byStringStart[target + 1] = entry;
   }
-  return { byStringStart, pair, source, sign, ...orderByPair(space, byStringStart, pair, source, sign) };
+  return {
+    byStringStart,
+    pair,
+    source,
+    sign,
+    ...orderByPair(space, byStringStart, pair, source, sign),
+  };
 }
 
 function orderByPair(

@@ -52,7 +52,11 @@ export function buildSameSpinHamiltonian(
     addDoubles(space, string, occupied, integrals, add);
     rowStart[row + 1] = entries;
   }
-  return { rowStart, column: column.slice(0, entries), value: value.slice(0, entries) };
+  return {
+    rowStart,
+    column: column.slice(0, entries),
+    value: value.slice(0, entries),
+  };
 }
 
 /** Σᵢ (i|h|i) + Σ over pairs [(ii|jj) − (ij|ji)]. */

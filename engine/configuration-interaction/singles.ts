@@ -49,7 +49,11 @@ export interface SinglesResult {
   readonly iterations: number;
 }
 
-const DEFAULTS = Object.freeze({ residualTolerance: 1e-6, maximumIterations: 100, control: UNATTENDED });
+const DEFAULTS = Object.freeze({
+  residualTolerance: 1e-6,
+  maximumIterations: 100,
+  control: UNATTENDED,
+});
 
 /**
  * Configuration interaction of single excitations from a closed-shell determinant, singlets and triplets.
@@ -72,7 +76,12 @@ export function solveSingles(integrals: OrbitalIntegrals, options: SinglesOption
   const fock = closedShellFock(integrals, occupied);
   const referenceEnergy = closedShellEnergy(integrals, fock, occupied);
   if (occupied === 0 || occupied === integrals.orbitalCount) {
-    return { referenceEnergy, states: [], termination: { kind: 'converged' }, iterations: 0 };
+    return {
+      referenceEnergy,
+      states: [],
+      termination: { kind: 'converged' },
+      iterations: 0,
+    };
   }
 
   const found = (['singlet', 'triplet'] as const).map((spin) => ({
@@ -151,7 +160,9 @@ function solveSpin(
           product[ia] = sum;
         }
       },
-      elementsAmong: (places) => ({ hamiltonian: (i, j) => element(places[i], places[j]) }),
+      elementsAmong: (places) => ({
+        hamiltonian: (i, j) => element(places[i], places[j]),
+      }),
       distinguishing: [
         {
           tolerance: 0,

@@ -4,14 +4,16 @@ import { countSameSpinEntries, countSingleReplacements } from './replacements';
 import { highestRank } from './string-space';
 
 /**
- * Guess vectors beyond the states wanted, at most. They keep a state from being missed whose symmetry or spin
- * the lowest guesses lack.
+ * Guess vectors for so many states, at most. Those beyond the states are guards: they keep a state from being
+ * missed whose symmetry or spin the lowest guesses lack.
  */
-export const MAXIMUM_GUARDS = 4;
+export function guessLimit(states: number): number {
+  return 2 * states + 4;
+}
 
 /** Basis vectors of the eigensolver: room for several steps of every state before it must collapse. */
-export function basisVectorLimit(guesses: number): number {
-  return 2 * guesses + 8;
+export function basisVectorLimit(states: number): number {
+  return guessLimit(states) + 4 * states + 12;
 }
 
 /**
@@ -65,7 +67,7 @@ export function configurationInteractionBytes(
   states: number,
 ): number {
   const determinants = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, rankLimit);
-  const vectors = davidsonVectorCount(basisVectorLimit(states + MAXIMUM_GUARDS)) + WORKING_VECTORS;
+  const vectors = davidsonVectorCount(basisVectorLimit(states)) + WORKING_VECTORS;
   const spins = alphaElectrons === betaElectrons ? [alphaElectrons] : [alphaElectrons, betaElectrons];
   let bytes = 8 * determinants * vectors;
   for (const electrons of spins) {

@@ -140,7 +140,10 @@ function checkOptions(
 function distinguishingOperators(space: DeterminantSpace): DistinguishingOperator[] {
   let labels: Float64Array | undefined;
   return [
-    { tolerance: SAME_SPIN, apply: (vector, product) => applySpinSquared(space, vector, product) },
+    {
+      tolerance: SAME_SPIN,
+      apply: (vector, product) => applySpinSquared(space, vector, product),
+    },
     {
       tolerance: 0,
       apply: (vector, product) => {

@@ -61,7 +61,18 @@ export function buildStringSpace(orbitalCount: number, electrons: number, rankLi
       }
     }
   }
-  return { orbitalCount, electrons, maximumRank, count, rankStart, ranks, words, bits, reference, binomials };
+  return {
+    orbitalCount,
+    electrons,
+    maximumRank,
+    count,
+    rankStart,
+    ranks,
+    words,
+    bits,
+    reference,
+    binomials,
+  };
 }
 
 /** How many strings there are of each rank. */

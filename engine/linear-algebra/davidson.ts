@@ -10,8 +10,13 @@ export interface DavidsonProblem {
   apply(vector: Float64Array, product: Float64Array): void;
   /** result ← (M − shift)⁻¹·vector with M near the matrix and denominators kept off zero */
   precondition(vector: Float64Array, shift: number, result: Float64Array): void;
-  /** at least as many as roots, linearly independent; what is beyond `roots` guards against missed roots */
+  /** at least as many as roots, linearly independent */
   readonly guesses: readonly Float64Array[];
+  /**
+   * the symmetry of each guess, as far as the caller knows: guesses that the matrix may join bear the same number;
+   * default: each its own
+   */
+  readonly groups?: readonly number[];
 }
 
 export interface DavidsonOptions {
@@ -19,7 +24,7 @@ export interface DavidsonOptions {
   /** largest ‖matrix·x − λx‖ of a converged root */
   readonly residualTolerance: number;
   readonly maximumIterations: number;
-  /** most basis vectors held at a time, at least twice the guesses; memory: `davidsonVectorCount` */
+  /** most basis vectors held at a time, at least twice the wanted roots and groups; memory: `davidsonVectorCount` */
   readonly maximumVectors: number;
   readonly control: RunControl;
   /** what progress is reported as */
@@ -38,8 +43,6 @@ export interface DavidsonResult {
 
 /** Roots this close to the last wanted one, in the matrix's unit, are converged along with it. */
 export const DEGENERACY_TOLERANCE = 1e-6;
-/** A guard is given up only where so many times its estimated fall would not bring it to the wanted roots. */
-const GUARD_SAFETY = 2;
 /** A direction of unit length that keeps less than this beside the basis brings nothing but rounding errors. */
 const SMALLEST_NEW_DIRECTION = 1e-9;
 /** Stagnated: so many iterations without a new lowest residual. */
@@ -58,9 +61,10 @@ export function davidsonVectorCount(maximumVectors: number): number {
  * second term a preconditioner that is nearly exact returns x itself; with it, denominators near zero do no harm.
  * At the limit of vectors the basis collapses onto its lowest third.
  *
- * Missed roots: the guesses beyond `roots` are guards. A guard is improved like a root until its value, less
- * twice the fall r·(M − θ)⁻¹r that perturbation theory estimates, lies above the highest wanted root. Roots
- * degenerate with the last wanted one count as wanted, so that a cut through a degenerate set gives all of it.
+ * Missed roots: beside the wanted roots, the next eigenvector of every group of guesses is a guard. It is improved
+ * like a root until its value less its residual, θ − ‖r‖, lies above the highest wanted root: an eigenvalue lies
+ * within ‖r‖ of θ (D. H. Weinstein, Proc. Natl. Acad. Sci. 20, 529 (1934)). Roots degenerate with the last wanted
+ * one count as wanted, so that a cut through a degenerate set gives all of it.
  *
  * Sources: E. R. Davidson, J. Comput. Phys. 17, 87 (1975); the second term: J. Olsen, P. Jørgensen, J. Simons,
  * Chem. Phys. Lett. 169, 463 (1990).
@@ -70,10 +74,10 @@ export function davidsonVectorCount(maximumVectors: number): number {
 export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOptions): DavidsonResult {
   const roots = Math.min(options.roots, problem.dimension);
   const subspace = new Subspace(problem);
-  for (const guess of problem.guesses) subspace.extend(guess);
-  const followed = subspace.size;
-  if (followed < roots) throw new RangeError('lowestEigenpairs: fewer independent guesses than roots');
-  const maximumVectors = Math.max(options.maximumVectors, 2 * followed);
+  problem.guesses.forEach((guess, k) => {
+    subspace.extend(guess, problem.groups?.[k] ?? k);
+  });
+  if (subspace.size < roots) throw new RangeError('lowestEigenpairs: fewer independent guesses than roots');
 
   let bestResidual = Number.POSITIVE_INFINITY;
   let withoutProgress = 0;
@@ -85,21 +89,15 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     });
     if (!subspace.diagonalise()) return finish({ kind: 'notFinite', quantity: 'matrix–vector product' });
     const wanted = subspace.countThroughDegenerate(roots);
-    const candidates = Math.min(subspace.size, Math.max(wanted, followed));
-    if (subspace.size + candidates > maximumVectors) {
-      subspace.collapse(Math.max(candidates, Math.floor(maximumVectors / 3)));
-    }
-
     const highest = subspace.values[wanted - 1];
-    const unfinished: number[] = [];
+    let unfinished: number[] = [];
     let worst = 0;
     let worstUnfinished = 0;
-    for (let k = 0; k < candidates; k++) {
+    for (const k of subspace.pursuable(wanted)) {
       const norm = subspace.residual(k);
       if (k < wanted) worst = Math.max(worst, norm);
       if (norm <= options.residualTolerance) continue;
-      const lowestExpected = subspace.values[k] - GUARD_SAFETY * subspace.estimatedFall();
-      if (k >= wanted && lowestExpected > highest + DEGENERACY_TOLERANCE) continue;
+      if (k >= wanted && subspace.values[k] - norm > highest + DEGENERACY_TOLERANCE) continue;
       unfinished.push(k);
       worstUnfinished = Math.max(worstUnfinished, norm);
     }
@@ -111,6 +109,9 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     if (iteration >= options.maximumIterations) return finish({ kind: 'iterationLimit', limit: iteration });
     if (options.control.isCancelled()) return finish({ kind: 'cancelled' });
 
+    if (subspace.size + unfinished.length > options.maximumVectors) {
+      unfinished = subspace.collapse(wanted, Math.floor(options.maximumVectors / 3), unfinished);
+    }
     const isExtended = subspace.correct(unfinished);
     if (!isExtended || withoutProgress >= PATIENCE) {
       return finish({ kind: 'stagnated', iterationsWithoutProgress: withoutProgress });
@@ -131,6 +132,10 @@ class Subspace {
   /** of the last diagonalisation; columns over the basis as it was then */
   #coefficients: Float64Array = new Float64Array(0);
   #columns = 0;
+  /** group of each basis vector */
+  #groups: number[] = [];
+  /** group of each eigenvector: where most of it lies */
+  #groupOfValue: number[] = [];
   values: Float64Array = new Float64Array(0);
 
   constructor(problem: DavidsonProblem) {
@@ -147,13 +152,14 @@ class Subspace {
   }
 
   /** False if the direction has nothing that the basis lacks. */
-  extend(direction: Float64Array): boolean {
+  extend(direction: Float64Array, group: number): boolean {
     const size = this.size;
     if (size === this.#problem.dimension) return false;
     const vector = this.#basis.spare();
     vector.set(direction);
     if (!this.#basis.orthonormalise(vector, SMALLEST_NEW_DIRECTION)) return false;
     this.#basis.append();
+    this.#groups.push(group);
     const product = this.#products.append();
     this.#problem.apply(vector, product);
 
@@ -177,6 +183,7 @@ class Subspace {
     this.values = values;
     this.#coefficients = vectors;
     this.#columns = this.size;
+    this.#groupOfValue = Array.from(values, (_, k) => this.#largestGroup(k));
     return true;
   }
 
@@ -187,18 +194,59 @@ class Subspace {
     return count;
   }
 
-  /** Replaces the basis by the lowest `kept` eigenvectors in it. */
-  collapse(kept: number): void {
-    this.#basis.rotate(this.#coefficients, this.#columns, kept);
-    this.#products.rotate(this.#coefficients, this.#columns, kept);
-    this.values = this.values.slice(0, kept);
-    this.#columns = kept;
-    this.#matrix = new Float64Array(kept * kept);
-    this.#coefficients = new Float64Array(kept * kept);
-    for (let k = 0; k < kept; k++) {
-      this.#matrix[k * kept + k] = this.values[k];
-      this.#coefficients[k * kept + k] = 1;
+  #largestGroup(k: number): number {
+    const weights = new Map<number, number>();
+    this.#groups.forEach((group, i) => {
+      const weight = this.#coefficients[i * this.#columns + k] ** 2;
+      weights.set(group, (weights.get(group) ?? 0) + weight);
+    });
+    return [...weights].reduce((best, entry) => (entry[1] > best[1] ? entry : best))[0];
+  }
+
+  /** The lowest `wanted` eigenvectors and the next one of every group. */
+  pursuable(wanted: number): number[] {
+    const guarded = new Set<number>();
+    return Array.from(this.values.keys()).filter((k) => {
+      if (k < wanted) return true;
+      const isNext = !guarded.has(this.#groupOfValue[k]);
+      guarded.add(this.#groupOfValue[k]);
+      return isNext;
+    });
+  }
+
+  /**
+   * Replaces the basis by what may be pursued in it, and by other low eigenvectors up to `size` of them. Returns
+   * the new numbers of the eigenvectors listed.
+   */
+  collapse(wanted: number, size: number, listed: readonly number[]): number[] {
+    const pursuable = new Set(this.pursuable(wanted));
+    let others = size - pursuable.size;
+    const kept = Array.from(this.values.keys()).filter((k) => pursuable.has(k) || others-- > 0);
+    this.#rotate(this.#basis, kept);
+    this.#rotate(this.#products, kept);
+    const count = kept.length;
+    this.values = Float64Array.from(kept, (k) => this.values[k]);
+    this.#groupOfValue = kept.map((k) => this.#groupOfValue[k]);
+    this.#groups = this.#groupOfValue.slice();
+    this.#columns = count;
+    this.#matrix = new Float64Array(count * count);
+    this.#coefficients = new Float64Array(count * count);
+    for (let k = 0; k < count; k++) {
+      this.#matrix[k * count + k] = this.values[k];
+      this.#coefficients[k * count + k] = 1;
     }
+    return listed.map((k) => kept.indexOf(k));
+  }
+
+  /** The block becomes its combinations that are the listed eigenvectors. */
+  #rotate(block: VectorBlock, kept: readonly number[]): void {
+    const coefficients = new Float64Array(this.#columns * kept.length);
+    for (let i = 0; i < this.#columns; i++) {
+      kept.forEach((k, column) => {
+        coefficients[i * kept.length + column] = this.#coefficients[i * this.#columns + k];
+      });
+    }
+    block.rotate(coefficients, this.#columns, kept.length);
   }
 
   /** Forms eigenvector k and its residual; returns the residual's length. */
@@ -207,13 +255,7 @@ class Subspace {
     this.#basis.combineInto(this.#ritz, this.#coefficients, size, size, k);
     this.#products.combineInto(this.#residual, this.#coefficients, size, size, k);
     addScaledInto(this.#residual, -this.values[k], this.#ritz);
-    this.#problem.precondition(this.#residual, this.values[k], this.#correction);
     return Math.sqrt(dot(this.#residual, this.#residual));
-  }
-
-  /** How far the value whose residual was formed last would fall, by second-order perturbation theory. */
-  estimatedFall(): number {
-    return Math.abs(dot(this.#residual, this.#correction));
   }
 
   /** Adds the correction of each listed eigenvector; false if none of them brought anything new. */
@@ -221,12 +263,13 @@ class Subspace {
     let isExtended = false;
     for (const k of unfinished) {
       this.residual(k);
+      this.#problem.precondition(this.#residual, this.values[k], this.#correction);
       const ritz = this.#ritz;
       const scratch = this.#residual;
       this.#problem.precondition(ritz, this.values[k], scratch);
       const overlap = dot(ritz, scratch);
       if (overlap !== 0) addScaledInto(this.#correction, -dot(ritz, this.#correction) / overlap, scratch);
-      if (this.extend(this.#correction)) isExtended = true;
+      if (this.extend(this.#correction, this.#groupOfValue[k])) isExtended = true;
     }
     return isExtended;
   }
@@ -236,7 +279,10 @@ class Subspace {
     if (this.values.length === 0) return { values: this.values, vectors: [], residuals: new Float64Array(0) };
     const count = this.countThroughDegenerate(Math.min(roots, this.values.length));
     const residuals = Float64Array.from({ length: count }, (_, k) => this.residual(k));
-    this.#basis.rotate(this.#coefficients, this.#columns, count);
+    this.#rotate(
+      this.#basis,
+      Array.from({ length: count }, (_, k) => k),
+    );
     return {
       values: this.values.slice(0, count),
       vectors: Array.from({ length: count }, (_, k) => this.#basis.at(k)),

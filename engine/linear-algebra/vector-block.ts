@@ -47,25 +47,25 @@ export class VectorBlock {
       addScaledInto(target, coefficients[i * columns + column], this.#vectors[i]);
   }
 
-  /** Replaces the vectors by their combinations with the first `kept` columns of coefficients (size × columns). */
-  rotate(coefficients: Float64Array, columns: number, kept: number): void {
-    const old = new Float64Array(this.#size * CHUNK);
+  /** The block becomes combinations of its first `rows` vectors, one per column of coefficients (row-major). */
+  rotate(coefficients: Float64Array, rows: number, columns: number): void {
+    const old = new Float64Array(rows * CHUNK);
     for (let start = 0; start < this.dimension; start += CHUNK) {
       const length = Math.min(CHUNK, this.dimension - start);
-      for (let i = 0; i < this.#size; i++) {
+      for (let i = 0; i < rows; i++) {
         old.set(this.#vectors[i].subarray(start, start + length), i * CHUNK);
       }
-      for (let k = 0; k < kept; k++) {
+      for (let k = 0; k < columns; k++) {
         const target = this.#vectors[k];
         target.fill(0, start, start + length);
-        for (let i = 0; i < this.#size; i++) {
+        for (let i = 0; i < rows; i++) {
           const factor = coefficients[i * columns + k];
           const row = i * CHUNK - start;
           for (let e = start; e < start + length; e++) target[e] += factor * old[row + e];
         }
       }
     }
-    this.#size = kept;
+    this.#size = columns;
   }
 
   /**
