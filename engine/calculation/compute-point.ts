@@ -4,12 +4,9 @@ import { transformOneElectron, transformToOrbitals } from '../integrals/orbital-
 import { nuclearDipole } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
 import { superposeAtomicDensities } from '../self-consistent-field/initial-guess';
+import type { StartingPoint } from '../self-consistent-field/mean-field';
 import { DEFAULT_SELF_CONSISTENCY } from '../self-consistent-field/mean-field-problem';
-import {
-  type RestrictedSolution,
-  type StartingPoint,
-  solveRestricted,
-} from '../self-consistent-field/restricted';
+import { type RestrictedSolution, solveRestricted } from '../self-consistent-field/restricted';
 import { type RunControl, UNATTENDED } from '../termination';
 import { pointCautions } from './cautions';
 import { type CorrelationInput, computeCorrelated, computeSingles, hartreeFockResult } from './level-results';
@@ -55,7 +52,10 @@ export function computePoint(
   const integrals = molecularIntegrals(molecule, basis);
 
   const starts: StartingPoint[] = [{ kind: 'density', density: superposeAtomicDensities(molecule, basis) }];
-  if (options.guess) starts.push({ kind: 'occupiedOrbitals', coefficients: options.guess.occupiedOrbitals });
+  if (options.guess) {
+    const { occupiedOrbitals } = options.guess;
+    starts.push({ kind: 'occupiedOrbitals', alpha: occupiedOrbitals, beta: occupiedOrbitals });
+  }
   const meanField = solveRestricted(integrals.problem, prepared.electrons, starts, control, {
     ...DEFAULT_SELF_CONSISTENCY,
     energyTolerance: prepared.study.convergence.energy,

@@ -69,6 +69,14 @@ export function congruence(matrix: Float64Array, x: Float64Array, n: number, m: 
   return multiplyLeftTransposed(x, multiply(matrix, x, n, n, m), m, n, m);
 }
 
+/** Aᵀ of a rows×columns matrix. */
+export function transpose(matrix: Float64Array, rows: number, columns: number): Float64Array {
+  const turned = new Float64Array(matrix.length);
+  for (let i = 0; i < rows; i++)
+    for (let j = 0; j < columns; j++) turned[j * rows + i] = matrix[i * columns + j];
+  return turned;
+}
+
 /** Σ aᵢ·bᵢ; for two symmetric matrices the trace of their product. */
 export function dot(a: Float64Array, b: Float64Array): number {
   let sum = 0;

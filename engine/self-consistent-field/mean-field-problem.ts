@@ -1,3 +1,5 @@
+import { EngineError } from '../errors';
+
 /** Everything that a self-consistent field needs of a molecule at one geometry; matrices n×n row-major. */
 export interface MeanFieldProblem {
   readonly functionCount: number;
@@ -26,3 +28,15 @@ export const DEFAULT_SELF_CONSISTENCY: SelfConsistencyOptions = Object.freeze({
   extrapolatedIterations: 60,
   minimiserIterations: 100,
 });
+
+/** @throws EngineError `basis.tooFewFunctions` */
+export function requireOrbitals(orbitalCount: number, orbitalsNeeded: number, electrons: number): void {
+  if (orbitalCount >= orbitalsNeeded) return;
+  throw new EngineError(
+    'basis.tooFewFunctions',
+    `The basis gives ${orbitalCount} independent orbitals, but ${electrons} electrons need ${orbitalsNeeded}.`,
+    'Take a larger basis set, or one made for these elements.',
+    { functions: orbitalCount, orbitalsNeeded },
+    'basis',
+  );
+}

@@ -15,6 +15,8 @@ export interface RotationFunctional<P extends RotationPoint> {
   evaluate(coefficients: Float64Array): P;
   rotate(point: P, rotation: Float64Array): Float64Array;
   hessianProduct(point: P, x: Float64Array): Float64Array;
+  /** the Hessian over its value per pair of spin orbitals: 4 for closed shells, 2 with spins apart */
+  readonly hessianScale: number;
 }
 
 const INITIAL_RADIUS = 0.4;

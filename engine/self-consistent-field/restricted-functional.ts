@@ -1,18 +1,25 @@
-import { congruence, dot, multiply, multiplyLeftTransposed } from '../linear-algebra/dense';
+import { congruence, dot, multiply, multiplyLeftTransposed, transpose } from '../linear-algebra/dense';
 import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
 import { coulombExchangeInto } from './coulomb-exchange';
+import {
+  columnRange,
+  fockCommutator,
+  type MeanFieldFunctional,
+  type MeanFieldPoint,
+  type StartingPoint,
+  startingDensities,
+} from './mean-field';
 import type { MeanFieldProblem } from './mean-field-problem';
-import type { RotationFunctional, RotationPoint } from './minimiser';
 import { rotateOrbitals } from './orbital-rotation';
-import { buildDensity } from './orbitals';
+import { buildDensity, diagonaliseFock } from './orbitals';
+import type { Orthogonalisation } from './orthogonalisation';
 
 /** A closed-shell determinant with what its energy and its derivatives need. */
-export interface RestrictedPoint extends RotationPoint {
+export interface RestrictedPoint extends MeanFieldPoint {
   /** n×m, occupied orbitals first; diagonal in F within the occupied and within the virtual orbitals */
   readonly coefficients: Float64Array;
   /** diagonal of the Fock matrix in these orbitals */
   readonly orbitalEnergies: Float64Array;
-  readonly fock: Float64Array;
   /** of one spin */
   readonly density: Float64Array;
 }
@@ -25,15 +32,18 @@ export interface RestrictedPoint extends RotationPoint {
  * Source: R. Seeger, J. A. Pople, J. Chem. Phys. 66, 3045 (1977); T. Helgaker, P. Jørgensen, J. Olsen,
  * Molecular Electronic-Structure Theory, sec. 10.1 and 10.2.
  */
-export class RestrictedFunctional implements RotationFunctional<RestrictedPoint> {
+export class RestrictedFunctional implements MeanFieldFunctional<RestrictedPoint> {
+  readonly hessianScale = 4;
+  readonly orbitalCount: number;
   private readonly coulomb: Float64Array;
   private readonly exchange: Float64Array;
 
   constructor(
     readonly problem: MeanFieldProblem,
     readonly occupied: number,
-    readonly orbitalCount: number,
+    readonly orthogonalisation: Orthogonalisation,
   ) {
+    this.orbitalCount = orthogonalisation.orbitalCount;
     this.coulomb = new Float64Array(problem.functionCount ** 2);
     this.exchange = new Float64Array(problem.functionCount ** 2);
   }
@@ -44,6 +54,26 @@ export class RestrictedFunctional implements RotationFunctional<RestrictedPoint>
     coulombExchangeInto(density, repulsion, functionCount, this.coulomb, this.exchange);
     const fock = coreHamiltonian.map((h, i) => h + 2 * this.coulomb[i] - this.exchange[i]);
     return { fock, energy: nuclearRepulsion + dot(density, coreHamiltonian) + dot(density, fock) };
+  }
+
+  startingFock(start: StartingPoint): Float64Array | undefined {
+    const densities = startingDensities(start, this.problem);
+    return densities && this.fockAndEnergy(densities.alpha).fock;
+  }
+
+  aufbau(fock: Float64Array): Float64Array {
+    const { transformation } = this.orthogonalisation;
+    return diagonaliseFock(fock, transformation, this.problem.functionCount, this.orbitalCount).coefficients;
+  }
+
+  commutator({ fock, density }: RestrictedPoint): Float64Array {
+    return fockCommutator(
+      fock,
+      density,
+      this.problem.overlap,
+      this.problem.functionCount,
+      this.orthogonalisation,
+    );
   }
 
   evaluate(coefficients: Float64Array): RestrictedPoint {
@@ -76,7 +106,7 @@ export class RestrictedFunctional implements RotationFunctional<RestrictedPoint>
   }
 
   hessianProduct(point: RestrictedPoint, x: Float64Array): Float64Array {
-    return this.responseProduct(point, x, 'singlet').map((value) => 4 * value);
+    return this.responseProduct(point, x, 'singlet').map((value) => this.hessianScale * value);
   }
 
   /**
@@ -88,8 +118,8 @@ export class RestrictedFunctional implements RotationFunctional<RestrictedPoint>
     const m = this.orbitalCount;
     const o = this.occupied;
     const virtual = m - o;
-    const occupiedPart = columns(point.coefficients, n, m, 0, o);
-    const virtualPart = columns(point.coefficients, n, m, o, m);
+    const occupiedPart = columnRange(point.coefficients, n, m, 0, o);
+    const virtualPart = columnRange(point.coefficients, n, m, o, m);
     const half = multiply(
       virtualPart,
       multiply(x, transpose(occupiedPart, n, o), virtual, o, n),
@@ -133,7 +163,7 @@ export class RestrictedFunctional implements RotationFunctional<RestrictedPoint>
     ] as const) {
       const size = end - first;
       if (size === 0) continue;
-      const block = columns(coefficients, n, m, first, end);
+      const block = columnRange(coefficients, n, m, first, end);
       const { values, vectors } = symmetricEigen(congruence(fock, block, n, size), size);
       const turned = multiply(block, vectors, n, size, size);
       for (let i = 0; i < n; i++)
@@ -142,18 +172,4 @@ export class RestrictedFunctional implements RotationFunctional<RestrictedPoint>
     }
     return { orbitals, orbitalEnergies };
   }
-}
-
-function columns(matrix: Float64Array, n: number, m: number, first: number, end: number): Float64Array {
-  const size = end - first;
-  const part = new Float64Array(n * size);
-  for (let i = 0; i < n; i++) part.set(matrix.subarray(i * m + first, i * m + end), i * size);
-  return part;
-}
-
-function transpose(matrix: Float64Array, rows: number, columnCount: number): Float64Array {
-  const turned = new Float64Array(matrix.length);
-  for (let i = 0; i < rows; i++)
-    for (let j = 0; j < columnCount; j++) turned[j * rows + i] = matrix[i * columnCount + j];
-  return turned;
 }

@@ -1,6 +1,6 @@
 import { lowestEigenpairs } from '../linear-algebra/davidson';
 import type { RunControl } from '../termination';
-import type { RestrictedFunctional, RestrictedPoint } from './restricted-functional';
+import type { RotationFunctional, RotationPoint } from './minimiser';
 
 /** The eigenvalue's error is quadratic in this; its sign is what matters. */
 const RESIDUAL_TOLERANCE = 1e-4;
@@ -11,25 +11,43 @@ const UNIT_GUESSES = 5;
 /** Keeps the preconditioner's denominators off zero, hartree. */
 const SMALLEST_DENOMINATOR = 1e-2;
 
+export interface HessianEigenpair {
+  readonly value: number;
+  readonly vector: Float64Array;
+}
+
 /**
- * Lowest eigenvalue, in hartree, and eigenvector of the real singlet or triplet orbital Hessian A + B of a closed
- * shell; a negative one is a way to a lower determinant, with the same (singlet) or different (triplet) orbitals
- * for the two spins.
+ * Lowest eigenvalue (hartree, per pair of spin orbitals) and eigenvector of the orbital Hessian within one kind of
+ * Hartree–Fock. A negative one is a way to a lower determinant of this kind.
  *
  * Source: R. Seeger, J. A. Pople, J. Chem. Phys. 66, 3045 (1977).
  */
-export function lowestOrbitalHessian(
-  functional: RestrictedFunctional,
-  point: RestrictedPoint,
-  spin: 'singlet' | 'triplet',
+export function lowestRotationHessian<P extends RotationPoint>(
+  functional: RotationFunctional<P>,
+  point: P,
   control: RunControl,
-): { readonly value: number; readonly vector: Float64Array } {
-  // The functional's curvature is 4(ε_a − ε_i).
-  const diagonal = point.curvature.map((value) => value / 4);
+): HessianEigenpair {
+  const scale = 1 / functional.hessianScale;
+  return lowestHessianEigenpair(
+    (vector) => functional.hessianProduct(point, vector).map((value) => scale * value),
+    point.curvature.map((value) => scale * value),
+    control,
+  );
+}
+
+/**
+ * @param apply - the Hessian's product with a vector
+ * @param diagonal - orbital-energy differences, hartree
+ */
+export function lowestHessianEigenpair(
+  apply: (vector: Float64Array) => Float64Array,
+  diagonal: Float64Array,
+  control: RunControl,
+): HessianEigenpair {
   const { values, vectors } = lowestEigenpairs(
     {
       dimension: diagonal.length,
-      apply: (vector, product) => product.set(functional.responseProduct(point, vector, spin)),
+      apply: (vector, product) => product.set(apply(vector)),
       precondition: (vector, shift, result) => {
         for (let k = 0; k < vector.length; k++) {
           const denominator = diagonal[k] - shift;
@@ -52,8 +70,8 @@ export function lowestOrbitalHessian(
 }
 
 /**
- * One vector with a part in every symmetry, since excitations alone span only their own, and the lowest
- * excitations.
+ * The lowest excitations, and one vector with a part in every symmetry, since excitations alone span only their
+ * own.
  */
 function startingVectors(diagonal: Float64Array): Float64Array[] {
   const everySymmetry = diagonal.map((_, k) => Math.cos(1 + k * k));

@@ -8,7 +8,7 @@ import { randomMeanFieldProblem } from '../../support/random-mean-field';
 const N = 6;
 const OCCUPIED = 2;
 const problem = randomMeanFieldProblem(N, 11);
-const functional = new RestrictedFunctional(problem, OCCUPIED, N);
+const functional = new RestrictedFunctional(problem, OCCUPIED, orthogonalise(problem.overlap, N));
 const point = functional.evaluate(orthogonalise(problem.overlap, N).transformation);
 const direction = randomArray((N - OCCUPIED) * OCCUPIED, seededRandom(5));
 const along = (t: number) =>

@@ -4,12 +4,9 @@ import { placeBasis } from '../../../engine/basis/place-basis';
 import { molecularIntegrals } from '../../../engine/calculation/molecular-integrals';
 import { multiply } from '../../../engine/linear-algebra/dense';
 import { superposeAtomicDensities } from '../../../engine/self-consistent-field/initial-guess';
+import type { StartingPoint } from '../../../engine/self-consistent-field/mean-field';
 import { DEFAULT_SELF_CONSISTENCY } from '../../../engine/self-consistent-field/mean-field-problem';
-import {
-  type RestrictedSolution,
-  type StartingPoint,
-  solveRestricted,
-} from '../../../engine/self-consistent-field/restricted';
+import { type RestrictedSolution, solveRestricted } from '../../../engine/self-consistent-field/restricted';
 import { UNATTENDED } from '../../../engine/termination';
 import { atom, prepare, study } from '../../support/studies';
 
