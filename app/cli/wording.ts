@@ -3,8 +3,8 @@ import type { StudyIssue } from '../contract/requests';
 /** What was refused, every issue with its place, and what to do about it. */
 export function refusalText(subject: string, issues: readonly StudyIssue[]): string {
   const lines = issues.map(({ place, message, remedy }) => {
-    // many messages name the place themselves
-    const prefix = message.includes(place) ? '' : `${place}: `;
+    // many messages begin with the place themselves
+    const prefix = message.startsWith(place) ? '' : `${place}: `;
     return `  ${prefix}${message}\n    ${remedy}`;
   });
   return [`farwell: ${subject} was refused.`, ...lines].join('\n');
