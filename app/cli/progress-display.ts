@@ -24,9 +24,11 @@ function drawnBar(stream: NodeJS.WriteStream): ProgressDisplay {
     format: '{bar}  {text}',
     barCompleteChar: '━',
     barIncompleteChar: '·',
-    barsize: 32,
+    barsize: 24,
     clearOnComplete: true,
+    // cursor and line wrapping stay as they are: a killed process could not restore them
     hideCursor: null,
+    linewrap: true,
     // interruption is for the command to handle, not for the bar
     gracefulExit: false,
   });

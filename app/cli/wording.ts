@@ -4,7 +4,7 @@ import type { StudyIssue } from '../contract/requests';
 export function refusalText(subject: string, issues: readonly StudyIssue[]): string {
   const lines = issues.map(({ place, message, remedy }) => {
     // many messages begin with the place themselves
-    const prefix = message.startsWith(place) ? '' : `${place}: `;
+    const prefix = message.toLowerCase().startsWith(place.toLowerCase()) ? '' : `${place}: `;
     return `  ${prefix}${message}\n    ${remedy}`;
   });
   return [`farwell: ${subject} was refused.`, ...lines].join('\n');
