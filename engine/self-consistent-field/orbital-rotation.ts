@@ -23,6 +23,16 @@ export function rotateOrbitals(
       generator[i * m + a] = -kappa;
     }
   }
+  return rotateByGenerator(coefficients, generator, n, m);
+}
+
+/** C·exp(K) for an antisymmetric m×m generator. */
+export function rotateByGenerator(
+  coefficients: Float64Array,
+  generator: Float64Array,
+  n: number,
+  m: number,
+): Float64Array {
   return multiply(coefficients, exponential(generator, m), n, m, m);
 }
 

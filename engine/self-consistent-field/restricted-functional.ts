@@ -1,5 +1,4 @@
 import { congruence, dot, multiply, multiplyLeftTransposed, transpose } from '../linear-algebra/dense';
-import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
 import { coulombExchangeInto } from './coulomb-exchange';
 import {
   columnRange,
@@ -13,6 +12,7 @@ import type { MeanFieldProblem } from './mean-field-problem';
 import { rotateOrbitals } from './orbital-rotation';
 import { buildDensity, diagonaliseFock } from './orbitals';
 import type { Orthogonalisation } from './orthogonalisation';
+import { semicanonical } from './semicanonical';
 
 /** A closed-shell determinant with what its energy and its derivatives need. */
 export interface RestrictedPoint extends MeanFieldPoint {
@@ -82,7 +82,7 @@ export class RestrictedFunctional implements MeanFieldFunctional<RestrictedPoint
     const o = this.occupied;
     const density = buildDensity(coefficients, n, m, o);
     const { fock, energy } = this.fockAndEnergy(density);
-    const { orbitals, orbitalEnergies } = this.semicanonical(fock, coefficients);
+    const { orbitals, orbitalEnergies } = semicanonical(fock, coefficients, n, m, [o]);
     const inOrbitals = congruence(fock, orbitals, n, m);
     const gradient = new Float64Array((m - o) * o);
     const curvature = new Float64Array((m - o) * o);
@@ -146,30 +146,5 @@ export class RestrictedFunctional implements MeanFieldFunctional<RestrictedPoint
       }
     }
     return product;
-  }
-
-  /** Turns occupied and virtual orbitals among themselves so that F is diagonal in each; the energy stays. */
-  private semicanonical(
-    fock: Float64Array,
-    coefficients: Float64Array,
-  ): { orbitals: Float64Array; orbitalEnergies: Float64Array } {
-    const { functionCount: n } = this.problem;
-    const m = this.orbitalCount;
-    const orbitals = new Float64Array(n * m);
-    const orbitalEnergies = new Float64Array(m);
-    for (const [first, end] of [
-      [0, this.occupied],
-      [this.occupied, m],
-    ] as const) {
-      const size = end - first;
-      if (size === 0) continue;
-      const block = columnRange(coefficients, n, m, first, end);
-      const { values, vectors } = symmetricEigen(congruence(fock, block, n, size), size);
-      const turned = multiply(block, vectors, n, size, size);
-      for (let i = 0; i < n; i++)
-        for (let k = 0; k < size; k++) orbitals[i * m + first + k] = turned[i * size + k];
-      orbitalEnergies.set(values, first);
-    }
-    return { orbitals, orbitalEnergies };
   }
 }
