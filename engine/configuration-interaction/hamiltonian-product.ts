@@ -21,6 +21,8 @@ export interface HamiltonianProduct {
   readonly space: DeterminantSpace;
   /** product ← H·vector; core energy included */
   apply(vector: Float64Array, product: Float64Array): void;
+  /** Makes a vector that is nearly even or odd under the exchange of alpha and beta exactly so, in place. */
+  restoreSpinFlip(vector: Float64Array): void;
 }
 
 /**
@@ -45,16 +47,55 @@ export function prepareHamiltonianProduct(
   return {
     space,
     apply(vector, product) {
-      // alpha–alpha first: it ends in a copy, the others add
       transposeInto(space, vector, transposed);
-      transposedProduct.fill(0);
-      addSameSpin(alphaHamiltonian, space.transposedRows, transposed, transposedProduct);
-      transposeBackInto(space, transposedProduct, product);
-      addSameSpin(betaHamiltonian, space.rows, vector, product);
-      oppositeSpin(vector, product);
+      const parity = space.alpha === space.beta ? spinFlipParity(vector, transposed, EXACT_PARITY) : 0;
+      if (parity === 0) {
+        // alpha–alpha first: it ends in a copy, the others add
+        transposedProduct.fill(0);
+        addSameSpin(alphaHamiltonian, space.transposedRows, transposed, transposedProduct);
+        transposeBackInto(space, transposedProduct, product);
+        addSameSpin(betaHamiltonian, space.rows, vector, product);
+        oppositeSpin(vector, product, false);
+      } else {
+        product.fill(0);
+        addSameSpin(betaHamiltonian, space.rows, vector, product);
+        oppositeSpin(vector, product, true);
+        transposeInto(space, product, transposed);
+        for (let i = 0; i < product.length; i++) product[i] += parity * transposed[i];
+      }
       for (let i = 0; i < product.length; i++) product[i] += integrals.coreEnergy * vector[i];
     },
+    restoreSpinFlip(vector) {
+      if (space.alpha !== space.beta) return;
+      transposeInto(space, vector, transposed);
+      const parity = spinFlipParity(vector, transposed, NEAR_PARITY);
+      if (parity === 0) return;
+      for (let i = 0; i < vector.length; i++) vector[i] = (vector[i] + parity * transposed[i]) / 2;
+    },
   };
+}
+
+/** How far, against its largest element, a vector may be from its image under the exchange of spins … */
+const EXACT_PARITY = 1e-13;
+/** … and where the difference is taken for the rounding errors of a small residual. */
+const NEAR_PARITY = 1e-6;
+
+/**
+ * 1 or −1 if exchanging alpha and beta multiplies the vector by that, 0 if neither. With as many alpha as beta
+ * electrons a state has such a parity, (−1)^S; its product is then half the work: one half of the operator, and
+ * the transpose of what it gives.
+ */
+function spinFlipParity(vector: Float64Array, transposed: Float64Array, tolerance: number): -1 | 0 | 1 {
+  let largest = 0;
+  let difference = 0;
+  let sum = 0;
+  for (let i = 0; i < vector.length; i++) {
+    largest = Math.max(largest, Math.abs(vector[i]));
+    difference = Math.max(difference, Math.abs(vector[i] - transposed[i]));
+    sum = Math.max(sum, Math.abs(vector[i] + transposed[i]));
+  }
+  if (difference <= tolerance * largest) return 1;
+  return sum <= tolerance * largest ? -1 : 0;
 }
 
 /** product(row I) += Σ_J H(I, J)·vector(row J), as far as both rows reach. */
@@ -91,7 +132,8 @@ function appendRow(list: RowList, start: number, length: number, factor: number)
 
 /**
  * product(I) += Σ (pq|rs) ⟨Iα| a†p aq |Jα⟩ ⟨Iβ| a†r as |Jβ⟩ c(J): for every pair pq the columns Jα that it
- * reaches are gathered with their signs, combined over Jβ by dense rows, and scattered to Iα.
+ * reaches are gathered with their signs, combined over Jβ by dense rows, and scattered to Iα. Halved: only the terms
+ * with rs before pq, and half of those with rs = pq.
  */
 function prepareOppositeSpin(space: DeterminantSpace, integrals: OrbitalIntegrals) {
   const { alpha, beta, alphaReplacements, betaReplacements, rows, orbitalCount: n } = space;
@@ -111,7 +153,7 @@ function prepareOppositeSpin(space: DeterminantSpace, integrals: OrbitalIntegral
   const sources = new Int32Array(beta.maximumRank + 1);
   const targets = new Int32Array(beta.maximumRank + 1);
 
-  return (vector: Float64Array, product: Float64Array): void => {
+  return (vector: Float64Array, product: Float64Array, isHalved: boolean): void => {
     const { byPairStart, pairSource, pairTarget, pairSign, pairCountUpToRank } = alphaReplacements;
     const ranks = alpha.maximumRank + 1;
     for (let p = 0; p < n; p++) {
@@ -154,9 +196,12 @@ function prepareOppositeSpin(space: DeterminantSpace, integrals: OrbitalIntegral
             if (last <= block) break;
             list.count = 0;
             for (let e = betaReplacements.byStringStart[i]; e < betaReplacements.byStringStart[i + 1]; e++) {
+              const otherPair = betaReplacements.pair[e];
+              // entries stand in order of the pair
+              if (isHalved && otherPair > pair) break;
               const j = betaReplacements.source[e];
               const length = Math.min(last, sources[beta.ranks[j]]) - block;
-              const integral = integralRow[betaReplacements.pair[e]];
+              const integral = (isHalved && otherPair === pair ? 0.5 : 1) * integralRow[otherPair];
               if (length > 0 && integral !== 0) {
                 appendRow(list, gatheredStart[j], length, betaReplacements.sign[e] * integral);
               }

@@ -18,6 +18,8 @@ export interface StateProblem {
   /** energies of the basis states, or what stands for them in a preconditioner, hartree */
   readonly diagonal: Float64Array;
   apply(vector: Float64Array, product: Float64Array): void;
+  /** as of `DavidsonProblem` */
+  restoreSymmetry?(direction: Float64Array): void;
   elementsAmong(places: Int32Array): ModelElements;
   /** how degenerate states are told apart */
   readonly distinguishing: readonly DistinguishingOperator[];
@@ -99,6 +101,7 @@ function iterate(problem: StateProblem, model: ModelSpace, settings: StateSettin
       dimension: problem.dimension,
       apply: (vector, product) => problem.apply(vector, product),
       precondition,
+      restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
       guesses: guesses.map((k) => spreadModelVector(model, k, problem.dimension)),
     },
     {

@@ -77,6 +77,7 @@ export function solveConfigurationInteraction(
       dimension: space.dimension,
       diagonal: spinAveragedDiagonal(space, integrals),
       apply: product.apply,
+      restoreSymmetry: product.restoreSpinFlip,
       elementsAmong: (places) => {
         const determinants = Array.from(places, (place) => determinantAt(space, place));
         return {

@@ -10,6 +10,8 @@ export interface DavidsonProblem {
   apply(vector: Float64Array, product: Float64Array): void;
   /** result ← (M − shift)⁻¹·vector with M near the matrix and denominators kept off zero */
   precondition(vector: Float64Array, shift: number, result: Float64Array): void;
+  /** removes what rounding has added against a symmetry of the matrix from a new direction, in place */
+  restoreSymmetry?(direction: Float64Array): void;
   /** at least as many as roots, linearly independent */
   readonly guesses: readonly Float64Array[];
   /**
@@ -157,6 +159,7 @@ class Subspace {
     if (size === this.#problem.dimension) return false;
     const vector = this.#basis.spare();
     vector.set(direction);
+    this.#problem.restoreSymmetry?.(vector);
     if (!this.#basis.orthonormalise(vector, SMALLEST_NEW_DIRECTION)) return false;
     this.#basis.append();
     this.#groups.push(group);

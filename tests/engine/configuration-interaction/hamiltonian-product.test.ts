@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import {
   buildDeterminantSpace,
   determinantAt,
+  transposeInto,
 } from '../../../engine/configuration-interaction/determinant-space';
 import {
   GATHER_BLOCK,
@@ -23,10 +24,16 @@ function deviation(
   rank: number,
   seed: number,
   species: number[] = [],
+  parity = 0,
 ): number {
   const integrals = randomOrbitalIntegrals(n, seed, { species });
   const space = buildDeterminantSpace(n, alpha, beta, rank);
   const vector = randomArray(space.dimension, seededRandom(seed + 1));
+  if (parity !== 0) {
+    const image = new Float64Array(space.dimension);
+    transposeInto(space, vector, image);
+    for (let i = 0; i < vector.length; i++) vector[i] += parity * image[i];
+  }
   const product = new Float64Array(space.dimension).fill(Number.NaN);
   prepareHamiltonianProduct(space, integrals).apply(vector, product);
   const determinants = Array.from({ length: space.dimension }, (_, place) => determinantAt(space, place));
@@ -80,6 +87,31 @@ describe('prepareHamiltonianProduct', () => {
     expect(462).toBeGreaterThan(GATHER_BLOCK);
     expect(deviation(12, 6, 1, Number.POSITIVE_INFINITY, 3)).toBeLessThan(1e-11);
     expect(deviation(12, 1, 6, 4, 3)).toBeLessThan(1e-11);
+  });
+
+  it.each([1, -1])('identity: equals the plain sum for vectors of spin-flip parity %i', (parity) => {
+    for (const [n, electrons, rank] of [
+      [5, 2, Number.POSITIVE_INFINITY],
+      [6, 3, 2],
+      [6, 3, 3],
+    ]) {
+      expect(deviation(n, electrons, electrons, rank, 61, [], parity)).toBeLessThan(1e-11);
+    }
+  });
+
+  it('identity: restores a parity that rounding has blurred, and touches no other vector', () => {
+    const space = buildDeterminantSpace(5, 2, 2, 3);
+    const product = prepareHamiltonianProduct(space, randomOrbitalIntegrals(5, 62));
+    const vector = randomArray(space.dimension, seededRandom(63));
+    const untouched = vector.slice();
+    product.restoreSpinFlip(vector);
+    expect(vector).toEqual(untouched);
+    const image = new Float64Array(space.dimension);
+    transposeInto(space, vector, image);
+    const odd = vector.map((value, i) => value - image[i] + 1e-9 * untouched[i]);
+    product.restoreSpinFlip(odd);
+    transposeInto(space, odd, image);
+    expect(odd.every((value, i) => value + image[i] === 0)).toBe(true);
   });
 
   it('identity: equals the plain sum where symmetry makes most integrals vanish', () => {
