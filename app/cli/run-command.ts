@@ -95,16 +95,22 @@ async function prepareFolder(folder: string): Promise<StudyIssue | undefined> {
   }
 }
 
-/** Unlike Node's own recursive way, this does not try for ever where a system says that a folder's parent is missing. */
+/** Unlike Node's own recursive way, this does not try for ever where a system takes no new folders (/proc). */
 async function makeFolder(folder: string): Promise<void> {
+  if (await isFolder(folder)) return;
+  if (dirname(folder) !== folder) await makeFolder(dirname(folder));
+  await mkdir(folder).catch(async (error: unknown) => {
+    // another process may have been faster
+    if (!(await isFolder(folder))) throw error;
+  });
+}
+
+async function isFolder(path: string): Promise<boolean> {
   try {
-    await mkdir(folder);
+    return (await stat(path)).isDirectory();
   } catch (error) {
-    const { code } = error as NodeJS.ErrnoException;
-    if (code === 'ENOENT' && dirname(folder) !== folder) {
-      await makeFolder(dirname(folder));
-      await mkdir(folder);
-    } else if (code !== 'EEXIST' || !(await stat(folder)).isDirectory()) throw error;
+    if ((error as NodeJS.ErrnoException).code === 'ENOENT') return false;
+    throw error;
   }
 }
 

@@ -68,7 +68,7 @@ describe('farwell check and run refuse', () => {
 
   it('numbers that are none', async () => {
     const text = JSON.stringify(helium);
-    await expectRefusal(text.replace('0.7743', 'NaN'), 'line 1', /NaN/);
+    await expectRefusal(text.replace('0.7743', 'NaN'), 'Line 1', /NaN/);
     await expectRefusal(text.replace('0.7743', '1e999'), 'molecule.atoms[1].at');
     await expectRefusal(text.replace('0.7743', '"0.7743"'), 'molecule.atoms[1].at');
     await expectRefusal(text.replace('0.7743', 'null'), 'molecule.atoms[1].at');
