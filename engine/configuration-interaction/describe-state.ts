@@ -32,10 +32,7 @@ export interface ConfigurationInteractionState {
 export const LEADING_COUNT = 8;
 export const LEADING_WEIGHT = 1e-3;
 
-/**
- * What one normalised CI vector says. The sign of the vector is chosen so that the coefficient of largest size is
- * positive.
- */
+/** What one normalised CI vector says. Coefficients are given the sign that makes the largest positive. */
 export function describeState(
   space: DeterminantSpace,
   vector: Float64Array,

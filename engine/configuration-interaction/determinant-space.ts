@@ -73,7 +73,7 @@ function layRows(outer: StringSpace, inner: StringSpace, maximumRank: number): R
 }
 
 /** The beta string whose row holds a place in the vector. */
-export function betaStringAt(space: DeterminantSpace, place: number): number {
+function betaStringAt(space: DeterminantSpace, place: number): number {
   let low = 0;
   let high = space.beta.count;
   while (high - low > 1) {

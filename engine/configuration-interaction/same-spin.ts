@@ -12,8 +12,7 @@ export const NEGLIGIBLE_FACTOR = 1e-14;
 
 /**
  * The Hamiltonian among electrons of one spin, H = Σ h(pq) a†p aq + ½ Σ (pq|rs) a†p a†r as aq, as a sparse
- * matrix over strings; without the core energy. Rows hold their entries in order of the column's rank as far as
- * single replacements come before double ones.
+ * matrix over strings; without the core energy.
  */
 export interface SameSpinHamiltonian {
   /** entries of row I: `rowStart[I]` … `rowStart[I + 1]` */
