@@ -183,8 +183,9 @@ function PasteAtoms({ onPaste }: { readonly onPaste: (atoms: readonly AtomDraft[
       <div className="fieldRow">
         <Button
           className="quietButton"
-          isDisabled={text.trim() === ''}
           onPress={() => {
+            // never disabled: a button that loses its focus would leave the keyboard outside of the editor
+            if (text.trim() === '') return;
             const pasted = readPastedAtoms(text);
             setOutcome(pasted);
             if (!pasted.ok) return;

@@ -4,6 +4,7 @@ import type {
   CorrelatedState,
   HartreeFockResult,
   LevelResult,
+  PerturbationResult,
   SinglesResult,
 } from '#engine';
 import { LevelSwatch } from '../../charts/level-swatch';
@@ -28,6 +29,7 @@ export function LevelDetails({ level, result, energyUnit }: LevelDetailsProps) {
         <span className={result.converged ? 'hint' : 'notConverged'}> {describeTermination(result)}</span>
       </summary>
       {result.kind === 'hartreeFock' && <HartreeFockFacts result={result} unit={energyUnit} />}
+      {result.kind === 'perturbation' && <PerturbationFacts result={result} unit={energyUnit} />}
       {result.kind === 'singles' && <SinglesStates result={result} unit={energyUnit} />}
       {result.kind === 'correlated' && <CorrelatedFacts result={result} unit={energyUnit} />}
     </details>
@@ -82,17 +84,49 @@ function HartreeFockFacts({
             >
               Stability, Eₕ
             </abbr>,
-            `singlet ${formatFixed(result.stability.singlet, 5)}, triplet ${formatFixed(result.stability.triplet, 5)}`,
+            'own' in result.stability
+              ? formatFixed(result.stability.own, 5)
+              : `singlet ${formatFixed(result.stability.singlet, 5)}, triplet ${formatFixed(result.stability.triplet, 5)}`,
           ],
         ]}
       />
-      <NumberList
-        name={`Orbital energies, ${ENERGY_UNITS[unit].symbol}`}
-        values={result.orbitalEnergies.map((energy) =>
-          formatFixed(toEnergyUnit(energy, unit), unit === 'hartree' ? 5 : 3),
-        )}
-      />
+      {orbitalSets(result).map(({ name, energies }) => (
+        <NumberList
+          key={name}
+          name={`${name}, ${ENERGY_UNITS[unit].symbol}`}
+          values={energies.map((energy) =>
+            formatFixed(toEnergyUnit(energy, unit), unit === 'hartree' ? 5 : 3),
+          )}
+        />
+      ))}
     </>
+  );
+}
+
+/** One list of orbital energies, or one for each spin. */
+function orbitalSets({ orbitalEnergies }: HartreeFockResult) {
+  if (!('alpha' in orbitalEnergies)) return [{ name: 'Orbital energies', energies: orbitalEnergies }];
+  return [
+    { name: 'Alpha orbital energies', energies: orbitalEnergies.alpha },
+    { name: 'Beta orbital energies', energies: orbitalEnergies.beta },
+  ];
+}
+
+function PerturbationFacts({
+  result,
+  unit,
+}: {
+  readonly result: PerturbationResult;
+  readonly unit: EnergyUnit;
+}) {
+  return (
+    <Facts
+      facts={[
+        ['Built on', result.reference],
+        ['Pairs of equal spin', energyText(result.sameSpin, unit)],
+        ['Pairs of opposite spin', energyText(result.oppositeSpin, unit)],
+      ]}
+    />
   );
 }
 

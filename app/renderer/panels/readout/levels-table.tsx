@@ -65,6 +65,18 @@ function cells(result: LevelResult | undefined, unit: EnergyUnit, decimals: numb
           </td>
           <td>–</td>
           <td>–</td>
+          <td>{result.sSquared === undefined ? '–' : formatFixed(result.sSquared, 4)}</td>
+        </>
+      );
+    case 'perturbation':
+      return (
+        <>
+          <td>
+            <NotConverged isConverged={result.converged} />
+            {energy(result.energy)}
+          </td>
+          <td>{energy(result.correlation)}</td>
+          <td>–</td>
           <td>–</td>
         </>
       );
