@@ -6,13 +6,13 @@ export {
   type ComputedPoint,
   type ComputePointOptions,
   computePoint,
-  type PointCarry,
 } from './calculation/compute-point';
 export { describeBasis, describeBasisUsed } from './calculation/describe-basis';
 export { explainStudy } from './calculation/explain-study';
 export type { LevelExplanation, StudyExplanation } from './calculation/explanation';
 export { findLevelMinimum } from './calculation/find-level-minimum';
 export { LEVEL_NAMES } from './calculation/levels';
+export type { OccupiedOrbitals, PointCarry } from './calculation/mean-fields';
 export { type Preparation, type PreparedStudy, type PrepareOptions, prepareStudy } from './calculation/prepare-study';
 export type {
   BasisDescription,
@@ -25,9 +25,11 @@ export type {
   LevelFindings,
   LevelResult,
   LevelTermination,
+  PerturbationResult,
   PointResult,
   SinglesResult,
   SinglesState,
+  SpinOrbitalEnergies,
   StudyResults,
 } from './calculation/result';
 export type {

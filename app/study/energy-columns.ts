@@ -49,6 +49,10 @@ function lowestState(level: string): EnergyColumn {
     entryAt: ({ levels }) => {
       const result = levels[level];
       if (result?.kind === 'hartreeFock') return { energy: result.energy, converged: result.converged };
+      if (result?.kind === 'perturbation') {
+        const { energy, converged, correlation } = result;
+        return { energy, converged, correlation };
+      }
       if (result?.kind !== 'correlated') return undefined;
       const { energy, converged, correlation, spin } = result;
       return { energy, converged, correlation, spin };

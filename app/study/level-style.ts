@@ -8,6 +8,7 @@
 /** "muted" */
 const INDIGO = '#332288';
 const CYAN = '#88CCEE';
+const TEAL = '#44AA99';
 const GREEN = '#117733';
 const OLIVE = '#999933';
 const SAND = '#DDCC77';
@@ -20,6 +21,7 @@ const LIGHT_BLUE = '#77AADD';
 const LIGHT_CYAN = '#99DDFF';
 const MINT = '#44BB99';
 const PEAR = '#BBCC33';
+const DEEP_OLIVE = '#AAAA00';
 const LIGHT_YELLOW = '#EEDD88';
 const ORANGE = '#EE8866';
 const PINK = '#FFAABB';
@@ -36,19 +38,12 @@ export interface LevelStyle {
   readonly shape: MarkerShape;
 }
 
-const RESTRICTED: LevelStyle = {
-  colour: INDIGO,
-  colourOnDark: LIGHT_BLUE,
-  dash: [6, 1.6, 1.2, 1.6],
-  shape: 'triangle-up',
-};
-
 /** Full CI is solid, as the curve that the others are measured by. */
 const LEVEL_STYLES: Readonly<Record<string, LevelStyle>> = {
-  RHF: RESTRICTED,
-  ROHF: RESTRICTED,
-  UHF: { colour: CYAN, colourOnDark: LIGHT_CYAN, dash: [2.4, 1.6], shape: 'triangle-down' },
-  MP2: { colour: SAND, colourOnDark: LIGHT_YELLOW, dash: [1.2, 1.2], shape: 'diamond' },
+  RHF: { colour: INDIGO, colourOnDark: LIGHT_BLUE, dash: [6, 1.6, 1.2, 1.6], shape: 'triangle-up' },
+  ROHF: { colour: TEAL, colourOnDark: DEEP_OLIVE, dash: [6, 1.6, 1.2, 1.6], shape: 'diamond' },
+  UHF: { colour: CYAN, colourOnDark: LIGHT_CYAN, dash: [7, 2], shape: 'triangle-down' },
+  MP2: { colour: SAND, colourOnDark: LIGHT_YELLOW, dash: [1.2, 1.2], shape: 'square' },
   CIS: { colour: PURPLE, colourOnDark: PINK, dash: [1.2, 1.6], shape: 'diamond' },
   CISD: { colour: ROSE, colourOnDark: ORANGE, dash: [4, 2], shape: 'square' },
   CISDT: { colour: OLIVE, colourOnDark: PEAR, dash: [2.4, 1.6], shape: 'triangle-down' },

@@ -31,9 +31,23 @@ const hartreeFock = z.looseObject({
   converged: z.boolean(),
   termination,
   iterations: z.number(),
-  orbitalEnergies: numbers,
+  orbitalEnergies: z.union([numbers, z.looseObject({ alpha: numbers, beta: numbers })]),
   dipole: vector,
-  stability: z.looseObject({ singlet: number, triplet: number }).exactOptional(),
+  sSquared: number.exactOptional(),
+  stability: z
+    .union([z.looseObject({ singlet: number, triplet: number }), z.looseObject({ own: number })])
+    .exactOptional(),
+});
+
+const perturbation = z.looseObject({
+  kind: z.literal('perturbation'),
+  energy: number,
+  correlation: number,
+  reference: z.enum(['RHF', 'UHF']),
+  sameSpin: number,
+  oppositeSpin: number,
+  converged: z.boolean(),
+  termination: levelTermination,
 });
 
 const singles = z.looseObject({
@@ -99,6 +113,7 @@ const failed = z.looseObject({
 
 const level: z.ZodType<LevelResult> = z.discriminatedUnion('kind', [
   hartreeFock,
+  perturbation,
   singles,
   correlated,
   failed,

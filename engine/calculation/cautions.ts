@@ -1,26 +1,43 @@
-import type { RestrictedSolution } from '../self-consistent-field/restricted';
+import type { MeanFields } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
 import type { Caution, LevelResult, PointResult } from './result';
 
 /** A triplet Hessian eigenvalue below this, hartree, counts as an instability. */
 const TRIPLET_INSTABILITY = -1e-5;
+/** ⟨S²⟩ above S(S + 1) by more than this is said. */
+const SPIN_CONTAMINATION = 0.1;
 /** Below this weight of the reference a single determinant no longer describes the state. */
 export const LOW_REFERENCE_WEIGHT = 0.9;
 
 /** What to mistrust at one point. */
 export function pointCautions(
-  meanField: RestrictedSolution,
+  prepared: PreparedStudy,
+  { reference, restricted, unrestricted }: MeanFields,
   levels: Readonly<Record<string, LevelResult>>,
 ): readonly Caution[] {
   const cautions: Caution[] = [];
-  const { stability, orthogonalisation } = meanField;
-  if (stability && stability.triplet < TRIPLET_INSTABILITY) {
+  const { orthogonalisation } = reference;
+  if (restricted?.stability && restricted.stability.triplet < TRIPLET_INSTABILITY) {
     cautions.push({
       code: 'rhf.unstable',
       message:
         'The RHF determinant is unstable: one with different orbitals for different spins lies lower, ' +
         'so the pairing forced by RHF makes its energy too high here.',
     });
+  }
+  if (unrestricted) {
+    const [alpha, beta] = prepared.spinElectrons;
+    const spin = (alpha - beta) / 2;
+    const excess = unrestricted.sSquared - spin * (spin + 1);
+    if (excess > SPIN_CONTAMINATION) {
+      cautions.push({
+        code: 'uhf.contaminated',
+        level: 'UHF',
+        message:
+          `UHF has ⟨S²⟩ = ${unrestricted.sSquared.toFixed(2)} here instead of ${spin * (spin + 1)}: ` +
+          'states of higher spin are mixed in, so its energy belongs to no pure spin state.',
+      });
+    }
   }
   if (orthogonalisation.dropped > 0) {
     cautions.push({
@@ -44,7 +61,7 @@ export function pointCautions(
         code: 'reference.weightLow',
         level,
         message:
-          `The RHF determinant has a weight of only ${result.referenceWeight.toFixed(2)} in ${level}: ` +
+          `The reference determinant has a weight of only ${result.referenceWeight.toFixed(2)} in ${level}: ` +
           (isFull
             ? 'a single determinant does not describe the molecule here.'
             : 'excitations from it alone do not describe the molecule here.'),

@@ -3,23 +3,20 @@ import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { transformOneElectron, transformToOrbitals } from '../integrals/orbital-transformation';
 import { nuclearDipole } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
-import { superposeAtomicDensities } from '../self-consistent-field/initial-guess';
-import type { StartingPoint } from '../self-consistent-field/mean-field';
-import { DEFAULT_SELF_CONSISTENCY } from '../self-consistent-field/mean-field-problem';
-import { type RestrictedSolution, solveRestricted } from '../self-consistent-field/restricted';
 import { type RunControl, UNATTENDED } from '../termination';
 import { pointCautions } from './cautions';
-import { type CorrelationInput, computeCorrelated, computeSingles, hartreeFockResult } from './level-results';
+import {
+  type CorrelationInput,
+  computeCorrelated,
+  computeSingles,
+  hartreeFockResult,
+  secondOrderResult,
+} from './level-results';
 import type { Level } from './levels';
+import { carryOf, type MeanFields, type PointCarry, solveMeanFields } from './mean-fields';
 import { type MolecularIntegrals, molecularIntegrals } from './molecular-integrals';
 import type { PreparedStudy } from './prepare-study';
 import type { LevelResult, PointResult } from './result';
-
-/** What one point leaves for its neighbour; survives structured cloning. */
-export interface PointCarry {
-  /** functions × occupied, row-major */
-  readonly occupiedOrbitals: Float64Array;
-}
 
 export interface ComputedPoint {
   readonly result: PointResult;
@@ -51,62 +48,57 @@ export function computePoint(
   const basis = placeBasis(prepared.basisSet, molecule);
   const integrals = molecularIntegrals(molecule, basis);
 
-  const starts: StartingPoint[] = [{ kind: 'density', density: superposeAtomicDensities(molecule, basis) }];
-  if (options.guess) {
-    const { occupiedOrbitals } = options.guess;
-    starts.push({ kind: 'occupiedOrbitals', alpha: occupiedOrbitals, beta: occupiedOrbitals });
-  }
-  const meanField = solveRestricted(integrals.problem, prepared.electrons, starts, control, {
-    ...DEFAULT_SELF_CONSISTENCY,
-    energyTolerance: prepared.study.convergence.energy,
-  });
-
   const chosen = prepared.levels.filter((level) => options.levels?.includes(level.name) ?? true);
+  const fields = solveMeanFields(
+    prepared,
+    molecule,
+    basis,
+    integrals.problem,
+    chosen,
+    options.guess,
+    control,
+  );
   const correlation = needsOrbitalIntegrals(chosen)
-    ? correlationInput(prepared, molecule, integrals, meanField, control)
+    ? correlationInput(prepared, molecule, integrals, fields.reference, control)
     : undefined;
   const levels: Record<string, LevelResult> = {};
   for (const level of chosen) {
-    if (level.kind === 'hartreeFock') levels[level.name] = hartreeFockResult(meanField, molecule, integrals);
-    else if (level.kind === 'singles') levels[level.name] = computeSingles(correlation!);
-    else levels[level.name] = computeCorrelated(level, correlation!);
+    switch (level.kind) {
+      case 'hartreeFock':
+        levels[level.name] = hartreeFockResult(level.name, fields, molecule, integrals);
+        break;
+      case 'perturbation':
+        levels[level.name] = secondOrderResult(prepared, fields, integrals);
+        break;
+      case 'singles':
+        levels[level.name] = computeSingles(correlation!);
+        break;
+      case 'correlated':
+        levels[level.name] = computeCorrelated(level, correlation!);
+    }
   }
+  const carry = carryOf(prepared, fields);
   return {
     result: {
       coordinate,
       atoms: prepared.geometryAt(coordinate),
       nuclearRepulsion: integrals.problem.nuclearRepulsion,
       levels,
-      cautions: pointCautions(meanField, levels),
+      cautions: pointCautions(prepared, fields, levels),
     },
-    ...(meanField.termination.kind === 'converged' && {
-      carry: { occupiedOrbitals: occupiedOf(meanField, prepared) },
-    }),
+    ...(carry && { carry }),
   };
 }
 
 function needsOrbitalIntegrals(levels: readonly Level[]): boolean {
-  return levels.some((level) => level.kind !== 'hartreeFock');
-}
-
-function occupiedOf(
-  meanField: RestrictedSolution,
-  { electrons, functionCount }: PreparedStudy,
-): Float64Array {
-  const occupied = electrons / 2;
-  const m = meanField.orbitalCount;
-  const part = new Float64Array(functionCount * occupied);
-  for (let i = 0; i < functionCount; i++) {
-    part.set(meanField.coefficients.subarray(i * m, i * m + occupied), i * occupied);
-  }
-  return part;
+  return levels.some((level) => level.kind === 'singles' || level.kind === 'correlated');
 }
 
 function correlationInput(
   prepared: PreparedStudy,
   molecule: Molecule,
   integrals: MolecularIntegrals,
-  meanField: RestrictedSolution,
+  meanField: MeanFields['reference'],
   control: RunControl,
 ): CorrelationInput {
   const { problem, dipole } = integrals;
@@ -129,7 +121,7 @@ function correlationInput(
     nuclearDipole: nuclearDipole(molecule),
     orbitalCount: meanField.orbitalCount,
     frozen,
-    electrons: prepared.electrons,
+    activeElectrons: [prepared.spinElectrons[0] - frozen, prepared.spinElectrons[1] - frozen],
     states: prepared.study.states,
     energyTolerance: prepared.study.convergence.energy,
     meanFieldEnergy: meanField.energy,

@@ -28,7 +28,7 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
       FIELD_ITERATIONS * repulsionIntegrals * PER_FOCK_ELEMENT,
   };
   const active = n - frozenOrbitals;
-  const activeElectrons = electrons / 2 - frozenOrbitals;
+  const [alpha, beta] = prepared.spinElectrons.map((count) => count - frozenOrbitals) as [number, number];
   const transformed = {
     // half-transformed over all pairs of functions and orbitals, then the packed result
     bytes: field.bytes + 8 * (pairs * pairs + repulsionIntegrals),
@@ -37,9 +37,21 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
 
   const explainLevel = (level: Level): LevelExplanation => {
     if (level.kind === 'hartreeFock') return { level: level.name, ...field };
-    const virtual = active - activeElectrons;
+    const singlesOf = (electrons: number) => electrons * (active - electrons);
+    const doublesOf = (electrons: number) => {
+      const virtuals = active - electrons;
+      return (electrons * (electrons - 1) * virtuals * (virtuals - 1)) / 4;
+    };
+    if (level.kind === 'perturbation') {
+      const excitations = singlesOf(alpha);
+      return {
+        level: level.name,
+        bytes: field.bytes + 8 * excitations * (pairs + excitations),
+        seconds: field.seconds + PER_TRANSFORMATION_STEP * n ** 4 * alpha,
+      };
+    }
     if (level.kind === 'singles') {
-      const singles = activeElectrons * virtual;
+      const singles = singlesOf(alpha);
       return {
         level: level.name,
         determinants: 2 * singles,
@@ -47,22 +59,22 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
         seconds: transformed.seconds + PER_CONNECTION * singles ** 2 * EIGENVALUE_ITERATIONS,
       };
     }
-    const determinants = countDeterminants(active, activeElectrons, activeElectrons, level.maximumRank);
-    const singles = activeElectrons * virtual;
-    const doubles = (activeElectrons * (activeElectrons - 1) * virtual * (virtual - 1)) / 4;
-    const connections = Math.min(determinants, singles * singles + 2 * (singles + doubles) + 1);
+    const determinants = countDeterminants(active, alpha, beta, level.maximumRank);
+    const connections = Math.min(
+      determinants,
+      1 +
+        singlesOf(alpha) * singlesOf(beta) +
+        singlesOf(alpha) +
+        doublesOf(alpha) +
+        singlesOf(beta) +
+        doublesOf(beta),
+    );
     return {
       level: level.name,
       determinants,
       bytes:
         transformed.bytes +
-        configurationInteractionBytes(
-          active,
-          activeElectrons,
-          activeElectrons,
-          level.maximumRank,
-          study.states,
-        ),
+        configurationInteractionBytes(active, alpha, beta, level.maximumRank, study.states),
       seconds:
         transformed.seconds +
         study.states * EIGENVALUE_ITERATIONS * determinants * connections * PER_CONNECTION,

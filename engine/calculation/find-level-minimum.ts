@@ -1,6 +1,7 @@
 import { type CurvePoint, findCurveMinimum } from '../curves/minimum';
 import type { RunControl } from '../termination';
-import { computePoint, type PointCarry } from './compute-point';
+import { computePoint } from './compute-point';
+import type { PointCarry } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
 import type { LevelFindings, LevelResult, PointResult } from './result';
 
@@ -69,5 +70,5 @@ function none(reason: string): LevelFindings {
 /** Energy of the lowest state where it can be trusted. */
 function groundEnergy(result: LevelResult | undefined): number | undefined {
   if (!result?.converged) return undefined;
-  return result.kind === 'hartreeFock' || result.kind === 'correlated' ? result.energy : undefined;
+  return 'energy' in result ? result.energy : undefined;
 }

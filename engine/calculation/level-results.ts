@@ -5,16 +5,25 @@ import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { dot } from '../linear-algebra/dense';
 import { nuclearDipole } from '../molecule/build-molecule';
 import type { Molecule, Vector3 } from '../molecule/molecule';
-import type { RestrictedSolution } from '../self-consistent-field/restricted';
+import {
+  restrictedSecondOrder,
+  type SpinOrbitals,
+  unrestrictedSecondOrder,
+} from '../perturbation/second-order';
+import { columnRange } from '../self-consistent-field/mean-field';
 import type { RunControl, Termination } from '../termination';
 import type { Level } from './levels';
+import type { MeanFields } from './mean-fields';
 import type { MolecularIntegrals } from './molecular-integrals';
+import type { PreparedStudy } from './prepare-study';
 import type {
   CorrelatedResult,
   CorrelatedState,
+  FailedLevel,
   HartreeFockResult,
   LeadingDeterminant,
   LevelTermination,
+  PerturbationResult,
   SinglesResult,
 } from './result';
 
@@ -28,7 +37,8 @@ export interface CorrelationInput {
   /** all orbitals, frozen ones included */
   readonly orbitalCount: number;
   readonly frozen: number;
-  readonly electrons: number;
+  /** alpha and beta electrons outside the frozen orbitals */
+  readonly activeElectrons: readonly [number, number];
   readonly states: number;
   readonly energyTolerance: number;
   readonly meanFieldEnergy: number;
@@ -38,27 +48,87 @@ export interface CorrelationInput {
 }
 
 export function hartreeFockResult(
-  solution: RestrictedSolution,
+  name: 'RHF' | 'UHF' | 'ROHF',
+  fields: MeanFields,
   molecule: Molecule,
   { dipole }: MolecularIntegrals,
 ): HartreeFockResult {
+  const solution = { RHF: fields.restricted, UHF: fields.unrestricted, ROHF: fields.restrictedOpen }[name];
+  if (!solution) throw new RangeError(`${name} was not computed`);
+  const densities: readonly Float64Array[] = 'density' in solution ? [solution.density] : solution.densities;
   const nuclear = nuclearDipole(molecule);
+  const { stability } = solution;
   return {
     kind: 'hartreeFock',
     energy: solution.energy,
     converged: solution.termination.kind === 'converged',
     termination: solution.termination,
     iterations: solution.iterations,
-    orbitalEnergies: Array.from(solution.orbitalEnergies),
-    dipole: vector((axis) => nuclear[axis] - dot(solution.density, dipole[axis])),
-    ...(solution.stability && { stability: solution.stability }),
+    orbitalEnergies:
+      solution.orbitalEnergies instanceof Float64Array
+        ? Array.from(solution.orbitalEnergies)
+        : { alpha: Array.from(solution.orbitalEnergies[0]), beta: Array.from(solution.orbitalEnergies[1]) },
+    dipole: vector((axis) =>
+      densities.reduce<number>((sum, density) => sum - dot(density, dipole[axis]), nuclear[axis]),
+    ),
+    ...('sSquared' in solution && { sSquared: solution.sSquared }),
+    ...(stability !== undefined && {
+      stability: typeof stability === 'number' ? { own: stability } : stability,
+    }),
+  };
+}
+
+/** MP2 on RHF for closed shells, on UHF for open ones. */
+export function secondOrderResult(
+  prepared: PreparedStudy,
+  { reference, restricted, unrestricted }: MeanFields,
+  { problem }: MolecularIntegrals,
+): PerturbationResult {
+  const { functionCount: n, repulsion } = problem;
+  const [alpha, beta] = prepared.spinElectrons;
+  const orbitals = (coefficients: Float64Array, energies: Float64Array, occupied: number): SpinOrbitals => {
+    const m = energies.length;
+    const frozen = prepared.frozenOrbitals;
+    return {
+      occupied: columnRange(coefficients, n, m, frozen, occupied),
+      virtual: columnRange(coefficients, n, m, occupied, m),
+      occupiedEnergies: energies.subarray(frozen, occupied),
+      virtualEnergies: energies.subarray(occupied),
+    };
+  };
+  const base = restricted ?? unrestricted;
+  if (!base) throw new RangeError('MP2 without its Hartree–Fock');
+  const { sameSpin, oppositeSpin } =
+    base === restricted
+      ? restrictedSecondOrder(
+          repulsion,
+          n,
+          orbitals(restricted.coefficients, restricted.orbitalEnergies, alpha),
+        )
+      : unrestrictedSecondOrder(
+          repulsion,
+          n,
+          orbitals(unrestricted!.coefficients[0], unrestricted!.orbitalEnergies[0], alpha),
+          orbitals(unrestricted!.coefficients[1], unrestricted!.orbitalEnergies[1], beta),
+        );
+  const energy = base.energy + sameSpin + oppositeSpin;
+  const converged = base.termination.kind === 'converged';
+  return {
+    kind: 'perturbation',
+    energy,
+    correlation: energy - reference.energy,
+    reference: base === restricted ? 'RHF' : 'UHF',
+    sameSpin,
+    oppositeSpin,
+    converged,
+    termination: converged ? { kind: 'converged' } : { kind: 'orbitalsNotConverged' },
   };
 }
 
 export function computeSingles(input: CorrelationInput): SinglesResult {
   const { integrals, frozen, orbitalCount } = input;
   const result = solveSingles(integrals, {
-    occupied: input.electrons / 2 - frozen,
+    occupied: input.activeElectrons[0],
     states: input.states,
     dipole: input.dipole.map((matrix) => activeBlock(matrix, orbitalCount, frozen)),
     control: input.control,
@@ -87,22 +157,25 @@ export function computeSingles(input: CorrelationInput): SinglesResult {
 export function computeCorrelated(
   level: Extract<Level, { kind: 'correlated' }>,
   input: CorrelationInput,
-): CorrelatedResult {
-  const active = input.electrons / 2 - input.frozen;
+): CorrelatedResult | FailedLevel {
+  const [alphaElectrons, betaElectrons] = input.activeElectrons;
+  const active = alphaElectrons + betaElectrons;
   const result = solveConfigurationInteraction(input.integrals, {
-    alphaElectrons: active,
-    betaElectrons: active,
+    alphaElectrons,
+    betaElectrons,
     maximumRank: level.maximumRank,
     states: input.states,
     memoryLimit: input.memoryLimit,
     control: input.control,
   });
-  const independent = level.maximumRank >= 2 * active && input.frozen === 0;
+  // integrals that are not finite leave nothing to report
+  if (result.states.length === 0) return { kind: 'failed', converged: false, termination: result.termination };
+  const independent = level.maximumRank >= active && input.frozen === 0;
   const termination = independent ? result.termination : onOrbitals(input, result.termination);
   const states = result.states.map((state) => stateResult(state, result.states[0].energy, input));
   const [lowest] = states;
   const correlation = lowest.energy - input.meanFieldEnergy;
-  const isTruncated = level.maximumRank < 2 * active;
+  const isTruncated = level.maximumRank < active;
   return {
     kind: 'correlated',
     energy: lowest.energy,

@@ -8,7 +8,7 @@ import { checkScan, geometryAt } from '../molecule/scan-coordinate';
 import { scanValues } from '../molecule/scan-values';
 import { explainStudy } from './explain-study';
 import { frozenOrbitalCount } from './frozen-core';
-import { findLevel, type Level } from './levels';
+import { findLevel, type Level, needsClosedShell } from './levels';
 import type { CompleteStudy, Study, StudyAtom, StudyMolecule } from './study';
 
 /** A study that has been checked and can be computed point by point. */
@@ -20,6 +20,8 @@ export interface PreparedStudy {
   readonly coordinates: readonly (number | null)[];
   readonly basisSet: BasisSet;
   readonly electrons: number;
+  /** alpha and beta electrons */
+  readonly spinElectrons: readonly [number, number];
   readonly functionCount: number;
   readonly frozenOrbitals: number;
   /** bytes that one point may take */
@@ -71,7 +73,9 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
   if (!built.ok) errors.push(...built.errors);
   const levels = study.levels.map((name, i) => collect(() => findLevel(name, `levels[${i}]`)));
   const states = study.states ?? 1;
-  collect(() => checkOptions(study, states));
+  collect(() => checkLevels(study.levels));
+  collect(() => checkStates(states));
+  collect(() => checkTolerance(study.convergence?.energy ?? DEFAULT_ENERGY_TOLERANCE));
   // What follows needs a sound molecule.
   if (!built.ok) return { ok: false, errors };
 
@@ -79,8 +83,8 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
   const symbols = [...new Set(molecule.atoms.map((atom) => atom.symbol))];
   const basisSet = collect(() => resolveBasis(study.basis, symbols, { fileText: options.basisFileText }));
   const functionCount = basisSet && collect(() => placeBasis(basisSet, molecule).functionCount);
-  collect(() => requireClosedShell(study, molecule));
-  if (functionCount !== undefined) collect(() => requireFunctions(functionCount, electronCount(molecule)));
+  collect(() => requireClosedShell(levels, molecule.multiplicity));
+  if (functionCount !== undefined) collect(() => requireFunctions(functionCount, molecule));
   if (study.scan) errors.push(...checkScan(study.molecule, study.scan));
   if (errors.length > 0 || !basisSet || functionCount === undefined) return { ok: false, errors };
 
@@ -97,10 +101,14 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
     coordinates: study.scan ? scanValues(study.scan) : [null],
     basisSet,
     electrons: electronCount(molecule),
+    spinElectrons: electronsBySpin(electronCount(molecule), molecule.multiplicity),
     functionCount,
     // highly charged ions may have fewer electrons than their cores
     frozenOrbitals: complete.frozenCore
-      ? Math.min(frozenOrbitalCount(molecule), electronCount(molecule) / 2)
+      ? Math.min(
+          frozenOrbitalCount(molecule),
+          electronsBySpin(electronCount(molecule), molecule.multiplicity)[1],
+        )
       : 0,
     memoryLimit: options.memoryLimit ?? DEFAULT_MEMORY_LIMIT,
     geometryAt: (coordinate) => geometryOf(complete, coordinate).atoms,
@@ -139,19 +147,25 @@ function moleculeOf(study: Study, coordinate: number | null): Molecule {
   return built.molecule;
 }
 
-function requireClosedShell(study: Study, molecule: Molecule): void {
-  if (molecule.multiplicity === 1) return;
+function requireClosedShell(levels: readonly (Level | undefined)[], multiplicity: number): void {
+  if (multiplicity === 1) return;
+  const wrong = levels.findIndex((level) => level && needsClosedShell(level));
+  if (wrong < 0) return;
+  const { name } = levels[wrong]!;
   throw new EngineError(
     'level.needsClosedShell',
-    `${study.levels.join(', ')} need all electrons paired, but the multiplicity is ${molecule.multiplicity}.`,
-    'Choose multiplicity 1 with an even number of electrons; change the charge by one if the count is odd.',
-    { level: study.levels.join(', '), multiplicity: molecule.multiplicity },
-    'molecule.multiplicity',
+    `${name} needs all electrons paired, but the multiplicity is ${multiplicity}.`,
+    name === 'RHF'
+      ? 'Ask for ROHF or UHF instead, or for multiplicity 1 with an even number of electrons.'
+      : 'Leave it out, or ask for multiplicity 1 with an even number of electrons.',
+    { level: name, multiplicity },
+    `levels[${wrong}]`,
   );
 }
 
-function requireFunctions(functionCount: number, electrons: number): void {
-  const orbitalsNeeded = Math.ceil(electrons / 2);
+function requireFunctions(functionCount: number, molecule: Molecule): void {
+  const electrons = electronCount(molecule);
+  const [orbitalsNeeded] = electronsBySpin(electrons, molecule.multiplicity);
   if (functionCount >= orbitalsNeeded) return;
   throw new EngineError(
     'basis.tooFewFunctions',
@@ -162,8 +176,14 @@ function requireFunctions(functionCount: number, electrons: number): void {
   );
 }
 
-function checkOptions(study: Study, states: number): void {
-  if (study.levels.length === 0) {
+/** Alpha and beta electrons of the highest spin projection. */
+export function electronsBySpin(electrons: number, multiplicity: number): readonly [number, number] {
+  const alpha = (electrons + multiplicity - 1) / 2;
+  return [alpha, electrons - alpha];
+}
+
+function checkLevels(levels: readonly string[]): void {
+  if (levels.length === 0) {
     throw new EngineError(
       'level.none',
       'The study names no level.',
@@ -172,16 +192,19 @@ function checkOptions(study: Study, states: number): void {
       'levels',
     );
   }
-  const twice = study.levels.find((level, i) => study.levels.indexOf(level) !== i);
+  const twice = levels.find((level, i) => levels.indexOf(level) !== i);
   if (twice !== undefined) {
     throw new EngineError(
       'level.twice',
       `The level ${twice} is listed twice.`,
       'List each level once.',
       { level: twice },
-      `levels[${study.levels.lastIndexOf(twice)}]`,
+      `levels[${levels.lastIndexOf(twice)}]`,
     );
   }
+}
+
+function checkStates(states: number): void {
   if (!Number.isInteger(states) || states < 1 || states > MOST_STATES) {
     throw new EngineError(
       'study.states',
@@ -191,7 +214,9 @@ function checkOptions(study: Study, states: number): void {
       'states',
     );
   }
-  const tolerance = study.convergence?.energy ?? DEFAULT_ENERGY_TOLERANCE;
+}
+
+function checkTolerance(tolerance: number): void {
   if (!(tolerance >= TIGHTEST_ENERGY_TOLERANCE && tolerance <= LOOSEST_ENERGY_TOLERANCE)) {
     throw new EngineError(
       'study.convergence',

@@ -52,7 +52,12 @@ export interface Caution {
   readonly level?: string;
 }
 
-export type LevelResult = HartreeFockResult | SinglesResult | CorrelatedResult | FailedLevel;
+export type LevelResult =
+  | HartreeFockResult
+  | PerturbationResult
+  | SinglesResult
+  | CorrelatedResult
+  | FailedLevel;
 
 /** Why a level's numbers are not final; a CI built on orbitals that did not converge is not final either. */
 export type LevelTermination = Termination | { readonly kind: 'orbitalsNotConverged' };
@@ -70,11 +75,35 @@ export interface HartreeFockResult {
   readonly converged: boolean;
   readonly termination: Termination;
   readonly iterations: number;
-  readonly orbitalEnergies: readonly number[];
+  readonly orbitalEnergies: readonly number[] | SpinOrbitalEnergies;
   /** e·bohr, about the origin of the study's coordinates, for ions too */
   readonly dipole: Vector3;
-  /** lowest eigenvalue of the singlet (real) and triplet orbital Hessians; negative: not a minimum */
-  readonly stability?: { readonly singlet: number; readonly triplet: number };
+  /** ⟨S²⟩; UHF and ROHF */
+  readonly sSquared?: number;
+  /**
+   * Lowest eigenvalues of the orbital Hessians, hartree; negative: not a minimum. RHF: of the real singlet and the
+   * triplet one; UHF and ROHF: of the one within their own kind.
+   */
+  readonly stability?: { readonly singlet: number; readonly triplet: number } | { readonly own: number };
+}
+
+export interface SpinOrbitalEnergies {
+  readonly alpha: readonly number[];
+  readonly beta: readonly number[];
+}
+
+export interface PerturbationResult {
+  readonly kind: 'perturbation';
+  readonly energy: number;
+  /** energy minus the RHF (open shells: ROHF) energy */
+  readonly correlation: number;
+  /** the Hartree–Fock that it corrects: RHF, for open shells UHF */
+  readonly reference: 'RHF' | 'UHF';
+  /** parts of the second-order energy, hartree */
+  readonly sameSpin: number;
+  readonly oppositeSpin: number;
+  readonly converged: boolean;
+  readonly termination: LevelTermination;
 }
 
 export interface SinglesState {
@@ -122,7 +151,7 @@ export interface CorrelatedResult {
   readonly kind: 'correlated';
   /** of the lowest state, as all the fields that follow */
   readonly energy: number;
-  /** energy minus the RHF energy */
+  /** energy minus the RHF (open shells: ROHF) energy */
   readonly correlation: number;
   readonly converged: boolean;
   readonly termination: LevelTermination;

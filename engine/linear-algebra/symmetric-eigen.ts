@@ -15,7 +15,8 @@ export interface SymmetricEigen {
  */
 export function symmetricEigen(matrix: Float64Array, n: number): SymmetricEigen {
   for (let i = 0; i < n * n; i++) {
-    if (!Number.isFinite(matrix[i])) throw new RangeError('symmetricEigen: the matrix has an entry that is not finite');
+    if (!Number.isFinite(matrix[i]))
+      throw new RangeError('symmetricEigen: the matrix has an entry that is not finite');
   }
   if (n === 0) return { values: new Float64Array(0), vectors: new Float64Array(0) };
   const decomposition = new EigenvalueDecomposition(Matrix.from1DArray(n, n, matrix as unknown as number[]), {

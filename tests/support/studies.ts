@@ -54,3 +54,9 @@ export function waterAtoms(distance: number, degrees: number): StudyAtom[] {
   const z = distance * Math.cos(half);
   return [atom('O'), atom('H', x, 0, z), atom('H', -x, 0, z)];
 }
+
+/** Orbital energies of a Hartree–Fock with one set of orbitals. */
+export function pairedOrbitalEnergies({ orbitalEnergies }: HartreeFockResult): readonly number[] {
+  if ('alpha' in orbitalEnergies) throw new Error('the spins have orbitals of their own');
+  return orbitalEnergies;
+}

@@ -56,37 +56,39 @@ function FindingFacts({ findings, study, lengthUnit, energyUnit }: FindingFactsP
   const { minimum, wellDepth } = findings;
   const where = positionText(study, lengthUnit);
   return (
-    <dl className="facts">
-      {minimum.kind === 'found' ? (
-        <>
+    <>
+      <dl className="facts">
+        {minimum.kind === 'found' && (
+          <>
+            <div>
+              <dt>Equilibrium distance</dt>
+              <dd>
+                {where(minimum.equilibriumDistance, 6)}
+                <span className="hint"> ± {where(minimum.uncertainty, 1)}</span>
+              </dd>
+            </div>
+            <div>
+              <dt>Energy there</dt>
+              <dd>
+                {formatFixed(toEnergyUnit(minimum.energy, energyUnit), decimals)} {symbol}
+              </dd>
+            </div>
+          </>
+        )}
+        {wellDepth !== undefined && (
           <div>
-            <dt>Equilibrium distance</dt>
+            <dt>Well depth, against {where(wellDepth.farEnd, 5)}</dt>
             <dd>
-              {where(minimum.equilibriumDistance, 6)}
-              <span className="hint"> ± {where(minimum.uncertainty, 1)}</span>
+              {formatFixed(toEnergyUnit(wellDepth.value, energyUnit), decimals)} {symbol}
             </dd>
           </div>
-          <div>
-            <dt>Energy there</dt>
-            <dd>
-              {formatFixed(toEnergyUnit(minimum.energy, energyUnit), decimals)} {symbol}
-            </dd>
-          </div>
-        </>
-      ) : (
-        <p className="absent">{whyNoMinimum(minimum, where)}</p>
+        )}
+      </dl>
+      {minimum.kind !== 'found' && <p className="absent">{whyNoMinimum(minimum, where)}</p>}
+      {minimum.kind === 'found' && wellDepth === undefined && (
+        <p className="absent">No well depth: the far end has not converged.</p>
       )}
-      {wellDepth === undefined ? (
-        minimum.kind === 'found' && <p className="absent">No well depth: the far end has not converged.</p>
-      ) : (
-        <div>
-          <dt>Well depth, against {where(wellDepth.farEnd, 5)}</dt>
-          <dd>
-            {formatFixed(toEnergyUnit(wellDepth.value, energyUnit), decimals)} {symbol}
-          </dd>
-        </div>
-      )}
-    </dl>
+    </>
   );
 }
 
@@ -109,7 +111,7 @@ export function whyNoMinimum(
     case 'several':
       return `Several minima, near ${minimum.near.map((place) => where(place, 5)).join(', ')}. Narrow the range to one of them.`;
     case 'none':
-      return `No minimum: ${minimum.reason}.`;
+      return `No minimum: ${minimum.reason.replace(/\.$/, '')}.`;
   }
 }
 

@@ -5,7 +5,7 @@ import { planRuns, RUN_LENGTH } from '../../../app/calculation/plan';
 
 const finishedPoint = (index: number): FinishedPoint => ({
   result: { coordinate: index, atoms: [], nuclearRepulsion: 0, levels: {}, cautions: [] },
-  carry: { occupiedOrbitals: Float64Array.of(index) },
+  carry: { restricted: { alpha: Float64Array.of(index), beta: Float64Array.of(index) } },
 });
 const finishedAt = (indices: readonly number[]) =>
   new Map(indices.map((index) => [index, finishedPoint(index)]));
@@ -20,7 +20,7 @@ describe('planRuns', () => {
   it('goes on inside a run from the orbitals of the last finished point', () => {
     const [run] = planRuns(RUN_LENGTH, finishedAt([0, 1]));
     expect(run?.indices[0]).toBe(2);
-    expect(run?.guess?.occupiedOrbitals).toEqual(Float64Array.of(1));
+    expect(run?.guess?.restricted?.alpha).toEqual(Float64Array.of(1));
   });
 
   it('does not hand orbitals from one run to the next', () => {
@@ -42,7 +42,7 @@ describe('planRuns', () => {
         expect([...planned, ...finished].sort((a, b) => a - b)).toEqual([...Array(points).keys()]);
         for (const { indices, guess } of runs) {
           indices.forEach((index, position) => {
-            const predecessor = position === 0 ? guess?.occupiedOrbitals[0] : indices[position - 1];
+            const predecessor = position === 0 ? guess?.restricted?.alpha[0] : indices[position - 1];
             expect(predecessor).toBe(index % RUN_LENGTH === 0 ? undefined : index - 1);
           });
         }

@@ -1,9 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { findCurveMinimum } from '../../../engine/curves/minimum';
 
-const morse = (depth: number, a: number, re: number) => (x: number) => depth * (1 - Math.exp(-a * (x - re))) ** 2 - 100;
+const morse = (depth: number, a: number, re: number) => (x: number) =>
+  depth * (1 - Math.exp(-a * (x - re))) ** 2 - 100;
 const sample = (f: (x: number) => number, from: number, to: number, count: number) =>
-  Array.from({ length: count }, (_, i) => from + ((to - from) * i) / (count - 1)).map((x) => ({ x, energy: f(x) }));
+  Array.from({ length: count }, (_, i) => from + ((to - from) * i) / (count - 1)).map((x) => ({
+    x,
+    energy: f(x),
+  }));
 
 describe('findCurveMinimum', () => {
   it.each([
@@ -29,8 +33,20 @@ describe('findCurveMinimum', () => {
   });
 
   it('identity: a falling or rising curve has its lowest point at the edge, and that is said', () => {
-    expect(findCurveMinimum(sample((x) => 1 / x, 1, 5, 9), (x) => 1 / x, 0.04)).toEqual({ kind: 'atEdge', x: 5 });
-    expect(findCurveMinimum(sample((x) => x, 1, 5, 9), (x) => x, 0.04)).toEqual({ kind: 'atEdge', x: 1 });
+    expect(
+      findCurveMinimum(
+        sample((x) => 1 / x, 1, 5, 9),
+        (x) => 1 / x,
+        0.04,
+      ),
+    ).toEqual({ kind: 'atEdge', x: 5 });
+    expect(
+      findCurveMinimum(
+        sample((x) => x, 1, 5, 9),
+        (x) => x,
+        0.04,
+      ),
+    ).toEqual({ kind: 'atEdge', x: 1 });
   });
 
   it('identity: a double well has several minima, and none is picked', () => {
@@ -46,7 +62,9 @@ describe('findCurveMinimum', () => {
 
   it('identity: points that did not converge are left out, and too few are said', () => {
     const f = morse(0.1744, 1.02764, 1.40201);
-    const scan = sample(f, 0.5, 6, 12).map((point, k) => (k % 5 === 0 ? { x: point.x, energy: undefined } : point));
+    const scan = sample(f, 0.5, 6, 12).map((point, k) =>
+      k % 5 === 0 ? { x: point.x, energy: undefined } : point,
+    );
     expect(findCurveMinimum(scan, f, 0.04).kind).toBe('found');
     expect(findCurveMinimum(scan.slice(0, 2), f, 0.04).kind).toBe('none');
     expect(findCurveMinimum(scan, () => undefined, 0.04).kind).toBe('none');

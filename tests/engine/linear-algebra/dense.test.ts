@@ -10,7 +10,8 @@ import {
 import { randomArray, seededRandom } from '../../support/random';
 
 const random = seededRandom(1);
-const asMatrix = (data: Float64Array, rows: number, columns: number) => Matrix.from1DArray(rows, columns, [...data]);
+const asMatrix = (data: Float64Array, rows: number, columns: number) =>
+  Matrix.from1DArray(rows, columns, [...data]);
 
 function expectSame(actual: Float64Array, expected: Matrix): void {
   const difference = actual.map((value, i) => value - expected.to1DArray()[i]);
@@ -25,14 +26,25 @@ describe('dense products', () => {
 
   it('independent: A·B, Aᵀ·B and A·Bᵀ of rectangular matrices equal those of ml-matrix', () => {
     expectSame(multiply(a, b, 5, 3, 4), asMatrix(a, 5, 3).mmul(asMatrix(b, 3, 4)));
-    expectSame(multiplyLeftTransposed(a, c, 3, 5, 4), asMatrix(a, 5, 3).transpose().mmul(asMatrix(c, 5, 4)));
+    expectSame(
+      multiplyLeftTransposed(a, c, 3, 5, 4),
+      asMatrix(a, 5, 3)
+        .transpose()
+        .mmul(asMatrix(c, 5, 4)),
+    );
     expectSame(multiplyRightTransposed(a, d, 5, 3, 7), asMatrix(a, 5, 3).mmul(asMatrix(d, 7, 3).transpose()));
   });
 
   it('independent: Xᵀ·A·X equals that of ml-matrix', () => {
     const square = randomArray(25, random);
     const x = asMatrix(a, 5, 3);
-    expectSame(congruence(square, a, 5, 3), x.transpose().mmul(asMatrix(square, 5, 5)).mmul(x));
+    expectSame(
+      congruence(square, a, 5, 3),
+      x
+        .transpose()
+        .mmul(asMatrix(square, 5, 5))
+        .mmul(x),
+    );
   });
 
   it('identity: the largest absolute value of an array with NaN is NaN, so that it cannot pass as small', () => {
