@@ -1,0 +1,229 @@
+import { HARTREE_IN_WAVENUMBERS } from '../constants';
+import type { Termination } from '../termination';
+import {
+  countLevelsBelow,
+  integrateProduct,
+  type RadialEquation,
+  type RadialState,
+  radialEquation,
+  solveLevel,
+} from './radial-equation';
+import { mappedDistance, type RadialGrid, radialGrid } from './radial-grid';
+import { type RadialCurve, type RadialRange, radialRange } from './radial-range';
+
+export interface VibrationalOptions {
+  /** J; default 0 */
+  readonly rotation?: number;
+  /** how closely levels must be converged in grid and range, cm⁻¹ */
+  readonly tolerancePerCm?: number;
+  /** most levels to compute, from the lowest; default 400, more than any curve but that of two ions has */
+  readonly mostLevels?: number;
+  /** outer end of the range, bohr; default 200 equilibrium distances */
+  readonly outermost?: number;
+}
+
+export interface VibrationalLevel {
+  /** v */
+  readonly quantumNumber: number;
+  /** hartree, with the curve's zero */
+  readonly energy: number;
+  /** limit of the curve minus the level */
+  readonly bindingPerCm: number;
+  /** ⟨1/(2μr²)⟩ */
+  readonly rotationalConstantPerCm: number;
+  /** from the last refinement of the grid, and from the wave's tail at the ends of the range */
+  readonly uncertaintyPerCm: number;
+  /** whether `uncertaintyPerCm` is within the tolerance */
+  readonly converged: boolean;
+  /**
+   * ⟨|V − limit|⟩ over distances beyond the computed points, and the same about the first point's energy inside
+   * them: how much of the level rests on extrapolation
+   */
+  readonly extrapolatedPerCm: number;
+}
+
+export interface VibrationalLevels {
+  /** electron masses */
+  readonly reducedMass: number;
+  readonly rotation: number;
+  /** from the lowest; those below the limit only (levels held by a centrifugal barrier above it are left out) */
+  readonly levels: readonly VibrationalLevel[];
+  /** number of bound levels, also where fewer were asked for */
+  readonly boundLevels: number;
+  /** lowest level above the curve's minimum (the curve without rotation), cm⁻¹; undefined without a level */
+  readonly zeroPointPerCm: number | undefined;
+  /** limit minus lowest level, cm⁻¹ */
+  readonly dissociationPerCm: number | undefined;
+  /** how the refinement of the grid ended */
+  readonly termination: Termination;
+  /** every level listed is converged in grid and range */
+  readonly converged: boolean;
+  /** quantum numbers of levels of which more than the tolerance rests on extrapolation of the curve */
+  readonly beyondComputedRange: readonly number[];
+}
+
+/** Levels are to be right to 0.01 cm⁻¹ of the curve as given; asked for with some room. */
+export const LEVEL_TOLERANCE_PER_CM = 1e-3;
+/** Phase a step on the first grid, radian. */
+const FIRST_PHASE = 0.2;
+const MOST_LEVELS = 400;
+/** The grid is halved at most so often; three times are usual. */
+const HALVINGS = 6;
+/** No grid gets finer than this; the first has at most 15 000. */
+const MOST_INTERVALS = 130_000;
+
+/**
+ * All bound levels of a diatomic molecule on a curve. Isotopologues differ by the mass alone.
+ *
+ * Each grid is half as wide as the one before; the O(h⁴) error is removed by Richardson's extrapolation from two
+ * grids, and the change between two extrapolations is the uncertainty.
+ *
+ * @param curve - with a minimum inside its computed distances
+ * @param mass - reduced mass, electron masses
+ */
+export function vibrationalLevels(
+  curve: RadialCurve,
+  mass: number,
+  options: VibrationalOptions = {},
+): VibrationalLevels {
+  const { rotation = 0, tolerancePerCm = LEVEL_TOLERANCE_PER_CM, mostLevels = MOST_LEVELS } = options;
+  const range = radialRange(curve, mass, options.outermost);
+  const solve = (intervals: number) => solveOnGrid(curve, mass, rotation, range, intervals, mostLevels);
+  const tolerance = tolerancePerCm / HARTREE_IN_WAVENUMBERS;
+
+  let intervals = firstIntervals(range);
+  let grid = solve(intervals);
+  let extrapolated: readonly Extrapolated[] = [];
+  let change: readonly number[] = [];
+  let termination: Termination = { kind: 'iterationLimit', limit: HALVINGS };
+  for (let halving = 0; halving < HALVINGS && 2 * intervals <= MOST_INTERVALS; halving++) {
+    intervals *= 2;
+    const finer = solve(intervals);
+    const next = extrapolate(grid, finer);
+    change = next.map(({ energy }, v) =>
+      Math.abs(energy - (extrapolated[v]?.energy ?? Number.POSITIVE_INFINITY)),
+    );
+    [grid, extrapolated] = [finer, next];
+    if (finer.failed !== undefined) {
+      termination = { kind: 'stagnated', iterationsWithoutProgress: 1 };
+      break;
+    }
+    if (next.length === finer.states.length && change.every((value) => value <= tolerance)) {
+      termination = { kind: 'converged' };
+      break;
+    }
+  }
+  const levels = extrapolated.map(({ energy, rotationalConstant }, v): VibrationalLevel => {
+    const state = grid.states[v];
+    const uncertainty = change[v] + endError(grid.equation, state, mass);
+    return {
+      quantumNumber: v,
+      energy: curve.limit + energy,
+      bindingPerCm: -energy * HARTREE_IN_WAVENUMBERS,
+      rotationalConstantPerCm: rotationalConstant * HARTREE_IN_WAVENUMBERS,
+      uncertaintyPerCm: uncertainty * HARTREE_IN_WAVENUMBERS,
+      converged: uncertainty <= tolerance,
+      extrapolatedPerCm: extrapolatedShare(curve, grid.equation.grid, state) * HARTREE_IN_WAVENUMBERS,
+    };
+  });
+  return {
+    reducedMass: mass,
+    rotation,
+    levels,
+    boundLevels: grid.bound,
+    zeroPointPerCm: levels[0] && (levels[0].energy - range.lowest) * HARTREE_IN_WAVENUMBERS,
+    dissociationPerCm: levels[0]?.bindingPerCm,
+    termination,
+    converged: termination.kind === 'converged' && levels.every((level) => level.converged),
+    beyondComputedRange: levels
+      .filter((level) => level.extrapolatedPerCm > tolerancePerCm)
+      .map((level) => level.quantumNumber),
+  };
+}
+
+interface GridSolution {
+  readonly equation: RadialEquation;
+  readonly bound: number;
+  readonly states: readonly RadialState[];
+  readonly rotationalConstants: readonly number[];
+  /** quantum number of a level that did not settle */
+  readonly failed: number | undefined;
+}
+
+interface Extrapolated {
+  readonly energy: number;
+  readonly rotationalConstant: number;
+}
+
+function firstIntervals({ from, to, centre, phase }: RadialRange): number {
+  return Math.ceil(((mappedDistance(to, centre) - mappedDistance(from, centre)) * phase) / FIRST_PHASE);
+}
+
+function solveOnGrid(
+  curve: RadialCurve,
+  mass: number,
+  rotation: number,
+  range: RadialRange,
+  intervals: number,
+  mostLevels: number,
+): GridSolution {
+  const grid = radialGrid(range.centre, range.from, range.to, intervals);
+  // counted from the limit, so that total energies of hundreds of hartree do not eat digits
+  const equation = radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation);
+  const bound = countLevelsBelow(equation, 0);
+  const states: RadialState[] = [];
+  let failed: number | undefined;
+  for (let v = 0; v < Math.min(bound, mostLevels); v++) {
+    const state = solveLevel(equation, v, 0);
+    if (!state) {
+      failed = v;
+      break;
+    }
+    states.push(state);
+  }
+  const rotationalConstants = states.map(({ amplitude }) =>
+    integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
+  );
+  return { equation, bound, states, rotationalConstants, failed };
+}
+
+/** Richardson's extrapolation of the levels that both grids have. */
+function extrapolate(coarse: GridSolution, fine: GridSolution): Extrapolated[] {
+  const improve = (h: number, half: number) => half + (half - h) / 15;
+  return fine.states.slice(0, coarse.states.length).map(({ energy }, v) => ({
+    energy: improve(coarse.states[v].energy, energy),
+    rotationalConstant: improve(coarse.rotationalConstants[v], fine.rotationalConstants[v]),
+  }));
+}
+
+/**
+ * What the walls at the ends of the grid add to a level, to first order. A wall where the free wave would be A
+ * raises the level by A²κ/μ; the wave against it falls to zero with slope −2κA, so that is (slope)²/(4κμ).
+ */
+function endError(
+  { grid, potential }: RadialEquation,
+  { energy, amplitude }: RadialState,
+  mass: number,
+): number {
+  const last = amplitude.length - 1;
+  // the wave vanishes one step beyond the last point of each end
+  const wall = (end: number, next: number): number => {
+    const slope = amplitude[end] / (grid.distances[next] - grid.distances[end]);
+    if (slope === 0) return 0;
+    const decay = Math.sqrt(2 * mass * Math.max(0, potential[end] - energy));
+    return slope ** 2 / (4 * decay * mass);
+  };
+  return wall(0, 1) + wall(last, last - 1);
+}
+
+function extrapolatedShare(
+  { energyAt, limit, computed }: RadialCurve,
+  grid: RadialGrid,
+  state: RadialState,
+): number {
+  const first = energyAt(computed.from);
+  return integrateProduct(grid, state.amplitude, state.amplitude, (r) => {
+    if (r < computed.from) return Math.abs(energyAt(r) - first);
+    return r > computed.to ? Math.abs(energyAt(r) - limit) : 0;
+  });
+}
