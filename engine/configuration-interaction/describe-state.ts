@@ -3,6 +3,7 @@ import { type DeterminantSpace, determinantAt } from './determinant-space';
 import { occupiedOrbitals } from './determinants';
 import { naturalOrbitals, oneParticleDensity } from './one-particle-density';
 import { applySpinSquared, type SpinName, spinName } from './spin';
+import type { VectorSymmetry } from './vector-symmetry';
 
 /** A determinant of a CI vector; active orbitals counted from 0. */
 export interface WeightedDeterminant {
@@ -27,6 +28,8 @@ export interface ConfigurationInteractionState {
   readonly density: Float64Array;
   /** of the active orbitals, falling */
   readonly naturalOccupations: readonly number[];
+  /** where the symmetry of the orbitals was given */
+  readonly symmetry?: VectorSymmetry;
 }
 
 export const LEADING_COUNT = 8;

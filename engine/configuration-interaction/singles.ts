@@ -3,6 +3,12 @@ import type { Vector3 } from '../molecule/molecule';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import { LEADING_COUNT, LEADING_WEIGHT } from './describe-state';
 import { findLowestStates, type LowestStates } from './lowest-states';
+import {
+  type OrbitalSpecies,
+  type SpaceSymmetry,
+  singlesSymmetry,
+  type VectorSymmetry,
+} from './vector-symmetry';
 
 export interface SinglesOptions {
   /** doubly occupied orbitals of the closed-shell reference: the first ones */
@@ -14,6 +20,8 @@ export interface SinglesOptions {
   /** largest ‖Ac − ωc‖ of a converged state, hartree; default 1e-6 */
   readonly residualTolerance?: number;
   readonly maximumIterations?: number;
+  /** labels the states, and makes degenerate ones of different symmetry definite */
+  readonly species?: OrbitalSpecies;
   readonly control?: RunControl;
 }
 
@@ -38,6 +46,8 @@ export interface SinglesSolution {
   readonly amplitudes: Float64Array;
   /** falling weight: the largest `LEADING_COUNT` above `LEADING_WEIGHT` */
   readonly leading: readonly SingleExcitation[];
+  /** where the symmetry of the orbitals was given */
+  readonly symmetry?: VectorSymmetry;
 }
 
 export interface SinglesResult {
@@ -84,14 +94,17 @@ export function solveSingles(integrals: OrbitalIntegrals, options: SinglesOption
     };
   }
 
+  const symmetry =
+    settings.species && singlesSymmetry(occupied, integrals.orbitalCount - occupied, settings.species);
   const found = (['singlet', 'triplet'] as const).map((spin) => ({
     spin,
-    ...solveSpin(integrals, fock, spin, settings),
+    ...solveSpin(integrals, fock, spin, settings, symmetry),
   }));
   const solutions = found.flatMap(({ spin, values, vectors }) =>
-    vectors.map((vector, k) =>
-      describeSingles(integrals, settings, spin, values[k], referenceEnergy, fixSign(vector)),
-    ),
+    vectors.map((vector, k) => ({
+      ...describeSingles(integrals, settings, spin, values[k], referenceEnergy, fixSign(vector)),
+      ...(symmetry && { symmetry: symmetry.describe(vector) }),
+    })),
   );
   const unfinished = found.find(({ termination }) => termination.kind !== 'converged');
   return {
@@ -129,7 +142,8 @@ function solveSpin(
   integrals: OrbitalIntegrals,
   fock: Float64Array,
   spin: 'singlet' | 'triplet',
-  settings: Required<SinglesOptions>,
+  settings: Omit<Required<SinglesOptions>, 'species'>,
+  symmetry: SpaceSymmetry | undefined,
 ): LowestStates {
   const { orbitalCount: n, twoElectron } = integrals;
   const { occupied } = settings;
@@ -164,6 +178,7 @@ function solveSpin(
         hamiltonian: (i, j) => element(places[i], places[j]),
       }),
       distinguishing: [
+        ...(symmetry?.distinguishingOperators() ?? []),
         {
           tolerance: 0,
           // Σ √(p + 1)·n(p) of the excited determinants, less that of the reference

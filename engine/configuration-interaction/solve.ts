@@ -13,6 +13,7 @@ import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
 import { configurationInteractionBytes, countDeterminants } from './size';
 import { applySpinSquared } from './spin';
 import { stringAt } from './string-space';
+import { determinantSymmetry, type OrbitalSpecies, type SpaceSymmetry } from './vector-symmetry';
 
 export interface ConfigurationInteractionOptions {
   readonly alphaElectrons: number;
@@ -26,6 +27,8 @@ export interface ConfigurationInteractionOptions {
   readonly maximumIterations?: number;
   /** bytes that may be taken; default: no limit */
   readonly memoryLimit?: number;
+  /** labels the states, and makes degenerate ones of different symmetry definite */
+  readonly species?: OrbitalSpecies;
   readonly control?: RunControl;
 }
 
@@ -72,6 +75,7 @@ export function solveConfigurationInteraction(
   const { alphaElectrons, betaElectrons, maximumRank } = settings;
   const space = buildDeterminantSpace(integrals.orbitalCount, alphaElectrons, betaElectrons, maximumRank);
   const product = prepareHamiltonianProduct(space, integrals);
+  const symmetry = settings.species && determinantSymmetry(space, settings.species);
   const found = findLowestStates(
     {
       dimension: space.dimension,
@@ -85,7 +89,7 @@ export function solveConfigurationInteraction(
           spinSquared: (i, j) => spinSquaredElement(determinants[i], determinants[j]),
         };
       },
-      distinguishing: distinguishingOperators(space),
+      distinguishing: distinguishingOperators(space, symmetry),
     },
     { ...settings, stage: 'configuration interaction' },
   );
@@ -93,7 +97,11 @@ export function solveConfigurationInteraction(
   const scratch = new Float64Array(space.dimension);
   const states = found.vectors.map((vector, k) => {
     const energy = found.values[k];
-    return describeState(space, vector, energy, residualNorm(product, vector, energy, scratch));
+    const residual = residualNorm(product, vector, energy, scratch);
+    return {
+      ...describeState(space, vector, energy, residual),
+      ...(symmetry && { symmetry: symmetry.describe(vector) }),
+    };
   });
   return {
     determinants: space.dimension,
@@ -135,16 +143,20 @@ function checkOptions(
 }
 
 /**
- * Spin first; among states of one spin then the square of Σ √(p + 1)·n(p): the sum tells π(x) from π(y), its square
+ * Spin first, then symmetry where it is known; then the square of Σ √(p + 1)·n(p): the sum tells π(x) from π(y), its square
  * also x² − y² from xy. What the operator is does not matter, as long as it follows the orbitals.
  */
-function distinguishingOperators(space: DeterminantSpace): DistinguishingOperator[] {
+function distinguishingOperators(
+  space: DeterminantSpace,
+  symmetry: SpaceSymmetry | undefined,
+): DistinguishingOperator[] {
   let labels: Float64Array | undefined;
   return [
     {
       tolerance: SAME_SPIN,
       apply: (vector, product) => applySpinSquared(space, vector, product),
     },
+    ...(symmetry?.distinguishingOperators() ?? []),
     {
       tolerance: 0,
       apply: (vector, product) => {

@@ -54,6 +54,7 @@ const ENGINE_ORDER = [
   'molecule',
   'basis',
   'integrals',
+  'symmetry',
   'self-consistent-field',
   'configuration-interaction',
   'curves',

@@ -1,0 +1,167 @@
+import { dot } from '../linear-algebra/dense';
+import type { DistinguishingOperator } from './degenerate-states';
+import { type DeterminantSpace, rowLength } from './determinant-space';
+import { occupiedOrbitals } from './determinants';
+import type { SingleReplacements } from './replacements';
+import { type StringSpace, stringAt } from './string-space';
+
+/** What is known of the symmetry of the orbitals that many-electron functions are made of. */
+export interface OrbitalSpecies {
+  /** number of each orbital's representation, 0 … 7; a product of orbitals has the exclusive or of the numbers */
+  readonly irreps: readonly number[];
+  /** of linear molecules: ⟨p| ∂/∂φ |q⟩ about the axis, n×n antisymmetric, row-major */
+  readonly axialRotation?: Float64Array;
+}
+
+/** Symmetry of one state. */
+export interface VectorSymmetry {
+  /** weight of each of the 8 representations; sum 1 */
+  readonly irrepWeights: Float64Array;
+  /**
+   * of linear molecules: expectation value of the squared angular momentum about the axis; too small where the
+   * rotation leads out of the space, as in truncated CI over an unequally filled π shell
+   */
+  readonly axialSquare?: number;
+}
+
+/** product ← (∂/∂φ)·vector, projected on the space. */
+type AxialRotation = (vector: Float64Array, product: Float64Array) => void;
+
+/** Elements of the axial rotation below this are rounding, and would only cost time. */
+const NO_ROTATION = 1e-10;
+/** Numbers of representations and squared angular momenta are whole. */
+const WHOLE = 0.1;
+
+/** How vectors over many-electron functions behave under the operations that the orbitals follow. */
+export class SpaceSymmetry {
+  /** @param irreps - of every function */
+  constructor(
+    readonly irreps: Uint8Array,
+    private readonly rotateInto: AxialRotation | undefined,
+  ) {}
+
+  /** @param vector - of norm 1 */
+  describe(vector: Float64Array): VectorSymmetry {
+    const irrepWeights = new Float64Array(8);
+    for (let i = 0; i < vector.length; i++) irrepWeights[this.irreps[i]] += vector[i] ** 2;
+    if (!this.rotateInto) return { irrepWeights };
+    const turned = new Float64Array(vector.length);
+    this.rotateInto(vector, turned);
+    return { irrepWeights, axialSquare: dot(turned, turned) };
+  }
+
+  /** Operators that make degenerate states of different symmetry definite. */
+  distinguishingOperators(): DistinguishingOperator[] {
+    const { rotateInto } = this;
+    const byIrrep: DistinguishingOperator = {
+      tolerance: WHOLE,
+      apply: (vector, product) => {
+        for (let i = 0; i < vector.length; i++) product[i] = this.irreps[i] * vector[i];
+      },
+    };
+    if (!rotateInto) return [byIrrep];
+    return [
+      byIrrep,
+      {
+        tolerance: WHOLE,
+        apply: (vector, product) => {
+          const turned = new Float64Array(vector.length);
+          rotateInto(vector, turned);
+          rotateInto(turned, product);
+          for (let i = 0; i < product.length; i++) product[i] = -product[i];
+        },
+      },
+    ];
+  }
+}
+
+export function determinantSymmetry(space: DeterminantSpace, species: OrbitalSpecies): SpaceSymmetry {
+  const ofAlpha = stringIrreps(space.alpha, species.irreps);
+  const ofBeta = stringIrreps(space.beta, species.irreps);
+  const irreps = new Uint8Array(space.dimension);
+  for (let row = 0; row < space.beta.count; row++) {
+    const start = space.rows.start[row];
+    const length = rowLength(space.rows, row);
+    for (let a = 0; a < length; a++) irreps[start + a] = ofAlpha[a] ^ ofBeta[row];
+  }
+  return new SpaceSymmetry(
+    irreps,
+    species.axialRotation && determinantRotation(space, species.axialRotation),
+  );
+}
+
+/**
+ * Of single excitations from a closed shell that the operations leave as it is, row-major occupied × virtual:
+ * (∂/∂φ·t)(ia) = Σ over b of K(ab) t(ib) + Σ over j of K(ij) t(ja).
+ */
+export function singlesSymmetry(
+  occupied: number,
+  virtuals: number,
+  { irreps, axialRotation }: OrbitalSpecies,
+): SpaceSymmetry {
+  const n = occupied + virtuals;
+  const ofExcitations = Uint8Array.from({ length: occupied * virtuals }, (_, ia) => {
+    return irreps[Math.trunc(ia / virtuals)] ^ irreps[occupied + (ia % virtuals)];
+  });
+  const rotate: AxialRotation = (vector, product) => {
+    product.fill(0);
+    for (let i = 0; i < occupied; i++) {
+      for (let a = 0; a < virtuals; a++) {
+        let sum = 0;
+        for (let b = 0; b < virtuals; b++) {
+          sum += axialRotation![(occupied + a) * n + occupied + b] * vector[i * virtuals + b];
+        }
+        for (let j = 0; j < occupied; j++) sum += axialRotation![i * n + j] * vector[j * virtuals + a];
+        product[i * virtuals + a] = sum;
+      }
+    }
+  };
+  return new SpaceSymmetry(ofExcitations, axialRotation && rotate);
+}
+
+function determinantRotation(space: DeterminantSpace, rotation: Float64Array): AxialRotation {
+  const ofAlpha = stringRotation(space.alphaReplacements, rotation);
+  const ofBeta = stringRotation(space.betaReplacements, rotation);
+  const { rows } = space;
+  return (vector, product) => {
+    product.fill(0);
+    ofBeta.factor.forEach((factor, k) => {
+      const [source, target] = [ofBeta.source[k], ofBeta.target[k]];
+      const [from, to] = [rows.start[source], rows.start[target]];
+      const length = Math.min(rowLength(rows, source), rowLength(rows, target));
+      for (let a = 0; a < length; a++) product[to + a] += factor * vector[from + a];
+    });
+    const { source, target, factor } = ofAlpha;
+    for (let row = 0; row < space.beta.count; row++) {
+      const start = rows.start[row];
+      const length = rowLength(rows, row);
+      for (let k = 0; k < factor.length; k++) {
+        if (target[k] >= length || source[k] >= length) continue;
+        product[start + target[k]] += factor[k] * vector[start + source[k]];
+      }
+    }
+  };
+}
+
+/** Elements of the axial rotation between strings. */
+function stringRotation(replacements: SingleReplacements, rotation: Float64Array) {
+  const { byStringStart, pair } = replacements;
+  const kept = Int32Array.from(pair.keys()).filter((entry) => Math.abs(rotation[pair[entry]]) > NO_ROTATION);
+  const target = new Int32Array(kept.length);
+  let string = 0;
+  kept.forEach((entry, k) => {
+    while (byStringStart[string + 1] <= entry) string++;
+    target[k] = string;
+  });
+  return {
+    target,
+    source: kept.map((entry) => replacements.source[entry]),
+    factor: Float64Array.from(kept, (entry) => replacements.sign[entry] * rotation[pair[entry]]),
+  };
+}
+
+function stringIrreps(strings: StringSpace, irreps: readonly number[]): Uint8Array {
+  return Uint8Array.from({ length: strings.count }, (_, string) =>
+    occupiedOrbitals(stringAt(strings, string)).reduce((product, p) => product ^ irreps[p], 0),
+  );
+}
