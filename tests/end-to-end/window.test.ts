@@ -106,6 +106,9 @@ beforeAll(async () => {
   page = await openWindow();
 });
 
+/** Seven views, each with some hundred rules for every element. */
+const RULES_TIMEOUT = 150_000;
+
 describe('the window', () => {
   it('begins with a sample, its curves drawn and its cursor at the minimum', async () => {
     await page.locator('.main-svg').first().waitFor(PATIENCE);
@@ -316,5 +319,6 @@ describe('the window', () => {
         expect(await violations()).toEqual([]);
       }
     },
+    RULES_TIMEOUT,
   );
 });
