@@ -1,6 +1,9 @@
 /** What the program computes, from the roughest to the complete. */
 export const LEVELS = [
   { name: 'RHF', description: 'restricted Hartree–Fock: one determinant, electrons in pairs' },
+  { name: 'UHF', description: 'unrestricted: each spin in orbitals of its own' },
+  { name: 'ROHF', description: 'restricted open-shell: pairs, and unpaired electrons of one spin' },
+  { name: 'MP2', description: 'second-order perturbation of Hartree–Fock' },
   { name: 'CIS', description: 'single excitations: excited states only' },
   { name: 'CISD', description: 'single and double excitations' },
   { name: 'CISDT', description: 'up to triple excitations' },
