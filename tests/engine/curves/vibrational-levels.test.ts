@@ -63,9 +63,9 @@ describe('vibrationalLevels', () => {
     const found = vibrationalLevels(morseCurve(HYDROGEN, -100), 918.0764, TIGHT);
     const plain = vibrationalLevels(morseCurve(HYDROGEN), 918.0764, TIGHT);
     expect(found.levels).toHaveLength(plain.levels.length);
-    found.levels.forEach(({ bindingPerCm }, v) =>
-      expect(Math.abs(bindingPerCm - plain.levels[v].bindingPerCm)).toBeLessThan(1e-6),
-    );
+    found.levels.forEach(({ bindingPerCm }, v) => {
+      expect(Math.abs(bindingPerCm - plain.levels[v].bindingPerCm)).toBeLessThan(1e-6);
+    });
   });
 
   it.each([0, 1, 7, 20])(
@@ -127,9 +127,9 @@ describe('vibrationalLevels', () => {
       { mostLevels: 40, outermost: 20, ...TIGHT },
     );
     expect(found.levels).toHaveLength(40);
-    found.levels.forEach(({ energy }, v) =>
-      expect(Math.abs(perCm(energy - omega * (v + 0.5)))).toBeLessThan(1e-6),
-    );
+    found.levels.forEach(({ energy }, v) => {
+      expect(Math.abs(perCm(energy - omega * (v + 0.5)))).toBeLessThan(1e-6);
+    });
     expect(found.converged).toBe(true);
   });
 
@@ -142,9 +142,9 @@ describe('vibrationalLevels', () => {
       { mostLevels: 6, outermost: 14 },
     );
     expect(levels).toHaveLength(6);
-    levels.forEach(({ energy }, v) =>
-      expect(Math.abs(perCm(energy - omega * (Math.floor(v / 2) + 0.5)))).toBeLessThan(0.01),
-    );
+    levels.forEach(({ energy }, v) => {
+      expect(Math.abs(perCm(energy - omega * (Math.floor(v / 2) + 0.5)))).toBeLessThan(0.01);
+    });
   });
 
   it('identity: a repulsive curve has no level, and that is a converged answer', () => {
