@@ -8,7 +8,7 @@ describe('levels on offer', () => {
   });
 
   it('stay in that order however they are chosen, others behind them', () => {
-    expect(withLevel(['FCI', 'UHF'], 'RHF', true)).toEqual(['RHF', 'FCI', 'UHF']);
+    expect(withLevel(['FCI', 'of later'], 'RHF', true)).toEqual(['RHF', 'FCI', 'of later']);
     expect(withLevel(['RHF', 'FCI'], 'RHF', false)).toEqual(['FCI']);
   });
 });
