@@ -1,0 +1,120 @@
+import type { Termination } from '../termination';
+import {
+  countLevelsBelow,
+  integrateProduct,
+  type RadialState,
+  radialEquation,
+  solveLevel,
+} from './radial-equation';
+import { mappedDistance, type RadialGrid, radialGrid } from './radial-grid';
+import { type RadialCurve, radialRange } from './radial-range';
+
+export interface FranckCondonOptions {
+  /** J of both levels; default 0 */
+  readonly rotation?: number;
+  /** most levels of each curve, from the lowest; default 60 */
+  readonly mostLevels?: number;
+  /** wanted uncertainty of a factor; default 1e-6 */
+  readonly tolerance?: number;
+  /** outer end of the range, bohr; default 200 equilibrium distances */
+  readonly outermost?: number;
+  /** transition moment in e·bohr at a distance in bohr; for bands beyond the Condon approximation */
+  readonly transitionMoment?: (distance: number) => number;
+}
+
+export interface FranckCondonFactors {
+  /** |⟨v′|v″⟩|², one row for each level v″ of the initial curve, one column for each v′ of the final curve */
+  readonly factors: readonly (readonly number[])[];
+  /** |⟨v′|μ(r)|v″⟩|² in e²·bohr², same order; undefined without a transition moment */
+  readonly strengths: readonly (readonly number[])[] | undefined;
+  /**
+   * sum of each row: 1 less what goes to the continuum of the final curve and to levels that were not asked for
+   */
+  readonly sums: readonly number[];
+  /** largest change of a factor with the last halving of the grid */
+  readonly uncertainty: number;
+  readonly termination: Termination;
+}
+
+const MOST_LEVELS = 60;
+const TOLERANCE = 1e-6;
+/** Phase a step of the first grid, radian; waves converge as its fourth power. */
+const FIRST_PHASE = 0.1;
+const HALVINGS = 4;
+
+/**
+ * Overlaps between the bound levels of two curves of one molecule, both solved for on one grid.
+ *
+ * Source: E. U. Condon, Phys. Rev. 32, 858 (1928).
+ *
+ * @param mass - reduced mass, electron masses
+ */
+export function franckCondonFactors(
+  initial: RadialCurve,
+  final: RadialCurve,
+  mass: number,
+  options: FranckCondonOptions = {},
+): FranckCondonFactors {
+  const { tolerance = TOLERANCE, transitionMoment } = options;
+  const ranges = [initial, final].map((curve) => radialRange(curve, mass, options.outermost));
+  const scale = Math.min(...ranges.map(({ centre }) => centre));
+  const from = Math.min(...ranges.map((range) => range.from));
+  const to = Math.max(...ranges.map((range) => range.to));
+  // each phase belongs to the map scaled by its own centre; with the smaller one the map is stretched at most so much
+  const phase = Math.max(...ranges.map((range) => (range.phase * range.centre) / scale));
+  let intervals = Math.ceil(
+    ((mappedDistance(to, scale) - mappedDistance(from, scale)) * phase) / FIRST_PHASE,
+  );
+
+  const solve = () => {
+    const grid = radialGrid(scale, from, to, intervals);
+    const rows = statesOn(grid, initial, mass, options);
+    const columns = statesOn(grid, final, mass, options);
+    const squares = (f: (distance: number) => number) =>
+      rows.map((row) =>
+        columns.map((column) => integrateProduct(grid, row.amplitude, column.amplitude, f) ** 2),
+      );
+    return { factors: squares(() => 1), squares };
+  };
+
+  let current = solve();
+  let uncertainty = Number.POSITIVE_INFINITY;
+  let termination: Termination = { kind: 'iterationLimit', limit: HALVINGS };
+  for (let halving = 0; halving < HALVINGS && termination.kind !== 'converged'; halving++) {
+    intervals *= 2;
+    const finer = solve();
+    uncertainty = largestChange(current.factors, finer.factors);
+    current = finer;
+    if (uncertainty <= tolerance) termination = { kind: 'converged' };
+  }
+  return {
+    factors: current.factors,
+    strengths: transitionMoment && current.squares(transitionMoment),
+    sums: current.factors.map((row) => row.reduce((sum, factor) => sum + factor, 0)),
+    uncertainty,
+    termination,
+  };
+}
+
+function statesOn(
+  grid: RadialGrid,
+  curve: RadialCurve,
+  mass: number,
+  { rotation = 0, mostLevels = MOST_LEVELS }: FranckCondonOptions,
+): RadialState[] {
+  const equation = radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation);
+  const count = Math.min(countLevelsBelow(equation, 0), mostLevels);
+  return Array.from({ length: count }, (_, v) => solveLevel(equation, v, 0)).filter(
+    (state) => state !== undefined,
+  );
+}
+
+/** Infinite where the number of levels changed. */
+function largestChange(
+  before: readonly (readonly number[])[],
+  after: readonly (readonly number[])[],
+): number {
+  if (before.length !== after.length || before[0]?.length !== after[0]?.length)
+    return Number.POSITIVE_INFINITY;
+  return Math.max(0, ...after.flatMap((row, i) => row.map((factor, j) => Math.abs(factor - before[i][j]))));
+}
