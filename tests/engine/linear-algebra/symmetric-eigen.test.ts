@@ -1,7 +1,40 @@
+import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
 import { describe, expect, it } from 'vitest';
-import { congruence, multiplyLeftTransposed } from '../../../engine/linear-algebra/dense';
+import {
+  congruence,
+  maximumAbsolute,
+  multiplyLeftTransposed,
+  multiplyRightTransposed,
+} from '../../../engine/linear-algebra/dense';
 import { symmetricEigen } from '../../../engine/linear-algebra/symmetric-eigen';
 import { randomSymmetric, seededRandom } from '../../support/random';
+
+/** Largest |VᵀAV − values|, against the largest |A|, and largest |VᵀV − 1|. */
+function defects(
+  matrix: Float64Array,
+  n: number,
+): { residual: number; orthogonality: number; values: Float64Array } {
+  const { values, vectors } = symmetricEigen(matrix, n);
+  const diagonal = congruence(matrix, vectors, n, n);
+  const metric = multiplyLeftTransposed(vectors, vectors, n, n, n);
+  let residual = 0;
+  let orthogonality = 0;
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < n; j++) {
+      residual = Math.max(residual, Math.abs(diagonal[i * n + j] - (i === j ? values[i] : 0)));
+      orthogonality = Math.max(orthogonality, Math.abs(metric[i * n + j] - (i === j ? 1 : 0)));
+    }
+  }
+  return { residual: residual / Math.max(maximumAbsolute(matrix), Number.MIN_VALUE), orthogonality, values };
+}
+
+/** A matrix with the spectrum given, turned by the eigenvectors of a random one. */
+function withSpectrum(spectrum: readonly number[], seed: number): Float64Array {
+  const n = spectrum.length;
+  const { vectors } = symmetricEigen(randomSymmetric(n, seededRandom(seed)), n);
+  const scaled = Float64Array.from(vectors, (element, k) => element * spectrum[k % n]);
+  return multiplyRightTransposed(scaled, vectors, n, n, n);
+}
 
 describe('symmetricEigen', () => {
   it.each([1, 2, 7, 30])('identity: VᵀAV is diagonal with rising values and VᵀV = 1, n = %i', (n) => {
@@ -35,5 +68,82 @@ describe('symmetricEigen', () => {
 
   it('identity: a matrix with NaN is refused at once instead of iterating for ever', () => {
     expect(() => symmetricEigen(Float64Array.of(1, Number.NaN, Number.NaN, 1), 2)).toThrow(RangeError);
+  });
+
+  it.each([3, 17, 64, 150])('independent: the eigenvalues that ml-matrix finds, n = %i', (n) => {
+    const matrix = randomSymmetric(n, seededRandom(100 + n));
+    const library = new EigenvalueDecomposition(Matrix.from1DArray(n, n, Array.from(matrix)), {
+      assumeSymmetric: true,
+    }).realEigenvalues;
+    symmetricEigen(matrix, n).values.forEach((value, k) => {
+      expect(Math.abs(value - library[k])).toBeLessThan(1e-12);
+    });
+  });
+
+  it.each([
+    ['clustered to 1e-10', Array.from({ length: 40 }, (_, k) => (k % 4) + 1e-10 * k)],
+    ['sevenfold degenerate', Array.from({ length: 42 }, (_, k) => Math.floor(k / 7) - 3)],
+    ['all equal', Array.from({ length: 25 }, () => 1.25)],
+    ['of rank one', Array.from({ length: 31 }, (_, k) => (k === 7 ? 4 : 0))],
+    ['graded over 14 decades', Array.from({ length: 29 }, (_, k) => 10 ** (-k / 2))],
+    ['in pairs of opposite sign', Array.from({ length: 36 }, (_, k) => (k % 2 ? 1 : -1) * (1 + (k >> 1)))],
+  ])('identity: a spectrum %s comes back', (_, spectrum) => {
+    const n = spectrum.length;
+    const { residual, orthogonality, values } = defects(withSpectrum(spectrum, n), n);
+    expect(residual).toBeLessThan(1e-13);
+    expect(orthogonality).toBeLessThan(1e-13);
+    const scale = Math.max(...spectrum.map(Math.abs));
+    spectrum
+      .slice()
+      .sort((a, b) => a - b)
+      .forEach((value, k) => {
+        expect(Math.abs(values[k] - value)).toBeLessThan(1e-13 * scale * Math.sqrt(n));
+      });
+  });
+
+  it('identity: the matrix of ones has the eigenvalue n once and 0 otherwise', () => {
+    const n = 33;
+    const { values } = symmetricEigen(new Float64Array(n * n).fill(1), n);
+    expect(Math.abs(values[n - 1] - n)).toBeLessThan(1e-12);
+    for (let k = 0; k < n - 1; k++) expect(Math.abs(values[k])).toBeLessThan(1e-13);
+  });
+
+  it('identity: the middle of Wilkinson’s matrix W21+ is found although its pairs agree to 1e-14', () => {
+    const n = 21;
+    const matrix = new Float64Array(n * n);
+    for (let i = 0; i < n; i++) {
+      matrix[i * n + i] = Math.abs(i - 10);
+      if (i > 0) matrix[i * n + i - 1] = matrix[(i - 1) * n + i] = 1;
+    }
+    const { residual, orthogonality, values } = defects(matrix, n);
+    expect(residual).toBeLessThan(1e-14);
+    expect(orthogonality).toBeLessThan(1e-13);
+    expect(values[20] - values[19]).toBeLessThan(1e-13);
+    // the trace, 2·(1 + … + 10)
+    const total = values.reduce((sum, value) => sum + value, 0);
+    expect(Math.abs(total - 110)).toBeLessThan(1e-12);
+  });
+
+  it.each([1e-300, 1e-150, 1e150, 1e300])(
+    'identity: scaling the matrix by %d scales its eigenvalues',
+    (factor) => {
+      const n = 12;
+      const matrix = randomSymmetric(n, seededRandom(5));
+      const { values } = symmetricEigen(matrix, n);
+      const scaled = symmetricEigen(
+        matrix.map((element) => element * factor),
+        n,
+      );
+      scaled.values.forEach((value, k) => {
+        expect(Math.abs(value / factor - values[k])).toBeLessThan(1e-13);
+      });
+    },
+  );
+
+  it('identity: the zero matrix, a diagonal one and one of size 0', () => {
+    expect(symmetricEigen(new Float64Array(0), 0).values).toHaveLength(0);
+    expect(defects(new Float64Array(9), 3)).toMatchObject({ residual: 0, orthogonality: 0 });
+    const { values } = symmetricEigen(Float64Array.of(3, 0, 0, 0, -1, 0, 0, 0, 2), 3);
+    expect(Array.from(values)).toEqual([-1, 2, 3]);
   });
 });
