@@ -56,6 +56,7 @@ const ENGINE_ORDER = [
   'integrals',
   'symmetry',
   'self-consistent-field',
+  'perturbation',
   'configuration-interaction',
   'curves',
   'calculation',

@@ -1,12 +1,11 @@
 import { execFileSync } from 'node:child_process';
 import { mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { beforeAll, describe, expect, it } from 'vitest';
-import { buildProgram, farwell } from '../support/built-program';
+import { describe, expect, it } from 'vitest';
+import { farwell } from '../support/built-program';
 import { helium, nitrogen } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
-beforeAll(buildProgram);
 const { version } = JSON.parse(readFileSync('package.json', 'utf8')) as { version: string };
 const folder = temporaryFolder();
 

@@ -1,11 +1,10 @@
 import { closeSync, ftruncateSync, openSync, readdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { beforeAll, describe, expect, it } from 'vitest';
-import { buildProgram, farwell } from '../support/built-program';
+import { describe, expect, it } from 'vitest';
+import { farwell } from '../support/built-program';
 import { helium } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
-beforeAll(buildProgram);
 const folder = temporaryFolder();
 let files = 0;
 

@@ -1,7 +1,7 @@
 import { existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
-import { buildProgram, farwell, type RunningProgram, startFarwell } from '../support/built-program';
+import { farwell, type RunningProgram, startFarwell } from '../support/built-program';
 import { nitrogen } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
@@ -40,7 +40,6 @@ async function expectToGoOn(out: string): Promise<void> {
 }
 
 beforeAll(async () => {
-  buildProgram();
   writeFileSync(study, JSON.stringify(nitrogen));
   const { status } = await farwell('run', study, '--out', unbroken);
   expect(status).toBe(0);

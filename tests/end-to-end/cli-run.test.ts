@@ -1,14 +1,13 @@
 import { mkdirSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { Study, StudyResults } from '#engine';
 import { studyCsv } from '../../app/study/csv';
 import { parseResults } from '../../app/study/parse-results';
-import { buildProgram, farwell, startFarwell } from '../support/built-program';
+import { farwell, startFarwell } from '../support/built-program';
 import { helium } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
-beforeAll(buildProgram);
 const folder = temporaryFolder();
 
 function writtenStudy(name: string, study: Study = helium): string {

@@ -2,7 +2,7 @@ import { readFile } from 'node:fs/promises';
 import { createRequire } from 'node:module';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { buildProgram, type RunningProgram, startProgram } from '../support/built-program';
+import { type RunningProgram, startProgram } from '../support/built-program';
 import { launchBrowser } from '../support/real-browser';
 
 /* The window as users have it: the built program, served by `npm start -- --no-open`, in a real browser. */
@@ -28,7 +28,6 @@ let address: string;
 let browser: Browser;
 
 beforeAll(async () => {
-  buildProgram();
   host = startProgram('start.js', ['--no-open']);
   const served = new Promise<string>((resolve) => {
     host.process.stdout?.on('data', (text) => resolve(String(text).trim()));
@@ -158,7 +157,7 @@ describe('the window', () => {
     await page.getByRole('columnheader', { name: 'Energy, eV' }).first().waitFor();
     expect(asNumber(await cellOf('FCI', 0)) / inHartree).toBeCloseTo(27.2113862, 5);
     await page.getByRole('radio', { name: 'above own minimum' }).click();
-    await page.locator('.ytitle', { hasText: 'Energy above own minimum, eV' }).waitFor(PATIENCE);
+    await page.locator('.annotation-text', { hasText: 'Energy above own minimum, eV' }).waitFor(PATIENCE);
     await page.getByRole('radio', { name: 'ångström' }).click();
     await page.locator('.xtitle, .x2title', { hasText: 'Bond length, Å' }).waitFor(PATIENCE);
   });

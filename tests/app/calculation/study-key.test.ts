@@ -1,11 +1,8 @@
 import fc from 'fast-check';
-import { beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { prepareStudy, type Study } from '#engine';
 import { canonicalJson, studyKey } from '../../../app/calculation/study-key';
-import { buildProgram } from '../../support/built-program';
 import { helium } from '../../support/end-to-end-studies';
-
-beforeAll(buildProgram);
 
 function keyOf(study: Study): string {
   const preparation = prepareStudy(study);

@@ -1,11 +1,8 @@
-import { beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { prepareStudy } from '#engine';
 import type { WorkerReply, WorkerStart } from '../../../app/calculation/messages';
 import { startWorkerThread } from '../../../app/calculation/worker-thread';
-import { buildProgram } from '../../support/built-program';
 import { helium } from '../../support/end-to-end-studies';
-
-beforeAll(buildProgram);
 
 const preparation = prepareStudy(helium);
 if (!preparation.ok) throw preparation.errors[0];
@@ -30,7 +27,7 @@ describe('startWorkerThread', () => {
       expect.objectContaining({
         kind: 'point',
         index: 2,
-        carry: { occupiedOrbitals: expect.any(Float64Array) },
+        carry: { restricted: { alpha: expect.any(Float64Array), beta: expect.any(Float64Array) } },
       }),
       expect.objectContaining({ kind: 'point', index: 3 }),
       { kind: 'free' },

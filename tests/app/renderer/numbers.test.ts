@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import {
+  commonDecimals,
   formatBytes,
   formatDuration,
   formatFixed,
@@ -24,6 +25,13 @@ describe('numbers as the window writes them', () => {
     expect(formatFixed(-1e-12, 5)).toBe('0.00000');
     expect(formatFixed(Number.NaN, 5)).toBe('–');
     expect(formatScientific(Number.POSITIVE_INFINITY)).toBe('–');
+  });
+
+  it('finds the decimals that a column of coordinates needs', () => {
+    expect(commonDecimals([0.4, 0.1 + 0.2, 1], 6)).toBe(1);
+    expect(commonDecimals([0.4, 1 / 3], 6)).toBe(6);
+    expect(commonDecimals([60, 120], 6)).toBe(0);
+    expect(commonDecimals([], 6)).toBe(0);
   });
 
   it('writes small numbers by their power of ten', () => {

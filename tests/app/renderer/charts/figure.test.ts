@@ -56,6 +56,15 @@ describe('the figure of a computation', () => {
       expect(new Set(ground.map(look)).size).toBe(3);
   });
 
+  it('tells excited states by open marks, and triplets by a mark of their own', () => {
+    const symbolOf = (label: string) => traces().find(({ name }) => name === label)?.marker.symbol;
+    expect(['CIS singlet 1', 'CIS triplet 1', 'FCI'].map(symbolOf)).toEqual([
+      'diamond-open',
+      'triangle-up-open',
+      'circle',
+    ]);
+  });
+
   it('draws a point that has not converged as a cross, outside of the line', () => {
     const drawn = traces({ points: unconverged }).filter(
       ({ name, yaxis }) => yaxis === 'y' && name.startsWith('CISD'),
@@ -94,7 +103,7 @@ describe('the figure of a computation', () => {
     expect(low).toBeLessThan(0.4 / 0.5292);
     expect(high).toBeGreaterThan(4 / 0.5292);
     expect(only.xaxis?.title).toMatchObject({ text: 'Bond length, a₀' });
-    expect(only.yaxis?.title).toMatchObject({ text: 'Energy, Eₕ' });
+    expect(only.annotations?.map(({ text }) => text)).toEqual(['Energy, Eₕ', 'Correlation energy, Eₕ']);
   });
 
   it('keeps the charts apart however small the drawing is', () => {

@@ -26,7 +26,7 @@ describe('the figure for print', () => {
   it('has the study sentence below, in lines that fit, never as markup', () => {
     const caption = `Pull the <b>bond</b> & more: ${'word '.repeat(60)}`.trim();
     const { layout, height } = figureOf(caption);
-    const text = String(layout.annotations?.[0]?.text);
+    const text = String(layout.annotations?.at(-1)?.text);
     expect(text).toContain('&lt;b&gt;bond&lt;/b&gt; &amp; more');
     expect(text.split('<br>').length).toBeGreaterThan(2);
     expect(height).toBeGreaterThan(figureOf('short').height);
