@@ -25,6 +25,7 @@ export type {
   LevelFindings,
   LevelResult,
   LevelTermination,
+  OrbitalLabels,
   PerturbationResult,
   PointResult,
   SinglesResult,
@@ -53,4 +54,6 @@ export {
 } from './constants';
 export { EngineError, type EngineErrorCode, type EngineErrorDetails, type SerializedEngineError } from './errors';
 export type { Vector3 } from './molecule/molecule';
+export type { PointGroupName } from './symmetry/point-groups';
+export type { StateSymmetry, TermSymbol } from './symmetry/state-symmetry';
 export { type RunControl, type Termination, UNATTENDED } from './termination';

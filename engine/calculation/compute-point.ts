@@ -5,6 +5,7 @@ import { nuclearDipole } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
 import { type RunControl, UNATTENDED } from '../termination';
 import { pointCautions } from './cautions';
+import { type FieldSymmetry, symmetriseFields } from './field-symmetry';
 import {
   type CorrelationInput,
   computeCorrelated,
@@ -49,7 +50,7 @@ export function computePoint(
   const integrals = molecularIntegrals(molecule, basis);
 
   const chosen = prepared.levels.filter((level) => options.levels?.includes(level.name) ?? true);
-  const fields = solveMeanFields(
+  const solved = solveMeanFields(
     prepared,
     molecule,
     basis,
@@ -58,14 +59,16 @@ export function computePoint(
     options.guess,
     control,
   );
+  const { fields, symmetry } = symmetriseFields(prepared, molecule, basis, integrals.problem.overlap, solved);
+  const { pointGroup, linear } = symmetry.molecule;
   const correlation = needsOrbitalIntegrals(chosen)
-    ? correlationInput(prepared, molecule, integrals, fields.reference, control)
+    ? correlationInput(prepared, molecule, integrals, fields.reference, symmetry, control)
     : undefined;
   const levels: Record<string, LevelResult> = {};
   for (const level of chosen) {
     switch (level.kind) {
       case 'hartreeFock':
-        levels[level.name] = hartreeFockResult(level.name, fields, molecule, integrals);
+        levels[level.name] = hartreeFockResult(level.name, fields, symmetry, molecule, integrals);
         break;
       case 'perturbation':
         levels[level.name] = secondOrderResult(prepared, fields, integrals);
@@ -83,6 +86,7 @@ export function computePoint(
       coordinate,
       atoms: prepared.geometryAt(coordinate),
       nuclearRepulsion: integrals.problem.nuclearRepulsion,
+      symmetry: { pointGroup, ...(linear && { linear }) },
       levels,
       cautions: pointCautions(prepared, fields, levels),
     },
@@ -99,6 +103,7 @@ function correlationInput(
   molecule: Molecule,
   integrals: MolecularIntegrals,
   meanField: MeanFields['reference'],
+  symmetry: FieldSymmetry,
   control: RunControl,
 ): CorrelationInput {
   const { problem, dipole } = integrals;
@@ -126,6 +131,7 @@ function correlationInput(
     energyTolerance: prepared.study.convergence.energy,
     meanFieldEnergy: meanField.energy,
     memoryLimit: prepared.memoryLimit,
+    symmetry,
     orbitalsConverged: meanField.termination.kind === 'converged',
     control,
   };

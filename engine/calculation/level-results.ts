@@ -1,6 +1,7 @@
 import type { ConfigurationInteractionState } from '../configuration-interaction/describe-state';
 import { solveSingles } from '../configuration-interaction/singles';
 import { solveConfigurationInteraction } from '../configuration-interaction/solve';
+import type { OrbitalSpecies, VectorSymmetry } from '../configuration-interaction/vector-symmetry';
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { dot } from '../linear-algebra/dense';
 import { nuclearDipole } from '../molecule/build-molecule';
@@ -11,7 +12,9 @@ import {
   unrestrictedSecondOrder,
 } from '../perturbation/second-order';
 import { columnRange } from '../self-consistent-field/mean-field';
+import { type StateSymmetry, stateSymmetry } from '../symmetry/state-symmetry';
 import type { RunControl, Termination } from '../termination';
+import type { FieldSymmetry, HartreeFockName } from './field-symmetry';
 import type { Level } from './levels';
 import type { MeanFields } from './mean-fields';
 import type { MolecularIntegrals } from './molecular-integrals';
@@ -42,14 +45,16 @@ export interface CorrelationInput {
   readonly states: number;
   readonly energyTolerance: number;
   readonly meanFieldEnergy: number;
+  readonly symmetry: FieldSymmetry;
   readonly orbitalsConverged: boolean;
   readonly memoryLimit: number;
   readonly control: RunControl;
 }
 
 export function hartreeFockResult(
-  name: 'RHF' | 'UHF' | 'ROHF',
+  name: HartreeFockName,
   fields: MeanFields,
+  symmetry: FieldSymmetry,
   molecule: Molecule,
   { dipole }: MolecularIntegrals,
 ): HartreeFockResult {
@@ -68,6 +73,7 @@ export function hartreeFockResult(
       solution.orbitalEnergies instanceof Float64Array
         ? Array.from(solution.orbitalEnergies)
         : { alpha: Array.from(solution.orbitalEnergies[0]), beta: Array.from(solution.orbitalEnergies[1]) },
+    ...symmetry.labels[name],
     dipole: vector((axis) =>
       densities.reduce<number>((sum, density) => sum - dot(density, dipole[axis]), nuclear[axis]),
     ),
@@ -131,6 +137,7 @@ export function computeSingles(input: CorrelationInput): SinglesResult {
     occupied: input.activeElectrons[0],
     states: input.states,
     dipole: input.dipole.map((matrix) => activeBlock(matrix, orbitalCount, frozen)),
+    ...activeSpecies(input),
     control: input.control,
   });
   const termination = onOrbitals(input, result.termination);
@@ -142,6 +149,7 @@ export function computeSingles(input: CorrelationInput): SinglesResult {
       energy: state.energy,
       excitation: state.excitation,
       spin: state.spin,
+      ...symmetryOf(state, input),
       oscillatorStrength: state.oscillatorStrength,
       transitionDipole: state.transitionDipole,
       leading: state.leading.map(({ from, to, weight }) => ({
@@ -166,10 +174,12 @@ export function computeCorrelated(
     maximumRank: level.maximumRank,
     states: input.states,
     memoryLimit: input.memoryLimit,
+    ...activeSpecies(input),
     control: input.control,
   });
   // integrals that are not finite leave nothing to report
-  if (result.states.length === 0) return { kind: 'failed', converged: false, termination: result.termination };
+  if (result.states.length === 0)
+    return { kind: 'failed', converged: false, termination: result.termination };
   const independent = level.maximumRank >= active && input.frozen === 0;
   const termination = independent ? result.termination : onOrbitals(input, result.termination);
   const states = result.states.map((state) => stateResult(state, result.states[0].energy, input));
@@ -187,6 +197,7 @@ export function computeCorrelated(
     referenceWeight: lowest.referenceWeight,
     sSquared: lowest.sSquared,
     spin: lowest.spin,
+    ...(lowest.symmetry && { symmetry: lowest.symmetry }),
     naturalOccupations: lowest.naturalOccupations,
     dipole: lowest.dipole,
     ...(isTruncated && { davidsonCorrected: lowest.energy + (1 - lowest.referenceWeight) * correlation }),
@@ -206,6 +217,7 @@ function stateResult(
     energy: state.energy,
     excitation: state.energy - lowestEnergy,
     spin: state.spin,
+    ...symmetryOf(state, input),
     sSquared: state.sSquared,
     referenceWeight: state.referenceWeight,
     residual: state.residual,
@@ -224,6 +236,28 @@ function stateResult(
       }),
     ),
   };
+}
+
+/** Frozen orbitals are filled, so that they add nothing to the symmetry of a state. */
+function activeSpecies({ symmetry: { species }, orbitalCount, frozen }: CorrelationInput): {
+  species?: OrbitalSpecies;
+} {
+  if (!species) return {};
+  const { irreps, axialRotation } = species;
+  return {
+    species: {
+      irreps: irreps.slice(frozen),
+      ...(axialRotation && { axialRotation: activeBlock(axialRotation, orbitalCount, frozen) }),
+    },
+  };
+}
+
+function symmetryOf(
+  { symmetry: found }: { readonly symmetry?: VectorSymmetry },
+  input: CorrelationInput,
+): { symmetry?: StateSymmetry } {
+  const symmetry = found && stateSymmetry(input.symmetry.molecule, found.irrepWeights, found.axialSquare);
+  return symmetry ? { symmetry } : {};
 }
 
 function onOrbitals(input: CorrelationInput, termination: Termination): LevelTermination {

@@ -1,6 +1,8 @@
 import type { Harmonics, ShellDefinition } from '../basis/contracted-gaussian';
 import type { SpinName } from '../configuration-interaction/spin';
 import type { Vector3 } from '../molecule/molecule';
+import type { PointGroupName } from '../symmetry/point-groups';
+import type { StateSymmetry } from '../symmetry/state-symmetry';
 import type { Termination } from '../termination';
 import type { CompleteStudy, StudyAtom } from './study';
 
@@ -39,6 +41,8 @@ export interface PointResult {
   /** in the study's unit */
   readonly atoms: readonly StudyAtom[];
   readonly nuclearRepulsion: number;
+  /** largest Abelian point group, which labels are named in; of a linear molecule also its whole group */
+  readonly symmetry?: { readonly pointGroup: PointGroupName; readonly linear?: 'C∞v' | 'D∞h' };
   readonly levels: Readonly<Record<string, LevelResult>>;
   readonly cautions: readonly Caution[];
 }
@@ -76,6 +80,10 @@ export interface HartreeFockResult {
   readonly termination: Termination;
   readonly iterations: number;
   readonly orbitalEnergies: readonly number[] | SpinOrbitalEnergies;
+  /** in the same order, as `1σg` or `2a1`; null for an orbital that breaks the symmetry */
+  readonly orbitalSymmetries?: OrbitalLabels | { readonly alpha: OrbitalLabels; readonly beta: OrbitalLabels };
+  /** of the determinant; absent where it breaks the symmetry */
+  readonly symmetry?: StateSymmetry;
   /** e·bohr, about the origin of the study's coordinates, for ions too */
   readonly dipole: Vector3;
   /** ⟨S²⟩; UHF and ROHF */
@@ -86,6 +94,8 @@ export interface HartreeFockResult {
    */
   readonly stability?: { readonly singlet: number; readonly triplet: number } | { readonly own: number };
 }
+
+export type OrbitalLabels = readonly (string | null)[];
 
 export interface SpinOrbitalEnergies {
   readonly alpha: readonly number[];
@@ -111,6 +121,8 @@ export interface SinglesState {
   /** above the RHF energy */
   readonly excitation: number;
   readonly spin: 'singlet' | 'triplet';
+  /** absent where it is not determined, as over orbitals that break the symmetry */
+  readonly symmetry?: StateSymmetry;
   /** length form; 0 for triplets */
   readonly oscillatorStrength: number;
   /** ⟨0|−r|state⟩, e·bohr */
@@ -139,6 +151,8 @@ export interface CorrelatedState {
   /** above this level's lowest state */
   readonly excitation: number;
   readonly spin: SpinName;
+  /** absent where it is not determined, as over orbitals that break the symmetry */
+  readonly symmetry?: StateSymmetry;
   readonly sSquared: number;
   readonly referenceWeight: number;
   readonly residual: number;
@@ -160,6 +174,7 @@ export interface CorrelatedResult {
   readonly referenceWeight: number;
   readonly sSquared: number;
   readonly spin: SpinName;
+  readonly symmetry?: StateSymmetry;
   /** falling, frozen orbitals included with 2 */
   readonly naturalOccupations: readonly number[];
   readonly dipole: Vector3;

@@ -15,7 +15,10 @@ export interface OrbitalSet {
   readonly energies: Float64Array;
 }
 
-/** Orbitals of which each belongs to one irreducible representation, as far as symmetry allows. */
+/**
+ * Orbitals of which each belongs to one irreducible representation, as far as symmetry allows, of the group in the
+ * axes that were given.
+ */
 export interface SymmetricOrbitals extends OrbitalSet {
   /** number of each orbital's representation, multiplied by exclusive or; undefined where it has none */
   readonly irreps: readonly (number | undefined)[];

@@ -1,5 +1,6 @@
 import { axialMomentum } from './axial-momentum';
 import { inversionName } from './orbital-labels';
+import type { SymmetricOrbitals } from './orbital-symmetry';
 import type { MolecularSymmetry } from './point-group';
 import { character, POINT_GROUPS } from './point-groups';
 
@@ -47,4 +48,31 @@ export function stateSymmetry(
       },
     }),
   };
+}
+
+/**
+ * Symmetry of a Hartree–Fock determinant: the product of its occupied orbitals. The angular momentum turns it into the
+ * single excitations i → a, each with the factor ⟨a| ∂/∂φ |i⟩.
+ *
+ * @param orbitals - alpha, beta
+ * @param occupied - how many of the first orbitals are occupied, alpha and beta
+ */
+export function symmetryOfDeterminant(
+  symmetry: Pick<MolecularSymmetry, 'pointGroup' | 'linear'>,
+  orbitals: readonly [SymmetricOrbitals, SymmetricOrbitals],
+  occupied: readonly [number, number],
+): StateSymmetry | undefined {
+  let product = 0;
+  let axialSquare = 0;
+  for (const [spin, { irreps, axialRotation }] of orbitals.entries()) {
+    const m = irreps.length;
+    for (let i = 0; i < occupied[spin]; i++) {
+      const irrep = irreps[i];
+      if (irrep === undefined) return undefined;
+      product ^= irrep;
+      for (let a = occupied[spin]; axialRotation && a < m; a++) axialSquare += axialRotation[a * m + i] ** 2;
+    }
+  }
+  const weights = POINT_GROUPS[symmetry.pointGroup].irreps.map((_, irrep) => Number(irrep === product));
+  return stateSymmetry(symmetry, weights, axialSquare);
 }
