@@ -107,8 +107,8 @@ export function createFakeHost({
     },
     async request(name, ...args) {
       requests.push({ name, payload: args[0] });
-      const handle = handlers[name] as (payload: unknown) => ReturnType<Requests[typeof name]>;
-      return { ok: true, value: handle(args[0]) };
+      const handle = handlers[name] as (...payload: typeof args) => ReturnType<Requests[typeof name]>;
+      return { ok: true, value: handle(...args) };
     },
     subscribe(name, listener) {
       const ofName = listeners.get(name) ?? new Set();

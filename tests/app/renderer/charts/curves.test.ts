@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { PointResult } from '#engine';
+import type { PointResult, SinglesResult } from '#engine';
 import {
   type CurveOptions,
   correlationCurves,
@@ -51,9 +51,7 @@ describe('curves of a chart', () => {
     const above = curveOf('CIS singlet 1', { energyReference: 'ownMinimum', energyUnit: 'electronvolt' });
     const ground = curveOf('RHF', { energyReference: 'ownMinimum', energyUnit: 'electronvolt' });
     const point = points[5]!;
-    const singlet = (point.levels.CIS as { states: { spin: string; energy: number }[] }).states.find(
-      ({ spin }) => spin === 'singlet',
-    )!;
+    const singlet = (point.levels.CIS as SinglesResult).states.find(({ spin }) => spin === 'singlet')!;
     expect(above.values[5]! - ground.values[5]!).toBeCloseTo(
       (singlet.energy - energy(point, 'RHF')) * HARTREE_IN_EV,
       10,
