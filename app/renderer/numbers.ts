@@ -14,6 +14,12 @@ export function formatFixed(value: number, decimals: number): string {
   return value < 0 && !isZero ? MINUS + digits : digits;
 }
 
+/** As few decimals, up to `most`, as write every one of the numbers as closely as `most` decimals would. */
+export function commonDecimals(values: readonly number[], most: number): number {
+  const needed = values.map((value) => (value.toFixed(most).split('.')[1] ?? '').replace(/0+$/, '').length);
+  return Math.max(0, ...needed);
+}
+
 /** A small number by its power of ten: 3.2 × 10⁻⁹. */
 export function formatScientific(value: number, digits = 1): string {
   if (!Number.isFinite(value)) return '–';

@@ -1,14 +1,8 @@
 import type { StudyResults } from '#engine';
+import { styleOfLevel } from '../study/level-style';
 import { type CurvePoint, type CurveSeries, curveSeries } from './curve-series';
 import { coordinateRange, correlationRange, energyRange } from './figure-ranges';
-import {
-  type CurveStyle,
-  FAINT_INK,
-  FILE_COLOURS,
-  HIGHER_STATE_DASH,
-  styleOfLevel,
-  TRIPLET_DASH,
-} from './figure-style';
+import { type CurveStyle, FAINT_INK, FILE_COLOURS, HIGHER_STATE_DASH, TRIPLET_DASH } from './figure-style';
 import { coordinateHeading, sharedCoordinate } from './scanned-coordinate';
 
 export interface DrawnPoint {
@@ -78,9 +72,8 @@ export function planFigure(
   );
   if (series.length === 0) return { reason: 'No level gave an energy at any point.' };
 
-  const levels = [...new Set(series.map(({ level }) => level))];
   const styleOf = ({ level, file, family, isExcited }: CurveSeries): CurveStyle => {
-    const ofLevel = styleOfLevel(level, levels);
+    const ofLevel = styleOfLevel(level);
     const dash = isExcited ? excitedDash(family) : ofLevel.dash;
     const style = { ...ofLevel, dash };
     return results.length === 1 ? style : { ...style, colour: FILE_COLOURS[file % FILE_COLOURS.length]! };

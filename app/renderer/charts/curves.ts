@@ -18,6 +18,8 @@ export interface Curve {
   readonly label: string;
   readonly level: string;
   readonly isExcited: boolean;
+  /** a triplet at every point */
+  readonly isTriplet: boolean;
   /** in the axis's unit; null where there is nothing to draw */
   readonly values: readonly (number | null)[];
   readonly isConverged: readonly boolean[];
@@ -88,6 +90,7 @@ function curve(
     label,
     level,
     isExcited,
+    isTriplet: entries.every((entry) => entry === undefined || entry.spin === 'triplet'),
     values: entries.map((entry) => {
       const drawn = entry === undefined ? null : value(entry);
       return drawn === null || Number.isFinite(drawn) ? drawn : null;

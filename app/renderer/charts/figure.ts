@@ -1,4 +1,4 @@
-import type { Dash, Data, Layout } from 'plotly.js-dist';
+import type { Annotation, Dash, Data, Layout } from 'plotly.js-dist';
 import type { Study } from '#engine';
 import { ENERGY_UNITS, LENGTH_UNITS } from '../units';
 import type { ChartTheme } from './chart-theme';
@@ -30,8 +30,8 @@ export interface Figure {
 }
 
 /** What the charts leave free, in pixels. */
-const MARGIN = { l: 64, r: 14, t: 10, b: 46 } as const;
-const GAP = 26;
+const MARGIN = { l: 40, r: 14, t: 28, b: 46 } as const;
+const GAP = 34;
 const CAUTION_STRIP = 18;
 /** of the height that the two charts share */
 const CORRELATION_SHARE = 0.35;
@@ -69,11 +69,19 @@ export function buildFigure(request: FigureRequest): Figure {
       hovermode: 'x',
       hoverdistance: -1,
       spikedistance: -1,
+      annotations: [
+        chartTitle(energyTitle(request), bands.energy[1], theme),
+        chartTitle(
+          `Correlation energy, ${ENERGY_UNITS[request.energyUnit].symbol}`,
+          bands.correlation[1],
+          theme,
+        ),
+      ],
       uirevision: request.zoomKey,
       xaxis: {
         ...axisLook(theme),
         anchor: hasCautions ? 'y3' : 'y2',
-        title: title(axisTitle(study, request), theme),
+        title: { text: axisTitle(study, request), standoff: 10, font: quietFont(theme) },
         ...fullRange(study, x, request),
         showspikes: true,
         spikemode: 'across',
@@ -85,13 +93,11 @@ export function buildFigure(request: FigureRequest): Figure {
       yaxis: {
         ...axisLook(theme),
         domain: bands.energy,
-        title: title(energyTitle(request), theme),
         automargin: true,
       },
       yaxis2: {
         ...axisLook(theme),
         domain: bands.correlation,
-        title: title(`Correlation, ${ENERGY_UNITS[request.energyUnit].symbol}`, theme),
         automargin: true,
       },
       ...(hasCautions && {
@@ -132,10 +138,19 @@ function bandsOf(height: number, hasCautions: boolean): Bands {
   };
 }
 
-const title = (text: string, theme: ChartTheme) => ({
+const quietFont = (theme: ChartTheme) => ({ size: theme.fontSize, color: theme.quietText });
+
+/** The name of a chart, level above its upper left corner: read without turning the head. */
+const chartTitle = (text: string, top: number, theme: ChartTheme): Partial<Annotation> => ({
   text,
-  standoff: 10,
-  font: { size: theme.fontSize, color: theme.quietText },
+  showarrow: false,
+  xref: 'paper',
+  yref: 'paper',
+  x: 0,
+  xanchor: 'left',
+  y: top,
+  yanchor: 'bottom',
+  font: quietFont(theme),
 });
 
 const axisLook = (theme: ChartTheme) => ({
@@ -247,11 +262,14 @@ function tracesOf(
 const dashText = (dash: readonly number[]): Dash =>
   (dash.length === 0 ? 'solid' : dash.map((length) => `${length}px`).join(',')) as Dash;
 
+/** Of whatever level; the legend says so. */
+const TRIPLET_MARKER = 'triangle-up-open';
+
 function convergedMarker(look: CurveLook, curve: Curve) {
   const count = curve.values.length;
   const size = count <= 60 ? 6 : count <= 150 ? 4.5 : 3;
   return {
-    symbol: curve.isExcited ? (`${look.shape}-open` as const) : look.shape,
+    symbol: curve.isTriplet ? TRIPLET_MARKER : curve.isExcited ? (`${look.shape}-open` as const) : look.shape,
     size: curve.isExcited ? size - 1 : size,
     color: look.colour,
   };

@@ -7,6 +7,8 @@ import { loadPlotly } from './load-plotly';
 const WIDTH = 900;
 const PLOT_HEIGHT = 860;
 const PNG_SCALE = 3;
+/** of the legend, over the name of the upper chart */
+const LEGEND_LIFT = 26;
 const CAPTION_LINE_LENGTH = 118;
 const CAPTION_LINE_HEIGHT = 19;
 
@@ -27,10 +29,18 @@ export function printFigure(
   const print: Partial<Layout> = {
     ...layout,
     showlegend: true,
-    legend: { orientation: 'h', x: 0, xanchor: 'left', y: 1.01, yanchor: 'bottom', itemwidth: 46 },
+    legend: {
+      orientation: 'h',
+      x: 0,
+      xanchor: 'left',
+      y: 1 + LEGEND_LIFT / PLOT_HEIGHT,
+      yanchor: 'bottom',
+      itemwidth: 46,
+    },
     hovermode: false,
-    margin: { l: 96, r: 24, t: 56, b: 64 + captionHeight },
+    margin: { l: 48, r: 24, t: 72, b: 64 + captionHeight },
     annotations: [
+      ...(layout.annotations ?? []),
       {
         text: lines.map(escapeMarkup).join('<br>'),
         showarrow: false,

@@ -19,25 +19,17 @@ export function Findings() {
       {results === undefined ? (
         <p className="empty">Findings are read off the finished curve.</p>
       ) : (
-        <>
-          {study.levels.map((level) => {
-            const findings = results.findings[level];
-            return findings === undefined ? null : (
-              <section key={level} className="finding">
-                <h3>
-                  <LevelSwatch level={level} /> {level}
-                </h3>
-                <FindingFacts {...{ findings, study, lengthUnit, energyUnit: view.energyUnit }} />
-              </section>
-            );
-          })}
-          {Object.values(results.findings).some(({ wellDepth }) => wellDepth !== undefined) && (
-            <p className="safety">
-              Well depths are computed, against the far end of this curve. Where safety hangs on a bond’s
-              strength, go by measured data, local rules and qualified judgement.
-            </p>
-          )}
-        </>
+        study.levels.map((level) => {
+          const findings = results.findings[level];
+          return findings === undefined ? null : (
+            <section key={level} className="finding">
+              <h3>
+                <LevelSwatch level={level} /> {level}
+              </h3>
+              <FindingFacts {...{ findings, study, lengthUnit, energyUnit: view.energyUnit }} />
+            </section>
+          );
+        })
       )}
       <CautionList run={run} lengthUnit={lengthUnit} />
     </div>

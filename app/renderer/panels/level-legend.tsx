@@ -1,4 +1,5 @@
 import { ToggleButton } from 'react-aria-components';
+import { energyColumns } from '../../study/energy-columns';
 import { LevelSwatch } from '../charts/level-swatch';
 import { useController, useWindowState } from '../state/window-context';
 import type { Run } from '../state/window-state';
@@ -7,9 +8,11 @@ import type { Run } from '../state/window-state';
 export function LevelLegend({ run: { study, points } }: { readonly run: Run }) {
   const hidden = useWindowState(({ view }) => view.hiddenLevels);
   const controller = useController();
+  const columns = energyColumns({ study, points: points.filter((point) => point !== undefined) });
   const hasUnconverged = points.some(
     (point) => point !== undefined && Object.values(point.levels).some(({ converged }) => !converged),
   );
+  const hasExcited = columns.some(({ isExcited }) => isExcited);
   return (
     <fieldset className="legend" aria-label="Levels drawn">
       {study.levels.map((level) => (
@@ -26,6 +29,7 @@ export function LevelLegend({ run: { study, points } }: { readonly run: Run }) {
           <LevelSwatch level={level} /> {level}
         </ToggleButton>
       ))}
+      {hasExcited && <span className="hint">open marks excited states, △ triplets</span>}
       {hasUnconverged && <span className="hint">× not converged, not joined to the curve</span>}
     </fieldset>
   );

@@ -1,10 +1,13 @@
 import { energyColumns } from '../../study/energy-columns';
 import { positions, scansLength } from '../charts/curves';
 import { numbered } from '../numbered';
-import { formatFixed, formatPlain } from '../numbers';
+import { commonDecimals, formatFixed } from '../numbers';
 import { cursorIndex } from '../state/cursor';
 import { useController, useWindowState } from '../state/window-context';
 import { ENERGY_UNITS, LENGTH_UNITS, toEnergyUnit } from '../units';
+
+/** Finer than any geometry is known. */
+const COORDINATE_DECIMALS = 6;
 
 /** All energies of all points; a click puts the cursor on a row. */
 export function PointsTable() {
@@ -17,6 +20,10 @@ export function PointsTable() {
   const x = positions(study, points, lengthUnit);
   const columns = energyColumns({ study, points: points.filter((point) => point !== undefined) });
   const { symbol, decimals } = ENERGY_UNITS[view.energyUnit];
+  const coordinateDecimals = commonDecimals(
+    x.filter((value) => value !== null),
+    COORDINATE_DECIMALS,
+  );
   const cursor = cursorIndex(run, view.cursor);
   return (
     <div className="pointsTable">
@@ -48,7 +55,7 @@ export function PointsTable() {
                       △
                     </span>
                   )}
-                  {x[index] == null ? 'as given' : formatPlain(x[index], 7)}
+                  {x[index] == null ? 'as given' : formatFixed(x[index], coordinateDecimals)}
                 </th>
                 {columns.map(({ label, entryAt }) => {
                   const entry = entryAt(point);

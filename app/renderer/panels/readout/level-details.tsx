@@ -7,6 +7,7 @@ import type {
   PerturbationResult,
   SinglesResult,
 } from '#engine';
+import { stateName } from '../../../study/state-name';
 import { LevelSwatch } from '../../charts/level-swatch';
 import { numbered } from '../../numbered';
 import { formatFixed, formatScientific } from '../../numbers';
@@ -90,13 +91,15 @@ function HartreeFockFacts({
           ],
         ]}
       />
-      {orbitalSets(result).map(({ name, energies }) => (
+      {orbitalSets(result).map(({ name, energies, labels }) => (
         <NumberList
           key={name}
           name={`${name}, ${ENERGY_UNITS[unit].symbol}`}
-          values={energies.map((energy) =>
-            formatFixed(toEnergyUnit(energy, unit), unit === 'hartree' ? 5 : 3),
-          )}
+          values={energies.map((energy, orbital) => {
+            const text = formatFixed(toEnergyUnit(energy, unit), unit === 'hartree' ? 5 : 3);
+            const label = labels?.[orbital];
+            return label ? `${text} ${label}` : text;
+          })}
         />
       ))}
     </>
@@ -104,11 +107,14 @@ function HartreeFockFacts({
 }
 
 /** One list of orbital energies, or one for each spin. */
-function orbitalSets({ orbitalEnergies }: HartreeFockResult) {
-  if (!('alpha' in orbitalEnergies)) return [{ name: 'Orbital energies', energies: orbitalEnergies }];
+function orbitalSets({ orbitalEnergies, orbitalSymmetries: labels }: HartreeFockResult) {
+  const bySpin = labels && 'alpha' in labels ? labels : { alpha: labels, beta: labels };
+  if (!('alpha' in orbitalEnergies)) {
+    return [{ name: 'Orbital energies', energies: orbitalEnergies, labels: bySpin.alpha }];
+  }
   return [
-    { name: 'Alpha orbital energies', energies: orbitalEnergies.alpha },
-    { name: 'Beta orbital energies', energies: orbitalEnergies.beta },
+    { name: 'Alpha orbital energies', energies: orbitalEnergies.alpha, labels: bySpin.alpha },
+    { name: 'Beta orbital energies', energies: orbitalEnergies.beta, labels: bySpin.beta },
   ];
 }
 
@@ -167,7 +173,7 @@ function SinglesStates({ result, unit }: { readonly result: SinglesResult; reado
         {numbered(result.states).map(({ number, item: state }) => (
           <tr key={number}>
             <th scope="row">
-              {number + 1} {state.spin}
+              {number + 1} {stateName(state.spin, state.symmetry)}
             </th>
             <td>{formatFixed(toEnergyUnit(state.energy, unit), decimals)}</td>
             <td>{formatFixed(toEnergyUnit(state.excitation, unit), Math.min(decimals, 6))}</td>
@@ -191,7 +197,7 @@ function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; 
     <>
       <Facts
         facts={[
-          ['Spin', result.spin],
+          ['State', stateName(result.spin, result.symmetry)],
           ['Determinants', formatFixed(result.determinants, 0)],
           ['Iterations', result.iterations],
           ground && ['Residual, Eₕ', formatScientific(ground.residual)],
@@ -273,7 +279,7 @@ function States({
         {numbered(states).map(({ number, item: state }) => (
           <tr key={number}>
             <th scope="row">
-              {number + 1} {state.spin}
+              {number + 1} {stateName(state.spin, state.symmetry)}
             </th>
             <td>{formatFixed(toEnergyUnit(state.energy, unit), decimals)}</td>
             <td>{formatFixed(toEnergyUnit(state.excitation, unit), Math.min(decimals, 6))}</td>
