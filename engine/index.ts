@@ -1,6 +1,8 @@
 /** The only door into the engine. */
 export type { BasisRequest, EvenTemperedShells } from './basis/basis-request';
+export type { Harmonics, ShellDefinition } from './basis/contracted-gaussian';
 export { type BasisSetEntry, listBasisSets } from './basis/library-index';
+export type { ScaleFactors } from './basis/scalable-basis';
 export { LOW_REFERENCE_WEIGHT, studyCautions } from './calculation/cautions';
 export {
   type ComputedPoint,
@@ -13,7 +15,12 @@ export type { LevelExplanation, StudyExplanation } from './calculation/explanati
 export { findLevelMinimum } from './calculation/find-level-minimum';
 export { LEVEL_NAMES } from './calculation/levels';
 export type { OccupiedOrbitals, PointCarry } from './calculation/mean-fields';
-export { type Preparation, type PreparedStudy, type PrepareOptions, prepareStudy } from './calculation/prepare-study';
+export {
+  type Preparation,
+  type PreparedStudy,
+  type PrepareOptions,
+  prepareStudy,
+} from './calculation/prepare-study';
 export type {
   BasisDescription,
   Caution,
@@ -28,6 +35,7 @@ export type {
   OrbitalLabels,
   PerturbationResult,
   PointResult,
+  ScaleOptimisation,
   SinglesResult,
   SinglesState,
   SpinOrbitalEnergies,
@@ -42,7 +50,6 @@ export type {
   StudyMolecule,
   StudyScan,
 } from './calculation/study';
-export type { Harmonics, ShellDefinition } from './basis/contracted-gaussian';
 export type { SpinName } from './configuration-interaction/spin';
 export {
   BOHR_IN_ANGSTROM,
@@ -52,7 +59,12 @@ export {
   HARTREE_IN_KJ_PER_MOL,
   HARTREE_IN_WAVENUMBERS,
 } from './constants';
-export { EngineError, type EngineErrorCode, type EngineErrorDetails, type SerializedEngineError } from './errors';
+export {
+  EngineError,
+  type EngineErrorCode,
+  type EngineErrorDetails,
+  type SerializedEngineError,
+} from './errors';
 export type { Vector3 } from './molecule/molecule';
 export type { PointGroupName } from './symmetry/point-groups';
 export type { StateSymmetry, TermSymbol } from './symmetry/state-symmetry';

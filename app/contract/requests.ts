@@ -1,4 +1,12 @@
-import type { BasisDescription, BasisSetEntry, PointResult, SerializedEngineError, Study, StudyExplanation, StudyResults } from '#engine';
+import type {
+  BasisDescription,
+  BasisSetEntry,
+  PointResult,
+  SerializedEngineError,
+  Study,
+  StudyExplanation,
+  StudyResults,
+} from '#engine';
 
 /** An error as it crosses from the host to the window. */
 export interface SerializedError {
@@ -8,7 +16,9 @@ export interface SerializedError {
   readonly remedy: string;
 }
 
-export type Reply<T> = { readonly ok: true; readonly value: T } | { readonly ok: false; readonly error: SerializedError };
+export type Reply<T> =
+  | { readonly ok: true; readonly value: T }
+  | { readonly ok: false; readonly error: SerializedError };
 
 /** One thing wrong with a study, with its place as a path (`scan.count`, `molecule.atoms[1].element`, or a line of the text). */
 export interface StudyIssue {
@@ -19,7 +29,12 @@ export interface StudyIssue {
 }
 
 export type StudyCheck =
-  | { readonly ok: true; readonly study: Study; readonly sentence: string; readonly explanation: StudyExplanation }
+  | {
+      readonly ok: true;
+      readonly study: Study;
+      readonly sentence: string;
+      readonly explanation: StudyExplanation;
+    }
   | { readonly ok: false; readonly issues: readonly StudyIssue[] };
 
 export interface SampleSummary {
@@ -47,7 +62,10 @@ export interface Requests {
   'basis:show': (request: { readonly name: string }) => BasisDescription;
   'study:check': (request: { readonly text: string }) => StudyCheck;
   /** starts computing; points arrive as events with the returned id */
-  'calculation:start': (request: { readonly text: string }) => { readonly id: number; readonly points: number };
+  'calculation:start': (request: { readonly text: string }) => {
+    readonly id: number;
+    readonly points: number;
+  };
   'calculation:cancel': (request: { readonly id: number }) => { readonly cancelled: boolean };
 }
 

@@ -1,4 +1,5 @@
 import type { Harmonics, ShellDefinition } from '../basis/contracted-gaussian';
+import type { ScaleFactors } from '../basis/scalable-basis';
 import type { SpinName } from '../configuration-interaction/spin';
 import type { Vector3 } from '../molecule/molecule';
 import type { PointGroupName } from '../symmetry/point-groups';
@@ -41,10 +42,27 @@ export interface PointResult {
   /** in the study's unit */
   readonly atoms: readonly StudyAtom[];
   readonly nuclearRepulsion: number;
+  /** Slater exponents by element and shell, where the study has them optimised */
+  readonly scaleFactors?: ScaleFactors;
+  readonly scaleOptimisation?: ScaleOptimisation;
   /** largest Abelian point group, which labels are named in; of a linear molecule also its whole group */
   readonly symmetry?: { readonly pointGroup: PointGroupName; readonly linear?: 'C∞v' | 'D∞h' };
   readonly levels: Readonly<Record<string, LevelResult>>;
   readonly cautions: readonly Caution[];
+}
+
+/** How the scale factors of a point were found. */
+export interface ScaleOptimisation {
+  /** whose energy they make lowest */
+  readonly level: 'RHF' | 'ROHF' | 'UHF';
+  /** false too where a factor ran to its limit */
+  readonly converged: boolean;
+  readonly termination: Termination;
+  readonly iterations: number;
+  /** largest derivative of the energy with respect to ln ζ, hartree */
+  readonly residual: number;
+  /** shells such as `H 1s` whose factor ran to its limit */
+  readonly atLimit?: readonly string[];
 }
 
 /** Where a number should not be trusted, and why. */
@@ -81,7 +99,9 @@ export interface HartreeFockResult {
   readonly iterations: number;
   readonly orbitalEnergies: readonly number[] | SpinOrbitalEnergies;
   /** in the same order, as `1σg` or `2a1`; null for an orbital that breaks the symmetry */
-  readonly orbitalSymmetries?: OrbitalLabels | { readonly alpha: OrbitalLabels; readonly beta: OrbitalLabels };
+  readonly orbitalSymmetries?:
+    | OrbitalLabels
+    | { readonly alpha: OrbitalLabels; readonly beta: OrbitalLabels };
   /** of the determinant; absent where it breaks the symmetry */
   readonly symmetry?: StateSymmetry;
   /** e·bohr, about the origin of the study's coordinates, for ions too */
