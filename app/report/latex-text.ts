@@ -16,6 +16,8 @@ const REPLACEMENTS: Readonly<Record<string, string>> = {
   '’': "'",
   '“': '``',
   '”': "''",
+  '′': "$'$",
+  '″': "$''$",
   '…': '\\ldots{}',
   Å: '\\AA{}',
   '°': '$^\\circ$',
@@ -43,11 +45,14 @@ const GREEK = {
   μ: 'mu',
   π: 'pi',
   σ: 'sigma',
+  φ: 'phi',
   χ: 'chi',
   ω: 'omega',
+  Γ: 'Gamma',
   Δ: 'Delta',
   Σ: 'Sigma',
   Π: 'Pi',
+  Φ: 'Phi',
   Ψ: 'Psi',
 } as const;
 const SUPERSCRIPTS = {

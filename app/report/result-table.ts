@@ -1,5 +1,6 @@
 import type { PointResult, StudyResults } from '#engine';
 import { type EnergyColumn, type EnergyEntry, energyColumns } from '../study/energy-columns';
+import { stateName } from '../study/state-name';
 import { coordinateHeading, coordinateScale, sharedCoordinate } from './scanned-coordinate';
 
 /** Energies and correlation energies as a table to be printed; minus signs and dashes are left to the format. */
@@ -65,7 +66,7 @@ export function resultTable(results: readonly StudyResults[], names: readonly st
     coordinateHeading: coordinateHeading(shared),
     blocks: blocksOf(columnsByFile.flat()),
     rows,
-    notes: notesOf(results, rows),
+    notes: [...notesOf(results, rows), ...statesNotes(results, names)],
   };
 }
 
@@ -153,4 +154,22 @@ function notesOf(results: readonly StudyResults[], rows: readonly TableRow[]): r
       ? ['CIS has no correlation energy: its energies are those of excited states (Brillouin’s theorem).']
       : []),
   ];
+}
+
+/** For every file whose states have labels, which state each column holds, in the order of the coordinate. */
+function statesNotes(results: readonly StudyResults[], names: readonly string[]): readonly string[] {
+  return results.flatMap((file, index) => {
+    const points = [...file.points].sort((a, b) => (a.coordinate ?? 0) - (b.coordinate ?? 0));
+    const states = energyColumns(file).flatMap(({ label, entryAt }) => {
+      const along = points.map(entryAt).flatMap((entry) => {
+        return entry?.converged && entry.spin && entry.symmetry
+          ? [stateName(entry.spin, entry.symmetry)]
+          : [];
+      });
+      const changes = along.filter((name, k) => name !== along[k - 1]);
+      return changes.length > 0 ? [`${label} ${changes.join(', then ')}`] : [];
+    });
+    const of = results.length > 1 ? ` of ${names[index] ?? ''}` : '';
+    return states.length > 0 ? [`States${of}, by rising coordinate: ${states.join('; ')}.`] : [];
+  });
 }

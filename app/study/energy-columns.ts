@@ -1,4 +1,4 @@
-import type { LevelResult, PointResult, SpinName } from '#engine';
+import type { LevelResult, PointResult, SpinName, StateSymmetry } from '#engine';
 
 /** The energy of one state of one level at one point. */
 export interface EnergyEntry {
@@ -8,6 +8,7 @@ export interface EnergyEntry {
   /** energy minus the RHF energy; lowest states of correlated levels only */
   readonly correlation?: number;
   readonly spin?: SpinName;
+  readonly symmetry?: StateSymmetry;
 }
 
 /** One energy that a study gives at every point: the lowest state of a level, or a further one. */
@@ -54,8 +55,8 @@ function lowestState(level: string): EnergyColumn {
         return { energy, converged, correlation };
       }
       if (result?.kind !== 'correlated') return undefined;
-      const { energy, converged, correlation, spin } = result;
-      return { energy, converged, correlation, spin };
+      const { energy, converged, correlation, spin, symmetry } = result;
+      return { energy, converged, correlation, spin, ...(symmetry && { symmetry }) };
     },
   };
 }
@@ -89,8 +90,9 @@ function furtherStates(results: EnergyTable, level: string): EnergyColumn[] {
 
 function stateEntry(
   result: LevelResult | undefined,
-  state: { readonly energy: number; readonly spin: SpinName } | undefined,
+  state: { readonly energy: number; readonly spin: SpinName; readonly symmetry?: StateSymmetry } | undefined,
 ): EnergyEntry | undefined {
   if (!result || !state) return undefined;
-  return { energy: state.energy, converged: result.converged, spin: state.spin };
+  const { energy, spin, symmetry } = state;
+  return { energy, converged: result.converged, spin, ...(symmetry && { symmetry }) };
 }

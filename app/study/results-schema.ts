@@ -25,6 +25,18 @@ const levelTermination = z.discriminatedUnion('kind', levelEnds);
 
 const spin = z.enum(['singlet', 'doublet', 'triplet', 'quartet', 'quintet', 'sextet', 'septet', 'mixed']);
 
+const stateSymmetry = z.looseObject({
+  irrep: z.string(),
+  term: z
+    .looseObject({
+      lambda: z.number(),
+      inversion: z.enum(['g', 'u']).exactOptional(),
+      reflection: z.enum(['+', '-']).exactOptional(),
+    })
+    .exactOptional(),
+});
+const orbitalLabels = z.array(z.string().nullable());
+
 const hartreeFock = z.looseObject({
   kind: z.literal('hartreeFock'),
   energy: number,
@@ -32,6 +44,10 @@ const hartreeFock = z.looseObject({
   termination,
   iterations: z.number(),
   orbitalEnergies: z.union([numbers, z.looseObject({ alpha: numbers, beta: numbers })]),
+  orbitalSymmetries: z
+    .union([orbitalLabels, z.looseObject({ alpha: orbitalLabels, beta: orbitalLabels })])
+    .exactOptional(),
+  symmetry: stateSymmetry.exactOptional(),
   dipole: vector,
   sSquared: number.exactOptional(),
   stability: z
@@ -59,6 +75,7 @@ const singles = z.looseObject({
       energy: number,
       excitation: number,
       spin: z.enum(['singlet', 'triplet']),
+      symmetry: stateSymmetry.exactOptional(),
       oscillatorStrength: number,
       transitionDipole: vector,
       leading: z.array(z.looseObject({ from: z.number(), to: z.number(), weight: number })),
@@ -70,6 +87,7 @@ const correlatedState = z.looseObject({
   energy: number,
   excitation: number,
   spin,
+  symmetry: stateSymmetry.exactOptional(),
   sSquared: number,
   referenceWeight: number,
   residual: number,
@@ -96,6 +114,7 @@ const correlated = z.looseObject({
   referenceWeight: number,
   sSquared: number,
   spin,
+  symmetry: stateSymmetry.exactOptional(),
   naturalOccupations: numbers,
   dipole: vector,
   davidsonCorrected: number.exactOptional(),
@@ -134,6 +153,12 @@ const point: z.ZodType<PointResult> = z.looseObject({
     }),
   ),
   nuclearRepulsion: z.number(),
+  symmetry: z
+    .looseObject({
+      pointGroup: z.enum(['C1', 'Ci', 'Cs', 'C2', 'C2v', 'C2h', 'D2', 'D2h']),
+      linear: z.enum(['C∞v', 'D∞h']).exactOptional(),
+    })
+    .exactOptional(),
   levels: z.record(z.string(), level),
   cautions,
 });

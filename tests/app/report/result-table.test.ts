@@ -50,6 +50,23 @@ describe('resultTable', () => {
     expect(table.notes.join(' ')).toContain('Brillouin');
   });
 
+  it('names the states that have labels, and where a column changes its state', () => {
+    const results = sampleResults(['RHF', 'FCI']);
+    const points = results.points.map((point, index) => {
+      const full = point.levels.FCI;
+      if (full?.kind !== 'correlated') throw new Error('sample changed');
+      const symmetry = {
+        irrep: index < 20 ? 'Ag' : 'B1u',
+        term: { lambda: 0, inversion: index < 20 ? 'g' : 'u', reflection: '+' },
+      } as const;
+      return { ...point, levels: { ...point.levels, FCI: { ...full, symmetry } } };
+    });
+    // the order of the points must not matter
+    const table = resultTable([{ ...results, points: points.toReversed() }], ['h2']);
+    expect(table.notes).toContain('States, by rising coordinate: FCI ¹Σg⁺, then ¹Σu⁺.');
+    expect(resultTable([results], ['h2']).notes.join(' ')).not.toContain('States');
+  });
+
   it('puts equal distances of several files in one row, in spite of different units', () => {
     const first = sampleResults(['RHF']);
     const study = { ...first.study, molecule: { ...first.study.molecule, unit: 'bohr' as const } };
