@@ -143,21 +143,30 @@ function determinantRotation(space: DeterminantSpace, rotation: Float64Array): A
   };
 }
 
-/** Elements of the axial rotation between strings. */
-function stringRotation(replacements: SingleReplacements, rotation: Float64Array) {
-  const { byStringStart, pair } = replacements;
-  const kept = Int32Array.from(pair.keys()).filter((entry) => Math.abs(rotation[pair[entry]]) > NO_ROTATION);
-  const target = new Int32Array(kept.length);
-  let string = 0;
-  kept.forEach((entry, k) => {
-    while (byStringStart[string + 1] <= entry) string++;
-    target[k] = string;
-  });
-  return {
-    target,
-    source: kept.map((entry) => replacements.source[entry]),
-    factor: Float64Array.from(kept, (entry) => replacements.sign[entry] * rotation[pair[entry]]),
+/** Elements of the axial rotation between strings; few, as it joins representations that differ by that of Rz only. */
+function stringRotation({ byStringStart, pair, source, sign }: SingleReplacements, rotation: Float64Array) {
+  let count = 0;
+  for (let entry = 0; entry < pair.length; entry++) if (isElement(rotation[pair[entry]])) count++;
+  const kept = {
+    target: new Int32Array(count),
+    source: new Int32Array(count),
+    factor: new Float64Array(count),
   };
+  let k = 0;
+  for (let target = 0; target + 1 < byStringStart.length; target++) {
+    for (let entry = byStringStart[target]; entry < byStringStart[target + 1]; entry++) {
+      const element = rotation[pair[entry]];
+      if (!isElement(element)) continue;
+      kept.target[k] = target;
+      kept.source[k] = source[entry];
+      kept.factor[k++] = sign[entry] * element;
+    }
+  }
+  return kept;
+}
+
+function isElement(value: number): boolean {
+  return Math.abs(value) > NO_ROTATION;
 }
 
 function stringIrreps(strings: StringSpace, irreps: readonly number[]): Uint8Array {
