@@ -1,16 +1,10 @@
 import type { Termination } from '../termination';
-import {
-  countLevelsBelow,
-  integrateProduct,
-  type RadialState,
-  radialEquation,
-  solveLevel,
-} from './radial-equation';
-import { mappedDistance, type RadialGrid, radialGrid } from './radial-grid';
+import { boundStates, integrateProduct, radialEquation } from './radial-equation';
+import { intervalsFor, radialGrid } from './radial-grid';
 import { type RadialCurve, radialRange } from './radial-range';
 
 export interface FranckCondonOptions {
-  /** J of both levels; default 0 */
+  /** J of both levels; default 0. For Λ > 0 see `VibrationalOptions` */
   readonly rotation?: number;
   /** most levels of each curve, from the lowest; default 60 */
   readonly mostLevels?: number;
@@ -55,26 +49,29 @@ export function franckCondonFactors(
   mass: number,
   options: FranckCondonOptions = {},
 ): FranckCondonFactors {
-  const { tolerance = TOLERANCE, transitionMoment } = options;
+  const { rotation = 0, mostLevels = MOST_LEVELS, tolerance = TOLERANCE, transitionMoment } = options;
   const ranges = [initial, final].map((curve) => radialRange(curve, mass, options.outermost));
   const scale = Math.min(...ranges.map(({ centre }) => centre));
   const from = Math.min(...ranges.map((range) => range.from));
   const to = Math.max(...ranges.map((range) => range.to));
   // each phase belongs to the map scaled by its own centre; with the smaller one the map is stretched at most so much
   const phase = Math.max(...ranges.map((range) => (range.phase * range.centre) / scale));
-  let intervals = Math.ceil(
-    ((mappedDistance(to, scale) - mappedDistance(from, scale)) * phase) / FIRST_PHASE,
-  );
+  let intervals = intervalsFor(scale, from, to, phase, FIRST_PHASE);
 
   const solve = () => {
     const grid = radialGrid(scale, from, to, intervals);
-    const rows = statesOn(grid, initial, mass, options);
-    const columns = statesOn(grid, final, mass, options);
+    const [rows, columns] = [initial, final].map((curve) =>
+      boundStates(
+        radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation),
+        0,
+        mostLevels,
+      ),
+    );
     const squares = (f: (distance: number) => number) =>
-      rows.map((row) =>
-        columns.map((column) => integrateProduct(grid, row.amplitude, column.amplitude, f) ** 2),
+      rows.states.map((row) =>
+        columns.states.map((column) => integrateProduct(grid, row.amplitude, column.amplitude, f) ** 2),
       );
-    return { factors: squares(() => 1), squares };
+    return { factors: squares(() => 1), squares, isComplete: rows.isComplete && columns.isComplete };
   };
 
   let current = solve();
@@ -85,7 +82,7 @@ export function franckCondonFactors(
     const finer = solve();
     uncertainty = largestChange(current.factors, finer.factors);
     current = finer;
-    if (uncertainty <= tolerance) termination = { kind: 'converged' };
+    if (uncertainty <= tolerance && finer.isComplete) termination = { kind: 'converged' };
   }
   return {
     factors: current.factors,
@@ -94,19 +91,6 @@ export function franckCondonFactors(
     uncertainty,
     termination,
   };
-}
-
-function statesOn(
-  grid: RadialGrid,
-  curve: RadialCurve,
-  mass: number,
-  { rotation = 0, mostLevels = MOST_LEVELS }: FranckCondonOptions,
-): RadialState[] {
-  const equation = radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation);
-  const count = Math.min(countLevelsBelow(equation, 0), mostLevels);
-  return Array.from({ length: count }, (_, v) => solveLevel(equation, v, 0)).filter(
-    (state) => state !== undefined,
-  );
 }
 
 /** Infinite where the number of levels changed. */

@@ -58,8 +58,31 @@ export function radialEquation(
   };
 }
 
+/** The levels of an equation below an energy, or the lowest of them. */
+export interface BoundStates {
+  /** number of levels below the energy */
+  readonly count: number;
+  /** from the lowest; ends before a level that did not settle */
+  readonly states: readonly RadialState[];
+  /** every level that was asked for settled */
+  readonly isComplete: boolean;
+}
+
+/** @param most - most levels to solve for */
+export function boundStates(equation: RadialEquation, below: number, most: number): BoundStates {
+  const count = countLevelsBelow(equation, below);
+  const wanted = Math.min(count, most);
+  const states: RadialState[] = [];
+  for (let v = 0; v < wanted; v++) {
+    const state = solveLevel(equation, v, below);
+    if (!state) return { count, states, isComplete: false };
+    states.push(state);
+  }
+  return { count, states, isComplete: true };
+}
+
 /** Number of levels below an energy. */
-export function countLevelsBelow(equation: RadialEquation, energy: number): number {
+function countLevelsBelow(equation: RadialEquation, energy: number): number {
   const window = windowOf(equation, energy);
   return window ? sweepForward(equation, energy, window, new Float64Array(equation.potential.length)) : 0;
 }
@@ -69,11 +92,7 @@ export function countLevelsBelow(equation: RadialEquation, energy: number): numb
  * @param below - an energy with more than v levels below it
  * @returns undefined if the level does not settle within the sweeps allowed
  */
-export function solveLevel(
-  equation: RadialEquation,
-  quantumNumber: number,
-  below: number,
-): RadialState | undefined {
+function solveLevel(equation: RadialEquation, quantumNumber: number, below: number): RadialState | undefined {
   const n = equation.potential.length;
   const outward = new Float64Array(n);
   const inward = new Float64Array(n);

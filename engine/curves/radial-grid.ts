@@ -22,8 +22,28 @@ export function stretchAt(distance: number, scale: number): number {
 }
 
 /** y of a distance. */
-export function mappedDistance(distance: number, scale: number): number {
+function mappedDistance(distance: number, scale: number): number {
   return (distance - scale) / (distance + scale);
+}
+
+/** Fewest intervals of any grid. */
+const FEWEST_INTERVALS = 64;
+
+/**
+ * Number of steps in which a wave turns by at most so much.
+ *
+ * @param phase - largest phase per unit of y, radian
+ * @param phasePerStep - radian
+ */
+export function intervalsFor(
+  scale: number,
+  from: number,
+  to: number,
+  phase: number,
+  phasePerStep: number,
+): number {
+  const length = mappedDistance(to, scale) - mappedDistance(from, scale);
+  return Math.max(FEWEST_INTERVALS, Math.ceil((length * phase) / phasePerStep));
 }
 
 /**

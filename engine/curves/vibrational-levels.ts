@@ -1,18 +1,18 @@
 import { HARTREE_IN_WAVENUMBERS } from '../constants';
 import type { Termination } from '../termination';
 import {
-  countLevelsBelow,
+  type BoundStates,
+  boundStates,
   integrateProduct,
   type RadialEquation,
   type RadialState,
   radialEquation,
-  solveLevel,
 } from './radial-equation';
-import { mappedDistance, type RadialGrid, radialGrid } from './radial-grid';
-import { type RadialCurve, type RadialRange, radialRange } from './radial-range';
+import { intervalsFor, type RadialGrid, radialGrid } from './radial-grid';
+import { type RadialCurve, radialRange } from './radial-range';
 
 export interface VibrationalOptions {
-  /** J; default 0 */
+  /** J; default 0. For a state with Λ > 0 give √(J(J + 1) − Λ² + ¼) − ½, which need not be whole */
   readonly rotation?: number;
   /** how closely levels must be converged in grid and range, cm⁻¹ */
   readonly tolerancePerCm?: number;
@@ -88,10 +88,19 @@ export function vibrationalLevels(
 ): VibrationalLevels {
   const { rotation = 0, tolerancePerCm = LEVEL_TOLERANCE_PER_CM, mostLevels = MOST_LEVELS } = options;
   const range = radialRange(curve, mass, options.outermost);
-  const solve = (intervals: number) => solveOnGrid(curve, mass, rotation, range, intervals, mostLevels);
+  const solve = (intervals: number): GridSolution => {
+    const grid = radialGrid(range.centre, range.from, range.to, intervals);
+    // counted from the limit, so that total energies of hundreds of hartree do not eat digits
+    const equation = radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation);
+    const bound = boundStates(equation, 0, mostLevels);
+    const rotationalConstants = bound.states.map(({ amplitude }) =>
+      integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
+    );
+    return { ...bound, equation, rotationalConstants };
+  };
   const tolerance = tolerancePerCm / HARTREE_IN_WAVENUMBERS;
 
-  let intervals = firstIntervals(range);
+  let intervals = intervalsFor(range.centre, range.from, range.to, range.phase, FIRST_PHASE);
   let grid = solve(intervals);
   let extrapolated: readonly Extrapolated[] = [];
   let change: readonly number[] = [];
@@ -104,7 +113,7 @@ export function vibrationalLevels(
       Math.abs(energy - (extrapolated[v]?.energy ?? Number.POSITIVE_INFINITY)),
     );
     [grid, extrapolated] = [finer, next];
-    if (finer.failed !== undefined) {
+    if (!finer.isComplete) {
       termination = { kind: 'stagnated', iterationsWithoutProgress: 1 };
       break;
     }
@@ -130,7 +139,7 @@ export function vibrationalLevels(
     reducedMass: mass,
     rotation,
     levels,
-    boundLevels: grid.bound,
+    boundLevels: grid.count,
     zeroPointPerCm: levels[0] && (levels[0].energy - range.lowest) * HARTREE_IN_WAVENUMBERS,
     dissociationPerCm: levels[0]?.bindingPerCm,
     termination,
@@ -141,50 +150,14 @@ export function vibrationalLevels(
   };
 }
 
-interface GridSolution {
+interface GridSolution extends BoundStates {
   readonly equation: RadialEquation;
-  readonly bound: number;
-  readonly states: readonly RadialState[];
   readonly rotationalConstants: readonly number[];
-  /** quantum number of a level that did not settle */
-  readonly failed: number | undefined;
 }
 
 interface Extrapolated {
   readonly energy: number;
   readonly rotationalConstant: number;
-}
-
-function firstIntervals({ from, to, centre, phase }: RadialRange): number {
-  return Math.ceil(((mappedDistance(to, centre) - mappedDistance(from, centre)) * phase) / FIRST_PHASE);
-}
-
-function solveOnGrid(
-  curve: RadialCurve,
-  mass: number,
-  rotation: number,
-  range: RadialRange,
-  intervals: number,
-  mostLevels: number,
-): GridSolution {
-  const grid = radialGrid(range.centre, range.from, range.to, intervals);
-  // counted from the limit, so that total energies of hundreds of hartree do not eat digits
-  const equation = radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation);
-  const bound = countLevelsBelow(equation, 0);
-  const states: RadialState[] = [];
-  let failed: number | undefined;
-  for (let v = 0; v < Math.min(bound, mostLevels); v++) {
-    const state = solveLevel(equation, v, 0);
-    if (!state) {
-      failed = v;
-      break;
-    }
-    states.push(state);
-  }
-  const rotationalConstants = states.map(({ amplitude }) =>
-    integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
-  );
-  return { equation, bound, states, rotationalConstants, failed };
 }
 
 /** Richardson's extrapolation of the levels that both grids have. */

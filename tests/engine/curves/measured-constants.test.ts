@@ -34,7 +34,7 @@ describe('measuredStates', () => {
       source: HUBER_HERZBERG,
     });
     expect(measured(nitrogen, 'dissociationEnergy')).toMatchPublished({
-      printed: '9.759',
+      printed: '9.7594',
       unit: 'eV',
       source: HUBER_HERZBERG,
     });
