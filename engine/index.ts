@@ -3,7 +3,7 @@ export type { BasisRequest, EvenTemperedShells } from './basis/basis-request';
 export type { Harmonics, ShellDefinition } from './basis/contracted-gaussian';
 export { type BasisSetEntry, listBasisSets } from './basis/library-index';
 export type { ScaleFactors } from './basis/scalable-basis';
-export { LOW_REFERENCE_WEIGHT, studyCautions } from './calculation/cautions';
+export { LOW_REFERENCE_WEIGHT, type SolutionCrossing, studyCautions } from './calculation/cautions';
 export {
   type ComputedPoint,
   type ComputePointOptions,
@@ -13,6 +13,7 @@ export { describeBasis, describeBasisUsed } from './calculation/describe-basis';
 export { explainStudy } from './calculation/explain-study';
 export type { LevelExplanation, StudyExplanation } from './calculation/explanation';
 export { findLevelMinimum } from './calculation/find-level-minimum';
+export { type FieldKind, type FollowedNeighbours, followNeighbours } from './calculation/follow-neighbours';
 export { LEVEL_NAMES } from './calculation/levels';
 export type { OccupiedOrbitals, PointCarry } from './calculation/mean-fields';
 export {

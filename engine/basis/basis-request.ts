@@ -16,6 +16,13 @@ export type BasisRequest =
       readonly name: string;
       /** Slater exponents by element and shell (`1s`, `2sp`, `3sp`), for STO-nG */
       readonly scaleFactors: Readonly<Record<string, Readonly<Record<string, number>>>>;
+      /** true: the factors of lowest Hartree–Fock energy at every geometry, starting from those given */
+      readonly optimiseScale?: boolean | undefined;
+    }
+  | {
+      readonly name: string;
+      /** the same, starting from the standard factors */
+      readonly optimiseScale: boolean;
     }
   | {
       readonly name: string;

@@ -71,7 +71,7 @@ export function findBasisSet(
   scaleFactors?: ScaleFactorRequest,
 ): BasisSet {
   const wanted = plain(name);
-  const gaussians = STO_SIZES.find((n) => plain(stoName(n)) === wanted);
+  const gaussians = slaterFitSize(name);
   if (gaussians !== undefined) return stoNgBasisSet(gaussians, symbols, scaleFactors);
   const published = PUBLISHED.find((set) =>
     [set.name, ...set.aliases].some((known) => plain(known) === wanted),
@@ -79,6 +79,11 @@ export function findBasisSet(
   if (published === undefined) throw unknownBasis(name);
   if (scaleFactors !== undefined) throw notScalable(published.name);
   return loadPublishedSet(published, symbols);
+}
+
+/** n, if the name is that of an STO-nG set. */
+export function slaterFitSize(name: string): number | undefined {
+  return STO_SIZES.find((n) => plain(stoName(n)) === plain(name));
 }
 
 function stoName(gaussians: number): string {

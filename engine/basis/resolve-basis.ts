@@ -21,6 +21,7 @@ export function resolveBasis(
   if (typeof request === 'string') return findBasisSet(request, symbols);
   if ('file' in request) return onlyElements(basisFromFile(request.file, options.fileText), symbols);
   if ('scaleFactors' in request) return findBasisSet(request.name, symbols, request.scaleFactors);
+  if ('optimiseScale' in request) return findBasisSet(request.name, symbols);
   if ('shells' in request) {
     return onlyElements(explicitBasisSet(request.name, request.shells, request.harmonics), symbols);
   }

@@ -15,25 +15,21 @@ export const STO_SIZES: readonly number[] = [1, 2, 3, 4, 5, 6];
  * @param gaussians - n, from 1 to 6
  * @param symbols - the elements wanted, H to Ar
  * @param scaleFactors - Slater exponents in place of the standard molecular ones, by element and shell
+ * @param fitOf - the fits, where they are at hand from before
  * @throws EngineError `basis.elementMissing` beyond Ar, `basis.scaleFactor`
  */
 export function stoNgBasisSet(
   gaussians: number,
   symbols: readonly string[],
   scaleFactors: ScaleFactorRequest = {},
+  fitOf = slaterFits(gaussians),
 ): BasisSet {
   const name = `STO-${gaussians}G`;
   const factors = mergeScaleFactors(scaleFactors);
-  const fits = new Map<SlaterShell, SlaterFit>();
-  const fitted = (shell: SlaterShell): SlaterFit => {
-    const fit = fits.get(shell) ?? fitSlaterShell(shell, gaussians);
-    fits.set(shell, fit);
-    return fit;
-  };
   const elements = [...new Set(symbols)].map((symbol): [string, ShellDefinition[]] => {
     if (!Object.hasOwn(factors, symbol)) throw elementMissing(name, symbol, Object.keys(factors));
     const shells = Object.entries(factors[symbol]) as [SlaterShell, number][];
-    return [symbol, shells.flatMap(([shell, zeta]) => scaledShells(fitted(shell), zeta))];
+    return [symbol, shells.flatMap(([shell, zeta]) => scaledShells(fitOf(shell), zeta))];
   });
   const changed = Object.entries(scaleFactors).flatMap(([symbol, shells]) =>
     symbols.includes(symbol)
@@ -47,6 +43,16 @@ export function stoNgBasisSet(
     citations: [citation('hehre1969a'), citation('hehre1970a')],
     notes:
       changed.length === 0 ? [] : [`Slater exponents other than the standard ones: ${changed.join(', ')}.`],
+  };
+}
+
+/** The fits of n Gaussians, each computed when it is first wanted. */
+export function slaterFits(gaussians: number): (shell: SlaterShell) => SlaterFit {
+  const fits = new Map<SlaterShell, SlaterFit>();
+  return (shell) => {
+    const fit = fits.get(shell) ?? fitSlaterShell(shell, gaussians);
+    fits.set(shell, fit);
+    return fit;
   };
 }
 

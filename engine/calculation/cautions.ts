@@ -1,6 +1,7 @@
+import type { FieldKind } from './follow-neighbours';
 import type { MeanFields } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
-import type { Caution, LevelResult, PointResult } from './result';
+import type { Caution, LevelResult, PointResult, ScaleOptimisation } from './result';
 
 /** A triplet Hessian eigenvalue below this, hartree, counts as an instability. */
 const TRIPLET_INSTABILITY = -1e-5;
@@ -14,8 +15,18 @@ export function pointCautions(
   prepared: PreparedStudy,
   { reference, restricted, unrestricted }: MeanFields,
   levels: Readonly<Record<string, LevelResult>>,
+  scale?: ScaleOptimisation,
 ): readonly Caution[] {
   const cautions: Caution[] = [];
+  if (scale && !scale.converged) {
+    cautions.push({
+      code: 'scale.unconverged',
+      message:
+        scale.atLimit === undefined
+          ? 'The search for the best scale factors did not converge here; these are the last ones reached.'
+          : `No best scale factor of ${scale.atLimit.join(' and ')} was found here: it ran to the end of its range.`,
+    });
+  }
   const { orthogonalisation } = reference;
   if (restricted?.stability && restricted.stability.triplet < TRIPLET_INSTABILITY) {
     cautions.push({
@@ -71,9 +82,21 @@ export function pointCautions(
   return cautions;
 }
 
+/** Two Hartree–Fock solutions whose order changes between neighbouring points of a scan. */
+export interface SolutionCrossing {
+  readonly kind: FieldKind;
+  readonly range: readonly [number, number];
+  /** how far apart the two are at one of the points, hartree */
+  readonly gap: number;
+}
+
 /** What to mistrust about the curve as a whole. */
-export function studyCautions(prepared: PreparedStudy, points: readonly PointResult[]): readonly Caution[] {
-  const cautions: Caution[] = [];
+export function studyCautions(
+  prepared: PreparedStudy,
+  points: readonly PointResult[],
+  crossings: readonly SolutionCrossing[] = [],
+): readonly Caution[] {
+  const cautions: Caution[] = crossings.map((crossing) => crossingCaution(prepared, crossing));
   if (prepared.levels.some((level) => level.kind === 'singles')) {
     cautions.push({
       code: 'cis.noGroundState',
@@ -109,4 +132,21 @@ export function studyCautions(prepared: PreparedStudy, points: readonly PointRes
     });
   }
   return cautions;
+}
+
+function crossingCaution({ study }: PreparedStudy, { kind, range, gap }: SolutionCrossing): Caution {
+  const reference = study.molecule.multiplicity === 1 ? 'RHF' : 'ROHF';
+  const name = kind === 'restricted' ? reference : 'UHF';
+  const places = range.map((value) => Number(value.toPrecision(6))).join(' and ');
+  return {
+    code: 'scf.crossing',
+    range,
+    ...(kind === 'unrestricted' && { level: 'UHF' }),
+    message:
+      `Between ${places} the lowest ${name} solution gives way to another; followed on, the first would lie ` +
+      `${gap.toPrecision(2)} hartree higher. ` +
+      (kind === 'restricted'
+        ? 'The curve has a kink there, and CI levels that depend on the orbitals may jump.'
+        : 'The curve has a kink there.'),
+  };
 }

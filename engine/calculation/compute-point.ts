@@ -16,6 +16,7 @@ import {
 import type { Level } from './levels';
 import { carryOf, type MeanFields, type PointCarry, solveMeanFields } from './mean-fields';
 import { type MolecularIntegrals, molecularIntegrals } from './molecular-integrals';
+import { optimiseScale } from './optimise-scale';
 import type { PreparedStudy } from './prepare-study';
 import type { LevelResult, PointResult } from './result';
 
@@ -46,7 +47,9 @@ export function computePoint(
 ): ComputedPoint {
   const control = options.control ?? UNATTENDED;
   const molecule = prepared.moleculeAt(coordinate);
-  const basis = placeBasis(prepared.basisSet, molecule);
+  const optimised =
+    prepared.scalable && optimiseScale(prepared, prepared.scalable, molecule, options.guess, control);
+  const basis = placeBasis(optimised?.basisSet ?? prepared.basisSet, molecule);
   const integrals = molecularIntegrals(molecule, basis);
 
   const chosen = prepared.levels.filter((level) => options.levels?.includes(level.name) ?? true);
@@ -56,7 +59,7 @@ export function computePoint(
     basis,
     integrals.problem,
     chosen,
-    options.guess,
+    optimised?.carry ?? options.guess,
     control,
   );
   const { fields, symmetry } = symmetriseFields(prepared, molecule, basis, integrals.problem.overlap, solved);
@@ -86,11 +89,12 @@ export function computePoint(
       coordinate,
       atoms: prepared.geometryAt(coordinate),
       nuclearRepulsion: integrals.problem.nuclearRepulsion,
+      ...(optimised && { scaleFactors: optimised.factors, scaleOptimisation: optimised.outcome }),
       symmetry: { pointGroup, ...(linear && { linear }) },
       levels,
-      cautions: pointCautions(prepared, fields, levels),
+      cautions: pointCautions(prepared, fields, levels, optimised?.outcome),
     },
-    ...(carry && { carry }),
+    ...(carry && { carry: { ...carry, ...(optimised && { scaleFactors: optimised.factors }) } }),
   };
 }
 

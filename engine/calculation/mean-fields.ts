@@ -1,4 +1,5 @@
 import type { PlacedBasis } from '../basis/contracted-gaussian';
+import type { ScaleFactors } from '../basis/scalable-basis';
 import type { Molecule } from '../molecule/molecule';
 import { superposeAtomicDensities } from '../self-consistent-field/initial-guess';
 import { firstColumns, type StartingPoint } from '../self-consistent-field/mean-field';
@@ -18,12 +19,16 @@ import type { PreparedStudy } from './prepare-study';
 export interface OccupiedOrbitals {
   readonly alpha: Float64Array;
   readonly beta: Float64Array;
+  /** of the determinant of these orbitals, hartree */
+  readonly energy: number;
 }
 
 /** What one point leaves for its neighbour; survives structured cloning. Only converged orbitals are left. */
 export interface PointCarry {
   readonly restricted?: OccupiedOrbitals;
   readonly unrestricted?: OccupiedOrbitals;
+  /** where the study has them optimised */
+  readonly scaleFactors?: ScaleFactors;
 }
 
 /** The Hartree–Fock solutions that the chosen levels need. */
@@ -103,14 +108,17 @@ function occupiedOf(
   {
     coefficients,
     orbitalCount: m,
+    energy,
   }: {
     readonly coefficients: Float64Array | readonly [Float64Array, Float64Array];
     readonly orbitalCount: number;
+    readonly energy: number;
   },
 ): OccupiedOrbitals {
   const [alpha, beta] = coefficients instanceof Float64Array ? [coefficients, coefficients] : coefficients;
   return {
     alpha: firstColumns(alpha, n, m, spinElectrons[0]),
     beta: firstColumns(beta, n, m, spinElectrons[1]),
+    energy,
   };
 }

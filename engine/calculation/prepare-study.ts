@@ -1,6 +1,7 @@
 import type { BasisSet } from '../basis/basis-set';
 import { placeBasis } from '../basis/place-basis';
 import { resolveBasis } from '../basis/resolve-basis';
+import { type ScalableBasis, scalableBasis } from '../basis/scalable-basis';
 import { EngineError } from '../errors';
 import { buildMolecule, electronCount } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
@@ -19,6 +20,8 @@ export interface PreparedStudy {
   /** one a point, in the study's order; a single null without a scan */
   readonly coordinates: readonly (number | null)[];
   readonly basisSet: BasisSet;
+  /** where the scale factors of `basisSet` are only what their optimisation starts from */
+  readonly scalable?: ScalableBasis;
   readonly electrons: number;
   /** alpha and beta electrons */
   readonly spinElectrons: readonly [number, number];
@@ -82,6 +85,7 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
   const { molecule } = built;
   const symbols = [...new Set(molecule.atoms.map((atom) => atom.symbol))];
   const basisSet = collect(() => resolveBasis(study.basis, symbols, { fileText: options.basisFileText }));
+  const scalable = collect(() => scalableBasis(study.basis, symbols));
   const functionCount = basisSet && collect(() => placeBasis(basisSet, molecule).functionCount);
   collect(() => requireClosedShell(levels, molecule.multiplicity));
   if (functionCount !== undefined) collect(() => requireFunctions(functionCount, molecule));
@@ -100,6 +104,7 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
     levels: levels.filter((level) => level !== undefined),
     coordinates: study.scan ? scanValues(study.scan) : [null],
     basisSet,
+    ...(scalable && { scalable }),
     electrons: electronCount(molecule),
     spinElectrons: electronsBySpin(electronCount(molecule), molecule.multiplicity),
     functionCount,

@@ -72,6 +72,8 @@ export interface Caution {
   readonly message: string;
   /** the level concerned; absent: all */
   readonly level?: string;
+  /** coordinates between which it holds, where it is not said at a point */
+  readonly range?: readonly [number, number];
 }
 
 export type LevelResult =

@@ -44,6 +44,8 @@ export function reorthonormalise(
   n: number,
   k: number,
 ): Float64Array | undefined {
+  // a spin without electrons
+  if (k === 0) return new Float64Array(0);
   const { values, vectors } = symmetricEigen(congruence(overlap, coefficients, n, k), k);
   if (!(values[0] > 1e-6)) return undefined;
   const scaled = new Float64Array(k * k);
