@@ -42,7 +42,7 @@ export function cursorShapes(request: FigureRequest, index: number | undefined):
     x1: x,
     y0: 0,
     y1: 1,
-    layer: 'below',
+    layer: 'between',
     line: { color: request.theme.cursor, width: 1.5 },
   };
   return [

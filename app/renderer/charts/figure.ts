@@ -110,6 +110,7 @@ export function buildFigure(request: FigureRequest): Figure {
           tickvals: [0],
           ticktext: ['Cautions'],
           tickfont: { color: theme.caution },
+          automargin: true,
           ticks: '',
         },
       }),

@@ -38,7 +38,7 @@ export function printFigure(
       itemwidth: 46,
     },
     hovermode: false,
-    margin: { l: 48, r: 24, t: 72, b: 64 + captionHeight },
+    margin: { l: 72, r: 24, t: 72, b: 64 + captionHeight },
     annotations: [
       ...(layout.annotations ?? []),
       {
