@@ -22,6 +22,8 @@ export interface InterpolatedCurve extends RadialCurve {
 
 /** Points needed to tell anything: a fit of the tail, one more to check it, and some in the well. */
 export const FEWEST_POINTS = 8;
+/** Points closer than this, bohr, are one point computed twice: their difference would be noise over nothing. */
+const SAME_DISTANCE = 1e-4;
 /** How far the next point outwards is, in units of the last distance. */
 const OUTWARD_STEP = 1.15;
 const VARIABLES: readonly InterpolationVariable[] = ['distance', 'logarithm', 'ratio'];
@@ -34,7 +36,7 @@ const DEGREES: readonly number[] = [3, 4, 5, 6, 7, 8, 9, 10];
  * estimate. Leaving a point out doubles the gap around it, so the estimate is many times too large where the curve is
  * well resolved; it may be too small where points are so few that it is far above 0.01 cm⁻¹ anyway.
  *
- * @param points - at least `FEWEST_POINTS`, any order, distinct distances
+ * @param points - at least `FEWEST_POINTS` at different distances, any order
  * @param limit - energy of the separated atoms, hartree; absent: the energy at the largest distance
  * @returns undefined with fewer points
  */
@@ -42,8 +44,10 @@ export function interpolateCurve(
   points: readonly EnergyPoint[],
   limit?: number,
 ): InterpolatedCurve | undefined {
-  if (points.length < FEWEST_POINTS) return undefined;
-  const sorted = [...points].sort((a, b) => a.distance - b.distance);
+  const sorted = [...points]
+    .sort((a, b) => a.distance - b.distance)
+    .filter(({ distance }, k, all) => k === 0 || distance - all[k - 1].distance > SAME_DISTANCE);
+  if (sorted.length < FEWEST_POINTS) return undefined;
   const lowest = sorted.reduce((a, b) => (b.energy < a.energy ? b : a));
   // counted from the lowest point: rounding of a large total energy would otherwise grow with the degree
   const energies = sorted.map(({ energy }) => energy - lowest.energy);
@@ -82,6 +86,8 @@ export function interpolateCurve(
 /**
  * Where more points make the curve better: middles of gaps whose error is above the tolerance, and one point further
  * out where the tail does not predict the last point. Compute them, interpolate anew, and ask again until none is left.
+ * Energies with noise of 1e-8 hartree or more cannot be interpolated to 0.01 cm⁻¹ and would ask without end: cap the
+ * rounds (converged to 1e-10, three or four are enough).
  *
  * @param tolerancePerCm - wanted largest error
  * @param ceiling - gaps that lie above this energy throughout are left as they are, hartree; absent: one well depth

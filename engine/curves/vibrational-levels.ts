@@ -69,7 +69,7 @@ const FIRST_PHASE = 0.2;
 const MOST_LEVELS = 400;
 /** The grid is halved at most so often; three times are usual. */
 const HALVINGS = 6;
-/** No grid gets finer than this; the first has at most 15 000. */
+/** After the two halvings that an uncertainty needs, no grid gets finer than this. */
 const MOST_INTERVALS = 130_000;
 
 /**
@@ -105,8 +105,9 @@ export function vibrationalLevels(
   let extrapolated: readonly Extrapolated[] = [];
   let change: readonly number[] = [];
   let termination: Termination = { kind: 'iterationLimit', limit: HALVINGS };
-  for (let halving = 0; halving < HALVINGS && 2 * intervals <= MOST_INTERVALS; halving++) {
+  for (let halving = 0; halving < HALVINGS; halving++) {
     intervals *= 2;
+    if (halving >= 2 && intervals > MOST_INTERVALS) break;
     const finer = solve(intervals);
     const next = extrapolate(grid, finer);
     change = next.map(({ energy }, v) =>

@@ -133,6 +133,23 @@ describe('interpolateCurve', () => {
     expect(Math.max(...pointsToAdd(curve))).toBeGreaterThan(6);
   });
 
+  it('identity: a point computed twice, with noise, counts once', () => {
+    const points = sample(mixed, 0.6, 9, 40);
+    const twice = [
+      ...points,
+      ...points.map(({ distance, energy }) => ({ distance: distance + 1e-13, energy: energy + 1e-10 })),
+    ];
+    const [single, double] = [interpolated(points, 0), interpolated(twice, 0)];
+    expect(double.points).toEqual(single.points);
+    expect(double.energyAt(1.234)).toBe(single.energyAt(1.234));
+  });
+
+  it('identity: a dense cluster of points at the minimum does no harm elsewhere', () => {
+    const f = morse(0.36, 1.42, 2.07);
+    const curve = interpolated([...sample(f, 1.2, 8, 40), ...sample(f, 1.531, 2.611, 13)], 0);
+    expect(worstError(curve, f)).toBeLessThan(0.001);
+  });
+
   it('identity: too few points give no curve', () => {
     expect(interpolateCurve(sample(mixed, 1, 5, FEWEST_POINTS - 1))).toBeUndefined();
     expect(interpolateCurve(sample(mixed, 1, 5, FEWEST_POINTS))).toBeDefined();
