@@ -23,6 +23,7 @@ export {
   prepareStudy,
 } from './calculation/prepare-study';
 export type {
+  AtomicCharges,
   BasisDescription,
   Caution,
   CorrelatedResult,

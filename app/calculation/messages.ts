@@ -1,4 +1,4 @@
-import type { CompleteStudy, LevelFindings, PointCarry, PointResult } from '#engine';
+import type { CompleteStudy, FollowedNeighbours, LevelFindings, PointCarry, PointResult } from '#engine';
 import type { SerializedError } from '../contract/requests';
 
 /** What a worker is started with. */
@@ -12,6 +12,13 @@ export interface WorkerStart {
 export type WorkerRequest =
   /** points in this order, each starting from the one before it, the first from `guess` */
   | { readonly kind: 'points'; readonly indices: readonly number[]; readonly guess?: PointCarry | undefined }
+  /** the neighbours' solutions at a point that is known already */
+  | {
+      readonly kind: 'follow';
+      readonly index: number;
+      readonly own?: PointCarry | undefined;
+      readonly neighbours: readonly PointCarry[];
+    }
   | { readonly kind: 'minimum'; readonly level: string; readonly points: readonly PointResult[] };
 
 /** A computed point with what its neighbour starts from, if it gave something to start from. */
@@ -22,6 +29,7 @@ export interface FinishedPoint {
 
 export type Finding = { readonly seconds: number } & (
   | ({ readonly kind: 'point'; readonly index: number } & FinishedPoint)
+  | { readonly kind: 'followed'; readonly index: number; readonly followed: FollowedNeighbours }
   | { readonly kind: 'minimum'; readonly level: string; readonly findings: LevelFindings }
 );
 

@@ -1,5 +1,5 @@
 export interface Progress {
-  readonly stage: 'points' | 'minima';
+  readonly stage: 'points' | 'neighbours' | 'minima';
   readonly done: number;
   readonly total: number;
   /** absent as long as it cannot be estimated */

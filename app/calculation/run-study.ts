@@ -4,10 +4,12 @@ import {
   type LevelFindings,
   type PointResult,
   type PreparedStudy,
+  type SolutionCrossing,
   type StudyResults,
   studyCautions,
 } from '#engine';
 import type { SerializedError } from '../contract/requests';
+import { makeCurvesContinuous } from './continuous-curves';
 import { coordinateText } from './coordinate-text';
 import type { FinishedPoint } from './messages';
 import { planRuns, type Run } from './plan';
@@ -25,7 +27,10 @@ export interface RunInput {
 export interface RunOptions {
   /** threads that compute at the same time; default: one for every core */
   readonly workers?: number;
-  /** called once for every point as it is computed, in no particular order; not for those in `finished` */
+  /**
+   * called for every point as it is computed, in no particular order, not for those in `finished`; again for a
+   * point that a neighbour's orbitals led to a lower solution
+   */
   readonly onPoint?: (index: number, point: FinishedPoint) => void;
   /** called at every step, and every second in between */
   readonly onProgress?: (progress: Progress) => void;
@@ -42,7 +47,8 @@ export type RunOutcome =
   | { readonly kind: 'failed'; readonly error: SerializedError };
 
 /**
- * Computes a study on all cores: first the points, then each level's minimum.
+ * Computes a study on all cores: first the points, then what their neighbours' solutions lead to, then each level's
+ * minimum.
  *
  * The results depend neither on the number of workers nor on which points were known before (see plan.ts).
  *
@@ -57,9 +63,17 @@ export async function runStudy(
   const pool = openPool(workers, () => startWorker(start));
   signal?.addEventListener('abort', pool.close, { once: true });
   try {
-    const points = await computePoints(prepared, pool, workers, options);
-    const findings = await findMinima(prepared, points, pool, workers, options.onProgress);
-    return { kind: 'done', results: assemble(prepared, points, findings) };
+    const computed = await computePoints(prepared, pool, workers, options);
+    const { points, crossings } = await makeCurvesContinuous({
+      prepared,
+      points: computed,
+      pool,
+      onImproved: (index, point) => options.onPoint?.(index, point),
+      onRound: (total) => trackProgress({ stage: 'neighbours', total, done: 0, workers }, options.onProgress),
+    });
+    const results = points.map(({ result }) => result);
+    const findings = await findMinima(prepared, results, pool, workers, options.onProgress);
+    return { kind: 'done', results: assemble(prepared, results, findings, crossings) };
   } catch (error) {
     if (error instanceof PoolClosed) return { kind: 'cancelled' };
     if (error instanceof CalculationFailure) return { kind: 'failed', error: error.error };
@@ -75,12 +89,12 @@ async function computePoints(
   pool: WorkerPool,
   workers: number,
   { onPoint, onProgress, finished = new Map() }: Pick<RunOptions, 'onPoint' | 'onProgress' | 'finished'>,
-): Promise<readonly PointResult[]> {
+): Promise<readonly FinishedPoint[]> {
   const total = prepared.coordinates.length;
-  const results = Array.from({ length: total }, (_, index) => finished.get(index)?.result);
+  const results = Array.from({ length: total }, (_, index) => finished.get(index));
   const progress = trackProgress({ stage: 'points', total, done: finished.size, workers }, onProgress);
   const accept = (index: number, point: FinishedPoint, seconds: number) => {
-    results[index] = point.result;
+    results[index] = point;
     onPoint?.(index, point);
     progress.finished(seconds);
   };
@@ -149,6 +163,7 @@ function assemble(
   prepared: PreparedStudy,
   points: readonly PointResult[],
   findings: Readonly<Record<string, LevelFindings>>,
+  crossings: readonly SolutionCrossing[],
 ): StudyResults {
   return {
     format: 'farwell/results',
@@ -158,7 +173,7 @@ function assemble(
     basis: describeBasisUsed(prepared),
     points,
     findings,
-    cautions: studyCautions(prepared, points),
+    cautions: studyCautions(prepared, points, crossings),
   };
 }
 

@@ -36,14 +36,25 @@ function compute(prepared: engine.PreparedStudy, request: WorkerRequest, port: S
     port.post({ kind: 'minimum', level, findings, seconds: secondsSinceLast() });
     return;
   }
+  if (request.kind === 'follow') {
+    const { index, own, neighbours } = request;
+    const followed = engine.followNeighbours(prepared, coordinateOf(prepared, index), own, neighbours);
+    port.post({ kind: 'followed', index, followed, seconds: secondsSinceLast() });
+    return;
+  }
   let { guess } = request;
   for (const index of request.indices) {
-    const coordinate = prepared.coordinates[index];
-    if (coordinate === undefined) throw new RangeError(`The study has no point ${index}.`);
+    const coordinate = coordinateOf(prepared, index);
     const { result, carry } = engine.computePoint(prepared, coordinate, { guess });
     guess = carry;
     port.post({ kind: 'point', index, result, carry, seconds: secondsSinceLast() });
   }
+}
+
+function coordinateOf(prepared: engine.PreparedStudy, index: number): number | null {
+  const coordinate = prepared.coordinates[index];
+  if (coordinate === undefined) throw new RangeError(`The study has no point ${index}.`);
+  return coordinate;
 }
 
 function asData(error: unknown): SerializedError {

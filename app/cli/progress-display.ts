@@ -72,7 +72,12 @@ function progressText(progress: Progress): string {
 }
 
 function countText({ stage, done, total }: Progress): string {
-  return stage === 'points'
-    ? `${done} of ${counted(total, 'point')}`
-    : `minimum of ${done} of ${counted(total, 'curve')}`;
+  switch (stage) {
+    case 'points':
+      return `${done} of ${counted(total, 'point')}`;
+    case 'neighbours':
+      return `${done} of ${counted(total, 'point')} compared with their neighbours`;
+    case 'minima':
+      return `minimum of ${done} of ${counted(total, 'curve')}`;
+  }
 }

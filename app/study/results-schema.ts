@@ -37,6 +37,9 @@ const stateSymmetry = z.looseObject({
 });
 const orbitalLabels = z.array(z.string().nullable());
 
+const divided = { mulliken: numbers, loewdin: numbers };
+const charges = z.looseObject({ ...divided, spin: z.looseObject(divided).exactOptional() });
+
 const hartreeFock = z.looseObject({
   kind: z.literal('hartreeFock'),
   energy: number,
@@ -53,6 +56,7 @@ const hartreeFock = z.looseObject({
   stability: z
     .union([z.looseObject({ singlet: number, triplet: number }), z.looseObject({ own: number })])
     .exactOptional(),
+  charges: charges.exactOptional(),
 });
 
 const perturbation = z.looseObject({
@@ -92,6 +96,7 @@ const correlatedState = z.looseObject({
   referenceWeight: number,
   residual: number,
   dipole: vector,
+  charges: charges.exactOptional(),
   naturalOccupations: numbers,
   leading: z.array(
     z.looseObject({
@@ -139,7 +144,12 @@ const level: z.ZodType<LevelResult> = z.discriminatedUnion('kind', [
 ]);
 
 const cautions = z.array(
-  z.looseObject({ code: z.string(), message: z.string(), level: z.string().exactOptional() }),
+  z.looseObject({
+    code: z.string(),
+    message: z.string(),
+    level: z.string().exactOptional(),
+    range: z.tuple([z.number(), z.number()]).exactOptional(),
+  }),
 );
 
 const point: z.ZodType<PointResult> = z.looseObject({
@@ -153,6 +163,17 @@ const point: z.ZodType<PointResult> = z.looseObject({
     }),
   ),
   nuclearRepulsion: z.number(),
+  scaleFactors: z.record(z.string(), z.record(z.string(), z.number())).exactOptional(),
+  scaleOptimisation: z
+    .looseObject({
+      level: z.enum(['RHF', 'ROHF', 'UHF']),
+      converged: z.boolean(),
+      termination,
+      iterations: z.number(),
+      residual: number,
+      atLimit: z.array(z.string()).exactOptional(),
+    })
+    .exactOptional(),
   symmetry: z
     .looseObject({
       pointGroup: z.enum(['C1', 'Ci', 'Cs', 'C2', 'C2v', 'C2h', 'D2', 'D2h']),

@@ -115,6 +115,15 @@ export interface HartreeFockResult {
    * triplet one; UHF and ROHF: of the one within their own kind.
    */
   readonly stability?: { readonly singlet: number; readonly triplet: number } | { readonly own: number };
+  readonly charges?: AtomicCharges;
+}
+
+/** Charges by atom, in e, after two ways of sharing the electrons out; ghosts have theirs too. */
+export interface AtomicCharges {
+  readonly mulliken: readonly number[];
+  readonly loewdin: readonly number[];
+  /** alpha minus beta electrons; UHF and ROHF */
+  readonly spin?: { readonly mulliken: readonly number[]; readonly loewdin: readonly number[] };
 }
 
 export type OrbitalLabels = readonly (string | null)[];
@@ -179,6 +188,7 @@ export interface CorrelatedState {
   readonly referenceWeight: number;
   readonly residual: number;
   readonly dipole: Vector3;
+  readonly charges?: AtomicCharges;
   readonly naturalOccupations: readonly number[];
   readonly leading: readonly LeadingDeterminant[];
 }

@@ -45,7 +45,7 @@ function Computing({ run, onCancel }: { readonly run: Run; readonly onCancel: ()
               <span className="progressFill" style={{ inlineSize: `${percentage}%` }} />
             </span>
             <span className="hint">
-              {done} of {total} {run.progress?.stage ?? 'points'}
+              {done} of {total} {STAGES[run.progress?.stage ?? 'points'] ?? run.progress?.stage}
               {secondsLeft === undefined ? '' : `, ${formatDuration(secondsLeft)} left`}
             </span>
           </>
@@ -54,6 +54,13 @@ function Computing({ run, onCancel }: { readonly run: Run; readonly onCancel: ()
     </div>
   );
 }
+
+/** What is counted at each stage of a calculation. */
+const STAGES: Readonly<Record<string, string>> = {
+  points: 'points',
+  neighbours: 'points compared with their neighbours',
+  minima: 'minima',
+};
 
 const howManyPlaces = (count: number): string =>
   count === 1

@@ -17,7 +17,7 @@ const point = (energy: number): FinishedPoint => ({
     levels: {},
     cautions: [{ code: 'a', message: 'long – “quoted”' }],
   },
-  carry: { restricted: { alpha: Float64Array.of(1 / 3, energy), beta: Float64Array.of(energy) } },
+  carry: { restricted: { alpha: Float64Array.of(1 / 3, energy), beta: Float64Array.of(energy), energy } },
 });
 
 /** A journal with points 0, 1 and 2, closed. */

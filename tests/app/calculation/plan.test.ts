@@ -5,7 +5,7 @@ import { planRuns, RUN_LENGTH } from '../../../app/calculation/plan';
 
 const finishedPoint = (index: number): FinishedPoint => ({
   result: { coordinate: index, atoms: [], nuclearRepulsion: 0, levels: {}, cautions: [] },
-  carry: { restricted: { alpha: Float64Array.of(index), beta: Float64Array.of(index) } },
+  carry: { restricted: { alpha: Float64Array.of(index), beta: Float64Array.of(index), energy: 0 } },
 });
 const finishedAt = (indices: readonly number[]) =>
   new Map(indices.map((index) => [index, finishedPoint(index)]));

@@ -97,7 +97,7 @@ describe('runStudy', () => {
     }
   });
 
-  it('tells how far it is, first for the points, then for the minima', async () => {
+  it('tells how far it is, first for the points, then for their neighbours, then for the minima', async () => {
     const told: Progress[] = [];
     const finished = new Map<number, FinishedPoint>();
     await resultsOf({ onPoint: (index, point) => index < 3 && finished.set(index, point) });
@@ -107,9 +107,11 @@ describe('runStudy', () => {
     expect(points[0]?.secondsLeft).toBeUndefined();
     expect(points[1]?.secondsLeft).toBeGreaterThan(0);
     expect(points.at(-1)?.secondsLeft).toBe(0);
-    expect(told.slice(points.length).map(({ done, total }) => [done, total])).toEqual(
-      [0, 1, 2, 3].map((done) => [done, 3]),
-    );
+    expect([...new Set(told.map(({ stage }) => stage))]).toEqual(['points', 'neighbours', 'minima']);
+    const countsOf = (wanted: Progress['stage']) =>
+      told.filter(({ stage }) => stage === wanted).map(({ done, total }) => [done, total]);
+    expect(countsOf('neighbours')).toEqual(Array.from({ length: 11 }, (_, done) => [done, 10]));
+    expect(countsOf('minima')).toEqual([0, 1, 2, 3].map((done) => [done, 3]));
   });
 
   it('stops at once when it is cancelled, and says nothing afterwards', async () => {

@@ -27,7 +27,13 @@ describe('startWorkerThread', () => {
       expect.objectContaining({
         kind: 'point',
         index: 2,
-        carry: { restricted: { alpha: expect.any(Float64Array), beta: expect.any(Float64Array) } },
+        carry: {
+          restricted: {
+            alpha: expect.any(Float64Array),
+            beta: expect.any(Float64Array),
+            energy: expect.any(Number),
+          },
+        },
       }),
       expect.objectContaining({ kind: 'point', index: 3 }),
       { kind: 'free' },
