@@ -23,6 +23,8 @@ export interface HamiltonianProduct {
   apply(vector: Float64Array, product: Float64Array): void;
   /** Makes a vector that is nearly even or odd under the exchange of alpha and beta exactly so, in place. */
   restoreSpinFlip(vector: Float64Array): void;
+  /** What of a vector is even and what is odd under that exchange; the vector itself where there is none. */
+  spinFlipParts(vector: Float64Array): readonly Float64Array[];
 }
 
 /**
@@ -71,6 +73,11 @@ export function prepareHamiltonianProduct(
       const parity = spinFlipParity(vector, transposed, NEAR_PARITY);
       if (parity === 0) return;
       for (let i = 0; i < vector.length; i++) vector[i] = (vector[i] + parity * transposed[i]) / 2;
+    },
+    spinFlipParts(vector) {
+      if (space.alpha !== space.beta) return [vector];
+      transposeInto(space, vector, transposed);
+      return [1, -1].map((parity) => vector.map((value, i) => (value + parity * transposed[i]) / 2));
     },
   };
 }

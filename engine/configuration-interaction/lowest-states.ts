@@ -10,7 +10,7 @@ import {
   modelPreconditioner,
   spreadModelVector,
 } from './model-space';
-import { basisVectorLimit, guessLimit } from './size';
+import { basisVectorLimit, guessLimit, PROBES } from './size';
 
 /** A Hamiltonian over many basis states, of which the lowest eigenvectors are wanted. */
 export interface StateProblem {
@@ -20,6 +20,8 @@ export interface StateProblem {
   apply(vector: Float64Array, product: Float64Array): void;
   /** as of `DavidsonProblem` */
   restoreSymmetry?(direction: Float64Array): void;
+  /** parts of a vector that H does not join, as far as the iteration must keep them apart; default: the whole */
+  partsOf?(vector: Float64Array): readonly Float64Array[];
   elementsAmong(places: Int32Array): ModelElements;
   /** how degenerate states are told apart */
   readonly distinguishing: readonly DistinguishingOperator[];
@@ -42,6 +44,8 @@ export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iteratio
 export const MODEL_SPACE_SIZE = 300;
 /** Energies this close, in hartree, are not put in order. */
 const SAME_ENERGY = 1e-9;
+/** Below the model's lowest energy, hartree: what lies higher by this much keeps a quarter of its weight. */
+const PROBE_SHIFT = 0.5;
 /** Model vectors per state wanted, at least. */
 const MODEL_VECTORS_PER_STATE = 10;
 
@@ -102,7 +106,10 @@ function iterate(problem: StateProblem, model: ModelSpace, settings: StateSettin
       apply: (vector, product) => problem.apply(vector, product),
       precondition,
       restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
-      guesses: guesses.map((k) => spreadModelVector(model, k, problem.dimension)),
+      guesses: [
+        ...guesses.map((k) => spreadModelVector(model, k, problem.dimension)),
+        ...probes(problem, model, precondition),
+      ],
     },
     {
       roots: settings.states,
@@ -113,6 +120,33 @@ function iterate(problem: StateProblem, model: ModelSpace, settings: StateSettin
       stage: settings.stage,
     },
   );
+}
+
+/**
+ * Low-lying vectors without any symmetry: H may have symmetries that no single basis state shows, and a state of
+ * a kind that all guesses lack would never be found. Arbitrary numbers, drawn towards low energies by the inverse of
+ * the preconditioner's matrix.
+ */
+function probes(
+  problem: StateProblem,
+  model: ModelSpace,
+  precondition: ReturnType<typeof modelPreconditioner>,
+): Float64Array[] {
+  const arbitrary = arbitraryNumbers(problem.dimension);
+  const parts = problem.partsOf?.(arbitrary) ?? [arbitrary];
+  const shift = model.energies[0] - PROBE_SHIFT;
+  const between = new Float64Array(problem.dimension);
+  return parts.slice(0, PROBES).map((part) => {
+    const probe = new Float64Array(problem.dimension);
+    precondition(part, shift, between);
+    precondition(between, shift, probe);
+    return probe;
+  });
+}
+
+/** Between −1 and 1 and always the same: the fractional parts of k²·√2 follow no pattern of the basis. */
+function arbitraryNumbers(count: number): Float64Array {
+  return Float64Array.from({ length: count }, (_, k) => 2 * ((((k + 1) ** 2 % 1e6) * Math.SQRT2) % 1) - 1);
 }
 
 /**

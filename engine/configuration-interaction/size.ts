@@ -11,9 +11,12 @@ export function guessLimit(states: number): number {
   return 2 * states + 4;
 }
 
+/** Vectors without symmetry that are pursued beside the guesses, at most. */
+export const PROBES = 2;
+
 /** Basis vectors of the eigensolver: room for several steps of every state before it must collapse. */
 export function basisVectorLimit(states: number): number {
-  return guessLimit(states) + 4 * states + 12;
+  return guessLimit(states) + 4 * (PROBES + states) + 12;
 }
 
 /**

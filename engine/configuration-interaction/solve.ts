@@ -82,6 +82,7 @@ export function solveConfigurationInteraction(
       diagonal: spinAveragedDiagonal(space, integrals),
       apply: product.apply,
       restoreSymmetry: product.restoreSpinFlip,
+      partsOf: product.spinFlipParts,
       elementsAmong: (places) => {
         const determinants = Array.from(places, (place) => determinantAt(space, place));
         return {

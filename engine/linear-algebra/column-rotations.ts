@@ -1,4 +1,4 @@
-/** Sweeps that wait until so many rotations have come together: rows are then read once for all of them. */
+/** Room for so many full sweeps; they wait, so that a row is read once for all of them. */
 const SWEEPS_TOGETHER = 16;
 
 /** Rotations of neighbouring columns, in the order in which they are to be applied. */

@@ -47,6 +47,8 @@ export interface DavidsonResult {
 export const DEGENERACY_TOLERANCE = 1e-6;
 /** A direction of unit length that keeps less than this beside the basis brings nothing but rounding errors. */
 const SMALLEST_NEW_DIRECTION = 1e-9;
+/** What a guard that lies above a missed root is taken to hold of it, at least. */
+const SMALLEST_WEIGHT = 0.01;
 /** Stagnated: so many iterations without a new lowest residual. */
 const PATIENCE = 30;
 
@@ -64,8 +66,9 @@ export function davidsonVectorCount(maximumVectors: number): number {
  * At the limit of vectors the basis collapses onto its lowest third.
  *
  * Missed roots: beside the wanted roots, the next eigenvector of every group of guesses is a guard. It is improved
- * like a root until its value less its residual, θ − ‖r‖, lies above the highest wanted root: an eigenvalue lies
- * within ‖r‖ of θ (D. H. Weinstein, Proc. Natl. Acad. Sci. 20, 529 (1934)). Roots degenerate with the last wanted
+ * like a root until θ − ‖r‖/√w lies above the highest wanted root, w = `SMALLEST_WEIGHT`: a vector that has the
+ * weight w or more in an eigenvector of value λ has ‖r‖ ≥ √w·|θ − λ|. (Without w, D. H. Weinstein's bound, Proc.
+ * Natl. Acad. Sci. 20, 529 (1934), only says that some eigenvalue is near, not that none is lower.) Roots degenerate with the last wanted
  * one count as wanted, so that a cut through a degenerate set gives all of it.
  *
  * Sources: E. R. Davidson, J. Comput. Phys. 17, 87 (1975); the second term: J. Olsen, P. Jørgensen, J. Simons,
@@ -99,7 +102,11 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
       const norm = subspace.residual(k);
       if (k < wanted) worst = Math.max(worst, norm);
       if (norm <= options.residualTolerance) continue;
-      if (k >= wanted && subspace.values[k] - norm > highest + DEGENERACY_TOLERANCE) continue;
+      if (
+        k >= wanted &&
+        subspace.values[k] - norm / Math.sqrt(SMALLEST_WEIGHT) > highest + DEGENERACY_TOLERANCE
+      )
+        continue;
       unfinished.push(k);
       worstUnfinished = Math.max(worstUnfinished, norm);
     }

@@ -98,6 +98,31 @@ describe('solveConfigurationInteraction: against the dense matrix', () => {
   });
 });
 
+describe('solveConfigurationInteraction: roots that hide', () => {
+  const sites = (repulsion: number) => hubbardRing(6, repulsion);
+  const plane = (repulsion: number) =>
+    rotateOrbitals(sites(repulsion), symmetricEigen(sites(repulsion).oneElectron, 6).vectors);
+  it.each([
+    // a degenerate partner in another sector, found by a guard whose residual was larger than its height
+    ['delocalised orbitals, U = 12', plane(12), [5]],
+    // nothing near the lowest determinants has the symmetry of the ground state
+    ['delocalised orbitals, U = 30', plane(30), [1]],
+    // lattice symmetries that no single determinant shows
+    ['site orbitals, U = 1/2', sites(0.5), [6, 10]],
+    ['site orbitals, U = 2', sites(2), [8]],
+  ])('independent: half-filled Hubbard ring of 6 sites, %s: equals the dense matrix', (_, ring, counts) => {
+    const exact = spectrum(ring, 3, 3, FULL);
+    for (const states of counts) {
+      const result = solve(ring, 3, 3, FULL, states);
+      expect(result.termination).toEqual({ kind: 'converged' });
+      expect(result.states).toHaveLength(states);
+      result.states.forEach((state, k) => {
+        expect(Math.abs(state.energy - exact[k])).toBeLessThan(1e-9);
+      });
+    }
+  });
+});
+
 describe('solveConfigurationInteraction: closed forms', () => {
   it('identity: two electrons in two orbitals of different symmetry', () => {
     const { h11, h22, J11, J22, J12, K12 } = TEXTBOOK_HYDROGEN;
