@@ -18,8 +18,8 @@ export interface FieldSymmetry {
   readonly labels: Partial<
     Record<HartreeFockName, Pick<HartreeFockResult, 'orbitalSymmetries' | 'symmetry'>>
   >;
-  /** of all orbitals of the reference, where each has a representation */
-  readonly species?: OrbitalSpecies;
+  /** of all orbitals of the reference */
+  readonly species: OrbitalSpecies;
 }
 
 /** The same solutions with degenerate orbitals turned so that each has a representation, and their labels. */
@@ -68,7 +68,6 @@ export function symmetriseFields(
         },
       }),
   };
-  const species = speciesOf((ofRestricted ?? ofOpen)!);
   return {
     fields: { ...turned, reference: (turned.restricted ?? turned.restrictedOpen)! },
     symmetry: {
@@ -78,7 +77,7 @@ export function symmetriseFields(
         ...(ofOpen && { ROHF: label(ofOpen) }),
         ...(ofSpins && { UHF: label(ofSpins[0], ofSpins[1]) }),
       },
-      ...(species && { species }),
+      species: speciesOf((ofRestricted ?? ofOpen)!),
     },
   };
 }
@@ -91,7 +90,11 @@ function fieldOf({ coefficients, energies }: SymmetricOrbitals) {
   return { coefficients, orbitalEnergies: energies };
 }
 
-function speciesOf({ irreps, axialRotation }: SymmetricOrbitals): OrbitalSpecies | undefined {
+function speciesOf({ irreps, operations, axialRotation }: SymmetricOrbitals): OrbitalSpecies {
   const all = irreps.filter((irrep) => irrep !== undefined);
-  return all.length === irreps.length ? { irreps: all, ...(axialRotation && { axialRotation }) } : undefined;
+  return {
+    ...(all.length === irreps.length && { irreps: all }),
+    operations,
+    ...(axialRotation && { axialRotation }),
+  };
 }

@@ -137,7 +137,7 @@ export function computeSingles(input: CorrelationInput): SinglesResult {
     occupied: input.activeElectrons[0],
     states: input.states,
     dipole: input.dipole.map((matrix) => activeBlock(matrix, orbitalCount, frozen)),
-    ...activeSpecies(input),
+    species: activeSpecies(input),
     control: input.control,
   });
   const termination = onOrbitals(input, result.termination);
@@ -174,7 +174,7 @@ export function computeCorrelated(
     maximumRank: level.maximumRank,
     states: input.states,
     memoryLimit: input.memoryLimit,
-    ...activeSpecies(input),
+    species: activeSpecies(input),
     control: input.control,
   });
   // integrals that are not finite leave nothing to report
@@ -239,16 +239,13 @@ function stateResult(
 }
 
 /** Frozen orbitals are filled, so that they add nothing to the symmetry of a state. */
-function activeSpecies({ symmetry: { species }, orbitalCount, frozen }: CorrelationInput): {
-  species?: OrbitalSpecies;
-} {
-  if (!species) return {};
-  const { irreps, axialRotation } = species;
+function activeSpecies({ symmetry, orbitalCount, frozen }: CorrelationInput): OrbitalSpecies {
+  const { irreps, operations, axialRotation } = symmetry.species;
+  const active = (matrix: Float64Array) => activeBlock(matrix, orbitalCount, frozen);
   return {
-    species: {
-      irreps: irreps.slice(frozen),
-      ...(axialRotation && { axialRotation: activeBlock(axialRotation, orbitalCount, frozen) }),
-    },
+    ...(irreps && { irreps: irreps.slice(frozen) }),
+    ...(operations && { operations: operations.map(active) }),
+    ...(axialRotation && { axialRotation: active(axialRotation) }),
   };
 }
 

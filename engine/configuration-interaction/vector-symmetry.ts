@@ -1,14 +1,23 @@
-import { dot } from '../linear-algebra/dense';
+import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { DistinguishingOperator } from './degenerate-states';
 import { type DeterminantSpace, rowLength } from './determinant-space';
 import { occupiedOrbitals } from './determinants';
+import { isFullSpace, orbitalMap } from './orbital-map';
 import type { SingleReplacements } from './replacements';
 import { type StringSpace, stringAt } from './string-space';
 
 /** What is known of the symmetry of the orbitals that many-electron functions are made of. */
 export interface OrbitalSpecies {
-  /** number of each orbital's representation, 0 … 7; a product of orbitals has the exclusive or of the numbers */
-  readonly irreps: readonly number[];
+  /**
+   * number of each orbital's representation, 0 … 7; a product of orbitals has the exclusive or of the numbers. Absent
+   * where orbitals mix representations
+   */
+  readonly irreps?: readonly number[];
+  /**
+   * ⟨p|R|q⟩ of the operations whose characters make the bits of the numbers, n×n row-major; they label full CI also
+   * over orbitals that mix representations
+   */
+  readonly operations?: readonly Float64Array[];
   /** of linear molecules: ⟨p| ∂/∂φ |q⟩ about the axis, n×n antisymmetric, row-major */
   readonly axialRotation?: Float64Array;
 }
@@ -24,58 +33,104 @@ export interface VectorSymmetry {
   readonly axialSquare?: number;
 }
 
-/** product ← (∂/∂φ)·vector, projected on the space. */
-type AxialRotation = (vector: Float64Array, product: Float64Array) => void;
+/** product ← operator·vector, projected on the space. */
+type VectorOperator = (vector: Float64Array, product: Float64Array) => void;
 
 /** Elements of the axial rotation below this are rounding, and would only cost time. */
 const NO_ROTATION = 1e-10;
+/** A part of this squared norm is rounding. */
+const NOTHING = 1e-24;
 /** Numbers of representations and squared angular momenta are whole. */
 const WHOLE = 0.1;
 
 /** How vectors over many-electron functions behave under the operations that the orbitals follow. */
 export class SpaceSymmetry {
-  /** @param irreps - of every function */
+  /**
+   * @param operations - commuting operations of order two, whose characters make the bits of representations
+   * @param rotate - ∂/∂φ about the axis of a linear molecule
+   */
   constructor(
-    readonly irreps: Uint8Array,
-    private readonly rotateInto: AxialRotation | undefined,
+    private readonly operations: readonly VectorOperator[],
+    private readonly rotate: VectorOperator | undefined,
   ) {}
 
   /** @param vector - of norm 1 */
   describe(vector: Float64Array): VectorSymmetry {
     const irrepWeights = new Float64Array(8);
-    for (let i = 0; i < vector.length; i++) irrepWeights[this.irreps[i]] += vector[i] ** 2;
-    if (!this.rotateInto) return { irrepWeights };
+    this.split(vector, (part, irrep) => {
+      irrepWeights[irrep] = dot(part, part);
+    });
+    if (!this.rotate) return { irrepWeights };
     const turned = new Float64Array(vector.length);
-    this.rotateInto(vector, turned);
+    this.rotate(vector, turned);
     return { irrepWeights, axialSquare: dot(turned, turned) };
   }
 
   /** Operators that make degenerate states of different symmetry definite. */
   distinguishingOperators(): DistinguishingOperator[] {
-    const { rotateInto } = this;
+    const { rotate } = this;
     const byIrrep: DistinguishingOperator = {
       tolerance: WHOLE,
       apply: (vector, product) => {
-        for (let i = 0; i < vector.length; i++) product[i] = this.irreps[i] * vector[i];
+        product.fill(0);
+        this.split(vector, (part, irrep) => {
+          addScaledInto(product, irrep, part);
+        });
       },
     };
-    if (!rotateInto) return [byIrrep];
+    if (!rotate) return [byIrrep];
     return [
       byIrrep,
       {
         tolerance: WHOLE,
         apply: (vector, product) => {
           const turned = new Float64Array(vector.length);
-          rotateInto(vector, turned);
-          rotateInto(turned, product);
+          rotate(vector, turned);
+          rotate(turned, product);
           for (let i = 0; i < product.length; i++) product[i] = -product[i];
         },
       },
     ];
   }
+
+  /** Hands over the part of a vector in each representation, one after the other so that few are held at a time. */
+  private split(
+    vector: Float64Array,
+    take: (part: Float64Array, irrep: number) => void,
+    bit = 0,
+    irrep = 0,
+  ): void {
+    if (dot(vector, vector) < NOTHING) return;
+    if (bit === this.operations.length) {
+      take(vector, irrep);
+      return;
+    }
+    const image = new Float64Array(vector.length);
+    this.operations[bit](vector, image);
+    const part = new Float64Array(vector.length);
+    for (const sign of [1, -1]) {
+      for (let i = 0; i < part.length; i++) part[i] = (vector[i] + sign * image[i]) / 2;
+      this.split(part, take, bit + 1, sign > 0 ? irrep : irrep | (1 << bit));
+    }
+  }
 }
 
-export function determinantSymmetry(space: DeterminantSpace, species: OrbitalSpecies): SpaceSymmetry {
+/** Representations have numbers of so many bits. */
+const BITS = 3;
+
+/** @returns undefined where the orbitals mix representations, and the space does not hold all determinants */
+export function determinantSymmetry(
+  space: DeterminantSpace,
+  species: OrbitalSpecies,
+): SpaceSymmetry | undefined {
+  const rotate = species.axialRotation && determinantRotation(space, species.axialRotation);
+  if (!species.irreps) {
+    if (!species.operations || !isFullSpace(space)) return undefined;
+    return new SpaceSymmetry(
+      species.operations.map((operation) => orbitalMap(space, operation)),
+      rotate,
+    );
+  }
   const ofAlpha = stringIrreps(space.alpha, species.irreps);
   const ofBeta = stringIrreps(space.beta, species.irreps);
   const irreps = new Uint8Array(space.dimension);
@@ -84,10 +139,14 @@ export function determinantSymmetry(space: DeterminantSpace, species: OrbitalSpe
     const length = rowLength(space.rows, row);
     for (let a = 0; a < length; a++) irreps[start + a] = ofAlpha[a] ^ ofBeta[row];
   }
-  return new SpaceSymmetry(
-    irreps,
-    species.axialRotation && determinantRotation(space, species.axialRotation),
-  );
+  return new SpaceSymmetry(characters(irreps), rotate);
+}
+
+/** The operations where every function belongs to a representation: signs. */
+function characters(irreps: Uint8Array): VectorOperator[] {
+  return Array.from({ length: BITS }, (_, bit) => (vector, product) => {
+    for (let i = 0; i < vector.length; i++) product[i] = (irreps[i] >> bit) & 1 ? -vector[i] : vector[i];
+  });
 }
 
 /**
@@ -98,12 +157,13 @@ export function singlesSymmetry(
   occupied: number,
   virtuals: number,
   { irreps, axialRotation }: OrbitalSpecies,
-): SpaceSymmetry {
+): SpaceSymmetry | undefined {
+  if (!irreps) return undefined;
   const n = occupied + virtuals;
   const ofExcitations = Uint8Array.from({ length: occupied * virtuals }, (_, ia) => {
     return irreps[Math.trunc(ia / virtuals)] ^ irreps[occupied + (ia % virtuals)];
   });
-  const rotate: AxialRotation = (vector, product) => {
+  const rotate: VectorOperator = (vector, product) => {
     product.fill(0);
     for (let i = 0; i < occupied; i++) {
       for (let a = 0; a < virtuals; a++) {
@@ -116,10 +176,10 @@ export function singlesSymmetry(
       }
     }
   };
-  return new SpaceSymmetry(ofExcitations, axialRotation && rotate);
+  return new SpaceSymmetry(characters(ofExcitations), axialRotation && rotate);
 }
 
-function determinantRotation(space: DeterminantSpace, rotation: Float64Array): AxialRotation {
+function determinantRotation(space: DeterminantSpace, rotation: Float64Array): VectorOperator {
   const ofAlpha = stringRotation(space.alphaReplacements, rotation);
   const ofBeta = stringRotation(space.betaReplacements, rotation);
   const { rows } = space;

@@ -22,6 +22,8 @@ export interface OrbitalSet {
 export interface SymmetricOrbitals extends OrbitalSet {
   /** number of each orbital's representation, multiplied by exclusive or; undefined where it has none */
   readonly irreps: readonly (number | undefined)[];
+  /** ⟨p|R|q⟩ of the generators of the group, each orbitals × orbitals, row-major */
+  readonly operations: readonly Float64Array[];
   /**
    * ⟨p| ∂/∂φ |q⟩ about the axis of a linear molecule, antisymmetric, orbitals × orbitals, row-major: i times the
    * angular momentum
@@ -61,11 +63,13 @@ export function symmetriseOrbitals(
 
   const { coefficients, energies } = makePure(orbitals, overlap, n, actions, rotation, boundaries);
   const dual = multiply(overlap, coefficients, n, n, m);
-  const purity = actions.map((action) => diagonal(dual, applyAction(action, coefficients, m), n, m));
+  const operations = actions.map((action) =>
+    multiplyLeftTransposed(dual, applyAction(action, coefficients, m), m, n, m),
+  );
   const irreps = Array.from({ length: m }, (_, p) => {
-    const isPure = purity.every((characters) => (1 - Math.abs(characters[p])) / 2 <= IMPURITY);
+    const isPure = operations.every((matrix) => (1 - Math.abs(matrix[p * (m + 1)])) / 2 <= IMPURITY);
     return isPure
-      ? purity.reduce((bits, characters, b) => bits | (Number(characters[p] < 0) << b), 0)
+      ? operations.reduce((bits, matrix, b) => bits | (Number(matrix[p * (m + 1)] < 0) << b), 0)
       : undefined;
   });
   const images = rotation && applyAction(rotation, coefficients, m);
@@ -74,6 +78,7 @@ export function symmetriseOrbitals(
     coefficients,
     energies,
     irreps,
+    operations,
     ...(images && { axialRotation: multiplyLeftTransposed(dual, images, m, n, m) }),
     lambdas: irreps.map((irrep, p) =>
       squares && irrep !== undefined ? axialMomentum(irrep, squares[p]) : undefined,

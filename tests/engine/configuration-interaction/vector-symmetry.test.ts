@@ -101,7 +101,7 @@ describe('determinantSymmetry', () => {
           return sum + (ofAlpha + ofBeta) * vector[place];
         }, 0),
       );
-      const found = determinantSymmetry(space, { irreps: IRREPS, axialRotation }).describe(vector);
+      const found = determinantSymmetry(space, { irreps: IRREPS, axialRotation })!.describe(vector);
       found.irrepWeights.forEach((weight, irrep) => {
         expect(weight).toBeCloseTo(weights[irrep], 13);
       });
@@ -112,7 +112,7 @@ describe('determinantSymmetry', () => {
       const [byIrrep, byRotation] = determinantSymmetry(space, {
         irreps: IRREPS,
         axialRotation,
-      }).distinguishingOperators();
+      })!.distinguishingOperators();
       const product = new Float64Array(vector.length);
       const expectation = () => product.reduce((sum, value, place) => sum + value * vector[place], 0);
       byRotation.apply(vector, product);
@@ -127,7 +127,7 @@ describe('determinantSymmetry', () => {
 
   it('identity: without a rotation only representations are told', () => {
     const space = buildDeterminantSpace(6, 1, 1, Number.POSITIVE_INFINITY);
-    const symmetry = determinantSymmetry(space, { irreps: IRREPS });
+    const symmetry = determinantSymmetry(space, { irreps: IRREPS })!;
     expect(symmetry.distinguishingOperators()).toHaveLength(1);
     expect(symmetry.describe(normalised(randomArray(36, seededRandom(1)))).axialSquare).toBeUndefined();
   });
@@ -154,8 +154,10 @@ describe('singlesSymmetry', () => {
         vector[place] = (sign * amplitudes[hole * virtuals + particle - occupied]) / Math.SQRT2;
       }
     });
-    const expected = determinantSymmetry(space, { irreps: IRREPS, axialRotation }).describe(vector);
-    const found = singlesSymmetry(occupied, virtuals, { irreps: IRREPS, axialRotation }).describe(amplitudes);
+    const expected = determinantSymmetry(space, { irreps: IRREPS, axialRotation })!.describe(vector);
+    const found = singlesSymmetry(occupied, virtuals, { irreps: IRREPS, axialRotation })!.describe(
+      amplitudes,
+    );
     expect(found.axialSquare).toBeCloseTo(expected.axialSquare!, 12);
     found.irrepWeights.forEach((weight, irrep) => {
       expect(weight).toBeCloseTo(expected.irrepWeights[irrep], 13);
