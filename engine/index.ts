@@ -30,6 +30,7 @@ export type {
   CorrelatedState,
   FailedLevel,
   HartreeFockResult,
+  InstabilityOnset,
   LeadingDeterminant,
   LevelFindings,
   LevelResult,

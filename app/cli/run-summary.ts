@@ -11,11 +11,17 @@ export function summarise(results: StudyResults): {
   readonly lines: readonly string[];
   readonly exit: ExitCode;
 } {
-  const unconverged = unconvergedLines(results);
+  const unconverged = [...scaleLines(results), ...unconvergedLines(results)];
   return {
     lines: [...findingsLines(results), ...cautionLines(results), ...unconverged],
     exit: unconverged.length === 0 ? EXIT.done : EXIT.unconverged,
   };
+}
+
+/** Points whose scale factors are not the best ones. */
+function scaleLines({ points }: StudyResults): readonly string[] {
+  const count = points.filter(({ scaleOptimisation }) => scaleOptimisation?.converged === false).length;
+  return count === 0 ? [] : [`Scale factors not found at ${counted(count, 'point')}: see the results file.`];
 }
 
 /** One line for every point and level that did not converge: where, and why. */

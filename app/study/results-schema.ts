@@ -199,6 +199,12 @@ const findings: z.ZodType<LevelFindings> = z.looseObject({
   wellDepth: z
     .looseObject({ value: z.number(), against: z.literal('farEnd'), farEnd: z.number() })
     .exactOptional(),
+  instabilityOnset: z
+    .discriminatedUnion('kind', [
+      z.looseObject({ kind: z.literal('found'), coordinate: z.number(), uncertainty: z.number() }),
+      z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+    ])
+    .exactOptional(),
 });
 
 /** The study as run has its defaults filled in. */

@@ -113,7 +113,7 @@ function byElement<T>(item: z.ZodType<T>) {
   return z.record(z.string(), item, { error: 'must be an object with element symbols as keys' });
 }
 
-const BASIS_KEYS = ['name', 'scaleFactors', 'shells', 'evenTempered', 'harmonics', 'file'];
+const BASIS_KEYS = ['name', 'scaleFactors', 'optimiseScale', 'shells', 'evenTempered', 'harmonics', 'file'];
 const basisForms = {
   scaleFactors: closed(
     {
@@ -121,9 +121,11 @@ const basisForms = {
       scaleFactors: byElement(
         z.record(z.string(), number, { error: 'must be an object such as { "1s": 1.24 }' }),
       ),
+      optimiseScale: yesOrNo.optional(),
     },
     BASIS_KEYS,
   ),
+  optimiseScale: closed({ name, optimiseScale: yesOrNo }, BASIS_KEYS),
   shells: closed(
     { name, shells: byElement(list(shell, 'shells', 100)), harmonics: harmonics.optional() },
     BASIS_KEYS,
@@ -139,12 +141,13 @@ const formlessBasis = closed(
   { name: z.unknown().optional(), harmonics: z.unknown().optional() },
   BASIS_KEYS,
 ).refine(() => false, {
-  error: 'must have "scaleFactors", "shells", "evenTempered" or "file", or be the name alone',
+  error:
+    'must have "scaleFactors", "optimiseScale", "shells", "evenTempered" or "file", or be the name alone',
   when: ({ issues }) => issues.length === 0,
 });
 const basis = oneOf<BasisRequest>((value) => {
   if (typeof value === 'string') return name;
-  const form = (['scaleFactors', 'shells', 'evenTempered', 'file'] as const).find((key) =>
+  const form = (['scaleFactors', 'optimiseScale', 'shells', 'evenTempered', 'file'] as const).find((key) =>
     hasKey(value, key),
   );
   if (form) return basisForms[form];

@@ -170,7 +170,9 @@ function rangeParts(scan: StudyScan, unit: string): readonly SentencePart[] {
 function basisText(basis: BasisRequest): string {
   if (typeof basis === 'string') return basis;
   if ('file' in basis) return `the basis set of ${basis.file}`;
+  if ('optimiseScale' in basis && basis.optimiseScale) return `${basis.name} with scale factors optimised`;
   if ('scaleFactors' in basis) return `${basis.name} with chosen scale factors`;
+  if ('optimiseScale' in basis) return basis.name;
   if ('evenTempered' in basis && basis.name.toLowerCase() === 'even-tempered')
     return 'an even-tempered basis set';
   return `the basis set “${basis.name}”`;

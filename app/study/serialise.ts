@@ -6,7 +6,7 @@ const KEY_ORDER = [
   'unit atoms charge multiplicity',
   'element at isotope ghost',
   'coordinate from to',
-  'name file scaleFactors shells evenTempered harmonics',
+  'name file scaleFactors optimiseScale shells evenTempered harmonics',
   'angularMomentum exponents coefficients smallest ratio',
   'count values',
 ]

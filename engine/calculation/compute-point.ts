@@ -1,9 +1,11 @@
 import { placeBasis } from '../basis/place-basis';
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { transformOneElectron, transformToOrbitals } from '../integrals/orbital-transformation';
+import { congruence, transpose } from '../linear-algebra/dense';
 import { nuclearDipole } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
 import { type RunControl, UNATTENDED } from '../termination';
+import { atomicCharges, type ChargesOf } from './atomic-charges';
 import { pointCautions } from './cautions';
 import { type FieldSymmetry, symmetriseFields } from './field-symmetry';
 import {
@@ -64,14 +66,15 @@ export function computePoint(
   );
   const { fields, symmetry } = symmetriseFields(prepared, molecule, basis, integrals.problem.overlap, solved);
   const { pointGroup, linear } = symmetry.molecule;
+  const chargesOf = atomicCharges(molecule, basis, integrals.problem.overlap);
   const correlation = needsOrbitalIntegrals(chosen)
-    ? correlationInput(prepared, molecule, integrals, fields.reference, symmetry, control)
+    ? correlationInput(prepared, molecule, integrals, fields.reference, symmetry, chargesOf, control)
     : undefined;
   const levels: Record<string, LevelResult> = {};
   for (const level of chosen) {
     switch (level.kind) {
       case 'hartreeFock':
-        levels[level.name] = hartreeFockResult(level.name, fields, symmetry, molecule, integrals);
+        levels[level.name] = hartreeFockResult(level.name, fields, symmetry, molecule, integrals, chargesOf);
         break;
       case 'perturbation':
         levels[level.name] = secondOrderResult(prepared, fields, integrals);
@@ -108,10 +111,12 @@ function correlationInput(
   integrals: MolecularIntegrals,
   meanField: MeanFields['reference'],
   symmetry: FieldSymmetry,
+  chargesOf: ChargesOf,
   control: RunControl,
 ): CorrelationInput {
   const { problem, dipole } = integrals;
   const n = problem.functionCount;
+  const m = meanField.orbitalCount;
   const frozen = prepared.frozenOrbitals;
   const orbitalIntegrals: OrbitalIntegrals = transformToOrbitals({
     oneElectron: problem.coreHamiltonian,
@@ -128,6 +133,7 @@ function correlationInput(
       transformOneElectron(matrix, meanField.coefficients, n, meanField.orbitalCount),
     ),
     nuclearDipole: nuclearDipole(molecule),
+    chargesOf: (density) => chargesOf([congruence(density, transpose(meanField.coefficients, n, m), m, n)]),
     orbitalCount: meanField.orbitalCount,
     frozen,
     activeElectrons: [prepared.spinElectrons[0] - frozen, prepared.spinElectrons[1] - frozen],

@@ -14,12 +14,14 @@ import {
 import { columnRange } from '../self-consistent-field/mean-field';
 import { type StateSymmetry, stateSymmetry } from '../symmetry/state-symmetry';
 import type { RunControl, Termination } from '../termination';
+import type { ChargesOf } from './atomic-charges';
 import type { FieldSymmetry, HartreeFockName } from './field-symmetry';
 import type { Level } from './levels';
 import type { MeanFields } from './mean-fields';
 import type { MolecularIntegrals } from './molecular-integrals';
 import type { PreparedStudy } from './prepare-study';
 import type {
+  AtomicCharges,
   CorrelatedResult,
   CorrelatedState,
   FailedLevel,
@@ -37,6 +39,8 @@ export interface CorrelationInput {
   /** ⟨p|r|q⟩ over all orbitals, x, y, z */
   readonly dipole: readonly Float64Array[];
   readonly nuclearDipole: Vector3;
+  /** of a density over all orbitals */
+  readonly chargesOf: (density: Float64Array) => AtomicCharges;
   /** all orbitals, frozen ones included */
   readonly orbitalCount: number;
   readonly frozen: number;
@@ -57,6 +61,7 @@ export function hartreeFockResult(
   symmetry: FieldSymmetry,
   molecule: Molecule,
   { dipole }: MolecularIntegrals,
+  chargesOf: ChargesOf,
 ): HartreeFockResult {
   const solution = { RHF: fields.restricted, UHF: fields.unrestricted, ROHF: fields.restrictedOpen }[name];
   if (!solution) throw new RangeError(`${name} was not computed`);
@@ -77,6 +82,7 @@ export function hartreeFockResult(
     dipole: vector((axis) =>
       densities.reduce<number>((sum, density) => sum - dot(density, dipole[axis]), nuclear[axis]),
     ),
+    charges: chargesOf(densities),
     ...('sSquared' in solution && { sSquared: solution.sSquared }),
     ...(stability !== undefined && {
       stability: typeof stability === 'number' ? { own: stability } : stability,
@@ -226,6 +232,7 @@ function stateResult(
       const ofCore = core.reduce((sum, i) => sum + 2 * matrix[i * orbitalCount + i], 0);
       return nuclear[axis] - ofCore - dot(state.density, activeBlock(matrix, orbitalCount, frozen));
     }),
+    charges: input.chargesOf(withFrozen(state.density, orbitalCount, frozen)),
     naturalOccupations: [...core.map(() => 2), ...state.naturalOccupations.slice(0, integrals.orbitalCount)],
     leading: state.leading.map(
       ({ coefficient, weight, alpha, beta }): LeadingDeterminant => ({
@@ -261,6 +268,17 @@ function onOrbitals(input: CorrelationInput, termination: Termination): LevelTer
   return input.orbitalsConverged || termination.kind !== 'converged'
     ? termination
     : { kind: 'orbitalsNotConverged' };
+}
+
+/** The density over all orbitals, frozen ones doubly occupied; the inverse of `activeBlock`. */
+function withFrozen(active: Float64Array, orbitalCount: number, frozen: number): Float64Array {
+  const size = orbitalCount - frozen;
+  const density = new Float64Array(orbitalCount * orbitalCount);
+  for (let i = 0; i < frozen; i++) density[i * orbitalCount + i] = 2;
+  for (let p = 0; p < size; p++) {
+    density.set(active.subarray(p * size, (p + 1) * size), (p + frozen) * orbitalCount + frozen);
+  }
+  return density;
 }
 
 /** Rows and columns of the active orbitals, which follow the frozen ones. */

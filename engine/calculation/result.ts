@@ -234,4 +234,11 @@ export interface LevelFindings {
     | { readonly kind: 'none'; readonly reason: string };
   /** E(last computed distance) − E(minimum): depth against the far end of this curve, not against fragments */
   readonly wellDepth?: { readonly value: number; readonly against: 'farEnd'; readonly farEnd: number };
+  /** RHF of a scan: where a spin-polarised solution begins to lie lower */
+  readonly instabilityOnset?: InstabilityOnset;
 }
+
+export type InstabilityOnset =
+  /** study unit or degrees */
+  | { readonly kind: 'found'; readonly coordinate: number; readonly uncertainty: number }
+  | { readonly kind: 'none'; readonly reason: string };

@@ -38,7 +38,7 @@ export function BasisEditor({ draft, onEdit }: BasisEditorProps) {
         <BasisList draft={draft} onChoose={(name) => editBasis({ name })} />
       ) : (
         <LabelledField
-          label="Basis set, as in the study file: shells, evenTempered or scaleFactors by element"
+          label="Basis set, as in the study file: shells, evenTempered, scaleFactors by element, or optimiseScale"
           lines={16}
           className="code"
           value={draft.basis.custom}

@@ -46,6 +46,8 @@ describe('parseStudy', () => {
       { scan: { coordinate: { dihedral: [0, 1, 2, 3] }, values: [10, 5, 90] } },
       { scan: undefined },
       { basis: { name: 'STO-3G', scaleFactors: { He: { '1s': 2.0925 } } } },
+      { basis: { name: 'STO-3G', optimiseScale: true } },
+      { basis: { name: 'STO-3G', scaleFactors: { He: { '1s': 2 } }, optimiseScale: true } },
       { basis: { name: 'my set', shells: { H: [shell] }, harmonics: 'cartesian' } },
       {
         basis: {

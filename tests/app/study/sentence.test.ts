@@ -91,6 +91,9 @@ describe('studySentence', () => {
   it.each<[Study['basis'], string]>([
     ['6-31G', 'in 6-31G,'],
     [{ name: 'STO-3G', scaleFactors: {} }, 'in STO-3G with chosen scale factors,'],
+    [{ name: 'STO-3G', optimiseScale: true }, 'in STO-3G with scale factors optimised,'],
+    [{ name: 'STO-3G', optimiseScale: false }, 'in STO-3G,'],
+    [{ name: 'STO-3G', scaleFactors: {}, optimiseScale: true }, 'in STO-3G with scale factors optimised,'],
     [{ name: 'my set', shells: {} }, 'in the basis set “my set”,'],
     [{ name: 'even-tempered', evenTempered: {} }, 'in an even-tempered basis set,'],
     [{ file: 'sets/mine.json' }, 'in the basis set of sets/mine.json,'],

@@ -7,8 +7,10 @@ import { type CursorMove, cursorIndex, moveCursor } from '../../state/cursor';
 import { useController, useWindowState } from '../../state/window-context';
 import type { Run } from '../../state/window-state';
 import { convertLength, ENERGY_UNITS, LENGTH_UNITS, toEnergyUnit } from '../../units';
+import { Charges } from './charges';
 import { LevelDetails } from './level-details';
 import { LevelsTable } from './levels-table';
+import { ScaleFactors } from './scale-factors';
 
 /** Every number at the geometry under the cursor. */
 export function Readout() {
@@ -50,12 +52,14 @@ export function Readout() {
           {formatFixed(toEnergyUnit(point.nuclearRepulsion, view.energyUnit), decimals)} {symbol}
         </dd>
       </dl>
+      <ScaleFactors point={point} />
       {run.study.levels.map((level) => {
         const result = point.levels[level];
         return result === undefined ? null : (
           <LevelDetails key={level} level={level} result={result} energyUnit={view.energyUnit} />
         );
       })}
+      <Charges point={point} levels={run.study.levels} />
       <Geometry point={point} unit={run.study.molecule.unit} />
     </div>
   );
