@@ -216,6 +216,6 @@ export class WindowController {
     const lines = reasons.map(
       ({ place, message, remedy }) => `${place === '' ? '' : `${place}: `}${message} ${remedy}`,
     );
-    this.#store.dispatch({ kind: 'notice/shown', notice: { kind: 'refusal', title, lines } });
+    this.#store.dispatch({ kind: 'notice/shown', notice: { title, lines } });
   }
 }

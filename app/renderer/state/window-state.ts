@@ -64,7 +64,6 @@ export interface Catalogue {
 
 /** Something to tell the user that is no part of the study: a file that would not open, a host gone. */
 export interface Notice {
-  readonly kind: 'information' | 'refusal';
   readonly title: string;
   readonly lines: readonly string[];
 }

@@ -133,7 +133,7 @@ describe('the window', () => {
     const { draft } = store.get();
     await controller.openText('odd.study.json', '{ "format": "farwell/study", ');
     expect(store.get().draft).toBe(draft);
-    expect(store.get().notice).toMatchObject({ kind: 'refusal', title: 'odd.study.json cannot be opened' });
+    expect(store.get().notice).toMatchObject({ title: 'odd.study.json cannot be opened' });
     expect(store.get().notice?.lines[0]).toContain('line 1');
   });
 
