@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { StateSymmetry, StudyAtom } from '#engine';
+import type { HartreeFockResult, StateSymmetry, StudyAtom } from '#engine';
 import { placeBasis } from '../../../engine/basis/place-basis';
 import { molecularIntegrals } from '../../../engine/calculation/molecular-integrals';
 import { solveConfigurationInteraction } from '../../../engine/configuration-interaction/solve';
@@ -18,7 +18,8 @@ const random = seededRandom(5);
 
 /** As `3Σg-`: multiplicity, Λ, parity, reflection. */
 function term({ spin, symmetry }: { readonly spin: string; readonly symmetry?: StateSymmetry }): string {
-  const multiplicity = ['singlet', 'doublet', 'triplet', 'quartet', 'quintet'].indexOf(spin) + 1;
+  const multiplicity =
+    ['singlet', 'doublet', 'triplet', 'quartet', 'quintet', 'sextet', 'septet'].indexOf(spin) + 1;
   const { lambda, inversion = '', reflection = '' } = symmetry?.term ?? { lambda: Number.NaN };
   return `${multiplicity}${'ΣΠΔΦΓ'[lambda] ?? '?'}${inversion}${reflection}`;
 }
@@ -113,6 +114,15 @@ describe('terms of linear molecules', () => {
       const isAllowed = state.oscillatorStrength > 1e-8;
       if (isAllowed) expect(['1Σu+', '1Πu']).toContain(term(state));
     }
+  });
+
+  it('published: at a long bond the lowest of N2 are ¹Σg⁺, ³Σu⁺, ⁵Σg⁺, ⁷Σu⁺ of two ⁴S atoms, though RHF breaks the symmetry there (Wigner–Witmer rules in Herzberg 1950, value from memory)', () => {
+    const stretched = [atom('N'), atom('N', 0, 0, 4.8)];
+    const point = compute(
+      study(anywhere(stretched, random), { levels: ['RHF', 'FCI'], states: 4, frozenCore: true }),
+    );
+    expect((point.levels.RHF as HartreeFockResult).orbitalSymmetries).toContain(null);
+    expect(levels(correlated(point).states)).toEqual(['1Σg+', '3Σu+', '5Σg+', '7Σu+']);
   });
 
   it('identity: CO has no parity', () => {
