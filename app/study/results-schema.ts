@@ -40,6 +40,25 @@ const orbitalLabels = z.array(z.string().nullable());
 const divided = { mulliken: numbers, loewdin: numbers };
 const charges = z.looseObject({ ...divided, spin: z.looseObject(divided).exactOptional() });
 
+const energyParts = z.looseObject({
+  kinetic: number,
+  nuclearAttraction: number,
+  electronRepulsion: number,
+  coulomb: number,
+  exchangeCorrelation: number,
+  nuclearRepulsion: number,
+  virialRatio: number,
+});
+
+const sizeCorrections = z.looseObject({
+  davidson: number,
+  renormalised: number,
+  davidsonSilver: number.exactOptional(),
+  pople: number.exactOptional(),
+  duchDiercksen: number.exactOptional(),
+  meissner: number,
+});
+
 const hartreeFock = z.looseObject({
   kind: z.literal('hartreeFock'),
   energy: number,
@@ -52,6 +71,7 @@ const hartreeFock = z.looseObject({
     .exactOptional(),
   symmetry: stateSymmetry.exactOptional(),
   dipole: vector,
+  energyParts: energyParts.exactOptional(),
   sSquared: number.exactOptional(),
   stability: z
     .union([z.looseObject({ singlet: number, triplet: number }), z.looseObject({ own: number })])
@@ -95,6 +115,8 @@ const correlatedState = z.looseObject({
   sSquared: number,
   referenceWeight: number,
   residual: number,
+  oscillatorStrength: number.exactOptional(),
+  transitionDipole: vector.exactOptional(),
   dipole: vector,
   charges: charges.exactOptional(),
   naturalOccupations: numbers,
@@ -122,7 +144,9 @@ const correlated = z.looseObject({
   symmetry: stateSymmetry.exactOptional(),
   naturalOccupations: numbers,
   dipole: vector,
+  energyParts: energyParts.exactOptional(),
   davidsonCorrected: number.exactOptional(),
+  sizeCorrections: sizeCorrections.exactOptional(),
   states: z.array(correlatedState),
 });
 

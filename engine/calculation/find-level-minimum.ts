@@ -1,6 +1,7 @@
 import { type CurvePoint, findCurveMinimum } from '../curves/minimum';
 import type { RunControl } from '../termination';
 import { computePoint } from './compute-point';
+import { findInstabilityOnset } from './find-onset';
 import type { PointCarry } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
 import type { LevelFindings, LevelResult, PointResult } from './result';
@@ -10,8 +11,8 @@ const SPACING_ANGSTROM = 0.02;
 const SPACING_BOHR = 0.04;
 
 /**
- * Equilibrium distance, energy there and depth against the far end of one level's curve. Computes some ten more
- * points of that level itself.
+ * Equilibrium distance, energy there and depth against the far end of one level's curve; of RHF also where it becomes
+ * unstable. Computes some ten more points of that level itself.
  *
  * @param level - name of one of the study's levels
  * @param points - the study's computed points
@@ -21,6 +22,17 @@ export function findLevelMinimum(
   level: string,
   points: readonly PointResult[],
   control?: RunControl,
+): LevelFindings {
+  const findings = minimumFindings(prepared, level, points, control);
+  if (level !== 'RHF' || !prepared.study.scan) return findings;
+  return { ...findings, instabilityOnset: findInstabilityOnset(prepared, points, control) };
+}
+
+function minimumFindings(
+  prepared: PreparedStudy,
+  level: string,
+  points: readonly PointResult[],
+  control: RunControl | undefined,
 ): LevelFindings {
   const { scan, molecule } = prepared.study;
   if (!scan) return none('A single point has no curve.');
