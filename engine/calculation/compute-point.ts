@@ -7,6 +7,7 @@ import type { Molecule } from '../molecule/molecule';
 import { type RunControl, UNATTENDED } from '../termination';
 import { atomicCharges, type ChargesOf } from './atomic-charges';
 import { pointCautions } from './cautions';
+import { energyParts } from './energy-parts';
 import { type FieldSymmetry, symmetriseFields } from './field-symmetry';
 import {
   type CorrelationInput,
@@ -134,6 +135,8 @@ function correlationInput(
     ),
     nuclearDipole: nuclearDipole(molecule),
     chargesOf: (density) => chargesOf([congruence(density, transpose(meanField.coefficients, n, m), m, n)]),
+    partsOf: (energy, density) =>
+      energyParts(energy, congruence(density, transpose(meanField.coefficients, n, m), m, n), integrals),
     orbitalCount: meanField.orbitalCount,
     frozen,
     activeElectrons: [prepared.spinElectrons[0] - frozen, prepared.spinElectrons[1] - frozen],

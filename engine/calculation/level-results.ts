@@ -1,5 +1,6 @@
 import type { ConfigurationInteractionState } from '../configuration-interaction/describe-state';
 import { solveSingles } from '../configuration-interaction/singles';
+import { sizeCorrections } from '../configuration-interaction/size-corrections';
 import { solveConfigurationInteraction } from '../configuration-interaction/solve';
 import type { OrbitalSpecies, VectorSymmetry } from '../configuration-interaction/vector-symmetry';
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
@@ -15,6 +16,7 @@ import { columnRange } from '../self-consistent-field/mean-field';
 import { type StateSymmetry, stateSymmetry } from '../symmetry/state-symmetry';
 import type { RunControl, Termination } from '../termination';
 import type { ChargesOf } from './atomic-charges';
+import { type EnergyParts, energyParts } from './energy-parts';
 import type { FieldSymmetry, HartreeFockName } from './field-symmetry';
 import type { Level } from './levels';
 import type { MeanFields } from './mean-fields';
@@ -41,6 +43,8 @@ export interface CorrelationInput {
   readonly nuclearDipole: Vector3;
   /** of a density over all orbitals */
   readonly chargesOf: (density: Float64Array) => AtomicCharges;
+  /** of an energy and its density over all orbitals */
+  readonly partsOf: (energy: number, density: Float64Array) => EnergyParts;
   /** all orbitals, frozen ones included */
   readonly orbitalCount: number;
   readonly frozen: number;
@@ -60,12 +64,14 @@ export function hartreeFockResult(
   fields: MeanFields,
   symmetry: FieldSymmetry,
   molecule: Molecule,
-  { dipole }: MolecularIntegrals,
+  integrals: MolecularIntegrals,
   chargesOf: ChargesOf,
 ): HartreeFockResult {
   const solution = { RHF: fields.restricted, UHF: fields.unrestricted, ROHF: fields.restrictedOpen }[name];
   if (!solution) throw new RangeError(`${name} was not computed`);
   const densities: readonly Float64Array[] = 'density' in solution ? [solution.density] : solution.densities;
+  const { dipole } = integrals;
+  const density = densities[0].map((value, i) => value + (densities[1]?.[i] ?? 0));
   const nuclear = nuclearDipole(molecule);
   const { stability } = solution;
   return {
@@ -82,6 +88,7 @@ export function hartreeFockResult(
     dipole: vector((axis) =>
       densities.reduce<number>((sum, density) => sum - dot(density, dipole[axis]), nuclear[axis]),
     ),
+    energyParts: energyParts(solution.energy, density, integrals),
     charges: chargesOf(densities),
     ...('sSquared' in solution && { sSquared: solution.sSquared }),
     ...(stability !== undefined && {
@@ -206,7 +213,20 @@ export function computeCorrelated(
     ...(lowest.symmetry && { symmetry: lowest.symmetry }),
     naturalOccupations: lowest.naturalOccupations,
     dipole: lowest.dipole,
+    energyParts: input.partsOf(
+      lowest.energy,
+      withFrozen(result.states[0].density, input.orbitalCount, input.frozen),
+    ),
     ...(isTruncated && { davidsonCorrected: lowest.energy + (1 - lowest.referenceWeight) * correlation }),
+    ...(isTruncated &&
+      level.maximumRank === 2 && {
+        sizeCorrections: sizeCorrections({
+          energy: lowest.energy,
+          correlation,
+          referenceWeight: lowest.referenceWeight,
+          electrons: active,
+        }),
+      }),
     states,
   };
 }
@@ -227,6 +247,7 @@ function stateResult(
     sSquared: state.sSquared,
     referenceWeight: state.referenceWeight,
     residual: state.residual,
+    ...transitionOf(state, lowestEnergy, input),
     dipole: vector((axis) => {
       const matrix = dipole[axis];
       const ofCore = core.reduce((sum, i) => sum + 2 * matrix[i * orbitalCount + i], 0);
@@ -243,6 +264,20 @@ function stateResult(
       }),
     ),
   };
+}
+
+/** Two states of one CI are orthogonal: neither nuclei nor frozen orbitals have a part in the moment between them. */
+function transitionOf(
+  { energy, transitionDensity }: ConfigurationInteractionState,
+  lowestEnergy: number,
+  { dipole, orbitalCount, frozen }: CorrelationInput,
+): Pick<CorrelatedState, 'oscillatorStrength' | 'transitionDipole'> {
+  if (!transitionDensity) return {};
+  const transitionDipole = vector(
+    (axis) => -dot(transitionDensity, activeBlock(dipole[axis], orbitalCount, frozen)),
+  );
+  const strength = transitionDipole.reduce((sum, component) => sum + component ** 2, 0);
+  return { oscillatorStrength: (2 / 3) * (energy - lowestEnergy) * strength, transitionDipole };
 }
 
 /** Frozen orbitals are filled, so that they add nothing to the symmetry of a state. */

@@ -12,12 +12,15 @@ import type { MeanFieldProblem } from '../self-consistent-field/mean-field-probl
 /** All integrals of a molecule at one geometry. */
 export interface MolecularIntegrals {
   readonly problem: MeanFieldProblem;
+  /** n×n, hartree; part of the core Hamiltonian */
+  readonly kinetic: Float64Array;
   /** ⟨μ|r|ν⟩ about the origin of coordinates: x, y, z, each n×n, bohr */
   readonly dipole: readonly Float64Array[];
 }
 
 export function molecularIntegrals(molecule: Molecule, basis: PlacedBasis): MolecularIntegrals {
-  const coreHamiltonian = kineticMatrix(basis);
+  const kinetic = kineticMatrix(basis);
+  const coreHamiltonian = kinetic.slice();
   const nuclei = molecule.atoms
     .filter((atom) => atom.nuclearCharge !== 0)
     .map((atom) => ({ charge: atom.nuclearCharge, position: atom.position }));
@@ -30,6 +33,7 @@ export function molecularIntegrals(molecule: Molecule, basis: PlacedBasis): Mole
       repulsion: electronRepulsionTensor(basis),
       nuclearRepulsion: nuclearRepulsion(molecule),
     },
+    kinetic,
     dipole: dipoleMatrices(basis, [0, 0, 0]),
   };
 }

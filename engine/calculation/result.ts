@@ -1,11 +1,13 @@
 import type { Harmonics, ShellDefinition } from '../basis/contracted-gaussian';
 import type { ScaleFactors } from '../basis/scalable-basis';
 import type { SizeCorrections } from '../configuration-interaction/size-corrections';
+import type { SizeCorrections } from '../configuration-interaction/size-corrections';
 import type { SpinName } from '../configuration-interaction/spin';
 import type { Vector3 } from '../molecule/molecule';
 import type { PointGroupName } from '../symmetry/point-groups';
 import type { StateSymmetry } from '../symmetry/state-symmetry';
 import type { Termination } from '../termination';
+import type { EnergyParts } from './energy-parts';
 import type { EnergyParts } from './energy-parts';
 import type { CompleteStudy, StudyAtom } from './study';
 
@@ -111,6 +113,7 @@ export interface HartreeFockResult {
   /** e·bohr, about the origin of the study's coordinates, for ions too */
   readonly dipole: Vector3;
   readonly energyParts?: EnergyParts;
+  readonly energyParts?: EnergyParts;
   /** ⟨S²⟩; UHF and ROHF */
   readonly sSquared?: number;
   /**
@@ -193,6 +196,10 @@ export interface CorrelatedState {
   readonly oscillatorStrength?: number;
   /** ⟨lowest|−r|state⟩, e·bohr; of every state but the lowest */
   readonly transitionDipole?: Vector3;
+  /** from the lowest state, length form; of every state but the lowest */
+  readonly oscillatorStrength?: number;
+  /** ⟨lowest|−r|state⟩, e·bohr; of every state but the lowest */
+  readonly transitionDipole?: Vector3;
   readonly residual: number;
   readonly dipole: Vector3;
   readonly charges?: AtomicCharges;
@@ -218,8 +225,11 @@ export interface CorrelatedResult {
   readonly naturalOccupations: readonly number[];
   readonly dipole: Vector3;
   readonly energyParts?: EnergyParts;
+  readonly energyParts?: EnergyParts;
   /** energy + (1 − c0²)·correlation (Langhoff, Davidson 1974); truncated CI only, not variational */
   readonly davidsonCorrected?: number;
+  /** CISD: total energies with the usual estimates of the missing quadruples */
+  readonly sizeCorrections?: SizeCorrections;
   /** CISD: total energies with the usual estimates of the missing quadruples */
   readonly sizeCorrections?: SizeCorrections;
   readonly states: readonly CorrelatedState[];

@@ -26,6 +26,8 @@ export interface ConfigurationInteractionState {
   readonly leading: readonly WeightedDeterminant[];
   /** spin-summed one-particle density over active orbitals, n×n row-major */
   readonly density: Float64Array;
+  /** of every state but the lowest: one-particle transition density from there, symmetric part, n×n row-major */
+  readonly transitionDensity?: Float64Array;
   /** of the active orbitals, falling */
   readonly naturalOccupations: readonly number[];
   /** where the symmetry of the orbitals was given */
@@ -58,13 +60,19 @@ export function describeState(
   };
 }
 
+/** Sign that makes the coefficient of largest weight positive. */
+export function leadingSign(vector: Float64Array): 1 | -1 {
+  const largest = vector.reduce((best, value) => (value ** 2 > best ** 2 ? value : best), 0);
+  return largest < 0 ? -1 : 1;
+}
+
 function leadingDeterminants(space: DeterminantSpace, vector: Float64Array): WeightedDeterminant[] {
   const places: number[] = [];
   for (let place = 0; place < vector.length; place++) {
     if (vector[place] ** 2 > LEADING_WEIGHT) places.push(place);
   }
   places.sort((a, b) => vector[b] ** 2 - vector[a] ** 2 || a - b);
-  const sign = vector[places[0]] < 0 ? -1 : 1;
+  const sign = leadingSign(vector);
   return places.slice(0, LEADING_COUNT).map((place) => {
     const { alpha, beta } = determinantAt(space, place);
     return {

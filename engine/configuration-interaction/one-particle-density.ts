@@ -9,6 +9,20 @@ import type { StringSpace } from './string-space';
  * @returns n×n symmetric, row-major; its trace is the number of electrons
  */
 export function oneParticleDensity(space: DeterminantSpace, vector: Float64Array): Float64Array {
+  return transitionDensity(space, vector, vector);
+}
+
+/**
+ * Spin-summed one-particle transition density, its symmetric part ½ Σ over spins of ⟨Φ| a†p aq + a†q ap |Ψ⟩: all
+ * that a real symmetric operator sees.
+ *
+ * @returns n×n symmetric, row-major
+ */
+export function transitionDensity(
+  space: DeterminantSpace,
+  left: Float64Array,
+  right: Float64Array,
+): Float64Array {
   const density = new Float64Array(space.orbitalCount ** 2);
   addSpinDensity(
     density,
@@ -17,10 +31,15 @@ export function oneParticleDensity(space: DeterminantSpace, vector: Float64Array
     space.beta,
     space.rows,
     space.maximumRank,
-    vector,
+    left,
+    right,
   );
-  const transposed = new Float64Array(vector.length);
-  transposeInto(space, vector, transposed);
+  const transposed = (vector: Float64Array): Float64Array => {
+    const turned = new Float64Array(vector.length);
+    transposeInto(space, vector, turned);
+    return turned;
+  };
+  const turnedLeft = transposed(left);
   addSpinDensity(
     density,
     space.beta,
@@ -28,12 +47,13 @@ export function oneParticleDensity(space: DeterminantSpace, vector: Float64Array
     space.alpha,
     space.transposedRows,
     space.maximumRank,
-    transposed,
+    turnedLeft,
+    left === right ? turnedLeft : transposed(right),
   );
   return density;
 }
 
-/** Adds Σ over rows and replacements of a pair: sign·c(row, I)·c(row, J). */
+/** Adds Σ over rows and replacements of a pair: sign·½(l(row, I)·r(row, J) + l(row, J)·r(row, I)). */
 function addSpinDensity(
   density: Float64Array,
   inner: StringSpace,
@@ -41,7 +61,8 @@ function addSpinDensity(
   outer: StringSpace,
   rows: Rows,
   maximumRank: number,
-  vector: Float64Array,
+  left: Float64Array,
+  right: Float64Array,
 ): void {
   const n = inner.orbitalCount;
   const { byPairStart, pairSource, pairTarget, pairSign, pairCountUpToRank } = replacements;
@@ -58,7 +79,9 @@ function addSpinDensity(
         const last = first + pairCountUpToRank[pair * ranks + Math.min(limit, ranks - 1)];
         const start = rows.start[row];
         for (let k = first; k < last; k++) {
-          sum += pairSign[k] * vector[start + pairTarget[k]] * vector[start + pairSource[k]];
+          const target = start + pairTarget[k];
+          const source = start + pairSource[k];
+          sum += 0.5 * pairSign[k] * (left[target] * right[source] + left[source] * right[target]);
         }
       }
       density[pair] += sum;

@@ -3,13 +3,14 @@ import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import type { DistinguishingOperator } from './degenerate-states';
-import { type ConfigurationInteractionState, describeState } from './describe-state';
+import { type ConfigurationInteractionState, describeState, leadingSign } from './describe-state';
 import { buildDeterminantSpace, type DeterminantSpace, determinantAt } from './determinant-space';
 import { occupiedOrbitals } from './determinants';
 import { spinAveragedDiagonal } from './diagonal';
 import { type HamiltonianProduct, prepareHamiltonianProduct } from './hamiltonian-product';
 import { findLowestStates } from './lowest-states';
 import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
+import { transitionDensity } from './one-particle-density';
 import { configurationInteractionBytes, countDeterminants } from './size';
 import { applySpinSquared } from './spin';
 import { stringAt } from './string-space';
@@ -101,6 +102,7 @@ export function solveConfigurationInteraction(
     const residual = residualNorm(product, vector, energy, scratch);
     return {
       ...describeState(space, vector, energy, residual),
+      ...(k > 0 && { transitionDensity: transitionFromLowest(space, found.vectors[0], vector) }),
       ...(symmetry && { symmetry: symmetry.describe(vector) }),
     };
   });
@@ -110,6 +112,16 @@ export function solveConfigurationInteraction(
     termination: found.termination,
     iterations: found.iterations,
   };
+}
+
+/** With the signs of both states as their leading determinants are given. */
+function transitionFromLowest(
+  space: DeterminantSpace,
+  lowest: Float64Array,
+  vector: Float64Array,
+): Float64Array {
+  const sign = leadingSign(lowest) * leadingSign(vector);
+  return transitionDensity(space, lowest, vector).map((element) => sign * element);
 }
 
 function checkOptions(

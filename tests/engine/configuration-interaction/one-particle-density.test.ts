@@ -7,10 +7,15 @@ import { occupiedOrbitals } from '../../../engine/configuration-interaction/dete
 import {
   naturalOrbitals,
   oneParticleDensity,
+  transitionDensity,
 } from '../../../engine/configuration-interaction/one-particle-density';
+import { solveSingles } from '../../../engine/configuration-interaction/singles';
+import { solveConfigurationInteraction } from '../../../engine/configuration-interaction/solve';
 import { congruence, dot } from '../../../engine/linear-algebra/dense';
+import { closedShellOrbitals } from '../../support/closed-shell-orbitals';
 import { bruteOneElectron } from '../../support/operator-algebra';
-import { randomArray, seededRandom } from '../../support/random';
+import { randomArray, randomSymmetric, seededRandom } from '../../support/random';
+import { randomOrbitalIntegrals } from '../../support/random-orbital-integrals';
 
 const CASES = [
   [4, 2, 2, Number.POSITIVE_INFINITY],
@@ -71,4 +76,51 @@ describe('oneParticleDensity', () => {
       }
     },
   );
+});
+
+describe('transitionDensity', () => {
+  it.each(CASES)(
+    'identity: %i orbitals, %i + %i electrons, rank %d: equals operator algebra',
+    (n, alpha, beta, rank) => {
+      const { space, vector } = randomState(n, alpha, beta, rank);
+      const other = randomArray(space.dimension, seededRandom(77));
+      const density = transitionDensity(space, other, vector);
+      const determinants = Array.from(vector, (_, place) => {
+        const determinant = determinantAt(space, place);
+        return { alpha: occupiedOrbitals(determinant.alpha), beta: occupiedOrbitals(determinant.beta) };
+      });
+      const operator = randomSymmetric(n, seededRandom(3));
+      let expected = 0;
+      determinants.forEach((left, i) => {
+        determinants.forEach((right, j) => {
+          expected += other[i] * vector[j] * bruteOneElectron(left, right, operator, n);
+        });
+      });
+      expect(dot(density, operator)).toBeCloseTo(expected, 11);
+    },
+  );
+
+  it('independent: CI of rank 1 on a closed shell has the transition moments of CIS', () => {
+    const n = 6;
+    const integrals = closedShellOrbitals(randomOrbitalIntegrals(n, 26, { coupling: 0.1 }), 3);
+    const dipole = [1, 2, 3].map((seed) => randomSymmetric(n, seededRandom(seed)));
+    const singles = solveSingles(integrals, { occupied: 3, states: 3, dipole, residualTolerance: 1e-9 });
+    const { states } = solveConfigurationInteraction(integrals, {
+      alphaElectrons: 3,
+      betaElectrons: 3,
+      maximumRank: 1,
+      states: 7,
+    });
+    let bright = 0;
+    for (const { energy, spin, transitionDipole } of singles.states) {
+      const same = states.find((state) => Math.abs(state.energy - energy) < 1e-8 && state.spin === spin);
+      if (!same?.transitionDensity) continue;
+      const sign = Math.sign(-dot(same.transitionDensity, dipole[0]) * transitionDipole[0]) || 1;
+      transitionDipole.forEach((moment, axis) => {
+        expect(Math.abs(-sign * dot(same.transitionDensity!, dipole[axis]) - moment)).toBeLessThan(1e-7);
+      });
+      if (spin === 'singlet') bright++;
+    }
+    expect(bright).toBeGreaterThan(1);
+  });
 });
