@@ -63,8 +63,9 @@ function reasonText(termination: LevelResult['termination']): string {
 function findingsLines({ study, findings }: StudyResults): readonly string[] {
   if (!study.scan) return [];
   return study.levels.flatMap((level) => {
-    const text = findings[level] && minimumText(findings[level], study);
-    return text === undefined ? [] : [`${level}: ${text}`];
+    const of = findings[level];
+    const texts = of ? [minimumText(of, study), onsetText(of, study)] : [];
+    return texts.flatMap((text) => (text === undefined ? [] : [`${level}: ${text}`]));
   });
 }
 
@@ -87,6 +88,12 @@ function minimumText(
     case 'none':
       return undefined;
   }
+}
+
+function onsetText({ instabilityOnset }: LevelFindings, study: StudyResults['study']): string | undefined {
+  if (instabilityOnset?.kind !== 'found') return undefined;
+  const place = coordinateText(study, Number(instabilityOnset.coordinate.toFixed(4)));
+  return `becomes unstable towards different orbitals for different spins at ${place}`;
 }
 
 /** What to mistrust about the curve, and whether there is more to read about single points. */

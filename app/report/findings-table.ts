@@ -10,6 +10,8 @@ export interface FindingsRow {
   readonly energyAtMinimum: string;
   /** hartree, against the far end of the curve */
   readonly depth: string;
+  /** where RHF becomes unstable towards different orbitals for different spins */
+  readonly onset: string;
 }
 
 export const FINDINGS_HEADINGS = [
@@ -17,6 +19,7 @@ export const FINDINGS_HEADINGS = [
   'Minimum',
   'Energy there (hartree)',
   'Depth against the far end (hartree)',
+  'Onset of instability',
 ] as const;
 
 const ENERGY_DECIMALS = 6;
@@ -28,7 +31,7 @@ export function findingsRows(results: StudyResults, file: string, unit: string):
     const findings = results.findings[level];
     // its curves are excited states only
     if (!findings || level === 'CIS') return [];
-    const { minimum, wellDepth } = findings;
+    const { minimum, wellDepth, instabilityOnset } = findings;
     return [
       {
         file,
@@ -38,18 +41,25 @@ export function findingsRows(results: StudyResults, file: string, unit: string):
         depth: wellDepth
           ? `${wellDepth.value.toFixed(ENERGY_DECIMALS)} (at ${coordinateText(wellDepth.farEnd, unit)})`
           : '',
+        onset:
+          instabilityOnset?.kind === 'found'
+            ? `${withUncertainty(instabilityOnset.coordinate, instabilityOnset.uncertainty)} ${unit}`
+            : '',
       },
     ];
   });
 }
 
+/** As many decimals as the uncertainty leaves. */
+function withUncertainty(coordinate: number, uncertainty: number): string {
+  const digits = Math.ceil(-Math.log10(Math.max(uncertainty, Number.MIN_VALUE)));
+  return coordinate.toFixed(Math.min(MOST_DISTANCE_DECIMALS, Math.max(FEWEST_DISTANCE_DECIMALS, digits)));
+}
+
 function minimumText(minimum: LevelFindings['minimum'], unit: string): string {
   switch (minimum.kind) {
-    case 'found': {
-      const digits = Math.ceil(-Math.log10(Math.max(minimum.uncertainty, Number.MIN_VALUE)));
-      const decimals = Math.min(MOST_DISTANCE_DECIMALS, Math.max(FEWEST_DISTANCE_DECIMALS, digits));
-      return `${minimum.equilibriumDistance.toFixed(decimals)} ${unit}`;
-    }
+    case 'found':
+      return `${withUncertainty(minimum.equilibriumDistance, minimum.uncertainty)} ${unit}`;
     case 'atEdge':
       return `lowest at the edge of the range, ${coordinateText(minimum.coordinate, unit)}`;
     case 'several':

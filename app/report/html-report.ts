@@ -93,8 +93,15 @@ function findingsTable({ files, findings }: ReportContent): string {
   const heads = [...(several ? ['File'] : []), ...FINDINGS_HEADINGS].map(
     (head) => `<th scope="col">${head}</th>`,
   );
-  const body = findings.map(({ file, level, minimum, energyAtMinimum, depth }) => {
-    const cells = [...(several ? [file] : []), level, minimum, withMinus(energyAtMinimum), withMinus(depth)];
+  const body = findings.map(({ file, level, minimum, energyAtMinimum, depth, onset }) => {
+    const cells = [
+      ...(several ? [file] : []),
+      level,
+      minimum,
+      withMinus(energyAtMinimum),
+      withMinus(depth),
+      onset,
+    ];
     return `<tr>${cells.map((cell) => `<td>${escapeMarkup(cell)}</td>`).join('')}</tr>`;
   });
   return `<table class="words"><thead><tr>${heads.join('')}</tr></thead><tbody>${body.join('\n')}</tbody></table>`;

@@ -50,12 +50,13 @@ function energyTable({ coordinateHeading, blocks, rows }: ResultTable): string {
 
 function findingsTable({ files, findings }: ReportContent): string {
   const several = files.length > 1;
-  const body = findings.map(({ file, level, minimum, energyAtMinimum, depth }) => [
+  const body = findings.map(({ file, level, minimum, energyAtMinimum, depth, onset }) => [
     ...(several ? [file] : []),
     level,
     minimum,
     withMinus(energyAtMinimum),
     withMinus(depth),
+    onset,
   ]);
   return tableText([...(several ? ['File'] : []), ...FINDINGS_HEADINGS], body, 'left');
 }

@@ -45,7 +45,7 @@ interface FindingFactsProps {
 
 function FindingFacts({ findings, study, lengthUnit, energyUnit }: FindingFactsProps) {
   const { symbol, decimals } = ENERGY_UNITS[energyUnit];
-  const { minimum, wellDepth } = findings;
+  const { minimum, wellDepth, instabilityOnset } = findings;
   const where = positionText(study, lengthUnit);
   return (
     <>
@@ -75,7 +75,23 @@ function FindingFacts({ findings, study, lengthUnit, energyUnit }: FindingFactsP
             </dd>
           </div>
         )}
+        {instabilityOnset?.kind === 'found' && (
+          <div>
+            <dt>
+              <abbr title="The lowest eigenvalue of the triplet orbital Hessian passes zero: beyond, different orbitals for different spins lie lower">
+                Onset of instability
+              </abbr>
+            </dt>
+            <dd>
+              {where(instabilityOnset.coordinate, 5)}
+              <span className="hint"> ± {where(instabilityOnset.uncertainty, 1)}</span>
+            </dd>
+          </div>
+        )}
       </dl>
+      {instabilityOnset?.kind === 'none' && (
+        <p className="absent">No onset of instability: {withoutStop(instabilityOnset.reason)}.</p>
+      )}
       {minimum.kind !== 'found' && <p className="absent">{whyNoMinimum(minimum, where)}</p>}
       {minimum.kind === 'found' && wellDepth === undefined && (
         <p className="absent">No well depth: the far end has not converged.</p>
@@ -103,9 +119,11 @@ export function whyNoMinimum(
     case 'several':
       return `Several minima, near ${minimum.near.map((place) => where(place, 5)).join(', ')}. Narrow the range to one of them.`;
     case 'none':
-      return `No minimum: ${minimum.reason.replace(/\.$/, '')}.`;
+      return `No minimum: ${withoutStop(minimum.reason)}.`;
   }
 }
+
+const withoutStop = (sentence: string) => sentence.replace(/\.$/, '');
 
 function CautionList({ run, lengthUnit }: { readonly run: Run; readonly lengthUnit: LengthUnit }) {
   const groups = groupCautions(run.points);

@@ -60,6 +60,28 @@ describe('summarise', () => {
     ]);
   });
 
+  it('says where RHF becomes unstable, and how many points are without their best scale factors', () => {
+    const RHF = {
+      ...results.findings.RHF!,
+      instabilityOnset: { kind: 'found', coordinate: 1.203456, uncertainty: 3e-4 },
+    } as const;
+    expect(linesAbout(/unstable/, { ...results, findings: { RHF } })).toEqual([
+      'RHF: becomes unstable towards different orbitals for different spins at 1.2035 Å',
+    ]);
+    const scaleOptimisation = {
+      level: 'RHF',
+      converged: false,
+      termination: { kind: 'iterationLimit', limit: 80 },
+      iterations: 80,
+      residual: 1e-3,
+    } as const;
+    const points = results.points.map((point, i) => (i < 2 ? { ...point, scaleOptimisation } : point));
+    expect(linesAbout(/^Scale/, { ...results, points })).toEqual([
+      'Scale factors not found at 2 points: see the results file.',
+    ]);
+    expect(summarise({ ...results, points }).exit).toBe(1);
+  });
+
   it('has nothing to say about a single point that converged', () => {
     const { scan: _, ...study } = results.study;
     expect(summarise({ ...results, study, points: results.points.slice(0, 1) }).lines).toEqual([]);

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import type { LevelFindings } from '#engine';
 import { findingsRows } from '../../../app/report/findings-table';
 import { sampleResults } from '../../support/sample-results';
 
@@ -31,6 +32,17 @@ describe('findingsRows', () => {
     expect(minimaOf({ FCI: { minimum: { kind: 'atEdge', coordinate: 4 } } })).toEqual([
       'lowest at the edge of the range, 4 Å',
     ]);
+  });
+
+  it('gives the onset of an instability with the digits that it is sure of', () => {
+    const onsets = (instabilityOnset?: LevelFindings['instabilityOnset']) => {
+      const results = sampleResults();
+      const RHF = { ...results.findings.RHF!, ...(instabilityOnset && { instabilityOnset }) };
+      return findingsRows({ ...results, findings: { RHF } }, '', 'Å').map(({ onset }) => onset);
+    };
+    expect(onsets({ kind: 'found', coordinate: 1.20348, uncertainty: 3e-4 })).toEqual(['1.2035 Å']);
+    expect(onsets({ kind: 'none', reason: 'RHF is stable at every point.' })).toEqual(['']);
+    expect(onsets()).toEqual(['']);
   });
 
   it('names the far end that a depth is against', () => {
