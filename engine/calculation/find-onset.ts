@@ -10,8 +10,8 @@ const TOLERANCE = 5e-4;
 
 /**
  * Where along the scan RHF stops being a minimum among determinants with different orbitals for the two spins: the
- * lowest eigenvalue of the triplet orbital Hessian passes zero. Computes some more points; of several crossings the
- * first one counts.
+ * lowest eigenvalue of the triplet orbital Hessian becomes negative as the coordinate rises. Computes some more points;
+ * of several such places the last one counts, from which RHF stays unstable as the bond is pulled on.
  *
  * @param points - the study's computed points
  *
@@ -29,9 +29,15 @@ export function findInstabilityOnset(
     })
     .sort((a, b) => a.x - b.x);
   if (sides.length === 0) return none('No point has converged with a stability value.');
-  const after = sides.findIndex(({ value }, i) => i > 0 && value < 0 !== sides[i - 1].value < 0);
+  const after = sides.findLastIndex(({ value }, i) => i > 0 && value < 0 && sides[i - 1].value >= 0);
   if (after < 0) {
-    return none(sides[0].value < 0 ? 'RHF is unstable at every point.' : 'RHF is stable at every point.');
+    const unstable = sides.filter(({ value }) => value < 0).length;
+    if (unstable === 0) return none('RHF is stable at every point.');
+    return none(
+      unstable === sides.length
+        ? 'RHF is unstable at every point.'
+        : 'RHF is unstable at the beginning of the scan only.',
+    );
   }
   let guess: PointCarry | undefined;
   const valueAt = (x: number): number | undefined => {
