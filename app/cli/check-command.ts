@@ -24,11 +24,15 @@ export async function checkCommand(
 
 /** @param cores - that share the points */
 export function explanationText(explanation: StudyExplanation, cores: number): string {
-  const { electrons, functions, frozenOrbitals, repulsionIntegrals, points, levels } = explanation;
+  const { electrons, functions, frozenOrbitals, activeOrbitals, repulsionIntegrals, points, levels } =
+    explanation;
   const facts = [
     ['electrons', String(electrons)],
     ['basis functions', grouped(functions)],
-    ...(frozenOrbitals > 0 ? [['frozen core orbitals', String(frozenOrbitals)]] : []),
+    ...(frozenOrbitals > 0
+      ? [[activeOrbitals === undefined ? 'frozen core orbitals' : 'frozen orbitals', String(frozenOrbitals)]]
+      : []),
+    ...(activeOrbitals !== undefined ? [['active orbitals', String(activeOrbitals)]] : []),
     ['repulsion integrals', grouped(repulsionIntegrals)],
     ['points', grouped(points)],
   ];

@@ -71,10 +71,15 @@ function reportedFile(results: StudyResults, name: string, sentence: string): Re
     method: [
       `Basis ${basis.name}, ${basis.functions} functions${basis.citations.length > 0 ? `: ${basis.citations.join('; ')}` : ''}.`,
       ...basis.notes,
-      `Energies converged to ${study.convergence.energy} hartree; ${study.frozenCore ? 'core electrons not correlated' : 'all electrons correlated'}.`,
+      `Energies converged to ${study.convergence.energy} hartree; ${correlatedText(study)}.`,
       `${program.name} ${program.version}.`,
     ],
   };
+}
+
+function correlatedText({ active, frozenCore }: StudyResults['study']): string {
+  if (active) return `CI of ${active.electrons} electrons in ${active.orbitals} orbitals`;
+  return frozenCore ? 'core electrons not correlated' : 'all electrons correlated';
 }
 
 /** A file's own unit: findings are not converted. */

@@ -175,5 +175,6 @@ export const studySchema: z.ZodType<Study> = closed({
   levels: list(level, 'levels', 20),
   states: countingNumber.optional(),
   frozenCore: yesOrNo.optional(),
+  active: closed({ electrons: countingNumber, orbitals: countingNumber }).optional(),
   convergence: closed({ energy: number.optional() }).optional(),
 });

@@ -29,7 +29,7 @@ export function studySentence(study: Study): string {
 
 /** The study sentence in pieces, so that a window can let each value be edited and show an issue at its word. */
 export function sentenceParts(study: Study): readonly SentencePart[] {
-  const { molecule, scan, levels, states = 1, frozenCore } = study;
+  const { molecule, scan, levels, states = 1, frozenCore, active } = study;
   const moleculePart = value('molecule', 'molecule', moleculeText(study));
   return [
     ...(scan
@@ -49,6 +49,12 @@ export function sentenceParts(study: Study): readonly SentencePart[] {
     value('levels', 'levels', enumerate(levels)),
     ...(states > 1 ? [plain(', '), value('states', 'states', `${numeral(states)} states of each`)] : []),
     ...(frozenCore ? [plain(', '), value('core', 'frozenCore', 'core frozen')] : []),
+    ...(active
+      ? [
+          plain(', '),
+          value('core', 'active', `${active.electrons} electrons in ${active.orbitals} orbitals active`),
+        ]
+      : []),
     plain('.'),
   ];
 }
@@ -72,6 +78,7 @@ const PLACES: readonly (readonly [string, SentencePartName])[] = [
   ['levels', 'levels'],
   ['states', 'states'],
   ['frozenCore', 'core'],
+  ['active', 'core'],
 ];
 
 function plain(text: string): SentencePart {

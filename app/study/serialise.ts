@@ -2,13 +2,14 @@ import type { Study } from '#engine';
 
 /** Keys in the order in which a study reads best; keys of the user's own making keep their order. */
 const KEY_ORDER = [
-  'format version title notes molecule scan basis levels states frozenCore convergence',
+  'format version title notes molecule scan basis levels states frozenCore active convergence',
   'unit atoms charge multiplicity',
   'element at isotope ghost',
   'coordinate from to',
   'name file scaleFactors optimiseScale shells evenTempered harmonics',
   'angularMomentum exponents coefficients smallest ratio',
   'count values',
+  'electrons orbitals',
 ]
   .join(' ')
   .split(' ');

@@ -125,7 +125,8 @@ function correlationInput(
     coefficients: meanField.coefficients,
     orbitalCount: meanField.orbitalCount,
     frozen,
-    active: meanField.orbitalCount - frozen,
+    // nearly dependent functions may leave fewer orbitals than there were when the study was checked
+    active: Math.min(prepared.activeOrbitals ?? m, m - frozen),
     nuclearRepulsion: problem.nuclearRepulsion,
   });
   return {

@@ -27,7 +27,7 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
       repulsionIntegrals * (PER_INTEGRAL + PER_PRIMITIVE_INTEGRAL * meanPrimitives(prepared) ** 4) +
       FIELD_ITERATIONS * repulsionIntegrals * PER_FOCK_ELEMENT,
   };
-  const active = n - frozenOrbitals;
+  const active = prepared.activeOrbitals ?? n - frozenOrbitals;
   const [alpha, beta] = prepared.spinElectrons.map((count) => count - frozenOrbitals) as [number, number];
   const transformed = {
     // half-transformed over all pairs of functions and orbitals, then the packed result
@@ -86,6 +86,7 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
     points: prepared.coordinates.length,
     functions: n,
     frozenOrbitals,
+    ...(prepared.activeOrbitals !== undefined && { activeOrbitals: prepared.activeOrbitals }),
     repulsionIntegrals,
     levels: prepared.levels.map(explainLevel),
   };

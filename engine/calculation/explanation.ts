@@ -3,8 +3,10 @@ export interface StudyExplanation {
   readonly electrons: number;
   readonly points: number;
   readonly functions: number;
-  /** orbitals kept out of the CI by `frozenCore` */
+  /** doubly occupied orbitals kept out of the CI by `frozenCore` or `active` */
   readonly frozenOrbitals: number;
+  /** orbitals of the CI, where `active` chooses them */
+  readonly activeOrbitals?: number;
   /** repulsion integrals stored, 8-fold packed */
   readonly repulsionIntegrals: number;
   readonly levels: readonly LevelExplanation[];

@@ -145,11 +145,11 @@ export function secondOrderResult(
 }
 
 export function computeSingles(input: CorrelationInput): SinglesResult {
-  const { integrals, frozen, orbitalCount } = input;
+  const { integrals, frozen } = input;
   const result = solveSingles(integrals, {
     occupied: input.activeElectrons[0],
     states: input.states,
-    dipole: input.dipole.map((matrix) => activeBlock(matrix, orbitalCount, frozen)),
+    dipole: input.dipole.map((matrix) => activeBlock(matrix, input)),
     species: activeSpecies(input),
     control: input.control,
   });
@@ -193,7 +193,7 @@ export function computeCorrelated(
   // integrals that are not finite leave nothing to report
   if (result.states.length === 0)
     return { kind: 'failed', converged: false, termination: result.termination };
-  const independent = level.maximumRank >= active && input.frozen === 0;
+  const independent = level.maximumRank >= active && input.integrals.orbitalCount === input.orbitalCount;
   const termination = independent ? result.termination : onOrbitals(input, result.termination);
   const states = result.states.map((state) => stateResult(state, result.states[0].energy, input));
   const [lowest] = states;
@@ -213,10 +213,7 @@ export function computeCorrelated(
     ...(lowest.symmetry && { symmetry: lowest.symmetry }),
     naturalOccupations: lowest.naturalOccupations,
     dipole: lowest.dipole,
-    energyParts: input.partsOf(
-      lowest.energy,
-      withFrozen(result.states[0].density, input.orbitalCount, input.frozen),
-    ),
+    energyParts: input.partsOf(lowest.energy, withFrozen(result.states[0].density, input)),
     ...(isTruncated && { davidsonCorrected: lowest.energy + (1 - lowest.referenceWeight) * correlation }),
     ...(isTruncated &&
       level.maximumRank === 2 && {
@@ -251,9 +248,9 @@ function stateResult(
     dipole: vector((axis) => {
       const matrix = dipole[axis];
       const ofCore = core.reduce((sum, i) => sum + 2 * matrix[i * orbitalCount + i], 0);
-      return nuclear[axis] - ofCore - dot(state.density, activeBlock(matrix, orbitalCount, frozen));
+      return nuclear[axis] - ofCore - dot(state.density, activeBlock(matrix, input));
     }),
-    charges: input.chargesOf(withFrozen(state.density, orbitalCount, frozen)),
+    charges: input.chargesOf(withFrozen(state.density, input)),
     naturalOccupations: [...core.map(() => 2), ...state.naturalOccupations.slice(0, integrals.orbitalCount)],
     leading: state.leading.map(
       ({ coefficient, weight, alpha, beta }): LeadingDeterminant => ({
@@ -270,22 +267,21 @@ function stateResult(
 function transitionOf(
   { energy, transitionDensity }: ConfigurationInteractionState,
   lowestEnergy: number,
-  { dipole, orbitalCount, frozen }: CorrelationInput,
+  input: CorrelationInput,
 ): Pick<CorrelatedState, 'oscillatorStrength' | 'transitionDipole'> {
   if (!transitionDensity) return {};
-  const transitionDipole = vector(
-    (axis) => -dot(transitionDensity, activeBlock(dipole[axis], orbitalCount, frozen)),
-  );
+  const transitionDipole = vector((axis) => -dot(transitionDensity, activeBlock(input.dipole[axis], input)));
   const strength = transitionDipole.reduce((sum, component) => sum + component ** 2, 0);
   return { oscillatorStrength: (2 / 3) * (energy - lowestEnergy) * strength, transitionDipole };
 }
 
 /** Frozen orbitals are filled, so that they add nothing to the symmetry of a state. */
-function activeSpecies({ symmetry, orbitalCount, frozen }: CorrelationInput): OrbitalSpecies {
-  const { irreps, operations, axialRotation } = symmetry.species;
-  const active = (matrix: Float64Array) => activeBlock(matrix, orbitalCount, frozen);
+function activeSpecies(input: CorrelationInput): OrbitalSpecies {
+  const { frozen } = input;
+  const { irreps, operations, axialRotation } = input.symmetry.species;
+  const active = (matrix: Float64Array) => activeBlock(matrix, input);
   return {
-    ...(irreps && { irreps: irreps.slice(frozen) }),
+    ...(irreps && { irreps: irreps.slice(frozen, frozen + input.integrals.orbitalCount) }),
     ...(operations && { operations: operations.map(active) }),
     ...(axialRotation && { axialRotation: active(axialRotation) }),
   };
@@ -305,9 +301,13 @@ function onOrbitals(input: CorrelationInput, termination: Termination): LevelTer
     : { kind: 'orbitalsNotConverged' };
 }
 
-/** The density over all orbitals, frozen ones doubly occupied; the inverse of `activeBlock`. */
-function withFrozen(active: Float64Array, orbitalCount: number, frozen: number): Float64Array {
-  const size = orbitalCount - frozen;
+type OrbitalRange = Pick<CorrelationInput, 'integrals' | 'orbitalCount' | 'frozen'>;
+
+/** The density over all orbitals, frozen ones doubly occupied, those above empty; the inverse of `activeBlock`. */
+function withFrozen(
+  active: Float64Array,
+  { integrals: { orbitalCount: size }, orbitalCount, frozen }: OrbitalRange,
+): Float64Array {
   const density = new Float64Array(orbitalCount * orbitalCount);
   for (let i = 0; i < frozen; i++) density[i * orbitalCount + i] = 2;
   for (let p = 0; p < size; p++) {
@@ -317,12 +317,14 @@ function withFrozen(active: Float64Array, orbitalCount: number, frozen: number):
 }
 
 /** Rows and columns of the active orbitals, which follow the frozen ones. */
-function activeBlock(matrix: Float64Array, orbitalCount: number, frozen: number): Float64Array {
-  const active = orbitalCount - frozen;
-  const block = new Float64Array(active * active);
-  for (let p = 0; p < active; p++) {
+function activeBlock(
+  matrix: Float64Array,
+  { integrals: { orbitalCount: size }, orbitalCount, frozen }: OrbitalRange,
+): Float64Array {
+  const block = new Float64Array(size * size);
+  for (let p = 0; p < size; p++) {
     const start = (p + frozen) * orbitalCount + frozen;
-    block.set(matrix.subarray(start, start + active), p * active);
+    block.set(matrix.subarray(start, start + size), p * size);
   }
   return block;
 }

@@ -7,6 +7,7 @@ import { buildMolecule, electronCount } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
 import { checkScan, geometryAt } from '../molecule/scan-coordinate';
 import { scanValues } from '../molecule/scan-values';
+import { activeWindow, type OrbitalWindow } from './active-space';
 import { explainStudy } from './explain-study';
 import { frozenOrbitalCount } from './frozen-core';
 import { findLevel, type Level, needsClosedShell } from './levels';
@@ -26,7 +27,10 @@ export interface PreparedStudy {
   /** alpha and beta electrons */
   readonly spinElectrons: readonly [number, number];
   readonly functionCount: number;
+  /** doubly occupied orbitals below those of the CI */
   readonly frozenOrbitals: number;
+  /** orbitals of the CI from there; absent: all */
+  readonly activeOrbitals?: number;
   /** bytes that one point may take */
   readonly memoryLimit: number;
   /** the atoms at a value of the scan coordinate, in the study's unit */
@@ -61,6 +65,21 @@ const MOST_STATES = 50;
  * @returns the prepared study, or all that is wrong with it, each with its place
  */
 export function prepareStudy(study: Study, options: PrepareOptions = {}): Preparation {
+  return prepare(study, options);
+}
+
+/** A part of a study's molecule as a study without scan, in the basis of the whole. */
+export function prepareFragment(
+  { study, basisSet, memoryLimit }: PreparedStudy,
+  molecule: StudyMolecule,
+  level: string,
+): Preparation {
+  const { scan: _, ...rest } = study;
+  return prepare({ ...rest, molecule, levels: [level], states: 1 }, { memoryLimit }, basisSet);
+}
+
+/** @param resolved - the basis set, where it is known already */
+function prepare(study: Study, options: PrepareOptions, resolved?: BasisSet): Preparation {
   const errors: EngineError[] = [];
   const collect = <T>(step: () => T): T | undefined => {
     try {
@@ -84,13 +103,16 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
 
   const { molecule } = built;
   const symbols = [...new Set(molecule.atoms.map((atom) => atom.symbol))];
-  const basisSet = collect(() => resolveBasis(study.basis, symbols, { fileText: options.basisFileText }));
+  const basisSet =
+    resolved ?? collect(() => resolveBasis(study.basis, symbols, { fileText: options.basisFileText }));
   const scalable = collect(() => scalableBasis(study.basis, symbols));
   const functionCount = basisSet && collect(() => placeBasis(basisSet, molecule).functionCount);
   collect(() => requireClosedShell(levels, molecule.multiplicity));
   if (functionCount !== undefined) collect(() => requireFunctions(functionCount, molecule));
+  const window =
+    functionCount === undefined ? undefined : collect(() => windowOf(study, levels, molecule, functionCount));
   if (study.scan) errors.push(...checkScan(study.molecule, study.scan));
-  if (errors.length > 0 || !basisSet || functionCount === undefined) return { ok: false, errors };
+  if (errors.length > 0 || !basisSet || functionCount === undefined || !window) return { ok: false, errors };
 
   const complete: CompleteStudy = {
     ...study,
@@ -108,19 +130,30 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
     electrons: electronCount(molecule),
     spinElectrons: electronsBySpin(electronCount(molecule), molecule.multiplicity),
     functionCount,
-    // highly charged ions may have fewer electrons than their cores
-    frozenOrbitals: complete.frozenCore
-      ? Math.min(
-          frozenOrbitalCount(molecule),
-          electronsBySpin(electronCount(molecule), molecule.multiplicity)[1],
-        )
-      : 0,
+    frozenOrbitals: window.frozen,
+    ...(window.active !== undefined && { activeOrbitals: window.active }),
     memoryLimit: options.memoryLimit ?? DEFAULT_MEMORY_LIMIT,
     geometryAt: (coordinate) => geometryOf(complete, coordinate).atoms,
     moleculeAt: (coordinate) => moleculeOf(complete, coordinate),
   };
   errors.push(...checkMemory(prepared));
   return errors.length > 0 ? { ok: false, errors } : { ok: true, prepared };
+}
+
+function windowOf(
+  study: Study,
+  levels: readonly (Level | undefined)[],
+  molecule: Molecule,
+  functionCount: number,
+): OrbitalWindow {
+  const { active, frozenCore = false } = study;
+  const spinElectrons = electronsBySpin(electronCount(molecule), molecule.multiplicity);
+  if (active) {
+    const known = levels.filter((level) => level !== undefined);
+    return activeWindow(active, spinElectrons, functionCount, frozenCore, known);
+  }
+  // highly charged ions may have fewer electrons than their cores
+  return { frozen: frozenCore ? Math.min(frozenOrbitalCount(molecule), spinElectrons[1]) : 0 };
 }
 
 /** Memory is counted before any of it is taken. */

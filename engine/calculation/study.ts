@@ -15,7 +15,14 @@ export interface Study {
   readonly levels: readonly string[];
   readonly states?: number | undefined;
   readonly frozenCore?: boolean | undefined;
+  /** CI within these orbitals around the Fermi level; not together with `frozenCore` */
+  readonly active?: ActiveSpace | undefined;
   readonly convergence?: { readonly energy?: number | undefined } | undefined;
+}
+
+export interface ActiveSpace {
+  readonly electrons: number;
+  readonly orbitals: number;
 }
 
 export type LengthUnit = 'angstrom' | 'bohr';

@@ -12,7 +12,7 @@ export function Explanation({ check }: { readonly check: Check }) {
 }
 
 export function explanationText(explanation: StudyExplanation, workers: number): string {
-  const { electrons, functions, frozenOrbitals, points, levels } = explanation;
+  const { electrons, functions, frozenOrbitals, activeOrbitals, points, levels } = explanation;
   const determinants = levels.flatMap(({ level, determinants: count }) =>
     count === undefined ? [] : [`${level} ${formatFixed(count, 0)}`],
   );
@@ -22,6 +22,7 @@ export function explanationText(explanation: StudyExplanation, workers: number):
     plural(electrons, 'electron'),
     plural(functions, 'basis function'),
     ...(frozenOrbitals > 0 ? [plural(frozenOrbitals, 'frozen orbital')] : []),
+    ...(activeOrbitals !== undefined ? [plural(activeOrbitals, 'active orbital')] : []),
     plural(points, 'point'),
     ...(determinants.length > 0 ? [`determinants ${determinants.join(', ')}`] : []),
     `${seconds < 1 ? '' : 'about '}${formatDuration(seconds)}, ${formatBytes(bytes)}`,

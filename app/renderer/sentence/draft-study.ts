@@ -26,6 +26,7 @@ export function studyForWording(draft: StudyDraft): Study {
     levels: draft.levels.length === 0 ? ['no level'] : draft.levels,
     states: wholeNumber(draft.states),
     frozenCore: draft.frozenCore,
+    active: draft.active,
   };
 }
 

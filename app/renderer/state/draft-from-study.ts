@@ -21,6 +21,7 @@ export function draftFromStudy(study: Study): StudyDraft {
     levels: study.levels,
     states: String(study.states ?? 1),
     frozenCore: study.frozenCore ?? false,
+    ...(study.active && { active: study.active }),
     energyConvergence: optionalNumber(study.convergence?.energy),
   };
 }

@@ -1,4 +1,4 @@
-import type { LengthUnit } from '#engine';
+import type { LengthUnit, Study } from '#engine';
 
 /**
  * The study as it stands in the window: every field holds exactly what was typed, valid or not, so that
@@ -17,6 +17,8 @@ export interface StudyDraft {
   readonly levels: readonly string[];
   readonly states: string;
   readonly frozenCore: boolean;
+  /** kept as the study gave it */
+  readonly active?: Study['active'];
   /** empty: the default */
   readonly energyConvergence: string;
 }

@@ -35,6 +35,7 @@ export function studyText(draft: StudyDraft): StudyText {
     levels: draft.levels,
     ...(draft.states.trim() !== '' && { states: numberOrText(draft.states) }),
     frozenCore: draft.frozenCore,
+    ...(draft.active && { active: draft.active }),
     ...(draft.energyConvergence.trim() !== '' && {
       convergence: { energy: numberOrText(draft.energyConvergence) },
     }),

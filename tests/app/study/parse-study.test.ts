@@ -57,8 +57,19 @@ describe('parseStudy', () => {
       },
       { basis: { file: 'sets/mine.json' } },
       { title: 'a', notes: 'b', states: 3, frozenCore: true, convergence: { energy: 1e-9 } },
+      { active: { electrons: 8, orbitals: 8 } },
     ];
     for (const change of changes) expect(brief(change)).toEqual([]);
+  });
+
+  it('refuses what active orbitals do not have', () => {
+    for (const active of [
+      { electrons: 8 },
+      { electrons: 0, orbitals: 4 },
+      { electrons: 2, orbitals: 2, roots: 1 },
+    ]) {
+      expect(brief({ active })).toHaveLength(1);
+    }
   });
 
   it('says place, expectation, value and line of a wrong value', () => {

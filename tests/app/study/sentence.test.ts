@@ -76,6 +76,10 @@ describe('studySentence', () => {
     expect(studySentence(study('', undefined, rest))).toBe(
       'Compute triplet O₂ at the geometry given, in STO-3G, with RHF, three states of each, core frozen.',
     );
+    const active = { electrons: 8, orbitals: 6 };
+    expect(studySentence(study('', undefined, { ...rest, frozenCore: false, active }))).toContain(
+      'three states of each, 8 electrons in 6 orbitals active.',
+    );
     expect(studySentence(study('', bonds([0, 1]), rest))).toContain(
       'the O–O bond of triplet O₂ from 0.5 to 3 bohr in 26 steps',
     );
