@@ -151,6 +151,24 @@ export const SPLIT_631_TWO_STARS_ENERGIES: readonly PublishedRow[] = [
   recalled('H2', 'total energy', '-1.131', 'hartree', 'Tables 3.11-3.13'),
 ];
 
+/** At the standard geometries, with Cartesian d functions. N2 is in SOURCES.md only. */
+export const POLARISED_631_ENERGIES: readonly BasisComparisonRow[] = (
+  [
+    ['6-31G*', 'CO', '-112.737'],
+    ['6-31G*', 'CH4', '-40.195'],
+    ['6-31G*', 'NH3', '-56.184'],
+    ['6-31G*', 'H2O', '-76.011'],
+    ['6-31G*', 'HF', '-100.003'],
+    ['6-31G**', 'CH4', '-40.202'],
+    ['6-31G**', 'NH3', '-56.195'],
+    ['6-31G**', 'H2O', '-76.023'],
+    ['6-31G**', 'HF', '-100.011'],
+  ] as const
+).map(([basis, system, printed]) => ({
+  basis,
+  ...recalled(system, 'total energy', printed, 'hartree', 'Tables 3.11-3.13'),
+}));
+
 /** A row of a table that compares basis sets. */
 export interface BasisComparisonRow extends PublishedRow {
   readonly basis: string;
