@@ -65,6 +65,40 @@ function dipoleFact([x, y, z]: readonly [number, number, number]): readonly [Rea
   ];
 }
 
+function virialFact(parts: HartreeFockResult['energyParts']): readonly [ReactNode, ReactNode] | undefined {
+  if (parts === undefined) return undefined;
+  return [
+    <abbr key="virial" title="2 for exact wave functions at the minimum of the curve">
+      Virial ratio −V/T
+    </abbr>,
+    formatFixed(parts.virialRatio, 6),
+  ];
+}
+
+/** The parts of the energy, in the order in which they add up. */
+function EnergyPartsList({
+  result,
+  unit,
+}: {
+  readonly result: HartreeFockResult | CorrelatedResult;
+  readonly unit: EnergyUnit;
+}) {
+  const { energyParts: parts } = result;
+  if (parts === undefined) return null;
+  const rest = result.kind === 'hartreeFock' ? 'Exchange' : 'Exchange and correlation';
+  return (
+    <Facts
+      facts={[
+        ['Kinetic energy', energyText(parts.kinetic, unit)],
+        ['Nuclear attraction', energyText(parts.nuclearAttraction, unit)],
+        ['Coulomb', energyText(parts.coulomb, unit)],
+        [rest, energyText(parts.exchangeCorrelation, unit)],
+        ['Nuclear repulsion', energyText(parts.nuclearRepulsion, unit)],
+      ]}
+    />
+  );
+}
+
 function HartreeFockFacts({
   result,
   unit,
@@ -78,6 +112,7 @@ function HartreeFockFacts({
         facts={[
           ['Iterations', result.iterations],
           dipoleFact(result.dipole),
+          virialFact(result.energyParts),
           result.stability && [
             <abbr
               key="stability"
@@ -91,6 +126,7 @@ function HartreeFockFacts({
           ],
         ]}
       />
+      <EnergyPartsList result={result} unit={unit} />
       {orbitalSets(result).map(({ name, energies, labels }) => (
         <NumberList
           key={name}
@@ -202,6 +238,7 @@ function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; 
           ['Iterations', result.iterations],
           ground && ['Residual, Eₕ', formatScientific(ground.residual)],
           dipoleFact(result.dipole),
+          virialFact(result.energyParts),
           result.davidsonCorrected === undefined
             ? undefined
             : [
@@ -219,9 +256,35 @@ function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; 
         name="Natural occupations"
         values={result.naturalOccupations.map((occupation) => formatFixed(occupation, 5))}
       />
+      <EnergyPartsList result={result} unit={unit} />
+      {result.sizeCorrections && <SizeCorrectionsList corrections={result.sizeCorrections} unit={unit} />}
       {ground !== undefined && <LeadingDeterminants state={ground} />}
       {result.states.length > 1 && <States states={result.states} unit={unit} />}
     </>
+  );
+}
+
+/** The estimates beside Davidson’s own, which stands with the facts. */
+function SizeCorrectionsList({
+  corrections,
+  unit,
+}: {
+  readonly corrections: NonNullable<CorrelatedResult['sizeCorrections']>;
+  readonly unit: EnergyUnit;
+}) {
+  const { renormalised, davidsonSilver, pople, meissner, duchDiercksen } = corrections;
+  const fact = (name: string, energy: number | undefined) =>
+    energy === undefined ? undefined : ([name, energyText(energy, unit)] as const);
+  return (
+    <Facts
+      facts={[
+        fact('Renormalised Davidson', renormalised),
+        fact('Davidson–Silver', davidsonSilver),
+        fact('Pople', pople),
+        fact('Meissner', meissner),
+        fact('Duch–Diercksen', duchDiercksen),
+      ]}
+    />
   );
 }
 
@@ -272,6 +335,9 @@ function States({
           </th>
           <th scope="col">c₀²</th>
           <th scope="col">⟨S²⟩</th>
+          <th scope="col">
+            <abbr title="Oscillator strength from the lowest state, length form">f</abbr>
+          </th>
           <th scope="col">Leading</th>
         </tr>
       </thead>
@@ -285,6 +351,7 @@ function States({
             <td>{formatFixed(toEnergyUnit(state.excitation, unit), Math.min(decimals, 6))}</td>
             <td>{formatFixed(state.referenceWeight, 4)}</td>
             <td>{formatFixed(state.sSquared, 4)}</td>
+            <td>{state.oscillatorStrength === undefined ? '' : formatFixed(state.oscillatorStrength, 4)}</td>
             <td className="words">
               {state.leading[0] === undefined ? '' : describeDeterminant(state.leading[0])}
             </td>
