@@ -7,7 +7,15 @@ import type { BasisDescription } from './result';
 /** The basis of a study as the results file records it. */
 export function describeBasisUsed(prepared: PreparedStudy): BasisDescription {
   const molecule = prepared.moleculeAt(prepared.coordinates[0]);
-  return describe(prepared.basisSet, placeBasis(prepared.basisSet, molecule).functionCount);
+  const description = describe(prepared.basisSet, placeBasis(prepared.basisSet, molecule).functionCount);
+  if (!prepared.scalable) return description;
+  return {
+    ...description,
+    notes: [
+      ...description.notes,
+      'Scale factors are optimised at every point, which names its own; the shells here have those that the search starts from.',
+    ],
+  };
 }
 
 /**

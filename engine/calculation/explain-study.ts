@@ -15,17 +15,22 @@ const PER_TRANSFORMATION_STEP = 2e-9;
 const PER_CONNECTION = 1.5e-9;
 const FIELD_ITERATIONS = 30;
 const EIGENVALUE_ITERATIONS = 14;
+/** Of a search for scale factors. */
+const SCALE_STEPS = 10;
 
 /** Sizes, memory and time of a study, without computing it. */
 export function explainStudy(prepared: PreparedStudy): StudyExplanation {
   const { functionCount: n, electrons, frozenOrbitals, study } = prepared;
   const pairs = (n * (n + 1)) / 2;
   const repulsionIntegrals = (pairs * (pairs + 1)) / 2;
+  const integralSeconds =
+    repulsionIntegrals * (PER_INTEGRAL + PER_PRIMITIVE_INTEGRAL * meanPrimitives(prepared) ** 4);
+  // four energies for every derivative, one at every step, three at the start for every factor
+  const factors = Object.values(prepared.scalable?.start ?? {}).flatMap(Object.keys).length;
+  const searches = factors === 0 ? 1 : 3 * factors + SCALE_STEPS * (1 + 4 * factors);
   const field: Omit<LevelExplanation, 'level'> = {
     bytes: 8 * repulsionIntegrals + 8 * 40 * n * n,
-    seconds:
-      repulsionIntegrals * (PER_INTEGRAL + PER_PRIMITIVE_INTEGRAL * meanPrimitives(prepared) ** 4) +
-      FIELD_ITERATIONS * repulsionIntegrals * PER_FOCK_ELEMENT,
+    seconds: searches * (integralSeconds + FIELD_ITERATIONS * repulsionIntegrals * PER_FOCK_ELEMENT),
   };
   const active = prepared.activeOrbitals ?? n - frozenOrbitals;
   const [alpha, beta] = prepared.spinElectrons.map((count) => count - frozenOrbitals) as [number, number];

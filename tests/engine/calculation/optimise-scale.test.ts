@@ -1,5 +1,13 @@
 import { describe, expect, it } from 'vitest';
-import { computePoint, type ScaleFactors, type Study, type StudyAtom } from '#engine';
+import {
+  computePoint,
+  describeBasisUsed,
+  explainStudy,
+  type PreparedStudy,
+  type ScaleFactors,
+  type Study,
+  type StudyAtom,
+} from '#engine';
 import { placeBasis } from '../../../engine/basis/place-basis';
 import { stoNgBasisSet } from '../../../engine/basis/sto-ng';
 import { molecularIntegrals } from '../../../engine/calculation/molecular-integrals';
@@ -204,6 +212,15 @@ describe('optimised scale factors', () => {
     const { converged, atLimit } = point.scaleOptimisation!;
     expect([converged, atLimit]).toEqual([false, ['H 1s']]);
     expect(point.cautions.map(({ code }) => code)).toContain('scale.unconverged');
+  });
+
+  it('identity: the basis as recorded says that its factors are a start, and the estimate counts the search', () => {
+    const request = optimised(3, pair('Li', 'H', 3));
+    const [searching, fixed] = [request, { ...request, basis: 'STO-3G' }].map(prepare);
+    expect(describeBasisUsed(searching!).notes.join()).toContain('optimised at every point');
+    expect(describeBasisUsed(fixed!).notes.join()).not.toContain('optimised');
+    const seconds = (prepared: PreparedStudy) => explainStudy(prepared).levels[0]!.seconds;
+    expect(seconds(searching!)).toBeGreaterThan(50 * seconds(fixed!));
   });
 
   it('identity: a search that is cancelled says so', () => {
