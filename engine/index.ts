@@ -10,6 +10,7 @@ export {
   computePoint,
 } from './calculation/compute-point';
 export { describeBasis, describeBasisUsed } from './calculation/describe-basis';
+export { measuredFor } from './calculation/diatomic';
 export { explainStudy } from './calculation/explain-study';
 export type { LevelExplanation, StudyExplanation } from './calculation/explanation';
 export { evaluateOnGrid, type FieldOnGrid } from './calculation/field-on-grid';
@@ -29,7 +30,11 @@ export type {
   Caution,
   CorrelatedResult,
   CorrelatedState,
+  DiatomicConstants,
+  Dissociation,
+  Estimate,
   FailedLevel,
+  Fragment,
   HartreeFockResult,
   InstabilityOnset,
   LeadingDeterminant,
@@ -44,6 +49,10 @@ export type {
   SinglesState,
   SpinOrbitalEnergies,
   StudyResults,
+  Vibration,
+  VibrationalState,
+  WellConstants,
+  WellDepth,
 } from './calculation/result';
 export type {
   CompleteStudy,
@@ -63,6 +72,7 @@ export {
   HARTREE_IN_KJ_PER_MOL,
   HARTREE_IN_WAVENUMBERS,
 } from './constants';
+export type { MeasuredConstant, MeasuredQuantity, MeasuredState } from './curves/measured-constants';
 export {
   EngineError,
   type EngineErrorCode,

@@ -1,5 +1,12 @@
 import { z } from 'zod';
-import type { LevelFindings, LevelResult, PointResult, StudyResults } from '#engine';
+import type {
+  LevelFindings,
+  LevelResult,
+  MeasuredQuantity,
+  MeasuredState,
+  PointResult,
+  StudyResults,
+} from '#engine';
 import { studySchema } from './schema';
 
 /*
@@ -208,6 +215,15 @@ const point: z.ZodType<PointResult> = z.looseObject({
   cautions,
 });
 
+const estimate = z.looseObject({ value: z.number(), uncertainty: z.number() });
+const fragment = z.looseObject({
+  atoms: z.array(z.number()),
+  charge: z.number(),
+  multiplicity: z.number(),
+  energy: z.number(),
+  level: z.string(),
+});
+
 const findings: z.ZodType<LevelFindings> = z.looseObject({
   minimum: z.discriminatedUnion('kind', [
     z.looseObject({
@@ -220,8 +236,68 @@ const findings: z.ZodType<LevelFindings> = z.looseObject({
     z.looseObject({ kind: z.literal('several'), near: z.array(z.number()) }),
     z.looseObject({ kind: z.literal('none'), reason: z.string() }),
   ]),
+  constants: z
+    .looseObject({
+      equilibriumDistanceAngstrom: estimate,
+      forceConstantNewtonPerMetre: estimate,
+      diatomic: z
+        .looseObject({
+          masses: z.literal('atomic'),
+          reducedMassDalton: z.number(),
+          harmonicWavenumberPerCm: estimate,
+          anharmonicityPerCm: estimate,
+          rotationalConstantPerCm: estimate,
+          vibrationRotationCouplingPerCm: estimate,
+          centrifugalDistortionPerCm: estimate,
+        })
+        .exactOptional(),
+    })
+    .exactOptional(),
+  dissociation: z
+    .discriminatedUnion('kind', [
+      z.looseObject({
+        kind: z.literal('found'),
+        energy: z.number(),
+        fragments: z.tuple([fragment, fragment]),
+        farEndAbove: z.number().exactOptional(),
+      }),
+      z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+    ])
+    .exactOptional(),
   wellDepth: z
-    .looseObject({ value: z.number(), against: z.literal('farEnd'), farEnd: z.number() })
+    .discriminatedUnion('against', [
+      z.looseObject({ value: z.number(), against: z.literal('farEnd'), farEnd: z.number() }),
+      z.looseObject({
+        value: z.number(),
+        against: z.literal('fragments'),
+        farEnd: z.number(),
+        valueAgainstFarEnd: z.number(),
+      }),
+    ])
+    .exactOptional(),
+  vibration: z
+    .discriminatedUnion('kind', [
+      z.looseObject({
+        kind: z.literal('found'),
+        levels: z.array(
+          z.looseObject({
+            v: z.number(),
+            energyPerCm: z.number(),
+            rotationalConstantPerCm: z.number(),
+            uncertaintyPerCm: number,
+          }),
+        ),
+        zeroPointPerCm: z.number(),
+        d0: z.number().exactOptional(),
+        boundLevels: z.number(),
+        converged: z.boolean(),
+        beyondComputedRange: z.array(z.number()),
+        interpolationErrorPerCm: z.number(),
+        pointsAdded: z.number(),
+        reducedMassDalton: z.number(),
+      }),
+      z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+    ])
     .exactOptional(),
   instabilityOnset: z
     .discriminatedUnion('kind', [
@@ -229,6 +305,22 @@ const findings: z.ZodType<LevelFindings> = z.looseObject({
       z.looseObject({ kind: z.literal('none'), reason: z.string() }),
     ])
     .exactOptional(),
+});
+
+const measuredState: z.ZodType<MeasuredState> = z.looseObject({
+  state: z.string(),
+  isGroundState: z.boolean(),
+  constants: z.array(
+    z.looseObject({
+      quantity: z.custom<MeasuredQuantity>((value) => typeof value === 'string'),
+      printed: z.string(),
+      value: z.number(),
+      unit: z.enum(['cm⁻¹', 'Å', 'eV', 'MHz']),
+      source: z.string(),
+      status: z.enum(['seen', 'memory']),
+      note: z.string().exactOptional(),
+    }),
+  ),
 });
 
 /** The study as run has its defaults filled in. */
@@ -267,5 +359,6 @@ export const resultsSchema: z.ZodType<StudyResults> = z.looseObject({
   }),
   points: z.array(point),
   findings: z.record(z.string(), findings),
+  measured: z.array(measuredState).exactOptional(),
   cautions,
 });

@@ -1,18 +1,24 @@
-import { type CurvePoint, findCurveMinimum } from '../curves/minimum';
+import { HARTREE_IN_WAVENUMBERS } from '../constants';
+import { type CurveMinimum, findCurveMinimum } from '../curves/minimum';
 import type { RunControl } from '../termination';
-import { computePoint } from './compute-point';
+import { diatomicOf } from './diatomic';
+import { explainStudy } from './explain-study';
 import { findInstabilityOnset } from './find-onset';
-import type { PointCarry } from './mean-fields';
+import { dissociationLimit } from './fragments';
+import { type LevelCurve, levelCurve } from './level-curve';
 import type { PreparedStudy } from './prepare-study';
-import type { LevelFindings, LevelResult, PointResult } from './result';
+import type { Dissociation, LevelFindings, PointResult, WellDepth } from './result';
+import { vibrationOf } from './vibration';
+import { wellConstants } from './well-constants';
 
 /** Spacing of the points computed around a minimum: fine against a well's width, coarse against energy noise. */
 const SPACING_ANGSTROM = 0.02;
 const SPACING_BOHR = 0.04;
 
 /**
- * Equilibrium distance, energy there and depth against the far end of one level's curve; of RHF also where it becomes
- * unstable. Computes some ten more points of that level itself.
+ * All that is read off one level's curve: its minimum with the constants of the well, the limit of separate
+ * fragments and the depth against it, vibrational levels; of RHF also where it becomes unstable. Computes the
+ * further points of that level that it needs itself.
  *
  * @param level - name of one of the study's levels
  * @param points - the study's computed points
@@ -23,12 +29,12 @@ export function findLevelMinimum(
   points: readonly PointResult[],
   control?: RunControl,
 ): LevelFindings {
-  const findings = minimumFindings(prepared, level, points, control);
+  const findings = curveFindings(prepared, level, points, control);
   if (level !== 'RHF' || !prepared.study.scan) return findings;
   return { ...findings, instabilityOnset: findInstabilityOnset(prepared, points, control) };
 }
 
-function minimumFindings(
+function curveFindings(
   prepared: PreparedStudy,
   level: string,
   points: readonly PointResult[],
@@ -40,47 +46,65 @@ function minimumFindings(
   if (prepared.levels.find((candidate) => candidate.name === level)?.kind === 'singles') {
     return none('CIS gives excited states only; its ground state is RHF.');
   }
-  const curve: CurvePoint[] = points.map((point) => ({
-    x: point.coordinate ?? Number.NaN,
-    energy: groundEnergy(point.levels[level]),
-  }));
-  let guess: PointCarry | undefined;
-  const energyAt = (x: number): number | undefined => {
-    if (control?.isCancelled()) return undefined;
-    const { result, carry } = computePoint(prepared, x, { guess, levels: [level], control });
-    guess = carry ?? guess;
-    return groundEnergy(result.levels[level]);
+  const curve = levelCurve(prepared, level, points, control);
+  const farEnd = curve.points().at(-1);
+  const dissociation = dissociationLimit(prepared, level, farEnd, control);
+  const limit = dissociation && { dissociation };
+  const spacing = molecule.unit === 'bohr' ? SPACING_BOHR : SPACING_ANGSTROM;
+  const minimum = findCurveMinimum(curve.scan, curve.energyAt, spacing);
+  if (minimum.kind !== 'found') return { minimum: withoutMinimum(minimum), ...limit };
+  const { x, energy, uncertainty } = minimum;
+  const wellDepth = wellDepthOf(energy, curve, dissociation);
+  const constants = wellConstants(prepared, curve, minimum, spacing);
+  return {
+    minimum: { kind: 'found', equilibriumDistance: x, energy, uncertainty },
+    constants,
+    ...limit,
+    ...(wellDepth && { wellDepth }),
+    ...vibrationFindings(prepared, curve, energy, dissociation, wellDepth),
   };
-  const minimum = findCurveMinimum(
-    curve,
-    energyAt,
-    molecule.unit === 'bohr' ? SPACING_BOHR : SPACING_ANGSTROM,
-  );
-  switch (minimum.kind) {
-    case 'found': {
-      const { x, energy, uncertainty } = minimum;
-      const far = curve.reduce((a, b) => (b.x > a.x ? b : a));
-      return {
-        minimum: { kind: 'found', equilibriumDistance: x, energy, uncertainty },
-        ...(far.energy !== undefined && {
-          wellDepth: { value: far.energy - energy, against: 'farEnd' as const, farEnd: far.x },
-        }),
-      };
-    }
-    case 'atEdge':
-      return { minimum: { kind: 'atEdge', coordinate: minimum.x } };
-    case 'several':
-    case 'none':
-      return { minimum };
-  }
 }
 
 function none(reason: string): LevelFindings {
   return { minimum: { kind: 'none', reason } };
 }
 
-/** Energy of the lowest state where it can be trusted. */
-function groundEnergy(result: LevelResult | undefined): number | undefined {
-  if (!result?.converged) return undefined;
-  return 'energy' in result ? result.energy : undefined;
+function withoutMinimum(minimum: Exclude<CurveMinimum, { kind: 'found' }>): LevelFindings['minimum'] {
+  return minimum.kind === 'atEdge' ? { kind: 'atEdge', coordinate: minimum.x } : minimum;
+}
+
+function wellDepthOf(
+  minimum: number,
+  curve: LevelCurve,
+  dissociation: Dissociation | undefined,
+): WellDepth | undefined {
+  if (dissociation?.kind === 'found') {
+    const farEnd = curve.points().at(-1)!;
+    return {
+      value: dissociation.energy - minimum,
+      against: 'fragments',
+      farEnd: farEnd.x,
+      valueAgainstFarEnd: farEnd.energy - minimum,
+    };
+  }
+  const last = curve.scan.reduce((a, b) => (b.x > a.x ? b : a));
+  if (last.energy === undefined) return undefined;
+  return { value: last.energy - minimum, against: 'farEnd', farEnd: last.x };
+}
+
+function vibrationFindings(
+  prepared: PreparedStudy,
+  curve: LevelCurve,
+  minimum: number,
+  dissociation: Dissociation | undefined,
+  wellDepth: WellDepth | undefined,
+): Pick<LevelFindings, 'vibration'> {
+  const molecule = diatomicOf(prepared.study);
+  if (!molecule) return {};
+  const seconds = explainStudy(prepared).levels.find(({ level }) => level === curve.level)?.seconds ?? 0;
+  const limit = dissociation?.kind === 'found' ? dissociation.energy : undefined;
+  const vibration = vibrationOf(molecule, curve, minimum, limit, seconds);
+  if (vibration.kind !== 'found' || !wellDepth) return { vibration };
+  const d0 = wellDepth.value - vibration.zeroPointPerCm / HARTREE_IN_WAVENUMBERS;
+  return { vibration: { ...vibration, d0 } };
 }

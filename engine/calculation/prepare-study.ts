@@ -74,7 +74,7 @@ export function prepareFragment(
   molecule: StudyMolecule,
   level: string,
 ): Preparation {
-  const { scan: _, ...rest } = study;
+  const { scan: _, active: __, ...rest } = study;
   return prepare({ ...rest, molecule, levels: [level], states: 1 }, { memoryLimit }, basisSet);
 }
 

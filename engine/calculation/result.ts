@@ -1,13 +1,12 @@
 import type { Harmonics, ShellDefinition } from '../basis/contracted-gaussian';
 import type { ScaleFactors } from '../basis/scalable-basis';
 import type { SizeCorrections } from '../configuration-interaction/size-corrections';
-import type { SizeCorrections } from '../configuration-interaction/size-corrections';
 import type { SpinName } from '../configuration-interaction/spin';
+import type { MeasuredState } from '../curves/measured-constants';
 import type { Vector3 } from '../molecule/molecule';
 import type { PointGroupName } from '../symmetry/point-groups';
 import type { StateSymmetry } from '../symmetry/state-symmetry';
 import type { Termination } from '../termination';
-import type { EnergyParts } from './energy-parts';
 import type { EnergyParts } from './energy-parts';
 import type { CompleteStudy, StudyAtom } from './study';
 
@@ -25,6 +24,8 @@ export interface StudyResults {
   readonly basis: BasisDescription;
   readonly points: readonly PointResult[];
   readonly findings: Readonly<Record<string, LevelFindings>>;
+  /** measured constants of this isotopologue, empty where none are known; diatomic molecules only */
+  readonly measured?: readonly MeasuredState[];
   /** what concerns the whole curve rather than one point */
   readonly cautions: readonly Caution[];
 }
@@ -113,7 +114,6 @@ export interface HartreeFockResult {
   /** e·bohr, about the origin of the study's coordinates, for ions too */
   readonly dipole: Vector3;
   readonly energyParts?: EnergyParts;
-  readonly energyParts?: EnergyParts;
   /** ⟨S²⟩; UHF and ROHF */
   readonly sSquared?: number;
   /**
@@ -196,10 +196,6 @@ export interface CorrelatedState {
   readonly oscillatorStrength?: number;
   /** ⟨lowest|−r|state⟩, e·bohr; of every state but the lowest */
   readonly transitionDipole?: Vector3;
-  /** from the lowest state, length form; of every state but the lowest */
-  readonly oscillatorStrength?: number;
-  /** ⟨lowest|−r|state⟩, e·bohr; of every state but the lowest */
-  readonly transitionDipole?: Vector3;
   readonly residual: number;
   readonly dipole: Vector3;
   readonly charges?: AtomicCharges;
@@ -225,11 +221,8 @@ export interface CorrelatedResult {
   readonly naturalOccupations: readonly number[];
   readonly dipole: Vector3;
   readonly energyParts?: EnergyParts;
-  readonly energyParts?: EnergyParts;
   /** energy + (1 − c0²)·correlation (Langhoff, Davidson 1974); truncated CI only, not variational */
   readonly davidsonCorrected?: number;
-  /** CISD: total energies with the usual estimates of the missing quadruples */
-  readonly sizeCorrections?: SizeCorrections;
   /** CISD: total energies with the usual estimates of the missing quadruples */
   readonly sizeCorrections?: SizeCorrections;
   readonly states: readonly CorrelatedState[];
@@ -252,10 +245,120 @@ export interface LevelFindings {
     | { readonly kind: 'several'; readonly near: readonly number[] }
     /** too few converged points, or no scan of a distance */
     | { readonly kind: 'none'; readonly reason: string };
-  /** E(last computed distance) − E(minimum): depth against the far end of this curve, not against fragments */
-  readonly wellDepth?: { readonly value: number; readonly against: 'farEnd'; readonly farEnd: number };
+  /** absent without a minimum */
+  readonly constants?: WellConstants;
+  /** the lowest energy of separate fragments at this level; absent where the scan does not part the molecule in two */
+  readonly dissociation?: Dissociation;
+  /** absent without a minimum */
+  readonly wellDepth?: WellDepth;
+  /** diatomic molecules; absent without a minimum */
+  readonly vibration?: Vibration;
   /** RHF of a scan: where a spin-polarised solution begins to lie lower */
   readonly instabilityOnset?: InstabilityOnset;
+}
+
+/** A number and how far it may be off for numerical reasons: of this level's own curve, not of nature. */
+export interface Estimate {
+  readonly value: number;
+  readonly uncertainty: number;
+}
+
+/** What the shape of the curve at its minimum gives. */
+export interface WellConstants {
+  readonly equilibriumDistanceAngstrom: Estimate;
+  /** second derivative of the energy along the scanned distance */
+  readonly forceConstantNewtonPerMetre: Estimate;
+  /** diatomic molecules only */
+  readonly diatomic?: DiatomicConstants;
+}
+
+/** Leading terms after J. L. Dunham, Phys. Rev. 41, 721 (1932), for the isotopes of the study. */
+export interface DiatomicConstants {
+  /** masses of neutral atoms, electrons included */
+  readonly masses: 'atomic';
+  readonly reducedMassDalton: number;
+  /** ωe */
+  readonly harmonicWavenumberPerCm: Estimate;
+  /** ωexe */
+  readonly anharmonicityPerCm: Estimate;
+  /** Be */
+  readonly rotationalConstantPerCm: Estimate;
+  /** αe */
+  readonly vibrationRotationCouplingPerCm: Estimate;
+  /** D̄e */
+  readonly centrifugalDistortionPerCm: Estimate;
+}
+
+export type WellDepth =
+  /** E(last computed distance) − E(minimum) */
+  | { readonly value: number; readonly against: 'farEnd'; readonly farEnd: number }
+  /** E(separate fragments) − E(minimum) */
+  | {
+      readonly value: number;
+      readonly against: 'fragments';
+      /** last computed distance where the level converged */
+      readonly farEnd: number;
+      /** E(that distance) − E(minimum) */
+      readonly valueAgainstFarEnd: number;
+    };
+
+export type Dissociation =
+  | {
+      readonly kind: 'found';
+      /** sum of the fragments, hartree */
+      readonly energy: number;
+      readonly fragments: readonly [Fragment, Fragment];
+      /**
+       * E(last computed distance) − `energy`: what still binds there, the size-consistency error of the level, or
+       * both; absent where the level did not converge at any distance
+       */
+      readonly farEndAbove?: number;
+    }
+  | { readonly kind: 'none'; readonly reason: string };
+
+/** A part of the molecule on its own, in its own basis functions, at the geometry that it has in the scan. */
+export interface Fragment {
+  /** indices of the study's atoms */
+  readonly atoms: readonly number[];
+  readonly charge: number;
+  /** 2S + 1 */
+  readonly multiplicity: number;
+  readonly energy: number;
+  /** the level that it was computed at: ROHF for open shells where the molecule has RHF, and for one electron */
+  readonly level: string;
+}
+
+export type Vibration =
+  | {
+      readonly kind: 'found';
+      /** bound levels without rotation (J = 0), from the lowest */
+      readonly levels: readonly VibrationalState[];
+      /** of the lowest level above the minimum */
+      readonly zeroPointPerCm: number;
+      /** well depth less zero-point energy, hartree; against the same limit as the well depth */
+      readonly d0?: number;
+      readonly boundLevels: number;
+      /** levels are those of the interpolated curve to 0.001 cm⁻¹ in grid and range */
+      readonly converged: boolean;
+      /** quantum numbers of levels that rest on the curve beyond its computed points by more than 0.001 cm⁻¹ */
+      readonly beyondComputedRange: readonly number[];
+      /** largest estimated error of the curve between its points, below the limit */
+      readonly interpolationErrorPerCm: number;
+      /** points computed for these levels only */
+      readonly pointsAdded: number;
+      readonly reducedMassDalton: number;
+    }
+  | { readonly kind: 'none'; readonly reason: string };
+
+export interface VibrationalState {
+  /** quantum number */
+  readonly v: number;
+  /** above the minimum of the curve */
+  readonly energyPerCm: number;
+  /** Bv */
+  readonly rotationalConstantPerCm: number;
+  /** from the grid alone; see `interpolationErrorPerCm` for the curve */
+  readonly uncertaintyPerCm: number;
 }
 
 export type InstabilityOnset =

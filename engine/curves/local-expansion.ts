@@ -52,3 +52,8 @@ export function minimumOfExpansion(coefficients: readonly number[], reach: numbe
 export function evaluateExpansion(coefficients: readonly number[], t: number): number {
   return coefficients.reduceRight((sum, c) => sum * t + c, 0);
 }
+
+/** Second derivative of the expansion at a displacement. */
+export function curvatureOfExpansion(coefficients: readonly number[], t: number): number {
+  return slopeAndCurvature(coefficients, t)[1];
+}

@@ -1,4 +1,9 @@
-import { evaluateExpansion, localExpansion, minimumOfExpansion } from './local-expansion';
+import {
+  curvatureOfExpansion,
+  evaluateExpansion,
+  localExpansion,
+  minimumOfExpansion,
+} from './local-expansion';
 
 /** One computed point of a curve; energy undefined where the level did not converge. */
 export interface CurvePoint {
@@ -7,7 +12,17 @@ export interface CurvePoint {
 }
 
 export type CurveMinimum =
-  | { readonly kind: 'found'; readonly x: number; readonly energy: number; readonly uncertainty: number }
+  | {
+      readonly kind: 'found';
+      readonly x: number;
+      readonly energy: number;
+      readonly uncertainty: number;
+      /** second derivative there */
+      readonly curvature: number;
+      readonly curvatureUncertainty: number;
+      /** Taylor coefficients c_k about `centre`, the point computed nearest to the minimum */
+      readonly expansion: { readonly centre: number; readonly coefficients: readonly number[] };
+    }
   | { readonly kind: 'atEdge'; readonly x: number }
   | { readonly kind: 'several'; readonly near: readonly number[] }
   | { readonly kind: 'none'; readonly reason: string };
@@ -26,7 +41,7 @@ const SHALLOWEST_DIP = 1e-7;
  * @param scan - computed points, any order
  * @param energyAt - computes one more point; undefined if it does not converge
  * @param spacing - distance of the new points, in units of x; about a twentieth of the well's width
- * @returns x with its uncertainty: the change from the 5-point to the 7-point expansion
+ * @returns x and curvature with their uncertainties: the change from the 5-point to the 7-point expansion
  */
 export function findCurveMinimum(
   scan: readonly CurvePoint[],
@@ -94,11 +109,15 @@ function refine(
     const shift = minimumOfExpansion(full, reach);
     const innerShift = minimumOfExpansion(inner, reach);
     if (shift !== undefined && innerShift !== undefined && Math.abs(shift) <= spacing) {
+      const curvature = curvatureOfExpansion(full, shift);
       return {
         kind: 'found',
         x: centre + shift,
         energy: evaluateExpansion(full, shift),
         uncertainty: Math.abs(shift - innerShift),
+        curvature,
+        curvatureUncertainty: Math.abs(curvature - curvatureOfExpansion(inner, innerShift)),
+        expansion: { centre, coefficients: full },
       };
     }
     // Not centred yet: go to the better place, or down the slope as far as the points reach.

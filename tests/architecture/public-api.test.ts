@@ -21,6 +21,7 @@ it('regression: the engine’s door offers these names, so that a change of it i
     'findLevelMinimum',
     'followNeighbours',
     'listBasisSets',
+    'measuredFor',
     'prepareStudy',
     'studyCautions',
   ]);

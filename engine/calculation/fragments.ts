@@ -1,0 +1,215 @@
+import { buildMolecule, nuclearRepulsion } from '../molecule/build-molecule';
+import { requireElement } from '../molecule/elements';
+import { planMotions } from '../molecule/scan-motion';
+import { type RunControl, UNATTENDED } from '../termination';
+import { computePoint } from './compute-point';
+import { findLevel, type Level } from './levels';
+import { type PreparedStudy, prepareFragment } from './prepare-study';
+import type { Dissociation, Fragment } from './result';
+import type { StudyAtom, StudyMolecule } from './study';
+
+/**
+ * Fragments whose Hartree–Fock energies together lie this far above the lowest, hartree, are not computed at a
+ * correlated level: correlation shifts neither an electron affinity nor a spin splitting of light atoms by as much.
+ */
+const WORTH_CORRELATING = 0.3;
+/** Fragments' charges differ from an even share by at most this. */
+const LARGEST_CHARGE_SHIFT = 1;
+
+/** A way to share charge and spin between the two parts. */
+interface Channel {
+  readonly charges: readonly [number, number];
+  readonly multiplicities: readonly [number, number];
+}
+
+type FragmentState = Omit<Fragment, 'atoms'> & { readonly isConverged: boolean };
+
+/**
+ * The lowest energy of the two parts that a scanned bond leaves, computed apart at the level of the curve.
+ *
+ * Tried are charges up to one off an even share and, of each part, its two lowest multiplicities as far as they
+ * couple to that of the molecule. Open shells take ROHF where the molecule takes RHF, one electron takes it at
+ * every level but UHF (nothing is left to correlate). Symmetry in space is not asked about.
+ *
+ * @param farEnd - energy and place of the last point of the curve; the parts are those of that geometry
+ */
+export function dissociationLimit(
+  prepared: PreparedStudy,
+  levelName: string,
+  farEnd: { readonly x: number; readonly energy: number } | undefined,
+  control: RunControl = UNATTENDED,
+): Dissociation | undefined {
+  const parts = partsOf(prepared);
+  if (!parts) return undefined;
+  if (prepared.study.active) return none('Active orbitals of the whole say nothing of those of its parts.');
+  const level = findLevel(levelName, 'levels');
+  if (prepared.study.active && level.kind === 'correlated') {
+    return none('The active orbitals chosen for the molecule are none of its fragments.');
+  }
+  const compute = fragmentComputer(
+    prepared,
+    parts,
+    farEnd?.x ?? prepared.coordinates.at(-1) ?? null,
+    control,
+  );
+  const isMeanField = level.kind === 'hartreeFock';
+  const screening = isMeanField ? level : findLevel('RHF', 'levels');
+  const screened = channelsOf(prepared, parts).flatMap((channel) => {
+    const pair = pairOf(channel, (part, charge, multiplicity) =>
+      compute(part, charge, multiplicity, screening),
+    );
+    return pair ? [{ channel, pair, energy: sumOf(pair) }] : [];
+  });
+  if (screened.length === 0) return none('The basis has no room for the electrons of the fragments.');
+  const lowest = Math.min(...screened.map(({ energy }) => energy));
+  const pairs = isMeanField
+    ? screened.map(({ pair }) => pair)
+    : screened
+        .filter(({ energy }) => energy <= lowest + WORTH_CORRELATING)
+        .flatMap(({ channel }) => {
+          const pair = pairOf(channel, (part, charge, multiplicity) =>
+            compute(part, charge, multiplicity, level),
+          );
+          return pair ? [pair] : [];
+        });
+  if (pairs.length === 0) return none(`The fragments cannot be computed at ${levelName}.`);
+  const best = pairs.reduce((a, b) => (sumOf(b) < sumOf(a) ? b : a));
+  if (best.some(({ isConverged }) => !isConverged)) return none('A fragment did not converge.');
+  const fragments = best.map(
+    ({ isConverged: _, ...fragment }, part): Fragment => ({ atoms: parts[part], ...fragment }),
+  );
+  const energy = sumOf(best);
+  return {
+    kind: 'found',
+    energy,
+    fragments: [fragments[0], fragments[1]],
+    ...(farEnd && { farEndAbove: farEnd.energy - energy }),
+  };
+}
+
+function none(reason: string): Dissociation {
+  return { kind: 'none', reason };
+}
+
+const sumOf = (pair: readonly FragmentState[]): number => pair[0].energy + pair[1].energy;
+
+type Parts = readonly [readonly number[], readonly number[]];
+
+/** The atoms of either side of the one scanned bond; undefined for other scans, and with ghosts, which have no side. */
+function partsOf({ study }: PreparedStudy): Parts | undefined {
+  const { molecule, scan } = study;
+  if (!scan || !('bonds' in scan.coordinate) || scan.coordinate.bonds.length !== 1) return undefined;
+  if (molecule.atoms.some(({ ghost }) => ghost)) return undefined;
+  const { moved } = planMotions(molecule, scan.coordinate).motions[0];
+  const indices = molecule.atoms.map((_, index) => index);
+  return [indices.filter((index) => !moved.has(index)), indices.filter((index) => moved.has(index))];
+}
+
+function channelsOf(prepared: PreparedStudy, parts: Parts): Channel[] {
+  const { charge, multiplicity } = prepared.study.molecule;
+  const { atoms } = prepared.moleculeAt(prepared.coordinates[0]);
+  const nuclearCharges = parts.map((part) =>
+    part.reduce((sum, index) => sum + atoms[index].nuclearCharge, 0),
+  );
+  const channels: Channel[] = [];
+  const from = Math.ceil(charge / 2 - LARGEST_CHARGE_SHIFT);
+  for (let first = from; first <= charge / 2 + LARGEST_CHARGE_SHIFT; first++) {
+    const charges = [first, charge - first] as const;
+    const [one, other] = charges.map((value, part) => multiplicitiesOf(nuclearCharges[part] - value));
+    for (const a of one) {
+      for (const b of other) {
+        const couples = multiplicity >= Math.abs(a - b) + 1 && multiplicity <= a + b - 1;
+        if (couples) channels.push({ charges, multiplicities: [a, b] });
+      }
+    }
+  }
+  return channels;
+}
+
+/** The two lowest 2S + 1 that so many electrons can have. */
+function multiplicitiesOf(electrons: number): readonly number[] {
+  if (electrons < 0) return [];
+  const lowest = (electrons % 2) + 1;
+  return electrons < 2 ? [lowest] : [lowest, lowest + 2];
+}
+
+function pairOf(
+  { charges, multiplicities }: Channel,
+  compute: (part: number, charge: number, multiplicity: number) => FragmentState | undefined,
+): readonly FragmentState[] | undefined {
+  const pair: FragmentState[] = [];
+  for (const part of [0, 1]) {
+    const fragment = compute(part, charges[part], multiplicities[part]);
+    if (!fragment) return undefined;
+    pair.push(fragment);
+  }
+  return pair;
+}
+
+/** Computes each state of a fragment once; two equal atoms are one fragment. */
+function fragmentComputer(prepared: PreparedStudy, parts: Parts, farEnd: number | null, control: RunControl) {
+  const atoms = prepared.geometryAt(farEnd);
+  const molecules = parts.map((part) => part.map((index) => atoms[index]));
+  const areEqual =
+    parts.every((part) => part.length === 1) && molecules[0][0].element === molecules[1][0].element;
+  const known = new Map<string, FragmentState | undefined>();
+  return (part: number, charge: number, multiplicity: number, level: Level): FragmentState | undefined => {
+    const own = areEqual ? 0 : part;
+    const key = `${own} ${charge} ${multiplicity} ${level.name}`;
+    if (!known.has(key)) {
+      known.set(key, computeFragment(prepared, molecules[own], charge, multiplicity, level, control));
+    }
+    return known.get(key);
+  };
+}
+
+/** @returns undefined where the basis has too few functions for the electrons */
+function computeFragment(
+  prepared: PreparedStudy,
+  atoms: readonly StudyAtom[],
+  charge: number,
+  multiplicity: number,
+  wanted: Level,
+  control: RunControl,
+): FragmentState | undefined {
+  const molecule = { unit: prepared.study.molecule.unit, atoms, charge, multiplicity };
+  const nuclei = bareNuclei(molecule);
+  if (nuclei !== undefined) {
+    return { charge, multiplicity, energy: nuclei, level: wanted.name, isConverged: true };
+  }
+  const prepareAt = (level: string) => prepareFragment(prepared, molecule, level);
+  const meanField = multiplicity === 1 ? 'RHF' : 'ROHF';
+  const asked = prepareAt(wanted.name === 'RHF' ? meanField : wanted.name);
+  const preparation =
+    asked.ok && wanted.kind !== 'hartreeFock' && correlatedElectrons(asked.prepared) < 2
+      ? prepareAt(meanField)
+      : asked;
+  if (!preparation.ok) return undefined;
+  const [{ name: level }] = preparation.prepared.levels;
+  const result = computePoint(preparation.prepared, null, { control }).result.levels[level];
+  if (!('energy' in result)) return undefined;
+  return {
+    charge,
+    // of determinants with equal spins up the lowest CI state may be one of higher spin
+    multiplicity:
+      result.kind === 'correlated' && result.spin !== 'mixed'
+        ? Math.round(Math.sqrt(1 + 4 * result.sSquared))
+        : multiplicity,
+    energy: result.energy,
+    level,
+    isConverged: result.converged,
+  };
+}
+
+function correlatedElectrons({ electrons, frozenOrbitals }: PreparedStudy): number {
+  return electrons - 2 * frozenOrbitals;
+}
+
+/** Energy of nuclei that no electron is left to; undefined where there are electrons. */
+function bareNuclei(molecule: StudyMolecule & { readonly charge: number }): number | undefined {
+  const atoms = molecule.atoms.map(({ element }) => requireElement(element).atomicNumber);
+  if (atoms.reduce((sum, nuclearCharge) => sum + nuclearCharge, 0) > molecule.charge) return undefined;
+  // one electron more is a molecule that can be built
+  const built = buildMolecule({ ...molecule, charge: molecule.charge - 1, multiplicity: 2 });
+  return built.ok ? nuclearRepulsion(built.molecule) : undefined;
+}
