@@ -48,9 +48,13 @@ export const DEGENERACY_TOLERANCE = 1e-6;
 /** A direction of unit length that keeps less than this beside the basis brings nothing but rounding errors. */
 const SMALLEST_NEW_DIRECTION = 1e-9;
 /** What a guard that lies above a missed root is taken to hold of it, at least. */
-const SMALLEST_WEIGHT = 0.01;
-/** Stagnated: so many iterations without a new lowest residual. */
+const SMALLEST_WEIGHT = 0.05;
+/** Guards improved in one iteration, lowest first: all at once would leave no room between two collapses. */
+const GUARDS_AT_ONCE = 4;
+/** Stagnated: so many iterations without a new lowest residual or sum of the wanted roots. */
 const PATIENCE = 30;
+/** Sums of values that differ by less than this fraction are equal. */
+const ROUNDING = 1e-12;
 
 /** How many vectors of length `dimension` are held: basis, products, and three for the correction. */
 export function davidsonVectorCount(maximumVectors: number): number {
@@ -85,6 +89,7 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
   if (subspace.size < roots) throw new RangeError('lowestEigenpairs: fewer independent guesses than roots');
 
   let bestResidual = Number.POSITIVE_INFINITY;
+  let lowestSum = Number.POSITIVE_INFINITY;
   let withoutProgress = 0;
   for (let iteration = 1; ; iteration++) {
     const finish = (termination: Termination) => ({
@@ -97,7 +102,6 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     const highest = subspace.values[wanted - 1];
     let unfinished: number[] = [];
     let worst = 0;
-    let worstUnfinished = 0;
     for (const k of subspace.pursuable(wanted)) {
       const norm = subspace.residual(k);
       if (k < wanted) worst = Math.max(worst, norm);
@@ -108,16 +112,24 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
       )
         continue;
       unfinished.push(k);
-      worstUnfinished = Math.max(worstUnfinished, norm);
     }
     options.control.report({ stage: options.stage, iteration, residual: worst });
 
-    withoutProgress = worstUnfinished < bestResidual ? 0 : withoutProgress + 1;
-    bestResidual = Math.min(bestResidual, worstUnfinished);
+    // a root that comes in from above brings a larger residual, but lowers the sum of the values
+    const sum = subspace.values.slice(0, roots).reduce((total, value) => total + value, 0);
+    const isProgress =
+      worst < bestResidual ||
+      worst <= options.residualTolerance ||
+      sum < lowestSum - ROUNDING * Math.abs(sum);
+    lowestSum = Math.min(lowestSum, sum);
+    withoutProgress = isProgress ? 0 : withoutProgress + 1;
+    bestResidual = Math.min(bestResidual, worst);
     if (unfinished.length === 0) return finish({ kind: 'converged' });
     if (iteration >= options.maximumIterations) return finish({ kind: 'iterationLimit', limit: iteration });
     if (options.control.isCancelled()) return finish({ kind: 'cancelled' });
 
+    const roomFor = unfinished.filter((k) => k < wanted).length + GUARDS_AT_ONCE;
+    unfinished = unfinished.slice(0, roomFor);
     if (subspace.size + unfinished.length > options.maximumVectors) {
       unfinished = subspace.collapse(wanted, Math.floor(options.maximumVectors / 3), unfinished);
     }
