@@ -2,6 +2,7 @@ import { availableParallelism } from 'node:os';
 import {
   describeBasisUsed,
   type LevelFindings,
+  measuredFor,
   type PointResult,
   type PreparedStudy,
   type SolutionCrossing,
@@ -165,6 +166,7 @@ function assemble(
   findings: Readonly<Record<string, LevelFindings>>,
   crossings: readonly SolutionCrossing[],
 ): StudyResults {
+  const measured = measuredFor(prepared.study);
   return {
     format: 'farwell/results',
     version: 1,
@@ -173,7 +175,8 @@ function assemble(
     basis: describeBasisUsed(prepared),
     points,
     findings,
-    cautions: studyCautions(prepared, points, crossings),
+    ...(measured && { measured }),
+    cautions: studyCautions(prepared, points, crossings, findings),
   };
 }
 

@@ -1,7 +1,8 @@
+import { curveCautions } from './curve-cautions';
 import type { FieldKind } from './follow-neighbours';
 import type { MeanFields } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
-import type { Caution, LevelResult, PointResult, ScaleOptimisation } from './result';
+import type { Caution, LevelFindings, LevelResult, PointResult, ScaleOptimisation } from './result';
 
 /** A triplet Hessian eigenvalue below this, hartree, counts as an instability. */
 const TRIPLET_INSTABILITY = -1e-5;
@@ -95,6 +96,7 @@ export function studyCautions(
   prepared: PreparedStudy,
   points: readonly PointResult[],
   crossings: readonly SolutionCrossing[] = [],
+  findings: Readonly<Record<string, LevelFindings>> = {},
 ): readonly Caution[] {
   const cautions: Caution[] = crossings.map((crossing) => crossingCaution(prepared, crossing));
   if (prepared.levels.some((level) => level.kind === 'singles')) {
@@ -114,14 +116,7 @@ export function studyCautions(
         'measured ones.',
     });
   }
-  if (prepared.study.scan && 'bonds' in prepared.study.scan.coordinate) {
-    cautions.push({
-      code: 'depth.farEnd',
-      message:
-        'Well depths are taken against the last computed distance, not against separate fragments. Where safety ' +
-        'depends on a bond strength, use measured data.',
-    });
-  }
+  cautions.push(...curveCautions(prepared, points, findings));
   const unconverged = points.filter((point) =>
     Object.values(point.levels).some((level) => !level.converged),
   ).length;
