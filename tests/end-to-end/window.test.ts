@@ -44,8 +44,8 @@ afterAll(async () => {
 const complaints: string[] = [];
 
 /** A window of its own, which begins as for a new user. What any page complains of fails the test that saw it. */
-async function openWindow(): Promise<Page> {
-  const context = await browser.newContext({ viewport: { width: 1280, height: 800 }, colorScheme: 'light' });
+async function openWindow(colorScheme: 'light' | 'dark' = 'light'): Promise<Page> {
+  const context = await browser.newContext({ viewport: { width: 1280, height: 800 }, colorScheme });
   // the dialog of the system has no place in a test; without it the window downloads
   await context.addInitScript(() => Reflect.deleteProperty(window, 'showSaveFilePicker'));
   await context.addInitScript(() =>
@@ -294,7 +294,7 @@ describe('the window', () => {
   it.each(['light', 'dark'] as const)(
     'breaks no accessibility rule that axe can check, %s',
     async (colorScheme) => {
-      const page = await openWindow({ colorScheme });
+      const page = await openWindow(colorScheme);
       const axe = await readFile(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
       await page.evaluate(axe);
       const violations = () =>
