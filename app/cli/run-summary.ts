@@ -1,8 +1,12 @@
 import type { LevelFindings, LevelResult, StudyResults } from '#engine';
 import { coordinateText } from '../calculation/coordinate-text';
+import { comparedConstants } from '../study/compared-constants';
+import { fragmentsText } from '../study/fragments-text';
 import { EXIT, type ExitCode } from './exit-codes';
 import { counted } from './wording';
 
+/** Constants that the summary shows. */
+const SUMMARISED: readonly string[] = ['ωₑ', 'D₀'];
 /** More lines of a kind than this would hide everything else; the results file has them all. */
 const MOST_LINES = 12;
 
@@ -60,25 +64,28 @@ function reasonText(termination: LevelResult['termination']): string {
 }
 
 /** What can be read off each level's curve. */
-function findingsLines({ study, findings }: StudyResults): readonly string[] {
+function findingsLines(results: StudyResults): readonly string[] {
+  const { study, findings } = results;
   if (!study.scan) return [];
   return study.levels.flatMap((level) => {
     const of = findings[level];
-    const texts = of ? [minimumText(of, study), onsetText(of, study)] : [];
+    const texts = of ? [minimumText(of, study), vibrationText(level, results), onsetText(of, study)] : [];
     return texts.flatMap((text) => (text === undefined ? [] : [`${level}: ${text}`]));
   });
 }
 
 function minimumText(
-  { minimum, wellDepth }: LevelFindings,
+  { minimum, wellDepth, dissociation }: LevelFindings,
   study: StudyResults['study'],
 ): string | undefined {
   switch (minimum.kind) {
     case 'found': {
       const distance = coordinateText(study, Number(minimum.equilibriumDistance.toFixed(5)));
-      const depth = wellDepth
-        ? `, ${wellDepth.value.toFixed(6)} hartree below the curve at ${coordinateText(study, wellDepth.farEnd)}`
-        : '';
+      const below =
+        wellDepth?.against === 'fragments' && dissociation?.kind === 'found'
+          ? fragmentsText(study.molecule, dissociation)
+          : `the curve at ${wellDepth && coordinateText(study, wellDepth.farEnd)}`;
+      const depth = wellDepth ? `, ${wellDepth.value.toFixed(6)} hartree below ${below}` : '';
       return `minimum of ${minimum.energy.toFixed(6)} hartree at ${distance}${depth}`;
     }
     case 'atEdge':
@@ -88,6 +95,19 @@ function minimumText(
     case 'none':
       return undefined;
   }
+}
+
+/** Of diatomic molecules, in a line; the results file and the report have all constants. */
+function vibrationText(level: string, results: StudyResults): string | undefined {
+  const vibration = results.findings[level]?.vibration;
+  if (vibration?.kind !== 'found') return undefined;
+  const constants = comparedConstants(results).flatMap(({ symbol, unit, decimals, byLevel, measured }) => {
+    const value = byLevel.get(level);
+    if (value === undefined || !SUMMARISED.includes(symbol)) return [];
+    const beside = measured ? ` (measured ${Number(measured.value.toFixed(decimals))})` : '';
+    return [`${symbol} = ${value.toFixed(decimals)} ${unit}${beside}`];
+  });
+  return [...constants, counted(vibration.boundLevels, 'bound vibrational level')].join(', ');
 }
 
 function onsetText({ instabilityOnset }: LevelFindings, study: StudyResults['study']): string | undefined {

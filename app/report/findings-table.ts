@@ -1,4 +1,5 @@
-import type { LevelFindings, StudyResults } from '#engine';
+import type { LevelFindings, StudyMolecule, StudyResults } from '#engine';
+import { fragmentsText } from '../study/fragments-text';
 import { coordinateText } from './scanned-coordinate';
 
 /** What was read off the curves, a row a level, as text to be printed. */
@@ -8,7 +9,7 @@ export interface FindingsRow {
   readonly minimum: string;
   /** hartree */
   readonly energyAtMinimum: string;
-  /** hartree, against the far end of the curve */
+  /** hartree, with what it is against: the far end of the curve or separate fragments */
   readonly depth: string;
   /** where RHF becomes unstable towards different orbitals for different spins */
   readonly onset: string;
@@ -18,7 +19,7 @@ export const FINDINGS_HEADINGS = [
   'Level',
   'Minimum',
   'Energy there (hartree)',
-  'Depth against the far end (hartree)',
+  'Well depth (hartree)',
   'Onset of instability',
 ] as const;
 
@@ -39,7 +40,7 @@ export function findingsRows(results: StudyResults, file: string, unit: string):
         minimum: minimumText(minimum, unit),
         energyAtMinimum: minimum.kind === 'found' ? minimum.energy.toFixed(ENERGY_DECIMALS) : '',
         depth: wellDepth
-          ? `${wellDepth.value.toFixed(ENERGY_DECIMALS)} (at ${coordinateText(wellDepth.farEnd, unit)})`
+          ? `${wellDepth.value.toFixed(ENERGY_DECIMALS)} (${depthLimitText(results.study.molecule, findings, unit)})`
           : '',
         onset:
           instabilityOnset?.kind === 'found'
@@ -48,6 +49,17 @@ export function findingsRows(results: StudyResults, file: string, unit: string):
       },
     ];
   });
+}
+
+function depthLimitText(
+  molecule: StudyMolecule,
+  { wellDepth, dissociation }: LevelFindings,
+  unit: string,
+): string {
+  if (wellDepth?.against === 'fragments' && dissociation?.kind === 'found') {
+    return `against ${fragmentsText(molecule, dissociation)}`;
+  }
+  return wellDepth ? `at ${coordinateText(wellDepth.farEnd, unit)}` : '';
 }
 
 /** As many decimals as the uncertainty leaves. */

@@ -8,6 +8,7 @@ import {
 } from './report-content';
 import { NOT_COMPUTED, type ResultTable } from './result-table';
 import { escapeMarkup, withMinus } from './text-escapes';
+import type { TextTable } from './text-table';
 
 /** For screen and paper; nothing is loaded from elsewhere. */
 const STYLE = `
@@ -35,7 +36,7 @@ td { text-align: right; padding: .05rem .6rem; white-space: nowrap; }
  * @param figure - the figure as SVG; absent for a single geometry
  */
 export function htmlReport(content: ReportContent, figure: string | undefined): string {
-  const { files, table, findings, withoutFigure } = content;
+  const { files, table, findings, spectroscopy, withoutFigure } = content;
   const heading = escapeMarkup(reportHeading(content));
   const sections = [
     `<h1>${heading}</h1>`,
@@ -48,6 +49,7 @@ export function htmlReport(content: ReportContent, figure: string | undefined): 
     ...(findings.length > 0
       ? ['<h2>Findings</h2>', findingsTable(content), `<p class="note">${escapeMarkup(SAFETY_NOTE)}</p>`]
       : []),
+    ...spectroscopy.flatMap(textTable),
     ...listSection('Cautions', files, ({ cautions }) => cautions),
     ...listSection('Method', files, ({ method }) => method),
   ];
@@ -105,6 +107,19 @@ function findingsTable({ files, findings }: ReportContent): string {
     return `<tr>${cells.map((cell) => `<td>${escapeMarkup(cell)}</td>`).join('')}</tr>`;
   });
   return `<table class="words"><thead><tr>${heads.join('')}</tr></thead><tbody>${body.join('\n')}</tbody></table>`;
+}
+
+function textTable({ heading, columns, rows, notes }: TextTable): string[] {
+  const heads = columns.map((column) => `<th scope="col">${escapeMarkup(column)}</th>`);
+  const body = rows.map(([head = '', ...cells]) => {
+    const values = cells.map((cell) => `<td>${escapeMarkup(cell)}</td>`);
+    return `<tr><th scope="row">${escapeMarkup(head)}</th>${values.join('')}</tr>`;
+  });
+  return [
+    `<h2>${escapeMarkup(heading)}</h2>`,
+    `<div class="wide"><table><thead><tr>${heads.join('')}</tr></thead><tbody>${body.join('\n')}</tbody></table></div>`,
+    ...notes.map((note) => `<p class="note">${escapeMarkup(note)}</p>`),
+  ];
 }
 
 function listSection(

@@ -1,14 +1,18 @@
 import { latexText } from './latex-text';
 import type { ReportContent } from './report-content';
 import { NOT_COMPUTED, NOT_CONVERGED, type ResultTable, type TableBlock } from './result-table';
+import type { TextTable } from './text-table';
 
 /** Wider tables are set in small type. */
 const COLUMNS_AT_FULL_SIZE = 6;
 /** Longer tables are set with longtable, which breaks across pages. */
 const ROWS_ON_A_PAGE = 42;
 
-/** The energies as a LaTeX table (packages booktabs and, beyond a page, longtable), captioned with the study sentence. */
-export function latexTable({ files, table }: ReportContent): string {
+/**
+ * The energies as a LaTeX table (packages booktabs and, beyond a page, longtable), captioned with the study sentence;
+ * below it the constants and levels.
+ */
+export function latexTable({ files, table, spectroscopy }: ReportContent): string {
   const isLong = table.rows.length > ROWS_ON_A_PAGE;
   const columns = `r${table.blocks.flatMap((block) => block.columns.map(() => 'r')).join('')}`;
   const caption = [
@@ -52,8 +56,29 @@ export function latexTable({ files, table }: ReportContent): string {
         '\\end{tabular}',
         '\\end{table}',
       ];
-  return `${lines.join('\n')}\n`;
+  return `${[...lines, ...spectroscopy.flatMap(textTable)].join('\n')}\n`;
 }
+
+function textTable({ heading, columns, rows, notes }: TextTable): string[] {
+  const line = (cells: readonly string[]) => `${cells.map(latexText).join(' & ')} \\\\`;
+  return [
+    '',
+    '\\begin{table}',
+    '\\centering',
+    `\\caption{${latexText([`${heading}.`, ...notes.map(ended)].join(' '))}}`,
+    '\\footnotesize',
+    `\\begin{tabular}{l${'r'.repeat(columns.length - 1)}}`,
+    '\\toprule',
+    line(columns),
+    '\\midrule',
+    ...rows.map(line),
+    '\\bottomrule',
+    '\\end{tabular}',
+    '\\end{table}',
+  ];
+}
+
+const ended = (sentence: string) => (/[.!?]$/.test(sentence) ? sentence : `${sentence}.`);
 
 /** A line for the quantities that span their columns, one for the columns; of several files, one more above. */
 function headRows({ coordinateHeading, blocks }: ResultTable): string[] {

@@ -29,6 +29,8 @@ const REPLACEMENTS: Readonly<Record<string, string>> = {
   '→': '$\\rightarrow$',
   '⟨': '$\\langle$',
   '⟩': '$\\rangle$',
+  '½': '$\\frac{1}{2}$',
+  '\u0304': '\\textasciimacron{}',
   '\u2009': '\\,',
   '\u00a0': '~',
   '\u202f': '\\,',

@@ -8,10 +8,11 @@ import {
 } from './report-content';
 import { NOT_COMPUTED, type ResultTable } from './result-table';
 import { withMinus } from './text-escapes';
+import type { TextTable } from './text-table';
 
 /** The report as Markdown: study sentence as heading, energies, notes, findings, cautions, method. */
 export function markdownReport(content: ReportContent): string {
-  const { files, table, findings, withoutFigure } = content;
+  const { files, table, findings, spectroscopy, withoutFigure } = content;
   const sections = [
     `# ${escapeMarkdown(reportHeading(content))}`,
     ...files.flatMap(introduction),
@@ -20,6 +21,7 @@ export function markdownReport(content: ReportContent): string {
     energyTable(table),
     ...[...table.notes, DIGITS_NOTE].map(escapeMarkdown),
     ...(findings.length > 0 ? ['## Findings', findingsTable(content), escapeMarkdown(SAFETY_NOTE)] : []),
+    ...spectroscopy.flatMap(textTable),
     ...bulletSection('## Cautions', files, ({ cautions }) => cautions),
     ...bulletSection('## Method', files, ({ method }) => method),
   ];
@@ -59,6 +61,10 @@ function findingsTable({ files, findings }: ReportContent): string {
     onset,
   ]);
   return tableText([...(several ? ['File'] : []), ...FINDINGS_HEADINGS], body, 'left');
+}
+
+function textTable({ heading, columns, rows, notes }: TextTable): string[] {
+  return [`## ${escapeMarkdown(heading)}`, tableText(columns, rows, 'right'), ...notes.map(escapeMarkdown)];
 }
 
 function tableText(

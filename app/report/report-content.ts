@@ -1,14 +1,18 @@
-import type { StudyResults } from '#engine';
+import type { LevelFindings, StudyResults } from '#engine';
 import { cautionSummary } from './caution-summary';
 import { type FindingsRow, findingsRows } from './findings-table';
 import { type ResultTable, resultTable } from './result-table';
 import { coordinateText, sharedCoordinate } from './scanned-coordinate';
+import { spectroscopyTables } from './spectroscopy-tables';
+import type { TextTable } from './text-table';
 
 /** What a report says, before it is set as Markdown or LaTeX. */
 export interface ReportContent {
   readonly files: readonly ReportedFile[];
   readonly table: ResultTable;
   readonly findings: readonly FindingsRow[];
+  /** constants and levels of every file */
+  readonly spectroscopy: readonly TextTable[];
   /** why there is no figure */
   readonly withoutFigure?: string;
 }
@@ -48,6 +52,7 @@ export function reportContent(
     files: results.map((file, index) => reportedFile(file, nameOf(index), sentences[index] ?? '')),
     table: resultTable(results, names),
     findings: results.flatMap((file, index) => findingsRows(file, nameOf(index), unitOf(file))),
+    spectroscopy: results.flatMap((file, index) => spectroscopyTables(file, nameOf(index))),
     ...(withoutFigure === undefined ? {} : { withoutFigure }),
   };
 }
@@ -72,6 +77,7 @@ function reportedFile(results: StudyResults, name: string, sentence: string): Re
       `Basis ${basis.name}, ${basis.functions} functions${basis.citations.length > 0 ? `: ${basis.citations.join('; ')}` : ''}.`,
       ...basis.notes,
       `Energies converged to ${study.convergence.energy} hartree; ${correlatedText(study)}.`,
+      ...findingsMethod(results),
       `${program.name} ${program.version}.`,
     ],
   };
@@ -80,6 +86,32 @@ function reportedFile(results: StudyResults, name: string, sentence: string): Re
 function correlatedText({ active, frozenCore }: StudyResults['study']): string {
   if (active) return `CI of ${active.electrons} electrons in ${active.orbitals} orbitals`;
   return frozenCore ? 'core electrons not correlated' : 'all electrons correlated';
+}
+
+/** How what is in the tables of findings was found, as far as there is any. */
+function findingsMethod({ findings }: StudyResults): readonly string[] {
+  const all = Object.values(findings);
+  const isAny = (test: (one: LevelFindings) => unknown) => all.some(test);
+  return [
+    ...(isAny(({ constants }) => constants)
+      ? ['Minima from polynomials through further computed, closely spaced points around them.']
+      : []),
+    ...(isAny(({ constants }) => constants?.diatomic)
+      ? [
+          'Constants from derivatives at the minimum (J. L. Dunham, Phys. Rev. 41, 721 (1932)), with masses of neutral atoms.',
+        ]
+      : []),
+    ...(isAny(({ wellDepth }) => wellDepth?.against === 'fragments')
+      ? [
+          'Well depths against separate fragments at the same level, of all ways to share charge and spin the lowest; open shells by ROHF where the molecule has RHF; no counterpoise correction.',
+        ]
+      : []),
+    ...(isAny(({ vibration }) => vibration?.kind === 'found')
+      ? [
+          'Vibrational levels from the radial Schrödinger equation on a rational interpolant of the computed points, continued beyond them to the limit.',
+        ]
+      : []),
+  ];
 }
 
 /** A file's own unit: findings are not converted. */

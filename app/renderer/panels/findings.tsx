@@ -1,4 +1,5 @@
 import type { LengthUnit, LevelFindings, Study } from '#engine';
+import { fragmentsText } from '../../study/fragments-text';
 import { groupCautions, neighbourRuns } from '../charts/cautions';
 import { scansLength } from '../charts/curves';
 import { LevelSwatch } from '../charts/level-swatch';
@@ -6,6 +7,7 @@ import { formatFixed, formatPlain } from '../numbers';
 import { useWindowState } from '../state/window-context';
 import type { Run } from '../state/window-state';
 import { convertLength, ENERGY_UNITS, type EnergyUnit, LENGTH_UNITS, toEnergyUnit } from '../units';
+import { SpectroscopicFacts } from './spectroscopic-facts';
 
 /** What can be read off each level's curve, and where it should not be trusted. */
 export function Findings() {
@@ -27,6 +29,7 @@ export function Findings() {
                 <LevelSwatch level={level} /> {level}
               </h3>
               <FindingFacts {...{ findings, study, lengthUnit, energyUnit: view.energyUnit }} />
+              <SpectroscopicFacts level={level} results={results} />
             </section>
           );
         })
@@ -45,7 +48,7 @@ interface FindingFactsProps {
 
 function FindingFacts({ findings, study, lengthUnit, energyUnit }: FindingFactsProps) {
   const { symbol, decimals } = ENERGY_UNITS[energyUnit];
-  const { minimum, wellDepth, instabilityOnset } = findings;
+  const { minimum, wellDepth, dissociation, instabilityOnset } = findings;
   const where = positionText(study, lengthUnit);
   return (
     <>
@@ -69,7 +72,12 @@ function FindingFacts({ findings, study, lengthUnit, energyUnit }: FindingFactsP
         )}
         {wellDepth !== undefined && (
           <div>
-            <dt>Well depth, against {where(wellDepth.farEnd, 5)}</dt>
+            <dt>
+              Well depth, against{' '}
+              {wellDepth.against === 'fragments' && dissociation?.kind === 'found'
+                ? fragmentsText(study.molecule, dissociation)
+                : where(wellDepth.farEnd, 5)}
+            </dt>
             <dd>
               {formatFixed(toEnergyUnit(wellDepth.value, energyUnit), decimals)} {symbol}
             </dd>
