@@ -19,7 +19,12 @@ export type WorkerRequest =
       readonly own?: PointCarry | undefined;
       readonly neighbours: readonly PointCarry[];
     }
-  | { readonly kind: 'minimum'; readonly level: string; readonly points: readonly PointResult[] };
+  | {
+      readonly kind: 'minimum';
+      readonly level: string;
+      readonly points: readonly PointResult[];
+      readonly left: readonly (PointCarry | undefined)[];
+    };
 
 /** A computed point with what its neighbour starts from, if it gave something to start from. */
 export interface FinishedPoint {

@@ -73,7 +73,7 @@ export async function runStudy(
       onRound: (total) => trackProgress({ stage: 'neighbours', total, done: 0, workers }, options.onProgress),
     });
     const results = points.map(({ result }) => result);
-    const findings = await findMinima(prepared, results, pool, workers, options.onProgress);
+    const findings = await findMinima(prepared, points, pool, workers, options.onProgress);
     return { kind: 'done', results: assemble(prepared, results, findings, crossings) };
   } catch (error) {
     if (error instanceof PoolClosed) return { kind: 'cancelled' };
@@ -133,17 +133,19 @@ function pointsTask(
 
 async function findMinima(
   prepared: PreparedStudy,
-  points: readonly PointResult[],
+  finished: readonly FinishedPoint[],
   pool: WorkerPool,
   workers: number,
   onProgress: RunOptions['onProgress'],
 ): Promise<Readonly<Record<string, LevelFindings>>> {
   const { levels } = prepared.study;
+  const points = finished.map(({ result }) => result);
+  const left = finished.map(({ carry }) => carry);
   const found = new Map<string, LevelFindings>();
   const progress = trackProgress({ stage: 'minima', total: levels.length, done: 0, workers }, onProgress);
   const tasks = levels.map(
     (level): Task => ({
-      request: () => ({ kind: 'minimum', level, points }),
+      request: () => ({ kind: 'minimum', level, points, left }),
       accept: (finding) => {
         if (finding.kind !== 'minimum') return;
         found.set(level, finding.findings);

@@ -31,8 +31,8 @@ function compute(prepared: engine.PreparedStudy, request: WorkerRequest, port: S
     return (last - before) / 1000;
   };
   if (request.kind === 'minimum') {
-    const { level, points } = request;
-    const findings = engine.findLevelMinimum(prepared, level, points);
+    const { level, points, left } = request;
+    const findings = engine.findLevelMinimum(prepared, level, points, left);
     port.post({ kind: 'minimum', level, findings, seconds: secondsSinceLast() });
     return;
   }

@@ -6,6 +6,7 @@ import { explainStudy } from './explain-study';
 import { findInstabilityOnset } from './find-onset';
 import { dissociationLimit } from './fragments';
 import { type LevelCurve, levelCurve } from './level-curve';
+import type { PointCarry } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
 import type { Dissociation, LevelFindings, PointResult, WellDepth } from './result';
 import { vibrationOf } from './vibration';
@@ -22,14 +23,16 @@ const SPACING_BOHR = 0.04;
  *
  * @param level - name of one of the study's levels
  * @param points - the study's computed points
+ * @param left - what each of them left for its neighbours
  */
 export function findLevelMinimum(
   prepared: PreparedStudy,
   level: string,
   points: readonly PointResult[],
+  left: readonly (PointCarry | undefined)[] = [],
   control?: RunControl,
 ): LevelFindings {
-  const findings = curveFindings(prepared, level, points, control);
+  const findings = curveFindings(prepared, level, points, left, control);
   if (level !== 'RHF' || !prepared.study.scan) return findings;
   return { ...findings, instabilityOnset: findInstabilityOnset(prepared, points, control) };
 }
@@ -38,6 +41,7 @@ function curveFindings(
   prepared: PreparedStudy,
   level: string,
   points: readonly PointResult[],
+  left: readonly (PointCarry | undefined)[],
   control: RunControl | undefined,
 ): LevelFindings {
   const { scan, molecule } = prepared.study;
@@ -46,7 +50,7 @@ function curveFindings(
   if (prepared.levels.find((candidate) => candidate.name === level)?.kind === 'singles') {
     return none('CIS gives excited states only; its ground state is RHF.');
   }
-  const curve = levelCurve(prepared, level, points, control);
+  const curve = levelCurve(prepared, level, points, left, control);
   const farEnd = curve.points().at(-1);
   const dissociation = dissociationLimit(prepared, level, farEnd, control);
   const limit = dissociation && { dissociation };

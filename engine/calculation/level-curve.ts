@@ -28,11 +28,16 @@ export interface LevelCurve {
   energyAt(x: number): number | undefined;
 }
 
-/** @param points - the study's computed points */
+/**
+ * @param points - the study's computed points
+ * @param left - what each of them left: new points start from their nearest neighbour's solution, so that they stay on
+ * its curve
+ */
 export function levelCurve(
   prepared: PreparedStudy,
   level: string,
   points: readonly PointResult[],
+  left: readonly (PointCarry | undefined)[],
   control?: RunControl,
 ): LevelCurve {
   const scan = points.map(({ coordinate, levels }) => ({
@@ -40,7 +45,7 @@ export function levelCurve(
     energy: groundEnergy(levels[level]),
   }));
   const known: PlaceOnCurve[] = [...scan];
-  const carries: { readonly x: number; readonly carry: PointCarry }[] = [];
+  const carries = left.flatMap((carry, index) => (carry ? [{ x: scan[index].x, carry }] : []));
   return {
     level,
     bohrPerUnit: bohrPerUnit(prepared.study.molecule.unit),
