@@ -33,7 +33,7 @@ function grown(array: Float64Array, length: number): Float64Array {
 }
 
 /**
- * All integrals (ab|cd) of a quartet of contracted shells, left in `workspace.block`.
+ * All integrals (ab|cd) of two pairs of blocks of contracted shells, left in `workspace.block`.
  *
  * For each primitive product of the bra, Hermite Coulomb integrals with all primitive products of the ket are
  * made and contracted factor by factor; then the bra is contracted the same way; only then, once a quartet, are
@@ -52,7 +52,8 @@ export function coulombQuartet(
 ): void {
   const layout = quartetLayout(bra.layout, ket.layout);
   workspace.reserve(bra, ket, layout);
-  if (layout.degree === 0) {
+  // a single function product is one of two s shells
+  if (bra.productCount === 1 && ket.productCount === 1) {
     workspace.block[0] =
       sphericalQuartet(bra, ket, workspace, primitiveThreshold) * bra.values[0] * ket.values[0];
     return;

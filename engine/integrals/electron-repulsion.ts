@@ -5,8 +5,8 @@ import { type ShellPair, shellPairs } from './shell-pair';
 
 export interface ElectronRepulsionOptions {
   /**
-   * hartree; a quartet of shells is left at zero if the Schwarz inequality bounds its integrals by less. The
-   * default keeps energies right to 1e-9 hartree with margin.
+   * hartree; the integrals of two pairs of blocks of shells are left at zero if the Schwarz inequality bounds all of
+   * them by less. The default keeps energies right to 1e-9 hartree with margin.
    */
   readonly schwarzThreshold?: number;
 }
@@ -63,12 +63,14 @@ function schwarzBound(pair: ShellPair, workspace: QuartetWorkspace): number {
 }
 
 /** packed index of each function product of the pair */
-function productPlaces({ first, second, productCount }: ShellPair): Int32Array {
+function productPlaces({ members, productCount }: ShellPair): Int32Array {
   const places = new Int32Array(productCount);
   let at = 0;
-  for (let i = 0; i < first.functionCount; i++) {
-    for (let j = 0; j < second.functionCount; j++) {
-      places[at++] = packedPair(first.firstFunction + i, second.firstFunction + j);
+  for (const { first, second } of members) {
+    for (let i = 0; i < first.functionCount; i++) {
+      for (let j = 0; j < second.functionCount; j++) {
+        places[at++] = packedPair(first.firstFunction + i, second.firstFunction + j);
+      }
     }
   }
   return places;

@@ -37,7 +37,12 @@ export function nuclearAttractionMatrix(basis: PlacedBasis, nuclei: readonly Poi
         block[product] += pair.values[entry] * columns[pair.columns[entry]];
       }
     }
-    placeSymmetric(matrix, n, block, pair.first, pair.second);
+    let start = 0;
+    for (const { first, second } of pair.members) {
+      const end = start + first.functionCount * second.functionCount;
+      placeSymmetric(matrix, n, block.subarray(start, end), first, second);
+      start = end;
+    }
   }
   return matrix;
 }

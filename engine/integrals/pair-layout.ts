@@ -1,16 +1,24 @@
 import { type CartesianPowers, cartesianComponents, cartesianCount } from './cartesian-components';
 import { type ProductExpansion, productExpansion } from './product-expansion';
 
+/** One pair of shells of a pair of blocks. */
+export interface LayoutMember {
+  readonly expansion: ProductExpansion;
+  /** for each factor of the full expansion: the factor of the layout that takes its terms, −1 for none */
+  readonly targetFactor: readonly number[];
+}
+
 /**
- * Which Hermite terms a kind of shell pair keeps, and where they stand. A pair's integrals are a sum over *factors*
- * (groups of Hermite terms of one degree that share their dependence on the exponents); each factor owns a column
- * for every Hermite index of its degree.
+ * Which Hermite terms a kind of pair keeps, and where they stand. A pair's integrals are a sum over *factors*
+ * (groups of Hermite terms of one degree that share their dependence on the exponents and belong to one pair of
+ * shells); each factor owns a column for every Hermite index of its degree.
  */
 export interface PairLayout {
   /** small consecutive number, for tables over pairs of layouts */
   readonly id: number;
-  /** highest degree, the sum of both angular momenta */
+  /** highest degree, the largest sum of two angular momenta */
   readonly degree: number;
+  /** rising, so that factors which multiply the same Hermite integrals stand side by side */
   readonly factorDegrees: readonly number[];
   readonly columnStart: readonly number[];
   readonly columnCount: number;
@@ -18,30 +26,28 @@ export interface PairLayout {
   readonly columnFactor: readonly number[];
   /** Hermite index (t, u, v) of each column */
   readonly columnPowers: readonly CartesianPowers[];
-  readonly expansion: ProductExpansion;
-  /** for each factor of the full expansion: the factor of this layout that takes its terms, −1 for none */
-  readonly targetFactor: readonly number[];
-  /** the pair has one primitive, so that all factors of one degree were merged into one of value 1 */
+  readonly members: readonly LayoutMember[];
+  /** the pair has one primitive, so that all factors of one degree were merged into one */
   readonly isMerged: boolean;
 }
 
 const layouts = new Map<string, PairLayout>();
 
 /**
- * @param isMerged - for pairs with a single primitive product: exponents go into the columns, and one factor a
- * degree remains
- * @param isConcentric - both shells on one centre: only terms without A − B remain
+ * @param momenta - angular momenta of each pair of shells
+ * @param isMerged - for pairs with a single primitive product: exponents and coefficients go into the columns, and
+ * one factor a degree remains for all pairs of shells
+ * @param isConcentric - both blocks on one centre: only terms without A − B remain
  */
 export function pairLayout(
-  firstL: number,
-  secondL: number,
+  momenta: readonly (readonly [number, number])[],
   isMerged: boolean,
   isConcentric: boolean,
 ): PairLayout {
-  const key = `${firstL} ${secondL} ${isMerged} ${isConcentric}`;
+  const key = `${momenta.join(' ')} ${isMerged} ${isConcentric}`;
   let layout = layouts.get(key);
   if (!layout) {
-    layout = buildLayout(layouts.size, firstL, secondL, isMerged, isConcentric);
+    layout = buildLayout(layouts.size, momenta, isMerged, isConcentric);
     layouts.set(key, layout);
   }
   return layout;
@@ -49,45 +55,54 @@ export function pairLayout(
 
 function buildLayout(
   id: number,
-  firstL: number,
-  secondL: number,
+  momenta: readonly (readonly [number, number])[],
   isMerged: boolean,
   isConcentric: boolean,
 ): PairLayout {
-  const expansion = productExpansion(firstL, secondL);
-  const factorDegrees: number[] = [];
-  const targetFactor = expansion.factors.map(({ degree, firstPower, secondPower }) => {
-    if (isConcentric && firstPower + secondPower > 0) return -1;
-    if (!isMerged || factorDegrees.at(-1) !== degree) factorDegrees.push(degree);
-    return factorDegrees.length - 1;
+  const degree = Math.max(...momenta.map(([first, second]) => first + second));
+  const members = momenta.map(([first, second]) => {
+    const expansion = productExpansion(first, second);
+    return { expansion, targetFactor: expansion.factors.map(() => -1) };
   });
+  const factorDegrees: number[] = [];
+  for (let wanted = 0; wanted <= degree; wanted++) {
+    for (const { expansion, targetFactor } of members) {
+      expansion.factors.forEach((factor, source) => {
+        if (factor.degree !== wanted) return;
+        if (isConcentric && factor.firstPower + factor.secondPower > 0) return;
+        if (!isMerged || factorDegrees.at(-1) !== wanted) factorDegrees.push(wanted);
+        targetFactor[source] = factorDegrees.length - 1;
+      });
+    }
+  }
   const columnStart: number[] = [];
   const columnFactor: number[] = [];
   const columnPowers: CartesianPowers[] = [];
-  factorDegrees.forEach((degree, factor) => {
+  factorDegrees.forEach((factorDegree, factor) => {
     columnStart.push(columnPowers.length);
-    for (const powers of cartesianComponents(degree)) {
+    for (const powers of cartesianComponents(factorDegree)) {
       columnFactor.push(factor);
       columnPowers.push(powers);
     }
   });
   return {
     id,
-    degree: firstL + secondL,
+    degree,
     factorDegrees,
     columnStart,
     columnCount: columnPowers.length,
     columnFactor,
     columnPowers,
-    expansion,
-    targetFactor,
+    members,
     isMerged,
   };
 }
 
-/** Column of this layout for a column of the full expansion, −1 for none; one entry a full column. */
-export function columnMap(layout: PairLayout): Int32Array {
-  const { expansion, targetFactor, columnStart } = layout;
+/** Column of the layout for a column of a member's full expansion, −1 for none; one entry a full column. */
+export function columnMap(
+  { columnStart }: PairLayout,
+  { expansion, targetFactor }: LayoutMember,
+): Int32Array {
   const map = new Int32Array(expansion.columnCount).fill(-1);
   expansion.factors.forEach(({ degree }, factor) => {
     const target = targetFactor[factor];

@@ -66,6 +66,16 @@ export function placedBasis(
   return { shells, functionCount: firstFunction, harmonics };
 }
 
+/** The same shells all on one atom, so that those with the same exponents are computed together. */
+export function onOneAtom(basis: PlacedBasis): PlacedBasis {
+  return { ...basis, shells: basis.shells.map((shell) => ({ ...shell, atom: 0 })) };
+}
+
+/** The same shells each on an atom of its own, so that no two are computed together. */
+export function onSeparateAtoms(basis: PlacedBasis): PlacedBasis {
+  return { ...basis, shells: basis.shells.map((shell, atom) => ({ ...shell, atom })) };
+}
+
 /** The functions of a Cartesian basis written out, each normalised by its own numerical self-overlap. */
 export function cartesianFunctions(basis: PlacedBasis): CartesianFunction[] {
   return basis.shells.flatMap((shell) => {

@@ -1,11 +1,15 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import type { PlacedBasis } from '../../../engine/basis/contracted-gaussian';
+import { findBasisSet, listBasisSets } from '../../../engine/basis/library-index';
+import { placeBasis } from '../../../engine/basis/place-basis';
 import { electronRepulsionTensor } from '../../../engine/integrals/electron-repulsion';
 import { packedPair } from '../../../engine/integrals/orbital-integrals';
 import type { Vector3 } from '../../../engine/molecule/molecule';
 import {
   cartesianFunctions,
   contracted,
+  onSeparateAtoms,
   placedBasis,
   repulsionByQuadrature,
   type ShellSketch,
@@ -117,6 +121,63 @@ describe('electronRepulsionTensor', () => {
       expect(Math.abs(contractedTensor[place(i, j, k, l)] - expected)).toBeLessThan(1e-13);
     }
   });
+
+  it('identity: shells that share exponents, computed together, are as each by itself', () => {
+    const coefficient = fc.double({ min: -1, max: 1, noNaN: true });
+    const block = fc.record({
+      atom: fc.nat(1),
+      exponents: fc.array(fc.double({ min: 0.1, max: 40, noNaN: true }), { minLength: 1, maxLength: 3 }),
+      momenta: fc.array(fc.nat(2), { minLength: 1, maxLength: 4 }),
+    });
+    const problem = fc.record({
+      blocks: fc.array(block, { minLength: 1, maxLength: 3 }),
+      coefficients: fc.array(coefficient, { minLength: 36, maxLength: 36 }),
+      distance: fc.double({ min: 0.1, max: 4, noNaN: true }),
+      harmonics: fc.constantFrom('spherical' as const, 'cartesian' as const),
+    });
+    fc.assert(
+      fc.property(problem, ({ blocks, coefficients, distance, harmonics }) => {
+        let used = 0;
+        const sketches = blocks.flatMap(({ atom, exponents, momenta }) =>
+          momenta.map((l) => {
+            used += exponents.length;
+            return {
+              centre: [0, 0.3 * atom * distance, atom * distance] as Vector3,
+              l,
+              exponents,
+              coefficients: coefficients.slice(used - exponents.length, used),
+              keepNorm: true,
+            };
+          }),
+        );
+        const separate = placedBasis(sketches, harmonics);
+        const atoms = blocks.flatMap(({ atom, momenta }) => momenta.map(() => atom));
+        const shells = separate.shells.map((shell, i) => ({ ...shell, atom: atoms[i] }));
+        expectEqualRepulsion({ ...separate, shells }, separate);
+      }),
+      { seed: 5, numRuns: 60 },
+    );
+  });
+
+  it.each(listBasisSets().map(({ name }) => name))(
+    'identity: shells together as each by itself, HF and HCl in %s',
+    (name) => {
+      for (const [heavy, distance] of [
+        ['F', 1.73],
+        ['Cl', 2.41],
+      ] as const) {
+        const entry = listBasisSets().find((set) => set.name === name)!;
+        if (!entry.elements.includes(heavy)) continue;
+        const basis = placeBasis(findBasisSet(name, ['H', heavy]), {
+          atoms: [
+            { symbol: heavy, position: [0, 0, 0] },
+            { symbol: 'H', position: [0, 0, distance] },
+          ],
+        });
+        expectEqualRepulsion(basis, onSeparateAtoms(basis));
+      }
+    },
+  );
 
   it('identity: the order of the shells does not matter (eightfold symmetry)', () => {
     const sketches = [
@@ -236,13 +297,18 @@ describe('electronRepulsionTensor', () => {
     }
   });
 
-  it('identity: what screening leaves out is below its threshold', () => {
-    const basis = placedBasis(
+  it.each([
+    ['shells by themselves', [2, 0.4]],
+    ['s and p shells with shared exponents', [13, 2, 0.4]],
+  ])('identity: what screening leaves out is below its threshold: %s', (_title, exponents) => {
+    const separate = placedBasis(
       [0, 4, 8, 14].flatMap((z) => [
         { centre: [0, 0, z] as Vector3, l: 0, exponents: [13, 2, 0.4] },
-        { centre: [0, 0, z] as Vector3, l: 1, exponents: [2, 0.4] },
+        { centre: [0, 0, z] as Vector3, l: 1, exponents },
       ]),
     );
+    const shells = separate.shells.map((shell, i) => ({ ...shell, atom: Math.floor(i / 2) }));
+    const basis = { ...separate, shells };
     const all = electronRepulsionTensor(basis, { schwarzThreshold: 0 });
     const screened = electronRepulsionTensor(basis, { schwarzThreshold: 1e-8 });
     const standard = electronRepulsionTensor(basis);
@@ -255,6 +321,19 @@ describe('electronRepulsionTensor', () => {
     expect(skipped).toBeGreaterThan(100);
   });
 });
+
+/** To 1e-13 of the larger of the largest integral and 1 hartree, with nothing screened. */
+function expectEqualRepulsion(one: PlacedBasis, other: PlacedBasis): void {
+  const values = electronRepulsionTensor(one, { schwarzThreshold: 0 });
+  const expected = electronRepulsionTensor(other, { schwarzThreshold: 0 });
+  let largest = 1;
+  let difference = 0;
+  values.forEach((value, i) => {
+    largest = Math.max(largest, Math.abs(expected[i]));
+    difference = Math.max(difference, Math.abs(value - expected[i]));
+  });
+  expect(difference / largest).toBeLessThan(1e-13);
+}
 
 /** Σ (ab|cd)² over the functions of four shells, for all quartets: the same for any choice of axes. */
 function shellQuartetNorms(sketches: readonly ShellSketch[]): number[] {

@@ -33,6 +33,29 @@ describe('nuclearAttractionMatrix', () => {
     }
   });
 
+  it('identity: shells that share exponents, computed together, are as each by itself', () => {
+    const rows = [0, 0, 1, 2].map((l, i) => ({
+      l,
+      exponents: [9, 1.3, 0.4],
+      coefficients: [0.2, i - 2, 0.7],
+    }));
+    const separate = placedBasis([
+      ...rows.map((row) => ({ ...row, centre: [0, 0, 0] as const })),
+      ...rows.map((row) => ({ ...row, centre: [0.4, -0.5, 1.1] as const })),
+      ...[0, 1, 2].map((l) => ({ l, exponents: [0.6], centre: [0.4, -0.5, 1.1] as const })),
+    ]);
+    const [here, there] = [separate.shells.slice(0, 4), separate.shells.slice(4)];
+    const shells = [here, there].flatMap((ofAtom, atom) => ofAtom.map((shell) => ({ ...shell, atom })));
+    const nuclei = [
+      { charge: 3, position: [0, 0, 0] as const },
+      { charge: 1, position: [0.4, -0.5, 1.1] as const },
+    ];
+    const expected = nuclearAttractionMatrix(separate, nuclei);
+    nuclearAttractionMatrix({ ...separate, shells }, nuclei).forEach((value, i) => {
+      expect(Math.abs(value - expected[i])).toBeLessThan(1e-13);
+    });
+  });
+
   it.each([
     [
       'H2',

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { PlacedShell } from '../../../engine/basis/contracted-gaussian';
 import { shellTransformation } from '../../../engine/integrals/basis-transformation';
 import { cartesianComponents } from '../../../engine/integrals/cartesian-components';
+import { blockOfShells } from '../../../engine/integrals/shell-block';
 import { buildShellPair, type ShellPair, shellPairs } from '../../../engine/integrals/shell-pair';
 import type { Vector3 } from '../../../engine/molecule/molecule';
 import { placedBasis } from '../../support/gaussian-integrals';
@@ -84,7 +85,7 @@ describe('buildShellPair', () => {
         harmonics,
       );
       const [first, second] = basis.shells;
-      const pair = buildShellPair(first, second, harmonics);
+      const pair = buildShellPair(blockOfShells([first]), blockOfShells([second]), harmonics);
       for (const point of POINTS) {
         const left = shellValues(first, harmonics, point);
         const right = shellValues(second, harmonics, point);
@@ -101,7 +102,8 @@ describe('buildShellPair', () => {
       { centre: [0, 0, 0], l: 1, exponents: [1, 0.2] },
       { centre: [0, 0, 1], l: 1, exponents: [1, 0.2] },
     ]);
-    const { factors, signedFactors, layout } = buildShellPair(shells[0], shells[1], 'cartesian');
+    const [first, second] = shells.map((shell) => blockOfShells([shell]));
+    const { factors, signedFactors, layout } = buildShellPair(first, second, 'cartesian');
     factors.forEach((value, i) => {
       const degree = layout.factorDegrees[i % layout.factorDegrees.length];
       expect(signedFactors[i]).toBe(degree % 2 === 0 ? value : -value);
@@ -117,7 +119,9 @@ describe('shellPairs', () => {
       { centre: [0, 0, 100], l: 0, exponents: [0.5] },
     ]);
     expect(shellPairs(basis)).toBe(shellPairs(basis));
-    const found = shellPairs(basis).map(({ first, second }) => [first.atom, second.atom]);
+    const found = shellPairs(basis).map(({ members }) =>
+      members.flatMap(({ first, second }) => [first.atom, second.atom]),
+    );
     expect(found).toEqual([
       [0, 0],
       [1, 0],
