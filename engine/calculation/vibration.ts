@@ -18,6 +18,8 @@ const MOST_SECONDS_A_POINT = 2;
 const INTERPOLATION_TOLERANCE_PER_CM = 0.01;
 /** Three or four are enough for energies converged to 1e-10 hartree, a few more for a wall that is not there yet. */
 const ROUNDS = 8;
+/** A curve known between its points no better than this, in cm⁻¹, has a kink or gaps: levels on it would be invented. */
+const LARGEST_USABLE_ERROR_PER_CM = 50;
 /** How far the next point inwards is, in units of the first distance. */
 const INWARD_STEP = 0.92;
 
@@ -52,10 +54,18 @@ export function vibrationOf(
     left -= wanted.length;
     interpolated = interpolate() ?? interpolated;
   }
+  const error = errorBelow(interpolated, topOf(interpolated, limit));
+  if (!(error <= LARGEST_USABLE_ERROR_PER_CM)) {
+    return none(
+      `Between its points the curve is known to ${error.toPrecision(2)} cm⁻¹ only: it has a kink, or too few points.`,
+    );
+  }
   const solved = vibrationalLevels(interpolated, molecule.reducedMass);
   // where the curve tends to a limit above its fragments, as in RHF, the levels between are none of the molecule's
   const levels = solved.levels.filter(({ energy }) => limit === undefined || energy < limit);
   if (levels.length === 0) return none('The well is too shallow for a bound level.');
+  // an interpolant that dips below the computed minimum has left the curve
+  if (levels[0].energy <= minimumEnergy) return none('The curve has a kink; levels on it would be invented.');
   const abovePerCm = (energy: number) => (energy - minimumEnergy) * HARTREE_IN_WAVENUMBERS;
   return {
     kind: 'found',
@@ -69,7 +79,7 @@ export function vibrationOf(
     boundLevels: levels.length < solved.levels.length ? levels.length : solved.boundLevels,
     converged: solved.converged,
     beyondComputedRange: solved.beyondComputedRange.filter((v) => v < levels.length),
-    interpolationErrorPerCm: errorBelow(interpolated, topOf(interpolated, limit)),
+    interpolationErrorPerCm: error,
     pointsAdded: curve.points().length - pointsAtFirst,
     reducedMassDalton: molecule.reducedMassDalton,
   };

@@ -17,6 +17,10 @@ type FoundMinimum = Extract<CurveMinimum, { readonly kind: 'found' }>;
 
 /** Of a converged energy the noise is this fraction of the threshold, which is on the change of the last step. */
 const NOISE_OF_THRESHOLD = 0.1;
+/** Study unit; a smooth well's minimum is known a hundred times better, so beyond it there is a kink. */
+const LARGEST_USABLE_SHIFT = 1e-4;
+/** Of ωe: beyond it the well has no derivatives to speak of, as where two solutions cross in it. */
+const LARGEST_USABLE_UNCERTAINTY = 0.05;
 /** Rounding alone leaves so much, hartree. */
 const SMALLEST_NOISE = 1e-11;
 
@@ -33,7 +37,7 @@ export function wellConstants(
   spacing: number,
 ): WellConstants {
   const toNewtonPerMetre = FORCE_CONSTANT_IN_NEWTON_PER_METRE / curve.bohrPerUnit ** 2;
-  const molecule = diatomicOf(study);
+  const molecule = minimum.uncertainty <= LARGEST_USABLE_SHIFT ? diatomicOf(study) : undefined;
   const diatomic = molecule && diatomicConstants(molecule, curve, minimum, spacing, study.convergence.energy);
   return {
     equilibriumDistanceAngstrom: estimate(
@@ -69,6 +73,8 @@ function diatomicConstants(
   const well = expandWell(expansion.centre * toBohr, multiple * spacing * toBohr, energies, noise);
   if (!well) return undefined;
   const { constants, uncertainties } = spectroscopicConstants(well, molecule.reducedMass);
+  const { harmonicWavenumberPerCm: wavenumber } = constants;
+  if (!(uncertainties.harmonicWavenumberPerCm <= LARGEST_USABLE_UNCERTAINTY * wavenumber)) return undefined;
   const known = (key: keyof SpectroscopicConstants) => estimate(constants[key], uncertainties[key]);
   return {
     forceConstantNewtonPerMetre: known('forceConstantNewtonPerMetre'),
