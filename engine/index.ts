@@ -16,6 +16,7 @@ export type { LevelExplanation, StudyExplanation } from './calculation/explanati
 export { evaluateOnGrid, type FieldOnGrid } from './calculation/field-on-grid';
 export { findLevelMinimum } from './calculation/find-level-minimum';
 export { type FieldKind, type FollowedNeighbours, followNeighbours } from './calculation/follow-neighbours';
+export { type FollowedState, followStates } from './calculation/follow-states';
 export { LEVEL_NAMES } from './calculation/levels';
 export type { OccupiedOrbitals, PointCarry } from './calculation/mean-fields';
 export {
@@ -48,6 +49,7 @@ export type {
   SinglesResult,
   SinglesState,
   SpinOrbitalEnergies,
+  StateCurve,
   StudyResults,
   Vibration,
   VibrationalState,

@@ -24,10 +24,20 @@ export interface StudyResults {
   readonly basis: BasisDescription;
   readonly points: readonly PointResult[];
   readonly findings: Readonly<Record<string, LevelFindings>>;
+  /** states of CI levels and CIS joined along the scan, by level; absent in files of earlier versions */
+  readonly curves?: Readonly<Record<string, readonly StateCurve[]>>;
   /** measured constants of this isotopologue, empty where none are known; diatomic molecules only */
   readonly measured?: readonly MeasuredState[];
   /** what concerns the whole curve rather than one point */
   readonly cautions: readonly Caution[];
+}
+
+/** One state of a level along the scan. */
+export interface StateCurve {
+  /** within its level, as `1 ³Σu⁺`; without symmetry `triplet 1` */
+  readonly name: string;
+  /** place of the state in the level's list at every point; null where it is not among those computed */
+  readonly states: readonly (number | null)[];
 }
 
 /** The numbers of the basis set used, per element of the molecule. */

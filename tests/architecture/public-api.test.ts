@@ -20,6 +20,7 @@ it('regression: the engine’s door offers these names, so that a change of it i
     'explainStudy',
     'findLevelMinimum',
     'followNeighbours',
+    'followStates',
     'listBasisSets',
     'measuredFor',
     'prepareStudy',

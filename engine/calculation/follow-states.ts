@@ -1,0 +1,251 @@
+import type { SpinName } from '../configuration-interaction/spin';
+import { cheapestAssignment } from '../linear-algebra/assignment';
+import type { StateSymmetry } from '../symmetry/state-symmetry';
+import type { PointResult } from './result';
+import { matchOrbitals, type OrbitalMatch, type StateComponent, stateOverlap } from './state-overlap';
+
+/*
+ * States of a scan joined to curves.
+ *
+ * States of one spin and one symmetry do not cross along one coordinate (J. von Neumann, E. P. Wigner, Phys. Z. 30,
+ * 467 (1929)): where both are known, curves are adiabatic, the nth state of its kind at every point, whatever its
+ * character changes to at an avoided crossing. States that lack a label, and states of mixed spin, are matched from
+ * point to point by overlap and energy; those are followed through an avoided crossing that is narrower than the step,
+ * as through a crossing.
+ */
+
+/** One state along a scan. */
+export interface FollowedState {
+  readonly spin: SpinName;
+  /** absent where no state of the curve has a label */
+  readonly symmetry?: StateSymmetry;
+  /** counted from 1 within spin and symmetry, by energy where the curves begin */
+  readonly number: number;
+  /** place of the state in its level's list at every point; null where it is not among those computed */
+  readonly states: readonly (number | null)[];
+}
+
+/** Deviation from the extrapolated energy, hartree, that weighs as much as an overlap of nothing. */
+const ENERGY_SCALE = 0.1;
+/** Two states that would cost this much to join, overlap of nothing and half the deviation above, are not joined. */
+const TOO_FAR = 1.5;
+/** More than any set of allowed matches costs. */
+const FORBIDDEN = 1e6;
+/** Points that an energy is extrapolated from. */
+const EXTRAPOLATION_POINTS = 3;
+
+interface StateAtPoint {
+  readonly point: number;
+  /** in the level's list */
+  readonly place: number;
+  readonly coordinate: number;
+  readonly energy: number;
+  readonly spin: SpinName;
+  readonly symmetry?: StateSymmetry;
+  readonly components: readonly StateComponent[];
+}
+
+/** States joined so far, in the order of points, and what is known of them. */
+interface Chain {
+  readonly states: StateAtPoint[];
+  spin: SpinName;
+  symmetry?: StateSymmetry;
+}
+
+/**
+ * Joins the states of a CI level, or of CIS, to curves.
+ *
+ * @param points - in the order of the coordinate, rising or falling
+ * @returns by kind, then number; empty for levels without states
+ */
+export function followStates(points: readonly PointResult[], level: string): readonly FollowedState[] {
+  const group = commonestGroup(points);
+  const byPoint = points.map((point, index) =>
+    // an iteration that ran away leaves no number
+    statesAt(point, index, level, groupOf(point) === group).filter(({ energy }) => Number.isFinite(energy)),
+  );
+  const chains = chainStates(points, byPoint);
+  const ordered = [...groupBy(chains, kindOf)].flatMap(([, ofKind]) =>
+    isOrdered(ofKind[0]) ? adiabatic(ofKind) : ofKind,
+  );
+  const kinds = [...groupBy(ordered, kindOf)].sort(([a], [b]) => (a < b ? -1 : 1));
+  return kinds.flatMap(([, ofKind]) =>
+    ofKind.sort(byBeginning).map(({ states, spin, symmetry }, index) => ({
+      spin,
+      ...(symmetry && { symmetry }),
+      number: index + 1,
+      states: placesOf(states, points.length),
+    })),
+  );
+}
+
+/** Labels of different groups are not comparable: only those of the group that most points have are used. */
+function commonestGroup(points: readonly PointResult[]): string | undefined {
+  const groups = [...groupBy(points, groupOf)];
+  return groups.reduce((most, next) => (next[1].length > most[1].length ? next : most), groups[0])?.[0];
+}
+
+const groupOf = ({ symmetry }: PointResult): string => `${symmetry?.pointGroup} ${symmetry?.linear}`;
+
+function statesAt(point: PointResult, index: number, level: string, hasLabels: boolean): StateAtPoint[] {
+  const result = point.levels[level];
+  const common = { point: index, coordinate: point.coordinate ?? 0 };
+  const labelled = (symmetry: StateSymmetry | undefined) => (hasLabels && symmetry ? { symmetry } : {});
+  switch (result?.kind) {
+    case 'correlated':
+      return result.states.map(({ energy, spin, symmetry, leading }, place) => ({
+        ...common,
+        place,
+        energy,
+        spin,
+        ...labelled(symmetry),
+        components: leading,
+      }));
+    case 'singles':
+      return result.states.map(({ energy, spin, symmetry, leading }, place) => ({
+        ...common,
+        place,
+        energy,
+        spin,
+        ...labelled(symmetry),
+        // an electron and the hole that it left: the same spin function for every pair
+        components: leading.map(({ from, to, weight }) => ({
+          coefficient: Math.sqrt(weight),
+          alpha: [from],
+          beta: [to],
+        })),
+      }));
+    default:
+      return [];
+  }
+}
+
+function chainStates(
+  points: readonly PointResult[],
+  byPoint: readonly (readonly StateAtPoint[])[],
+): readonly Chain[] {
+  const chains: Chain[] = [];
+  byPoint.forEach((states, index) => {
+    const matches = new Map<number, OrbitalMatch>();
+    const matchFrom = (point: number): OrbitalMatch => {
+      const known = matches.get(point) ?? matchOrbitals(points[point], points[index]);
+      matches.set(point, known);
+      return known;
+    };
+    const chainOf = assign(chains, states, (chain, state) =>
+      isCompatible(chain, state)
+        ? joiningCost(chain, state, matchFrom(chain.states.at(-1)!.point))
+        : FORBIDDEN,
+    );
+    states.forEach((state, k) => {
+      const chain = chainOf[k];
+      if (!chain) {
+        chains.push({
+          states: [state],
+          spin: state.spin,
+          ...(state.symmetry && { symmetry: state.symmetry }),
+        });
+        return;
+      }
+      chain.states.push(state);
+      if (chain.spin === 'mixed') chain.spin = state.spin;
+      if (!chain.symmetry?.term && state.symmetry) chain.symmetry = state.symmetry;
+    });
+  });
+  return chains;
+}
+
+/** The chain of every state; undefined where the state is better the first of its own. */
+function assign(
+  chains: readonly Chain[],
+  states: readonly StateAtPoint[],
+  cost: (chain: Chain, state: StateAtPoint) => number,
+): readonly (Chain | undefined)[] {
+  const n = chains.length + states.length;
+  const costs = new Float64Array(n * n);
+  // beyond the states, places for chains that end; beyond the chains, places for states that begin
+  for (let row = 0; row < n; row++) {
+    for (let column = 0; column < n; column++) {
+      const isChain = row < chains.length;
+      const isState = column < states.length;
+      if (isChain && isState) costs[row * n + column] = cost(chains[row], states[column]);
+      else if (isChain || isState) costs[row * n + column] = TOO_FAR / 2;
+    }
+  }
+  const columnOf = cheapestAssignment(costs, n);
+  return states.map((_, k) => chains[columnOf.indexOf(k)]);
+}
+
+/** Whether what is known of the spin and symmetry of both is the same. */
+function isCompatible({ spin, symmetry }: Chain, state: StateAtPoint): boolean {
+  if (spin !== state.spin && spin !== 'mixed' && state.spin !== 'mixed') return false;
+  if (!symmetry || !state.symmetry) return true;
+  return symmetry.term && state.symmetry.term
+    ? symmetryKey(symmetry) === symmetryKey(state.symmetry)
+    : symmetry.irrep === state.symmetry.irrep;
+}
+
+function joiningCost(chain: Chain, state: StateAtPoint, match: OrbitalMatch): number {
+  const overlap = stateOverlap(chain.states.at(-1)!.components, state.components, match);
+  const deviation = Math.abs(extrapolated(chain, state.coordinate) - state.energy);
+  const cost = (overlap === undefined ? 0 : 1 - overlap) + deviation / ENERGY_SCALE;
+  return Math.min(cost, FORBIDDEN);
+}
+
+/** Of the polynomial through the last energies. */
+function extrapolated({ states }: Chain, coordinate: number): number {
+  const last = states.slice(-EXTRAPOLATION_POINTS);
+  return last.reduce((sum, { coordinate: x, energy }) => {
+    const others = last.filter((other) => other.coordinate !== x);
+    return (
+      sum +
+      others.reduce(
+        (part, other) => (part * (coordinate - other.coordinate)) / (x - other.coordinate),
+        energy,
+      )
+    );
+  }, 0);
+}
+
+const isOrdered = ({ spin, symmetry }: Chain): boolean => spin !== 'mixed' && symmetry !== undefined;
+
+/** The same states shared out anew: the lowest of every point to the first curve, the next to the second. */
+function adiabatic(chains: readonly Chain[]): Chain[] {
+  const byPoint = [
+    ...groupBy(
+      chains.flatMap(({ states }) => states),
+      ({ point }) => point,
+    ),
+  ]
+    .sort(([a], [b]) => a - b)
+    .map(([, states]) => states.sort((a, b) => a.energy - b.energy || a.place - b.place));
+  return Array.from({ length: Math.max(...byPoint.map(({ length }) => length)) }, (_, rank) => ({
+    ...chains[0],
+    states: byPoint.flatMap((states) => states[rank] ?? []),
+  }));
+}
+
+/** The kind that curves are counted within. */
+const kindOf = ({ spin, symmetry }: Chain): string => `${spin} ${symmetry ? symmetryKey(symmetry) : ''}`;
+
+const symmetryKey = ({ irrep, term }: StateSymmetry): string =>
+  `${irrep} ${term ? `${term.lambda}${term.inversion ?? ''}${term.reflection ?? ''}` : ''}`;
+
+const byBeginning = ({ states: [a] }: Chain, { states: [b] }: Chain): number =>
+  a.point - b.point || a.energy - b.energy || a.place - b.place;
+
+function placesOf(states: readonly StateAtPoint[], points: number): readonly (number | null)[] {
+  const places = new Map(states.map(({ point, place }) => [point, place]));
+  return Array.from({ length: points }, (_, point) => places.get(point) ?? null);
+}
+
+function groupBy<T, K>(items: readonly T[], keyOf: (item: T) => K): Map<K, T[]> {
+  const groups = new Map<K, T[]>();
+  for (const item of items) {
+    const key = keyOf(item);
+    const group = groups.get(key);
+    if (group) group.push(item);
+    else groups.set(key, [item]);
+  }
+  return groups;
+}
