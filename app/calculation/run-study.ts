@@ -16,6 +16,7 @@ import type { FinishedPoint } from './messages';
 import { planRuns, type Run } from './plan';
 import { PROGRAM } from './program';
 import { type Progress, trackProgress } from './progress';
+import { crossingCautions, stateCurves } from './state-curves';
 import { CalculationFailure, openPool, PoolClosed, type Task, type WorkerPool } from './worker-pool';
 import { type StartWorker, startWorkerThread } from './worker-thread';
 
@@ -169,6 +170,7 @@ function assemble(
   crossings: readonly SolutionCrossing[],
 ): StudyResults {
   const measured = measuredFor(prepared.study);
+  const curves = stateCurves(prepared.study.levels, points);
   return {
     format: 'farwell/results',
     version: 1,
@@ -177,8 +179,9 @@ function assemble(
     basis: describeBasisUsed(prepared),
     points,
     findings,
+    curves,
     ...(measured && { measured }),
-    cautions: studyCautions(prepared, points, crossings, findings),
+    cautions: [...studyCautions(prepared, points, crossings, findings), ...crossingCautions(points, curves)],
   };
 }
 

@@ -24,7 +24,9 @@ export function cautionSummary(
   ];
   const groups = new Map<string, CautionAt[]>();
   for (const one of all) {
-    const key = `${one.caution.code} ${one.caution.level ?? ''}`;
+    const { code, level, message } = one.caution;
+    // several crossings of one curve are several things to say
+    const key = [code, level, one.coordinate === undefined && message].join(' ');
     groups.set(key, [...(groups.get(key) ?? []), one]);
   }
   return [...groups.values()].map((group) => sentenceOf(group, coordinateText));

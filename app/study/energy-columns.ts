@@ -1,4 +1,4 @@
-import type { LevelResult, PointResult, SpinName, StateSymmetry } from '#engine';
+import type { LevelResult, PointResult, SpinName, StateCurve, StateSymmetry, StudyResults } from '#engine';
 
 /** The energy of one state of one level at one point. */
 export interface EnergyEntry {
@@ -13,7 +13,7 @@ export interface EnergyEntry {
 
 /** One energy that a study gives at every point: the lowest state of a level, or a further one. */
 export interface EnergyColumn {
-  /** as in the header of tables: `RHF`, `CIS singlet 1`, `FCI state 2` */
+  /** as in the header of tables: `RHF`, `CIS 1 ¹Σu⁺`; where states are not followed `CIS singlet 1`, `FCI state 2` */
   readonly label: string;
   /** what it shares with others of its kind: `RHF`, `CIS singlets`, `FCI, higher states` */
   readonly family: string;
@@ -27,11 +27,14 @@ export interface EnergyColumn {
 export interface EnergyTable {
   readonly study: { readonly levels: readonly string[] };
   readonly points: readonly PointResult[];
+  /** absent as long as the scan is not complete: states are then taken by order of energy */
+  readonly curves?: StudyResults['curves'];
 }
 
 /**
  * The energies of a study in the order of tables: every level in study order (CIS, which has no ground state
- * of its own, as its singlets and triplets), then the further states of correlated levels.
+ * of its own, as its singlets and triplets), then the further states of correlated levels. The column of a level is its
+ * lowest state at every point; every other column is one state along the scan.
  */
 export function energyColumns(results: EnergyTable): readonly EnergyColumn[] {
   const { levels } = results.study;
@@ -62,6 +65,15 @@ function lowestState(level: string): EnergyColumn {
 }
 
 function singlesColumns(results: EnergyTable, level: string): EnergyColumn[] {
+  const curves = results.curves?.[level];
+  if (curves) {
+    const columns = curves.map((curve) => ({ curve, spin: spinOf(results.points, level, curve) }));
+    return (['singlet', 'triplet'] as const).flatMap((spin) =>
+      columns
+        .filter((column) => column.spin === spin)
+        .map(({ curve }) => curveColumn(results, level, curve, `${level} ${spin}s`)),
+    );
+  }
   return (['singlet', 'triplet'] as const).flatMap((spin) => {
     const ofSpin = (result: LevelResult | undefined) =>
       result?.kind === 'singles' ? result.states.filter((state) => state.spin === spin) : [];
@@ -77,7 +89,13 @@ function singlesColumns(results: EnergyTable, level: string): EnergyColumn[] {
 }
 
 function furtherStates(results: EnergyTable, level: string): EnergyColumn[] {
-  const statesOf = (result: LevelResult | undefined) => (result?.kind === 'correlated' ? result.states : []);
+  if (level === 'CIS') return [];
+  const curves = results.curves?.[level];
+  if (curves) {
+    return curves
+      .filter(({ states }) => states.some((place) => place !== null && place > 0))
+      .map((curve) => curveColumn(results, level, curve, `${level}, higher states`));
+  }
   const count = Math.max(0, ...results.points.map(({ levels }) => statesOf(levels[level]).length));
   return Array.from({ length: Math.max(0, count - 1) }, (_, index) => ({
     label: `${level} state ${index + 2}`,
@@ -87,6 +105,36 @@ function furtherStates(results: EnergyTable, level: string): EnergyColumn[] {
     entryAt: ({ levels }) => stateEntry(levels[level], statesOf(levels[level])[index + 1]),
   }));
 }
+
+/** One state along the scan, even where it is the lowest of its level for a part of it. */
+function curveColumn(
+  { points }: EnergyTable,
+  level: string,
+  { name, states }: StateCurve,
+  family: string,
+): EnergyColumn {
+  const placeAt = new Map(points.map((point, index) => [point, states[index]]));
+  return {
+    label: `${level} ${name}`,
+    family,
+    level,
+    isExcited: true,
+    entryAt: (point) => {
+      const place = placeAt.get(point);
+      const result = point.levels[level];
+      return place == null ? undefined : stateEntry(result, statesOf(result)[place]);
+    },
+  };
+}
+
+function spinOf(points: readonly PointResult[], level: string, { states }: StateCurve): SpinName | undefined {
+  const index = states.findIndex((place) => place !== null);
+  const place = states[index];
+  return place == null ? undefined : statesOf(points[index]?.levels[level])[place]?.spin;
+}
+
+const statesOf = (result: LevelResult | undefined) =>
+  result?.kind === 'correlated' || result?.kind === 'singles' ? result.states : [];
 
 function stateEntry(
   result: LevelResult | undefined,

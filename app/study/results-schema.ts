@@ -359,6 +359,9 @@ export const resultsSchema: z.ZodType<StudyResults> = z.looseObject({
   }),
   points: z.array(point),
   findings: z.record(z.string(), findings),
+  curves: z
+    .record(z.string(), z.array(z.looseObject({ name: z.string(), states: z.array(z.number().nullable()) })))
+    .exactOptional(),
   measured: z.array(measuredState).exactOptional(),
   cautions,
 });

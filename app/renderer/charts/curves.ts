@@ -1,4 +1,4 @@
-import type { LengthUnit, PointResult, Study } from '#engine';
+import type { LengthUnit, PointResult, Study, StudyResults } from '#engine';
 import { type EnergyColumn, type EnergyEntry, energyColumns } from '../../study/energy-columns';
 import type { EnergyReference } from '../state/window-state';
 import { convertLength, type EnergyUnit, toEnergyUnit } from '../units';
@@ -11,6 +11,8 @@ export interface CurveOptions {
   readonly energyReference: EnergyReference;
   /** of the axis; ignored for angles */
   readonly lengthUnit: LengthUnit;
+  /** of the whole scan; undefined as long as it is not complete */
+  readonly curves?: StudyResults['curves'];
 }
 
 /** One line of a chart: one entry a point, in the order of the points. */
@@ -49,7 +51,7 @@ export function energyCurves(
   points: Points,
   options: CurveOptions,
 ): { readonly curves: readonly Curve[]; readonly missing: readonly MissingReference[] } {
-  const columns = columnsOf(study, points);
+  const columns = columnsOf(study, points, options.curves);
   const references = new Map(
     study.levels.map((level) => [level, referenceEnergy(level, columns, points, options.energyReference)]),
   );
@@ -77,8 +79,8 @@ export function correlationCurves(study: Study, points: Points, energyUnit: Ener
     .filter(({ values }) => values.some((value) => value !== null));
 }
 
-const columnsOf = (study: Study, points: Points): readonly EnergyColumn[] =>
-  energyColumns({ study, points: points.filter((point) => point !== undefined) });
+const columnsOf = (study: Study, points: Points, curves?: StudyResults['curves']): readonly EnergyColumn[] =>
+  energyColumns({ study, points: points.filter((point) => point !== undefined), curves });
 
 function curve(
   { label, level, isExcited, entryAt }: EnergyColumn,

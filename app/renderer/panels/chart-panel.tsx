@@ -56,6 +56,7 @@ function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
   const fontSize = useChartFontSize();
   const { study, points } = run;
   const { energyUnit, energyReference, hiddenLevels } = view;
+  const curves = run.results?.curves;
   const lengthUnit = view.lengthUnit ?? study.molecule.unit;
   const hasPoints = points.some((point) => point !== undefined);
   const request = useMemo(
@@ -65,12 +66,25 @@ function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
       energyUnit,
       energyReference,
       lengthUnit,
+      curves,
       hiddenLevels,
       theme: { ...(ground === 'dark' ? DARK_CHART : LIGHT_CHART), fontSize },
       zoomKey: [run.text, energyUnit, energyReference, lengthUnit].join('|'),
       size: size ?? UNMEASURED,
     }),
-    [study, points, energyUnit, energyReference, lengthUnit, hiddenLevels, ground, fontSize, run.text, size],
+    [
+      study,
+      points,
+      energyUnit,
+      energyReference,
+      lengthUnit,
+      curves,
+      hiddenLevels,
+      ground,
+      fontSize,
+      run.text,
+      size,
+    ],
   );
   const figure = useMemo(() => buildFigure(request), [request]);
   const index = cursorIndex(run, view.cursor);

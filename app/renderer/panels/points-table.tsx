@@ -18,7 +18,11 @@ export function PointsTable() {
   const { study, points } = run;
   const lengthUnit = view.lengthUnit ?? study.molecule.unit;
   const x = positions(study, points, lengthUnit);
-  const columns = energyColumns({ study, points: points.filter((point) => point !== undefined) });
+  const columns = energyColumns({
+    study,
+    points: points.filter((point) => point !== undefined),
+    curves: run.results?.curves,
+  });
   const { symbol, decimals } = ENERGY_UNITS[view.energyUnit];
   const coordinateDecimals = commonDecimals(
     x.filter((value) => value !== null),

@@ -1,0 +1,119 @@
+import { type Caution, followStates, type PointResult, type StateCurve } from '#engine';
+import { curveName } from '../study/state-name';
+
+export type StateCurves = Readonly<Record<string, readonly StateCurve[]>>;
+
+/** States closer than this, hartree, are degenerate, and their order is chance. */
+const DEGENERATE = 1e-6;
+/** More pairs than this would make the sentence unreadable. */
+const MOST_PAIRS = 4;
+
+/** The states of every level that lists any, each followed along the scan. */
+export function stateCurves(levels: readonly string[], points: readonly PointResult[]): StateCurves {
+  return Object.fromEntries(
+    levels.flatMap((level) => {
+      const curves = followStates(points, level).map(({ states, ...state }) => ({
+        name: curveName(state),
+        states,
+      }));
+      return curves.length > 0 ? [[level, curves]] : [];
+    }),
+  );
+}
+
+interface Crossing {
+  /** the curve that is lower before, and the one that is lower after */
+  readonly pair: readonly [string, string];
+  /** coordinates of the points on both sides, lower first */
+  readonly range: readonly [number, number];
+  readonly isLowest: boolean;
+}
+
+/** Says where states change their order: each crossing of the lowest state of a level, those above it together. */
+export function crossingCautions(points: readonly PointResult[], curves: StateCurves): readonly Caution[] {
+  return Object.entries(curves).flatMap(([level, ofLevel]) => {
+    const crossings = crossingsOf(points, level, ofLevel);
+    const higher = crossings.filter(({ isLowest }) => !isLowest);
+    return [
+      ...crossings.filter(({ isLowest }) => isLowest).map((crossing) => lowestCaution(level, crossing)),
+      ...(higher.length > 0 ? [higherCaution(level, higher)] : []),
+    ];
+  });
+}
+
+function lowestCaution(level: string, { pair: [before, after], range }: Crossing): Caution {
+  return {
+    code: 'state.crossing',
+    level,
+    range,
+    message:
+      `Between ${places(range)} the lowest state of ${level} changes from ${before} to ${after}, by the order of the ` +
+      `scan. ${level} is the energy of the lowest state at every point and has a kink there; the curve of each state ` +
+      'goes on smoothly as far as it is among the states computed.',
+  };
+}
+
+function higherCaution(level: string, crossings: readonly Crossing[]): Caution {
+  const range = [
+    Math.min(...crossings.map((crossing) => crossing.range[0])),
+    Math.max(...crossings.map((crossing) => crossing.range[1])),
+  ] as const;
+  const pairs = [...new Set(crossings.map(({ pair }) => pair.toSorted().join(' and ')))];
+  const named = pairs.slice(0, MOST_PAIRS).join('; ');
+  const rest = pairs.length - MOST_PAIRS;
+  return {
+    code: 'state.crossing',
+    level,
+    range,
+    message:
+      `Higher states of ${level} change their order between ${places(range)}: ${named}` +
+      `${rest > 0 ? `; ${rest} more` : ''}. The number of a state in the list of a point does not identify it; its ` +
+      'curve does.',
+  };
+}
+
+function crossingsOf(
+  points: readonly PointResult[],
+  level: string,
+  curves: readonly StateCurve[],
+): Crossing[] {
+  const energies = points.map((point) => energiesOf(point, level));
+  const energyAt = ({ states }: StateCurve, point: number): number | undefined => {
+    const place = states[point];
+    return place == null ? undefined : energies[point]?.[place];
+  };
+  return points.slice(1).flatMap((after, index): Crossing[] => {
+    const before = points[index]!;
+    if (before.coordinate === null || after.coordinate === null) return [];
+    const range = [
+      Math.min(before.coordinate, after.coordinate),
+      Math.max(before.coordinate, after.coordinate),
+    ] as const;
+    const here = curves.map((curve) => ({
+      curve,
+      from: energyAt(curve, index),
+      to: energyAt(curve, index + 1),
+    }));
+    return here.flatMap((one) =>
+      here.flatMap((other): Crossing[] => {
+        // a state that is not among those computed lies above them
+        const gapBefore = (other.from ?? Infinity) - (one.from ?? Infinity);
+        const gapAfter = (one.to ?? Infinity) - (other.to ?? Infinity);
+        if (!(gapBefore > DEGENERATE && gapAfter > DEGENERATE)) return [];
+        const isLowest = one.curve.states[index] === 0 && other.curve.states[index + 1] === 0;
+        const isSeen = [one.from, one.to, other.from, other.to].every((energy) => energy !== undefined);
+        return isLowest || isSeen ? [{ pair: [one.curve.name, other.curve.name], range, isLowest }] : [];
+      }),
+    );
+  });
+}
+
+/** Of the states of a level that converged. */
+function energiesOf({ levels }: PointResult, level: string): readonly number[] {
+  const result = levels[level];
+  const hasStates = result?.kind === 'correlated' || result?.kind === 'singles';
+  return hasStates && result.converged ? result.states.map(({ energy }) => energy) : [];
+}
+
+const places = (range: readonly number[]): string =>
+  range.map((value) => Number(value.toPrecision(6))).join(' and ');
