@@ -1,8 +1,10 @@
+import type { BetaIntegrals } from '../integrals/orbital-integrals';
 import { dot } from '../linear-algebra/dense';
 import { type DeterminantSpace, determinantAt } from './determinant-space';
 import { occupiedOrbitals } from './determinants';
-import { naturalOrbitals, oneParticleDensity } from './one-particle-density';
+import { naturalOrbitals, transitionDensity, unrestrictedTransitionDensity } from './one-particle-density';
 import { applySpinSquared, type SpinName, spinName } from './spin';
+import { applyUnrestrictedSpinSquared, unrestrictedSpin } from './unrestricted-spin';
 import type { VectorSymmetry } from './vector-symmetry';
 
 /** A determinant of a CI vector; active orbitals counted from 0. */
@@ -24,11 +26,14 @@ export interface ConfigurationInteractionState {
   readonly referenceWeight: number;
   /** falling weight: the largest `LEADING_COUNT` above `LEADING_WEIGHT` */
   readonly leading: readonly WeightedDeterminant[];
-  /** spin-summed one-particle density over active orbitals, n×n row-major */
+  /**
+   * spin-summed one-particle density over active orbitals, n×n row-major; where beta orbitals differ, over all alpha
+   * ones, frozen electrons included
+   */
   readonly density: Float64Array;
-  /** of every state but the lowest: one-particle transition density from there, symmetric part, n×n row-major */
+  /** of every state but the lowest: one-particle transition density from there, symmetric part, the same size */
   readonly transitionDensity?: Float64Array;
-  /** of the active orbitals, falling */
+  /** eigenvalues of `density`, falling */
   readonly naturalOccupations: readonly number[];
   /** where the symmetry of the orbitals was given */
   readonly symmetry?: VectorSymmetry;
@@ -43,11 +48,12 @@ export function describeState(
   vector: Float64Array,
   energy: number,
   residual: number,
+  beta?: BetaIntegrals,
 ): ConfigurationInteractionState {
   const product = new Float64Array(vector.length);
-  applySpinSquared(space, vector, product);
+  applySpin(space, vector, product, beta);
   const sSquared = dot(vector, product);
-  const density = oneParticleDensity(space, vector);
+  const density = densityBetween(space, vector, vector, beta);
   return {
     energy,
     residual,
@@ -56,8 +62,36 @@ export function describeState(
     referenceWeight: vector[0] ** 2,
     leading: leadingDeterminants(space, vector),
     density,
-    naturalOccupations: Array.from(naturalOrbitals(density, space.orbitalCount).values),
+    naturalOccupations: Array.from(naturalOrbitals(density, Math.sqrt(density.length)).values),
   };
+}
+
+/** product ← P S² P·vector, over the same orbitals for both spins or not. */
+export function applySpin(
+  space: DeterminantSpace,
+  vector: Float64Array,
+  product: Float64Array,
+  beta?: BetaIntegrals,
+): void {
+  if (beta) {
+    const electrons = [space.alpha.electrons, space.beta.electrons] as const;
+    const spin = unrestrictedSpin(beta, space.orbitalCount, electrons);
+    applyUnrestrictedSpinSquared(space, spin, vector, product);
+  } else {
+    applySpinSquared(space, vector, product);
+  }
+}
+
+/** As the density of a state, between two. */
+export function densityBetween(
+  space: DeterminantSpace,
+  left: Float64Array,
+  right: Float64Array,
+  beta?: BetaIntegrals,
+): Float64Array {
+  return beta
+    ? unrestrictedTransitionDensity(space, left, right, beta)
+    : transitionDensity(space, left, right);
 }
 
 /** Sign that makes the coefficient of largest weight positive. */

@@ -1,6 +1,7 @@
 import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
-import type { DeterminantSpace } from './determinant-space';
+import { type DeterminantSpace, determinantAt } from './determinant-space';
 import { isOccupied, occupiedOrbitals } from './determinants';
+import { hamiltonianElement } from './matrix-elements';
 import { stringEnergy } from './same-spin';
 import { type StringSpace, stringAt } from './string-space';
 
@@ -53,6 +54,14 @@ export function spinAveragedDiagonal(space: DeterminantSpace, integrals: Orbital
     }
   }
   return diagonal;
+}
+
+/** ⟨D|H|D⟩ of every determinant of the space, hartree, where beta orbitals differ: none has partners of another spin. */
+export function unrestrictedDiagonal(space: DeterminantSpace, integrals: OrbitalIntegrals): Float64Array {
+  return Float64Array.from({ length: space.dimension }, (_, place) => {
+    const determinant = determinantAt(space, place);
+    return hamiltonianElement(determinant, determinant, integrals);
+  });
 }
 
 function describeStrings(space: StringSpace, integrals: OrbitalIntegrals) {

@@ -1,4 +1,4 @@
-import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
+import { betaPart, type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
 import {
   type DeterminantSpace,
   type Rows,
@@ -37,11 +37,12 @@ export function prepareHamiltonianProduct(
   space: DeterminantSpace,
   integrals: OrbitalIntegrals,
 ): HamiltonianProduct {
+  /** the exchange of alpha and beta is a symmetry of H */
+  const isFlippable = space.alpha === space.beta && !integrals.beta;
   const alphaHamiltonian = buildSameSpinHamiltonian(space.alpha, space.alphaReplacements, integrals);
-  const betaHamiltonian =
-    space.alpha === space.beta
-      ? alphaHamiltonian
-      : buildSameSpinHamiltonian(space.beta, space.betaReplacements, integrals);
+  const betaHamiltonian = isFlippable
+    ? alphaHamiltonian
+    : buildSameSpinHamiltonian(space.beta, space.betaReplacements, betaPart(integrals));
   const transposed = new Float64Array(space.dimension);
   const transposedProduct = new Float64Array(space.dimension);
   const oppositeSpin = prepareOppositeSpin(space, integrals);
@@ -50,7 +51,7 @@ export function prepareHamiltonianProduct(
     space,
     apply(vector, product) {
       transposeInto(space, vector, transposed);
-      const parity = space.alpha === space.beta ? spinFlipParity(vector, transposed, EXACT_PARITY) : 0;
+      const parity = isFlippable ? spinFlipParity(vector, transposed, EXACT_PARITY) : 0;
       if (parity === 0) {
         // alpha–alpha first: it ends in a copy, the others add
         transposedProduct.fill(0);
@@ -68,14 +69,14 @@ export function prepareHamiltonianProduct(
       for (let i = 0; i < product.length; i++) product[i] += integrals.coreEnergy * vector[i];
     },
     restoreSpinFlip(vector) {
-      if (space.alpha !== space.beta) return;
+      if (!isFlippable) return;
       transposeInto(space, vector, transposed);
       const parity = spinFlipParity(vector, transposed, NEAR_PARITY);
       if (parity === 0) return;
       for (let i = 0; i < vector.length; i++) vector[i] = (vector[i] + parity * transposed[i]) / 2;
     },
     spinFlipParts(vector) {
-      if (space.alpha !== space.beta) return [vector];
+      if (!isFlippable) return [vector];
       transposeInto(space, vector, transposed);
       return [1, -1].map((parity) => vector.map((value, i) => (value + parity * transposed[i]) / 2));
     },
@@ -235,14 +236,17 @@ function upToRank(counts: Int32Array, offset: number, ranks: number, rank: numbe
   return rank < 0 ? 0 : counts[offset + Math.min(rank, ranks - 1)];
 }
 
-/** (pq|rs) for all r, s; what is negligible becomes exactly zero. False: nothing is left. */
+/** (pq|rs) for all r, s of the beta electrons; what is negligible becomes exactly zero. False: nothing is left. */
 function fillIntegralRow(row: Float64Array, integrals: OrbitalIntegrals, p: number, q: number): boolean {
   const n = integrals.orbitalCount;
   const pq = packedPair(p, q);
+  const { twoElectron, beta } = integrals;
+  const mixedStart = (pq * n * (n + 1)) / 2;
   let any = false;
   for (let r = 0; r < n; r++) {
     for (let s = 0; s <= r; s++) {
-      const integral = integrals.twoElectron[packedPair(pq, packedPair(r, s))];
+      const rs = packedPair(r, s);
+      const integral = beta ? beta.mixed[mixedStart + rs] : twoElectron[packedPair(pq, rs)];
       const kept = Math.abs(integral) < NEGLIGIBLE_FACTOR ? 0 : integral;
       row[r * n + s] = kept;
       row[s * n + r] = kept;

@@ -1,4 +1,9 @@
-import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
+import {
+  betaPart,
+  type OrbitalIntegrals,
+  packedPair,
+  type SameSpinIntegrals,
+} from '../integrals/orbital-integrals';
 import {
   type Determinant,
   isOccupied,
@@ -18,9 +23,23 @@ import {
  * determinant to the left one.
  */
 
-/** (pq|rs) out of the packed array, hartree. */
-export function repulsion(integrals: OrbitalIntegrals, p: number, q: number, r: number, s: number): number {
+/** (pq|rs) of electrons of one spin, out of the packed array, hartree. */
+export function repulsion(integrals: SameSpinIntegrals, p: number, q: number, r: number, s: number): number {
   return integrals.twoElectron[packedPair(packedPair(p, q), packedPair(r, s))];
+}
+
+/** (pq|rs) with p, q alpha and r, s beta orbitals, hartree. */
+export function mixedRepulsion(
+  integrals: OrbitalIntegrals,
+  p: number,
+  q: number,
+  r: number,
+  s: number,
+): number {
+  const { beta, orbitalCount: n } = integrals;
+  return beta
+    ? beta.mixed[(packedPair(p, q) * n * (n + 1)) / 2 + packedPair(r, s)]
+    : repulsion(integrals, p, q, r, s);
 }
 
 /**
@@ -37,9 +56,17 @@ export function hamiltonianElement(
   if (alphaMoves + betaMoves > 2) return 0;
   if (alphaMoves === 1 && betaMoves === 1) return oppositeSpinDouble(left, right, integrals);
   if (alphaMoves === 2) return sameSpinDouble(left.alpha, right.alpha, integrals);
-  if (betaMoves === 2) return sameSpinDouble(left.beta, right.beta, integrals);
-  if (alphaMoves === 1) return single(left.alpha, right.alpha, right.beta, integrals);
-  if (betaMoves === 1) return single(left.beta, right.beta, right.alpha, integrals);
+  if (betaMoves === 2) return sameSpinDouble(left.beta, right.beta, betaPart(integrals));
+  if (alphaMoves === 1) {
+    return single(left.alpha, right.alpha, integrals, right.beta, (p, q, k) =>
+      mixedRepulsion(integrals, p, q, k, k),
+    );
+  }
+  if (betaMoves === 1) {
+    return single(left.beta, right.beta, betaPart(integrals), right.alpha, (p, q, k) =>
+      mixedRepulsion(integrals, k, k, p, q),
+    );
+  }
   return diagonal(right, integrals);
 }
 
@@ -48,15 +75,18 @@ function diagonal(determinant: Determinant, integrals: OrbitalIntegrals): number
   const alpha = occupiedOrbitals(determinant.alpha);
   const beta = occupiedOrbitals(determinant.beta);
   let energy = integrals.coreEnergy;
-  for (const occupied of [alpha, beta]) {
+  for (const [occupied, ofSpin] of [
+    [alpha, integrals],
+    [beta, betaPart(integrals)],
+  ] as const) {
     for (const i of occupied) {
-      energy += integrals.oneElectron[i * integrals.orbitalCount + i];
+      energy += ofSpin.oneElectron[i * ofSpin.orbitalCount + i];
       for (const j of occupied) {
-        if (j < i) energy += repulsion(integrals, i, i, j, j) - repulsion(integrals, i, j, j, i);
+        if (j < i) energy += repulsion(ofSpin, i, i, j, j) - repulsion(ofSpin, i, j, j, i);
       }
     }
   }
-  for (const i of alpha) for (const j of beta) energy += repulsion(integrals, i, i, j, j);
+  for (const i of alpha) for (const j of beta) energy += mixedRepulsion(integrals, i, i, j, j);
   return energy;
 }
 
@@ -64,8 +94,9 @@ function diagonal(determinant: Determinant, integrals: OrbitalIntegrals): number
 function single(
   left: OccupationString,
   right: OccupationString,
+  integrals: SameSpinIntegrals,
   otherSpin: OccupationString,
-  integrals: OrbitalIntegrals,
+  coulombOfOther: (p: number, q: number, k: number) => number,
 ): number {
   const [q] = orbitalsOnlyIn(right, left);
   const [p] = orbitalsOnlyIn(left, right);
@@ -73,7 +104,7 @@ function single(
   for (const k of occupiedOrbitals(right)) {
     element += repulsion(integrals, p, q, k, k) - repulsion(integrals, p, k, k, q);
   }
-  for (const k of occupiedOrbitals(otherSpin)) element += repulsion(integrals, p, q, k, k);
+  for (const k of occupiedOrbitals(otherSpin)) element += coulombOfOther(p, q, k);
   return replacementPhase(right, q, p) * element;
 }
 
@@ -81,7 +112,7 @@ function single(
 function sameSpinDouble(
   left: OccupationString,
   right: OccupationString,
-  integrals: OrbitalIntegrals,
+  integrals: SameSpinIntegrals,
 ): number {
   const [q, s] = orbitalsOnlyIn(right, left);
   const [p, r] = orbitalsOnlyIn(left, right);
@@ -98,7 +129,7 @@ function oppositeSpinDouble(left: Determinant, right: Determinant, integrals: Or
   const [s] = orbitalsOnlyIn(right.beta, left.beta);
   const [r] = orbitalsOnlyIn(left.beta, right.beta);
   const phase = replacementPhase(right.alpha, q, p) * replacementPhase(right.beta, s, r);
-  return phase * repulsion(integrals, p, q, r, s);
+  return phase * mixedRepulsion(integrals, p, q, r, s);
 }
 
 /**

@@ -1,3 +1,5 @@
+import type { BetaIntegrals } from '../integrals/orbital-integrals';
+import { congruence, transpose } from '../linear-algebra/dense';
 import { type SymmetricEigen, symmetricEigen } from '../linear-algebra/symmetric-eigen';
 import { type DeterminantSpace, type Rows, transposeInto } from './determinant-space';
 import { rankChange, type SingleReplacements } from './replacements';
@@ -23,34 +25,67 @@ export function transitionDensity(
   left: Float64Array,
   right: Float64Array,
 ): Float64Array {
-  const density = new Float64Array(space.orbitalCount ** 2);
-  addSpinDensity(
-    density,
-    space.alpha,
-    space.alphaReplacements,
-    space.beta,
-    space.rows,
-    space.maximumRank,
-    left,
-    right,
+  const [alpha, beta] = spinDensities(space, left, right);
+  return alpha.map((value, i) => value + beta[i]);
+}
+
+/**
+ * The same where beta orbitals differ, brought to the alpha orbitals: γ(α) + S γ(β) Sᵀ, frozen electrons included.
+ *
+ * @returns over all m alpha orbitals, m×m symmetric, row-major
+ */
+export function unrestrictedTransitionDensity(
+  space: DeterminantSpace,
+  left: Float64Array,
+  right: Float64Array,
+  { overlap, frozen }: BetaIntegrals,
+): Float64Array {
+  const m = Math.sqrt(overlap.length);
+  // different states are orthogonal, and nothing of the frozen orbitals is between them
+  const occupation = left === right ? 1 : 0;
+  const [alpha, beta] = spinDensities(space, left, right).map((density) =>
+    padDensity(density, m, frozen, occupation),
   );
+  const turned = congruence(beta, transpose(overlap, m, m), m, m);
+  return alpha.map((value, i) => value + turned[i]);
+}
+
+/** A density over n orbitals as one over m: `frozen` orbitals of equal occupation before them, empty ones after. */
+export function padDensity(
+  density: Float64Array,
+  m: number,
+  frozen: number,
+  occupation: number,
+): Float64Array {
+  const n = Math.sqrt(density.length);
+  const padded = new Float64Array(m * m);
+  for (let i = 0; i < frozen; i++) padded[i * m + i] = occupation;
+  for (let p = 0; p < n; p++) {
+    padded.set(density.subarray(p * n, (p + 1) * n), (p + frozen) * m + frozen);
+  }
+  return padded;
+}
+
+/** Of alpha and of beta electrons, symmetric parts, n×n each. */
+function spinDensities(
+  space: DeterminantSpace,
+  left: Float64Array,
+  right: Float64Array,
+): readonly [Float64Array, Float64Array] {
   const transposed = (vector: Float64Array): Float64Array => {
     const turned = new Float64Array(vector.length);
     transposeInto(space, vector, turned);
     return turned;
   };
+  const { alpha, beta, alphaReplacements, betaReplacements, maximumRank } = space;
+  const ofAlpha = new Float64Array(space.orbitalCount ** 2);
+  addSpinDensity(ofAlpha, alpha, alphaReplacements, beta, space.rows, maximumRank, left, right);
+  const ofBeta = new Float64Array(space.orbitalCount ** 2);
   const turnedLeft = transposed(left);
-  addSpinDensity(
-    density,
-    space.beta,
-    space.betaReplacements,
-    space.alpha,
-    space.transposedRows,
-    space.maximumRank,
-    turnedLeft,
-    left === right ? turnedLeft : transposed(right),
-  );
-  return density;
+  const turnedRight = left === right ? turnedLeft : transposed(right);
+  const rows = space.transposedRows;
+  addSpinDensity(ofBeta, beta, betaReplacements, alpha, rows, maximumRank, turnedLeft, turnedRight);
+  return [ofAlpha, ofBeta];
 }
 
 /** Adds Σ over rows and replacements of a pair: sign·½(l(row, I)·r(row, J) + l(row, J)·r(row, I)). */

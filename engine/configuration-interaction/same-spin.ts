@@ -1,4 +1,4 @@
-import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
+import { packedPair, type SameSpinIntegrals } from '../integrals/orbital-integrals';
 import { moveElectron, occupiedOrbitals, replacementPhase } from './determinants';
 import { repulsion } from './matrix-elements';
 import { countSameSpinEntries, type SingleReplacements } from './replacements';
@@ -24,7 +24,7 @@ export interface SameSpinHamiltonian {
 export function buildSameSpinHamiltonian(
   space: StringSpace,
   replacements: SingleReplacements,
-  integrals: OrbitalIntegrals,
+  integrals: SameSpinIntegrals,
 ): SameSpinHamiltonian {
   const n = space.orbitalCount;
   const capacity = countSameSpinEntries(space.electrons, n - space.electrons, rankCounts(space));
@@ -59,7 +59,7 @@ export function buildSameSpinHamiltonian(
 }
 
 /** Σᵢ (i|h|i) + Σ over pairs [(ii|jj) − (ij|ji)]. */
-export function stringEnergy(occupied: readonly number[], integrals: OrbitalIntegrals): number {
+export function stringEnergy(occupied: readonly number[], integrals: SameSpinIntegrals): number {
   let energy = 0;
   for (const i of occupied) {
     energy += integrals.oneElectron[i * integrals.orbitalCount + i];
@@ -75,7 +75,7 @@ function singleFactor(
   p: number,
   q: number,
   occupied: readonly number[],
-  integrals: OrbitalIntegrals,
+  integrals: SameSpinIntegrals,
 ): number {
   const { twoElectron } = integrals;
   const pq = packedPair(p, q);
@@ -93,7 +93,7 @@ function addDoubles(
   space: StringSpace,
   string: Int32Array,
   occupied: readonly number[],
-  integrals: OrbitalIntegrals,
+  integrals: SameSpinIntegrals,
   add: (place: number, element: number) => void,
 ): void {
   const n = space.orbitalCount;

@@ -61,17 +61,23 @@ const BYTES_PER_SAME_SPIN_ENTRY = 2 * (4 + 8);
 /** Vectors beside the eigensolver's: the diagonal, two transposed ones, one gathered. */
 const WORKING_VECTORS = 4;
 
-/** Upper bound of the memory that `solveConfigurationInteraction` takes, in bytes; integrals not included. */
+/**
+ * Upper bound of the memory that `solveConfigurationInteraction` takes, in bytes; integrals not included.
+ *
+ * @param spinsDiffer - beta electrons have orbitals of their own
+ */
 export function configurationInteractionBytes(
   orbitalCount: number,
   alphaElectrons: number,
   betaElectrons: number,
   rankLimit: number,
   states: number,
+  spinsDiffer = false,
 ): number {
   const determinants = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, rankLimit);
   const vectors = davidsonVectorCount(basisVectorLimit(states)) + WORKING_VECTORS;
-  const spins = alphaElectrons === betaElectrons ? [alphaElectrons] : [alphaElectrons, betaElectrons];
+  const spins =
+    alphaElectrons === betaElectrons && !spinsDiffer ? [alphaElectrons] : [alphaElectrons, betaElectrons];
   let bytes = 8 * determinants * vectors;
   for (const electrons of spins) {
     const virtuals = orbitalCount - electrons;

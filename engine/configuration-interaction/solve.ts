@@ -1,19 +1,24 @@
 import { EngineError } from '../errors';
-import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
+import type { BetaIntegrals, OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import type { DistinguishingOperator } from './degenerate-states';
-import { type ConfigurationInteractionState, describeState, leadingSign } from './describe-state';
+import {
+  applySpin,
+  type ConfigurationInteractionState,
+  densityBetween,
+  describeState,
+  leadingSign,
+} from './describe-state';
 import { buildDeterminantSpace, type DeterminantSpace, determinantAt } from './determinant-space';
 import { occupiedOrbitals } from './determinants';
-import { spinAveragedDiagonal } from './diagonal';
+import { spinAveragedDiagonal, unrestrictedDiagonal } from './diagonal';
 import { type HamiltonianProduct, prepareHamiltonianProduct } from './hamiltonian-product';
 import { findLowestStates } from './lowest-states';
 import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
-import { transitionDensity } from './one-particle-density';
 import { configurationInteractionBytes, countDeterminants } from './size';
-import { applySpinSquared } from './spin';
 import { stringAt } from './string-space';
+import { unrestrictedSpin, unrestrictedSpinSquaredElement } from './unrestricted-spin';
 import { determinantSymmetry, type OrbitalSpecies, type SpaceSymmetry } from './vector-symmetry';
 
 export interface ConfigurationInteractionOptions {
@@ -62,7 +67,8 @@ const SAME_SPIN = 1e-3;
  * the same however the iteration mixed them; a degenerate set cut by `states` is converged as a whole first.
  *
  * In a truncated open-shell space the determinants do not close under spin: ⟨S²⟩ is the exact expectation value
- * of the vector, and need not be S(S + 1).
+ * of the vector, and need not be S(S + 1). The same holds for any truncated space over beta orbitals that differ from
+ * the alpha ones.
  *
  * @throws EngineError `study.tooLarge` before anything is allocated, if more than `memoryLimit` would be taken
  * @throws RangeError if the electrons do not fit the orbitals, or `states` or `maximumRank` is not positive
@@ -72,26 +78,31 @@ export function solveConfigurationInteraction(
   options: ConfigurationInteractionOptions,
 ): ConfigurationInteractionResult {
   const settings = { ...DEFAULTS, ...options };
-  checkOptions(integrals.orbitalCount, settings);
+  checkOptions(integrals, settings);
   const { alphaElectrons, betaElectrons, maximumRank } = settings;
+  const { beta } = integrals;
   const space = buildDeterminantSpace(integrals.orbitalCount, alphaElectrons, betaElectrons, maximumRank);
   const product = prepareHamiltonianProduct(space, integrals);
   const symmetry = settings.species && determinantSymmetry(space, settings.species);
   const found = findLowestStates(
     {
       dimension: space.dimension,
-      diagonal: spinAveragedDiagonal(space, integrals),
+      diagonal: beta ? unrestrictedDiagonal(space, integrals) : spinAveragedDiagonal(space, integrals),
       apply: product.apply,
       restoreSymmetry: product.restoreSpinFlip,
       partsOf: product.spinFlipParts,
       elementsAmong: (places) => {
+        const spin = beta && unrestrictedSpin(beta, integrals.orbitalCount, [alphaElectrons, betaElectrons]);
         const determinants = Array.from(places, (place) => determinantAt(space, place));
         return {
           hamiltonian: (i, j) => hamiltonianElement(determinants[i], determinants[j], integrals),
-          spinSquared: (i, j) => spinSquaredElement(determinants[i], determinants[j]),
+          spinSquared: (i, j) =>
+            spin
+              ? unrestrictedSpinSquaredElement(determinants[i], determinants[j], spin)
+              : spinSquaredElement(determinants[i], determinants[j]),
         };
       },
-      distinguishing: distinguishingOperators(space, symmetry),
+      distinguishing: distinguishingOperators(space, symmetry, beta),
     },
     { ...settings, stage: 'configuration interaction' },
   );
@@ -101,8 +112,8 @@ export function solveConfigurationInteraction(
     const energy = found.values[k];
     const residual = residualNorm(product, vector, energy, scratch);
     return {
-      ...describeState(space, vector, energy, residual),
-      ...(k > 0 && { transitionDensity: transitionFromLowest(space, found.vectors[0], vector) }),
+      ...describeState(space, vector, energy, residual, beta),
+      ...(k > 0 && { transitionDensity: transitionFromLowest(space, found.vectors[0], vector, beta) }),
       ...(symmetry && { symmetry: symmetry.describe(vector) }),
     };
   });
@@ -119,13 +130,14 @@ function transitionFromLowest(
   space: DeterminantSpace,
   lowest: Float64Array,
   vector: Float64Array,
+  beta: BetaIntegrals | undefined,
 ): Float64Array {
   const sign = leadingSign(lowest) * leadingSign(vector);
-  return transitionDensity(space, lowest, vector).map((element) => sign * element);
+  return densityBetween(space, lowest, vector, beta).map((element) => sign * element);
 }
 
 function checkOptions(
-  orbitalCount: number,
+  { orbitalCount, beta }: OrbitalIntegrals,
   options: ConfigurationInteractionOptions & { readonly memoryLimit: number },
 ): void {
   const { alphaElectrons, betaElectrons, maximumRank, states } = options;
@@ -142,6 +154,7 @@ function checkOptions(
     betaElectrons,
     maximumRank,
     states,
+    beta !== undefined,
   );
   // places in vectors and lists are 32-bit numbers
   const count = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, maximumRank);
@@ -162,12 +175,13 @@ function checkOptions(
 function distinguishingOperators(
   space: DeterminantSpace,
   symmetry: SpaceSymmetry | undefined,
+  beta: BetaIntegrals | undefined,
 ): DistinguishingOperator[] {
   let labels: Float64Array | undefined;
   return [
     {
       tolerance: SAME_SPIN,
-      apply: (vector, product) => applySpinSquared(space, vector, product),
+      apply: (vector, product) => applySpin(space, vector, product, beta),
     },
     ...(symmetry?.distinguishingOperators() ?? []),
     {

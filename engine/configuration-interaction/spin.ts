@@ -44,16 +44,12 @@ export function spinName(sSquared: number): SpinName {
  * S² = M(M + 1) + N(β) − Σ over p, q of a†(qα)a(pα) a†(pβ)a(qβ), M = (N(α) − N(β))/2.
  */
 export function applySpinSquared(space: DeterminantSpace, vector: Float64Array, product: Float64Array): void {
-  const { alpha, beta, alphaReplacements, betaReplacements, rows, orbitalCount: n } = space;
-  const { byPairStart, pairSource, pairTarget, pairSign, pairCountUpToRank } = alphaReplacements;
-  const ranks = alpha.maximumRank + 1;
+  const { alpha, beta, betaReplacements, orbitalCount: n } = space;
   const projection = (alpha.electrons - beta.electrons) / 2;
   const diagonal = projection * (projection + 1) + beta.electrons;
   for (let i = 0; i < vector.length; i++) product[i] = diagonal * vector[i];
 
   for (let target = 0; target < beta.count; target++) {
-    const targetStart = rows.start[target];
-    const targetLimit = space.maximumRank - beta.ranks[target];
     for (
       let e = betaReplacements.byStringStart[target];
       e < betaReplacements.byStringStart[target + 1];
@@ -62,16 +58,36 @@ export function applySpinSquared(space: DeterminantSpace, vector: Float64Array, 
       const source = betaReplacements.source[e];
       const p = Math.trunc(betaReplacements.pair[e] / n);
       const q = betaReplacements.pair[e] % n;
-      const opposite = q * n + p;
-      const limit = Math.min(targetLimit, space.maximumRank - beta.ranks[source] + rankChange(alpha, q, p));
-      if (limit < 0) continue;
-      const first = byPairStart[opposite];
-      const last = first + pairCountUpToRank[opposite * ranks + Math.min(limit, ranks - 1)];
-      const sourceStart = rows.start[source];
-      const sign = betaReplacements.sign[e];
-      for (let k = first; k < last; k++) {
-        product[targetStart + pairTarget[k]] -= sign * pairSign[k] * vector[sourceStart + pairSource[k]];
-      }
+      addAlphaReplacements(space, vector, product, target, source, q, p, -betaReplacements.sign[e]);
     }
+  }
+}
+
+/** product(row target) += factor·a†(pα)a(qα) vector(row source), rows of beta strings. */
+export function addAlphaReplacements(
+  space: DeterminantSpace,
+  vector: Float64Array,
+  product: Float64Array,
+  target: number,
+  source: number,
+  p: number,
+  q: number,
+  factor: number,
+): void {
+  const { alpha, beta, alphaReplacements, rows, maximumRank, orbitalCount: n } = space;
+  const { byPairStart, pairSource, pairTarget, pairSign, pairCountUpToRank } = alphaReplacements;
+  const ranks = alpha.maximumRank + 1;
+  const pair = p * n + q;
+  const limit = Math.min(
+    maximumRank - beta.ranks[target],
+    maximumRank - beta.ranks[source] + rankChange(alpha, p, q),
+  );
+  if (limit < 0) return;
+  const first = byPairStart[pair];
+  const last = first + pairCountUpToRank[pair * ranks + Math.min(limit, ranks - 1)];
+  const targetStart = rows.start[target];
+  const sourceStart = rows.start[source];
+  for (let k = first; k < last; k++) {
+    product[targetStart + pairTarget[k]] += factor * pairSign[k] * vector[sourceStart + pairSource[k]];
   }
 }

@@ -34,8 +34,8 @@ export function transformToOrbitals(input: OrbitalTransformationInput): OrbitalI
   const frozenOrbitals = selectColumns(coefficients, orbitalCount, 0, frozen);
   const activeOrbitals = selectColumns(coefficients, orbitalCount, frozen, active);
 
-  const meanField =
-    frozen === 0 ? oneElectron : frozenMeanField(oneElectron, repulsion, frozenOrbitals, n, frozen);
+  const density = frozenDensity(frozenOrbitals, n, frozen);
+  const meanField = frozen === 0 ? oneElectron : frozenMeanField(oneElectron, repulsion, density, density, n);
   let coreEnergy = nuclearRepulsion;
   const frozenCore = transformOneElectron(oneElectron, frozenOrbitals, n, frozen);
   const frozenField = transformOneElectron(meanField, frozenOrbitals, n, frozen);
@@ -83,7 +83,18 @@ function congruenceInto(
   }
 }
 
-function transformTwoElectron(
+/** (pq|rs) over orbitals, 8-fold packed. */
+export function transformTwoElectron(
+  repulsion: Float64Array,
+  orbitals: Float64Array,
+  n: number,
+  m: number,
+): Float64Array {
+  return transformEqualPair(transformFirstPair(repulsion, orbitals, n, m), orbitals, n, m);
+}
+
+/** (pq|μν), a row for each orbital pair, so that the second sweep runs along memory. */
+export function transformFirstPair(
   repulsion: Float64Array,
   orbitals: Float64Array,
   n: number,
@@ -94,8 +105,6 @@ function transformTwoElectron(
   const square = new Float64Array(n * n);
   const half = new Float64Array(n * m);
   const transformed = new Float64Array(m * m);
-
-  // (pq|μν), a row for each orbital pair, so that the second sweep runs along memory
   const halfTransformed = new Float64Array(orbitalPairs * functionPairs);
   for (let pair = 0; pair < functionPairs; pair++) {
     for (let mu = 0, other = 0; mu < n; mu++) {
@@ -112,9 +121,58 @@ function transformTwoElectron(
       }
     }
   }
+  return halfTransformed;
+}
 
+/** (pq|rs) with all four out of the same orbitals, 8-fold packed. */
+export function transformEqualPair(
+  halfTransformed: Float64Array,
+  orbitals: Float64Array,
+  n: number,
+  m: number,
+): Float64Array {
+  const orbitalPairs = (m * (m + 1)) / 2;
   const result = new Float64Array((orbitalPairs * (orbitalPairs + 1)) / 2);
-  for (let orbitalPair = 0, at = 0; orbitalPair < orbitalPairs; orbitalPair++) {
+  let at = 0;
+  forSecondPairs(halfTransformed, orbitals, n, m, (orbitalPair, transformed) => {
+    for (let r = 0, other = 0; other <= orbitalPair; r++) {
+      for (let s = 0; s <= r && other <= orbitalPair; s++, other++) result[at++] = transformed[r * m + s];
+    }
+  });
+  return result;
+}
+
+/** (pq|rs) with r, s out of other orbitals than p, q: pairs × pairs, a row for each pair pq. */
+export function transformOtherPair(
+  halfTransformed: Float64Array,
+  orbitals: Float64Array,
+  n: number,
+  m: number,
+): Float64Array {
+  const result = new Float64Array(((m * (m + 1)) / 2) ** 2);
+  let at = 0;
+  forSecondPairs(halfTransformed, orbitals, n, m, (_, transformed) => {
+    for (let r = 0; r < m; r++) {
+      for (let s = 0; s <= r; s++) result[at++] = transformed[r * m + s];
+    }
+  });
+  return result;
+}
+
+/** (pq|rs) for all r, s, m×m, one pair pq after another. */
+function forSecondPairs(
+  halfTransformed: Float64Array,
+  orbitals: Float64Array,
+  n: number,
+  m: number,
+  take: (orbitalPair: number, transformed: Float64Array) => void,
+): void {
+  const functionPairs = (n * (n + 1)) / 2;
+  const orbitalPairs = (m * (m + 1)) / 2;
+  const square = new Float64Array(n * n);
+  const half = new Float64Array(n * m);
+  const transformed = new Float64Array(m * m);
+  for (let orbitalPair = 0; orbitalPair < orbitalPairs; orbitalPair++) {
     for (let mu = 0, source = orbitalPair * functionPairs; mu < n; mu++) {
       for (let nu = 0; nu <= mu; nu++, source++) {
         square[mu * n + nu] = halfTransformed[source];
@@ -122,21 +180,12 @@ function transformTwoElectron(
       }
     }
     congruenceInto(square, orbitals, n, m, half, transformed);
-    for (let r = 0, other = 0; other <= orbitalPair; r++) {
-      for (let s = 0; s <= r && other <= orbitalPair; s++, other++) result[at++] = transformed[r * m + s];
-    }
+    take(orbitalPair, transformed);
   }
-  return result;
 }
 
-/** h + Σ_f (2J_f − K_f) over basis functions, with D = Σ_f C_f C_fᵀ. */
-function frozenMeanField(
-  oneElectron: Float64Array,
-  repulsion: Float64Array,
-  frozenOrbitals: Float64Array,
-  n: number,
-  frozen: number,
-): Float64Array {
+/** Σ_f C_f C_fᵀ over n functions. */
+export function frozenDensity(frozenOrbitals: Float64Array, n: number, frozen: number): Float64Array {
   const density = new Float64Array(n * n);
   for (let mu = 0; mu < n; mu++) {
     for (let nu = 0; nu < n; nu++) {
@@ -145,6 +194,17 @@ function frozenMeanField(
       }
     }
   }
+  return density;
+}
+
+/** h + J − K over n functions, in the field of frozen electrons of the same and of the other spin. */
+export function frozenMeanField(
+  oneElectron: Float64Array,
+  repulsion: Float64Array,
+  sameSpin: Float64Array,
+  otherSpin: Float64Array,
+  n: number,
+): Float64Array {
   const field = Float64Array.from(oneElectron);
   for (let mu = 0; mu < n; mu++) {
     for (let nu = 0; nu < n; nu++) {
@@ -153,7 +213,8 @@ function frozenMeanField(
         for (let sigma = 0; sigma < n; sigma++) {
           const coulomb = repulsion[packedPair(packedPair(mu, nu), packedPair(lambda, sigma))];
           const exchange = repulsion[packedPair(packedPair(mu, lambda), packedPair(nu, sigma))];
-          sum += density[lambda * n + sigma] * (2 * coulomb - exchange);
+          const place = lambda * n + sigma;
+          sum += (sameSpin[place] + otherSpin[place]) * coulomb - sameSpin[place] * exchange;
         }
       }
       field[mu * n + nu] += sum;
@@ -163,7 +224,12 @@ function frozenMeanField(
 }
 
 /** `count` columns of a row-major matrix with `columns` columns, from `first` on. */
-function selectColumns(matrix: Float64Array, columns: number, first: number, count: number): Float64Array {
+export function selectColumns(
+  matrix: Float64Array,
+  columns: number,
+  first: number,
+  count: number,
+): Float64Array {
   const rows = matrix.length / columns;
   const selected = new Float64Array(rows * count);
   for (let row = 0; row < rows; row++) {

@@ -62,12 +62,13 @@ function spinOrbitalsOf({ alpha, beta }: Occupation, n: number): number[] {
   return [...alpha, ...beta.map((p) => n + p)];
 }
 
-/** Σ f(pq) a†(pσ) a(qσ). */
+/** Σ f(pq) a†(pσ) a(qσ); the operator over beta orbitals where they differ. */
 export function bruteOneElectron(
   left: Occupation,
   right: Occupation,
   operator: Float64Array,
   n: number,
+  ofBeta = operator,
 ): number {
   let sum = 0;
   for (const p of spinOrbitalsOf(left, n)) {
@@ -78,7 +79,7 @@ export function bruteOneElectron(
         [creates(p), annihilates(q)],
         occupationBits(right, n),
       );
-      sum += sign * operator[(p % n) * n + (q % n)];
+      sum += sign * (p < n ? operator : ofBeta)[(p % n) * n + (q % n)];
     }
   }
   return sum;
@@ -91,7 +92,7 @@ export function bruteHamiltonian(left: Occupation, right: Occupation, integrals:
   const rightBits = occupationBits(right, n);
   let sum =
     (leftBits === rightBits ? integrals.coreEnergy : 0) +
-    bruteOneElectron(left, right, integrals.oneElectron, n);
+    bruteOneElectron(left, right, integrals.oneElectron, n, integrals.beta?.oneElectron);
   for (const p of spinOrbitalsOf(left, n)) {
     for (const r of spinOrbitalsOf(left, n)) {
       for (const q of spinOrbitalsOf(right, n)) {
@@ -103,13 +104,22 @@ export function bruteHamiltonian(left: Occupation, right: Occupation, integrals:
             rightBits,
           );
           if (sign === 0) continue;
-          const place = packedPair(packedPair(p % n, q % n), packedPair(r % n, s % n));
-          sum += 0.5 * sign * integrals.twoElectron[place];
+          sum += 0.5 * sign * repulsionOf(integrals, p, q, r, s);
         }
       }
     }
   }
   return sum;
+}
+
+/** (pq|rs) over spin orbitals. */
+function repulsionOf(integrals: OrbitalIntegrals, p: number, q: number, r: number, s: number): number {
+  const { orbitalCount: n, twoElectron, beta } = integrals;
+  const [bra, ket] = [packedPair(p % n, q % n), packedPair(r % n, s % n)];
+  if (!beta || (p < n && r < n)) return twoElectron[packedPair(bra, ket)];
+  if (p >= n && r >= n) return beta.twoElectron[packedPair(bra, ket)];
+  const pairs = (n * (n + 1)) / 2;
+  return p < n ? beta.mixed[bra * pairs + ket] : beta.mixed[ket * pairs + bra];
 }
 
 /** H on a vector, operator by operator; for Hamiltonians with few integrals that are not zero. */
@@ -151,6 +161,34 @@ export function bruteSpinSquared(left: Occupation, right: Occupation, n: number)
       sum += matrixElement(leftBits, operators, rightBits);
     }
   }
+  return sum;
+}
+
+/** S₋S₊ + S_z(S_z + 1) with S₊ = Σ ⟨p|r⟩ a†(pα) a(rβ) over orbitals that differ; `overlap` n×n orthogonal. */
+export function bruteUnrestrictedSpinSquared(
+  left: Occupation,
+  right: Occupation,
+  overlap: Float64Array,
+  n: number,
+): number {
+  const leftBits = occupationBits(left, n);
+  const ket: OccupationVector = new Map([[occupationBits(right, n), 1]]);
+  const projection = (right.alpha.length - right.beta.length) / 2;
+  let sum = (ket.get(leftBits) ?? 0) * projection * (projection + 1);
+  const raised = (vector: OccupationVector): OccupationVector => {
+    const result: OccupationVector = new Map();
+    for (let p = 0; p < n; p++) {
+      for (let r = 0; r < n; r++) {
+        for (const [bits, value] of applyOperators([creates(p), annihilates(n + r)], vector)) {
+          result.set(bits, (result.get(bits) ?? 0) + overlap[p * n + r] * value);
+        }
+      }
+    }
+    return result;
+  };
+  // ⟨left|S₋S₊|right⟩ = ⟨S₊ left|S₊ right⟩
+  const bra = raised(new Map([[leftBits, 1]]));
+  for (const [bits, value] of raised(ket)) sum += value * (bra.get(bits) ?? 0);
   return sum;
 }
 

@@ -1,5 +1,6 @@
 import { type OrbitalIntegrals, packedPair } from '../../engine/integrals/orbital-integrals';
-import { seededRandom } from './random';
+import { symmetricEigen } from '../../engine/linear-algebra/symmetric-eigen';
+import { randomArray, randomSymmetric, seededRandom } from './random';
 
 export interface RandomIntegralsOptions {
   /** size of the off-diagonal and two-electron parts; the one-electron diagonal rises by 1 per orbital */
@@ -41,6 +42,32 @@ export function randomOrbitalIntegrals(
     }
   }
   return { orbitalCount, coreEnergy: 0.37, oneElectron, twoElectron };
+}
+
+/** Random integrals in which beta electrons have orbitals of their own, `empty` of each spin left out. */
+export function randomUnrestrictedIntegrals(
+  orbitalCount: number,
+  seed: number,
+  { frozen = 0, empty = 0 } = {},
+): OrbitalIntegrals {
+  const { oneElectron, twoElectron } = randomOrbitalIntegrals(orbitalCount, seed + 1);
+  const pairs = (orbitalCount * (orbitalCount + 1)) / 2;
+  const random = seededRandom(seed + 2);
+  return {
+    ...randomOrbitalIntegrals(orbitalCount, seed),
+    beta: {
+      oneElectron,
+      twoElectron,
+      mixed: randomArray(pairs * pairs, random),
+      overlap: randomOrthogonal(frozen + orbitalCount + empty, random),
+      frozen,
+    },
+  };
+}
+
+/** m×m. */
+export function randomOrthogonal(m: number, random: () => number): Float64Array {
+  return symmetricEigen(randomSymmetric(m, random), m).vectors;
 }
 
 /** The same Hamiltonian over the orbitals Σ_p |p⟩ C(p, i), C orthogonal, row-major. */

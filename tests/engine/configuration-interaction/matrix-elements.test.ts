@@ -14,7 +14,7 @@ import {
   type Occupation,
 } from '../../support/operator-algebra';
 import { randomSymmetric, seededRandom } from '../../support/random';
-import { randomOrbitalIntegrals } from '../../support/random-orbital-integrals';
+import { randomOrbitalIntegrals, randomUnrestrictedIntegrals } from '../../support/random-orbital-integrals';
 
 const asDeterminant = (n: number, { alpha, beta }: Occupation) => ({
   alpha: occupationString(n, alpha),
@@ -74,6 +74,21 @@ describe('matrix elements between determinants', () => {
       }),
       { seed: 20, numRuns: 200 },
     );
+  });
+
+  it('identity: H over alpha and beta orbitals that differ equals operator algebra', () => {
+    const n = 5;
+    let moved = 0;
+    fc.assert(
+      fc.property(determinantPair(n), fc.nat(1000), ([left, right], seed) => {
+        const integrals = randomUnrestrictedIntegrals(n, seed);
+        const element = hamiltonianElement(asDeterminant(n, left), asDeterminant(n, right), integrals);
+        expect(element).toBeCloseTo(bruteHamiltonian(left, right, integrals), 11);
+        if (element !== 0) moved++;
+      }),
+      { seed: 21, numRuns: 300 },
+    );
+    expect(moved).toBeGreaterThan(100);
   });
 
   it('identity: the same across the borders of 32-bit words, 70 orbitals', () => {
