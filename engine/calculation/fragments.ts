@@ -112,7 +112,8 @@ function channelsOf(prepared: PreparedStudy, parts: Parts): Channel[] {
     part.reduce((sum, index) => sum + atoms[index].nuclearCharge, 0),
   );
   const channels: Channel[] = [];
-  const from = Math.ceil(charge / 2 - LARGEST_CHARGE_SHIFT);
+  // + 0 makes 0 of −0
+  const from = Math.ceil(charge / 2 - LARGEST_CHARGE_SHIFT) + 0;
   for (let first = from; first <= charge / 2 + LARGEST_CHARGE_SHIFT; first++) {
     const charges = [first, charge - first] as const;
     const [one, other] = charges.map((value, part) => multiplicitiesOf(nuclearCharges[part] - value));
