@@ -7,7 +7,7 @@ interface SpectroscopicFactsProps {
   readonly results: StudyResults;
 }
 
-/** Constants of a diatomic molecule beside measured ones, and its vibrational levels; folded until asked for. */
+/** Constants of a diatomic molecule beside measured ones, and how many vibrational levels it has; folded until asked for. */
 export function SpectroscopicFacts({ level, results }: SpectroscopicFactsProps) {
   const findings = results.findings[level];
   if (!findings?.constants?.diatomic) return null;
@@ -15,7 +15,7 @@ export function SpectroscopicFacts({ level, results }: SpectroscopicFactsProps) 
   const constants = comparedConstants(results).filter(({ byLevel }) => byLevel.has(level));
   return (
     <details>
-      <summary>Constants{vibration?.kind === 'found' && ' and vibrational levels'}</summary>
+      <summary>Constants</summary>
       <dl className="facts">
         {constants.map(({ symbol, name, unit, decimals, byLevel, measured }) => (
           <div key={symbol}>
@@ -35,7 +35,7 @@ export function SpectroscopicFacts({ level, results }: SpectroscopicFactsProps) 
         ))}
         {vibration?.kind === 'found' && (
           <div>
-            <dt>Bound levels</dt>
+            <dt>Bound vibrational levels</dt>
             <dd>{vibration.boundLevels}</dd>
           </div>
         )}
