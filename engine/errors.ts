@@ -32,6 +32,7 @@ export interface EngineErrorDetails {
   'level.needsClosedShell': { readonly level: string; readonly multiplicity: number };
   'level.tooFewOrbitals': { readonly level: string; readonly orbitals: number };
   'study.active': { readonly electrons: number; readonly orbitals: number };
+  'study.orbitals': { readonly level: string };
   'study.states': { readonly states: number };
   'study.convergence': { readonly tolerance: number };
   'study.tooLarge': { readonly bytes: number; readonly limit: number };

@@ -83,9 +83,10 @@ function reportedFile(results: StudyResults, name: string, sentence: string): Re
   };
 }
 
-function correlatedText({ active, frozenCore }: StudyResults['study']): string {
-  if (active) return `CI of ${active.electrons} electrons in ${active.orbitals} orbitals`;
-  return frozenCore ? 'core electrons not correlated' : 'all electrons correlated';
+function correlatedText({ active, frozenCore, orbitals }: StudyResults['study']): string {
+  const onOrbitals = orbitals === 'unrestricted' ? '; CI on UHF orbitals' : '';
+  if (active) return `CI of ${active.electrons} electrons in ${active.orbitals} orbitals${onOrbitals}`;
+  return `${frozenCore ? 'core electrons not correlated' : 'all electrons correlated'}${onOrbitals}`;
 }
 
 /** How what is in the tables of findings was found, as far as there is any. */

@@ -146,6 +146,7 @@ const correlated = z.looseObject({
   iterations: z.number(),
   determinants: z.number(),
   referenceWeight: number,
+  reference: z.literal('UHF').exactOptional(),
   sSquared: number,
   spin,
   symmetry: stateSymmetry.exactOptional(),

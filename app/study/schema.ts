@@ -176,5 +176,9 @@ export const studySchema: z.ZodType<Study> = closed({
   states: countingNumber.optional(),
   frozenCore: yesOrNo.optional(),
   active: closed({ electrons: countingNumber, orbitals: countingNumber }).optional(),
+  orbitals: leaf<'restricted' | 'unrestricted'>(
+    '"restricted" or "unrestricted"',
+    (value) => value === 'restricted' || value === 'unrestricted',
+  ).optional(),
   convergence: closed({ energy: number.optional() }).optional(),
 });

@@ -29,7 +29,7 @@ export function studySentence(study: Study): string {
 
 /** The study sentence in pieces, so that a window can let each value be edited and show an issue at its word. */
 export function sentenceParts(study: Study): readonly SentencePart[] {
-  const { molecule, scan, levels, states = 1, frozenCore, active } = study;
+  const { molecule, scan, levels, states = 1, frozenCore, active, orbitals } = study;
   const moleculePart = value('molecule', 'molecule', moleculeText(study));
   return [
     ...(scan
@@ -55,6 +55,7 @@ export function sentenceParts(study: Study): readonly SentencePart[] {
           value('core', 'active', `${active.electrons} electrons in ${active.orbitals} orbitals active`),
         ]
       : []),
+    ...(orbitals === 'unrestricted' ? [plain(', '), value('core', 'orbitals', 'on UHF orbitals')] : []),
     plain('.'),
   ];
 }
@@ -79,6 +80,7 @@ const PLACES: readonly (readonly [string, SentencePartName])[] = [
   ['states', 'states'],
   ['frozenCore', 'core'],
   ['active', 'core'],
+  ['orbitals', 'core'],
 ];
 
 function plain(text: string): SentencePart {

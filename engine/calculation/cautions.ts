@@ -140,7 +140,7 @@ function crossingCaution({ study }: PreparedStudy, { kind, range, gap }: Solutio
     message:
       `Between ${places} the lowest ${name} solution gives way to another; followed on, the first would lie ` +
       `${gap.toPrecision(2)} hartree higher. ` +
-      (kind === 'restricted'
+      (kind === (study.orbitals ?? 'restricted')
         ? 'The curve has a kink there, and CI levels that depend on the orbitals may jump.'
         : 'The curve has a kink there.'),
   };

@@ -1,6 +1,6 @@
 import { placeBasis } from '../basis/place-basis';
-import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { transformOneElectron, transformToOrbitals } from '../integrals/orbital-transformation';
+import { transformToSpinOrbitals } from '../integrals/unrestricted-transformation';
 import { congruence, transpose } from '../linear-algebra/dense';
 import { nuclearDipole } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
@@ -69,7 +69,7 @@ export function computePoint(
   const { pointGroup, linear } = symmetry.molecule;
   const chargesOf = atomicCharges(molecule, basis, integrals.problem.overlap);
   const correlation = needsOrbitalIntegrals(chosen)
-    ? correlationInput(prepared, molecule, integrals, fields.reference, symmetry, chargesOf, control)
+    ? correlationInput(prepared, molecule, integrals, fields, symmetry, chargesOf, control)
     : undefined;
   const levels: Record<string, LevelResult> = {};
   for (const level of chosen) {
@@ -110,43 +110,50 @@ function correlationInput(
   prepared: PreparedStudy,
   molecule: Molecule,
   integrals: MolecularIntegrals,
-  meanField: MeanFields['reference'],
+  { reference, unrestricted }: MeanFields,
   symmetry: FieldSymmetry,
   chargesOf: ChargesOf,
   control: RunControl,
 ): CorrelationInput {
   const { problem, dipole } = integrals;
+  const spinsDiffer = prepared.study.orbitals === 'unrestricted';
+  const base = spinsDiffer ? unrestricted! : reference;
   const n = problem.functionCount;
-  const m = meanField.orbitalCount;
+  const m = base.orbitalCount;
   const frozen = prepared.frozenOrbitals;
-  const orbitalIntegrals: OrbitalIntegrals = transformToOrbitals({
+  const transformation = {
     oneElectron: problem.coreHamiltonian,
     repulsion: problem.repulsion,
-    coefficients: meanField.coefficients,
-    orbitalCount: meanField.orbitalCount,
+    orbitalCount: m,
     frozen,
     // nearly dependent functions may leave fewer orbitals than there were when the study was checked
     active: Math.min(prepared.activeOrbitals ?? m, m - frozen),
     nuclearRepulsion: problem.nuclearRepulsion,
-  });
+  };
+  const coefficients = spinsDiffer ? unrestricted!.coefficients[0] : reference.coefficients;
+  const overFunctions = (density: Float64Array) => congruence(density, transpose(coefficients, n, m), m, n);
   return {
-    integrals: orbitalIntegrals,
-    dipole: dipole.map((matrix) =>
-      transformOneElectron(matrix, meanField.coefficients, n, meanField.orbitalCount),
-    ),
+    integrals: spinsDiffer
+      ? transformToSpinOrbitals({
+          ...transformation,
+          overlap: problem.overlap,
+          coefficients: unrestricted!.coefficients,
+        })
+      : transformToOrbitals({ ...transformation, coefficients }),
+    dipole: dipole.map((matrix) => transformOneElectron(matrix, coefficients, n, m)),
     nuclearDipole: nuclearDipole(molecule),
-    chargesOf: (density) => chargesOf([congruence(density, transpose(meanField.coefficients, n, m), m, n)]),
-    partsOf: (energy, density) =>
-      energyParts(energy, congruence(density, transpose(meanField.coefficients, n, m), m, n), integrals),
-    orbitalCount: meanField.orbitalCount,
+    chargesOf: (density) => chargesOf([overFunctions(density)]),
+    partsOf: (energy, density) => energyParts(energy, overFunctions(density), integrals),
+    orbitalCount: m,
     frozen,
     activeElectrons: [prepared.spinElectrons[0] - frozen, prepared.spinElectrons[1] - frozen],
     states: prepared.study.states,
     energyTolerance: prepared.study.convergence.energy,
-    meanFieldEnergy: meanField.energy,
+    meanFieldEnergy: reference.energy,
+    determinantEnergy: base.energy,
     memoryLimit: prepared.memoryLimit,
     symmetry,
-    orbitalsConverged: meanField.termination.kind === 'converged',
+    orbitalsConverged: base.termination.kind === 'converged',
     control,
   };
 }

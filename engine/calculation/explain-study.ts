@@ -34,10 +34,13 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
   };
   const active = prepared.activeOrbitals ?? n - frozenOrbitals;
   const [alpha, beta] = prepared.spinElectrons.map((count) => count - frozenOrbitals) as [number, number];
+  const spinsDiffer = study.orbitals === 'unrestricted';
   const transformed = {
-    // half-transformed over all pairs of functions and orbitals, then the packed result
-    bytes: field.bytes + 8 * (pairs * pairs + repulsionIntegrals),
-    seconds: field.seconds + PER_TRANSFORMATION_STEP * n ** 5,
+    // half-transformed over all pairs of functions and orbitals, then the packed results: of one set of orbitals,
+    // or of two and, unpacked, between them
+    bytes:
+      field.bytes + 8 * (pairs * pairs * (spinsDiffer ? 3 : 1) + repulsionIntegrals * (spinsDiffer ? 2 : 1)),
+    seconds: field.seconds + PER_TRANSFORMATION_STEP * n ** 5 * (spinsDiffer ? 2.5 : 1),
   };
 
   const explainLevel = (level: Level): LevelExplanation => {
@@ -79,7 +82,7 @@ export function explainStudy(prepared: PreparedStudy): StudyExplanation {
       determinants,
       bytes:
         transformed.bytes +
-        configurationInteractionBytes(active, alpha, beta, level.maximumRank, study.states),
+        configurationInteractionBytes(active, alpha, beta, level.maximumRank, study.states, spinsDiffer),
       seconds:
         transformed.seconds +
         study.states * EIGENVALUE_ITERATIONS * determinants * connections * PER_CONNECTION,

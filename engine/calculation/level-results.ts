@@ -1,4 +1,5 @@
 import type { ConfigurationInteractionState } from '../configuration-interaction/describe-state';
+import { padDensity } from '../configuration-interaction/one-particle-density';
 import { solveSingles } from '../configuration-interaction/singles';
 import { sizeCorrections } from '../configuration-interaction/size-corrections';
 import { solveConfigurationInteraction } from '../configuration-interaction/solve';
@@ -38,7 +39,7 @@ import type {
 export interface CorrelationInput {
   /** active orbitals only */
   readonly integrals: OrbitalIntegrals;
-  /** ⟨p|r|q⟩ over all orbitals, x, y, z */
+  /** ⟨p|r|q⟩ over all orbitals (of alpha spin, where the spins have their own; so all densities), x, y, z */
   readonly dipole: readonly Float64Array[];
   readonly nuclearDipole: Vector3;
   /** of a density over all orbitals */
@@ -52,7 +53,10 @@ export interface CorrelationInput {
   readonly activeElectrons: readonly [number, number];
   readonly states: number;
   readonly energyTolerance: number;
+  /** RHF or ROHF, which correlation counts from */
   readonly meanFieldEnergy: number;
+  /** of the reference determinant: the same, or UHF */
+  readonly determinantEnergy: number;
   readonly symmetry: FieldSymmetry;
   readonly orbitalsConverged: boolean;
   readonly memoryLimit: number;
@@ -187,7 +191,8 @@ export function computeCorrelated(
     maximumRank: level.maximumRank,
     states: input.states,
     memoryLimit: input.memoryLimit,
-    species: activeSpecies(input),
+    // the two sets of orbitals share no labels
+    ...(!input.integrals.beta && { species: activeSpecies(input) }),
     control: input.control,
   });
   // integrals that are not finite leave nothing to report
@@ -198,6 +203,7 @@ export function computeCorrelated(
   const states = result.states.map((state) => stateResult(state, result.states[0].energy, input));
   const [lowest] = states;
   const correlation = lowest.energy - input.meanFieldEnergy;
+  const belowDeterminant = lowest.energy - input.determinantEnergy;
   const isTruncated = level.maximumRank < active;
   return {
     kind: 'correlated',
@@ -208,18 +214,21 @@ export function computeCorrelated(
     iterations: result.iterations,
     determinants: result.determinants,
     referenceWeight: lowest.referenceWeight,
+    ...(input.integrals.beta && { reference: 'UHF' as const }),
     sSquared: lowest.sSquared,
     spin: lowest.spin,
     ...(lowest.symmetry && { symmetry: lowest.symmetry }),
     naturalOccupations: lowest.naturalOccupations,
     dipole: lowest.dipole,
-    energyParts: input.partsOf(lowest.energy, withFrozen(result.states[0].density, input)),
-    ...(isTruncated && { davidsonCorrected: lowest.energy + (1 - lowest.referenceWeight) * correlation }),
+    energyParts: input.partsOf(lowest.energy, overAllOrbitals(result.states[0].density, input)),
+    ...(isTruncated && {
+      davidsonCorrected: lowest.energy + (1 - lowest.referenceWeight) * belowDeterminant,
+    }),
     ...(isTruncated &&
       level.maximumRank === 2 && {
         sizeCorrections: sizeCorrections({
           energy: lowest.energy,
-          correlation,
+          correlation: belowDeterminant,
           referenceWeight: lowest.referenceWeight,
           electrons: active,
         }),
@@ -233,7 +242,8 @@ function stateResult(
   lowestEnergy: number,
   input: CorrelationInput,
 ): CorrelatedState {
-  const { frozen, orbitalCount, integrals, dipole, nuclearDipole: nuclear } = input;
+  const { frozen, integrals, dipole, nuclearDipole: nuclear } = input;
+  const density = overAllOrbitals(state.density, input);
   const core = Array.from({ length: frozen }, (_, i) => i);
   const withCore = (orbitals: readonly number[]) => [...core, ...orbitals.map((p) => p + frozen)];
   return {
@@ -245,13 +255,11 @@ function stateResult(
     referenceWeight: state.referenceWeight,
     residual: state.residual,
     ...transitionOf(state, lowestEnergy, input),
-    dipole: vector((axis) => {
-      const matrix = dipole[axis];
-      const ofCore = core.reduce((sum, i) => sum + 2 * matrix[i * orbitalCount + i], 0);
-      return nuclear[axis] - ofCore - dot(state.density, activeBlock(matrix, input));
-    }),
-    charges: input.chargesOf(withFrozen(state.density, input)),
-    naturalOccupations: [...core.map(() => 2), ...state.naturalOccupations.slice(0, integrals.orbitalCount)],
+    dipole: vector((axis) => nuclear[axis] - dot(density, dipole[axis])),
+    charges: input.chargesOf(density),
+    naturalOccupations: integrals.beta
+      ? state.naturalOccupations
+      : [...core.map(() => 2), ...state.naturalOccupations],
     leading: state.leading.map(
       ({ coefficient, weight, alpha, beta }): LeadingDeterminant => ({
         coefficient,
@@ -270,7 +278,8 @@ function transitionOf(
   input: CorrelationInput,
 ): Pick<CorrelatedState, 'oscillatorStrength' | 'transitionDipole'> {
   if (!transitionDensity) return {};
-  const transitionDipole = vector((axis) => -dot(transitionDensity, activeBlock(input.dipole[axis], input)));
+  const density = overAllOrbitals(transitionDensity, input, 0);
+  const transitionDipole = vector((axis) => -dot(density, input.dipole[axis]));
   const strength = transitionDipole.reduce((sum, component) => sum + component ** 2, 0);
   return { oscillatorStrength: (2 / 3) * (energy - lowestEnergy) * strength, transitionDipole };
 }
@@ -303,17 +312,14 @@ function onOrbitals(input: CorrelationInput, termination: Termination): LevelTer
 
 type OrbitalRange = Pick<CorrelationInput, 'integrals' | 'orbitalCount' | 'frozen'>;
 
-/** The density over all orbitals, frozen ones doubly occupied, those above empty; the inverse of `activeBlock`. */
-function withFrozen(
-  active: Float64Array,
-  { integrals: { orbitalCount: size }, orbitalCount, frozen }: OrbitalRange,
+/** A density that CI gives, over all orbitals: the frozen ones occupied as said, those above the active ones empty. */
+function overAllOrbitals(
+  density: Float64Array,
+  { integrals, orbitalCount, frozen }: OrbitalRange,
+  occupation = 2,
 ): Float64Array {
-  const density = new Float64Array(orbitalCount * orbitalCount);
-  for (let i = 0; i < frozen; i++) density[i * orbitalCount + i] = 2;
-  for (let p = 0; p < size; p++) {
-    density.set(active.subarray(p * size, (p + 1) * size), (p + frozen) * orbitalCount + frozen);
-  }
-  return density;
+  // where beta orbitals differ it is over all of them already
+  return integrals.beta ? density : padDensity(density, orbitalCount, frozen, occupation);
 }
 
 /** Rows and columns of the active orbitals, which follow the frozen ones. */

@@ -33,7 +33,10 @@ export interface PointCarry {
 
 /** The Hartree–Fock solutions that the chosen levels need. */
 export interface MeanFields {
-  /** what configuration interaction is built on: RHF for closed shells, ROHF for open ones */
+  /**
+   * RHF for closed shells, ROHF for open ones: what configuration interaction is built on unless the study asks for
+   * UHF orbitals, and in any case what correlation energies count from
+   */
   readonly reference: RestrictedSolution | RestrictedOpenSolution;
   readonly restricted?: RestrictedSolution;
   readonly restrictedOpen?: RestrictedOpenSolution;
@@ -64,8 +67,10 @@ export function solveMeanFields(
       ? solveRestrictedOpen(problem, prepared.spinElectrons, starts(guess?.restricted), control, options)
       : undefined;
   const reference = (isClosed ? restricted : restrictedOpen)!;
+  const correlatesUnrestricted =
+    prepared.study.orbitals === 'unrestricted' && chosen.some((level) => level.kind === 'correlated');
   const unrestricted =
-    wants('UHF') || (wants('MP2') && !isClosed)
+    wants('UHF') || (wants('MP2') && !isClosed) || correlatesUnrestricted
       ? solveUnrestricted(
           problem,
           prepared.spinElectrons,

@@ -107,6 +107,7 @@ function prepare(study: Study, options: PrepareOptions, resolved?: BasisSet): Pr
     resolved ?? collect(() => resolveBasis(study.basis, symbols, { fileText: options.basisFileText }));
   const scalable = collect(() => scalableBasis(study.basis, symbols));
   const functionCount = basisSet && collect(() => placeBasis(basisSet, molecule).functionCount);
+  if (study.orbitals === 'unrestricted') collect(() => refuseSingles(levels));
   collect(() => requireClosedShell(levels, molecule.multiplicity));
   if (functionCount !== undefined) collect(() => requireFunctions(functionCount, molecule));
   const window =
@@ -119,6 +120,7 @@ function prepare(study: Study, options: PrepareOptions, resolved?: BasisSet): Pr
     molecule: { ...study.molecule, charge: molecule.charge, multiplicity: molecule.multiplicity },
     states,
     frozenCore: study.frozenCore ?? false,
+    orbitals: study.orbitals ?? 'restricted',
     convergence: { energy: study.convergence?.energy ?? DEFAULT_ENERGY_TOLERANCE },
   };
   const prepared: PreparedStudy = {
@@ -198,6 +200,18 @@ function requireClosedShell(levels: readonly (Level | undefined)[], multiplicity
       : 'Leave it out, or ask for multiplicity 1 with an even number of electrons.',
     { level: name, multiplicity },
     `levels[${wrong}]`,
+  );
+}
+
+function refuseSingles(levels: readonly (Level | undefined)[]): void {
+  const singles = levels.find((level) => level?.kind === 'singles');
+  if (!singles) return;
+  throw new EngineError(
+    'study.orbitals',
+    `${singles.name} stands on RHF orbitals and is not computed on those of UHF.`,
+    `Leave out ${singles.name}, or “orbitals”.`,
+    { level: singles.name },
+    'orbitals',
   );
 }
 

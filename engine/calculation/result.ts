@@ -224,6 +224,8 @@ export interface CorrelatedResult {
   readonly iterations: number;
   readonly determinants: number;
   readonly referenceWeight: number;
+  /** whose determinant and orbitals these are, where not those of RHF or ROHF; states have no symmetry then */
+  readonly reference?: 'UHF';
   readonly sSquared: number;
   readonly spin: SpinName;
   readonly symmetry?: StateSymmetry;
@@ -231,7 +233,10 @@ export interface CorrelatedResult {
   readonly naturalOccupations: readonly number[];
   readonly dipole: Vector3;
   readonly energyParts?: EnergyParts;
-  /** energy + (1 − c0²)·correlation (Langhoff, Davidson 1974); truncated CI only, not variational */
+  /**
+   * energy + (1 − c0²)·(energy − that of the reference determinant) (Langhoff, Davidson 1974); truncated CI only, not
+   * variational
+   */
   readonly davidsonCorrected?: number;
   /** CISD: total energies with the usual estimates of the missing quadruples */
   readonly sizeCorrections?: SizeCorrections;

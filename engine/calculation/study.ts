@@ -17,8 +17,12 @@ export interface Study {
   readonly frozenCore?: boolean | undefined;
   /** CI within these orbitals around the Fermi level; not together with `frozenCore` */
   readonly active?: ActiveSpace | undefined;
+  /** of the CI: RHF or ROHF ones (default), or those of UHF, different for the two spins */
+  readonly orbitals?: OrbitalKind | undefined;
   readonly convergence?: { readonly energy?: number | undefined } | undefined;
 }
+
+export type OrbitalKind = 'restricted' | 'unrestricted';
 
 export interface ActiveSpace {
   readonly electrons: number;
@@ -58,7 +62,10 @@ export type StudyScan =
     }
   | { readonly coordinate: ScanCoordinate; readonly values: readonly number[] };
 
-/** A study with every default filled in, so that the results file says what was really run. */
+/**
+ * A study with every default filled in, so that the results file says what was really run (`orbitals` too, but for
+ * files of earlier versions).
+ */
 export interface CompleteStudy extends Study {
   readonly molecule: StudyMolecule & { readonly charge: number; readonly multiplicity: number };
   readonly states: number;

@@ -46,6 +46,7 @@ describe('farwell run', () => {
       molecule: { ...helium.molecule, multiplicity: 1 },
       states: 1,
       frozenCore: false,
+      orbitals: 'restricted',
       convergence: { energy: 1e-10 },
     });
     expect(results.points).toHaveLength(10);

@@ -27,6 +27,7 @@ export function studyForWording(draft: StudyDraft): Study {
     states: wholeNumber(draft.states),
     frozenCore: draft.frozenCore,
     active: draft.active,
+    orbitals: draft.orbitals,
   };
 }
 

@@ -22,6 +22,7 @@ export function draftFromStudy(study: Study): StudyDraft {
     states: String(study.states ?? 1),
     frozenCore: study.frozenCore ?? false,
     ...(study.active && { active: study.active }),
+    ...(study.orbitals && { orbitals: study.orbitals }),
     energyConvergence: optionalNumber(study.convergence?.energy),
   };
 }

@@ -19,6 +19,8 @@ export interface StudyDraft {
   readonly frozenCore: boolean;
   /** kept as the study gave it */
   readonly active?: Study['active'];
+  /** kept as the study gave it */
+  readonly orbitals?: Study['orbitals'];
   /** empty: the default */
   readonly energyConvergence: string;
 }

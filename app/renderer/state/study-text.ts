@@ -36,6 +36,7 @@ export function studyText(draft: StudyDraft): StudyText {
     ...(draft.states.trim() !== '' && { states: numberOrText(draft.states) }),
     frozenCore: draft.frozenCore,
     ...(draft.active && { active: draft.active }),
+    ...(draft.orbitals && { orbitals: draft.orbitals }),
     ...(draft.energyConvergence.trim() !== '' && {
       convergence: { energy: numberOrText(draft.energyConvergence) },
     }),

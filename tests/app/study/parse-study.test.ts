@@ -58,6 +58,8 @@ describe('parseStudy', () => {
       { basis: { file: 'sets/mine.json' } },
       { title: 'a', notes: 'b', states: 3, frozenCore: true, convergence: { energy: 1e-9 } },
       { active: { electrons: 8, orbitals: 8 } },
+      { orbitals: 'unrestricted' },
+      { orbitals: 'restricted' },
     ];
     for (const change of changes) expect(brief(change)).toEqual([]);
   });
@@ -70,6 +72,10 @@ describe('parseStudy', () => {
     ]) {
       expect(brief({ active })).toHaveLength(1);
     }
+  });
+
+  it('refuses orbitals that are neither restricted nor unrestricted', () => {
+    expect(brief({ orbitals: 'UHF' })).toHaveLength(1);
   });
 
   it('says place, expectation, value and line of a wrong value', () => {

@@ -80,6 +80,12 @@ describe('studySentence', () => {
     expect(studySentence(study('', undefined, { ...rest, frozenCore: false, active }))).toContain(
       'three states of each, 8 electrons in 6 orbitals active.',
     );
+    expect(studySentence(study('', undefined, { ...rest, orbitals: 'unrestricted' }))).toContain(
+      'core frozen, on UHF orbitals.',
+    );
+    expect(studySentence(study('', undefined, { ...rest, orbitals: 'restricted' }))).toContain(
+      'core frozen.',
+    );
     expect(studySentence(study('', bonds([0, 1]), rest))).toContain(
       'the O–O bond of triplet O₂ from 0.5 to 3 bohr in 26 steps',
     );

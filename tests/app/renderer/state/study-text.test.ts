@@ -23,6 +23,7 @@ describe('a study in the window', () => {
       { basis: { name: 'mine', shells: { H: [{ angularMomentum: 0, exponents: [1], coefficients: [1] }] } } },
     ],
     ['notes and a frozen core', { notes: 'two\nlines', frozenCore: true, states: 3 }],
+    ['orbitals of each spin', { orbitals: 'unrestricted' }],
     [
       'an isotope and a ghost',
       {
