@@ -25,10 +25,14 @@ export interface FollowedState {
   readonly states: readonly (number | null)[];
 }
 
-/** Deviation from the extrapolated energy, hartree, that weighs as much as an overlap of nothing. */
-const ENERGY_SCALE = 0.1;
-/** Two states that would cost this much to join, overlap of nothing and half the deviation above, are not joined. */
-const TOO_FAR = 1.5;
+/** Deviation from the extrapolated energy, hartree, that counts half of what no deviation could outweigh. */
+const ENERGY_SCALE = 0.05;
+/** What a large deviation weighs against an overlap of nothing instead of 1. */
+const ENERGY_WEIGHT = 0.5;
+/** Overlap where it is not known. */
+const UNKNOWN_OVERLAP = 0.5;
+/** States that would cost this much to join are not joined: without any overlap none are, with half of it all. */
+const TOO_FAR = 1;
 /** More than any set of allowed matches costs. */
 const FORBIDDEN = 1e6;
 /** Points that an energy is extrapolated from. */
@@ -64,7 +68,7 @@ export function followStates(points: readonly PointResult[], level: string): rea
     // an iteration that ran away leaves no number
     statesAt(point, index, level, groupOf(point) === group).filter(({ energy }) => Number.isFinite(energy)),
   );
-  const chains = chainStates(points, byPoint);
+  const chains = chainStates(points, byPoint, level);
   const ordered = [...groupBy(chains, kindOf)].flatMap(([, ofKind]) =>
     isOrdered(ofKind[0]) ? adiabatic(ofKind) : ofKind,
   );
@@ -123,12 +127,13 @@ function statesAt(point: PointResult, index: number, level: string, hasLabels: b
 function chainStates(
   points: readonly PointResult[],
   byPoint: readonly (readonly StateAtPoint[])[],
+  level: string,
 ): readonly Chain[] {
   const chains: Chain[] = [];
   byPoint.forEach((states, index) => {
     const matches = new Map<number, OrbitalMatch>();
     const matchFrom = (point: number): OrbitalMatch => {
-      const known = matches.get(point) ?? matchOrbitals(points[point], points[index]);
+      const known = matches.get(point) ?? matchOrbitals(points[point], points[index], level);
       matches.set(point, known);
       return known;
     };
@@ -188,8 +193,7 @@ function isCompatible({ spin, symmetry }: Chain, state: StateAtPoint): boolean {
 function joiningCost(chain: Chain, state: StateAtPoint, match: OrbitalMatch): number {
   const overlap = stateOverlap(chain.states.at(-1)!.components, state.components, match);
   const deviation = Math.abs(extrapolated(chain, state.coordinate) - state.energy);
-  const cost = (overlap === undefined ? 0 : 1 - overlap) + deviation / ENERGY_SCALE;
-  return Math.min(cost, FORBIDDEN);
+  return 1 - (overlap ?? UNKNOWN_OVERLAP) + (ENERGY_WEIGHT * deviation) / (deviation + ENERGY_SCALE);
 }
 
 /** Of the polynomial through the last energies. */

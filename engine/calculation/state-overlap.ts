@@ -7,14 +7,22 @@ export interface StateComponent {
   readonly beta: readonly number[];
 }
 
-/** Which orbital of the second point continues each orbital of the first. */
-export type OrbitalMatch = (orbital: number) => number;
+/** The orbitals of CI at two points. */
+export interface OrbitalMatch {
+  /** which orbital of the second point continues an orbital of the first */
+  readonly partner: (orbital: number) => number;
+  /** both spins have the same orbitals, and so the same free signs; false: those of UHF */
+  readonly isPaired: boolean;
+}
 
 /**
  * Matches the orbitals of CI at two geometries: those of one symmetry label by their order within it, those without
  * a partner by their order among the rest, and all by order where there are no labels.
  */
-export function matchOrbitals(first: PointResult, second: PointResult): OrbitalMatch {
+export function matchOrbitals(first: PointResult, second: PointResult, level: string): OrbitalMatch {
+  if (isUnrestricted(first, level) || isUnrestricted(second, level)) {
+    return { partner: (orbital) => orbital, isPaired: false };
+  }
   const from = occurrences(referenceLabels(first));
   const to = occurrences(referenceLabels(second));
   const count = Math.min(from.length, to.length);
@@ -23,36 +31,41 @@ export function matchOrbitals(first: PointResult, second: PointResult): OrbitalM
   const taken = new Set(match);
   const free = Array.from({ length: count }, (_, place) => place).filter((place) => !taken.has(place));
   const full = match.map((place) => place ?? free.shift()!);
-  return (orbital) => full[orbital] ?? orbital;
+  return { partner: (orbital) => full[orbital] ?? orbital, isPaired: true };
 }
 
 /**
  * Estimate of |⟨first|second⟩|² between two geometries from the leading determinants alone, each scaled to 1.
  *
  * Orbitals are matched one to one, and their signs are free at every geometry. Determinants with the same singly
- * occupied orbitals change sign together, so that relative signs within such a set count and those between sets do
- * not: the estimate is the largest value that the free signs allow.
+ * occupied orbitals change sign together (over UHF orbitals none do), so that relative signs within such a set count
+ * and those between sets do not: the estimate is the largest value that the free signs allow.
  *
  * @returns undefined where a state has no determinants
  */
 export function stateOverlap(
   first: readonly StateComponent[],
   second: readonly StateComponent[],
-  match: OrbitalMatch,
+  { partner, isPaired }: OrbitalMatch,
 ): number | undefined {
   if (first.length === 0 || second.length === 0) return undefined;
   const coefficients = new Map(second.map(({ alpha, beta, coefficient }) => [key(alpha, beta), coefficient]));
   const sums = new Map<string, number>();
   for (const { coefficient, alpha, beta } of first) {
-    const up = sorted(alpha.map(match));
-    const down = sorted(beta.map(match));
+    const up = sorted(alpha.map(partner));
+    const down = sorted(beta.map(partner));
     const other = coefficients.get(key(up.orbitals, down.orbitals));
     if (other === undefined) continue;
-    const open = key(without(up.orbitals, down.orbitals), without(down.orbitals, up.orbitals), true);
-    sums.set(open, (sums.get(open) ?? 0) + up.sign * down.sign * coefficient * other);
+    const signs = isPaired ? openOrbitals(up.orbitals, down.orbitals) : key(up.orbitals, down.orbitals);
+    sums.set(signs, (sums.get(signs) ?? 0) + up.sign * down.sign * coefficient * other);
   }
   const overlap = [...sums.values()].reduce((sum, value) => sum + Math.abs(value), 0);
   return overlap ** 2 / (norm(first) * norm(second));
+}
+
+function isUnrestricted({ levels }: PointResult, level: string): boolean {
+  const result = levels[level];
+  return result?.kind === 'correlated' && result.reference === 'UHF';
 }
 
 /** Labels of the orbitals that CI is built on, as far as the study has their Hartree–Fock among its levels. */
@@ -85,11 +98,14 @@ function sorted(orbitals: readonly number[]): {
   return { orbitals: [...orbitals].sort((a, b) => a - b), sign: inversions % 2 === 0 ? 1 : -1 };
 }
 
+/** What the free signs act on: in an orbital with both spins they cancel. */
+const openOrbitals = (alpha: readonly number[], beta: readonly number[]): string =>
+  [...without(alpha, beta), ...without(beta, alpha)].sort((a, b) => a - b).join();
+
 const without = (orbitals: readonly number[], others: readonly number[]): number[] =>
   orbitals.filter((orbital) => !others.includes(orbital));
 
-const key = (alpha: readonly number[], beta: readonly number[], isSpinFree = false): string =>
-  isSpinFree ? [...alpha, ...beta].sort((a, b) => a - b).join() : `${alpha.join()}|${beta.join()}`;
+const key = (alpha: readonly number[], beta: readonly number[]): string => `${alpha.join()}|${beta.join()}`;
 
 const norm = (components: readonly StateComponent[]): number =>
   components.reduce((sum, { coefficient }) => sum + coefficient ** 2, 0);

@@ -75,6 +75,49 @@ describe('studyCsv', () => {
     ]);
   });
 
+  it('follows states where their curves are known; the column of a level stays its lowest state', () => {
+    const sample = sampleResults(['CIS', 'FCI']);
+    const [plain] = correlated(-1, 0).states;
+    const pointAt = (coordinate: number, energies: readonly number[]) => ({
+      ...samplePoint(coordinate),
+      levels: {
+        CIS: singles([
+          { spin: 'triplet', energy: -0.9 },
+          { spin: 'singlet', energy: -0.5 },
+        ]),
+        FCI: correlated(energies[0]!, 0, { states: energies.map((energy) => ({ ...plain!, energy })) }),
+      },
+    });
+    const results = {
+      ...sample,
+      points: [pointAt(1, [-1.2, -1.1, -0.8]), pointAt(2, [-1.3, -1.0])],
+      curves: {
+        CIS: [
+          { name: '1 ³B₁', states: [0, 0] },
+          { name: '1 ¹B₁', states: [1, 1] },
+        ],
+        FCI: [
+          { name: '1 ¹A₁', states: [0, 1] },
+          { name: '2 ¹A₁', states: [2, null] },
+          { name: '1 ³B₁', states: [1, 0] },
+        ],
+      },
+    };
+    expect(rowsOf(studyCsv(results))).toEqual([
+      ['coordinate', 'CIS 1 ¹B₁', 'CIS 1 ³B₁', 'FCI', 'FCI 1 ¹A₁', 'FCI 2 ¹A₁', 'FCI 1 ³B₁'],
+      ['1', '-0.5', '-0.9', '-1.2', '-1.2', '-0.8', '-1.1'],
+      ['2', '-0.5', '-0.9', '-1.3', '-1', '', '-1.3'],
+    ]);
+  });
+
+  it('has no column for a curve that is nothing but the lowest state', () => {
+    const results = {
+      ...sampleResults(['FCI']),
+      curves: { FCI: [{ name: '1 ¹Σg⁺', states: Array(37).fill(0) }] },
+    };
+    expect(rowsOf(studyCsv(results))[0]).toEqual(['coordinate', 'FCI']);
+  });
+
   it('leaves the coordinate of a single point empty', () => {
     const results = { ...sampleResults(), points: [{ ...samplePoint(0.8), coordinate: null }] };
     expect(rowsOf(studyCsv(results))[1]![0]).toBe('');
