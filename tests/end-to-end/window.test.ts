@@ -252,9 +252,7 @@ describe('the window', () => {
     expect(png.bytes.readUInt32BE(16)).toBe(2700);
 
     const csv = await saved(/CSV/);
-    expect(csv.bytes.toString()).toMatch(
-      /^coordinate,RHF,CIS singlet 1,CIS triplet 1,CISD,FCI\r\n1\.4,-1\.11\d+,/,
-    );
+    expect(csv.bytes.toString()).toMatch(/^coordinate,RHF,CIS 1 ¹Σu⁺,CIS 1 ³Σu⁺,CISD,FCI\r\n1\.4,-1\.11\d+,/);
     expect(csv.bytes.toString().trim().split('\r\n')).toHaveLength(1 + hydrogen.scan.count);
 
     const study = await saved(/^Study/);

@@ -75,6 +75,14 @@ describe('runStudy', () => {
     expect(results.findings.FCI?.minimum.kind).toBe('found');
     expect(results.study).toMatchObject({ ...study, molecule: { charge: 1, multiplicity: 1 }, states: 1 });
     expect(results.basis).toMatchObject({ name: 'STO-3G', functions: 2 });
+    const everywhere = (place: number) => prepared().coordinates.map(() => place);
+    expect(results.curves).toEqual({
+      CIS: [
+        { name: '1 ¹Σ⁺', states: everywhere(1) },
+        { name: '1 ³Σ⁺', states: everywhere(0) },
+      ],
+      FCI: [{ name: '1 ¹Σ⁺', states: everywhere(0) }],
+    });
   });
 
   it('gives the same numbers to the last bit with any number of workers', async () => {

@@ -109,6 +109,7 @@ const RESULTS: StudyResults = {
     CISD: { minimum: { kind: 'several', near: [1, 2] } },
     FCI: { minimum: { kind: 'atEdge', coordinate: 6 } },
   },
+  curves: { FCI: [{ name: '1 ¹Σ⁺', states: [0] }], CIS: [{ name: '1 ¹Σ⁺', states: [null] }] },
   cautions: [{ code: 'basis.small', message: 'The basis set is minimal.' }],
 };
 
@@ -127,6 +128,11 @@ function issues(text: string) {
 describe('parseResults', () => {
   it('reads results as they are', () => {
     expect(parseResults(JSON.stringify(RESULTS))).toEqual({ ok: true, results: RESULTS });
+  });
+
+  it('opens files of earlier versions, whose states are not joined to curves', () => {
+    const { curves: _curves, ...earlier } = RESULTS;
+    expect(parseResults(JSON.stringify(earlier))).toEqual({ ok: true, results: earlier });
   });
 
   it('keeps keys that a later version may have added', () => {

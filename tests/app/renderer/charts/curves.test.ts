@@ -37,6 +37,17 @@ describe('curves of a chart', () => {
     expect(curveOf('CIS triplet 1').isExcited).toBe(true);
   });
 
+  it('follow states where the whole scan is known', () => {
+    const places = points.map((_, k) => (k < 20 ? 0 : 1));
+    const curves = { CIS: [{ name: '1 ¹Σu⁺', states: places }] };
+    const followed = curveOf('CIS 1 ¹Σu⁺', { curves });
+    expect(followed.values).toEqual(
+      points.map((point, k) => (point.levels.CIS as SinglesResult).states[places[k]!]!.energy),
+    );
+    expect(followed.isExcited).toBe(true);
+    expect(curveOf('CIS triplet 1', { curves })).toBeUndefined();
+  });
+
   it('have nothing where a point has not arrived', () => {
     const { curves } = energyCurves(study, [points[0], undefined, points[2]], asComputed);
     expect(curves[0]?.values.map((value) => value === null)).toEqual([false, true, false]);
