@@ -100,26 +100,120 @@ function takeLowest(model: ModelSpace, states: number): LowestStates {
 function iterate(problem: StateProblem, model: ModelSpace, settings: StateSettings): LowestStates {
   const precondition = modelPreconditioner(model, problem.diagonal);
   const guesses = selectGuesses(problem, model, precondition, settings.states);
-  return lowestEigenpairs(
-    {
-      dimension: problem.dimension,
-      apply: (vector, product) => problem.apply(vector, product),
-      precondition,
-      restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
-      guesses: [
-        ...guesses.map((k) => spreadModelVector(model, k, problem.dimension)),
-        ...probes(problem, model, precondition),
-      ],
-    },
-    {
-      roots: settings.states,
-      residualTolerance: settings.residualTolerance,
-      maximumIterations: settings.maximumIterations,
-      maximumVectors: basisVectorLimit(settings.states),
-      control: settings.control,
-      stage: settings.stage,
-    },
-  );
+  const probing = probes(problem, model, precondition);
+  const solve = (vectors: readonly Float64Array[]) =>
+    lowestEigenpairs(
+      {
+        dimension: problem.dimension,
+        apply: (vector, product) => problem.apply(vector, product),
+        precondition,
+        restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
+        guesses: vectors,
+      },
+      {
+        roots: settings.states,
+        residualTolerance: settings.residualTolerance,
+        maximumIterations: settings.maximumIterations,
+        maximumVectors: basisVectorLimit(settings.states),
+        control: settings.control,
+        stage: settings.stage,
+      },
+    );
+  const found = solve([...guesses.map((k) => spreadModelVector(model, k, problem.dimension)), ...probing]);
+  const hidden = lowerStatesOfOtherSpins(problem, model, precondition, found, settings);
+  if (hidden.length === 0) return found;
+  const again = solve([...found.vectors, ...hidden]);
+  return { ...again, iterations: found.iterations + again.iterations };
+}
+
+/** Of no determinant more than this: the model space says little about such a state, and guards can fail. */
+const STRONGLY_MIXED = 0.6;
+/** Seeds of one spin: one of every spatial symmetry that an Abelian point group can have. */
+const MOST_SEEDS = 8;
+/** Residuals, hartree, at which a spin's lowest state is looked at, first roughly and then, if it comes near, closely. */
+const ROUGH_RESIDUAL = 1e-2;
+const CLOSE_RESIDUAL = 1e-4;
+/** What a rough value may still fall, hartree: ‖r‖² over a gap of 5 mEh. */
+const ROUGH_ERROR = 0.02;
+
+/**
+ * States below the highest one found that it has missed. H and the preconditioner keep the spin of a vector, so the
+ * lowest state of every spin is sought by itself: what spins compete for in one iteration, they cannot lose here.
+ * Only for strongly mixed states, as at a stretched multiple bond; others are safe by their guards.
+ */
+function lowerStatesOfOtherSpins(
+  problem: StateProblem,
+  model: ModelSpace,
+  precondition: ReturnType<typeof modelPreconditioner>,
+  found: LowestStates,
+  settings: StateSettings,
+): Float64Array[] {
+  if (found.termination.kind !== 'converged' || largestWeight(found.vectors[0]) > STRONGLY_MIXED) return [];
+  const { lowest, guards } = chooseGuesses(model, settings.states);
+  const highest = found.values[Math.min(settings.states, found.values.length) - 1];
+  const seek = (guesses: readonly Float64Array[], residualTolerance: number) =>
+    lowestEigenpairs(
+      {
+        dimension: problem.dimension,
+        apply: (vector, product) => problem.apply(vector, product),
+        precondition,
+        restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
+        guesses,
+      },
+      {
+        roots: 1,
+        residualTolerance,
+        maximumIterations: settings.maximumIterations,
+        maximumVectors: basisVectorLimit(1),
+        control: settings.control,
+        stage: settings.stage,
+      },
+    );
+  const hidden: Float64Array[] = [];
+  for (const spin of new Set([...lowest, ...guards].map((k) => model.spins[k]))) {
+    const seeds = lowestOfEverySector(model, spin).slice(0, MOST_SEEDS);
+    const start = [
+      ...seeds.map((k) => spreadModelVector(model, k, problem.dimension)),
+      mixtureOfSpin(model, spin, problem.dimension),
+    ];
+    const rough = seek(start, ROUGH_RESIDUAL);
+    if (rough.values[0] > highest + ROUGH_ERROR) continue;
+    const { values, vectors } = seek([rough.vectors[0]], CLOSE_RESIDUAL);
+    const isNew = found.vectors.every((vector) => dot(vector, vectors[0]) ** 2 < 0.9);
+    if (values[0] < highest && isNew) hidden.push(vectors[0]);
+  }
+  return hidden;
+}
+
+/** The lowest model vector of every sector of one spin, rising. */
+function lowestOfEverySector(model: ModelSpace, spin: number): number[] {
+  const seen = new Set<string>();
+  return Array.from(model.energies.keys()).filter((k) => {
+    if (model.spins[k] !== spin || seen.has(model.sectors[k])) return false;
+    seen.add(model.sectors[k]);
+    return true;
+  });
+}
+
+/**
+ * All model vectors of one spin, lower ones more, in arbitrary proportions: it has a part in every symmetry that the
+ * blocks of H do not show, as when the orbitals have broken the molecule's.
+ */
+function mixtureOfSpin(model: ModelSpace, spin: number, dimension: number): Float64Array {
+  const mixture = new Float64Array(dimension);
+  const proportions = arbitraryNumbers(model.energies.length);
+  model.vectors.forEach((vector, k) => {
+    if (model.spins[k] !== spin) return;
+    const factor = proportions[k] / (model.energies[k] - model.energies[0] + PROBE_SHIFT) ** 2;
+    model.places.forEach((place, i) => {
+      mixture[place] += factor * vector[i];
+    });
+  });
+  return mixture;
+}
+
+function largestWeight(vector: Float64Array): number {
+  return vector.reduce((largest, coefficient) => Math.max(largest, coefficient ** 2), 0);
 }
 
 /**

@@ -16,6 +16,8 @@ export interface ModelSpace {
   readonly vectors: readonly Float64Array[];
   /** equal for vectors of the same block of H and the same spin */
   readonly sectors: readonly string[];
+  /** ⟨S²⟩ of each, rounded; 0 where states have no spins to tell */
+  readonly spins: readonly number[];
   /** lowest diagonal energy among `places` */
   readonly lowestDiagonal: number;
 }
@@ -51,7 +53,7 @@ export function buildModelSpace(
   const elements = elementsAmong(places);
   const count = places.length;
   const hamiltonian = symmetricMatrix(count, elements.hamiltonian);
-  const found: { energy: number; vector: Float64Array; sector: string }[] = [];
+  const found: { energy: number; vector: Float64Array; sector: string; spin: number }[] = [];
   coupledBlocks(hamiltonian, count).forEach((members, block) => {
     for (const { energy, vector, spin } of diagonaliseBlock(
       hamiltonian,
@@ -59,7 +61,7 @@ export function buildModelSpace(
       members,
       elements.spinSquared,
     )) {
-      found.push({ energy, vector, sector: `${block}:${spin}` });
+      found.push({ energy, vector, sector: `${block}:${spin}`, spin });
     }
   });
   found.sort((a, b) => a.energy - b.energy);
@@ -68,6 +70,7 @@ export function buildModelSpace(
     energies: Float64Array.from(found, (state) => state.energy),
     vectors: found.map((state) => state.vector),
     sectors: found.map((state) => state.sector),
+    spins: found.map((state) => state.spin),
     lowestDiagonal: places.reduce((low, place) => Math.min(low, diagonal[place]), Number.POSITIVE_INFINITY),
   };
 }
