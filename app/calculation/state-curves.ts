@@ -24,7 +24,7 @@ export function stateCurves(levels: readonly string[], points: readonly PointRes
 interface Crossing {
   /** the curve that is lower before, and the one that is lower after */
   readonly pair: readonly [string, string];
-  /** coordinates of the points on both sides, lower first */
+  /** coordinates of the points on both sides */
   readonly range: readonly [number, number];
   readonly isLowest: boolean;
 }
@@ -47,8 +47,8 @@ function lowestCaution(level: string, { pair: [before, after], range }: Crossing
     level,
     range,
     message:
-      `Between ${places(range)} the lowest state of ${level} changes from ${before} to ${after}, by the order of the ` +
-      `scan. ${level} is the energy of the lowest state at every point and has a kink there; the curve of each state ` +
+      `Between ${places(range)} the lowest state of ${level} changes from ${before} to ${after}, by rising ` +
+      `coordinate. ${level} is the energy of the lowest state at every point and has a kink there; the curve of each state ` +
       'goes on smoothly as far as it is among the states computed.',
   };
 }
@@ -82,17 +82,16 @@ function crossingsOf(
     const place = states[point];
     return place == null ? undefined : energies[point]?.[place];
   };
-  return points.slice(1).flatMap((after, index): Crossing[] => {
-    const before = points[index]!;
-    if (before.coordinate === null || after.coordinate === null) return [];
-    const range = [
-      Math.min(before.coordinate, after.coordinate),
-      Math.max(before.coordinate, after.coordinate),
-    ] as const;
+  const alongScan = points
+    .flatMap(({ coordinate }, index) => (coordinate === null ? [] : [{ coordinate, index }]))
+    .sort((a, b) => a.coordinate - b.coordinate);
+  return alongScan.slice(1).flatMap((after, k): Crossing[] => {
+    const before = alongScan[k]!;
+    const range = [before.coordinate, after.coordinate] as const;
     const here = curves.map((curve) => ({
       curve,
-      from: energyAt(curve, index),
-      to: energyAt(curve, index + 1),
+      from: energyAt(curve, before.index),
+      to: energyAt(curve, after.index),
     }));
     return here.flatMap((one) =>
       here.flatMap((other): Crossing[] => {
@@ -100,7 +99,7 @@ function crossingsOf(
         const gapBefore = (other.from ?? Infinity) - (one.from ?? Infinity);
         const gapAfter = (one.to ?? Infinity) - (other.to ?? Infinity);
         if (!(gapBefore > DEGENERATE && gapAfter > DEGENERATE)) return [];
-        const isLowest = one.curve.states[index] === 0 && other.curve.states[index + 1] === 0;
+        const isLowest = one.curve.states[before.index] === 0 && other.curve.states[after.index] === 0;
         const isSeen = [one.from, one.to, other.from, other.to].every((energy) => energy !== undefined);
         return isLowest || isSeen ? [{ pair: [one.curve.name, other.curve.name], range, isLowest }] : [];
       }),

@@ -25,10 +25,10 @@ export interface FollowedState {
   readonly states: readonly (number | null)[];
 }
 
-/** Deviation from the extrapolated energy, hartree, that counts half of what no deviation could outweigh. */
-const ENERGY_SCALE = 0.05;
-/** What a large deviation weighs against an overlap of nothing instead of 1. */
+/** Most that a deviation from the extrapolated energy weighs; an overlap of nothing weighs 1. */
 const ENERGY_WEIGHT = 0.5;
+/** Deviation, hartree, that weighs half of it. */
+const ENERGY_SCALE = 0.05;
 /** Overlap where it is not known. */
 const UNKNOWN_OVERLAP = 0.5;
 /** States that would cost this much to join are not joined: without any overlap none are, with half of it all. */
@@ -49,7 +49,7 @@ interface StateAtPoint {
   readonly components: readonly StateComponent[];
 }
 
-/** States joined so far, in the order of points, and what is known of them. */
+/** States joined so far, by rising coordinate, and what is known of them. */
 interface Chain {
   readonly states: StateAtPoint[];
   spin: SpinName;
@@ -59,7 +59,7 @@ interface Chain {
 /**
  * Joins the states of a CI level, or of CIS, to curves.
  *
- * @param points - in the order of the coordinate, rising or falling
+ * @param points - in any order: they are followed by rising coordinate
  * @returns by kind, then number; empty for levels without states
  */
 export function followStates(points: readonly PointResult[], level: string): readonly FollowedState[] {
@@ -68,7 +68,10 @@ export function followStates(points: readonly PointResult[], level: string): rea
     // an iteration that ran away leaves no number
     statesAt(point, index, level, groupOf(point) === group).filter(({ energy }) => Number.isFinite(energy)),
   );
-  const chains = chainStates(points, byPoint, level);
+  const alongScan = byPoint
+    .filter(({ length }) => length > 0)
+    .sort(([a], [b]) => a.coordinate - b.coordinate);
+  const chains = chainStates(points, alongScan, level);
   const ordered = [...groupBy(chains, kindOf)].flatMap(([, ofKind]) =>
     isOrdered(ofKind[0]) ? adiabatic(ofKind) : ofKind,
   );
@@ -126,14 +129,15 @@ function statesAt(point: PointResult, index: number, level: string, hasLabels: b
 
 function chainStates(
   points: readonly PointResult[],
-  byPoint: readonly (readonly StateAtPoint[])[],
+  alongScan: readonly (readonly StateAtPoint[])[],
   level: string,
 ): readonly Chain[] {
   const chains: Chain[] = [];
-  byPoint.forEach((states, index) => {
+  for (const states of alongScan) {
+    const here = points[states[0].point];
     const matches = new Map<number, OrbitalMatch>();
     const matchFrom = (point: number): OrbitalMatch => {
-      const known = matches.get(point) ?? matchOrbitals(points[point], points[index], level);
+      const known = matches.get(point) ?? matchOrbitals(points[point], here, level);
       matches.set(point, known);
       return known;
     };
@@ -156,7 +160,7 @@ function chainStates(
       if (chain.spin === 'mixed') chain.spin = state.spin;
       if (!chain.symmetry?.term && state.symmetry) chain.symmetry = state.symmetry;
     });
-  });
+  }
   return chains;
 }
 
@@ -220,12 +224,10 @@ function adiabatic(chains: readonly Chain[]): Chain[] {
       chains.flatMap(({ states }) => states),
       ({ point }) => point,
     ),
-  ]
-    .sort(([a], [b]) => a - b)
-    .map(([, states]) => states.sort((a, b) => a.energy - b.energy || a.place - b.place));
+  ].map(([, states]) => states.sort((a, b) => a.energy - b.energy || a.place - b.place));
   return Array.from({ length: Math.max(...byPoint.map(({ length }) => length)) }, (_, rank) => ({
     ...chains[0],
-    states: byPoint.flatMap((states) => states[rank] ?? []),
+    states: byPoint.flatMap((states) => states[rank] ?? []).sort((a, b) => a.coordinate - b.coordinate),
   }));
 }
 
@@ -236,7 +238,7 @@ const symmetryKey = ({ irrep, term }: StateSymmetry): string =>
   `${irrep} ${term ? `${term.lambda}${term.inversion ?? ''}${term.reflection ?? ''}` : ''}`;
 
 const byBeginning = ({ states: [a] }: Chain, { states: [b] }: Chain): number =>
-  a.point - b.point || a.energy - b.energy || a.place - b.place;
+  a.coordinate - b.coordinate || a.energy - b.energy || a.place - b.place;
 
 function placesOf(states: readonly StateAtPoint[], points: number): readonly (number | null)[] {
   const places = new Map(states.map(({ point, place }) => [point, place]));

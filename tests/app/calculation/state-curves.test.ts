@@ -57,6 +57,11 @@ describe('crossingCautions', () => {
     );
   });
 
+  it('says the same of points in another order', () => {
+    const mixed = [2, 0, 3, 1].map((k) => crossing[k]!);
+    expect(cautionsOf(mixed)).toEqual(cautionsOf(crossing));
+  });
+
   it('says it too where the other state is not among those computed', () => {
     const lowestOnly = [0, 1, 2, 3].map((x) =>
       point(x, [x < 1.3 ? { energy: x, symmetry: sigma } : { energy: 2.6 - x, symmetry: { irrep: 'B1u' } }]),
