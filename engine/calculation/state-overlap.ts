@@ -70,6 +70,8 @@ function isUnrestricted({ levels }: PointResult, level: string): boolean {
 
 /** Labels of the orbitals that CI is built on, as far as the study has their Hartree–Fock among its levels. */
 function referenceLabels({ levels }: PointResult): OrbitalLabels {
+  // those of RHF are not the labels of UHF orbitals
+  if (Object.values(levels).some((level) => level.kind === 'correlated' && level.reference)) return [];
   const reference = levels.RHF ?? levels.ROHF;
   const labels = reference?.kind === 'hartreeFock' ? reference.orbitalSymmetries : undefined;
   return labels && 'length' in labels ? labels : [];

@@ -1,7 +1,12 @@
-import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
-import { type DeterminantSpace, determinantAt } from './determinant-space';
+import {
+  betaPart,
+  type OrbitalIntegrals,
+  packedPair,
+  type SameSpinIntegrals,
+} from '../integrals/orbital-integrals';
+import type { DeterminantSpace } from './determinant-space';
 import { isOccupied, occupiedOrbitals } from './determinants';
-import { hamiltonianElement } from './matrix-elements';
+import { mixedRepulsion } from './matrix-elements';
 import { stringEnergy } from './same-spin';
 import { type StringSpace, stringAt } from './string-space';
 
@@ -58,13 +63,26 @@ export function spinAveragedDiagonal(space: DeterminantSpace, integrals: Orbital
 
 /** ⟨D|H|D⟩ of every determinant of the space, hartree, where beta orbitals differ: none has partners of another spin. */
 export function unrestrictedDiagonal(space: DeterminantSpace, integrals: OrbitalIntegrals): Float64Array {
-  return Float64Array.from({ length: space.dimension }, (_, place) => {
-    const determinant = determinantAt(space, place);
-    return hamiltonianElement(determinant, determinant, integrals);
-  });
+  const n = space.orbitalCount;
+  const alpha = describeStrings(space.alpha, integrals);
+  const beta = describeStrings(space.beta, betaPart(integrals));
+  const betaCoulomb = new Float64Array(n);
+  const diagonal = new Float64Array(space.dimension);
+  for (let b = 0; b < space.beta.count; b++) {
+    for (let p = 0; p < n; p++) {
+      betaCoulomb[p] = beta.occupied[b].reduce((sum, j) => sum + mixedRepulsion(integrals, p, p, j, j), 0);
+    }
+    const start = space.rows.start[b];
+    for (let a = 0; start + a < space.rows.start[b + 1]; a++) {
+      let value = integrals.coreEnergy + alpha.energy[a] + beta.energy[b];
+      for (const i of alpha.occupied[a]) value += betaCoulomb[i];
+      diagonal[start + a] = value;
+    }
+  }
+  return diagonal;
 }
 
-function describeStrings(space: StringSpace, integrals: OrbitalIntegrals) {
+function describeStrings(space: StringSpace, integrals: SameSpinIntegrals) {
   const string = Array.from({ length: space.count }, (_, place) => stringAt(space, place));
   const occupied = string.map(occupiedOrbitals);
   const energy = Float64Array.from(occupied, (orbitals) => stringEnergy(orbitals, integrals));

@@ -4,9 +4,12 @@ import {
   determinantAt,
 } from '../../../engine/configuration-interaction/determinant-space';
 import { isOccupied } from '../../../engine/configuration-interaction/determinants';
-import { spinAveragedDiagonal } from '../../../engine/configuration-interaction/diagonal';
+import {
+  spinAveragedDiagonal,
+  unrestrictedDiagonal,
+} from '../../../engine/configuration-interaction/diagonal';
 import { hamiltonianElement } from '../../../engine/configuration-interaction/matrix-elements';
-import { randomOrbitalIntegrals } from '../../support/random-orbital-integrals';
+import { randomOrbitalIntegrals, randomUnrestrictedIntegrals } from '../../support/random-orbital-integrals';
 
 describe('spinAveragedDiagonal', () => {
   it.each([
@@ -36,6 +39,24 @@ describe('spinAveragedDiagonal', () => {
         const mean = members.reduce((sum, { energy }) => sum + energy, 0) / members.length;
         for (const { place } of members) expect(averaged[place]).toBeCloseTo(mean, 12);
       }
+    },
+  );
+});
+
+describe('unrestrictedDiagonal', () => {
+  it.each([
+    [5, 2, 2, Number.POSITIVE_INFINITY],
+    [6, 4, 1, 3],
+    [5, 0, 2, 2],
+  ])(
+    'identity: %i orbitals, %i + %i electrons, rank %d: ⟨D|H|D⟩ of every determinant',
+    (n, alpha, beta, rank) => {
+      const integrals = randomUnrestrictedIntegrals(n, 23);
+      const space = buildDeterminantSpace(n, alpha, beta, rank);
+      unrestrictedDiagonal(space, integrals).forEach((value, place) => {
+        const determinant = determinantAt(space, place);
+        expect(value).toBeCloseTo(hamiltonianElement(determinant, determinant, integrals), 11);
+      });
     },
   );
 });
