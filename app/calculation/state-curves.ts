@@ -101,11 +101,26 @@ function crossingsOf(
         if (!(gapBefore > DEGENERATE && gapAfter > DEGENERATE)) return [];
         const isLowest = one.curve.states[before.index] === 0 && other.curve.states[after.index] === 0;
         const isSeen = [one.from, one.to, other.from, other.to].every((energy) => energy !== undefined);
-        return isLowest || isSeen ? [{ pair: [one.curve.name, other.curve.name], range, isLowest }] : [];
+        // of one state a point, only another spin or label proves that it is another state, not a lost match
+        const isProven =
+          spinAt(points[before.index], level) !== spinAt(points[after.index], level) ||
+          (isLabelled(one.curve) && isLabelled(other.curve));
+        return isSeen || (isLowest && isProven)
+          ? [{ pair: [one.curve.name, other.curve.name], range, isLowest }]
+          : [];
       }),
     );
   });
 }
+
+/** Of the lowest state. */
+function spinAt(point: PointResult | undefined, level: string): string | undefined {
+  const result = point?.levels[level];
+  return result?.kind === 'correlated' || result?.kind === 'singles' ? result.states[0]?.spin : undefined;
+}
+
+/** Without a label a curve is named by its spin in words: “singlet 2”. */
+const isLabelled = ({ name }: StateCurve): boolean => !/^[a-z]+ \d+$/.test(name);
 
 /** Of the states of a level that converged. */
 function energiesOf({ levels }: PointResult, level: string): readonly number[] {
