@@ -1,5 +1,5 @@
 import { EngineError } from '../errors';
-import type { Molecule } from '../molecule/molecule';
+import type { Atom } from '../molecule/molecule';
 import type { BasisSet } from './basis-set';
 import type { Harmonics, PlacedBasis, PlacedShell, ShellDefinition } from './contracted-gaussian';
 import { elementMissing } from './element-missing';
@@ -19,7 +19,10 @@ export function shellFunctionCount(angularMomentum: number, harmonics: Harmonics
  * @throws EngineError `basis.elementMissing` if the set has no entry for an atom, `basis.empty` if no functions
  * result
  */
-export function placeBasis(basisSet: BasisSet, molecule: Molecule): PlacedBasis {
+export function placeBasis(
+  basisSet: BasisSet,
+  molecule: { readonly atoms: readonly Pick<Atom, 'symbol' | 'position'>[] },
+): PlacedBasis {
   const shells: PlacedShell[] = [];
   let functionCount = 0;
   for (const [atom, { symbol, position }] of molecule.atoms.entries()) {
