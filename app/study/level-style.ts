@@ -15,6 +15,9 @@ const SAND = '#DDCC77';
 const ROSE = '#CC6677';
 const WINE = '#882255';
 const PURPLE = '#AA4499';
+/** "bright", and black, for ranks that are seldom drawn: the other scheme has no more */
+const BLUE = '#4477AA';
+const BLACK = '#000000';
 
 /** "light" */
 const LIGHT_BLUE = '#77AADD';
@@ -26,6 +29,9 @@ const LIGHT_YELLOW = '#EEDD88';
 const ORANGE = '#EE8866';
 const PINK = '#FFAABB';
 const PALE_GREY = '#DDDDDD';
+/** "pale", and white */
+const PALE_GREEN = '#CCDDAA';
+const WHITE = '#FFFFFF';
 
 export type MarkerShape = 'circle' | 'square' | 'triangle-up' | 'triangle-down' | 'diamond';
 
@@ -53,6 +59,8 @@ const LEVEL_STYLES: Readonly<Record<string, LevelStyle>> = {
     dash: [5, 1.6, 1.2, 1.6, 1.2, 1.6],
     shape: 'diamond',
   },
+  CISDTQ5: { colour: BLUE, colourOnDark: WHITE, dash: [3, 1.2], shape: 'square' },
+  CISDTQ56: { colour: BLACK, colourOnDark: PALE_GREEN, dash: [1.6, 3], shape: 'circle' },
   FCI: { colour: GREEN, colourOnDark: MINT, dash: [], shape: 'circle' },
 };
 

@@ -31,7 +31,19 @@ import {
  */
 
 /** Level names of the field, whether or not this version computes them: a typo must not look like a missing method. */
-export const LEVEL_NAMES = ['RHF', 'UHF', 'ROHF', 'MP2', 'CIS', 'CISD', 'CISDT', 'CISDTQ', 'FCI'] as const;
+export const LEVEL_NAMES = [
+  'RHF',
+  'UHF',
+  'ROHF',
+  'MP2',
+  'CIS',
+  'CISD',
+  'CISDT',
+  'CISDTQ',
+  'CISDTQ5',
+  'CISDTQ56',
+  'FCI',
+] as const;
 
 const atom: z.ZodType<StudyAtom> = closed({
   element: leaf<string>(

@@ -21,6 +21,8 @@ const LEVELS: readonly Level[] = [
   { kind: 'correlated', name: 'CISD', maximumRank: 2 },
   { kind: 'correlated', name: 'CISDT', maximumRank: 3 },
   { kind: 'correlated', name: 'CISDTQ', maximumRank: 4 },
+  { kind: 'correlated', name: 'CISDTQ5', maximumRank: 5 },
+  { kind: 'correlated', name: 'CISDTQ56', maximumRank: 6 },
   { kind: 'correlated', name: 'FCI', maximumRank: Number.POSITIVE_INFINITY },
 ];
 

@@ -8,6 +8,8 @@ export const LEVELS = [
   { name: 'CISD', description: 'single and double excitations' },
   { name: 'CISDT', description: 'up to triple excitations' },
   { name: 'CISDTQ', description: 'up to quadruple excitations' },
+  { name: 'CISDTQ5', description: 'up to quintuple excitations' },
+  { name: 'CISDTQ56', description: 'up to sextuple excitations' },
   { name: 'FCI', description: 'all excitations: exact within the basis set' },
 ] as const;
 

@@ -155,7 +155,7 @@ describe('parseStudy', () => {
     expect(issuesWith(change).map(({ message, remedy }) => `${message} ${remedy}`)).toEqual([
       `There is no level "rhf" (line ${line}). Write "RHF" if that is meant.`,
       `There is no level "CSID" (line ${line + 1}). Write "CISD" if that is meant.`,
-      `There is no level "QQQQ" (line ${line + 2}). Choose from RHF, UHF, ROHF, MP2, CIS, CISD, CISDT, CISDTQ, FCI.`,
+      `There is no level "QQQQ" (line ${line + 2}). Choose from RHF, UHF, ROHF, MP2, CIS, CISD, CISDT, CISDTQ, CISDTQ5, CISDTQ56, FCI.`,
     ]);
   });
 

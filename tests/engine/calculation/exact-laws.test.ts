@@ -170,3 +170,14 @@ describe('symmetry of excited states', () => {
     expect(excited.map((state) => state.spin)).toEqual(['triplet', 'triplet']);
   });
 });
+
+describe('excitation rank', () => {
+  it('identity: rank 6 is full CI for six electrons, and rank 5 lies between it and rank 4', () => {
+    const levels = ['RHF', 'CISDTQ', 'CISDTQ5', 'CISDTQ56', 'FCI'];
+    const point = compute(study([atom('Be'), atom('H', 0, 0, 3.5), atom('H', 0, 0, -3.5)], { levels }));
+    const energy = (level: string) => correlated(point, level).energy;
+    expect(Math.abs(energy('CISDTQ56') - energy('FCI'))).toBeLessThan(1e-10);
+    expect(energy('CISDTQ5')).toBeLessThanOrEqual(energy('CISDTQ') + 1e-11);
+    expect(energy('FCI')).toBeLessThanOrEqual(energy('CISDTQ5') + 1e-11);
+  });
+});
