@@ -1,4 +1,9 @@
-import { type DavidsonResult, DEGENERACY_TOLERANCE, lowestEigenpairs } from '../linear-algebra/davidson';
+import {
+  type DavidsonProblem,
+  type DavidsonResult,
+  DEGENERACY_TOLERANCE,
+  lowestEigenpairs,
+} from '../linear-algebra/davidson';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { RunControl } from '../termination';
 import { type DistinguishingOperator, makeDegenerateStatesDefinite } from './degenerate-states';
@@ -102,28 +107,30 @@ function iterate(problem: StateProblem, model: ModelSpace, settings: StateSettin
   const guesses = selectGuesses(problem, model, precondition, settings.states);
   const probing = probes(problem, model, precondition);
   const solve = (vectors: readonly Float64Array[]) =>
-    lowestEigenpairs(
-      {
-        dimension: problem.dimension,
-        apply: (vector, product) => problem.apply(vector, product),
-        precondition,
-        restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
-        guesses: vectors,
-      },
-      {
-        roots: settings.states,
-        residualTolerance: settings.residualTolerance,
-        maximumIterations: settings.maximumIterations,
-        maximumVectors: basisVectorLimit(settings.states),
-        control: settings.control,
-        stage: settings.stage,
-      },
-    );
+    lowestEigenpairs(asDavidsonProblem(problem, precondition, vectors), {
+      ...settings,
+      roots: settings.states,
+      maximumVectors: basisVectorLimit(settings.states),
+    });
   const found = solve([...guesses.map((k) => spreadModelVector(model, k, problem.dimension)), ...probing]);
   const hidden = lowerStatesOfOtherSpins(problem, model, precondition, found, settings);
   if (hidden.length === 0) return found;
   const again = solve([...found.vectors, ...hidden]);
   return { ...again, iterations: found.iterations + again.iterations };
+}
+
+function asDavidsonProblem(
+  problem: StateProblem,
+  precondition: ReturnType<typeof modelPreconditioner>,
+  guesses: readonly Float64Array[],
+): DavidsonProblem {
+  return {
+    dimension: problem.dimension,
+    apply: (vector, product) => problem.apply(vector, product),
+    precondition,
+    restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
+    guesses,
+  };
 }
 
 /** Of no determinant more than this: the model space says little about such a state, and guards can fail. */
@@ -152,23 +159,12 @@ function lowerStatesOfOtherSpins(
   const { lowest, guards } = chooseGuesses(model, settings.states);
   const highest = found.values[Math.min(settings.states, found.values.length) - 1];
   const seek = (guesses: readonly Float64Array[], residualTolerance: number) =>
-    lowestEigenpairs(
-      {
-        dimension: problem.dimension,
-        apply: (vector, product) => problem.apply(vector, product),
-        precondition,
-        restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
-        guesses,
-      },
-      {
-        roots: 1,
-        residualTolerance,
-        maximumIterations: settings.maximumIterations,
-        maximumVectors: basisVectorLimit(1),
-        control: settings.control,
-        stage: settings.stage,
-      },
-    );
+    lowestEigenpairs(asDavidsonProblem(problem, precondition, guesses), {
+      ...settings,
+      roots: 1,
+      residualTolerance,
+      maximumVectors: basisVectorLimit(1),
+    });
   const hidden: Float64Array[] = [];
   for (const spin of new Set([...lowest, ...guards].map((k) => model.spins[k]))) {
     const seeds = lowestOfEverySector(model, spin).slice(0, MOST_SEEDS);
