@@ -75,8 +75,6 @@ console.log(`Built ${written.size} files in out/ in ${((Date.now() - started) / 
 
 /** @returns {Promise<{ fileName: string, content: string | Uint8Array }[]>} */
 async function buildForNode(entries, output) {
-  const input = presentEntries(entries);
-  if (Object.keys(input).length === 0) return [];
   const result = await build({
     ...shared,
     build: {
@@ -85,7 +83,9 @@ async function buildForNode(entries, output) {
       target: 'node20',
       minify: false,
       rollupOptions: {
-        input,
+        input: Object.fromEntries(
+          Object.entries(entries).map(([name, source]) => [name, join(root, source)]),
+        ),
         external: EXTERNAL,
         output: { entryFileNames: '[name].js', chunkFileNames: 'chunks/[name]-[hash].js', ...output },
       },
@@ -99,10 +99,6 @@ async function buildForNode(entries, output) {
 }
 
 async function buildRenderer() {
-  if (!existsSync(join(root, RENDERER_PAGE))) {
-    console.log(`skipped: ${RENDERER_PAGE} does not exist yet`);
-    return [];
-  }
   const { default: react } = await import('@vitejs/plugin-react');
   const result = await build({
     ...shared,
@@ -119,16 +115,6 @@ async function buildRenderer() {
     },
   });
   return filesOf(result).map((file) => ({ ...file, fileName: `renderer/${file.fileName}` }));
-}
-
-function presentEntries(entries) {
-  return Object.fromEntries(
-    Object.entries(entries).filter(([, source]) => {
-      const present = existsSync(join(root, source));
-      if (!present) console.log(`skipped: ${source} does not exist yet`);
-      return present;
-    }),
-  );
 }
 
 function filesOf(result) {
