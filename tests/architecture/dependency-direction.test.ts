@@ -57,6 +57,7 @@ const ALLOWED: Readonly<Record<string, readonly string[]>> = {
 
 /** Inside engine/, a folder may import only folders named before it, and the files directly in engine/. */
 const ENGINE_ORDER = [
+  'kernels',
   'linear-algebra',
   'special-functions',
   'molecule',

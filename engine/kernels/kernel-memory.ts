@@ -1,0 +1,75 @@
+import { MOST_PAGES, PAGE_BYTES, type WasmMemory, webAssembly } from './web-assembly';
+
+/** A row of numbers inside a kernel memory: its address for the kernels, its view for us. Not zeroed. */
+export interface Block<View> {
+  readonly address: number;
+  readonly view: View;
+}
+
+/** Does not fit into the 4 GiB that a kernel can address. */
+export class KernelMemoryFull extends Error {
+  override readonly name = 'KernelMemoryFull';
+}
+
+/** For 128-bit loads, and so that two threads do not write into one cache line. */
+const ALIGNMENT = 64;
+
+/**
+ * Memory that kernels work in. It is shared memory: several threads may run kernels on one, and views stay valid
+ * when it grows. It grows as needed up to 4 GiB and is given back as a whole, when nobody refers to it any more.
+ */
+export class KernelMemory {
+  readonly wasm: WasmMemory;
+  // address 0 is left free, so that no block has it
+  #top = ALIGNMENT;
+
+  /** @param wasm - memory of another thread to take part in; only that thread may then take blocks */
+  constructor(wasm?: WasmMemory) {
+    this.wasm = wasm ?? new webAssembly.Memory({ initial: 1, maximum: MOST_PAGES, shared: true });
+  }
+
+  /** @throws KernelMemoryFull */
+  float64(length: number): Block<Float64Array> {
+    const address = this.#take(8 * length);
+    return { address, view: new Float64Array(this.wasm.buffer, address, length) };
+  }
+
+  /** @throws KernelMemoryFull */
+  int32(length: number): Block<Int32Array> {
+    const address = this.#take(4 * length);
+    return { address, view: new Int32Array(this.wasm.buffer, address, length) };
+  }
+
+  /** Gives back all blocks that were taken while `work` ran. */
+  scope<Result>(work: () => Result): Result {
+    const mark = this.#top;
+    try {
+      return work();
+    } finally {
+      this.#top = mark;
+    }
+  }
+
+  #take(bytes: number): number {
+    const address = this.#top;
+    const end = address + Math.ceil(bytes / ALIGNMENT) * ALIGNMENT;
+    const missing = Math.ceil((end - this.wasm.buffer.byteLength) / PAGE_BYTES);
+    if (missing > 0) {
+      try {
+        this.wasm.grow(missing);
+      } catch (error) {
+        throw new KernelMemoryFull(`${end} bytes of kernel memory are not to be had`, { cause: error });
+      }
+    }
+    this.#top = end;
+    return address;
+  }
+}
+
+let scratch: KernelMemory | undefined;
+
+/** The memory of this thread for what lives no longer than one call; take blocks inside its `scope`. */
+export function scratchMemory(): KernelMemory {
+  scratch ??= new KernelMemory();
+  return scratch;
+}
