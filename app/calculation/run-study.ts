@@ -175,7 +175,7 @@ function assemble(
     format: 'farwell/results',
     version: 1,
     study: prepared.study,
-    program: PROGRAM,
+    program: { ...PROGRAM, date: new Date().toISOString().slice(0, 'YYYY-MM-DD'.length) },
     basis: describeBasisUsed(prepared),
     points,
     findings,

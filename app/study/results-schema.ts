@@ -7,6 +7,7 @@ import type {
   PointResult,
   StudyResults,
 } from '#engine';
+import { constants, excitedState, fits, isotopologue, minimum, number, vibration } from './findings-schema';
 import { studySchema } from './schema';
 
 /*
@@ -14,8 +15,6 @@ import { studySchema } from './schema';
  * that a later version may add are kept.
  */
 
-/** JSON has no NaN and writes null for it, as the last energy of an iteration that ran away may be. */
-const number = z.union([z.number(), z.null().transform(() => Number.NaN)]);
 const numbers = z.array(number);
 const vector = z.tuple([number, number, number]);
 
@@ -53,8 +52,34 @@ const energyParts = z.looseObject({
   electronRepulsion: number,
   coulomb: number,
   exchangeCorrelation: number,
+  exchange: number.exactOptional(),
+  correlation: number.exactOptional(),
   nuclearRepulsion: number,
   virialRatio: number,
+});
+
+/** Something that does not exist, and why. */
+const none = z.looseObject({ kind: z.literal('none'), reason: z.string() });
+
+const unpairedElectrons = z.looseObject({ linear: number, quadratic: number, quartic: number });
+
+const correlationParts = z.looseObject({
+  total: number,
+  byRank: z.array(z.looseObject({ weight: number, energy: number })),
+  projected: z.discriminatedUnion('kind', [
+    z.looseObject({
+      kind: z.literal('found'),
+      singles: z.array(z.looseObject({ orbital: z.number(), energy: number })),
+      pairs: z.array(
+        z.looseObject({
+          orbitals: z.tuple([z.number(), z.number()]),
+          energy: number,
+          sameSpin: number,
+        }),
+      ),
+    }),
+    none,
+  ]),
 });
 
 const sizeCorrections = z.looseObject({
@@ -93,6 +118,7 @@ const perturbation = z.looseObject({
   reference: z.enum(['RHF', 'UHF']),
   sameSpin: number,
   oppositeSpin: number,
+  energyParts: none.exactOptional(),
   converged: z.boolean(),
   termination: levelTermination,
 });
@@ -127,6 +153,7 @@ const correlatedState = z.looseObject({
   dipole: vector,
   charges: charges.exactOptional(),
   naturalOccupations: numbers,
+  unpairedElectrons: unpairedElectrons.exactOptional(),
   leading: z.array(
     z.looseObject({
       coefficient: number,
@@ -135,6 +162,15 @@ const correlatedState = z.looseObject({
       beta: z.array(z.number()),
     }),
   ),
+  configurations: z
+    .array(
+      z.looseObject({
+        weight: number,
+        doublyOccupied: z.array(z.number()),
+        singlyOccupied: z.array(z.number()),
+      }),
+    )
+    .exactOptional(),
 });
 
 const correlated = z.looseObject({
@@ -151,6 +187,11 @@ const correlated = z.looseObject({
   spin,
   symmetry: stateSymmetry.exactOptional(),
   naturalOccupations: numbers,
+  naturalOrbitals: z
+    .looseObject({ coefficients: z.array(numbers), symmetries: orbitalLabels.exactOptional() })
+    .exactOptional(),
+  unpairedElectrons: unpairedElectrons.exactOptional(),
+  correlationParts: correlationParts.exactOptional(),
   dipole: vector,
   energyParts: energyParts.exactOptional(),
   davidsonCorrected: number.exactOptional(),
@@ -216,7 +257,6 @@ const point: z.ZodType<PointResult> = z.looseObject({
   cautions,
 });
 
-const estimate = z.looseObject({ value: z.number(), uncertainty: z.number() });
 const fragment = z.looseObject({
   atoms: z.array(z.number()),
   charge: z.number(),
@@ -225,35 +265,20 @@ const fragment = z.looseObject({
   level: z.string(),
 });
 
-const findings: z.ZodType<LevelFindings> = z.looseObject({
-  minimum: z.discriminatedUnion('kind', [
+const weightCrossings = {
+  threshold: z.number(),
+  crossings: z.array(
     z.looseObject({
-      kind: z.literal('found'),
-      equilibriumDistance: z.number(),
-      energy: z.number(),
+      coordinate: z.number(),
       uncertainty: z.number(),
+      direction: z.enum(['falling', 'rising']),
     }),
-    z.looseObject({ kind: z.literal('atEdge'), coordinate: z.number() }),
-    z.looseObject({ kind: z.literal('several'), near: z.array(z.number()) }),
-    z.looseObject({ kind: z.literal('none'), reason: z.string() }),
-  ]),
-  constants: z
-    .looseObject({
-      equilibriumDistanceAngstrom: estimate,
-      forceConstantNewtonPerMetre: estimate,
-      diatomic: z
-        .looseObject({
-          masses: z.literal('atomic'),
-          reducedMassDalton: z.number(),
-          harmonicWavenumberPerCm: estimate,
-          anharmonicityPerCm: estimate,
-          rotationalConstantPerCm: estimate,
-          vibrationRotationCouplingPerCm: estimate,
-          centrifugalDistortionPerCm: estimate,
-        })
-        .exactOptional(),
-    })
-    .exactOptional(),
+  ),
+};
+
+const findings: z.ZodType<LevelFindings> = z.looseObject({
+  minimum,
+  constants: constants.exactOptional(),
   dissociation: z
     .discriminatedUnion('kind', [
       z.looseObject({
@@ -262,7 +287,7 @@ const findings: z.ZodType<LevelFindings> = z.looseObject({
         fragments: z.tuple([fragment, fragment]),
         farEndAbove: z.number().exactOptional(),
       }),
-      z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+      none,
     ])
     .exactOptional(),
   wellDepth: z
@@ -276,34 +301,25 @@ const findings: z.ZodType<LevelFindings> = z.looseObject({
       }),
     ])
     .exactOptional(),
-  vibration: z
-    .discriminatedUnion('kind', [
-      z.looseObject({
-        kind: z.literal('found'),
-        levels: z.array(
-          z.looseObject({
-            v: z.number(),
-            energyPerCm: z.number(),
-            rotationalConstantPerCm: z.number(),
-            uncertaintyPerCm: number,
-          }),
-        ),
-        zeroPointPerCm: z.number(),
-        d0: z.number().exactOptional(),
-        boundLevels: z.number(),
-        converged: z.boolean(),
-        beyondComputedRange: z.array(z.number()),
-        interpolationErrorPerCm: z.number(),
-        pointsAdded: z.number(),
-        reducedMassDalton: z.number(),
-      }),
-      z.looseObject({ kind: z.literal('none'), reason: z.string() }),
-    ])
-    .exactOptional(),
+  vibration: vibration.exactOptional(),
+  isotopologues: z.array(isotopologue).exactOptional(),
+  fits: fits.exactOptional(),
+  excitedStates: z.array(excitedState).exactOptional(),
   instabilityOnset: z
     .discriminatedUnion('kind', [
       z.looseObject({ kind: z.literal('found'), coordinate: z.number(), uncertainty: z.number() }),
-      z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+      none,
+    ])
+    .exactOptional(),
+  referenceWeight: z
+    .discriminatedUnion('kind', [
+      z.looseObject({
+        kind: z.literal('found'),
+        ...weightCrossings,
+        coordinate: z.number(),
+        uncertainty: z.number(),
+      }),
+      z.looseObject({ kind: z.literal('none'), ...weightCrossings, reason: z.string() }),
     ])
     .exactOptional(),
 });
@@ -340,7 +356,11 @@ export const resultsSchema: z.ZodType<StudyResults> = z.looseObject({
   format: z.literal('farwell/results'),
   version: z.literal(1),
   study: completeStudy,
-  program: z.looseObject({ name: z.literal('farwell'), version: z.string() }),
+  program: z.looseObject({
+    name: z.literal('farwell'),
+    version: z.string(),
+    date: z.string().exactOptional(),
+  }),
   basis: z.looseObject({
     name: z.string(),
     harmonics: z.enum(['spherical', 'cartesian']),

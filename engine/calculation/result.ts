@@ -1,13 +1,16 @@
 import type { Harmonics, ShellDefinition } from '../basis/contracted-gaussian';
 import type { ScaleFactors } from '../basis/scalable-basis';
+import type { CorrelationParts } from '../configuration-interaction/correlation-parts';
 import type { SizeCorrections } from '../configuration-interaction/size-corrections';
 import type { SpinName } from '../configuration-interaction/spin';
+import type { UnpairedElectrons } from '../configuration-interaction/unpaired-electrons';
 import type { MeasuredState } from '../curves/measured-constants';
 import type { Vector3 } from '../molecule/molecule';
 import type { PointGroupName } from '../symmetry/point-groups';
 import type { StateSymmetry } from '../symmetry/state-symmetry';
 import type { Termination } from '../termination';
 import type { EnergyParts } from './energy-parts';
+import type { CurveFits, ExcitedState, Isotopologue, RotatingLevels } from './further-findings';
 import type { CompleteStudy, StudyAtom } from './study';
 
 /*
@@ -20,7 +23,8 @@ export interface StudyResults {
   readonly format: 'farwell/results';
   readonly version: 1;
   readonly study: CompleteStudy;
-  readonly program: { readonly name: 'farwell'; readonly version: string };
+  /** `date`: of the day when the last number was computed, as 2026-12-01 (UTC); absent in files of earlier versions */
+  readonly program: { readonly name: 'farwell'; readonly version: string; readonly date?: string };
   readonly basis: BasisDescription;
   readonly points: readonly PointResult[];
   readonly findings: Readonly<Record<string, LevelFindings>>;
@@ -159,8 +163,16 @@ export interface PerturbationResult {
   /** parts of the second-order energy, hartree */
   readonly sameSpin: number;
   readonly oppositeSpin: number;
+  /** second-order energies are no expectation values, so that there are none; absent in files of earlier versions */
+  readonly energyParts?: NotAvailable;
   readonly converged: boolean;
   readonly termination: LevelTermination;
+}
+
+/** A number that does not exist, and why. */
+export interface NotAvailable {
+  readonly kind: 'none';
+  readonly reason: string;
 }
 
 export interface SinglesState {
@@ -193,6 +205,22 @@ export interface LeadingDeterminant {
   readonly beta: readonly number[];
 }
 
+/** All determinants of one occupation of the spatial orbitals; orbitals as in `LeadingDeterminant`. */
+export interface LeadingConfiguration {
+  /** sum over the determinants */
+  readonly weight: number;
+  readonly doublyOccupied: readonly number[];
+  readonly singlyOccupied: readonly number[];
+}
+
+/** Natural orbitals, in the order of `naturalOccupations`. */
+export interface NaturalOrbitals {
+  /** for each orbital a number for each basis function; those of UHF-based CI are of the spin-summed density too */
+  readonly coefficients: readonly (readonly number[])[];
+  /** as of `orbitalSymmetries`, counted by falling occupation; absent where the orbitals of the CI have no symmetry */
+  readonly symmetries?: OrbitalLabels;
+}
+
 export interface CorrelatedState {
   readonly energy: number;
   /** above this level's lowest state */
@@ -210,7 +238,11 @@ export interface CorrelatedState {
   readonly dipole: Vector3;
   readonly charges?: AtomicCharges;
   readonly naturalOccupations: readonly number[];
+  /** absent in files of earlier versions */
+  readonly unpairedElectrons?: UnpairedElectrons;
   readonly leading: readonly LeadingDeterminant[];
+  /** falling weight; absent over UHF orbitals, and in files of earlier versions */
+  readonly configurations?: readonly LeadingConfiguration[];
 }
 
 export interface CorrelatedResult {
@@ -231,6 +263,12 @@ export interface CorrelatedResult {
   readonly symmetry?: StateSymmetry;
   /** falling, frozen orbitals included with 2 */
   readonly naturalOccupations: readonly number[];
+  /** absent where the study is too large for them (`findings.naturalOrbitals`), and in files of earlier versions */
+  readonly naturalOrbitals?: NaturalOrbitals;
+  /** this and the next: absent in files of earlier versions */
+  readonly unpairedElectrons?: UnpairedElectrons;
+  /** of the energy less that of the reference determinant: RHF, ROHF or, where `reference` says so, UHF */
+  readonly correlationParts?: CorrelationParts;
   readonly dipole: Vector3;
   readonly energyParts?: EnergyParts;
   /**
@@ -253,10 +291,12 @@ export interface LevelFindings {
         readonly energy: number;
         /** how far the distance may be off, study unit */
         readonly uncertainty: number;
+        /** higher minima of the same curve, from the lowest; absent where there are none */
+        readonly others?: readonly HigherMinimum[];
       }
     /** the lowest computed point is the first or last of the range */
     | { readonly kind: 'atEdge'; readonly coordinate: number }
-    /** several minima: the coordinates of the computed points nearest to them */
+    /** several minima: the coordinates of the computed points nearest to them; files of earlier versions only */
     | { readonly kind: 'several'; readonly near: readonly number[] }
     /** too few converged points, or no scan of a distance */
     | { readonly kind: 'none'; readonly reason: string };
@@ -268,8 +308,28 @@ export interface LevelFindings {
   readonly wellDepth?: WellDepth;
   /** diatomic molecules; absent without a minimum */
   readonly vibration?: Vibration;
+  /** those that the study asks for; diatomic molecules */
+  readonly isotopologues?: readonly Isotopologue[];
+  /** absent without a minimum */
+  readonly fits?: CurveFits;
+  /**
+   * of levels of which more than the lowest state is computed: the other curves whose states are known along the scan,
+   * of degenerate partners only the first
+   */
+  readonly excitedStates?: readonly ExcitedState[];
   /** RHF of a scan: where a spin-polarised solution begins to lie lower */
   readonly instabilityOnset?: InstabilityOnset;
+  /** CI levels of a scan: where a single determinant ceases to describe most of the lowest state */
+  readonly referenceWeight?: ReferenceWeightFinding;
+}
+
+/** A minimum above the lowest one. */
+export interface HigherMinimum {
+  /** study unit */
+  readonly equilibriumDistance: number;
+  readonly energy: number;
+  /** how far the distance may be off, study unit */
+  readonly uncertainty: number;
 }
 
 /** A number and how far it may be off for numerical reasons: of this level's own curve, not of nature. */
@@ -285,6 +345,8 @@ export interface WellConstants {
   readonly forceConstantNewtonPerMetre: Estimate;
   /** diatomic molecules only */
   readonly diatomic?: DiatomicConstants;
+  /** why a diatomic molecule has none: a kink, or energies too noisy for derivatives */
+  readonly withoutDiatomic?: string;
 }
 
 /** Leading terms after J. L. Dunham, Phys. Rev. 41, 721 (1932), for the isotopes of the study. */
@@ -348,6 +410,8 @@ export type Vibration =
       readonly kind: 'found';
       /** bound levels without rotation (J = 0), from the lowest */
       readonly levels: readonly VibrationalState[];
+      /** levels of the other J that the study asks for */
+      readonly rotating?: readonly RotatingLevels[];
       /** of the lowest level above the minimum */
       readonly zeroPointPerCm: number;
       /** well depth less zero-point energy, hartree; against the same limit as the well depth */
@@ -372,6 +436,8 @@ export interface VibrationalState {
   readonly energyPerCm: number;
   /** Bv */
   readonly rotationalConstantPerCm: number;
+  /** Dv; absent for levels so close to the limit that rotation is no small change */
+  readonly centrifugalDistortionPerCm?: number;
   /** from the grid alone; see `interpolationErrorPerCm` for the curve */
   readonly uncertaintyPerCm: number;
 }
@@ -380,3 +446,25 @@ export type InstabilityOnset =
   /** study unit or degrees */
   | { readonly kind: 'found'; readonly coordinate: number; readonly uncertainty: number }
   | { readonly kind: 'none'; readonly reason: string };
+
+/** Where the weight of the reference determinant falls below a threshold (`findings.referenceWeight` of the study). */
+export type ReferenceWeightFinding = {
+  readonly threshold: number;
+  /** every place found where the weight passes the threshold, by rising coordinate; study unit or degrees */
+  readonly crossings: readonly ReferenceWeightCrossing[];
+} & (
+  | {
+      readonly kind: 'found';
+      /** from here to the end of the scan the weight stays below the threshold */
+      readonly coordinate: number;
+      readonly uncertainty: number;
+    }
+  | { readonly kind: 'none'; readonly reason: string }
+);
+
+export interface ReferenceWeightCrossing {
+  readonly coordinate: number;
+  readonly uncertainty: number;
+  /** what the weight does there as the coordinate rises */
+  readonly direction: 'falling' | 'rising';
+}
