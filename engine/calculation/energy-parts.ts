@@ -10,8 +10,12 @@ export interface EnergyParts {
   readonly electronRepulsion: number;
   /** of the charge density with itself */
   readonly coulomb: number;
-  /** the rest of the repulsion: in Hartree–Fock exchange, in CI exchange and correlation */
+  /** the rest of the repulsion: the next two together */
   readonly exchangeCorrelation: number;
+  /** of the electrons of each spin, from their one-particle density; absent in files of earlier versions */
+  readonly exchange?: number;
+  /** of the repulsion alone, what no one-particle density gives; in Hartree–Fock 0; absent as `exchange` is */
+  readonly correlation?: number;
   readonly nuclearRepulsion: number;
   /** −V/T: 2 for exact wave functions at a stationary geometry, and where all lengths are optimised */
   readonly virialRatio: number;
