@@ -17,6 +17,21 @@ export { evaluateOnGrid, type FieldOnGrid } from './calculation/field-on-grid';
 export { findLevelMinimum } from './calculation/find-level-minimum';
 export { type FieldKind, type FollowedNeighbours, followNeighbours } from './calculation/follow-neighbours';
 export { type FollowedState, followStates } from './calculation/follow-states';
+export type {
+  CurveFits,
+  DunhamExpansion,
+  ExcitedState,
+  ExtendedRydbergFit,
+  FitQuality,
+  FranckCondon,
+  Isotopologue,
+  MorseFit,
+  QuasiBoundLevel,
+  RotatingLevel,
+  RotatingLevels,
+  TransitionMoment,
+  VerticalExcitation,
+} from './calculation/further-findings';
 export { LEVEL_NAMES } from './calculation/levels';
 export type { OccupiedOrbitals, PointCarry } from './calculation/mean-fields';
 export {
@@ -37,14 +52,20 @@ export type {
   FailedLevel,
   Fragment,
   HartreeFockResult,
+  HigherMinimum,
   InstabilityOnset,
+  LeadingConfiguration,
   LeadingDeterminant,
   LevelFindings,
   LevelResult,
   LevelTermination,
+  NaturalOrbitals,
+  NotAvailable,
   OrbitalLabels,
   PerturbationResult,
   PointResult,
+  ReferenceWeightCrossing,
+  ReferenceWeightFinding,
   ScaleOptimisation,
   SinglesResult,
   SinglesState,
@@ -58,6 +79,7 @@ export type {
 } from './calculation/result';
 export type {
   CompleteStudy,
+  FindingsOptions,
   LengthUnit,
   ScanCoordinate,
   Study,
@@ -65,7 +87,15 @@ export type {
   StudyMolecule,
   StudyScan,
 } from './calculation/study';
+export type {
+  CorrelationParts,
+  OrbitalPart,
+  PairPart,
+  ProjectedEnergy,
+  RankPart,
+} from './configuration-interaction/correlation-parts';
 export type { SpinName } from './configuration-interaction/spin';
+export type { UnpairedElectrons } from './configuration-interaction/unpaired-electrons';
 export {
   BOHR_IN_ANGSTROM,
   DALTON_IN_ELECTRON_MASSES,

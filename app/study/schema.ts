@@ -175,6 +175,22 @@ const level = z.custom<string>((value) => (LEVEL_NAMES as readonly unknown[]).in
   params: { ...levelParams },
 });
 
+/** Beyond this no bound level of a molecule is left. */
+const HIGHEST_ROTATION = 1000;
+const MOST_ROTATIONS = 50;
+const MOST_ISOTOPOLOGUES = 50;
+const findings = closed({
+  rotation: list(wholeNumber(0, HIGHEST_ROTATION), 'rotational quantum numbers', MOST_ROTATIONS).optional(),
+  isotopologues: list(
+    leaf<number[]>(
+      'a mass number for every atom, such as [1, 2]',
+      (value) => Array.isArray(value) && value.every((item) => Number.isSafeInteger(item) && item > 0),
+    ),
+    'isotopologues',
+    MOST_ISOTOPOLOGUES,
+  ).optional(),
+});
+
 /** @see Study */
 export const studySchema: z.ZodType<Study> = closed({
   format: z.literal('farwell/study'),
@@ -193,4 +209,5 @@ export const studySchema: z.ZodType<Study> = closed({
     (value) => value === 'restricted' || value === 'unrestricted',
   ).optional(),
   convergence: closed({ energy: number.optional() }).optional(),
+  findings: findings.optional(),
 });

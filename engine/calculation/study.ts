@@ -20,6 +20,15 @@ export interface Study {
   /** of the CI: RHF or ROHF ones (default), or those of UHF, different for the two spins */
   readonly orbitals?: OrbitalKind | undefined;
   readonly convergence?: { readonly energy?: number | undefined } | undefined;
+  /** what is read off the curves beyond the usual */
+  readonly findings?: FindingsOptions | undefined;
+}
+
+export interface FindingsOptions {
+  /** J of the vibrational levels, of states that are no singlets N; default 0 alone. Diatomic molecules */
+  readonly rotation?: readonly number[] | undefined;
+  /** further isotopologues: a mass number for every atom. Diatomic molecules */
+  readonly isotopologues?: readonly (readonly number[])[] | undefined;
 }
 
 export type OrbitalKind = 'restricted' | 'unrestricted';
