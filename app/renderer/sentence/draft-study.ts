@@ -26,7 +26,12 @@ export function studyForWording(draft: StudyDraft): Study {
     levels: draft.levels.length === 0 ? ['no level'] : draft.levels,
     states: wholeNumber(draft.states),
     frozenCore: draft.frozenCore,
-    active: draft.active,
+    ...(draft.active && {
+      active: {
+        electrons: wholeNumber(draft.active.electrons) ?? Number.NaN,
+        orbitals: wholeNumber(draft.active.orbitals) ?? Number.NaN,
+      },
+    }),
     orbitals: draft.orbitals,
   };
 }

@@ -3,6 +3,7 @@ import { Check } from '../controls/check';
 import { LabelledField } from '../controls/labelled-field';
 import type { StudyDraft } from '../state/draft';
 import { LEVELS, withLevel } from '../state/levels';
+import { CorrelatedEditor } from './correlated-editor';
 
 interface LevelsEditorProps {
   readonly draft: StudyDraft;
@@ -34,13 +35,7 @@ export function LevelsEditor({ draft, issues, onEdit }: LevelsEditorProps) {
           </Check>
         ))}
       </fieldset>
-      <Check
-        isChecked={draft.frozenCore}
-        onChange={(frozenCore) => onEdit((current) => ({ ...current, frozenCore }))}
-      >
-        <strong>Core frozen</strong>{' '}
-        <span className="hint">inner-shell electrons stay in their orbitals in CI</span>
-      </Check>
+      <CorrelatedEditor {...{ draft, issues, onEdit }} />
       <div className="fieldRow">
         <LabelledField
           label="Lowest states of each CI level"

@@ -79,7 +79,7 @@ function Bracket({ part, text, issues, draft, onEdit }: BracketProps): ReactNode
     case 'states':
     case 'core':
       return (
-        <PopoverPart part={part} name="Levels and states" text={text} issues={issues}>
+        <PopoverPart part={part} name="Levels and states" text={text.replaceAll('NaN', '?')} issues={issues}>
           <LevelsEditor {...editors} />
         </PopoverPart>
       );

@@ -21,9 +21,12 @@ export function draftFromStudy(study: Study): StudyDraft {
     levels: study.levels,
     states: String(study.states ?? 1),
     frozenCore: study.frozenCore ?? false,
-    ...(study.active && { active: study.active }),
-    ...(study.orbitals && { orbitals: study.orbitals }),
+    ...(study.active && {
+      active: { electrons: String(study.active.electrons), orbitals: String(study.active.orbitals) },
+    }),
+    orbitals: study.orbitals ?? 'restricted',
     energyConvergence: optionalNumber(study.convergence?.energy),
+    ...(study.findings && { findings: study.findings }),
   };
 }
 

@@ -17,12 +17,18 @@ export interface StudyDraft {
   readonly levels: readonly string[];
   readonly states: string;
   readonly frozenCore: boolean;
-  /** kept as the study gave it */
-  readonly active?: Study['active'];
-  /** kept as the study gave it */
-  readonly orbitals?: Study['orbitals'];
+  /** electrons and orbitals of an active space; absent: none */
+  readonly active?: ActiveDraft;
+  readonly orbitals: NonNullable<Study['orbitals']>;
   /** empty: the default */
   readonly energyConvergence: string;
+  /** kept as the study gave it */
+  readonly findings?: Study['findings'];
+}
+
+export interface ActiveDraft {
+  readonly electrons: string;
+  readonly orbitals: string;
 }
 
 export interface AtomDraft {
@@ -76,5 +82,6 @@ export const EMPTY_DRAFT: StudyDraft = {
   levels: ['RHF'],
   states: '1',
   frozenCore: false,
+  orbitals: 'restricted',
   energyConvergence: '',
 };

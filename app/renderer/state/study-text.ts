@@ -35,11 +35,17 @@ export function studyText(draft: StudyDraft): StudyText {
     levels: draft.levels,
     ...(draft.states.trim() !== '' && { states: numberOrText(draft.states) }),
     frozenCore: draft.frozenCore,
-    ...(draft.active && { active: draft.active }),
-    ...(draft.orbitals && { orbitals: draft.orbitals }),
+    ...(draft.active && {
+      active: {
+        electrons: numberOrText(draft.active.electrons),
+        orbitals: numberOrText(draft.active.orbitals),
+      },
+    }),
+    ...(draft.orbitals !== 'restricted' && { orbitals: draft.orbitals }),
     ...(draft.energyConvergence.trim() !== '' && {
       convergence: { energy: numberOrText(draft.energyConvergence) },
     }),
+    ...(draft.findings && { findings: draft.findings }),
   };
   return { text: `${JSON.stringify(study, undefined, 2)}\n`, issues: basis.issues };
 }

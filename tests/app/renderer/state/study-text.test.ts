@@ -24,6 +24,8 @@ describe('a study in the window', () => {
     ],
     ['notes and a frozen core', { notes: 'two\nlines', frozenCore: true, states: 3 }],
     ['orbitals of each spin', { orbitals: 'unrestricted' }],
+    ['an active space', { active: { electrons: 2, orbitals: 4 } }],
+    ['options of its findings', { findings: { rotation: [0, 5], isotopologues: [[2, 2]] } }],
     [
       'an isotope and a ghost',
       {
@@ -49,6 +51,11 @@ describe('a study in the window', () => {
     const reading = parsed(edited({ scan: { ...draft.scan, to: 'six', count: '' } }));
     expect(reading.ok ? [] : reading.issues.map(({ place }) => place)).toEqual(['scan.to', 'scan.count']);
     expect(reading.ok ? '' : reading.issues[0]?.message).toContain('"six"');
+  });
+
+  it('names the place in an active space too', () => {
+    const reading = parsed(edited({ active: { electrons: 'two', orbitals: '4' } }));
+    expect(reading.ok ? [] : reading.issues.map(({ place }) => place)).toEqual(['active.electrons']);
   });
 
   it('reports a basis set that is not JSON at the basis', () => {
