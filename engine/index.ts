@@ -3,6 +3,15 @@ export type { BasisRequest, EvenTemperedShells } from './basis/basis-request';
 export type { Harmonics, ShellDefinition } from './basis/contracted-gaussian';
 export { type BasisSetEntry, listBasisSets } from './basis/library-index';
 export type { ScaleFactors } from './basis/scalable-basis';
+export type {
+  BasisFamilyMember,
+  BasisSetLimit,
+  EnergiesInBasis,
+  LevelLimit,
+  LimitCurve,
+  LimitFormula,
+  StudyInBasis,
+} from './calculation/basis-comparison';
 export { LOW_REFERENCE_WEIGHT, type SolutionCrossing, studyCautions } from './calculation/cautions';
 export {
   type ComputedPoint,
@@ -44,13 +53,16 @@ export type {
   AtomicCharges,
   BasisDescription,
   Caution,
+  CautionNumber,
   CorrelatedResult,
   CorrelatedState,
+  Counterpoise,
   DiatomicConstants,
   Dissociation,
   Estimate,
   FailedLevel,
   Fragment,
+  FragmentSuperposition,
   HartreeFockResult,
   HigherMinimum,
   InstabilityOnset,

@@ -1,5 +1,13 @@
 import { z } from 'zod';
-import type { CurveFits, ExcitedState, Isotopologue, LevelFindings, Vibration, WellConstants } from '#engine';
+import type {
+  Counterpoise,
+  CurveFits,
+  ExcitedState,
+  Isotopologue,
+  LevelFindings,
+  Vibration,
+  WellConstants,
+} from '#engine';
 
 /* The form of what is read off a curve, in a results file. */
 
@@ -12,6 +20,7 @@ export const minimum: z.ZodType<LevelFindings['minimum']> = z.discriminatedUnion
     equilibriumDistance: z.number(),
     energy: z.number(),
     uncertainty: z.number(),
+    onKink: z.literal(true).exactOptional(),
     others: z
       .array(z.looseObject({ equilibriumDistance: z.number(), energy: z.number(), uncertainty: z.number() }))
       .exactOptional(),
@@ -21,7 +30,7 @@ export const minimum: z.ZodType<LevelFindings['minimum']> = z.discriminatedUnion
   z.looseObject({ kind: z.literal('none'), reason: z.string() }),
 ]);
 
-const estimate = z.looseObject({ value: z.number(), uncertainty: z.number() });
+export const estimate = z.looseObject({ value: z.number(), uncertainty: z.number() });
 
 const diatomicConstants = z.looseObject({
   masses: z.literal('atomic'),
@@ -39,6 +48,19 @@ export const constants: z.ZodType<WellConstants> = z.looseObject({
   diatomic: diatomicConstants.exactOptional(),
   withoutDiatomic: z.string().exactOptional(),
 });
+
+const superposition = z.looseObject({ energyInWholeBasis: z.number(), error: z.number() });
+
+export const counterpoise: z.ZodType<Counterpoise> = z.discriminatedUnion('kind', [
+  z.looseObject({
+    kind: z.literal('found'),
+    fragments: z.tuple([superposition, superposition]),
+    error: z.number(),
+    wellDepth: z.number(),
+    alongCurve: z.array(z.number().nullable()).exactOptional(),
+  }),
+  z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+]);
 
 const rotatingLevel = { v: z.number(), energyPerCm: z.number(), uncertaintyPerCm: number };
 

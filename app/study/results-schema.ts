@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import type {
+  Caution,
   LevelFindings,
   LevelResult,
   MeasuredQuantity,
@@ -7,7 +8,17 @@ import type {
   PointResult,
   StudyResults,
 } from '#engine';
-import { constants, excitedState, fits, isotopologue, minimum, number, vibration } from './findings-schema';
+import { basisDescription, basisSetLimit, studyInBasis } from './basis-comparison-schema';
+import {
+  constants,
+  counterpoise,
+  excitedState,
+  fits,
+  isotopologue,
+  minimum,
+  number,
+  vibration,
+} from './findings-schema';
 import { studySchema } from './schema';
 
 /*
@@ -216,10 +227,13 @@ const level: z.ZodType<LevelResult> = z.discriminatedUnion('kind', [
   failed,
 ]);
 
-const cautions = z.array(
+const cautions: z.ZodType<readonly Caution[]> = z.array(
   z.looseObject({
     code: z.string(),
     message: z.string(),
+    meaning: z.string().exactOptional(),
+    remedy: z.string().exactOptional(),
+    numbers: z.array(z.looseObject({ name: z.string(), value: number, unit: z.string() })).exactOptional(),
     level: z.string().exactOptional(),
     range: z.tuple([z.number(), z.number()]).exactOptional(),
   }),
@@ -263,6 +277,8 @@ const fragment = z.looseObject({
   multiplicity: z.number(),
   energy: z.number(),
   level: z.string(),
+  startedFrom: z.number().exactOptional(),
+  correlation: z.number().exactOptional(),
 });
 
 const weightCrossings = {
@@ -301,6 +317,7 @@ const findings: z.ZodType<LevelFindings> = z.looseObject({
       }),
     ])
     .exactOptional(),
+  counterpoise: counterpoise.exactOptional(),
   vibration: vibration.exactOptional(),
   isotopologues: z.array(isotopologue).exactOptional(),
   fits: fits.exactOptional(),
@@ -361,28 +378,14 @@ export const resultsSchema: z.ZodType<StudyResults> = z.looseObject({
     version: z.string(),
     date: z.string().exactOptional(),
   }),
-  basis: z.looseObject({
-    name: z.string(),
-    harmonics: z.enum(['spherical', 'cartesian']),
-    functions: z.number(),
-    shells: z.record(
-      z.string(),
-      z.array(
-        z.looseObject({
-          angularMomentum: z.number(),
-          exponents: z.array(z.number()),
-          coefficients: z.array(z.number()),
-        }),
-      ),
-    ),
-    citations: z.array(z.string()),
-    notes: z.array(z.string()),
-  }),
+  basis: basisDescription,
   points: z.array(point),
   findings: z.record(z.string(), findings),
   curves: z
     .record(z.string(), z.array(z.looseObject({ name: z.string(), states: z.array(z.number().nullable()) })))
     .exactOptional(),
+  furtherBases: z.array(studyInBasis(findings, cautions)).exactOptional(),
+  basisSetLimit: basisSetLimit.exactOptional(),
   measured: z.array(measuredState).exactOptional(),
   cautions,
 });

@@ -179,7 +179,10 @@ const level = z.custom<string>((value) => (LEVEL_NAMES as readonly unknown[]).in
 const HIGHEST_ROTATION = 1000;
 const MOST_ROTATIONS = 50;
 const MOST_ISOTOPOLOGUES = 50;
+const MOST_FURTHER_BASES = 10;
 const findings = closed({
+  referenceWeight: number.optional(),
+  naturalOrbitals: yesOrNo.optional(),
   rotation: list(wholeNumber(0, HIGHEST_ROTATION), 'rotational quantum numbers', MOST_ROTATIONS).optional(),
   isotopologues: list(
     leaf<number[]>(
@@ -189,6 +192,8 @@ const findings = closed({
     'isotopologues',
     MOST_ISOTOPOLOGUES,
   ).optional(),
+  counterpoise: yesOrNo.optional(),
+  bases: list(basis, 'bases', MOST_FURTHER_BASES).optional(),
 });
 
 /** @see Study */

@@ -2,7 +2,7 @@ import type { Study } from '#engine';
 
 /** Keys in the order in which a study reads best; keys of the user's own making keep their order. */
 const KEY_ORDER = [
-  'format version title notes molecule scan basis levels states frozenCore active orbitals convergence',
+  'format version title notes molecule scan basis levels states frozenCore active orbitals convergence findings',
   'unit atoms charge multiplicity',
   'element at isotope ghost',
   'coordinate from to',
@@ -10,6 +10,7 @@ const KEY_ORDER = [
   'angularMomentum exponents coefficients smallest ratio',
   'count values',
   'electrons orbitals',
+  'rotation isotopologues referenceWeight counterpoise bases',
 ]
   .join(' ')
   .split(' ');

@@ -9,6 +9,7 @@ import type { Vector3 } from '../molecule/molecule';
 import type { PointGroupName } from '../symmetry/point-groups';
 import type { StateSymmetry } from '../symmetry/state-symmetry';
 import type { Termination } from '../termination';
+import type { BasisSetLimit, StudyInBasis } from './basis-comparison';
 import type { EnergyParts } from './energy-parts';
 import type { CurveFits, ExcitedState, Isotopologue, RotatingLevels } from './further-findings';
 import type { CompleteStudy, StudyAtom } from './study';
@@ -30,6 +31,10 @@ export interface StudyResults {
   readonly findings: Readonly<Record<string, LevelFindings>>;
   /** states of CI levels and CIS joined along the scan, by level; absent in files of earlier versions */
   readonly curves?: Readonly<Record<string, readonly StateCurve[]>>;
+  /** the same study in the further bases that it asks for */
+  readonly furtherBases?: readonly StudyInBasis[];
+  /** what the study's basis and the further ones tend to; present with `furtherBases` */
+  readonly basisSetLimit?: BasisSetLimit;
   /** measured constants of this isotopologue, empty where none are known; diatomic molecules only */
   readonly measured?: readonly MeasuredState[];
   /** what concerns the whole curve rather than one point */
@@ -87,12 +92,27 @@ export interface ScaleOptimisation {
 /** Where a number should not be trusted, and why. */
 export interface Caution {
   readonly code: string;
-  /** one plain sentence of what it means for this result */
+  /** what is the case, in plain words */
   readonly message: string;
+  /** what that means for this result, as one sentence; absent where the message says it, and in earlier files */
+  readonly meaning?: string;
+  /** what to do about it; absent in files of earlier versions */
+  readonly remedy?: string;
+  /** the values that raised it, and the bounds that they passed; absent where there are none, and in earlier files */
+  readonly numbers?: readonly CautionNumber[];
   /** the level concerned; absent: all */
   readonly level?: string;
   /** coordinates between which it holds, where it is not said at a point */
   readonly range?: readonly [number, number];
+}
+
+/** A number behind a caution. */
+export interface CautionNumber {
+  /** what it is, as `⟨S²⟩` or `share of the well depth` */
+  readonly name: string;
+  readonly value: number;
+  /** as `hartree`, `cm⁻¹`, `Å`; empty for a pure number */
+  readonly unit: string;
 }
 
 export type LevelResult =
@@ -291,6 +311,11 @@ export interface LevelFindings {
         readonly energy: number;
         /** how far the distance may be off, study unit */
         readonly uncertainty: number;
+        /**
+         * true where the curve has a kink there, as where two solutions cross: the distance is good to `uncertainty`
+         * only, and there are no constants of the well
+         */
+        readonly onKink?: true;
         /** higher minima of the same curve, from the lowest; absent where there are none */
         readonly others?: readonly HigherMinimum[];
       }
@@ -306,6 +331,8 @@ export interface LevelFindings {
   readonly dissociation?: Dissociation;
   /** absent without a minimum */
   readonly wellDepth?: WellDepth;
+  /** where the study asks for it; absent without a minimum */
+  readonly counterpoise?: Counterpoise;
   /** diatomic molecules; absent without a minimum */
   readonly vibration?: Vibration;
   /** those that the study asks for; diatomic molecules */
@@ -393,6 +420,33 @@ export type Dissociation =
     }
   | { readonly kind: 'none'; readonly reason: string };
 
+/**
+ * Superposition error of the fragments' bases: what each gains from the other's functions, at the geometry of the
+ * molecule. Hartree.
+ *
+ * Source: S. F. Boys, F. Bernardi, Mol. Phys. 19, 553 (1970).
+ */
+export type Counterpoise =
+  | {
+      readonly kind: 'found';
+      /** at the minimum; in the order of `dissociation.fragments` */
+      readonly fragments: readonly [FragmentSuperposition, FragmentSuperposition];
+      /** of both fragments, at the minimum */
+      readonly error: number;
+      /** well depth less the error, both at the uncorrected minimum */
+      readonly wellDepth: number;
+      /** error of both fragments at each of the study's points, null where one did not converge; only where it is cheap */
+      readonly alongCurve?: readonly (number | null)[];
+    }
+  | { readonly kind: 'none'; readonly reason: string };
+
+export interface FragmentSuperposition {
+  /** at the level, charge and spin that `dissociation.fragments` says, in the basis of the whole molecule */
+  readonly energyInWholeBasis: number;
+  /** energy in its own basis less this */
+  readonly error: number;
+}
+
 /** A part of the molecule on its own, in its own basis functions, at the geometry that it has in the scan. */
 export interface Fragment {
   /** indices of the study's atoms */
@@ -403,6 +457,10 @@ export interface Fragment {
   readonly energy: number;
   /** the level that it was computed at: ROHF for open shells where the molecule has RHF, and for one electron */
   readonly level: string;
+  /** 2S + 1 of the determinant that a CI started from, where its state has turned out to be one of another spin */
+  readonly startedFrom?: number;
+  /** of the energy, what is not RHF (open shells: ROHF); levels beyond Hartree–Fock */
+  readonly correlation?: number;
 }
 
 export type Vibration =

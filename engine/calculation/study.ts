@@ -25,10 +25,18 @@ export interface Study {
 }
 
 export interface FindingsOptions {
+  /** below this weight of the reference a single determinant is said not to describe the state; default 0.9 */
+  readonly referenceWeight?: number | undefined;
+  /** natural orbitals in the results; default: where they are few numbers */
+  readonly naturalOrbitals?: boolean | undefined;
   /** J of the vibrational levels, of states that are no singlets N; default 0 alone. Diatomic molecules */
   readonly rotation?: readonly number[] | undefined;
   /** further isotopologues: a mass number for every atom. Diatomic molecules */
   readonly isotopologues?: readonly (readonly number[])[] | undefined;
+  /** at every minimum, how much the fragments gain from each other's basis functions; default false */
+  readonly counterpoise?: boolean | undefined;
+  /** the whole study is computed in each of these bases too; not from files */
+  readonly bases?: readonly BasisRequest[] | undefined;
 }
 
 export type OrbitalKind = 'restricted' | 'unrestricted';
