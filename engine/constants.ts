@@ -13,5 +13,7 @@ export const HARTREE_IN_WAVENUMBERS = 219474.63136314;
 export const HARTREE_IN_KJ_PER_MOL = 4.359744722206e-21 * 6.02214076e23;
 /** Unified atomic mass unit in electron masses. */
 export const DALTON_IN_ELECTRON_MASSES = 1822.888486;
+/** One hartree/bohr² in newton per metre: 4.3597447222060e-18 J / (0.529177210544e-10 m)². */
+export const FORCE_CONSTANT_IN_NEWTON_PER_METRE = 4.359744722206e-18 / (BOHR_IN_ANGSTROM * 1e-10) ** 2;
 /** Atomic unit of electric dipole moment, e·a0, in debye. */
 export const DIPOLE_IN_DEBYE = 2.5417464739;

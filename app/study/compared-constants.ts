@@ -1,5 +1,10 @@
 import type { LevelFindings, MeasuredConstant, MeasuredQuantity, StudyResults } from '#engine';
-import { HARTREE_IN_EV, HARTREE_IN_WAVENUMBERS } from '../../engine/constants';
+import {
+  DALTON_IN_ELECTRON_MASSES,
+  FORCE_CONSTANT_IN_NEWTON_PER_METRE,
+  HARTREE_IN_EV,
+  HARTREE_IN_WAVENUMBERS,
+} from '../../engine/constants';
 
 /** A constant of a diatomic molecule, of every level that has it, beside its measured value. */
 export interface ComparedConstant {
@@ -11,17 +16,36 @@ export interface ComparedConstant {
   readonly byLevel: ReadonlyMap<string, number>;
   /** of the ground state, in `unit`; absent where none is known */
   readonly measured?: MeasuredValue;
+  /** why there is none, where measured constants of this molecule are on file */
+  readonly whyNotMeasured?: string;
 }
 
 export interface MeasuredValue {
   readonly value: number;
+  /** with the digits, and the uncertainty, of the print; a converted or derived value rounded as computed ones are */
+  readonly text: string;
   readonly source: string;
+  /** the number was recalled and has not been compared with the source */
+  readonly isRecalled: boolean;
+  /** of what measured constants it was worked out, where it is not measured itself */
+  readonly workedOutFrom?: string;
 }
+
+type MeasuredGround = ReadonlyMap<MeasuredQuantity, MeasuredConstant>;
 
 type Kind = Pick<ComparedConstant, 'symbol' | 'name' | 'unit' | 'decimals'> & {
   readonly quantity?: MeasuredQuantity;
+  /** how it follows from what is measured, where it is no measured quantity itself */
+  readonly workOut?: (ground: MeasuredGround, reducedMassDalton: number) => WorkedOut | string;
   readonly of: (findings: LevelFindings) => number | undefined;
 };
+
+interface WorkedOut {
+  readonly value: number;
+  readonly constants: readonly MeasuredConstant[];
+  /** `ωₑ` */
+  readonly from: string;
+}
 
 const KINDS: readonly Kind[] = [
   {
@@ -77,6 +101,7 @@ const KINDS: readonly Kind[] = [
     name: 'force constant',
     unit: 'N/m',
     decimals: 1,
+    workOut: forceConstantFrom,
     of: ({ constants }) => constants?.forceConstantNewtonPerMetre.value,
   },
   {
@@ -113,6 +138,7 @@ const KINDS: readonly Kind[] = [
     name: 'well depth',
     unit: 'eV',
     decimals: 4,
+    workOut: wellDepthFrom,
     of: ({ wellDepth }) => wellDepth && wellDepth.value * HARTREE_IN_EV,
   },
   {
@@ -131,27 +157,97 @@ const EV_IN_WAVENUMBERS = HARTREE_IN_WAVENUMBERS / HARTREE_IN_EV;
 
 /** The constants that any level has; empty where no minimum was found. */
 export function comparedConstants({ study, findings, measured }: StudyResults): readonly ComparedConstant[] {
-  if (study.levels.every((level) => !findings[level]?.constants)) return [];
-  const ground = measured?.find(({ isGroundState }) => isGroundState)?.constants ?? [];
-  return KINDS.flatMap(({ quantity, of, ...kind }): ComparedConstant[] => {
+  const withConstants = study.levels.flatMap((level) => findings[level]?.constants ?? []);
+  if (withConstants.length === 0) return [];
+  const reducedMassDalton = withConstants.find(({ diatomic }) => diatomic)?.diatomic?.reducedMassDalton;
+  const constants = measured?.find(({ isGroundState }) => isGroundState)?.constants ?? [];
+  // of two sources of one quantity the first named is the better one
+  const ground: MeasuredGround = new Map(constants.map((one) => [one.quantity, one] as const).reverse());
+  return KINDS.flatMap((kind): ComparedConstant[] => {
+    const { symbol, name, unit, decimals } = kind;
     const byLevel = new Map(
       study.levels.flatMap((level) => {
-        const value = findings[level] && of(findings[level]);
+        const value = findings[level] && kind.of(findings[level]);
         return value === undefined ? [] : [[level, value] as const];
       }),
     );
     if (byLevel.size === 0) return [];
-    const known = quantity && ground.find((constant) => constant.quantity === quantity);
-    const value = known && inUnit(known, kind.unit);
+    const beside = ground.size === 0 ? undefined : measuredValue(kind, ground, reducedMassDalton);
     return [
       {
-        ...kind,
-        byLevel,
-        ...(known && value !== undefined && { measured: { value, source: known.source } }),
+        ...{ symbol, name, unit, decimals, byLevel },
+        ...(typeof beside === 'string' && { whyNotMeasured: beside }),
+        ...(typeof beside === 'object' && { measured: beside }),
       },
     ];
   });
 }
+
+/** The measured value, or why there is none. */
+function measuredValue(
+  { quantity, workOut, unit, decimals }: Kind,
+  ground: MeasuredGround,
+  reducedMassDalton: number | undefined,
+): MeasuredValue | string {
+  const known = quantity && ground.get(quantity);
+  const value = known && inUnit(known, unit);
+  if (known && value !== undefined) {
+    const { source, status, printed } = known;
+    const isPlain = known.unit === unit && !/e/i.test(printed);
+    const text = isPlain ? printed.replace(/[[\]]/g, '') : rounded(value, decimals);
+    return { value, text, source, isRecalled: status === 'memory' };
+  }
+  if (!workOut) return 'no value on file';
+  if (reducedMassDalton === undefined) return 'no value on file to work it out from';
+  const found = workOut(ground, reducedMassDalton);
+  if (typeof found === 'string') return found;
+  return {
+    value: found.value,
+    text: rounded(found.value, decimals),
+    source: [...new Set(found.constants.map(({ source }) => source))].join('; '),
+    isRecalled: found.constants.some(({ status }) => status === 'memory'),
+    workedOutFrom: found.from,
+  };
+}
+
+const rounded = (value: number, decimals: number): string => String(Number(value.toFixed(decimals)));
+
+/** k = μ(2πcωₑ)²: not measured by itself, but the same statement as ωₑ. */
+function forceConstantFrom(ground: MeasuredGround, reducedMassDalton: number): WorkedOut | string {
+  const harmonic = ground.get('harmonicWavenumber');
+  if (!harmonic) return 'not measured by itself, and no ωₑ on file that it follows from';
+  const frequency = (inUnit(harmonic, 'cm⁻¹') ?? Number.NaN) / HARTREE_IN_WAVENUMBERS;
+  const value =
+    reducedMassDalton * DALTON_IN_ELECTRON_MASSES * frequency ** 2 * FORCE_CONSTANT_IN_NEWTON_PER_METRE;
+  return { value, constants: [harmonic], from: 'ωₑ' };
+}
+
+/** Dₑ = D₀ + G(0): the depth of a curve cannot be measured, D₀ can. */
+function wellDepthFrom(ground: MeasuredGround): WorkedOut | string {
+  const dissociation = ground.get('dissociationEnergy');
+  if (!dissociation) return 'not measured by itself, and no D₀ on file that it follows from';
+  const zeroPoint = ground.get('zeroPointEnergy');
+  const harmonic = ground.get('harmonicWavenumber');
+  const anharmonicity = ground.get('anharmonicity');
+  const depth = (zeroPointPerCm: number) =>
+    (inUnit(dissociation, 'eV') ?? Number.NaN) + zeroPointPerCm / EV_IN_WAVENUMBERS;
+  if (zeroPoint) {
+    const value = depth(inUnit(zeroPoint, 'cm⁻¹') ?? Number.NaN);
+    return { value, constants: [dissociation, zeroPoint], from: 'D₀ + G(0)' };
+  }
+  if (!harmonic || !anharmonicity)
+    return 'not measured by itself, and no zero-point energy on file to add to D₀';
+  const zeroPointPerCm =
+    (inUnit(harmonic, 'cm⁻¹') ?? Number.NaN) / 2 - (inUnit(anharmonicity, 'cm⁻¹') ?? Number.NaN) / 4;
+  return {
+    value: depth(zeroPointPerCm),
+    constants: [dissociation, harmonic, anharmonicity],
+    from: 'D₀ + ωₑ/2 − ωₑxₑ/4',
+  };
+}
+
+const MEGAHERTZ_IN_WAVENUMBERS = 1 / 29979.2458;
+const EV_IN_WAVENUMBERS = HARTREE_IN_WAVENUMBERS / HARTREE_IN_EV;
 
 function inUnit({ value, unit }: MeasuredConstant, wanted: ComparedConstant['unit']): number | undefined {
   if (unit === wanted) return value;

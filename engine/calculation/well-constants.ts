@@ -1,8 +1,7 @@
-import { BOHR_IN_ANGSTROM } from '../constants';
+import { BOHR_IN_ANGSTROM, FORCE_CONSTANT_IN_NEWTON_PER_METRE } from '../constants';
 import type { CurveMinimum } from '../curves/minimum';
 import {
   expandWell,
-  FORCE_CONSTANT_IN_NEWTON_PER_METRE,
   type SpectroscopicConstants,
   spectroscopicConstants,
   stencilDistances,

@@ -1,10 +1,8 @@
-import { BOHR_IN_ANGSTROM, HARTREE_IN_WAVENUMBERS } from '../constants';
+import { FORCE_CONSTANT_IN_NEWTON_PER_METRE, HARTREE_IN_WAVENUMBERS } from '../constants';
 import { evaluateExpansion, localExpansion, minimumOfExpansion } from './local-expansion';
 
 /** Points of the stencil: enough for the sixth derivative and a smaller stencil beside it. */
 export const STENCIL_POINTS = 13;
-/** Force constant of one hartree/bohr² in newton per metre: 4.3597447222060e-18 J / (0.529177210544e-10 m)². */
-export const FORCE_CONSTANT_IN_NEWTON_PER_METRE = 4.359744722206e-18 / (BOHR_IN_ANGSTROM * 1e-10) ** 2;
 /** Highest coefficient used: a₄, the sixth derivative. */
 const HIGHEST_ORDER = 6;
 /** Stencil spacing in units of −c₂/c₃, the length over which the well stops being harmonic (1/a of Morse). */

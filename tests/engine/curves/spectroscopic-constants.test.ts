@@ -1,10 +1,9 @@
 import { Matrix, solve } from 'ml-matrix';
 import { describe, expect, it } from 'vitest';
-import { HARTREE_IN_WAVENUMBERS } from '../../../engine/constants';
+import { FORCE_CONSTANT_IN_NEWTON_PER_METRE, HARTREE_IN_WAVENUMBERS } from '../../../engine/constants';
 import { localExpansion } from '../../../engine/curves/local-expansion';
 import {
   expandWell,
-  FORCE_CONSTANT_IN_NEWTON_PER_METRE,
   spectroscopicConstants,
   stencilDistances,
   stencilSpacing,
