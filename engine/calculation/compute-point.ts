@@ -143,7 +143,8 @@ function correlationInput(
     dipole: dipole.map((matrix) => transformOneElectron(matrix, coefficients, n, m)),
     nuclearDipole: nuclearDipole(molecule),
     chargesOf: (density) => chargesOf([overFunctions(density)]),
-    partsOf: (energy, density) => energyParts(energy, overFunctions(density), integrals),
+    partsOf: (energy, [alpha, beta]) =>
+      energyParts(energy, [overFunctions(alpha), overFunctions(beta)], integrals),
     orbitalCount: m,
     frozen,
     activeElectrons: [prepared.spinElectrons[0] - frozen, prepared.spinElectrons[1] - frozen],

@@ -1,3 +1,4 @@
+import type { SpinDensities } from '../configuration-interaction/one-particle-density';
 import { dot } from '../linear-algebra/dense';
 import { coulombExchangeInto } from '../self-consistent-field/coulomb-exchange';
 import type { MolecularIntegrals } from './molecular-integrals';
@@ -22,29 +23,45 @@ export interface EnergyParts {
 }
 
 /**
- * The parts of an energy that is an expectation value, E = ⟨H⟩. One-electron parts follow from the density; the
- * repulsion is what remains, so that no two-particle density need be formed.
+ * The parts of an energy that is an expectation value, E = ⟨H⟩. One-electron parts follow from the density, Coulomb and
+ * exchange repulsion from the densities γ of the two spins as if there were one determinant:
+ * ½ Σ (μν|λσ) γ(μν)γ(λσ) and −½ Σ over spins of Σ (μλ|νσ) γ(μν)γ(λσ). What is left of the repulsion belongs to the
+ * cumulant of the two-particle density, so that this one need not be formed.
  *
- * @param density - spin-summed over the basis functions, n×n
+ * @param densities - alpha and beta over the basis functions, n×n each; the same array twice for a closed shell
+ *
+ * Source: W. Kutzelnigg, D. Mukherjee, J. Chem. Phys. 110, 2800 (1999).
  */
 export function energyParts(
   energy: number,
-  density: Float64Array,
+  densities: SpinDensities,
   { problem, kinetic: kineticMatrix }: MolecularIntegrals,
 ): EnergyParts {
   const { functionCount: n, coreHamiltonian, repulsion, nuclearRepulsion } = problem;
-  const kinetic = dot(density, kineticMatrix);
-  const oneElectron = dot(density, coreHamiltonian);
+  const ofBoth = (matrix: Float64Array) => dot(densities[0], matrix) + dot(densities[1], matrix);
+  const kinetic = ofBoth(kineticMatrix);
+  const oneElectron = ofBoth(coreHamiltonian);
   const electronRepulsion = energy - nuclearRepulsion - oneElectron;
+
   const coulombMatrix = new Float64Array(n * n);
-  coulombExchangeInto(density, repulsion, n, coulombMatrix, new Float64Array(n * n));
-  const coulomb = dot(density, coulombMatrix) / 2;
+  const exchangeMatrix = new Float64Array(n * n);
+  const [alpha, beta] = densities;
+  let coulomb = 0;
+  let exchange = 0;
+  for (const density of alpha === beta ? [alpha] : densities) {
+    coulombExchangeInto(density, repulsion, n, coulombMatrix, exchangeMatrix);
+    const times = alpha === beta ? 2 : 1;
+    coulomb += (times * ofBoth(coulombMatrix)) / 2;
+    exchange -= (times * dot(density, exchangeMatrix)) / 2;
+  }
   return {
     kinetic,
     nuclearAttraction: oneElectron - kinetic,
     electronRepulsion,
     coulomb,
     exchangeCorrelation: electronRepulsion - coulomb,
+    exchange,
+    correlation: electronRepulsion - coulomb - exchange,
     nuclearRepulsion,
     virialRatio: (kinetic - energy) / kinetic,
   };

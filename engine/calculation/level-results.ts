@@ -1,8 +1,9 @@
 import type { ConfigurationInteractionState } from '../configuration-interaction/describe-state';
-import { padDensity } from '../configuration-interaction/one-particle-density';
+import { padDensity, type SpinDensities } from '../configuration-interaction/one-particle-density';
 import { solveSingles } from '../configuration-interaction/singles';
 import { sizeCorrections } from '../configuration-interaction/size-corrections';
 import { solveConfigurationInteraction } from '../configuration-interaction/solve';
+import { unpairedElectrons } from '../configuration-interaction/unpaired-electrons';
 import type { OrbitalSpecies, VectorSymmetry } from '../configuration-interaction/vector-symmetry';
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { dot } from '../linear-algebra/dense';
@@ -29,6 +30,7 @@ import type {
   CorrelatedState,
   FailedLevel,
   HartreeFockResult,
+  LeadingConfiguration,
   LeadingDeterminant,
   LevelTermination,
   PerturbationResult,
@@ -44,8 +46,8 @@ export interface CorrelationInput {
   readonly nuclearDipole: Vector3;
   /** of a density over all orbitals */
   readonly chargesOf: (density: Float64Array) => AtomicCharges;
-  /** of an energy and its density over all orbitals */
-  readonly partsOf: (energy: number, density: Float64Array) => EnergyParts;
+  /** of an energy and its densities over all orbitals */
+  readonly partsOf: (energy: number, densities: SpinDensities) => EnergyParts;
   /** all orbitals, frozen ones included */
   readonly orbitalCount: number;
   readonly frozen: number;
@@ -74,8 +76,8 @@ export function hartreeFockResult(
   const solution = { RHF: fields.restricted, UHF: fields.unrestricted, ROHF: fields.restrictedOpen }[name];
   if (!solution) throw new RangeError(`${name} was not computed`);
   const densities: readonly Float64Array[] = 'density' in solution ? [solution.density] : solution.densities;
+  const ofSpins = 'density' in solution ? halves(solution.density) : solution.densities;
   const { dipole } = integrals;
-  const density = densities[0].map((value, i) => value + (densities[1]?.[i] ?? 0));
   const nuclear = nuclearDipole(molecule);
   const { stability } = solution;
   return {
@@ -92,13 +94,19 @@ export function hartreeFockResult(
     dipole: vector((axis) =>
       densities.reduce<number>((sum, density) => sum - dot(density, dipole[axis]), nuclear[axis]),
     ),
-    energyParts: energyParts(solution.energy, density, integrals),
+    energyParts: energyParts(solution.energy, ofSpins, integrals),
     charges: chargesOf(densities),
     ...('sSquared' in solution && { sSquared: solution.sSquared }),
     ...(stability !== undefined && {
       stability: typeof stability === 'number' ? { own: stability } : stability,
     }),
   };
+}
+
+/** Of a closed shell. */
+function halves(density: Float64Array): SpinDensities {
+  const half = density.map((value) => value / 2);
+  return [half, half];
 }
 
 /** MP2 on RHF for closed shells, on UHF for open ones. */
@@ -143,6 +151,10 @@ export function secondOrderResult(
     reference: base === restricted ? 'RHF' : 'UHF',
     sameSpin,
     oppositeSpin,
+    energyParts: {
+      kind: 'none',
+      reason: 'A second-order energy is not an expectation value and has no kinetic or potential part.',
+    },
     converged,
     termination: converged ? { kind: 'converged' } : { kind: 'orbitalsNotConverged' },
   };
@@ -219,8 +231,9 @@ export function computeCorrelated(
     spin: lowest.spin,
     ...(lowest.symmetry && { symmetry: lowest.symmetry }),
     naturalOccupations: lowest.naturalOccupations,
+    unpairedElectrons: lowest.unpairedElectrons,
     dipole: lowest.dipole,
-    energyParts: input.partsOf(lowest.energy, overAllOrbitals(result.states[0].density, input)),
+    energyParts: input.partsOf(lowest.energy, bothOverAllOrbitals(result.states[0].spinDensities, input)),
     ...(isTruncated && {
       davidsonCorrected: lowest.energy + (1 - lowest.referenceWeight) * belowDeterminant,
     }),
@@ -241,7 +254,7 @@ function stateResult(
   state: ConfigurationInteractionState,
   lowestEnergy: number,
   input: CorrelationInput,
-): CorrelatedState {
+): CorrelatedState & Required<Pick<CorrelatedState, 'unpairedElectrons'>> {
   const { frozen, integrals, dipole, nuclearDipole: nuclear } = input;
   const density = overAllOrbitals(state.density, input);
   const core = Array.from({ length: frozen }, (_, i) => i);
@@ -260,6 +273,7 @@ function stateResult(
     naturalOccupations: integrals.beta
       ? state.naturalOccupations
       : [...core.map(() => 2), ...state.naturalOccupations],
+    unpairedElectrons: unpairedElectrons(state.naturalOccupations),
     leading: state.leading.map(
       ({ coefficient, weight, alpha, beta }): LeadingDeterminant => ({
         coefficient,
@@ -268,6 +282,15 @@ function stateResult(
         beta: withCore(beta),
       }),
     ),
+    ...(state.configurations && {
+      configurations: state.configurations.map(
+        ({ weight, doublyOccupied, singlyOccupied }): LeadingConfiguration => ({
+          weight,
+          doublyOccupied: withCore(doublyOccupied),
+          singlyOccupied: singlyOccupied.map((p) => p + frozen),
+        }),
+      ),
+    }),
   };
 }
 
@@ -320,6 +343,10 @@ function overAllOrbitals(
 ): Float64Array {
   // where beta orbitals differ it is over all of them already
   return integrals.beta ? density : padDensity(density, orbitalCount, frozen, occupation);
+}
+
+function bothOverAllOrbitals([alpha, beta]: SpinDensities, range: OrbitalRange): SpinDensities {
+  return [overAllOrbitals(alpha, range, 1), overAllOrbitals(beta, range, 1)];
 }
 
 /** Rows and columns of the active orbitals, which follow the frozen ones. */

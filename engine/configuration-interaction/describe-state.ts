@@ -2,7 +2,14 @@ import type { BetaIntegrals } from '../integrals/orbital-integrals';
 import { dot } from '../linear-algebra/dense';
 import { type DeterminantSpace, determinantAt } from './determinant-space';
 import { occupiedOrbitals } from './determinants';
-import { naturalOrbitals, transitionDensity, unrestrictedTransitionDensity } from './one-particle-density';
+import { leadingConfigurations, type WeightedConfiguration } from './leading-configurations';
+import {
+  naturalOrbitals,
+  type SpinDensities,
+  spinDensities,
+  spinSummed,
+  unrestrictedSpinDensities,
+} from './one-particle-density';
 import { applySpinSquared, type SpinName, spinName } from './spin';
 import { applyUnrestrictedSpinSquared, unrestrictedSpin } from './unrestricted-spin';
 import type { VectorSymmetry } from './vector-symmetry';
@@ -26,11 +33,15 @@ export interface ConfigurationInteractionState {
   readonly referenceWeight: number;
   /** falling weight: the largest `LEADING_COUNT` above `LEADING_WEIGHT` */
   readonly leading: readonly WeightedDeterminant[];
+  /** absent where beta orbitals differ */
+  readonly configurations?: readonly WeightedConfiguration[];
   /**
    * spin-summed one-particle density over active orbitals, n×n row-major; where beta orbitals differ, over all alpha
    * ones, frozen electrons included
    */
   readonly density: Float64Array;
+  /** the parts of `density` from alpha and from beta electrons */
+  readonly spinDensities: SpinDensities;
   /** of every state but the lowest: one-particle transition density from there, symmetric part, the same size */
   readonly transitionDensity?: Float64Array;
   /** eigenvalues of `density`, falling */
@@ -53,7 +64,8 @@ export function describeState(
   const product = new Float64Array(vector.length);
   applySpin(space, vector, product, beta);
   const sSquared = dot(vector, product);
-  const density = densityBetween(space, vector, vector, beta);
+  const densities = densitiesBetween(space, vector, vector, beta);
+  const density = spinSummed(densities);
   return {
     energy,
     residual,
@@ -61,7 +73,9 @@ export function describeState(
     spin: spinName(sSquared),
     referenceWeight: vector[0] ** 2,
     leading: leadingDeterminants(space, vector),
+    ...(!beta && { configurations: leadingConfigurations(space, vector) }),
     density,
+    spinDensities: densities,
     naturalOccupations: Array.from(naturalOrbitals(density, Math.sqrt(density.length)).values),
   };
 }
@@ -82,16 +96,14 @@ export function applySpin(
   }
 }
 
-/** As the density of a state, between two. */
-export function densityBetween(
+/** As the densities of a state, between two. */
+export function densitiesBetween(
   space: DeterminantSpace,
   left: Float64Array,
   right: Float64Array,
   beta?: BetaIntegrals,
-): Float64Array {
-  return beta
-    ? unrestrictedTransitionDensity(space, left, right, beta)
-    : transitionDensity(space, left, right);
+): SpinDensities {
+  return beta ? unrestrictedSpinDensities(space, left, right, beta) : spinDensities(space, left, right);
 }
 
 /** Sign that makes the coefficient of largest weight positive. */

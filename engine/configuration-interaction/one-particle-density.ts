@@ -5,49 +5,60 @@ import { type DeterminantSpace, type Rows, transposeInto } from './determinant-s
 import { rankChange, type SingleReplacements } from './replacements';
 import type { StringSpace } from './string-space';
 
-/**
- * Spin-summed one-particle density γ(pq) = Σ over spins of ⟨Ψ| a†p aq |Ψ⟩ of a normalised CI vector.
- *
- * @returns n×n symmetric, row-major; its trace is the number of electrons
- */
-export function oneParticleDensity(space: DeterminantSpace, vector: Float64Array): Float64Array {
-  return transitionDensity(space, vector, vector);
-}
+/** Of alpha and of beta electrons, each symmetric and row-major. */
+export type SpinDensities = readonly [Float64Array, Float64Array];
 
-/**
- * Spin-summed one-particle transition density, its symmetric part ½ Σ over spins of ⟨Φ| a†p aq + a†q ap |Ψ⟩: all
- * that a real symmetric operator sees.
- *
- * @returns n×n symmetric, row-major
- */
-export function transitionDensity(
-  space: DeterminantSpace,
-  left: Float64Array,
-  right: Float64Array,
-): Float64Array {
-  const [alpha, beta] = spinDensities(space, left, right);
+/** What an operator without spin sees. */
+export function spinSummed([alpha, beta]: SpinDensities): Float64Array {
   return alpha.map((value, i) => value + beta[i]);
 }
 
 /**
- * The same where beta orbitals differ, brought to the alpha orbitals: γ(α) + S γ(β) Sᵀ, frozen electrons included.
+ * One-particle densities γ(pq) = ⟨Φ| a†p aq |Ψ⟩ of each spin, of one normalised CI vector or between two; their
+ * symmetric parts ½ ⟨Φ| a†p aq + a†q ap |Ψ⟩, which are all that a real symmetric operator sees.
  *
- * @returns over all m alpha orbitals, m×m symmetric, row-major
+ * @returns n×n; of one vector with the number of electrons of that spin as trace
  */
-export function unrestrictedTransitionDensity(
+export function spinDensities(
+  space: DeterminantSpace,
+  left: Float64Array,
+  right: Float64Array,
+): SpinDensities {
+  const transposed = (vector: Float64Array): Float64Array => {
+    const turned = new Float64Array(vector.length);
+    transposeInto(space, vector, turned);
+    return turned;
+  };
+  const { alpha, beta, alphaReplacements, betaReplacements, maximumRank } = space;
+  const ofAlpha = new Float64Array(space.orbitalCount ** 2);
+  addSpinDensity(ofAlpha, alpha, alphaReplacements, beta, space.rows, maximumRank, left, right);
+  const ofBeta = new Float64Array(space.orbitalCount ** 2);
+  const turnedLeft = transposed(left);
+  const turnedRight = left === right ? turnedLeft : transposed(right);
+  const rows = space.transposedRows;
+  addSpinDensity(ofBeta, beta, betaReplacements, alpha, rows, maximumRank, turnedLeft, turnedRight);
+  return [ofAlpha, ofBeta];
+}
+
+/**
+ * The same where beta orbitals differ, brought to the alpha orbitals: γ(α) and S γ(β) Sᵀ, frozen
+ * electrons included.
+ *
+ * @returns over all m alpha orbitals, m×m
+ */
+export function unrestrictedSpinDensities(
   space: DeterminantSpace,
   left: Float64Array,
   right: Float64Array,
   { overlap, frozen }: BetaIntegrals,
-): Float64Array {
+): SpinDensities {
   const m = Math.sqrt(overlap.length);
   // different states are orthogonal, and nothing of the frozen orbitals is between them
   const occupation = left === right ? 1 : 0;
   const [alpha, beta] = spinDensities(space, left, right).map((density) =>
     padDensity(density, m, frozen, occupation),
   );
-  const turned = congruence(beta, transpose(overlap, m, m), m, m);
-  return alpha.map((value, i) => value + turned[i]);
+  return [alpha, congruence(beta, transpose(overlap, m, m), m, m)];
 }
 
 /** A density over n orbitals as one over m: `frozen` orbitals of equal occupation before them, empty ones after. */
@@ -64,28 +75,6 @@ export function padDensity(
     padded.set(density.subarray(p * n, (p + 1) * n), (p + frozen) * m + frozen);
   }
   return padded;
-}
-
-/** Of alpha and of beta electrons, symmetric parts, n×n each. */
-function spinDensities(
-  space: DeterminantSpace,
-  left: Float64Array,
-  right: Float64Array,
-): readonly [Float64Array, Float64Array] {
-  const transposed = (vector: Float64Array): Float64Array => {
-    const turned = new Float64Array(vector.length);
-    transposeInto(space, vector, turned);
-    return turned;
-  };
-  const { alpha, beta, alphaReplacements, betaReplacements, maximumRank } = space;
-  const ofAlpha = new Float64Array(space.orbitalCount ** 2);
-  addSpinDensity(ofAlpha, alpha, alphaReplacements, beta, space.rows, maximumRank, left, right);
-  const ofBeta = new Float64Array(space.orbitalCount ** 2);
-  const turnedLeft = transposed(left);
-  const turnedRight = left === right ? turnedLeft : transposed(right);
-  const rows = space.transposedRows;
-  addSpinDensity(ofBeta, beta, betaReplacements, alpha, rows, maximumRank, turnedLeft, turnedRight);
-  return [ofAlpha, ofBeta];
 }
 
 /** Adds Σ over rows and replacements of a pair: sign·½(l(row, I)·r(row, J) + l(row, J)·r(row, I)). */

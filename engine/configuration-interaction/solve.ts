@@ -6,7 +6,7 @@ import type { DistinguishingOperator } from './degenerate-states';
 import {
   applySpin,
   type ConfigurationInteractionState,
-  densityBetween,
+  densitiesBetween,
   describeState,
   leadingSign,
 } from './describe-state';
@@ -16,6 +16,7 @@ import { spinAveragedDiagonal, unrestrictedDiagonal } from './diagonal';
 import { type HamiltonianProduct, prepareHamiltonianProduct } from './hamiltonian-product';
 import { findLowestStates } from './lowest-states';
 import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
+import { spinSummed } from './one-particle-density';
 import { configurationInteractionBytes, countDeterminants } from './size';
 import { stringAt } from './string-space';
 import { unrestrictedSpin, unrestrictedSpinSquaredElement } from './unrestricted-spin';
@@ -133,7 +134,7 @@ function transitionFromLowest(
   beta: BetaIntegrals | undefined,
 ): Float64Array {
   const sign = leadingSign(lowest) * leadingSign(vector);
-  return densityBetween(space, lowest, vector, beta).map((element) => sign * element);
+  return spinSummed(densitiesBetween(space, lowest, vector, beta)).map((element) => sign * element);
 }
 
 function checkOptions(

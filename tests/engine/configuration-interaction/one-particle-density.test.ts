@@ -6,8 +6,8 @@ import {
 import { occupiedOrbitals } from '../../../engine/configuration-interaction/determinants';
 import {
   naturalOrbitals,
-  oneParticleDensity,
-  transitionDensity,
+  spinDensities,
+  spinSummed,
 } from '../../../engine/configuration-interaction/one-particle-density';
 import { solveSingles } from '../../../engine/configuration-interaction/singles';
 import { solveConfigurationInteraction } from '../../../engine/configuration-interaction/solve';
@@ -31,12 +31,12 @@ function randomState(n: number, alpha: number, beta: number, rank: number) {
   return { space, vector: vector.map((value) => value / norm) };
 }
 
-describe('oneParticleDensity', () => {
+describe('spinDensities', () => {
   it.each(CASES)(
     'identity: %i orbitals, %i + %i electrons, rank %d: equals operator algebra',
     (n, alpha, beta, rank) => {
       const { space, vector } = randomState(n, alpha, beta, rank);
-      const density = oneParticleDensity(space, vector);
+      const [ofAlpha, ofBeta] = spinDensities(space, vector, vector);
       const determinants = Array.from(vector, (_, place) => {
         const determinant = determinantAt(space, place);
         return { alpha: occupiedOrbitals(determinant.alpha), beta: occupiedOrbitals(determinant.beta) };
@@ -44,13 +44,16 @@ describe('oneParticleDensity', () => {
       for (const pair of [0, 1, n + 3, 2 * n + 1, 3 * n, n * n - 1]) {
         const operator = new Float64Array(n * n);
         operator[pair] = 1;
-        let expected = 0;
+        const nothing = new Float64Array(n * n);
+        let [inAlpha, inBeta] = [0, 0];
         determinants.forEach((left, i) => {
           determinants.forEach((right, j) => {
-            expected += vector[i] * vector[j] * bruteOneElectron(left, right, operator, n);
+            inAlpha += vector[i] * vector[j] * bruteOneElectron(left, right, operator, n, nothing);
+            inBeta += vector[i] * vector[j] * bruteOneElectron(left, right, nothing, n, operator);
           });
         });
-        expect(density[pair]).toBeCloseTo(expected, 12);
+        expect(ofAlpha[pair]).toBeCloseTo(inAlpha, 12);
+        expect(ofBeta[pair]).toBeCloseTo(inBeta, 12);
       }
     },
   );
@@ -59,7 +62,7 @@ describe('oneParticleDensity', () => {
     'identity: %i orbitals, %i + %i electrons, rank %d: trace, symmetry, natural occupations from 2 to 0',
     (n, alpha, beta, rank) => {
       const { space, vector } = randomState(n, alpha, beta, rank);
-      const density = oneParticleDensity(space, vector);
+      const density = spinSummed(spinDensities(space, vector, vector));
       const { values, vectors } = naturalOrbitals(density, n);
       let trace = 0;
       for (let p = 0; p < n; p++) trace += density[p * n + p];
@@ -78,13 +81,13 @@ describe('oneParticleDensity', () => {
   );
 });
 
-describe('transitionDensity', () => {
+describe('spinDensities between two states', () => {
   it.each(CASES)(
     'identity: %i orbitals, %i + %i electrons, rank %d: equals operator algebra',
     (n, alpha, beta, rank) => {
       const { space, vector } = randomState(n, alpha, beta, rank);
       const other = randomArray(space.dimension, seededRandom(77));
-      const density = transitionDensity(space, other, vector);
+      const density = spinSummed(spinDensities(space, other, vector));
       const determinants = Array.from(vector, (_, place) => {
         const determinant = determinantAt(space, place);
         return { alpha: occupiedOrbitals(determinant.alpha), beta: occupiedOrbitals(determinant.beta) };

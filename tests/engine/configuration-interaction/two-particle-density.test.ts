@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { buildDeterminantSpace } from '../../../engine/configuration-interaction/determinant-space';
 import { prepareHamiltonianProduct } from '../../../engine/configuration-interaction/hamiltonian-product';
-import { oneParticleDensity } from '../../../engine/configuration-interaction/one-particle-density';
+import { spinDensities, spinSummed } from '../../../engine/configuration-interaction/one-particle-density';
 import { twoParticleDensity } from '../../../engine/configuration-interaction/two-particle-density';
 import { packedPair } from '../../../engine/integrals/orbital-integrals';
 import { dot } from '../../../engine/linear-algebra/dense';
@@ -25,7 +25,7 @@ describe('twoParticleDensity', () => {
       const raw = randomArray(space.dimension, seededRandom(n + alpha));
       const norm = Math.sqrt(dot(raw, raw));
       const vector = raw.map((value) => value / norm);
-      const one = oneParticleDensity(space, vector);
+      const one = spinSummed(spinDensities(space, vector, vector));
       const two = twoParticleDensity(space, vector);
       // several Hamiltonians: every element of the density counts
       for (let seed = 1; seed <= 4; seed++) {
@@ -52,7 +52,7 @@ describe('twoParticleDensity', () => {
       const raw = randomArray(space.dimension, seededRandom(9));
       const norm = Math.sqrt(dot(raw, raw));
       const vector = raw.map((value) => value / norm);
-      const one = oneParticleDensity(space, vector);
+      const one = spinSummed(spinDensities(space, vector, vector));
       const two = twoParticleDensity(space, vector);
       for (let pair = 0; pair < n * n; pair++) {
         let sum = 0;
