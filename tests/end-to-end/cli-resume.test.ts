@@ -2,22 +2,22 @@ import { existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { farwell, type RunningProgram, startFarwell } from '../support/built-program';
-import { nitrogen } from '../support/end-to-end-studies';
+import { water } from '../support/end-to-end-studies';
 import { temporaryFolder } from '../support/temporary-folder';
 
 const folder = temporaryFolder();
-const study = join(folder, 'nitrogen.study.json');
+const study = join(folder, 'water.study.json');
 const unbroken = join(folder, 'unbroken');
 let expected: { readonly results: string; readonly csv: string };
 
 const filesIn = (out: string) => ({
-  results: readFileSync(join(out, 'nitrogen.results.json'), 'utf8'),
-  csv: readFileSync(join(out, 'nitrogen.csv'), 'utf8'),
+  results: readFileSync(join(out, 'water.results.json'), 'utf8'),
+  csv: readFileSync(join(out, 'water.csv'), 'utf8'),
 });
 
 function journalLines(out: string): readonly string[] {
   const names = existsSync(out) ? readdirSync(out) : [];
-  const journal = names.find((name) => /^nitrogen\.partial-[0-9a-f]{8}\.jsonl$/.test(name));
+  const journal = names.find((name) => /^water\.partial-[0-9a-f]{8}\.jsonl$/.test(name));
   return journal === undefined ? [] : readFileSync(join(out, journal), 'utf8').split('\n').slice(1, -1);
 }
 
@@ -36,11 +36,11 @@ async function expectToGoOn(out: string): Promise<void> {
   expect(stderr).toContain(`Going on from ${kept} of 9 points`);
   expect(status).toBe(0);
   expect(filesIn(out)).toEqual(expected);
-  expect(readdirSync(out).sort()).toEqual(['nitrogen.csv', 'nitrogen.results.json']);
+  expect(readdirSync(out).sort()).toEqual(['water.csv', 'water.results.json']);
 }
 
 beforeAll(async () => {
-  writeFileSync(study, JSON.stringify(nitrogen));
+  writeFileSync(study, JSON.stringify(water));
   const { status } = await farwell('run', study, '--out', unbroken);
   expect(status).toBe(0);
   expected = filesIn(unbroken);
@@ -53,7 +53,7 @@ describe('farwell run, interrupted', () => {
     await midway(out, running);
     running.process.kill('SIGKILL');
     expect((await running.ended).status).toBe('SIGKILL');
-    expect(existsSync(join(out, 'nitrogen.results.json'))).toBe(false);
+    expect(existsSync(join(out, 'water.results.json'))).toBe(false);
     await expectToGoOn(out);
   });
 
@@ -93,8 +93,8 @@ describe('farwell run, interrupted', () => {
     await midway(out, running);
     running.process.kill('SIGKILL');
     await running.ended;
-    const changed = join(folder, 'changed', 'nitrogen.study.json');
-    writeFileSync(changed, JSON.stringify({ ...nitrogen, levels: ['RHF'] }));
+    const changed = join(folder, 'changed', 'water.study.json');
+    writeFileSync(changed, JSON.stringify({ ...water, levels: ['RHF'] }));
     const other = await farwell('run', changed);
     expect(other.status).toBe(0);
     expect(other.stderr).not.toContain('Going on');
@@ -116,7 +116,7 @@ describe('farwell run, interrupted', () => {
 
   it('keeps nothing with --print, and says that', async () => {
     const running = startFarwell('run', study, '--print');
-    await running.saw('N₂');
+    await running.saw('H₂O');
     running.process.kill('SIGINT');
     const { status, stdout, stderr } = await running.ended;
     expect(status).toBe(3);

@@ -18,19 +18,20 @@ export const helium: Study = {
   levels: ['RHF', 'CIS', 'CISD', 'FCI'],
 };
 
-/** Nitrogen is pulled apart: long enough to be interrupted. */
-export const nitrogen: Study = {
+/** Water is bent: long enough to be interrupted, and without a curve's minimum to look for afterwards. */
+export const water: Study = {
   format: 'farwell/study',
   version: 1,
   molecule: {
     unit: 'angstrom',
     atoms: [
-      { element: 'N', at: [0, 0, 0] },
-      { element: 'N', at: [0, 0, 1.1] },
+      { element: 'O', at: [0, 0, 0] },
+      { element: 'H', at: [0, 0.757, 0.587] },
+      { element: 'H', at: [0, -0.757, 0.587] },
     ],
   },
-  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.9, to: 2, count: 9 },
-  basis: 'STO-3G',
-  levels: ['RHF', 'FCI'],
+  scan: { coordinate: { angle: [1, 0, 2] }, from: 90, to: 120, count: 9 },
+  basis: '6-31G',
+  levels: ['RHF', 'CISD'],
   frozenCore: true,
 };
