@@ -23,6 +23,7 @@ export interface EngineErrorDetails {
   'basis.shell': { readonly symbol: string; readonly shell: number };
   'basis.scaleFactor': { readonly symbol: string; readonly shell: string };
   'basis.file': { readonly file: string };
+  'basis.twice': { readonly name: string };
   'basis.empty': Record<string, never>;
   'basis.linearlyDependent': { readonly smallestEigenvalue: number; readonly threshold: number };
   'basis.tooFewFunctions': { readonly functions: number; readonly orbitalsNeeded: number };

@@ -4,14 +4,25 @@ import { resolveBasis } from '../basis/resolve-basis';
 import { type ScalableBasis, scalableBasis } from '../basis/scalable-basis';
 import { EngineError } from '../errors';
 import { buildMolecule, electronCount } from '../molecule/build-molecule';
+import { findElement } from '../molecule/elements';
 import type { Molecule } from '../molecule/molecule';
 import { checkScan, geometryAt } from '../molecule/scan-coordinate';
 import { scanValues } from '../molecule/scan-values';
 import { activeWindow, type OrbitalWindow } from './active-space';
 import { explainStudy } from './explain-study';
 import { frozenOrbitalCount } from './frozen-core';
-import { findLevel, type Level, needsClosedShell } from './levels';
+import { findLevel, type Level } from './levels';
+import { furtherBasisErrors } from './prepare-bases';
 import type { CompleteStudy, Study, StudyAtom, StudyMolecule } from './study';
+import {
+  checkLevels,
+  checkStates,
+  checkTolerance,
+  electronsBySpin,
+  refuseSingles,
+  requireClosedShell,
+  requireFunctions,
+} from './study-checks';
 
 /** A study that has been checked and can be computed point by point. */
 export interface PreparedStudy {
@@ -33,6 +44,8 @@ export interface PreparedStudy {
   readonly activeOrbitals?: number;
   /** bytes that one point may take */
   readonly memoryLimit: number;
+  /** the same study in each of the further bases that it asks for */
+  readonly furtherBases: readonly PreparedStudy[];
   /** the atoms at a value of the scan coordinate, in the study's unit */
   geometryAt(coordinate: number | null): readonly StudyAtom[];
   /** the same in atomic units */
@@ -53,19 +66,20 @@ export interface PrepareOptions {
 export const DEFAULT_MEMORY_LIMIT = 4 * 2 ** 30;
 
 const DEFAULT_ENERGY_TOLERANCE = 1e-10;
-/** Below this, rounding in sums of integrals makes convergence a matter of luck. */
-const TIGHTEST_ENERGY_TOLERANCE = 1e-13;
-const LOOSEST_ENERGY_TOLERANCE = 1e-4;
-/** More states than this of one level are taken for a mistake. */
-const MOST_STATES = 50;
 
 /**
- * Checks a study completely – molecule, every geometry of the scan, basis, levels – and fills its defaults in.
+ * Checks a study completely – molecule, every geometry of the scan, basis sets, levels – and fills its defaults in.
  *
  * @returns the prepared study, or all that is wrong with it, each with its place
  */
 export function prepareStudy(study: Study, options: PrepareOptions = {}): Preparation {
-  return prepare(study, options);
+  const { bases = [], ...findings } = study.findings ?? {};
+  const own = prepare(study, options);
+  const further = bases.map((basis) => prepare({ ...study, basis, findings }, options));
+  const errors = [...(own.ok ? [] : own.errors), ...furtherBasisErrors(bases, own, further)];
+  if (!own.ok || errors.length > 0) return { ok: false, errors };
+  const furtherBases = further.flatMap((inBasis) => (inBasis.ok ? [inBasis.prepared] : []));
+  return { ok: true, prepared: { ...own.prepared, furtherBases } };
 }
 
 /** A part of a study's molecule as a study without scan, in the basis of the whole. */
@@ -92,28 +106,32 @@ function prepare(study: Study, options: PrepareOptions, resolved?: BasisSet): Pr
   };
 
   const built = buildMolecule(study.molecule);
+  const molecule = built.ok ? built.molecule : undefined;
   if (!built.ok) errors.push(...built.errors);
   const levels = study.levels.map((name, i) => collect(() => findLevel(name, `levels[${i}]`)));
   const states = study.states ?? 1;
   collect(() => checkLevels(study.levels));
   collect(() => checkStates(states));
   collect(() => checkTolerance(study.convergence?.energy ?? DEFAULT_ENERGY_TOLERANCE));
-  // What follows needs a sound molecule.
-  if (!built.ok) return { ok: false, errors };
-
-  const { molecule } = built;
-  const symbols = [...new Set(molecule.atoms.map((atom) => atom.symbol))];
+  const symbols = knownSymbols(study.molecule);
   const basisSet =
     resolved ?? collect(() => resolveBasis(study.basis, symbols, { fileText: options.basisFileText }));
   const scalable = collect(() => scalableBasis(study.basis, symbols));
-  const functionCount = basisSet && collect(() => placeBasis(basisSet, molecule).functionCount);
   if (study.orbitals === 'unrestricted') collect(() => refuseSingles(levels));
-  collect(() => requireClosedShell(levels, molecule.multiplicity));
+  if (molecule) collect(() => requireClosedShell(levels, molecule.multiplicity));
+  const { scan } = study;
+  if (scan) {
+    const places = withoutElectrons(study.molecule);
+    if (buildMolecule(places).ok) errors.push(...checkScan(places, scan));
+    else collect(() => scanValues(scan));
+  }
+  // what follows needs the electrons of the molecule and its functions
+  if (!molecule || !basisSet) return { ok: false, errors };
+  const functionCount = collect(() => placeBasis(basisSet, molecule).functionCount);
   if (functionCount !== undefined) collect(() => requireFunctions(functionCount, molecule));
   const window =
     functionCount === undefined ? undefined : collect(() => windowOf(study, levels, molecule, functionCount));
-  if (study.scan) errors.push(...checkScan(study.molecule, study.scan));
-  if (errors.length > 0 || !basisSet || functionCount === undefined || !window) return { ok: false, errors };
+  if (errors.length > 0 || functionCount === undefined || !window) return { ok: false, errors };
 
   const complete: CompleteStudy = {
     ...study,
@@ -135,11 +153,22 @@ function prepare(study: Study, options: PrepareOptions, resolved?: BasisSet): Pr
     frozenOrbitals: window.frozen,
     ...(window.active !== undefined && { activeOrbitals: window.active }),
     memoryLimit: options.memoryLimit ?? DEFAULT_MEMORY_LIMIT,
+    furtherBases: [],
     geometryAt: (coordinate) => geometryOf(complete, coordinate).atoms,
     moleculeAt: (coordinate) => moleculeOf(complete, coordinate),
   };
   errors.push(...checkMemory(prepared));
   return errors.length > 0 ? { ok: false, errors } : { ok: true, prepared };
+}
+
+/** Elements that exist, whatever else is wrong with the molecule. */
+function knownSymbols({ atoms }: StudyMolecule): readonly string[] {
+  return [...new Set(atoms.flatMap(({ element }) => findElement(element)?.symbol ?? []))];
+}
+
+/** The molecule without what the electrons are counted from: sound where its elements and places are. */
+function withoutElectrons({ unit, atoms }: StudyMolecule): StudyMolecule {
+  return { unit, atoms: atoms.map(({ element, at, ghost }) => ({ element, at, ghost })) };
 }
 
 function windowOf(
@@ -185,97 +214,4 @@ function moleculeOf(study: Study, coordinate: number | null): Molecule {
   const built = buildMolecule(geometryOf(study, coordinate));
   if (!built.ok) throw built.errors[0];
   return built.molecule;
-}
-
-function requireClosedShell(levels: readonly (Level | undefined)[], multiplicity: number): void {
-  if (multiplicity === 1) return;
-  const wrong = levels.findIndex((level) => level && needsClosedShell(level));
-  if (wrong < 0) return;
-  const { name } = levels[wrong]!;
-  throw new EngineError(
-    'level.needsClosedShell',
-    `${name} needs all electrons paired, but the multiplicity is ${multiplicity}.`,
-    name === 'RHF'
-      ? 'Ask for ROHF or UHF instead, or for multiplicity 1 with an even number of electrons.'
-      : 'Leave it out, or ask for multiplicity 1 with an even number of electrons.',
-    { level: name, multiplicity },
-    `levels[${wrong}]`,
-  );
-}
-
-function refuseSingles(levels: readonly (Level | undefined)[]): void {
-  const singles = levels.find((level) => level?.kind === 'singles');
-  if (!singles) return;
-  throw new EngineError(
-    'study.orbitals',
-    `${singles.name} stands on RHF orbitals and is not computed on those of UHF.`,
-    `Leave out ${singles.name}, or “orbitals”.`,
-    { level: singles.name },
-    'orbitals',
-  );
-}
-
-function requireFunctions(functionCount: number, molecule: Molecule): void {
-  const electrons = electronCount(molecule);
-  const [orbitalsNeeded] = electronsBySpin(electrons, molecule.multiplicity);
-  if (functionCount >= orbitalsNeeded) return;
-  throw new EngineError(
-    'basis.tooFewFunctions',
-    `The basis has ${functionCount} functions, but ${electrons} electrons need at least ${orbitalsNeeded} orbitals.`,
-    'Take a larger basis set, or one made for these elements.',
-    { functions: functionCount, orbitalsNeeded },
-    'basis',
-  );
-}
-
-/** Alpha and beta electrons of the highest spin projection. */
-export function electronsBySpin(electrons: number, multiplicity: number): readonly [number, number] {
-  const alpha = (electrons + multiplicity - 1) / 2;
-  return [alpha, electrons - alpha];
-}
-
-function checkLevels(levels: readonly string[]): void {
-  if (levels.length === 0) {
-    throw new EngineError(
-      'level.none',
-      'The study names no level.',
-      'Name at least one, such as RHF.',
-      {},
-      'levels',
-    );
-  }
-  const twice = levels.find((level, i) => levels.indexOf(level) !== i);
-  if (twice !== undefined) {
-    throw new EngineError(
-      'level.twice',
-      `The level ${twice} is listed twice.`,
-      'List each level once.',
-      { level: twice },
-      `levels[${levels.lastIndexOf(twice)}]`,
-    );
-  }
-}
-
-function checkStates(states: number): void {
-  if (!Number.isInteger(states) || states < 1 || states > MOST_STATES) {
-    throw new EngineError(
-      'study.states',
-      `“states” must be a whole number from 1 to ${MOST_STATES}; it is ${states}.`,
-      'Give the number of lowest states wanted of each level.',
-      { states },
-      'states',
-    );
-  }
-}
-
-function checkTolerance(tolerance: number): void {
-  if (!(tolerance >= TIGHTEST_ENERGY_TOLERANCE && tolerance <= LOOSEST_ENERGY_TOLERANCE)) {
-    throw new EngineError(
-      'study.convergence',
-      `An energy tolerance of ${tolerance} hartree cannot be used.`,
-      `Choose one from ${TIGHTEST_ENERGY_TOLERANCE} to ${LOOSEST_ENERGY_TOLERANCE} hartree, or leave it out.`,
-      { tolerance },
-      'convergence.energy',
-    );
-  }
 }
