@@ -246,9 +246,6 @@ function wellDepthFrom(ground: MeasuredGround): WorkedOut | string {
   };
 }
 
-const MEGAHERTZ_IN_WAVENUMBERS = 1 / 29979.2458;
-const EV_IN_WAVENUMBERS = HARTREE_IN_WAVENUMBERS / HARTREE_IN_EV;
-
 function inUnit({ value, unit }: MeasuredConstant, wanted: ComparedConstant['unit']): number | undefined {
   if (unit === wanted) return value;
   const wavenumber = {
