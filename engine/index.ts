@@ -124,6 +124,7 @@ export {
   type SerializedEngineError,
 } from './errors';
 export type { Vector3 } from './molecule/molecule';
+export type { Stage, StageListener } from './stages';
 export type { PointGroupName } from './symmetry/point-groups';
 export type { StateSymmetry, TermSymbol } from './symmetry/state-symmetry';
 export { type RunControl, type Termination, UNATTENDED } from './termination';

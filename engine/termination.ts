@@ -1,3 +1,5 @@
+import type { StageListener } from './stages';
+
 /** Why an iteration stopped. Only `converged` makes the numbers final. */
 export type Termination =
   | { readonly kind: 'converged' }
@@ -11,6 +13,8 @@ export interface RunControl {
   /** asked between iterations; true ends the work with `cancelled` */
   isCancelled(): boolean;
   report(progress: { readonly stage: string; readonly iteration: number; readonly residual: number }): void;
+  /** for a profile of where the time goes */
+  readonly onStage?: StageListener;
 }
 
 /** Never cancels, reports to nobody. */

@@ -4,6 +4,7 @@ import { transformToSpinOrbitals } from '../integrals/unrestricted-transformatio
 import { congruence, transpose } from '../linear-algebra/dense';
 import { nuclearDipole } from '../molecule/build-molecule';
 import type { Molecule } from '../molecule/molecule';
+import { inStage } from '../stages';
 import { type RunControl, UNATTENDED } from '../termination';
 import { atomicCharges, type ChargesOf } from './atomic-charges';
 import { pointCautions } from './cautions';
@@ -51,41 +52,41 @@ export function computePoint(
   const control = options.control ?? UNATTENDED;
   const molecule = prepared.moleculeAt(coordinate);
   const optimised =
-    prepared.scalable && optimiseScale(prepared, prepared.scalable, molecule, options.guess, control);
+    prepared.scalable &&
+    inStage(control, 'scale factors', () =>
+      optimiseScale(prepared, prepared.scalable!, molecule, options.guess, control),
+    );
   const basis = placeBasis(optimised?.basisSet ?? prepared.basisSet, molecule);
-  const integrals = molecularIntegrals(molecule, basis);
+  const integrals = inStage(control, 'integrals', () => molecularIntegrals(molecule, basis));
 
   const chosen = prepared.levels.filter((level) => options.levels?.includes(level.name) ?? true);
-  const solved = solveMeanFields(
-    prepared,
-    molecule,
-    basis,
-    integrals.problem,
-    chosen,
-    optimised?.carry ?? options.guess,
-    control,
+  const guess = optimised?.carry ?? options.guess;
+  const solved = inStage(control, 'self-consistency', () =>
+    solveMeanFields(prepared, molecule, basis, integrals.problem, chosen, guess, control),
   );
-  const { fields, symmetry } = symmetriseFields(prepared, molecule, basis, integrals.problem.overlap, solved);
+  const { fields, symmetry } = inStage(control, 'symmetry', () =>
+    symmetriseFields(prepared, molecule, basis, integrals.problem.overlap, solved),
+  );
   const { pointGroup, linear } = symmetry.molecule;
   const chargesOf = atomicCharges(molecule, basis, integrals.problem.overlap);
   const correlation = needsOrbitalIntegrals(chosen)
     ? correlationInput(prepared, molecule, integrals, fields, symmetry, chargesOf, control)
     : undefined;
   const levels: Record<string, LevelResult> = {};
-  for (const level of chosen) {
+  const compute = (level: Level): LevelResult => {
     switch (level.kind) {
       case 'hartreeFock':
-        levels[level.name] = hartreeFockResult(level.name, fields, symmetry, molecule, integrals, chargesOf);
-        break;
+        return hartreeFockResult(level.name, fields, symmetry, molecule, integrals, chargesOf);
       case 'perturbation':
-        levels[level.name] = secondOrderResult(prepared, fields, integrals);
-        break;
+        return secondOrderResult(prepared, fields, integrals);
       case 'singles':
-        levels[level.name] = computeSingles(correlation!);
-        break;
+        return computeSingles(correlation!);
       case 'correlated':
-        levels[level.name] = computeCorrelated(level, correlation!);
+        return computeCorrelated(level, correlation!);
     }
+  };
+  for (const level of chosen) {
+    levels[level.name] = inStage(control, { level: level.name }, () => compute(level));
   }
   const carry = carryOf(prepared, fields);
   return {
@@ -133,13 +134,15 @@ function correlationInput(
   const coefficients = spinsDiffer ? unrestricted!.coefficients[0] : reference.coefficients;
   const overFunctions = (density: Float64Array) => congruence(density, transpose(coefficients, n, m), m, n);
   return {
-    integrals: spinsDiffer
-      ? transformToSpinOrbitals({
-          ...transformation,
-          overlap: problem.overlap,
-          coefficients: unrestricted!.coefficients,
-        })
-      : transformToOrbitals({ ...transformation, coefficients }),
+    integrals: inStage(control, 'transformation', () =>
+      spinsDiffer
+        ? transformToSpinOrbitals({
+            ...transformation,
+            overlap: problem.overlap,
+            coefficients: unrestricted!.coefficients,
+          })
+        : transformToOrbitals({ ...transformation, coefficients }),
+    ),
     dipole: dipole.map((matrix) => transformOneElectron(matrix, coefficients, n, m)),
     nuclearDipole: nuclearDipole(molecule),
     chargesOf: (density) => chargesOf([overFunctions(density)]),

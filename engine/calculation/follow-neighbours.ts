@@ -3,6 +3,7 @@ import type { StartingPoint } from '../self-consistent-field/mean-field';
 import { DEFAULT_SELF_CONSISTENCY } from '../self-consistent-field/mean-field-problem';
 import { solveRestrictedOpen, solveUnrestricted } from '../self-consistent-field/open-shell';
 import { solveRestricted } from '../self-consistent-field/restricted';
+import { inStage } from '../stages';
 import { type RunControl, UNATTENDED } from '../termination';
 import { type ComputedPoint, computePoint } from './compute-point';
 import type { OccupiedOrbitals, PointCarry } from './mean-fields';
@@ -39,7 +40,9 @@ export function followNeighbours(
   // With scale factors of its own every point has another basis: its orbitals belong to nobody else.
   if (prepared.scalable) return { higherBy: neighbours.map(() => ({})) };
   const molecule = prepared.moleculeAt(coordinate);
-  const { problem } = molecularIntegrals(molecule, placeBasis(prepared.basisSet, molecule));
+  const { problem } = inStage(control, 'integrals', () =>
+    molecularIntegrals(molecule, placeBasis(prepared.basisSet, molecule)),
+  );
   const options = { ...DEFAULT_SELF_CONSISTENCY, energyTolerance: prepared.study.convergence.energy };
   const follow = (kind: FieldKind, orbitals: OccupiedOrbitals | undefined): number => {
     if (!orbitals) return Number.NaN;
@@ -52,7 +55,7 @@ export function followNeighbours(
         ? solveRestricted(problem, prepared.electrons, starts, control, options)
         : solveRestrictedOpen(problem, prepared.spinElectrons, starts, control, options);
     };
-    const { energy, termination } = solve();
+    const { energy, termination } = inStage(control, 'self-consistency', solve);
     return termination.kind === 'converged' ? energy : Number.NaN;
   };
 

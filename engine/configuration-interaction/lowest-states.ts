@@ -5,6 +5,7 @@ import {
   lowestEigenpairs,
 } from '../linear-algebra/davidson';
 import { addScaledInto, dot } from '../linear-algebra/dense';
+import { inStage } from '../stages';
 import type { RunControl } from '../termination';
 import { type DistinguishingOperator, makeDegenerateStatesDefinite } from './degenerate-states';
 import {
@@ -59,7 +60,11 @@ const MODEL_VECTORS_PER_STATE = 10;
  * by Davidson's method where not. A degenerate set that `states` cuts is converged as a whole before it is cut,
  * so that the cut takes the same members every time. Fewer states where there are no more.
  */
-export function findLowestStates(problem: StateProblem, settings: StateSettings): LowestStates {
+export function findLowestStates(given: StateProblem, settings: StateSettings): LowestStates {
+  const problem: StateProblem = {
+    ...given,
+    apply: (vector, product) => inStage(settings.control, 'CI product', () => given.apply(vector, product)),
+  };
   if (!problem.diagonal.every(Number.isFinite)) {
     const termination = { kind: 'notFinite', quantity: 'Hamiltonian' } as const;
     return {
@@ -70,7 +75,9 @@ export function findLowestStates(problem: StateProblem, settings: StateSettings)
     };
   }
   const size = Math.max(MODEL_SPACE_SIZE, MODEL_VECTORS_PER_STATE * settings.states);
-  const model = buildModelSpace(problem.diagonal, size, (places) => problem.elementsAmong(places));
+  const model = inStage(settings.control, 'CI model space', () =>
+    buildModelSpace(problem.diagonal, size, (places) => problem.elementsAmong(places)),
+  );
   const isWhole = model.places.length === problem.dimension;
   const found = isWhole ? takeLowest(model, settings.states) : iterate(problem, model, settings);
   makeDegenerateStatesDefinite(found.values, found.vectors, DEGENERACY_TOLERANCE, problem.distinguishing);

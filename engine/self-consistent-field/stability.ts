@@ -1,4 +1,5 @@
 import { lowestEigenpairs } from '../linear-algebra/davidson';
+import { inStage } from '../stages';
 import type { RunControl } from '../termination';
 import type { RotationFunctional, RotationPoint } from './minimiser';
 
@@ -44,27 +45,29 @@ export function lowestHessianEigenpair(
   diagonal: Float64Array,
   control: RunControl,
 ): HessianEigenpair {
-  const { values, vectors } = lowestEigenpairs(
-    {
-      dimension: diagonal.length,
-      apply: (vector, product) => product.set(apply(vector)),
-      precondition: (vector, shift, result) => {
-        for (let k = 0; k < vector.length; k++) {
-          const denominator = diagonal[k] - shift;
-          result[k] =
-            vector[k] / (Math.abs(denominator) < SMALLEST_DENOMINATOR ? SMALLEST_DENOMINATOR : denominator);
-        }
+  const { values, vectors } = inStage(control, 'stability', () =>
+    lowestEigenpairs(
+      {
+        dimension: diagonal.length,
+        apply: (vector, product) => product.set(apply(vector)),
+        precondition: (vector, shift, result) => {
+          for (let k = 0; k < vector.length; k++) {
+            const denominator = diagonal[k] - shift;
+            result[k] =
+              vector[k] / (Math.abs(denominator) < SMALLEST_DENOMINATOR ? SMALLEST_DENOMINATOR : denominator);
+          }
+        },
+        guesses: startingVectors(diagonal),
       },
-      guesses: startingVectors(diagonal),
-    },
-    {
-      roots: 1,
-      residualTolerance: RESIDUAL_TOLERANCE,
-      maximumIterations: ITERATIONS,
-      maximumVectors: VECTORS,
-      control,
-      stage: 'stability',
-    },
+      {
+        roots: 1,
+        residualTolerance: RESIDUAL_TOLERANCE,
+        maximumIterations: ITERATIONS,
+        maximumVectors: VECTORS,
+        control,
+        stage: 'stability',
+      },
+    ),
   );
   return { value: values[0], vector: vectors[0] };
 }
