@@ -101,6 +101,16 @@ function curve(
   };
 }
 
+/** What a level's energies are measured from, hartree, or why there is nothing to measure from. */
+export function energyZero(
+  study: Study,
+  points: Points,
+  level: string,
+  { energyReference, curves }: CurveOptions,
+): number | string {
+  return referenceEnergy(level, columnsOf(study, points, curves), points, energyReference);
+}
+
 /** The energy that a level is measured from, in hartree, or why there is none. CIS is measured from its own ground state, RHF's. */
 function referenceEnergy(
   level: string,

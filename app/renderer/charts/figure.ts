@@ -1,5 +1,5 @@
 import type { Annotation, Dash, Data, Layout } from 'plotly.js-dist';
-import type { Study } from '#engine';
+import type { Study, StudyResults } from '#engine';
 import { ENERGY_UNITS, LENGTH_UNITS } from '../units';
 import type { ChartTheme } from './chart-theme';
 import {
@@ -11,12 +11,15 @@ import {
   positions,
   scansLength,
 } from './curves';
+import { levelLines } from './level-lines';
 import { type CurveLook, curveLook } from './palette';
 
 export interface FigureRequest extends CurveOptions {
   readonly study: Study;
   readonly points: Points;
   readonly hiddenLevels: readonly string[];
+  /** the finished results, if vibrational levels are to be drawn in the well */
+  readonly levelsOf: StudyResults | undefined;
   readonly theme: ChartTheme;
   /** changes when a zoom made by the user no longer makes sense */
   readonly zoomKey: string;
@@ -52,6 +55,7 @@ export function buildFigure(request: FigureRequest): Figure {
 
   return {
     data: [
+      ...levelLines(request),
       ...drawingOrder(energies).flatMap((curve) => draw(curve, 'y')),
       ...drawingOrder(correlations).flatMap((curve) => draw(curve, 'y2')),
       ...(hasCautions ? [cautionTrace(x, points, theme)] : []),

@@ -56,6 +56,7 @@ function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
   const fontSize = useChartFontSize();
   const { study, points } = run;
   const { energyUnit, energyReference, hiddenLevels } = view;
+  const levelsOf = view.showsVibration ? run.results : undefined;
   const curves = run.results?.curves;
   const lengthUnit = view.lengthUnit ?? study.molecule.unit;
   const hasPoints = points.some((point) => point !== undefined);
@@ -68,6 +69,7 @@ function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
       lengthUnit,
       curves,
       hiddenLevels,
+      levelsOf,
       theme: { ...(ground === 'dark' ? DARK_CHART : LIGHT_CHART), fontSize },
       zoomKey: [run.text, energyUnit, energyReference, lengthUnit].join('|'),
       size: size ?? UNMEASURED,
@@ -80,6 +82,7 @@ function Charts({ run, view }: { readonly run: Run; readonly view: View }) {
       lengthUnit,
       curves,
       hiddenLevels,
+      levelsOf,
       ground,
       fontSize,
       run.text,

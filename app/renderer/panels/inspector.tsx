@@ -1,6 +1,6 @@
 import { Tab, TabList, TabPanel, Tabs } from 'react-aria-components';
 import { useMedia } from '../controls/use-media';
-import { Findings } from './findings';
+import { Findings } from './findings/findings';
 import { PointsTable } from './points-table';
 import { Readout } from './readout/readout';
 

@@ -1,12 +1,15 @@
 import { ToggleButton } from 'react-aria-components';
 import { energyColumns } from '../../study/energy-columns';
+import { levelWithLines } from '../charts/level-lines';
 import { LevelSwatch } from '../charts/level-swatch';
 import { useController, useWindowState } from '../state/window-context';
 import type { Run } from '../state/window-state';
 
 /** The levels with their lines; each can be taken off the charts and put back. */
-export function LevelLegend({ run: { study, points } }: { readonly run: Run }) {
+export function LevelLegend({ run: { study, points, results } }: { readonly run: Run }) {
   const hidden = useWindowState(({ view }) => view.hiddenLevels);
+  const showsVibration = useWindowState(({ view }) => view.showsVibration);
+  const vibrating = levelWithLines({ levelsOf: results, hiddenLevels: hidden });
   const controller = useController();
   const columns = energyColumns({ study, points: points.filter((point) => point !== undefined) });
   const hasUnconverged = points.some(
@@ -29,6 +32,15 @@ export function LevelLegend({ run: { study, points } }: { readonly run: Run }) {
           <LevelSwatch level={level} /> {level}
         </ToggleButton>
       ))}
+      {vibrating !== undefined && (
+        <ToggleButton
+          className="legendEntry"
+          isSelected={showsVibration}
+          onChange={(isShown) => controller.changeView({ showsVibration: isShown })}
+        >
+          vibrational levels of {vibrating}
+        </ToggleButton>
+      )}
       {hasExcited && <span className="hint">open marks excited states, △ triplets</span>}
       {hasUnconverged && <span className="hint">× not converged, not joined to the curve</span>}
     </fieldset>

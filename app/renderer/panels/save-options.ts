@@ -27,6 +27,7 @@ export function saveOptions({ draft, run, view }: WindowState): readonly SaveOpt
         study: drawn.study,
         points: drawn.points,
         hiddenLevels: view.hiddenLevels,
+        levelsOf: view.showsVibration ? drawn.results : undefined,
         energyUnit: view.energyUnit,
         energyReference: view.energyReference,
         lengthUnit: view.lengthUnit ?? drawn.study.molecule.unit,

@@ -6,6 +6,7 @@ import { currentIssues } from '../state/current-issues';
 import { useController, useWindowState } from '../state/window-context';
 import { ComputeControl } from './compute-control';
 import { Explanation } from './explanation';
+import { FindingsEditor } from './findings-editor';
 
 /** The head of the window: the study as a sentence, what it takes to compute it, and the button that does. */
 export function StudyPanel() {
@@ -37,6 +38,15 @@ export function StudyPanel() {
                 value={draft.notes}
                 onChange={(notes) => controller.edit((current) => ({ ...current, notes }))}
               />
+            </Dialog>
+          </Popover>
+        </DialogTrigger>
+        <DialogTrigger>
+          <Button className="quietButton">Findings wanted</Button>
+          <Popover className="popover wide" placement="bottom start">
+            <Dialog className="editor">
+              <Heading slot="title">Findings wanted besides the usual</Heading>
+              <FindingsEditor {...{ draft, issues, onEdit: (change) => controller.edit(change) }} />
             </Dialog>
           </Popover>
         </DialogTrigger>

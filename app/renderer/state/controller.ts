@@ -205,8 +205,8 @@ export class WindowController {
 
   #remember(): void {
     const { draft, view } = this.#store.get();
-    const { energyUnit, lengthUnit, energyReference, theme } = view;
-    this.#memory.save({ draft, view: { energyUnit, lengthUnit, energyReference, theme } });
+    const { energyUnit, lengthUnit, energyReference, showsVibration, theme } = view;
+    this.#memory.save({ draft, view: { energyUnit, lengthUnit, energyReference, showsVibration, theme } });
   }
 
   #refuse(

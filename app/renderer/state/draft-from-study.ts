@@ -1,5 +1,5 @@
 import type { Study, StudyScan } from '#engine';
-import { type BasisDraft, EMPTY_DRAFT, type ScanDraft, type StudyDraft } from './draft';
+import { type BasisDraft, EMPTY_DRAFT, type FindingsDraft, type ScanDraft, type StudyDraft } from './draft';
 
 /** A study laid out for editing. */
 export function draftFromStudy(study: Study): StudyDraft {
@@ -26,7 +26,7 @@ export function draftFromStudy(study: Study): StudyDraft {
     }),
     orbitals: study.orbitals ?? 'restricted',
     energyConvergence: optionalNumber(study.convergence?.energy),
-    ...(study.findings && { findings: study.findings }),
+    findings: findingsDraft(study.findings),
   };
 }
 
@@ -48,6 +48,25 @@ function scanDraft(scan: StudyScan): ScanDraft {
   if ('angle' in coordinate)
     return { ...EMPTY_DRAFT.scan, ...range, coordinate: 'angle', angle: coordinate.angle };
   return { ...EMPTY_DRAFT.scan, ...range, coordinate: 'dihedral', dihedral: coordinate.dihedral };
+}
+
+function findingsDraft({
+  referenceWeight,
+  rotation = [],
+  isotopologues = [],
+  counterpoise = false,
+  bases,
+  ...kept
+}: NonNullable<Study['findings']> = {}): FindingsDraft {
+  const isNamed = bases?.every((basis) => typeof basis === 'string') ?? true;
+  return {
+    referenceWeight: optionalNumber(referenceWeight),
+    rotation: rotation.join(', '),
+    isotopologues: isotopologues.map((massNumbers) => massNumbers.join(' ')).join(', '),
+    counterpoise,
+    bases: isNamed ? (bases ?? []).join(', ') : '',
+    kept: isNamed ? kept : { ...kept, bases },
+  };
 }
 
 const basisDraft = (basis: Study['basis']): BasisDraft =>

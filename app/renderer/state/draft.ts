@@ -22,13 +22,26 @@ export interface StudyDraft {
   readonly orbitals: NonNullable<Study['orbitals']>;
   /** empty: the default */
   readonly energyConvergence: string;
-  /** kept as the study gave it */
-  readonly findings?: Study['findings'];
+  readonly findings: FindingsDraft;
 }
 
 export interface ActiveDraft {
   readonly electrons: string;
   readonly orbitals: string;
+}
+
+/** What is wanted of the curves beyond what is always read off; empty: the default. */
+export interface FindingsDraft {
+  readonly referenceWeight: string;
+  /** J, separated by blanks or commas */
+  readonly rotation: string;
+  /** mass numbers of the atoms separated by blanks, molecules by commas */
+  readonly isotopologues: string;
+  readonly counterpoise: boolean;
+  /** names, separated by commas */
+  readonly bases: string;
+  /** what has no field in the window, as the study gave it */
+  readonly kept: Pick<NonNullable<Study['findings']>, 'naturalOrbitals' | 'bases'>;
 }
 
 export interface AtomDraft {
@@ -84,4 +97,12 @@ export const EMPTY_DRAFT: StudyDraft = {
   frozenCore: false,
   orbitals: 'restricted',
   energyConvergence: '',
+  findings: {
+    referenceWeight: '',
+    rotation: '',
+    isotopologues: '',
+    counterpoise: false,
+    bases: '',
+    kept: {},
+  },
 };

@@ -4,11 +4,11 @@ import type { View } from './window-state';
 /** What outlives the window: what was typed, and how numbers are shown. */
 export interface Remembered {
   readonly draft?: StudyDraft;
-  readonly view?: Pick<View, 'energyUnit' | 'lengthUnit' | 'energyReference' | 'theme'>;
+  readonly view?: Pick<View, 'energyUnit' | 'lengthUnit' | 'energyReference' | 'showsVibration' | 'theme'>;
 }
 
 /** Changes with the shape of what is kept, so that an older program's memory is left aside. */
-const KEY = 'farwell/window/1';
+const KEY = 'farwell/window/2';
 
 export interface Memory {
   load(): Remembered;

@@ -1,5 +1,5 @@
 import type { StudyIssue } from '../../contract/requests';
-import type { BasisDraft, ScanDraft, StudyDraft } from './draft';
+import type { BasisDraft, FindingsDraft, ScanDraft, StudyDraft } from './draft';
 
 /** A draft as study text, and what could not even be put into one. */
 export interface StudyText {
@@ -45,7 +45,7 @@ export function studyText(draft: StudyDraft): StudyText {
     ...(draft.energyConvergence.trim() !== '' && {
       convergence: { energy: numberOrText(draft.energyConvergence) },
     }),
-    ...(draft.findings && { findings: draft.findings }),
+    ...withFindings(draft.findings),
   };
   return { text: `${JSON.stringify(study, undefined, 2)}\n`, issues: basis.issues };
 }
@@ -60,6 +60,27 @@ export function numberOrText(typed: string): number | string {
   return DECIMAL_NUMBER.test(plain) && Number.isFinite(value) ? value : typed.trim();
 }
 
+const listed = (typed: string, separator: RegExp): readonly string[] =>
+  typed.split(separator).filter((part) => part.trim() !== '');
+
+/** Nothing where nothing was asked for. */
+function withFindings(draft: FindingsDraft): { readonly findings?: unknown } {
+  const { referenceWeight, rotation, isotopologues, counterpoise, bases, kept } = draft;
+  const findings = {
+    ...(referenceWeight.trim() !== '' && { referenceWeight: numberOrText(referenceWeight) }),
+    ...(rotation.trim() !== '' && { rotation: listed(rotation, /[\s,;]+/).map(numberOrText) }),
+    ...(isotopologues.trim() !== '' && {
+      isotopologues: listed(isotopologues, /[,;\n]/).map((molecule) =>
+        listed(molecule, /\s+/).map(numberOrText),
+      ),
+    }),
+    ...(counterpoise && { counterpoise }),
+    ...(bases.trim() !== '' && { bases: listed(bases, /[,;\n]/).map((name) => name.trim()) }),
+    ...kept,
+  };
+  return Object.keys(findings).length === 0 ? {} : { findings };
+}
+
 function scanValue(scan: ScanDraft): unknown {
   const coordinate =
     scan.coordinate === 'bonds'
@@ -70,10 +91,7 @@ function scanValue(scan: ScanDraft): unknown {
   if (scan.spacing === 'listed')
     return {
       coordinate,
-      values: scan.values
-        .split(/[\s,;]+/)
-        .filter((part) => part !== '')
-        .map(numberOrText),
+      values: listed(scan.values, /[\s,;]+/).map(numberOrText),
     };
   return {
     coordinate,

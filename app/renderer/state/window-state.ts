@@ -52,6 +52,8 @@ export interface View {
   readonly energyReference: EnergyReference;
   readonly theme: Theme;
   readonly hiddenLevels: readonly string[];
+  /** vibrational levels are drawn in the well */
+  readonly showsVibration: boolean;
   /** index of the point under the cursor; undefined: none chosen yet, the default place */
   readonly cursor: number | undefined;
 }
@@ -78,6 +80,7 @@ export const INITIAL_STATE: WindowState = {
     energyReference: 'absolute',
     theme: 'system',
     hiddenLevels: [],
+    showsVibration: true,
     cursor: undefined,
   },
   catalogue: { program: undefined, samples: [], bases: [] },

@@ -1,4 +1,3 @@
-import type { ReactNode } from 'react';
 import type {
   CorrelatedResult,
   CorrelatedState,
@@ -12,8 +11,12 @@ import { LevelSwatch } from '../../charts/level-swatch';
 import { numbered } from '../../numbered';
 import { formatFixed, formatScientific } from '../../numbers';
 import { ENERGY_UNITS, type EnergyUnit, toEnergyUnit } from '../../units';
+import { type Fact, Facts } from '../facts';
+import { energyText } from '../findings/shown-units';
+import { CorrelationPartsTables } from './correlation-parts';
 import { describeDeterminant } from './describe-determinant';
 import { describeTermination } from './describe-termination';
+import { LeadingConfigurations } from './leading-configurations';
 
 interface LevelDetailsProps {
   readonly level: string;
@@ -37,25 +40,7 @@ export function LevelDetails({ level, result, energyUnit }: LevelDetailsProps) {
   );
 }
 
-function Facts({ facts }: { readonly facts: readonly (readonly [ReactNode, ReactNode] | undefined)[] }) {
-  return (
-    <dl className="facts">
-      {numbered(facts).map(({ number, item: fact }) =>
-        fact === undefined ? null : (
-          <div key={number}>
-            <dt>{fact[0]}</dt>
-            <dd>{fact[1]}</dd>
-          </div>
-        ),
-      )}
-    </dl>
-  );
-}
-
-const energyText = (value: number, unit: EnergyUnit): string =>
-  `${formatFixed(toEnergyUnit(value, unit), ENERGY_UNITS[unit].decimals)} ${ENERGY_UNITS[unit].symbol}`;
-
-function dipoleFact([x, y, z]: readonly [number, number, number]): readonly [ReactNode, ReactNode] {
+function dipoleFact([x, y, z]: readonly [number, number, number]): Fact {
   const size = formatFixed(Math.hypot(x, y, z), 5);
   return [
     <abbr key="dipole" title="About the origin of the study’s coordinates">
@@ -65,7 +50,7 @@ function dipoleFact([x, y, z]: readonly [number, number, number]): readonly [Rea
   ];
 }
 
-function virialFact(parts: HartreeFockResult['energyParts']): readonly [ReactNode, ReactNode] | undefined {
+function virialFact(parts: HartreeFockResult['energyParts']): Fact {
   if (parts === undefined) return undefined;
   return [
     <abbr key="virial" title="2 for exact wave functions at the minimum of the curve">
@@ -85,14 +70,29 @@ function EnergyPartsList({
 }) {
   const { energyParts: parts } = result;
   if (parts === undefined) return null;
-  const rest = result.kind === 'hartreeFock' ? 'Exchange' : 'Exchange and correlation';
+  const undivided = result.kind === 'hartreeFock' ? 'Exchange' : 'Exchange and correlation';
   return (
     <Facts
       facts={[
         ['Kinetic energy', energyText(parts.kinetic, unit)],
         ['Nuclear attraction', energyText(parts.nuclearAttraction, unit)],
         ['Coulomb', energyText(parts.coulomb, unit)],
-        [rest, energyText(parts.exchangeCorrelation, unit)],
+        ...(parts.exchange !== undefined && parts.correlation !== undefined
+          ? ([
+              ['Exchange', energyText(parts.exchange, unit)],
+              result.kind === 'hartreeFock'
+                ? undefined
+                : [
+                    <abbr
+                      key="correlation"
+                      title="Of the repulsion alone: what no one-particle density gives"
+                    >
+                      Correlation of the repulsion
+                    </abbr>,
+                    energyText(parts.correlation, unit),
+                  ],
+            ] satisfies Fact[])
+          : ([[undivided, energyText(parts.exchangeCorrelation, unit)]] satisfies Fact[])),
         ['Nuclear repulsion', energyText(parts.nuclearRepulsion, unit)],
       ]}
     />
@@ -239,6 +239,15 @@ function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; 
           ground && ['Residual, Eₕ', formatScientific(ground.residual)],
           dipoleFact(result.dipole),
           virialFact(result.energyParts),
+          result.unpairedElectrons && [
+            <abbr
+              key="unpaired"
+              title={`Σ min(n, 2 − n) over natural occupations (Head-Gordon 2003); Σ n(2 − n) gives ${formatFixed(result.unpairedElectrons.quadratic, 4)}, Σ n²(2 − n)² ${formatFixed(result.unpairedElectrons.quartic, 4)}`}
+            >
+              Effectively unpaired electrons
+            </abbr>,
+            formatFixed(result.unpairedElectrons.linear, 4),
+          ],
           result.davidsonCorrected === undefined
             ? undefined
             : [
@@ -258,7 +267,9 @@ function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; 
       />
       <EnergyPartsList result={result} unit={unit} />
       {result.sizeCorrections && <SizeCorrectionsList corrections={result.sizeCorrections} unit={unit} />}
+      {result.correlationParts && <CorrelationPartsTables parts={result.correlationParts} unit={unit} />}
       {ground !== undefined && <LeadingDeterminants state={ground} />}
+      {ground?.configurations && <LeadingConfigurations configurations={ground.configurations} />}
       {result.states.length > 1 && <States states={result.states} unit={unit} />}
     </>
   );

@@ -12,6 +12,7 @@ const request = (overrides: Partial<FigureRequest> = {}): FigureRequest => ({
   energyReference: 'absolute',
   lengthUnit: 'angstrom',
   hiddenLevels: [],
+  levelsOf: undefined,
   theme: LIGHT_CHART,
   zoomKey: '',
   size: { width: 800, height: 600 },

@@ -9,6 +9,7 @@ const figureOf = (caption: string) =>
       study,
       points,
       hiddenLevels: [],
+      levelsOf: undefined,
       energyUnit: 'hartree',
       energyReference: 'absolute',
       lengthUnit: 'angstrom',

@@ -25,7 +25,25 @@ describe('a study in the window', () => {
     ['notes and a frozen core', { notes: 'two\nlines', frozenCore: true, states: 3 }],
     ['orbitals of each spin', { orbitals: 'unrestricted' }],
     ['an active space', { active: { electrons: 2, orbitals: 4 } }],
-    ['options of its findings', { findings: { rotation: [0, 5], isotopologues: [[2, 2]] } }],
+    [
+      'findings asked for',
+      {
+        findings: {
+          rotation: [0, 5],
+          isotopologues: [
+            [1, 2],
+            [2, 2],
+          ],
+          counterpoise: true,
+          referenceWeight: 0.8,
+          bases: ['cc-pVDZ', 'cc-pVTZ'],
+        },
+      },
+    ],
+    [
+      'further basis sets that are not names',
+      { findings: { naturalOrbitals: true, bases: ['cc-pVDZ', { name: 'STO-3G', optimiseScale: true }] } },
+    ],
     [
       'an isotope and a ghost',
       {

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { whyNoMinimum } from '../../../../app/renderer/panels/findings';
+import { whyNoMinimum } from '../../../../../app/renderer/panels/findings/well-facts';
 
 const where = (value: number) => `${value} Å`;
 

@@ -1,17 +1,16 @@
 import type { StudyResults } from '#engine';
-import { comparedConstants } from '../../study/compared-constants';
-import { formatFixed, formatPlain } from '../numbers';
+import { comparedConstants } from '../../../study/compared-constants';
+import { formatFixed, formatPlain } from '../../numbers';
 
 interface SpectroscopicFactsProps {
   readonly level: string;
   readonly results: StudyResults;
 }
 
-/** Constants of a diatomic molecule beside measured ones, and how many vibrational levels it has; folded until asked for. */
+/** Constants of a diatomic molecule beside measured ones; folded until asked for. */
 export function SpectroscopicFacts({ level, results }: SpectroscopicFactsProps) {
   const findings = results.findings[level];
   if (!findings?.constants?.diatomic) return null;
-  const { vibration } = findings;
   const constants = comparedConstants(results).filter(({ byLevel }) => byLevel.has(level));
   return (
     <details>
@@ -33,14 +32,7 @@ export function SpectroscopicFacts({ level, results }: SpectroscopicFactsProps) 
             </dd>
           </div>
         ))}
-        {vibration?.kind === 'found' && (
-          <div>
-            <dt>Bound vibrational levels</dt>
-            <dd>{vibration.boundLevels}</dd>
-          </div>
-        )}
       </dl>
-      {vibration?.kind === 'none' && <p className="absent">No vibrational levels: {vibration.reason}</p>}
       {results.measured?.length === 0 && (
         <p className="absent">No measured constants of this molecule are on file.</p>
       )}
