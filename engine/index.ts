@@ -99,13 +99,9 @@ export type {
   StudyMolecule,
   StudyScan,
 } from './calculation/study';
-export type {
-  CorrelationParts,
-  OrbitalPart,
-  PairPart,
-  ProjectedEnergy,
-  RankPart,
-} from './configuration-interaction/correlation-parts';
+export type { CorrelationParts } from './configuration-interaction/correlation-parts';
+export type { OrbitalPart, PairPart, ProjectedEnergy } from './configuration-interaction/projected-energy';
+export type { RankPart } from './configuration-interaction/rank-parts';
 export type { SpinName } from './configuration-interaction/spin';
 export type { UnpairedElectrons } from './configuration-interaction/unpaired-electrons';
 export {

@@ -20,6 +20,7 @@ import {
 import type { Level } from './levels';
 import { carryOf, type MeanFields, type PointCarry, solveMeanFields } from './mean-fields';
 import { type MolecularIntegrals, molecularIntegrals } from './molecular-integrals';
+import { naturalOrbitals, wantsNaturalOrbitals } from './natural-orbitals';
 import { optimiseScale } from './optimise-scale';
 import type { PreparedStudy } from './prepare-study';
 import type { LevelResult, PointResult } from './result';
@@ -35,6 +36,11 @@ export interface ComputePointOptions {
   readonly guess?: PointCarry | undefined;
   /** only these levels of the study; default all */
   readonly levels?: readonly string[] | undefined;
+  /**
+   * false: leaves out what costs extra and only describes a correlated state – the parts of its correlation energy, its
+   * natural orbitals. Default true
+   */
+  readonly describesStates?: boolean | undefined;
   readonly control?: RunControl | undefined;
 }
 
@@ -70,7 +76,10 @@ export function computePoint(
   const { pointGroup, linear } = symmetry.molecule;
   const chargesOf = atomicCharges(molecule, basis, integrals.problem.overlap);
   const correlation = needsOrbitalIntegrals(chosen)
-    ? correlationInput(prepared, molecule, integrals, fields, symmetry, chargesOf, control)
+    ? correlationInput(prepared, molecule, integrals, fields, symmetry, chargesOf, {
+        describesStates: options.describesStates ?? true,
+        control,
+      })
     : undefined;
   const levels: Record<string, LevelResult> = {};
   const compute = (level: Level): LevelResult => {
@@ -114,7 +123,7 @@ function correlationInput(
   { reference, unrestricted }: MeanFields,
   symmetry: FieldSymmetry,
   chargesOf: ChargesOf,
-  control: RunControl,
+  { describesStates, control }: { readonly describesStates: boolean; readonly control: RunControl },
 ): CorrelationInput {
   const { problem, dipole } = integrals;
   const spinsDiffer = prepared.study.orbitals === 'unrestricted';
@@ -148,6 +157,19 @@ function correlationInput(
     chargesOf: (density) => chargesOf([overFunctions(density)]),
     partsOf: (energy, [alpha, beta]) =>
       energyParts(energy, [overFunctions(alpha), overFunctions(beta)], integrals),
+    ...(describesStates &&
+      wantsNaturalOrbitals(prepared) && {
+        naturalOrbitalsOf: (density) =>
+          naturalOrbitals({
+            density,
+            coefficients,
+            functionCount: n,
+            ...(spinsDiffer ? { frozen: 0, active: m } : { frozen, active: transformation.active }),
+            symmetry: symmetry.molecule,
+            ...(!spinsDiffer && { species: symmetry.species }),
+          }),
+      }),
+    wantsParts: describesStates,
     orbitalCount: m,
     frozen,
     activeElectrons: [prepared.spinElectrons[0] - frozen, prepared.spinElectrons[1] - frozen],

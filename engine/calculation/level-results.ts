@@ -1,3 +1,4 @@
+import type { CorrelationParts } from '../configuration-interaction/correlation-parts';
 import type { ConfigurationInteractionState } from '../configuration-interaction/describe-state';
 import { padDensity, type SpinDensities } from '../configuration-interaction/one-particle-density';
 import { solveSingles } from '../configuration-interaction/singles';
@@ -33,6 +34,7 @@ import type {
   LeadingConfiguration,
   LeadingDeterminant,
   LevelTermination,
+  NaturalOrbitals,
   PerturbationResult,
   SinglesResult,
 } from './result';
@@ -48,6 +50,10 @@ export interface CorrelationInput {
   readonly chargesOf: (density: Float64Array) => AtomicCharges;
   /** of an energy and its densities over all orbitals */
   readonly partsOf: (energy: number, densities: SpinDensities) => EnergyParts;
+  /** of a density over all orbitals; absent where none are wanted */
+  readonly naturalOrbitalsOf?: (density: Float64Array) => NaturalOrbitals;
+  /** whether the correlation energy is to be divided up, which takes some more products with H */
+  readonly wantsParts: boolean;
   /** all orbitals, frozen ones included */
   readonly orbitalCount: number;
   readonly frozen: number;
@@ -205,6 +211,7 @@ export function computeCorrelated(
     memoryLimit: input.memoryLimit,
     // the two sets of orbitals share no labels
     ...(!input.integrals.beta && { species: activeSpecies(input) }),
+    correlationParts: input.wantsParts,
     control: input.control,
   });
   // integrals that are not finite leave nothing to report
@@ -231,7 +238,13 @@ export function computeCorrelated(
     spin: lowest.spin,
     ...(lowest.symmetry && { symmetry: lowest.symmetry }),
     naturalOccupations: lowest.naturalOccupations,
+    ...(input.naturalOrbitalsOf && {
+      naturalOrbitals: input.naturalOrbitalsOf(overAllOrbitals(result.states[0].density, input)),
+    }),
     unpairedElectrons: lowest.unpairedElectrons,
+    ...(result.correlationParts && {
+      correlationParts: countFromFrozen(result.correlationParts, input.frozen),
+    }),
     dipole: lowest.dipole,
     energyParts: input.partsOf(lowest.energy, bothOverAllOrbitals(result.states[0].spinDensities, input)),
     ...(isTruncated && {
@@ -247,6 +260,23 @@ export function computeCorrelated(
         }),
       }),
     states,
+  };
+}
+
+/** Orbitals counted over all, frozen ones included. */
+function countFromFrozen(parts: CorrelationParts, frozen: number): CorrelationParts {
+  const { projected } = parts;
+  if (projected.kind === 'none') return parts;
+  return {
+    ...parts,
+    projected: {
+      kind: 'found',
+      singles: projected.singles.map((part) => ({ ...part, orbital: part.orbital + frozen })),
+      pairs: projected.pairs.map((part) => ({
+        ...part,
+        orbitals: [part.orbitals[0] + frozen, part.orbitals[1] + frozen],
+      })),
+    },
   };
 }
 

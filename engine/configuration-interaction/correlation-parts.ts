@@ -1,3 +1,10 @@
+import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
+import { determinantAt } from './determinant-space';
+import type { HamiltonianProduct } from './hamiltonian-product';
+import { hamiltonianElement } from './matrix-elements';
+import { type ProjectedEnergy, projectedEnergy } from './projected-energy';
+import { type RankPart, rankParts } from './rank-parts';
+
 /** What the energy of a CI state lies below (or above) that of the reference determinant, divided up; hartree. */
 export interface CorrelationParts {
   /** energy of the state less that of the reference determinant */
@@ -8,34 +15,23 @@ export interface CorrelationParts {
   readonly projected: ProjectedEnergy;
 }
 
-export interface RankPart {
-  /** Σ c² of the determinants of this rank */
-  readonly weight: number;
-  /** how much ⟨H − E(reference)⟩ changes when this rank is added to all lower ones, coefficients unchanged */
-  readonly energy: number;
-}
-
-/** E − E(reference) = Σ over single and double excitations I of ⟨0|H|I⟩ c(I)/c(0). */
-export type ProjectedEnergy =
-  | {
-      readonly kind: 'found';
-      readonly singles: readonly OrbitalPart[];
-      readonly pairs: readonly PairPart[];
-    }
-  /** the reference is hardly part of the state */
-  | { readonly kind: 'none'; readonly reason: string };
-
-/** Single excitations out of one spatial orbital, both spins together. */
-export interface OrbitalPart {
-  readonly orbital: number;
-  readonly energy: number;
-}
-
-/** Double excitations out of two spatial orbitals, or out of one, all spins together. */
-export interface PairPart {
-  /** the lower first; equal: both electrons of one orbital */
-  readonly orbitals: readonly [number, number];
-  readonly energy: number;
-  /** the part of `energy` from electrons of equal spin */
-  readonly sameSpin: number;
+/**
+ * Both divisions of the correlation energy of a normalised CI state, which complement each other: `projectedEnergy`
+ * knows orbital pairs, and means most where the reference dominates; `rankParts` knows all ranks, and holds for any
+ * vector.
+ */
+export function correlationParts(
+  { space, apply }: Pick<HamiltonianProduct, 'space' | 'apply'>,
+  vector: Float64Array,
+  energy: number,
+  integrals: OrbitalIntegrals,
+): CorrelationParts {
+  const reference = determinantAt(space, 0);
+  const referenceEnergy = hamiltonianElement(reference, reference, integrals);
+  const total = energy - referenceEnergy;
+  return {
+    total,
+    byRank: rankParts(space, apply, vector, referenceEnergy),
+    projected: projectedEnergy(space, vector, total, integrals),
+  };
 }

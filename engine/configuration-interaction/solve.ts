@@ -2,6 +2,7 @@ import { EngineError } from '../errors';
 import type { BetaIntegrals, OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
+import { type CorrelationParts, correlationParts } from './correlation-parts';
 import type { DistinguishingOperator } from './degenerate-states';
 import {
   applySpin,
@@ -36,6 +37,8 @@ export interface ConfigurationInteractionOptions {
   readonly memoryLimit?: number;
   /** labels the states, and makes degenerate ones of different symmetry definite */
   readonly species?: OrbitalSpecies;
+  /** whether to divide up the correlation energy of the lowest state, at the cost of three products; default no */
+  readonly correlationParts?: boolean;
   readonly control?: RunControl;
 }
 
@@ -43,6 +46,8 @@ export interface ConfigurationInteractionResult {
   readonly determinants: number;
   /** rising energy; fewer than asked for where there are fewer determinants */
   readonly states: readonly ConfigurationInteractionState[];
+  /** of the lowest state, where asked for */
+  readonly correlationParts?: CorrelationParts;
   readonly termination: Termination;
   /** 0: diagonalised directly */
   readonly iterations: number;
@@ -121,6 +126,10 @@ export function solveConfigurationInteraction(
   return {
     determinants: space.dimension,
     states,
+    ...(settings.correlationParts &&
+      states.length > 0 && {
+        correlationParts: correlationParts(product, found.vectors[0], states[0].energy, integrals),
+      }),
     termination: found.termination,
     iterations: found.iterations,
   };

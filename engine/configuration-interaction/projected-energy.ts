@@ -1,0 +1,153 @@
+import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
+import { type DeterminantSpace, determinantAt, rowLength } from './determinant-space';
+import { orbitalsOnlyIn } from './determinants';
+import { hamiltonianElement } from './matrix-elements';
+import { type StringSpace, stringAt } from './string-space';
+
+/** E − E(reference) = Σ over single and double excitations I of ⟨0|H|I⟩ c(I)/c(0). */
+export type ProjectedEnergy =
+  | {
+      readonly kind: 'found';
+      readonly singles: readonly OrbitalPart[];
+      readonly pairs: readonly PairPart[];
+    }
+  /** the reference is hardly part of the state */
+  | { readonly kind: 'none'; readonly reason: string };
+
+/** Single excitations out of one spatial orbital, both spins together; where beta orbitals differ, out of the two of one number. */
+export interface OrbitalPart {
+  readonly orbital: number;
+  /** hartree */
+  readonly energy: number;
+}
+
+/** Double excitations out of two spatial orbitals, or out of one, all spins together; as in `OrbitalPart`. */
+export interface PairPart {
+  /** the lower first; equal: both electrons of one orbital */
+  readonly orbitals: readonly [number, number];
+  /** hartree */
+  readonly energy: number;
+  /** the part of `energy` from electrons of equal spin */
+  readonly sameSpin: number;
+}
+
+/** Below this weight of the reference, c(0) tells more of what else is in the state than of its correlation. */
+const SMALLEST_REFERENCE_WEIGHT = 0.01;
+
+/**
+ * Divides the correlation energy of a CI state by the orbitals that electrons leave. H joins the reference to singles
+ * and doubles only, so that these give the whole; higher ranks act through their coefficients and have no pair.
+ *
+ * An iterated vector has a residual r, by which the sum misses the energy by r(0)/c(0): 1e-5 hartree at most, mostly far
+ * less. That is shared out in proportion to the sizes of the parts, each of which is uncertain by as much.
+ *
+ * @param correlation - energy less that of the reference determinant, which the parts add up to
+ *
+ * Source: O. Sinanoğlu, J. Chem. Phys. 36, 706 (1962); A. Szabo, N. S. Ostlund, Modern Quantum Chemistry, sec. 4.1.
+ */
+export function projectedEnergy(
+  space: DeterminantSpace,
+  vector: Float64Array,
+  correlation: number,
+  integrals: OrbitalIntegrals,
+): ProjectedEnergy {
+  if (vector[0] ** 2 < SMALLEST_REFERENCE_WEIGHT) {
+    return {
+      kind: 'none',
+      reason:
+        `The reference determinant has a weight of ${(vector[0] ** 2).toPrecision(1)} in this state, ` +
+        'and the projected energy divides by its coefficient.',
+    };
+  }
+  const parts = projectedParts(space, vector, integrals);
+  shareOut(correlation, [parts.singles, parts.sameSpin, parts.oppositeSpin]);
+  return { kind: 'found', ...listParts(space, parts) };
+}
+
+/** Makes numbers add up to what they should, each changed by the same fraction of its size. */
+function shareOut(whole: number, lists: readonly Float64Array[]): void {
+  let [sum, size] = [0, 0];
+  for (const list of lists) {
+    for (const value of list) {
+      sum += value;
+      size += Math.abs(value);
+    }
+  }
+  if (size === 0) return;
+  const fraction = (whole - sum) / size;
+  for (const list of lists) {
+    for (let i = 0; i < list.length; i++) list[i] += fraction * Math.abs(list[i]);
+  }
+}
+
+/** Σ ⟨0|H|I⟩ c(I)/c(0) by orbital, and by pair of orbitals: o numbers, and o×o with the lower orbital first. */
+interface ProjectedParts {
+  readonly singles: Float64Array;
+  readonly sameSpin: Float64Array;
+  readonly oppositeSpin: Float64Array;
+}
+
+function projectedParts(
+  space: DeterminantSpace,
+  vector: Float64Array,
+  integrals: OrbitalIntegrals,
+): ProjectedParts {
+  const occupied = occupiedCount(space);
+  const parts = {
+    singles: new Float64Array(occupied),
+    sameSpin: new Float64Array(occupied ** 2),
+    oppositeSpin: new Float64Array(occupied ** 2),
+  };
+  const reference = determinantAt(space, 0);
+  const alphaHoles = holesUpToRankTwo(space.alpha);
+  const betaHoles = holesUpToRankTwo(space.beta);
+  betaHoles.forEach((ofBeta, row) => {
+    const length = rowLength(space.rows, row);
+    for (let column = 0; column < Math.min(length, alphaHoles.length); column++) {
+      const ofAlpha = alphaHoles[column];
+      const place = space.rows.start[row] + column;
+      if (ofAlpha.length + ofBeta.length > 2) break;
+      if (place === 0 || vector[place] === 0) continue;
+      const element = hamiltonianElement(reference, determinantAt(space, place), integrals);
+      const energy = (element * vector[place]) / vector[0];
+      const [i, j] = [...ofAlpha, ...ofBeta].sort((a, b) => a - b);
+      if (j === undefined) parts.singles[i] += energy;
+      else if (ofAlpha.length === 1) parts.oppositeSpin[i * occupied + j] += energy;
+      else parts.sameSpin[i * occupied + j] += energy;
+    }
+  });
+  return parts;
+}
+
+/** Orbitals that electrons have left, of every string up to rank 2; these stand first. */
+function holesUpToRankTwo(strings: StringSpace): number[][] {
+  const count = strings.rankStart[Math.min(2, strings.maximumRank) + 1];
+  return Array.from({ length: count }, (_, place) =>
+    orbitalsOnlyIn(strings.reference, stringAt(strings, place)),
+  );
+}
+
+function listParts(
+  space: DeterminantSpace,
+  { singles, sameSpin, oppositeSpin }: ProjectedParts,
+): { readonly singles: readonly OrbitalPart[]; readonly pairs: readonly PairPart[] } {
+  const occupied = occupiedCount(space);
+  const doublyOccupied = Math.min(space.alpha.electrons, space.beta.electrons);
+  const pairs: PairPart[] = [];
+  for (let i = 0; i < occupied; i++) {
+    for (let j = i < doublyOccupied ? i : i + 1; j < occupied; j++) {
+      const place = i * occupied + j;
+      pairs.push({
+        orbitals: [i, j],
+        energy: sameSpin[place] + oppositeSpin[place],
+        sameSpin: sameSpin[place],
+      });
+    }
+  }
+  return { singles: Array.from(singles, (energy, orbital) => ({ orbital, energy })), pairs };
+}
+
+/** Spatial orbitals with one or two electrons in the reference. */
+function occupiedCount({ alpha, beta }: DeterminantSpace): number {
+  return Math.max(alpha.electrons, beta.electrons);
+}
