@@ -36,6 +36,7 @@ export interface EngineErrorDetails {
   'study.orbitals': { readonly level: string };
   'study.states': { readonly states: number };
   'study.convergence': { readonly tolerance: number };
+  'study.referenceWeight': { readonly weight: number };
   'study.tooLarge': { readonly bytes: number; readonly limit: number };
 }
 

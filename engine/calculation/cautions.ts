@@ -3,13 +3,18 @@ import type { FieldKind } from './follow-neighbours';
 import type { MeanFields } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
 import type { Caution, LevelFindings, LevelResult, PointResult, ScaleOptimisation } from './result';
+import type { Study } from './study';
 
 /** A triplet Hessian eigenvalue below this, hartree, counts as an instability. */
 const TRIPLET_INSTABILITY = -1e-5;
 /** ⟨S²⟩ above S(S + 1) by more than this is said. */
 const SPIN_CONTAMINATION = 0.1;
-/** Below this weight of the reference a single determinant no longer describes the state. */
+/** Below this weight of the reference a single determinant no longer describes the state; studies may say otherwise. */
 export const LOW_REFERENCE_WEIGHT = 0.9;
+
+export function lowReferenceWeight({ findings }: Pick<Study, 'findings'>): number {
+  return findings?.referenceWeight ?? LOW_REFERENCE_WEIGHT;
+}
 
 /** What to mistrust at one point. */
 export function pointCautions(
@@ -67,7 +72,7 @@ export function pointCautions(
         message: `${level} did not converge here; its numbers are the last ones reached and not results.`,
       });
     }
-    if (result.kind === 'correlated' && result.referenceWeight < LOW_REFERENCE_WEIGHT) {
+    if (result.kind === 'correlated' && result.referenceWeight < lowReferenceWeight(prepared.study)) {
       const isFull = result.davidsonCorrected === undefined;
       cautions.push({
         code: 'reference.weightLow',

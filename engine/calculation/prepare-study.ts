@@ -16,6 +16,7 @@ import { furtherBasisErrors } from './prepare-bases';
 import type { CompleteStudy, Study, StudyAtom, StudyMolecule } from './study';
 import {
   checkLevels,
+  checkReferenceWeight,
   checkStates,
   checkTolerance,
   electronsBySpin,
@@ -113,6 +114,7 @@ function prepare(study: Study, options: PrepareOptions, resolved?: BasisSet): Pr
   collect(() => checkLevels(study.levels));
   collect(() => checkStates(states));
   collect(() => checkTolerance(study.convergence?.energy ?? DEFAULT_ENERGY_TOLERANCE));
+  collect(() => checkReferenceWeight(study.findings?.referenceWeight));
   const symbols = knownSymbols(study.molecule);
   const basisSet =
     resolved ?? collect(() => resolveBasis(study.basis, symbols, { fileText: options.basisFileText }));

@@ -103,3 +103,15 @@ export function checkTolerance(tolerance: number): void {
     );
   }
 }
+
+export function checkReferenceWeight(weight: number | undefined): void {
+  if (weight !== undefined && !(weight > 0 && weight < 1)) {
+    throw new EngineError(
+      'study.referenceWeight',
+      `A reference weight of ${weight} is no threshold between 0 and 1.`,
+      'Choose one such as 0.9, or leave it out.',
+      { weight },
+      'findings.referenceWeight',
+    );
+  }
+}
