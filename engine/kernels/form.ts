@@ -14,7 +14,7 @@ export function kernelForm(): KernelForm {
 }
 
 /** For comparisons. What was prepared before (a Hamiltonian product, say) keeps its form. */
-export function useKernels(form: KernelForm): void {
+export function chooseKernels(form: KernelForm): void {
   chosen = form;
 }
 

@@ -1,7 +1,11 @@
-/**
- * Products of small dense matrices, row-major Float64Array. The plain forms: loops run along memory so that
- * a fast form with the same signature can stand beside them.
- */
+/** Dense matrices, row-major Float64Array. Products above a small size run as compiled kernels where they can. */
+
+import { kernelForm } from '../kernels/form';
+import { scratchMemory } from '../kernels/kernel-memory';
+import { type PlacedMatrix, productIn, rowsAt, transposed } from '../kernels/matrix-product';
+
+/** Multiply–adds below which a product is done before its matrices were copied to the kernel. */
+const SMALL_PRODUCT = 2000;
 
 /** C = A·B with A rows×inner, B inner×columns. Allocates rows×columns. */
 export function multiply(
@@ -11,6 +15,9 @@ export function multiply(
   inner: number,
   columns: number,
 ): Float64Array {
+  if (rows * inner * columns >= SMALL_PRODUCT && kernelForm() === 'fast') {
+    return fastProduct(a, b, rows, inner, columns, (x, y) => [rowsAt(x, inner), rowsAt(y, columns)]);
+  }
   const product = new Float64Array(rows * columns);
   for (let i = 0; i < rows; i++) {
     const target = i * columns;
@@ -32,6 +39,12 @@ export function multiplyLeftTransposed(
   inner: number,
   columns: number,
 ): Float64Array {
+  if (rows * inner * columns >= SMALL_PRODUCT && kernelForm() === 'fast') {
+    return fastProduct(a, b, rows, inner, columns, (x, y) => [
+      transposed(rowsAt(x, rows)),
+      rowsAt(y, columns),
+    ]);
+  }
   const product = new Float64Array(rows * columns);
   for (let k = 0; k < inner; k++) {
     for (let i = 0; i < rows; i++) {
@@ -53,6 +66,12 @@ export function multiplyRightTransposed(
   inner: number,
   columns: number,
 ): Float64Array {
+  if (rows * inner * columns >= SMALL_PRODUCT && kernelForm() === 'fast') {
+    return fastProduct(a, b, rows, inner, columns, (x, y) => [
+      rowsAt(x, inner),
+      transposed(rowsAt(y, inner)),
+    ]);
+  }
   const product = new Float64Array(rows * columns);
   for (let i = 0; i < rows; i++) {
     for (let j = 0; j < columns; j++) {
@@ -62,6 +81,29 @@ export function multiplyRightTransposed(
     }
   }
   return product;
+}
+
+/** @param place - how the factors lie in memory, from the addresses of their first numbers */
+function fastProduct(
+  a: Float64Array,
+  b: Float64Array,
+  rows: number,
+  inner: number,
+  columns: number,
+  place: (a: number, b: number) => [PlacedMatrix, PlacedMatrix],
+): Float64Array {
+  const memory = scratchMemory();
+  return memory.scope(() => {
+    const addProduct = productIn(memory);
+    const left = memory.float64(rows * inner);
+    const right = memory.float64(inner * columns);
+    const product = memory.float64(rows * columns);
+    left.view.set(a);
+    right.view.set(b);
+    product.view.fill(0);
+    addProduct(rowsAt(product.address, columns), ...place(left.address, right.address), rows, inner, columns);
+    return product.view.slice();
+  });
 }
 
 /** Xᵀ·A·X for a square A (n×n) and X n×m: the matrix of an operator in another set of functions, m×m. */

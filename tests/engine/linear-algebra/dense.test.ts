@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { Matrix } from 'ml-matrix';
 import { describe, expect, it } from 'vitest';
 import {
@@ -7,6 +8,7 @@ import {
   multiplyLeftTransposed,
   multiplyRightTransposed,
 } from '../../../engine/linear-algebra/dense';
+import { inForm, relativeDifference } from '../../support/kernel-forms';
 import { randomArray, seededRandom } from '../../support/random';
 
 const random = seededRandom(1);
@@ -33,6 +35,29 @@ describe('dense products', () => {
         .mmul(asMatrix(c, 5, 4)),
     );
     expectSame(multiplyRightTransposed(a, d, 5, 3, 7), asMatrix(a, 5, 3).mmul(asMatrix(d, 7, 3).transpose()));
+  });
+
+  it('independent: the fast forms give what the plain ones do', () => {
+    const size = fc.integer({ min: 1, max: 40 });
+    fc.assert(
+      fc.property(
+        fc.constantFrom(multiply, multiplyLeftTransposed, multiplyRightTransposed),
+        size,
+        size,
+        size,
+        fc.integer(),
+        (product, rows, inner, columns, seed) => {
+          const numbers = seededRandom(seed);
+          const left = randomArray(rows * inner, numbers);
+          const right = randomArray(inner * columns, numbers);
+          const [fast, plain] = (['fast', 'plain'] as const).map((form) =>
+            inForm(form, () => product(left, right, rows, inner, columns)),
+          );
+          expect(relativeDifference(fast, plain)).toBeLessThan(1e-12);
+        },
+      ),
+      { seed: 3 },
+    );
   });
 
   it('independent: Xᵀ·A·X equals that of ml-matrix', () => {
