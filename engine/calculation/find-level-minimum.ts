@@ -1,6 +1,7 @@
 import { HARTREE_IN_WAVENUMBERS } from '../constants';
 import { type CurveMinimum, findCurveMinimum } from '../curves/minimum';
 import type { RunControl } from '../termination';
+import { counterpoise } from './counterpoise';
 import { diatomicOf } from './diatomic';
 import { explainStudy } from './explain-study';
 import { findInstabilityOnset } from './find-onset';
@@ -18,8 +19,8 @@ const SPACING_BOHR = 0.04;
 
 /**
  * All that is read off one level's curve: its minimum with the constants of the well, the limit of separate
- * fragments and the depth against it, vibrational levels; of RHF also where it becomes unstable. Computes the
- * further points of that level that it needs itself.
+ * fragments and the depth against it, where asked for the superposition error, vibrational levels; of RHF also where
+ * it becomes unstable. Computes the further points of that level that it needs itself.
  *
  * @param level - name of one of the study's levels
  * @param points - the study's computed points
@@ -32,9 +33,15 @@ export function findLevelMinimum(
   left: readonly (PointCarry | undefined)[] = [],
   control?: RunControl,
 ): LevelFindings {
+  const { study } = prepared;
   const findings = curveFindings(prepared, level, points, left, control);
-  if (level !== 'RHF' || !prepared.study.scan) return findings;
-  return { ...findings, instabilityOnset: findInstabilityOnset(prepared, points, control) };
+  const superposition = study.findings?.counterpoise && counterpoise(prepared, level, findings, control);
+  return {
+    ...findings,
+    ...(superposition && { counterpoise: superposition }),
+    ...(level === 'RHF' &&
+      study.scan && { instabilityOnset: findInstabilityOnset(prepared, points, control) }),
+  };
 }
 
 function curveFindings(

@@ -1,12 +1,9 @@
-import { buildMolecule, nuclearRepulsion } from '../molecule/build-molecule';
-import { requireElement } from '../molecule/elements';
 import { planMotions } from '../molecule/scan-motion';
 import { type RunControl, UNATTENDED } from '../termination';
-import { computePoint } from './compute-point';
+import { type FragmentEnergy, fragmentEnergy } from './fragment-energy';
 import { findLevel, type Level } from './levels';
-import { type PreparedStudy, prepareFragment } from './prepare-study';
+import type { PreparedStudy } from './prepare-study';
 import type { Dissociation, Fragment } from './result';
-import type { StudyAtom, StudyMolecule } from './study';
 
 /**
  * Fragments whose Hartree–Fock energies together lie this far above the lowest, hartree, are not computed at a
@@ -22,14 +19,11 @@ interface Channel {
   readonly multiplicities: readonly [number, number];
 }
 
-type FragmentState = Omit<Fragment, 'atoms'> & { readonly isConverged: boolean };
-
 /**
  * The lowest energy of the two parts that a scanned bond leaves, computed apart at the level of the curve.
  *
  * Tried are charges up to one off an even share and, of each part, its two lowest multiplicities as far as they
- * couple to that of the molecule. Open shells take ROHF where the molecule takes RHF, one electron takes it at
- * every level but UHF (nothing is left to correlate). Symmetry in space is not asked about.
+ * couple to that of the molecule. Symmetry in space is not asked about.
  *
  * @param farEnd - energy and place of the last point of the curve; the parts are those of that geometry
  */
@@ -41,10 +35,9 @@ export function dissociationLimit(
 ): Dissociation | undefined {
   const parts = partsOf(prepared);
   if (!parts) return undefined;
-  if (prepared.study.active) return none('Active orbitals of the whole say nothing of those of its parts.');
   const level = findLevel(levelName, 'levels');
   if (prepared.study.active && level.kind === 'correlated') {
-    return none('The active orbitals chosen for the molecule are none of its fragments.');
+    return none('The active orbitals chosen for the molecule say nothing of those of its parts.');
   }
   const compute = fragmentComputer(
     prepared,
@@ -91,7 +84,7 @@ function none(reason: string): Dissociation {
   return { kind: 'none', reason };
 }
 
-const sumOf = (pair: readonly FragmentState[]): number => pair[0].energy + pair[1].energy;
+const sumOf = (pair: readonly FragmentEnergy[]): number => pair[0].energy + pair[1].energy;
 
 type Parts = readonly [readonly number[], readonly number[]];
 
@@ -136,9 +129,9 @@ function multiplicitiesOf(electrons: number): readonly number[] {
 
 function pairOf(
   { charges, multiplicities }: Channel,
-  compute: (part: number, charge: number, multiplicity: number) => FragmentState | undefined,
-): readonly FragmentState[] | undefined {
-  const pair: FragmentState[] = [];
+  compute: (part: number, charge: number, multiplicity: number) => FragmentEnergy | undefined,
+): readonly FragmentEnergy[] | undefined {
+  const pair: FragmentEnergy[] = [];
   for (const part of [0, 1]) {
     const fragment = compute(part, charges[part], multiplicities[part]);
     if (!fragment) return undefined;
@@ -153,64 +146,13 @@ function fragmentComputer(prepared: PreparedStudy, parts: Parts, farEnd: number 
   const molecules = parts.map((part) => part.map((index) => atoms[index]));
   const areEqual =
     parts.every((part) => part.length === 1) && molecules[0][0].element === molecules[1][0].element;
-  const known = new Map<string, FragmentState | undefined>();
-  return (part: number, charge: number, multiplicity: number, level: Level): FragmentState | undefined => {
+  const known = new Map<string, FragmentEnergy | undefined>();
+  return (part: number, charge: number, multiplicity: number, level: Level): FragmentEnergy | undefined => {
     const own = areEqual ? 0 : part;
     const key = `${own} ${charge} ${multiplicity} ${level.name}`;
     if (!known.has(key)) {
-      known.set(key, computeFragment(prepared, molecules[own], charge, multiplicity, level, control));
+      known.set(key, fragmentEnergy(prepared, molecules[own], charge, multiplicity, level, control));
     }
     return known.get(key);
   };
-}
-
-/** @returns undefined where the basis has too few functions for the electrons */
-function computeFragment(
-  prepared: PreparedStudy,
-  atoms: readonly StudyAtom[],
-  charge: number,
-  multiplicity: number,
-  wanted: Level,
-  control: RunControl,
-): FragmentState | undefined {
-  const molecule = { unit: prepared.study.molecule.unit, atoms, charge, multiplicity };
-  const nuclei = bareNuclei(molecule);
-  if (nuclei !== undefined) {
-    return { charge, multiplicity, energy: nuclei, level: wanted.name, isConverged: true };
-  }
-  const prepareAt = (level: string) => prepareFragment(prepared, molecule, level);
-  const meanField = multiplicity === 1 ? 'RHF' : 'ROHF';
-  const asked = prepareAt(wanted.name === 'RHF' ? meanField : wanted.name);
-  const preparation =
-    asked.ok && wanted.kind !== 'hartreeFock' && correlatedElectrons(asked.prepared) < 2
-      ? prepareAt(meanField)
-      : asked;
-  if (!preparation.ok) return undefined;
-  const [{ name: level }] = preparation.prepared.levels;
-  const result = computePoint(preparation.prepared, null, { control }).result.levels[level];
-  if (!('energy' in result)) return undefined;
-  return {
-    charge,
-    // of determinants with equal spins up the lowest CI state may be one of higher spin
-    multiplicity:
-      result.kind === 'correlated' && result.spin !== 'mixed'
-        ? Math.round(Math.sqrt(1 + 4 * result.sSquared))
-        : multiplicity,
-    energy: result.energy,
-    level,
-    isConverged: result.converged,
-  };
-}
-
-function correlatedElectrons({ electrons, frozenOrbitals }: PreparedStudy): number {
-  return electrons - 2 * frozenOrbitals;
-}
-
-/** Energy of nuclei that no electron is left to; undefined where there are electrons. */
-function bareNuclei(molecule: StudyMolecule & { readonly charge: number }): number | undefined {
-  const atoms = molecule.atoms.map(({ element }) => requireElement(element).atomicNumber);
-  if (atoms.reduce((sum, nuclearCharge) => sum + nuclearCharge, 0) > molecule.charge) return undefined;
-  // one electron more is a molecule that can be built
-  const built = buildMolecule({ ...molecule, charge: molecule.charge - 1, multiplicity: 2 });
-  return built.ok ? nuclearRepulsion(built.molecule) : undefined;
 }
