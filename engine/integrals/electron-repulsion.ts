@@ -1,5 +1,5 @@
 import type { PlacedBasis } from '../basis/contracted-gaussian';
-import { coulombQuartet, QuartetWorkspace } from './coulomb-quartet';
+import { type Quartet, withQuartets } from './coulomb-quartets';
 import { packedPair } from './orbital-integrals';
 import { type ShellPair, shellPairs } from './shell-pair';
 
@@ -37,27 +37,27 @@ export function electronRepulsionTensor(
   const { schwarzThreshold } = { ...ELECTRON_REPULSION_DEFAULTS, ...options };
   const pairCount = (basis.functionCount * (basis.functionCount + 1)) / 2;
   const tensor = new Float64Array((pairCount * (pairCount + 1)) / 2);
-  const workspace = new QuartetWorkspace();
   const primitiveThreshold = schwarzThreshold * PRIMITIVE_TO_QUARTET_THRESHOLD;
   const pairs = shellPairs(basis);
-  const bounds = pairs.map((pair) => schwarzBound(pair, workspace));
-  const places = pairs.map(productPlaces);
-  for (let i = 0; i < pairs.length; i++) {
-    for (let j = 0; j <= i; j++) {
-      if (bounds[i] * bounds[j] < schwarzThreshold) continue;
-      coulombQuartet(pairs[i], pairs[j], workspace, primitiveThreshold);
-      scatterInto(tensor, workspace.block, places[i], places[j]);
+  withQuartets(pairs, (quartet) => {
+    const bounds = pairs.map((pair, place) => schwarzBound(pair, place, quartet));
+    const places = pairs.map(productPlaces);
+    for (let i = 0; i < pairs.length; i++) {
+      for (let j = 0; j <= i; j++) {
+        if (bounds[i] * bounds[j] < schwarzThreshold) continue;
+        scatterInto(tensor, quartet(i, j, primitiveThreshold), places[i], places[j]);
+      }
     }
-  }
+  });
   return tensor;
 }
 
 /** √ of the largest (ab|ab) of the pair. */
-function schwarzBound(pair: ShellPair, workspace: QuartetWorkspace): number {
-  coulombQuartet(pair, pair, workspace, 0);
+function schwarzBound({ productCount }: ShellPair, place: number, quartet: Quartet): number {
+  const block = quartet(place, place, 0);
   let largest = 0;
-  for (let product = 0; product < pair.productCount; product++) {
-    largest = Math.max(largest, Math.abs(workspace.block[product * pair.productCount + product]));
+  for (let product = 0; product < productCount; product++) {
+    largest = Math.max(largest, Math.abs(block[product * productCount + product]));
   }
   return Math.sqrt(largest);
 }

@@ -22,7 +22,8 @@ export class HermiteCoulombArguments {
 const boysArguments = new Float64Array(HERMITE_BATCH);
 const boysValues = new Float64Array(HERMITE_BATCH * (HIGHEST_DEGREE + 1));
 const coordinates = new Float64Array(3);
-const recursion = buildRecursion();
+/** For each index: the axis it is raised along, the index one and two below on it, and the factor of the latter. */
+export const HERMITE_RECURSION = buildRecursion();
 
 /**
  * Hermite Coulomb integrals R_tuv = prefactor · ∂^(t+u+v)/∂x^t∂y^u∂z^v F_0(a·(x² + y² + z²)) for all
@@ -151,7 +152,7 @@ function expandByRecursion(
   k: number,
   target: Float64Array,
 ): void {
-  const { axis, parent, grandparent, multiplicity } = recursion;
+  const { axis, parent, grandparent, multiplicity } = HERMITE_RECURSION;
   const offset = k * hermiteStart(degree + 1);
   const boys = k * (degree + 1);
   coordinates[0] = batch.x[k];
@@ -168,7 +169,6 @@ function expandByRecursion(
   }
 }
 
-/** For each index: the axis it is raised along, the index one and two below on it, and the factor of the latter. */
 function buildRecursion() {
   const count = hermiteStart(HIGHEST_DEGREE + 1);
   const axis = new Uint8Array(count);

@@ -10,9 +10,13 @@ const TABLE_END = 36;
 /** A row holds e^−T, then F_0 … F_(maxOrder + TAYLOR_TERMS − 1). */
 const ROW_LENGTH = 1 + BOYS_MAX_ORDER + TAYLOR_TERMS;
 
-const table = buildTable();
-
-const inverseOdd = Float64Array.from({ length: BOYS_MAX_ORDER + 1 }, (_, order) => 1 / (2 * order - 1));
+/** One row a grid point: e^−T, then F_0 … F_26. */
+export const BOYS_TABLE = buildTable();
+/** 1/(2m − 1) at m */
+export const INVERSE_ODD = Float64Array.from(
+  { length: BOYS_MAX_ORDER + 1 },
+  (_, order) => 1 / (2 * order - 1),
+);
 const singleArgument = new Float64Array(1);
 
 /**
@@ -67,23 +71,25 @@ export function boysFunctionsInto(
     const fifth = step * (1 / 5);
     const sixth = step * (1 / 6);
     let value =
-      table[first] +
+      BOYS_TABLE[first] +
       step *
-        (table[first + 1] +
+        (BOYS_TABLE[first + 1] +
           half *
-            (table[first + 2] +
+            (BOYS_TABLE[first + 2] +
               third *
-                (table[first + 3] +
-                  quarter * (table[first + 4] + fifth * (table[first + 5] + sixth * table[first + 6])))));
+                (BOYS_TABLE[first + 3] +
+                  quarter *
+                    (BOYS_TABLE[first + 4] +
+                      fifth * (BOYS_TABLE[first + 5] + sixth * BOYS_TABLE[first + 6])))));
     target[end] = value;
     if (maxOrder === 0) continue;
     const exponential =
-      table[row] *
+      BOYS_TABLE[row] *
       (1 +
         step * (1 + half * (1 + third * (1 + quarter * (1 + fifth * (1 + sixth * (1 + step * (1 / 7))))))));
     const twiceArgument = 2 * argument;
     for (let order = maxOrder; order > 0; order--) {
-      value = (twiceArgument * value + exponential) * inverseOdd[order];
+      value = (twiceArgument * value + exponential) * INVERSE_ODD[order];
       target[end - maxOrder + order - 1] = value;
     }
   }

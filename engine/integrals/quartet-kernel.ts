@@ -1,0 +1,154 @@
+import { electronRepulsionKernels } from '../kernels/electron-repulsion';
+import { KernelMemory } from '../kernels/kernel-memory';
+import { BOYS_TABLE, INVERSE_ODD } from '../special-functions/boys-function';
+import type { Quartet } from './coulomb-quartets';
+import { HERMITE_RECURSION } from './hermite-coulomb';
+import { hermiteStart } from './hermite-index';
+import type { ShellPair } from './shell-pair';
+
+/** Pairs of bra primitives whose contracted kets the kernel holds at once, and vectors of Hermite integrals. */
+const BRA_BATCH = 6;
+const HERMITE_BATCH = 1024;
+/** three coordinates, and derivatives of order 0 … 16 */
+const POINT_VECTORS = 20;
+
+/** Memory of this thread for integrals; the tables stand at its bottom and stay. */
+interface IntegralMemory {
+  readonly memory: KernelMemory;
+  readonly boysTable: number;
+  readonly inverseOdd: number;
+  readonly recursion: number;
+}
+
+let integralMemory: IntegralMemory | undefined;
+
+/**
+ * The fast form of `coulombQuartet` on the given pairs, which are copied into kernel memory once; valid while `work`
+ * runs. Records and their order: kernels/assembly/electron-repulsion.ts.
+ */
+export function withFastQuartets<Result>(
+  pairs: readonly ShellPair[],
+  work: (quartet: Quartet) => Result,
+): Result {
+  integralMemory ??= prepareMemory();
+  const { memory } = integralMemory;
+  const { coulombQuartet } = electronRepulsionKernels(memory);
+  return memory.scope(() => {
+    const { workspace, block } = takeWorkspace(integralMemory!, pairs);
+    const records = pairs.map((pair) => writePair(memory, pair));
+    return work((bra, ket, primitiveThreshold) => {
+      coulombQuartet(records[bra], records[ket], workspace, primitiveThreshold);
+      return block;
+    });
+  });
+}
+
+function prepareMemory(): IntegralMemory {
+  const memory = new KernelMemory();
+  const { axis, parent, grandparent, multiplicity } = HERMITE_RECURSION;
+  const recursion = memory.float64(3 * axis.length);
+  const offsets = new Int32Array(recursion.view.buffer, recursion.address, 6 * axis.length);
+  for (let index = 0; index < axis.length; index++) {
+    offsets[6 * index] = 16 * axis[index];
+    offsets[6 * index + 1] = 16 * parent[index];
+    offsets[6 * index + 2] = 16 * grandparent[index];
+    recursion.view[3 * index + 2] = multiplicity[index];
+  }
+  return {
+    memory,
+    boysTable: putNumbers(memory, BOYS_TABLE),
+    inverseOdd: putNumbers(memory, INVERSE_ODD),
+    recursion: recursion.address,
+  };
+}
+
+/** Room for the largest quartet of the pairs; bounds rather than exact lengths. */
+function takeWorkspace(tables: IntegralMemory, pairs: readonly ShellPair[]) {
+  const { memory } = tables;
+  let degree = 0;
+  let factors = 0;
+  let columns = 0;
+  let products = 0;
+  for (const { layout, productCount } of pairs) {
+    degree = Math.max(degree, layout.degree);
+    factors = Math.max(factors, layout.factorDegrees.length);
+    columns = Math.max(columns, layout.columnCount);
+    products = Math.max(products, productCount);
+  }
+  const hermiteCount = hermiteStart(2 * degree + 1);
+  // sums over both lanes, then those of the joined lanes in the same place
+  const ketSums = Math.max(2 * BRA_BATCH * factors * hermiteCount, columns * columns);
+  const block = memory.float64(products * products);
+  const workspace = putIntegers(memory, [
+    tables.boysTable,
+    tables.inverseOdd,
+    tables.recursion,
+    memory.float64(2 * POINT_VECTORS).address,
+    memory.float64(2 * Math.max(HERMITE_BATCH, hermiteCount)).address,
+    memory.float64(ketSums).address,
+    memory.float64(2 * columns * columns).address,
+    memory.int32(factors * factors).address,
+    memory.float64(columns * Math.max(columns, products)).address,
+    memory.float64(columns * products).address,
+    block.address,
+  ]);
+  return { workspace, block: block.view };
+}
+
+function writePair(memory: KernelMemory, pair: ShellPair): number {
+  const { layout, primitiveCount } = pair;
+  const factorCount = layout.factorDegrees.length;
+  // the second lane of an odd last primitive repeats it with factors 0
+  const lanes = Math.ceil(primitiveCount / 2);
+  const inLanes = (values: Float64Array) => {
+    const { address, view } = memory.float64(2 * lanes);
+    view.set(values);
+    view[2 * lanes - 1] = values[primitiveCount - 1];
+    return address;
+  };
+  const braFactors = memory.float64(2 * lanes * factorCount);
+  const ketFactors = memory.float64(2 * primitiveCount * factorCount);
+  braFactors.view.fill(0);
+  for (let i = 0; i < primitiveCount; i++) {
+    for (let factor = 0; factor < factorCount; factor++) {
+      const place = i * factorCount + factor;
+      braFactors.view[2 * ((i >> 1) * factorCount + factor) + (i & 1)] = pair.factors[place];
+      ketFactors.view[2 * place] = pair.signedFactors[place];
+      ketFactors.view[2 * place + 1] = pair.signedFactors[place];
+    }
+  }
+  return putIntegers(memory, [
+    primitiveCount,
+    layout.degree,
+    factorCount,
+    layout.columnCount,
+    pair.productCount,
+    inLanes(pair.exponents),
+    inLanes(pair.centreX),
+    inLanes(pair.centreY),
+    inLanes(pair.centreZ),
+    inLanes(pair.bounds),
+    braFactors.address,
+    ketFactors.address,
+    putIntegers(memory, layout.factorDegrees),
+    putIntegers(
+      memory,
+      layout.columnPowers.flatMap(([, v, w], column) => [layout.columnFactor[column], v + w, w]),
+    ),
+    putIntegers(memory, pair.rowStart),
+    putIntegers(memory, pair.columns),
+    putNumbers(memory, pair.values),
+  ]);
+}
+
+function putNumbers(memory: KernelMemory, values: Float64Array): number {
+  const { address, view } = memory.float64(values.length);
+  view.set(values);
+  return address;
+}
+
+function putIntegers(memory: KernelMemory, values: ArrayLike<number>): number {
+  const { address, view } = memory.int32(values.length);
+  view.set(values);
+  return address;
+}
