@@ -19,6 +19,12 @@ export function diatomicOf({ molecule, scan }: CompleteStudy): Diatomic | undefi
   return { atoms, reducedMass: mass, reducedMassDalton: mass / DALTON_IN_ELECTRON_MASSES };
 }
 
+/** The same two atoms with other mass numbers. */
+export function isotopologueOf(study: CompleteStudy, massNumbers: readonly number[]): Diatomic | undefined {
+  const atoms = study.molecule.atoms.map((atom, index) => ({ ...atom, isotope: massNumbers[index] }));
+  return diatomicOf({ ...study, molecule: { ...study.molecule, atoms } });
+}
+
 /**
  * What was measured for the molecule of a study: its electronic states, the ground state first.
  *

@@ -1,26 +1,27 @@
 import { HARTREE_IN_WAVENUMBERS } from '../constants';
-import { type CurveMinimum, findCurveMinimum } from '../curves/minimum';
 import type { RunControl } from '../termination';
 import { counterpoise } from './counterpoise';
-import { diatomicOf } from './diatomic';
+import { curveFits } from './curve-fits';
+import { type Diatomic, diatomicOf, isotopologueOf } from './diatomic';
+import { excitedStates, type LowestState, lowestStateOfSingles } from './excited-states';
 import { explainStudy } from './explain-study';
 import { findInstabilityOnset } from './find-onset';
+import { findReferenceWeight } from './find-reference-weight';
 import { dissociationLimit } from './fragments';
-import { type LevelCurve, levelCurve } from './level-curve';
+import type { Isotopologue } from './further-findings';
+import { type LevelCurve, type LevelPoints, levelPoints, lowestCurve } from './level-curve';
 import type { PointCarry } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
+import { readWell, type Well } from './read-well';
 import type { Dissociation, LevelFindings, PointResult, WellDepth } from './result';
-import { vibrationOf } from './vibration';
-import { wellConstants } from './well-constants';
-
-/** Spacing of the points computed around a minimum: fine against a well's width, coarse against energy noise. */
-const SPACING_ANGSTROM = 0.02;
-const SPACING_BOHR = 0.04;
+import type { CompleteStudy } from './study';
+import { vibrationOn } from './vibration';
+import { diatomicConstants } from './well-constants';
 
 /**
  * All that is read off one level's curve: its minimum with the constants of the well, the limit of separate
  * fragments and the depth against it, where asked for the superposition error, vibrational levels; of RHF also where
- * it becomes unstable. Computes the further points of that level that it needs itself.
+ * it becomes unstable, of CI where its reference loses weight. Computes the further points of that level that it needs itself.
  *
  * @param level - name of one of the study's levels
  * @param points - the study's computed points
@@ -41,47 +42,62 @@ export function findLevelMinimum(
     ...(superposition && { counterpoise: superposition }),
     ...(level === 'RHF' &&
       study.scan && { instabilityOnset: findInstabilityOnset(prepared, points, control) }),
+    ...(study.scan &&
+      prepared.levels.some(({ name, kind }) => name === level && kind === 'correlated') && {
+        referenceWeight: findReferenceWeight(prepared, level, points, left, control),
+      }),
   };
 }
 
 function curveFindings(
   prepared: PreparedStudy,
   level: string,
-  points: readonly PointResult[],
+  computed: readonly PointResult[],
   left: readonly (PointCarry | undefined)[],
   control: RunControl | undefined,
 ): LevelFindings {
-  const { scan, molecule } = prepared.study;
-  if (!scan) return none('A single point has no curve.');
-  if (!('bonds' in scan.coordinate)) return none('Minima are read off for scans of a bond length only.');
-  if (prepared.levels.find((candidate) => candidate.name === level)?.kind === 'singles') {
-    return none('CIS gives excited states only; its ground state is RHF.');
+  const { study } = prepared;
+  if (!study.scan) return none('A single point has no curve.');
+  if (!('bonds' in study.scan.coordinate)) {
+    return none('Minima are read off for scans of a bond length only.');
   }
-  const curve = levelCurve(prepared, level, points, left, control);
-  const farEnd = curve.points().at(-1);
-  const dissociation = dissociationLimit(prepared, level, farEnd, control);
-  const limit = dissociation && { dissociation };
-  const spacing = molecule.unit === 'bohr' ? SPACING_BOHR : SPACING_ANGSTROM;
-  const minimum = findCurveMinimum(curve.scan, curve.energyAt, spacing);
-  if (minimum.kind !== 'found') return { minimum: withoutMinimum(minimum), ...limit };
-  const { x, energy, uncertainty } = minimum;
-  const wellDepth = wellDepthOf(energy, curve, dissociation);
-  const constants = wellConstants(prepared, curve, minimum, spacing);
+  const points = levelPoints(prepared, level, computed, left, control);
+  const seconds = explainStudy(prepared).levels.find((explained) => explained.level === level)?.seconds ?? 0;
+  if (prepared.levels.find(({ name }) => name === level)?.kind === 'singles') {
+    const lowest = lowestStateOfSingles(prepared, points, seconds);
+    return {
+      ...none('CIS gives excited states only; its ground state is RHF.'),
+      ...excitedFindings(prepared, points, lowest, seconds),
+    };
+  }
+  const curve = lowestCurve(points);
+  const dissociation = dissociationLimit(prepared, level, curve.points().at(-1), control);
+  const limit = dissociation?.kind === 'found' ? dissociation.energy : undefined;
+  const { minimum, well } = readWell(prepared, curve, limit, seconds);
+  const wellDepth = well && wellDepthOf(well.found.energy, curve, dissociation);
   return {
-    minimum: { kind: 'found', equilibriumDistance: x, energy, uncertainty },
-    constants,
-    ...limit,
+    minimum,
+    ...(dissociation && { dissociation }),
     ...(wellDepth && { wellDepth }),
-    ...vibrationFindings(prepared, curve, energy, dissociation, wellDepth),
+    ...(well?.constants && { constants: well.constants }),
+    ...(well && { fits: curveFits(curve, dissociation, wellDepth, well.expanded) }),
+    ...(well && vibrationFindings(study, computed, level, well, wellDepth)),
+    ...excitedFindings(prepared, points, { curve, well }, seconds),
   };
+}
+
+function excitedFindings(
+  prepared: PreparedStudy,
+  points: LevelPoints,
+  lowest: LowestState,
+  seconds: number,
+): Pick<LevelFindings, 'excitedStates'> {
+  const states = excitedStates(prepared, points, lowest, seconds);
+  return states.length > 0 ? { excitedStates: states } : {};
 }
 
 function none(reason: string): LevelFindings {
   return { minimum: { kind: 'none', reason } };
-}
-
-function withoutMinimum(minimum: Exclude<CurveMinimum, { kind: 'found' }>): LevelFindings['minimum'] {
-  return minimum.kind === 'atEdge' ? { kind: 'atEdge', coordinate: minimum.x } : minimum;
 }
 
 function wellDepthOf(
@@ -103,19 +119,43 @@ function wellDepthOf(
   return { value: last.energy - minimum, against: 'farEnd', farEnd: last.x };
 }
 
+/** Levels of the isotopes of the study and of those that it asks for besides. */
 function vibrationFindings(
-  prepared: PreparedStudy,
-  curve: LevelCurve,
-  minimum: number,
-  dissociation: Dissociation | undefined,
+  study: CompleteStudy,
+  computed: readonly PointResult[],
+  level: string,
+  { found, solvable, expanded }: Well,
   wellDepth: WellDepth | undefined,
-): Pick<LevelFindings, 'vibration'> {
-  const molecule = diatomicOf(prepared.study);
-  if (!molecule) return {};
-  const seconds = explainStudy(prepared).levels.find(({ level }) => level === curve.level)?.seconds ?? 0;
-  const limit = dissociation?.kind === 'found' ? dissociation.energy : undefined;
-  const vibration = vibrationOf(molecule, curve, minimum, limit, seconds);
-  if (vibration.kind !== 'found' || !wellDepth) return { vibration };
-  const d0 = wellDepth.value - vibration.zeroPointPerCm / HARTREE_IN_WAVENUMBERS;
-  return { vibration: { ...vibration, d0 } };
+): Pick<LevelFindings, 'vibration' | 'isotopologues'> {
+  const molecule = diatomicOf(study);
+  if (!molecule || !solvable) return {};
+  const { rotation = [], isotopologues = [] } = study.findings ?? {};
+  const rotations = [...new Set(rotation)].filter((value) => value > 0).sort((a, b) => a - b);
+  const lambda = lambdaNear(found.x, computed, level);
+  const vibrationWith = (masses: Diatomic) => {
+    const vibration = vibrationOn(solvable, masses, rotations, lambda);
+    if (vibration.kind !== 'found' || !wellDepth) return vibration;
+    return { ...vibration, d0: wellDepth.value - vibration.zeroPointPerCm / HARTREE_IN_WAVENUMBERS };
+  };
+  const others = isotopologues.flatMap((massNumbers): Isotopologue[] => {
+    const masses = isotopologueOf(study, massNumbers);
+    if (!masses) return [];
+    return [
+      {
+        massNumbers,
+        reducedMassDalton: masses.reducedMassDalton,
+        ...(expanded && { constants: diatomicConstants(expanded.expansion, masses) }),
+        vibration: vibrationWith(masses),
+      },
+    ];
+  });
+  return { vibration: vibrationWith(molecule), ...(others.length > 0 && { isotopologues: others }) };
+}
+
+/** Λ of the lowest state at the point nearest to a place; 0 where it is not known. */
+function lambdaNear(x: number, computed: readonly PointResult[], level: string): number {
+  const distance = ({ coordinate }: PointResult) => Math.abs((coordinate ?? Number.NaN) - x);
+  const nearest = computed.reduce((a, b) => (distance(b) < distance(a) ? b : a));
+  const result = nearest.levels[level];
+  return (result && 'symmetry' in result && result.symmetry?.term?.lambda) || 0;
 }

@@ -8,7 +8,19 @@ import type { LevelResult, PointResult } from './result';
 /** Scan values nearer than this, in the study's unit, are one geometry. */
 const SAME_PLACE = 1e-9;
 
-/** Where the lowest state of a level lies at one value of the scan coordinate. */
+/** All points of a scan of a bond at which one level is known; another is computed when it is first asked for. */
+export interface LevelPoints {
+  readonly level: string;
+  readonly bohrPerUnit: number;
+  /** number of the study's own points */
+  readonly scanned: number;
+  /** the study's points in its order, then those computed since, with this level alone */
+  all(): readonly PointResult[];
+  /** makes sure that there is a point at x; not once the run is cancelled */
+  compute(x: number): void;
+}
+
+/** Where a state lies at one value of the scan coordinate. */
 export interface PlaceOnCurve {
   /** study unit */
   readonly x: number;
@@ -16,7 +28,7 @@ export interface PlaceOnCurve {
   readonly energy: number | undefined;
 }
 
-/** One level's curve along the scan of a bond; a point of it is computed when it is first asked for. */
+/** The curve of one state of a level. */
 export interface LevelCurve {
   readonly level: string;
   readonly bohrPerUnit: number;
@@ -24,7 +36,7 @@ export interface LevelCurve {
   readonly scan: readonly PlaceOnCurve[];
   /** all points so far that converged, by rising distance */
   points(): readonly { readonly x: number; readonly energy: number }[];
-  /** undefined where the level does not converge, and once the run is cancelled */
+  /** computes the point if need be; undefined where the level does not converge, and once the run is cancelled */
   energyAt(x: number): number | undefined;
 }
 
@@ -33,39 +45,63 @@ export interface LevelCurve {
  * @param left - what each of them left: new points start from their nearest neighbour's solution, so that they stay on
  * its curve
  */
-export function levelCurve(
+export function levelPoints(
   prepared: PreparedStudy,
   level: string,
   points: readonly PointResult[],
   left: readonly (PointCarry | undefined)[],
   control?: RunControl,
-): LevelCurve {
-  const scan = points.map(({ coordinate, levels }) => ({
-    x: coordinate ?? Number.NaN,
-    energy: groundEnergy(levels[level]),
-  }));
-  const known: PlaceOnCurve[] = [...scan];
-  const carries = left.flatMap((carry, index) => (carry ? [{ x: scan[index].x, carry }] : []));
+): LevelPoints {
+  const known: PointResult[] = [...points];
+  const carries = left.flatMap((carry, index) =>
+    carry ? [{ x: points[index].coordinate ?? Number.NaN, carry }] : [],
+  );
   return {
     level,
     bohrPerUnit: bohrPerUnit(prepared.study.molecule.unit),
-    scan,
+    scanned: points.length,
+    all: () => known,
+    compute: (x) => {
+      if (placeOf(known, x) >= 0 || control?.isCancelled()) return;
+      const guess = nearest(carries, x)?.carry;
+      const options = { guess, levels: [level], describesStates: false, control };
+      const { result, carry } = computePoint(prepared, x, options);
+      if (carry) carries.push({ x, carry });
+      known.push(result);
+    },
+  };
+}
+
+/** @param energyOf - energy of the curve's state at a point, by its index in `points.all()` */
+export function curveThrough(
+  points: LevelPoints,
+  energyOf: (index: number) => number | undefined,
+): LevelCurve {
+  const places = (): PlaceOnCurve[] =>
+    points.all().map(({ coordinate }, index) => ({ x: coordinate ?? Number.NaN, energy: energyOf(index) }));
+  return {
+    level: points.level,
+    bohrPerUnit: points.bohrPerUnit,
+    scan: places().slice(0, points.scanned),
     points: () =>
-      known
+      places()
         .flatMap(({ x, energy }) => (energy === undefined ? [] : [{ x, energy }]))
         .sort((a, b) => a.x - b.x),
     energyAt: (x) => {
-      const before = known.find((place) => Math.abs(place.x - x) < SAME_PLACE);
-      if (before) return before.energy;
-      if (control?.isCancelled()) return undefined;
-      const guess = nearest(carries, x)?.carry;
-      const { result, carry } = computePoint(prepared, x, { guess, levels: [level], control });
-      if (carry) carries.push({ x, carry });
-      const energy = groundEnergy(result.levels[level]);
-      known.push({ x, energy });
-      return energy;
+      points.compute(x);
+      const index = placeOf(points.all(), x);
+      return index < 0 ? undefined : energyOf(index);
     },
   };
+}
+
+/** The curve of a level's lowest state. */
+export function lowestCurve(points: LevelPoints): LevelCurve {
+  return curveThrough(points, (index) => groundEnergy(points.all()[index].levels[points.level]));
+}
+
+function placeOf(points: readonly PointResult[], x: number): number {
+  return points.findIndex(({ coordinate }) => Math.abs((coordinate ?? Number.NaN) - x) < SAME_PLACE);
 }
 
 function nearest<T extends { readonly x: number }>(places: readonly T[], x: number): T | undefined {

@@ -1,19 +1,21 @@
 import { HARTREE_IN_WAVENUMBERS } from '../constants';
+import { centrifugalDistortions } from '../curves/centrifugal-distortion';
 import {
   FEWEST_POINTS,
   type InterpolatedCurve,
   interpolateCurve,
   pointsToAdd,
 } from '../curves/curve-interpolation';
-import { vibrationalLevels } from '../curves/vibrational-levels';
+import { type VibrationalLevel, vibrationalLevels } from '../curves/vibrational-levels';
 import type { Diatomic } from './diatomic';
+import type { RotatingLevel, RotatingLevels } from './further-findings';
 import type { LevelCurve } from './level-curve';
 import type { Vibration } from './result';
 
 /** Points computed for the levels of one curve, at most. */
 const MOST_POINTS_ADDED = 30;
 /** No point is added to a curve of which one takes longer, seconds as estimated: it is taken as it is. */
-const MOST_SECONDS_A_POINT = 2;
+export const MOST_SECONDS_A_POINT = 2;
 /** Wanted largest error of the curve between its points. */
 const INTERPOLATION_TOLERANCE_PER_CM = 0.01;
 /** Three or four are enough for energies converged to 1e-10 hartree, a few more for a wall that is not there yet. */
@@ -23,21 +25,37 @@ const LARGEST_USABLE_ERROR_PER_CM = 50;
 /** How far the next point inwards is, in units of the first distance. */
 const INWARD_STEP = 0.92;
 
+/** A curve that levels can be solved for on, with any masses and any rotation. */
+export interface SolvableCurve {
+  readonly kind: 'found';
+  readonly curve: InterpolatedCurve;
+  /** hartree */
+  readonly minimumEnergy: number;
+  /** energy of the separate fragments, hartree; undefined: the curve ends at its last point */
+  readonly limit: number | undefined;
+  readonly interpolationErrorPerCm: number;
+  readonly pointsAdded: number;
+}
+
+export interface WithoutLevels {
+  readonly kind: 'none';
+  readonly reason: string;
+}
+
 /**
- * All bound vibrational levels (J = 0) on one level's curve: through the points that are there, and more where the
- * interpolation wants them, as long as points are cheap.
+ * A curve through the points that are there, and through more where the interpolation wants them, as long as points are
+ * cheap.
  *
  * @param minimumEnergy - hartree
  * @param limit - energy of the separate fragments, hartree; absent: the curve ends at its last point
  * @param secondsPerPoint - estimated cost of one point of the level
  */
-export function vibrationOf(
-  molecule: Diatomic,
+export function solvableCurve(
   curve: LevelCurve,
   minimumEnergy: number,
   limit: number | undefined,
   secondsPerPoint: number,
-): Vibration {
+): SolvableCurve | WithoutLevels {
   const interpolate = () =>
     interpolateCurve(
       curve.points().map(({ x, energy }) => ({ distance: x * curve.bohrPerUnit, energy })),
@@ -60,32 +78,97 @@ export function vibrationOf(
       `Between its points the curve is known to ${error.toPrecision(2)} cm⁻¹ only: it has a kink, or too few points.`,
     );
   }
-  const solved = vibrationalLevels(interpolated, molecule.reducedMass);
-  // where the curve tends to a limit above its fragments, as in RHF, the levels between are none of the molecule's
-  const levels = solved.levels.filter(({ energy }) => limit === undefined || energy < limit);
+  return {
+    kind: 'found',
+    curve: interpolated,
+    minimumEnergy,
+    limit,
+    interpolationErrorPerCm: error,
+    pointsAdded: curve.points().length - pointsAtFirst,
+  };
+}
+
+/**
+ * All bound vibrational levels without rotation, and those of the rotations asked for.
+ *
+ * @param rotations - J or N above 0
+ * @param lambda - Λ of the state; rotations below it do not exist and are left out
+ */
+export function vibrationOn(
+  solvable: SolvableCurve | WithoutLevels,
+  molecule: Pick<Diatomic, 'reducedMass' | 'reducedMassDalton'>,
+  rotations: readonly number[] = [],
+  lambda = 0,
+): Vibration {
+  if (solvable.kind === 'none') return solvable;
+  const { curve, minimumEnergy, limit } = solvable;
+  const solved = vibrationalLevels(curve, molecule.reducedMass);
+  const levels = solved.levels.filter(isBelow(limit));
   if (levels.length === 0) return none('The well is too shallow for a bound level.');
   // an interpolant that dips below the computed minimum has left the curve
   if (levels[0].energy <= minimumEnergy) return none('The curve has a kink; levels on it would be invented.');
-  const abovePerCm = (energy: number) => (energy - minimumEnergy) * HARTREE_IN_WAVENUMBERS;
+  const distortions = centrifugalDistortions(curve, molecule.reducedMass, levels.length);
+  const place = placeAbove(minimumEnergy);
+  const rotating = rotations
+    .filter((rotation) => rotation >= lambda)
+    .map((rotation) => rotatingLevels(solvable, molecule.reducedMass, rotation, lambda));
   return {
     kind: 'found',
-    levels: levels.map((state) => ({
-      v: state.quantumNumber,
-      energyPerCm: abovePerCm(state.energy),
-      rotationalConstantPerCm: state.rotationalConstantPerCm,
-      uncertaintyPerCm: state.uncertaintyPerCm,
+    levels: levels.map((level, v) => ({
+      ...place(level),
+      rotationalConstantPerCm: level.rotationalConstantPerCm,
+      ...(distortions[v] !== undefined && { centrifugalDistortionPerCm: distortions[v] }),
     })),
-    zeroPointPerCm: abovePerCm(levels[0].energy),
+    ...(rotating.length > 0 && { rotating }),
+    zeroPointPerCm: place(levels[0]).energyPerCm,
     boundLevels: levels.length < solved.levels.length ? levels.length : solved.boundLevels,
     converged: solved.converged,
     beyondComputedRange: solved.beyondComputedRange.filter((v) => v < levels.length),
-    interpolationErrorPerCm: error,
-    pointsAdded: curve.points().length - pointsAtFirst,
+    interpolationErrorPerCm: solvable.interpolationErrorPerCm,
+    pointsAdded: solvable.pointsAdded,
     reducedMassDalton: molecule.reducedMassDalton,
   };
 }
 
-function none(reason: string): Vibration {
+function rotatingLevels(
+  { curve, minimumEnergy, limit }: SolvableCurve,
+  mass: number,
+  rotation: number,
+  lambda: number,
+): RotatingLevels {
+  // the centrifugal term is J(J + 1) − Λ²
+  const effective = Math.sqrt(rotation * (rotation + 1) - lambda ** 2 + 0.25) - 0.5;
+  const { levels, quasiBound, barrier, converged } = vibrationalLevels(curve, mass, { rotation: effective });
+  const place = placeAbove(minimumEnergy);
+  // a curve with a limit above its fragments has no barrier of the molecule's
+  const hasLimit = limit === undefined || limit >= curve.limit;
+  return {
+    rotation,
+    levels: levels.filter(isBelow(limit)).map(place),
+    quasiBound: hasLimit
+      ? quasiBound.map((level) => ({ ...place(level), widthPerCm: level.widthPerCm }))
+      : [],
+    ...(hasLimit &&
+      barrier !== undefined && { barrierPerCm: (barrier - minimumEnergy) * HARTREE_IN_WAVENUMBERS }),
+    converged,
+  };
+}
+
+/** Where a curve tends to a limit above its fragments, as in RHF, the levels between are none of the molecule's. */
+const isBelow =
+  (limit: number | undefined) =>
+  ({ energy }: VibrationalLevel): boolean =>
+    limit === undefined || energy < limit;
+
+const placeAbove =
+  (minimumEnergy: number) =>
+  ({ quantumNumber, energy, uncertaintyPerCm }: VibrationalLevel): RotatingLevel => ({
+    v: quantumNumber,
+    energyPerCm: (energy - minimumEnergy) * HARTREE_IN_WAVENUMBERS,
+    uncertaintyPerCm,
+  });
+
+function none(reason: string): WithoutLevels {
   return { kind: 'none', reason };
 }
 

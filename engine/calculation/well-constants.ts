@@ -1,18 +1,18 @@
 import { BOHR_IN_ANGSTROM, FORCE_CONSTANT_IN_NEWTON_PER_METRE } from '../constants';
-import type { CurveMinimum } from '../curves/minimum';
+import type { EnergyPoint } from '../curves/curve-tails';
+import type { LowestMinimum } from '../curves/minimum';
 import {
   expandWell,
   type SpectroscopicConstants,
   spectroscopicConstants,
   stencilDistances,
   stencilSpacing,
+  type WellExpansion,
 } from '../curves/spectroscopic-constants';
 import { type Diatomic, diatomicOf } from './diatomic';
 import type { LevelCurve } from './level-curve';
 import type { PreparedStudy } from './prepare-study';
 import type { DiatomicConstants, Estimate, WellConstants } from './result';
-
-type FoundMinimum = Extract<CurveMinimum, { readonly kind: 'found' }>;
 
 /** Of a converged energy the noise is this fraction of the threshold, which is on the change of the last step. */
 const NOISE_OF_THRESHOLD = 0.1;
@@ -23,69 +23,100 @@ const LARGEST_USABLE_UNCERTAINTY = 0.05;
 /** Rounding alone leaves so much, hartree. */
 const SMALLEST_NOISE = 1e-11;
 
+/** The Taylor series of a well with the points that it comes from. */
+export interface ExpandedWell {
+  readonly expansion: WellExpansion;
+  readonly stencil: readonly EnergyPoint[];
+}
+
+export interface DescribedWell {
+  readonly constants: WellConstants;
+  /** diatomic molecules, where the derivatives are good */
+  readonly expanded?: ExpandedWell;
+}
+
 /**
  * Force constant along the scanned bond and, of a diatomic molecule, Dunham's constants, for which further points of
  * the level are computed around its minimum.
  *
  * @param spacing - of the points that the minimum was found from, study unit
  */
-export function wellConstants(
+export function describeWell(
   { study }: PreparedStudy,
   curve: LevelCurve,
-  minimum: FoundMinimum,
+  minimum: LowestMinimum,
   spacing: number,
-): WellConstants {
+): DescribedWell {
   const toNewtonPerMetre = FORCE_CONSTANT_IN_NEWTON_PER_METRE / curve.bohrPerUnit ** 2;
-  const molecule = minimum.uncertainty <= LARGEST_USABLE_SHIFT ? diatomicOf(study) : undefined;
-  const diatomic = molecule && diatomicConstants(molecule, curve, minimum, spacing, study.convergence.energy);
+  const molecule = diatomicOf(study);
+  const expanded = molecule && expandedWell(curve, minimum, spacing, study.convergence.energy);
+  const analysis = expanded && spectroscopicConstants(expanded.expansion, molecule.reducedMass);
+  const isUsable =
+    analysis !== undefined &&
+    analysis.uncertainties.harmonicWavenumberPerCm <=
+      LARGEST_USABLE_UNCERTAINTY * analysis.constants.harmonicWavenumberPerCm;
   return {
-    equilibriumDistanceAngstrom: estimate(
-      minimum.x,
-      minimum.uncertainty,
-      curve.bohrPerUnit * BOHR_IN_ANGSTROM,
-    ),
-    forceConstantNewtonPerMetre:
-      diatomic?.forceConstantNewtonPerMetre ??
-      estimate(minimum.curvature, minimum.curvatureUncertainty, toNewtonPerMetre),
-    ...(diatomic && { diatomic: diatomic.constants }),
+    constants: {
+      equilibriumDistanceAngstrom: estimate(
+        minimum.x,
+        minimum.uncertainty,
+        curve.bohrPerUnit * BOHR_IN_ANGSTROM,
+      ),
+      forceConstantNewtonPerMetre: isUsable
+        ? estimate(
+            analysis.constants.forceConstantNewtonPerMetre,
+            analysis.uncertainties.forceConstantNewtonPerMetre,
+          )
+        : estimate(minimum.curvature, minimum.curvatureUncertainty, toNewtonPerMetre),
+      ...(isUsable && { diatomic: diatomicConstants(expanded!.expansion, molecule!) }),
+      ...(molecule && !isUsable && { withoutDiatomic: WITHOUT_DERIVATIVES }),
+    },
+    ...(isUsable && { expanded: expanded! }),
   };
 }
 
-function diatomicConstants(
-  molecule: Diatomic,
+const WITHOUT_DERIVATIVES =
+  'The energies around the minimum do not lie on one smooth curve: it has a kink, or they are too noisy for derivatives.';
+
+/** @returns undefined where the minimum is too uncertain, or a point does not converge */
+function expandedWell(
   curve: LevelCurve,
-  { x, expansion }: FoundMinimum,
+  { x, expansion, uncertainty }: LowestMinimum,
   spacing: number,
   threshold: number,
-): { readonly constants: DiatomicConstants; readonly forceConstantNewtonPerMetre: Estimate } | undefined {
+): ExpandedWell | undefined {
+  if (!(uncertainty <= LARGEST_USABLE_SHIFT)) return undefined;
   // a multiple of the spacing around the same centre: the points that are there already serve again
   const toBohr = curve.bohrPerUnit;
   const inBohr = expansion.coefficients.map((coefficient, k) => coefficient / toBohr ** k);
   const multiple = Math.max(1, Math.round(stencilSpacing(inBohr, x * toBohr) / (spacing * toBohr)));
-  const energies: number[] = [];
+  const stencil: EnergyPoint[] = [];
   for (const place of stencilDistances(expansion.centre, multiple * spacing)) {
     const energy = curve.energyAt(place);
     if (energy === undefined) return undefined;
-    energies.push(energy);
+    stencil.push({ distance: place * toBohr, energy });
   }
   const noise = Math.max(SMALLEST_NOISE, NOISE_OF_THRESHOLD * threshold);
+  const energies = stencil.map(({ energy }) => energy);
   const well = expandWell(expansion.centre * toBohr, multiple * spacing * toBohr, energies, noise);
-  if (!well) return undefined;
-  const { constants, uncertainties } = spectroscopicConstants(well, molecule.reducedMass);
-  const { harmonicWavenumberPerCm: wavenumber } = constants;
-  if (!(uncertainties.harmonicWavenumberPerCm <= LARGEST_USABLE_UNCERTAINTY * wavenumber)) return undefined;
+  return well && { expansion: well, stencil };
+}
+
+/** Leading terms of Dunham's series for one pair of masses. */
+export function diatomicConstants(
+  expansion: WellExpansion,
+  { reducedMass, reducedMassDalton }: Pick<Diatomic, 'reducedMass' | 'reducedMassDalton'>,
+): DiatomicConstants {
+  const { constants, uncertainties } = spectroscopicConstants(expansion, reducedMass);
   const known = (key: keyof SpectroscopicConstants) => estimate(constants[key], uncertainties[key]);
   return {
-    forceConstantNewtonPerMetre: known('forceConstantNewtonPerMetre'),
-    constants: {
-      masses: 'atomic',
-      reducedMassDalton: molecule.reducedMassDalton,
-      harmonicWavenumberPerCm: known('harmonicWavenumberPerCm'),
-      anharmonicityPerCm: known('anharmonicityPerCm'),
-      rotationalConstantPerCm: known('rotationalConstantPerCm'),
-      vibrationRotationCouplingPerCm: known('vibrationRotationCouplingPerCm'),
-      centrifugalDistortionPerCm: known('centrifugalDistortionPerCm'),
-    },
+    masses: 'atomic',
+    reducedMassDalton,
+    harmonicWavenumberPerCm: known('harmonicWavenumberPerCm'),
+    anharmonicityPerCm: known('anharmonicityPerCm'),
+    rotationalConstantPerCm: known('rotationalConstantPerCm'),
+    vibrationRotationCouplingPerCm: known('vibrationRotationCouplingPerCm'),
+    centrifugalDistortionPerCm: known('centrifugalDistortionPerCm'),
   };
 }
 

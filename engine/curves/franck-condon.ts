@@ -8,6 +8,8 @@ export interface FranckCondonOptions {
   readonly rotation?: number;
   /** most levels of each curve, from the lowest; default 60 */
   readonly mostLevels?: number;
+  /** most levels of the initial curve, where fewer are wanted */
+  readonly mostInitial?: number;
   /** wanted uncertainty of a factor; default 1e-6 */
   readonly tolerance?: number;
   /** outer end of the range, bohr; default 200 equilibrium distances */
@@ -60,13 +62,14 @@ export function franckCondonFactors(
 
   const solve = () => {
     const grid = radialGrid(scale, from, to, intervals);
-    const [rows, columns] = [initial, final].map((curve) =>
+    const statesOf = (curve: RadialCurve, most: number) =>
       boundStates(
         radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation),
         0,
-        mostLevels,
-      ),
-    );
+        most,
+      );
+    const rows = statesOf(initial, Math.min(mostLevels, options.mostInitial ?? mostLevels));
+    const columns = statesOf(final, mostLevels);
     const squares = (f: (distance: number) => number) =>
       rows.states.map((row) =>
         columns.states.map((column) => integrateProduct(grid, row.amplitude, column.amplitude, f) ** 2),

@@ -11,21 +11,30 @@ export interface CurvePoint {
   readonly energy: number | undefined;
 }
 
-export type CurveMinimum =
-  | {
-      readonly kind: 'found';
-      readonly x: number;
-      readonly energy: number;
-      readonly uncertainty: number;
-      /** second derivative there */
-      readonly curvature: number;
-      readonly curvatureUncertainty: number;
-      /** Taylor coefficients c_k about `centre`, the point computed nearest to the minimum */
-      readonly expansion: { readonly centre: number; readonly coefficients: readonly number[] };
-    }
-  | { readonly kind: 'atEdge'; readonly x: number }
-  | { readonly kind: 'several'; readonly near: readonly number[] }
-  | { readonly kind: 'none'; readonly reason: string };
+export interface LocalMinimum {
+  readonly x: number;
+  readonly energy: number;
+  readonly uncertainty: number;
+  /** second derivative there */
+  readonly curvature: number;
+  readonly curvatureUncertainty: number;
+  /** Taylor coefficients c_k about `centre`, the point computed nearest to the minimum */
+  readonly expansion: { readonly centre: number; readonly coefficients: readonly number[] };
+}
+
+/** The lowest minimum of a curve. */
+export interface LowestMinimum extends LocalMinimum {
+  readonly kind: 'found';
+  /** higher minima, from the lowest */
+  readonly others: readonly LocalMinimum[];
+}
+
+export interface WithoutMinimum {
+  readonly kind: 'none';
+  readonly reason: string;
+}
+
+export type CurveMinimum = LowestMinimum | { readonly kind: 'atEdge'; readonly x: number } | WithoutMinimum;
 
 /** Points of the local expansion: 7 give the minimum with an error of order h⁶, and 5 of them its error estimate. */
 const EXPANSION_POINTS = 7;
@@ -35,7 +44,7 @@ const CENTRINGS = 12;
 const SHALLOWEST_DIP = 1e-7;
 
 /**
- * The minimum of a curve from energies computed around it. The scan only says where to look; the result is the
+ * The lowest minimum of a curve, and those above it, from energies computed around each. The scan only says where to look; the result is the
  * zero of the derivative of a polynomial through freshly computed, closely spaced points.
  *
  * @param scan - computed points, any order
@@ -53,13 +62,24 @@ export function findCurveMinimum(
     .sort((a, b) => a.x - b.x);
   if (points.length < 3) return { kind: 'none', reason: 'Fewer than three points of this level converged.' };
   const dips = dipsOf(points);
-  if (dips.length > 1) return { kind: 'several', near: dips.map((k) => points[k].x) };
   if (dips.length === 0) {
     const lowest = points.reduce((a, b) => (b.energy < a.energy ? b : a));
     return { kind: 'atEdge', x: lowest.x };
   }
-  const [left, , right] = points.slice(dips[0] - 1, dips[0] + 2);
-  return refine(vertexOfParabola(points.slice(dips[0] - 1, dips[0] + 2)), left.x, right.x, energyAt, spacing);
+  const refined = dips.map((k) => {
+    const [left, middle, right] = points.slice(k - 1, k + 2);
+    const minimum = refine(vertexOfParabola([left, middle, right]), left.x, right.x, energyAt, spacing);
+    return { scanned: middle.energy, minimum };
+  });
+  const [lowest, ...others] = refined
+    .map(({ minimum }) => minimum)
+    .filter((minimum): minimum is LocalMinimum => !('reason' in minimum))
+    .sort((a, b) => a.energy - b.energy);
+  // a dip without a minimum, as at a jump of the curve, does no harm where it lies higher
+  for (const { scanned, minimum } of refined) {
+    if ('reason' in minimum && !(lowest && scanned > lowest.energy)) return minimum;
+  }
+  return { kind: 'found', ...lowest, others };
 }
 
 /** Places of interior minima: the curve falls to them and rises from them by more than noise. */
@@ -93,7 +113,7 @@ function refine(
   right: number,
   energyAt: (x: number) => number | undefined,
   spacing: number,
-): CurveMinimum {
+): LocalMinimum | WithoutMinimum {
   const half = (EXPANSION_POINTS - 1) / 2;
   let centre = guess;
   for (let centring = 0; centring < CENTRINGS; centring++) {
@@ -111,7 +131,6 @@ function refine(
     if (shift !== undefined && innerShift !== undefined && Math.abs(shift) <= spacing) {
       const curvature = curvatureOfExpansion(full, shift);
       return {
-        kind: 'found',
         x: centre + shift,
         energy: evaluateExpansion(full, shift),
         uncertainty: Math.abs(shift - innerShift),

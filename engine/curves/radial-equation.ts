@@ -36,6 +36,8 @@ const LARGEST_T = 0.4;
 const SWEEPS = 200;
 /** Energies closer than this fraction of the well are the same: below 1e-9 cm⁻¹. */
 const ENERGY_RESOLUTION = 1e-14;
+/** A guess is taken to be right to this fraction of the well: a coarser grid's levels are. */
+const GUESS_MARGIN = 1e-6;
 /** Corrections below this fraction of the well that no longer fall are rounding, and taken as the end. */
 const ENERGY_ROUNDING = 1e-11;
 
@@ -62,19 +64,35 @@ export function radialEquation(
 export interface BoundStates {
   /** number of levels below the energy */
   readonly count: number;
-  /** from the lowest; ends before a level that did not settle */
+  /** from the first that was asked for; ends before a level that did not settle */
   readonly states: readonly RadialState[];
   /** every level that was asked for settled */
   readonly isComplete: boolean;
 }
 
-/** @param most - most levels to solve for */
-export function boundStates(equation: RadialEquation, below: number, most: number): BoundStates {
+/**
+ * @param most - levels from this on are not solved for
+ * @param first - nor those before this
+ * @param guesses - energies of levels by quantum number, known from a coarser grid
+ */
+export function boundStates(
+  equation: RadialEquation,
+  below: number,
+  most: number,
+  first = 0,
+  guesses: readonly number[] = [],
+): BoundStates {
   const count = countLevelsBelow(equation, below);
   const wanted = Math.min(count, most);
+  const lowest = equation.potential.reduce((a, b) => Math.min(a, b));
+  const brackets = Array.from(
+    { length: wanted },
+    (): Bracket => ({ low: lowest, high: below, levelsBelowLow: 0, levelsBelowHigh: count }),
+  );
+  const sweeps = sweepsOf(equation);
   const states: RadialState[] = [];
-  for (let v = 0; v < wanted; v++) {
-    const state = solveLevel(equation, v, below);
+  for (let v = first; v < wanted; v++) {
+    const state = solveLevel(sweeps, v, brackets, below - lowest, guesses[v]);
     if (!state) return { count, states, isComplete: false };
     states.push(state);
   }
@@ -87,40 +105,77 @@ function countLevelsBelow(equation: RadialEquation, energy: number): number {
   return window ? sweepForward(equation, energy, window, new Float64Array(equation.potential.length)) : 0;
 }
 
+/** Energies that one level lies between, and how many levels lie below each. */
+interface Bracket {
+  low: number;
+  high: number;
+  levelsBelowLow: number;
+  levelsBelowHigh: number;
+}
+
+/** A sweep for one level tells something of all of them. */
+function narrow(brackets: readonly Bracket[], energy: number, count: number): void {
+  brackets.forEach((bracket, v) => {
+    if (count > v && energy < bracket.high) [bracket.high, bracket.levelsBelowHigh] = [energy, count];
+    if (count <= v && energy > bracket.low) [bracket.low, bracket.levelsBelowLow] = [energy, count];
+  });
+}
+
+/** An equation with room for its sweeps. */
+interface Sweeps {
+  readonly equation: RadialEquation;
+  readonly outward: Float64Array;
+  readonly inward: Float64Array;
+  readonly wave: Float64Array;
+}
+
+function sweepsOf(equation: RadialEquation): Sweeps {
+  const n = equation.potential.length;
+  return {
+    equation,
+    outward: new Float64Array(n),
+    inward: new Float64Array(n),
+    wave: new Float64Array(n),
+  };
+}
+
 /**
  * @param quantumNumber - v, counted from 0
- * @param below - an energy with more than v levels below it
+ * @param brackets - of all levels; narrowed
+ * @param well - depth of the well, hartree
  * @returns undefined if the level does not settle within the sweeps allowed
  */
-function solveLevel(equation: RadialEquation, quantumNumber: number, below: number): RadialState | undefined {
-  const n = equation.potential.length;
-  const outward = new Float64Array(n);
-  const inward = new Float64Array(n);
-  let low = equation.potential.reduce((a, b) => Math.min(a, b));
-  let high = below;
-  const well = high - low;
+function solveLevel(
+  sweeps: Sweeps,
+  quantumNumber: number,
+  brackets: readonly Bracket[],
+  well: number,
+  guess?: number,
+): RadialState | undefined {
+  const { equation, outward } = sweeps;
+  const bracket = brackets[quantumNumber];
+  const isInside = (energy: number) => energy > bracket.low && energy < bracket.high;
+  const trials = guess === undefined ? [] : [guess - GUESS_MARGIN * well, guess + GUESS_MARGIN * well];
   let lastCorrection = Number.POSITIVE_INFINITY;
-  let levelsBelowLow = 0;
-  let levelsBelowHigh = Number.POSITIVE_INFINITY;
-  let energy = (low + high) / 2;
+  let corrected: number | undefined;
   for (let sweep = 0; sweep < SWEEPS; sweep++) {
+    const trial = corrected ?? trials.shift();
+    const energy = trial !== undefined && isInside(trial) ? trial : (bracket.low + bracket.high) / 2;
     const window = windowOf(equation, energy);
     const count = window ? sweepForward(equation, energy, window, outward) : 0;
-    if (count > quantumNumber) [high, levelsBelowHigh] = [energy, count];
-    else [low, levelsBelowLow] = [energy, count];
-    const isolated = levelsBelowLow === quantumNumber && levelsBelowHigh === quantumNumber + 1;
-    let next = (low + high) / 2;
-    if (window && isolated) {
-      const joined = join(equation, energy, window, outward, inward);
-      const size = Math.abs(joined.correction);
-      const isRounding = size <= ENERGY_ROUNDING * well && size >= lastCorrection / 2;
-      if (size <= ENERGY_RESOLUTION * well || isRounding)
-        return { energy: energy + joined.correction, amplitude: joined.amplitude };
-      lastCorrection = size;
-      const corrected = energy + joined.correction;
-      if (corrected > low && corrected < high) next = corrected;
+    narrow(brackets, energy, count);
+    const isIsolated =
+      bracket.levelsBelowLow === quantumNumber && bracket.levelsBelowHigh === quantumNumber + 1;
+    corrected = undefined;
+    if (!window || !isIsolated) continue;
+    const correction = join(sweeps, energy, window);
+    const size = Math.abs(correction);
+    const isRounding = size <= ENERGY_ROUNDING * well && size >= lastCorrection / 2;
+    if (size <= ENERGY_RESOLUTION * well || isRounding) {
+      return { energy: energy + correction, amplitude: amplitudeOf(sweeps, energy, window) };
     }
-    energy = next;
+    lastCorrection = size;
+    corrected = energy + correction;
   }
   return undefined;
 }
@@ -129,7 +184,6 @@ type Window = readonly [first: number, last: number];
 
 /** The points between which the wave of this energy is not negligible; undefined: the energy is below the well. */
 function windowOf({ potential, weights }: RadialEquation, energy: number): Window | undefined {
-  const isAllowed = (w: number) => w < energy;
   const reach = (turning: number, direction: -1 | 1): number => {
     let action = 0;
     let i = turning;
@@ -142,8 +196,12 @@ function windowOf({ potential, weights }: RadialEquation, energy: number): Windo
     }
     return i;
   };
-  const inner = potential.findIndex(isAllowed);
-  return inner < 0 ? undefined : [reach(inner, -1), reach(potential.findLastIndex(isAllowed), 1)];
+  let inner = 0;
+  while (inner < potential.length && !(potential[inner] < energy)) inner++;
+  if (inner === potential.length) return undefined;
+  let outer = potential.length - 1;
+  while (!(potential[outer] < energy)) outer--;
+  return [reach(inner, -1), reach(outer, 1)];
 }
 
 /**
@@ -176,12 +234,10 @@ function sweepForward(
  * γ·F_m²/Σ12·w_i·φ_i², γ being the mismatch at the joint m.
  */
 function join(
-  { grid, potential, weights }: RadialEquation,
+  { equation: { potential, weights }, outward, inward, wave }: Sweeps,
   energy: number,
   [first, last]: Window,
-  outward: Float64Array,
-  inward: Float64Array,
-): { correction: number; amplitude: Float64Array } {
+): number {
   let carried = 1;
   let joint = first;
   let mismatch = Number.POSITIVE_INFINITY;
@@ -193,22 +249,33 @@ function join(
     const gap = outward[i] + inward[i] - q;
     if (Math.abs(gap) < Math.abs(mismatch)) [joint, mismatch] = [i, gap];
   }
-  const amplitude = new Float64Array(potential.length);
-  amplitude[joint] = 1;
-  for (let i = joint - 1; i >= first; i--) amplitude[i] = amplitude[i + 1] / (1 + outward[i]);
-  for (let i = joint + 1; i <= last; i++) amplitude[i] = amplitude[i - 1] / (1 + inward[i]);
+  wave[joint] = 1;
+  for (let i = joint - 1; i >= first; i--) wave[i] = wave[i + 1] / (1 + outward[i]);
+  for (let i = joint + 1; i <= last; i++) wave[i] = wave[i - 1] / (1 + inward[i]);
   let denominator = 0;
+  for (let i = first; i <= last; i++) {
+    const phi = wave[i] / (1 - weights[i] * (potential[i] - energy));
+    denominator += 12 * weights[i] * phi * phi;
+  }
+  return mismatch / denominator;
+}
+
+/** u of the wave that was joined last, normalised. */
+function amplitudeOf(
+  { equation: { grid, potential, weights }, wave }: Sweeps,
+  energy: number,
+  [first, last]: Window,
+): Float64Array {
+  const amplitude = new Float64Array(potential.length);
   let norm = 0;
   for (let i = first; i <= last; i++) {
-    const phi = amplitude[i] / (1 - weights[i] * (potential[i] - energy));
-    denominator += 12 * weights[i] * phi * phi;
     // u² dr = (dr/dy)²φ² dy
-    amplitude[i] = Math.sqrt(grid.stretch[i]) * phi;
+    amplitude[i] = (Math.sqrt(grid.stretch[i]) * wave[i]) / (1 - weights[i] * (potential[i] - energy));
     norm += amplitude[i] ** 2 * grid.stretch[i] * grid.step;
   }
   const scale = Math.sign(amplitude[first]) / Math.sqrt(norm);
   for (let i = first; i <= last; i++) amplitude[i] *= scale;
-  return { correction: mismatch / denominator, amplitude };
+  return amplitude;
 }
 
 /**

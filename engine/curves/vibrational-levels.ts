@@ -1,7 +1,7 @@
 import { HARTREE_IN_WAVENUMBERS } from '../constants';
 import type { Termination } from '../termination';
+import { barrierWidth, type CentrifugalBarrier, centrifugalBarrier } from './centrifugal-barrier';
 import {
-  type BoundStates,
   boundStates,
   integrateProduct,
   type RadialEquation,
@@ -42,12 +42,22 @@ export interface VibrationalLevel {
   readonly extrapolatedPerCm: number;
 }
 
+/** A level above the limit that a barrier holds back: it decays, so that its energy is not sharp. */
+export interface QuasiBoundLevel extends VibrationalLevel {
+  /** semiclassical, see `barrierWidth` */
+  readonly widthPerCm: number;
+}
+
 export interface VibrationalLevels {
   /** electron masses */
   readonly reducedMass: number;
   readonly rotation: number;
-  /** from the lowest; those below the limit only (levels held by a centrifugal barrier above it are left out) */
+  /** from the lowest; those below the limit only */
   readonly levels: readonly VibrationalLevel[];
+  /** above the limit; without rotation none are sought */
+  readonly quasiBound: readonly QuasiBoundLevel[];
+  /** top of the centrifugal barrier, hartree, with the curve's zero; undefined where there is none */
+  readonly barrier: number | undefined;
   /** number of bound levels, also where fewer were asked for */
   readonly boundLevels: number;
   /** lowest level above the curve's minimum (the curve without rotation), cm⁻¹; undefined without a level */
@@ -56,7 +66,7 @@ export interface VibrationalLevels {
   readonly dissociationPerCm: number | undefined;
   /** how the refinement of the grid ended */
   readonly termination: Termination;
-  /** every level listed is converged in grid and range */
+  /** every level listed is converged in grid and range (of those behind a barrier: but for their width) */
   readonly converged: boolean;
   /** quantum numbers of levels of which more than the tolerance rests on extrapolation of the curve */
   readonly beyondComputedRange: readonly number[];
@@ -73,7 +83,8 @@ const HALVINGS = 6;
 const MOST_INTERVALS = 130_000;
 
 /**
- * All bound levels of a diatomic molecule on a curve. Isotopologues differ by the mass alone.
+ * All bound levels of a diatomic molecule on a curve, and with rotation also those that its barrier holds. Isotopologues
+ * differ by the mass alone.
  *
  * Each grid is half as wide as the one before; the O(h⁴) error is removed by Richardson's extrapolation from two
  * grids, and the change between two extrapolations is the uncertainty.
@@ -88,15 +99,25 @@ export function vibrationalLevels(
 ): VibrationalLevels {
   const { rotation = 0, tolerancePerCm = LEVEL_TOLERANCE_PER_CM, mostLevels = MOST_LEVELS } = options;
   const range = radialRange(curve, mass, options.outermost);
-  const solve = (intervals: number): GridSolution => {
+  const solve = (intervals: number, coarser?: GridSolution): GridSolution => {
+    const guesses = coarser?.states.map(({ energy }) => energy);
     const grid = radialGrid(range.centre, range.from, range.to, intervals);
     // counted from the limit, so that total energies of hundreds of hartree do not eat digits
     const equation = radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation);
-    const bound = boundStates(equation, 0, mostLevels);
-    const rotationalConstants = bound.states.map(({ amplitude }) =>
-      integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
-    );
-    return { ...bound, equation, rotationalConstants };
+    const bound = boundStates(equation, 0, mostLevels, 0, guesses);
+    const barrier = rotation > 0 ? centrifugalBarrier(equation, range.centre) : undefined;
+    const held = barrier && boundStates(barrier.closed, barrier.top, mostLevels, bound.count, guesses);
+    const states = [...bound.states, ...(held?.states ?? [])];
+    return {
+      boundCount: bound.count,
+      states,
+      isComplete: bound.isComplete && (held?.isComplete ?? true),
+      equation,
+      barrier,
+      rotationalConstants: states.map(({ amplitude }) =>
+        integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
+      ),
+    };
   };
   const tolerance = tolerancePerCm / HARTREE_IN_WAVENUMBERS;
 
@@ -108,7 +129,7 @@ export function vibrationalLevels(
   for (let halving = 0; halving < HALVINGS; halving++) {
     intervals *= 2;
     if (halving >= 2 && intervals > MOST_INTERVALS) break;
-    const finer = solve(intervals);
+    const finer = solve(intervals, grid);
     const next = extrapolate(grid, finer);
     change = next.map(({ energy }, v) =>
       Math.abs(energy - (extrapolated[v]?.energy ?? Number.POSITIVE_INFINITY)),
@@ -123,9 +144,10 @@ export function vibrationalLevels(
       break;
     }
   }
-  const levels = extrapolated.map(({ energy, rotationalConstant }, v): VibrationalLevel => {
+  const all = extrapolated.map(({ energy, rotationalConstant }, v): VibrationalLevel => {
     const state = grid.states[v];
-    const uncertainty = change[v] + endError(grid.equation, state, mass);
+    const equation = v < grid.boundCount ? grid.equation : grid.barrier!.closed;
+    const uncertainty = change[v] + endError(equation, state, mass);
     return {
       quantumNumber: v,
       energy: curve.limit + energy,
@@ -136,23 +158,37 @@ export function vibrationalLevels(
       extrapolatedPerCm: extrapolatedShare(curve, grid.equation.grid, state) * HARTREE_IN_WAVENUMBERS,
     };
   });
+  const levels = all.slice(0, grid.boundCount);
+  const { barrier } = grid;
   return {
     reducedMass: mass,
     rotation,
     levels,
-    boundLevels: grid.count,
+    quasiBound: all.slice(grid.boundCount).map((level) => ({
+      ...level,
+      widthPerCm:
+        barrierWidth(grid.equation, grid.states[level.quantumNumber], mass) * HARTREE_IN_WAVENUMBERS,
+    })),
+    barrier: barrier && curve.limit + barrier.top,
+    boundLevels: grid.boundCount,
     zeroPointPerCm: levels[0] && (levels[0].energy - range.lowest) * HARTREE_IN_WAVENUMBERS,
     dissociationPerCm: levels[0]?.bindingPerCm,
     termination,
-    converged: termination.kind === 'converged' && levels.every((level) => level.converged),
+    converged: termination.kind === 'converged' && all.every((level) => level.converged),
     beyondComputedRange: levels
       .filter((level) => level.extrapolatedPerCm > tolerancePerCm)
       .map((level) => level.quantumNumber),
   };
 }
 
-interface GridSolution extends BoundStates {
+interface GridSolution {
   readonly equation: RadialEquation;
+  readonly barrier: CentrifugalBarrier | undefined;
+  /** number of bound levels, also where fewer were asked for */
+  readonly boundCount: number;
+  /** bound, then those behind the barrier: the index is the vibrational quantum number */
+  readonly states: readonly RadialState[];
+  readonly isComplete: boolean;
   readonly rotationalConstants: readonly number[];
 }
 

@@ -1,10 +1,10 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import { computePoint, HARTREE_IN_WAVENUMBERS, type PreparedStudy } from '#engine';
 import { diatomicOf } from '../../../engine/calculation/diatomic';
-import { type LevelCurve, levelCurve } from '../../../engine/calculation/level-curve';
+import { type LevelCurve, levelPoints, lowestCurve } from '../../../engine/calculation/level-curve';
 import type { Vibration } from '../../../engine/calculation/result';
-import { vibrationOf } from '../../../engine/calculation/vibration';
-import { wellConstants } from '../../../engine/calculation/well-constants';
+import { solvableCurve, vibrationOn } from '../../../engine/calculation/vibration';
+import { describeWell } from '../../../engine/calculation/well-constants';
 import { findCurveMinimum } from '../../../engine/curves/minimum';
 import { compute, correlated, prepare, study } from '../../support/studies';
 
@@ -54,11 +54,13 @@ beforeAll(() => {
   const prepared = hydrogen([1, 1]);
   const computed = prepared.coordinates.map((coordinate) => computePoint(prepared, coordinate));
   const carries = computed.map(({ carry }) => carry);
-  curve = levelCurve(
-    prepared,
-    'FCI',
-    computed.map(({ result }) => result),
-    carries,
+  curve = lowestCurve(
+    levelPoints(
+      prepared,
+      'FCI',
+      computed.map(({ result }) => result),
+      carries,
+    ),
   );
   const found = findCurveMinimum(curve.scan, curve.energyAt, SPACING);
   if (found.kind !== 'found') throw new Error(found.kind);
@@ -73,13 +75,13 @@ beforeAll(() => {
 /** The curve is the same for all isotopologues: nothing is computed again. */
 function levelsOf(isotopes: Isotopes): Extract<Vibration, { kind: 'found' }> {
   const molecule = diatomicOf(hydrogen(isotopes).study)!;
-  const vibration = vibrationOf(molecule, curve, minimum.energy, limit, 0);
+  const vibration = vibrationOn(solvableCurve(curve, minimum.energy, limit, 0), molecule);
   if (vibration.kind !== 'found') throw new Error(vibration.reason);
   return vibration;
 }
 
 const constantsOf = (isotopes: Isotopes) =>
-  wellConstants(hydrogen(isotopes), curve, minimum, SPACING).diatomic!;
+  describeWell(hydrogen(isotopes), curve, minimum, SPACING).constants.diatomic!;
 
 describe('levels and constants of H2 in s and p functions', () => {
   it('published: equilibrium distance', () => {

@@ -49,10 +49,34 @@ describe('findCurveMinimum', () => {
     ).toEqual({ kind: 'atEdge', x: 1 });
   });
 
-  it('identity: a double well has several minima, and none is picked', () => {
-    const f = (x: number) => (x * x - 1) ** 2;
-    const minimum = findCurveMinimum(sample(f, -2, 2, 17), f, 0.04);
-    expect(minimum).toEqual({ kind: 'several', near: [-1, 1] });
+  it('identity: of the minima of a tilted double well the lowest is taken, and the other listed', () => {
+    // zeros of 4x(x² − 1) + t: Newton from both wells
+    const tilt = 0.1;
+    const f = (x: number) => (x * x - 1) ** 2 + tilt * x;
+    const rootNear = (start: number) =>
+      Array.from({ length: 30 }).reduce<number>(
+        (x) => x - (4 * x * (x * x - 1) + tilt) / (12 * x * x - 4),
+        start,
+      );
+    const minimum = findCurveMinimum(sample(f, -2, 2, 17), f, 0.01);
+    if (minimum.kind !== 'found') throw new Error(minimum.kind);
+    expect(minimum.x).toBeCloseTo(rootNear(-1), 8);
+    expect(minimum.others).toHaveLength(1);
+    expect(minimum.others[0]!.x).toBeCloseTo(rootNear(1), 8);
+    expect(minimum.others[0]!.energy).toBeCloseTo(f(rootNear(1)), 10);
+  });
+
+  it('identity: a dip that does not settle is left out where it lies higher, and ends the search where it is lowest', () => {
+    const well = morse(0.1744, 1.02764, 1.40201);
+    const twoWells = (shift: number) => (x: number) => Math.min(well(x), well(x - 4) + shift);
+    const found = (shift: number) =>
+      findCurveMinimum(
+        sample(twoWells(shift), 0.5, 9, 35),
+        (x) => (x > 4 ? undefined : twoWells(shift)(x)),
+        0.04,
+      );
+    expect(found(0.05)).toMatchObject({ kind: 'found', others: [] });
+    expect(found(-0.05).kind).toBe('none');
   });
 
   it('identity: convergence noise in a flat tail is not taken for a minimum', () => {

@@ -1,0 +1,225 @@
+import { HARTREE_IN_WAVENUMBERS } from '../constants';
+import { franckCondonFactors } from '../curves/franck-condon';
+import { diatomicOf } from './diatomic';
+import type { ExcitedState, FranckCondon, TransitionMoment, VerticalExcitation } from './further-findings';
+import { interpolatedWell } from './interpolated-well';
+import { curveThrough, type LevelCurve, type LevelPoints } from './level-curve';
+import type { PreparedStudy } from './prepare-study';
+import { readWell, type Well } from './read-well';
+import type { Estimate } from './result';
+import { type CurveOfState, curvesOfStates, statesOf } from './state-curves';
+import { MOST_SECONDS_A_POINT, type SolvableCurve, vibrationOn } from './vibration';
+
+/** States closer than this, hartree, at every point are partners of one another. */
+const DEGENERATE = 1e-7;
+/** Further points of a level are computed for its states as long as they take no more than this together, seconds. */
+const MOST_SECONDS = 120;
+/** Levels of the lowest state that factors are listed for, and of the other state. */
+const INITIAL_LEVELS = 6;
+const FINAL_LEVELS = 80;
+
+/** The curve that excitations are counted from, and its well if it has one. */
+export interface LowestState {
+  readonly curve: LevelCurve;
+  readonly well: Well | undefined;
+}
+
+/** CIS counts from RHF, whose energies its excitations imply. */
+export function lowestStateOfSingles(
+  prepared: PreparedStudy,
+  points: LevelPoints,
+  secondsPerPoint: number,
+): LowestState {
+  const curve = curveThrough(points, (index) => {
+    const state = statesOf(points.all()[index], points.level)[0];
+    return state && state.energy - state.excitation;
+  });
+  return { curve, well: readWell(prepared, curve, undefined, secondsPerPoint).well };
+}
+
+/**
+ * What is read off the curves of the states above the lowest, each around its own minimum from points computed there
+ * (all states of the level come with each), or interpolated where points are dear.
+ */
+export function excitedStates(
+  prepared: PreparedStudy,
+  points: LevelPoints,
+  lowest: LowestState,
+  secondsPerPoint: number,
+): readonly ExcitedState[] {
+  const before = points.all().length;
+  const isAffordable = () =>
+    secondsPerPoint <= MOST_SECONDS_A_POINT &&
+    (points.all().length - before) * secondsPerPoint <= MOST_SECONDS;
+  const curves = curvesOfStates(points);
+  const ground = lowestOf(curves, points, lowest);
+  return withoutPartners(curves.filter((state) => state !== ground)).map((state) =>
+    readState(prepared, points, { lowest, ground, state }, isAffordable() ? secondsPerPoint : undefined),
+  );
+}
+
+/** The curve that the lowest energy of all belongs to; CIS has none. */
+function lowestOf(
+  curves: readonly CurveOfState[],
+  points: LevelPoints,
+  { curve, well }: LowestState,
+): CurveOfState | undefined {
+  if (points.all().every(({ levels }) => levels[points.level]?.kind !== 'correlated')) return undefined;
+  const known = curve.scan.filter(({ energy }) => energy !== undefined);
+  const bottom = known.reduce<(typeof known)[number] | undefined>((best, place) => {
+    const isBetter = well
+      ? Math.abs(place.x - well.found.x) < Math.abs((best?.x ?? Infinity) - well.found.x)
+      : place.energy! < (best?.energy ?? Infinity);
+    return isBetter ? place : best;
+  }, undefined);
+  const index = bottom ? curve.scan.indexOf(bottom) : -1;
+  return curves.find(({ followed }) => followed.states[index] === 0);
+}
+
+/** Of states that are equal at every point, the first. */
+function withoutPartners(curves: readonly CurveOfState[]): readonly CurveOfState[] {
+  const areEqual = (one: CurveOfState, other: CurveOfState) =>
+    one.followed.spin === other.followed.spin &&
+    one.curve.scan.every(({ energy }, k) => {
+      const beside = other.curve.scan[k].energy;
+      return energy === undefined ? beside === undefined : Math.abs(energy - beside!) < DEGENERATE;
+    });
+  return curves.filter((state, k) => !curves.slice(0, k).some((earlier) => areEqual(earlier, state)));
+}
+
+interface Pair {
+  readonly lowest: LowestState;
+  /** the same as a state of the level; undefined for CIS */
+  readonly ground: CurveOfState | undefined;
+  readonly state: CurveOfState;
+}
+
+/** @param secondsPerPoint - undefined: no more points may be computed */
+function readState(
+  prepared: PreparedStudy,
+  points: LevelPoints,
+  pair: Pair,
+  secondsPerPoint: number | undefined,
+): ExcitedState {
+  const { lowest, state } = pair;
+  const { minimum, well, energyUncertainty } =
+    secondsPerPoint === undefined
+      ? interpolatedWell(state.curve)
+      : { ...readWell(prepared, state.curve, undefined, secondsPerPoint), energyUncertainty: 0 };
+  const threshold = 2 * prepared.study.convergence.energy;
+  const adiabatic: Estimate | undefined = well &&
+    lowest.well && {
+      value: well.found.energy - lowest.well.found.energy,
+      uncertainty: threshold + energyUncertainty,
+    };
+  const vertical = verticalExcitation(points, pair, threshold);
+  return {
+    curve: state.index,
+    minimum,
+    ...(well && { minimumFrom: secondsPerPoint === undefined ? 'interpolated' : 'computed' }),
+    ...(well?.constants && { constants: well.constants }),
+    ...(vertical && { vertical }),
+    ...(adiabatic && { adiabatic }),
+    transitionMoments: transitionMoments(points, pair),
+    ...vibrationOfBoth(prepared, lowest.well?.solvable, well?.solvable, adiabatic),
+  };
+}
+
+function verticalExcitation(
+  points: LevelPoints,
+  { lowest, ground, state }: Pair,
+  threshold: number,
+): VerticalExcitation | undefined {
+  if (!lowest.well) return undefined;
+  const { x, uncertainty } = lowest.well.found;
+  const above = state.curve.energyAt(x);
+  const below = lowest.curve.energyAt(x);
+  if (above === undefined || below === undefined) return undefined;
+  const index = points.all().findIndex(({ coordinate }) => coordinate === x);
+  const moment = momentAt(index, ground, state);
+  return {
+    coordinate: x,
+    energy: { value: above - below, uncertainty: threshold + uncertainty * slopeAt(state.curve, x) },
+    ...(moment && { oscillatorStrength: moment.oscillatorStrength, transitionDipole: moment.dipole }),
+  };
+}
+
+/** Size of the slope, from the points next to x on both sides. */
+function slopeAt(curve: LevelCurve, x: number): number {
+  const points = curve.points();
+  const left = points.findLast((point) => point.x < x) ?? points[0];
+  const right = points.find((point) => point.x > x) ?? points[points.length - 1];
+  return left.x === right.x ? 0 : Math.abs((right.energy - left.energy) / (right.x - left.x));
+}
+
+function transitionMoments(points: LevelPoints, { ground, state }: Pair): readonly TransitionMoment[] {
+  return points
+    .all()
+    .slice(0, points.scanned)
+    .flatMap(({ coordinate }, index) => {
+      const moment = momentAt(index, ground, state);
+      return moment && coordinate !== null ? [{ coordinate, ...moment }] : [];
+    });
+}
+
+/** Moments of a point are from its lowest state: that must be the one that excitations are counted from. */
+function momentAt(
+  index: number,
+  ground: CurveOfState | undefined,
+  state: CurveOfState,
+): Omit<TransitionMoment, 'coordinate'> | undefined {
+  if (ground && ground.followed.spin !== state.followed.spin) return undefined;
+  if (!ground && state.followed.spin !== 'singlet') return undefined;
+  const excited = state.stateAt(index);
+  const from = ground?.stateAt(index);
+  // excitations are counted from the lowest state of the point
+  if (!excited?.transitionDipole || (ground && from?.excitation !== 0)) return undefined;
+  return {
+    dipole: Math.hypot(...excited.transitionDipole),
+    oscillatorStrength: excited.oscillatorStrength ?? 0,
+  };
+}
+
+/** Levels of the upper curve and what they have to do with those of the lower one. */
+function vibrationOfBoth(
+  { study }: PreparedStudy,
+  lower: Well['solvable'],
+  upper: Well['solvable'],
+  adiabatic: Estimate | undefined,
+): Pick<ExcitedState, 'vibration' | 'zeroPointToZeroPoint' | 'franckCondon'> {
+  const molecule = diatomicOf(study);
+  if (!molecule || !upper) return {};
+  const vibration = vibrationOn(upper, molecule);
+  if (vibration.kind === 'none' || upper.kind === 'none') return { vibration };
+  const below = lower && vibrationOn(lower, molecule);
+  if (below?.kind !== 'found' || lower?.kind !== 'found' || !adiabatic) return { vibration };
+  const change = (vibration.zeroPointPerCm - below.zeroPointPerCm) / HARTREE_IN_WAVENUMBERS;
+  const error = (vibration.interpolationErrorPerCm + below.interpolationErrorPerCm) / HARTREE_IN_WAVENUMBERS;
+  return {
+    vibration,
+    zeroPointToZeroPoint: {
+      value: adiabatic.value + change,
+      uncertainty: adiabatic.uncertainty + error,
+    },
+    franckCondon: franckCondon(lower, upper, molecule.reducedMass, below.levels.length),
+  };
+}
+
+function franckCondon(
+  lower: SolvableCurve,
+  upper: SolvableCurve,
+  mass: number,
+  lowerLevels: number,
+): FranckCondon {
+  const { factors, sums, uncertainty, termination } = franckCondonFactors(lower.curve, upper.curve, mass, {
+    mostLevels: FINAL_LEVELS,
+    mostInitial: Math.min(INITIAL_LEVELS, lowerLevels),
+  });
+  return {
+    factors,
+    sums,
+    boundLevels: factors[0]?.length ?? 0,
+    uncertainty,
+    converged: termination.kind === 'converged',
+  };
+}

@@ -1,0 +1,51 @@
+import { type FollowedState, followStates } from './follow-states';
+import { curveThrough, type LevelCurve, type LevelPoints } from './level-curve';
+import type { CorrelatedState, PointResult, SinglesState } from './result';
+
+type State = CorrelatedState | SinglesState;
+
+/** The curve of one state of a level, with the state itself. */
+export interface CurveOfState {
+  /** index among the curves of the level in the results */
+  readonly index: number;
+  readonly followed: FollowedState;
+  readonly curve: LevelCurve;
+  /** the state at a point of `LevelPoints.all()`; undefined where it is not among those computed */
+  stateAt(index: number): State | undefined;
+}
+
+/** The curves of a level's states along the study's points; points computed later join them. */
+export function curvesOfStates(points: LevelPoints): readonly CurveOfState[] {
+  const { level, scanned } = points;
+  const scan = points.all().slice(0, scanned);
+  let known: readonly FollowedState[] = [];
+  let knownPoints = -1;
+  const followedNow = () => {
+    if (points.all().length !== knownPoints) {
+      known = followStates(points.all(), level);
+      knownPoints = points.all().length;
+    }
+    return known;
+  };
+  return followStates(scan, level).map((followed, index) => {
+    const stateAt = (point: number) => {
+      const now = point < scanned ? followed : followedNow().find((other) => agree(followed, other, scanned));
+      const place = now?.states[point];
+      return place == null ? undefined : statesOf(points.all()[point], level)[place];
+    };
+    const curve = curveThrough(points, (point) => stateAt(point)?.energy);
+    return { index, followed, curve, stateAt };
+  });
+}
+
+/** Whether both are the same curve at the points of the scan. */
+function agree(one: FollowedState, other: FollowedState, scanned: number): boolean {
+  return one.states.slice(0, scanned).every((place, point) => place === other.states[point]);
+}
+
+/** States of a level that can be trusted. */
+export function statesOf({ levels }: PointResult, level: string): readonly State[] {
+  const result = levels[level];
+  const hasStates = result?.kind === 'correlated' || result?.kind === 'singles';
+  return hasStates && result.converged ? result.states : [];
+}
