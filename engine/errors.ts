@@ -37,6 +37,8 @@ export interface EngineErrorDetails {
   'study.states': { readonly states: number };
   'study.convergence': { readonly tolerance: number };
   'study.referenceWeight': { readonly weight: number };
+  'study.notDiatomic': Record<string, never>;
+  'study.isotopologue': { readonly count: number };
   'study.tooLarge': { readonly bytes: number; readonly limit: number };
 }
 

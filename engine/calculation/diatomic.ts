@@ -1,7 +1,7 @@
 import { DALTON_IN_ELECTRON_MASSES } from '../constants';
 import { type MeasuredState, measuredStates } from '../curves/measured-constants';
 import { type MassOfAtom, reducedMass } from '../curves/reduced-mass';
-import type { CompleteStudy } from './study';
+import type { CompleteStudy, Study } from './study';
 
 /** Two nuclei whose distance is scanned. */
 export interface Diatomic {
@@ -12,7 +12,7 @@ export interface Diatomic {
 }
 
 /** The two atoms of a study that has no others, not even ghosts; else undefined. */
-export function diatomicOf({ molecule, scan }: CompleteStudy): Diatomic | undefined {
+export function diatomicOf({ molecule, scan }: Pick<Study, 'molecule' | 'scan'>): Diatomic | undefined {
   const atoms = atomPair(molecule);
   if (!atoms || !scan || !('bonds' in scan.coordinate)) return undefined;
   const mass = reducedMass(...atoms, 'atomic');
@@ -35,7 +35,7 @@ export function measuredFor({ molecule }: CompleteStudy): readonly MeasuredState
   return atoms && measuredStates(...atoms, molecule.charge);
 }
 
-function atomPair({ atoms }: CompleteStudy['molecule']): readonly [MassOfAtom, MassOfAtom] | undefined {
+function atomPair({ atoms }: Study['molecule']): readonly [MassOfAtom, MassOfAtom] | undefined {
   if (atoms.length !== 2 || atoms.some(({ ghost }) => ghost)) return undefined;
   const [first, second] = atoms.map(
     ({ element, isotope }): MassOfAtom => ({ element, ...(isotope !== undefined && { isotope }) }),

@@ -9,6 +9,7 @@ import type { Molecule } from '../molecule/molecule';
 import { checkScan, geometryAt } from '../molecule/scan-coordinate';
 import { scanValues } from '../molecule/scan-values';
 import { activeWindow, type OrbitalWindow } from './active-space';
+import { rovibrationalErrors } from './check-isotopologues';
 import { explainStudy } from './explain-study';
 import { frozenOrbitalCount } from './frozen-core';
 import { findLevel, type Level } from './levels';
@@ -77,7 +78,10 @@ export function prepareStudy(study: Study, options: PrepareOptions = {}): Prepar
   const { bases = [], ...findings } = study.findings ?? {};
   const own = prepare(study, options);
   const further = bases.map((basis) => prepare({ ...study, basis, findings }, options));
-  const errors = [...(own.ok ? [] : own.errors), ...furtherBasisErrors(bases, own, further)];
+  const errors = [
+    ...(own.ok ? rovibrationalErrors(own.prepared.study) : own.errors),
+    ...furtherBasisErrors(bases, own, further),
+  ];
   if (!own.ok || errors.length > 0) return { ok: false, errors };
   const furtherBases = further.flatMap((inBasis) => (inBasis.ok ? [inBasis.prepared] : []));
   return { ok: true, prepared: { ...own.prepared, furtherBases } };
