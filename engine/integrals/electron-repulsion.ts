@@ -84,8 +84,17 @@ function scatterInto(
 ): void {
   let at = 0;
   for (let i = 0; i < braPlaces.length; i++) {
+    const bra = braPlaces[i];
+    const row = triangle(bra);
     for (let j = 0; j < ketPlaces.length; j++) {
-      tensor[packedPair(braPlaces[i], ketPlaces[j])] = block[at++];
+      const ket = ketPlaces[j];
+      tensor[ket <= bra ? row + ket : triangle(ket) + bra] = block[at++];
     }
   }
+}
+
+/** Where a row of a packed lower triangle begins. */
+function triangle(row: number): number {
+  // as integers: no array holds 2³¹ numbers
+  return Math.imul(row, row + 1) >>> 1;
 }

@@ -4,6 +4,7 @@ import { BOYS_TABLE, INVERSE_ODD } from '../special-functions/boys-function';
 import type { Quartet } from './coulomb-quartets';
 import { HERMITE_RECURSION } from './hermite-coulomb';
 import { hermiteStart } from './hermite-index';
+import type { PairLayout } from './pair-layout';
 import type { ShellPair } from './shell-pair';
 
 /** Pairs of bra primitives whose contracted kets the kernel holds at once, and vectors of Hermite integrals. */
@@ -11,6 +12,8 @@ const BRA_BATCH = 6;
 const HERMITE_BATCH = 1024;
 /** three coordinates, and derivatives of order 0 … 16 */
 const POINT_VECTORS = 20;
+/** of the record of a pair */
+const PAIR_FIELDS = 17;
 
 /** Memory of this thread for integrals; the tables stand at its bottom and stay. */
 interface IntegralMemory {
@@ -79,7 +82,8 @@ function takeWorkspace(tables: IntegralMemory, pairs: readonly ShellPair[]) {
   // sums over both lanes, then those of the joined lanes in the same place
   const ketSums = Math.max(2 * BRA_BATCH * factors * hermiteCount, columns * columns);
   const block = memory.float64(products * products);
-  const workspace = putIntegers(memory, [
+  const workspace = memory.int32(11);
+  workspace.view.set([
     tables.boysTable,
     tables.inverseOdd,
     tables.recursion,
@@ -92,63 +96,85 @@ function takeWorkspace(tables: IntegralMemory, pairs: readonly ShellPair[]) {
     memory.float64(columns * products).address,
     block.address,
   ]);
-  return { workspace, block: block.view };
+  return { workspace: workspace.address, block: block.view };
 }
 
 function writePair(memory: KernelMemory, pair: ShellPair): number {
   const { layout, primitiveCount } = pair;
   const factorCount = layout.factorDegrees.length;
   // the second lane of an odd last primitive repeats it with factors 0
-  const lanes = Math.ceil(primitiveCount / 2);
-  const inLanes = (values: Float64Array) => {
-    const { address, view } = memory.float64(2 * lanes);
-    view.set(values);
-    view[2 * lanes - 1] = values[primitiveCount - 1];
-    return address;
-  };
-  const braFactors = memory.float64(2 * lanes * factorCount);
-  const ketFactors = memory.float64(2 * primitiveCount * factorCount);
-  braFactors.view.fill(0);
+  const laneCount = 2 * Math.ceil(primitiveCount / 2);
+  const perPrimitive = [pair.exponents, pair.centreX, pair.centreY, pair.centreZ, pair.bounds];
+  const factorLength = 2 * primitiveCount * factorCount;
+  const { address, view } = memory.float64(
+    (perPrimitive.length + factorCount) * laneCount + factorLength + pair.values.length,
+  );
+  let at = 0;
+  for (const values of perPrimitive) {
+    view.set(values, at);
+    at += laneCount;
+    view[at - 1] = values[primitiveCount - 1];
+  }
+  const braFactors = at;
+  const ketFactors = at + laneCount * factorCount;
+  view.fill(0, braFactors, ketFactors);
   for (let i = 0; i < primitiveCount; i++) {
     for (let factor = 0; factor < factorCount; factor++) {
       const place = i * factorCount + factor;
-      braFactors.view[2 * ((i >> 1) * factorCount + factor) + (i & 1)] = pair.factors[place];
-      ketFactors.view[2 * place] = pair.signedFactors[place];
-      ketFactors.view[2 * place + 1] = pair.signedFactors[place];
+      view[braFactors + 2 * ((i >> 1) * factorCount + factor) + (i & 1)] = pair.factors[place];
+      view[ketFactors + 2 * place] = pair.signedFactors[place];
+      view[ketFactors + 2 * place + 1] = pair.signedFactors[place];
     }
   }
-  return putIntegers(memory, [
+  const values = ketFactors + factorLength;
+  view.set(pair.values, values);
+
+  const kind = layoutIntegers(layout);
+  const integers = memory.int32(PAIR_FIELDS + kind.length + pair.rowStart.length + pair.columns.length);
+  const rowStart = PAIR_FIELDS + kind.length;
+  const columns = rowStart + pair.rowStart.length;
+  integers.view.set(kind, PAIR_FIELDS);
+  integers.view.set(pair.rowStart, rowStart);
+  integers.view.set(pair.columns, columns);
+  const number = (place: number) => address + 8 * place;
+  const integer = (place: number) => integers.address + 4 * place;
+  integers.view.set([
     primitiveCount,
     layout.degree,
     factorCount,
     layout.columnCount,
     pair.productCount,
-    inLanes(pair.exponents),
-    inLanes(pair.centreX),
-    inLanes(pair.centreY),
-    inLanes(pair.centreZ),
-    inLanes(pair.bounds),
-    braFactors.address,
-    ketFactors.address,
-    putIntegers(memory, layout.factorDegrees),
-    putIntegers(
-      memory,
-      layout.columnPowers.flatMap(([, v, w], column) => [layout.columnFactor[column], v + w, w]),
-    ),
-    putIntegers(memory, pair.rowStart),
-    putIntegers(memory, pair.columns),
-    putNumbers(memory, pair.values),
+    ...perPrimitive.map((_, array) => number(array * laneCount)),
+    number(braFactors),
+    number(ketFactors),
+    integer(PAIR_FIELDS),
+    integer(PAIR_FIELDS + factorCount),
+    integer(rowStart),
+    integer(columns),
+    number(values),
   ]);
+  return integers.address;
+}
+
+const integersOfLayout = new Map<PairLayout, Int32Array>();
+
+/** The degree of each factor, then the factor, v + w and w of each column with its Hermite index (t, v, w). */
+function layoutIntegers(layout: PairLayout): Int32Array {
+  let integers = integersOfLayout.get(layout);
+  if (!integers) {
+    const columns = layout.columnPowers.flatMap(([, v, w], column) => [
+      layout.columnFactor[column],
+      v + w,
+      w,
+    ]);
+    integers = Int32Array.from([...layout.factorDegrees, ...columns]);
+    integersOfLayout.set(layout, integers);
+  }
+  return integers;
 }
 
 function putNumbers(memory: KernelMemory, values: Float64Array): number {
   const { address, view } = memory.float64(values.length);
-  view.set(values);
-  return address;
-}
-
-function putIntegers(memory: KernelMemory, values: ArrayLike<number>): number {
-  const { address, view } = memory.int32(values.length);
   view.set(values);
   return address;
 }
