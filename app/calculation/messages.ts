@@ -1,11 +1,19 @@
 import type { CompleteStudy, FollowedNeighbours, LevelFindings, PointCarry, PointResult } from '#engine';
 import type { SerializedError } from '../contract/requests';
+import type { CacheSettings } from './cache-settings';
+import type { StageTime } from './stage-clock';
 
 /** What a worker is started with. */
 export interface WorkerStart {
   readonly study: CompleteStudy;
   /** text of the basis-set file, if the study names one */
   readonly basisFileText?: string;
+  /** bytes that one point may take; default: the engine's */
+  readonly memoryLimit?: number;
+  /** absent: nothing is looked up or kept */
+  readonly cache?: CacheSettings;
+  /** whether findings are to say where their time went */
+  readonly isTimed?: boolean;
 }
 
 /** What a worker is asked for. */
@@ -32,7 +40,13 @@ export interface FinishedPoint {
   readonly carry?: PointCarry | undefined;
 }
 
-export type Finding = { readonly seconds: number } & (
+export type Finding = {
+  readonly seconds: number;
+  /** found in the cache, not computed */
+  readonly isKept?: boolean;
+  /** where the seconds went, if that was asked for */
+  readonly stages?: readonly StageTime[];
+} & (
   | ({ readonly kind: 'point'; readonly index: number } & FinishedPoint)
   | { readonly kind: 'followed'; readonly index: number; readonly followed: FollowedNeighbours }
   | { readonly kind: 'minimum'; readonly level: string; readonly findings: LevelFindings }

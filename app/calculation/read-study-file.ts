@@ -2,6 +2,7 @@ import { basename, dirname, isAbsolute, resolve } from 'node:path';
 import { type PreparedStudy, prepareStudy, type Study } from '#engine';
 import type { StudyIssue } from '../contract/requests';
 import { parseStudy } from '../study/parse-study';
+import { memoryBudget } from './memory';
 import { type FileKind, readTextFile } from './read-text-file';
 
 /** Far above any study written by hand, with its basis set spelled out. */
@@ -28,7 +29,7 @@ export async function readStudyFile(path: string): Promise<StudyFile> {
   const basisFile = await readBasisFile(parsed.study, dirname(path));
   if (basisFile && !basisFile.ok) return { ok: false, issues: [basisFile.issue] };
   const options = basisFile ? { basisFileText: basisFile.text } : {};
-  const preparation = prepareStudy(parsed.study, options);
+  const preparation = prepareStudy(parsed.study, { ...options, memoryLimit: memoryBudget() });
   if (!preparation.ok) return { ok: false, issues: preparation.errors };
   return { ok: true, name: studyName(path), prepared: preparation.prepared, ...options };
 }

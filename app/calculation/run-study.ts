@@ -10,12 +10,14 @@ import {
   studyCautions,
 } from '#engine';
 import type { SerializedError } from '../contract/requests';
+import type { CacheSettings } from './cache-settings';
 import { makeCurvesContinuous } from './continuous-curves';
 import { coordinateText } from './coordinate-text';
-import type { FinishedPoint } from './messages';
+import type { Finding, FinishedPoint, WorkerStart } from './messages';
 import { planRuns, type Run } from './plan';
 import { PROGRAM } from './program';
 import { type Progress, trackProgress } from './progress';
+import type { StageTime } from './stage-clock';
 import { crossingCautions, stateCurves } from './state-curves';
 import { CalculationFailure, openPool, PoolClosed, type Task, type WorkerPool } from './worker-pool';
 import { type StartWorker, startWorkerThread } from './worker-thread';
@@ -41,10 +43,19 @@ export interface RunOptions {
   /** points known from before, by index: they are not computed again */
   readonly finished?: ReadonlyMap<number, FinishedPoint>;
   readonly startWorker?: StartWorker;
+  /** where points are looked up and kept; absent: nowhere */
+  readonly cache?: CacheSettings;
+  /** given where the time went in every finding, on whichever worker */
+  readonly onTimes?: (kind: Finding['kind'], times: readonly StageTime[]) => void;
 }
 
 export type RunOutcome =
-  | { readonly kind: 'done'; readonly results: StudyResults }
+  | {
+      readonly kind: 'done';
+      readonly results: StudyResults;
+      /** points that the cache had */
+      readonly keptPoints: number;
+    }
   | { readonly kind: 'cancelled' }
   | { readonly kind: 'failed'; readonly error: SerializedError };
 
@@ -61,8 +72,22 @@ export async function runStudy(
   { workers = availableParallelism(), startWorker = startWorkerThread, signal, ...options }: RunOptions = {},
 ): Promise<RunOutcome> {
   if (signal?.aborted) return { kind: 'cancelled' };
-  const start = { study: prepared.study, ...(basisFileText !== undefined && { basisFileText }) };
-  const pool = openPool(workers, () => startWorker(start));
+  const start: WorkerStart = {
+    study: prepared.study,
+    ...(basisFileText !== undefined && { basisFileText }),
+    memoryLimit: prepared.memoryLimit,
+    ...(options.cache && { cache: options.cache }),
+    isTimed: options.onTimes !== undefined,
+  };
+  let keptPoints = 0;
+  const pool = openPool(
+    workers,
+    () => startWorker(start),
+    ({ kind, isKept, stages }) => {
+      if (kind === 'point' && isKept) keptPoints++;
+      if (stages) options.onTimes?.(kind, stages);
+    },
+  );
   signal?.addEventListener('abort', pool.close, { once: true });
   try {
     const computed = await computePoints(prepared, pool, workers, options);
@@ -75,7 +100,7 @@ export async function runStudy(
     });
     const results = points.map(({ result }) => result);
     const findings = await findMinima(prepared, points, pool, workers, options.onProgress);
-    return { kind: 'done', results: assemble(prepared, results, findings, crossings) };
+    return { kind: 'done', results: assemble(prepared, results, findings, crossings), keptPoints };
   } catch (error) {
     if (error instanceof PoolClosed) return { kind: 'cancelled' };
     if (error instanceof CalculationFailure) return { kind: 'failed', error: error.error };

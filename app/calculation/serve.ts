@@ -1,6 +1,9 @@
 import * as engine from '#engine';
 import type { SerializedError } from '../contract/requests';
-import type { WorkerReply, WorkerRequest, WorkerStart } from './messages';
+import type { Finding, WorkerReply, WorkerRequest, WorkerStart } from './messages';
+import { openCache } from './result-cache';
+import { startStageClock } from './stage-clock';
+import { type CacheableRequest, requestKeys } from './study-key';
 
 /** A worker's side of its connection, whatever carries the messages. */
 export interface ServerPort {
@@ -9,13 +12,13 @@ export interface ServerPort {
 }
 
 /** Computes what is asked for, one request after the other, with the study that the worker was started for. */
-export function serve(port: ServerPort, { study, basisFileText }: WorkerStart): void {
-  const preparation = engine.prepareStudy(study, basisFileText === undefined ? {} : { basisFileText });
+export function serve(port: ServerPort, start: WorkerStart): void {
+  const preparation = engine.prepareStudy(start.study, start);
+  const answer = preparation.ok ? prepareAnswers(preparation.prepared, start) : undefined;
   port.onMessage((request) => {
     try {
-      if (!preparation.ok)
-        throw preparation.errors[0] ?? new Error('The study was refused without a reason.');
-      compute(preparation.prepared, request, port);
+      if (!preparation.ok || !answer) throw refusal(preparation);
+      for (const finding of findings(preparation.prepared, request, answer)) port.post(finding);
       port.post({ kind: 'free' });
     } catch (error) {
       port.post({ kind: 'failed', error: asData(error) });
@@ -23,32 +26,68 @@ export function serve(port: ServerPort, { study, basisFileText }: WorkerStart): 
   });
 }
 
-function compute(prepared: engine.PreparedStudy, request: WorkerRequest, port: ServerPort): void {
-  let last = performance.now();
-  const secondsSinceLast = () => {
-    const before = last;
-    last = performance.now();
-    return (last - before) / 1000;
-  };
+function refusal(preparation: engine.Preparation): Error {
+  const [error] = preparation.ok ? [] : preparation.errors;
+  return error ?? new Error('The study was refused without a reason.');
+}
+
+/** One after the other, each as soon as it is there. */
+function* findings(
+  prepared: engine.PreparedStudy,
+  request: WorkerRequest,
+  answer: ReturnType<typeof prepareAnswers>,
+): Generator<Finding> {
   if (request.kind === 'minimum') {
     const { level, points, left } = request;
-    const findings = engine.findLevelMinimum(prepared, level, points, left);
-    port.post({ kind: 'minimum', level, findings, seconds: secondsSinceLast() });
+    const found = answer(request, (control) => ({
+      findings: engine.findLevelMinimum(prepared, level, points, left, control),
+    }));
+    yield { kind: 'minimum', level, ...found };
     return;
   }
   if (request.kind === 'follow') {
-    const { index, own, neighbours } = request;
-    const followed = engine.followNeighbours(prepared, coordinateOf(prepared, index), own, neighbours);
-    port.post({ kind: 'followed', index, followed, seconds: secondsSinceLast() });
+    const { index, own, neighbours, kind } = request;
+    const coordinate = coordinateOf(prepared, index);
+    const found = answer({ kind, coordinate, own, neighbours }, (control) => ({
+      followed: engine.followNeighbours(prepared, coordinate, own, neighbours, control),
+    }));
+    yield { kind: 'followed', index, ...found };
     return;
   }
   let { guess } = request;
   for (const index of request.indices) {
     const coordinate = coordinateOf(prepared, index);
-    const { result, carry } = engine.computePoint(prepared, coordinate, { guess });
-    guess = carry;
-    port.post({ kind: 'point', index, result, carry, seconds: secondsSinceLast() });
+    const from = guess;
+    const found = answer({ kind: 'point', coordinate, guess }, (control) =>
+      engine.computePoint(prepared, coordinate, { guess: from, control }),
+    );
+    guess = found.carry;
+    yield { kind: 'point', index, ...found };
   }
+}
+
+/** What takes less is computed faster than it is found on a disk. */
+const WORTH_KEEPING_SECONDS = 0.002;
+
+/** Answers from the cache where it can, and says how long the answer took. */
+function prepareAnswers(prepared: engine.PreparedStudy, { cache: settings, isTimed }: WorkerStart) {
+  const cache = settings && { ...openCache(settings), keyOf: requestKeys(prepared) };
+  const clock = isTimed ? startStageClock() : undefined;
+  const control = { ...engine.UNATTENDED, ...(clock && { onStage: clock.listener }) };
+
+  return <T extends object>(request: CacheableRequest, compute: (control: engine.RunControl) => T) => {
+    const began = performance.now();
+    const seconds = () => (performance.now() - began) / 1000;
+    const key = cache?.keyOf(request) ?? '';
+    const kept = cache?.find(key) as T | undefined;
+    const level = request.kind === 'minimum' && { level: request.level };
+    if (level) clock?.listener(level, 'begins');
+    const found = kept ?? compute(control);
+    if (level) clock?.listener(level, 'ends');
+    if (!kept && seconds() >= WORTH_KEEPING_SECONDS) cache?.keep(key, found);
+    const stages = clock?.take();
+    return { ...found, seconds: seconds(), ...(kept && { isKept: true }), ...(stages && { stages }) };
+  };
 }
 
 function coordinateOf(prepared: engine.PreparedStudy, index: number): number | null {

@@ -39,8 +39,13 @@ export class CalculationFailure extends Error {
  * same place too, the calculation fails, because a third try would most likely end the same way.
  *
  * @param size - most workers at a time; they are started when first needed
+ * @param onFinding - sees every finding before its task does
  */
-export function openPool(size: number, start: () => WorkerConnection): WorkerPool {
+export function openPool(
+  size: number,
+  start: () => WorkerConnection,
+  onFinding: (finding: Finding) => void = () => undefined,
+): WorkerPool {
   const workers = new Set<WorkerConnection>();
   const idle: WorkerConnection[] = [];
   let rejectAsClosed: () => void = () => undefined;
@@ -60,6 +65,7 @@ export function openPool(size: number, start: () => WorkerConnection): WorkerPoo
             return resolve(undefined);
           }
           try {
+            onFinding(reply);
             task.accept(reply);
           } catch (error) {
             reject(error);

@@ -9,6 +9,10 @@ export type Invocation =
       readonly out?: string;
       readonly print: boolean;
       readonly workers?: number;
+      /** whether points computed before are used again */
+      readonly cache: boolean;
+      /** whether to say where the time went */
+      readonly timings: boolean;
     }
   | { readonly kind: 'check'; readonly study: string }
   | { readonly kind: 'basis'; readonly name?: string }
@@ -22,6 +26,8 @@ export const HELP = `farwell pulls a bond apart: potential-energy curves by Hart
       --out DIR                   writes them into DIR
       --print                     prints the results as JSON and writes no files
       --workers N                 computes N points at a time (default: one for every core)
+      --no-cache                  computes every point anew, and keeps none for other studies
+      --timings                   says where the time went
   farwell check STUDY           explains a study, with its memory and time, without computing it
   farwell basis [NAME]          lists the basis sets, or prints one as a study can hold it
   farwell report RESULTS...     makes figures and tables of results files
@@ -32,6 +38,14 @@ export const HELP = `farwell pulls a bond apart: potential-energy curves by Hart
 STUDY is a file NAME.study.json. Interrupted, \`run\` keeps the finished points; the same command goes on from there.
 Exit status: 0 all converged, 1 some point did not converge, 2 input refused, 3 interrupted, 4 anything else.
 `;
+
+interface RunFlags {
+  readonly out?: string;
+  readonly print?: true;
+  readonly workers?: number;
+  readonly cache: boolean;
+  readonly timings?: true;
+}
 
 const MOST_WORKERS = 1024;
 
@@ -48,8 +62,11 @@ export function parseArguments(argv: readonly string[]): Invocation {
     .option('--out <dir>')
     .addOption(new Option('--print').conflicts('out'))
     .addOption(new Option('--workers <n>').argParser(parseWorkers))
-    .action((study: string, options: { out?: string; print?: true; workers?: number }) => {
-      invocation = { kind: 'run', study, ...options, print: options.print ?? false };
+    .option('--no-cache')
+    .option('--timings')
+    .action((study: string, options: RunFlags) => {
+      const { print = false, timings = false } = options;
+      invocation = { kind: 'run', study, ...options, print, timings };
     });
   program.command('check <study>').action((study: string) => {
     invocation = { kind: 'check', study };

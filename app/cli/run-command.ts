@@ -1,7 +1,9 @@
 import { mkdir, stat } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import type { StudyResults } from '#engine';
+import { cacheSettings } from '../calculation/cache-settings';
 import { type Journal, openJournal } from '../calculation/journal';
+import { affordableWorkers } from '../calculation/memory';
 import { acquireLock } from '../calculation/output-lock';
 import { readStudyFile, type StudyFile } from '../calculation/read-study-file';
 import { type RunOutcome, runStudy } from '../calculation/run-study';
@@ -11,6 +13,7 @@ import type { SerializedError, StudyIssue } from '../contract/requests';
 import { studySentence } from '../study/sentence';
 import type { Invocation } from './arguments';
 import { EXIT, type ExitCode } from './exit-codes';
+import { type Profile, startProfile } from './profile';
 import { progressDisplay } from './progress-display';
 import { summarise } from './run-summary';
 import type { Terminal } from './terminal';
@@ -31,18 +34,22 @@ export async function runCommand(
     return EXIT.refused;
   }
   terminal.say(studySentence(file.prepared.study));
-  return invocation.print
-    ? runToOutput(file, invocation, terminal, signal)
-    : runToFolder(file, invocation, terminal, signal);
+  const profile = startProfile();
+  const exit = invocation.print
+    ? await runToOutput(file, invocation, profile, terminal, signal)
+    : await runToFolder(file, invocation, profile, terminal, signal);
+  if (invocation.timings) terminal.say(profile.table(file.prepared.study.levels));
+  return exit;
 }
 
 async function runToOutput(
   file: ReadableStudy,
   invocation: RunInvocation,
+  profile: Profile,
   terminal: Terminal,
   signal: AbortSignal,
 ): Promise<ExitCode> {
-  const outcome = await compute(file, invocation, terminal, signal);
+  const outcome = await compute(file, invocation, profile, terminal, signal);
   if (outcome.kind === 'failed') return sayFailure(outcome.error, invocation.study, terminal);
   if (outcome.kind === 'cancelled') {
     terminal.say('Interrupted. With --print nothing is kept; without it the finished points are.');
@@ -55,6 +62,7 @@ async function runToOutput(
 async function runToFolder(
   file: ReadableStudy,
   invocation: RunInvocation,
+  profile: Profile,
   terminal: Terminal,
   signal: AbortSignal,
 ): Promise<ExitCode> {
@@ -74,7 +82,7 @@ async function runToFolder(
     return EXIT.failed;
   }
   try {
-    return await runWithJournal(file, invocation, folder, terminal, signal);
+    return await runWithJournal(file, invocation, folder, profile, terminal, signal);
   } finally {
     lock.release();
   }
@@ -118,6 +126,7 @@ async function runWithJournal(
   file: ReadableStudy,
   invocation: RunInvocation,
   folder: string,
+  profile: Profile,
   terminal: Terminal,
   signal: AbortSignal,
 ): Promise<ExitCode> {
@@ -127,7 +136,7 @@ async function runWithJournal(
   const kept = () => `${journal.size} of ${counted(file.prepared.coordinates.length, 'point')}`;
   try {
     if (journal.size > 0) terminal.say(`Going on from ${kept()} computed before.`);
-    const outcome = await compute(file, invocation, terminal, signal, journal);
+    const outcome = await compute(file, invocation, profile, terminal, signal, journal);
     if (outcome.kind === 'failed') {
       const exit = sayFailure(outcome.error, invocation.study, terminal);
       terminal.say(`  Finished and kept: ${kept()}.`);
@@ -137,10 +146,11 @@ async function runWithJournal(
       terminal.say(`Interrupted. Finished and kept: ${kept()}; the same command goes on from there.`);
       return EXIT.interrupted;
     }
-    const paths = await writeResults(outcome.results, folder, file.name);
+    const { results } = outcome;
+    const paths = await profile.stretch('writing', () => writeResults(results, folder, file.name));
     journal.remove();
     await terminal.print(`${paths.join('\n')}\n`);
-    return saySummary(outcome.results, terminal);
+    return saySummary(results, terminal);
   } finally {
     journal.close();
   }
@@ -148,25 +158,39 @@ async function runWithJournal(
 
 async function compute(
   { prepared, basisFileText }: ReadableStudy,
-  { workers }: RunInvocation,
+  invocation: RunInvocation,
+  profile: Profile,
   terminal: Terminal,
   signal: AbortSignal,
   journal?: Journal,
 ): Promise<RunOutcome> {
+  const workers = affordableWorkers(prepared, invocation.workers);
+  if (workers.notice) terminal.say(workers.notice);
+  const cache = invocation.cache ? cacheSettings() : undefined;
   const display = progressDisplay(terminal);
+  let outcome: RunOutcome;
   try {
-    return await runStudy(
-      { prepared, ...(basisFileText !== undefined && { basisFileText }) },
-      {
-        signal,
-        onProgress: display.show,
-        ...(workers !== undefined && { workers }),
-        ...(journal && { finished: journal.finished, onPoint: journal.append }),
-      },
+    outcome = await profile.stretch('computing', () =>
+      runStudy(
+        { prepared, ...(basisFileText !== undefined && { basisFileText }) },
+        {
+          signal,
+          workers: workers.count,
+          ...(cache && { cache }),
+          onProgress: display.show,
+          ...(invocation.timings && { onTimes: profile.add }),
+          ...(journal && { finished: journal.finished, onPoint: journal.append }),
+        },
+      ),
     );
   } finally {
     display.end();
   }
+  if (outcome.kind === 'done' && outcome.keptPoints > 0) {
+    const total = counted(prepared.coordinates.length, 'point');
+    terminal.say(`${outcome.keptPoints} of ${total} came from the cache of earlier runs.`);
+  }
+  return outcome;
 }
 
 /** Failures that the study is not to blame for; any other comes from the engine and refuses the study. */

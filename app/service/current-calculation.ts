@@ -1,4 +1,6 @@
 import type { PreparedStudy } from '#engine';
+import { cacheSettings } from '../calculation/cache-settings';
+import { affordableWorkers } from '../calculation/memory';
 import { runStudy } from '../calculation/run-study';
 import { serializeError } from './answer';
 import type { Post } from './service';
@@ -13,6 +15,7 @@ export interface CurrentCalculation {
 }
 
 export function createCurrentCalculation(workers: number, post: Post): CurrentCalculation {
+  const cache = cacheSettings();
   let lastId = 0;
   let running: { readonly id: number; readonly abort: AbortController } | undefined;
 
@@ -29,7 +32,8 @@ export function createCurrentCalculation(workers: number, post: Post): CurrentCa
     const outcome = await runStudy(
       { prepared },
       {
-        workers,
+        workers: affordableWorkers(prepared, workers).count,
+        ...(cache && { cache }),
         signal,
         onPoint: (index, { result }) => {
           if (!signal.aborted) post('calculation:point', { id, index, point: result });

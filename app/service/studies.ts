@@ -1,4 +1,5 @@
 import { explainStudy, type PreparedStudy, prepareStudy } from '#engine';
+import { memoryBudget } from '../calculation/memory';
 import type { StudyCheck, StudyIssue } from '../contract/requests';
 import { parseStudy } from '../study/parse-study';
 import { studySentence } from '../study/sentence';
@@ -16,7 +17,7 @@ export function readStudy(text: string): ReadStudy {
   if (typeof study.basis === 'object' && 'file' in study.basis) {
     return { ok: false, issues: [fileOutOfReach(study.basis.file)] };
   }
-  const preparation = prepareStudy(study);
+  const preparation = prepareStudy(study, { memoryLimit: memoryBudget() });
   if (preparation.ok) return preparation;
   return {
     ok: false,

@@ -35,3 +35,19 @@ export const water: Study = {
   levels: ['RHF', 'CISD'],
   frozenCore: true,
 };
+/** Nitrogen is pulled apart: with its cores frozen. */
+export const nitrogen: Study = {
+  format: 'farwell/study',
+  version: 1,
+  molecule: {
+    unit: 'angstrom',
+    atoms: [
+      { element: 'N', at: [0, 0, 0] },
+      { element: 'N', at: [0, 0, 1.1] },
+    ],
+  },
+  scan: { coordinate: { bonds: [[0, 1]] }, from: 0.9, to: 2, count: 9 },
+  basis: 'STO-3G',
+  levels: ['RHF', 'FCI'],
+  frozenCore: true,
+};

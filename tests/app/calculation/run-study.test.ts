@@ -1,3 +1,5 @@
+import { readdirSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { type PreparedStudy, prepareStudy, type Study } from '#engine';
 import type { FinishedPoint, WorkerRequest } from '../../../app/calculation/messages';
@@ -5,7 +7,9 @@ import type { Progress } from '../../../app/calculation/progress';
 import { type RunOptions, runStudy } from '../../../app/calculation/run-study';
 import { serve } from '../../../app/calculation/serve';
 import type { StartWorker } from '../../../app/calculation/worker-thread';
+import { temporaryFolder } from '../../support/temporary-folder';
 
+const folder = temporaryFolder();
 const study: Study = {
   format: 'farwell/study',
   version: 1,
@@ -144,6 +148,49 @@ describe('runStudy', () => {
     ).toEqual({
       kind: 'cancelled',
     });
+  });
+
+  it('gives the same numbers to the last bit from the cache, in part or in whole, and says how many points it had', async () => {
+    const cache = { folder: join(folder, 'cache'), mostBytes: 1e8 };
+    // full CI in this basis takes longer than looking it up
+    const slow = { basis: '6-31G', scan: { ...study.scan!, count: 4, to: 2 } };
+    const run = (options: RunOptions = {}) =>
+      runStudy({ prepared: prepared(slow) }, { startWorker: startHere, ...options });
+    const fresh = await run();
+    const first = await run({ cache });
+    const [somePoint] = readdirSync(cache.folder);
+    expect(first).toEqual(fresh);
+    const second = await run({ cache, workers: 3 });
+    if (fresh.kind !== 'done' || second.kind !== 'done') throw new Error('not done');
+    expect(second.results).toEqual(fresh.results);
+    expect(second.keptPoints).toBeGreaterThan(0);
+    writeFileSync(join(cache.folder, somePoint!), 'damaged');
+    const third = await run({ cache });
+    expect(third.kind === 'done' && third.results).toEqual(fresh.results);
+    // another study with the same first point: found there, but of course not its curve
+    const shorter = {
+      ...slow,
+      title: 'shorter',
+      scan: { coordinate: study.scan!.coordinate, values: [0.9] },
+    };
+    const single = await runStudy({ prepared: prepared(shorter) }, { startWorker: startHere, cache });
+    expect(single.kind === 'done' && single.results.points).toEqual(fresh.results.points.slice(0, 1));
+  });
+
+  it('tells where the time went, by stage and level, if it is asked', async () => {
+    const told = new Map<string, Set<string>>();
+    await resultsOf({
+      onTimes: (kind, times) => {
+        const stages = told.get(kind) ?? new Set();
+        told.set(kind, stages);
+        for (const { stage, level = '' } of times) stages.add(`${stage} ${level}`);
+      },
+    });
+    expect([...told.keys()].sort()).toEqual(['followed', 'minimum', 'point']);
+    expect([...told.get('point')!]).toEqual(
+      expect.arrayContaining(['integrals ', 'CI model space FCI', 'rest CIS']),
+    );
+    expect([...told.get('minimum')!]).toEqual(expect.arrayContaining(['rest RHF', 'integrals FCI']));
   });
 
   it('gives the same numbers although a worker died on the way', async () => {

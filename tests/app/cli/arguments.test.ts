@@ -18,15 +18,25 @@ describe('parseArguments', () => {
       kind: 'run',
       study: 'a.study.json',
       print: false,
+      cache: true,
+      timings: false,
     });
     expect(parseArguments(['run', '--workers=3', 'a', '--out', 'd'])).toEqual({
       kind: 'run',
       study: 'a',
       print: false,
+      cache: true,
+      timings: false,
       workers: 3,
       out: 'd',
     });
-    expect(parseArguments(['run', 'a', '--print'])).toEqual({ kind: 'run', study: 'a', print: true });
+    expect(parseArguments(['run', 'a', '--print', '--no-cache', '--timings'])).toEqual({
+      kind: 'run',
+      study: 'a',
+      print: true,
+      cache: false,
+      timings: true,
+    });
     expect(parseArguments(['check', 'a'])).toEqual({ kind: 'check', study: 'a' });
     expect(parseArguments(['basis'])).toEqual({ kind: 'basis' });
     expect(parseArguments(['basis', 'sto-3g'])).toEqual({ kind: 'basis', name: 'sto-3g' });
