@@ -94,7 +94,11 @@ export const vibration: z.ZodType<Vibration> = z.discriminatedUnion('kind', [
     pointsAdded: z.number(),
     reducedMassDalton: z.number(),
   }),
-  z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+  z.looseObject({
+    kind: z.literal('none'),
+    reason: z.string(),
+    isDoubtful: z.literal(true).exactOptional(),
+  }),
 ]);
 
 export const isotopologue: z.ZodType<Isotopologue> = z.looseObject({

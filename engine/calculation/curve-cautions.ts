@@ -1,6 +1,7 @@
 import { findLevel } from './levels';
 import type { PreparedStudy } from './prepare-study';
 import type { Caution, LevelFindings, PointResult } from './result';
+import { wellCautions } from './well-cautions';
 
 /** A far end of RHF or ROHF higher above its fragments than this, hartree, is a wrong limit and not a rest of binding. */
 const WRONG_LIMIT = 0.005;
@@ -18,7 +19,10 @@ export function curveCautions(
   const coordinates = points.flatMap(({ coordinate }) => (coordinate === null ? [] : [coordinate]));
   const farEnd = Math.max(...coordinates);
   return [
-    ...Object.entries(findings).flatMap(([level, found]) => levelCautions(level, found, farEnd)),
+    ...Object.entries(findings).flatMap(([level, found]) => [
+      ...wellCautions(level, found, prepared.study.molecule.unit),
+      ...levelCautions(level, found, farEnd),
+    ]),
     depthCaution(findings),
   ];
 }

@@ -8,12 +8,12 @@ import type { PreparedStudy } from './prepare-study';
 import { readWell, type Well } from './read-well';
 import type { Estimate } from './result';
 import { type CurveOfState, curvesOfStates, statesOf } from './state-curves';
-import { MOST_SECONDS_A_POINT, type SolvableCurve, vibrationOn } from './vibration';
+import { MOST_SECONDS_A_POINT, type SolvableCurve, vibrationOn, type WithoutLevels } from './vibration';
 
 /** States closer than this, hartree, at every point are partners of one another. */
 const DEGENERATE = 1e-7;
 /** Further points of a level are computed for its states as long as they take no more than this together, seconds. */
-const MOST_SECONDS = 120;
+const MOST_SECONDS = 30;
 /** Levels of the lowest state that factors are listed for, and of the other state. */
 const INITIAL_LEVELS = 6;
 const FINAL_LEVELS = 80;
@@ -115,13 +115,27 @@ function readState(
   const vertical = verticalExcitation(points, pair, threshold);
   return {
     curve: state.index,
-    minimum,
+    minimum: state.isPartial && minimum.kind === 'atEdge' ? knownInPart(state) : minimum,
     ...(well && { minimumFrom: secondsPerPoint === undefined ? 'interpolated' : 'computed' }),
     ...(well?.constants && { constants: well.constants }),
     ...(vertical && { vertical }),
     ...(adiabatic && { adiabatic }),
     transitionMoments: transitionMoments(points, pair),
-    ...vibrationOfBoth(prepared, lowest.well?.solvable, well?.solvable, adiabatic),
+    ...vibrationOfBoth(prepared, lowest.well?.solvable, solvableOf(state, well), adiabatic),
+  };
+}
+
+/** A curve that ends inside the range has no limit, nor levels that could be trusted. */
+function solvableOf(state: CurveOfState, well: Well | undefined): Well['solvable'] {
+  return well?.solvable && state.isPartial ? knownInPart(state) : well?.solvable;
+}
+
+function knownInPart({ curve }: CurveOfState): WithoutLevels {
+  const known = curve.points();
+  const [from, to] = [known[0], known[known.length - 1]].map(({ x }) => Number(x.toPrecision(4)));
+  return {
+    kind: 'none',
+    reason: `This state is among those computed from ${from} to ${to} only: ask for more states.`,
   };
 }
 

@@ -485,7 +485,12 @@ export type Vibration =
       readonly pointsAdded: number;
       readonly reducedMassDalton: number;
     }
-  | { readonly kind: 'none'; readonly reason: string };
+  | {
+      readonly kind: 'none';
+      readonly reason: string;
+      /** the curve is too poorly known for levels, as at a kink or between too few points */
+      readonly isDoubtful?: true;
+    };
 
 export interface VibrationalState {
   /** quantum number */

@@ -10,6 +10,8 @@ export interface CurveOfState {
   readonly index: number;
   readonly followed: FollowedState;
   readonly curve: LevelCurve;
+  /** at one end of the scan or both the state is not among those computed */
+  readonly isPartial: boolean;
   /** the state at a point of `LevelPoints.all()`; undefined where it is not among those computed */
   stateAt(index: number): State | undefined;
 }
@@ -34,8 +36,22 @@ export function curvesOfStates(points: LevelPoints): readonly CurveOfState[] {
       return place == null ? undefined : statesOf(points.all()[point], level)[place];
     };
     const curve = curveThrough(points, (point) => stateAt(point)?.energy);
-    return { index, followed, curve, stateAt };
+    const reach = reachOf(curve);
+    const energyAt = (x: number) => (x > reach.from && x < reach.to ? curve.energyAt(x) : undefined);
+    return { index, followed, curve: { ...curve, energyAt }, isPartial: reach.isPartial, stateAt };
   });
+}
+
+/**
+ * Between which scanned values a state may be found: beyond the first where it is not among those computed no point
+ * is worth computing.
+ */
+function reachOf({ scan }: LevelCurve): { from: number; to: number; isPartial: boolean } {
+  const known = scan.flatMap(({ x, energy }) => (energy === undefined ? [] : [x]));
+  const [first, last] = [Math.min(...known), Math.max(...known)];
+  const from = Math.max(...scan.flatMap(({ x }) => (x < first ? [x] : [])));
+  const to = Math.min(...scan.flatMap(({ x }) => (x > last ? [x] : [])));
+  return { from, to, isPartial: Number.isFinite(from) || Number.isFinite(to) };
 }
 
 /** Whether both are the same curve at the points of the scan. */

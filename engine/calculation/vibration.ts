@@ -37,10 +37,7 @@ export interface SolvableCurve {
   readonly pointsAdded: number;
 }
 
-export interface WithoutLevels {
-  readonly kind: 'none';
-  readonly reason: string;
-}
+export type WithoutLevels = Extract<Vibration, { readonly kind: 'none' }>;
 
 /**
  * A curve through the points that are there, and through more where the interpolation wants them, as long as points are
@@ -62,7 +59,7 @@ export function solvableCurve(
       limit,
     );
   let interpolated = interpolate();
-  if (!interpolated) return none(`Fewer than ${FEWEST_POINTS} points of this level converged.`);
+  if (!interpolated) return doubtful(`Fewer than ${FEWEST_POINTS} points of this level converged.`);
   const pointsAtFirst = curve.points().length;
   let left = secondsPerPoint <= MOST_SECONDS_A_POINT ? MOST_POINTS_ADDED : 0;
   for (let round = 0; round < ROUNDS && left > 0; round++) {
@@ -74,7 +71,7 @@ export function solvableCurve(
   }
   const error = errorBelow(interpolated, topOf(interpolated, limit));
   if (!(error <= LARGEST_USABLE_ERROR_PER_CM)) {
-    return none(
+    return doubtful(
       `Between its points the curve is known to ${error.toPrecision(2)} cm⁻¹ only: it has a kink, or too few points.`,
     );
   }
@@ -106,7 +103,8 @@ export function vibrationOn(
   const levels = solved.levels.filter(isBelow(limit));
   if (levels.length === 0) return none('The well is too shallow for a bound level.');
   // an interpolant that dips below the computed minimum has left the curve
-  if (levels[0].energy <= minimumEnergy) return none('The curve has a kink; levels on it would be invented.');
+  if (levels[0].energy <= minimumEnergy)
+    return doubtful('The curve has a kink; levels on it would be invented.');
   const distortions = centrifugalDistortions(curve, molecule.reducedMass, levels.length);
   const place = placeAbove(minimumEnergy);
   const rotating = rotations
@@ -170,6 +168,10 @@ const placeAbove =
 
 function none(reason: string): WithoutLevels {
   return { kind: 'none', reason };
+}
+
+function doubtful(reason: string): WithoutLevels {
+  return { kind: 'none', reason, isDoubtful: true };
 }
 
 /** The energy up to which levels are listed: of the curve's limit and its fragments' the lower. */

@@ -49,43 +49,48 @@ export function describeWell(
 ): DescribedWell {
   const toNewtonPerMetre = FORCE_CONSTANT_IN_NEWTON_PER_METRE / curve.bohrPerUnit ** 2;
   const molecule = diatomicOf(study);
-  const expanded = molecule && expandedWell(curve, minimum, spacing, study.convergence.energy);
-  const analysis = expanded && spectroscopicConstants(expanded.expansion, molecule.reducedMass);
-  const isUsable =
-    analysis !== undefined &&
-    analysis.uncertainties.harmonicWavenumberPerCm <=
-      LARGEST_USABLE_UNCERTAINTY * analysis.constants.harmonicWavenumberPerCm;
+  const equilibriumDistanceAngstrom = estimate(
+    minimum.x,
+    minimum.uncertainty,
+    curve.bohrPerUnit * BOHR_IN_ANGSTROM,
+  );
+  const roughly: WellConstants = {
+    equilibriumDistanceAngstrom,
+    forceConstantNewtonPerMetre: estimate(minimum.curvature, minimum.curvatureUncertainty, toNewtonPerMetre),
+  };
+  if (!molecule) return { constants: roughly };
+  const expanded = expandedWell(curve, minimum, spacing, study.convergence.energy);
+  if (typeof expanded === 'string') return { constants: { ...roughly, withoutDiatomic: expanded } };
+  const { constants, uncertainties } = spectroscopicConstants(expanded.expansion, molecule.reducedMass);
+  const { harmonicWavenumberPerCm: wavenumber } = constants;
+  if (!(uncertainties.harmonicWavenumberPerCm <= LARGEST_USABLE_UNCERTAINTY * wavenumber)) {
+    return { constants: { ...roughly, withoutDiatomic: NOT_SMOOTH } };
+  }
   return {
     constants: {
-      equilibriumDistanceAngstrom: estimate(
-        minimum.x,
-        minimum.uncertainty,
-        curve.bohrPerUnit * BOHR_IN_ANGSTROM,
+      equilibriumDistanceAngstrom,
+      forceConstantNewtonPerMetre: estimate(
+        constants.forceConstantNewtonPerMetre,
+        uncertainties.forceConstantNewtonPerMetre,
       ),
-      forceConstantNewtonPerMetre: isUsable
-        ? estimate(
-            analysis.constants.forceConstantNewtonPerMetre,
-            analysis.uncertainties.forceConstantNewtonPerMetre,
-          )
-        : estimate(minimum.curvature, minimum.curvatureUncertainty, toNewtonPerMetre),
-      ...(isUsable && { diatomic: diatomicConstants(expanded!.expansion, molecule!) }),
-      ...(molecule && !isUsable && { withoutDiatomic: WITHOUT_DERIVATIVES }),
+      diatomic: diatomicConstants(expanded.expansion, molecule),
     },
-    ...(isUsable && { expanded: expanded! }),
+    expanded,
   };
 }
 
-const WITHOUT_DERIVATIVES =
+const NOT_SMOOTH =
   'The energies around the minimum do not lie on one smooth curve: it has a kink, or they are too noisy for derivatives.';
+const NOT_KNOWN = 'Not all points around the minimum are known: one did not converge, or has no such state.';
 
-/** @returns undefined where the minimum is too uncertain, or a point does not converge */
+/** @returns why there is none, where the minimum is too uncertain or a point is not known */
 function expandedWell(
   curve: LevelCurve,
   { x, expansion, uncertainty }: LowestMinimum,
   spacing: number,
   threshold: number,
-): ExpandedWell | undefined {
-  if (!(uncertainty <= LARGEST_USABLE_SHIFT)) return undefined;
+): ExpandedWell | string {
+  if (!(uncertainty <= LARGEST_USABLE_SHIFT)) return NOT_SMOOTH;
   // a multiple of the spacing around the same centre: the points that are there already serve again
   const toBohr = curve.bohrPerUnit;
   const inBohr = expansion.coefficients.map((coefficient, k) => coefficient / toBohr ** k);
@@ -93,13 +98,13 @@ function expandedWell(
   const stencil: EnergyPoint[] = [];
   for (const place of stencilDistances(expansion.centre, multiple * spacing)) {
     const energy = curve.energyAt(place);
-    if (energy === undefined) return undefined;
+    if (energy === undefined) return NOT_KNOWN;
     stencil.push({ distance: place * toBohr, energy });
   }
   const noise = Math.max(SMALLEST_NOISE, NOISE_OF_THRESHOLD * threshold);
   const energies = stencil.map(({ energy }) => energy);
   const well = expandWell(expansion.centre * toBohr, multiple * spacing * toBohr, energies, noise);
-  return well && { expansion: well, stencil };
+  return well ? { expansion: well, stencil } : NOT_SMOOTH;
 }
 
 /** Leading terms of Dunham's series for one pair of masses. */

@@ -1,0 +1,99 @@
+import type { Caution, CautionNumber, LevelFindings, Vibration } from './result';
+import type { LengthUnit } from './study';
+
+/** Study unit; a minimum that is known no better lies at a kink, or energies around it are noisy. */
+const UNCERTAIN_DISTANCE = 1e-4;
+/** cm⁻¹; a curve known no better between its points moves levels by more than is printed of them. */
+const UNCERTAIN_LEVELS = 1;
+
+/** What to mistrust about a well and its levels: other minima, kinks, a poor interpolation, a well above its limit. */
+export function wellCautions(level: string, findings: LevelFindings, unit: LengthUnit): readonly Caution[] {
+  const { minimum, wellDepth, vibration } = findings;
+  if (minimum.kind !== 'found') return [];
+  const symbol = unit === 'bohr' ? 'bohr' : 'Å';
+  const { others = [], equilibriumDistance, uncertainty } = minimum;
+  const place = `${round(equilibriumDistance)} ${symbol}`;
+  const at = { level, range: [equilibriumDistance, equilibriumDistance] } as const;
+  const isKinked = uncertainty > UNCERTAIN_DISTANCE || findings.constants?.withoutDiatomic !== undefined;
+  return [
+    ...(others.length === 0
+      ? []
+      : [
+          {
+            code: 'minimum.several',
+            level,
+            message:
+              `The ${level} curve has ${others.length + 1} minima: the lowest at ${place}, higher ones at ` +
+              `${others.map((other) => `${round(other.equilibriumDistance)} ${symbol}`).join(', ')}.`,
+            meaning: 'Depth, constants and levels are those of the lowest minimum.',
+            remedy: 'For another one, narrow the range of the scan to it.',
+            numbers: others.map((other) => ({
+              name: `energy above the lowest minimum at ${round(other.equilibriumDistance)} ${symbol}`,
+              value: other.energy - minimum.energy,
+              unit: 'hartree',
+            })),
+          },
+        ]),
+    ...(isKinked
+      ? [
+          {
+            ...at,
+            code: 'curve.kink',
+            message: findings.constants?.withoutDiatomic ?? `The ${level} curve is not smooth at ${place}.`,
+            meaning: `The equilibrium distance of ${level} is known to ${round(uncertainty)} ${symbol} only, and derivatives there mean little.`,
+            remedy:
+              'Look for another solution or state that crosses there, or tighten the convergence threshold.',
+            numbers: [number('uncertainty of the equilibrium distance', uncertainty, symbol)],
+          },
+        ]
+      : []),
+    ...(wellDepth && wellDepth.value < 0
+      ? [
+          {
+            ...at,
+            code: 'minimum.aboveLimit',
+            message:
+              `The minimum of ${level} at ${place} lies ${(-wellDepth.value).toFixed(4)} hartree above ` +
+              `${wellDepth.against === 'fragments' ? 'the separate fragments' : 'the last computed distance'}.`,
+            meaning:
+              'The molecule is held by a barrier only: it has no bound levels, and its depth is negative.',
+            remedy: 'Take the height of the barrier, not the depth, for its stability.',
+            numbers: [number('well depth', wellDepth.value, 'hartree')],
+          },
+        ]
+      : []),
+    ...levelCautions(level, vibration),
+  ];
+}
+
+function levelCautions(level: string, vibration: Vibration | undefined): readonly Caution[] {
+  if (vibration?.kind === 'none' && vibration.isDoubtful) {
+    return [
+      {
+        code: 'curve.interpolation',
+        level,
+        message: `No vibrational levels of ${level} are given. ${vibration.reason}`,
+        remedy: 'Compute more points in the well.',
+      },
+    ];
+  }
+  if (vibration?.kind !== 'found') return [];
+  const { interpolationErrorPerCm: error } = vibration;
+  if (error <= UNCERTAIN_LEVELS) return [];
+  return [
+    {
+      code: 'curve.interpolation',
+      level,
+      message: `Between its points the ${level} curve is known to ${error.toPrecision(2)} cm⁻¹ only.`,
+      meaning: 'Vibrational levels and what follows from them may be off by as much.',
+      remedy: 'Compute more points in the well.',
+      numbers: [
+        number('largest error between points', error, 'cm⁻¹'),
+        number('bound', UNCERTAIN_LEVELS, 'cm⁻¹'),
+      ],
+    },
+  ];
+}
+
+const number = (name: string, value: number, unit: string): CautionNumber => ({ name, value, unit });
+const round = (value: number): number => Number(value.toPrecision(5));
