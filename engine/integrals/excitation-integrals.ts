@@ -1,5 +1,5 @@
-import { multiply, multiplyLeftTransposed } from '../linear-algebra/dense';
-import { packedPair } from './orbital-integrals';
+import { HalfTransformed } from './half-transformed';
+import { rowsOfPacked, transformMatrices } from './matrix-transformation';
 
 /** Occupied and virtual orbitals of one spin, n×count row-major. */
 export interface ExcitationOrbitals {
@@ -22,44 +22,39 @@ export function excitationIntegrals(
   ket: ExcitationOrbitals,
 ): Float64Array {
   const pairs = (n * (n + 1)) / 2;
-  const square = new Float64Array(n * n);
-  const ketExcitations = (ket.occupied.length / n) * (ket.virtual.length / n);
-  const braExcitations = (bra.occupied.length / n) * (bra.virtual.length / n);
+  const ketOccupied = ket.occupied.length / n;
+  const ketVirtual = ket.virtual.length / n;
+  const ketExcitations = ketOccupied * ketVirtual;
+  const braOccupied = bra.occupied.length / n;
+  const braVirtual = bra.virtual.length / n;
 
-  // (μν|jb), a row for each excitation, so that the second sweep runs along memory
-  const half = new Float64Array(ketExcitations * pairs);
-  for (let pair = 0; pair < pairs; pair++) {
-    unpackInto(square, n, (other) => repulsion[packedPair(pair, other)]);
-    const block = betweenOrbitals(square, n, ket);
-    for (let jb = 0; jb < ketExcitations; jb++) half[jb * pairs + pair] = block[jb];
-  }
-  const result = new Float64Array(braExcitations * ketExcitations);
-  for (let jb = 0; jb < ketExcitations; jb++) {
-    unpackInto(square, n, (pair) => half[jb * pairs + pair]);
-    const block = betweenOrbitals(square, n, bra);
-    for (let ia = 0; ia < braExcitations; ia++) result[ia * ketExcitations + jb] = block[ia];
-  }
-  return result;
-}
-
-/** Symmetric n×n from a packed triangle. */
-function unpackInto(square: Float64Array, n: number, at: (pair: number) => number): void {
-  for (let mu = 0, pair = 0; mu < n; mu++) {
-    for (let nu = 0; nu <= mu; nu++, pair++) {
-      const value = at(pair);
-      square[mu * n + nu] = value;
-      square[nu * n + mu] = value;
-    }
-  }
-}
-
-/** occupiedᵀ·M·virtual */
-function betweenOrbitals(
-  matrix: Float64Array,
-  n: number,
-  { occupied, virtual }: ExcitationOrbitals,
-): Float64Array {
-  const o = occupied.length / n;
-  const v = virtual.length / n;
-  return multiplyLeftTransposed(occupied, multiply(matrix, virtual, n, n, v), o, n, v);
+  return HalfTransformed.use(pairs, ketExcitations, (half) => {
+    transformMatrices({
+      matrices: rowsOfPacked(repulsion, pairs),
+      n,
+      left: ket.virtual,
+      right: ket.occupied,
+      take: (first, width, results) =>
+        half.keep(first, width, 0, results.subarray(0, ketExcitations * width)),
+    });
+    const result = new Float64Array(braOccupied * braVirtual * ketExcitations);
+    transformMatrices({
+      matrices: half,
+      n,
+      left: bra.virtual,
+      right: bra.occupied,
+      take: (first, width, results) => {
+        for (let a = 0, source = 0; a < braVirtual; a++) {
+          for (let i = 0; i < braOccupied; i++) {
+            const row = (i * braVirtual + a) * ketExcitations;
+            for (let k = 0; k < width; k++) {
+              const [b, j] = [Math.floor((first + k) / ketOccupied), (first + k) % ketOccupied];
+              result[row + j * ketVirtual + b] = results[source++];
+            }
+          }
+        }
+      },
+    });
+    return result;
+  });
 }

@@ -1,4 +1,6 @@
-import { transposedProductInto } from './contraction';
+import { congruence } from '../linear-algebra/dense';
+import { HalfTransformed } from './half-transformed';
+import { rowsOfPacked, transformMatrices } from './matrix-transformation';
 import { type OrbitalIntegrals, packedPair } from './orbital-integrals';
 
 /** Integrals over basis functions and the orbitals to bring them to. */
@@ -25,8 +27,8 @@ export interface OrbitalTransformationInput {
  * Frozen orbitals enter through F = h + Σ_f (2J_f − K_f): the active one-electron part is F, and the core energy is
  * nuclear repulsion + Σ_f (h_ff + F_ff).
  *
- * Cost: two sweeps of O(n⁴·active/2) multiplications, by pairs of indices; besides input and result it holds the
- * half-transformed integrals, n(n + 1)/2 × active(active + 1)/2 numbers.
+ * Cost: two sweeps of O(n⁴·active/2) multiplications, by pairs of indices, the second about half; besides input and
+ * result it holds the half-transformed integrals, n(n + 1)/2 × active(active + 1)/2 numbers.
  */
 export function transformToOrbitals(input: OrbitalTransformationInput): OrbitalIntegrals {
   const { oneElectron, repulsion, coefficients, orbitalCount, frozen, active, nuclearRepulsion } = input;
@@ -62,25 +64,11 @@ export function transformOneElectron(
   n: number,
   m: number,
 ): Float64Array {
-  const result = new Float64Array(m * m);
-  congruenceInto(matrix, coefficients, n, m, new Float64Array(n * m), result);
-  return result;
-}
-
-/** result = CᵀMC for symmetric M; `half` holds MC, n×m. */
-function congruenceInto(
-  matrix: Float64Array,
-  coefficients: Float64Array,
-  n: number,
-  m: number,
-  half: Float64Array,
-  result: Float64Array,
-): void {
-  transposedProductInto(matrix, n, coefficients, m, n, half);
-  transposedProductInto(coefficients, m, half, m, n, result, true);
+  const result = congruence(matrix, coefficients, n, m);
   for (let p = 0; p < m; p++) {
     for (let q = 0; q < p; q++) result[q * m + p] = result[p * m + q];
   }
+  return result;
 }
 
 /** (pq|rs) over orbitals, 8-fold packed. */
@@ -90,98 +78,89 @@ export function transformTwoElectron(
   n: number,
   m: number,
 ): Float64Array {
-  return transformEqualPair(transformFirstPair(repulsion, orbitals, n, m), orbitals, n, m);
+  return transformFirstPair(repulsion, orbitals, n, m, (half) => transformEqualPair(half, orbitals, n));
 }
 
-/** (pq|μν), a row for each orbital pair, so that the second sweep runs along memory. */
-export function transformFirstPair(
+/** Gives `use` the (pq|μν) of all p ≥ q; they end with it. */
+export function transformFirstPair<Result>(
   repulsion: Float64Array,
   orbitals: Float64Array,
   n: number,
   m: number,
-): Float64Array {
+  use: (halfTransformed: HalfTransformed) => Result,
+): Result {
   const functionPairs = (n * (n + 1)) / 2;
-  const orbitalPairs = (m * (m + 1)) / 2;
-  const square = new Float64Array(n * n);
-  const half = new Float64Array(n * m);
-  const transformed = new Float64Array(m * m);
-  const halfTransformed = new Float64Array(orbitalPairs * functionPairs);
-  for (let pair = 0; pair < functionPairs; pair++) {
-    for (let mu = 0, other = 0; mu < n; mu++) {
-      for (let nu = 0; nu <= mu; nu++, other++) {
-        const value = repulsion[packedPair(pair, other)];
-        square[mu * n + nu] = value;
-        square[nu * n + mu] = value;
-      }
-    }
-    congruenceInto(square, orbitals, n, m, half, transformed);
-    for (let p = 0, orbitalPair = 0; p < m; p++) {
-      for (let q = 0; q <= p; q++, orbitalPair++) {
-        halfTransformed[orbitalPair * functionPairs + pair] = transformed[p * m + q];
-      }
-    }
-  }
-  return halfTransformed;
+  return HalfTransformed.use(functionPairs, (m * (m + 1)) / 2, (halfTransformed) => {
+    transformMatrices({
+      matrices: rowsOfPacked(repulsion, functionPairs),
+      n,
+      left: orbitals,
+      right: orbitals,
+      take: (first, width, results) => {
+        for (let p = 0; p < m; p++) {
+          const row = p * m * width;
+          const lowerTriangle = results.subarray(row, row + (p + 1) * width);
+          halfTransformed.keep(first, width, packedPair(p, 0), lowerTriangle);
+        }
+      },
+    });
+    return use(halfTransformed);
+  });
 }
 
 /** (pq|rs) with all four out of the same orbitals, 8-fold packed. */
 export function transformEqualPair(
-  halfTransformed: Float64Array,
+  halfTransformed: HalfTransformed,
   orbitals: Float64Array,
   n: number,
-  m: number,
 ): Float64Array {
-  const orbitalPairs = (m * (m + 1)) / 2;
+  const orbitalPairs = halfTransformed.count;
   const result = new Float64Array((orbitalPairs * (orbitalPairs + 1)) / 2);
-  let at = 0;
-  forSecondPairs(halfTransformed, orbitals, n, m, (orbitalPair, transformed) => {
-    for (let r = 0, other = 0; other <= orbitalPair; r++) {
-      for (let s = 0; s <= r && other <= orbitalPair; s++, other++) result[at++] = transformed[r * m + s];
-    }
+  transformMatrices({
+    matrices: halfTransformed,
+    n,
+    left: orbitals,
+    right: orbitals,
+    // rs ≤ pq, so that r is at most the higher orbital of the last pq
+    orbitalsNeeded: (last) => Math.floor((Math.sqrt(8 * last + 1) - 1) / 2) + 1,
+    take: (first, width, results, columns) => {
+      for (let r = 0, other = 0; r < columns; r++) {
+        for (let s = 0; s <= r; s++, other++) {
+          const source = (r * columns + s) * width;
+          for (let k = Math.max(0, other - first); k < width; k++) {
+            result[packedPair(first + k, other)] = results[source + k];
+          }
+        }
+      }
+    },
   });
   return result;
 }
 
 /** (pq|rs) with r, s out of other orbitals than p, q: pairs × pairs, a row for each pair pq. */
 export function transformOtherPair(
-  halfTransformed: Float64Array,
+  halfTransformed: HalfTransformed,
   orbitals: Float64Array,
   n: number,
   m: number,
 ): Float64Array {
-  const result = new Float64Array(((m * (m + 1)) / 2) ** 2);
-  let at = 0;
-  forSecondPairs(halfTransformed, orbitals, n, m, (_, transformed) => {
-    for (let r = 0; r < m; r++) {
-      for (let s = 0; s <= r; s++) result[at++] = transformed[r * m + s];
-    }
+  const orbitalPairs = halfTransformed.count;
+  const result = new Float64Array(orbitalPairs ** 2);
+  transformMatrices({
+    matrices: halfTransformed,
+    n,
+    left: orbitals,
+    right: orbitals,
+    take: (first, width, results) => {
+      for (let r = 0, other = first * orbitalPairs; r < m; r++) {
+        for (let s = 0; s <= r; s++, other++) {
+          const source = (r * m + s) * width;
+          for (let k = 0; k < width; k++) result[other + k * orbitalPairs] = results[source + k];
+        }
+      }
+    },
   });
   return result;
-}
-
-/** (pq|rs) for all r, s, m×m, one pair pq after another. */
-function forSecondPairs(
-  halfTransformed: Float64Array,
-  orbitals: Float64Array,
-  n: number,
-  m: number,
-  take: (orbitalPair: number, transformed: Float64Array) => void,
-): void {
-  const functionPairs = (n * (n + 1)) / 2;
-  const orbitalPairs = (m * (m + 1)) / 2;
-  const square = new Float64Array(n * n);
-  const half = new Float64Array(n * m);
-  const transformed = new Float64Array(m * m);
-  for (let orbitalPair = 0; orbitalPair < orbitalPairs; orbitalPair++) {
-    for (let mu = 0, source = orbitalPair * functionPairs; mu < n; mu++) {
-      for (let nu = 0; nu <= mu; nu++, source++) {
-        square[mu * n + nu] = halfTransformed[source];
-        square[nu * n + mu] = halfTransformed[source];
-      }
-    }
-    congruenceInto(square, orbitals, n, m, half, transformed);
-    take(orbitalPair, transformed);
-  }
 }
 
 /** Σ_f C_f C_fᵀ over n functions. */

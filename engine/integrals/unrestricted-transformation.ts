@@ -38,16 +38,19 @@ export function transformToSpinOrbitals(input: UnrestrictedTransformationInput):
     input.nuclearRepulsion,
   );
   const [alpha, beta] = orbitals;
-  const alphaHalf = transformFirstPair(repulsion, alpha, n, active);
+  const [alphaPairs, mixed] = transformFirstPair(repulsion, alpha, n, active, (half) => [
+    transformEqualPair(half, alpha, n),
+    transformOtherPair(half, beta, n, active),
+  ]);
   return {
     orbitalCount: active,
     coreEnergy,
     oneElectron: transformOneElectron(fields[0], alpha, n, active),
-    twoElectron: transformEqualPair(alphaHalf, alpha, n, active),
+    twoElectron: alphaPairs,
     beta: {
       oneElectron: transformOneElectron(fields[1], beta, n, active),
       twoElectron: transformTwoElectron(repulsion, beta, n, active),
-      mixed: transformOtherPair(alphaHalf, beta, n, active),
+      mixed,
       overlap: multiplyLeftTransposed(coefficients[0], multiply(overlap, coefficients[1], n, n, m), m, n, m),
       frozen,
     },

@@ -34,6 +34,16 @@ export class KernelMemory {
     return { address, view: new Float64Array(this.wasm.buffer, address, length) };
   }
 
+  /** The same, or nothing where it does not fit. */
+  float64IfThereIsRoom(length: number): Block<Float64Array> | undefined {
+    try {
+      return this.float64(length);
+    } catch (error) {
+      if (error instanceof KernelMemoryFull) return undefined;
+      throw error;
+    }
+  }
+
   /** @throws KernelMemoryFull */
   int32(length: number): Block<Int32Array> {
     const address = this.#take(4 * length);

@@ -4,14 +4,15 @@ import type { KernelMemory } from './kernel-memory';
 
 /** Exports of assembly/matrix-product.ts: addresses, counts, and strides in numbers. */
 interface MatrixProductKernels {
-  /** of the memory that `addProduct` works in, whatever the sizes */
+  /** of the memory that `productInto` works in, whatever the sizes */
   productWorkBytes(): number;
   /**
-   * C += factor·A·B with A rows×inner and B inner×columns, C row-major. Element (i, k) of A stands at
-   * i·aRow + k·aInner, element (k, j) of B at k·bInner + j·bColumn.
+   * C = factor·A·B, or C += factor·A·B, with A rows×inner and B inner×columns, C row-major. Element (i, k) of A
+   * stands at i·aRow + k·aInner, element (k, j) of B at k·bInner + j·bColumn.
    */
-  addProduct(
+  productInto(
     work: number,
+    isAdded: boolean,
     factor: number,
     c: number,
     a: number,
@@ -45,24 +46,32 @@ export function transposed({ address, row, column }: PlacedMatrix): PlacedMatrix
   return { address, row: column, column: row };
 }
 
-/** C += factor·A·B with C row-major (`column` 1), A rows×inner, B inner×columns, all in one memory. */
-export type AddProduct = (
+export interface ProductOptions {
+  /** default 1 */
+  readonly factor?: number;
+  /** to what stands there; default false */
+  readonly isAdded?: boolean;
+}
+
+/** C = factor·A·B with C row-major (`column` 1), A rows×inner, B inner×columns, all in one memory. */
+export type ProductInto = (
   c: PlacedMatrix,
   a: PlacedMatrix,
   b: PlacedMatrix,
   rows: number,
   inner: number,
   columns: number,
-  factor?: number,
+  options?: ProductOptions,
 ) => void;
 
 /** The product in a memory; takes the block that it works in from there. */
-export function productIn(memory: KernelMemory): AddProduct {
+export function productIn(memory: KernelMemory): ProductInto {
   const kernels = matrixProductKernels(memory);
   const { address: work } = memory.float64(kernels.productWorkBytes() / 8);
-  return (c, a, b, rows, inner, columns, factor = 1) => {
-    kernels.addProduct(
+  return (c, a, b, rows, inner, columns, { factor = 1, isAdded = false } = {}) => {
+    kernels.productInto(
       work,
+      isAdded,
       factor,
       c.address,
       a.address,

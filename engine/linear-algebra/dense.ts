@@ -94,14 +94,19 @@ function fastProduct(
 ): Float64Array {
   const memory = scratchMemory();
   return memory.scope(() => {
-    const addProduct = productIn(memory);
+    const productInto = productIn(memory);
     const left = memory.float64(rows * inner);
     const right = memory.float64(inner * columns);
     const product = memory.float64(rows * columns);
     left.view.set(a);
     right.view.set(b);
-    product.view.fill(0);
-    addProduct(rowsAt(product.address, columns), ...place(left.address, right.address), rows, inner, columns);
+    productInto(
+      rowsAt(product.address, columns),
+      ...place(left.address, right.address),
+      rows,
+      inner,
+      columns,
+    );
     return product.view.slice();
   });
 }

@@ -14,17 +14,18 @@ const INNER_BLOCK: i32 = 192;
 const ROW_BLOCK: i32 = 96;
 const COLUMN_BLOCK: i32 = 384;
 
-/** Bytes of `work` that `addProduct` needs. */
+/** Bytes of `work` that `productInto` needs. */
 export function productWorkBytes(): i32 {
   return ((ROW_BLOCK + COLUMN_BLOCK) * INNER_BLOCK + TILE * TILE) << 3;
 }
 
 /**
- * C += factor·A·B with A rows×inner and B inner×columns, C row-major. Element (i, k) of A stands at
+ * C = factor·A·B, or C += factor·A·B, with A rows×inner and B inner×columns, C row-major. Element (i, k) of A stands at
  * i·aRow + k·aInner numbers, element (k, j) of B at k·bInner + j·bColumn: transposed factors are a matter of strides.
  */
-export function addProduct(
+export function productInto(
   work: usize,
+  isAdded: bool,
   factor: f64,
   c: usize,
   a: usize,
@@ -38,6 +39,9 @@ export function addProduct(
   bInner: i32,
   bColumn: i32,
 ): void {
+  if (inner === 0 && !isAdded) {
+    for (let i = 0; i < rows; i++) memory.fill(place(c, i, cRow, 0, 1), 0, (<usize>columns) << 3);
+  }
   const packedA = work + ((TILE * TILE) << 3);
   const packedB = packedA + (<usize>(ROW_BLOCK * INNER_BLOCK) << 3);
   for (let j = 0; j < columns; j += COLUMN_BLOCK) {
@@ -48,7 +52,17 @@ export function addProduct(
       for (let i = 0; i < rows; i += ROW_BLOCK) {
         const height = min(ROW_BLOCK, rows - i);
         packStrips(packedA, place(a, i, aRow, k, aInner), height, depth, aRow, aInner, factor);
-        addBlock(work, place(c, i, cRow, j, 1), packedA, packedB, height, depth, width, (<usize>cRow) << 3);
+        tiles(
+          work,
+          isAdded || k > 0,
+          place(c, i, cRow, j, 1),
+          packedA,
+          packedB,
+          height,
+          depth,
+          width,
+          (<usize>cRow) << 3,
+        );
       }
     }
   }
@@ -122,8 +136,9 @@ function packStrips(
   }
 }
 
-function addBlock(
+function tiles(
   edge: usize,
+  isAdded: bool,
   c: usize,
   packedA: usize,
   packedB: usize,
@@ -139,11 +154,10 @@ function addBlock(
       const target = c + <usize>i * cBytes + ((<usize>j) << 3);
       const isWhole = height - i >= TILE && width - j >= TILE;
       if (isWhole) {
-        addTile(target, cBytes, strip, packedB, depth);
+        tile(target, cBytes, strip, packedB, depth, isAdded);
       } else {
-        memory.fill(edge, 0, (TILE * TILE) << 3);
-        addTile(edge, TILE << 3, strip, packedB, depth);
-        addPart(target, cBytes, edge, min(TILE, height - i), min(TILE, width - j));
+        tile(edge, TILE << 3, strip, packedB, depth, false);
+        part(target, cBytes, edge, min(TILE, height - i), min(TILE, width - j), isAdded);
       }
       strip += stripBytes;
     }
@@ -152,20 +166,21 @@ function addBlock(
 }
 
 /** The part of a tile that lies inside the matrix. */
-function addPart(target: usize, bytes: usize, tile: usize, rows: i32, columns: i32): void {
+function part(target: usize, bytes: usize, tile: usize, rows: i32, columns: i32, isAdded: bool): void {
   for (let i = 0; i < rows; i++) {
     for (let j = 0; j < columns; j++) {
       const at = target + <usize>i * bytes + ((<usize>j) << 3);
-      store<f64>(at, load<f64>(at) + load<f64>(tile + ((<usize>(TILE * i + j)) << 3)));
+      const value = load<f64>(tile + ((<usize>(TILE * i + j)) << 3));
+      store<f64>(at, isAdded ? load<f64>(at) + value : value);
     }
   }
 }
 
 /**
- * The 4×4 elements at c: += strip of A times strip of B. Not unrolled: the compiler would load everything first and
+ * The 4×4 elements at c become, or grow by, strip of A times strip of B. Not unrolled: the compiler would load everything first and
  * run out of registers.
  */
-function addTile(c: usize, cBytes: usize, a: usize, b: usize, depth: i32): void {
+function tile(c: usize, cBytes: usize, a: usize, b: usize, depth: i32, isAdded: bool): void {
   let c00 = f64x2.splat(0);
   let c01 = c00;
   let c10 = c00;
@@ -193,6 +208,20 @@ function addTile(c: usize, cBytes: usize, a: usize, b: usize, depth: i32): void 
     c31 = f64x2.add(c31, f64x2.mul(x, b1));
     a += 32;
     b += 32;
+  }
+  if (!isAdded) {
+    v128.store(c, c00);
+    v128.store(c, c01, 16);
+    c += cBytes;
+    v128.store(c, c10);
+    v128.store(c, c11, 16);
+    c += cBytes;
+    v128.store(c, c20);
+    v128.store(c, c21, 16);
+    c += cBytes;
+    v128.store(c, c30);
+    v128.store(c, c31, 16);
+    return;
   }
   v128.store(c, f64x2.add(v128.load(c), c00));
   v128.store(c, f64x2.add(v128.load(c, 16), c01), 16);

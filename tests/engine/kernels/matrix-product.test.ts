@@ -1,22 +1,21 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { KernelMemory } from '../../../engine/kernels/kernel-memory';
-import { productIn, rowsAt, transposed } from '../../../engine/kernels/matrix-product';
+import { type ProductOptions, productIn, rowsAt, transposed } from '../../../engine/kernels/matrix-product';
 import { relativeDifference } from '../../support/kernel-forms';
 import { randomArray, seededRandom } from '../../support/random';
 
 const memory = new KernelMemory();
-const addProduct = productIn(memory);
+const productInto = productIn(memory);
 
-/** C + factor·A·B, element by element from the definition. */
+/** factor·A·B, element by element from the definition, added to `sum`. */
 function byDefinition(
-  c: Float64Array,
+  sum: Float64Array,
   elementA: (i: number, k: number) => number,
   elementB: (k: number, j: number) => number,
   [rows, inner, columns]: readonly number[],
   factor: number,
 ): Float64Array {
-  const sum = c.slice();
   for (let i = 0; i < rows; i++) {
     for (let j = 0; j < columns; j++) {
       for (let k = 0; k < inner; k++) sum[i * columns + j] += factor * elementA(i, k) * elementB(k, j);
@@ -29,7 +28,7 @@ function expectProduct(
   sizes: readonly [number, number, number],
   turnA: boolean,
   turnB: boolean,
-  factor: number,
+  options: ProductOptions,
   seed: number,
 ): void {
   const [rows, inner, columns] = sizes;
@@ -43,29 +42,30 @@ function expectProduct(
     const behind = memory.float64(8);
     behind.view.fill(3);
     const expected = byDefinition(
-      c.view,
+      options.isAdded ? c.view.slice() : new Float64Array(rows * columns),
       (i, k) => a.view[turnA ? k * rows + i : i * inner + k],
       (k, j) => b.view[turnB ? j * inner + k : k * columns + j],
       sizes,
-      factor,
+      options.factor ?? 1,
     );
     const placedA = turnA ? transposed(rowsAt(a.address, rows)) : rowsAt(a.address, inner);
     const placedB = turnB ? transposed(rowsAt(b.address, inner)) : rowsAt(b.address, columns);
-    addProduct(rowsAt(c.address, columns), placedA, placedB, ...sizes, factor);
+    productInto(rowsAt(c.address, columns), placedA, placedB, ...sizes, options);
     expect(relativeDifference(c.view.slice(), expected)).toBeLessThan(1e-13);
     expect(behind.view.every((value) => value === 3)).toBe(true);
   });
 }
 
-describe('addProduct', () => {
-  it('independent: C + factor·A·B of any sizes and transpositions is its definition', () => {
+describe('productInto', () => {
+  it('independent: C = factor·A·B and C += factor·A·B of any sizes and transpositions is its definition', () => {
     const size = fc.integer({ min: 1, max: 19 });
+    const inner = fc.integer({ min: 0, max: 19 });
     fc.assert(
       fc.property(
-        fc.tuple(size, size, size),
+        fc.tuple(size, inner, size),
         fc.boolean(),
         fc.boolean(),
-        fc.constantFrom(1, -1, 0.3),
+        fc.record({ factor: fc.constantFrom(1, -1, 0.3), isAdded: fc.boolean() }),
         fc.integer(),
         expectProduct,
       ),
@@ -79,8 +79,8 @@ describe('addProduct', () => {
     [5, 6, 800],
     [101, 203, 405],
   ])('independent: the same beyond one block, %i × %i × %i', (...sizes) => {
-    expectProduct(sizes, false, false, 1, 3);
-    expectProduct(sizes, true, true, -1, 4);
+    expectProduct(sizes, false, false, {}, 3);
+    expectProduct(sizes, true, true, { factor: -1, isAdded: true }, 4);
   });
 
   it('identity: only the part of a larger matrix that was named is touched', () => {
@@ -92,14 +92,9 @@ describe('addProduct', () => {
       });
       c.view.fill(0.5);
       // rows 1 … 5 and columns 2 … 6 of a 7×9 matrix
-      addProduct(
-        { ...rowsAt(c.address + 8 * (9 + 2), 9) },
-        rowsAt(a.address, 3),
-        rowsAt(a.address, 5),
-        5,
-        3,
-        5,
-      );
+      productInto(rowsAt(c.address + 8 * (9 + 2), 9), rowsAt(a.address, 3), rowsAt(a.address, 5), 5, 3, 5, {
+        isAdded: true,
+      });
       c.view.forEach((value, place) => {
         const [i, j] = [Math.floor(place / 9) - 1, (place % 9) - 2];
         let sum = 0.5;
