@@ -39,7 +39,9 @@ export function fragmentEnergy(
       : asked;
   if (!preparation.ok) return undefined;
   const [{ name: level }] = preparation.prepared.levels;
-  const result = computePoint(preparation.prepared, null, { describesStates: false, control }).result.levels[level];
+  const result = computePoint(preparation.prepared, null, { describesStates: false, control }).result.levels[
+    level
+  ];
   if (!('energy' in result)) return undefined;
   // of determinants with equal spins up the lowest CI state may be one of higher spin
   const found =

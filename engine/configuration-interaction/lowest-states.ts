@@ -7,7 +7,7 @@ import {
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import { inStage } from '../stages';
 import type { RunControl } from '../termination';
-import { type DistinguishingOperator, makeDegenerateStatesDefinite } from './degenerate-states';
+import { type DistinguishingOperator, makeDegenerateStatesDefinite, splitRuns } from './degenerate-states';
 import {
   buildModelSpace,
   chooseGuesses,
@@ -29,6 +29,8 @@ export interface StateProblem {
   /** parts of a vector that H does not join, as far as the iteration must keep them apart; default: the whole */
   partsOf?(vector: Float64Array): readonly Float64Array[];
   elementsAmong(places: Int32Array): ModelElements;
+  /** place of the basis state that others are excited from, where there is one */
+  readonly reference?: number;
   /** how degenerate states are told apart */
   readonly distinguishing: readonly DistinguishingOperator[];
 }
@@ -50,6 +52,8 @@ export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iteratio
 export const MODEL_SPACE_SIZE = 300;
 /** Energies this close, in hartree, are not put in order. */
 const SAME_ENERGY = 1e-9;
+/** Of two degenerate states only one can have the symmetry of the reference; smaller differences of weight are rounding. */
+const MORE_WEIGHT = 1e-6;
 /** Below the model's lowest energy, hartree: what lies higher by this much keeps a quarter of its weight. */
 const PROBE_SHIFT = 0.5;
 /** Model vectors per state wanted, at least. */
@@ -82,7 +86,7 @@ export function findLowestStates(given: StateProblem, settings: StateSettings): 
   const found = isWhole ? takeLowest(model, settings.states) : iterate(problem, model, settings);
   makeDegenerateStatesDefinite(found.values, found.vectors, DEGENERACY_TOLERANCE, problem.distinguishing);
 
-  const order = orderByEnergy(found.values).slice(0, settings.states);
+  const order = orderStates(found, problem.reference).slice(0, settings.states);
   return {
     ...found,
     values: Float64Array.from(order, (k) => found.values[k]),
@@ -90,13 +94,26 @@ export function findLowestStates(given: StateProblem, settings: StateSettings): 
   };
 }
 
-/** Rising, but degenerate neighbours stay as they are: rounding must not choose between them. */
-function orderByEnergy(energies: Float64Array): number[] {
+/**
+ * Rising. Of degenerate neighbours the one that holds the reference stands first, as weights and corrections are told of
+ * it; the others stay as they are: rounding must not choose between them.
+ */
+function orderStates(
+  { values: energies, vectors }: Pick<LowestStates, 'values' | 'vectors'>,
+  reference: number | undefined,
+): number[] {
   const order = Array.from(energies.keys());
   for (let last = 1; last < order.length; last++) {
     for (let k = last; k > 0 && energies[order[k - 1]] > energies[order[k]] + SAME_ENERGY; k--) {
       [order[k - 1], order[k]] = [order[k], order[k - 1]];
     }
+  }
+  if (reference === undefined) return order;
+  const ordered = order.map((k) => energies[k]);
+  const weights = order.map((k) => vectors[k][reference] ** 2);
+  for (const { first, last } of splitRuns([{ first: 0, last: order.length }], ordered, SAME_ENERGY)) {
+    const holder = weights.indexOf(Math.max(...weights.slice(first, last)), first);
+    if (weights[holder] > weights[first] + MORE_WEIGHT) order.splice(first, 0, ...order.splice(holder, 1));
   }
   return order;
 }

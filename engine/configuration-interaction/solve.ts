@@ -108,6 +108,7 @@ export function solveConfigurationInteraction(
               : spinSquaredElement(determinants[i], determinants[j]),
         };
       },
+      reference: 0,
       distinguishing: distinguishingOperators(space, symmetry, beta),
     },
     { ...settings, stage: 'configuration interaction' },

@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import type { HartreeFockResult } from '#engine';
+import type { HartreeFockResult, Study, StudyAtom } from '#engine';
 import { placeBasis } from '../../../engine/basis/place-basis';
 import { type EnergyParts, energyParts } from '../../../engine/calculation/energy-parts';
 import { molecularIntegrals } from '../../../engine/calculation/molecular-integrals';
+import { transformToOrbitals } from '../../../engine/integrals/orbital-transformation';
 import { atom, compute, correlated, hartreeFock, prepare, study, waterAtoms } from '../../support/studies';
 
 function total(parts: EnergyParts): number {
@@ -94,6 +95,71 @@ describe('energyParts', () => {
         expect(Math.abs(field[key]! - full[key]!), key).toBeLessThan(1e-9);
       }
     }
+  });
+});
+
+describe('Coulomb, exchange and correlation of the repulsion', () => {
+  const split = ({ coulomb, exchange, correlation, electronRepulsion, exchangeCorrelation }: EnergyParts) => {
+    expect(Math.abs(coulomb + exchange! + correlation! - electronRepulsion)).toBeLessThan(1e-11);
+    expect(Math.abs(exchange! + correlation! - exchangeCorrelation)).toBeLessThan(1e-11);
+    return { coulomb, exchange: exchange!, correlation: correlation! };
+  };
+  const open = (atoms: StudyAtom[], multiplicity: number, changes: Partial<Study> = {}): Study => ({
+    ...study(atoms, { levels: ['ROHF', 'UHF', 'CISD'], ...changes }),
+    molecule: { unit: 'bohr', atoms, multiplicity },
+  });
+
+  it('identity: a determinant has no correlation: RHF, ROHF, UHF, however far its spins part', () => {
+    const closed = compute(study(waterAtoms(3.4, 104), { levels: ['RHF', 'UHF'] }));
+    const radical = compute(open([atom('O'), atom('H', 0, 0, 2)], 2));
+    for (const result of [closed.levels.RHF, closed.levels.UHF, radical.levels.ROHF, radical.levels.UHF]) {
+      const { exchange, correlation } = split((result as HartreeFockResult).energyParts!);
+      expect(Math.abs(correlation)).toBeLessThan(1e-8);
+      expect(exchange).toBeLessThan(-1);
+    }
+  });
+
+  it('identity: correlation lowers the repulsion at every CI level, with either orbitals', () => {
+    for (const orbitals of ['restricted', 'unrestricted'] as const) {
+      const point = compute(open([atom('O'), atom('H', 0, 0, 2)], 2, { orbitals, frozenCore: true }));
+      expect(split(correlated(point, 'CISD').energyParts!).correlation).toBeLessThan(-0.01);
+    }
+  });
+
+  it('identity: two electrons of equal spin in two orbitals: one determinant, no correlation', () => {
+    const point = compute(open([atom('H'), atom('H', 0, 0, 2)], 3, { levels: ['FCI'] }));
+    expect(Math.abs(split(correlated(point).energyParts!).correlation)).toBeLessThan(1e-10);
+  });
+
+  it('independent: H2 in a minimal basis: from the three integrals over its orbitals and c²', () => {
+    const point = compute(study([atom('H'), atom('H', 0, 0, 2)], { levels: ['RHF', 'FCI'] }));
+    const prepared = prepare(study([atom('H'), atom('H', 0, 0, 2)], { levels: ['FCI'] }));
+    const molecule = prepared.moleculeAt(null);
+    const { problem } = molecularIntegrals(molecule, placeBasis(prepared.basisSet, molecule));
+    const s = problem.overlap[1]!;
+    const [a, b] = [1 / Math.sqrt(2 + 2 * s), 1 / Math.sqrt(2 - 2 * s)];
+    const { twoElectron } = transformToOrbitals({
+      oneElectron: problem.coreHamiltonian,
+      repulsion: problem.repulsion,
+      coefficients: Float64Array.of(a, b, a, -b),
+      orbitalCount: 2,
+      frozen: 0,
+      active: 2,
+      nuclearRepulsion: 0,
+    });
+    // (11|11), (22|11), (21|21), (22|22)
+    const [J11, J12, K12, J22] = [twoElectron[0]!, twoElectron[3]!, twoElectron[2]!, twoElectron[5]!];
+    const { energyParts, naturalOccupations } = correlated(point);
+    const [n1, n2] = naturalOccupations;
+    const { coulomb, exchange, correlation } = split(energyParts!);
+    expect(Math.abs(coulomb - (n1! ** 2 * J11 + n2! ** 2 * J22 + 2 * n1! * n2! * J12) / 2)).toBeLessThan(
+      1e-9,
+    );
+    expect(Math.abs(exchange + (n1! ** 2 * J11 + n2! ** 2 * J22 + 2 * n1! * n2! * K12) / 4)).toBeLessThan(
+      1e-9,
+    );
+    const repulsion = (n1! * J11 + n2! * J22) / 2 - Math.sqrt(n1! * n2!) * K12;
+    expect(Math.abs(coulomb + exchange + correlation - repulsion)).toBeLessThan(1e-9);
   });
 });
 
