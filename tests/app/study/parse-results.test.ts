@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
-import type { CorrelatedState, StudyResults } from '#engine';
+import { type CorrelatedState, computePoint, findLevelMinimum, type StudyResults } from '#engine';
 import { parseResults } from '../../../app/study/parse-results';
+import { atom, prepare, study } from '../../support/studies';
 
 const STATE: CorrelatedState = {
   energy: -2.85,
@@ -133,6 +134,30 @@ describe('parseResults', () => {
   it('opens files of earlier versions, whose states are not joined to curves', () => {
     const { curves: _curves, ...earlier } = RESULTS;
     expect(parseResults(JSON.stringify(earlier))).toEqual({ ok: true, results: earlier });
+  });
+
+  it('reads computed levels as they are: parts of energies, natural orbitals, the loss of the reference', () => {
+    const prepared = prepare({
+      ...study([atom('H'), atom('H', 0, 0, 1.4)], { levels: ['RHF', 'MP2', 'CISD'], states: 3 }),
+      scan: { coordinate: { bonds: [[0, 1]] }, values: [1.4, 6] },
+    });
+    const points = prepared.coordinates.map((coordinate) => computePoint(prepared, coordinate).result);
+    const { referenceWeight } = findLevelMinimum(prepared, 'CISD', points);
+    expect(referenceWeight?.kind).toBe('found');
+    expect(points[0]!.levels.CISD).toHaveProperty('correlationParts');
+    expect(points[0]!.levels.CISD).toHaveProperty('naturalOrbitals');
+    const results = {
+      ...RESULTS,
+      points,
+      findings: { CISD: { ...RESULTS.findings.CISD, referenceWeight: referenceWeight! } },
+    } as StudyResults;
+    const text = JSON.stringify(results);
+    expect(parseResults(text)).toEqual({ ok: true, results: JSON.parse(text) });
+    const damaged = text.replace('"byRank":[', '"byRank":[7,');
+    expect(parseResults(damaged)).toMatchObject({
+      ok: false,
+      issues: [{ place: 'points[0].levels.CISD.correlationParts.byRank[0]' }],
+    });
   });
 
   it('keeps keys that a later version may have added', () => {

@@ -60,6 +60,7 @@ describe('parseStudy', () => {
       { active: { electrons: 8, orbitals: 8 } },
       { orbitals: 'unrestricted' },
       { orbitals: 'restricted' },
+      { findings: { referenceWeight: 0.8, naturalOrbitals: true } },
     ];
     for (const change of changes) expect(brief(change)).toEqual([]);
   });
@@ -76,6 +77,13 @@ describe('parseStudy', () => {
 
   it('refuses orbitals that are neither restricted nor unrestricted', () => {
     expect(brief({ orbitals: 'UHF' })).toHaveLength(1);
+  });
+
+  it('refuses findings that are not what they must be', () => {
+    expect(brief({ findings: { referenceWeight: '90 %' } })).toEqual([
+      'study.value at findings.referenceWeight',
+    ]);
+    expect(brief({ findings: { naturalOrbitals: 1 } })).toEqual(['study.value at findings.naturalOrbitals']);
   });
 
   it('says place, expectation, value and line of a wrong value', () => {
@@ -121,6 +129,12 @@ describe('parseStudy', () => {
     ]);
     expect(brief({ basis: { name: 'STO-3G' } })).toEqual(['study.value at basis']);
     expect(brief({ convergence: { enrgy: 1 } })).toEqual(['study.unknownKey at convergence.enrgy']);
+    expect(issuesWith({ findings: { referenceWieght: 0.8 } })).toMatchObject([
+      {
+        place: 'findings.referenceWieght',
+        remedy: 'Write “referenceWeight” if that is meant, or remove it.',
+      },
+    ]);
   });
 
   it('collects all issues of a file', () => {

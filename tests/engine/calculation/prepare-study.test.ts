@@ -43,6 +43,15 @@ describe('prepareStudy', () => {
       'scan.count scan.count',
     ]);
   });
+
+  it('identity: a threshold of the reference weight must lie between 0 and 1', () => {
+    for (const referenceWeight of [0, 1, 90, -0.5, Number.NaN]) {
+      expect(placesOf(study(H2, { findings: { referenceWeight } }))).toEqual([
+        'study.referenceWeight findings.referenceWeight',
+      ]);
+    }
+    expect(placesOf(study(H2, { findings: { referenceWeight: 0.5 } }))).toEqual([]);
+  });
 });
 
 describe('prepareStudy in further bases', () => {
