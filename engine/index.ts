@@ -12,6 +12,7 @@ export type {
   LimitFormula,
   StudyInBasis,
 } from './calculation/basis-comparison';
+export { basisSetLimit } from './calculation/basis-set-limit';
 export { LOW_REFERENCE_WEIGHT, type SolutionCrossing, studyCautions } from './calculation/cautions';
 export {
   type ComputedPoint,
@@ -99,6 +100,7 @@ export type {
   StudyMolecule,
   StudyScan,
 } from './calculation/study';
+export { studiesInBases, studyInBasis } from './calculation/study-in-basis';
 export type { CorrelationParts } from './configuration-interaction/correlation-parts';
 export type { OrbitalPart, PairPart, ProjectedEnergy } from './configuration-interaction/projected-energy';
 export type { RankPart } from './configuration-interaction/rank-parts';

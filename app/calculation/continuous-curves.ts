@@ -8,6 +8,8 @@ const mostRounds = (points: number) => points;
 
 interface Following {
   readonly prepared: PreparedStudy;
+  /** which of the study's bases it is prepared in */
+  readonly basis: number;
   readonly points: readonly FinishedPoint[];
   readonly pool: WorkerPool;
   /** a point computed anew, in a lower solution than before */
@@ -27,6 +29,7 @@ interface Following {
  */
 export async function makeCurvesContinuous({
   prepared,
+  basis,
   points,
   pool,
   onImproved,
@@ -52,6 +55,7 @@ export async function makeCurvesContinuous({
       return {
         request: () => ({
           kind: 'follow',
+          basis,
           index,
           own: before[index]?.carry,
           neighbours: neighbours.flatMap((other) => before[other]?.carry ?? []),

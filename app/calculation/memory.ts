@@ -35,7 +35,10 @@ export function affordableWorkers(
   budget: number = memoryBudget(),
 ): Workers {
   const points = Math.min(wanted, prepared.coordinates.length);
-  const bytes = Math.max(...explainStudy(prepared).levels.map((level) => level.bytes));
+  const bases = [prepared, ...prepared.furtherBases];
+  const bytes = Math.max(
+    ...bases.flatMap((inBasis) => explainStudy(inBasis).levels.map((level) => level.bytes)),
+  );
   const count = Math.max(1, Math.min(points, Math.floor(budget / (bytes + WORKER_BYTES))));
   if (count === points) return { count: wanted };
   return {

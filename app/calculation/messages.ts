@@ -16,9 +16,10 @@ export interface WorkerStart {
   readonly isTimed?: boolean;
 }
 
-/** What a worker is asked for. */
-export type WorkerRequest =
-  /** points in this order, each starting from the one before it, the first from `guess` */
+/** What a worker is asked for; `basis` is 0 for the study's own, then come the further ones in its order. */
+export type WorkerRequest = {
+  readonly basis: number;
+} /** points in this order, each starting from the one before it, the first from `guess` */ & (
   | { readonly kind: 'points'; readonly indices: readonly number[]; readonly guess?: PointCarry | undefined }
   /** the neighbours' solutions at a point that is known already */
   | {
@@ -27,12 +28,15 @@ export type WorkerRequest =
       readonly own?: PointCarry | undefined;
       readonly neighbours: readonly PointCarry[];
     }
-  | {
-      readonly kind: 'minimum';
-      readonly level: string;
-      readonly points: readonly PointResult[];
-      readonly left: readonly (PointCarry | undefined)[];
-    };
+  | ({ readonly kind: 'minimum'; readonly level: string } & ComputedCurve)
+);
+
+/** The points of a study in one basis. */
+export interface ComputedCurve {
+  readonly points: readonly PointResult[];
+  /** what each of them left */
+  readonly left: readonly (PointCarry | undefined)[];
+}
 
 /** A computed point with what its neighbour starts from, if it gave something to start from. */
 export interface FinishedPoint {

@@ -1,10 +1,24 @@
+export type Stage = 'points' | 'neighbours' | 'minima' | 'limit';
+
 export interface Progress {
-  readonly stage: 'points' | 'neighbours' | 'minima';
+  readonly stage: Stage;
+  /** of a study in several bases, which one this is of; absent for what concerns all of them */
+  readonly basis?: BasisOfMany;
   readonly done: number;
   readonly total: number;
   /** absent as long as it cannot be estimated */
   readonly secondsLeft?: number;
 }
+
+export interface BasisOfMany {
+  readonly name: string;
+  /** counted from 1 */
+  readonly number: number;
+  readonly of: number;
+}
+
+/** Begins to follow a stage of so many pieces. */
+export type Track = (stage: Stage, total: number, done?: number) => ProgressTracker;
 
 /** Follows one stage of a calculation. */
 export interface ProgressTracker {
@@ -18,13 +32,25 @@ const HEARTBEAT_MS = 1000;
 
 /** Tells `onProgress` at once, at every finished piece, and every second in between. */
 export function trackProgress(
-  { stage, total, done, workers }: Pick<Progress, 'stage' | 'total' | 'done'> & { readonly workers: number },
+  {
+    stage,
+    total,
+    done,
+    workers,
+    basis,
+  }: Pick<Progress, 'stage' | 'total' | 'done' | 'basis'> & { readonly workers: number },
   onProgress: (progress: Progress) => void = () => undefined,
 ): ProgressTracker {
   const timeLeft = estimateTimeLeft(workers);
   const report = () => {
     const secondsLeft = timeLeft.secondsLeft(total - done);
-    onProgress({ stage, done, total, ...(secondsLeft !== undefined && { secondsLeft }) });
+    onProgress({
+      stage,
+      done,
+      total,
+      ...(basis && { basis }),
+      ...(secondsLeft !== undefined && { secondsLeft }),
+    });
   };
   const heartbeat = setInterval(report, HEARTBEAT_MS);
   report();

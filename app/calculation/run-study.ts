@@ -1,25 +1,22 @@
 import { availableParallelism } from 'node:os';
 import {
+  basisSetLimit,
   describeBasisUsed,
-  type LevelFindings,
   measuredFor,
-  type PointResult,
   type PreparedStudy,
-  type SolutionCrossing,
   type StudyResults,
   studyCautions,
+  studyInBasis,
 } from '#engine';
 import type { SerializedError } from '../contract/requests';
 import type { CacheSettings } from './cache-settings';
-import { makeCurvesContinuous } from './continuous-curves';
-import { coordinateText } from './coordinate-text';
 import type { Finding, FinishedPoint, WorkerStart } from './messages';
-import { planRuns, type Run } from './plan';
 import { PROGRAM } from './program';
 import { type Progress, trackProgress } from './progress';
+import { type CurvesInBasis, runInBasis } from './run-in-basis';
 import type { StageTime } from './stage-clock';
 import { crossingCautions, stateCurves } from './state-curves';
-import { CalculationFailure, openPool, PoolClosed, type Task, type WorkerPool } from './worker-pool';
+import { CalculationFailure, openPool, PoolClosed } from './worker-pool';
 import { type StartWorker, startWorkerThread } from './worker-thread';
 
 export interface RunInput {
@@ -33,14 +30,14 @@ export interface RunOptions {
   readonly workers?: number;
   /**
    * called for every point as it is computed, in no particular order, not for those in `finished`; again for a
-   * point that a neighbour's orbitals led to a lower solution
+   * point that a neighbour's orbitals led to a lower solution. Indices count on through the further bases of a study
    */
   readonly onPoint?: (index: number, point: FinishedPoint) => void;
   /** called at every step, and every second in between */
   readonly onProgress?: (progress: Progress) => void;
   /** ends the calculation at once, in the middle of a point */
   readonly signal?: AbortSignal;
-  /** points known from before, by index: they are not computed again */
+  /** points known from before, by the same index: they are not computed again */
   readonly finished?: ReadonlyMap<number, FinishedPoint>;
   readonly startWorker?: StartWorker;
   /** where points are looked up and kept; absent: nowhere */
@@ -60,8 +57,7 @@ export type RunOutcome =
   | { readonly kind: 'failed'; readonly error: SerializedError };
 
 /**
- * Computes a study on all cores: first the points, then what their neighbours' solutions lead to, then each level's
- * minimum.
+ * Computes a study on all cores, in one basis after the other.
  *
  * The results depend neither on the number of workers nor on which points were known before (see plan.ts).
  *
@@ -90,17 +86,27 @@ export async function runStudy(
   );
   signal?.addEventListener('abort', pool.close, { once: true });
   try {
-    const computed = await computePoints(prepared, pool, workers, options);
-    const { points, crossings } = await makeCurvesContinuous({
-      prepared,
-      points: computed,
-      pool,
-      onImproved: (index, point) => options.onPoint?.(index, point),
-      onRound: (total) => trackProgress({ stage: 'neighbours', total, done: 0, workers }, options.onProgress),
-    });
-    const results = points.map(({ result }) => result);
-    const findings = await findMinima(prepared, points, pool, workers, options.onProgress);
-    return { kind: 'done', results: assemble(prepared, results, findings, crossings), keptPoints };
+    const bases = [prepared, ...prepared.furtherBases];
+    const computed: CurvesInBasis[] = [];
+    for (const [basis, inBasis] of bases.entries()) {
+      const ofMany = { name: inBasis.basisSet.name, number: basis + 1, of: bases.length };
+      const first = basis * prepared.coordinates.length;
+      computed.push(
+        await runInBasis({
+          prepared: inBasis,
+          basis,
+          pool,
+          finished: pointsFrom(first, options.finished, inBasis),
+          onPoint: (index, point) => options.onPoint?.(first + index, point),
+          track: (stage, total, done = 0) =>
+            trackProgress(
+              { stage, total, done, workers, ...(bases.length > 1 && { basis: ofMany }) },
+              options.onProgress,
+            ),
+        }),
+      );
+    }
+    return { kind: 'done', results: assemble(prepared, computed), keptPoints };
   } catch (error) {
     if (error instanceof PoolClosed) return { kind: 'cancelled' };
     if (error instanceof CalculationFailure) return { kind: 'failed', error: error.error };
@@ -111,106 +117,55 @@ export async function runStudy(
   }
 }
 
-async function computePoints(
-  prepared: PreparedStudy,
-  pool: WorkerPool,
-  workers: number,
-  { onPoint, onProgress, finished = new Map() }: Pick<RunOptions, 'onPoint' | 'onProgress' | 'finished'>,
-): Promise<readonly FinishedPoint[]> {
-  const total = prepared.coordinates.length;
-  const results = Array.from({ length: total }, (_, index) => finished.get(index));
-  const progress = trackProgress({ stage: 'points', total, done: finished.size, workers }, onProgress);
-  const accept = (index: number, point: FinishedPoint, seconds: number) => {
-    results[index] = point;
-    onPoint?.(index, point);
-    progress.finished(seconds);
-  };
-  try {
-    await pool.perform(planRuns(total, finished).map((run) => pointsTask(prepared, run, accept)));
-  } finally {
-    progress.stop();
-  }
-  return results.map((result) => result ?? unreachable());
+/** Points of one basis among those of all, by their index in that basis. */
+function pointsFrom(
+  first: number,
+  finished: ReadonlyMap<number, FinishedPoint> = new Map(),
+  { coordinates }: PreparedStudy,
+): ReadonlyMap<number, FinishedPoint> {
+  const own = coordinates.flatMap((_, index): [number, FinishedPoint][] => {
+    const point = finished.get(first + index);
+    return point ? [[index, point]] : [];
+  });
+  return new Map(own);
 }
 
-/** Takes over after a worker's death at the point that the worker left. */
-function pointsTask(
-  prepared: PreparedStudy,
-  run: Run,
-  accept: (index: number, point: FinishedPoint, seconds: number) => void,
-): Task {
-  const indices = [...run.indices];
-  let { guess } = run;
-  return {
-    request: () => ({ kind: 'points', indices, guess }),
-    accept: (finding) => {
-      if (finding.kind !== 'point') return;
-      const { index, seconds, result, carry } = finding;
-      indices.shift();
-      guess = carry;
-      accept(index, { result, carry }, seconds);
-    },
-    current: () => {
-      const coordinate = prepared.coordinates[indices[0] ?? -1] ?? null;
-      return coordinate === null ? 'the point' : `the point at ${coordinateText(prepared.study, coordinate)}`;
-    },
-  };
-}
-
-async function findMinima(
-  prepared: PreparedStudy,
-  finished: readonly FinishedPoint[],
-  pool: WorkerPool,
-  workers: number,
-  onProgress: RunOptions['onProgress'],
-): Promise<Readonly<Record<string, LevelFindings>>> {
-  const { levels } = prepared.study;
-  const points = finished.map(({ result }) => result);
-  const left = finished.map(({ carry }) => carry);
-  const found = new Map<string, LevelFindings>();
-  const progress = trackProgress({ stage: 'minima', total: levels.length, done: 0, workers }, onProgress);
-  const tasks = levels.map(
-    (level): Task => ({
-      request: () => ({ kind: 'minimum', level, points, left }),
-      accept: (finding) => {
-        if (finding.kind !== 'minimum') return;
-        found.set(level, finding.findings);
-        progress.finished(finding.seconds);
-      },
-      current: () => `the minimum of the ${level} curve`,
-    }),
-  );
-  try {
-    await pool.perform(tasks);
-  } finally {
-    progress.stop();
-  }
-  return Object.fromEntries(levels.map((level) => [level, found.get(level) ?? unreachable()]));
-}
-
-function assemble(
-  prepared: PreparedStudy,
-  points: readonly PointResult[],
-  findings: Readonly<Record<string, LevelFindings>>,
-  crossings: readonly SolutionCrossing[],
-): StudyResults {
+function assemble(prepared: PreparedStudy, computed: readonly CurvesInBasis[]): StudyResults {
+  const bases = [prepared, ...prepared.furtherBases];
+  const [own, ...further] = computed.map((curves, basis) => readingOf(bases[basis] ?? prepared, curves));
+  if (!own) throw new RangeError('A study has a basis of its own.');
+  const studies = [own, ...further].map(({ inBasis }) => inBasis);
   const measured = measuredFor(prepared.study);
-  const curves = stateCurves(prepared.study.levels, points);
   return {
     format: 'farwell/results',
     version: 1,
     study: prepared.study,
     program: { ...PROGRAM, date: new Date().toISOString().slice(0, 'YYYY-MM-DD'.length) },
-    basis: describeBasisUsed(prepared),
-    points,
-    findings,
-    curves,
+    basis: own.inBasis.basis,
+    points: own.points,
+    findings: own.inBasis.findings,
+    curves: own.curves,
+    ...(further.length > 0 && {
+      furtherBases: studies.slice(1),
+      basisSetLimit: basisSetLimit(studies),
+    }),
     ...(measured && { measured }),
-    cautions: [...studyCautions(prepared, points, crossings, findings), ...crossingCautions(points, curves)],
+    cautions: own.inBasis.cautions,
   };
 }
 
-/** A worker says that it is free only after it has answered everything. */
-function unreachable(): never {
-  throw new Error('A worker left a part of its task out.');
+/** What the results say of the study in one basis. */
+function readingOf(prepared: PreparedStudy, { points: finished, findings, crossings }: CurvesInBasis) {
+  const { study } = prepared;
+  const points = finished.map(({ result }) => result);
+  const curves = stateCurves(study.levels, points);
+  const cautions = [
+    ...studyCautions(prepared, points, crossings, findings),
+    ...crossingCautions(points, curves),
+  ];
+  return {
+    points,
+    curves,
+    inBasis: studyInBasis({ study, basis: describeBasisUsed(prepared), points, findings, cautions }),
+  };
 }

@@ -14,11 +14,11 @@ export interface ServerPort {
 /** Computes what is asked for, one request after the other, with the study that the worker was started for. */
 export function serve(port: ServerPort, start: WorkerStart): void {
   const preparation = engine.prepareStudy(start.study, start);
-  const answer = preparation.ok ? prepareAnswers(preparation.prepared, start) : undefined;
+  const bases = preparation.ok ? basesOf(preparation.prepared, start) : [];
   port.onMessage((request) => {
     try {
-      if (!preparation.ok || !answer) throw refusal(preparation);
-      for (const finding of findings(preparation.prepared, request, answer)) port.post(finding);
+      if (!preparation.ok) throw refusal(preparation.errors);
+      for (const finding of findings(request, bases)) port.post(finding);
       port.post({ kind: 'free' });
     } catch (error) {
       port.post({ kind: 'failed', error: asData(error) });
@@ -26,20 +26,31 @@ export function serve(port: ServerPort, start: WorkerStart): void {
   });
 }
 
-function refusal(preparation: engine.Preparation): Error {
-  const [error] = preparation.ok ? [] : preparation.errors;
+function refusal([error]: readonly engine.EngineError[]): Error {
   return error ?? new Error('The study was refused without a reason.');
 }
 
+/** A study in one of its bases, and the way to answer for it. */
+interface Basis {
+  readonly prepared: engine.PreparedStudy;
+  readonly answer: ReturnType<typeof prepareAnswers>;
+}
+
+function basesOf(prepared: engine.PreparedStudy, start: WorkerStart): readonly Basis[] {
+  return [prepared, ...prepared.furtherBases].map((inBasis) => ({
+    prepared: inBasis,
+    answer: prepareAnswers(inBasis, start),
+  }));
+}
+
 /** One after the other, each as soon as it is there. */
-function* findings(
-  prepared: engine.PreparedStudy,
-  request: WorkerRequest,
-  answer: ReturnType<typeof prepareAnswers>,
-): Generator<Finding> {
+function* findings(request: WorkerRequest, bases: readonly Basis[]): Generator<Finding> {
+  const basis = bases[request.basis];
+  if (!basis) throw new RangeError(`The study has no basis ${request.basis}.`);
+  const { prepared, answer } = basis;
   if (request.kind === 'minimum') {
-    const { level, points, left } = request;
-    const found = answer(request, (control) => ({
+    const { kind, level, points, left } = request;
+    const found = answer({ kind, level, points, left }, (control) => ({
       findings: engine.findLevelMinimum(prepared, level, points, left, control),
     }));
     yield { kind: 'minimum', level, ...found };

@@ -24,8 +24,10 @@ export function studyKey(prepared: PreparedStudy): string {
  * geometry counts, and what a point starts from.
  */
 export function requestKeys(prepared: PreparedStudy): (request: CacheableRequest) => string {
-  const { title: _title, notes: _notes, scan, ...study } = prepared.study;
-  const common = canonicalJson({ study, ...basisUsed(prepared), computedBy: computedBy() });
+  const { title: _title, notes: _notes, scan, findings = {}, ...study } = prepared.study;
+  // whether a basis is the study's own or a further one makes no difference
+  const { bases: _bases, ...asked } = findings;
+  const common = canonicalJson({ study, asked, ...basisUsed(prepared), computedBy: computedBy() });
   return (request) => {
     const geometry =
       request.kind === 'minimum'
@@ -39,8 +41,10 @@ export function requestKeys(prepared: PreparedStudy): (request: CacheableRequest
 /** One point, or what a whole request of another kind asks for. */
 export type CacheableRequest =
   | { readonly kind: 'point'; readonly coordinate: number | null; readonly guess: PointCarry | undefined }
-  | (Omit<Extract<WorkerRequest, { kind: 'follow' }>, 'index'> & { readonly coordinate: number | null })
-  | Extract<WorkerRequest, { kind: 'minimum' }>;
+  | (Omit<Extract<WorkerRequest, { kind: 'follow' }>, 'index' | 'basis'> & {
+      readonly coordinate: number | null;
+    })
+  | Omit<Extract<WorkerRequest, { kind: 'minimum' }>, 'basis'>;
 
 function numbersAsHash(part: unknown): unknown {
   if (!(part instanceof Float64Array)) return part;

@@ -71,7 +71,12 @@ function progressText(progress: Progress): string {
   return `${countText(progress)}, ${secondsLeft < 1 ? '' : 'about '}${durationText(secondsLeft)} left`;
 }
 
-function countText({ stage, done, total }: Progress): string {
+function countText({ basis, ...progress }: Progress): string {
+  const where = basis ? ` in ${basis.name} (basis ${basis.number} of ${basis.of})` : '';
+  return `${pieceText(progress)}${where}`;
+}
+
+function pieceText({ stage, done, total }: Omit<Progress, 'basis'>): string {
   switch (stage) {
     case 'points':
       return `${done} of ${counted(total, 'point')}`;
@@ -79,5 +84,7 @@ function countText({ stage, done, total }: Progress): string {
       return `${done} of ${counted(total, 'point')} compared with their neighbours`;
     case 'minima':
       return `minimum of ${done} of ${counted(total, 'curve')}`;
+    case 'limit':
+      return `basis-set limit of ${done} of ${counted(total, 'curve')}`;
   }
 }

@@ -1,6 +1,6 @@
 import { mkdir, stat } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
-import type { StudyResults } from '#engine';
+import type { PreparedStudy, StudyResults } from '#engine';
 import { cacheSettings } from '../calculation/cache-settings';
 import { type Journal, openJournal } from '../calculation/journal';
 import { affordableWorkers } from '../calculation/memory';
@@ -133,7 +133,7 @@ async function runWithJournal(
   const key = studyKey(file.prepared);
   // with the key in its name, the journal of an earlier wording of the study is neither mixed in nor lost
   const journal = openJournal(join(folder, `${file.name}.partial-${key.slice(0, 8)}.jsonl`), key);
-  const kept = () => `${journal.size} of ${counted(file.prepared.coordinates.length, 'point')}`;
+  const kept = () => `${journal.size} of ${counted(pointsOf(file.prepared), 'point')}`;
   try {
     if (journal.size > 0) terminal.say(`Going on from ${kept()} computed before.`);
     const outcome = await compute(file, invocation, profile, terminal, signal, journal);
@@ -187,10 +187,15 @@ async function compute(
     display.end();
   }
   if (outcome.kind === 'done' && outcome.keptPoints > 0) {
-    const total = counted(prepared.coordinates.length, 'point');
+    const total = counted(pointsOf(prepared), 'point');
     terminal.say(`${outcome.keptPoints} of ${total} came from the cache of earlier runs.`);
   }
   return outcome;
+}
+
+/** In all bases together. */
+function pointsOf({ coordinates, furtherBases }: PreparedStudy): number {
+  return coordinates.length * (1 + furtherBases.length);
 }
 
 /** Failures that the study is not to blame for; any other comes from the engine and refuses the study. */

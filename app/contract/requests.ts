@@ -80,6 +80,8 @@ export interface Events {
     readonly secondsLeft?: number;
     /** what is being done now, e.g. "points", "minima" */
     readonly stage: string;
+    /** of a study in several bases, which one this is of */
+    readonly basis?: { readonly name: string; readonly number: number; readonly of: number };
   };
   'calculation:finished': {
     readonly id: number;

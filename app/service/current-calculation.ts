@@ -36,7 +36,9 @@ export function createCurrentCalculation(workers: number, post: Post): CurrentCa
         ...(cache && { cache }),
         signal,
         onPoint: (index, { result }) => {
-          if (!signal.aborted) post('calculation:point', { id, index, point: result });
+          // the window draws the study's own basis while it runs; further ones come with the results
+          const isOwn = index < prepared.coordinates.length;
+          if (isOwn && !signal.aborted) post('calculation:point', { id, index, point: result });
         },
         onProgress: (progress) => {
           if (!signal.aborted) post('calculation:progress', { id, ...progress });

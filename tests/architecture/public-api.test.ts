@@ -13,6 +13,7 @@ it('regression: the engine’s door offers these names, so that a change of it i
     'LEVEL_NAMES',
     'LOW_REFERENCE_WEIGHT',
     'UNATTENDED',
+    'basisSetLimit',
     'computePoint',
     'describeBasis',
     'describeBasisUsed',
@@ -24,6 +25,8 @@ it('regression: the engine’s door offers these names, so that a change of it i
     'listBasisSets',
     'measuredFor',
     'prepareStudy',
+    'studiesInBases',
     'studyCautions',
+    'studyInBasis',
   ]);
 });

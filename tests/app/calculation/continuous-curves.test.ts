@@ -50,6 +50,7 @@ async function follow(values: readonly number[]) {
   const improved: number[] = [];
   const outcome = await makeCurvesContinuous({
     prepared,
+    basis: 0,
     points: fresh,
     pool: poolOf(prepared),
     onImproved: (index) => improved.push(index),

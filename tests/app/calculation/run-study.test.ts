@@ -1,7 +1,7 @@
 import { readdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { type PreparedStudy, prepareStudy, type Study } from '#engine';
+import { type PreparedStudy, prepareStudy, type Study, studyInBasis } from '#engine';
 import type { FinishedPoint, WorkerRequest } from '../../../app/calculation/messages';
 import type { Progress } from '../../../app/calculation/progress';
 import { type RunOptions, runStudy } from '../../../app/calculation/run-study';
@@ -114,14 +114,18 @@ describe('runStudy', () => {
     const finished = new Map<number, FinishedPoint>();
     await resultsOf({ onPoint: (index, point) => index < 3 && finished.set(index, point) });
     await resultsOf({ workers: 1, finished, onProgress: (progress) => told.push(progress) });
-    const points = told.filter(({ stage }) => stage === 'points');
+    // the same count again is only a sign of life
+    const news = told.filter(
+      ({ stage, done }, k) => told[k - 1]?.stage !== stage || told[k - 1]?.done !== done,
+    );
+    const points = news.filter(({ stage }) => stage === 'points');
     expect(points.map(({ done }) => done)).toEqual([3, 4, 5, 6, 7, 8, 9, 10]);
     expect(points[0]?.secondsLeft).toBeUndefined();
     expect(points[1]?.secondsLeft).toBeGreaterThan(0);
     expect(points.at(-1)?.secondsLeft).toBe(0);
     expect([...new Set(told.map(({ stage }) => stage))]).toEqual(['points', 'neighbours', 'minima']);
     const countsOf = (wanted: Progress['stage']) =>
-      told.filter(({ stage }) => stage === wanted).map(({ done, total }) => [done, total]);
+      news.filter(({ stage }) => stage === wanted).map(({ done, total }) => [done, total]);
     expect(countsOf('neighbours')).toEqual(Array.from({ length: 11 }, (_, done) => [done, 10]));
     expect(countsOf('minima')).toEqual([0, 1, 2, 3].map((done) => [done, 3]));
   });
@@ -226,5 +230,43 @@ describe('runStudy', () => {
     const { points, findings } = await resultsOf({}, { scan: undefined, levels: ['RHF'] });
     expect(points.map(({ coordinate }) => coordinate)).toEqual([null]);
     expect(findings.RHF?.minimum.kind).toBe('none');
+  });
+});
+
+describe('runStudy in several bases', () => {
+  const short = {
+    scan: { coordinate: { bonds: [[0, 1]] }, values: [1.6, 2, 3] },
+    levels: ['RHF', 'CISD'],
+  } as const;
+  const inBoth = { ...short, findings: { bases: ['6-31G'] } };
+
+  it('gives of each basis what a study in that basis alone gives', async () => {
+    const both = await resultsOf({ workers: 2 }, inBoth);
+    const alone = await resultsOf({ workers: 1 }, { ...short, basis: '6-31G' });
+    const [further] = both.furtherBases ?? [];
+    expect(further).toEqual(studyInBasis(alone));
+    expect(further?.levels.CISD?.energies).toHaveLength(3);
+    expect(both.points).toEqual((await resultsOf({}, short)).points);
+    expect(both.basisSetLimit).toMatchObject({ kind: 'none' });
+  });
+
+  it('goes on from points of any basis that are known, and counts them through all', async () => {
+    const computed = new Map<number, FinishedPoint>();
+    const whole = await resultsOf({ onPoint: (index, point) => computed.set(index, point) }, inBoth);
+    expect([...computed.keys()].sort()).toEqual([0, 1, 2, 3, 4, 5]);
+    const finished = new Map([...computed].filter(([index]) => index === 0 || index === 3 || index === 4));
+    const again: number[] = [];
+    const resumed = await resultsOf({ finished, onPoint: (index) => again.push(index) }, inBoth);
+    expect(again.sort()).toEqual([1, 2, 5]);
+    expect(resumed).toEqual(whole);
+  });
+
+  it('says in which basis it is', async () => {
+    const seen: Progress[] = [];
+    await resultsOf({ onProgress: (progress) => seen.push(progress) }, inBoth);
+    const last = (stage: string, number: number) =>
+      seen.findLast((progress) => progress.stage === stage && progress.basis?.number === number);
+    expect(last('points', 1)).toMatchObject({ done: 3, total: 3, basis: { name: 'STO-3G', of: 2 } });
+    expect(last('minima', 2)).toMatchObject({ done: 2, total: 2, basis: { name: '6-31G', of: 2 } });
   });
 });

@@ -45,7 +45,7 @@ function pointsTask(...indices: number[]): Task & { readonly accepted: number[] 
   const accepted: number[] = [];
   return {
     accepted,
-    request: () => ({ kind: 'points', indices: indices.slice(accepted.length) }),
+    request: () => ({ kind: 'points', basis: 0, indices: indices.slice(accepted.length) }),
     accept: (finding) => void (finding.kind === 'point' && accepted.push(finding.index)),
     current: () => `point ${indices[accepted.length]}`,
   };
@@ -68,11 +68,11 @@ describe('openPool', () => {
     const { pool, workers } = steeredPool(2);
     const done = pool.perform([pointsTask(0), pointsTask(1), pointsTask(2)]);
     expect(workers.map(({ requests }) => requests)).toEqual([
-      [{ kind: 'points', indices: [0] }],
-      [{ kind: 'points', indices: [1] }],
+      [{ kind: 'points', basis: 0, indices: [0] }],
+      [{ kind: 'points', basis: 0, indices: [1] }],
     ]);
     await workers[1]!.reply(free);
-    expect(workers[1]!.requests[1]).toEqual({ kind: 'points', indices: [2] });
+    expect(workers[1]!.requests[1]).toEqual({ kind: 'points', basis: 0, indices: [2] });
     await workers[0]!.reply(free);
     await workers[1]!.reply(free);
     await done;
@@ -86,7 +86,7 @@ describe('openPool', () => {
     const done = pool.perform([task]);
     await workers[0]!.reply(point(4));
     await workers[0]!.die();
-    expect(workers[1]!.requests).toEqual([{ kind: 'points', indices: [5, 6] }]);
+    expect(workers[1]!.requests).toEqual([{ kind: 'points', basis: 0, indices: [5, 6] }]);
     await workers[1]!.reply(point(5));
     // another place: again worth a try
     await workers[1]!.die();

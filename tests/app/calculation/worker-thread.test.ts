@@ -20,7 +20,7 @@ describe('startWorkerThread', () => {
         },
         onDeath: reject,
       });
-      worker.post({ kind: 'points', indices: [2, 3] });
+      worker.post({ kind: 'points', basis: 0, indices: [2, 3] });
     });
     worker.end();
     expect(replies).toEqual([
@@ -44,7 +44,7 @@ describe('startWorkerThread', () => {
     const worker = startWorkerThread({ study });
     const reply = await new Promise<WorkerReply>((resolve, reject) => {
       worker.listen({ onReply: resolve, onDeath: reject });
-      worker.post({ kind: 'points', indices: [99] });
+      worker.post({ kind: 'points', basis: 0, indices: [99] });
     });
     worker.end();
     expect(reply).toMatchObject({
@@ -75,7 +75,7 @@ describe('startWorkerThread', () => {
       told++;
     };
     worker.listen({ onReply: tell, onDeath: tell });
-    worker.post({ kind: 'points', indices: [0, 1, 2, 3] });
+    worker.post({ kind: 'points', basis: 0, indices: [0, 1, 2, 3] });
     worker.end();
     await new Promise((resolve) => setTimeout(resolve, 300));
     expect(told).toBe(0);
