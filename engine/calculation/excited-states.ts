@@ -53,7 +53,7 @@ export function excitedStates(
     (points.all().length - before) * secondsPerPoint <= MOST_SECONDS;
   const curves = curvesOfStates(points);
   const ground = lowestOf(curves, points, lowest);
-  return withoutPartners(curves.filter((state) => state !== ground)).map((state) =>
+  return withoutPartners(curves, ground).map((state) =>
     readState(prepared, points, { lowest, ground, state }, isAffordable() ? secondsPerPoint : undefined),
   );
 }
@@ -76,16 +76,30 @@ function lowestOf(
   return curves.find(({ followed }) => followed.states[index] === 0);
 }
 
-/** Of states that are equal at every point, the first. */
-function withoutPartners(curves: readonly CurveOfState[]): readonly CurveOfState[] {
-  const areEqual = (one: CurveOfState, other: CurveOfState) =>
-    one.followed.spin === other.followed.spin &&
-    one.curve.scan.every(({ energy }, k) => {
-      const beside = other.curve.scan[k].energy;
-      return energy === undefined ? beside === undefined : Math.abs(energy - beside!) < DEGENERATE;
-    });
-  return curves.filter((state, k) => !curves.slice(0, k).some((earlier) => areEqual(earlier, state)));
+/** Of the partners of a degenerate state, the first; of none of them where they are partners of the lowest state. */
+function withoutPartners(
+  curves: readonly CurveOfState[],
+  ground: CurveOfState | undefined,
+): readonly CurveOfState[] {
+  return curves.filter(
+    (state, k) =>
+      state !== ground &&
+      !(ground && arePartners(ground, state)) &&
+      !curves.slice(0, k).some((earlier) => arePartners(earlier, state)),
+  );
 }
+
+/** States of one spin and term that have one energy wherever both are known. */
+function arePartners({ followed: one, curve: a }: CurveOfState, { followed: other, curve: b }: CurveOfState) {
+  if (one.spin !== other.spin || termOf(one) !== termOf(other)) return false;
+  const gaps = a.scan.flatMap(({ energy }, k) => {
+    const beside = b.scan[k].energy;
+    return energy === undefined || beside === undefined ? [] : [Math.abs(energy - beside)];
+  });
+  return gaps.length > 0 && gaps.every((gap) => gap < DEGENERATE);
+}
+
+const termOf = ({ symmetry }: CurveOfState['followed']): string => JSON.stringify(symmetry?.term ?? null);
 
 interface Pair {
   readonly lowest: LowestState;
@@ -115,7 +129,7 @@ function readState(
   const vertical = verticalExcitation(points, pair, threshold);
   return {
     curve: state.index,
-    minimum: state.isPartial && minimum.kind === 'atEdge' ? knownInPart(state) : minimum,
+    minimum: state.isPartial && minimum.kind !== 'found' ? knownInPart(state) : minimum,
     ...(well && { minimumFrom: secondsPerPoint === undefined ? 'interpolated' : 'computed' }),
     ...(well?.constants && { constants: well.constants }),
     ...(vertical && { vertical }),
@@ -132,6 +146,7 @@ function solvableOf(state: CurveOfState, well: Well | undefined): Well['solvable
 
 function knownInPart({ curve }: CurveOfState): WithoutLevels {
   const known = curve.points();
+  if (known.length === 0) return { kind: 'none', reason: 'This state converged at no point.' };
   const [from, to] = [known[0], known[known.length - 1]].map(({ x }) => Number(x.toPrecision(4)));
   return {
     kind: 'none',

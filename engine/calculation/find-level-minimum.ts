@@ -71,10 +71,11 @@ function curveFindings(
     };
   }
   const curve = lowestCurve(points);
-  const dissociation = dissociationLimit(prepared, level, curve.points().at(-1), control);
+  const farEnd = curve.points().at(-1);
+  const dissociation = dissociationLimit(prepared, level, farEnd, control);
   const limit = dissociation?.kind === 'found' ? dissociation.energy : undefined;
   const { minimum, well } = readWell(prepared, curve, limit, seconds);
-  const wellDepth = well && wellDepthOf(well.found.energy, curve, dissociation);
+  const wellDepth = well && wellDepthOf(well.found.energy, farEnd!, curve.scan, dissociation);
   return {
     minimum,
     ...(dissociation && { dissociation }),
@@ -100,13 +101,14 @@ function none(reason: string): LevelFindings {
   return { minimum: { kind: 'none', reason } };
 }
 
+/** @param farEnd - last point of the scan that converged */
 function wellDepthOf(
   minimum: number,
-  curve: LevelCurve,
+  farEnd: { readonly x: number; readonly energy: number },
+  scan: LevelCurve['scan'],
   dissociation: Dissociation | undefined,
 ): WellDepth | undefined {
   if (dissociation?.kind === 'found') {
-    const farEnd = curve.points().at(-1)!;
     return {
       value: dissociation.energy - minimum,
       against: 'fragments',
@@ -114,9 +116,8 @@ function wellDepthOf(
       valueAgainstFarEnd: farEnd.energy - minimum,
     };
   }
-  const last = curve.scan.reduce((a, b) => (b.x > a.x ? b : a));
-  if (last.energy === undefined) return undefined;
-  return { value: last.energy - minimum, against: 'farEnd', farEnd: last.x };
+  const isLast = scan.every(({ x }) => x <= farEnd.x);
+  return isLast ? { value: farEnd.energy - minimum, against: 'farEnd', farEnd: farEnd.x } : undefined;
 }
 
 /** Levels of the isotopes of the study and of those that it asks for besides. */

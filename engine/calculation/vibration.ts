@@ -99,6 +99,9 @@ export function vibrationOn(
 ): Vibration {
   if (solvable.kind === 'none') return solvable;
   const { curve, minimumEnergy, limit } = solvable;
+  if (minimumEnergy >= topOf(curve, limit)) {
+    return none('The minimum lies above the limit: its levels are held by a barrier only, and decay.');
+  }
   const solved = vibrationalLevels(curve, molecule.reducedMass);
   const levels = solved.levels.filter(isBelow(limit));
   if (levels.length === 0) return none('The well is too shallow for a bound level.');

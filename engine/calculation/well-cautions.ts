@@ -1,10 +1,12 @@
-import type { Caution, CautionNumber, LevelFindings, Vibration } from './result';
+import type { Caution, CautionNumber, LevelFindings, Vibration, WellConstants } from './result';
 import type { LengthUnit } from './study';
 
 /** Study unit; a minimum that is known no better lies at a kink, or energies around it are noisy. */
 const UNCERTAIN_DISTANCE = 1e-4;
 /** cm⁻¹; a curve known no better between its points moves levels by more than is printed of them. */
 const UNCERTAIN_LEVELS = 1;
+/** Of H2 it is 0.03; a Morse curve at 0.25 has its first interval halved and holds two levels. */
+const LARGE_ANHARMONICITY = 0.25;
 
 /** What to mistrust about a well and its levels: other minima, kinks, a poor interpolation, a well above its limit. */
 export function wellCautions(level: string, findings: LevelFindings, unit: LengthUnit): readonly Caution[] {
@@ -62,7 +64,27 @@ export function wellCautions(level: string, findings: LevelFindings, unit: Lengt
           },
         ]
       : []),
+    ...shallowCautions(level, findings.constants),
     ...levelCautions(level, vibration),
+  ];
+}
+
+/** A series in powers of the displacement says nothing where one quantum takes the molecule to the top of its well. */
+function shallowCautions(level: string, constants: WellConstants | undefined): readonly Caution[] {
+  if (!constants?.diatomic) return [];
+  const { harmonicWavenumberPerCm: harmonic, anharmonicityPerCm: anharmonic } = constants.diatomic;
+  const share = Math.abs(anharmonic.value / harmonic.value);
+  if (share <= LARGE_ANHARMONICITY) return [];
+  return [
+    {
+      code: 'constants.shallow',
+      level,
+      message: `The anharmonicity of ${level}, ${anharmonic.value.toPrecision(4)} cm⁻¹, is ${Math.round(100 * share)} % of its wavenumber.`,
+      meaning:
+        'The well is too shallow for constants: they are derivatives at the minimum, and no levels follow from them.',
+      remedy: 'Use the levels, which are computed on the whole curve.',
+      numbers: [number('ωₑxₑ/ωₑ', share, ''), number('bound', LARGE_ANHARMONICITY, '')],
+    },
   ];
 }
 
