@@ -2,6 +2,7 @@ import type { LevelFindings, LevelResult, StudyResults } from '#engine';
 import { coordinateText } from '../calculation/coordinate-text';
 import { comparedConstants } from '../study/compared-constants';
 import { fragmentsText } from '../study/fragments-text';
+import { curveTexts } from './curve-summary';
 import { EXIT, type ExitCode } from './exit-codes';
 import { counted } from './wording';
 
@@ -69,7 +70,14 @@ function findingsLines(results: StudyResults): readonly string[] {
   if (!study.scan) return [];
   return study.levels.flatMap((level) => {
     const of = findings[level];
-    const texts = of ? [minimumText(of, study), vibrationText(level, results), onsetText(of, study)] : [];
+    const texts = of
+      ? [
+          minimumText(of, study),
+          vibrationText(level, results),
+          ...curveTexts(level, results),
+          onsetText(of, study),
+        ]
+      : [];
     return texts.flatMap((text) => (text === undefined ? [] : [`${level}: ${text}`]));
   });
 }
