@@ -1,5 +1,7 @@
+import fc from 'fast-check';
 import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
-import { describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { chooseKernels } from '../../../engine/kernels/form';
 import {
   congruence,
   maximumAbsolute,
@@ -7,6 +9,7 @@ import {
   multiplyRightTransposed,
 } from '../../../engine/linear-algebra/dense';
 import { symmetricEigen } from '../../../engine/linear-algebra/symmetric-eigen';
+import { inForm } from '../../support/kernel-forms';
 import { randomSymmetric, seededRandom } from '../../support/random';
 
 /** Largest |VᵀAV − values|, against the largest |A|, and largest |VᵀV − 1|. */
@@ -36,19 +39,15 @@ function withSpectrum(spectrum: readonly number[], seed: number): Float64Array {
   return multiplyRightTransposed(scaled, vectors, n, n, n);
 }
 
-describe('symmetricEigen', () => {
-  it.each([1, 2, 7, 30])('identity: VᵀAV is diagonal with rising values and VᵀV = 1, n = %i', (n) => {
-    const matrix = randomSymmetric(n, seededRandom(n));
-    const { values, vectors } = symmetricEigen(matrix, n);
-    const diagonal = congruence(matrix, vectors, n, n);
-    const metric = multiplyLeftTransposed(vectors, vectors, n, n, n);
-    for (let i = 0; i < n; i++) {
-      for (let j = 0; j < n; j++) {
-        expect(Math.abs(diagonal[i * n + j] - (i === j ? values[i] : 0))).toBeLessThan(1e-12);
-        expect(Math.abs(metric[i * n + j] - (i === j ? 1 : 0))).toBeLessThan(1e-12);
-      }
-      if (i > 0) expect(values[i]).toBeGreaterThanOrEqual(values[i - 1]);
-    }
+describe.each(['fast', 'plain'] as const)('symmetricEigen, %s form', (form) => {
+  beforeAll(() => chooseKernels(form));
+  afterAll(() => chooseKernels('fast'));
+
+  it.each([1, 2, 7, 30, 101])('identity: VᵀAV is diagonal with rising values and VᵀV = 1, n = %i', (n) => {
+    const { residual, orthogonality, values } = defects(randomSymmetric(n, seededRandom(n)), n);
+    expect(residual).toBeLessThan(1e-13);
+    expect(orthogonality).toBeLessThan(1e-13);
+    expect(Array.from(values)).toEqual(Array.from(values.slice().sort()));
   });
 
   it('identity: the second-difference matrix has the eigenvalues 2 − 2cos(kπ/(n+1))', () => {
@@ -145,5 +144,61 @@ describe('symmetricEigen', () => {
     expect(defects(new Float64Array(9), 3)).toMatchObject({ residual: 0, orthogonality: 0 });
     const { values } = symmetricEigen(Float64Array.of(3, 0, 0, 0, -1, 0, 0, 0, 2), 3);
     expect(Array.from(values)).toEqual([-1, 2, 3]);
+  });
+});
+
+/** Spectra with clusters, repeated values, gaps and sizes from 1 to 1e-12. */
+const spectrum = fc.array(
+  fc.tuple(
+    fc.integer({ min: 1, max: 12 }),
+    fc.constantFrom(0, 1e-15, 1e-12, 1e-7, 0.01, 1),
+    fc.integer({ min: 0, max: 12 }),
+    fc.constantFrom(1, -1),
+  ),
+  { minLength: 3, maxLength: 9 },
+);
+
+describe('the fast form of symmetricEigen', () => {
+  it('independent: values, residuals and orthogonality as good as those of the plain form and of ml-matrix', () => {
+    fc.assert(
+      fc.property(spectrum, fc.integer(), (clusters, seed) => {
+        const values = clusters.flatMap(([count, spread, decade, sign]) =>
+          Array.from({ length: count }, (_, k) => sign * 10 ** -decade * (1 + spread * k)),
+        );
+        const n = values.length;
+        const matrix = withSpectrum(values, seed);
+        const scale = Math.max(maximumAbsolute(matrix), Number.MIN_VALUE);
+        const fast = inForm('fast', () => defects(matrix, n));
+        expect(fast.residual).toBeLessThan(1e-13);
+        expect(fast.orthogonality).toBeLessThan(1e-13);
+        const plain = inForm('plain', () => symmetricEigen(matrix, n)).values;
+        const library = new EigenvalueDecomposition(Matrix.from1DArray(n, n, Array.from(matrix)), {
+          assumeSymmetric: true,
+        }).realEigenvalues;
+        for (let k = 0; k < n; k++) {
+          expect(Math.abs(fast.values[k] - plain[k])).toBeLessThan(2e-14 * scale * Math.sqrt(n));
+          expect(Math.abs(fast.values[k] - library[k])).toBeLessThan(5e-14 * scale * Math.sqrt(n));
+        }
+      }),
+      { seed: 4, numRuns: 60 },
+    );
+  });
+
+  it.each([
+    ['of independent blocks', (i: number, j: number) => (i >> 3 === j >> 3 ? 1 / (1 + i + j) : 0)],
+    ['with graded rows', (i: number, j: number) => 10 ** (-(i + j) / 8) * Math.cos(i * j)],
+    [
+      'tridiagonal, with a negative coupling where it is divided',
+      (i: number, j: number) => (i === j ? 1 : Math.abs(i - j) === 1 ? -0.5 : 0),
+    ],
+    ['of equal diagonal elements and hardly any coupling', (i: number, j: number) => (i === j ? 3 : 1e-17)],
+  ])('identity: a matrix %s', (_, element) => {
+    const n = 70;
+    const matrix = Float64Array.from({ length: n * n }, (_, place) =>
+      element(Math.floor(place / n), place % n),
+    );
+    const { residual, orthogonality } = inForm('fast', () => defects(matrix, n));
+    expect(residual).toBeLessThan(1e-13);
+    expect(orthogonality).toBeLessThan(1e-13);
   });
 });
