@@ -1,6 +1,7 @@
 import { electronRepulsionKernels } from '../kernels/electron-repulsion';
 import { KernelMemory } from '../kernels/kernel-memory';
-import { BOYS_TABLE, INVERSE_ODD } from '../special-functions/boys-function';
+import { boysTaylorTable, INVERSE_ODD } from '../special-functions/boys-function';
+import { cartesianIndex } from './cartesian-components';
 import type { Quartet } from './coulomb-quartets';
 import { HERMITE_RECURSION } from './hermite-coulomb';
 import { hermiteStart } from './hermite-index';
@@ -18,7 +19,8 @@ const PAIR_FIELDS = 17;
 /** Memory of this thread for integrals; the tables stand at its bottom and stay. */
 interface IntegralMemory {
   readonly memory: KernelMemory;
-  readonly boysTable: number;
+  /** addresses of the tables of Boys functions, one a degree, as far as they were needed */
+  readonly boysTables: number[];
   readonly inverseOdd: number;
   readonly recursion: number;
 }
@@ -34,10 +36,14 @@ export function withFastQuartets<Result>(
   work: (quartet: Quartet) => Result,
 ): Result {
   integralMemory ??= prepareMemory();
-  const { memory } = integralMemory;
+  const { memory, boysTables } = integralMemory;
+  const highest = pairs.reduce((degree, { layout }) => Math.max(degree, layout.degree), 0);
+  while (boysTables.length <= 2 * highest) {
+    boysTables.push(putNumbers(memory, boysTaylorTable(boysTables.length)));
+  }
   const { coulombQuartet } = electronRepulsionKernels(memory);
   return memory.scope(() => {
-    const { workspace, block } = takeWorkspace(integralMemory!, pairs);
+    const { workspace, block } = takeWorkspace(integralMemory!, highest, pairs);
     const records = pairs.map((pair) => writePair(memory, pair));
     return work((bra, ket, primitiveThreshold) => {
       coulombQuartet(records[bra], records[ket], workspace, primitiveThreshold);
@@ -59,21 +65,19 @@ function prepareMemory(): IntegralMemory {
   }
   return {
     memory,
-    boysTable: putNumbers(memory, BOYS_TABLE),
+    boysTables: [],
     inverseOdd: putNumbers(memory, INVERSE_ODD),
     recursion: recursion.address,
   };
 }
 
 /** Room for the largest quartet of the pairs; bounds rather than exact lengths. */
-function takeWorkspace(tables: IntegralMemory, pairs: readonly ShellPair[]) {
+function takeWorkspace(tables: IntegralMemory, degree: number, pairs: readonly ShellPair[]) {
   const { memory } = tables;
-  let degree = 0;
   let factors = 0;
   let columns = 0;
   let products = 0;
   for (const { layout, productCount } of pairs) {
-    degree = Math.max(degree, layout.degree);
     factors = Math.max(factors, layout.factorDegrees.length);
     columns = Math.max(columns, layout.columnCount);
     products = Math.max(products, productCount);
@@ -82,9 +86,11 @@ function takeWorkspace(tables: IntegralMemory, pairs: readonly ShellPair[]) {
   // sums over both lanes, then those of the joined lanes in the same place
   const ketSums = Math.max(2 * BRA_BATCH * factors * hermiteCount, columns * columns);
   const block = memory.float64(products * products);
+  const boysTables = memory.int32(tables.boysTables.length);
+  boysTables.view.set(tables.boysTables);
   const workspace = memory.int32(11);
   workspace.view.set([
-    tables.boysTable,
+    boysTables.address,
     tables.inverseOdd,
     tables.recursion,
     memory.float64(2 * POINT_VECTORS).address,
@@ -158,14 +164,14 @@ function writePair(memory: KernelMemory, pair: ShellPair): number {
 
 const integersOfLayout = new Map<PairLayout, Int32Array>();
 
-/** The degree of each factor, then the factor, v + w and w of each column with its Hermite index (t, v, w). */
+/** The degree of each factor, then for each column what the kernel wants to know of it. */
 function layoutIntegers(layout: PairLayout): Int32Array {
   let integers = integersOfLayout.get(layout);
   if (!integers) {
     const columns = layout.columnPowers.flatMap(([, v, w], column) => [
       layout.columnFactor[column],
       v + w,
-      w,
+      cartesianIndex(v, w),
     ]);
     integers = Int32Array.from([...layout.factorDegrees, ...columns]);
     integersOfLayout.set(layout, integers);

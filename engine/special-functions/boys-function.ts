@@ -10,8 +10,7 @@ const TABLE_END = 36;
 /** A row holds e^−T, then F_0 … F_(maxOrder + TAYLOR_TERMS − 1). */
 const ROW_LENGTH = 1 + BOYS_MAX_ORDER + TAYLOR_TERMS;
 
-/** One row a grid point: e^−T, then F_0 … F_26. */
-export const BOYS_TABLE = buildTable();
+const table = buildTable();
 /** 1/(2m − 1) at m */
 export const INVERSE_ODD = Float64Array.from(
   { length: BOYS_MAX_ORDER + 1 },
@@ -71,20 +70,18 @@ export function boysFunctionsInto(
     const fifth = step * (1 / 5);
     const sixth = step * (1 / 6);
     let value =
-      BOYS_TABLE[first] +
+      table[first] +
       step *
-        (BOYS_TABLE[first + 1] +
+        (table[first + 1] +
           half *
-            (BOYS_TABLE[first + 2] +
+            (table[first + 2] +
               third *
-                (BOYS_TABLE[first + 3] +
-                  quarter *
-                    (BOYS_TABLE[first + 4] +
-                      fifth * (BOYS_TABLE[first + 5] + sixth * BOYS_TABLE[first + 6])))));
+                (table[first + 3] +
+                  quarter * (table[first + 4] + fifth * (table[first + 5] + sixth * table[first + 6])))));
     target[end] = value;
     if (maxOrder === 0) continue;
     const exponential =
-      BOYS_TABLE[row] *
+      table[row] *
       (1 +
         step * (1 + half * (1 + third * (1 + quarter * (1 + fifth * (1 + sixth * (1 + step * (1 / 7))))))));
     const twiceArgument = 2 * argument;
@@ -138,4 +135,25 @@ function buildTable(): Float64Array {
     }
   }
   return rows;
+}
+
+/**
+ * What the fast form needs for one order, a line of the cache (8 numbers) for each grid point T: e^−T, and the Taylor
+ * coefficients of F_order in −(T' − T).
+ *
+ * @param order - 0 … {@link BOYS_MAX_ORDER}
+ */
+export function boysTaylorTable(order: number): Float64Array {
+  const points = table.length / ROW_LENGTH;
+  const lines = new Float64Array(points * (1 + TAYLOR_TERMS));
+  let at = 0;
+  for (let row = 0; row < table.length; row += ROW_LENGTH) {
+    lines[at++] = table[row];
+    let factorial = 1;
+    for (let term = 0; term < TAYLOR_TERMS; term++) {
+      lines[at++] = table[row + 1 + order + term] / factorial;
+      factorial *= term + 1;
+    }
+  }
+  return lines;
 }

@@ -1,5 +1,5 @@
 import { boysInto } from './repulsion/boys';
-import { contractInto, joinLanes, sparseProductInto } from './repulsion/contraction';
+import { contractInto, contractTwoInto, joinLanes, sparseProductInto } from './repulsion/contraction';
 import { hermiteInto } from './repulsion/hermite';
 import { add, at, mul, put, sub } from './repulsion/vector';
 
@@ -28,8 +28,8 @@ const ROW_START: usize = 56;
 const ENTRY_COLUMNS: usize = 60;
 const ENTRY_VALUES: usize = 64;
 
-// the workspace: addresses
-const BOYS_TABLE: usize = 0;
+// the workspace: addresses; the first leads to those of the table for each degree
+const BOYS_TABLES: usize = 0;
 const INVERSE_ODD: usize = 4;
 const RECURSION: usize = 8;
 const POINT: usize = 12;
@@ -41,7 +41,10 @@ const GATHERED: usize = 32;
 const HALF: usize = 36;
 const BLOCK: usize = 40;
 
-/** a column of a layout: factor, v + w, w of its Hermite index (t, u, w), i32 each */
+/**
+ * a column of a layout, i32 each: its factor, r = v + w of its Hermite index (t, v, w), and the place r(r + 1)/2 + w among
+ * the indices of its degree
+ */
 const COLUMN_BYTES: usize = 12;
 
 /** Pairs of bra primitives whose contracted kets are held at once; workspaces are sized for it. */
@@ -65,6 +68,11 @@ function hermiteStart(degree: i32): i32 {
 export function coulombQuartet(bra: usize, ket: usize, workspace: usize, primitiveThreshold: f64): void {
   const braPrimitives = significant(bra, primitiveThreshold / load<f64>(address(ket, BOUNDS)));
   const braLanes = (braPrimitives + 1) >> 1;
+  if (field(bra, PRODUCT_COUNT) * field(ket, PRODUCT_COUNT) === 1) {
+    // nothing to expand, and a single sum
+    sphericalQuartet(bra, braLanes, ket, workspace, primitiveThreshold);
+    return;
+  }
   const ketSumCount = countKetSums(bra, ket);
   let braSumCount = 0;
   for (let lane = 0; lane < braLanes; lane += BRA_BATCH) {
@@ -91,6 +99,28 @@ export function coulombQuartet(bra: usize, ket: usize, workspace: usize, primiti
   expand(bra, ket, sums, workspace);
 }
 
+/** (ss|ss) = Σ factors F_0(aR²)/√(p + q), summed as the arguments are made. */
+function sphericalQuartet(bra: usize, braLanes: i32, ket: usize, workspace: usize, primitiveThreshold: f64): void {
+  const values = address(workspace, HERMITE);
+  const batch = HERMITE_BATCH;
+  let sum = f64x2.splat(0);
+  for (let lane = 0; lane < braLanes; lane++) {
+    const bound = load<f64>(address(bra, BOUNDS) + ((<usize>lane) << 4));
+    const ketCount = significant(ket, primitiveThreshold / bound);
+    let inner = f64x2.splat(0);
+    for (let start = 0; start < ketCount; start += batch) {
+      const count = min(batch, ketCount - start);
+      hermiteOfPrimitives(bra, lane, ket, start, count, workspace, values, 16);
+      const factors = address(ket, KET_FACTORS) + ((<usize>start) << 4);
+      for (let k = 0; k < count; k++) inner = add(inner, mul(at(factors, k), at(values, k)));
+    }
+    sum = add(sum, mul(at(address(bra, BRA_FACTORS), lane), inner));
+  }
+  const both = f64x2.extract_lane(sum, 0) + f64x2.extract_lane(sum, 1);
+  const scale = load<f64>(address(bra, ENTRY_VALUES)) * load<f64>(address(ket, ENTRY_VALUES));
+  store<f64>(address(workspace, BLOCK), both * scale);
+}
+
 /** Primitive products are sorted by size, so the significant ones come first. */
 function significant(pair: usize, threshold: f64): i32 {
   const bounds = address(pair, BOUNDS);
@@ -114,65 +144,120 @@ function countKetSums(bra: usize, ket: usize): i32 {
 function contractKet(bra: usize, lane: i32, ket: usize, ketCount: i32, workspace: usize, target: usize): void {
   const braDegree = field(bra, DEGREE);
   const width = hermiteStart(braDegree + field(ket, DEGREE) + 1);
+  const rowBytes = (<usize>width) << 4;
   const batch = max(1, HERMITE_BATCH / width);
   const degrees = address(ket, FACTOR_DEGREES);
   const factorCount = field(ket, FACTOR_COUNT);
-  const factorStep = (<usize>factorCount) << 4;
   const hermite = address(workspace, HERMITE);
   let start = 0;
   do {
     const count = min(batch, ketCount - start);
-    for (let k = 0; k < count; k++) {
-      primitiveQuartet(bra, lane, ket, start + k, workspace, hermite + ((<usize>(k * width)) << 4));
-    }
+    hermiteOfPrimitives(bra, lane, ket, start, count, workspace, hermite, rowBytes);
     let sums = target;
-    const factors = address(ket, KET_FACTORS) + (<usize>start) * factorStep;
+    const factors = address(ket, KET_FACTORS) + ((<usize>(start * factorCount)) << 4);
     for (let factor = 0; factor < factorCount; factor++) {
       const degree = load<i32>(degrees + ((<usize>factor) << 2));
       const from = hermiteStart(degree);
       const length = hermiteStart(degree + braDegree + 1) - from;
-      contractInto(
-        factors + ((<usize>factor) << 4),
-        factorStep,
+      contractFactor(
+        degrees,
+        factorCount,
+        factor,
+        factors,
         hermite + ((<usize>from) << 4),
-        (<usize>width) << 4,
+        rowBytes,
         count,
         sums,
         length,
         start === 0,
       );
       sums += (<usize>length) << 4;
+      if (hasTwin(degrees, factorCount, factor)) {
+        sums += (<usize>length) << 4;
+        factor++;
+      }
     }
     start += count;
   } while (start < ketCount);
 }
 
-/** Hermite Coulomb integrals of two primitives of the bra with one of the ket. */
-function primitiveQuartet(bra: usize, lane: i32, ket: usize, j: i32, workspace: usize, target: usize): void {
-  const braPlace = (<usize>lane) << 4;
-  const ketPlace = (<usize>j) << 3;
-  const p = v128.load(address(bra, EXPONENTS) + braPlace);
-  const q = v128.load64_splat(address(ket, EXPONENTS) + ketPlace);
-  const x = sub(v128.load(address(bra, CENTRE_X) + braPlace), v128.load64_splat(address(ket, CENTRE_X) + ketPlace));
-  const y = sub(v128.load(address(bra, CENTRE_Y) + braPlace), v128.load64_splat(address(ket, CENTRE_Y) + ketPlace));
-  const z = sub(v128.load(address(bra, CENTRE_Z) + braPlace), v128.load64_splat(address(ket, CENTRE_Z) + ketPlace));
-  const inverse = f64x2.div(f64x2.splat(1), add(p, q));
-  const exponent = mul(mul(p, q), inverse);
-  const argument = mul(exponent, add(add(mul(x, x), mul(y, y)), mul(z, z)));
+/** Whether the factor after this one has its degree, and so multiplies the same numbers. */
+function hasTwin(degrees: usize, factorCount: i32, factor: i32): bool {
+  const place = degrees + ((<usize>factor) << 2);
+  return factor + 1 < factorCount && load<i32>(place, 4) === load<i32>(place);
+}
+
+/** Contraction with one factor, and with its twin if it has one: its sums then follow. */
+function contractFactor(
+  degrees: usize,
+  factorCount: i32,
+  factor: i32,
+  factors: usize,
+  source: usize,
+  sourceStep: usize,
+  count: i32,
+  target: usize,
+  length: i32,
+  isFirst: bool,
+): void {
+  const values = factors + ((<usize>factor) << 4);
+  const factorStep = (<usize>factorCount) << 4;
+  if (hasTwin(degrees, factorCount, factor)) {
+    const second = target + ((<usize>length) << 4);
+    contractTwoInto(values, factorStep, source, sourceStep, count, target, second, length, isFirst);
+  } else {
+    contractInto(values, factorStep, source, sourceStep, count, target, length, isFirst);
+  }
+}
+
+/** Hermite Coulomb integrals of two primitives of the bra with `count` of the ket from `start` on. */
+function hermiteOfPrimitives(
+  bra: usize,
+  lane: i32,
+  ket: usize,
+  start: i32,
+  count: i32,
+  workspace: usize,
+  target: usize,
+  rowBytes: usize,
+): void {
   const degree = field(bra, DEGREE) + field(ket, DEGREE);
+  const boysTable = address(address(workspace, BOYS_TABLES), (<usize>degree) << 2);
+  const inverseOdd = address(workspace, INVERSE_ODD);
+  const recursion = address(workspace, RECURSION);
   const coordinates = address(workspace, POINT);
   const derivatives = coordinates + 48;
-  put(coordinates, 0, x);
-  put(coordinates, 1, y);
-  put(coordinates, 2, z);
-  boysInto(degree, argument, address(workspace, BOYS_TABLE), address(workspace, INVERSE_ODD), derivatives);
-  const ratio = mul(f64x2.splat(-2), exponent);
-  let scale = f64x2.sqrt(inverse);
-  for (let n = 0; n <= degree; n++) {
-    put(derivatives, n, mul(scale, at(derivatives, n)));
-    scale = mul(scale, ratio);
+  const braPlace = (<usize>lane) << 4;
+  const p = v128.load(address(bra, EXPONENTS) + braPlace);
+  const px = v128.load(address(bra, CENTRE_X) + braPlace);
+  const py = v128.load(address(bra, CENTRE_Y) + braPlace);
+  const pz = v128.load(address(bra, CENTRE_Z) + braPlace);
+  const exponents = address(ket, EXPONENTS);
+  const centreX = address(ket, CENTRE_X);
+  const centreY = address(ket, CENTRE_Y);
+  const centreZ = address(ket, CENTRE_Z);
+  const end = (<usize>(start + count)) << 3;
+  for (let place = (<usize>start) << 3; place < end; place += 8) {
+    const q = v128.load64_splat(exponents + place);
+    const x = sub(px, v128.load64_splat(centreX + place));
+    const y = sub(py, v128.load64_splat(centreY + place));
+    const z = sub(pz, v128.load64_splat(centreZ + place));
+    const inverse = f64x2.div(f64x2.splat(1), add(p, q));
+    const exponent = mul(mul(p, q), inverse);
+    const argument = mul(exponent, add(add(mul(x, x), mul(y, y)), mul(z, z)));
+    put(coordinates, 0, x);
+    put(coordinates, 1, y);
+    put(coordinates, 2, z);
+    boysInto(degree, argument, boysTable, inverseOdd, derivatives);
+    const ratio = mul(f64x2.splat(-2), exponent);
+    let scale = f64x2.sqrt(inverse);
+    for (let n = 0; n <= degree; n++) {
+      put(derivatives, n, mul(scale, at(derivatives, n)));
+      scale = mul(scale, ratio);
+    }
+    hermiteInto(degree, coordinates, derivatives, recursion, target);
+    target += rowBytes;
   }
-  hermiteInto(degree, coordinates, derivatives, address(workspace, RECURSION), target);
 }
 
 /** Contraction over pairs of bra primitives, for each factor of the ket and of the bra; gives the number of sums. */
@@ -182,8 +267,7 @@ function contractBra(bra: usize, lane: i32, lanes: i32, ket: usize, ketSumCount:
   const ketFactorCount = field(ket, FACTOR_COUNT);
   const braDegrees = address(bra, FACTOR_DEGREES);
   const ketDegrees = address(ket, FACTOR_DEGREES);
-  const factorStep = (<usize>braFactorCount) << 4;
-  const factors = address(bra, BRA_FACTORS) + <usize>lane * factorStep;
+  const factors = address(bra, BRA_FACTORS) + ((<usize>(lane * braFactorCount)) << 4);
   const sums = address(workspace, BRA_SUMS);
   let runTarget = address(workspace, RUN_TARGETS);
   let source = address(workspace, KET_SUMS);
@@ -195,9 +279,11 @@ function contractBra(bra: usize, lane: i32, lanes: i32, ket: usize, ketSumCount:
       const degree = load<i32>(braDegrees + ((<usize>factor) << 2)) + ketDegree;
       const from = hermiteStart(degree);
       const length = hermiteStart(degree + 1) - from;
-      contractInto(
-        factors + ((<usize>factor) << 4),
-        factorStep,
+      contractFactor(
+        braDegrees,
+        braFactorCount,
+        factor,
+        factors,
         source + ((<usize>(from - ketFrom)) << 4),
         (<usize>ketSumCount) << 4,
         lanes,
@@ -208,6 +294,12 @@ function contractBra(bra: usize, lane: i32, lanes: i32, ket: usize, ketSumCount:
       store<i32>(runTarget, target);
       runTarget += 4;
       target += length;
+      if (hasTwin(braDegrees, braFactorCount, factor)) {
+        store<i32>(runTarget, target);
+        runTarget += 4;
+        target += length;
+        factor++;
+      }
     }
     source += (<usize>(hermiteStart(ketDegree + braDegree + 1) - ketFrom)) << 4;
   }
@@ -259,13 +351,13 @@ function gather(
   for (let i = 0; i < ketColumns; i++) {
     const runs = runTargets + ((<usize>(load<i32>(ketColumn) * braFactorCount)) << 2);
     const ketRest = load<i32>(ketColumn, 4);
-    const ketLast = load<i32>(ketColumn, 8);
+    const ketPlace = load<i32>(ketColumn, 8);
     let braColumn = address(bra, COLUMNS_OF_LAYOUT);
     for (let j = 0; j < braColumns; j++) {
-      const rest = load<i32>(braColumn, 4) + ketRest;
-      const index = ((rest * (rest + 1)) >> 1) + load<i32>(braColumn, 8) + ketLast;
+      // the place of the sum of two indices
+      const place = load<i32>(braColumn, 4) * ketRest + load<i32>(braColumn, 8) + ketPlace;
       const run = load<i32>(runs + ((<usize>load<u32>(braColumn)) << 2));
-      store<f64>(target, load<f64>(sums + ((<usize>(run + index)) << 3)));
+      store<f64>(target, load<f64>(sums + ((<usize>(run + place)) << 3)));
       target += 8;
       braColumn += COLUMN_BYTES;
     }

@@ -7,7 +7,7 @@ import { shellPairs } from '../../../engine/integrals/shell-pair';
 import type { KernelForm } from '../../../engine/kernels/form';
 import type { Vector3 } from '../../../engine/molecule/molecule';
 import { placedBasis, type ShellSketch } from '../../support/gaussian-integrals';
-import { inForm, relativeDifference } from '../../support/kernel-forms';
+import { inForm } from '../../support/kernel-forms';
 
 /** Blocks of all quartets of pairs, one after another. */
 function quartetBlocks(basis: PlacedBasis, form: KernelForm, threshold = 0): Float64Array[] {
@@ -21,11 +21,25 @@ function quartetBlocks(basis: PlacedBasis, form: KernelForm, threshold = 0): Flo
   );
 }
 
-/** Largest difference of the two forms in a quartet beside its largest integral, of all quartets. */
+/** Largest difference of the two forms, beside the Schwarz bound √(ab|ab) √(cd|cd) of its quartet, of all quartets. */
 function largestDisagreement(basis: PlacedBasis): number {
   const fast = quartetBlocks(basis, 'fast');
   const plain = quartetBlocks(basis, 'plain');
-  return Math.max(...plain.map((block, q) => relativeDifference(fast[q], block)));
+  const pairs = shellPairs(basis);
+  const bounds = pairs.map(({ productCount }, i) => {
+    const block = plain[i * pairs.length + i];
+    return Math.sqrt(
+      Math.max(...Array.from({ length: productCount }, (_, p) => block[p * (productCount + 1)])),
+    );
+  });
+  let worst = 0;
+  plain.forEach((block, q) => {
+    const bound = bounds[Math.floor(q / pairs.length)] * bounds[q % pairs.length];
+    block.forEach((value, i) => {
+      worst = Math.max(worst, Math.abs(fast[q][i] - value) / bound);
+    });
+  });
+  return worst;
 }
 
 const coordinate = fc.double({ min: -3, max: 3, noNaN: true });

@@ -1,11 +1,12 @@
 import { at, fma, mul, put, sub, times } from './vector';
 
 /*
- * Boys functions of two arguments at once: the method, table and constants of special-functions/boys-function.ts.
+ * Boys functions of two arguments at once: the method and constants of special-functions/boys-function.ts, with a
+ * table for each degree.
  */
 
-/** e^−T, F_0 … F_26 at 32 points a unit of T */
-const ROW_BYTES: i32 = 28 << 3;
+/** e^−T and the Taylor coefficients of F_degree, 0 … 6, at 32 points a unit of T: a line of the cache a point */
+const ROW_BYTES: i32 = 64;
 const GRID_DENSITY: f64 = 32;
 const TABLE_END: f64 = 36;
 const EXP_OF_TABLE_END: f64 = 2.319522830243569e-16;
@@ -14,7 +15,11 @@ const EXPONENTIAL_END: f64 = 72;
 /** 1.5·2⁵²: a number added to it is rounded to an integer, which stands in the low bits */
 const ROUNDING: f64 = 6755399441055744;
 
-/** F_0 … F_degree of both arguments as a row of vectors. @param inverseOdd - 1/(2m − 1) at m */
+/**
+ * F_0 … F_degree of both arguments as a row of vectors.
+ *
+ * @param table - that of the degree; `inverseOdd` holds 1/(2m − 1) at m
+ */
 export function boysInto(degree: i32, argument: v128, table: usize, inverseOdd: usize, target: usize): void {
   const isFar = f64x2.ge(argument, f64x2.splat(TABLE_END));
   if (!v128.any_true(isFar)) {
@@ -52,33 +57,24 @@ function nearInto(
   const step = sub(times(1 / GRID_DENSITY, sub(rounded, rounding)), reduced);
   const row0 = table + <usize>(i32x4.extract_lane(rounded, 0) * ROW_BYTES);
   const row1 = table + <usize>(i32x4.extract_lane(rounded, 2) * ROW_BYTES);
-  const first0 = row0 + 8 + ((<usize>degree) << 3);
-  const first1 = row1 + 8 + ((<usize>degree) << 3);
-  const half = times(1 / 2.0, step);
-  const third = times(1 / 3.0, step);
-  const quarter = times(1 / 4.0, step);
-  const fifth = times(1 / 5.0, step);
-  const sixth = times(1 / 6.0, step);
-  let value = fma(sixth, both(first0, first1, 48), both(first0, first1, 40));
-  value = fma(fifth, value, both(first0, first1, 32));
-  value = fma(quarter, value, both(first0, first1, 24));
-  value = fma(third, value, both(first0, first1, 16));
-  value = fma(half, value, both(first0, first1, 8));
-  value = fma(step, value, both(first0, first1, 0));
+  const step2 = mul(step, step);
+  const step4 = mul(step2, step2);
+  // in pairs, so that few sums wait for one another
+  const low = fma(step, both(row0, row1, 16), both(row0, row1, 8));
+  const middle = fma(step, both(row0, row1, 32), both(row0, row1, 24));
+  const high = fma(step2, both(row0, row1, 56), fma(step, both(row0, row1, 48), both(row0, row1, 40)));
+  let value = fma(step4, high, fma(step2, middle, low));
   put(target, degree, value);
-  if (degree === 0) return step;
-  const one = f64x2.splat(1);
-  let exponential = fma(times(1 / 7.0, step), one, one);
-  exponential = fma(sixth, exponential, one);
-  exponential = fma(fifth, exponential, one);
-  exponential = fma(quarter, exponential, one);
-  exponential = fma(third, exponential, one);
-  exponential = fma(half, exponential, one);
-  exponential = fma(step, exponential, one);
-  exponential = mul(mul(exponential, scale), both(row0, row1, 0));
+  const growth = fma(
+    step4,
+    fma(step2, f64x2.splat(1 / 720.0), fma(step, f64x2.splat(1 / 120.0), f64x2.splat(1 / 24.0))),
+    fma(step2, fma(step, f64x2.splat(1 / 6.0), f64x2.splat(0.5)), f64x2.add(step, f64x2.splat(1))),
+  );
+  const exponential = mul(mul(growth, scale), both(row0, row1, 0));
   const twice = f64x2.add(argument, argument);
   for (let order = degree; order > 0; order--) {
-    value = mul(fma(twice, value, exponential), v128.load64_splat(inverseOdd + ((<usize>order) << 3)));
+    const inverse = v128.load64_splat(inverseOdd + ((<usize>order) << 3));
+    value = fma(mul(twice, inverse), value, mul(exponential, inverse));
     put(target, order - 1, value);
   }
   return exponential;

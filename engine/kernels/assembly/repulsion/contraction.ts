@@ -57,6 +57,69 @@ export function contractInto(
   }
 }
 
+/** {@link contractInto} with two neighbouring factors into two targets, so that the source is read once for both. */
+export function contractTwoInto(
+  factor: usize,
+  factorStep: usize,
+  source: usize,
+  sourceStep: usize,
+  count: i32,
+  first: usize,
+  second: usize,
+  length: i32,
+  isFirst: bool,
+): void {
+  const zero = f64x2.splat(0);
+  let n = 0;
+  for (; n + 3 <= length; n += 3) {
+    const place = (<usize>n) << 4;
+    let f = factor;
+    let row = source + place;
+    let s0 = isFirst ? zero : at(first, n);
+    let s1 = isFirst ? zero : at(first, n + 1);
+    let s2 = isFirst ? zero : at(first, n + 2);
+    let t0 = isFirst ? zero : at(second, n);
+    let t1 = isFirst ? zero : at(second, n + 1);
+    let t2 = isFirst ? zero : at(second, n + 2);
+    for (let k = 0; k < count; k++) {
+      const one = v128.load(f);
+      const other = v128.load(f, 16);
+      const v0 = v128.load(row);
+      const v1 = v128.load(row, 16);
+      const v2 = v128.load(row, 32);
+      s0 = fma(one, v0, s0);
+      s1 = fma(one, v1, s1);
+      s2 = fma(one, v2, s2);
+      t0 = fma(other, v0, t0);
+      t1 = fma(other, v1, t1);
+      t2 = fma(other, v2, t2);
+      f += factorStep;
+      row += sourceStep;
+    }
+    put(first, n, s0);
+    put(first, n + 1, s1);
+    put(first, n + 2, s2);
+    put(second, n, t0);
+    put(second, n + 1, t1);
+    put(second, n + 2, t2);
+  }
+  for (; n < length; n++) {
+    let f = factor;
+    let row = source + ((<usize>n) << 4);
+    let s = isFirst ? zero : at(first, n);
+    let t = isFirst ? zero : at(second, n);
+    for (let k = 0; k < count; k++) {
+      const value = v128.load(row);
+      s = fma(v128.load(f), value, s);
+      t = fma(v128.load(f, 16), value, t);
+      f += factorStep;
+      row += sourceStep;
+    }
+    put(first, n, s);
+    put(second, n, t);
+  }
+}
+
 /** Adds the two lanes of each vector. */
 export function joinLanes(source: usize, count: i32, target: usize): void {
   let n = 0;
