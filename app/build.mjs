@@ -43,8 +43,8 @@ const RENDERER_PAGE = 'app/renderer/index.html';
 
 const EXECUTABLES = new Set(['farwell.js', 'start.js']);
 const SHEBANG = '#!/usr/bin/env node\n';
-/** Electron is given by its own runtime; resvg reads its WebAssembly file beside itself; canvas is an optional extra that vega asks for and that we do not use. */
-const EXTERNAL = ['electron', '@resvg/resvg-wasm', 'canvas'];
+/** Electron is given by its own runtime; resvg and pdfmake read files beside themselves, as fontkit under pdfmake does; canvas is an optional extra that vega asks for and that we do not use. */
+const EXTERNAL = ['electron', '@resvg/resvg-wasm', 'pdfmake', 'fontkit', 'canvas'];
 const STALE_AFTER_MS = 3_600_000;
 /** What decides whether a build is still good. */
 const SOURCES = ['app', 'engine', 'tests/benchmarks', 'package.json', 'package-lock.json'];

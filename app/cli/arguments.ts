@@ -16,7 +16,18 @@ export type Invocation =
     }
   | { readonly kind: 'check'; readonly study: string }
   | { readonly kind: 'basis'; readonly name?: string }
-  | { readonly kind: 'report'; readonly results: readonly string[]; readonly out?: string }
+  | {
+      readonly kind: 'report';
+      readonly results: readonly string[];
+      readonly out?: string;
+      /** of the figure, millimetres */
+      readonly width?: number;
+      readonly height?: number;
+      /** whether the study sentence stands in the picture */
+      readonly hasCaption: boolean;
+      /** prints geometries instead of writing a report: at this coordinate, or at all */
+      readonly geometry?: number | 'all';
+    }
   | { readonly kind: 'show'; readonly text: string }
   | { readonly kind: 'misuse'; readonly message: string; readonly remedy: string };
 
@@ -30,8 +41,11 @@ export const HELP = `farwell pulls a bond apart: potential-energy curves by Hart
       --timings                   says where the time went
   farwell check STUDY           explains a study, with its memory and time, without computing it
   farwell basis [NAME]          lists the basis sets, or prints one as a study can hold it
-  farwell report RESULTS...     makes figures and tables of results files
+  farwell report RESULTS...     makes report, figures and tables of results files
       --out DIR                   writes them into DIR
+      --width MM --height MM      makes the figure of this size (default: 85 and 170 mm wide)
+      --no-caption                leaves the study sentence out of the picture
+      --geometry PLACE            prints the atoms at that distance or angle, or at \`all\`, and writes no files
 
   farwell --version             prints the version
 
@@ -48,6 +62,16 @@ interface RunFlags {
 }
 
 const MOST_WORKERS = 1024;
+/** Narrower figures have no room for their labels, wider ones no paper. */
+const FIGURE_MILLIMETRES = { least: 40, most: 500 };
+
+interface ReportFlags {
+  readonly out?: string;
+  readonly width?: number;
+  readonly height?: number;
+  readonly caption: boolean;
+  readonly geometry?: number | 'all';
+}
 
 /** Reads the arguments after the program's name. */
 export function parseArguments(argv: readonly string[]): Invocation {
@@ -77,8 +101,12 @@ export function parseArguments(argv: readonly string[]): Invocation {
   program
     .command('report <results...>')
     .option('--out <dir>')
-    .action((results: string[], options: { out?: string }) => {
-      invocation = { kind: 'report', results, ...options };
+    .addOption(new Option('--width <mm>').argParser(parseMillimetres))
+    .addOption(new Option('--height <mm>').argParser(parseMillimetres))
+    .option('--no-caption')
+    .addOption(new Option('--geometry <place>').argParser(parsePlace).conflicts(['out', 'width', 'height']))
+    .action((results: string[], { caption, ...options }: ReportFlags) => {
+      invocation = { kind: 'report', results, ...options, hasCaption: caption };
     });
   try {
     program.parse(argv, { from: 'user' });
@@ -91,8 +119,30 @@ export function parseArguments(argv: readonly string[]): Invocation {
 
 function parseWorkers(text: string): number {
   const workers = Number(text);
-  if (!/^\d+$/.test(text) || workers < 1 || workers > MOST_WORKERS) throw new InvalidArgumentError('');
+  if (!/^\d+$/.test(text) || workers < 1 || workers > MOST_WORKERS)
+    throw new InvalidArgumentError(
+      `“${text}” is no number of workers.\nGive a whole number from 1 to ${MOST_WORKERS}, or leave it out for one for every core.`,
+    );
   return workers;
+}
+
+function parseMillimetres(text: string): number {
+  const length = Number(text);
+  const { least, most } = FIGURE_MILLIMETRES;
+  if (!/^\d+(\.\d+)?$/.test(text) || length < least || length > most)
+    throw new InvalidArgumentError(
+      `“${text}” is no size of a figure.\nGive millimetres from ${least} to ${most}, as \`--width 85 --height 60\`.`,
+    );
+  return length;
+}
+
+function parsePlace(text: string): number | 'all' {
+  if (text === 'all') return 'all';
+  if (!/^-?\d+(\.\d+)?$/.test(text))
+    throw new InvalidArgumentError(
+      `“${text}” is no place along a scan.\nGive a distance or angle in the unit of the study, or \`all\`.`,
+    );
+  return Number(text);
 }
 
 /** The argument parser's complaint in our words; the culprit's name is only in its text, as the first in quotes. */
@@ -127,16 +177,19 @@ function explain({ code, message }: CommanderError, argv: readonly string[]): In
     case 'commander.optionMissingArgument':
       return misuse(`A value is missing after “${culprit.split(' ')[0]}”.`);
     case 'commander.conflictingOption':
-      return misuse(
-        '“--print” writes no files, so “--out” has no meaning with it.',
-        'Leave one of the two out.',
-      );
-    case 'commander.invalidArgument':
-      return misuse(
-        `“${/argument '(.*)' is invalid/.exec(message)?.[1] ?? ''}” is no number of workers.`,
-        `Give a whole number from 1 to ${MOST_WORKERS}, or leave it out for one for every core.`,
-      );
+      return misuse(conflictText(message), 'Leave one of the two out.');
+    case 'commander.invalidArgument': {
+      // what our own parsers say, message and remedy, behind the general words
+      const [text = '', help] = message.replace(/^.*? is invalid\. (?=“)/s, '').split('\n');
+      return misuse(text, help);
+    }
     default:
       return misuse(message.replace(/^error: /, ''));
   }
+}
+
+/** Of the two options that exclude each other the first writes no files, which the second is about. */
+function conflictText(message: string): string {
+  const [printing = '', other = ''] = [...message.matchAll(/'(--[\w-]+)/g)].map(([, option]) => option);
+  return `“${printing}” writes no files, so “${other}” has no meaning with it.`;
 }

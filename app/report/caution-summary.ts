@@ -1,4 +1,6 @@
 import type { Caution, StudyResults } from '#engine';
+import type { ListItem } from './report-document';
+import { capitalised, ended } from './sentences';
 
 interface CautionAt {
   readonly caution: Caution;
@@ -7,15 +9,15 @@ interface CautionAt {
 }
 
 /**
- * The cautions of a results file as sentences: those that many points share are said once, with where they hold;
- * where their words differ from point to point, as at the first and as at the last.
+ * The cautions of a results file, each with what it means and what to do: those that many points share are said once,
+ * with where they hold; where their words differ from point to point, as at the first and as at the last.
  *
  * @param coordinateText - a coordinate of the study as printed, unit included
  */
 export function cautionSummary(
   results: StudyResults,
   coordinateText: (coordinate: number) => string,
-): readonly string[] {
+): readonly ListItem[] {
   const all: CautionAt[] = [
     ...results.cautions.map((caution) => ({ caution, coordinate: undefined })),
     ...results.points.flatMap(({ coordinate, cautions }) =>
@@ -29,31 +31,35 @@ export function cautionSummary(
     const key = [code, level, one.coordinate === undefined && message].join(' ');
     groups.set(key, [...(groups.get(key) ?? []), one]);
   }
-  return [...groups.values()].map((group) => sentenceOf(group, coordinateText));
+  return [...groups.values()].map((group) => itemOf(group, coordinateText));
 }
 
-function sentenceOf(group: readonly CautionAt[], coordinateText: (coordinate: number) => string): string {
+function itemOf(group: readonly CautionAt[], coordinateText: (coordinate: number) => string): ListItem {
   const first = group[0]!;
   const last = group.at(-1)!;
-  const where = placesText(
-    group.flatMap(({ coordinate }) => (coordinate === undefined ? [] : [coordinate])),
-    coordinateText,
-  );
-  const subject = capitalised([first.caution.level, where].filter(Boolean).join(' '));
-  const ending =
-    last.caution.message !== first.caution.message && last.coordinate !== undefined
-      ? ` At ${coordinateText(last.coordinate)}: ${last.caution.message}`
-      : '';
-  return `${subject ? `${subject}: ` : ''}${first.caution.message}${ending}`;
+  const { level, range, message, meaning, remedy } = first.caution;
+  const places = group.flatMap(({ coordinate }) => (coordinate === undefined ? [] : [coordinate]));
+  const where = placesText(places.length > 0 ? places : (range ?? []), places.length, coordinateText);
+  const changed =
+    last.caution.message !== message && last.coordinate !== undefined
+      ? [`At ${coordinateText(last.coordinate)}: ${last.caution.message}`]
+      : [];
+  const sentences = [message, ...changed, ...(meaning ? [meaning] : []), ...(remedy ? [remedy] : [])];
+  return {
+    lead: capitalised([level, where].filter(Boolean).join(' ')),
+    text: sentences.map(ended).join(' '),
+  };
 }
 
 /** `at 2 Å`, `between 2 Å and 4 Å (21 points)` */
-function placesText(places: readonly number[], coordinateText: (coordinate: number) => string): string {
+function placesText(
+  places: readonly number[],
+  points: number,
+  coordinateText: (coordinate: number) => string,
+): string {
   if (places.length === 0) return '';
   const low = Math.min(...places);
   const high = Math.max(...places);
   if (low === high) return `at ${coordinateText(low)}`;
-  return `between ${coordinateText(low)} and ${coordinateText(high)} (${places.length} points)`;
+  return `between ${coordinateText(low)} and ${coordinateText(high)}${points > 1 ? ` (${points} points)` : ''}`;
 }
-
-const capitalised = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

@@ -5,8 +5,10 @@ import { FAINT_INK, FONT, GRID, INK, LABEL_SIZE, MARKER_AREA, TICK_LENGTH, TITLE
 
 /** A path in the square from −1 to 1. */
 const CROSS = 'M-1,-1L1,1M-1,1L1,-1';
+/** Length of the bar at a minimum, in points. */
+const BAR = 9;
 /** Points between ticks of the distance axis, about. */
-const TICK_DISTANCE = 36;
+const TICK_DISTANCE = 30;
 
 /** Lengths in points. */
 export interface PanelPlacement {
@@ -90,11 +92,31 @@ export function panelGroup({
         type: 'group',
         clip: true,
         encode: { enter: { width: { value: width }, height: { value: height } } },
-        // later levels first, so that the dashes of earlier ones show on top of solid lines
-        marks: panel.curves.toReversed().flatMap(curveMarks),
+        marks: [
+          ...(panel === plan.energies && plan.levels ? levelMarks(plan.levels) : []),
+          // later levels first, so that the dashes of earlier ones show on top of solid lines
+          ...panel.curves.toReversed().flatMap(curveMarks),
+        ],
       },
     ],
   };
+}
+
+function levelMarks({ lines, colour }: NonNullable<FigurePlan['levels']>): Mark[] {
+  return lines.map(
+    ({ from, to, y }): Mark => ({
+      type: 'rule',
+      encode: {
+        enter: {
+          x: { scale: 'x', value: from },
+          x2: { scale: 'x', value: to },
+          y: { scale: 'y', value: y },
+          stroke: { value: colour },
+          strokeWidth: { value: 0.35 },
+        },
+      },
+    }),
+  );
 }
 
 function curveMarks(curve: DrawnCurve): Mark[] {
@@ -143,10 +165,10 @@ function curveMarks(curve: DrawnCurve): Mark[] {
             [curve.minimum],
             {
               x: place.x,
-              y: { ...place.y, offset: -6 },
-              y2: { ...place.y, offset: 6 },
+              y: { ...place.y, offset: -BAR / 2 },
+              y2: { ...place.y, offset: BAR / 2 },
               stroke,
-              strokeWidth: { value: 1 },
+              strokeWidth: { value: 0.8 },
             },
             'rule',
           ),

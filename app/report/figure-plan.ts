@@ -1,6 +1,8 @@
 import type { StudyResults } from '#engine';
 import { styleOfLevel } from '../study/level-style';
+import { shareEnergyScale } from './comparability';
 import { type CurvePoint, type CurveSeries, curveSeries } from './curve-series';
+import { levelWithLevels, type WellLevels, wellLevels } from './figure-levels';
 import { coordinateRange, correlationRange, energyRange } from './figure-ranges';
 import { type CurveStyle, FAINT_INK, FILE_COLOURS, HIGHER_STATE_DASH, TRIPLET_DASH } from './figure-style';
 import { coordinateHeading, sharedCoordinate } from './scanned-coordinate';
@@ -40,6 +42,8 @@ export interface FigurePlan {
   readonly coordinateTitle: string;
   readonly coordinateRange: readonly [number, number];
   readonly energies: PlannedPanel;
+  /** vibrational levels in the well of one curve */
+  readonly levels?: WellLevels & { readonly colour: string };
   /** absent where no level gives a correlation energy */
   readonly correlation?: PlannedPanel;
   readonly legend: readonly LegendEntry[];
@@ -47,6 +51,8 @@ export interface FigurePlan {
   readonly key: readonly string[];
 }
 
+/** Of two places on the axis, in its unit: a curve takes one of them only. */
+const SAME_PLACE = 1e-6;
 /** Curves with more points than this carry a marker on every second, third, … point. */
 const MARKERS_PER_CURVE = 11;
 
@@ -65,7 +71,9 @@ export function planFigure(
 ): { readonly plan: FigurePlan } | { readonly reason: string } {
   const shared = sharedCoordinate(results, names);
   if (shared.kind === 'none') return { reason: 'A single geometry has no curve to draw.' };
-  const isAbsolute = new Set(results.map(composition)).size === 1;
+  const isAbsolute = shareEnergyScale(
+    results.map((file, index) => ({ name: names[index] ?? '', results: file })),
+  );
   const all = curveSeries(results, names, shared);
   const series = (isAbsolute ? all : all.map((one) => aboveMinimum(one, all))).filter(
     ({ points }) => points.length > 0,
@@ -79,7 +87,7 @@ export function planFigure(
     return results.length === 1 ? style : { ...style, colour: FILE_COLOURS[file % FILE_COLOURS.length]! };
   };
   const energies = series.map((one, index) => ({
-    ...drawnCurve(one, index, styleOf(one), ({ energy }) => energy),
+    ...drawnCurve(withMinimum(one), index, styleOf(one), ({ energy }) => energy),
     ...(one.minimum ? { minimum: { x: one.minimum.coordinate, y: one.minimum.energy } } : {}),
   }));
   const correlation = series.flatMap((one, index) =>
@@ -87,15 +95,18 @@ export function planFigure(
       ? [drawnCurve(one, index, styleOf(one), (point) => point.correlation)]
       : [],
   );
+  const range = energyRange(energies, shared.kind);
+  const levels = results.length === 1 ? levelsInWell(results[0]!, series, energies, range) : undefined;
   return {
     plan: {
       coordinateTitle: coordinateHeading(shared),
       coordinateRange: coordinateRange(energies),
       energies: {
         title: [isAbsolute ? 'Energy (hartree)' : 'Energy above minimum (hartree)'],
-        range: energyRange(energies, shared.kind),
+        range,
         curves: energies,
       },
+      ...(levels && { levels }),
       ...(correlation.length > 0
         ? {
             correlation: {
@@ -106,24 +117,27 @@ export function planFigure(
           }
         : {}),
       legend: legendOf(series, names, styleOf),
-      key: keyOf(energies),
+      key: keyOf(energies, levels, results[0] && levelWithLevels(results[0])),
     },
   };
+}
+
+function levelsInWell(
+  results: StudyResults,
+  series: readonly CurveSeries[],
+  energies: readonly DrawnCurve[],
+  range: readonly [number, number],
+): FigurePlan['levels'] {
+  const level = levelWithLevels(results);
+  const curve = energies[series.findIndex((one) => one.level === level && !one.isExcited)];
+  const found = level !== undefined && curve && wellLevels(results, level, curve.points, range);
+  return found ? { ...found, colour: curve.style.colour } : undefined;
 }
 
 function excitedDash(family: string): readonly number[] {
   if (family === 'CIS singlets') return [];
   return family === 'CIS triplets' ? TRIPLET_DASH : HIGHER_STATE_DASH;
 }
-
-const composition = ({ study }: StudyResults): string =>
-  [
-    ...study.molecule.atoms
-      .filter(({ ghost }) => !ghost)
-      .map(({ element }) => element)
-      .sort(),
-    study.molecule.charge,
-  ].join(' ');
 
 /** CIS energies are counted from the RHF minimum, which they are excitations from. */
 function aboveMinimum(one: CurveSeries, all: readonly CurveSeries[]): CurveSeries {
@@ -140,6 +154,14 @@ function aboveMinimum(one: CurveSeries, all: readonly CurveSeries[]): CurveSerie
   };
 }
 
+/** The minimum was computed as the points were, and a coarse scan does not come near it. */
+function withMinimum(one: CurveSeries): CurveSeries {
+  if (!one.minimum) return one;
+  const { coordinate, energy } = one.minimum;
+  const others = one.points.filter((point) => Math.abs(point.coordinate - coordinate) > SAME_PLACE);
+  return { ...one, points: [...others, { coordinate, energy, converged: true }] };
+}
+
 function drawnCurve(
   one: CurveSeries,
   index: number,
@@ -152,7 +174,8 @@ function drawnCurve(
       return y === undefined ? [] : [{ x: point.coordinate, y, converged: point.converged }];
     })
     .sort((a, b) => a.x - b.x);
-  const every = Math.ceil(points.length / MARKERS_PER_CURVE);
+  const markable = points.filter(({ x }) => x !== one.minimum?.coordinate);
+  const every = Math.ceil(markable.length / MARKERS_PER_CURVE);
   return {
     style,
     isExcited: one.isExcited,
@@ -160,7 +183,7 @@ function drawnCurve(
     // staggered, so that the markers of curves that lie on one another are all seen
     marked: one.isExcited
       ? []
-      : points.filter(({ converged }, place) => converged && (place + index) % every === 0),
+      : markable.filter(({ converged }, place) => converged && (place + index) % every === 0),
   };
 }
 
@@ -188,11 +211,22 @@ function legendOf(
   return several ? [...files, ...lowestFirst] : lowestFirst;
 }
 
-function keyOf(curves: readonly DrawnCurve[]): readonly string[] {
+function keyOf(
+  curves: readonly DrawnCurve[],
+  levels: WellLevels | undefined,
+  levelOfLevels: string | undefined,
+): readonly string[] {
   return [
     ...(curves.some(({ minimum }) => minimum) ? ['Bars mark the minima.'] : []),
+    ...(levels
+      ? [
+          `Thin lines: ${levels.every === 1 ? 'the vibrational levels' : `every ${ordinal(levels.every)} vibrational level`} of ${levelOfLevels}.`,
+        ]
+      : []),
     ...(curves.some(({ points }) => points.some(({ converged }) => !converged))
       ? ['Crosses: not converged.']
       : []),
   ];
 }
+
+const ordinal = (count: number): string => ({ 2: 'second', 5: 'fifth' })[count] ?? `${count}th`;

@@ -5,13 +5,16 @@ import { panelGroup } from './figure-panel';
 import type { FigurePlan } from './figure-plan';
 import { FAINT_INK, LABEL_SIZE, TICK_LENGTH, TITLE_SIZE } from './figure-style';
 import { textMark } from './figure-text';
+import { ReportError } from './report-error';
 import { textWidth, wrapText } from './text-layout';
 
 export interface FigureOptions {
   /** of the finished figure: 85 for one column of a journal, 170 for the whole page */
   readonly widthMillimetres: number;
-  /** set beneath the panels */
-  readonly caption: string;
+  /** default: what suits the width */
+  readonly heightMillimetres?: number;
+  /** set beneath the panels; absent where the page around the figure has it */
+  readonly caption?: string;
 }
 
 const POINTS_PER_MILLIMETRE = 72 / 25.4;
@@ -19,53 +22,98 @@ const POINTS_PER_MILLIMETRE = 72 / 25.4;
 /** All lengths in points, the unit of the drawing. */
 const PANEL_GAP = 9;
 const AXIS_ROOM = 27;
+/** between legend and first panel */
+const LEGEND_GAP = 3;
 const CAPTION_LINE = 9;
 const CAPTION_GAP = 5;
 const RIGHT_MARGIN = 5;
 /** Heights of the panels as fractions of the figure's width, capped so that a wide figure stays flat. */
-const PANEL_SHAPES = { energies: { share: 0.6, most: 210 }, correlation: { share: 0.3, most: 100 } } as const;
+const PANEL_SHAPES = { energies: { share: 0.7, most: 250 }, correlation: { share: 0.28, most: 90 } } as const;
+/** Lower ones show nothing. */
+const LOWEST_PANELS = { energies: 60, correlation: 30 } as const;
 
 /**
  * The drawing of a planned figure: legend, energy curves, beneath them the correlation energy on the same
  * distance axis, caption.
+ *
+ * @throws ReportError `report.figureTooSmall`
  */
-export function figureSpecification(plan: FigurePlan, { widthMillimetres, caption }: FigureOptions): Spec {
-  const width = widthMillimetres * POINTS_PER_MILLIMETRE;
-  const heightOf = ({ share, most }: { readonly share: number; readonly most: number }) =>
-    Math.min(share * width, most);
-  const panels = [
-    { panel: plan.energies, height: heightOf(PANEL_SHAPES.energies), wantedTicks: 5 },
-    ...(plan.correlation
-      ? [{ panel: plan.correlation, height: heightOf(PANEL_SHAPES.correlation), wantedTicks: 3 }]
-      : []),
+export function figureSpecification(plan: FigurePlan, options: FigureOptions): Spec {
+  const width = options.widthMillimetres * POINTS_PER_MILLIMETRE;
+  const planned = [
+    { panel: plan.energies, name: 'energies', wantedTicks: 5 } as const,
+    ...(plan.correlation ? [{ panel: plan.correlation, name: 'correlation', wantedTicks: 3 } as const] : []),
   ].map((one) => ({ ...one, ticks: axisTicks(...one.panel.range, one.wantedTicks) }));
 
   const tickRoom = Math.max(
-    ...panels.flatMap(({ ticks }) => ticks.labels.map((label) => textWidth(label, LABEL_SIZE))),
+    ...planned.flatMap(({ ticks }) => ticks.labels.map((label) => textWidth(label, LABEL_SIZE))),
   );
-  const titleLines = Math.max(...panels.map(({ panel }) => panel.title.length));
+  const titleLines = Math.max(...planned.map(({ panel }) => panel.title.length));
   const left = titleLines * TITLE_SIZE * 1.15 + tickRoom + TICK_LENGTH + 6;
   const innerWidth = width - left - RIGHT_MARGIN;
 
   const legend = legendMarks(plan.legend, left, innerWidth);
-  let top = legend.height + 3;
-  const groups = panels.map(({ panel, height, ticks }, index): GroupMark => {
-    const isLast = index === panels.length - 1;
+  const captionLines =
+    options.caption === undefined
+      ? []
+      : wrapText([options.caption, ...plan.key].join(' '), LABEL_SIZE, width - 4);
+  const captionHeight = captionLines.length > 0 ? CAPTION_GAP + captionLines.length * CAPTION_LINE : 0;
+  const around =
+    legend.height + LEGEND_GAP + (planned.length - 1) * PANEL_GAP + AXIS_ROOM + captionHeight + 2;
+  const heights = panelHeights(
+    planned.map(({ name }) => name),
+    width,
+    around,
+    options.heightMillimetres,
+  );
+
+  let top = legend.height + LEGEND_GAP;
+  const groups = planned.map(({ panel, name, ticks }, index): GroupMark => {
+    const isLast = index === planned.length - 1;
+    const height = heights[name];
     const group = panelGroup({ plan, panel, ticks, left, top, width: innerWidth, height, isLast });
     top += height + (isLast ? AXIS_ROOM : PANEL_GAP);
     return group;
   });
-  const captionLines = wrapText([caption, ...plan.key].join(' '), LABEL_SIZE, width - 4);
-  top += CAPTION_GAP;
   const captionMarks = captionLines.map((line, index) =>
-    textMark(line, 2, top + index * CAPTION_LINE, { colour: FAINT_INK, baseline: 'top' }),
+    textMark(line, 2, top + CAPTION_GAP + index * CAPTION_LINE, { colour: FAINT_INK, baseline: 'top' }),
   );
   return {
     width,
-    height: top + captionLines.length * CAPTION_LINE + 2,
+    height: top + captionHeight + 2,
     padding: 0,
     autosize: 'none',
     background: 'white',
     marks: [...legend.marks, ...groups, ...captionMarks],
   };
+}
+
+type PanelName = keyof typeof PANEL_SHAPES;
+
+/** Of the panels in points; with a height asked for, what is left of it once everything around them has its room. */
+function panelHeights(
+  names: readonly PanelName[],
+  width: number,
+  around: number,
+  heightMillimetres: number | undefined,
+): Readonly<Record<PanelName, number>> {
+  const usual = (name: PanelName) => Math.min(PANEL_SHAPES[name].share * width, PANEL_SHAPES[name].most);
+  if (heightMillimetres === undefined)
+    return { energies: usual('energies'), correlation: usual('correlation') };
+  const room = heightMillimetres * POINTS_PER_MILLIMETRE - around;
+  const together = names.reduce((sum, name) => sum + usual(name), 0);
+  const heights = {
+    energies: (room * usual('energies')) / together,
+    correlation: (room * usual('correlation')) / together,
+  };
+  if (names.some((name) => heights[name] < LOWEST_PANELS[name])) {
+    const least = Math.max(...names.map((name) => (LOWEST_PANELS[name] * together) / usual(name)));
+    throw new ReportError(
+      'report.figureTooSmall',
+      'height',
+      `A figure ${heightMillimetres} mm high has no room for its curves beside legend and labels.`,
+      `Make it at least ${Math.ceil((around + least) / POINTS_PER_MILLIMETRE)} mm high, or wider.`,
+    );
+  }
+  return heights;
 }

@@ -1,4 +1,4 @@
-/** What LaTeX reads as commands, and characters that its standard fonts lack. */
+/** What LaTeX reads as commands, and characters that its standard fonts lack or set otherwise. */
 const REPLACEMENTS: Readonly<Record<string, string>> = {
   '\\': '\\textbackslash{}',
   '{': '\\{',
@@ -10,7 +10,12 @@ const REPLACEMENTS: Readonly<Record<string, string>> = {
   _: '\\_',
   '^': '\\textasciicircum{}',
   '~': '\\textasciitilde{}',
+  '|': '\\textbar{}',
+  '<': '\\textless{}',
+  '>': '\\textgreater{}',
+  '"': "''",
   '−': '$-$',
+  '±': '$\\pm$',
   '–': '--',
   '—': '---',
   '’': "'",
@@ -27,10 +32,11 @@ const REPLACEMENTS: Readonly<Record<string, string>> = {
   '≥': '$\\geq$',
   '≈': '$\\approx$',
   '→': '$\\rightarrow$',
+  '∞': '$\\infty$',
+  '√': '$\\surd$',
   '⟨': '$\\langle$',
   '⟩': '$\\rangle$',
   '½': '$\\frac{1}{2}$',
-  '\u0304': '\\textasciimacron{}',
   '\u2009': '\\,',
   '\u00a0': '~',
   '\u202f': '\\,',
@@ -41,23 +47,30 @@ const GREEK = {
   β: 'beta',
   γ: 'gamma',
   δ: 'delta',
+  ε: 'varepsilon',
   ζ: 'zeta',
   θ: 'theta',
   λ: 'lambda',
   μ: 'mu',
+  µ: 'mu',
+  ν: 'nu',
+  ξ: 'xi',
   π: 'pi',
+  ρ: 'rho',
   σ: 'sigma',
   φ: 'phi',
   χ: 'chi',
+  ψ: 'psi',
   ω: 'omega',
   Γ: 'Gamma',
   Δ: 'Delta',
+  Λ: 'Lambda',
   Σ: 'Sigma',
   Π: 'Pi',
   Φ: 'Phi',
   Ψ: 'Psi',
 } as const;
-const SUPERSCRIPTS = {
+const SUPERSCRIPTS: Readonly<Record<string, string>> = {
   '⁰': '0',
   '¹': '1',
   '²': '2',
@@ -70,8 +83,8 @@ const SUPERSCRIPTS = {
   '⁹': '9',
   '⁺': '$+$',
   '⁻': '$-$',
-} as const;
-const SUBSCRIPTS = {
+};
+const SUBSCRIPTS: Readonly<Record<string, string>> = {
   '₀': '0',
   '₁': '1',
   '₂': '2',
@@ -84,17 +97,36 @@ const SUBSCRIPTS = {
   '₉': '9',
   ₑ: 'e',
   ₕ: 'h',
-} as const;
+};
 
 const TABLE = new Map([
   ...Object.entries(REPLACEMENTS),
   ...Object.entries(GREEK).map(([letter, name]) => [letter, `$\\${name}$`] as const),
-  ...Object.entries(SUPERSCRIPTS).map(
-    ([letter, raised]) => [letter, `\\textsuperscript{${raised}}`] as const,
-  ),
-  ...Object.entries(SUBSCRIPTS).map(([letter, lowered]) => [letter, `\\textsubscript{${lowered}}`] as const),
 ]);
 
+const COMBINING_MACRON = '\u0304';
+/** What every LaTeX since 2018 sets as it stands: printable ASCII and the letters of western and central Europe. */
+const KNOWN = /[\x20-\x7e\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u017f]/;
+
+/** A letter with a macron, a run of raised or lowered characters, or any single one. */
+const PIECES = new RegExp(
+  `[A-Za-z]${COMBINING_MACRON}|[${Object.keys(SUPERSCRIPTS).join('')}]+|[${Object.keys(SUBSCRIPTS).join('')}]+|.`,
+  'gu',
+);
+
 /** Text as LaTeX source for any engine: nothing in it can act as a command. */
-export const latexText = (text: string): string =>
-  [...text.replace(/\s+/g, ' ')].map((character) => TABLE.get(character) ?? character).join('');
+export const latexText = (text: string): string => text.replace(/\s+/g, ' ').replace(PIECES, latexPiece);
+
+function latexPiece(piece: string): string {
+  const [first = ''] = piece;
+  if (piece.endsWith(COMBINING_MACRON) && piece !== COMBINING_MACRON) return `$\\bar{${first}}$`;
+  if (first in SUPERSCRIPTS) return `\\textsuperscript{${mapped(piece, SUPERSCRIPTS)}}`;
+  if (first in SUBSCRIPTS) return `\\textsubscript{${mapped(piece, SUBSCRIPTS)}}`;
+  const known = TABLE.get(piece);
+  if (known !== undefined) return known;
+  // from a name of the user's: named rather than an error of the engine
+  return KNOWN.test(piece) ? piece : `(U+${piece.codePointAt(0)!.toString(16).toUpperCase()})`;
+}
+
+const mapped = (piece: string, table: Readonly<Record<string, string>>): string =>
+  [...piece].map((character) => table[character] ?? '').join('');

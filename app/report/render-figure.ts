@@ -3,6 +3,7 @@ import { createRequire } from 'node:module';
 import { crc32 } from 'node:zlib';
 import { initWasm, Resvg } from '@resvg/resvg-wasm';
 import { parse, type Spec, View } from 'vega';
+import { FONT_FILES, readFont } from './fonts';
 import { escapeMarkup } from './text-escapes';
 
 export interface FigureText {
@@ -15,46 +16,76 @@ export interface FigureText {
 /** Line drawings in print want more than photographs do. */
 const PNG_DOTS_PER_INCH = 600;
 const METRES_PER_INCH = 0.0254;
-/** Where the bundled faces do not have a character, the second one has. */
-const FONT_FILES = [
-  '@expo-google-fonts/source-sans-3/400Regular/SourceSans3_400Regular.ttf',
-  'dejavu-fonts-ttf/ttf/DejaVuSans.ttf',
-] as const;
 
-/** The figure as SVG of the given width on paper; text stays text. */
-export async function renderSvg(
-  specification: Spec,
-  widthMillimetres: number,
-  text: FigureText,
-): Promise<string> {
+/** A figure of a given size on paper. */
+export interface DrawnFigure {
+  readonly widthMillimetres: number;
+  readonly heightMillimetres: number;
+  /** SVG in points with the letters as text: for what embeds fonts by itself */
+  readonly withLetters: string;
+}
+
+export async function drawFigure(specification: Spec, widthMillimetres: number): Promise<DrawnFigure> {
   const view = new View(parse(specification), { renderer: 'none' });
   try {
-    const drawing = await view.toSVG();
-    const [, width, height] = /<svg[^>]*?\bwidth="([\d.]+)"[^>]*?\bheight="([\d.]+)"/.exec(drawing) ?? [];
-    const heightMillimetres = (Number(height) / Number(width)) * widthMillimetres;
-    const opening =
-      `<svg xmlns="http://www.w3.org/2000/svg" version="1.1" role="img" width="${widthMillimetres}mm"` +
-      ` height="${heightMillimetres.toFixed(2)}mm" viewBox="0 0 ${width} ${height}">` +
-      `<title>${escapeMarkup(text.title)}</title><desc>${escapeMarkup(text.description)}</desc>`;
-    return drawing.replace(/<svg[^>]*>/, () => opening);
+    const withLetters = await view.toSVG();
+    const { width, height } = sizeInPoints(withLetters);
+    return { widthMillimetres, heightMillimetres: (height / width) * widthMillimetres, withLetters };
   } finally {
     view.finalize();
   }
 }
 
-/** The SVG as PNG of the same size on paper, with the bundled fonts, so that it is the same on every machine. */
-export async function renderPng(svg: string, widthMillimetres: number): Promise<Uint8Array> {
-  const fontBuffers = await loadRenderer();
+function sizeInPoints(svg: string): { readonly width: number; readonly height: number } {
+  const [, width, height] = /<svg[^>]*?\bwidth="([\d.]+)"[^>]*?\bheight="([\d.]+)"/.exec(svg) ?? [];
+  return { width: Number(width), height: Number(height) };
+}
+
+/**
+ * The figure as SVG. Letters are outlines: the file looks the same in every program and needs no font, which journals
+ * ask for.
+ */
+export function renderSvg(figure: DrawnFigure, text: FigureText): Promise<string> {
+  const { withLetters, widthMillimetres, heightMillimetres } = figure;
+  const { width, height } = sizeInPoints(withLetters);
+  const opening =
+    `<svg xmlns="http://www.w3.org/2000/svg" version="1.1" role="img" width="${widthMillimetres}mm"` +
+    ` height="${heightMillimetres.toFixed(2)}mm" viewBox="0 0 ${width} ${height}">` +
+    `<title>${escapeMarkup(text.title)}</title><desc>${escapeMarkup(text.description)}</desc>`;
+  return withSvg(withLetters, {}, (image) =>
+    image
+      .toString()
+      .replace(/\n\s*/g, '')
+      // a thousandth of a point is finer than any press
+      .replace(/\d+\.\d{4,}/g, (number) => String(Number(Number(number).toFixed(3))))
+      .replace(/<svg[^>]*>/, () => opening),
+  );
+}
+
+/** The figure as PNG of the same size on paper. */
+export function renderPng({ withLetters, widthMillimetres }: DrawnFigure): Promise<Uint8Array> {
   const pixels = Math.round((widthMillimetres / 1000 / METRES_PER_INCH) * PNG_DOTS_PER_INCH);
-  const image = new Resvg(svg, {
-    fitTo: { mode: 'width', value: pixels },
-    font: { fontBuffers, defaultFontFamily: 'Source Sans 3', sansSerifFamily: 'Source Sans 3' },
-  });
-  try {
+  return withSvg(withLetters, { fitTo: { mode: 'width', value: pixels } }, (image) => {
     const rendered = image.render();
     const png = rendered.asPng();
     rendered.free();
     return withResolution(png);
+  });
+}
+
+async function withSvg<T>(
+  svg: string,
+  options: ConstructorParameters<typeof Resvg>[1] & object,
+  use: (image: InstanceType<typeof Resvg>) => T,
+): Promise<T> {
+  const fontBuffers = await loadRenderer();
+  const family = 'Source Sans 3';
+  const image = new Resvg(svg, {
+    ...options,
+    font: { fontBuffers, defaultFontFamily: family, sansSerifFamily: family },
+  });
+  try {
+    return use(image);
   } finally {
     image.free();
   }
@@ -64,11 +95,10 @@ let loading: Promise<Uint8Array[]> | undefined;
 
 /** The WebAssembly module can be started only once in a process. */
 function loadRenderer(): Promise<Uint8Array[]> {
-  const require = createRequire(import.meta.url);
-  const load = (file: string): Promise<Uint8Array> => readFile(require.resolve(file));
   loading ??= (async () => {
-    await initWasm(await load('@resvg/resvg-wasm/index_bg.wasm'));
-    return Promise.all(FONT_FILES.map(load));
+    const require = createRequire(import.meta.url);
+    await initWasm(await readFile(require.resolve('@resvg/resvg-wasm/index_bg.wasm')));
+    return Promise.all([FONT_FILES.body.normal, FONT_FILES.fallback.normal].map(readFont));
   })();
   return loading;
 }

@@ -20,7 +20,7 @@ export interface ScannedCoordinate {
  * @throws ReportError `report.coordinatesDiffer` if one scans a distance and another an angle, or nothing
  */
 export function sharedCoordinate(
-  results: readonly StudyResults[],
+  results: readonly Pick<StudyResults, 'study'>[],
   names: readonly string[],
 ): ScannedCoordinate {
   const coordinates = results.map(coordinateOf);
@@ -71,7 +71,7 @@ const GENERAL_LABELS = {
   none: 'Geometry',
 } as const;
 
-function coordinateOf({ study }: StudyResults): ScannedCoordinate {
+function coordinateOf({ study }: Pick<StudyResults, 'study'>): ScannedCoordinate {
   const { atoms, unit: lengthUnit } = study.molecule;
   const chain = (indices: readonly number[]) =>
     indices.map((index) => atoms[index]?.element ?? '?').join('–');

@@ -1,96 +1,184 @@
-import type { StudyResults, Vibration } from '#engine';
-import { comparedConstants } from '../study/compared-constants';
+import type { LevelFindings, StudyResults, Vibration, VibrationalState } from '#engine';
+import { type ComparedConstant, comparedConstants } from '../study/compared-constants';
+import { fileGroup, type NamedResults } from './named-results';
+import type { Citations } from './references';
 import { withMinus } from './text-escapes';
-import type { TextTable } from './text-table';
+import { NO_VALUE, type TableColumn, type TextTable } from './text-table';
 
-/** Levels printed from the lowest; the last follows. */
-const FIRST_LEVELS = 10;
+/** Levels in the body of the report; where there are more, all of them are in an appendix. */
+export const LEVELS_IN_BODY = 20;
 const LEVEL_DECIMALS = 2;
 const ROTATION_DECIMALS = 4;
+const DISTORTION_DIGITS = 3;
 
-/**
- * Constants beside measured ones, and vibrational levels.
- *
- * @param file - name to tell several files apart, else empty
- */
-export function spectroscopyTables(results: StudyResults, file: string): readonly TextTable[] {
-  const of = file ? ` of ${file}` : '';
-  return [...constantsTable(results, of), ...levelsTable(results, of)];
-}
-
-function constantsTable(results: StudyResults, of: string): readonly TextTable[] {
+/** Constants of every level beside measured ones, with differences. */
+export function constantsTable(file: NamedResults, citations: Citations): TextTable | undefined {
+  const { name, results } = file;
   const constants = comparedConstants(results);
   const levels = results.study.levels.filter((level) => constants.some(({ byLevel }) => byLevel.has(level)));
-  if (levels.length === 0) return [];
-  const isMeasured = constants.some(({ measured }) => measured);
-  const rows = constants.map(({ symbol, name, unit, decimals, byLevel, measured }) => [
-    `${symbol}, ${name} (${unit})`,
+  if (levels.length === 0) return undefined;
+  const isCompared = constants.some(({ measured }) => measured);
+  const rows = constants.map(({ symbol, name: words, unit, decimals, byLevel, measured }) => [
+    `${symbol}, ${words} (${unit})`,
     ...levels.map((level) => {
       const value = byLevel.get(level);
-      if (value === undefined) return '';
-      const difference = measured ? ` (${signed(value - measured.value, decimals)})` : '';
-      return withMinus(value.toFixed(decimals)) + difference;
+      return value === undefined ? '' : withMinus(value.toFixed(decimals));
     }),
-    ...(isMeasured
-      ? [measured ? withMinus(String(Number(measured.value.toFixed(decimals)))) : 'not known']
+    ...(isCompared ? [measured ? withMinus(measured.text) : ''] : []),
+    ...(isCompared
+      ? levels.map((level) => {
+          const value = byLevel.get(level);
+          return value === undefined || !measured ? '' : signed(value - measured.value, decimals);
+        })
       : []),
   ]);
-  const sources = [...new Set(constants.flatMap(({ measured }) => measured?.source ?? []))];
+  return {
+    id: name ? `constants-${name}` : 'constants',
+    heading: `${isCompared ? 'Constants beside measured ones' : 'Constants'}${name && ` of ${name}`}`,
+    columns: [
+      { label: 'Constant', content: 'words' },
+      ...levels.map((label) => ({ groups: ['Computed'], label })),
+      ...(isCompared ? [{ label: 'Measured' }] : []),
+      ...(isCompared ? levels.map((label) => ({ groups: ['Computed minus measured'], label })) : []),
+    ],
+    rows,
+    notes: isCompared ? measuredNotes(constants, citations) : notMeasuredNotes(results),
+  };
+}
+
+function measuredNotes(constants: readonly ComparedConstant[], citations: Citations): readonly string[] {
+  const measured = constants.flatMap((constant) =>
+    constant.measured ? [{ ...constant, ...constant.measured }] : [],
+  );
+  const sources = [...new Set(measured.flatMap(({ sources }) => sources))];
+  const recalled = measured.filter(({ isRecalled }) => isRecalled).map(({ symbol }) => symbol);
+  const workedOut = measured.flatMap(({ symbol, workedOutFrom }) =>
+    workedOutFrom === undefined
+      ? []
+      : [`${symbol} = ${workedOutFrom === 'ωₑ' ? 'μ(2πcωₑ)²' : workedOutFrom}`],
+  );
+  const absent = constants.filter(({ whyNotMeasured }) => whyNotMeasured);
+  const reasons = [...new Set(absent.map(({ whyNotMeasured }) => whyNotMeasured!))];
   return [
-    {
-      heading: `Constants${of}`,
-      columns: ['Constant', ...levels, ...(isMeasured ? ['Measured'] : [])],
-      rows,
-      notes: [
-        ...(isMeasured
-          ? [`In brackets: computed minus measured. Measured values: ${sources.join('; ')}.`]
-          : results.measured
-            ? ['No measured constants of this molecule are on file.']
-            : []),
-      ],
-    },
+    `Measured values of the electronic ground state: ${sources.map((source) => `${source} ${citations.cite(source)}`).join('; ')}.`,
+    ...(workedOut.length > 0 ? [`Worked out from measured constants: ${workedOut.join(', ')}.`] : []),
+    ...(recalled.length > 0
+      ? [`Recalled and not compared with the source since: ${recalled.join(', ')}.`]
+      : []),
+    ...reasons.map((reason) => {
+      const symbols = absent.flatMap(({ symbol, whyNotMeasured }) =>
+        whyNotMeasured === reason ? [symbol] : [],
+      );
+      return `${NO_VALUE} for ${symbols.join(', ')}: ${reason}.`;
+    }),
   ];
 }
 
-function levelsTable({ study, findings }: StudyResults, of: string): readonly TextTable[] {
-  const found = study.levels.flatMap((level) => {
-    const vibration = findings[level]?.vibration;
-    return vibration?.kind === 'found' ? [{ level, vibration }] : [];
-  });
-  if (found.length === 0) return [];
-  const most = Math.max(...found.map(({ vibration }) => vibration.levels.length));
-  const rows = Array.from({ length: Math.min(most, FIRST_LEVELS) }, (_, v) => [
+const notMeasuredNotes = ({ measured }: StudyResults): readonly string[] =>
+  measured ? ['No measured constants of this molecule with these isotopes are on file.'] : [];
+
+interface FoundLevels {
+  readonly file: NamedResults;
+  readonly level: string;
+  readonly vibration: FoundVibration;
+}
+type FoundVibration = Extract<Vibration, { readonly kind: 'found' }>;
+
+/**
+ * Vibrational levels of all files: up to `most` from the lowest, and the last.
+ *
+ * @param most - default: all
+ */
+export function levelsTable(
+  files: readonly NamedResults[],
+  most = Number.POSITIVE_INFINITY,
+): TextTable | undefined {
+  const found = files.flatMap((file) =>
+    file.results.study.levels.flatMap((level): FoundLevels[] => {
+      const vibration = file.results.findings[level]?.vibration;
+      return vibration?.kind === 'found' ? [{ file, level, vibration }] : [];
+    }),
+  );
+  const reasons = files.flatMap(reasonsWithoutLevels);
+  if (found.length === 0) return undefined;
+  const count = Math.max(...found.map(({ vibration }) => vibration.levels.length));
+  // files of earlier versions have no distortions
+  const quantities = found.some(({ vibration }) =>
+    vibration.levels.some(({ centrifugalDistortionPerCm }) => centrifugalDistortionPerCm !== undefined),
+  )
+    ? QUANTITIES
+    : QUANTITIES.slice(0, 2);
+  const cells = (state: VibrationalState | undefined) =>
+    quantities.map(({ cell }) => (state ? cell(state) : ''));
+  const rows = Array.from({ length: Math.min(count, most) }, (_, v) => [
     String(v),
-    ...found.flatMap(({ vibration }) => levelCells(vibration.levels[v])),
+    ...found.flatMap(({ vibration }) => cells(vibration.levels[v])),
   ]);
-  const hasMore = most > FIRST_LEVELS;
-  const last = found.flatMap(({ vibration }) => {
-    const state = vibration.levels.length > FIRST_LEVELS ? vibration.levels.at(-1) : undefined;
-    const [energy = '', rotation = ''] = levelCells(state);
-    return [state ? `v = ${state.v}: ${energy}` : '', rotation];
+  if (count > most) {
+    const last = found.flatMap(({ vibration }) =>
+      cells(vibration.levels.length > most ? vibration.levels.at(-1) : undefined),
+    );
+    rows.push(['last', ...last]);
+  }
+  return {
+    id: 'levels',
+    heading: count > most ? 'Lowest vibrational levels' : 'Vibrational levels',
+    columns: [
+      { label: 'v' },
+      ...found.flatMap(({ file, level }): TableColumn[] =>
+        quantities.map(({ label }) => ({ groups: [...fileGroup(file), level], label })),
+      ),
+    ],
+    rows,
+    notes: [
+      `Without rotation. ${quantities.map(({ meaning }) => meaning).join('; ')}.`,
+      ...found.map(
+        ({ file, level, vibration }) =>
+          `${[...fileGroup(file), level].join(', ')}: ${vibrationText(vibration)}.`,
+      ),
+      ...reasons,
+    ],
+  };
+}
+
+function reasonsWithoutLevels({ name, results }: NamedResults): readonly string[] {
+  return results.study.levels.flatMap((level) => {
+    const vibration: LevelFindings['vibration'] = results.findings[level]?.vibration;
+    return vibration?.kind === 'none'
+      ? [`${[...(name ? [name] : []), level].join(', ')}: no levels. ${vibration.reason}`]
+      : [];
   });
-  return [
-    {
-      heading: `Vibrational levels${of}`,
-      columns: ['v', ...found.flatMap(({ level }) => [`${level}, G (cm⁻¹)`, `${level}, B (cm⁻¹)`])],
-      rows: hasMore ? [...rows, ['last', ...last]] : rows,
-      notes: [
-        'G: energy above the minimum of the curve, without rotation; B: rotational constant of the level.',
-        ...found.map(({ level, vibration }) => `${level}: ${vibrationText(vibration)}`),
-      ],
-    },
-  ];
 }
 
-function levelCells(state: Found['levels'][number] | undefined): readonly [string, string] {
-  if (!state) return ['', ''];
-  return [
-    state.energyPerCm.toFixed(LEVEL_DECIMALS),
-    state.rotationalConstantPerCm.toFixed(ROTATION_DECIMALS),
-  ];
-}
+const QUANTITIES: readonly {
+  readonly label: string;
+  readonly meaning: string;
+  readonly cell: (state: VibrationalState) => string;
+}[] = [
+  {
+    label: 'G (cm⁻¹)',
+    meaning: 'G: energy above the minimum of the curve',
+    cell: ({ energyPerCm }) => energyPerCm.toFixed(LEVEL_DECIMALS),
+  },
+  {
+    label: 'B (cm⁻¹)',
+    meaning: 'B: rotational constant',
+    cell: ({ rotationalConstantPerCm }) => rotationalConstantPerCm.toFixed(ROTATION_DECIMALS),
+  },
+  {
+    label: 'D (cm⁻¹)',
+    meaning: 'D: centrifugal distortion',
+    cell: ({ centrifugalDistortionPerCm: value }) =>
+      value === undefined ? '' : withMinus(plainDigits(value, DISTORTION_DIGITS)),
+  },
+];
 
-type Found = Extract<Vibration, { readonly kind: 'found' }>;
+/** So many digits, never in powers of ten. */
+function plainDigits(value: number, digits: number): string {
+  if (value === 0) return '0';
+  const decimals = Math.max(0, digits - 1 - Math.floor(Math.log10(Math.abs(value))));
+  return value.toFixed(Math.min(decimals, 12));
+}
 
 /** How many levels there are and how far they are to be trusted. */
 export function vibrationText({
@@ -98,7 +186,7 @@ export function vibrationText({
   converged,
   interpolationErrorPerCm,
   beyondComputedRange,
-}: Found): string {
+}: FoundVibration): string {
   const [firstBeyond] = beyondComputedRange;
   return [
     `${boundLevels} bound ${boundLevels === 1 ? 'level' : 'levels'}`,
@@ -108,7 +196,7 @@ export function vibrationText({
   ].join('; ');
 }
 
-function signed(value: number, decimals: number): string {
+export function signed(value: number, decimals: number): string {
   const text = value.toFixed(decimals);
   return text.startsWith('-') ? withMinus(text) : `+${text}`;
 }

@@ -4,5 +4,12 @@ const ENTITIES: Readonly<Record<string, string>> = { '&': '&amp;', '<': '&lt;', 
 export const escapeMarkup = (text: string): string =>
   text.replace(/[&<>"]/g, (character) => ENTITIES[character]!);
 
+/** The text that `escapeMarkup` was given. */
+export const unescapeMarkup = (markup: string): string =>
+  Object.entries(ENTITIES).reduceRight(
+    (text, [character, entity]) => text.replaceAll(entity, character),
+    markup,
+  );
+
 /** A printed number with a true minus sign. */
 export const withMinus = (number: string): string => number.replace(/^-/, '−');

@@ -24,7 +24,9 @@ export interface MeasuredValue {
   readonly value: number;
   /** with the digits, and the uncertainty, of the print; a converted or derived value rounded as computed ones are */
   readonly text: string;
+  /** all of them in one text */
   readonly source: string;
+  readonly sources: readonly string[];
   /** the number was recalled and has not been compared with the source */
   readonly isRecalled: boolean;
   /** of what measured constants it was worked out, where it is not measured itself */
@@ -195,16 +197,18 @@ function measuredValue(
     const { source, status, printed } = known;
     const isPlain = known.unit === unit && !/e/i.test(printed);
     const text = isPlain ? printed.replace(/[[\]]/g, '') : rounded(value, decimals);
-    return { value, text, source, isRecalled: status === 'memory' };
+    return { value, text, source, sources: [source], isRecalled: status === 'memory' };
   }
   if (!workOut) return 'no value on file';
   if (reducedMassDalton === undefined) return 'no value on file to work it out from';
   const found = workOut(ground, reducedMassDalton);
   if (typeof found === 'string') return found;
+  const sources = [...new Set(found.constants.map(({ source }) => source))];
   return {
     value: found.value,
     text: rounded(found.value, decimals),
-    source: [...new Set(found.constants.map(({ source }) => source))].join('; '),
+    source: sources.join('; '),
+    sources,
     isRecalled: found.constants.some(({ status }) => status === 'memory'),
     workedOutFrom: found.from,
   };

@@ -44,8 +44,10 @@ export function parseResults(text: string): ResultsReading {
     return refuse(
       'results.version',
       'version',
-      `These results have version ${JSON.stringify(version)}.`,
-      'Open them with a newer Farwell.',
+      `These results have version ${JSON.stringify(version) ?? 'none'}, and this Farwell reads version 1.`,
+      typeof version === 'number' && version > 1
+        ? 'Open them with a newer Farwell.'
+        : 'They come from an older Farwell, or were changed. Compute the study again with this one.',
     );
   }
   const result = resultsSchema.safeParse(value);

@@ -26,6 +26,8 @@ const ALLOWED: Readonly<Record<string, readonly string[]>> = {
     'node:',
     'vega',
     '@resvg/resvg-wasm',
+    'pdfmake',
+    'fontkit',
     'write-file-atomic',
   ],
   'app/service': ['app/contract', 'app/study', 'app/calculation', '#engine', 'node:', 'zod'],

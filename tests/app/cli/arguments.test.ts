@@ -44,7 +44,13 @@ describe('parseArguments', () => {
       kind: 'report',
       results: ['a', 'b'],
       out: 'd',
+      hasCaption: true,
     });
+    expect(
+      parseArguments(['report', 'a', '--width', '85', '--height=62.5', '--no-caption', '--out', 'd']),
+    ).toEqual({ kind: 'report', results: ['a'], out: 'd', width: 85, height: 62.5, hasCaption: false });
+    expect(parseArguments(['report', 'a', '--geometry', '0.9'])).toMatchObject({ geometry: 0.9 });
+    expect(parseArguments(['report', 'a', '--geometry', 'all'])).toMatchObject({ geometry: 'all' });
     expect(parseArguments(['check', '--', '-odd-name'])).toEqual({ kind: 'check', study: '-odd-name' });
   });
 
@@ -84,6 +90,19 @@ describe('parseArguments', () => {
     for (const count of ['0', '-1', '1.5', '1e3', 'two', '', '1025', '0x10']) {
       expect(misuse('run', 'a', `--workers=${count}`).message).toBe(`“${count}” is no number of workers.`);
     }
-    expect(misuse('run', 'a', '--print', '--out', 'd').message).toContain('--print');
+    expect(misuse('run', 'a', '--print', '--out', 'd').message).toBe(
+      '“--print” writes no files, so “--out” has no meaning with it.',
+    );
+    for (const size of ['39', '501', '85mm', '', '-85']) {
+      expect(misuse('report', 'a', `--width=${size}`)).toEqual({
+        kind: 'misuse',
+        message: `“${size}” is no size of a figure.`,
+        remedy: 'Give millimetres from 40 to 500, as `--width 85 --height 60`.',
+      });
+    }
+    expect(misuse('report', 'a', '--geometry', 'there').message).toContain('“there” is no place');
+    expect(misuse('report', 'a', '--geometry', '1', '--width', '85').message).toBe(
+      '“--geometry” writes no files, so “--width” has no meaning with it.',
+    );
   });
 });

@@ -7,7 +7,10 @@ const asAngstrom = (coordinate: number) => `${coordinate} Å`;
 describe('cautionSummary', () => {
   it('says a caution that many points share once, with where it holds', () => {
     expect(cautionSummary(sampleResults(), asAngstrom)).toEqual([
-      'RHF between 2.1 Å and 4 Å (20 points): The closed-shell solution is not the lowest one here: breaking the spin pairing lowers the energy.',
+      {
+        lead: 'RHF between 2.1 Å and 4 Å (20 points)',
+        text: 'The closed-shell solution is not the lowest one here: breaking the spin pairing lowers the energy.',
+      },
     ]);
   });
 
@@ -19,9 +22,9 @@ describe('cautionSummary', () => {
     };
     const whole = { code: 'basis.dependent', message: 'Two functions were dropped.' };
     expect(cautionSummary({ ...results, points: [point], cautions: [whole] }, asAngstrom)).toEqual([
-      'Two functions were dropped.',
-      'CISD at 0.4 Å: m.',
-      'FCI at 0.4 Å: m.',
+      { lead: '', text: 'Two functions were dropped.' },
+      { lead: 'CISD at 0.4 Å', text: 'm.' },
+      { lead: 'FCI at 0.4 Å', text: 'm.' },
     ]);
   });
 
@@ -32,7 +35,27 @@ describe('cautionSummary', () => {
       cautions: [{ code: 'weight', level: 'FCI', message: `Weight 0.${9 - index}.` }],
     }));
     expect(cautionSummary({ ...sample, points }, asAngstrom)).toEqual([
-      'FCI between 0.4 Å and 0.6 Å (3 points): Weight 0.9. At 0.6 Å: Weight 0.7.',
+      {
+        lead: 'FCI between 0.4 Å and 0.6 Å (3 points)',
+        text: 'Weight 0.9. At 0.6 Å: Weight 0.7.',
+      },
+    ]);
+  });
+
+  it('says what a caution means and what to do, and the range that it names', () => {
+    const caution = {
+      code: 'limit.wrong',
+      level: 'RHF',
+      range: [3, 4] as const,
+      message: 'The limit is wrong.',
+      meaning: 'The far part is no dissociation curve',
+      remedy: 'Use full CI there.',
+    };
+    expect(cautionSummary({ ...sampleResults(), points: [], cautions: [caution] }, asAngstrom)).toEqual([
+      {
+        lead: 'RHF between 3 Å and 4 Å',
+        text: 'The limit is wrong. The far part is no dissociation curve. Use full CI there.',
+      },
     ]);
   });
 });

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { planFigure } from '../../../app/report/figure-plan';
+import { withSpectroscopy } from '../../support/reports';
 import { hartreeFock, sampleResults } from '../../support/sample-results';
 
 const plannedOf = (...args: Parameters<typeof planFigure>) => {
@@ -47,7 +48,7 @@ describe('planFigure', () => {
     );
     const plan = plannedOf([{ ...sample, points }], ['h2']);
     const [rhf] = plan.energies.curves;
-    expect(rhf?.points.filter(({ converged }) => !converged)).toEqual([{ x: 0.9, y: -99, converged: false }]);
+    expect(rhf?.points.filter((point) => !point.converged)).toEqual([{ x: 0.9, y: -99, converged: false }]);
     expect(rhf?.marked.every(({ converged }) => converged)).toBe(true);
     expect(plan.energies.range[0]).toBeGreaterThan(-2);
     expect(plan.key.join(' ')).toContain('not converged');
@@ -58,6 +59,25 @@ describe('planFigure', () => {
     const minima = plan.energies.curves.map(({ minimum }) => minimum?.x);
     expect(minima).toEqual([undefined, undefined, 0.74]);
     expect(plan.correlation?.curves.every(({ minimum }) => minimum === undefined)).toBe(true);
+  });
+
+  it('draws every curve through its minimum, which a coarse scan would miss, without a marker there', () => {
+    const full = plannedOf([withSpectroscopy(3)], ['h2']).energies.curves[0]!;
+    expect(full.points).toContainEqual({ x: 0.74, y: full.minimum?.y, converged: true });
+    expect(full.marked.map(({ x }) => x)).not.toContain(0.74);
+  });
+
+  it('draws vibrational levels between the two branches of their curve', () => {
+    const plan = plannedOf([withSpectroscopy(5)], ['h2']);
+    const { lines = [], every } = plan.levels ?? {};
+    expect([lines.length, every]).toEqual([5, 1]);
+    for (const [index, { from, to, y }] of lines.entries()) {
+      expect(from).toBeLessThan(0.74);
+      expect(to).toBeGreaterThan(0.74);
+      expect(y).toBeGreaterThan(lines[index - 1]?.y ?? plan.energies.curves[0]!.minimum!.y);
+    }
+    expect(plan.key).toContain('Thin lines: the vibrational levels of FCI.');
+    expect(plannedOf([withSpectroscopy(5), sampleResults()], ['a', 'b']).levels).toBeUndefined();
   });
 
   it('lets the repulsive wall leave the frame rather than flatten the well', () => {

@@ -1,52 +1,105 @@
 import { describe, expect, it } from 'vitest';
-import type { LevelFindings } from '#engine';
-import { findingsRows } from '../../../app/report/findings-table';
+import type { LevelFindings, StudyResults } from '#engine';
+import { findingsTable } from '../../../app/report/findings-table';
+import { sharedCoordinate } from '../../../app/report/scanned-coordinate';
 import { sampleResults } from '../../support/sample-results';
 
-const minimaOf = (findings: ReturnType<typeof sampleResults>['findings'], levels = ['FCI']) => {
-  const results = sampleResults();
-  return findingsRows({ ...results, study: { ...results.study, levels }, findings }, '', 'Å').map(
-    ({ minimum }) => minimum,
+const tableOf = (results: StudyResults) =>
+  findingsTable([{ name: '', results }], sharedCoordinate([results], ['']));
+
+/** The finding whose label begins so, of full CI with these findings. */
+function cell(label: string, findings: LevelFindings): string | undefined {
+  const results = sampleResults(['FCI']);
+  const row = tableOf({ ...results, findings: { FCI: findings } })?.rows.find(([head]) =>
+    head?.startsWith(label),
   );
-};
+  return row?.[1];
+}
+
 const found = (uncertainty: number) =>
-  ({
-    FCI: { minimum: { kind: 'found', equilibriumDistance: 0.741234567, energy: -1.17, uncertainty } },
-  }) as const;
+  ({ kind: 'found', equilibriumDistance: 0.741234567, energy: -1.17, uncertainty }) as const;
 
-describe('findingsRows', () => {
+describe('findingsTable', () => {
   it('prints as many digits of a distance as its uncertainty covers', () => {
-    expect(minimaOf(found(1e-4))).toEqual(['0.7412 Å']);
-    expect(minimaOf(found(2e-6))).toEqual(['0.741235 Å']);
-    expect(minimaOf(found(0))).toEqual(['0.741235 Å']);
-    expect(minimaOf(found(0.3))).toEqual(['0.74 Å']);
+    const minimum = (uncertainty: number) => cell('Minimum (Å)', { minimum: found(uncertainty) });
+    expect(minimum(1e-4)).toBe('0.7412');
+    expect(minimum(2e-6)).toBe('0.741235');
+    expect(minimum(0)).toBe('0.741235');
+    expect(minimum(0.3)).toBe('0.74');
   });
 
-  it('says in words where there is no single minimum', () => {
-    expect(minimaOf({ FCI: { minimum: { kind: 'several', near: [0.7, 2.1] } } })).toEqual([
+  it('says in words where there is no single minimum, and why below the table', () => {
+    expect(cell('Minimum', { minimum: { kind: 'several', near: [0.7, 2.1] } })).toBe(
       'several, near 0.7 Å, 2.1 Å',
-    ]);
-    expect(minimaOf({ FCI: { minimum: { kind: 'none', reason: 'too few points' } } })).toEqual([
-      'none: too few points',
-    ]);
-    expect(minimaOf({ FCI: { minimum: { kind: 'atEdge', coordinate: 4 } } })).toEqual([
-      'lowest at the edge of the range, 4 Å',
-    ]);
+    );
+    expect(cell('Minimum', { minimum: { kind: 'atEdge', coordinate: 4 } })).toBe('at the edge, 4 Å');
+    const results = sampleResults(['FCI']);
+    const minimum = { kind: 'none', reason: 'too few points' } as const;
+    const table = tableOf({ ...results, findings: { FCI: { minimum } } });
+    expect(table?.rows[0]).toEqual(['Minimum (Å)', 'none']);
+    expect(table?.notes).toEqual(['FCI, minimum: too few points.']);
   });
 
-  it('gives the onset of an instability with the digits that it is sure of', () => {
-    const onsets = (instabilityOnset?: LevelFindings['instabilityOnset']) => {
-      const results = sampleResults();
-      const RHF = { ...results.findings.RHF!, ...(instabilityOnset && { instabilityOnset }) };
-      return findingsRows({ ...results, findings: { RHF } }, '', 'Å').map(({ onset }) => onset);
-    };
-    expect(onsets({ kind: 'found', coordinate: 1.20348, uncertainty: 3e-4 })).toEqual(['1.2035 Å']);
-    expect(onsets({ kind: 'none', reason: 'RHF is stable at every point.' })).toEqual(['']);
-    expect(onsets()).toEqual(['']);
+  it('gives onsets with the digits that they are sure of, and leaves out rows without any', () => {
+    const minimum = found(1e-5);
+    expect(
+      cell('RHF unstable', {
+        minimum,
+        instabilityOnset: { kind: 'found', coordinate: 1.20348, uncertainty: 3e-4 },
+      }),
+    ).toBe('1.2035');
+    expect(
+      cell('Reference weight below 90 % from (Å)', {
+        minimum,
+        referenceWeight: {
+          kind: 'found',
+          threshold: 0.9,
+          crossings: [],
+          coordinate: 2.1,
+          uncertainty: 1e-3,
+        },
+      }),
+    ).toBe('2.100');
+    expect(
+      cell('RHF unstable', { minimum, instabilityOnset: { kind: 'none', reason: 'stable' } }),
+    ).toBeUndefined();
   });
 
-  it('names the far end that a depth is against', () => {
-    const row = findingsRows(sampleResults(), '', 'Å').find(({ level }) => level === 'FCI');
-    expect(row?.depth).toMatch(/^0\.16\d{4} \(at 4 Å\)$/);
+  it('names what a depth is against: the far end, or the fragments', () => {
+    expect(cell('Well depth is against', sampleResults().findings.FCI!)).toBe('4 Å');
+    const fragment = { charge: 0, multiplicity: 2, energy: -0.5, level: 'ROHF' };
+    expect(
+      cell('Well depth is against', {
+        minimum: found(1e-5),
+        wellDepth: { value: 0.17, against: 'fragments', farEnd: 4, valueAgainstFarEnd: 0.169 },
+        dissociation: {
+          kind: 'found',
+          energy: -1,
+          fragments: [
+            { ...fragment, atoms: [0] },
+            { ...fragment, atoms: [1] },
+          ],
+        },
+      }),
+    ).toBe('H + H');
+  });
+
+  it('converts lengths to the unit of the report', () => {
+    const results = sampleResults(['FCI']);
+    const molecule = { ...results.study.molecule, unit: 'bohr' as const };
+    const inBohr = { ...results, study: { ...results.study, molecule } };
+    const table = findingsTable(
+      [
+        { name: 'a', results },
+        { name: 'b', results: inBohr },
+      ],
+      sharedCoordinate([results, inBohr], ['a', 'b']),
+    );
+    expect(table?.columns.map(({ groups, label }) => [...(groups ?? []), label].join())).toEqual([
+      'Finding',
+      'a,FCI',
+      'b,FCI',
+    ]);
+    expect(table?.rows[0]).toEqual(['Minimum (Å)', '0.74000', '0.391591']);
   });
 });

@@ -14,6 +14,10 @@ describe('latexText', () => {
     );
   });
 
+  it('joins raised characters, sets a macron over its letter, and names what no font has', () => {
+    expect(latexText('cm⁻¹ D̄ₑ ✂')).toBe('cm\\textsuperscript{$-$1} $\\bar{D}$\\textsubscript{e} (U+2702)');
+  });
+
   it('keeps a paragraph in one line', () => {
     expect(latexText('a\n\n b')).toBe('a b');
   });

@@ -1,54 +1,52 @@
 import { readFile } from 'node:fs/promises';
-import { createRequire } from 'node:module';
 import { Resvg } from '@resvg/resvg-wasm';
 import { describe, expect, it } from 'vitest';
 import { planFigure } from '../../../app/report/figure-plan';
-import { figureSpecification } from '../../../app/report/figure-specification';
-import { renderPng, renderSvg } from '../../../app/report/render-figure';
+import { type FigureOptions, figureSpecification } from '../../../app/report/figure-specification';
+import { FONT_FILES } from '../../../app/report/fonts';
+import { type DrawnFigure, drawFigure, renderPng, renderSvg } from '../../../app/report/render-figure';
 import { sampleResults } from '../../support/sample-results';
 
-const FACE = '@expo-google-fonts/source-sans-3/400Regular/SourceSans3_400Regular.ttf';
 const caption = 'Pull the H–H bond of H₂ from 0.4 to 4 Å in 37 steps.';
 
-async function drawn(widthMillimetres: number, title = 'h2'): Promise<string> {
+async function drawn(options: Partial<FigureOptions> = {}) {
   const planned = planFigure([sampleResults(['RHF', 'CIS', 'CISD', 'FCI'])], ['h2']);
   if (!('plan' in planned)) throw new Error(planned.reason);
-  const specification = figureSpecification(planned.plan, { widthMillimetres, caption });
-  return renderSvg(specification, widthMillimetres, { title, description: caption });
+  const { widthMillimetres = 85 } = options;
+  return drawFigure(
+    figureSpecification(planned.plan, { widthMillimetres, caption, ...options }),
+    widthMillimetres,
+  );
 }
 
-describe('renderSvg', () => {
-  it('has the width asked for on paper, text as text, and faces that every system has', async () => {
-    const svg = await drawn(85);
-    expect(svg).toMatch(/^<svg [^>]*width="85mm" height="[\d.]+mm"/);
-    const texts = [...svg.matchAll(/<text[^>]*>([^<]*)<\/text>/g)].map(([, text]) => text);
-    for (const expected of ['H–H distance (Å)', 'RHF', 'CIS singlets', 'FCI'])
-      expect(texts).toContain(expected);
-    expect(texts.join(' ')).toContain(caption);
-    const faces = [...svg.matchAll(/font-family="([^"]*)"/g)].map(([, face]) => face);
-    expect(faces.length).toBeGreaterThan(10);
-    for (const face of faces) expect(face).toMatch(/sans-serif$/);
-  });
-
-  it('says what it shows to those who cannot see it, with names escaped', async () => {
-    const svg = await drawn(85, 'a <b> & c');
-    expect(svg).toContain(`<title>a &lt;b&gt; &amp; c</title><desc>${caption}</desc>`);
-  });
-
+describe('drawFigure', () => {
   it('keeps the size of type from the narrow to the wide figure', async () => {
-    const sizesOf = (svg: string) =>
-      new Set([...svg.matchAll(/font-size="([^"]*)"/g)].map(([, size]) => size));
-    expect(sizesOf(await drawn(170))).toEqual(sizesOf(await drawn(85)));
+    const sizesOf = ({ withLetters }: DrawnFigure) =>
+      new Set([...withLetters.matchAll(/font-size="([^"]*)"/g)].map(([, size]) => size));
+    expect(sizesOf(await drawn({ widthMillimetres: 170 }))).toEqual(sizesOf(await drawn()));
+  });
+
+  it('has exactly the height asked for, and refuses one without room', async () => {
+    const { heightMillimetres } = await drawn({ heightMillimetres: 90 });
+    expect(heightMillimetres).toBeCloseTo(90, 9);
+    await expect(drawn({ heightMillimetres: 40 })).rejects.toMatchObject({
+      code: 'report.figureTooSmall',
+      remedy: expect.stringMatching(/^Make it at least \d+ mm high/),
+    });
+    // what it promises, it keeps
+    const error = await drawn({ heightMillimetres: 40 }).catch(
+      (reason: Error & { remedy: string }) => reason,
+    );
+    const least = Number(/\d+/.exec((error as { remedy: string }).remedy)![0]);
+    expect((await drawn({ heightMillimetres: least })).heightMillimetres).toBeCloseTo(least, 9);
   });
 
   it('keeps everything inside the page', async () => {
     for (const widthMillimetres of [85, 170]) {
-      const svg = await drawn(widthMillimetres);
-      await renderPng(svg, 1); // starts the module that measures
-      const withoutPaper = svg
-        .replace(/<rect[^>]*fill="white"[^>]*>/, '')
-        .replace(/width="\d+mm" height="[\d.]+mm"/, '');
-      const fontBuffers = [await readFile(createRequire(import.meta.url).resolve(FACE))];
+      const figure = await drawn({ widthMillimetres });
+      await renderPng({ ...figure, widthMillimetres: 1 }); // starts the module that measures
+      const withoutPaper = figure.withLetters.replace(/<rect[^>]*fill="white"[^>]*>/, '');
+      const fontBuffers = [await readFile(FONT_FILES.body.normal)];
       const page = new Resvg(withoutPaper, { font: { fontBuffers, defaultFontFamily: 'Source Sans 3' } });
       const drawnArea = page.innerBBox()!;
       expect(drawnArea.width).toBeGreaterThan(page.width / 2);
@@ -58,6 +56,34 @@ describe('renderSvg', () => {
       expect(drawnArea.y + drawnArea.height).toBeLessThan(page.height);
       page.free();
     }
+  });
+});
+
+describe('renderSvg', () => {
+  it('has the width asked for on paper, and no letter that needs a font', async () => {
+    const figure = await drawn();
+    expect(figure.withLetters).toContain('>H–H distance (Å)<');
+    const svg = await renderSvg(figure, { title: 'h2', description: caption });
+    expect(svg).toMatch(/^<svg [^>]*width="85mm" height="[\d.]+mm"/);
+    expect(svg).not.toMatch(/<text|font-family|<image|href=/);
+    expect(svg.match(/<path/g)!.length).toBeGreaterThan(100);
+  });
+
+  it('says what it shows to those who cannot see it, with names escaped', async () => {
+    const svg = await renderSvg(await drawn(), { title: 'a <b> & c', description: caption });
+    expect(svg).toContain(`<title>a &lt;b&gt; &amp; c</title><desc>${caption}</desc>`);
+  });
+
+  it('looks as the drawing with letters does', async () => {
+    const figure = await drawn();
+    const outlined = await renderSvg(figure, { title: '', description: '' });
+    const small = { widthMillimetres: 8.5 };
+    const pictures = await Promise.all(
+      [figure.withLetters, outlined].map((withLetters) => renderPng({ ...figure, ...small, withLetters })),
+    );
+    const [first, second] = pictures.map((png) => Buffer.from(png).length);
+    // the same picture, but for rounding in the third decimal of a point
+    expect(Math.abs(first! - second!) / first!).toBeLessThan(0.02);
   });
 });
 
@@ -71,7 +97,7 @@ describe('renderPng', () => {
   };
 
   it('is 85 mm wide at 600 dots an inch and says so', async () => {
-    const png = Buffer.from(await renderPng(await drawn(85), 85));
+    const png = Buffer.from(await renderPng(await drawn()));
     expect(png.toString('latin1', 1, 4)).toBe('PNG');
     expect(png.readUInt32BE(16)).toBe(2008);
     expect(chunkNames(png).slice(0, 2)).toEqual(['IHDR', 'pHYs']);
@@ -84,8 +110,9 @@ describe('renderPng', () => {
     const pictures = new Set<string>();
     const characters = ['₂', '⁺', 'ₑ', 'ω', '⟨', '⟩', 'Å', '−', '–', '\uE000'];
     for (const character of characters) {
-      const svg = `<svg xmlns="http://www.w3.org/2000/svg" width="20" height="20"><text x="2" y="15" font-family="'Source Sans 3', sans-serif">${character}</text></svg>`;
-      pictures.add(Buffer.from(await renderPng(svg, 2)).toString('base64'));
+      const withLetters = `<svg xmlns="http://www.w3.org/2000/svg" width="20" height="20"><text x="2" y="15" font-family="'Source Sans 3', sans-serif">${character}</text></svg>`;
+      const figure = { widthMillimetres: 2, heightMillimetres: 2, withLetters };
+      pictures.add(Buffer.from(await renderPng(figure)).toString('base64'));
     }
     expect(pictures.size).toBe(characters.length);
   });

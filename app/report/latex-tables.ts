@@ -1,0 +1,101 @@
+import { latexText } from './latex-text';
+import { type ReportDocument, tablesOf } from './report-document';
+import { ended } from './sentences';
+import { headSpans, NO_VALUE, splitTable, type TableColumn, type TextTable } from './text-table';
+
+/** Wider tables are set in small type. */
+const COLUMNS_AT_FULL_SIZE = 6;
+/** Characters that a line holds in small type. */
+const LINE_LENGTH = 100;
+/** Longer tables are set with longtable, which breaks across pages. */
+const ROWS_ON_A_PAGE = 42;
+/** Longer words are broken into lines. */
+const LONGEST_WORDS = 40;
+
+/**
+ * All tables of a report for LaTeX (packages booktabs and, for what is longer than a page, longtable), each captioned
+ * with its heading, the report's own and its notes.
+ */
+export function latexTables(document: ReportDocument): string {
+  const tables = tablesOf(document).flatMap((table) => splitTable(table, LINE_LENGTH, 'onOneLine'));
+  const hasLong = tables.some(isLong);
+  return [
+    `% \\usepackage{booktabs${hasLong ? ',longtable' : ''}}`,
+    ...tables.map((table) => setTable(table, document.heading)),
+  ]
+    .join('\n\n')
+    .concat('\n');
+}
+
+const isLong = ({ rows }: TextTable): boolean => rows.length > ROWS_ON_A_PAGE;
+
+function setTable(table: TextTable, subject: string): string {
+  const { heading, columns, rows, notes } = table;
+  const alignment = columns.map((column, index) =>
+    alignmentOf(
+      column,
+      rows.map((row) => row[index] ?? ''),
+    ),
+  );
+  const caption = latexText([heading, subject, ...notes].map(ended).join(' '));
+  const size = columns.length > COLUMNS_AT_FULL_SIZE ? ['\\footnotesize'] : [];
+  const head = [...spanningRows(columns), `${columns.map(({ label }) => latexText(label)).join(' & ')} \\\\`];
+  const body = rows.map((row) => `${row.map(latexCell).join(' & ')} \\\\`);
+  const lines = isLong(table)
+    ? [
+        '{',
+        ...size,
+        `\\begin{longtable}{${alignment.join('')}}`,
+        `\\caption{${caption}}\\\\`,
+        '\\toprule',
+        ...head,
+        '\\midrule',
+        '\\endhead',
+        '\\bottomrule',
+        '\\endfoot',
+        ...body,
+        '\\end{longtable}',
+        '}',
+      ]
+    : [
+        '\\begin{table}',
+        '\\centering',
+        `\\caption{${caption}}`,
+        ...size,
+        `\\begin{tabular}{${alignment.join('')}}`,
+        '\\toprule',
+        ...head,
+        '\\midrule',
+        ...body,
+        '\\bottomrule',
+        '\\end{tabular}',
+        '\\end{table}',
+      ];
+  return lines.join('\n');
+}
+
+function alignmentOf({ content }: TableColumn, cells: readonly string[]): string {
+  if (content !== 'words') return 'r';
+  return cells.some((cell) => cell.length > LONGEST_WORDS) ? 'p{0.4\\linewidth}' : 'l';
+}
+
+/** For every row of heads that span columns one line, and one of rules beneath them. */
+function spanningRows(columns: readonly TableColumn[]): string[] {
+  return headSpans(columns).flatMap((spans) => {
+    const cells = spans.map(({ text, width }) => `\\multicolumn{${width}}{c}{${latexText(text)}}`);
+    let column = 1;
+    const rules = spans.flatMap(({ text, width }) => {
+      const first = column;
+      column += width;
+      return text ? [`\\cmidrule(lr){${first}-${column - 1}}`] : [];
+    });
+    return [`${cells.join(' & ')} \\\\`, rules.join(' ')];
+  });
+}
+
+/** Numbers in mathematics, for their minus signs. */
+function latexCell(cell: string): string {
+  if (cell === '') return latexText(NO_VALUE);
+  const number = cell.replace(/^−/, '-');
+  return /^[-+]?[\d.]+$/.test(number) ? `$${number}$` : latexText(cell);
+}

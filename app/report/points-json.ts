@@ -1,0 +1,42 @@
+import type { StudyResults } from '#engine';
+import { energyColumns } from '../study/energy-columns';
+import { studySentence } from '../study/sentence';
+import { sharedCoordinate } from './scanned-coordinate';
+
+/**
+ * The points of a study as JSON for a plotting program: energies and correlation energies in hartree under the names
+ * of the CSV's columns, null where a level has no number or did not converge.
+ */
+export function pointsJson(results: StudyResults): string {
+  const { label, kind, lengthUnit } = sharedCoordinate([results], ['']);
+  const columns = energyColumns(results);
+  const points = results.points.map((point) => {
+    const entries = columns.map((column) => ({ label: column.label, entry: column.entryAt(point) }));
+    const numbers = (pick: (entry: NonNullable<(typeof entries)[number]['entry']>) => number | undefined) =>
+      Object.fromEntries(
+        entries.flatMap(({ label: name, entry }) => {
+          const value = entry && pick(entry);
+          if (entry && value === undefined) return [];
+          return [[name, entry?.converged && Number.isFinite(value) ? value : null]];
+        }),
+      );
+    return {
+      coordinate: point.coordinate,
+      energies: numbers(({ energy }) => energy),
+      correlationEnergies: numbers(({ correlation }) => correlation),
+    };
+  });
+  const unit = kind === 'distance' ? lengthUnit : kind === 'none' ? null : 'degree';
+  return `${JSON.stringify(
+    {
+      format: 'farwell/points',
+      version: 1,
+      study: studySentence(results.study),
+      coordinate: { name: label, unit },
+      energyUnit: 'hartree',
+      points,
+    },
+    null,
+    2,
+  )}\n`;
+}
