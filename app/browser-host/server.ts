@@ -28,8 +28,8 @@ export interface BrowserHost {
 
 /** 256 bits: not to be guessed, however long one tries. */
 const TOKEN_BYTES = 32;
-/** A study with all its basis functions spelled out is far smaller. */
-const LARGEST_REQUEST_BYTES = 4 * 2 ** 20;
+/** Results of a long scan with many states, sent for a report, are smaller. */
+const LARGEST_REQUEST_BYTES = 32 * 2 ** 20;
 
 /** Serves the window and its requests on 127.0.0.1, to whoever has the token and to nobody else. */
 export async function startBrowserHost(options: BrowserHostOptions): Promise<BrowserHost> {
@@ -149,7 +149,7 @@ const TOO_LARGE: Reply<never> = {
   error: {
     code: 'request.tooLarge',
     place: '',
-    message: 'The study is larger than 4 MB.',
+    message: 'What the window sends is larger than 32 MB.',
     remedy: 'Run it from the command line, or leave out what does not belong to it.',
   },
 };

@@ -52,6 +52,35 @@ export interface ProgramDescription {
   readonly workers: number;
 }
 
+/** What a report can be saved as. */
+export type ReportPart =
+  | 'html'
+  | 'pdf'
+  | 'markdown'
+  | 'latex'
+  | 'figureSvg'
+  | 'figurePdf'
+  | 'figurePng'
+  | 'pointsCsv'
+  | 'pointsJson'
+  /** one file a table */
+  | 'tableCsv';
+
+export interface ReportOptions {
+  /** of the figure files, from 40 to 500; default in the window: 85 */
+  readonly widthMillimetres?: number | undefined;
+  /** default: what suits the width */
+  readonly heightMillimetres?: number | undefined;
+  /** whether the study sentence stands in the picture of the figure files; default true */
+  readonly hasCaption?: boolean | undefined;
+}
+
+export interface MadeFile {
+  /** as on the command line, relative to the folder chosen */
+  readonly name: string;
+  readonly base64: string;
+}
+
 /** Everything that the window can ask of its host: one signature a request, for every host. */
 export interface Requests {
   'program:describe': () => ProgramDescription;
@@ -66,6 +95,13 @@ export interface Requests {
     readonly id: number;
     readonly points: number;
   };
+  /** the files of one part of the report of some results */
+  'report:make': (request: {
+    /** texts of results files, each with its name without endings; several are compared */
+    readonly results: readonly { readonly name: string; readonly text: string }[];
+    readonly part: ReportPart;
+    readonly options?: ReportOptions | undefined;
+  }) => { readonly files: readonly MadeFile[] };
   'calculation:cancel': (request: { readonly id: number }) => { readonly cancelled: boolean };
 }
 

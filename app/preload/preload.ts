@@ -14,6 +14,7 @@ const REQUESTS: Readonly<Record<RequestName, true>> = {
   'basis:show': true,
   'study:check': true,
   'calculation:start': true,
+  'report:make': true,
   'calculation:cancel': true,
 };
 

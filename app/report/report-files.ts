@@ -1,4 +1,5 @@
 import type { StudyResults } from '#engine';
+import type { ReportOptions, ReportPart } from '../contract/requests';
 import { studyCsv } from '../study/csv';
 import { studySentence } from '../study/sentence';
 import { figurePdf } from './figure-pdf';
@@ -14,33 +15,11 @@ import { captionOf, reportDocument } from './report-content';
 import { type ReportDocument, tablesOf } from './report-document';
 import { tableCsv } from './table-csv';
 
-/** What a report can be saved as; a figure or a table may be several files. */
-export type ReportPart =
-  | 'html'
-  | 'pdf'
-  | 'markdown'
-  | 'latex'
-  | 'figureSvg'
-  | 'figurePdf'
-  | 'figurePng'
-  | 'pointsCsv'
-  | 'pointsJson'
-  | 'tableCsv';
-
 export interface ReportFile {
   readonly part: ReportPart;
   /** relative to the folder of the report */
   readonly name: string;
   readonly content: () => string | Promise<string | Uint8Array>;
-}
-
-export interface ReportOptions {
-  /** of the figure files; default: one column of a journal and the whole page */
-  readonly widthMillimetres?: number;
-  /** default: what suits the width */
-  readonly heightMillimetres?: number;
-  /** whether the study sentence stands in the picture of the figure files, default true */
-  readonly hasCaption?: boolean;
 }
 
 /** One column of a journal and the whole page. */
@@ -55,6 +34,7 @@ const LONGEST_NAME = 80;
  * single geometry has no figure, and the report says so.
  *
  * @param names - one a results file, without folder and endings
+ * @param options - without a width, figures are made for one column of a journal and for the whole page
  * @throws ReportError `report.coordinatesDiffer` if the results share no axis
  */
 export function reportFiles(

@@ -2,7 +2,8 @@ import { mkdir } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import writeFileAtomic from 'write-file-atomic';
 import type { StudyResults } from '#engine';
-import { type ReportOptions, reportFiles } from './report-files';
+import type { ReportOptions } from '../contract/requests';
+import { reportFiles } from './report-files';
 
 /**
  * Writes all files of a report into a folder that is made if need be. All are made before any is written.

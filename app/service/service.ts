@@ -3,6 +3,7 @@ import { PROGRAM } from '../calculation/program';
 import type { EventName, Events, Handlers, ProgramDescription } from '../contract/requests';
 import { createCurrentCalculation } from './current-calculation';
 import { Refusal } from './refusal';
+import { makeReport } from './reports';
 import { listSamples, openSample } from './samples';
 import { checkStudy, readStudy } from './studies';
 
@@ -43,6 +44,7 @@ export function createService({ host, workers, samplesFolder, post }: ServiceOpt
           points: read.prepared.coordinates.length,
         };
       },
+      'report:make': (request) => makeReport(request),
       'calculation:cancel': ({ id }) => ({ cancelled: calculation.cancel(id) }),
     },
     dispose: () => calculation.dispose(),

@@ -30,7 +30,7 @@ const ALLOWED: Readonly<Record<string, readonly string[]>> = {
     'fontkit',
     'write-file-atomic',
   ],
-  'app/service': ['app/contract', 'app/study', 'app/calculation', '#engine', 'node:', 'zod'],
+  'app/service': ['app/contract', 'app/study', 'app/calculation', 'app/report', '#engine', 'node:', 'zod'],
   'app/cli': [
     'app/contract',
     'app/study',

@@ -83,6 +83,9 @@ export function createFakeHost({
       next = 0;
       return { id, points: points.length };
     },
+    'report:make': ({ part }) => ({
+      files: [{ name: `h2.report.${part}`, base64: btoa(`a report as ${part}`) }],
+    }),
     'calculation:cancel': () => ({ cancelled: true }),
   };
 

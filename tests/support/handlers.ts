@@ -13,6 +13,7 @@ export function quietHandlers(given: Partial<Handlers> = {}): Handlers {
     'basis:show': refuse,
     'study:check': refuse,
     'calculation:start': refuse,
+    'report:make': refuse,
     'calculation:cancel': refuse,
     ...given,
   };

@@ -236,8 +236,8 @@ describe('requests', () => {
           `POST ${pathname}requests HTTP/1.1\r\nhost: 127.0.0.1:${port}\r\norigin: http://127.0.0.1:${port}\r\n` +
             'content-type: application/json\r\ntransfer-encoding: chunked\r\n\r\n',
         );
-        const chunk = `10000\r\n${'x'.repeat(0x10000)}\r\n`;
-        for (let sent = 0; sent < 80; sent++) socket.write(chunk);
+        const chunk = `100000\r\n${'x'.repeat(0x100000)}\r\n`;
+        for (let sent = 0; sent < 40; sent++) socket.write(chunk);
       });
       socket.once('data', (data) => resolve(data.toString().split('\r\n')[0]!));
       // the server may close while the rest is still being written
