@@ -2,7 +2,7 @@ import type { LevelFindings, PreparedStudy, SolutionCrossing } from '#engine';
 import { makeCurvesContinuous } from './continuous-curves';
 import { coordinateText } from './coordinate-text';
 import type { FinishedPoint } from './messages';
-import { planRuns, type Run } from './plan';
+import { planRuns, type Run, runLengthOf } from './plan';
 import type { Track } from './progress';
 import type { Task, WorkerPool } from './worker-pool';
 
@@ -47,7 +47,9 @@ async function computePoints(task: BasisTask): Promise<readonly FinishedPoint[]>
     progress.finished(seconds);
   };
   try {
-    await pool.perform(planRuns(total, finished).map((run) => pointsTask(task, run, accept)));
+    await pool.perform(
+      planRuns(total, finished, runLengthOf(prepared)).map((run) => pointsTask(task, run, accept)),
+    );
   } finally {
     progress.stop();
   }
