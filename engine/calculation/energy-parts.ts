@@ -1,6 +1,6 @@
 import type { SpinDensities } from '../configuration-interaction/one-particle-density';
+import { coulombExchangeInto } from '../integrals/coulomb-exchange';
 import { dot } from '../linear-algebra/dense';
-import { coulombExchangeInto } from '../self-consistent-field/coulomb-exchange';
 import type { MolecularIntegrals } from './molecular-integrals';
 
 /** What an energy is the sum of, hartree; frozen orbitals included. */

@@ -1,4 +1,5 @@
 import { congruence } from '../linear-algebra/dense';
+import { coulombExchangeInto } from './coulomb-exchange';
 import { HalfTransformed } from './half-transformed';
 import { rowsOfPacked, transformMatrices } from './matrix-transformation';
 import { type OrbitalIntegrals, packedPair } from './orbital-integrals';
@@ -184,22 +185,16 @@ export function frozenMeanField(
   otherSpin: Float64Array,
   n: number,
 ): Float64Array {
-  const field = Float64Array.from(oneElectron);
-  for (let mu = 0; mu < n; mu++) {
-    for (let nu = 0; nu < n; nu++) {
-      let sum = 0;
-      for (let lambda = 0; lambda < n; lambda++) {
-        for (let sigma = 0; sigma < n; sigma++) {
-          const coulomb = repulsion[packedPair(packedPair(mu, nu), packedPair(lambda, sigma))];
-          const exchange = repulsion[packedPair(packedPair(mu, lambda), packedPair(nu, sigma))];
-          const place = lambda * n + sigma;
-          sum += (sameSpin[place] + otherSpin[place]) * coulomb - sameSpin[place] * exchange;
-        }
-      }
-      field[mu * n + nu] += sum;
-    }
+  const matrices = () => [new Float64Array(n * n), new Float64Array(n * n)];
+  const [coulomb, exchange] = matrices();
+  coulombExchangeInto(sameSpin, repulsion, n, coulomb, exchange);
+  let otherCoulomb = coulomb;
+  if (otherSpin !== sameSpin) {
+    const [ofOther, unused] = matrices();
+    coulombExchangeInto(otherSpin, repulsion, n, ofOther, unused);
+    otherCoulomb = ofOther;
   }
-  return field;
+  return oneElectron.map((h, i) => h + coulomb[i] + otherCoulomb[i] - exchange[i]);
 }
 
 /** `count` columns of a row-major matrix with `columns` columns, from `first` on. */

@@ -1,11 +1,11 @@
 import type { PlacedBasis, PlacedShell } from '../basis/contracted-gaussian';
+import { coulombExchangeInto } from '../integrals/coulomb-exchange';
 import { electronRepulsionTensor } from '../integrals/electron-repulsion';
 import { kineticMatrix } from '../integrals/kinetic';
 import { nuclearAttractionMatrix } from '../integrals/nuclear-attraction';
 import { overlapMatrix } from '../integrals/overlap';
 import { multiply } from '../linear-algebra/dense';
 import type { Atom } from '../molecule/molecule';
-import { coulombExchangeInto } from './coulomb-exchange';
 import { diagonaliseFock } from './orbitals';
 import { orthogonalise } from './orthogonalisation';
 

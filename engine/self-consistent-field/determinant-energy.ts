@@ -1,5 +1,5 @@
+import { coulombExchangeInto } from '../integrals/coulomb-exchange';
 import { addScaledInto, dot } from '../linear-algebra/dense';
-import { coulombExchangeInto } from './coulomb-exchange';
 import { type StartingPoint, startingDensities } from './mean-field';
 import type { MeanFieldProblem } from './mean-field-problem';
 

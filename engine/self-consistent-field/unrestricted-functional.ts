@@ -1,5 +1,5 @@
+import { coulombExchangeInto } from '../integrals/coulomb-exchange';
 import { congruence, dot, multiply, multiplyLeftTransposed, transpose } from '../linear-algebra/dense';
-import { coulombExchangeInto } from './coulomb-exchange';
 import {
   columnRange,
   fockCommutator,

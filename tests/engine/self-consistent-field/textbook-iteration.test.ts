@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { coulombExchangeInto } from '../../../engine/integrals/coulomb-exchange';
 import { electronRepulsionTensor } from '../../../engine/integrals/electron-repulsion';
 import { kineticMatrix } from '../../../engine/integrals/kinetic';
 import { nuclearAttractionMatrix } from '../../../engine/integrals/nuclear-attraction';
@@ -6,7 +7,6 @@ import { packedPair } from '../../../engine/integrals/orbital-integrals';
 import { transformToOrbitals } from '../../../engine/integrals/orbital-transformation';
 import { overlapMatrix } from '../../../engine/integrals/overlap';
 import { dot } from '../../../engine/linear-algebra/dense';
-import { coulombExchangeInto } from '../../../engine/self-consistent-field/coulomb-exchange';
 import { buildDensity, diagonaliseFock } from '../../../engine/self-consistent-field/orbitals';
 import { orthogonalise } from '../../../engine/self-consistent-field/orthogonalisation';
 import { HELIUM_HYDRIDE, HYDROGEN_MOLECULE } from '../../reference-data/szabo-ostlund';

@@ -1,3 +1,12 @@
+import { coulombExchangeKernels } from '../kernels/coulomb-exchange';
+import { kernelForm } from '../kernels/form';
+import { scratchMemory } from '../kernels/kernel-memory';
+
+/** Functions below which the plain form is as fast. */
+const FEWEST_FAST = 10;
+/** Integrals copied to the kernel at a time, 256 KiB, so that they come from the cache when they are used. */
+const INTEGRALS_TOGETHER = 32768;
+
 /**
  * Coulomb and exchange matrices of a density:
  * J(μ,ν) = Σ_λσ (μν|λσ) D(λ,σ),  K(μ,ν) = Σ_λσ (μλ|νσ) D(λ,σ).
@@ -9,10 +18,62 @@
  * @param coulomb - n×n, overwritten
  * @param exchange - n×n, overwritten
  *
- * Cost: O(n⁴/8) for each, no allocation.
+ * Cost: O(n⁴/8) for each; the fast form takes the integrals through kernel memory in pieces.
  * Symbols: A. Szabo, N. S. Ostlund, Modern Quantum Chemistry, eq. (3.154), J and K parts apart.
  */
 export function coulombExchangeInto(
+  density: Float64Array,
+  repulsion: Float64Array,
+  n: number,
+  coulomb: Float64Array,
+  exchange: Float64Array,
+): void {
+  if (n >= FEWEST_FAST && kernelForm() === 'fast') fastSums(density, repulsion, n, coulomb, exchange);
+  else plainSums(density, repulsion, n, coulomb, exchange);
+  addTransposeInto(coulomb, n);
+  addTransposeInto(exchange, n);
+}
+
+/** Rows of pairs in pieces of many, each a call of the kernel. */
+function fastSums(
+  density: Float64Array,
+  repulsion: Float64Array,
+  n: number,
+  coulomb: Float64Array,
+  exchange: Float64Array,
+): void {
+  const pairs = (n * (n + 1)) / 2;
+  const memory = scratchMemory();
+  memory.scope(() => {
+    const { addRows } = coulombExchangeKernels(memory);
+    const [densityBlock, coulombBlock, exchangeBlock] = [0, 1, 2].map(() => memory.float64(n * n));
+    const integrals = memory.float64(Math.min(INTEGRALS_TOGETHER + pairs, repulsion.length));
+    densityBlock.view.set(density);
+    coulombBlock.view.fill(0);
+    exchangeBlock.view.fill(0);
+    for (let first = 0, start = 0; first < pairs; ) {
+      let end = first;
+      let length = 0;
+      while (end < pairs && length < INTEGRALS_TOGETHER) length += ++end;
+      integrals.view.set(repulsion.subarray(start, start + length));
+      addRows(
+        integrals.address,
+        first,
+        end,
+        n,
+        densityBlock.address,
+        coulombBlock.address,
+        exchangeBlock.address,
+      );
+      first = end;
+      start += length;
+    }
+    coulomb.set(coulombBlock.view);
+    exchange.set(exchangeBlock.view);
+  });
+}
+
+function plainSums(
   density: Float64Array,
   repulsion: Float64Array,
   n: number,
@@ -54,8 +115,6 @@ export function coulombExchangeInto(
       coulomb[rowI + j] += 2 * coulombIJ;
     }
   }
-  addTransposeInto(coulomb, n);
-  addTransposeInto(exchange, n);
 }
 
 /** A ← A + Aᵀ. */
