@@ -95,8 +95,8 @@ export function solveConfigurationInteraction(
       dimension: space.dimension,
       diagonal: beta ? unrestrictedDiagonal(space, integrals) : spinAveragedDiagonal(space, integrals),
       apply: product.apply,
-      restoreSymmetry: product.restoreSpinFlip,
-      partsOf: product.spinFlipParts,
+      restoreSymmetry: product.sectors[0].restoreSpinFlip,
+      partsOf: product.sectors[0].spinFlipParts,
       elementsAmong: (places) => {
         const spin = beta && unrestrictedSpin(beta, integrals.orbitalCount, [alphaElectrons, betaElectrons]);
         const determinants = Array.from(places, (place) => determinantAt(space, place));

@@ -1,10 +1,9 @@
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { DistinguishingOperator } from './degenerate-states';
 import { type DeterminantSpace, rowLength } from './determinant-space';
-import { occupiedOrbitals } from './determinants';
 import { isFullSpace, orbitalMap } from './orbital-map';
 import type { SingleReplacements } from './replacements';
-import { type StringSpace, stringAt } from './string-space';
+import { stringIrreps } from './string-classes';
 
 /** What is known of the symmetry of the orbitals that many-electron functions are made of. */
 export interface OrbitalSpecies {
@@ -227,10 +226,4 @@ function stringRotation({ byStringStart, pair, source, sign }: SingleReplacement
 
 function isElement(value: number): boolean {
   return Math.abs(value) > NO_ROTATION;
-}
-
-function stringIrreps(strings: StringSpace, irreps: readonly number[]): Uint8Array {
-  return Uint8Array.from({ length: strings.count }, (_, string) =>
-    occupiedOrbitals(stringAt(strings, string)).reduce((product, p) => product ^ irreps[p], 0),
-  );
 }

@@ -5,19 +5,18 @@ import {
   determinantAt,
   transposeInto,
 } from '../../../engine/configuration-interaction/determinant-space';
-import {
-  GATHER_BLOCK,
-  prepareHamiltonianProduct,
-} from '../../../engine/configuration-interaction/hamiltonian-product';
+import { prepareHamiltonianProduct } from '../../../engine/configuration-interaction/hamiltonian-product';
 import { hamiltonianElement } from '../../../engine/configuration-interaction/matrix-elements';
+import { GATHER_BLOCK } from '../../../engine/configuration-interaction/plain-product';
 import type { OrbitalIntegrals } from '../../../engine/integrals/orbital-integrals';
+import { scratchMemory } from '../../../engine/kernels/kernel-memory';
 import { randomArray, seededRandom } from '../../support/random';
 import { randomOrbitalIntegrals, randomUnrestrictedIntegrals } from '../../support/random-orbital-integrals';
 
 /** Rows of the plain product that are worked out; they are spread evenly over a larger space. */
 const ROWS = 150;
 
-/** Largest deviation of the fast product from the sum over matrix elements, relative to the largest element. */
+/** Largest deviation of the product from the sum over matrix elements, relative to the largest element. */
 function deviation(
   n: number,
   alpha: number,
@@ -36,7 +35,8 @@ function deviation(
     for (let i = 0; i < vector.length; i++) vector[i] += parity * image[i];
   }
   const product = new Float64Array(space.dimension).fill(Number.NaN);
-  prepareHamiltonianProduct(space, integrals).apply(vector, product);
+  const irreps = species.length > 0 ? species : undefined;
+  scratchMemory().scope(() => prepareHamiltonianProduct(space, integrals, irreps).apply(vector, product));
   const determinants = Array.from({ length: space.dimension }, (_, place) => determinantAt(space, place));
   let largest = 0;
   let scale = 0;
@@ -102,7 +102,7 @@ describe('prepareHamiltonianProduct', () => {
 
   it('identity: restores a parity that rounding has blurred, and touches no other vector', () => {
     const space = buildDeterminantSpace(5, 2, 2, 3);
-    const product = prepareHamiltonianProduct(space, randomOrbitalIntegrals(5, 62));
+    const [product] = prepareHamiltonianProduct(space, randomOrbitalIntegrals(5, 62)).sectors;
     const vector = randomArray(space.dimension, seededRandom(63));
     const untouched = vector.slice();
     product.restoreSpinFlip(vector);
@@ -142,7 +142,7 @@ describe('prepareHamiltonianProduct', () => {
 
   it('identity: beta orbitals of their own leave no exchange of spins to restore', () => {
     const space = buildDeterminantSpace(4, 2, 2, Number.POSITIVE_INFINITY);
-    const product = prepareHamiltonianProduct(space, randomUnrestrictedIntegrals(4, 9));
+    const [product] = prepareHamiltonianProduct(space, randomUnrestrictedIntegrals(4, 9)).sectors;
     const vector = randomArray(space.dimension, seededRandom(10));
     const image = new Float64Array(space.dimension);
     transposeInto(space, vector, image);
@@ -155,5 +155,15 @@ describe('prepareHamiltonianProduct', () => {
 
   it('identity: equals the plain sum where symmetry makes most integrals vanish', () => {
     expect(deviation(7, 3, 3, Number.POSITIVE_INFINITY, 8, [0, 1, 2, 3, 0, 1, 2])).toBeLessThan(1e-11);
+    expect(deviation(7, 3, 3, 3, 8, [0, 1, 2, 3, 0, 1, 2], 1)).toBeLessThan(1e-11);
+  });
+
+  it('identity: an integral that the representations forbid puts all determinants into one sector', () => {
+    const space = buildDeterminantSpace(5, 2, 2, Number.POSITIVE_INFINITY);
+    const irreps = [0, 1, 2, 3, 0];
+    const integrals = randomOrbitalIntegrals(5, 8, { species: irreps });
+    expect(prepareHamiltonianProduct(space, integrals, irreps).sectors).toHaveLength(4);
+    integrals.oneElectron[1] = integrals.oneElectron[5] = 1e-5;
+    expect(prepareHamiltonianProduct(space, integrals, irreps).sectors).toHaveLength(1);
   });
 });

@@ -1,0 +1,94 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { buildDeterminantSpace } from '../../../engine/configuration-interaction/determinant-space';
+import { prepareFastProduct } from '../../../engine/configuration-interaction/fast-product';
+import { preparePlainProduct } from '../../../engine/configuration-interaction/plain-product';
+import { buildSectors, putSector, takeSector } from '../../../engine/configuration-interaction/sector';
+import { makeEvenOrOdd } from '../../../engine/configuration-interaction/spin-flip';
+import type { OrbitalIntegrals } from '../../../engine/integrals/orbital-integrals';
+import { scratchMemory } from '../../../engine/kernels/kernel-memory';
+import { randomArray, seededRandom } from '../../support/random';
+import { randomOrbitalIntegrals, randomUnrestrictedIntegrals } from '../../support/random-orbital-integrals';
+
+/** Largest deviation from the plain product over all sectors, relative to the largest element. */
+function deviation(
+  integrals: OrbitalIntegrals,
+  [alpha, beta, rank]: readonly [number, number, number],
+  species: readonly number[] | undefined,
+  parity: number,
+): number {
+  const space = buildDeterminantSpace(integrals.orbitalCount, alpha, beta, rank);
+  const sectors = buildSectors(space, species);
+  const plain = preparePlainProduct(space, integrals);
+  const memory = scratchMemory();
+  return memory.scope(() => {
+    const fast = prepareFastProduct(sectors, integrals, species, memory);
+    let largest = 0;
+    let scale = 0;
+    for (const sector of sectors) {
+      const vector = randomArray(sector.dimension, seededRandom(sector.irrep + 1));
+      if (parity !== 0) makeEvenOrOdd(sector, vector, parity);
+      const product = new Float64Array(sector.dimension).fill(Number.NaN);
+      fast(sector, vector, product, parity);
+      const whole = new Float64Array(space.dimension);
+      putSector(sector, vector, whole);
+      const ofWhole = new Float64Array(space.dimension);
+      plain(whole, ofWhole, 0);
+      takeSector(sector, ofWhole).forEach((value, i) => {
+        // not a number must not pass
+        if (!(Math.abs(product[i] - value) <= largest)) largest = Math.abs(product[i] - value);
+        scale = Math.max(scale, Math.abs(value));
+      });
+    }
+    return scale === 0 ? largest : largest / scale;
+  });
+}
+
+const sizes = fc.integer({ min: 1, max: 7 }).chain((n) =>
+  fc.record({
+    n: fc.constant(n),
+    alpha: fc.integer({ min: 0, max: n }),
+    beta: fc.integer({ min: 0, max: n }),
+    rank: fc.constantFrom(1, 2, 3, 4, Number.POSITIVE_INFINITY),
+    species: fc.array(fc.integer({ min: 0, max: 7 }), { minLength: n, maxLength: n }),
+    seed: fc.nat(10_000),
+    parity: fc.constantFrom(0, 1, -1),
+  }),
+);
+
+describe('prepareFastProduct', () => {
+  it('independent: equals the plain product in every sector, for any electron counts, ranks and symmetries', () => {
+    fc.assert(
+      fc.property(sizes, ({ n, alpha, beta, rank, species, seed, parity }) => {
+        const integrals = randomOrbitalIntegrals(n, seed, { species });
+        const kept = alpha === beta ? parity : 0;
+        expect(deviation(integrals, [alpha, beta, rank], species, kept)).toBeLessThan(1e-11);
+      }),
+      { seed: 11, numRuns: 150 },
+    );
+  });
+
+  it('independent: equals the plain product without symmetry, also over beta orbitals of their own', () => {
+    fc.assert(
+      fc.property(sizes, ({ n, alpha, beta, rank, seed, parity }) => {
+        const kept = alpha === beta ? parity : 0;
+        expect(deviation(randomOrbitalIntegrals(n, seed), [alpha, beta, rank], undefined, kept)).toBeLessThan(
+          1e-11,
+        );
+        expect(
+          deviation(randomUnrestrictedIntegrals(n, seed), [alpha, beta, rank], undefined, 0),
+        ).toBeLessThan(1e-11);
+      }),
+      { seed: 12, numRuns: 80 },
+    );
+  });
+
+  it('independent: equals the plain product where tasks hold more strings than one stretch, block or representation', () => {
+    for (const parity of [0, 1, -1]) {
+      const species = [0, 1, 2, 3, 0, 0, 1, 2, 3];
+      const integrals = randomOrbitalIntegrals(9, 5, { species });
+      expect(deviation(integrals, [4, 4, Number.POSITIVE_INFINITY], species, parity)).toBeLessThan(1e-11);
+      expect(deviation(integrals, [4, 4, 4], species, parity)).toBeLessThan(1e-11);
+    }
+  });
+});
