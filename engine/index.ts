@@ -13,7 +13,7 @@ export type {
   StudyInBasis,
 } from './calculation/basis-comparison';
 export { basisSetLimit } from './calculation/basis-set-limit';
-export { LOW_REFERENCE_WEIGHT, type SolutionCrossing, studyCautions } from './calculation/cautions';
+export { type SolutionCrossing, studyCautions } from './calculation/cautions';
 export {
   type ComputedPoint,
   type ComputePointOptions,
@@ -50,6 +50,8 @@ export {
   type PrepareOptions,
   prepareStudy,
 } from './calculation/prepare-study';
+export type { RaisedCaution } from './calculation/raised-caution';
+export { LOW_REFERENCE_WEIGHT } from './calculation/reference-weight';
 export type {
   AtomicCharges,
   BasisDescription,

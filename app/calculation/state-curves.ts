@@ -1,4 +1,4 @@
-import { type Caution, followStates, type PointResult, type StateCurve } from '#engine';
+import { followStates, type PointResult, type RaisedCaution, type StateCurve } from '#engine';
 import { curveName } from '../study/state-name';
 
 export type StateCurves = Readonly<Record<string, readonly StateCurve[]>>;
@@ -27,10 +27,15 @@ interface Crossing {
   /** coordinates of the points on both sides */
   readonly range: readonly [number, number];
   readonly isLowest: boolean;
+  /** of the two, hartree, before and after; infinite where one is not among the states computed */
+  readonly gaps: readonly [number, number];
 }
 
 /** Says where states change their order: each crossing of the lowest state of a level, those above it together. */
-export function crossingCautions(points: readonly PointResult[], curves: StateCurves): readonly Caution[] {
+export function crossingCautions(
+  points: readonly PointResult[],
+  curves: StateCurves,
+): readonly RaisedCaution[] {
   return Object.entries(curves).flatMap(([level, ofLevel]) => {
     const crossings = crossingsOf(points, level, ofLevel);
     const higher = crossings.filter(({ isLowest }) => !isLowest);
@@ -41,19 +46,26 @@ export function crossingCautions(points: readonly PointResult[], curves: StateCu
   });
 }
 
-function lowestCaution(level: string, { pair: [before, after], range }: Crossing): Caution {
+function lowestCaution(level: string, { pair: [before, after], range, gaps }: Crossing): RaisedCaution {
   return {
     code: 'state.crossing',
     level,
     range,
     message:
       `Between ${places(range)} the lowest state of ${level} changes from ${before} to ${after}, by rising ` +
-      `coordinate. ${level} is the energy of the lowest state at every point and has a kink there; the curve of each state ` +
-      'goes on smoothly as far as it is among the states computed.',
+      'coordinate.',
+    meaning:
+      `${level} is the energy of the lowest state at every point and has a kink there; the curve of each state goes on ` +
+      'smoothly as far as it is among the states computed.',
+    remedy: 'Follow one state by its curve, and compute as many states as it takes to keep it.',
+    numbers: [
+      { name: 'gap of the two states before', value: gaps[0], unit: 'hartree' },
+      { name: 'gap after', value: gaps[1], unit: 'hartree' },
+    ].filter(({ value }) => Number.isFinite(value)),
   };
 }
 
-function higherCaution(level: string, crossings: readonly Crossing[]): Caution {
+function higherCaution(level: string, crossings: readonly Crossing[]): RaisedCaution {
   const range = [
     Math.min(...crossings.map((crossing) => crossing.range[0])),
     Math.max(...crossings.map((crossing) => crossing.range[1])),
@@ -67,8 +79,10 @@ function higherCaution(level: string, crossings: readonly Crossing[]): Caution {
     range,
     message:
       `Higher states of ${level} change their order between ${places(range)}: ${named}` +
-      `${rest > 0 ? `; ${rest} more` : ''}. The number of a state in the list of a point does not identify it; its ` +
-      'curve does.',
+      `${rest > 0 ? `; ${rest} more` : ''}.`,
+    meaning: 'The number of a state in the list of a point does not identify it; its curve does.',
+    remedy: 'Read states off by their curves.',
+    numbers: [{ name: 'pairs of states that cross', value: pairs.length, unit: '' }],
   };
 }
 
@@ -106,7 +120,7 @@ function crossingsOf(
           spinAt(points[before.index], level) !== spinAt(points[after.index], level) ||
           (isLabelled(one.curve) && isLabelled(other.curve));
         return isSeen || (isLowest && isProven)
-          ? [{ pair: [one.curve.name, other.curve.name], range, isLowest }]
+          ? [{ pair: [one.curve.name, other.curve.name], range, isLowest, gaps: [gapBefore, gapAfter] }]
           : [];
       }),
     );

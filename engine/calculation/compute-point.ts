@@ -7,7 +7,6 @@ import type { Molecule } from '../molecule/molecule';
 import { inStage } from '../stages';
 import { type RunControl, UNATTENDED } from '../termination';
 import { atomicCharges, type ChargesOf } from './atomic-charges';
-import { pointCautions } from './cautions';
 import { energyParts } from './energy-parts';
 import { type FieldSymmetry, symmetriseFields } from './field-symmetry';
 import {
@@ -22,6 +21,7 @@ import { carryOf, type MeanFields, type PointCarry, solveMeanFields } from './me
 import { type MolecularIntegrals, molecularIntegrals } from './molecular-integrals';
 import { naturalOrbitals, wantsNaturalOrbitals } from './natural-orbitals';
 import { optimiseScale } from './optimise-scale';
+import { pointCautions } from './point-cautions';
 import type { PreparedStudy } from './prepare-study';
 import type { LevelResult, PointResult } from './result';
 

@@ -1,9 +1,9 @@
 import { type CrossingSide, findZeroCrossing } from '../curves/zero-crossing';
 import type { RunControl } from '../termination';
-import { lowReferenceWeight } from './cautions';
 import { computePoint } from './compute-point';
 import type { PointCarry } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
+import { lowReferenceWeight } from './reference-weight';
 import type { LevelResult, PointResult, ReferenceWeightCrossing, ReferenceWeightFinding } from './result';
 
 /** How far a crossing may be off, in the study's unit or degrees: 1e-3 Å is asked for, half of it is kept. */

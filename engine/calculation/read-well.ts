@@ -9,7 +9,7 @@ import type { LevelCurve } from './level-curve';
 import type { PreparedStudy } from './prepare-study';
 import type { HigherMinimum, LevelFindings } from './result';
 import { type SolvableCurve, solvableCurve, type WithoutLevels } from './vibration';
-import { type DescribedWell, describeWell } from './well-constants';
+import { type DescribedWell, describeWell, isKinked } from './well-constants';
 
 /** Spacing of the points computed around a minimum: fine against a well's width, coarse against energy noise. */
 const SPACING_ANGSTROM = 0.02;
@@ -42,19 +42,20 @@ export function readWell(
 ): WellReading {
   const spacing = prepared.study.molecule.unit === 'bohr' ? SPACING_BOHR : SPACING_ANGSTROM;
   const found = findCurveMinimum(curve.scan, curve.energyAt, spacing);
-  const minimum = describeMinimum(found);
-  if (found.kind !== 'found') return { minimum };
+  if (found.kind !== 'found') return { minimum: describeMinimum(found) };
   const described = describeWell(prepared, curve, found, spacing);
   const solvable = diatomicOf(prepared.study) && solvableCurve(curve, found.energy, limit, secondsPerPoint);
+  const minimum = describeMinimum(found, isKinked(found, described.constants));
   return { minimum, well: { found, ...described, ...(solvable && { solvable }) } };
 }
 
-export function describeMinimum(found: CurveMinimum): LevelFindings['minimum'] {
+export function describeMinimum(found: CurveMinimum, onKink = false): LevelFindings['minimum'] {
   switch (found.kind) {
     case 'found':
       return {
         kind: 'found',
         ...placeOf(found),
+        ...(onKink && { onKink }),
         ...(found.others.length > 0 && { others: found.others.map(placeOf) }),
       };
     case 'atEdge':

@@ -312,8 +312,8 @@ export interface LevelFindings {
         /** how far the distance may be off, study unit */
         readonly uncertainty: number;
         /**
-         * true where the curve has a kink there, as where two solutions cross: the distance is good to `uncertainty`
-         * only, and there are no constants of the well
+         * true where the energies around it lie on no smooth curve: a kink, as where two solutions cross, or noise. The
+         * distance is good to `uncertainty` only, and there are no Dunham constants
          */
         readonly onKink?: true;
         /** higher minima of the same curve, from the lowest; absent where there are none */

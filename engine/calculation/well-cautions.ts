@@ -1,22 +1,24 @@
-import type { Caution, CautionNumber, LevelFindings, Vibration, WellConstants } from './result';
+import { number, type RaisedCaution } from './raised-caution';
+import type { LevelFindings, Vibration, WellConstants } from './result';
 import type { LengthUnit } from './study';
 
-/** Study unit; a minimum that is known no better lies at a kink, or energies around it are noisy. */
-const UNCERTAIN_DISTANCE = 1e-4;
 /** cm⁻¹; a curve known no better between its points moves levels by more than is printed of them. */
 const UNCERTAIN_LEVELS = 1;
 /** Of H2 it is 0.03; a Morse curve at 0.25 has its first interval halved and holds two levels. */
 const LARGE_ANHARMONICITY = 0.25;
 
 /** What to mistrust about a well and its levels: other minima, kinks, a poor interpolation, a well above its limit. */
-export function wellCautions(level: string, findings: LevelFindings, unit: LengthUnit): readonly Caution[] {
+export function wellCautions(
+  level: string,
+  findings: LevelFindings,
+  unit: LengthUnit,
+): readonly RaisedCaution[] {
   const { minimum, wellDepth, vibration } = findings;
   if (minimum.kind !== 'found') return [];
   const symbol = unit === 'bohr' ? 'bohr' : 'Å';
-  const { others = [], equilibriumDistance, uncertainty } = minimum;
+  const { others = [], equilibriumDistance, uncertainty, onKink } = minimum;
   const place = `${round(equilibriumDistance)} ${symbol}`;
   const at = { level, range: [equilibriumDistance, equilibriumDistance] } as const;
-  const isKinked = uncertainty > UNCERTAIN_DISTANCE || findings.constants?.withoutDiatomic !== undefined;
   return [
     ...(others.length === 0
       ? []
@@ -36,7 +38,7 @@ export function wellCautions(level: string, findings: LevelFindings, unit: Lengt
             })),
           },
         ]),
-    ...(isKinked
+    ...(onKink
       ? [
           {
             ...at,
@@ -70,7 +72,7 @@ export function wellCautions(level: string, findings: LevelFindings, unit: Lengt
 }
 
 /** A series in powers of the displacement says nothing where one quantum takes the molecule to the top of its well. */
-function shallowCautions(level: string, constants: WellConstants | undefined): readonly Caution[] {
+function shallowCautions(level: string, constants: WellConstants | undefined): readonly RaisedCaution[] {
   if (!constants?.diatomic) return [];
   const { harmonicWavenumberPerCm: harmonic, anharmonicityPerCm: anharmonic } = constants.diatomic;
   const share = Math.abs(anharmonic.value / harmonic.value);
@@ -88,13 +90,14 @@ function shallowCautions(level: string, constants: WellConstants | undefined): r
   ];
 }
 
-function levelCautions(level: string, vibration: Vibration | undefined): readonly Caution[] {
+function levelCautions(level: string, vibration: Vibration | undefined): readonly RaisedCaution[] {
   if (vibration?.kind === 'none' && vibration.isDoubtful) {
     return [
       {
         code: 'curve.interpolation',
         level,
         message: `No vibrational levels of ${level} are given. ${vibration.reason}`,
+        meaning: 'Levels on a guessed curve would be guesses.',
         remedy: 'Compute more points in the well.',
       },
     ];
@@ -117,5 +120,4 @@ function levelCautions(level: string, vibration: Vibration | undefined): readonl
   ];
 }
 
-const number = (name: string, value: number, unit: string): CautionNumber => ({ name, value, unit });
 const round = (value: number): number => Number(value.toPrecision(5));

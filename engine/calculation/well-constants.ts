@@ -29,6 +29,11 @@ export interface ExpandedWell {
   readonly stencil: readonly EnergyPoint[];
 }
 
+/** Whether the energies around a minimum lie on no smooth curve. */
+export function isKinked({ uncertainty }: LowestMinimum, { withoutDiatomic }: WellConstants): boolean {
+  return uncertainty > LARGEST_USABLE_SHIFT || withoutDiatomic === NOT_SMOOTH;
+}
+
 export interface DescribedWell {
   readonly constants: WellConstants;
   /** diatomic molecules, where the derivatives are good */

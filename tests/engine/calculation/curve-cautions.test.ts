@@ -12,7 +12,7 @@ function codesOf(...[atoms, changes]: Parameters<typeof study>) {
     prepared.study.levels.map((level) => [level, findLevelMinimum(prepared, level, points)]),
   );
   return studyCautions(prepared, points, [], findings)
-    .filter(({ code }) => /^(limit|range|sizeConsistency|minimum|depth)/.test(code))
+    .filter(({ code }) => /^(limit|range|sizeConsistency|minimum|depth|safety)/.test(code))
     .map(({ code, level }) => (level ? `${code} ${level}` : code));
 }
 
@@ -21,22 +21,24 @@ describe('studyCautions of whole curves', () => {
     const levels = ['RHF', 'FCI'];
     expect(codesOf(H2, { levels, ...bond([1, 1.2, 1.4, 1.6, 2, 4, 12]) })).toEqual([
       'limit.wrong RHF',
+      'range.shortForLevels RHF',
+      'range.shortForLevels FCI',
       'depth.fragments',
+      'safety.measuredData',
     ]);
   });
 
   it('identity: a curve that ends while it still binds is too short', () => {
     expect(codesOf(H2, { levels: ['FCI'], ...bond([1, 1.2, 1.4, 1.6, 2, 2.5]) })).toEqual([
       'range.short FCI',
+      'range.shortForLevels FCI',
       'depth.fragments',
+      'safety.measuredData',
     ]);
   });
 
   it('identity: a curve without its minimum has it at the edge', () => {
-    expect(codesOf(H2, { levels: ['FCI'], ...bond([2, 3, 4]) })).toEqual([
-      'minimum.atEdge FCI',
-      'depth.farEnd',
-    ]);
+    expect(codesOf(H2, { levels: ['FCI'], ...bond([2, 3, 4]) })).toEqual(['minimum.atEdge FCI']);
   });
 
   it('identity: CISD of N2 is not size-consistent', () => {
@@ -45,6 +47,7 @@ describe('studyCautions of whole curves', () => {
     expect(codesOf(atoms, { levels: ['CISD'], frozenCore: true, ...bond(values) })).toEqual([
       'sizeConsistency.large CISD',
       'depth.fragments',
+      'safety.measuredData',
     ]);
   }, 60_000);
 });
