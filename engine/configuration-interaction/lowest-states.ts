@@ -1,75 +1,44 @@
-import {
-  type DavidsonProblem,
-  type DavidsonResult,
-  DEGENERACY_TOLERANCE,
-  lowestEigenpairs,
-} from '../linear-algebra/davidson';
-import { addScaledInto, dot } from '../linear-algebra/dense';
+import { DEGENERACY_TOLERANCE } from '../linear-algebra/davidson';
 import { inStage } from '../stages';
-import type { RunControl } from '../termination';
+import type { Termination } from '../termination';
 import { type DistinguishingOperator, makeDegenerateStatesDefinite, splitRuns } from './degenerate-states';
-import {
-  buildModelSpace,
-  chooseGuesses,
-  type ModelElements,
-  type ModelSpace,
-  modelPreconditioner,
-  spreadModelVector,
-} from './model-space';
-import { basisVectorLimit, guessLimit, PROBES } from './size';
+import { buildModelSpace } from './model-space';
+import { findSectorStates, type LowestStates, type SectorProblem, type StateSettings } from './sector-states';
 
 /** A Hamiltonian over many basis states, of which the lowest eigenvectors are wanted. */
 export interface StateProblem {
-  readonly dimension: number;
-  /** energies of the basis states, or what stands for them in a preconditioner, hartree */
-  readonly diagonal: Float64Array;
-  apply(vector: Float64Array, product: Float64Array): void;
-  /** as of `DavidsonProblem` */
-  restoreSymmetry?(direction: Float64Array): void;
-  /** parts of a vector that H does not join, as far as the iteration must keep them apart; default: the whole */
-  partsOf?(vector: Float64Array): readonly Float64Array[];
-  elementsAmong(places: Int32Array): ModelElements;
+  /** parts that the Hamiltonian does not join */
+  readonly sectors: readonly (SectorProblem & {
+    /** a vector of the sector as one over all basis states; default: it is one */
+    widen?(vector: Float64Array): Float64Array;
+  })[];
   /** place of the basis state that others are excited from, where there is one */
   readonly reference?: number;
-  /** how degenerate states are told apart */
+  /** how degenerate states are told apart; acts on vectors over all basis states */
   readonly distinguishing: readonly DistinguishingOperator[];
 }
 
-export interface StateSettings {
-  readonly states: number;
-  readonly residualTolerance: number;
-  readonly maximumIterations: number;
-  readonly control: RunControl;
-  readonly stage: string;
-}
-
-export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iterations' | 'termination'>;
-
 /**
- * Basis states in the model space that starts the iteration, and at the same time the largest problem that is
+ * Basis states in the model spaces that start the iteration, and at the same time the largest problem that is
  * diagonalised directly instead.
  */
 export const MODEL_SPACE_SIZE = 300;
+/** The same of one of many sectors, at least. */
+const SECTOR_MODEL_SIZE = 100;
+/** Model vectors per state wanted, at least. */
+const MODEL_VECTORS_PER_STATE = 10;
 /** Energies this close, in hartree, are not put in order. */
 const SAME_ENERGY = 1e-9;
 /** Of two degenerate states only one can have the symmetry of the reference; smaller differences of weight are rounding. */
 const MORE_WEIGHT = 1e-6;
-/** Below the model's lowest energy, hartree: what lies higher by this much keeps a quarter of its weight. */
-const PROBE_SHIFT = 0.5;
-/** Model vectors per state wanted, at least. */
-const MODEL_VECTORS_PER_STATE = 10;
 
 /**
  * The lowest states, rising, with definite members of every degenerate set: directly where the problem is small,
  * by Davidson's method where not. A degenerate set that `states` cuts is converged as a whole before it is cut,
  * so that the cut takes the same members every time. Fewer states where there are no more.
  */
-export function findLowestStates(given: StateProblem, settings: StateSettings): LowestStates {
-  const problem: StateProblem = {
-    ...given,
-    apply: (vector, product) => inStage(settings.control, 'CI product', () => given.apply(vector, product)),
-  };
-  if (!problem.diagonal.every(Number.isFinite)) {
+export function findLowestStates(problem: StateProblem, settings: StateSettings): LowestStates {
+  if (!problem.sectors.every(({ diagonal }) => diagonal.every(Number.isFinite))) {
     const termination = { kind: 'notFinite', quantity: 'Hamiltonian' } as const;
     return {
       values: new Float64Array(0),
@@ -78,12 +47,7 @@ export function findLowestStates(given: StateProblem, settings: StateSettings): 
       termination,
     };
   }
-  const size = Math.max(MODEL_SPACE_SIZE, MODEL_VECTORS_PER_STATE * settings.states);
-  const model = inStage(settings.control, 'CI model space', () =>
-    buildModelSpace(problem.diagonal, size, (places) => problem.elementsAmong(places)),
-  );
-  const isWhole = model.places.length === problem.dimension;
-  const found = isWhole ? takeLowest(model, settings.states) : iterate(problem, model, settings);
+  const found = lowestOfSectors(problem, settings);
   makeDegenerateStatesDefinite(found.values, found.vectors, DEGENERACY_TOLERANCE, problem.distinguishing);
 
   const order = orderStates(found, problem.reference).slice(0, settings.states);
@@ -91,6 +55,50 @@ export function findLowestStates(given: StateProblem, settings: StateSettings): 
     ...found,
     values: Float64Array.from(order, (k) => found.values[k]),
     vectors: order.map((k) => found.vectors[k]),
+  };
+}
+
+/**
+ * One sector after the other, the one with the lowest state first: what is known of it soon shows that others lie
+ * higher. None is left out, for a model says too little of what lies beyond it.
+ */
+function lowestOfSectors({ sectors }: StateProblem, settings: StateSettings): LowestStates {
+  const { control, states } = settings;
+  const total = sectors.reduce((sum, { dimension }) => sum + dimension, 0);
+  const size = Math.max(
+    total <= MODEL_SPACE_SIZE ? total : Math.max(MODEL_SPACE_SIZE / sectors.length, SECTOR_MODEL_SIZE),
+    MODEL_VECTORS_PER_STATE * states,
+  );
+  const started = sectors.map((sector) => {
+    const apply: SectorProblem['apply'] = (vector, product) =>
+      inStage(control, 'CI product', () => sector.apply(vector, product));
+    const model = inStage(control, 'CI model space', () =>
+      buildModelSpace(sector.diagonal, size, (places) => sector.elementsAmong(places)),
+    );
+    return { sector: { ...sector, apply }, model };
+  });
+  started.sort((a, b) => a.model.energies[0] - b.model.energies[0]);
+
+  let lowest: { value: number; vector: Float64Array; sector: StateProblem['sectors'][number] }[] = [];
+  let iterations = 0;
+  let termination: Termination = { kind: 'converged' };
+  for (const { sector, model } of started) {
+    const ceiling = lowest[states - 1]?.value ?? Number.POSITIVE_INFINITY;
+    const found = findSectorStates(sector, model, settings, ceiling);
+    iterations += found.iterations;
+    if (termination.kind === 'converged') ({ termination } = found);
+    found.vectors.forEach((vector, k) => {
+      lowest.push({ value: found.values[k], vector, sector });
+    });
+    lowest.sort((a, b) => a.value - b.value);
+    const highest = (lowest[states - 1]?.value ?? Number.POSITIVE_INFINITY) + DEGENERACY_TOLERANCE;
+    lowest = lowest.filter(({ value }) => value <= highest);
+  }
+  return {
+    values: Float64Array.from(lowest, ({ value }) => value),
+    vectors: lowest.map(({ vector, sector }) => sector.widen?.(vector) ?? vector),
+    iterations,
+    termination,
   };
 }
 
@@ -116,179 +124,4 @@ function orderStates(
     if (weights[holder] > weights[first] + MORE_WEIGHT) order.splice(first, 0, ...order.splice(holder, 1));
   }
   return order;
-}
-
-/** From a model space that is the whole space. */
-function takeLowest(model: ModelSpace, states: number): LowestStates {
-  const last = Math.min(states, model.energies.length) - 1;
-  const values = model.energies.filter((energy) => energy <= model.energies[last] + DEGENERACY_TOLERANCE);
-  const vectors = model.vectors.slice(0, values.length);
-  return { values, vectors, iterations: 0, termination: { kind: 'converged' } };
-}
-
-function iterate(problem: StateProblem, model: ModelSpace, settings: StateSettings): LowestStates {
-  const precondition = modelPreconditioner(model, problem.diagonal);
-  const guesses = selectGuesses(problem, model, precondition, settings.states);
-  const probing = probes(problem, model, precondition);
-  const solve = (vectors: readonly Float64Array[]) =>
-    lowestEigenpairs(asDavidsonProblem(problem, precondition, vectors), {
-      ...settings,
-      roots: settings.states,
-      maximumVectors: basisVectorLimit(settings.states),
-    });
-  const found = solve([...guesses.map((k) => spreadModelVector(model, k, problem.dimension)), ...probing]);
-  const hidden = lowerStatesOfOtherSpins(problem, model, precondition, found, settings);
-  if (hidden.length === 0) return found;
-  const again = solve([...found.vectors, ...hidden]);
-  return { ...again, iterations: found.iterations + again.iterations };
-}
-
-function asDavidsonProblem(
-  problem: StateProblem,
-  precondition: ReturnType<typeof modelPreconditioner>,
-  guesses: readonly Float64Array[],
-): DavidsonProblem {
-  return {
-    dimension: problem.dimension,
-    apply: (vector, product) => problem.apply(vector, product),
-    precondition,
-    restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
-    guesses,
-  };
-}
-
-/** Of no determinant more than this: the model space says little about such a state, and guards can fail. */
-const STRONGLY_MIXED = 0.6;
-/** Seeds of one spin: one of every spatial symmetry that an Abelian point group can have. */
-const MOST_SEEDS = 8;
-/** Residuals, hartree, at which a spin's lowest state is looked at, first roughly and then, if it comes near, closely. */
-const ROUGH_RESIDUAL = 1e-2;
-const CLOSE_RESIDUAL = 1e-4;
-/** What a rough value may still fall, hartree: ‖r‖² over a gap of 5 mEh. */
-const ROUGH_ERROR = 0.02;
-
-/**
- * States below the highest one found that it has missed. H and the preconditioner keep the spin of a vector, so the
- * lowest state of every spin is sought by itself: what spins compete for in one iteration, they cannot lose here.
- * Only for strongly mixed states, as at a stretched multiple bond; others are safe by their guards.
- */
-function lowerStatesOfOtherSpins(
-  problem: StateProblem,
-  model: ModelSpace,
-  precondition: ReturnType<typeof modelPreconditioner>,
-  found: LowestStates,
-  settings: StateSettings,
-): Float64Array[] {
-  if (found.termination.kind !== 'converged' || largestWeight(found.vectors[0]) > STRONGLY_MIXED) return [];
-  const { lowest, guards } = chooseGuesses(model, settings.states);
-  const highest = found.values[Math.min(settings.states, found.values.length) - 1];
-  const seek = (guesses: readonly Float64Array[], residualTolerance: number) =>
-    lowestEigenpairs(asDavidsonProblem(problem, precondition, guesses), {
-      ...settings,
-      roots: 1,
-      residualTolerance,
-      maximumVectors: basisVectorLimit(1),
-    });
-  const hidden: Float64Array[] = [];
-  for (const spin of new Set([...lowest, ...guards].map((k) => model.spins[k]))) {
-    const seeds = lowestOfEverySector(model, spin).slice(0, MOST_SEEDS);
-    const start = [
-      ...seeds.map((k) => spreadModelVector(model, k, problem.dimension)),
-      mixtureOfSpin(model, spin, problem.dimension),
-    ];
-    const rough = seek(start, ROUGH_RESIDUAL);
-    if (rough.values[0] > highest + ROUGH_ERROR) continue;
-    const { values, vectors } = seek([rough.vectors[0]], CLOSE_RESIDUAL);
-    const isNew = found.vectors.every((vector) => dot(vector, vectors[0]) ** 2 < 0.9);
-    if (values[0] < highest && isNew) hidden.push(vectors[0]);
-  }
-  return hidden;
-}
-
-/** The lowest model vector of every sector of one spin, rising. */
-function lowestOfEverySector(model: ModelSpace, spin: number): number[] {
-  const seen = new Set<string>();
-  return Array.from(model.energies.keys()).filter((k) => {
-    if (model.spins[k] !== spin || seen.has(model.sectors[k])) return false;
-    seen.add(model.sectors[k]);
-    return true;
-  });
-}
-
-/**
- * All model vectors of one spin, lower ones more, in arbitrary proportions: it has a part in every symmetry that the
- * blocks of H do not show, as when the orbitals have broken the molecule's.
- */
-function mixtureOfSpin(model: ModelSpace, spin: number, dimension: number): Float64Array {
-  const mixture = new Float64Array(dimension);
-  const proportions = arbitraryNumbers(model.energies.length);
-  model.vectors.forEach((vector, k) => {
-    if (model.spins[k] !== spin) return;
-    const factor = proportions[k] / (model.energies[k] - model.energies[0] + PROBE_SHIFT) ** 2;
-    model.places.forEach((place, i) => {
-      mixture[place] += factor * vector[i];
-    });
-  });
-  return mixture;
-}
-
-function largestWeight(vector: Float64Array): number {
-  return vector.reduce((largest, coefficient) => Math.max(largest, coefficient ** 2), 0);
-}
-
-/**
- * Low-lying vectors without any symmetry: H may have symmetries that no single basis state shows, and a state of
- * a kind that all guesses lack would never be found. Arbitrary numbers, drawn towards low energies by the inverse of
- * the preconditioner's matrix.
- */
-function probes(
-  problem: StateProblem,
-  model: ModelSpace,
-  precondition: ReturnType<typeof modelPreconditioner>,
-): Float64Array[] {
-  const arbitrary = arbitraryNumbers(problem.dimension);
-  const parts = problem.partsOf?.(arbitrary) ?? [arbitrary];
-  const shift = model.energies[0] - PROBE_SHIFT;
-  const between = new Float64Array(problem.dimension);
-  return parts.slice(0, PROBES).map((part) => {
-    const probe = new Float64Array(problem.dimension);
-    precondition(part, shift, between);
-    precondition(between, shift, probe);
-    return probe;
-  });
-}
-
-/** Between −1 and 1 and always the same: the fractional parts of k²·√2 follow no pattern of the basis. */
-function arbitraryNumbers(count: number): Float64Array {
-  return Float64Array.from({ length: count }, (_, k) => 2 * ((((k + 1) ** 2 % 1e6) * Math.SQRT2) % 1) - 1);
-}
-
-/**
- * The lowest model vectors and as many guards as are allowed. Where there are more, one product with H tells by
- * second-order perturbation theory which of them lead to the lowest states.
- */
-function selectGuesses(
-  problem: StateProblem,
-  model: ModelSpace,
-  precondition: ReturnType<typeof modelPreconditioner>,
-  states: number,
-): number[] {
-  const { lowest, guards } = chooseGuesses(model, states);
-  const places = guessLimit(states) - lowest.length;
-  if (guards.length <= places) return [...lowest, ...guards];
-
-  const residual = new Float64Array(problem.dimension);
-  const correction = new Float64Array(problem.dimension);
-  const estimated = guards.map((k) => {
-    const guess = spreadModelVector(model, k, problem.dimension);
-    problem.apply(guess, residual);
-    addScaledInto(residual, -model.energies[k], guess);
-    precondition(residual, model.energies[k], correction);
-    return {
-      k,
-      energy: model.energies[k] - Math.abs(dot(residual, correction)),
-    };
-  });
-  estimated.sort((a, b) => a.energy - b.energy);
-  return [...lowest, ...estimated.slice(0, places).map(({ k }) => k)];
 }

@@ -2,7 +2,8 @@ import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integral
 import type { Vector3 } from '../molecule/molecule';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import { LEADING_COUNT, LEADING_WEIGHT } from './describe-state';
-import { findLowestStates, type LowestStates } from './lowest-states';
+import { findLowestStates } from './lowest-states';
+import type { LowestStates } from './sector-states';
 import {
   type OrbitalSpecies,
   type SpaceSymmetry,
@@ -165,18 +166,22 @@ function solveSpin(
 
   return findLowestStates(
     {
-      dimension,
-      diagonal: Float64Array.from({ length: dimension }, (_, ia) => element(ia, ia)),
-      apply: (vector, product) => {
-        for (let ia = 0; ia < dimension; ia++) {
-          let sum = 0;
-          for (let jb = 0; jb < dimension; jb++) sum += element(ia, jb) * vector[jb];
-          product[ia] = sum;
-        }
-      },
-      elementsAmong: (places) => ({
-        hamiltonian: (i, j) => element(places[i], places[j]),
-      }),
+      sectors: [
+        {
+          dimension,
+          diagonal: Float64Array.from({ length: dimension }, (_, ia) => element(ia, ia)),
+          apply: (vector, product) => {
+            for (let ia = 0; ia < dimension; ia++) {
+              let sum = 0;
+              for (let jb = 0; jb < dimension; jb++) sum += element(ia, jb) * vector[jb];
+              product[ia] = sum;
+            }
+          },
+          elementsAmong: (places) => ({
+            hamiltonian: (i, j) => element(places[i], places[j]),
+          }),
+        },
+      ],
       distinguishing: [
         ...(symmetry?.distinguishingOperators() ?? []),
         {

@@ -1,5 +1,6 @@
 import { EngineError } from '../errors';
 import type { BetaIntegrals, OrbitalIntegrals } from '../integrals/orbital-integrals';
+import { scratchMemory } from '../kernels/kernel-memory';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import { type CorrelationParts, correlationParts } from './correlation-parts';
@@ -17,7 +18,9 @@ import { spinAveragedDiagonal, unrestrictedDiagonal } from './diagonal';
 import { type HamiltonianProduct, prepareHamiltonianProduct } from './hamiltonian-product';
 import { findLowestStates } from './lowest-states';
 import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
+import type { ModelElements } from './model-space';
 import { spinSummed } from './one-particle-density';
+import { placesInSpace, putSector, takeSector } from './sector';
 import { configurationInteractionBytes, countDeterminants } from './size';
 import { stringAt } from './string-space';
 import { unrestrictedSpin, unrestrictedSpinSquaredElement } from './unrestricted-spin';
@@ -85,29 +88,47 @@ export function solveConfigurationInteraction(
 ): ConfigurationInteractionResult {
   const settings = { ...DEFAULTS, ...options };
   checkOptions(integrals, settings);
+  return scratchMemory().scope(() => solve(integrals, settings));
+}
+
+function solve(
+  integrals: OrbitalIntegrals,
+  settings: ConfigurationInteractionOptions &
+    Required<Pick<ConfigurationInteractionOptions, keyof typeof DEFAULTS>>,
+): ConfigurationInteractionResult {
   const { alphaElectrons, betaElectrons, maximumRank } = settings;
   const { beta } = integrals;
   const space = buildDeterminantSpace(integrals.orbitalCount, alphaElectrons, betaElectrons, maximumRank);
-  const product = prepareHamiltonianProduct(space, integrals);
-  const symmetry = settings.species && determinantSymmetry(space, settings.species);
+  const { species } = settings;
+  const product = prepareHamiltonianProduct(space, integrals, species?.irreps);
+  const symmetry = species && determinantSymmetry(space, species);
+  const diagonal = beta ? unrestrictedDiagonal(space, integrals) : spinAveragedDiagonal(space, integrals);
+  const elementsAmong = (places: Int32Array): ModelElements => {
+    const spin = beta && unrestrictedSpin(beta, integrals.orbitalCount, [alphaElectrons, betaElectrons]);
+    const determinants = Array.from(places, (place) => determinantAt(space, place));
+    return {
+      hamiltonian: (i, j) => hamiltonianElement(determinants[i], determinants[j], integrals),
+      spinSquared: (i, j) =>
+        spin
+          ? unrestrictedSpinSquaredElement(determinants[i], determinants[j], spin)
+          : spinSquaredElement(determinants[i], determinants[j]),
+    };
+  };
   const found = findLowestStates(
     {
-      dimension: space.dimension,
-      diagonal: beta ? unrestrictedDiagonal(space, integrals) : spinAveragedDiagonal(space, integrals),
-      apply: product.apply,
-      restoreSymmetry: product.sectors[0].restoreSpinFlip,
-      partsOf: product.sectors[0].spinFlipParts,
-      elementsAmong: (places) => {
-        const spin = beta && unrestrictedSpin(beta, integrals.orbitalCount, [alphaElectrons, betaElectrons]);
-        const determinants = Array.from(places, (place) => determinantAt(space, place));
-        return {
-          hamiltonian: (i, j) => hamiltonianElement(determinants[i], determinants[j], integrals),
-          spinSquared: (i, j) =>
-            spin
-              ? unrestrictedSpinSquaredElement(determinants[i], determinants[j], spin)
-              : spinSquaredElement(determinants[i], determinants[j]),
-        };
-      },
+      sectors: product.sectors.map(({ sector, apply, restoreSpinFlip, spinFlipParts }) => ({
+        dimension: sector.dimension,
+        diagonal: takeSector(sector, diagonal),
+        apply,
+        restoreSymmetry: restoreSpinFlip,
+        partsOf: spinFlipParts,
+        elementsAmong: (places) => elementsAmong(placesInSpace(sector, places)),
+        widen: (vector) => {
+          const whole = new Float64Array(space.dimension);
+          putSector(sector, vector, whole);
+          return whole;
+        },
+      })),
       reference: 0,
       distinguishing: distinguishingOperators(space, symmetry, beta),
     },

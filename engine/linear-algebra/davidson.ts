@@ -23,6 +23,8 @@ export interface DavidsonProblem {
 
 export interface DavidsonOptions {
   readonly roots: number;
+  /** roots above this are not wanted, and need not be converged where their residuals show it; default: all are */
+  readonly ceiling?: number;
   /** largest ‖matrix·x − λx‖ of a converged root */
   readonly residualTolerance: number;
   readonly maximumIterations: number;
@@ -73,7 +75,8 @@ export function davidsonVectorCount(maximumVectors: number): number {
  * like a root until θ − ‖r‖/√w lies above the highest wanted root, w = `SMALLEST_WEIGHT`: a vector that has the
  * weight w or more in an eigenvector of value λ has ‖r‖ ≥ √w·|θ − λ|. (Without w, D. H. Weinstein's bound, Proc.
  * Natl. Acad. Sci. 20, 529 (1934), only says that some eigenvalue is near, not that none is lower.) Roots degenerate with the last wanted
- * one count as wanted, so that a cut through a degenerate set gives all of it.
+ * one count as wanted, so that a cut through a degenerate set gives all of it. The same bound tells of a wanted root
+ * that it lies above the ceiling.
  *
  * Sources: E. R. Davidson, J. Comput. Phys. 17, 87 (1975); the second term: J. Olsen, P. Jørgensen, J. Simons,
  * Chem. Phys. Lett. 169, 463 (1990).
@@ -82,6 +85,7 @@ export function davidsonVectorCount(maximumVectors: number): number {
  */
 export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOptions): DavidsonResult {
   const roots = Math.min(options.roots, problem.dimension);
+  const { ceiling = Number.POSITIVE_INFINITY } = options;
   const subspace = new Subspace(problem);
   problem.guesses.forEach((guess, k) => {
     subspace.extend(guess, problem.groups?.[k] ?? k);
@@ -104,14 +108,11 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     let worst = 0;
     for (const k of subspace.pursuable(wanted)) {
       const norm = subspace.residual(k);
+      const limit = k < wanted ? ceiling : Math.min(highest, ceiling);
+      const lowestMissed = subspace.values[k] - norm / Math.sqrt(SMALLEST_WEIGHT);
+      if (lowestMissed > limit + DEGENERACY_TOLERANCE) continue;
       if (k < wanted) worst = Math.max(worst, norm);
-      if (norm <= options.residualTolerance) continue;
-      if (
-        k >= wanted &&
-        subspace.values[k] - norm / Math.sqrt(SMALLEST_WEIGHT) > highest + DEGENERACY_TOLERANCE
-      )
-        continue;
-      unfinished.push(k);
+      if (norm > options.residualTolerance) unfinished.push(k);
     }
     options.control.report({ stage: options.stage, iteration, residual: worst });
 

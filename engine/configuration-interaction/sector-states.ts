@@ -1,0 +1,241 @@
+import {
+  type DavidsonProblem,
+  type DavidsonResult,
+  DEGENERACY_TOLERANCE,
+  lowestEigenpairs,
+} from '../linear-algebra/davidson';
+import { addScaledInto, dot } from '../linear-algebra/dense';
+import type { RunControl } from '../termination';
+import {
+  chooseGuesses,
+  type ModelElements,
+  type ModelSpace,
+  modelPreconditioner,
+  spreadModelVector,
+} from './model-space';
+import { basisVectorLimit, guessLimit, PROBES } from './size';
+
+/** A Hamiltonian over basis states that it does not join with others. */
+export interface SectorProblem {
+  readonly dimension: number;
+  /** energies of the basis states, or what stands for them in a preconditioner, hartree */
+  readonly diagonal: Float64Array;
+  apply(vector: Float64Array, product: Float64Array): void;
+  /** as of `DavidsonProblem` */
+  restoreSymmetry?(direction: Float64Array): void;
+  /** parts of a vector that H does not join, as far as the iteration must keep them apart; default: the whole */
+  partsOf?(vector: Float64Array): readonly Float64Array[];
+  elementsAmong(places: Int32Array): ModelElements;
+}
+
+export interface StateSettings {
+  readonly states: number;
+  readonly residualTolerance: number;
+  readonly maximumIterations: number;
+  readonly control: RunControl;
+  readonly stage: string;
+}
+
+export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iterations' | 'termination'>;
+
+/** Below the model's lowest energy, hartree: what lies higher by this much keeps a quarter of its weight. */
+const PROBE_SHIFT = 0.5;
+
+/**
+ * The lowest states of one sector, rising: directly where the model is the whole of it, by Davidson's method where not.
+ * A degenerate set that `states` cuts is whole.
+ *
+ * @param ceiling - states that lie above this, hartree, are not wanted, and need not be converged
+ */
+export function findSectorStates(
+  problem: SectorProblem,
+  model: ModelSpace,
+  settings: StateSettings,
+  ceiling: number,
+): LowestStates {
+  return model.places.length === problem.dimension
+    ? takeLowest(model, settings.states)
+    : iterate(problem, model, settings, ceiling);
+}
+
+/** From a model space that is the whole space. */
+function takeLowest(model: ModelSpace, states: number): LowestStates {
+  const last = Math.min(states, model.energies.length) - 1;
+  const values = model.energies.filter((energy) => energy <= model.energies[last] + DEGENERACY_TOLERANCE);
+  const vectors = model.vectors.slice(0, values.length);
+  return { values, vectors, iterations: 0, termination: { kind: 'converged' } };
+}
+
+function iterate(
+  problem: SectorProblem,
+  model: ModelSpace,
+  settings: StateSettings,
+  ceiling: number,
+): LowestStates {
+  const precondition = modelPreconditioner(model, problem.diagonal);
+  const guesses = selectGuesses(problem, model, precondition, settings.states);
+  const probing = probes(problem, model, precondition);
+  const solve = (vectors: readonly Float64Array[]) =>
+    lowestEigenpairs(asDavidsonProblem(problem, precondition, vectors), {
+      ...settings,
+      roots: settings.states,
+      ceiling,
+      maximumVectors: basisVectorLimit(settings.states),
+    });
+  const found = solve([...guesses.map((k) => spreadModelVector(model, k, problem.dimension)), ...probing]);
+  const hidden = lowerStatesOfOtherSpins(problem, model, precondition, found, settings, ceiling);
+  if (hidden.length === 0) return found;
+  const again = solve([...found.vectors, ...hidden]);
+  return { ...again, iterations: found.iterations + again.iterations };
+}
+
+function asDavidsonProblem(
+  problem: SectorProblem,
+  precondition: ReturnType<typeof modelPreconditioner>,
+  guesses: readonly Float64Array[],
+): DavidsonProblem {
+  return {
+    dimension: problem.dimension,
+    apply: (vector, product) => problem.apply(vector, product),
+    precondition,
+    restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
+    guesses,
+  };
+}
+
+/** Of no determinant more than this: the model space says little about such a state, and guards can fail. */
+const STRONGLY_MIXED = 0.6;
+/** Seeds of one spin: one of every spatial symmetry that an Abelian point group can have. */
+const MOST_SEEDS = 8;
+/** Residuals, hartree, at which a spin's lowest state is looked at, first roughly and then, if it comes near, closely. */
+const ROUGH_RESIDUAL = 1e-2;
+const CLOSE_RESIDUAL = 1e-4;
+/** What a rough value may still fall, hartree: ‖r‖² over a gap of 5 mEh. */
+const ROUGH_ERROR = 0.02;
+
+/**
+ * States below the highest one found that it has missed. H and the preconditioner keep the spin of a vector, so the
+ * lowest state of every spin is sought by itself: what spins compete for in one iteration, they cannot lose here.
+ * Only for strongly mixed states, as at a stretched multiple bond; others are safe by their guards.
+ */
+function lowerStatesOfOtherSpins(
+  problem: SectorProblem,
+  model: ModelSpace,
+  precondition: ReturnType<typeof modelPreconditioner>,
+  found: LowestStates,
+  settings: StateSettings,
+  ceiling: number,
+): Float64Array[] {
+  if (found.termination.kind !== 'converged' || largestWeight(found.vectors[0]) > STRONGLY_MIXED) return [];
+  const { lowest, guards } = chooseGuesses(model, settings.states);
+  const highest = Math.min(ceiling, found.values[Math.min(settings.states, found.values.length) - 1]);
+  const seek = (guesses: readonly Float64Array[], residualTolerance: number) =>
+    lowestEigenpairs(asDavidsonProblem(problem, precondition, guesses), {
+      ...settings,
+      roots: 1,
+      residualTolerance,
+      maximumVectors: basisVectorLimit(1),
+    });
+  const hidden: Float64Array[] = [];
+  for (const spin of new Set([...lowest, ...guards].map((k) => model.spins[k]))) {
+    const seeds = lowestOfEverySector(model, spin).slice(0, MOST_SEEDS);
+    const start = [
+      ...seeds.map((k) => spreadModelVector(model, k, problem.dimension)),
+      mixtureOfSpin(model, spin, problem.dimension),
+    ];
+    const rough = seek(start, ROUGH_RESIDUAL);
+    if (rough.values[0] > highest + ROUGH_ERROR) continue;
+    const { values, vectors } = seek([rough.vectors[0]], CLOSE_RESIDUAL);
+    const isNew = found.vectors.every((vector) => dot(vector, vectors[0]) ** 2 < 0.9);
+    if (values[0] < highest && isNew) hidden.push(vectors[0]);
+  }
+  return hidden;
+}
+
+/** The lowest model vector of every sector of one spin, rising. */
+function lowestOfEverySector(model: ModelSpace, spin: number): number[] {
+  const seen = new Set<string>();
+  return Array.from(model.energies.keys()).filter((k) => {
+    if (model.spins[k] !== spin || seen.has(model.sectors[k])) return false;
+    seen.add(model.sectors[k]);
+    return true;
+  });
+}
+
+/**
+ * All model vectors of one spin, lower ones more, in arbitrary proportions: it has a part in every symmetry that the
+ * blocks of H do not show, as when the orbitals have broken the molecule's.
+ */
+function mixtureOfSpin(model: ModelSpace, spin: number, dimension: number): Float64Array {
+  const mixture = new Float64Array(dimension);
+  const proportions = arbitraryNumbers(model.energies.length);
+  model.vectors.forEach((vector, k) => {
+    if (model.spins[k] !== spin) return;
+    const factor = proportions[k] / (model.energies[k] - model.energies[0] + PROBE_SHIFT) ** 2;
+    model.places.forEach((place, i) => {
+      mixture[place] += factor * vector[i];
+    });
+  });
+  return mixture;
+}
+
+function largestWeight(vector: Float64Array): number {
+  return vector.reduce((largest, coefficient) => Math.max(largest, coefficient ** 2), 0);
+}
+
+/**
+ * Low-lying vectors without any symmetry: H may have symmetries that no single basis state shows, and a state of
+ * a kind that all guesses lack would never be found. Arbitrary numbers, drawn towards low energies by the inverse of
+ * the preconditioner's matrix.
+ */
+function probes(
+  problem: SectorProblem,
+  model: ModelSpace,
+  precondition: ReturnType<typeof modelPreconditioner>,
+): Float64Array[] {
+  const arbitrary = arbitraryNumbers(problem.dimension);
+  const parts = problem.partsOf?.(arbitrary) ?? [arbitrary];
+  const shift = model.energies[0] - PROBE_SHIFT;
+  const between = new Float64Array(problem.dimension);
+  return parts.slice(0, PROBES).map((part) => {
+    const probe = new Float64Array(problem.dimension);
+    precondition(part, shift, between);
+    precondition(between, shift, probe);
+    return probe;
+  });
+}
+
+/** Between −1 and 1 and always the same: the fractional parts of k²·√2 follow no pattern of the basis. */
+function arbitraryNumbers(count: number): Float64Array {
+  return Float64Array.from({ length: count }, (_, k) => 2 * ((((k + 1) ** 2 % 1e6) * Math.SQRT2) % 1) - 1);
+}
+
+/**
+ * The lowest model vectors and as many guards as are allowed. Where there are more, one product with H tells by
+ * second-order perturbation theory which of them lead to the lowest states.
+ */
+function selectGuesses(
+  problem: SectorProblem,
+  model: ModelSpace,
+  precondition: ReturnType<typeof modelPreconditioner>,
+  states: number,
+): number[] {
+  const { lowest, guards } = chooseGuesses(model, states);
+  const places = guessLimit(states) - lowest.length;
+  if (guards.length <= places) return [...lowest, ...guards];
+
+  const residual = new Float64Array(problem.dimension);
+  const correction = new Float64Array(problem.dimension);
+  const estimated = guards.map((k) => {
+    const guess = spreadModelVector(model, k, problem.dimension);
+    problem.apply(guess, residual);
+    addScaledInto(residual, -model.energies[k], guess);
+    precondition(residual, model.energies[k], correction);
+    return {
+      k,
+      energy: model.energies[k] - Math.abs(dot(residual, correction)),
+    };
+  });
+  estimated.sort((a, b) => a.energy - b.energy);
+  return [...lowest, ...estimated.slice(0, places).map(({ k }) => k)];
+}
