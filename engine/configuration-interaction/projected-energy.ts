@@ -14,7 +14,10 @@ export type ProjectedEnergy =
   /** the reference is hardly part of the state */
   | { readonly kind: 'none'; readonly reason: string };
 
-/** Single excitations out of one spatial orbital, both spins together; where beta orbitals differ, out of the two of one number. */
+/**
+ * Single excitations out of one spatial orbital, both spins together; where beta orbitals differ, out of the two of one
+ * number.
+ */
 export interface OrbitalPart {
   readonly orbital: number;
   /** hartree */
@@ -55,7 +58,7 @@ export function projectedEnergy(
     return {
       kind: 'none',
       reason:
-        `The reference determinant has a weight of ${(vector[0] ** 2).toPrecision(1)} in this state, ` +
+        `The reference determinant has a weight below ${SMALLEST_REFERENCE_WEIGHT} in this state, ` +
         'and the projected energy divides by its coefficient.',
     };
   }

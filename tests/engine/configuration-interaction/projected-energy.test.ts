@@ -130,7 +130,7 @@ describe('projectedEnergy', () => {
     const parts = projectedEnergy(space, vector, 0.2, integrals);
     expect(parts).toEqual({
       kind: 'none',
-      reason: expect.stringContaining('a weight of 0 in this state'),
+      reason: expect.stringContaining('a weight below 0.01 in this state'),
     });
   });
 });
