@@ -7,9 +7,12 @@ export interface ShellTransformation {
   readonly cartesianCount: number;
   /** functionCount × cartesianCount, row-major */
   readonly matrix: Float64Array;
+  /** s and p functions are the products themselves */
+  readonly isIdentity: boolean;
 }
 
-const cache = new Map<string, ShellTransformation>();
+/** by angular momentum */
+const cache: Record<Harmonics, ShellTransformation[]> = { spherical: [], cartesian: [] };
 
 /**
  * Transformation from bare Cartesian products to the functions of a shell, in the order and with the
@@ -19,13 +22,17 @@ const cache = new Map<string, ShellTransformation>();
  * @param l - angular momentum ≥ 0; s and p are the same in both kinds
  */
 export function shellTransformation(l: number, harmonics: Harmonics): ShellTransformation {
-  const key = `${l} ${harmonics}`;
-  let transformation = cache.get(key);
+  let transformation: ShellTransformation | undefined = cache[harmonics][l];
   if (!transformation) {
     const matrix = l < 2 || harmonics === 'cartesian' ? cartesianNormalisation(l) : solidHarmonics(l);
     const columns = cartesianCount(l);
-    transformation = { functionCount: matrix.length / columns, cartesianCount: columns, matrix };
-    cache.set(key, transformation);
+    transformation = {
+      functionCount: matrix.length / columns,
+      cartesianCount: columns,
+      matrix,
+      isIdentity: l < 2,
+    };
+    cache[harmonics][l] = transformation;
   }
   return transformation;
 }
@@ -84,13 +91,14 @@ export function solidHarmonics(l: number): Float64Array {
  * Brings a block over bare products of two shells to their functions: target = A · source · Bᵀ.
  *
  * @param source - A.cartesianCount × B.cartesianCount, row-major
- * @returns A.functionCount × B.functionCount, row-major
+ * @returns A.functionCount × B.functionCount, row-major; the source itself where there is nothing to do
  */
 export function transformBlock(
   a: ShellTransformation,
   b: ShellTransformation,
   source: Float64Array,
 ): Float64Array {
+  if (a.isIdentity && b.isIdentity) return source;
   const half = new Float64Array(a.functionCount * b.cartesianCount);
   for (let row = 0; row < a.functionCount; row++) {
     for (let i = 0; i < a.cartesianCount; i++) {

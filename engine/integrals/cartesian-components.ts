@@ -12,8 +12,15 @@ export function cartesianIndex(j: number, k: number): number {
   return (rest * (rest + 1)) / 2 + k;
 }
 
+const componentsOfDegree: (readonly CartesianPowers[])[] = [];
+
 /** All products of degree l in lexical order (x exponent falling, then y). */
 export function cartesianComponents(l: number): readonly CartesianPowers[] {
+  componentsOfDegree[l] ??= listComponents(l);
+  return componentsOfDegree[l];
+}
+
+function listComponents(l: number): readonly CartesianPowers[] {
   const components: CartesianPowers[] = [];
   for (let i = l; i >= 0; i--) {
     for (let j = l - i; j >= 0; j--) components.push([i, j, l - i - j]);

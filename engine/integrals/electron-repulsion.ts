@@ -45,11 +45,18 @@ export function electronRepulsionTensor(
     for (let i = 0; i < pairs.length; i++) {
       for (let j = 0; j <= i; j++) {
         if (bounds[i] * bounds[j] < schwarzThreshold) continue;
-        scatterInto(tensor, quartet(i, j, primitiveThreshold), places[i], places[j]);
+        const [bra, ket] = betterOrder(pairs, i, j);
+        scatterInto(tensor, quartet(bra, ket, primitiveThreshold), places[bra], places[ket]);
       }
     }
   });
   return tensor;
+}
+
+/** (ab|cd) = (cd|ab): the bra's primitives are taken two at a time, so that an odd one is half lost. */
+function betterOrder(pairs: readonly ShellPair[], i: number, j: number): readonly [number, number] {
+  const steps = (bra: ShellPair, ket: ShellPair) => ((bra.primitiveCount + 1) >> 1) * ket.primitiveCount;
+  return steps(pairs[i], pairs[j]) <= steps(pairs[j], pairs[i]) ? [i, j] : [j, i];
 }
 
 /** √ of the largest (ab|ab) of the pair. */

@@ -29,8 +29,12 @@ export function nuclearAttractionMatrix(basis: PlacedBasis, nuclei: readonly Poi
   const n = basis.functionCount;
   const matrix = new Float64Array(n * n);
   const charged = nuclei.filter(({ charge }) => charge !== 0);
-  for (const pair of shellPairs(basis)) {
-    const columns = attractionColumns(pair, charged);
+  const batch = new HermiteCoulombArguments();
+  const pairs = shellPairs(basis);
+  const highestDegree = pairs.reduce((highest, { layout }) => Math.max(highest, layout.degree), 0);
+  const hermite = new Float64Array(HERMITE_BATCH * hermiteStart(highestDegree + 1));
+  for (const pair of pairs) {
+    const columns = attractionColumns(pair, charged, batch, hermite);
     const block = new Float64Array(pair.productCount);
     for (let product = 0; product < pair.productCount; product++) {
       for (let entry = pair.rowStart[product]; entry < pair.rowStart[product + 1]; entry++) {
@@ -47,12 +51,15 @@ export function nuclearAttractionMatrix(basis: PlacedBasis, nuclei: readonly Poi
   return matrix;
 }
 
-/** Attraction of every Hermite column of the pair, contracted over primitives and nuclei. */
-function attractionColumns(pair: ShellPair, nuclei: readonly PointCharge[]): Float64Array {
+/** Attraction of every Hermite column of the pair, contracted over primitives and nuclei; the last two are for work. */
+function attractionColumns(
+  pair: ShellPair,
+  nuclei: readonly PointCharge[],
+  batch: HermiteCoulombArguments,
+  hermite: Float64Array,
+): Float64Array {
   const { degree, factorDegrees, columnStart, columnCount } = pair.layout;
   const width = hermiteStart(degree + 1);
-  const hermite = new Float64Array(HERMITE_BATCH * width);
-  const batch = new HermiteCoulombArguments();
   const columns = new Float64Array(columnCount);
   const total = pair.primitiveCount * nuclei.length;
   for (let start = 0; start < total; start += HERMITE_BATCH) {

@@ -35,7 +35,8 @@ interface LineTerm {
   readonly coefficient: number;
 }
 
-const cache = new Map<string, ProductExpansion>();
+/** by both angular momenta */
+const cache: ProductExpansion[][] = [];
 
 /**
  * Hermite expansion of (x − A)^a (x − B)^b … exp(−a r_A² − b r_B²), symbolically in the exponents.
@@ -49,13 +50,9 @@ const cache = new Map<string, ProductExpansion>();
  * transformation: P. M. W. Gill, J. A. Pople, Int. J. Quantum Chem. 40, 753 (1991).
  */
 export function productExpansion(firstL: number, secondL: number): ProductExpansion {
-  const key = `${firstL} ${secondL}`;
-  let expansion = cache.get(key);
-  if (!expansion) {
-    expansion = buildExpansion(firstL, secondL);
-    cache.set(key, expansion);
-  }
-  return expansion;
+  cache[firstL] ??= [];
+  cache[firstL][secondL] ??= buildExpansion(firstL, secondL);
+  return cache[firstL][secondL];
 }
 
 function buildExpansion(firstL: number, secondL: number): ProductExpansion {

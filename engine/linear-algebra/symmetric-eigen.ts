@@ -1,6 +1,7 @@
 import { kernelForm } from '../kernels/form';
 import { fastSymmetricEigen } from './fast-symmetric-eigen';
 import { diagonaliseTridiagonal } from './implicit-ql';
+import { MOST_ROWS_IN_CLOSED_FORM, smallSymmetricEigen } from './small-eigen';
 import { accumulateReflections, tridiagonalise } from './tridiagonalise';
 
 export interface SymmetricEigen {
@@ -31,6 +32,7 @@ export function symmetricEigen(matrix: Float64Array, n: number): SymmetricEigen 
       throw new RangeError('symmetricEigen: the matrix has an entry that is not finite');
     largest = Math.max(largest, Math.abs(matrix[i]));
   }
+  if (n <= MOST_ROWS_IN_CLOSED_FORM) return smallSymmetricEigen(matrix, n);
   // squares of elements must neither overflow nor vanish
   const scale = scaleNear(largest);
   if (n >= FEWEST_FAST && kernelForm() === 'fast') return fastSymmetricEigen(matrix, n, scale);

@@ -36,6 +36,9 @@ export function rotateByGenerator(
   return multiply(coefficients, exponential(generator, m), n, m, m);
 }
 
+/** Terms of the exponential below this are lost beside its unit matrix, as are the smaller ones after them. */
+const NEGLIGIBLE_TERM = 1e-18;
+
 /** Matrix exponential by scaling and squaring of the Taylor series; to rounding for the norms met here. */
 function exponential(matrix: Float64Array, m: number): Float64Array {
   let norm = 0;
@@ -48,11 +51,16 @@ function exponential(matrix: Float64Array, m: number): Float64Array {
   const scaled = matrix.map((value) => value / 2 ** squarings);
   let result: Float64Array = new Float64Array(m * m);
   for (let i = 0; i < m; i++) result[i * m + i] = 1;
-  let term: Float64Array = result;
-  // 0.25¹³/13! < 1e-17
-  for (let order = 1; order <= 13; order++) {
-    term = multiply(term, scaled, m, m, m).map((value) => value / order);
-    result = result.map((value, i) => value + term[i]);
+  let term: Float64Array = result.slice();
+  // 0.25¹³/13! < 1e-17; small rotations need fewer terms
+  for (let order = 1, largest = 1; order <= 13 && largest > NEGLIGIBLE_TERM; order++) {
+    term = multiply(term, scaled, m, m, m);
+    largest = 0;
+    for (let i = 0; i < m * m; i++) {
+      term[i] /= order;
+      result[i] += term[i];
+      largest = Math.max(largest, Math.abs(term[i]));
+    }
   }
   for (let k = 0; k < squarings; k++) result = multiply(result, result, m, m, m);
   return result;

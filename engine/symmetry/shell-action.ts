@@ -7,6 +7,7 @@ import {
   cartesianCount,
   cartesianIndex,
 } from '../integrals/cartesian-components';
+import { multiply } from '../linear-algebra/dense';
 import type { Vector3 } from '../molecule/molecule';
 
 /** Rows of a real 3×3 matrix. */
@@ -67,14 +68,28 @@ function shellAction(
   imageOf: (powers: CartesianPowers) => Float64Array,
 ): Float64Array {
   const { functionCount, cartesianCount: columns, matrix } = shellTransformation(l, harmonics);
-  const functions = Matrix.from1DArray(functionCount, columns, matrix as unknown as number[]);
-  const images = new Matrix(cartesianComponents(l).map((powers) => Array.from(imageOf(powers))));
-  const transposed = functions.transpose();
-  const action = functions
-    .mmul(images)
-    .mmul(transposed)
-    .mmul(inverse(functions.mmul(transposed)));
-  return Float64Array.from(action.to1DArray());
+  const images = new Float64Array(columns * columns);
+  cartesianComponents(l).forEach((powers, row) => {
+    images.set(imageOf(powers), row * columns);
+  });
+  const imagesOfFunctions = multiply(matrix, images, functionCount, columns, columns);
+  return multiply(imagesOfFunctions, rightInverse(l, harmonics), functionCount, columns, functionCount);
+}
+
+const rightInverses = new Map<string, Float64Array>();
+
+/** Aᵀ(A·Aᵀ)⁻¹ of the functions A of a shell, cartesianCount × functionCount, row-major. */
+function rightInverse(l: number, harmonics: Harmonics): Float64Array {
+  const key = `${l} ${harmonics}`;
+  let result = rightInverses.get(key);
+  if (!result) {
+    const { functionCount, cartesianCount: columns, matrix } = shellTransformation(l, harmonics);
+    const functions = Matrix.from1DArray(functionCount, columns, matrix as unknown as number[]);
+    const transposed = functions.transpose();
+    result = Float64Array.from(transposed.mmul(inverse(functions.mmul(transposed))).to1DArray());
+    rightInverses.set(key, result);
+  }
+  return result;
 }
 
 /** A homogeneous polynomial of a degree times a·x + b·y + c·z, both over products in lexical order. */
