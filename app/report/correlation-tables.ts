@@ -13,6 +13,7 @@ const STRETCHES = [1, 1.5, 2, 3];
 const MOST_PAIRS = 8;
 /** Pairs that give less than this share of the largest one are drawn together. */
 const SMALL_PAIR = 0.01;
+const HALF = 0.5;
 const RANKS = ['Reference', 'Singles', 'Doubles', 'Triples', 'Quadruples', 'Fivefold', 'Sixfold'];
 
 interface Quantity {
@@ -25,7 +26,8 @@ const QUANTITIES: readonly Quantity[] = [
   { label: 'Correlation (hartree)', of: ({ correlation }) => correlation, decimals: ENERGY_DECIMALS },
   {
     label: 'Davidson correction (hartree)',
-    of: ({ energy, davidsonCorrected }) => davidsonCorrected && davidsonCorrected - energy,
+    of: ({ energy, davidsonCorrected, referenceWeight }) =>
+      davidsonCorrected === undefined || referenceWeight < HALF ? undefined : davidsonCorrected - energy,
     decimals: ENERGY_DECIMALS,
   },
   { label: 'Reference weight', of: ({ referenceWeight }) => referenceWeight, decimals: SHARE_DECIMALS },
@@ -59,7 +61,7 @@ export function correlationTables(
   );
   const overview: TextTable = {
     id: idOf('correlation'),
-    heading: `Electron correlation${ofFile}`,
+    heading: `Correlation energies, weights, unpaired electrons${ofFile}`,
     columns: [place, ...columns.map(({ level, quantity }) => ({ groups: [level], label: quantity.label }))],
     rows: points.map((point) => [
       placeOf(point),
@@ -71,7 +73,7 @@ export function correlationTables(
     notes: [
       ...(columns.some(({ quantity }) => quantity.label.startsWith('Davidson'))
         ? [
-            `The correction of Langhoff and Davidson ${citations.cite(PAPERS.sizeCorrection)} is not variational and not contained in the other numbers.`,
+            `The correction of Langhoff and Davidson ${citations.cite(PAPERS.sizeCorrection)} is not variational, not contained in the other numbers, and left out where the reference has less than half of the weight.`,
           ]
         : []),
       ...(columns.some(({ quantity }) => quantity.label.startsWith('Unpaired'))
@@ -205,7 +207,7 @@ function pairsTable(
         ...(rest.length > 0
           ? [
               row(
-                `${rest.length} further pairs`,
+                `${rest.length} further ${rest.length === 1 ? 'pair' : 'pairs'}`,
                 rest.reduce((sum, { energy }) => sum + energy, 0),
                 rest.reduce((sum, { sameSpin }) => sum + sameSpin, 0),
               ),

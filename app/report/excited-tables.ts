@@ -34,7 +34,7 @@ export function excitedTable(
   if (rows.length === 0) return undefined;
   return {
     id: 'excited',
-    heading: 'Excited states',
+    heading: 'Read off the curves of higher states',
     columns: [
       { label: 'State', content: 'words' },
       { label: `Minimum (${shared.unit})` },

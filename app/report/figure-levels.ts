@@ -17,7 +17,7 @@ export interface WellLevels {
 }
 
 /** Lines nearer to one another, as a fraction of the panel's height, become a grey patch in print. */
-const LEAST_SPACING = 0.012;
+const LEAST_SPACING = 0.016;
 const STEPS = [1, 2, 5, 10, 20, 50];
 
 /** The level of a study whose vibrational levels are drawn: the last that has any, as studies end with the best. */

@@ -14,6 +14,8 @@ const TICK_DISTANCE = 30;
 export interface PanelPlacement {
   readonly plan: FigurePlan;
   readonly panel: PlannedPanel;
+  /** of the panel, one line each */
+  readonly title: readonly string[];
   readonly ticks: Ticks;
   readonly left: number;
   readonly top: number;
@@ -27,6 +29,7 @@ export interface PanelPlacement {
 export function panelGroup({
   plan,
   panel,
+  title,
   ticks,
   left,
   top,
@@ -61,7 +64,7 @@ export function panelGroup({
       format: `.${ticks.decimals}f`,
       grid: true,
       gridScale: 'x',
-      title: [...panel.title],
+      title: [...title],
       titleX: -left + TITLE_SIZE,
       titleAlign: 'center',
       titleAnchor: 'middle',

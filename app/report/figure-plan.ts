@@ -32,8 +32,7 @@ export interface LegendEntry {
 }
 
 export interface PlannedPanel {
-  /** one line each */
-  readonly title: readonly string[];
+  readonly title: string;
   readonly range: readonly [number, number];
   readonly curves: readonly DrawnCurve[];
 }
@@ -102,7 +101,7 @@ export function planFigure(
       coordinateTitle: coordinateHeading(shared),
       coordinateRange: coordinateRange(energies),
       energies: {
-        title: [isAbsolute ? 'Energy (hartree)' : 'Energy above minimum (hartree)'],
+        title: isAbsolute ? 'Energy (hartree)' : 'Energy above minimum (hartree)',
         range,
         curves: energies,
       },
@@ -110,7 +109,7 @@ export function planFigure(
       ...(correlation.length > 0
         ? {
             correlation: {
-              title: ['Correlation', 'energy (hartree)'],
+              title: 'Correlation energy (hartree)',
               range: correlationRange(correlation),
               curves: correlation,
             },

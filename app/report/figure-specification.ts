@@ -2,7 +2,7 @@ import type { GroupMark, Spec } from 'vega';
 import { axisTicks } from './axis-ticks';
 import { legendMarks } from './figure-legend';
 import { panelGroup } from './figure-panel';
-import type { FigurePlan } from './figure-plan';
+import type { FigurePlan, PlannedPanel } from './figure-plan';
 import { FAINT_INK, LABEL_SIZE, TICK_LENGTH, TITLE_SIZE } from './figure-style';
 import { textMark } from './figure-text';
 import { ReportError } from './report-error';
@@ -20,6 +20,7 @@ export interface FigureOptions {
 const POINTS_PER_MILLIMETRE = 72 / 25.4;
 
 /** All lengths in points, the unit of the drawing. */
+const TITLE_LINE = 1.15 * TITLE_SIZE;
 const PANEL_GAP = 9;
 const AXIS_ROOM = 27;
 /** between legend and first panel */
@@ -48,30 +49,45 @@ export function figureSpecification(plan: FigurePlan, options: FigureOptions): S
   const tickRoom = Math.max(
     ...planned.flatMap(({ ticks }) => ticks.labels.map((label) => textWidth(label, LABEL_SIZE))),
   );
-  const titleLines = Math.max(...planned.map(({ panel }) => panel.title.length));
-  const left = titleLines * TITLE_SIZE * 1.15 + tickRoom + TICK_LENGTH + 6;
-  const innerWidth = width - left - RIGHT_MARGIN;
-
-  const legend = legendMarks(plan.legend, left, innerWidth);
+  /** Titles that are broken into lines for panels of one height may need more of them once the heights are known. */
+  const layOut = (heightsBefore: Readonly<Record<PanelName, number>>): FigureLayout => {
+    const titles = {
+      energies: titleLines(plan.energies, heightsBefore.energies),
+      correlation: plan.correlation ? titleLines(plan.correlation, heightsBefore.correlation) : [],
+    };
+    const lines = Math.max(...planned.map(({ name }) => titles[name].length));
+    const left = lines * TITLE_LINE + tickRoom + TICK_LENGTH + 6;
+    const legend = legendMarks(plan.legend, left, width - left - RIGHT_MARGIN);
+    const around =
+      legend.height + LEGEND_GAP + (planned.length - 1) * PANEL_GAP + AXIS_ROOM + captionHeight + 2;
+    const names = planned.map(({ name }) => name);
+    return { titles, left, legend, heights: panelHeights(names, width, around, options.heightMillimetres) };
+  };
   const captionLines =
     options.caption === undefined
       ? []
       : wrapText([options.caption, ...plan.key].join(' '), LABEL_SIZE, width - 4);
   const captionHeight = captionLines.length > 0 ? CAPTION_GAP + captionLines.length * CAPTION_LINE : 0;
-  const around =
-    legend.height + LEGEND_GAP + (planned.length - 1) * PANEL_GAP + AXIS_ROOM + captionHeight + 2;
-  const heights = panelHeights(
-    planned.map(({ name }) => name),
-    width,
-    around,
-    options.heightMillimetres,
+  const { titles, left, legend, heights } = layOut(
+    layOut({ energies: usualHeight('energies', width), correlation: usualHeight('correlation', width) })
+      .heights,
   );
 
   let top = legend.height + LEGEND_GAP;
   const groups = planned.map(({ panel, name, ticks }, index): GroupMark => {
     const isLast = index === planned.length - 1;
     const height = heights[name];
-    const group = panelGroup({ plan, panel, ticks, left, top, width: innerWidth, height, isLast });
+    const group = panelGroup({
+      plan,
+      panel,
+      title: titles[name],
+      ticks,
+      left,
+      top,
+      width: width - left - RIGHT_MARGIN,
+      height,
+      isLast,
+    });
     top += height + (isLast ? AXIS_ROOM : PANEL_GAP);
     return group;
   });
@@ -90,6 +106,20 @@ export function figureSpecification(plan: FigurePlan, options: FigureOptions): S
 
 type PanelName = keyof typeof PANEL_SHAPES;
 
+interface FigureLayout {
+  readonly titles: Readonly<Record<PanelName, readonly string[]>>;
+  readonly left: number;
+  readonly legend: ReturnType<typeof legendMarks>;
+  readonly heights: Readonly<Record<PanelName, number>>;
+}
+
+/** Set along the axis, no longer than the panel is high. */
+const titleLines = ({ title }: PlannedPanel, height: number): readonly string[] =>
+  wrapText(title, TITLE_SIZE, height);
+
+const usualHeight = (name: PanelName, width: number): number =>
+  Math.min(PANEL_SHAPES[name].share * width, PANEL_SHAPES[name].most);
+
 /** Of the panels in points; with a height asked for, what is left of it once everything around them has its room. */
 function panelHeights(
   names: readonly PanelName[],
@@ -97,7 +127,7 @@ function panelHeights(
   around: number,
   heightMillimetres: number | undefined,
 ): Readonly<Record<PanelName, number>> {
-  const usual = (name: PanelName) => Math.min(PANEL_SHAPES[name].share * width, PANEL_SHAPES[name].most);
+  const usual = (name: PanelName) => usualHeight(name, width);
   if (heightMillimetres === undefined)
     return { energies: usual('energies'), correlation: usual('correlation') };
   const room = heightMillimetres * POINTS_PER_MILLIMETRE - around;

@@ -10,7 +10,7 @@ const PAGE_WIDTH = 595.28;
 const TEXT_SIZE = 9.5;
 const TABLE_SIZE = 7.5;
 /** Characters of table type that fit between the margins. */
-const LINE_LENGTH = 118;
+const LINE_LENGTH = 140;
 /** Longer words are broken into lines. */
 const LONGEST_WORDS = 40;
 /** Longer tables are broken across pages. */

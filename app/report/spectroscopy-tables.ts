@@ -122,7 +122,7 @@ export function levelsTable(
   }
   return {
     id: 'levels',
-    heading: count > most ? 'Lowest vibrational levels' : 'Vibrational levels',
+    heading: count > most ? 'Lowest levels without rotation' : 'Levels without rotation',
     columns: [
       { label: 'v' },
       ...found.flatMap(({ file, level }): TableColumn[] =>
@@ -131,7 +131,7 @@ export function levelsTable(
     ],
     rows,
     notes: [
-      `Without rotation. ${quantities.map(({ meaning }) => meaning).join('; ')}.`,
+      `${quantities.map(({ meaning }) => meaning).join('; ')}.`,
       ...found.map(
         ({ file, level, vibration }) =>
           `${[...fileGroup(file), level].join(', ')}: ${vibrationText(vibration)}.`,

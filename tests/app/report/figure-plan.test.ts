@@ -92,9 +92,9 @@ describe('planFigure', () => {
     const first = sampleResults();
     const molecule = { ...first.study.molecule, charge: 1 };
     const other = { ...first, study: { ...first.study, molecule } };
-    expect(plannedOf([first, first], ['a', 'b']).energies.title).toEqual(['Energy (hartree)']);
+    expect(plannedOf([first, first], ['a', 'b']).energies.title).toBe('Energy (hartree)');
     const compared = plannedOf([first, other], ['a', 'b']);
-    expect(compared.energies.title).toEqual(['Energy above minimum (hartree)']);
+    expect(compared.energies.title).toBe('Energy above minimum (hartree)');
     for (const { points } of compared.energies.curves) {
       const lowest = Math.min(...points.map(({ y }) => y));
       expect(lowest).toBeGreaterThanOrEqual(0);

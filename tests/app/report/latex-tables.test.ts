@@ -71,7 +71,7 @@ describe('latexTables', () => {
 
   it('has the findings, constants and levels too', () => {
     const spectroscopy = latexTables(documentOf(withSpectroscopy(5)));
-    for (const caption of ['Read off the curves', 'Constants', 'Vibrational levels'])
+    for (const caption of ['Read off the curves', 'Constants', 'Levels without rotation'])
       expect(spectroscopy).toContain(`\\caption{${caption}.`);
     expect(spectroscopy).toContain(
       '$\\bar{D}$\\textsubscript{e}, centrifugal distortion (cm\\textsuperscript{$-$1})',
