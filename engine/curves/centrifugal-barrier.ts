@@ -1,12 +1,16 @@
-import type { RadialEquation, RadialState } from './radial-equation';
+import { boundStates, type RadialEquation, type RadialState } from './radial-equation';
 
 /** A hump outside the well that is higher than the limit: levels between the two decay through it. */
 export interface CentrifugalBarrier {
   /** hartree, same zero as the potential */
   readonly top: number;
-  /** the equation with everything beyond the hump as high as its top: its levels do not decay */
-  readonly closed: RadialEquation;
+  /** index of the grid point there */
+  readonly summit: number;
 }
+
+/** A level's wave does not depend on what lies beyond the barrier by more than this, hartree: below 1e-6 cm⁻¹. */
+const SELF_CONSISTENT = 1e-12;
+const MOST_ROUNDS = 8;
 
 /**
  * The barrier that holds a rotating molecule together above its limit.
@@ -26,8 +30,57 @@ export function centrifugalBarrier(equation: RadialEquation, centre: number): Ce
   for (let i = bottom + 1; i < potential.length; i++) if (potential[i] > potential[summit]) summit = i;
   const isInside = summit > bottom && summit < potential.length - 1;
   const top = potential[summit];
-  if (!isInside || !(top > 0)) return undefined;
-  return { top, closed: { ...equation, potential: potential.map((value, i) => (i > summit ? top : value)) } };
+  return isInside && top > 0 ? { top, summit } : undefined;
+}
+
+/** Levels between the limit and the top of a barrier. */
+export interface LevelsBehindBarrier {
+  readonly states: readonly RadialState[];
+  /** every level that there is settled */
+  readonly isComplete: boolean;
+}
+
+/**
+ * Beyond its outer turning point the wave of a level is made to die away, by a potential that rises there as it falls
+ * in truth: a level then lies within its width of where the resonance is. (Closed at its top already, the barrier would
+ * move a level by the square root of that.) A level just below the top that finds no such place is none.
+ *
+ * @param most - levels from this quantum number on are not solved for
+ * @param first - nor those before this, which lie below the limit
+ * @param guesses - energies by quantum number, known from a coarser grid
+ */
+export function levelsBehindBarrier(
+  equation: RadialEquation,
+  { top, summit }: CentrifugalBarrier,
+  most: number,
+  first: number,
+  guesses?: readonly number[],
+): LevelsBehindBarrier {
+  const closedAtTop = (value: number, i: number) => (i > summit ? top : value);
+  const closed = boundStates(withPotential(equation, closedAtTop), top, most, first, guesses);
+  const states: RadialState[] = [];
+  for (const [k, start] of closed.states.entries()) {
+    let state: RadialState | undefined = start;
+    let { energy } = start;
+    for (let round = 0; round < MOST_ROUNDS; round++) {
+      const turned = (value: number, i: number) => (i > summit ? energy + Math.abs(value - energy) : value);
+      [state] = boundStates(withPotential(equation, turned), top, first + k + 1, first + k).states;
+      // so close below the top that there is no level any more, only a broad resonance
+      if (!state) return { states, isComplete: closed.isComplete };
+      const change = Math.abs(state.energy - energy);
+      energy = state.energy;
+      if (change <= SELF_CONSISTENT) break;
+    }
+    states.push(state);
+  }
+  return { states, isComplete: closed.isComplete };
+}
+
+function withPotential(
+  equation: RadialEquation,
+  change: (value: number, index: number) => number,
+): RadialEquation {
+  return { ...equation, potential: equation.potential.map(change) };
 }
 
 /**

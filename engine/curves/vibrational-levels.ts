@@ -1,6 +1,11 @@
 import { HARTREE_IN_WAVENUMBERS } from '../constants';
 import type { Termination } from '../termination';
-import { barrierWidth, type CentrifugalBarrier, centrifugalBarrier } from './centrifugal-barrier';
+import {
+  barrierWidth,
+  type CentrifugalBarrier,
+  centrifugalBarrier,
+  levelsBehindBarrier,
+} from './centrifugal-barrier';
 import {
   boundStates,
   integrateProduct,
@@ -106,7 +111,7 @@ export function vibrationalLevels(
     const equation = radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation);
     const bound = boundStates(equation, 0, mostLevels, 0, guesses);
     const barrier = rotation > 0 ? centrifugalBarrier(equation, range.centre) : undefined;
-    const held = barrier && boundStates(barrier.closed, barrier.top, mostLevels, bound.count, guesses);
+    const held = barrier && levelsBehindBarrier(equation, barrier, mostLevels, bound.count, guesses);
     const states = [...bound.states, ...(held?.states ?? [])];
     return {
       boundCount: bound.count,
@@ -146,8 +151,9 @@ export function vibrationalLevels(
   }
   const all = extrapolated.map(({ energy, rotationalConstant }, v): VibrationalLevel => {
     const state = grid.states[v];
-    const equation = v < grid.boundCount ? grid.equation : grid.barrier!.closed;
-    const uncertainty = change[v] + endError(equation, state, mass);
+    // the wave of a level behind a barrier does not reach the end of the grid
+    const beyondEnds = v < grid.boundCount ? endError(grid.equation, state, mass) : 0;
+    const uncertainty = change[v] + beyondEnds;
     return {
       quantumNumber: v,
       energy: curve.limit + energy,
