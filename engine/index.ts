@@ -43,6 +43,7 @@ export type {
   VerticalExcitation,
 } from './calculation/further-findings';
 export { LEVEL_NAMES } from './calculation/levels';
+export { basisSetLimitOfCurves, type CurveInBasis } from './calculation/limit-curve';
 export type { OccupiedOrbitals, PointCarry } from './calculation/mean-fields';
 export {
   type Preparation,

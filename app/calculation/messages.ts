@@ -1,4 +1,12 @@
-import type { CompleteStudy, FollowedNeighbours, LevelFindings, PointCarry, PointResult } from '#engine';
+import type {
+  CompleteStudy,
+  CurveInBasis,
+  FollowedNeighbours,
+  LevelFindings,
+  LevelLimit,
+  PointCarry,
+  PointResult,
+} from '#engine';
 import type { SerializedError } from '../contract/requests';
 import type { CacheSettings } from './cache-settings';
 import type { StageTime } from './stage-clock';
@@ -16,8 +24,11 @@ export interface WorkerStart {
   readonly isTimed?: boolean;
 }
 
-/** What a worker is asked for; `basis` is 0 for the study's own, then come the further ones in its order. */
-export type WorkerRequest = {
+/** What a worker is asked for. */
+export type WorkerRequest = RequestInBasis | LimitRequest;
+
+/** `basis`: 0 for the study's own, then the further ones in its order */
+export type RequestInBasis = {
   readonly basis: number;
 } /** points in this order, each starting from the one before it, the first from `guess` */ & (
   | { readonly kind: 'points'; readonly indices: readonly number[]; readonly guess?: PointCarry | undefined }
@@ -30,6 +41,13 @@ export type WorkerRequest = {
     }
   | ({ readonly kind: 'minimum'; readonly level: string } & ComputedCurve)
 );
+
+/** What the curves of one level in all bases of the study tend to. */
+export interface LimitRequest {
+  readonly kind: 'limit';
+  readonly level: string;
+  readonly curves: readonly CurveInBasis[];
+}
 
 /** The points of a study in one basis. */
 export interface ComputedCurve {
@@ -54,6 +72,7 @@ export type Finding = {
   | ({ readonly kind: 'point'; readonly index: number } & FinishedPoint)
   | { readonly kind: 'followed'; readonly index: number; readonly followed: FollowedNeighbours }
   | { readonly kind: 'minimum'; readonly level: string; readonly findings: LevelFindings }
+  | { readonly kind: 'limit'; readonly level: string; readonly limit: LevelLimit | undefined }
 );
 
 /** What a worker answers: findings as they come, then that it is free again or why it gave up. */

@@ -1,6 +1,5 @@
 import { availableParallelism } from 'node:os';
 import {
-  basisSetLimit,
   describeBasisUsed,
   measuredFor,
   type PreparedStudy,
@@ -10,13 +9,14 @@ import {
 } from '#engine';
 import type { SerializedError } from '../contract/requests';
 import type { CacheSettings } from './cache-settings';
+import { findBasisSetLimit } from './find-basis-set-limit';
 import type { Finding, FinishedPoint, WorkerStart } from './messages';
 import { PROGRAM } from './program';
-import { type Progress, trackProgress } from './progress';
+import { type Progress, type Track, trackProgress } from './progress';
 import { type CurvesInBasis, runInBasis } from './run-in-basis';
 import type { StageTime } from './stage-clock';
 import { crossingCautions, stateCurves } from './state-curves';
-import { CalculationFailure, openPool, PoolClosed } from './worker-pool';
+import { CalculationFailure, openPool, PoolClosed, type WorkerPool } from './worker-pool';
 import { type StartWorker, startWorkerThread } from './worker-thread';
 
 export interface RunInput {
@@ -106,7 +106,9 @@ export async function runStudy(
         }),
       );
     }
-    return { kind: 'done', results: assemble(prepared, computed), keptPoints };
+    const track: Track = (stage, total, done = 0) =>
+      trackProgress({ stage, total, done, workers }, options.onProgress);
+    return { kind: 'done', results: await assemble(prepared, computed, pool, track), keptPoints };
   } catch (error) {
     if (error instanceof PoolClosed) return { kind: 'cancelled' };
     if (error instanceof CalculationFailure) return { kind: 'failed', error: error.error };
@@ -130,7 +132,12 @@ function pointsFrom(
   return new Map(own);
 }
 
-function assemble(prepared: PreparedStudy, computed: readonly CurvesInBasis[]): StudyResults {
+async function assemble(
+  prepared: PreparedStudy,
+  computed: readonly CurvesInBasis[],
+  pool: WorkerPool,
+  track: Track,
+): Promise<StudyResults> {
   const bases = [prepared, ...prepared.furtherBases];
   const [own, ...further] = computed.map((curves, basis) => readingOf(bases[basis] ?? prepared, curves));
   if (!own) throw new RangeError('A study has a basis of its own.');
@@ -147,7 +154,7 @@ function assemble(prepared: PreparedStudy, computed: readonly CurvesInBasis[]): 
     curves: own.curves,
     ...(further.length > 0 && {
       furtherBases: studies.slice(1),
-      basisSetLimit: basisSetLimit(studies),
+      basisSetLimit: await findBasisSetLimit(studies, computed, pool, track),
     }),
     ...(measured && { measured }),
     cautions: own.inBasis.cautions,

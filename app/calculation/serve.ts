@@ -1,6 +1,6 @@
 import * as engine from '#engine';
 import type { SerializedError } from '../contract/requests';
-import type { Finding, WorkerReply, WorkerRequest, WorkerStart } from './messages';
+import type { Finding, LimitRequest, WorkerReply, WorkerRequest, WorkerStart } from './messages';
 import { openCache } from './result-cache';
 import { startStageClock } from './stage-clock';
 import { type CacheableRequest, requestKeys } from './study-key';
@@ -45,6 +45,10 @@ function basesOf(prepared: engine.PreparedStudy, start: WorkerStart): readonly B
 
 /** One after the other, each as soon as it is there. */
 function* findings(request: WorkerRequest, bases: readonly Basis[]): Generator<Finding> {
+  if (request.kind === 'limit') {
+    yield* limits(request, bases);
+    return;
+  }
   const basis = bases[request.basis];
   if (!basis) throw new RangeError(`The study has no basis ${request.basis}.`);
   const { prepared, answer } = basis;
@@ -77,6 +81,16 @@ function* findings(request: WorkerRequest, bases: readonly Basis[]): Generator<F
   }
 }
 
+function* limits({ kind, level, curves }: LimitRequest, [own]: readonly Basis[]): Generator<Finding> {
+  if (!own) throw new RangeError('A study has a basis of its own.');
+  const { prepared, answer } = own;
+  const bases = prepared.furtherBases.map(engine.describeBasisUsed);
+  const found = answer({ kind, level, curves, bases }, (control) => ({
+    limit: engine.basisSetLimitOfCurves(prepared, level, curves, control),
+  }));
+  yield { kind: 'limit', level, ...found };
+}
+
 /** What takes less is computed faster than it is found on a disk. */
 const WORTH_KEEPING_SECONDS = 0.002;
 
@@ -91,7 +105,7 @@ function prepareAnswers(prepared: engine.PreparedStudy, { cache: settings, isTim
     const seconds = () => (performance.now() - began) / 1000;
     const key = cache?.keyOf(request) ?? '';
     const kept = cache?.find(key) as T | undefined;
-    const level = request.kind === 'minimum' && { level: request.level };
+    const level = 'level' in request && { level: request.level };
     if (level) clock?.listener(level, 'begins');
     const found = kept ?? compute(control);
     if (level) clock?.listener(level, 'ends');

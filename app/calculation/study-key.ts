@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import process from 'node:process';
-import { describeBasisUsed, type PointCarry, type PreparedStudy } from '#engine';
-import type { WorkerRequest } from './messages';
+import { type BasisDescription, describeBasisUsed, type PointCarry, type PreparedStudy } from '#engine';
+import type { LimitRequest, WorkerRequest } from './messages';
 import { PROGRAM, WORKER_FILE } from './program';
 import { sha256 } from './sha256';
 
@@ -30,7 +30,7 @@ export function requestKeys(prepared: PreparedStudy): (request: CacheableRequest
   const common = canonicalJson({ study, asked, ...basisUsed(prepared), computedBy: computedBy() });
   return (request) => {
     const geometry =
-      request.kind === 'minimum'
+      'level' in request
         ? { scan }
         : { scanned: scan?.coordinate, atoms: prepared.geometryAt(request.coordinate) };
     // what the program made itself always has its keys in the same order
@@ -44,7 +44,8 @@ export type CacheableRequest =
   | (Omit<Extract<WorkerRequest, { kind: 'follow' }>, 'index' | 'basis'> & {
       readonly coordinate: number | null;
     })
-  | Omit<Extract<WorkerRequest, { kind: 'minimum' }>, 'basis'>;
+  | Omit<Extract<WorkerRequest, { kind: 'minimum' }>, 'basis'>
+  | (LimitRequest & { readonly bases: readonly BasisDescription[] });
 
 function numbersAsHash(part: unknown): unknown {
   if (!(part instanceof Float64Array)) return part;

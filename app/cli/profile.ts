@@ -29,11 +29,13 @@ const REST: Readonly<Record<Finding['kind'], string>> = {
   point: 'rest of the points',
   followed: 'rest of the neighbours',
   minimum: 'reading the curves',
+  limit: 'reading the basis-set limit',
 };
 const OF: Readonly<Record<Finding['kind'], string>> = {
   point: 'all points',
   followed: 'all neighbours',
   minimum: 'all minima',
+  limit: 'all basis-set limits',
 };
 const SHARED = 'shared';
 

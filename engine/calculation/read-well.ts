@@ -8,6 +8,7 @@ import { diatomicOf } from './diatomic';
 import type { LevelCurve } from './level-curve';
 import type { PreparedStudy } from './prepare-study';
 import type { HigherMinimum, LevelFindings } from './result';
+import type { Study } from './study';
 import { type SolvableCurve, solvableCurve, type WithoutLevels } from './vibration';
 import { type DescribedWell, describeWell, isKinked } from './well-constants';
 
@@ -28,6 +29,11 @@ export interface WellReading {
   readonly well?: Well;
 }
 
+/** Of the points computed around a minimum, study unit. */
+export function minimumSpacing({ molecule }: Pick<Study, 'molecule'>): number {
+  return molecule.unit === 'bohr' ? SPACING_BOHR : SPACING_ANGSTROM;
+}
+
 /**
  * Computes the further points of the curve that it needs.
  *
@@ -40,7 +46,7 @@ export function readWell(
   limit: number | undefined,
   secondsPerPoint: number,
 ): WellReading {
-  const spacing = prepared.study.molecule.unit === 'bohr' ? SPACING_BOHR : SPACING_ANGSTROM;
+  const spacing = minimumSpacing(prepared.study);
   const found = findCurveMinimum(curve.scan, curve.energyAt, spacing);
   if (found.kind !== 'found') return { minimum: describeMinimum(found) };
   const described = describeWell(prepared, curve, found, spacing);

@@ -14,6 +14,7 @@ it('regression: the engine’s door offers these names, so that a change of it i
     'LOW_REFERENCE_WEIGHT',
     'UNATTENDED',
     'basisSetLimit',
+    'basisSetLimitOfCurves',
     'computePoint',
     'describeBasis',
     'describeBasisUsed',
