@@ -1,5 +1,5 @@
 import type { PointResult, StudyResults } from '#engine';
-import { formula } from '../study/formula';
+import { geometryText } from '../study/geometry-text';
 import { ReportError } from './report-error';
 import { coordinateText, sharedCoordinate } from './scanned-coordinate';
 
@@ -7,29 +7,21 @@ import { coordinateText, sharedCoordinate } from './scanned-coordinate';
 const SAME_PLACE = 1e-6;
 
 /**
- * Geometries of a study as plain lines `element x y z`, after a line that begins with `#` and names molecule, place and
- * unit; several are set apart by an empty line. Ghost atoms have no line, since they have no nucleus.
+ * Geometries of a study as plain lines (`geometryText`); several are set apart by an empty line.
  *
  * @param place - the coordinate of one computed point, in the study's unit, or all of them
  * @throws ReportError `report.noSuchPoint`
  */
 export function geometryLines(results: StudyResults, place: number | 'all'): string {
   const points = place === 'all' ? results.points : [pointAt(results, place)];
-  return points.map((point) => `${linesOf(results, point).join('\n')}\n`).join('\n');
+  return points.map((point) => geometryText(results.study, point, whereText(results, point))).join('\n');
 }
 
-function linesOf({ study }: StudyResults, { coordinate, atoms }: PointResult): readonly string[] {
+function whereText({ study }: StudyResults, { coordinate }: PointResult): string {
+  if (coordinate === null) return '';
   const { label, unit } = sharedCoordinate([{ study }], ['']);
-  const where = coordinate === null ? '' : `, ${label} ${coordinateText(coordinate, unit)}`;
-  const real = atoms.filter(({ ghost }) => !ghost);
-  return [
-    `# ${formula(study.molecule)}${where}; x y z in ${study.molecule.unit}`,
-    ...real.map(({ element, at }) => [element.padEnd(2), ...at.map(lengthText)].join(' ')),
-  ];
+  return `${label} ${coordinateText(coordinate, unit)}`;
 }
-
-/** Far more digits than a geometry means, in columns. */
-const lengthText = (length: number): string => length.toFixed(10).padStart(16);
 
 function pointAt({ points, study }: StudyResults, place: number): PointResult {
   const found = points.find(

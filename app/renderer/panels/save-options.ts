@@ -1,11 +1,54 @@
+import type { StudyResults } from '#engine';
+import type { ReportPart } from '../../contract/requests';
 import { studyCsv } from '../../study/csv';
+import { geometryText } from '../../study/geometry-text';
 import { parseStudy } from '../../study/parse-study';
 import { serialiseStudy } from '../../study/serialise';
 import { figureAsPng, figureAsSvg, printFigure } from '../charts/print-figure';
 import { fileStem } from '../files/file-stem';
 import type { FileToSave } from '../files/save-file';
+import { cursorIndex } from '../state/cursor';
 import { studyText } from '../state/study-text';
-import type { Run, WindowState } from '../state/window-state';
+import type { Run, View, WindowState } from '../state/window-state';
+import { positionText } from './findings/shown-units';
+
+/** Parts of the report for one results file that are one file each. */
+const REPORT_PARTS = [
+  {
+    part: 'pdf',
+    name: 'Report, PDF',
+    description: 'figure, findings, method, references and cautions',
+    ending: 'report.pdf',
+    type: 'application/pdf',
+  },
+  {
+    part: 'html',
+    name: 'Report, HTML',
+    description: 'the same as one page for a browser',
+    ending: 'report.html',
+    type: 'text/html',
+  },
+  {
+    part: 'figurePdf',
+    name: 'Figure, PDF',
+    description: 'one column of a journal wide, 85 mm',
+    ending: 'figure.pdf',
+    type: 'application/pdf',
+  },
+  {
+    part: 'latex',
+    name: 'Tables, LaTeX',
+    description: 'findings and energies, for a manuscript',
+    ending: 'tex',
+    type: 'application/x-tex',
+  },
+] as const satisfies readonly {
+  readonly part: ReportPart;
+  readonly name: string;
+  readonly description: string;
+  readonly ending: string;
+  readonly type: string;
+}[];
 
 export interface SaveOption {
   readonly id: string;
@@ -15,8 +58,31 @@ export interface SaveOption {
   readonly file: FileToSave | undefined;
 }
 
-/** What can be saved of the window as it is. */
-export function saveOptions({ draft, run, view }: WindowState): readonly SaveOption[] {
+function geometryFile(run: Run, view: View, stem: string): FileToSave | undefined {
+  const index = cursorIndex(run, view.cursor);
+  const point = index === undefined ? undefined : run.points[index];
+  if (!point) return undefined;
+  const { study } = run;
+  const where =
+    point.coordinate === null ? '' : positionText(study, study.molecule.unit)(point.coordinate, 10);
+  return {
+    suggestedName: `${stem}.geometry.txt`,
+    type: 'text/plain',
+    content: () => geometryText(study, point, where),
+  };
+}
+
+export type MakeReport = (results: StudyResults, name: string, part: ReportPart) => Promise<Blob>;
+
+/**
+ * What can be saved of the window as it is.
+ *
+ * @param makeReport - asks the host for a part of the report
+ */
+export function saveOptions(
+  { draft, run, view }: WindowState,
+  makeReport: MakeReport,
+): readonly SaveOption[] {
   const study = parseStudy(studyText(draft).text);
   const studyStem = fileStem(draft.title, draft.atoms.map(({ element }) => element).join(''));
   const runStem = run === undefined ? '' : fileStem(run.study.title ?? '', run.sentence);
@@ -90,6 +156,22 @@ export function saveOptions({ draft, run, view }: WindowState): readonly SaveOpt
         run && hasPoints
           ? { suggestedName: `${runStem}.png`, type: 'image/png', content: () => figureAsPng(figure(run)) }
           : undefined,
+    },
+    ...REPORT_PARTS.map(({ part, name, description, ending, type }) => ({
+      id: part,
+      name,
+      description,
+      file: run?.results && {
+        suggestedName: `${runStem}.${ending}`,
+        type,
+        content: () => makeReport(run.results!, runStem, part),
+      },
+    })),
+    {
+      id: 'geometry',
+      name: 'Geometry',
+      description: 'at the cursor, as lines of element x y z',
+      file: run && geometryFile(run, view, runStem),
     },
   ];
 }

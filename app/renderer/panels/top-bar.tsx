@@ -18,7 +18,7 @@ export function TopBar() {
   const theme = useWindowState(({ view }) => view.theme);
   const state = useWindowState((whole) => whole);
   const controller = useController();
-  const options = saveOptions(state);
+  const options = saveOptions(state, (...request) => controller.reportFile(...request));
   return (
     <header className="topBar">
       <h1 title={version === undefined ? 'Farwell' : `Farwell ${version}`}>

@@ -1,5 +1,5 @@
-import type { StudyExplanation } from '#engine';
-import type { HostConnection, StudyCheck } from '../../contract/requests';
+import type { StudyExplanation, StudyResults } from '#engine';
+import type { HostConnection, ReportPart, StudyCheck } from '../../contract/requests';
 import { studySentence } from '../../study/sentence';
 import type { FileToSave } from '../files/save-file';
 import { CalculationFeed } from './calculation-feed';
@@ -113,6 +113,16 @@ export class WindowController {
         { place: '', message, remedy: 'Try again, or save it somewhere else.' },
       ]);
     }
+  }
+
+  /** One file of the report of results, made by the host. @throws Error with what the host says */
+  async reportFile(results: StudyResults, name: string, part: ReportPart): Promise<Blob> {
+    const text = JSON.stringify(results);
+    const reply = await this.#host.request('report:make', { results: [{ name, text }], part });
+    if (!reply.ok) throw new Error(`${reply.error.message} ${reply.error.remedy}`);
+    const [file] = reply.value.files;
+    if (file === undefined) throw new Error('The report has no such part.');
+    return new Blob([Uint8Array.from(atob(file.base64), (character) => character.charCodeAt(0))]);
   }
 
   /** A study or a results file, told apart by its `format`. What is refused leaves the window as it was. */

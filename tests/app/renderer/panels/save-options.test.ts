@@ -23,8 +23,10 @@ const state: WindowState = {
     error: undefined,
   },
 };
+const makeReport = async (of: typeof results, name: string, part: string) =>
+  new Blob([`${part} of ${of.points.length} points for ${name}`]);
 const fileOf = (id: string, of: WindowState = state) =>
-  saveOptions(of).find((option) => option.id === id)?.file;
+  saveOptions(of, makeReport).find((option) => option.id === id)?.file;
 
 describe('what can be saved', () => {
   it('is a study that opens as it was', async () => {
@@ -36,6 +38,22 @@ describe('what can be saved', () => {
   it('is results and a table with every digit', async () => {
     expect(parseResults(String(await fileOf('results')?.content()))).toMatchObject({ ok: true, results });
     expect(await fileOf('table')?.content()).toBe(studyCsv(results));
+  });
+
+  it('is the report in its parts, made by the host', async () => {
+    const file = fileOf('pdf');
+    expect(file?.suggestedName).toBe('two-hydrogen-atoms-come-together.report.pdf');
+    expect(await ((await file!.content()) as Blob).text()).toBe(
+      'pdf of 37 points for two-hydrogen-atoms-come-together',
+    );
+    expect(fileOf('pdf', { ...state, run: { ...state.run!, results: undefined } })).toBeUndefined();
+  });
+
+  it('is the geometry at the cursor', async () => {
+    const at = { ...state, view: { ...state.view, cursor: 6 } };
+    expect(await fileOf('geometry', at)?.content()).toBe(
+      '# H₂, 1 Å; x y z in angstrom\nH      0.0000000000     0.0000000000     0.0000000000\nH      0.0000000000     0.0000000000     1.0000000000\n',
+    );
   });
 
   it('is nothing that is not there or would not open again', () => {
