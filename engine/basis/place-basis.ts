@@ -35,7 +35,7 @@ export function placeBasis(
         atom,
         centre: position,
         angularMomentum: definition.angularMomentum,
-        ...normalisedPrimitives(definition),
+        ...primitivesOf(definition),
         firstFunction: functionCount,
         functionCount: count,
       });
@@ -52,6 +52,21 @@ export function placeBasis(
     );
   }
   return { shells, functionCount, harmonics: basisSet.harmonics };
+}
+
+const primitivesOfDefinition = new WeakMap<
+  ShellDefinition,
+  Pick<PlacedShell, 'exponents' | 'coefficients'>
+>();
+
+/** Made once for a definition, so that its shells at every geometry share their arrays. */
+function primitivesOf(definition: ShellDefinition): Pick<PlacedShell, 'exponents' | 'coefficients'> {
+  let primitives = primitivesOfDefinition.get(definition);
+  if (!primitives) {
+    primitives = normalisedPrimitives(definition);
+    primitivesOfDefinition.set(definition, primitives);
+  }
+  return primitives;
 }
 
 /** Exponents and the factors of the bare primitives x^l exp(−αr²) in the normalised contraction of x^l. */

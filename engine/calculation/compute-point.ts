@@ -82,6 +82,7 @@ export function computePoint(
       })
     : undefined;
   const levels: Record<string, LevelResult> = {};
+  const correlated = correlatedOnce();
   const compute = (level: Level): LevelResult => {
     switch (level.kind) {
       case 'hartreeFock':
@@ -91,7 +92,7 @@ export function computePoint(
       case 'singles':
         return computeSingles(correlation!);
       case 'correlated':
-        return computeCorrelated(level, correlation!);
+        return correlated(level, correlation!);
     }
   };
   for (const level of chosen) {
@@ -109,6 +110,17 @@ export function computePoint(
       cautions: pointCautions(prepared, fields, levels, optimised?.outcome),
     },
     ...(carry && { carry: { ...carry, ...(optimised && { scaleFactors: optimised.factors }) } }),
+  };
+}
+
+/** Levels that reach all electrons are the same full CI under different names. */
+function correlatedOnce(): typeof computeCorrelated {
+  let full: ReturnType<typeof computeCorrelated> | undefined;
+  return (level, input) => {
+    const [alphaElectrons, betaElectrons] = input.activeElectrons;
+    if (level.maximumRank < alphaElectrons + betaElectrons) return computeCorrelated(level, input);
+    full ??= computeCorrelated(level, input);
+    return full;
   };
 }
 

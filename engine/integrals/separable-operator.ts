@@ -1,7 +1,7 @@
-import type { Harmonics, PlacedBasis, PlacedShell } from '../basis/contracted-gaussian';
+import type { PlacedBasis, PlacedShell } from '../basis/contracted-gaussian';
 import type { Vector3 } from '../molecule/molecule';
 import { shellTransformation, transformBlock } from './basis-transformation';
-import { type CartesianPowers, cartesianComponents } from './cartesian-components';
+import { type CartesianPowers, cartesianComponents, cartesianCount } from './cartesian-components';
 import { LineIntegrals } from './line-integrals';
 
 /** One or more symmetric operators whose integrals are sums of products of one-dimensional integrals. */
@@ -29,33 +29,51 @@ export function separableMatrices(basis: PlacedBasis, operator: SeparableOperato
   const n = basis.functionCount;
   const matrices = Array.from({ length: operator.count }, () => new Float64Array(n * n));
   const highestL = basis.shells.reduce((highest, shell) => Math.max(highest, shell.angularMomentum), 0);
-  const line = new LineIntegrals(highestL + operator.extraPower, operator.highestMoment);
+  const workspace = {
+    line: new LineIntegrals(highestL + operator.extraPower, operator.highestMoment),
+    blocks: matrices.map(() => new Float64Array(cartesianCount(highestL) ** 2)),
+    primitive: new Float64Array(operator.count),
+  };
   basis.shells.forEach((first, i) => {
-    for (const second of basis.shells.slice(0, i + 1)) {
-      shellBlocks(first, second, basis.harmonics, operator, line).forEach((block, index) => {
-        placeSymmetric(matrices[index], n, block, first, second);
+    const firstTransformation = shellTransformation(first.angularMomentum, basis.harmonics);
+    for (let j = 0; j <= i; j++) {
+      const second = basis.shells[j];
+      const secondTransformation = shellTransformation(second.angularMomentum, basis.harmonics);
+      fillShellBlocks(first, second, operator, workspace);
+      matrices.forEach((matrix, index) => {
+        const block = transformBlock(firstTransformation, secondTransformation, workspace.blocks[index]);
+        placeSymmetric(matrix, n, block, first, second);
       });
     }
   });
   return matrices;
 }
 
-function shellBlocks(
+interface Workspace {
+  readonly line: LineIntegrals;
+  /** one an operator, for the largest pair of shells */
+  readonly blocks: readonly Float64Array[];
+  /** the integrals of one pair of primitives */
+  readonly primitive: Float64Array;
+}
+
+/** Integrals over bare products of coordinates, contracted, into the blocks of the workspace. */
+
+function fillShellBlocks(
   first: PlacedShell,
   second: PlacedShell,
-  harmonics: Harmonics,
   operator: SeparableOperator,
-  line: LineIntegrals,
-): Float64Array[] {
+  { line, blocks, primitive }: Workspace,
+): void {
   const firstComponents = cartesianComponents(first.angularMomentum);
   const secondComponents = cartesianComponents(second.angularMomentum);
-  const size = firstComponents.length * secondComponents.length;
-  const blocks = Array.from({ length: operator.count }, () => new Float64Array(size));
   const firstPower = first.angularMomentum + operator.extraPower;
   const secondPower = second.angularMomentum + operator.extraPower;
-  const primitive = new Float64Array(operator.count);
-  first.exponents.forEach((a, i) => {
-    second.exponents.forEach((b, j) => {
+  for (const block of blocks) block.fill(0);
+  for (let i = 0; i < first.exponents.length; i++) {
+    const a = first.exponents[i];
+    for (let j = 0; j < second.exponents.length; j++) {
+      const b = second.exponents[j];
       const coefficient = first.coefficients[i] * second.coefficients[j];
       line.compute(a, first.centre, firstPower, b, second.centre, secondPower, operator.origin);
       let at = 0;
@@ -68,11 +86,8 @@ function shellBlocks(
           at++;
         }
       }
-    });
-  });
-  const firstTransformation = shellTransformation(first.angularMomentum, harmonics);
-  const secondTransformation = shellTransformation(second.angularMomentum, harmonics);
-  return blocks.map((block) => transformBlock(firstTransformation, secondTransformation, block));
+    }
+  }
 }
 
 /** Writes a block of shell functions and its transpose into an n×n matrix. */

@@ -5,7 +5,7 @@ import { kineticMatrix } from '../integrals/kinetic';
 import { nuclearAttractionMatrix } from '../integrals/nuclear-attraction';
 import { overlapMatrix } from '../integrals/overlap';
 import { multiply } from '../linear-algebra/dense';
-import type { Atom } from '../molecule/molecule';
+import type { Atom, Vector3 } from '../molecule/molecule';
 import { diagonaliseFock } from './orbitals';
 import { orthogonalise } from './orthogonalisation';
 
@@ -19,25 +19,65 @@ const DENSITY_TOLERANCE = 1e-5;
  * evenly over its m components and over both spins.
  *
  * @param shells - the atom's shells, in the molecule's basis
- * @returns spin-summed density over the atom's functions, row-major; zero for a ghost
+ * @returns spin-summed density over the atom's functions, row-major; zero for a ghost; shared, not to be written into
  *
  * Source: the start from atomic densities, J. Almlöf, K. Faegri, K. Korsell, J. Comput. Chem. 3, 385 (1982).
  */
 export function atomicDensity(
-  atom: Atom,
+  atom: Pick<Atom, 'nuclearCharge' | 'atomicNumber'>,
   shells: readonly PlacedShell[],
   harmonics: PlacedBasis['harmonics'],
 ): Float64Array {
-  const basis = isolate(shells, harmonics);
+  const known = shells.length > 0 ? (densitiesOfShells.get(shells[0].exponents) ?? []) : [];
+  const found = known.find(
+    (entry) =>
+      entry.nuclearCharge === atom.nuclearCharge &&
+      entry.atomicNumber === atom.atomicNumber &&
+      entry.harmonics === harmonics &&
+      haveEqualPrimitives(entry.shells, shells),
+  );
+  if (found) return found.density;
+  const density = convergeDensity(atom, isolate(shells, harmonics));
+  if (shells.length > 0) {
+    const { nuclearCharge, atomicNumber } = atom;
+    const entry = { nuclearCharge, atomicNumber, harmonics, shells, density };
+    densitiesOfShells.set(shells[0].exponents, [...known, entry]);
+  }
+  return density;
+}
+
+interface KnownDensity extends Pick<Atom, 'nuclearCharge' | 'atomicNumber'> {
+  readonly harmonics: PlacedBasis['harmonics'];
+  readonly shells: readonly PlacedShell[];
+  readonly density: Float64Array;
+}
+
+/** By the exponents of the first shell: the points of a scan share the arrays of their shells. */
+const densitiesOfShells = new WeakMap<Float64Array, readonly KnownDensity[]>();
+
+function haveEqualPrimitives(some: readonly PlacedShell[], others: readonly PlacedShell[]): boolean {
+  return (
+    some.length === others.length &&
+    some.every(
+      ({ angularMomentum, exponents, coefficients }, i) =>
+        angularMomentum === others[i].angularMomentum &&
+        exponents === others[i].exponents &&
+        coefficients === others[i].coefficients,
+    )
+  );
+}
+
+function convergeDensity(
+  atom: Pick<Atom, 'nuclearCharge' | 'atomicNumber'>,
+  basis: PlacedBasis,
+): Float64Array {
   const n = basis.functionCount;
   let density: Float64Array = new Float64Array(n * n);
   if (atom.nuclearCharge === 0) return density;
 
   const overlap = overlapMatrix(basis);
   const core = kineticMatrix(basis);
-  const attraction = nuclearAttractionMatrix(basis, [
-    { charge: atom.nuclearCharge, position: atom.position },
-  ]);
+  const attraction = nuclearAttractionMatrix(basis, [{ charge: atom.nuclearCharge, position: ORIGIN }]);
   for (let i = 0; i < n * n; i++) core[i] += attraction[i];
   const repulsion = electronRepulsionTensor(basis);
 
@@ -59,11 +99,13 @@ export function atomicDensity(
   return density;
 }
 
-/** The atom's shells alone, numbered from 0. */
+const ORIGIN: Vector3 = [0, 0, 0];
+
+/** The atom's shells alone, numbered from 0, at the origin: so the density does not depend on where it was first asked for. */
 function isolate(shells: readonly PlacedShell[], harmonics: PlacedBasis['harmonics']): PlacedBasis {
   let first = 0;
   const own = shells.map((shell) => {
-    const moved = { ...shell, atom: 0, firstFunction: first };
+    const moved = { ...shell, atom: 0, centre: ORIGIN, firstFunction: first };
     first += shell.functionCount;
     return moved;
   });
