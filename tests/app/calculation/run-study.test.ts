@@ -2,12 +2,12 @@ import { readdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { type PreparedStudy, prepareStudy, type Study, studyInBasis } from '#engine';
-import type { FinishedPoint, WorkerRequest } from '../../../app/calculation/messages';
+import type { FinishedPoint } from '../../../app/calculation/messages';
 import type { Progress } from '../../../app/calculation/progress';
 import { type RunOptions, runStudy } from '../../../app/calculation/run-study';
-import { serve } from '../../../app/calculation/serve';
 import type { StartWorker } from '../../../app/calculation/worker-thread';
 import { temporaryFolder } from '../../support/temporary-folder';
+import { startHere } from '../../support/worker-here';
 
 const folder = temporaryFolder();
 const study: Study = {
@@ -31,35 +31,6 @@ function prepared(changes: Partial<Study> = {}): PreparedStudy {
   if (!preparation.ok) throw preparation.errors[0];
   return preparation.prepared;
 }
-
-/** A worker in this thread: the server itself, with messages cloned and delayed as a thread would. */
-const startHere: StartWorker = (start) => {
-  let hasEnded = false;
-  let onReply: Parameters<ReturnType<StartWorker>['listen']>[0]['onReply'] = () => undefined;
-  let onRequest: (request: WorkerRequest) => void = () => undefined;
-  const deliver = <T>(message: T, to: () => (message: T) => void) => {
-    const copy = structuredClone(message);
-    setImmediate(() => hasEnded || to()(copy));
-  };
-  serve(
-    {
-      post: (reply) => deliver(reply, () => onReply),
-      onMessage: (listener) => {
-        onRequest = listener;
-      },
-    },
-    structuredClone(start),
-  );
-  return {
-    post: (request) => deliver(request, () => onRequest),
-    listen: (listeners) => {
-      onReply = listeners.onReply;
-    },
-    end: () => {
-      hasEnded = true;
-    },
-  };
-};
 
 async function resultsOf(options: RunOptions = {}, changes: Partial<Study> = {}) {
   const outcome = await runStudy({ prepared: prepared(changes) }, { startWorker: startHere, ...options });
