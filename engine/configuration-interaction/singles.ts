@@ -1,4 +1,5 @@
 import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
+import { dot } from '../linear-algebra/dense';
 import type { Vector3 } from '../molecule/molecule';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import { LEADING_COUNT, LEADING_WEIGHT } from './describe-state';
@@ -10,6 +11,9 @@ import {
   singlesSymmetry,
   type VectorSymmetry,
 } from './vector-symmetry';
+
+/** Excitations up to which the matrix is kept, 128 MiB; of more, a row is computed each time it is needed. */
+const MOST_KEPT = 4096;
 
 export interface SinglesOptions {
   /** doubly occupied orbitals of the closed-shell reference: the first ones */
@@ -170,13 +174,7 @@ function solveSpin(
         {
           dimension,
           diagonal: Float64Array.from({ length: dimension }, (_, ia) => element(ia, ia)),
-          apply: (vector, product) => {
-            for (let ia = 0; ia < dimension; ia++) {
-              let sum = 0;
-              for (let jb = 0; jb < dimension; jb++) sum += element(ia, jb) * vector[jb];
-              product[ia] = sum;
-            }
-          },
+          apply: productWith(element, dimension),
           elementsAmong: (places) => ({
             hamiltonian: (i, j) => element(places[i], places[j]),
           }),
@@ -198,6 +196,28 @@ function solveSpin(
     },
     { ...settings, stage: `${spin} singles` },
   );
+}
+
+/** vector ↦ matrix·vector. */
+function productWith(
+  element: (ia: number, jb: number) => number,
+  dimension: number,
+): (vector: Float64Array, product: Float64Array) => void {
+  const rowInto = (row: Float64Array, ia: number): Float64Array => {
+    for (let jb = 0; jb < dimension; jb++) row[jb] = element(ia, jb);
+    return row;
+  };
+  let rowOf: (ia: number) => Float64Array;
+  if (dimension <= MOST_KEPT) {
+    const rows = Array.from({ length: dimension }, (_, ia) => rowInto(new Float64Array(dimension), ia));
+    rowOf = (ia) => rows[ia];
+  } else {
+    const row = new Float64Array(dimension);
+    rowOf = (ia) => rowInto(row, ia);
+  }
+  return (vector, product) => {
+    for (let ia = 0; ia < dimension; ia++) product[ia] = dot(rowOf(ia), vector);
+  };
 }
 
 /** The amplitude of largest size becomes positive, so that transition dipoles have a definite sign. */

@@ -16,7 +16,8 @@ const FEWEST_FAST = 24;
 
 /**
  * All eigenvalues and eigenvectors of a symmetric matrix: Householder tridiagonalisation, then the implicit QL
- * method, or divide and conquer in the fast form. Errors of values and residuals are a few units in the last place of the largest element.
+ * method, or divide and conquer in the fast form. Errors of values and residuals are a few units in the last place
+ * of the largest element.
  *
  * @param matrix - n×n, row-major; only the lower triangle is read
  * @throws RangeError if an entry is not finite
