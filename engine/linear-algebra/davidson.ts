@@ -1,5 +1,5 @@
 import type { RunControl, Termination } from '../termination';
-import { addScaledInto, dot } from './dense';
+import { addScaledInto, congruence, dot } from './dense';
 import { symmetricEigen } from './symmetric-eigen';
 import { VectorBlock } from './vector-block';
 
@@ -25,6 +25,8 @@ export interface DavidsonOptions {
   readonly roots: number;
   /** roots above this are not wanted, and need not be converged where their residuals show it; default: all are */
   readonly ceiling?: number;
+  /** whether guards keep roots from being missed; default yes */
+  readonly guards?: boolean;
   /** largest ‖matrix·x − λx‖ of a converged root */
   readonly residualTolerance: number;
   readonly maximumIterations: number;
@@ -55,6 +57,8 @@ const SMALLEST_WEIGHT = 0.05;
 const GUARDS_AT_ONCE = 4;
 /** Stagnated: so many iterations without a new lowest residual or sum of the wanted roots. */
 const PATIENCE = 30;
+/** A difference of squares this small beside them has lost most of its digits. */
+const ROUNDED_SQUARE = 1e-11;
 /** Sums of values that differ by less than this fraction are equal. */
 const ROUNDING = 1e-12;
 
@@ -85,7 +89,7 @@ export function davidsonVectorCount(maximumVectors: number): number {
  */
 export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOptions): DavidsonResult {
   const roots = Math.min(options.roots, problem.dimension);
-  const { ceiling = Number.POSITIVE_INFINITY } = options;
+  const { ceiling = Number.POSITIVE_INFINITY, guards = true } = options;
   const subspace = new Subspace(problem);
   problem.guesses.forEach((guess, k) => {
     subspace.extend(guess, problem.groups?.[k] ?? k);
@@ -106,8 +110,9 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     const highest = subspace.values[wanted - 1];
     let unfinished: number[] = [];
     let worst = 0;
-    for (const k of subspace.pursuable(wanted)) {
-      const norm = subspace.residual(k);
+    const pursued = guards ? subspace.pursuable(wanted) : Array.from({ length: wanted }, (_, k) => k);
+    for (const k of pursued) {
+      const norm = k < wanted ? subspace.residual(k) : subspace.residualNorm(k);
       const limit = k < wanted ? ceiling : Math.min(highest, ceiling);
       const lowestMissed = subspace.values[k] - norm / Math.sqrt(SMALLEST_WEIGHT);
       if (lowestMissed > limit + DEGENERACY_TOLERANCE) continue;
@@ -151,6 +156,8 @@ class Subspace {
   readonly #correction: Float64Array;
   /** size×size, row-major */
   #matrix: Float64Array = new Float64Array(0);
+  /** scalar products of the products, size×size */
+  #squared: Float64Array = new Float64Array(0);
   /** of the last diagonalisation; columns over the basis as it was then */
   #coefficients: Float64Array = new Float64Array(0);
   #columns = 0;
@@ -186,16 +193,8 @@ class Subspace {
     const product = this.#products.append();
     this.#problem.apply(vector, product);
 
-    const bordered = new Float64Array((size + 1) ** 2);
-    for (let i = 0; i < size; i++) {
-      bordered.set(this.#matrix.subarray(i * size, (i + 1) * size), i * (size + 1));
-    }
-    for (let i = 0; i <= size; i++) {
-      const element = dot(this.#basis.at(i), product);
-      bordered[i * (size + 1) + size] = element;
-      bordered[size * (size + 1) + i] = element;
-    }
-    this.#matrix = bordered;
+    this.#matrix = border(this.#matrix, size, this.#basis.dots(product));
+    this.#squared = border(this.#squared, size, this.#products.dots(product));
     return true;
   }
 
@@ -245,9 +244,11 @@ class Subspace {
     const pursuable = new Set(this.pursuable(wanted));
     let others = size - pursuable.size;
     const kept = Array.from(this.values.keys()).filter((k) => pursuable.has(k) || others-- > 0);
-    this.#rotate(this.#basis, kept);
-    this.#rotate(this.#products, kept);
+    const coefficients = this.#coefficientsOf(kept);
     const count = kept.length;
+    this.#basis.rotate(coefficients, this.#columns, count);
+    this.#products.rotate(coefficients, this.#columns, count);
+    this.#squared = congruence(this.#squared, coefficients, this.#columns, count);
     this.values = Float64Array.from(kept, (k) => this.values[k]);
     this.#groupOfValue = kept.map((k) => this.#groupOfValue[k]);
     this.#groups = this.#groupOfValue.slice();
@@ -261,15 +262,22 @@ class Subspace {
     return listed.map((k) => kept.indexOf(k));
   }
 
-  /** The block becomes its combinations that are the listed eigenvectors. */
-  #rotate(block: VectorBlock, kept: readonly number[]): void {
+  /** The listed eigenvectors over the basis, as columns. */
+  #coefficientsOf(kept: readonly number[]): Float64Array {
     const coefficients = new Float64Array(this.#columns * kept.length);
     for (let i = 0; i < this.#columns; i++) {
       kept.forEach((k, column) => {
         coefficients[i * kept.length + column] = this.#coefficients[i * this.#columns + k];
       });
     }
-    block.rotate(coefficients, this.#columns, kept.length);
+    return coefficients;
+  }
+
+  /** Length of the residual of eigenvector k, without forming it as long as it is well above rounding: ‖Ax‖² − θ². */
+  residualNorm(k: number): number {
+    const [square] = congruence(this.#squared, this.#coefficientsOf([k]), this.#columns, 1);
+    const estimate = square - this.values[k] ** 2;
+    return estimate > ROUNDED_SQUARE * square ? Math.sqrt(estimate) : this.residual(k);
   }
 
   /** Forms eigenvector k and its residual; returns the residual's length. */
@@ -302,16 +310,27 @@ class Subspace {
     if (this.values.length === 0) return { values: this.values, vectors: [], residuals: new Float64Array(0) };
     const count = this.countThroughDegenerate(Math.min(roots, this.values.length));
     const residuals = Float64Array.from({ length: count }, (_, k) => this.residual(k));
-    this.#rotate(
-      this.#basis,
-      Array.from({ length: count }, (_, k) => k),
-    );
+    const kept = Array.from({ length: count }, (_, k) => k);
+    this.#basis.rotate(this.#coefficientsOf(kept), this.#columns, count);
     return {
       values: this.values.slice(0, count),
       vectors: Array.from({ length: count }, (_, k) => this.#basis.at(k)),
       residuals,
     };
   }
+}
+
+/** A symmetric matrix with one more row and column. */
+function border(matrix: Float64Array, size: number, last: Float64Array): Float64Array {
+  const bordered = new Float64Array((size + 1) ** 2);
+  for (let i = 0; i < size; i++) {
+    bordered.set(matrix.subarray(i * size, (i + 1) * size), i * (size + 1));
+  }
+  last.forEach((element, i) => {
+    bordered[i * (size + 1) + size] = element;
+    bordered[size * (size + 1) + i] = element;
+  });
+  return bordered;
 }
 
 /** (diagonal − shift)⁻¹ applied element by element, no denominator smaller in size than `smallest`. */

@@ -1,6 +1,6 @@
-import { addScaledInto, dot } from './dense';
+import { dot } from './dense';
 
-/** Elements rotated at a time: the stretch of all vectors stays in the cache. */
+/** Elements handled at a time: their stretch of the vector that all others meet stays in the fast cache. */
 const CHUNK = 512;
 /** After a projection that shortens a vector below this fraction, it is projected once more. */
 const LOST_LENGTH = 0.1;
@@ -43,8 +43,27 @@ export class VectorBlock {
     column: number,
   ): void {
     target.fill(0);
-    for (let i = 0; i < rows; i++)
-      addScaledInto(target, coefficients[i * columns + column], this.#vectors[i]);
+    this.#addCombination(
+      target,
+      Float64Array.from({ length: rows }, (_, i) => coefficients[i * columns + column]),
+    );
+  }
+
+  /** The products of all vectors of the block with one. */
+  dots(vector: Float64Array): Float64Array {
+    const sums = new Float64Array(this.#size);
+    for (let start = 0; start < this.dimension; start += CHUNK) {
+      const end = Math.min(start + CHUNK, this.dimension);
+      for (let i = 0; i < this.#size; i += 4) addFourDots(sums, i, this.#vectors, vector, start, end);
+    }
+    return sums;
+  }
+
+  #addCombination(target: Float64Array, factors: Float64Array): void {
+    for (let start = 0; start < this.dimension; start += CHUNK) {
+      const end = Math.min(start + CHUNK, this.dimension);
+      for (let i = 0; i < factors.length; i += 4) addFour(target, factors, i, this.#vectors, start, end);
+    }
   }
 
   /** The block becomes combinations of its first `rows` vectors, one per column of coefficients (row-major). */
@@ -80,8 +99,10 @@ export class VectorBlock {
     scale(vector, 1 / length);
     let remaining = 1;
     for (let pass = 0; pass < MOST_PROJECTIONS; pass++) {
-      for (let i = 0; i < this.#size; i++)
-        addScaledInto(vector, -dot(this.#vectors[i], vector), this.#vectors[i]);
+      this.#addCombination(
+        vector,
+        this.dots(vector).map((overlap) => -overlap),
+      );
       const kept = Math.sqrt(dot(vector, vector));
       remaining *= kept;
       if (!(remaining > smallest)) return false;
@@ -94,4 +115,52 @@ export class VectorBlock {
 
 function scale(vector: Float64Array, factor: number): void {
   for (let i = 0; i < vector.length; i++) vector[i] *= factor;
+}
+
+/** Adds four vectors at once (fewer at the end of the list), so that the target is read and written once for them. */
+function addFour(
+  target: Float64Array,
+  factors: Float64Array,
+  first: number,
+  vectors: readonly Float64Array[],
+  start: number,
+  end: number,
+): void {
+  const last = factors.length - 1;
+  // a vector beyond the last is the last one with the factor 0
+  const factor = (i: number) => (i <= last ? factors[i] : 0);
+  const [fa, fb, fc, fd] = [factor(first), factor(first + 1), factor(first + 2), factor(first + 3)];
+  const a = vectors[first];
+  const b = vectors[Math.min(first + 1, last)];
+  const c = vectors[Math.min(first + 2, last)];
+  const d = vectors[Math.min(first + 3, last)];
+  for (let k = start; k < end; k++) target[k] += fa * a[k] + fb * b[k] + fc * c[k] + fd * d[k];
+}
+
+/** The same for products with one vector: four sums that do not wait for each other. */
+function addFourDots(
+  sums: Float64Array,
+  first: number,
+  vectors: readonly Float64Array[],
+  vector: Float64Array,
+  start: number,
+  end: number,
+): void {
+  const last = sums.length - 1;
+  const a = vectors[first];
+  const b = vectors[Math.min(first + 1, last)];
+  const c = vectors[Math.min(first + 2, last)];
+  const d = vectors[Math.min(first + 3, last)];
+  let [sa, sb, sc, sd] = [0, 0, 0, 0];
+  for (let k = start; k < end; k++) {
+    const value = vector[k];
+    sa += a[k] * value;
+    sb += b[k] * value;
+    sc += c[k] * value;
+    sd += d[k] * value;
+  }
+  sums[first] += sa;
+  if (first < last) sums[first + 1] += sb;
+  if (first + 1 < last) sums[first + 2] += sc;
+  if (first + 2 < last) sums[first + 3] += sd;
 }
