@@ -2,7 +2,7 @@ import type { CorrelatedResult, PointResult, StudyResults } from '#engine';
 import type { NamedResults } from './named-results';
 import { type Citations, PAPERS } from './references';
 import { coordinateScale, coordinateText, type ScannedCoordinate } from './scanned-coordinate';
-import { ended, percent } from './sentences';
+import { percent } from './sentences';
 import { withMinus } from './text-escapes';
 import type { TableColumn, TextTable } from './text-table';
 
@@ -11,6 +11,8 @@ const SHARE_DECIMALS = 4;
 /** Of the distance of the minimum: where correlation turns from dynamic to static. */
 const STRETCHES = [1, 1.5, 2, 3];
 const MOST_PAIRS = 8;
+const MOST_CONFIGURATIONS = 4;
+const SMALL_WEIGHT = 0.01;
 /** Pairs that give less than this share of the largest one are drawn together. */
 const SMALL_PAIR = 0.01;
 const HALF = 0.5;
@@ -89,6 +91,7 @@ export function correlationTables(
     overview,
     ...ranksTable(points, largest, placeOf, place, idOf('ranks'), ofFile),
     ...pairsTable(points, largest, results, placeOf, idOf('pairs'), ofFile),
+    ...configurationsTable(points, largest, placeOf, place, idOf('configurations'), ofFile),
   ];
 }
 
@@ -218,7 +221,43 @@ function pairsTable(
           : []),
         row('together', total, undefined),
       ],
-      notes: ['Projected on the reference determinant: parts of another sum with the same whole.'].map(ended),
+      notes: [
+        'Projected on the reference determinant, so that singles and pairs alone add up to the whole. Orbitals without a label go by number, from #1.',
+      ],
+    },
+  ];
+}
+
+function configurationsTable(
+  points: readonly PointResult[],
+  level: string,
+  placeOf: (point: PointResult) => string,
+  place: TableColumn,
+  id: string,
+  ofFile: string,
+): readonly TextTable[] {
+  const rows = [...new Set([points[0], points.at(-1)])].flatMap((point) => {
+    const [lowest] = (point && correlatedAt(point, level)?.states) ?? [];
+    return (lowest?.configurations ?? [])
+      .filter(({ weight }) => weight >= SMALL_WEIGHT)
+      .slice(0, MOST_CONFIGURATIONS)
+      .map(({ weight, doublyOccupied, singlyOccupied }) => [
+        placeOf(point!),
+        [
+          ...doublyOccupied.map((orbital) => `${orbitalName(point!, orbital)}²`),
+          ...singlyOccupied.map((orbital) => `${orbitalName(point!, orbital)}¹`),
+        ].join(' '),
+        cell(weight, SHARE_DECIMALS),
+      ]);
+  });
+  if (rows.length === 0) return [];
+  return [
+    {
+      id,
+      heading: `Leading configurations of ${level}${ofFile}, lowest state`,
+      columns: [place, { label: 'Occupied', content: 'words' }, { label: 'Weight' }],
+      rows,
+      notes: [],
     },
   ];
 }
@@ -228,7 +267,7 @@ function orbitalName({ levels }: PointResult, orbital: number): string {
   const field = levels.RHF ?? levels.ROHF;
   const labels = field?.kind === 'hartreeFock' ? field.orbitalSymmetries : undefined;
   const label = Array.isArray(labels) ? (labels[orbital] as string | null | undefined) : undefined;
-  return label ?? `orbital ${orbital + 1}`;
+  return label ?? `#${orbital + 1}`;
 }
 
 function cell(value: number | undefined, decimals: number): string {

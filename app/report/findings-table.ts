@@ -151,6 +151,11 @@ function notesOf({ level, findings }: ReadLevel): readonly string[] {
   const { minimum, dissociation, counterpoise } = findings;
   return [
     ...(minimum.kind === 'none' ? [`${level}, minimum: ${ended(minimum.reason)}`] : []),
+    ...(minimum.kind === 'found' && minimum.onKink
+      ? [
+          `${level}, minimum: the energies around it lie on no smooth curve, so that it is less sure than others.`,
+        ]
+      : []),
     ...(dissociation?.kind === 'none' ? [`${level}, separate fragments: ${ended(dissociation.reason)}`] : []),
     ...(counterpoise?.kind === 'none' ? [`${level}, counterpoise: ${ended(counterpoise.reason)}`] : []),
   ];

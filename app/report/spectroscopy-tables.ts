@@ -2,6 +2,7 @@ import type { LevelFindings, StudyResults, Vibration, VibrationalState } from '#
 import { type ComparedConstant, comparedConstants } from '../study/compared-constants';
 import { fileGroup, type NamedResults } from './named-results';
 import type { Citations } from './references';
+import { ended } from './sentences';
 import { withMinus } from './text-escapes';
 import { NO_VALUE, type TableColumn, type TextTable } from './text-table';
 
@@ -42,7 +43,10 @@ export function constantsTable(file: NamedResults, citations: Citations): TextTa
       ...(isCompared ? levels.map((label) => ({ groups: ['Computed minus measured'], label })) : []),
     ],
     rows,
-    notes: isCompared ? measuredNotes(constants, citations) : notMeasuredNotes(results),
+    notes: [
+      ...(isCompared ? measuredNotes(constants, citations) : notMeasuredNotes(results)),
+      ...withoutConstantsNotes(results),
+    ],
   };
 }
 
@@ -72,6 +76,13 @@ function measuredNotes(constants: readonly ComparedConstant[], citations: Citati
       return `${NO_VALUE} for ${symbols.join(', ')}: ${reason}.`;
     }),
   ];
+}
+
+function withoutConstantsNotes({ study, findings }: StudyResults): readonly string[] {
+  return study.levels.flatMap((level) => {
+    const reason = findings[level]?.constants?.withoutDiatomic;
+    return reason ? [`${level}, spectroscopic constants: ${ended(reason)}`] : [];
+  });
 }
 
 const notMeasuredNotes = ({ measured }: StudyResults): readonly string[] =>

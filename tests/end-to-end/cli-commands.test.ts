@@ -66,7 +66,17 @@ describe('farwell report', () => {
     expect(status).toBe(0);
     const paths = stdout.trimEnd().split('\n');
     expect(paths.every((path) => path.startsWith(out))).toBe(true);
-    for (const ending of ['.svg', '.png', '.csv', '.md']) {
+    for (const ending of [
+      '.svg',
+      '.pdf',
+      '.png',
+      '.csv',
+      '.json',
+      '.tex',
+      '.md',
+      '.report.html',
+      '.report.pdf',
+    ]) {
       const path = paths.find((name) => name.endsWith(ending));
       expect(path, ending).toBeDefined();
       expect(readFileSync(path!).length).toBeGreaterThan(100);

@@ -8,13 +8,13 @@ export type PastedAtoms =
 const ATOM_LINE = /^\s*([A-Za-z]{1,2})[\s,;]+(\S+?)[\s,;]+(\S+?)[\s,;]+(\S+)\s*$/;
 
 /**
- * Reads plain lines `element x y z`. Leading lines that hold only a number of atoms or a remark are not
- * guessed at: a line that is neither blank nor an atom is reported.
+ * Reads plain lines `element x y z`. Lines that begin with `#` are remarks, as `farwell report --geometry` writes; others
+ * are not guessed at: a line that is neither blank nor an atom is reported.
  */
 export function readPastedAtoms(text: string): PastedAtoms {
   const atoms: AtomDraft[] = [];
   for (const [index, line] of text.split(/\r?\n/).entries()) {
-    if (line.trim() === '') continue;
+    if (/^\s*(#|$)/.test(line)) continue;
     const match = ATOM_LINE.exec(line);
     const [, element = '', x = '', y = '', z = ''] = match ?? [];
     if (match === null || [x, y, z].some((number) => !Number.isFinite(Number(number))))

@@ -38,6 +38,32 @@ describe('correlationTables', () => {
     expect(correction(0.4)).not.toContain('Davidson correction (hartree)');
   });
 
+  it('lists leading configurations at the minimum and at the far end, orbitals by label or number', () => {
+    const results = withMore({});
+    const points = results.points.map((point) => {
+      const { RHF, FCI } = point.levels;
+      if (FCI?.kind !== 'correlated' || RHF?.kind !== 'hartreeFock') throw new Error('sample changed');
+      const configurations = [
+        { weight: 0.9, doublyOccupied: [0], singlyOccupied: [] },
+        { weight: 0.09, doublyOccupied: [], singlyOccupied: [0, 1] },
+        { weight: 0.001, doublyOccupied: [1], singlyOccupied: [] },
+      ];
+      return {
+        ...point,
+        levels: {
+          RHF: { ...RHF, orbitalSymmetries: ['1σg', null] },
+          FCI: { ...FCI, states: [{ ...FCI.states[0]!, configurations }] },
+        },
+      };
+    });
+    expect(tablesOf({ ...results, points }).at(-1)?.rows).toEqual([
+      ['0.7', '1σg²', '0.9000'],
+      ['0.7', '1σg¹ #2¹', '0.0900'],
+      ['4', '1σg²', '0.9000'],
+      ['4', '1σg¹ #2¹', '0.0900'],
+    ]);
+  });
+
   it('shows the parts by rank and by pair, which add up to the whole as printed', () => {
     const pair = (a: number, b: number, energy: number) => ({
       orbitals: [a, b] as const,
@@ -70,8 +96,8 @@ describe('correlationTables', () => {
       '0.0400',
     ]);
     expect(pairs?.rows.map(([from, energy]) => [from, energy])).toEqual([
-      ['orbital 1²', '−0.040000'],
-      ['orbital 1 and orbital 2', '−0.017750'],
+      ['#1²', '−0.040000'],
+      ['#1 and #2', '−0.017750'],
       ['1 further pair', '−0.000250'],
       ['single excitations', '−0.002000'],
       ['together', '−0.060000'],

@@ -1,5 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { readPastedAtoms } from '../../../../app/renderer/state/pasted-atoms';
+import { geometryLines } from '../../../../app/report/geometry-lines';
+import { sampleResults } from '../../../support/sample-results';
 
 describe('pasted atoms', () => {
   it('reads element and coordinates as they stand, whatever parts them', () => {
@@ -10,6 +12,14 @@ describe('pasted atoms', () => {
         { element: 'H', at: ['0.0', '0.757', '-4.7e-1'], isotope: '', ghost: false },
       ],
     });
+  });
+
+  it('reads what `farwell report --geometry` prints', () => {
+    const pasted = readPastedAtoms(geometryLines(sampleResults(), 0.7));
+    expect(pasted.ok && pasted.atoms.map(({ element, at }) => [element, ...at.map(Number)])).toEqual([
+      ['H', 0, 0, 0],
+      ['H', 0, 0, 0.7],
+    ]);
   });
 
   it('names the first line that is not an atom, and takes none', () => {
