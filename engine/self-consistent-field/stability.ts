@@ -1,4 +1,5 @@
 import { lowestEigenpairs } from '../linear-algebra/davidson';
+import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
 import { inStage } from '../stages';
 import type { RunControl } from '../termination';
 import type { RotationFunctional, RotationPoint } from './minimiser';
@@ -45,6 +46,9 @@ export function lowestHessianEigenpair(
   diagonal: Float64Array,
   control: RunControl,
 ): HessianEigenpair {
+  if (diagonal.length <= UNIT_GUESSES) {
+    return inStage(control, 'stability', () => lowestDirectly(apply, diagonal.length));
+  }
   const { values, vectors } = inStage(control, 'stability', () =>
     lowestEigenpairs(
       {
@@ -70,6 +74,19 @@ export function lowestHessianEigenpair(
     ),
   );
   return { value: values[0], vector: vectors[0] };
+}
+
+/** The Hessian column by column: so few that the search would begin with all of them. */
+function lowestDirectly(apply: (vector: Float64Array) => Float64Array, dimension: number): HessianEigenpair {
+  const hessian = new Float64Array(dimension * dimension);
+  const unit = new Float64Array(dimension);
+  for (let k = 0; k < dimension; k++) {
+    unit[k] = 1;
+    hessian.set(apply(unit), k * dimension);
+    unit[k] = 0;
+  }
+  const { values, vectors } = symmetricEigen(hessian, dimension);
+  return { value: values[0], vector: unit.map((_, k) => vectors[k * dimension]) };
 }
 
 /**
