@@ -84,7 +84,7 @@ function lowestOfSectors({ sectors }: StateProblem, settings: StateSettings): Lo
   let termination: Termination = { kind: 'converged' };
   for (const { sector, model } of started) {
     const ceiling = lowest[states - 1]?.value ?? Number.POSITIVE_INFINITY;
-    const found = findSectorStates(sector, model, settings, ceiling);
+    const found = findSectorStates(sector, model, settings, ceiling, lowest[0]);
     iterations += found.iterations;
     if (termination.kind === 'converged') ({ termination } = found);
     found.vectors.forEach((vector, k) => {

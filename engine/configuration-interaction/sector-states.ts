@@ -1,4 +1,5 @@
 import {
+  type DavidsonOptions,
   type DavidsonProblem,
   type DavidsonResult,
   DEGENERACY_TOLERANCE,
@@ -38,6 +39,11 @@ export interface StateSettings {
 
 export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iterations' | 'termination'>;
 
+export interface KnownState {
+  readonly value: number;
+  readonly vector: Float64Array;
+}
+
 /** Below the model's lowest energy, hartree: what lies higher by this much keeps a quarter of its weight. */
 const PROBE_SHIFT = 0.5;
 
@@ -46,16 +52,18 @@ const PROBE_SHIFT = 0.5;
  * A degenerate set that `states` cuts is whole.
  *
  * @param ceiling - states that lie above this, hartree, are not wanted, and need not be converged
+ * @param lowest - the lowest state of the sectors before
  */
 export function findSectorStates(
   problem: SectorProblem,
   model: ModelSpace,
   settings: StateSettings,
   ceiling: number,
+  lowest?: KnownState,
 ): LowestStates {
   return model.places.length === problem.dimension
     ? takeLowest(model, settings.states)
-    : iterate(problem, model, settings, ceiling);
+    : iterate(problem, model, settings, ceiling, lowest);
 }
 
 /** From a model space that is the whole space. */
@@ -71,6 +79,7 @@ function iterate(
   model: ModelSpace,
   settings: StateSettings,
   ceiling: number,
+  lowest: KnownState | undefined,
 ): LowestStates {
   const precondition = modelPreconditioner(model, problem.diagonal);
   const guesses = selectGuesses(problem, model, precondition, settings.states);
@@ -83,6 +92,9 @@ function iterate(
       maximumVectors: basisVectorLimit(settings.states),
     });
   const found = solve([...guesses.map((k) => spreadModelVector(model, k, problem.dimension)), ...probing]);
+  if (found.termination.kind !== 'converged') return found;
+  const own = { value: found.values[0], vector: found.vectors[0] };
+  if (!isStronglyMixed(lowest && lowest.value < own.value ? lowest : own)) return found;
   const hidden = lowerStatesOfOtherSpins(problem, model, precondition, found, settings, ceiling);
   if (hidden.length === 0) return found;
   const again = solve([...found.vectors, ...hidden]);
@@ -116,7 +128,7 @@ const ROUGH_ERROR = 0.02;
 /**
  * States below the highest one found that it has missed. H and the preconditioner keep the spin of a vector, so the
  * lowest state of every spin is sought by itself: what spins compete for in one iteration, they cannot lose here.
- * Only for strongly mixed states, as at a stretched multiple bond; others are safe by their guards.
+ * Only where the lowest state of all sectors is strongly mixed, as at a stretched multiple bond; else guards are enough.
  */
 function lowerStatesOfOtherSpins(
   problem: SectorProblem,
@@ -126,14 +138,16 @@ function lowerStatesOfOtherSpins(
   settings: StateSettings,
   ceiling: number,
 ): Float64Array[] {
-  if (found.termination.kind !== 'converged' || largestWeight(found.vectors[0]) > STRONGLY_MIXED) return [];
   const { lowest, guards } = chooseGuesses(model, settings.states);
   const highest = Math.min(ceiling, found.values[Math.min(settings.states, found.values.length) - 1]);
-  const seek = (guesses: readonly Float64Array[], residualTolerance: number) =>
+  const seek = (
+    guesses: readonly Float64Array[],
+    closeness: Pick<DavidsonOptions, 'residualTolerance' | 'ceiling' | 'guards'>,
+  ) =>
     lowestEigenpairs(asDavidsonProblem(problem, precondition, guesses), {
       ...settings,
       roots: 1,
-      residualTolerance,
+      ...closeness,
       maximumVectors: basisVectorLimit(1),
     });
   const hidden: Float64Array[] = [];
@@ -143,9 +157,13 @@ function lowerStatesOfOtherSpins(
       ...seeds.map((k) => spreadModelVector(model, k, problem.dimension)),
       mixtureOfSpin(model, spin, problem.dimension),
     ];
-    const rough = seek(start, ROUGH_RESIDUAL);
+    const rough = seek(start, { residualTolerance: ROUGH_RESIDUAL, ceiling: highest + ROUGH_ERROR });
     if (rough.values[0] > highest + ROUGH_ERROR) continue;
-    const { values, vectors } = seek([rough.vectors[0]], CLOSE_RESIDUAL);
+    const { values, vectors } = seek([rough.vectors[0]], {
+      residualTolerance: CLOSE_RESIDUAL,
+      ceiling: highest,
+      guards: false,
+    });
     const isNew = found.vectors.every((vector) => dot(vector, vectors[0]) ** 2 < 0.9);
     if (values[0] < highest && isNew) hidden.push(vectors[0]);
   }
@@ -179,8 +197,8 @@ function mixtureOfSpin(model: ModelSpace, spin: number, dimension: number): Floa
   return mixture;
 }
 
-function largestWeight(vector: Float64Array): number {
-  return vector.reduce((largest, coefficient) => Math.max(largest, coefficient ** 2), 0);
+function isStronglyMixed({ vector }: KnownState): boolean {
+  return vector.every((coefficient) => coefficient ** 2 <= STRONGLY_MIXED);
 }
 
 /**

@@ -138,6 +138,20 @@ describe('lowestEigenpairs', () => {
     expect(unguarded.values[0]).toBeGreaterThan(exact + 0.1);
   });
 
+  it('identity: without guards the same root of one block from fewer products, and none of roots above the ceiling', () => {
+    const values = Array.from({ length: 80 }, (_, k) => Math.sqrt(k) / 5);
+    const matrix = matrixOfSpectrum(values, 0.2, 5);
+    const guarded = solve(matrix, 80, 3, { residualTolerance: 1e-6 });
+    const unguarded = solve(matrix, 80, 3, { residualTolerance: 1e-6, guards: false });
+    expect(unguarded.termination.kind).toBe('converged');
+    expect(Math.abs(unguarded.values[0] - guarded.values[0])).toBeLessThan(1e-11);
+    expect(unguarded.products).toBeLessThan(guarded.products);
+    const above = solve(matrix, 80, 3, { residualTolerance: 1e-6, guards: false, ceiling: -0.5 });
+    expect(above.termination.kind).toBe('converged');
+    expect(above.values[0]).toBeGreaterThan(-0.5);
+    expect(above.products).toBeLessThan(unguarded.products);
+  });
+
   it('identity: converges through many collapses of a small basis', () => {
     const matrix = randomSymmetric(300, seededRandom(1)).map(
       (value, k) => 0.2 * value + (k % 301 === 0 ? Math.floor(k / 300) / 20 : 0),
