@@ -104,6 +104,14 @@ export type {
   StudyScan,
 } from './calculation/study';
 export { studiesInBases, studyInBasis } from './calculation/study-in-basis';
+export {
+  countWork,
+  NOMINAL_SPEEDS,
+  type PointWork,
+  type Speeds,
+  type Work,
+  type WorkKind,
+} from './calculation/work';
 export type { CorrelationParts } from './configuration-interaction/correlation-parts';
 export type { OrbitalPart, PairPart, ProjectedEnergy } from './configuration-interaction/projected-energy';
 export type { RankPart } from './configuration-interaction/rank-parts';

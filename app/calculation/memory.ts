@@ -1,11 +1,13 @@
 import { availableParallelism, freemem } from 'node:os';
 import process from 'node:process';
-import { explainStudy, type PreparedStudy } from '#engine';
+import { explainStudy, type PreparedStudy, type StudyExplanation } from '#engine';
 
 /** Of what is free now: the rest is for whatever else the machine is doing. */
 const SHARE_OF_FREE = 0.8;
 /** Of a worker by itself: Node's engine, the program's code, the basis-set library, results on their way. */
-export const WORKER_BYTES = 100e6;
+export const WORKER_BYTES = 70e6;
+/** Of the program beside its workers. */
+const PROGRAM_BYTES = 100e6;
 
 /** Bytes that all points under way may take together on this machine, now. */
 export function memoryBudget(): number {
@@ -16,6 +18,11 @@ export function memoryBudget(): number {
 function availableMemory(): number {
   const { availableMemory: available } = process as { availableMemory?: () => number };
   return available?.() ?? freemem();
+}
+
+/** What the whole program takes with so many workers. */
+export function programBytes({ levels }: StudyExplanation, workers: number): number {
+  return PROGRAM_BYTES + workers * (WORKER_BYTES + Math.max(...levels.map(({ bytes }) => bytes)));
 }
 
 export interface Workers {

@@ -59,9 +59,14 @@ function basisUsed(prepared: PreparedStudy) {
 
 let code: string | undefined;
 
-function computedBy() {
+/** Of the built code that computes. */
+export function codeKey(): string {
   code ??= sha256(readFileSync(WORKER_FILE));
-  return { ...PROGRAM, code, node: process.version };
+  return code;
+}
+
+function computedBy() {
+  return { ...PROGRAM, code: codeKey(), node: process.version };
 }
 
 /** JSON with the keys of every object in alphabetical order. */

@@ -1,6 +1,7 @@
-import { availableParallelism } from 'node:os';
 import { explainStudy, type StudyExplanation } from '#engine';
+import { affordableWorkers, programBytes } from '../calculation/memory';
 import { readStudyFile } from '../calculation/read-study-file';
+import { machineSpeeds } from '../calculation/speeds';
 import { studySentence } from '../study/sentence';
 import type { Invocation } from './arguments';
 import { EXIT, type ExitCode } from './exit-codes';
@@ -17,7 +18,10 @@ export async function checkCommand(
     terminal.say(refusalText(study, file.issues));
     return EXIT.refused;
   }
-  const explanation = explanationText(explainStudy(file.prepared), availableParallelism());
+  const explanation = explanationText(
+    explainStudy(file.prepared, await machineSpeeds()),
+    affordableWorkers(file.prepared).count,
+  );
   await terminal.print(`${studySentence(file.prepared.study)}\n\n${explanation}\n`);
   return EXIT.done;
 }
@@ -46,12 +50,13 @@ export function explanationText(explanation: StudyExplanation, cores: number): s
     ]),
   ];
   const lanes = Math.min(cores, points);
-  const total = (levels.reduce((sum, { seconds }) => sum + seconds, 0) * points) / lanes;
+  const total = (explanation.pointSeconds * points + explanation.afterwardsSeconds) / lanes;
+  const memory = programBytes(explanation, lanes);
   return [
     alignedTable(facts),
     '',
     alignedTable(table),
     '',
-    `All points: roughly ${durationText(total)} on ${counted(lanes, 'core')}. Memory is for one point; each core has its own.`,
+    `The whole study: about ${durationText(total)} and ${bytesText(memory)} of memory on ${counted(lanes, 'core')}, as fast as this machine computes now.`,
   ].join('\n');
 }

@@ -1,6 +1,7 @@
+import process from 'node:process';
 import type { Finding } from '../calculation/messages';
 import type { StageTime } from '../calculation/stage-clock';
-import { alignedTable } from './wording';
+import { alignedTable, bytesText } from './wording';
 
 /** Where the time of a run went: computing by stage and level, and what the program itself did by the clock. */
 export interface Profile {
@@ -39,8 +40,14 @@ const OF: Readonly<Record<Finding['kind'], string>> = {
 };
 const SHARED = 'shared';
 
-/** @param now - clock in milliseconds */
-export function startProfile(now: () => number = () => performance.now()): Profile {
+/**
+ * @param now - clock in milliseconds
+ * @param mostMemory - bytes that the process has held at most
+ */
+export function startProfile(
+  now: () => number = () => performance.now(),
+  mostMemory: () => number = () => 1024 * process.resourceUsage().maxRSS,
+): Profile {
   const seconds = new Map<string, Map<string, number>>();
   const stretches = new Map<Stretch, number>();
   const count = (row: string, column: string, value: number) => {
@@ -78,6 +85,7 @@ export function startProfile(now: () => number = () => performance.now()): Profi
         'Where the time went, in seconds of computing:',
         alignedTable([['', ...columns, 'in all'], ...rowsOf(computing), ...rowsOf(Object.values(OF))]),
         `By the clock: ${[...stretches].map(([name, value]) => `${name} ${secondsText(value)} s`).join(', ')}, the whole program ${secondsText(now() / 1000)} s.`,
+        `Memory at most ${bytesText(mostMemory())}.`,
       ].join('\n');
     },
   };

@@ -10,14 +10,18 @@ export interface StudyExplanation {
   /** repulsion integrals stored, 8-fold packed */
   readonly repulsionIntegrals: number;
   readonly levels: readonly LevelExplanation[];
+  /** estimated for one point with all levels, on one core */
+  readonly pointSeconds: number;
+  /** estimated for what follows the points – neighbours, minima –, on one core */
+  readonly afterwardsSeconds: number;
 }
 
 export interface LevelExplanation {
   readonly level: string;
   /** CI levels only */
   readonly determinants?: number;
-  /** rough, for one point */
+  /** an upper bound, for one point */
   readonly bytes: number;
-  /** rough, for one point on one core */
+  /** estimated, for one point of this level alone on one core */
   readonly seconds: number;
 }

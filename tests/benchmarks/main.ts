@@ -4,6 +4,7 @@ import { GROUPS } from './groups';
 import { measureGrowth, writeGrowth } from './growth';
 import type { Measurement } from './measure';
 import { measurementTable } from './measurement-table';
+import { comparePredictions } from './predictions';
 
 /*
  * `npm run bench` measures how fast Farwell is on this machine, beside yardsticks measured in the same run.
@@ -11,6 +12,7 @@ import { measurementTable } from './measurement-table';
  *   npm run bench                     the table
  *   npm run bench -- --json           only JSON on standard output: [{ name, ours, yardstick, unit, ratio }]
  *   npm run bench -- --only PATTERN   groups or lines whose name holds it, in any case
+ *   npm run bench -- --predictions     what `farwell check` predicts for the samples beside what they take
  *   npm run bench -- --growth         how cost grows: into the README's section, with its figure
  */
 
@@ -19,6 +21,7 @@ const { values: options } = parseArgs({
     json: { type: 'boolean', default: false },
     only: { type: 'string', default: '' },
     growth: { type: 'boolean', default: false },
+    predictions: { type: 'boolean', default: false },
   },
 });
 
@@ -27,6 +30,8 @@ const say = (text: string) => void process.stderr.write(`${text}\n`);
 if (options.growth) {
   const files = await writeGrowth(await measureGrowth(say));
   for (const file of files) console.log(file);
+} else if (options.predictions) {
+  console.log(comparePredictions(options.only));
 } else {
   const measured = await measureAll(options.only);
   console.log(options.json ? JSON.stringify(measured.map(asData), null, 2) : measurementTable(measured));

@@ -129,6 +129,8 @@ const explain = (study: Study, seconds: number) => ({
   functions: 2,
   frozenOrbitals: 0,
   repulsionIntegrals: 6,
+  pointSeconds: seconds,
+  afterwardsSeconds: 0,
   levels: study.levels.map((level) => ({
     level,
     ...(level.includes('CI') && { determinants: 4 }),

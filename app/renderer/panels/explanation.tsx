@@ -16,7 +16,7 @@ export function explanationText(explanation: StudyExplanation, workers: number):
   const determinants = levels.flatMap(({ level, determinants: count }) =>
     count === undefined ? [] : [`${level} ${formatFixed(count, 0)}`],
   );
-  const seconds = (points * levels.reduce((sum, level) => sum + level.seconds, 0)) / workers;
+  const seconds = (points * explanation.pointSeconds + explanation.afterwardsSeconds) / workers;
   const bytes = Math.max(0, ...levels.map((level) => level.bytes));
   return [
     plural(electrons, 'electron'),

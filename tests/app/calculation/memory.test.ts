@@ -17,7 +17,7 @@ describe('affordableWorkers', () => {
   it('takes fewer where they do not, but one in any case, and says why', () => {
     const { count, notice } = affordableWorkers(prepared, 8, 3.5 * bytes);
     expect(count).toBe(3);
-    expect(notice).toMatch(/^Computing 3 instead of 8 points at a time: one may take 0\.0 GB, and 0\.4 GB/);
+    expect(notice).toMatch(/^Computing 3 instead of 8 points at a time: one may take 0\.0 GB, and 0\.2 GB/);
     expect(affordableWorkers(prepared, 8, 1).count).toBe(1);
   });
 

@@ -3,7 +3,10 @@ import { startProfile } from '../../../app/cli/profile';
 
 it('adds times up by stage and by level, and shows only what there was', async () => {
   let time = 0;
-  const profile = startProfile(() => 1000 * time);
+  const profile = startProfile(
+    () => 1000 * time,
+    () => 123e6,
+  );
   profile.add('point', [
     { stage: 'integrals', seconds: 1 },
     { stage: 'CI product', level: 'FCI', seconds: 2 },
@@ -25,6 +28,7 @@ it('adds times up by stage and by level, and shows only what there was', async (
       'all points            1.250   2.500    3.750',
       'all minima                –   4.000    4.000',
       'By the clock: computing 3.000 s, the whole program 4.000 s.',
+      'Memory at most 120 MB.',
     ].join('\n'),
   );
 });

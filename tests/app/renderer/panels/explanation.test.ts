@@ -15,6 +15,8 @@ describe('what a study asks of the machine', () => {
       frozenOrbitals: 1,
       repulsionIntegrals: 4186,
       levels,
+      pointSeconds: 9.5,
+      afterwardsSeconds: 75,
     };
     expect(explanationText(explanation, 2)).toBe(
       '10 electrons · 13 basis functions · 1 frozen orbital · 30 points · determinants FCI 63\u2009504 · about 3 min, 2.4 MB',

@@ -1,0 +1,100 @@
+import { mkdirSync, readFileSync } from 'node:fs';
+import { cpus } from 'node:os';
+import { join } from 'node:path';
+import process from 'node:process';
+import writeFileAtomic from 'write-file-atomic';
+import {
+  computePoint,
+  countWork,
+  NOMINAL_SPEEDS,
+  prepareStudy,
+  type Speeds,
+  type Study,
+  UNATTENDED,
+  type WorkKind,
+} from '#engine';
+import { cacheSettings } from './cache-settings';
+import { sha256 } from './sha256';
+import { type StageTime, startStageClock } from './stage-clock';
+import { codeKey } from './study-key';
+
+/** A molecule of which every stage takes long enough to be measured, and all together about a second. */
+const SAMPLE: Study = {
+  format: 'farwell/study',
+  version: 1,
+  molecule: {
+    unit: 'bohr',
+    atoms: [
+      { element: 'O', at: [0, 0, 0] },
+      { element: 'H', at: [0, 1.43, 1.11] },
+      { element: 'H', at: [0, -1.43, 1.11] },
+    ],
+  },
+  basis: '6-31G',
+  levels: ['RHF', 'CISDT'],
+  frozenCore: true,
+};
+
+const KIND_OF: Readonly<Record<StageTime['stage'], WorkKind>> = {
+  integrals: 'integrals',
+  'self-consistency': 'fields',
+  stability: 'fields',
+  'scale factors': 'fields',
+  transformation: 'transformation',
+  'CI model space': 'modelSpace',
+  'CI product': 'products',
+  symmetry: 'rest',
+  rest: 'rest',
+};
+
+/**
+ * How fast this machine computes: measured once, then kept in the cache's folder until program, Node or processor
+ * change.
+ */
+export async function machineSpeeds(): Promise<Speeds> {
+  const folder = cacheSettings()?.folder;
+  const machine = sha256(JSON.stringify([codeKey(), process.version, cpus()[0]?.model]));
+  const path = folder === undefined ? undefined : join(folder, `speeds-${machine.slice(0, 16)}.json`);
+  const known = path === undefined ? undefined : readSpeeds(path);
+  if (known) return known;
+  const measured = measureSpeeds();
+  if (folder !== undefined && path !== undefined) {
+    try {
+      mkdirSync(folder, { recursive: true });
+      await writeFileAtomic(path, `${JSON.stringify(measured)}\n`);
+    } catch {
+      // measured again next time
+    }
+  }
+  return measured;
+}
+
+/** Undefined unless the file holds a speed of every kind. */
+function readSpeeds(path: string): Speeds | undefined {
+  try {
+    const read = JSON.parse(readFileSync(path, 'utf8')) as Record<string, unknown>;
+    const isWhole = Object.keys(NOMINAL_SPEEDS).every(
+      (kind) => typeof read[kind] === 'number' && read[kind] > 0,
+    );
+    return isWhole ? (read as Speeds) : undefined;
+  } catch {
+    return undefined;
+  }
+}
+
+/** Seconds of every kind of operation, from one point of a sample. */
+export function measureSpeeds(): Speeds {
+  const preparation = prepareStudy(SAMPLE);
+  if (!preparation.ok) throw preparation.errors[0] ?? new Error('The sample was refused.');
+  const { prepared } = preparation;
+  const work = countWork(prepared).together;
+  const clock = startStageClock();
+  computePoint(prepared, null, { control: { ...UNATTENDED, onStage: clock.listener } });
+  const seconds = new Map<WorkKind, number>();
+  for (const { stage, seconds: taken } of clock.take()) {
+    seconds.set(KIND_OF[stage], (seconds.get(KIND_OF[stage]) ?? 0) + taken);
+  }
+  return Object.fromEntries(
+    Object.entries(work).map(([kind, count]) => [kind, (seconds.get(kind as WorkKind) ?? 0) / count]),
+  ) as Speeds;
+}

@@ -1,0 +1,177 @@
+import { placeBasis } from '../basis/place-basis';
+import { countDeterminants, guessLimit, PROBES } from '../configuration-interaction/size';
+import type { Level } from './levels';
+import type { PreparedStudy } from './prepare-study';
+
+/** Kinds of operations, each of which has a speed of its own on a machine. */
+export type WorkKind = 'integrals' | 'fields' | 'transformation' | 'modelSpace' | 'products' | 'rest';
+
+/** How many operations of each kind one point takes. */
+export type Work = Readonly<Record<WorkKind, number>>;
+
+/** Seconds that one operation of each kind takes. */
+export type Speeds = Work;
+
+/**
+ * Of one core of a 2.x GHz server of 2024; only to tell seconds from hours where nothing was measured. What results
+ * depend on (whether an extra point is worth its time) is always judged by these, so that results are the same on
+ * every machine.
+ */
+export const NOMINAL_SPEEDS: Speeds = Object.freeze({
+  integrals: 2e-8,
+  fields: 6e-9,
+  transformation: 3e-9,
+  modelSpace: 1e-7,
+  products: 3e-10,
+  rest: 2e-5,
+});
+
+/*
+ * What a kind of work costs however small it is – calls, copies, bookkeeping –, in its own operations. Together with
+ * the counts below they were fitted to the samples (tests/benchmarks/predictions.ts).
+ */
+const CONTRACTED = 10;
+const BUILD = 20_000;
+const PRODUCT = 2_000_000;
+const LEVEL = 2000;
+const LEVEL_PER_DETERMINANT = 20;
+
+/** Fock matrices built for one field: by iterations, and for the curvature that shows its stability. */
+const FIELD_BUILDS = 45;
+const FIELDS = { RHF: 1, ROHF: 2, UHF: 3 } as const;
+/** Of the eigensolver. */
+const ITERATIONS = 12;
+/** Determinants of the model space that starts the eigensolver. */
+const MODEL_SPACE = 300;
+/** Of a search for scale factors. */
+const SCALE_STEPS = 10;
+
+/** What all levels of a point share, and what each takes beside that. */
+export interface PointWork {
+  readonly shared: Work;
+  /** where a level is computed alone, in the order of the study's levels */
+  readonly alone: readonly Work[];
+  /** all levels together */
+  readonly together: Work;
+}
+
+export function countWork(prepared: PreparedStudy): PointWork {
+  const integrals = integralsAndField(prepared);
+  const needsTransformation = (level: Level) => level.kind === 'singles' || level.kind === 'correlated';
+  const transformation = transformationWork(prepared);
+  const shared = prepared.levels.some(needsTransformation) ? sum([integrals, transformation]) : integrals;
+  const own = prepared.levels.map((level) => levelWork(prepared, level));
+  return {
+    shared,
+    alone: prepared.levels.map((level, i) =>
+      sum(needsTransformation(level) ? [integrals, transformation, own[i]] : [integrals, own[i]]),
+    ),
+    together: sum([shared, ...own]),
+  };
+}
+
+export function secondsOf(work: Work, speeds: Speeds): number {
+  return KINDS.reduce((seconds, kind) => seconds + work[kind] * speeds[kind], 0);
+}
+
+const KINDS = Object.keys(NOMINAL_SPEEDS) as readonly WorkKind[];
+const NONE: Work = { integrals: 0, fields: 0, transformation: 0, modelSpace: 0, products: 0, rest: 0 };
+
+function sum(works: readonly Work[]): Work {
+  return Object.fromEntries(
+    KINDS.map((kind) => [kind, works.reduce((total, work) => total + work[kind], 0)]),
+  ) as Work;
+}
+
+function integralsAndField(prepared: PreparedStudy): Work {
+  const { functionCount: n, levels, spinElectrons, study } = prepared;
+  const pairs = (n * (n + 1)) / 2;
+  const repulsion = (pairs * (pairs + 1)) / 2;
+  // four energies for every derivative, one at every step, three at the start for every factor
+  const factors = Object.values(prepared.scalable?.start ?? {}).flatMap(Object.keys).length;
+  const searches = factors === 0 ? 1 : 3 * factors + SCALE_STEPS * (1 + 4 * factors);
+  const isClosed = spinElectrons[0] === spinElectrons[1];
+  const wants = (name: string) => levels.some((level) => level.name === name);
+  const fields =
+    (isClosed ? FIELDS.RHF : 0) +
+    (!isClosed || wants('ROHF') ? FIELDS.ROHF : 0) +
+    (wants('UHF') || study.orbitals === 'unrestricted' || (wants('MP2') && !isClosed) ? FIELDS.UHF : 0);
+  return {
+    ...NONE,
+    integrals: searches * (repulsion * CONTRACTED + primitiveIntegrals(prepared)),
+    fields: searches * FIELD_BUILDS * fields * (repulsion + BUILD),
+    rest: searches * n,
+  };
+}
+
+/** Quartets of primitive functions: half the square of the number of pairs. */
+function primitiveIntegrals({ basisSet, moleculeAt, coordinates }: PreparedStudy): number {
+  const { shells } = placeBasis(basisSet, moleculeAt(coordinates[0]));
+  let pairs = 0;
+  shells.forEach((a, i) => {
+    for (const b of shells.slice(0, i + 1)) {
+      pairs += a.exponents.length * b.exponents.length * a.functionCount * b.functionCount;
+    }
+  });
+  return pairs ** 2 / 2;
+}
+
+/** Two sweeps over pairs of indices, from functions to orbitals. */
+function transformationWork({
+  functionCount: n,
+  frozenOrbitals,
+  activeOrbitals,
+  study,
+}: PreparedStudy): Work {
+  const active = activeOrbitals ?? n - frozenOrbitals;
+  const sweep = (outer: number, inner: number) =>
+    ((outer * outer) / 2) * (n * n * inner + (n * inner * inner) / 2);
+  return {
+    ...NONE,
+    transformation: (sweep(n, active) + sweep(active, active)) * (study.orbitals === 'unrestricted' ? 3 : 1),
+  };
+}
+
+function levelWork(prepared: PreparedStudy, level: Level): Work {
+  const { functionCount: n, frozenOrbitals, study } = prepared;
+  const active = prepared.activeOrbitals ?? n - frozenOrbitals;
+  const [alpha, beta] = prepared.spinElectrons.map((count) => count - frozenOrbitals) as [number, number];
+  const vectors = guessLimit(study.states) + PROBES + ITERATIONS * (study.states + PROBES);
+  switch (level.kind) {
+    case 'hartreeFock':
+      return { ...NONE, rest: n };
+    case 'perturbation':
+      return { ...NONE, transformation: n ** 4 * Math.max(alpha, 1) };
+    case 'singles': {
+      const singles = alpha * (active - alpha);
+      const model = Math.min(singles, MODEL_SPACE);
+      return {
+        ...NONE,
+        modelSpace: 2 * (model ** 2 + model ** 3 / 100),
+        products: 2 * singles ** 2 * vectors,
+      };
+    }
+    case 'correlated': {
+      const determinants = countDeterminants(active, alpha, beta, level.maximumRank);
+      const model = Math.min(determinants, MODEL_SPACE);
+      const product = determinants * connections(active, alpha, beta, determinants) + PRODUCT;
+      return {
+        ...NONE,
+        modelSpace: model ** 2 + model ** 3 / 100,
+        products: (determinants <= MODEL_SPACE ? 0 : vectors) * product,
+        // vectors are combined and made orthogonal, states described
+        rest: study.states * (determinants + Math.min(LEVEL, LEVEL_PER_DETERMINANT * determinants)),
+      };
+    }
+  }
+}
+
+/** Determinants that the Hamiltonian joins to one. */
+function connections(active: number, alpha: number, beta: number, determinants: number): number {
+  const singlesOf = (electrons: number) => electrons * (active - electrons);
+  const doublesOf = (electrons: number) =>
+    (singlesOf(electrons) * (electrons - 1) * (active - electrons - 1)) / 4;
+  const ofBoth = singlesOf(alpha) * singlesOf(beta);
+  const ofOne = [alpha, beta].reduce((total, count) => total + singlesOf(count) + doublesOf(count), 0);
+  return Math.min(determinants, 1 + ofBoth + ofOne);
+}
