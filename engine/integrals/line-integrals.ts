@@ -54,19 +54,30 @@ export class LineIntegrals {
       const fromB = (a / p) * separation;
       const fromOrigin = A[axis] + fromA - origin[axis];
       const base = axis * this.axisLength;
-      const s = (i: number, j: number, e: number) =>
-        i < 0 || j < 0 || e < 0 ? 0 : values[base + e * momentLength + i * rowLength + j];
-      const lowered = (i: number, j: number, e: number) =>
-        width * (i * s(i - 1, j, e) + j * s(i, j - 1, e) + e * s(i, j, e - 1));
       for (let e = 0; e <= highestMoment; e++) {
         for (let i = 0; i <= firstPower; i++) {
           for (let j = 0; j <= secondPower; j++) {
+            const at = base + e * momentLength + i * rowLength + j;
             let value: number;
-            if (i > 0) value = fromA * s(i - 1, j, e) + lowered(i - 1, j, e);
-            else if (j > 0) value = fromB * s(0, j - 1, e) + lowered(0, j - 1, e);
-            else if (e > 0) value = fromOrigin * s(0, 0, e - 1) + lowered(0, 0, e - 1);
-            else value = Math.sqrt(Math.PI / p) * Math.exp(-((a * b) / p) * separation * separation);
-            values[base + e * momentLength + i * rowLength + j] = value;
+            // raised from the integral one lower in i, else in j, else in e; the rest are its neighbours below
+            let lowered = 0;
+            if (i > 0) {
+              const from = at - rowLength;
+              if (i > 1) lowered += (i - 1) * values[from - rowLength];
+              if (j > 0) lowered += j * values[from - 1];
+              if (e > 0) lowered += e * values[from - momentLength];
+              value = fromA * values[from] + width * lowered;
+            } else if (j > 0) {
+              const from = at - 1;
+              if (j > 1) lowered += (j - 1) * values[from - 1];
+              if (e > 0) lowered += e * values[from - momentLength];
+              value = fromB * values[from] + width * lowered;
+            } else if (e > 0) {
+              const from = at - momentLength;
+              if (e > 1) lowered += (e - 1) * values[from - momentLength];
+              value = fromOrigin * values[from] + width * lowered;
+            } else value = Math.sqrt(Math.PI / p) * Math.exp(-((a * b) / p) * separation * separation);
+            values[at] = value;
           }
         }
       }

@@ -6,6 +6,8 @@ export interface LayoutMember {
   readonly expansion: ProductExpansion;
   /** for each factor of the full expansion: the factor of the layout that takes its terms, −1 for none */
   readonly targetFactor: readonly number[];
+  /** column of the layout for each column of the full expansion, −1 for none */
+  readonly targetColumn: Int32Array;
 }
 
 /**
@@ -62,7 +64,11 @@ function buildLayout(
   const degree = Math.max(...momenta.map(([first, second]) => first + second));
   const members = momenta.map(([first, second]) => {
     const expansion = productExpansion(first, second);
-    return { expansion, targetFactor: expansion.factors.map(() => -1) };
+    return {
+      expansion,
+      targetFactor: expansion.factors.map(() => -1),
+      targetColumn: new Int32Array(expansion.columnCount).fill(-1),
+    };
   });
   const factorDegrees: number[] = [];
   for (let wanted = 0; wanted <= degree; wanted++) {
@@ -85,6 +91,15 @@ function buildLayout(
       columnPowers.push(powers);
     }
   });
+  for (const { expansion, targetFactor, targetColumn } of members) {
+    expansion.factors.forEach((factor, source) => {
+      const target = targetFactor[source];
+      if (target < 0) return;
+      for (let i = 0; i < cartesianCount(factor.degree); i++) {
+        targetColumn[expansion.columnStart[source] + i] = columnStart[target] + i;
+      }
+    });
+  }
   return {
     id,
     degree,
@@ -96,20 +111,4 @@ function buildLayout(
     members,
     isMerged,
   };
-}
-
-/** Column of the layout for a column of a member's full expansion, −1 for none; one entry a full column. */
-export function columnMap(
-  { columnStart }: PairLayout,
-  { expansion, targetFactor }: LayoutMember,
-): Int32Array {
-  const map = new Int32Array(expansion.columnCount).fill(-1);
-  expansion.factors.forEach(({ degree }, factor) => {
-    const target = targetFactor[factor];
-    if (target < 0) return;
-    for (let i = 0; i < cartesianCount(degree); i++) {
-      map[expansion.columnStart[factor] + i] = columnStart[target] + i;
-    }
-  });
-  return map;
 }

@@ -2,9 +2,9 @@ import type { Harmonics, PlacedBasis } from '../basis/contracted-gaussian';
 import type { Vector3 } from '../molecule/molecule';
 import { shellTransformation, transformBlock } from './basis-transformation';
 import { cartesianCount } from './cartesian-components';
-import { columnMap, type PairLayout, pairLayout } from './pair-layout';
+import { type PairLayout, pairLayout } from './pair-layout';
 import { type PrimitiveProduct, primitiveProducts } from './primitive-products';
-import type { ExpansionFactor } from './product-expansion';
+import type { ExpansionFactor, ProductExpansion } from './product-expansion';
 import { groupShells, type PairMember, pairMembers, type ShellBlock } from './shell-block';
 
 /**
@@ -84,7 +84,15 @@ export function buildShellPair(first: ShellBlock, second: ShellBlock, harmonics:
 /** (−b/p)^M (a/p)^N (1/2p)^k */
 function exponentFactor(factor: ExpansionFactor, a: number, b: number): number {
   const p = a + b;
-  return (-b / p) ** factor.firstPower * (a / p) ** factor.secondPower * (0.5 / p) ** factor.widthPower;
+  return (
+    power(-b / p, factor.firstPower) * power(a / p, factor.secondPower) * power(0.5 / p, factor.widthPower)
+  );
+}
+
+function power(base: number, exponent: number): number {
+  let product = 1;
+  for (let n = 0; n < exponent; n++) product *= base;
+  return product;
 }
 
 function primitiveArrays(
@@ -139,34 +147,27 @@ function expansionMatrix(
   harmonics: Harmonics,
 ): Float64Array {
   const { columnCount, isMerged } = layout;
-  const { expansion } = layout.members[member];
-  const map = columnMap(layout, layout.members[member]);
-  const weightOfColumn = new Float64Array(expansion.columnCount).fill(1);
-  if (isMerged) {
-    const { firstExponent, secondExponent, coefficients } = products[0];
-    expansion.factors.forEach((factor, f) => {
-      const weight = coefficients[member] * exponentFactor(factor, firstExponent, secondExponent);
-      const start = expansion.columnStart[f];
-      weightOfColumn.fill(weight, start, start + cartesianCount(factor.degree));
-    });
-  }
-  const highest = first.angularMomentum + second.angularMomentum;
-  const powers = separation.map((value) => Array.from({ length: highest + 1 }, (_, n) => value ** n));
+  const { expansion, targetColumn } = layout.members[member];
+  const weightOfColumn = isMerged ? mergedWeights(expansion, products[0], member) : undefined;
   const blockSize = cartesianCount(first.angularMomentum) * cartesianCount(second.angularMomentum);
-  const blocks = new Map<number, Float64Array>();
-  for (const { product, column, coefficient, powers: power } of expansion.terms) {
-    const target = map[column];
+  const cartesian = new Float64Array(columnCount * blockSize);
+  const isUsed = new Uint8Array(columnCount);
+  for (const { product, column, coefficient, powers } of expansion.terms) {
+    const target = targetColumn[column];
     if (target < 0) continue;
-    const block = blocks.get(target) ?? new Float64Array(blockSize);
-    blocks.set(target, block);
-    block[product] +=
-      coefficient * weightOfColumn[column] * powers[0][power[0]] * powers[1][power[1]] * powers[2][power[2]];
+    let value = weightOfColumn ? coefficient * weightOfColumn[column] : coefficient;
+    for (let axis = 0; axis < 3; axis++) value *= power(separation[axis], powers[axis]);
+    if (value === 0) continue;
+    cartesian[target * blockSize + product] += value;
+    isUsed[target] = 1;
   }
   const firstTransformation = shellTransformation(first.angularMomentum, harmonics);
   const secondTransformation = shellTransformation(second.angularMomentum, harmonics);
   const productCount = first.functionCount * second.functionCount;
   const dense = new Float64Array(productCount * columnCount);
-  for (const [column, block] of blocks) {
+  for (let column = 0; column < columnCount; column++) {
+    if (isUsed[column] === 0) continue;
+    const block = cartesian.subarray(column * blockSize, (column + 1) * blockSize);
     const transformed = transformBlock(firstTransformation, secondTransformation, block);
     for (let product = 0; product < productCount; product++) {
       dense[product * columnCount + column] = transformed[product];
@@ -175,26 +176,42 @@ function expansionMatrix(
   return dense;
 }
 
+/** What the single primitive product of a merged pair contributes to each column of a member's expansion. */
+function mergedWeights(
+  expansion: ProductExpansion,
+  { firstExponent, secondExponent, coefficients }: PrimitiveProduct,
+  member: number,
+): Float64Array {
+  const weights = new Float64Array(expansion.columnCount);
+  expansion.factors.forEach((factor, f) => {
+    const weight = coefficients[member] * exponentFactor(factor, firstExponent, secondExponent);
+    const start = expansion.columnStart[f];
+    weights.fill(weight, start, start + cartesianCount(factor.degree));
+  });
+  return weights;
+}
+
 /** @param matrices - one a member, each products × columnCount */
 function compressRows(matrices: readonly Float64Array[], columnCount: number) {
-  const rowStart = [0];
-  const columns: number[] = [];
-  const values: number[] = [];
+  let rows = 0;
+  let entries = 0;
   for (const dense of matrices) {
-    for (let start = 0; start < dense.length; start += columnCount) {
-      for (let column = 0; column < columnCount; column++) {
-        const value = dense[start + column];
-        if (value === 0) continue;
-        columns.push(column);
-        values.push(value);
-      }
-      rowStart.push(columns.length);
+    rows += dense.length / columnCount;
+    for (let place = 0; place < dense.length; place++) if (dense[place] !== 0) entries++;
+  }
+  const rowStart = new Int32Array(rows + 1);
+  const columns = new Int32Array(entries);
+  const values = new Float64Array(entries);
+  let row = 0;
+  let entry = 0;
+  for (const dense of matrices) {
+    for (let place = 0; place < dense.length; place++) {
+      if (place % columnCount === 0) rowStart[row++] = entry;
+      if (dense[place] === 0) continue;
+      columns[entry] = place % columnCount;
+      values[entry++] = dense[place];
     }
   }
-  return {
-    productCount: rowStart.length - 1,
-    rowStart: Int32Array.from(rowStart),
-    columns: Int32Array.from(columns),
-    values: Float64Array.from(values),
-  };
+  rowStart[row] = entry;
+  return { productCount: rows, rowStart, columns, values };
 }
