@@ -1,4 +1,5 @@
 import { curvePoints } from './curve-points';
+import { electronRepulsion } from './electron-repulsion';
 import type { Measurement } from './measure';
 import { wholeRuns } from './whole-runs';
 
@@ -8,6 +9,7 @@ export interface BenchmarkGroup {
 }
 
 export const GROUPS: readonly BenchmarkGroup[] = [
+  { name: 'electron repulsion', measure: electronRepulsion },
   { name: 'curve points', measure: curvePoints },
   { name: 'whole runs', measure: wholeRuns },
 ];
