@@ -22,7 +22,7 @@ export {
 export { describeBasis, describeBasisUsed } from './calculation/describe-basis';
 export { measuredFor } from './calculation/diatomic';
 export { explainStudy } from './calculation/explain-study';
-export type { LevelExplanation, StudyExplanation } from './calculation/explanation';
+export type { BasisExplanation, LevelExplanation, StudyExplanation } from './calculation/explanation';
 export { evaluateOnGrid, type FieldOnGrid } from './calculation/field-on-grid';
 export { findLevelMinimum } from './calculation/find-level-minimum';
 export { type FieldKind, type FollowedNeighbours, followNeighbours } from './calculation/follow-neighbours';

@@ -1,6 +1,7 @@
 import { availableParallelism, freemem } from 'node:os';
 import process from 'node:process';
 import { explainStudy, type PreparedStudy, type StudyExplanation } from '#engine';
+import { wholeStudy } from '../study/whole-study';
 
 /** Of what is free now: the rest is for whatever else the machine is doing. */
 const SHARE_OF_FREE = 0.8;
@@ -21,8 +22,8 @@ function availableMemory(): number {
 }
 
 /** What the whole program takes with so many workers. */
-export function programBytes({ levels }: StudyExplanation, workers: number): number {
-  return PROGRAM_BYTES + workers * (WORKER_BYTES + Math.max(...levels.map(({ bytes }) => bytes)));
+export function programBytes(explanation: StudyExplanation, workers: number): number {
+  return PROGRAM_BYTES + workers * (WORKER_BYTES + wholeStudy(explanation).bytes);
 }
 
 export interface Workers {
@@ -42,10 +43,7 @@ export function affordableWorkers(
   budget: number = memoryBudget(),
 ): Workers {
   const points = Math.min(wanted, prepared.coordinates.length);
-  const bases = [prepared, ...prepared.furtherBases];
-  const bytes = Math.max(
-    ...bases.flatMap((inBasis) => explainStudy(inBasis).levels.map((level) => level.bytes)),
-  );
+  const { bytes } = wholeStudy(explainStudy(prepared));
   const count = Math.max(1, Math.min(points, Math.floor(budget / (bytes + WORKER_BYTES))));
   if (count === points) return { count: wanted };
   return {

@@ -1,8 +1,9 @@
-import { explainStudy, type StudyExplanation } from '#engine';
+import { explainStudy, type LevelExplanation, type StudyExplanation } from '#engine';
 import { affordableWorkers, programBytes } from '../calculation/memory';
 import { readStudyFile } from '../calculation/read-study-file';
 import { machineSpeeds } from '../calculation/speeds';
 import { studySentence } from '../study/sentence';
+import { wholeStudy } from '../study/whole-study';
 import type { Invocation } from './arguments';
 import { EXIT, type ExitCode } from './exit-codes';
 import type { Terminal } from './terminal';
@@ -30,6 +31,7 @@ export async function checkCommand(
 export function explanationText(explanation: StudyExplanation, cores: number): string {
   const { electrons, functions, frozenOrbitals, activeOrbitals, repulsionIntegrals, points, levels } =
     explanation;
+  const { furtherBases = [] } = explanation;
   const facts = [
     ['electrons', String(electrons)],
     ['basis functions', grouped(functions)],
@@ -40,7 +42,25 @@ export function explanationText(explanation: StudyExplanation, cores: number): s
     ['repulsion integrals', grouped(repulsionIntegrals)],
     ['points', grouped(points)],
   ];
-  const table = [
+  const lanes = Math.min(cores, points);
+  const total = wholeStudy(explanation).seconds / lanes;
+  const memory = programBytes(explanation, lanes);
+  return [
+    alignedTable(facts),
+    '',
+    levelsTable(levels),
+    '',
+    ...furtherBases.flatMap((basis) => [
+      `In ${basis.name}, ${counted(basis.functions, 'basis function')}:`,
+      levelsTable(basis.levels),
+      '',
+    ]),
+    `The whole study: about ${durationText(total)} and ${bytesText(memory)} of memory on ${counted(lanes, 'core')}, as fast as this machine computes now.`,
+  ].join('\n');
+}
+
+function levelsTable(levels: readonly LevelExplanation[]): string {
+  return alignedTable([
     ['level', 'determinants', 'memory', 'time a point'],
     ...levels.map(({ level, determinants, bytes, seconds }) => [
       level,
@@ -48,15 +68,5 @@ export function explanationText(explanation: StudyExplanation, cores: number): s
       bytesText(bytes),
       durationText(seconds),
     ]),
-  ];
-  const lanes = Math.min(cores, points);
-  const total = (explanation.pointSeconds * points + explanation.afterwardsSeconds) / lanes;
-  const memory = programBytes(explanation, lanes);
-  return [
-    alignedTable(facts),
-    '',
-    alignedTable(table),
-    '',
-    `The whole study: about ${durationText(total)} and ${bytesText(memory)} of memory on ${counted(lanes, 'core')}, as fast as this machine computes now.`,
-  ].join('\n');
+  ]);
 }

@@ -1,9 +1,10 @@
 import type { LevelFindings, LevelResult, StudyResults } from '#engine';
 import { coordinateText } from '../calculation/coordinate-text';
 import { comparedConstants } from '../study/compared-constants';
-import { fragmentsText } from '../study/fragments-text';
+import { basesLines, unconvergedInBases } from './bases-summary';
 import { curveTexts } from './curve-summary';
 import { EXIT, type ExitCode } from './exit-codes';
+import { minimumText } from './minimum-text';
 import { counted } from './wording';
 
 /** Constants that the summary shows. */
@@ -16,9 +17,9 @@ export function summarise(results: StudyResults): {
   readonly lines: readonly string[];
   readonly exit: ExitCode;
 } {
-  const unconverged = [...scaleLines(results), ...unconvergedLines(results)];
+  const unconverged = [...scaleLines(results), ...unconvergedLines(results), ...unconvergedInBases(results)];
   return {
-    lines: [...findingsLines(results), ...cautionLines(results), ...unconverged],
+    lines: [...findingsLines(results), ...basesLines(results), ...cautionLines(results), ...unconverged],
     exit: unconverged.length === 0 ? EXIT.done : EXIT.unconverged,
   };
 }
@@ -82,29 +83,6 @@ function findingsLines(results: StudyResults): readonly string[] {
   });
 }
 
-function minimumText(
-  { minimum, wellDepth, dissociation }: LevelFindings,
-  study: StudyResults['study'],
-): string | undefined {
-  switch (minimum.kind) {
-    case 'found': {
-      const distance = coordinateText(study, Number(minimum.equilibriumDistance.toFixed(5)));
-      const below =
-        wellDepth?.against === 'fragments' && dissociation?.kind === 'found'
-          ? fragmentsText(study.molecule, dissociation)
-          : `the curve at ${wellDepth && coordinateText(study, wellDepth.farEnd)}`;
-      const depth = wellDepth ? `, ${wellDepth.value.toFixed(6)} hartree below ${below}` : '';
-      return `minimum of ${minimum.energy.toFixed(6)} hartree at ${distance}${depth}`;
-    }
-    case 'atEdge':
-      return `lowest at the end of the range, ${coordinateText(study, minimum.coordinate)}: no minimum inside`;
-    case 'several':
-      return `several minima, near ${minimum.near.map((value) => coordinateText(study, value)).join(' and ')}`;
-    case 'none':
-      return undefined;
-  }
-}
-
 /** Of diatomic molecules, in a line; the results file and the report have all constants. */
 function vibrationText(level: string, results: StudyResults): string | undefined {
   const vibration = results.findings[level]?.vibration;
@@ -128,7 +106,10 @@ function onsetText({ instabilityOnset }: LevelFindings, study: StudyResults['stu
 function cautionLines({ cautions, points }: StudyResults): readonly string[] {
   const withCautions = points.filter((point) => point.cautions.length > 0).length;
   return [
-    ...cautions.map(({ message }) => `Caution: ${message}`),
+    ...cautions.flatMap(({ message, meaning, remedy }) => [
+      `Caution: ${meaning === undefined ? message : `${message} ${meaning}`}`,
+      ...(remedy === undefined ? [] : [`  ${remedy}`]),
+    ]),
     ...(withCautions === 0
       ? []
       : [`Cautions at ${withCautions} of ${counted(points.length, 'point')}: see the results file.`]),

@@ -67,6 +67,12 @@ export function explainStudy(prepared: PreparedStudy, speeds: Speeds = NOMINAL_S
     levels,
     pointSeconds,
     afterwardsSeconds: afterwards(prepared, secondsOf(work.shared, speeds), levels),
+    ...(prepared.furtherBases.length > 0 && {
+      furtherBases: prepared.furtherBases.map((inBasis) => ({
+        name: inBasis.basisSet.name,
+        ...explainStudy(inBasis, speeds),
+      })),
+    }),
   };
 }
 

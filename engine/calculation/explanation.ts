@@ -14,7 +14,11 @@ export interface StudyExplanation {
   readonly pointSeconds: number;
   /** estimated for what follows the points – neighbours, minima –, on one core */
   readonly afterwardsSeconds: number;
+  /** the same study in its further bases, whose times come on top; absent where it asks for none */
+  readonly furtherBases?: readonly BasisExplanation[];
 }
+
+export type BasisExplanation = StudyExplanation & { readonly name: string };
 
 export interface LevelExplanation {
   readonly level: string;

@@ -10,6 +10,7 @@ import type { LevelLimit, LimitCurve } from './basis-comparison';
 import { type ChosenMember, chooseFamily, formulasOf } from './basis-set-limit';
 import { type Diatomic, diatomicOf } from './diatomic';
 import {
+  type ExtrapolationPlan,
   type ExtrapolationVariant,
   extrapolate,
   extrapolateBy,
@@ -73,6 +74,7 @@ export function basisSetLimitOfCurves(
     ...formulasOf(plan),
     energies: scan.map(({ place }) => extrapolate(plan, place) ?? null),
     curve: readLimit(prepared, variants.map(curveBy), {
+      plan,
       largest: members[members.length - 1].findings,
       apart: variants.map((variant) => atomsApart && extrapolateBy(variant, atomsApart)),
     }),
@@ -129,6 +131,7 @@ function fragmentEnergies(members: readonly MemberCurve[]): readonly MemberEnerg
 }
 
 interface Comparison {
+  readonly plan: ExtrapolationPlan;
   /** findings in the largest basis */
   readonly largest: LevelFindings;
   /** of the separate fragments, by each formula */
@@ -139,7 +142,7 @@ interface Comparison {
 function readLimit(
   prepared: PreparedStudy,
   curves: readonly LevelCurve[],
-  { largest, apart }: Comparison,
+  { plan, largest, apart }: Comparison,
 ): LimitCurve {
   const { minimum, well } = readWell(prepared, curves[0], undefined, Number.POSITIVE_INFINITY);
   if (!well?.constants || minimum.kind !== 'found') {
@@ -149,11 +152,12 @@ function readLimit(
         minimum.kind === 'none' ? minimum.reason : 'The extrapolated curve has no minimum within the range.',
     };
   }
+  const widen = widening(plan);
   const shapes = curves.map((curve) => wellBy(curve, well, minimumSpacing(prepared.study)));
   const { equilibriumDistance, uncertainty, energy } = minimum;
   const toBohr = curves[0].bohrPerUnit;
   const ofLargest = largest.minimum.kind === 'found' ? largest.minimum : undefined;
-  const distance = widened(
+  const distance = widen(
     { value: equilibriumDistance, uncertainty },
     shapes.map((shape) => shape && shape.equilibrium / toBohr),
     ofLargest?.equilibriumDistance,
@@ -167,7 +171,7 @@ function readLimit(
   return {
     kind: 'found',
     equilibriumDistance: distance,
-    energy: widened(
+    energy: widen(
       { value: energy, uncertainty: 0 },
       shapes.map((shape) => shape?.energy),
       ofLargest?.energy,
@@ -177,7 +181,7 @@ function readLimit(
         value: constants.equilibriumDistanceAngstrom.value,
         uncertainty: distance.uncertainty * toBohr * BOHR_IN_ANGSTROM,
       },
-      forceConstantNewtonPerMetre: widened(
+      forceConstantNewtonPerMetre: widen(
         constants.forceConstantNewtonPerMetre,
         shapes.map(
           (shape) => shape && spectroscopicConstants(shape, 1).constants.forceConstantNewtonPerMetre,
@@ -185,11 +189,11 @@ function readLimit(
         largest.constants?.forceConstantNewtonPerMetre.value,
       ),
       ...(constants.diatomic &&
-        molecule && { diatomic: widenedConstants(constants.diatomic, shapes, molecule, largest) }),
+        molecule && { diatomic: widenedConstants(widen, constants.diatomic, shapes, molecule, largest) }),
       ...(constants.withoutDiatomic && { withoutDiatomic: constants.withoutDiatomic }),
     },
     ...(depth !== undefined && {
-      wellDepth: widened({ value: depth, uncertainty: 0 }, depths, largest.wellDepth?.value),
+      wellDepth: widen({ value: depth, uncertainty: 0 }, depths, largest.wellDepth?.value),
     }),
   };
 }
@@ -207,16 +211,21 @@ function wellBy(curve: LevelCurve, { found, expanded }: Well, spacing: number): 
 }
 
 /** An estimate whose uncertainty also covers what the formulas differ by. */
-function widened(
-  { value, uncertainty }: Estimate,
+type Widen = (
+  own: Estimate,
   byFormula: readonly (number | undefined)[],
   inLargest: number | undefined,
-): Estimate {
-  const spread = spreadOf(byFormula, inLargest ?? byFormula[0])?.uncertainty ?? 0;
-  return { value, uncertainty: uncertainty + spread };
+) => Estimate;
+
+function widening(plan: ExtrapolationPlan): Widen {
+  return ({ value, uncertainty }, byFormula, inLargest) => {
+    const spread = spreadOf(plan, byFormula, inLargest ?? byFormula[0])?.uncertainty ?? 0;
+    return { value, uncertainty: uncertainty + spread };
+  };
 }
 
 function widenedConstants(
+  widen: Widen,
   constants: DiatomicConstants,
   shapes: readonly (WellExpansion | undefined)[],
   molecule: Diatomic,
@@ -232,7 +241,7 @@ function widenedConstants(
   ] as const;
   const estimates = keys.map((key) => [
     key,
-    widened(
+    widen(
       constants[key],
       byFormula.map((one) => one?.[key].value),
       largest?.diatomic?.[key].value,

@@ -1,4 +1,5 @@
 import type { StudyExplanation } from '#engine';
+import { wholeStudy } from '../../study/whole-study';
 import { formatBytes, formatDuration, formatFixed } from '../numbers';
 import { useWindowState } from '../state/window-context';
 import type { Check } from '../state/window-state';
@@ -13,14 +14,16 @@ export function Explanation({ check }: { readonly check: Check }) {
 
 export function explanationText(explanation: StudyExplanation, workers: number): string {
   const { electrons, functions, frozenOrbitals, activeOrbitals, points, levels } = explanation;
+  const { furtherBases = [] } = explanation;
   const determinants = levels.flatMap(({ level, determinants: count }) =>
     count === undefined ? [] : [`${level} ${formatFixed(count, 0)}`],
   );
-  const seconds = (points * explanation.pointSeconds + explanation.afterwardsSeconds) / workers;
-  const bytes = Math.max(0, ...levels.map((level) => level.bytes));
+  const { seconds: onOneCore, bytes } = wholeStudy(explanation);
+  const seconds = onOneCore / workers;
   return [
     plural(electrons, 'electron'),
     plural(functions, 'basis function'),
+    ...furtherBases.map((basis) => `${plural(basis.functions, 'function')} in ${basis.name}`),
     ...(frozenOrbitals > 0 ? [plural(frozenOrbitals, 'frozen orbital')] : []),
     ...(activeOrbitals !== undefined ? [plural(activeOrbitals, 'active orbital')] : []),
     plural(points, 'point'),

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { StudyResults } from '#engine';
+import { type StudyResults, studyInBasis } from '#engine';
 import { summarise } from '../../../app/cli/run-summary';
 import { hartreeFock, sampleResults } from '../../support/sample-results';
 
@@ -91,5 +91,69 @@ describe('summarise', () => {
     expect(linesAbout(/^Caution/, { ...results, cautions: [{ code: 'a', message: 'Too coarse.' }] })).toEqual(
       ['Caution: Too coarse.', 'Cautions at 20 of 37 points: see the results file.'],
     );
+  });
+
+  it('says of a caution what it means, and below that what to do', () => {
+    const cautions = [
+      { code: 'a', message: 'It ends early.', meaning: 'It is too short.', remedy: 'Go on.' },
+    ];
+    const { lines } = summarise({ ...results, cautions });
+    const place = lines.indexOf('Caution: It ends early. It is too short.');
+    expect(lines[place + 1]).toBe('  Go on.');
+  });
+
+  it('gives the depth with counterpoise beside the other, and says where a minimum is no smooth one', () => {
+    const { FCI } = results.findings;
+    if (FCI?.minimum.kind !== 'found') throw new Error('no minimum');
+    const superposition = { energyInWholeBasis: -1, error: 0.001 };
+    const counterpoise = {
+      kind: 'found',
+      fragments: [superposition, superposition],
+      error: 0.002,
+      wellDepth: 0.123,
+    } as const;
+    const minimum = { ...FCI.minimum, onKink: true, uncertainty: 0.0123 } as const;
+    const [line] = linesAbout(/minimum/, {
+      ...results,
+      findings: { FCI: { ...FCI, minimum, counterpoise } },
+    });
+    expect(line).toMatch(/ Å \(no smooth curve there: known to 0.012 Å\), .*, 0.123000 with counterpoise$/);
+  });
+
+  it('gives minima in further bases and in their limit, and fails where one of them did not converge', () => {
+    const inBasis = {
+      ...studyInBasis(results),
+      basis: { ...results.basis, name: 'cc-pVTZ' },
+    };
+    const estimate = { value: -1.17541, uncertainty: 0.00101 };
+    const basisSetLimit = {
+      kind: 'found',
+      family: 'cc-pVXZ',
+      members: [],
+      levels: {
+        FCI: {
+          hartreeFock: { formula: 'exponential', cardinals: [2, 3] },
+          energies: [],
+          curve: {
+            kind: 'found',
+            equilibriumDistance: { value: 0.74123, uncertainty: 0.001 },
+            energy: estimate,
+            constants: { equilibriumDistanceAngstrom: estimate, forceConstantNewtonPerMetre: estimate },
+            wellDepth: { value: 0.17444, uncertainty: 0.0004 },
+          },
+        },
+      },
+    } as const;
+    const more = { ...results, furtherBases: [inBasis], basisSetLimit };
+    expect(linesAbout(/in cc-pVTZ/, more).length).toBeGreaterThan(0);
+    expect(linesAbout(/limit of/, more)).toEqual([
+      'FCI in the limit of cc-pVXZ: minimum of -1.1754 ± 0.0010 hartree at 0.7412 Å, 0.17444 ± 0.00040 hartree below separate fragments',
+    ]);
+    expect(summarise(more).exit).toBe(0);
+    const missing = { ...inBasis, levels: { FCI: { energies: [null, -1, null] } } };
+    expect(linesAbout(/did not converge/, { ...more, furtherBases: [missing] })).toEqual([
+      'FCI did not converge in cc-pVTZ at 2 points.',
+    ]);
+    expect(summarise({ ...more, furtherBases: [missing] }).exit).toBe(1);
   });
 });

@@ -1,0 +1,20 @@
+import type { StudyExplanation } from '#engine';
+
+/** What a study takes in all its bases together. */
+export interface WholeStudy {
+  /** on one core */
+  readonly seconds: number;
+  /** of the largest level of any basis, for one point */
+  readonly bytes: number;
+}
+
+export function wholeStudy(explanation: StudyExplanation): WholeStudy {
+  const bases = [explanation, ...(explanation.furtherBases ?? [])];
+  return {
+    seconds: bases.reduce(
+      (sum, { points, pointSeconds, afterwardsSeconds }) => sum + points * pointSeconds + afterwardsSeconds,
+      0,
+    ),
+    bytes: Math.max(0, ...bases.flatMap(({ levels }) => levels.map(({ bytes }) => bytes))),
+  };
+}
