@@ -1,4 +1,4 @@
-import type { KernelMemory } from '../kernels/kernel-memory';
+import type { Block, KernelMemory } from '../kernels/kernel-memory';
 import { type ProductInto, rowsAt } from '../kernels/matrix-product';
 import { secularEquationKernels } from '../kernels/secular-equation';
 import { diagonaliseTridiagonal, EigenvaluesNotConverged } from './implicit-ql';
@@ -29,7 +29,7 @@ export class DividedTridiagonal {
   readonly #memory: KernelMemory;
   readonly #productInto: ProductInto;
   /** n×n: an eigenvector a row, within the rows and columns of its part */
-  readonly #vectors: { readonly address: number; readonly view: Float64Array };
+  readonly #vectors: Block<Float64Array>;
 
   /**
    * @param diagonal - becomes the eigenvalues, in the order of the vectors
@@ -50,11 +50,14 @@ export class DividedTridiagonal {
     this.#vectors = memory.float64(this.#n ** 2);
   }
 
-  /** n×n, an eigenvector a row: the address of the kernel memory where they are. @throws EigenvaluesNotConverged */
-  solve(): number {
+  /**
+   * @returns n×n, an eigenvector a row
+   * @throws EigenvaluesNotConverged
+   */
+  solve(): Block<Float64Array> {
     this.#vectors.view.fill(0);
     this.#solvePart(0, this.#n);
-    return this.#vectors.address;
+    return this.#vectors;
   }
 
   #solvePart(low: number, high: number): void {

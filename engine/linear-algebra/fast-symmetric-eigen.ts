@@ -38,8 +38,10 @@ export function fastSymmetricEigen(matrix: Float64Array, n: number, scale: numbe
     });
     const values = diagonal.view.slice();
     const vectors = new DividedTridiagonal(values, offDiagonal.view.slice(), memory, productInto).solve();
-    memory.scope(() => applyReflections(memory, productInto, reduced.view, halfSquares.view, vectors, n));
-    return inRisingOrder(values, new Float64Array(memory.wasm.buffer, vectors, n * n), n, scale);
+    memory.scope(() =>
+      applyReflections(memory, productInto, reduced.view, halfSquares.view, vectors.address, n),
+    );
+    return inRisingOrder(values, vectors.view, n, scale);
   });
 }
 

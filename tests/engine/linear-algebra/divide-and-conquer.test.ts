@@ -9,8 +9,7 @@ function solve(diagonal: number[], offDiagonal: number[]) {
   const memory = new KernelMemory();
   const values = Float64Array.from(diagonal);
   const couplings = Float64Array.from([0, ...offDiagonal]);
-  const address = new DividedTridiagonal(values, couplings, memory, productIn(memory)).solve();
-  const vectors = new Float64Array(memory.wasm.buffer, address, n * n);
+  const { view: vectors } = new DividedTridiagonal(values, couplings, memory, productIn(memory)).solve();
   let residual = 0;
   let overlap = 0;
   for (let k = 0; k < n; k++) {
