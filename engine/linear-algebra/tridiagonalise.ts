@@ -12,7 +12,7 @@ export interface Tridiagonal {
  * A reflection changes all rows above its own by A ← A − v·wᵀ − w·vᵀ. That change waits until the next reflection
  * must multiply the same rows with its own vector, so that every step goes over the matrix once.
  *
- * @param a - n×n, row-major, lower triangle read; row i becomes the vector u of the reflection that it defines
+ * @param a - n×n, row-major, its largest element near 1, lower triangle read; row i becomes the vector u of the reflection that it defines
  */
 export function tridiagonalise(a: Float64Array, n: number): Tridiagonal {
   const diagonal = new Float64Array(n);
@@ -51,17 +51,28 @@ export function tridiagonalise(a: Float64Array, n: number): Tridiagonal {
 }
 
 /**
+ * A row of less than this squared length, of a matrix whose largest element is near 1, changes no eigenvalue by a unit
+ * in its last place. Matrices of low rank leave such rows, each by rounding smaller than the one before, until their
+ * squares vanish.
+ */
+const NOTHING = Number.EPSILON ** 4;
+
+/**
  * Makes of a row the vector u whose reflection leaves only its last element, which is written out.
  *
- * @returns |u|²/2, or 0 where the row has that form already
+ * @returns |u|²/2, or 0 where the row has that form already or is as good as zero
  */
 function reflect(u: Float64Array, offDiagonal: Float64Array, i: number): number {
   const last = i - 1;
   let rest = 0;
   for (let k = 0; k < last; k++) rest += u[k] * u[k];
+  const square = rest + u[last] * u[last];
+  if (square < NOTHING) {
+    offDiagonal[i] = 0;
+    return 0;
+  }
   offDiagonal[i] = u[last];
   if (rest === 0) return 0;
-  const square = rest + u[last] * u[last];
   const length = Math.sqrt(square);
   const target = u[last] >= 0 ? -length : length;
   const half = square - u[last] * target;

@@ -5,6 +5,9 @@
  */
 import { at, put } from './shared/numbers';
 
+/** The squared length of a row that is as good as zero. */
+const NOTHING: f64 = f64.EPSILON * f64.EPSILON * f64.EPSILON * f64.EPSILON;
+
 /** @param work - 3n numbers */
 export function tridiagonalise(
   work: usize,
@@ -57,9 +60,13 @@ function reflect(u: usize, offDiagonal: usize, i: i32): f64 {
   let rest: f64 = 0;
   for (let k = 0; k < last; k++) rest += at(u, k) * at(u, k);
   const element = at(u, last);
+  const square = rest + element * element;
+  if (square < NOTHING) {
+    put(offDiagonal, i, 0);
+    return 0;
+  }
   put(offDiagonal, i, element);
   if (rest === 0) return 0;
-  const square = rest + element * element;
   const length = Math.sqrt(square);
   const target = element >= 0 ? -length : length;
   put(offDiagonal, i, target);

@@ -139,6 +139,30 @@ describe.each(['fast', 'plain'] as const)('symmetricEigen, %s form', (form) => {
     },
   );
 
+  it.each([1, 3])('identity: a matrix of rank %i among 60 rows: as many values that are not zero', (rank) => {
+    const n = 60;
+    const columns = randomSymmetric(n, seededRandom(8)).subarray(0, rank * n);
+    const matrix = multiplyLeftTransposed(columns, columns, n, rank, n);
+    const { residual, orthogonality, values } = defects(matrix, n);
+    expect(residual).toBeLessThan(1e-13);
+    expect(orthogonality).toBeLessThan(1e-13);
+    expect(values.filter((value) => Math.abs(value) > 1e-12)).toHaveLength(rank);
+  });
+
+  it.each([1e-40, 1e-80, 1e-130, 1e-170])(
+    'identity: rows with elements %d times as large as the others',
+    (small) => {
+      const n = 60;
+      const matrix = randomSymmetric(n, seededRandom(8)).map((value, place) => {
+        const large = Number(place >= n * 30) + Number(place % n >= 30);
+        return [small, Math.sqrt(small), 1][large]! * value;
+      });
+      const { residual, orthogonality } = defects(matrix, n);
+      expect(residual).toBeLessThan(1e-13);
+      expect(orthogonality).toBeLessThan(1e-13);
+    },
+  );
+
   it('identity: the zero matrix, a diagonal one and one of size 0', () => {
     expect(symmetricEigen(new Float64Array(0), 0).values).toHaveLength(0);
     expect(defects(new Float64Array(9), 3)).toMatchObject({ residual: 0, orthogonality: 0 });
