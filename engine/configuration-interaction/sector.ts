@@ -27,9 +27,13 @@ export function buildSectors(
   return sectors.filter(({ dimension }) => dimension > 0);
 }
 
+/** Most representations have no strings in a small molecule: none of them needs an array of its own. */
+const NO_ROWS = new Int32Array(1);
+
 function layRows(space: DeterminantSpace, irrep: number, alpha: StringClasses, beta: StringClasses): Sector {
   let dimension = 0;
   const rowStart = beta.members.map((members, h) => {
+    if (members.length === 0) return NO_ROWS;
     const start = new Int32Array(members.length + 1);
     members.forEach((string, place) => {
       start[place] = dimension;
