@@ -1,5 +1,4 @@
 import { existsSync } from 'node:fs';
-import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { createService } from '../service/service';
@@ -15,6 +14,7 @@ const ROOT = join(import.meta.dirname, '..');
 const USAGE = `npm start [-- --browser | --no-open]
   --browser   opens the window in the installed browser instead of Electron
   --no-open   opens nothing: prints the window's address and serves it until stopped
+FARWELL_WORKERS=N in the environment computes N points at a time instead of one for every core.
 `;
 
 const stop = new AbortController();
@@ -75,8 +75,7 @@ async function showInBrowser(rendererFolder: string, isOpened: boolean): Promise
   const samplesFolder = join(ROOT, 'sample-molecules');
   const host = await startBrowserHost({
     rendererFolder,
-    service: (post) =>
-      createService({ host: 'browser', workers: availableParallelism(), samplesFolder, post }),
+    service: (post) => createService({ host: 'browser', samplesFolder, post }),
   });
   process.stdout.write(`${host.address}\n`);
   const isShown = isOpened && (await openInBrowser(browserCommands(host.address, THIS_MACHINE)));

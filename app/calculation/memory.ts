@@ -1,7 +1,8 @@
-import { availableParallelism, freemem } from 'node:os';
+import { freemem } from 'node:os';
 import process from 'node:process';
 import { explainStudy, type PreparedStudy, type StudyExplanation } from '#engine';
 import { wholeStudy } from '../study/whole-study';
+import { usualWorkers } from './workers';
 
 /** Of what is free now: the rest is for whatever else the machine is doing. */
 const SHARE_OF_FREE = 0.8;
@@ -35,11 +36,11 @@ export interface Workers {
 /**
  * How many points can be under way at the same time: no more than their memory allows.
  *
- * @param wanted - default: one for every core
+ * @param wanted - default: as usual
  */
 export function affordableWorkers(
   prepared: PreparedStudy,
-  wanted: number = availableParallelism(),
+  wanted: number = usualWorkers(),
   budget: number = memoryBudget(),
 ): Workers {
   const points = Math.min(wanted, prepared.coordinates.length);

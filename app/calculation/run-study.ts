@@ -1,4 +1,3 @@
-import { availableParallelism } from 'node:os';
 import {
   describeBasisUsed,
   measuredFor,
@@ -18,6 +17,7 @@ import type { StageTime } from './stage-clock';
 import { crossingCautions, stateCurves } from './state-curves';
 import { CalculationFailure, openPool, PoolClosed, type WorkerPool } from './worker-pool';
 import { type StartWorker, startWorkerThread } from './worker-thread';
+import { usualWorkers } from './workers';
 
 export interface RunInput {
   readonly prepared: PreparedStudy;
@@ -26,7 +26,7 @@ export interface RunInput {
 }
 
 export interface RunOptions {
-  /** threads that compute at the same time; default: one for every core */
+  /** threads that compute at the same time; default: as usual */
   readonly workers?: number;
   /**
    * called for every point as it is computed, in no particular order, not for those in `finished`; again for a
@@ -65,7 +65,7 @@ export type RunOutcome =
  */
 export async function runStudy(
   { prepared, basisFileText }: RunInput,
-  { workers = availableParallelism(), startWorker = startWorkerThread, signal, ...options }: RunOptions = {},
+  { workers = usualWorkers(), startWorker = startWorkerThread, signal, ...options }: RunOptions = {},
 ): Promise<RunOutcome> {
   if (signal?.aborted) return { kind: 'cancelled' };
   const start: WorkerStart = {

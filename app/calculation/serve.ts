@@ -1,5 +1,5 @@
 import * as engine from '#engine';
-import type { SerializedError } from '../contract/requests';
+import { failureOf } from './failure';
 import type { Finding, LimitRequest, WorkerReply, WorkerRequest, WorkerStart } from './messages';
 import { openCache } from './result-cache';
 import { startStageClock } from './stage-clock';
@@ -21,7 +21,7 @@ export function serve(port: ServerPort, start: WorkerStart): void {
       for (const finding of findings(request, bases)) port.post(finding);
       port.post({ kind: 'free' });
     } catch (error) {
-      port.post({ kind: 'failed', error: asData(error) });
+      port.post({ kind: 'failed', error: failureOf(error) });
     }
   });
 }
@@ -119,17 +119,4 @@ function coordinateOf(prepared: engine.PreparedStudy, index: number): number | n
   const coordinate = prepared.coordinates[index];
   if (coordinate === undefined) throw new RangeError(`The study has no point ${index}.`);
   return coordinate;
-}
-
-function asData(error: unknown): SerializedError {
-  if (error instanceof engine.EngineError) {
-    const { code, place, message, remedy } = error;
-    return { code, place, message, remedy };
-  }
-  return {
-    code: 'internal',
-    place: '',
-    message: `Something failed inside the program: ${error instanceof Error ? error.message : String(error)}`,
-    remedy: 'Please report this together with the study.',
-  };
 }

@@ -199,7 +199,11 @@ function pointsOf({ coordinates, furtherBases }: PreparedStudy): number {
 }
 
 /** Failures that the study is not to blame for; any other comes from the engine and refuses the study. */
-const OWN_FAILURES: ReadonlySet<string> = new Set(['internal', 'calculation.workerDied']);
+const OWN_FAILURES: ReadonlySet<string> = new Set([
+  'internal',
+  'calculation.workerDied',
+  'calculation.outOfMemory',
+]);
 
 function sayFailure(error: SerializedError, study: string, terminal: Terminal): ExitCode {
   if (!OWN_FAILURES.has(error.code)) {

@@ -1,5 +1,4 @@
 import { readFile } from 'node:fs/promises';
-import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
 import { app, BrowserWindow, ipcMain, Menu, protocol, session } from 'electron';
 import { createService } from '../service/service';
@@ -38,7 +37,6 @@ function showProgram(): void {
 
   const service = createService({
     host: 'desktop',
-    workers: availableParallelism(),
     samplesFolder: join(PROGRAM_FOLDER, 'sample-molecules'),
     post: (name, payload) => {
       for (const { webContents } of BrowserWindow.getAllWindows()) webContents.send(name, payload);

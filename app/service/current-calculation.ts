@@ -1,6 +1,7 @@
 import type { PreparedStudy } from '#engine';
 import { cacheSettings } from '../calculation/cache-settings';
 import { affordableWorkers } from '../calculation/memory';
+import type { Progress } from '../calculation/progress';
 import { runStudy } from '../calculation/run-study';
 import { serializeError } from './answer';
 import type { Post } from './service';
@@ -40,9 +41,9 @@ export function createCurrentCalculation(workers: number, post: Post): CurrentCa
           const isOwn = index < prepared.coordinates.length;
           if (isOwn && !signal.aborted) post('calculation:point', { id, index, point: result });
         },
-        onProgress: (progress) => {
+        onProgress: seldom((progress) => {
           if (!signal.aborted) post('calculation:progress', { id, ...progress });
-        },
+        }),
       },
     ).catch((error: unknown) => ({ kind: 'failed', error: serializeError(error) }) as const);
     if (signal.aborted) return;
@@ -65,5 +66,20 @@ export function createCurrentCalculation(workers: number, post: Post): CurrentCa
       return true;
     },
     dispose: cancelRunning,
+  };
+}
+
+/** Faster than this nobody reads, and a window that draws each step falls behind. */
+const PROGRESS_EVERY_MS = 50;
+
+/** Lets through what begins or ends a stage, and of the rest what comes after a pause. */
+function seldom(tell: (progress: Progress) => void): (progress: Progress) => void {
+  let last = Number.NEGATIVE_INFINITY;
+  return (progress) => {
+    const { done, total } = progress;
+    const now = performance.now();
+    if (done > 0 && done < total && now - last < PROGRESS_EVERY_MS) return;
+    last = now;
+    tell(progress);
   };
 }

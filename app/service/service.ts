@@ -1,5 +1,6 @@
 import { describeBasis, listBasisSets } from '#engine';
 import { PROGRAM } from '../calculation/program';
+import { usualWorkers } from '../calculation/workers';
 import type { EventName, Events, Handlers, ProgramDescription } from '../contract/requests';
 import { createCurrentCalculation } from './current-calculation';
 import { Refusal } from './refusal';
@@ -12,8 +13,8 @@ export type Post = <E extends EventName>(name: E, payload: Events[E]) => void;
 
 export interface ServiceOptions {
   readonly host: ProgramDescription['host'];
-  /** threads that compute at the same time */
-  readonly workers: number;
+  /** threads that compute at the same time; default: as `FARWELL_WORKERS` says, else one for every core */
+  readonly workers?: number;
   readonly samplesFolder: string;
   readonly post: Post;
 }
@@ -25,7 +26,12 @@ export interface Service {
 }
 
 /** Answers the contract's requests, the same for every host; knows no transport. */
-export function createService({ host, workers, samplesFolder, post }: ServiceOptions): Service {
+export function createService({
+  host,
+  workers = usualWorkers(),
+  samplesFolder,
+  post,
+}: ServiceOptions): Service {
   const calculation = createCurrentCalculation(workers, post);
   return {
     handlers: {

@@ -1,8 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { prepareStudy } from '#engine';
 import type { WorkerReply, WorkerStart } from '../../../app/calculation/messages';
-import { startWorkerThread } from '../../../app/calculation/worker-thread';
-import { helium } from '../../support/end-to-end-studies';
+import { runStudy } from '../../../app/calculation/run-study';
+import { type StartWorker, startWorkerThread } from '../../../app/calculation/worker-thread';
+import { helium, water } from '../../support/end-to-end-studies';
+import { prepare } from '../../support/studies';
 
 const preparation = prepareStudy(helium);
 if (!preparation.ok) throw preparation.errors[0];
@@ -79,5 +81,63 @@ describe('startWorkerThread', () => {
     worker.end();
     await new Promise((resolve) => setTimeout(resolve, 300));
     expect(told).toBe(0);
+  });
+});
+
+describe('a thread that is killed in the middle of a large product', () => {
+  const prepared = prepare({ ...water, scan: { coordinate: water.scan!.coordinate, values: [100, 104] } });
+  const run = (startWorker: StartWorker) => runStudy({ prepared }, { workers: 1, startWorker });
+
+  it('is replaced, and no point is lost', async () => {
+    let deaths = 0;
+    const startMortal: StartWorker = (start) => {
+      const thread = startWorkerThread(start);
+      let onDeath: (reason: string) => void = () => undefined;
+      return {
+        ...thread,
+        post(request) {
+          thread.post(request);
+          if (deaths > 0) return;
+          setTimeout(() => {
+            deaths++;
+            thread.end();
+            onDeath('it was killed');
+          }, 150);
+        },
+        listen(listeners) {
+          ({ onDeath } = listeners);
+          thread.listen(listeners);
+        },
+      };
+    };
+    const outcome = await run(startMortal);
+    expect(deaths).toBe(1);
+    const unbroken = await run(startWorkerThread);
+    expect(outcome.kind === 'done' && outcome.results.points).toEqual(
+      unbroken.kind === 'done' && unbroken.results.points,
+    );
+  });
+
+  it('is told in a clear message where it dies again', async () => {
+    const outcome = await run((start) => {
+      const thread = startWorkerThread(start);
+      return {
+        ...thread,
+        listen: (listeners) => {
+          thread.listen(listeners);
+          setTimeout(() => {
+            thread.end();
+            listeners.onDeath('it was killed');
+          }, 20);
+        },
+      };
+    });
+    expect(outcome).toMatchObject({
+      kind: 'failed',
+      error: {
+        code: 'calculation.workerDied',
+        message: 'The computing thread ended twice while computing the point at 100°: it was killed.',
+      },
+    });
   });
 });
