@@ -28,7 +28,8 @@ const PRIMITIVE_TO_QUARTET_THRESHOLD = 1e-4;
  * Source: kernel, see {@link coulombQuartet}; screening |(ab|cd)|² ≤ (ab|ab)(cd|cd): M. Häser, R. Ahlrichs,
  * J. Comput. Chem. 10, 104 (1989).
  * Accuracy: 2e-13 hartree, or relative for integrals above 1 hartree, checked in tests/engine/integrals/electron-repulsion.test.ts.
- * Cost: O(n⁴/8) time and memory.
+ * Cost: O(n⁴/8) time and memory. Integrals of one centre stay the same along a scan, but are only 8–17 % of the work
+ * (N2, H2O; 6-31G to cc-pVTZ): they are made again.
  */
 export function electronRepulsionTensor(
   basis: PlacedBasis,

@@ -29,7 +29,7 @@ let integralMemory: IntegralMemory | undefined;
 
 /**
  * The fast form of `coulombQuartet` on the given pairs, which are copied into kernel memory once; valid while `work`
- * runs. Records and their order: kernels/assembly/electron-repulsion.ts.
+ * runs, which must not ask for others. Records and their order: kernels/assembly/electron-repulsion.ts.
  */
 export function withFastQuartets<Result>(
   pairs: readonly ShellPair[],

@@ -59,6 +59,13 @@ describe('placeBasis', () => {
     expect(tight / wide).toBeCloseTo((0.3 * primitiveNorm(2, 0)) / (2 * primitiveNorm(0.1, 0)), 14);
   });
 
+  it('identity: shells of one definition share their arrays, on every atom and at every geometry', () => {
+    const near = placeBasis(basisSet, molecule(atom('H', 1, 0), atom('H', 1, 1)));
+    const far = placeBasis(basisSet, molecule(atom('H', 1, 9)));
+    expect(near.shells[1].exponents).toBe(near.shells[0].exponents);
+    expect(far.shells[0].coefficients).toBe(near.shells[0].coefficients);
+  });
+
   it('identity: Cartesian shells have all products', () => {
     const cartesian = placeBasis({ ...basisSet, harmonics: 'cartesian' }, molecule(atom('Li', 3, 0)));
     expect(cartesian.functionCount).toBe(1 + 3 + 10);
