@@ -32,7 +32,7 @@ export function comparabilityNotes(files: readonly NamedResults[]): readonly str
       : []),
     ...(differ(basisOf)
       ? [
-          `Basis sets differ (${listed(basisOf)}): differences between the files contain that of the bases. At one geometry and level the lower Hartree–Fock or full CI energy is the better one.`,
+          `Basis sets differ (${listed(basisOf)}): differences between the files contain that of the bases.${shareEnergyScale(files) ? ' At one geometry and level the lower Hartree–Fock or full CI energy is the better one.' : ''}`,
         ]
       : []),
     ...(differ(coreOf)

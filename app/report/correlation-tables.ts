@@ -90,7 +90,7 @@ export function correlationTables(
   return [
     overview,
     ...ranksTable(points, largest, placeOf, place, idOf('ranks'), ofFile),
-    ...pairsTable(points, largest, results, placeOf, idOf('pairs'), ofFile),
+    ...pairsTable(points, largest, placeOf, place, idOf('pairs'), ofFile),
     ...configurationsTable(points, largest, placeOf, place, idOf('configurations'), ofFile),
   ];
 }
@@ -165,8 +165,8 @@ function ranksTable(
 function pairsTable(
   points: readonly PointResult[],
   level: string,
-  results: StudyResults,
   placeOf: (point: PointResult) => string,
+  place: TableColumn,
   id: string,
   ofFile: string,
 ): readonly TextTable[] {
@@ -190,7 +190,7 @@ function pairsTable(
   return [
     {
       id,
-      heading: `Correlation of ${level}${ofFile} by pairs of orbitals, at ${placeOf(point)}${results.study.scan ? '' : ' geometry'}`,
+      heading: `Correlation of ${level}${ofFile} by pairs of orbitals, ${place.label} ${placeOf(point)}`,
       columns: [
         { label: 'Excited from', content: 'words' },
         { label: 'Energy (hartree)' },

@@ -12,6 +12,7 @@ const UPPER_LEVELS = 10;
 const EV_DECIMALS = 4;
 const STRENGTH_DECIMALS = 4;
 const FACTOR_DECIMALS = 5;
+const SMALLEST_FACTOR = 10 ** -FACTOR_DECIMALS;
 
 /** What was read off the curves of states above the lowest, a row a state. */
 export function excitedTable(
@@ -58,7 +59,8 @@ export function franckCondonTables(file: NamedResults): readonly TextTable[] {
   return statesOf(file.results).flatMap(({ level, name, state: { curve, franckCondon } }) => {
     const factors = franckCondon?.factors ?? [];
     const count = Math.min(UPPER_LEVELS, factors[0]?.length ?? 0);
-    if (!franckCondon || count === 0) return [];
+    // between wells far apart nothing is left of what is printed
+    if (!franckCondon || !factors.some((row) => row.some((factor) => factor >= SMALLEST_FACTOR))) return [];
     const upper = Array.from({ length: count }, (_, v) => v);
     return [
       {

@@ -89,11 +89,14 @@ function form(
     Object.entries(parameters)
       .map(([symbol, value]) => `${symbol} = ${withMinus(value.toPrecision(DIGITS))}`)
       .join(', '),
-    rootMeanSquarePerCm.toPrecision(3),
-    largestPerCm.toPrecision(3),
+    threeDigits(rootMeanSquarePerCm),
+    threeDigits(largestPerCm),
     String(points),
   ];
 }
+
+/** Never in powers of ten. */
+const threeDigits = (value: number): string => String(Number(value.toPrecision(3)));
 
 const numbered = (coefficients: readonly number[]): Readonly<Record<string, number>> =>
   Object.fromEntries(coefficients.map((value, index) => [`a${'₁₂₃₄'.charAt(index)}`, value]));

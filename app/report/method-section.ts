@@ -10,6 +10,7 @@ export function methodParagraphs(results: StudyResults, citations: Citations): r
     basisSentences(results, citations),
     levelSentences(results, citations),
     correlationSentences(results),
+    furtherBasesSentences(results, citations),
     convergenceSentences(results),
     findingsSentences(results, citations),
     constantsSentences(results, citations),
@@ -54,6 +55,30 @@ function basisSentences({ basis, study }: StudyResults, citations: Citations): s
   ]
     .filter(Boolean)
     .join(' ');
+}
+
+function furtherBasesSentences(
+  { furtherBases = [], basisSetLimit }: StudyResults,
+  citations: Citations,
+): string {
+  if (furtherBases.length === 0) return '';
+  const bases = furtherBases.map(
+    ({ basis }) => `${basis.name} ${citations.cite(...basis.citations)}, ${basis.functions} functions`,
+  );
+  const limits = basisSetLimit?.kind === 'found' ? Object.values(basisSetLimit.levels) : [];
+  const formulas = limits.flatMap(({ hartreeFock, correlation }) => [
+    hartreeFock.formula,
+    ...(correlation ? [correlation.formula] : []),
+  ]);
+  const papers = [...new Set(formulas)].map((formula) => PAPERS[formula]);
+  return [
+    `The same study was computed in ${enumerated(bases)}.`,
+    ...(papers.length > 0
+      ? [
+          `Hartree–Fock and correlation energies were extrapolated each by its own formula ${citations.cite(...papers)}.`,
+        ]
+      : []),
+  ].join(' ');
 }
 
 function levelSentences({ study }: StudyResults, citations: Citations): string {

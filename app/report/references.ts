@@ -21,6 +21,11 @@ export const PAPERS = {
   morse: 'P. M. Morse, Phys. Rev. 34, 57 (1929)',
   extendedRydberg: 'J. N. Murrell, K. S. Sorbie, J. Chem. Soc., Faraday Trans. 2 70, 1552 (1974)',
   counterpoise: 'S. F. Boys, F. Bernardi, Mol. Phys. 19, 553 (1970)',
+  exponentialThreePoint: 'D. Feller, J. Chem. Phys. 96, 6104 (1992)',
+  exponential: 'A. Halkier et al., Chem. Phys. Lett. 302, 437 (1999)',
+  exponentialRoot: 'A. Karton, J. M. L. Martin, Theor. Chem. Acc. 115, 330 (2006)',
+  inverseCube: 'T. Helgaker, W. Klopper, H. Koch, J. Noga, J. Chem. Phys. 106, 9639 (1997)',
+  inverseFourth: 'J. M. L. Martin, Chem. Phys. Lett. 259, 669 (1996)',
   constants: 'P. J. Mohr, D. B. Newell, B. N. Taylor, E. Tiesinga, Rev. Mod. Phys. 97, 025002 (2025)',
 } as const;
 

@@ -65,6 +65,35 @@ describe('methodParagraphs', () => {
     expect(methodOf(sampleResults())).not.toMatch(/Schrödinger|reduced mass|Morse|counterpoise/);
   });
 
+  it('cites the papers of further bases and of the formulas that the limit comes from', () => {
+    const citations = new Citations();
+    const results = sampleResults();
+    const method = methodOf(
+      {
+        ...results,
+        furtherBases: [
+          {
+            basis: { ...results.basis, name: 'big', citations: ['A big paper'] },
+            levels: {},
+            findings: {},
+            cautions: [],
+          },
+        ],
+        basisSetLimit: {
+          kind: 'found',
+          family: 'f',
+          members: [],
+          levels: { RHF: { hartreeFock: { formula: 'exponential', cardinals: [2, 3] }, energies: [] } },
+        },
+      },
+      citations,
+    );
+    expect(method).toMatch(/computed in big \[\d+\], 2 functions\./);
+    expect(citations.list).toContain('A big paper');
+    expect(citations.list).toContain('A. Halkier et al., Chem. Phys. Lett. 302, 437 (1999)');
+    expect(citations.list.join()).not.toContain('Feller');
+  });
+
   it('cites every reference that it brings, from 1 on', () => {
     const citations = new Citations();
     const method = methodOf(withSpectroscopy(3), citations);
