@@ -14,6 +14,25 @@ const LEAST_DECIMALS = 3;
 /** Of coordinates; evenly spaced scans have endless decimals. */
 const MOST_COORDINATE_DECIMALS = 6;
 
+/** Of the rows of a common table, at least this share must have numbers of more than one file. */
+const LEAST_COMMON_SHARE = 0.5;
+
+/** One table of all files where they have many distances in common, else one a file. */
+export function energiesTables(
+  files: readonly NamedResults[],
+  shared: ScannedCoordinate,
+): readonly TextTable[] {
+  const counts = new Map<number, number>();
+  for (const { results } of files) {
+    const scale = coordinateScale(results, shared);
+    for (const key of new Set(results.points.map((point) => scaledKey(point, scale))))
+      counts.set(key, (counts.get(key) ?? 0) + 1);
+  }
+  const common = [...counts.values()].filter((count) => count > 1).length;
+  if (files.length === 1 || common >= LEAST_COMMON_SHARE * counts.size) return [energiesTable(files, shared)];
+  return files.map((file) => energiesTable([file], shared));
+}
+
 /** Energies and correlation energies: one row for every coordinate that any of the files has, in rising order. */
 export function energiesTable(files: readonly NamedResults[], shared: ScannedCoordinate): TextTable {
   const decimals = Math.min(...files.map(({ results }) => energyDecimals(results)));

@@ -4,7 +4,7 @@ import { basesTable } from './bases-table';
 import { cautionSummary } from './caution-summary';
 import { comparabilityNotes } from './comparability';
 import { correlationTables } from './correlation-tables';
-import { energiesTable } from './energies-table';
+import { energiesTables } from './energies-table';
 import { excitedTable, franckCondonTables } from './excited-tables';
 import { findingsTable } from './findings-table';
 import { fitsTable } from './fits-table';
@@ -85,7 +85,7 @@ export function reportDocument({ results, names, sentences, figure }: ReportInpu
       ...section('References', [references]),
       ...section('Appendix', [
         ...(hasManyLevels && levels ? tables({ ...levels, heading: 'All vibrational levels' }) : []),
-        ...tables(energiesTable(files, shared)),
+        ...tables(...energiesTables(files, shared)),
       ]),
     ],
   };

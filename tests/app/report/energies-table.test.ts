@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { StudyResults } from '#engine';
-import { energiesTable } from '../../../app/report/energies-table';
+import { energiesTable, energiesTables } from '../../../app/report/energies-table';
 import { sharedCoordinate } from '../../../app/report/scanned-coordinate';
 import { hartreeFock, sampleResults } from '../../support/sample-results';
 
@@ -11,6 +11,27 @@ const tableOf = (...results: readonly StudyResults[]) => {
     sharedCoordinate(results, names),
   );
 };
+
+describe('energiesTables', () => {
+  it('makes one table of files with many distances in common, else one a file', () => {
+    const results = sampleResults(['RHF']);
+    const shiftedBy = (shift: number) => ({
+      ...results,
+      points: results.points.map((point) => ({ ...point, coordinate: point.coordinate! + shift })),
+    });
+    const rowsWith = (shift: number) =>
+      energiesTables(
+        [
+          { name: 'a', results },
+          { name: 'b', results: shiftedBy(shift) },
+        ],
+        sharedCoordinate([results], ['']),
+      ).map(({ rows }) => rows.length);
+    expect(rowsWith(0)).toEqual([37]);
+    expect(rowsWith(0.5)).toEqual([42]);
+    expect(rowsWith(0.05)).toEqual([37, 37]);
+  });
+});
 
 describe('energiesTable', () => {
   it('has a row a point with all energies, then the correlation energies', () => {
