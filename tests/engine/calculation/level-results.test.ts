@@ -67,7 +67,7 @@ describe('correlation of CI levels', () => {
   );
 
   it('identity: orbitals are counted over all, frozen ones included', () => {
-    const request = study(water, { levels: ['CISD'], basis: '6-31G' });
+    const request = study(water, { levels: ['CISD'] });
     const [whole, frozen] = [request, { ...request, frozenCore: true }].map((each) =>
       correlated(compute(each), 'CISD'),
     );

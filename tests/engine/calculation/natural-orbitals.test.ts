@@ -21,7 +21,7 @@ const open = (atoms: Study['molecule']['atoms'], multiplicity: number, changes: 
   molecule: { unit: 'bohr', atoms, multiplicity },
 });
 const CASES: readonly (readonly [string, Study])[] = [
-  ['water', study(waterAtoms(2, 104), { levels: ['CISD'], basis: '6-31G' })],
+  ['water', study(waterAtoms(2, 104), { levels: ['CISD'] })],
   ['frozen core', study(waterAtoms(2, 104), { levels: ['CISD'], frozenCore: true })],
   ['active orbitals', study(waterAtoms(2, 104), { levels: ['CISD'], active: { electrons: 4, orbitals: 4 } })],
   ['OH', open([atom('O'), atom('H', 0, 0, 2)], 2, { levels: ['CISD'] })],
