@@ -35,8 +35,8 @@ const NODE_ENTRIES = {
   'electron-main': 'app/main/main.ts',
   benchmark: 'tests/benchmarks/main.ts',
 };
-/** A file of its own, so that a worker thread starts by reading one file. */
-const WORKER_ENTRIES = { worker: 'app/calculation/worker.ts' };
+/** A file of its own each, so that a thread starts by reading one file. */
+const WORKER_ENTRIES = { worker: 'app/calculation/worker.ts', helper: 'app/calculation/helper.ts' };
 /** One CommonJS file: a sandboxed preload script has no module loader. */
 const PRELOAD_ENTRIES = { preload: 'app/preload/preload.ts' };
 const RENDERER_PAGE = 'app/renderer/index.html';
@@ -62,7 +62,9 @@ const shared = { configFile: false, root, logLevel: 'warn' };
 
 const outputs = await Promise.all([
   buildForNode(NODE_ENTRIES, { format: 'es' }),
-  buildForNode(WORKER_ENTRIES, { format: 'es', codeSplitting: false }),
+  ...Object.entries(WORKER_ENTRIES).map(([name, source]) =>
+    buildForNode({ [name]: source }, { format: 'es', codeSplitting: false }),
+  ),
   buildForNode(PRELOAD_ENTRIES, { format: 'cjs', entryFileNames: '[name].cjs', codeSplitting: false }),
   buildRenderer(),
 ]).catch(giveUp);

@@ -132,6 +132,8 @@ export {
   type EngineErrorDetails,
   type SerializedEngineError,
 } from './errors';
+export { acceptHelpers, allowHelpers, helpThread } from './kernels/thread-team';
+export type { WasmMemory as SharedKernelMemory } from './kernels/web-assembly';
 export type { Vector3 } from './molecule/molecule';
 export type { Stage, StageListener } from './stages';
 export type { PointGroupName } from './symmetry/point-groups';

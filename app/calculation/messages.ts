@@ -22,6 +22,8 @@ export interface WorkerStart {
   readonly cache?: CacheSettings;
   /** whether findings are to say where their time went */
   readonly isTimed?: boolean;
+  /** threads that may ever help this one; default none */
+  readonly helpers?: number;
 }
 
 /** What a worker is asked for. */

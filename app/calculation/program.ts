@@ -18,3 +18,6 @@ export const PROGRAM = {
 
 /** The built file that a worker thread runs, also for a caller that itself runs from the sources. */
 export const WORKER_FILE = join(FOLDER, 'out', 'worker.js');
+
+/** The same for a thread that helps one. */
+export const HELPER_FILE = join(FOLDER, 'out', 'helper.js');

@@ -74,6 +74,7 @@ export async function runStudy(
     memoryLimit: prepared.memoryLimit,
     ...(options.cache && { cache: options.cache }),
     isTimed: options.onTimes !== undefined,
+    helpers: workers - 1,
   };
   let keptPoints = 0;
   const pool = openPool(

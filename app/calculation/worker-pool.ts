@@ -48,11 +48,17 @@ export function openPool(
 ): WorkerPool {
   const workers = new Set<WorkerConnection>();
   const idle: WorkerConnection[] = [];
+  const busy = new Set<WorkerConnection>();
   let rejectAsClosed: () => void = () => undefined;
   const closed = new Promise<never>((_, reject) => {
     rejectAsClosed = () => reject(new PoolClosed());
   });
   closed.catch(() => undefined); // nobody may be waiting for it
+
+  /** What no worker uses may help those that compute. */
+  function shareOut(): void {
+    for (const worker of busy) worker.allowHelpers?.(Math.floor((size - busy.size) / busy.size));
+  }
 
   /** Resolves with the reason if the worker died, else with undefined when it is free again. */
   function converse(worker: WorkerConnection, task: Task): Promise<string | undefined> {
@@ -86,7 +92,11 @@ export function openPool(
     for (;;) {
       const worker = idle.pop() ?? start();
       workers.add(worker);
+      busy.add(worker);
+      shareOut();
       const reason = await converse(worker, task);
+      busy.delete(worker);
+      shareOut();
       if (reason === undefined) return;
       const place = task.current();
       if (place === lastDeathAt) throw new CalculationFailure(workerDied(place, reason));

@@ -1,4 +1,5 @@
 import { Worker } from 'node:worker_threads';
+import { type HelpWanted, openHelpers, type StartHelper, startHelperThread } from './helpers';
 import type { WorkerReply, WorkerRequest, WorkerStart } from './messages';
 import { WORKER_FILE } from './program';
 
@@ -7,6 +8,8 @@ export interface WorkerConnection {
   post(request: WorkerRequest): void;
   /** replaces the listeners given before */
   listen(listeners: { onReply(reply: WorkerReply): void; onDeath(reason: string): void }): void;
+  /** how many threads may help it from now on */
+  allowHelpers?(count: number): void;
   /** ends the worker at once, in the middle of whatever it computes, and without `onDeath` */
   end(): void;
 }
@@ -14,29 +17,41 @@ export interface WorkerConnection {
 export type StartWorker = (start: WorkerStart) => WorkerConnection;
 
 /** Starts a worker as a thread of this process, from the built file. */
-export const startWorkerThread: StartWorker = (start) => {
+export const startWorkerThread: StartWorker = (start) => startComputing(start, startHelperThread);
+
+/** The same, with helpers of the caller's. */
+export function startComputing(start: WorkerStart, startHelper: StartHelper): WorkerConnection {
   const thread = new Worker(WORKER_FILE, { workerData: start });
   let reason: string | undefined;
   let onReply: (reply: WorkerReply) => void = () => undefined;
   let onDeath: (reason: string) => void = () => undefined;
-  thread.on('message', (reply: WorkerReply) => onReply(reply));
-  thread.on('messageerror', (error) => {
-    reason = error.message;
+  const end = (why: string) => {
+    reason = why;
     void thread.terminate();
+  };
+  const helpers = openHelpers(end, startHelper);
+  thread.on('message', (reply: WorkerReply | HelpWanted) => {
+    if (reply.kind === 'helpWanted') helpers.wanted(reply);
+    else onReply(reply);
   });
+  thread.on('messageerror', (error) => end(error.message));
   // `exit` follows `error`, so that a death is told once
   thread.on('error', (error) => {
     reason = error.message;
   });
-  thread.on('exit', (code) => onDeath(reason ?? `it ended with status ${code}`));
+  thread.on('exit', (code) => {
+    helpers.end();
+    onDeath(reason ?? `it ended with status ${code}`);
+  });
   return {
     post: (request) => thread.postMessage(request),
     listen: (listeners) => {
       ({ onReply, onDeath } = listeners);
     },
+    allowHelpers: helpers.allow,
     end: () => {
       onReply = onDeath = () => undefined;
       void thread.terminate();
     },
   };
-};
+}

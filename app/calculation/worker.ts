@@ -1,4 +1,6 @@
 import { parentPort, workerData } from 'node:worker_threads';
+import { acceptHelpers } from '#engine';
+import type { HelpWanted } from './helpers';
 import type { WorkerStart } from './messages';
 import { giveWay } from './priority';
 import { serve } from './serve';
@@ -6,10 +8,15 @@ import { serve } from './serve';
 const port = parentPort;
 if (!port) throw new Error('This file runs as a worker thread only.');
 giveWay();
+const start = workerData as WorkerStart;
+acceptHelpers({
+  most: start.helpers ?? 0,
+  start: (memory, control) => port.postMessage({ kind: 'helpWanted', memory, control } satisfies HelpWanted),
+});
 serve(
   {
     post: (reply) => port.postMessage(reply),
     onMessage: (listener) => void port.on('message', listener),
   },
-  workerData as WorkerStart,
+  start,
 );

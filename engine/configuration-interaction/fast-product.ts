@@ -1,10 +1,13 @@
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
-import { determinantProductKernels } from '../kernels/determinant-product';
 import type { KernelMemory } from '../kernels/kernel-memory';
+import { COLUMN_TASKS, mostThreads, ROW_TASKS, runTasks } from '../kernels/thread-team';
 import type { BareProduct } from './hamiltonian-product';
 import { layProductLists, laySectorPlan, type ProductLists } from './product-plan';
 import type { Sector } from './sector';
 import { mirror } from './spin-flip';
+
+/** From here on a product takes milliseconds, and threads are worth waking for it. */
+const MANY_DETERMINANTS = 50_000;
 
 /**
  * H·c by the kernels of engine/kernels/assembly/determinant-product.ts: for a block of alpha strings, the electrons
@@ -19,15 +22,15 @@ export function prepareFastProduct(
   memory: KernelMemory,
 ): BareProduct {
   let lists: ProductLists | undefined;
-  const kernels = determinantProductKernels(memory);
   return (sector, vector, product, parity) => {
     lists ??= layProductLists(memory, sectors[0], integrals, orbitalIrreps);
     const { columnTaskCount, rowTaskCount } = lists;
     memory.scope(() => {
-      const plan = laySectorPlan(lists!, sector, 1, parity !== 0);
+      const plan = laySectorPlan(lists!, sector, mostThreads(), parity !== 0);
+      const isLarge = sector.dimension >= MANY_DETERMINANTS;
       plan.vector.set(vector);
-      for (let task = 0; task < rowTaskCount; task++) kernels.rowTask(plan.plan, task, 0);
-      for (let task = 0; task < columnTaskCount; task++) kernels.columnTask(plan.plan, task, 0);
+      runTasks(memory, ROW_TASKS, plan.plan, rowTaskCount, isLarge);
+      runTasks(memory, COLUMN_TASKS, plan.plan, columnTaskCount, isLarge);
       if (parity !== 0) mirror(sector, plan.product, parity);
       product.set(plan.product);
     });
