@@ -1,4 +1,4 @@
-import { HARTREE_IN_WAVENUMBERS } from '../constants';
+import { DALTON_IN_ELECTRON_MASSES, HARTREE_IN_WAVENUMBERS } from '../constants';
 import { franckCondonFactors } from '../curves/franck-condon';
 import { diatomicOf } from './diatomic';
 import type { ExcitedState, FranckCondon, TransitionMoment, VerticalExcitation } from './further-findings';
@@ -6,7 +6,7 @@ import { interpolatedWell } from './interpolated-well';
 import { curveThrough, type LevelCurve, type LevelPoints } from './level-curve';
 import type { PreparedStudy } from './prepare-study';
 import { readWell, type Well } from './read-well';
-import type { Estimate } from './result';
+import type { Estimate, Vibration } from './result';
 import { type CurveOfState, curvesOfStates, statesOf } from './state-curves';
 import { MOST_SECONDS_A_POINT, type SolvableCurve, vibrationOn, type WithoutLevels } from './vibration';
 
@@ -34,7 +34,11 @@ export function lowestStateOfSingles(
     const state = statesOf(points.all()[index], points.level)[0];
     return state && state.energy - state.excitation;
   });
-  return { curve, well: readWell(prepared, curve, undefined, secondsPerPoint).well };
+  const { well } =
+    secondsPerPoint > MOST_SECONDS_A_POINT
+      ? interpolatedWell(curve)
+      : readWell(prepared, curve, undefined, secondsPerPoint);
+  return { curve, well };
 }
 
 /**
@@ -53,8 +57,15 @@ export function excitedStates(
     (points.all().length - before) * secondsPerPoint <= MOST_SECONDS;
   const curves = curvesOfStates(points);
   const ground = lowestOf(curves, points, lowest);
-  return withoutPartners(curves, ground).map((state) =>
-    readState(prepared, points, { lowest, ground, state }, isAffordable() ? secondsPerPoint : undefined),
+  const excited = withoutPartners(curves, ground);
+  const vibration = excited.length > 0 ? vibrationOf(prepared, lowest.well?.solvable) : undefined;
+  return excited.map((state) =>
+    readState(
+      prepared,
+      points,
+      { lowest, vibration, ground, state },
+      isAffordable() ? secondsPerPoint : undefined,
+    ),
   );
 }
 
@@ -65,15 +76,16 @@ function lowestOf(
   { curve, well }: LowestState,
 ): CurveOfState | undefined {
   if (points.all().every(({ levels }) => levels[points.level]?.kind !== 'correlated')) return undefined;
-  const known = curve.scan.filter(({ energy }) => energy !== undefined);
-  const bottom = known.reduce<(typeof known)[number] | undefined>((best, place) => {
-    const isBetter = well
-      ? Math.abs(place.x - well.found.x) < Math.abs((best?.x ?? Infinity) - well.found.x)
-      : place.energy! < (best?.energy ?? Infinity);
-    return isBetter ? place : best;
-  }, undefined);
-  const index = bottom ? curve.scan.indexOf(bottom) : -1;
-  return curves.find(({ followed }) => followed.states[index] === 0);
+  const { scan } = curve;
+  const distanceFromBottom = ({ x, energy }: (typeof scan)[number]) => {
+    if (energy === undefined) return Number.POSITIVE_INFINITY;
+    return well ? Math.abs(x - well.found.x) : energy;
+  };
+  const nearest = scan.reduce(
+    (best, place, k) => (distanceFromBottom(place) < distanceFromBottom(scan[best]) ? k : best),
+    0,
+  );
+  return curves.find(({ followed }) => followed.states[nearest] === 0);
 }
 
 /** Of the partners of a degenerate state, the first; of none of them where they are partners of the lowest state. */
@@ -103,6 +115,8 @@ const termOf = ({ symmetry }: CurveOfState['followed']): string => JSON.stringif
 
 interface Pair {
   readonly lowest: LowestState;
+  /** of the lowest state */
+  readonly vibration: Vibration | undefined;
   /** the same as a state of the level; undefined for CIS */
   readonly ground: CurveOfState | undefined;
   readonly state: CurveOfState;
@@ -135,7 +149,7 @@ function readState(
     ...(vertical && { vertical }),
     ...(adiabatic && { adiabatic }),
     transitionMoments: transitionMoments(points, pair),
-    ...vibrationOfBoth(prepared, lowest.well?.solvable, solvableOf(state, well), adiabatic),
+    ...vibrationFindings(prepared, pair, solvableOf(state, well), adiabatic),
   };
 }
 
@@ -209,28 +223,33 @@ function momentAt(
   };
 }
 
+function vibrationOf({ study }: PreparedStudy, solvable: Well['solvable']): Vibration | undefined {
+  const molecule = diatomicOf(study);
+  return molecule && solvable && vibrationOn(solvable, molecule);
+}
+
 /** Levels of the upper curve and what they have to do with those of the lower one. */
-function vibrationOfBoth(
-  { study }: PreparedStudy,
-  lower: Well['solvable'],
+function vibrationFindings(
+  prepared: PreparedStudy,
+  { lowest, vibration: below }: Pair,
   upper: Well['solvable'],
   adiabatic: Estimate | undefined,
 ): Pick<ExcitedState, 'vibration' | 'zeroPointToZeroPoint' | 'franckCondon'> {
-  const molecule = diatomicOf(study);
-  if (!molecule || !upper) return {};
-  const vibration = vibrationOn(upper, molecule);
-  if (vibration.kind === 'none' || upper.kind === 'none') return { vibration };
-  const below = lower && vibrationOn(lower, molecule);
-  if (below?.kind !== 'found' || lower?.kind !== 'found' || !adiabatic) return { vibration };
+  const vibration = vibrationOf(prepared, upper);
+  if (!vibration) return {};
+  const lower = lowest.well?.solvable;
+  const isComparable = below?.kind === 'found' && lower?.kind === 'found' && adiabatic !== undefined;
+  if (vibration.kind === 'none' || upper?.kind !== 'found' || !isComparable) return { vibration };
   const change = (vibration.zeroPointPerCm - below.zeroPointPerCm) / HARTREE_IN_WAVENUMBERS;
   const error = (vibration.interpolationErrorPerCm + below.interpolationErrorPerCm) / HARTREE_IN_WAVENUMBERS;
+  const mass = vibration.reducedMassDalton * DALTON_IN_ELECTRON_MASSES;
   return {
     vibration,
     zeroPointToZeroPoint: {
       value: adiabatic.value + change,
       uncertainty: adiabatic.uncertainty + error,
     },
-    franckCondon: franckCondon(lower, upper, molecule.reducedMass, below.levels.length),
+    franckCondon: franckCondon(lower, upper, mass, below.levels.length),
   };
 }
 

@@ -60,3 +60,61 @@ describe('findLevelMinimum', () => {
     }
   });
 });
+
+describe('levels of isotopologues and rotations in the findings', () => {
+  const DISTANCES = [0.8, 1, 1.2, 1.4, 1.6, 1.9, 2.3, 2.8, 3.5, 4.5, 6, 8];
+  function vibrationOf(isotopes: readonly [number, number], findings: Study['findings']) {
+    const preparation = prepareStudy({
+      format: 'farwell/study',
+      version: 1,
+      molecule: {
+        unit: 'bohr',
+        atoms: [
+          { element: 'H', at: [0, 0, 0], isotope: isotopes[0] },
+          { element: 'H', at: [0, 0, 1.4], isotope: isotopes[1] },
+        ],
+      },
+      scan: { coordinate: { bonds: [[0, 1]] }, values: DISTANCES },
+      basis: 'STO-3G',
+      levels: ['FCI'],
+      findings,
+    });
+    if (!preparation.ok) throw preparation.errors[0];
+    const { prepared } = preparation;
+    const points = prepared.coordinates.map((coordinate) => computePoint(prepared, coordinate).result);
+    return findLevelMinimum(prepared, 'FCI', points);
+  }
+
+  it('identity: an isotopologue has what a study of its own isotopes finds', () => {
+    const { isotopologues = [] } = vibrationOf([1, 1], { isotopologues: [[1, 2]], rotation: [3] });
+    const own = vibrationOf([1, 2], { rotation: [0, 3] });
+    const { vibration, constants, massNumbers } = isotopologues[0]!;
+    if (vibration.kind !== 'found' || own.vibration?.kind !== 'found') throw new Error('no levels');
+    expect(massNumbers).toEqual([1, 2]);
+    expect(vibration.boundLevels).toBe(own.vibration.boundLevels);
+    expect(vibration.d0).toBeCloseTo(own.vibration.d0!, 10);
+    expect(constants!.harmonicWavenumberPerCm.value).toBeCloseTo(
+      own.constants!.diatomic!.harmonicWavenumberPerCm.value,
+      6,
+    );
+    expect(vibration.rotating!.map(({ rotation }) => rotation)).toEqual([3]);
+    vibration.rotating![0]!.levels.forEach(({ energyPerCm }, v) => {
+      const same = own.vibration?.kind === 'found' ? own.vibration.rotating![0]!.levels[v]! : undefined;
+      expect(energyPerCm).toBeCloseTo(same!.energyPerCm, 5);
+    });
+  });
+
+  it('identity: B_v and D_v predict the levels with a little rotation', () => {
+    const { vibration } = vibrationOf([1, 1], { rotation: [1] });
+    if (vibration?.kind !== 'found') throw new Error('no levels');
+    const rotation = 2;
+    vibration.levels.slice(0, 5).forEach((level, v) => {
+      const predicted =
+        level.energyPerCm +
+        level.rotationalConstantPerCm * rotation -
+        level.centrifugalDistortionPerCm! * rotation ** 2;
+      // the next constant is a thousandth of D_v, times 2³
+      expect(vibration.rotating![0]!.levels[v]!.energyPerCm).toBeCloseTo(predicted, 2);
+    });
+  });
+});
