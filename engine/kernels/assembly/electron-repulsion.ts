@@ -102,14 +102,13 @@ export function coulombQuartet(bra: usize, ket: usize, workspace: usize, primiti
 /** (ss|ss) = Σ factors F_0(aR²)/√(p + q), summed as the arguments are made. */
 function sphericalQuartet(bra: usize, braLanes: i32, ket: usize, workspace: usize, primitiveThreshold: f64): void {
   const values = address(workspace, HERMITE);
-  const batch = HERMITE_BATCH;
   let sum = f64x2.splat(0);
   for (let lane = 0; lane < braLanes; lane++) {
     const bound = load<f64>(address(bra, BOUNDS) + ((<usize>lane) << 4));
     const ketCount = significant(ket, primitiveThreshold / bound);
     let inner = f64x2.splat(0);
-    for (let start = 0; start < ketCount; start += batch) {
-      const count = min(batch, ketCount - start);
+    for (let start = 0; start < ketCount; start += HERMITE_BATCH) {
+      const count = min(HERMITE_BATCH, ketCount - start);
       hermiteOfPrimitives(bra, lane, ket, start, count, workspace, values, 16);
       const factors = address(ket, KET_FACTORS) + ((<usize>start) << 4);
       for (let k = 0; k < count; k++) inner = add(inner, mul(at(factors, k), at(values, k)));
