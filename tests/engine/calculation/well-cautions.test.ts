@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { DiatomicConstants, LevelFindings, Vibration } from '#engine';
+import type { DiatomicConstants, LevelFindings, Vibration, WellConstants } from '#engine';
 import { wellCautions } from '../../../engine/calculation/well-cautions';
 
 const MINIMUM = { kind: 'found', equilibriumDistance: 1.4, energy: -2, uncertainty: 1e-6 } as const;
@@ -7,7 +7,7 @@ const codesOf = (findings: Partial<LevelFindings>) =>
   wellCautions('FCI', { minimum: MINIMUM, ...findings }, 'bohr').map(({ code }) => code);
 const estimate = (value: number) => ({ value, uncertainty: 0 });
 
-function constants(wavenumber: number, anharmonicity: number): LevelFindings['constants'] {
+function constants(wavenumber: number, anharmonicity: number): WellConstants {
   const diatomic: DiatomicConstants = {
     masses: 'atomic',
     reducedMassDalton: 1,
