@@ -54,11 +54,13 @@ function choose(n: number, k: number): bigint {
   return value;
 }
 
-/** Per replacement: two orders of a pair or target, a source and a sign. */
-const BYTES_PER_REPLACEMENT = 2 * (4 + 4 + 1);
-/** Column and value, twice while the lists are cut to length. */
-const BYTES_PER_SAME_SPIN_ENTRY = 2 * (4 + 8);
-/** Vectors beside the eigensolver's: the diagonal, two transposed ones, one gathered. */
+/** Per replacement: two orders of a pair or target, a source and a sign; in kernels' lists eight bytes and sixteen. */
+const BYTES_PER_REPLACEMENT = 2 * (4 + 4 + 1) + 8 + 16;
+/** Column and value, twice while the lists are cut to length, and once in kernels' lists. */
+const BYTES_PER_SAME_SPIN_ENTRY = 3 * (4 + 8);
+/** In kernels' lists, where the entries of a string stand. */
+const BYTES_PER_STRING = 4 * (4 + 8 * 4);
+/** Vectors beside the eigensolver's: the diagonal, whole and by sectors, two in the kernels' memory. */
 const WORKING_VECTORS = 4;
 
 /**
@@ -78,12 +80,14 @@ export function configurationInteractionBytes(
   const vectors = davidsonVectorCount(basisVectorLimit(states)) + WORKING_VECTORS;
   const spins =
     alphaElectrons === betaElectrons && !spinsDiffer ? [alphaElectrons] : [alphaElectrons, betaElectrons];
-  let bytes = 8 * determinants * vectors;
+  const pairs = (orbitalCount * (orbitalCount + 1)) / 2;
+  // integrals stand in the kernels' memory with both signs
+  let bytes = 8 * determinants * vectors + 16 * pairs * pairs;
   for (const electrons of spins) {
     const virtuals = orbitalCount - electrons;
     const strings = countStrings(orbitalCount, electrons, rankLimit).map(Number);
     const count = strings.reduce((sum, ofRank) => sum + ofRank, 0);
-    bytes += count * (4 * wordsOf(orbitalCount) + 4 * orbitalCount);
+    bytes += count * (4 * wordsOf(orbitalCount) + 4 * orbitalCount + BYTES_PER_STRING);
     bytes += BYTES_PER_REPLACEMENT * countSingleReplacements(electrons, virtuals, strings);
     bytes += BYTES_PER_SAME_SPIN_ENTRY * countSameSpinEntries(electrons, virtuals, strings);
   }

@@ -1,5 +1,7 @@
 import { curvePoints } from './curve-points';
+import { denseAlgebra } from './dense-algebra';
 import { electronRepulsion } from './electron-repulsion';
+import { hamiltonianProducts } from './hamiltonian-product';
 import type { Measurement } from './measure';
 import { wholeRuns } from './whole-runs';
 
@@ -9,7 +11,9 @@ export interface BenchmarkGroup {
 }
 
 export const GROUPS: readonly BenchmarkGroup[] = [
+  { name: 'dense algebra', measure: denseAlgebra },
   { name: 'electron repulsion', measure: electronRepulsion },
+  { name: 'Hamiltonian product', measure: hamiltonianProducts },
   { name: 'curve points', measure: curvePoints },
   { name: 'whole runs', measure: wholeRuns },
 ];
