@@ -32,7 +32,7 @@ export function ComputeControl() {
 function Computing({ run, onCancel }: { readonly run: Run; readonly onCancel: () => void }) {
   const done = run.progress?.done ?? run.points.filter((point) => point !== undefined).length;
   const total = run.progress?.total ?? run.total;
-  const secondsLeft = run.progress?.secondsLeft;
+  const { secondsLeft, basis } = run.progress ?? {};
   return (
     <div className="computeControl">
       <Button className="primaryButton" onPress={onCancel}>
@@ -46,6 +46,7 @@ function Computing({ run, onCancel }: { readonly run: Run; readonly onCancel: ()
             </span>
             <span className="hint">
               {done} of {total} {STAGES[run.progress?.stage ?? 'points'] ?? run.progress?.stage}
+              {basis === undefined ? '' : ` in ${basis.name} (${basis.number} of ${basis.of})`}
               {secondsLeft === undefined ? '' : `, ${formatDuration(secondsLeft)} left`}
             </span>
           </>
@@ -60,6 +61,7 @@ const STAGES: Readonly<Record<string, string>> = {
   points: 'points',
   neighbours: 'points compared with their neighbours',
   minima: 'minima',
+  limit: 'basis-set limits',
 };
 
 const howManyPlaces = (count: number): string =>
