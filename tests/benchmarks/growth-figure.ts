@@ -15,7 +15,7 @@ export const GROWTH_FIGURE_MILLIMETRES = 170;
 const POINTS_PER_MILLIMETRE = 72 / 25.4;
 const WIDTH = GROWTH_FIGURE_MILLIMETRES * POINTS_PER_MILLIMETRE;
 const PANELS_A_ROW = 3;
-const PANEL = { width: WIDTH / PANELS_A_ROW - 42, height: 95, left: 34, top: 22, bottom: 30 } as const;
+const PANEL = { width: WIDTH / PANELS_A_ROW - 42, height: 95, left: 34, top: 34, bottom: 30 } as const;
 
 /** A panel for each kind of work: what was measured, the fitted line, and, faint, the slope of theory. */
 export function growthFigure(growth: readonly Growth[]): Spec {
@@ -54,6 +54,11 @@ function panel(growth: Growth, column: number, top: number): GroupMark {
         height: { value: PANEL.height },
       },
     },
+    // what the axes take as the length of their grid
+    signals: [
+      { name: 'width', value: PANEL.width },
+      { name: 'height', value: PANEL.height },
+    ],
     data: [
       { name: 'measured', values: [...samples] },
       { name: 'fitted', values: line(exponent) },
@@ -77,7 +82,10 @@ function panel(growth: Growth, column: number, top: number): GroupMark {
     ],
     axes: [
       axis('x', 'bottom', size, { values: samples.map((sample) => sample.size) }),
-      axis('y', 'left', 'seconds', { tickCount: 4, format: '~g' }),
+      axis('y', 'left', 'seconds', {
+        values: powersOfTen(samples.map(({ seconds }) => seconds)),
+        format: '~g',
+      }),
     ],
     marks: [
       title(growth),
@@ -99,6 +107,14 @@ function panel(growth: Growth, column: number, top: number): GroupMark {
   };
 }
 
+/** Those around and between the values; too few to read by: also twice and five times each. */
+function powersOfTen(values: readonly number[]): number[] {
+  const lowest = Math.floor(Math.log10(Math.min(...values)));
+  const highest = Math.ceil(Math.log10(Math.max(...values)));
+  const powers = Array.from({ length: highest - lowest + 1 }, (_, i) => 10 ** (lowest + i));
+  return powers.length > 3 ? powers : powers.flatMap((power) => [power, 2 * power, 5 * power]);
+}
+
 function axis(scale: string, orient: 'bottom' | 'left', text: string, ticks: object) {
   return {
     scale,
@@ -107,6 +123,9 @@ function axis(scale: string, orient: 'bottom' | 'left', text: string, ticks: obj
     ...ticks,
     grid: true,
     gridColor: GRID,
+    gridWidth: 0.5,
+    domainWidth: 0.5,
+    tickWidth: 0.5,
     domainColor: FAINT_INK,
     tickColor: FAINT_INK,
     labelColor: INK,

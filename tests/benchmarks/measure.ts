@@ -22,3 +22,15 @@ export function callsPerSecond(work: () => void, seconds = 0.7): number {
   } while (performance.now() - start < 1000 * seconds);
   return (1000 * calls) / (performance.now() - start);
 }
+
+/** Seconds of the fastest of several calls: what else the machine does only ever makes a call slower. */
+export function fastestCall(work: () => void, seconds = 1.5): number {
+  const until = performance.now() + 1000 * seconds;
+  let fastest = Number.POSITIVE_INFINITY;
+  do {
+    const began = performance.now();
+    work();
+    fastest = Math.min(fastest, performance.now() - began);
+  } while (performance.now() < until);
+  return fastest / 1000;
+}
