@@ -1,8 +1,8 @@
 import { computePoint, type PreparedStudy } from '#engine';
 import { runStudy } from '../../app/calculation/run-study';
+import { inForm } from '../support/kernel-forms';
 import { atom, prepare, study } from '../support/studies';
 import { callsPerSecond, type Measurement } from './measure';
-import { withPlainKernels } from './plain-kernels';
 
 /** What the issue asks for: H2 in a minimal basis with every level, as fast as the mouse moves and much faster. */
 const HYDROGEN = prepare(
@@ -27,7 +27,7 @@ export async function curvePoints(): Promise<readonly Measurement[]> {
     {
       name: 'points of H2, STO-3G, RHF + CIS + CISD + full CI',
       ours: pointRate(HYDROGEN),
-      yardstick: withPlainKernels(() => pointRate(HYDROGEN)),
+      yardstick: inForm('plain', () => pointRate(HYDROGEN)),
       unit: 'points/s',
       against: 'the same with plain kernels',
     },
