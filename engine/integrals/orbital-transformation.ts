@@ -128,8 +128,11 @@ export function transformEqualPair(
       for (let r = 0, other = 0; r < columns; r++) {
         for (let s = 0; s <= r; s++, other++) {
           const source = (r * columns + s) * width;
-          for (let k = Math.max(0, other - first); k < width; k++) {
-            result[packedPair(first + k, other)] = results[source + k];
+          const start = Math.max(0, other - first);
+          let target = packedPair(first + start, other);
+          for (let k = start; k < width; k++) {
+            result[target] = results[source + k];
+            target += first + k + 1;
           }
         }
       }
