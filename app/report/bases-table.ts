@@ -1,7 +1,15 @@
-import type { Estimate, LevelFindings, LimitCurve, StudyResults } from '#engine';
+import {
+  type Estimate,
+  type LevelFindings,
+  type LimitCurve,
+  basisSetLimit as limitOf,
+  type StudyResults,
+  studiesInBases,
+} from '#engine';
+import { chosenPoints } from './chosen-points';
 import { coordinateCell } from './findings-table';
 import { fileGroup, type NamedResults } from './named-results';
-import { coordinateScale, type ScannedCoordinate } from './scanned-coordinate';
+import { coordinateScale, coordinateText, type ScannedCoordinate } from './scanned-coordinate';
 import { ended } from './sentences';
 import { withMinus } from './text-escapes';
 import type { TextTable } from './text-table';
@@ -10,7 +18,7 @@ const ENERGY_DECIMALS = 6;
 
 /** The findings of a study in each of its bases and in the limit that they tend to; a row a level and basis. */
 export function basesTable(files: readonly NamedResults[], shared: ScannedCoordinate): TextTable | undefined {
-  const compared = files.filter(({ results }) => (results.furtherBases ?? []).length > 0);
+  const compared = studiesCompared(files);
   if (compared.length === 0) return undefined;
   return {
     id: 'bases',
@@ -27,6 +35,47 @@ export function basesTable(files: readonly NamedResults[], shared: ScannedCoordi
     rows: compared.flatMap((file) => rowsOf(file, coordinateScale(file.results, shared))),
     notes: compared.flatMap(({ results }) => notesOf(results)),
   };
+}
+
+/** Energies that a systematic family of bases tends to, at some places from the minimum outwards. */
+export function limitTable(files: readonly NamedResults[], shared: ScannedCoordinate): TextTable | undefined {
+  const rows = studiesCompared(files).flatMap((file) => {
+    const { study, points, basisSetLimit: limit } = file.results;
+    if (limit?.kind !== 'found') return [];
+    const scale = coordinateScale(file.results, shared);
+    return study.levels.flatMap((level) =>
+      chosenPoints(file.results).flatMap((point) => {
+        const energy = limit.levels[level]?.energies[points.indexOf(point)];
+        const place =
+          point.coordinate === null ? 'as given' : coordinateText(point.coordinate * scale, '').trim();
+        return energy ? [[[...fileGroup(file), level].join(', '), place, withSpread(energy)]] : [];
+      }),
+    );
+  });
+  if (rows.length === 0) return undefined;
+  return {
+    id: 'limit',
+    heading: 'Energies in the limit of the basis',
+    columns: [
+      { label: 'Level', content: 'words' },
+      { label: shared.unit ? `${shared.label} (${shared.unit})` : shared.label },
+      { label: 'Energy (hartree)' },
+    ],
+    rows,
+    notes: [],
+  };
+}
+
+/** Studies that were run in several bases, or whose files differ in nothing but their bases. */
+function studiesCompared(files: readonly NamedResults[]): readonly NamedResults[] {
+  const inBases = files.filter(({ results }) => (results.furtherBases ?? []).length > 0);
+  const [first] = files;
+  if (inBases.length > 0 || first === undefined || files.length === 1) return inBases;
+  const [study, ...furtherBases] = studiesInBases(files.map(({ results }) => results)) ?? [];
+  if (study === undefined || furtherBases.length === 0) return [];
+  const { basis, findings } = study;
+  const basisSetLimit = limitOf([study, ...furtherBases]);
+  return [{ name: '', results: { ...first.results, basis, findings, furtherBases, basisSetLimit } }];
 }
 
 function rowsOf(file: NamedResults, scale: number): readonly (readonly string[])[] {

@@ -1,4 +1,5 @@
-import type { CorrelatedResult, PointResult, StudyResults } from '#engine';
+import type { CorrelatedResult, PointResult } from '#engine';
+import { chosenPoints } from './chosen-points';
 import type { NamedResults } from './named-results';
 import { type Citations, PAPERS } from './references';
 import { coordinateScale, coordinateText, type ScannedCoordinate } from './scanned-coordinate';
@@ -8,8 +9,6 @@ import type { TableColumn, TextTable } from './text-table';
 
 const ENERGY_DECIMALS = 6;
 const SHARE_DECIMALS = 4;
-/** Of the distance of the minimum: where correlation turns from dynamic to static. */
-const STRETCHES = [1, 1.5, 2, 3];
 const MOST_PAIRS = 8;
 const MOST_CONFIGURATIONS = 4;
 const SMALL_WEIGHT = 0.01;
@@ -100,27 +99,6 @@ const quantityOf = (of: Quantity['of'], result: CorrelatedResult | undefined) =>
 function correlatedAt(point: PointResult, level: string): CorrelatedResult | undefined {
   const result = point.levels[level];
   return result?.kind === 'correlated' && result.converged ? result : undefined;
-}
-
-/** The points next to some multiples of the lowest minimum's distance, and the last one. */
-function chosenPoints({ points, findings }: StudyResults): readonly PointResult[] {
-  const sorted = points.toSorted((a, b) => (a.coordinate ?? 0) - (b.coordinate ?? 0));
-  const minima = Object.values(findings).flatMap(({ minimum }) =>
-    minimum.kind === 'found' ? [minimum] : [],
-  );
-  const lowest = minima.toSorted((a, b) => a.energy - b.energy)[0];
-  const wanted = lowest
-    ? STRETCHES.map((stretch) => stretch * lowest.equilibriumDistance)
-    : [sorted[0]?.coordinate ?? 0];
-  const last = sorted.at(-1);
-  const nearest = wanted
-    .filter((place) => place <= (last?.coordinate ?? 0))
-    .map((place) =>
-      sorted.reduce((best, point) =>
-        Math.abs((point.coordinate ?? 0) - place) < Math.abs((best.coordinate ?? 0) - place) ? point : best,
-      ),
-    );
-  return [...new Set([...nearest, ...(last ? [last] : [])])];
 }
 
 function ranksTable(

@@ -1,6 +1,6 @@
 import type { StudyResults } from '#engine';
 import { formula } from '../study/formula';
-import { basesTable } from './bases-table';
+import { basesTable, limitTable } from './bases-table';
 import { cautionSummary } from './caution-summary';
 import { comparabilityNotes } from './comparability';
 import { correlationTables } from './correlation-tables';
@@ -71,7 +71,7 @@ export function reportDocument({ results, names, sentences, figure }: ReportInpu
       ...tables(excitedTable(files, shared)),
       ...files.flatMap((file) => tables(...franckCondonTables(file))),
     ]),
-    ...section('Basis sets', tables(basesTable(files, shared))),
+    ...section('Basis sets', tables(basesTable(files, shared), limitTable(files, shared))),
     ...section('Closed forms', tables(fitsTable(files))),
     ...section('Cautions', listOf(files.flatMap(cautionItems))),
     ...section('Method', methodBlocks(files, citations)),

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { ExcitedState, LevelFindings, StudyResults } from '#engine';
-import { basesTable } from '../../../app/report/bases-table';
+import { basesTable, limitTable } from '../../../app/report/bases-table';
 import { excitedTable, franckCondonTables } from '../../../app/report/excited-tables';
 import { fitsTable } from '../../../app/report/fits-table';
 import { isotopologuesTable, rotationTables } from '../../../app/report/further-levels-tables';
@@ -161,4 +161,36 @@ describe('basesTable', () => {
     ]);
     expect(table?.notes[0]).toContain('cc-pVDZ, cc-pVTZ');
   });
+
+  it('compares files of one study in several bases, with the limit at each place', () => {
+    const inBasis = (name: string, functions: number, shift: number) => {
+      const results = withFindings({});
+      const points = results.points.map((point) => {
+        const full = point.levels.FCI;
+        if (full?.kind !== 'correlated') throw new Error('sample changed');
+        const correlation = full.correlation - shift;
+        return { ...point, levels: { FCI: { ...full, energy: full.energy - shift, correlation } } };
+      });
+      const study = { ...results.study, basis: name, levels: ['FCI'] };
+      const basis = { ...results.basis, name, functions, notes: [name] };
+      return { ...results, study, basis: { ...basis, shells: shellsOf(functions) }, points };
+    };
+    const files = [inBasis('cc-pVDZ', 10, 0), inBasis('cc-pVTZ', 28, 0.01)].map((results, index) => ({
+      name: `file ${index}`,
+      results,
+    }));
+    expect(basesTable(files, shared)?.rows.map((row) => row.slice(0, 3))).toEqual([
+      ['FCI', 'cc-pVDZ', '10'],
+      ['FCI', 'cc-pVTZ', '28'],
+    ]);
+    const limit = limitTable(files, shared);
+    expect(limit?.rows.length).toBeGreaterThan(1);
+    expect(limit?.rows[0]?.[2]).toMatch(/^−1\.\d+ ± 0\.\d+$/);
+    expect(limitTable(files.slice(0, 1), shared)).toBeUndefined();
+  });
+});
+
+/** Numbers that tell one basis from another. */
+const shellsOf = (functions: number) => ({
+  H: [{ angularMomentum: 0, exponents: [functions], coefficients: [1] }],
 });
