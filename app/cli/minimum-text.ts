@@ -18,7 +18,9 @@ export function minimumText(findings: LevelFindings, study: StudyResults['study'
     case 'several':
       return `several minima, near ${minimum.near.map((value) => coordinateText(study, value)).join(' and ')}`;
     case 'none':
-      return undefined;
+      return study.scan && 'bonds' in study.scan.coordinate
+        ? `no minimum: ${minimum.reason.replace(/\.$/, '')}`
+        : undefined;
   }
 }
 

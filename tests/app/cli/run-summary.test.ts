@@ -51,9 +51,10 @@ describe('summarise', () => {
     expect(summarise(withUnconverged(37)).lines.at(-1)).toBe('… and 25 more, marked in the results file.');
   });
 
-  it('gives the minimum of a level with its depth, or says that the lowest point is at the end', () => {
+  it('gives the minimum of a level with its depth, or says why there is none', () => {
     expect(linesAbout(/^(RHF|CISD|FCI):/, results)).toEqual([
       'RHF: lowest at the end of the range, 0.4 Å: no minimum inside',
+      'CISD: no minimum: fewer than five converged points',
       expect.stringMatching(
         /^FCI: minimum of -1\.170000 hartree at 0\.74 Å, 0\.16\d{4} hartree below the curve at 4 Å$/,
       ),
