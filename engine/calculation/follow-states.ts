@@ -71,7 +71,7 @@ export function followStates(points: readonly PointResult[], level: string): rea
   const alongScan = byPoint
     .filter(({ length }) => length > 0)
     .sort(([a], [b]) => a.coordinate - b.coordinate);
-  const chains = chainStates(points, alongScan, level);
+  const chains = areAllLabelled(alongScan) ? chainsOfKinds(alongScan) : chainStates(points, alongScan, level);
   const ordered = [...groupBy(chains, kindOf)].flatMap(([, ofKind]) =>
     isOrdered(ofKind[0]) ? adiabatic(ofKind) : ofKind,
   );
@@ -125,6 +125,24 @@ function statesAt(point: PointResult, index: number, level: string, hasLabels: b
     default:
       return [];
   }
+}
+
+/** Whether the kind of every state is known alike: then no state can belong to a curve of another kind. */
+function areAllLabelled(alongScan: readonly (readonly StateAtPoint[])[]): boolean {
+  const all = alongScan.flat();
+  const hasTerm = (state: StateAtPoint) => state.symmetry?.term !== undefined;
+  return all.every(
+    (state) => state.spin !== 'mixed' && state.symmetry !== undefined && hasTerm(state) === hasTerm(all[0]),
+  );
+}
+
+/** The states of every kind together: they are shared out by energy, whichever of them would be matched. */
+function chainsOfKinds(alongScan: readonly (readonly StateAtPoint[])[]): readonly Chain[] {
+  return [...groupBy(alongScan.flat(), kindOf)].map(([, states]) => ({
+    states,
+    spin: states[0].spin,
+    ...(states[0].symmetry && { symmetry: states[0].symmetry }),
+  }));
 }
 
 function chainStates(
@@ -232,7 +250,8 @@ function adiabatic(chains: readonly Chain[]): Chain[] {
 }
 
 /** The kind that curves are counted within. */
-const kindOf = ({ spin, symmetry }: Chain): string => `${spin} ${symmetry ? symmetryKey(symmetry) : ''}`;
+const kindOf = ({ spin, symmetry }: Pick<Chain, 'spin' | 'symmetry'>): string =>
+  `${spin} ${symmetry ? symmetryKey(symmetry) : ''}`;
 
 const symmetryKey = ({ irrep, term }: StateSymmetry): string =>
   `${irrep} ${term ? `${term.lambda}${term.inversion ?? ''}${term.reflection ?? ''}` : ''}`;

@@ -20,18 +20,20 @@ export interface CurveOfState {
 export function curvesOfStates(points: LevelPoints): readonly CurveOfState[] {
   const { level, scanned } = points;
   const scan = points.all().slice(0, scanned);
-  let known: readonly FollowedState[] = [];
+  const alongScan = followStates(scan, level);
+  let known: readonly (FollowedState | undefined)[] = [];
   let knownPoints = -1;
   const followedNow = () => {
     if (points.all().length !== knownPoints) {
-      known = followStates(points.all(), level);
+      const all = followStates(points.all(), level);
+      known = alongScan.map((followed) => all.find((other) => agree(followed, other, scanned)));
       knownPoints = points.all().length;
     }
     return known;
   };
-  return followStates(scan, level).map((followed, index) => {
+  return alongScan.map((followed, index) => {
     const stateAt = (point: number) => {
-      const now = point < scanned ? followed : followedNow().find((other) => agree(followed, other, scanned));
+      const now = point < scanned ? followed : followedNow()[index];
       const place = now?.states[point];
       return place == null ? undefined : statesOf(points.all()[point], level)[place];
     };
