@@ -22,6 +22,8 @@ const FINAL_LEVELS = 80;
 export interface LowestState {
   readonly curve: LevelCurve;
   readonly well: Well | undefined;
+  /** absent: not solved for yet */
+  readonly vibration?: Vibration | undefined;
 }
 
 /** CIS counts from RHF, whose energies its excitations imply. */
@@ -58,7 +60,8 @@ export function excitedStates(
   const curves = curvesOfStates(points);
   const ground = lowestOf(curves, points, lowest);
   const excited = withoutPartners(curves, ground);
-  const vibration = excited.length > 0 ? vibrationOf(prepared, lowest.well?.solvable) : undefined;
+  const vibration =
+    lowest.vibration ?? (excited.length > 0 ? vibrationOf(prepared, lowest.well?.solvable) : undefined);
   return excited.map((state) =>
     readState(
       prepared,

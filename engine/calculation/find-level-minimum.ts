@@ -76,14 +76,15 @@ function curveFindings(
   const limit = dissociation?.kind === 'found' ? dissociation.energy : undefined;
   const { minimum, well } = readWell(prepared, curve, limit, seconds);
   const wellDepth = well && wellDepthOf(well.found.energy, farEnd!, curve.scan, dissociation);
+  const vibrations = well && vibrationFindings(study, computed, level, well, wellDepth);
   return {
     minimum,
     ...(dissociation && { dissociation }),
     ...(wellDepth && { wellDepth }),
     ...(well?.constants && { constants: well.constants }),
     ...(well && { fits: curveFits(curve, dissociation, wellDepth, well.expanded) }),
-    ...(well && vibrationFindings(study, computed, level, well, wellDepth)),
-    ...excitedFindings(prepared, points, { curve, well }, seconds),
+    ...vibrations,
+    ...excitedFindings(prepared, points, { curve, well, vibration: vibrations?.vibration }, seconds),
   };
 }
 

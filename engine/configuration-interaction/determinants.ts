@@ -52,6 +52,15 @@ export function orbitalsOnlyIn(first: OccupationString, second: OccupationString
   return occupiedOrbitals(first.map((word, w) => word & ~second[w]));
 }
 
+/** The lowest orbital occupied in `first` and not in `second`; −1 where there is none. Allocates nothing. */
+export function firstOrbitalOnlyIn(first: OccupationString, second: OccupationString): number {
+  for (let w = 0; w < first.length; w++) {
+    const word = first[w] & ~second[w];
+    if (word !== 0) return 32 * w + lowestBit(word);
+  }
+  return -1;
+}
+
 /** In how many orbitals occupied in one string is the other empty? Strings of equal electron count. */
 export function replacementsBetween(first: OccupationString, second: OccupationString): number {
   let differing = 0;

@@ -6,6 +6,7 @@ import {
 } from '../integrals/orbital-integrals';
 import {
   type Determinant,
+  firstOrbitalOnlyIn,
   isOccupied,
   moveElectron,
   type OccupationString,
@@ -98,8 +99,8 @@ function single(
   otherSpin: OccupationString,
   coulombOfOther: (p: number, q: number, k: number) => number,
 ): number {
-  const [q] = orbitalsOnlyIn(right, left);
-  const [p] = orbitalsOnlyIn(left, right);
+  const q = firstOrbitalOnlyIn(right, left);
+  const p = firstOrbitalOnlyIn(left, right);
   let element = integrals.oneElectron[p * integrals.orbitalCount + q];
   for (const k of occupiedOrbitals(right)) {
     element += repulsion(integrals, p, q, k, k) - repulsion(integrals, p, k, k, q);
@@ -124,10 +125,10 @@ function sameSpinDouble(
 
 /** One alpha and one beta spin orbital differ: ±(pq|rs). */
 function oppositeSpinDouble(left: Determinant, right: Determinant, integrals: OrbitalIntegrals): number {
-  const [q] = orbitalsOnlyIn(right.alpha, left.alpha);
-  const [p] = orbitalsOnlyIn(left.alpha, right.alpha);
-  const [s] = orbitalsOnlyIn(right.beta, left.beta);
-  const [r] = orbitalsOnlyIn(left.beta, right.beta);
+  const q = firstOrbitalOnlyIn(right.alpha, left.alpha);
+  const p = firstOrbitalOnlyIn(left.alpha, right.alpha);
+  const s = firstOrbitalOnlyIn(right.beta, left.beta);
+  const r = firstOrbitalOnlyIn(left.beta, right.beta);
   const phase = replacementPhase(right.alpha, q, p) * replacementPhase(right.beta, s, r);
   return phase * mixedRepulsion(integrals, p, q, r, s);
 }
@@ -153,8 +154,8 @@ export function oneElectronElement(
     return sum;
   }
   const [to, from] = alphaMoves === 1 ? [left.alpha, right.alpha] : [left.beta, right.beta];
-  const [q] = orbitalsOnlyIn(from, to);
-  const [p] = orbitalsOnlyIn(to, from);
+  const q = firstOrbitalOnlyIn(from, to);
+  const p = firstOrbitalOnlyIn(to, from);
   return replacementPhase(from, q, p) * operator[p * orbitalCount + q];
 }
 
@@ -174,8 +175,8 @@ export function spinSquaredElement(left: Determinant, right: Determinant): numbe
     return projection * (projection + 1) + beta.length - paired;
   }
   if (alphaMoves !== 1 || betaMoves !== 1) return 0;
-  const [p] = orbitalsOnlyIn(right.alpha, left.alpha);
-  const [q] = orbitalsOnlyIn(left.alpha, right.alpha);
+  const p = firstOrbitalOnlyIn(right.alpha, left.alpha);
+  const q = firstOrbitalOnlyIn(left.alpha, right.alpha);
   if (!isOccupied(right.beta, q) || isOccupied(left.beta, q)) return 0;
   if (isOccupied(right.beta, p) || !isOccupied(left.beta, p)) return 0;
   return -replacementPhase(right.alpha, p, q) * replacementPhase(right.beta, q, p);

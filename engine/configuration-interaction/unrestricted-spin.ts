@@ -2,8 +2,8 @@ import type { BetaIntegrals } from '../integrals/orbital-integrals';
 import { type DeterminantSpace, rowLength } from './determinant-space';
 import {
   type Determinant,
+  firstOrbitalOnlyIn,
   occupiedOrbitals,
-  orbitalsOnlyIn,
   replacementPhase,
   replacementsBetween,
 } from './determinants';
@@ -119,10 +119,10 @@ export function unrestrictedSpinSquaredElement(
   if (alphaMoves > 1 || betaMoves > 1) return 0;
   const alphaOccupied = occupiedOrbitals(right.alpha);
   const betaOccupied = occupiedOrbitals(right.beta);
-  const [p] = orbitalsOnlyIn(left.alpha, right.alpha);
-  const [q] = orbitalsOnlyIn(right.alpha, left.alpha);
-  const [r] = orbitalsOnlyIn(left.beta, right.beta);
-  const [s] = orbitalsOnlyIn(right.beta, left.beta);
+  const p = firstOrbitalOnlyIn(left.alpha, right.alpha);
+  const q = firstOrbitalOnlyIn(right.alpha, left.alpha);
+  const r = firstOrbitalOnlyIn(left.beta, right.beta);
+  const s = firstOrbitalOnlyIn(right.beta, left.beta);
   if (alphaMoves === 1 && betaMoves === 1) {
     const phase = replacementPhase(right.alpha, q, p) * replacementPhase(right.beta, s, r);
     return -phase * overlap[q * n + r] * overlap[p * n + s];

@@ -27,11 +27,13 @@ export function centrifugalDistortions(
 ): readonly (number | undefined)[] {
   const { from, to, centre, phase } = radialRange(curve, mass);
   const grid = radialGrid(centre, from, to, intervalsFor(centre, from, to, phase, PHASE_PER_STEP));
-  const solve = (rotation: number) =>
+  const solve = (rotation: number, guesses?: readonly number[]) =>
     boundStates(
       radialEquation(grid, (r) => curve.energyAt(r) - curve.limit + rotation / (2 * mass * r * r), mass, 0),
       0,
       mostLevels,
+      0,
+      guesses,
     ).states.map(({ energy, amplitude }) => ({
       energy,
       constant: integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
@@ -40,7 +42,12 @@ export function centrifugalDistortions(
   if (still.length === 0) return [];
   const interval = (still[1]?.energy ?? 0) - still[0].energy;
   const rotation = (RELATIVE_ROTATION * interval) / still[0].constant;
-  const [more, less] = [solve(rotation), solve(-rotation)];
+  const [more, less] = [rotation, -rotation].map((term) =>
+    solve(
+      term,
+      still.map(({ energy, constant }) => energy + term * constant),
+    ),
+  );
   return still.map(({ energy, constant }, v) => {
     if (!more[v] || !less[v] || rotation * constant > SMALL_AGAINST_BINDING * -energy) return undefined;
     return ((less[v].constant - more[v].constant) / (4 * rotation)) * HARTREE_IN_WAVENUMBERS;

@@ -1,7 +1,7 @@
 import { HARTREE_IN_WAVENUMBERS } from '../constants';
 import { type EnergyPoint, type InnerTail, innerTail, type OuterTail, outerTail } from './curve-tails';
 import type { RadialCurve } from './radial-range';
-import { rationalInterpolant } from './rational-interpolant';
+import { predictFromOthers, rationalInterpolant } from './rational-interpolant';
 
 /** What the interpolation runs in: r itself, its logarithm, or (r − re)/(r + re). */
 export type InterpolationVariable = 'distance' | 'logarithm' | 'ratio';
@@ -118,13 +118,9 @@ function mapTo(variable: InterpolationVariable, equilibrium: number): (distance:
   }
 }
 
-/** Error of the prediction of each inner point from all the others; 0 for the two at the ends, which have none beyond. */
+/** Error of the prediction of each inner point from all the others; 0 for the two at the ends. */
 function leaveOneOut(abscissas: readonly number[], values: readonly number[], degree: number): number[] {
-  return abscissas.map((x, k) => {
-    if (k === 0 || k === abscissas.length - 1) return 0;
-    const others = (list: readonly number[]) => list.filter((_, i) => i !== k);
-    return Math.abs(rationalInterpolant(others(abscissas), others(values), degree)(x) - values[k]);
-  });
+  return predictFromOthers(abscissas, values, degree).map((value, k) => Math.abs(value - values[k]));
 }
 
 /** Length of the residuals, without the wall higher than the well is deep, where no wave has weight. */

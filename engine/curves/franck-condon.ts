@@ -1,5 +1,5 @@
 import type { Termination } from '../termination';
-import { boundStates, integrateProduct, radialEquation } from './radial-equation';
+import { type BoundStates, boundStates, integrateProduct, radialEquation } from './radial-equation';
 import { intervalsFor, radialGrid } from './radial-grid';
 import { type RadialCurve, radialRange } from './radial-range';
 
@@ -60,21 +60,29 @@ export function franckCondonFactors(
   const phase = Math.max(...ranges.map((range) => (range.phase * range.centre) / scale));
   let intervals = intervalsFor(scale, from, to, phase, FIRST_PHASE);
 
-  const solve = () => {
+  const solve = (coarser?: SolvedOnGrid) => {
     const grid = radialGrid(scale, from, to, intervals);
-    const statesOf = (curve: RadialCurve, most: number) =>
+    const statesOf = (curve: RadialCurve, most: number, guesses: BoundStates | undefined) =>
       boundStates(
         radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, rotation),
         0,
         most,
+        0,
+        guesses?.states.map(({ energy }) => energy),
       );
-    const rows = statesOf(initial, Math.min(mostLevels, options.mostInitial ?? mostLevels));
-    const columns = statesOf(final, mostLevels);
+    const rows = statesOf(initial, Math.min(mostLevels, options.mostInitial ?? mostLevels), coarser?.rows);
+    const columns = statesOf(final, mostLevels, coarser?.columns);
     const squares = (f: (distance: number) => number) =>
       rows.states.map((row) =>
         columns.states.map((column) => integrateProduct(grid, row.amplitude, column.amplitude, f) ** 2),
       );
-    return { factors: squares(() => 1), squares, isComplete: rows.isComplete && columns.isComplete };
+    return {
+      rows,
+      columns,
+      factors: squares(() => 1),
+      squares,
+      isComplete: rows.isComplete && columns.isComplete,
+    };
   };
 
   let current = solve();
@@ -82,7 +90,7 @@ export function franckCondonFactors(
   let termination: Termination = { kind: 'iterationLimit', limit: HALVINGS };
   for (let halving = 0; halving < HALVINGS && termination.kind !== 'converged'; halving++) {
     intervals *= 2;
-    const finer = solve();
+    const finer = solve(current);
     uncertainty = largestChange(current.factors, finer.factors);
     current = finer;
     if (uncertainty <= tolerance && finer.isComplete) termination = { kind: 'converged' };
@@ -94,6 +102,11 @@ export function franckCondonFactors(
     uncertainty,
     termination,
   };
+}
+
+interface SolvedOnGrid {
+  readonly rows: BoundStates;
+  readonly columns: BoundStates;
 }
 
 /** Infinite where the number of levels changed. */
