@@ -258,6 +258,12 @@ describe('the window', () => {
     const study = await saved(/^Study/);
     expect(JSON.parse(study.bytes.toString())).toMatchObject(hydrogen);
 
+    const report = await saved(/^Report, PDF/);
+    expect(report.name).toBe('hydrogen-in-a-minimal-basis.report.pdf');
+    expect(report.bytes.subarray(0, 5).toString()).toBe('%PDF-');
+    const geometry = await saved(/^Geometry/);
+    expect(geometry.bytes.toString()).toMatch(/^# H₂, [\d.]+ a₀; x y z in bohr\nH .+\nH .+\n$/);
+
     const results = await saved(/^Results/);
     const { points } = JSON.parse(results.bytes.toString());
     expect(points).toHaveLength(hydrogen.scan.count);
@@ -306,7 +312,7 @@ describe('the window', () => {
           );
         });
       expect(await violations()).toEqual([]);
-      for (const editor of [/^Molecule:/, /^What is scanned:/, /^Basis set:/, /^Levels and states:/]) {
+      for (const editor of [/^Molecule:/, /^What is scanned:/, /^Basis set:/, /^Levels and states:/, /^Findings wanted/]) {
         await page.getByRole('button', { name: editor }).first().click();
         await page.getByRole('dialog').waitFor();
         expect(await violations()).toEqual([]);
