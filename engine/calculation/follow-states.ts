@@ -46,7 +46,8 @@ interface StateAtPoint {
   readonly energy: number;
   readonly spin: SpinName;
   readonly symmetry?: StateSymmetry;
-  readonly components: readonly StateComponent[];
+  /** costs more than all the rest, and is seldom asked for */
+  components(): readonly StateComponent[];
 }
 
 /** States joined so far, by rising coordinate, and what is known of them. */
@@ -60,14 +61,16 @@ interface Chain {
  * Joins the states of a CI level, or of CIS, to curves.
  *
  * @param points - in any order: they are followed by rising coordinate
+ * @param read - keeps what it has read, for calls with the same points and some more
  * @returns by kind, then number; empty for levels without states
  */
-export function followStates(points: readonly PointResult[], level: string): readonly FollowedState[] {
+export function followStates(
+  points: readonly PointResult[],
+  level: string,
+  read = stateReader(level),
+): readonly FollowedState[] {
   const group = commonestGroup(points);
-  const byPoint = points.map((point, index) =>
-    // an iteration that ran away leaves no number
-    statesAt(point, index, level, groupOf(point) === group).filter(({ energy }) => Number.isFinite(energy)),
-  );
+  const byPoint = points.map((point, index) => read(point, index, groupOf(point) === group));
   const alongScan = byPoint
     .filter(({ length }) => length > 0)
     .sort(([a], [b]) => a.coordinate - b.coordinate);
@@ -94,6 +97,21 @@ function commonestGroup(points: readonly PointResult[]): string | undefined {
 
 const groupOf = ({ symmetry }: PointResult): string => `${symmetry?.pointGroup} ${symmetry?.linear}`;
 
+type StateReader = (point: PointResult, index: number, hasLabels: boolean) => readonly StateAtPoint[];
+
+/** Reads the states of every point once. */
+export function stateReader(level: string): StateReader {
+  const known: { readonly hasLabels: boolean; readonly states: readonly StateAtPoint[] }[] = [];
+  return (point, index, hasLabels) => {
+    if (known[index]?.hasLabels !== hasLabels) {
+      // an iteration that ran away leaves no number
+      const states = statesAt(point, index, level, hasLabels).filter(({ energy }) => Number.isFinite(energy));
+      known[index] = { hasLabels, states };
+    }
+    return known[index].states;
+  };
+}
+
 function statesAt(point: PointResult, index: number, level: string, hasLabels: boolean): StateAtPoint[] {
   const result = point.levels[level];
   const common = { point: index, coordinate: point.coordinate ?? 0 };
@@ -106,7 +124,7 @@ function statesAt(point: PointResult, index: number, level: string, hasLabels: b
         energy,
         spin,
         ...labelled(symmetry),
-        components: leading,
+        components: () => leading,
       }));
     case 'singles':
       return result.states.map(({ energy, spin, symmetry, leading }, place) => ({
@@ -116,23 +134,35 @@ function statesAt(point: PointResult, index: number, level: string, hasLabels: b
         spin,
         ...labelled(symmetry),
         // an electron and the hole that it left: the same spin function for every pair
-        components: leading.map(({ from, to, weight }) => ({
-          coefficient: Math.sqrt(weight),
-          alpha: [from],
-          beta: [to],
-        })),
+        components: once(() =>
+          leading.map(({ from, to, weight }) => ({
+            coefficient: Math.sqrt(weight),
+            alpha: [from],
+            beta: [to],
+          })),
+        ),
       }));
     default:
       return [];
   }
 }
 
+function once<T>(make: () => T): () => T {
+  let made: T | undefined;
+  return () => {
+    made ??= make();
+    return made;
+  };
+}
+
 /** Whether the kind of every state is known alike: then no state can belong to a curve of another kind. */
 function areAllLabelled(alongScan: readonly (readonly StateAtPoint[])[]): boolean {
-  const all = alongScan.flat();
-  const hasTerm = (state: StateAtPoint) => state.symmetry?.term !== undefined;
-  return all.every(
-    (state) => state.spin !== 'mixed' && state.symmetry !== undefined && hasTerm(state) === hasTerm(all[0]),
+  const hasTerm = alongScan[0]?.[0].symmetry?.term !== undefined;
+  return alongScan.every((states) =>
+    states.every(
+      ({ spin, symmetry }) =>
+        spin !== 'mixed' && symmetry !== undefined && (symmetry.term !== undefined) === hasTerm,
+    ),
   );
 }
 
@@ -213,7 +243,7 @@ function isCompatible({ spin, symmetry }: Chain, state: StateAtPoint): boolean {
 }
 
 function joiningCost(chain: Chain, state: StateAtPoint, match: OrbitalMatch): number {
-  const overlap = stateOverlap(chain.states.at(-1)!.components, state.components, match);
+  const overlap = stateOverlap(chain.states.at(-1)!.components(), state.components(), match);
   const deviation = Math.abs(extrapolated(chain, state.coordinate) - state.energy);
   return 1 - (overlap ?? UNKNOWN_OVERLAP) + (ENERGY_WEIGHT * deviation) / (deviation + ENERGY_SCALE);
 }
@@ -260,8 +290,9 @@ const byBeginning = ({ states: [a] }: Chain, { states: [b] }: Chain): number =>
   a.coordinate - b.coordinate || a.energy - b.energy || a.place - b.place;
 
 function placesOf(states: readonly StateAtPoint[], points: number): readonly (number | null)[] {
-  const places = new Map(states.map(({ point, place }) => [point, place]));
-  return Array.from({ length: points }, (_, point) => places.get(point) ?? null);
+  const places = new Array<number | null>(points).fill(null);
+  for (const { point, place } of states) places[point] = place;
+  return places;
 }
 
 function groupBy<T, K>(items: readonly T[], keyOf: (item: T) => K): Map<K, T[]> {

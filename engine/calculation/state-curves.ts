@@ -1,4 +1,4 @@
-import { type FollowedState, followStates } from './follow-states';
+import { type FollowedState, followStates, stateReader } from './follow-states';
 import { curveThrough, type LevelCurve, type LevelPoints } from './level-curve';
 import type { CorrelatedState, PointResult, SinglesState } from './result';
 
@@ -20,12 +20,13 @@ export interface CurveOfState {
 export function curvesOfStates(points: LevelPoints): readonly CurveOfState[] {
   const { level, scanned } = points;
   const scan = points.all().slice(0, scanned);
-  const alongScan = followStates(scan, level);
+  const read = stateReader(level);
+  const alongScan = followStates(scan, level, read);
   let known: readonly (FollowedState | undefined)[] = [];
   let knownPoints = -1;
   const followedNow = () => {
     if (points.all().length !== knownPoints) {
-      const all = followStates(points.all(), level);
+      const all = followStates(points.all(), level, read);
       known = alongScan.map((followed) => all.find((other) => agree(followed, other, scanned)));
       knownPoints = points.all().length;
     }

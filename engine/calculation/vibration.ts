@@ -108,7 +108,12 @@ export function vibrationOn(
   // an interpolant that dips below the computed minimum has left the curve
   if (levels[0].energy <= minimumEnergy)
     return doubtful('The curve has a kink; levels on it would be invented.');
-  const distortions = centrifugalDistortions(curve, molecule.reducedMass, levels.length);
+  const distortions = centrifugalDistortions(
+    curve,
+    molecule.reducedMass,
+    levels.length,
+    levels.map(({ energy }) => energy),
+  );
   const place = placeAbove(minimumEnergy);
   const rotating = rotations
     .filter((rotation) => rotation >= lambda)

@@ -18,16 +18,18 @@ const SMALL_AGAINST_BINDING = 1e-2;
  *
  * @param mass - reduced mass, electron masses
  * @param mostLevels - from the lowest
+ * @param known - the levels as far as they are known, hartree, with the curve's zero
  * @returns cm⁻¹, for each level; undefined for one that lies too close to the limit for an expansion in J(J + 1)
  */
 export function centrifugalDistortions(
   curve: RadialCurve,
   mass: number,
   mostLevels: number,
+  known: readonly number[] = [],
 ): readonly (number | undefined)[] {
   const { from, to, centre, phase } = radialRange(curve, mass);
   const grid = radialGrid(centre, from, to, intervalsFor(centre, from, to, phase, PHASE_PER_STEP));
-  const solve = (rotation: number, guesses?: readonly number[]) =>
+  const solve = (rotation: number, guesses: readonly number[]) =>
     boundStates(
       radialEquation(grid, (r) => curve.energyAt(r) - curve.limit + rotation / (2 * mass * r * r), mass, 0),
       0,
@@ -38,7 +40,10 @@ export function centrifugalDistortions(
       energy,
       constant: integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
     }));
-  const still = solve(0);
+  const still = solve(
+    0,
+    known.map((energy) => energy - curve.limit),
+  );
   if (still.length === 0) return [];
   const interval = (still[1]?.energy ?? 0) - still[0].energy;
   const rotation = (RELATIVE_ROTATION * interval) / still[0].constant;

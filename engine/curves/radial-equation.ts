@@ -34,8 +34,11 @@ const FORBIDDEN_ACTION = 42;
 const LARGEST_T = 0.4;
 /** Sweeps allowed for one level: bisection to isolate it, then a few Newton steps. */
 const SWEEPS = 200;
-/** Energies closer than this fraction of the well are the same: below 1e-9 cm⁻¹. */
-const ENERGY_RESOLUTION = 1e-14;
+/**
+ * A correction below this fraction of the well is the last: with it the energy is right to a power of that, and the
+ * wave to less than 1e-5 even where the next level is only 0.01 cm⁻¹ away.
+ */
+const ENERGY_RESOLUTION = 1e-12;
 /** A guess is taken to be right to this fraction of the well: a coarser grid's levels are. */
 const GUESS_MARGIN = 1e-6;
 /** Corrections below this fraction of the well that no longer fall are rounding, and taken as the end. */
@@ -82,14 +85,14 @@ export function boundStates(
   first = 0,
   guesses: readonly number[] = [],
 ): BoundStates {
-  const count = countLevelsBelow(equation, below);
+  const sweeps = sweepsOf(equation);
+  const count = countLevelsBelow(sweeps, below);
   const wanted = Math.min(count, most);
   const lowest = equation.potential.reduce((a, b) => Math.min(a, b));
   const brackets = Array.from(
     { length: wanted },
     (): Bracket => ({ low: lowest, high: below, levelsBelowLow: 0, levelsBelowHigh: count }),
   );
-  const sweeps = sweepsOf(equation);
   const states: RadialState[] = [];
   for (let v = first; v < wanted; v++) {
     const state = solveLevel(sweeps, v, brackets, below - lowest, guesses[v]);
@@ -100,9 +103,9 @@ export function boundStates(
 }
 
 /** Number of levels below an energy. */
-function countLevelsBelow(equation: RadialEquation, energy: number): number {
-  const window = windowOf(equation, energy);
-  return window ? sweepForward(equation, energy, window, new Float64Array(equation.potential.length)) : 0;
+function countLevelsBelow(sweeps: Sweeps, energy: number): number {
+  const window = windowOf(sweeps.equation, energy);
+  return window ? sweepForward(sweeps, energy, window) : 0;
 }
 
 /** Energies that one level lies between, and how many levels lie below each. */
@@ -124,18 +127,23 @@ function narrow(brackets: readonly Bracket[], energy: number, count: number): vo
 /** An equation with room for its sweeps. */
 interface Sweeps {
   readonly equation: RadialEquation;
+  /** 1/(1 − T) and U − 2 at the energy of the last sweep outwards */
+  readonly reciprocal: Float64Array;
+  readonly excess: Float64Array;
   readonly outward: Float64Array;
   readonly inward: Float64Array;
   readonly wave: Float64Array;
 }
 
 function sweepsOf(equation: RadialEquation): Sweeps {
-  const n = equation.potential.length;
+  const room = () => new Float64Array(equation.potential.length);
   return {
     equation,
-    outward: new Float64Array(n),
-    inward: new Float64Array(n),
-    wave: new Float64Array(n),
+    reciprocal: room(),
+    excess: room(),
+    outward: room(),
+    inward: room(),
+    wave: room(),
   };
 }
 
@@ -152,7 +160,7 @@ function solveLevel(
   well: number,
   guess?: number,
 ): RadialState | undefined {
-  const { equation, outward } = sweeps;
+  const { equation } = sweeps;
   const bracket = brackets[quantumNumber];
   const isInside = (energy: number) => energy > bracket.low && energy < bracket.high;
   const trials = guess === undefined ? [] : [guess - GUESS_MARGIN * well, guess + GUESS_MARGIN * well];
@@ -162,17 +170,17 @@ function solveLevel(
     const trial = corrected ?? trials.shift();
     const energy = trial !== undefined && isInside(trial) ? trial : (bracket.low + bracket.high) / 2;
     const window = windowOf(equation, energy);
-    const count = window ? sweepForward(equation, energy, window, outward) : 0;
+    const count = window ? sweepForward(sweeps, energy, window) : 0;
     narrow(brackets, energy, count);
     const isIsolated =
       bracket.levelsBelowLow === quantumNumber && bracket.levelsBelowHigh === quantumNumber + 1;
     corrected = undefined;
     if (!window || !isIsolated) continue;
-    const correction = join(sweeps, energy, window);
+    const correction = join(sweeps, window);
     const size = Math.abs(correction);
     const isRounding = size <= ENERGY_ROUNDING * well && size >= lastCorrection / 2;
     if (size <= ENERGY_RESOLUTION * well || isRounding) {
-      return { energy: energy + correction, amplitude: amplitudeOf(sweeps, energy, window) };
+      return { energy: energy + correction, amplitude: amplitudeOf(sweeps, window) };
     }
     lastCorrection = size;
     corrected = energy + correction;
@@ -211,17 +219,18 @@ function windowOf({ potential, weights }: RadialEquation, energy: number): Windo
  * @returns the number of negative ratios
  */
 function sweepForward(
-  { potential, weights }: RadialEquation,
+  { equation: { potential, weights }, reciprocal, excess, outward }: Sweeps,
   energy: number,
   [first, last]: Window,
-  outward: Float64Array,
 ): number {
   let count = 0;
   // beyond the window F = 0: the ratio is infinite and 1 − 1/ratio is 1
   let carried = 1;
   for (let i = first; i <= last; i++) {
     const t = weights[i] * (potential[i] - energy);
-    const d = (12 * t) / (1 - t) + carried;
+    reciprocal[i] = 1 / (1 - t);
+    excess[i] = 12 * t * reciprocal[i];
+    const d = excess[i] + carried;
     outward[i] = d;
     if (d < -1) count++;
     carried = d / (1 + d);
@@ -234,19 +243,16 @@ function sweepForward(
  * γ·F_m²/Σ12·w_i·φ_i², γ being the mismatch at the joint m.
  */
 function join(
-  { equation: { potential, weights }, outward, inward, wave }: Sweeps,
-  energy: number,
+  { equation: { weights }, reciprocal, excess, outward, inward, wave }: Sweeps,
   [first, last]: Window,
 ): number {
   let carried = 1;
   let joint = first;
   let mismatch = Number.POSITIVE_INFINITY;
   for (let i = last; i >= first; i--) {
-    const t = weights[i] * (potential[i] - energy);
-    const q = (12 * t) / (1 - t);
-    inward[i] = q + carried;
+    inward[i] = excess[i] + carried;
     carried = inward[i] / (1 + inward[i]);
-    const gap = outward[i] + inward[i] - q;
+    const gap = outward[i] + inward[i] - excess[i];
     if (Math.abs(gap) < Math.abs(mismatch)) [joint, mismatch] = [i, gap];
   }
   wave[joint] = 1;
@@ -254,7 +260,7 @@ function join(
   for (let i = joint + 1; i <= last; i++) wave[i] = wave[i - 1] / (1 + inward[i]);
   let denominator = 0;
   for (let i = first; i <= last; i++) {
-    const phi = wave[i] / (1 - weights[i] * (potential[i] - energy));
+    const phi = wave[i] * reciprocal[i];
     denominator += 12 * weights[i] * phi * phi;
   }
   return mismatch / denominator;
@@ -262,15 +268,14 @@ function join(
 
 /** u of the wave that was joined last, normalised. */
 function amplitudeOf(
-  { equation: { grid, potential, weights }, wave }: Sweeps,
-  energy: number,
+  { equation: { grid, potential }, reciprocal, wave }: Sweeps,
   [first, last]: Window,
 ): Float64Array {
   const amplitude = new Float64Array(potential.length);
   let norm = 0;
   for (let i = first; i <= last; i++) {
     // u² dr = (dr/dy)²φ² dy
-    amplitude[i] = (Math.sqrt(grid.stretch[i]) * wave[i]) / (1 - weights[i] * (potential[i] - energy));
+    amplitude[i] = Math.sqrt(grid.stretch[i]) * wave[i] * reciprocal[i];
     norm += amplitude[i] ** 2 * grid.stretch[i] * grid.step;
   }
   const scale = Math.sign(amplitude[first]) / Math.sqrt(norm);

@@ -23,6 +23,8 @@ export const INSTABILITY = -1e-5;
 const DESCENTS = 6;
 /** First step along an unstable direction, in radians of rotation; large enough to leave the saddle. */
 export const DESCENT_STEP = 0.2;
+/** Fock matrices that differ by no more than this, hartree, are those of one determinant. */
+const SAME_FOCK = 1e-5;
 /** Of two solutions the later one wins only if it is lower by more than this, hartree. */
 const DISTINCT = 1e-9;
 
@@ -45,7 +47,7 @@ export function convergeLowest<P extends MeanFieldPoint>(
   for (const start of starts) {
     const fock = functional.startingFock(start);
     if (fock === undefined) continue;
-    const found = attempt.descend(fock);
+    const found = attempt.descend(fock, best);
     if (best === undefined || isBetter(found, best)) best = found;
   }
   if (best === undefined) throw new RangeError('convergeLowest: no usable starting point');
@@ -56,6 +58,15 @@ function isBetter<P extends MeanFieldPoint>(one: Converged<P>, other: Converged<
   const converged = one.termination.kind === 'converged';
   if (converged !== (other.termination.kind === 'converged')) return converged;
   return one.point.energy < other.point.energy - DISTINCT;
+}
+
+function isSame<P extends MeanFieldPoint>(one: Converged<P>, other: Converged<P>): boolean {
+  return (
+    one.termination.kind === 'converged' &&
+    other.termination.kind === 'converged' &&
+    Math.abs(one.point.energy - other.point.energy) <= DISTINCT &&
+    one.point.fock.every((value, i) => Math.abs(value - other.point.fock[i]) <= SAME_FOCK)
+  );
 }
 
 /** Convergence of one problem from several starts, counting iterations over all. */
@@ -69,9 +80,14 @@ class Attempt<P extends MeanFieldPoint> {
     private readonly stage: string,
   ) {}
 
-  /** From a Fock matrix to a determinant that no rotation lowers. */
-  descend(firstFock: Float64Array): Converged<P> {
+  /**
+   * From a Fock matrix to a determinant that no rotation lowers.
+   *
+   * @param known - such a determinant: one start more that leads to it needs no more than the iterations
+   */
+  descend(firstFock: Float64Array, known?: Converged<P>): Converged<P> {
     let current = this.converge(firstFock);
+    if (known?.stability !== undefined && isSame(current, known)) return known;
     for (let descent = 0; descent < DESCENTS; descent++) {
       if (current.termination.kind !== 'converged' || current.point.gradient.length === 0) return current;
       const { value, vector } = lowestRotationHessian(this.functional, current.point, this.control);
