@@ -1,5 +1,5 @@
 import { electronRepulsionKernels } from '../kernels/electron-repulsion';
-import { KernelMemory } from '../kernels/kernel-memory';
+import { type KernelMemory, tablesMemory } from '../kernels/kernel-memory';
 import { boysTaylorTable, INVERSE_ODD } from '../special-functions/boys-function';
 import { cartesianIndex } from './cartesian-components';
 import type { Quartet } from './coulomb-quartets';
@@ -53,7 +53,7 @@ export function withFastQuartets<Result>(
 }
 
 function prepareMemory(): IntegralMemory {
-  const memory = new KernelMemory();
+  const memory = tablesMemory();
   const { axis, parent, grandparent, multiplicity } = HERMITE_RECURSION;
   const recursion = memory.float64(3 * axis.length);
   const offsets = new Int32Array(recursion.view.buffer, recursion.address, 6 * axis.length);

@@ -1,5 +1,6 @@
 import { decodeBase64 } from './base64';
 import { matrixProductCode } from './compiled/matrix-product';
+import { KernelMemoryFull, scratchMemory, tablesMemory } from './kernel-memory';
 import { webAssembly } from './web-assembly';
 
 /** `fast`: compiled kernels with 128-bit vectors; `plain`: the TypeScript that they are checked against. */
@@ -20,5 +21,12 @@ export function chooseKernels(form: KernelForm): void {
 
 function canRunFast(): boolean {
   // false where the processor, or the host, knows no 128-bit vectors or no shared memory
-  return webAssembly?.validate(decodeBase64(matrixProductCode)) ?? false;
+  if (!webAssembly?.validate(decodeBase64(matrixProductCode))) return false;
+  try {
+    // each reserves addresses for more than 4 GiB, which batch systems that limit them refuse
+    return [scratchMemory(), tablesMemory()].every(({ wasm }) => wasm !== undefined);
+  } catch (error) {
+    if (error instanceof KernelMemoryFull) return false;
+    throw error;
+  }
 }

@@ -16,16 +16,29 @@ const ALIGNMENT = 64;
 
 /**
  * Memory that kernels work in. It is shared memory: several threads may run kernels on one, and views stay valid
- * when it grows. It grows as needed up to 4 GiB and is given back as a whole, when nobody refers to it any more.
+ * when it grows. It is reserved at the first use, grows as needed up to 4 GiB and is given back as a whole, when nobody
+ * refers to it any more.
  */
 export class KernelMemory {
-  readonly wasm: WasmMemory;
+  #wasm: WasmMemory | undefined;
   // address 0 is left free, so that no block has it
   #top = ALIGNMENT;
 
   /** @param wasm - memory of another thread to take part in; only that thread may then take blocks */
   constructor(wasm?: WasmMemory) {
-    this.wasm = wasm ?? new webAssembly.Memory({ initial: 1, maximum: MOST_PAGES, shared: true });
+    this.#wasm = wasm;
+  }
+
+  /** @throws KernelMemoryFull where the host has no addresses left for it */
+  get wasm(): WasmMemory {
+    if (!this.#wasm) {
+      try {
+        this.#wasm = new webAssembly.Memory({ initial: 1, maximum: MOST_PAGES, shared: true });
+      } catch (error) {
+        throw new KernelMemoryFull('no kernel memory is to be had', { cause: error });
+      }
+    }
+    return this.#wasm;
   }
 
   /** @throws KernelMemoryFull */
@@ -77,9 +90,16 @@ export class KernelMemory {
 }
 
 let scratch: KernelMemory | undefined;
+let tables: KernelMemory | undefined;
 
 /** The memory of this thread for what lives no longer than one call; take blocks inside its `scope`. */
 export function scratchMemory(): KernelMemory {
   scratch ??= new KernelMemory();
   return scratch;
+}
+
+/** The memory of this thread for tables of integrals, which stay at its bottom. */
+export function tablesMemory(): KernelMemory {
+  tables ??= new KernelMemory();
+  return tables;
 }

@@ -23,6 +23,17 @@ describe('kernelForm', () => {
   it.each([
     ['that knows no WebAssembly', undefined],
     ['that refuses our code', { validate: () => false }],
+    [
+      'that gives too few addresses',
+      {
+        validate: () => true,
+        Memory: class {
+          constructor() {
+            throw new RangeError('could not allocate memory');
+          }
+        },
+      },
+    ],
   ])('identity: is plain on a machine %s', async (_, webAssembly) => {
     vi.stubGlobal('WebAssembly', webAssembly);
     vi.resetModules();
