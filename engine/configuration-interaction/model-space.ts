@@ -1,5 +1,5 @@
 import { offZero } from '../linear-algebra/davidson';
-import { multiply } from '../linear-algebra/dense';
+import { congruence, multiply } from '../linear-algebra/dense';
 import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
 import { diagonaliseWithin, splitRuns } from './degenerate-states';
 
@@ -26,6 +26,8 @@ export interface ModelSpace {
 const SAME_CONFIGURATION = 1e-9;
 /** Matrix elements below this, in hartree, do not join determinants into one block. */
 const UNCOUPLED = 1e-10;
+/** Basis states of one block from which it pays to take one spin after the other. */
+const FEWEST_BY_SPIN = 24;
 /** Guards are taken up to this far above the highest state wanted, hartree … */
 const GUARD_WINDOW = 0.5;
 /** … and so many times the energy by which the model's lowest state lies below its lowest single configuration. */
@@ -132,23 +134,90 @@ function diagonaliseBlock(
 ) {
   const size = members.length;
   const block = symmetricMatrix(size, (row, column) => hamiltonian[members[row] * n + members[column]]);
+  const operator =
+    spinSquared && symmetricMatrix(size, (row, column) => spinSquared(members[row], members[column]));
+  const found = (operator && diagonaliseBySpin(block, operator, size)) ?? diagonalise(block, operator, size);
+  return found.map(({ energy, vector, spin }) => {
+    const whole = new Float64Array(n);
+    members.forEach((i, row) => {
+      whole[i] = vector[row];
+    });
+    return { energy, vector: whole, spin: Math.round(spin) };
+  });
+}
+
+interface BlockState {
+  readonly energy: number;
+  readonly vector: Float64Array;
+  /** ⟨S²⟩ */
+  readonly spin: number;
+}
+
+function diagonalise(block: Float64Array, operator: Float64Array | undefined, size: number): BlockState[] {
   const { values, vectors: columns } = symmetricEigen(block, size);
-  const vectors = Array.from({ length: size }, (_, k) => values.map((_, i) => columns[i * size + k]));
+  const vectors = Array.from({ length: size }, (_, k) => columnOf(columns, size, k));
   let spins: Float64Array = new Float64Array(size);
-  if (spinSquared) {
-    const operator = symmetricMatrix(size, (row, column) => spinSquared(members[row], members[column]));
+  if (operator) {
     const runs = splitRuns([{ first: 0, last: size }], values, UNCOUPLED);
     spins = diagonaliseWithin(runs, values, vectors, (vector, product) => {
       product.set(multiply(operator, vector, size, size, 1));
     });
   }
-  return vectors.map((vector, k) => {
-    const whole = new Float64Array(n);
-    members.forEach((i, row) => {
-      whole[i] = vector[row];
-    });
-    return { energy: values[k], vector: whole, spin: Math.round(spins[k]) };
+  return vectors.map((vector, k) => ({ energy: values[k], vector, spin: spins[k] }));
+}
+
+/**
+ * One spin after the other, over the eigenvectors of S²: smaller matrices, the largest half as wide or less.
+ *
+ * @returns undefined where the basis states do not close under spin, so that H joins those eigenvectors
+ */
+function diagonaliseBySpin(
+  block: Float64Array,
+  operator: Float64Array,
+  size: number,
+): BlockState[] | undefined {
+  if (size < FEWEST_BY_SPIN) return undefined;
+  const { columns, spins } = spinFunctions(operator, size);
+  const transformed = congruence(block, columns, size, size);
+  for (let i = 0; i < size; i++) {
+    for (let j = 0; j < i; j++) {
+      if (spins[i] !== spins[j] && Math.abs(transformed[i * size + j]) > UNCOUPLED) return undefined;
+    }
+  }
+  return [...new Set(spins)].flatMap((spin) => {
+    const members = [...spins.keys()].filter((k) => spins[k] === spin);
+    const count = members.length;
+    const ofSpin = symmetricMatrix(count, (i, j) => transformed[members[i] * size + members[j]]);
+    const { values, vectors } = symmetricEigen(ofSpin, count);
+    const chosen = new Float64Array(size * count);
+    for (let row = 0; row < size; row++) {
+      for (let k = 0; k < count; k++) chosen[row * count + k] = columns[row * size + members[k]];
+    }
+    const whole = multiply(chosen, vectors, size, count, count);
+    return Array.from(values, (energy, k) => ({ energy, vector: columnOf(whole, count, k), spin }));
   });
+}
+
+/** Eigenvectors of S², each within a set of basis states that S² joins, and their eigenvalues rounded. */
+function spinFunctions(operator: Float64Array, size: number) {
+  const columns = new Float64Array(size * size);
+  const spins = new Float64Array(size);
+  let place = 0;
+  for (const members of coupledBlocks(operator, size)) {
+    const count = members.length;
+    const set = symmetricMatrix(count, (i, j) => operator[members[i] * size + members[j]]);
+    const { values, vectors } = symmetricEigen(set, count);
+    for (let k = 0; k < count; k++, place++) {
+      spins[place] = Math.round(values[k]);
+      for (let i = 0; i < count; i++) columns[members[i] * size + place] = vectors[i * count + k];
+    }
+  }
+  return { columns, spins };
+}
+
+/** Column k of a matrix with so many columns. */
+function columnOf(matrix: Float64Array, columns: number, k: number): Float64Array {
+  return Float64Array.from({ length: matrix.length / columns }, (_, row) => matrix[row * columns + k]);
 }
 
 /** Model vectors by their number. */

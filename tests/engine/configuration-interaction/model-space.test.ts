@@ -44,6 +44,55 @@ describe('buildModelSpace', () => {
     expect(new Set(model.sectors).size).toBe(2);
   });
 
+  describe('with a spin operator', () => {
+    const size = 40;
+    /** ½(1 ∓ 1): pairs of determinants that exchange spins make a singlet and a triplet. */
+    const spinSquared = (i: number, j: number) => {
+      if (Math.floor(i / 2) !== Math.floor(j / 2)) return 0;
+      return i === j ? 1 : -1;
+    };
+    const exchange = (i: number) => i + 1 - 2 * (i % 2);
+    const random = randomSymmetric(size, seededRandom(12));
+    const symmetric = random.map((value, k) => {
+      const [i, j] = [Math.floor(k / size), k % size];
+      return value + random[exchange(i) * size + exchange(j)];
+    });
+    const modelWithSpin = (matrix: Float64Array) =>
+      buildModelSpace(
+        Float64Array.from({ length: size }, (_, i) => matrix[i * (size + 1)]),
+        size,
+        (places) => ({
+          hamiltonian: (i, j) => matrix[places[i] * size + places[j]],
+          spinSquared: (i, j) => spinSquared(places[i], places[j]),
+        }),
+      );
+
+    it('identity: the states of every spin are those of the whole, and eigenvectors of both', () => {
+      const model = modelWithSpin(symmetric);
+      const exact = symmetricEigen(symmetric, size).values;
+      expect(new Set(model.spins)).toEqual(new Set([0, 2]));
+      model.energies.forEach((energy, k) => {
+        expect(energy).toBeCloseTo(exact[k], 11);
+        const vector = model.vectors[k];
+        vector.forEach((value, i) => {
+          const turned = value - vector[exchange(i)];
+          expect(turned).toBeCloseTo(model.spins[k] * value, 10);
+          let product = 0;
+          for (let j = 0; j < size; j++) product += symmetric[i * size + j] * vector[j];
+          expect(product).toBeCloseTo(energy * value, 10);
+        });
+      });
+    });
+
+    it('identity: where H joins different spins, as in a space that does not close, states are still those of H', () => {
+      const model = modelWithSpin(random);
+      const exact = symmetricEigen(random, size).values;
+      model.energies.forEach((energy, k) => {
+        expect(energy).toBeCloseTo(exact[k], 11);
+      });
+    });
+  });
+
   it('identity: takes the lowest places and does not tear equal ones apart', () => {
     const diagonal = [5, 1, 3, 2, 3, 4, 3];
     const choose = (size: number) =>
