@@ -43,10 +43,11 @@ export function followNeighbours(
   const { problem } = inStage(control, 'integrals', () =>
     molecularIntegrals(molecule, placeBasis(prepared.basisSet, molecule)),
   );
-  const options = { ...DEFAULT_SELF_CONSISTENCY, energyTolerance: prepared.study.convergence.energy };
+  const settings = { ...DEFAULT_SELF_CONSISTENCY, energyTolerance: prepared.study.convergence.energy };
   const follow = (kind: FieldKind, orbitals: OccupiedOrbitals | undefined): number => {
     if (!orbitals) return Number.NaN;
     const starts: StartingPoint[] = [{ kind: 'occupiedOrbitals', ...orbitals }];
+    const options = { ...settings, ...(own?.[kind] && { stableEnergy: own[kind].energy }) };
     const solve = () => {
       if (kind === 'unrestricted') {
         return solveUnrestricted(problem, prepared.spinElectrons, starts, control, options);

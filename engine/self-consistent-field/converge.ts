@@ -88,6 +88,7 @@ class Attempt<P extends MeanFieldPoint> {
   descend(firstFock: Float64Array, known?: Converged<P>): Converged<P> {
     let current = this.converge(firstFock);
     if (known?.stability !== undefined && isSame(current, known)) return known;
+    if (this.isKnownToBeStable(current)) return current;
     for (let descent = 0; descent < DESCENTS; descent++) {
       if (current.termination.kind !== 'converged' || current.point.gradient.length === 0) return current;
       const { value, vector } = lowestRotationHessian(this.functional, current.point, this.control);
@@ -102,6 +103,15 @@ class Attempt<P extends MeanFieldPoint> {
       current = lower;
     }
     return current;
+  }
+
+  private isKnownToBeStable({ termination, point }: Converged<P>): boolean {
+    const { stableEnergy } = this.options;
+    return (
+      termination.kind === 'converged' &&
+      stableEnergy !== undefined &&
+      Math.abs(point.energy - stableEnergy) <= DISTINCT
+    );
   }
 
   /** Extrapolated iterations; where they do not settle, the minimiser from the lowest determinant met. */

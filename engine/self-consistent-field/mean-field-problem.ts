@@ -19,6 +19,8 @@ export interface SelfConsistencyOptions {
   /** iterations with extrapolation before the second-order minimiser takes over */
   readonly extrapolatedIterations: number;
   readonly minimiserIterations: number;
+  /** hartree; a determinant of this energy is known to be stable, and its stability is not looked into again */
+  readonly stableEnergy?: number;
 }
 
 export const DEFAULT_SELF_CONSISTENCY: SelfConsistencyOptions = Object.freeze({

@@ -109,4 +109,31 @@ describe('solveRestricted', () => {
       limit: 1,
     });
   });
+
+  it('identity: a determinant that is known to be stable is not analysed again, and is the same', () => {
+    const { problem, electrons, atomic } = setUp(pair('Li', 'H', 3), 'STO-3G');
+    const analysed = (starts: readonly StartingPoint[], stableEnergy?: number) => {
+      let analyses = 0;
+      const onStage = (stage: unknown, what: string) => {
+        if (stage === 'stability' && what === 'begins') analyses++;
+      };
+      const options = { ...DEFAULT_SELF_CONSISTENCY, ...(stableEnergy !== undefined && { stableEnergy }) };
+      const solution = solveRestricted(problem, electrons, starts, { ...UNATTENDED, onStage }, options);
+      return { ...solution, analyses };
+    };
+    const once = analysed([atomic]);
+    expect(once.analyses).toBe(2);
+    const nearby: StartingPoint = {
+      kind: 'density',
+      density: once.density.map((value, i) => value + 1e-3 * problem.overlap[i]),
+    };
+    const twice = analysed([atomic, nearby]);
+    expect(twice.analyses).toBe(2);
+    expect(twice.iterations).toBeGreaterThan(once.iterations);
+    expect(twice.stability).toEqual(once.stability);
+    const again = analysed([nearby], once.energy);
+    expect(again.analyses).toBe(0);
+    expect(again.energy).toBeCloseTo(once.energy, 9);
+    expect(analysed([nearby], once.energy - 1e-3).analyses).toBe(2);
+  });
 });
