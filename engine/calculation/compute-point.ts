@@ -37,8 +37,8 @@ export interface ComputePointOptions {
   /** only these levels of the study; default all */
   readonly levels?: readonly string[] | undefined;
   /**
-   * false: leaves out what costs extra and only describes a correlated state – the parts of its correlation energy, its
-   * natural orbitals. Default true
+   * false: leaves out what costs extra and only describes a state – the parts of a correlation energy, natural orbitals,
+   * the stability of the RHF under another level. Default true
    */
   readonly describesStates?: boolean | undefined;
   readonly control?: RunControl | undefined;
@@ -68,7 +68,16 @@ export function computePoint(
   const chosen = prepared.levels.filter((level) => options.levels?.includes(level.name) ?? true);
   const guess = optimised?.carry ?? options.guess;
   const solved = inStage(control, 'self-consistency', () =>
-    solveMeanFields(prepared, molecule, basis, integrals.problem, chosen, guess, control),
+    solveMeanFields(
+      prepared,
+      molecule,
+      basis,
+      integrals.problem,
+      chosen,
+      guess,
+      control,
+      options.describesStates,
+    ),
   );
   const { fields, symmetry } = inStage(control, 'symmetry', () =>
     symmetriseFields(prepared, molecule, basis, integrals.problem.overlap, solved),

@@ -43,6 +43,10 @@ export interface MeanFields {
   readonly unrestricted?: UnrestrictedSolution;
 }
 
+/**
+ * @param describes - false: no more than the chosen levels need; default: also whether RHF is stable where none of them
+ * is Hartree–Fock
+ */
 export function solveMeanFields(
   prepared: PreparedStudy,
   molecule: Molecule,
@@ -51,8 +55,16 @@ export function solveMeanFields(
   chosen: readonly Level[],
   guess: PointCarry | undefined,
   control: RunControl,
+  describes = true,
 ): MeanFields {
-  const options = { ...DEFAULT_SELF_CONSISTENCY, energyTolerance: prepared.study.convergence.energy };
+  const options = {
+    ...DEFAULT_SELF_CONSISTENCY,
+    energyTolerance: prepared.study.convergence.energy,
+    turnsSpinsApart:
+      describes ||
+      prepared.study.orbitals === 'unrestricted' ||
+      chosen.some(({ kind }) => kind === 'hartreeFock'),
+  };
   const atomic: StartingPoint = { kind: 'density', density: superposeAtomicDensities(molecule, basis) };
   const starts = (orbitals: OccupiedOrbitals | undefined): StartingPoint[] =>
     orbitals ? [atomic, { kind: 'occupiedOrbitals', ...orbitals }] : [atomic];

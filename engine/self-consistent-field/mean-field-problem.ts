@@ -21,6 +21,8 @@ export interface SelfConsistencyOptions {
   readonly minimiserIterations: number;
   /** hartree; a determinant of this energy is known to be stable, and its stability is not looked into again */
   readonly stableEnergy?: number;
+  /** false: closed shells are not looked at for lower determinants with different orbitals of the two spins */
+  readonly turnsSpinsApart?: boolean;
 }
 
 export const DEFAULT_SELF_CONSISTENCY: SelfConsistencyOptions = Object.freeze({

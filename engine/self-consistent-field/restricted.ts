@@ -60,7 +60,7 @@ export function solveRestricted(
 
   const { coefficients, energies } = diagonaliseFock(point.fock, transformation, n, orbitalCount);
   const triplet =
-    singlet === undefined
+    singlet === undefined || options.turnsSpinsApart === false
       ? undefined
       : lowestHessianEigenpair(
           (vector) => functional.responseProduct(point, vector, 'triplet'),
