@@ -39,8 +39,11 @@ const SWEEPS = 200;
  * wave to less than 1e-5 even where the next level is only 0.01 cm⁻¹ away.
  */
 const ENERGY_RESOLUTION = 1e-12;
-/** A guess is taken to be right to this fraction of the well: a coarser grid's levels are. */
-const GUESS_MARGIN = 1e-6;
+/**
+ * A guess is tried as right to these fractions of the well, one after the other: levels extrapolated from two coarser
+ * grids are to the first, those of one to the second.
+ */
+const GUESS_MARGINS: readonly number[] = [1e-9, 1e-6];
 /** Corrections below this fraction of the well that no longer fall are rounding, and taken as the end. */
 const ENERGY_ROUNDING = 1e-11;
 
@@ -76,7 +79,7 @@ export interface BoundStates {
 /**
  * @param most - levels from this on are not solved for
  * @param first - nor those before this
- * @param guesses - energies of levels by quantum number, known from a coarser grid
+ * @param guesses - energies of levels by quantum number, known from coarser grids
  */
 export function boundStates(
   equation: RadialEquation,
@@ -163,12 +166,16 @@ function solveLevel(
   const { equation } = sweeps;
   const bracket = brackets[quantumNumber];
   const isInside = (energy: number) => energy > bracket.low && energy < bracket.high;
-  const trials = guess === undefined ? [] : [guess - GUESS_MARGIN * well, guess + GUESS_MARGIN * well];
+  const trials =
+    guess === undefined
+      ? []
+      : GUESS_MARGINS.flatMap((margin) => [guess - margin * well, guess + margin * well]);
   let lastCorrection = Number.POSITIVE_INFINITY;
   let corrected: number | undefined;
   for (let sweep = 0; sweep < SWEEPS; sweep++) {
-    const trial = corrected ?? trials.shift();
-    const energy = trial !== undefined && isInside(trial) ? trial : (bracket.low + bracket.high) / 2;
+    let trial = corrected ?? trials.shift();
+    while (trial !== undefined && !isInside(trial)) trial = trials.shift();
+    const energy = trial ?? (bracket.low + bracket.high) / 2;
     const window = windowOf(equation, energy);
     const count = window ? sweepForward(sweeps, energy, window) : 0;
     narrow(brackets, energy, count);
