@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { rationalInterpolant } from '../../../engine/curves/rational-interpolant';
+import { predictFromOthers, rationalInterpolant } from '../../../engine/curves/rational-interpolant';
 import { seededRandom } from '../../support/random';
 
 const random = seededRandom(7);
@@ -34,5 +34,21 @@ describe('rationalInterpolant', () => {
     const points = Array.from({ length: 41 }, (_, i) => -5 + i / 4);
     const f = rationalInterpolant(points, points.map(runge), 3);
     for (let x = -5; x <= 5; x += 0.01) expect(Math.abs(f(x) - runge(x))).toBeLessThan(1e-3);
+  });
+});
+
+describe('predictFromOthers', () => {
+  it.each([3, 6, 9])('identity: is the interpolant through all other points, degree %i', (degree) => {
+    const abscissas = Array.from({ length: 18 }, (_, k) => 0.3 * k + 0.02 * k * k);
+    const values = abscissas.map((x) => Math.sin(x) + 1 / (1 + x * x));
+    const predicted = predictFromOthers(abscissas, values, degree);
+    abscissas.forEach((x, left) => {
+      const others = (list: readonly number[]) => list.filter((_, k) => k !== left);
+      const isEnd = left === 0 || left === abscissas.length - 1;
+      const expected = isEnd
+        ? values[left]
+        : rationalInterpolant(others(abscissas), others(values), degree)(x);
+      expect(predicted[left]).toBeCloseTo(expected, 13);
+    });
   });
 });
