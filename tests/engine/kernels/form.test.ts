@@ -6,6 +6,10 @@ afterEach(() => {
   vi.resetModules();
 });
 
+function withoutAddresses(): never {
+  throw new RangeError('could not allocate memory');
+}
+
 describe('kernelForm', () => {
   it('identity: is fast where 128-bit vectors and shared memory are known, as they are here', () => {
     expect(kernelForm()).toBe('fast');
@@ -20,20 +24,10 @@ describe('kernelForm', () => {
     }
   });
 
-  it.each([
+  it.each<[string, unknown]>([
     ['that knows no WebAssembly', undefined],
     ['that refuses our code', { validate: () => false }],
-    [
-      'that gives too few addresses',
-      {
-        validate: () => true,
-        Memory: class {
-          constructor() {
-            throw new RangeError('could not allocate memory');
-          }
-        },
-      },
-    ],
+    ['that gives too few addresses', { validate: () => true, Memory: withoutAddresses }],
   ])('identity: is plain on a machine %s', async (_, webAssembly) => {
     vi.stubGlobal('WebAssembly', webAssembly);
     vi.resetModules();
