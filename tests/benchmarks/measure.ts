@@ -10,8 +10,8 @@ export interface Measurement {
 }
 
 /** Calls a second, after a warm-up, over at least `seconds`. */
-export function callsPerSecond(work: () => void, seconds = 0.7): number {
-  const warmUntil = performance.now() + 200;
+export function callsPerSecond(work: () => void, seconds = 0.7, warmUpSeconds = 0.2): number {
+  const warmUntil = performance.now() + 1000 * warmUpSeconds;
   do work();
   while (performance.now() < warmUntil);
   const start = performance.now();
