@@ -112,7 +112,7 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     let worst = 0;
     const pursued = guards ? subspace.pursuable(wanted) : Array.from({ length: wanted }, (_, k) => k);
     for (const k of pursued) {
-      const norm = k < wanted ? subspace.residual(k) : subspace.residualNorm(k);
+      const norm = subspace.residualNorm(k);
       const limit = k < wanted ? ceiling : Math.min(highest, ceiling);
       const lowestMissed = subspace.values[k] - norm / Math.sqrt(SMALLEST_WEIGHT);
       if (lowestMissed > limit + DEGENERACY_TOLERANCE) continue;
@@ -165,6 +165,8 @@ class Subspace {
   #groups: number[] = [];
   /** group of each eigenvector: where most of it lies */
   #groupOfValue: number[] = [];
+  /** which eigenvector and residual stand formed, with their residual's length */
+  #formed: { readonly k: number; readonly length: number } | undefined;
   values: Float64Array = new Float64Array(0);
 
   constructor(problem: DavidsonProblem) {
@@ -205,6 +207,7 @@ class Subspace {
     this.values = values;
     this.#coefficients = vectors;
     this.#columns = this.size;
+    this.#formed = undefined;
     this.#groupOfValue = Array.from(values, (_, k) => this.#largestGroup(k));
     return true;
   }
@@ -246,6 +249,7 @@ class Subspace {
     const kept = Array.from(this.values.keys()).filter((k) => pursuable.has(k) || others-- > 0);
     const coefficients = this.#coefficientsOf(kept);
     const count = kept.length;
+    this.#formed = undefined;
     this.#basis.rotate(coefficients, this.#columns, count);
     this.#products.rotate(coefficients, this.#columns, count);
     this.#squared = congruence(this.#squared, coefficients, this.#columns, count);
@@ -280,13 +284,15 @@ class Subspace {
     return estimate > ROUNDED_SQUARE * square ? Math.sqrt(estimate) : this.residual(k);
   }
 
-  /** Forms eigenvector k and its residual; returns the residual's length. */
+  /** Forms eigenvector k and its residual, unless they stand formed; returns the residual's length. */
   residual(k: number): number {
+    if (this.#formed?.k === k) return this.#formed.length;
     const size = this.#columns;
     this.#basis.combineInto(this.#ritz, this.#coefficients, size, size, k);
     this.#products.combineInto(this.#residual, this.#coefficients, size, size, k);
     addScaledInto(this.#residual, -this.values[k], this.#ritz);
-    return Math.sqrt(dot(this.#residual, this.#residual));
+    this.#formed = { k, length: Math.sqrt(dot(this.#residual, this.#residual)) };
+    return this.#formed.length;
   }
 
   /** Adds the correction of each listed eigenvector; false if none of them brought anything new. */
@@ -297,6 +303,7 @@ class Subspace {
       this.#problem.precondition(this.#residual, this.values[k], this.#correction);
       const ritz = this.#ritz;
       const scratch = this.#residual;
+      this.#formed = undefined;
       this.#problem.precondition(ritz, this.values[k], scratch);
       const overlap = dot(ritz, scratch);
       if (overlap !== 0) addScaledInto(this.#correction, -dot(ritz, this.#correction) / overlap, scratch);

@@ -3,7 +3,7 @@ import { dot } from './dense';
 /** Elements handled at a time: their stretch of the vector that all others meet stays in the fast cache. */
 const CHUNK = 512;
 /** After a projection that shortens a vector below this fraction, it is projected once more. */
-const LOST_LENGTH = 0.1;
+const LOST_LENGTH = Math.SQRT1_2;
 const MOST_PROJECTIONS = 4;
 
 /** A growing list of vectors of one length that keeps its memory when it shrinks. */
@@ -88,8 +88,8 @@ export class VectorBlock {
   }
 
   /**
-   * Makes a vector of unit length and orthogonal to all of the block, in place. Projected at least twice, for
-   * one Gram–Schmidt pass leaves rounding errors as large as what it took away is to what it left.
+   * Makes a vector of unit length and orthogonal to all of the block, in place. Projected again until a pass takes
+   * little away, for one Gram–Schmidt pass leaves rounding errors as large as what it took away is to what it left.
    *
    * @returns false if less than `smallest` of the direction is new; the vector is then of no use
    */
@@ -107,7 +107,7 @@ export class VectorBlock {
       remaining *= kept;
       if (!(remaining > smallest)) return false;
       scale(vector, 1 / kept);
-      if (pass > 0 && kept > LOST_LENGTH) return true;
+      if (kept > LOST_LENGTH) return true;
     }
     return false;
   }
