@@ -312,7 +312,13 @@ describe('the window', () => {
           );
         });
       expect(await violations()).toEqual([]);
-      for (const editor of [/^Molecule:/, /^What is scanned:/, /^Basis set:/, /^Levels and states:/, /^Findings wanted/]) {
+      for (const editor of [
+        /^Molecule:/,
+        /^What is scanned:/,
+        /^Basis set:/,
+        /^Levels and states:/,
+        /^Findings wanted/,
+      ]) {
         await page.getByRole('button', { name: editor }).first().click();
         await page.getByRole('dialog').waitFor();
         expect(await violations()).toEqual([]);
