@@ -81,7 +81,7 @@ function panel(growth: Growth, column: number, top: number): GroupMark {
       },
     ],
     axes: [
-      axis('x', 'bottom', size, { values: samples.map((sample) => sample.size) }),
+      axis('x', 'bottom', size, { values: samples.map((sample) => sample.size), format: '.2~s' }),
       axis('y', 'left', 'seconds', {
         values: powersOfTen(samples.map(({ seconds }) => seconds)),
         format: '~g',
