@@ -89,7 +89,7 @@ function iterate(
       ...settings,
       roots: settings.states,
       ceiling,
-      maximumVectors: basisVectorLimit(settings.states),
+      maximumVectors: basisVectorLimit(settings.states, problem.dimension),
     });
   const found = solve([...guesses.map((k) => spreadModelVector(model, k, problem.dimension)), ...probing]);
   if (found.termination.kind !== 'converged') return found;
@@ -148,7 +148,7 @@ function lowerStatesOfOtherSpins(
       ...settings,
       roots: 1,
       ...closeness,
-      maximumVectors: basisVectorLimit(1),
+      maximumVectors: basisVectorLimit(1, problem.dimension),
     });
   const hidden: Float64Array[] = [];
   for (const spin of new Set([...lowest, ...guards].map((k) => model.spins[k]))) {

@@ -14,9 +14,16 @@ export function guessLimit(states: number): number {
 /** Vectors without symmetry that are pursued beside the guesses, at most. */
 export const PROBES = 2;
 
-/** Basis vectors of the eigensolver: room for several steps of every state before it must collapse. */
-export function basisVectorLimit(states: number): number {
-  return guessLimit(states) + 4 * (PROBES + states) + 12;
+/** Beyond so many determinants, handling the vectors costs more time than the steps that a collapse loses. */
+const LARGE = 100_000;
+
+/**
+ * Basis vectors of the eigensolver: room for several steps of every state before it must collapse.
+ *
+ * @param dimension - length of a vector
+ */
+export function basisVectorLimit(states: number, dimension: number): number {
+  return guessLimit(states) + 4 * (PROBES + states) + (dimension > LARGE ? 0 : 12);
 }
 
 /**
@@ -77,12 +84,15 @@ export function configurationInteractionBytes(
   spinsDiffer = false,
 ): number {
   const determinants = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, rankLimit);
-  const vectors = davidsonVectorCount(basisVectorLimit(states)) + WORKING_VECTORS;
+  // a sector may be short enough for more vectors
+  const numbers = [determinants, Math.min(determinants, LARGE)].map(
+    (length) => length * davidsonVectorCount(basisVectorLimit(states, length)),
+  );
   const spins =
     alphaElectrons === betaElectrons && !spinsDiffer ? [alphaElectrons] : [alphaElectrons, betaElectrons];
   const pairs = (orbitalCount * (orbitalCount + 1)) / 2;
   // integrals stand in the kernels' memory with both signs
-  let bytes = 8 * determinants * vectors + 16 * pairs * pairs;
+  let bytes = 8 * (Math.max(...numbers) + WORKING_VECTORS * determinants) + 16 * pairs * pairs;
   for (const electrons of spins) {
     const virtuals = orbitalCount - electrons;
     const strings = countStrings(orbitalCount, electrons, rankLimit).map(Number);
