@@ -10,6 +10,8 @@ export default defineConfig({
     // what is tried as a process or in a browser is the build; one build serves every file
     globalSetup: ['tests/support/build-once.ts'],
     setupFiles: ['tests/support/published.ts'],
+    // the default leaves a core idle
+    maxWorkers: '100%',
     testTimeout: 60_000,
     hookTimeout: 120_000,
   },
