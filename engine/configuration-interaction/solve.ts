@@ -58,7 +58,8 @@ export interface ConfigurationInteractionResult {
 
 const DEFAULTS = Object.freeze({
   residualTolerance: 1e-6,
-  maximumIterations: 100,
+  // close states of a stretched multiple bond take two hundred: three of C2 at 3 Å in a minimal basis
+  maximumIterations: 300,
   memoryLimit: Number.POSITIVE_INFINITY,
   control: UNATTENDED,
 });
