@@ -45,11 +45,6 @@ function layRows(space: DeterminantSpace, irrep: number, alpha: StringClasses, b
   return { space, irrep, alpha, beta, dimension, rowStart };
 }
 
-/** Is the sector the whole space, in the same order? */
-export function isWholeSpace({ space, dimension }: Sector): boolean {
-  return dimension === space.dimension;
-}
-
 /** Calls for every row: where it starts, the alpha strings in order, and where its beta string's row starts in the space. */
 function forEachRow(
   { space, irrep, alpha, beta, rowStart }: Sector,

@@ -4,7 +4,7 @@ import { inForm } from '../support/kernel-forms';
 import { atom, prepare, study } from '../support/studies';
 import { callsPerSecond, type Measurement } from './measure';
 
-/** What the issue asks for: H2 in a minimal basis with every level, as fast as the mouse moves and much faster. */
+/** H2 in a minimal basis with every level, as fast as the mouse moves and much faster. */
 const HYDROGEN = prepare(
   study([atom('H'), atom('H', 0, 0, 1.4)], {
     levels: ['RHF', 'CIS', 'CISD', 'FCI'],
