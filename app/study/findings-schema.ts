@@ -2,11 +2,13 @@ import { z } from 'zod';
 import type {
   Counterpoise,
   CurveFits,
+  Dissociation,
   ExcitedState,
   Isotopologue,
   LevelFindings,
   Vibration,
   WellConstants,
+  WellDepth,
 } from '#engine';
 
 /* The form of what is read off a curve, in a results file. */
@@ -48,6 +50,37 @@ export const constants: z.ZodType<WellConstants> = z.looseObject({
   diatomic: diatomicConstants.exactOptional(),
   withoutDiatomic: z.string().exactOptional(),
 });
+
+const fragment = z.looseObject({
+  atoms: z.array(z.number()),
+  charge: z.number(),
+  multiplicity: z.number(),
+  energy: z.number(),
+  level: z.string(),
+  startedFrom: z.number().exactOptional(),
+  correlation: z.number().exactOptional(),
+  excitation: z.number().exactOptional(),
+});
+
+export const dissociation: z.ZodType<Dissociation> = z.discriminatedUnion('kind', [
+  z.looseObject({
+    kind: z.literal('found'),
+    energy: z.number(),
+    fragments: z.tuple([fragment, fragment]),
+    farEndAbove: z.number().exactOptional(),
+  }),
+  z.looseObject({ kind: z.literal('none'), reason: z.string() }),
+]);
+
+export const wellDepth: z.ZodType<WellDepth> = z.discriminatedUnion('against', [
+  z.looseObject({ value: z.number(), against: z.literal('farEnd'), farEnd: z.number() }),
+  z.looseObject({
+    value: z.number(),
+    against: z.literal('fragments'),
+    farEnd: z.number(),
+    valueAgainstFarEnd: z.number(),
+  }),
+]);
 
 const superposition = z.looseObject({ energyInWholeBasis: z.number(), error: z.number() });
 
@@ -153,6 +186,8 @@ export const excitedState: z.ZodType<ExcitedState> = z.looseObject({
     .exactOptional(),
   adiabatic: estimate.exactOptional(),
   zeroPointToZeroPoint: estimate.exactOptional(),
+  dissociation: dissociation.exactOptional(),
+  wellDepth: wellDepth.exactOptional(),
   transitionMoments: z.array(
     z.looseObject({ coordinate: z.number(), dipole: number, oscillatorStrength: number }),
   ),

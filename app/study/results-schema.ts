@@ -12,12 +12,14 @@ import { basisDescription, basisSetLimit, studyInBasis } from './basis-compariso
 import {
   constants,
   counterpoise,
+  dissociation,
   excitedState,
   fits,
   isotopologue,
   minimum,
   number,
   vibration,
+  wellDepth,
 } from './findings-schema';
 import { studySchema } from './schema';
 
@@ -147,6 +149,10 @@ const singles = z.looseObject({
       oscillatorStrength: number,
       transitionDipole: vector,
       leading: z.array(z.looseObject({ from: z.number(), to: z.number(), weight: number })),
+      naturalOccupations: numbers.exactOptional(),
+      unpairedElectrons: unpairedElectrons.exactOptional(),
+      dipole: vector.exactOptional(),
+      energyParts: energyParts.exactOptional(),
     }),
   ),
 });
@@ -271,16 +277,6 @@ const point: z.ZodType<PointResult> = z.looseObject({
   cautions,
 });
 
-const fragment = z.looseObject({
-  atoms: z.array(z.number()),
-  charge: z.number(),
-  multiplicity: z.number(),
-  energy: z.number(),
-  level: z.string(),
-  startedFrom: z.number().exactOptional(),
-  correlation: z.number().exactOptional(),
-});
-
 const weightCrossings = {
   threshold: z.number(),
   crossings: z.array(
@@ -295,28 +291,8 @@ const weightCrossings = {
 const findings: z.ZodType<LevelFindings> = z.looseObject({
   minimum,
   constants: constants.exactOptional(),
-  dissociation: z
-    .discriminatedUnion('kind', [
-      z.looseObject({
-        kind: z.literal('found'),
-        energy: z.number(),
-        fragments: z.tuple([fragment, fragment]),
-        farEndAbove: z.number().exactOptional(),
-      }),
-      none,
-    ])
-    .exactOptional(),
-  wellDepth: z
-    .discriminatedUnion('against', [
-      z.looseObject({ value: z.number(), against: z.literal('farEnd'), farEnd: z.number() }),
-      z.looseObject({
-        value: z.number(),
-        against: z.literal('fragments'),
-        farEnd: z.number(),
-        valueAgainstFarEnd: z.number(),
-      }),
-    ])
-    .exactOptional(),
+  dissociation: dissociation.exactOptional(),
+  wellDepth: wellDepth.exactOptional(),
   counterpoise: counterpoise.exactOptional(),
   vibration: vibration.exactOptional(),
   isotopologues: z.array(isotopologue).exactOptional(),

@@ -1,4 +1,4 @@
-import type { Estimate, LevelFindings, Vibration, WellConstants } from './result';
+import type { Dissociation, Estimate, LevelFindings, Vibration, WellConstants, WellDepth } from './result';
 
 /*
  * Findings that a curve gives beyond its minimum, depth and constants; parts of the results file. Energies in hartree,
@@ -118,6 +118,13 @@ export interface ExcitedState {
   readonly adiabatic?: Estimate;
   /** T0: from lowest level to lowest level, hartree */
   readonly zeroPointToZeroPoint?: Estimate;
+  /**
+   * the states of separate fragments that this state goes to at large distance, or why they cannot be told; absent where
+   * the scan does not part the molecule in two, and in files of earlier versions
+   */
+  readonly dissociation?: Dissociation;
+  /** De against that limit, or else against the end of the state's own curve; absent without a minimum */
+  readonly wellDepth?: WellDepth;
   /** at the points of the scan where both states are known; empty where nothing is computed of them */
   readonly transitionMoments: readonly TransitionMoment[];
   readonly vibration?: Vibration;

@@ -207,6 +207,11 @@ export interface SinglesState {
   /** ⟨0|−r|state⟩, e·bohr */
   readonly transitionDipole: Vector3;
   readonly leading: readonly { readonly from: number; readonly to: number; readonly weight: number }[];
+  /** this and the next: of the state's own density (not relaxed); absent in files of earlier versions */
+  readonly naturalOccupations?: readonly number[];
+  readonly unpairedElectrons?: UnpairedElectrons;
+  readonly dipole?: Vector3;
+  readonly energyParts?: EnergyParts;
 }
 
 export interface SinglesResult {
@@ -461,6 +466,8 @@ export interface Fragment {
   readonly startedFrom?: number;
   /** of the energy, what is not RHF (open shells: ROHF); levels beyond Hartree–Fock */
   readonly correlation?: number;
+  /** above the lowest state of this fragment with this charge, hartree; present for fragments of excited states */
+  readonly excitation?: number;
 }
 
 export type Vibration =
