@@ -2,6 +2,7 @@ import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integral
 import { kernelForm } from '../kernels/form';
 import { type KernelMemory, scratchMemory } from '../kernels/kernel-memory';
 import { addScaledInto } from '../linear-algebra/dense';
+import { applyDense, buildDenseHamiltonians } from './dense-hamiltonian';
 import type { DeterminantSpace } from './determinant-space';
 import { prepareFastProduct } from './fast-product';
 import { preparePlainProduct } from './plain-product';
@@ -17,6 +18,8 @@ export interface SectorProduct {
   restoreSpinFlip(vector: Float64Array): void;
   /** What of a vector is even and what is odd under that exchange; the vector itself where there is none. */
   spinFlipParts(vector: Float64Array): readonly Float64Array[];
+  /** H as a whole matrix without the core energy, where the determinants are so few that it was built */
+  readonly matrix?: Float64Array;
 }
 
 export interface HamiltonianProduct {
@@ -27,8 +30,11 @@ export interface HamiltonianProduct {
   apply(vector: Float64Array, product: Float64Array): void;
 }
 
-/** Determinants below which laying lists for the fast kernels takes longer than they save. */
-const FEW_DETERMINANTS = 1000;
+/**
+ * Determinants up to which the fast form builds the matrix and multiplies by it: laying lists for the kernels would take
+ * longer than they save.
+ */
+export const FEW_DETERMINANTS = 1000;
 /**
  * Integrals that symmetry forbids may be this large, in hartree, before the symmetry is not relied upon. They are left
  * out, which moves an energy by their square over an excitation energy.
@@ -48,18 +54,28 @@ export function prepareHamiltonianProduct(
   memory: KernelMemory = scratchMemory(),
 ): HamiltonianProduct {
   const irreps = orbitalIrreps && isSymmetric(integrals, orbitalIrreps) ? orbitalIrreps : undefined;
-  const isFast = kernelForm() === 'fast' && space.dimension >= FEW_DETERMINANTS;
+  const isFast = kernelForm() === 'fast';
   const sectors = buildSectors(space, irreps);
-  const product = isFast
-    ? prepareFastProduct(sectors, integrals, irreps, memory)
-    : overSectors(space, preparePlainProduct(space, integrals));
+  const dense =
+    isFast && space.dimension <= FEW_DETERMINANTS
+      ? buildDenseHamiltonians(space, sectors, integrals, irreps)
+      : undefined;
+  const prepare = (): BareProduct =>
+    isFast
+      ? prepareFastProduct(sectors, integrals, irreps, memory)
+      : overSectors(space, preparePlainProduct(space, integrals));
+  const product: BareProduct = dense
+    ? (sector, vector, result) => applyDense(dense.get(sector)!, vector, result)
+    : prepare();
   /** the exchange of alpha and beta is a symmetry of H */
   const isFlippable = space.alpha === space.beta && !integrals.beta;
   const ofSectors = sectors.map(
     (sector): SectorProduct => ({
       sector,
+      ...(dense && { matrix: dense.get(sector)! }),
       apply(vector, result) {
-        const parity = isFlippable ? spinFlipParity(sector, vector, EXACT_PARITY) : 0;
+        // all of a whole matrix is multiplied by in any case
+        const parity = isFlippable && !dense ? spinFlipParity(sector, vector, EXACT_PARITY) : 0;
         product(sector, vector, result, parity);
         addScaledInto(result, integrals.coreEnergy, vector);
       },

@@ -25,6 +25,8 @@ export interface StateProblem {
 export const MODEL_SPACE_SIZE = 300;
 /** The same of one of many sectors, at least. */
 const SECTOR_MODEL_SIZE = 100;
+/** A sector of no more is diagonalised directly too. */
+const DIRECT_SECTOR_SIZE = 200;
 /** Model vectors per state wanted, at least. */
 const MODEL_VECTORS_PER_STATE = 10;
 /** Energies this close, in hartree, are not put in order. */
@@ -73,7 +75,11 @@ function lowestOfSectors({ sectors }: StateProblem, settings: StateSettings): Lo
     const apply: SectorProblem['apply'] = (vector, product) =>
       inStage(control, 'CI product', () => sector.apply(vector, product));
     const model = inStage(control, 'CI model space', () =>
-      buildModelSpace(sector.diagonal, size, (places) => sector.elementsAmong(places)),
+      buildModelSpace(
+        sector.diagonal,
+        sector.dimension <= DIRECT_SECTOR_SIZE ? sector.dimension : size,
+        (places) => sector.elementsAmong(places),
+      ),
     );
     return { sector: { ...sector, apply }, model };
   });

@@ -1,5 +1,6 @@
 import { davidsonVectorCount } from '../linear-algebra/davidson';
 import { wordsOf } from './determinants';
+import { FEW_DETERMINANTS } from './hamiltonian-product';
 import { countSameSpinEntries, countSingleReplacements } from './replacements';
 import { highestRank } from './string-space';
 
@@ -93,6 +94,7 @@ export function configurationInteractionBytes(
   const pairs = (orbitalCount * (orbitalCount + 1)) / 2;
   // integrals stand in the kernels' memory with both signs
   let bytes = 8 * (Math.max(...numbers) + WORKING_VECTORS * determinants) + 16 * pairs * pairs;
+  if (determinants <= FEW_DETERMINANTS) bytes += 8 * determinants ** 2;
   for (const electrons of spins) {
     const virtuals = orbitalCount - electrons;
     const strings = countStrings(orbitalCount, electrons, rankLimit).map(Number);

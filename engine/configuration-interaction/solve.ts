@@ -15,7 +15,11 @@ import {
 import { buildDeterminantSpace, type DeterminantSpace, determinantAt } from './determinant-space';
 import { occupiedOrbitals } from './determinants';
 import { spinAveragedDiagonal, unrestrictedDiagonal } from './diagonal';
-import { type HamiltonianProduct, prepareHamiltonianProduct } from './hamiltonian-product';
+import {
+  type HamiltonianProduct,
+  prepareHamiltonianProduct,
+  type SectorProduct,
+} from './hamiltonian-product';
 import { findLowestStates } from './lowest-states';
 import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
 import type { ModelElements } from './model-space';
@@ -104,11 +108,13 @@ function solve(
   const product = prepareHamiltonianProduct(space, integrals, species?.irreps);
   const symmetry = species && determinantSymmetry(space, species);
   const diagonal = beta ? unrestrictedDiagonal(space, integrals) : spinAveragedDiagonal(space, integrals);
-  const elementsAmong = (places: Int32Array): ModelElements => {
+  const elementsAmong = (places: Int32Array, { sector, matrix }: SectorProduct): ModelElements => {
     const spin = beta && unrestrictedSpin(beta, integrals.orbitalCount, [alphaElectrons, betaElectrons]);
-    const determinants = Array.from(places, (place) => determinantAt(space, place));
+    const determinants = Array.from(placesInSpace(sector, places), (place) => determinantAt(space, place));
     return {
-      hamiltonian: (i, j) => hamiltonianElement(determinants[i], determinants[j], integrals),
+      hamiltonian: matrix
+        ? (i, j) => matrix[places[i] * sector.dimension + places[j]] + (i === j ? integrals.coreEnergy : 0)
+        : (i, j) => hamiltonianElement(determinants[i], determinants[j], integrals),
       spinSquared: (i, j) =>
         spin
           ? unrestrictedSpinSquaredElement(determinants[i], determinants[j], spin)
@@ -117,16 +123,16 @@ function solve(
   };
   const found = findLowestStates(
     {
-      sectors: product.sectors.map(({ sector, apply, restoreSpinFlip, spinFlipParts }) => ({
-        dimension: sector.dimension,
-        diagonal: takeSector(sector, diagonal),
-        apply,
-        restoreSymmetry: restoreSpinFlip,
-        partsOf: spinFlipParts,
-        elementsAmong: (places) => elementsAmong(placesInSpace(sector, places)),
+      sectors: product.sectors.map((ofSector) => ({
+        dimension: ofSector.sector.dimension,
+        diagonal: takeSector(ofSector.sector, diagonal),
+        apply: ofSector.apply,
+        restoreSymmetry: ofSector.restoreSpinFlip,
+        partsOf: ofSector.spinFlipParts,
+        elementsAmong: (places) => elementsAmong(places, ofSector),
         widen: (vector) => {
           const whole = new Float64Array(space.dimension);
-          putSector(sector, vector, whole);
+          putSector(ofSector.sector, vector, whole);
           return whole;
         },
       })),

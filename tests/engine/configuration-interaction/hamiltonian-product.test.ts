@@ -10,13 +10,14 @@ import { hamiltonianElement } from '../../../engine/configuration-interaction/ma
 import { GATHER_BLOCK } from '../../../engine/configuration-interaction/plain-product';
 import type { OrbitalIntegrals } from '../../../engine/integrals/orbital-integrals';
 import { scratchMemory } from '../../../engine/kernels/kernel-memory';
+import { inForm } from '../../support/kernel-forms';
 import { randomArray, seededRandom } from '../../support/random';
 import { randomOrbitalIntegrals, randomUnrestrictedIntegrals } from '../../support/random-orbital-integrals';
 
 /** Rows of the plain product that are worked out; they are spread evenly over a larger space. */
 const ROWS = 150;
 
-/** Largest deviation of the product from the sum over matrix elements, relative to the largest element. */
+/** Largest deviation of the product, in both forms, from the sum over matrix elements, relative to the largest element. */
 function deviation(
   n: number,
   alpha: number,
@@ -34,9 +35,14 @@ function deviation(
     transposeInto(space, vector, image);
     for (let i = 0; i < vector.length; i++) vector[i] += parity * image[i];
   }
-  const product = new Float64Array(space.dimension).fill(Number.NaN);
   const irreps = species.length > 0 ? species : undefined;
-  scratchMemory().scope(() => prepareHamiltonianProduct(space, integrals, irreps).apply(vector, product));
+  const products = (['plain', 'fast'] as const).map((form) => {
+    const product = new Float64Array(space.dimension).fill(Number.NaN);
+    inForm(form, () =>
+      scratchMemory().scope(() => prepareHamiltonianProduct(space, integrals, irreps).apply(vector, product)),
+    );
+    return product;
+  });
   const determinants = Array.from({ length: space.dimension }, (_, place) => determinantAt(space, place));
   let largest = 0;
   let scale = 0;
@@ -47,7 +53,7 @@ function deviation(
       (sum, right, j) => sum + hamiltonianElement(left, right, integrals) * vector[j],
       0,
     );
-    largest = Math.max(largest, Math.abs(product[i] - expected));
+    for (const product of products) largest = Math.max(largest, Math.abs(product[i] - expected));
     scale = Math.max(scale, Math.abs(expected));
   });
   return largest / scale;
