@@ -1,14 +1,17 @@
 import { DALTON_IN_ELECTRON_MASSES, HARTREE_IN_WAVENUMBERS } from '../constants';
 import { franckCondonFactors } from '../curves/franck-condon';
+import type { RunControl } from '../termination';
 import { diatomicOf } from './diatomic';
+import { excitedLimits } from './excited-limits';
 import type { ExcitedState, FranckCondon, TransitionMoment, VerticalExcitation } from './further-findings';
 import { interpolatedWell } from './interpolated-well';
 import { curveThrough, type LevelCurve, type LevelPoints } from './level-curve';
 import type { PreparedStudy } from './prepare-study';
 import { readWell, type Well } from './read-well';
-import type { Estimate, Vibration } from './result';
+import type { Dissociation, Estimate, Vibration, WellDepth } from './result';
 import { type CurveOfState, curvesOfStates, statesOf } from './state-curves';
 import { MOST_SECONDS_A_POINT, type SolvableCurve, vibrationOn, type WithoutLevels } from './vibration';
+import { fromLowestLevel, wellDepthOf } from './well-depth';
 
 /** States closer than this, hartree, at every point are partners of one another. */
 const DEGENERATE = 1e-7;
@@ -52,6 +55,7 @@ export function excitedStates(
   points: LevelPoints,
   lowest: LowestState,
   secondsPerPoint: number,
+  control?: RunControl,
 ): readonly ExcitedState[] {
   const before = points.all().length;
   const isAffordable = () =>
@@ -62,11 +66,12 @@ export function excitedStates(
   const excited = withoutPartners(curves, ground);
   const vibration =
     lowest.vibration ?? (excited.length > 0 ? vibrationOf(prepared, lowest.well?.solvable) : undefined);
+  const limitOf = excitedLimits(prepared, points, control);
   return excited.map((state) =>
     readState(
       prepared,
       points,
-      { lowest, vibration, ground, state },
+      { lowest, vibration, ground, state, dissociation: limitOf(state) },
       isAffordable() ? secondsPerPoint : undefined,
     ),
   );
@@ -123,6 +128,7 @@ interface Pair {
   /** the same as a state of the level; undefined for CIS */
   readonly ground: CurveOfState | undefined;
   readonly state: CurveOfState;
+  readonly dissociation: Dissociation | undefined;
 }
 
 /** @param secondsPerPoint - undefined: no more points may be computed */
@@ -132,17 +138,19 @@ function readState(
   pair: Pair,
   secondsPerPoint: number | undefined,
 ): ExcitedState {
-  const { lowest, state } = pair;
+  const { lowest, state, dissociation } = pair;
+  const limit = limitOfLevels(dissociation);
   const { minimum, well, energyUncertainty } =
     secondsPerPoint === undefined
-      ? interpolatedWell(state.curve)
-      : { ...readWell(prepared, state.curve, undefined, secondsPerPoint), energyUncertainty: 0 };
+      ? interpolatedWell(state.curve, limit)
+      : { ...readWell(prepared, state.curve, limit, secondsPerPoint), energyUncertainty: 0 };
   const threshold = 2 * prepared.study.convergence.energy;
   const adiabatic: Estimate | undefined = well &&
     lowest.well && {
       value: well.found.energy - lowest.well.found.energy,
       uncertainty: threshold + energyUncertainty,
     };
+  const wellDepth = well && wellDepthOf(well.found.energy, state.curve, dissociation);
   const vertical = verticalExcitation(points, pair, threshold);
   return {
     curve: state.index,
@@ -152,8 +160,17 @@ function readState(
     ...(vertical && { vertical }),
     ...(adiabatic && { adiabatic }),
     transitionMoments: transitionMoments(points, pair),
-    ...vibrationFindings(prepared, pair, solvableOf(state, well), adiabatic),
+    ...(dissociation && { dissociation }),
+    ...(wellDepth && { wellDepth }),
+    ...vibrationFindings(prepared, pair, solvableOf(state, well), adiabatic, wellDepth),
   };
+}
+
+/** The attraction of ions holds infinitely many levels: listed are then those below the end of the curve. */
+function limitOfLevels(dissociation: Dissociation | undefined): number | undefined {
+  if (dissociation?.kind !== 'found') return undefined;
+  const [one, other] = dissociation.fragments;
+  return one.charge * other.charge < 0 ? undefined : dissociation.energy;
 }
 
 /** A curve that ends inside the range has no limit, nor levels that could be trusted. */
@@ -237,9 +254,11 @@ function vibrationFindings(
   { lowest, vibration: below }: Pair,
   upper: Well['solvable'],
   adiabatic: Estimate | undefined,
+  wellDepth: WellDepth | undefined,
 ): Pick<ExcitedState, 'vibration' | 'zeroPointToZeroPoint' | 'franckCondon'> {
-  const vibration = vibrationOf(prepared, upper);
-  if (!vibration) return {};
+  const solved = vibrationOf(prepared, upper);
+  if (!solved) return {};
+  const vibration = fromLowestLevel(solved, wellDepth);
   const lower = lowest.well?.solvable;
   const isComparable = below?.kind === 'found' && lower?.kind === 'found' && adiabatic !== undefined;
   if (vibration.kind === 'none' || upper?.kind !== 'found' || !isComparable) return { vibration };

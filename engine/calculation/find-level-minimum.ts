@@ -1,4 +1,3 @@
-import { HARTREE_IN_WAVENUMBERS } from '../constants';
 import type { RunControl } from '../termination';
 import { counterpoise } from './counterpoise';
 import { curveFits } from './curve-fits';
@@ -9,14 +8,15 @@ import { findInstabilityOnset } from './find-onset';
 import { findReferenceWeight } from './find-reference-weight';
 import { dissociationLimit } from './fragments';
 import type { Isotopologue } from './further-findings';
-import { type LevelCurve, type LevelPoints, levelPoints, lowestCurve } from './level-curve';
+import { type LevelPoints, levelPoints, lowestCurve } from './level-curve';
 import type { PointCarry } from './mean-fields';
 import type { PreparedStudy } from './prepare-study';
 import { readWell, type Well } from './read-well';
-import type { Dissociation, LevelFindings, PointResult, WellDepth } from './result';
+import type { LevelFindings, PointResult, WellDepth } from './result';
 import type { CompleteStudy } from './study';
 import { vibrationOn } from './vibration';
 import { diatomicConstants } from './well-constants';
+import { fromLowestLevel, wellDepthOf } from './well-depth';
 
 /**
  * All that is read off one level's curve: its minimum with the constants of the well, the limit of separate
@@ -67,7 +67,7 @@ function curveFindings(
     const lowest = lowestStateOfSingles(prepared, points, seconds);
     return {
       ...none('CIS gives excited states only; its ground state is RHF.'),
-      ...excitedFindings(prepared, points, lowest, seconds),
+      ...excitedFindings(prepared, points, lowest, seconds, control),
     };
   }
   const curve = lowestCurve(points);
@@ -75,7 +75,7 @@ function curveFindings(
   const dissociation = dissociationLimit(prepared, level, farEnd, control);
   const limit = dissociation?.kind === 'found' ? dissociation.energy : undefined;
   const { minimum, well } = readWell(prepared, curve, limit, seconds);
-  const wellDepth = well && wellDepthOf(well.found.energy, farEnd!, curve.scan, dissociation);
+  const wellDepth = well && wellDepthOf(well.found.energy, curve, dissociation);
   const vibrations = well && vibrationFindings(study, computed, level, well, wellDepth);
   return {
     minimum,
@@ -84,7 +84,7 @@ function curveFindings(
     ...(well?.constants && { constants: well.constants }),
     ...(well && { fits: curveFits(curve, dissociation, wellDepth, well.expanded) }),
     ...vibrations,
-    ...excitedFindings(prepared, points, { curve, well, vibration: vibrations?.vibration }, seconds),
+    ...excitedFindings(prepared, points, { curve, well, vibration: vibrations?.vibration }, seconds, control),
   };
 }
 
@@ -93,32 +93,14 @@ function excitedFindings(
   points: LevelPoints,
   lowest: LowestState,
   seconds: number,
+  control: RunControl | undefined,
 ): Pick<LevelFindings, 'excitedStates'> {
-  const states = excitedStates(prepared, points, lowest, seconds);
+  const states = excitedStates(prepared, points, lowest, seconds, control);
   return states.length > 0 ? { excitedStates: states } : {};
 }
 
 function none(reason: string): LevelFindings {
   return { minimum: { kind: 'none', reason } };
-}
-
-/** @param farEnd - last point of the scan that converged */
-function wellDepthOf(
-  minimum: number,
-  farEnd: { readonly x: number; readonly energy: number },
-  scan: LevelCurve['scan'],
-  dissociation: Dissociation | undefined,
-): WellDepth | undefined {
-  if (dissociation?.kind === 'found') {
-    return {
-      value: dissociation.energy - minimum,
-      against: 'fragments',
-      farEnd: farEnd.x,
-      valueAgainstFarEnd: farEnd.energy - minimum,
-    };
-  }
-  const isLast = scan.every(({ x }) => x <= farEnd.x);
-  return isLast ? { value: farEnd.energy - minimum, against: 'farEnd', farEnd: farEnd.x } : undefined;
 }
 
 /** Levels of the isotopes of the study and of those that it asks for besides. */
@@ -134,11 +116,8 @@ function vibrationFindings(
   const { rotation = [], isotopologues = [] } = study.findings ?? {};
   const rotations = [...new Set(rotation)].filter((value) => value > 0).sort((a, b) => a - b);
   const lambda = lambdaNear(found.x, computed, level);
-  const vibrationWith = (masses: Diatomic) => {
-    const vibration = vibrationOn(solvable, masses, rotations, lambda);
-    if (vibration.kind !== 'found' || !wellDepth) return vibration;
-    return { ...vibration, d0: wellDepth.value - vibration.zeroPointPerCm / HARTREE_IN_WAVENUMBERS };
-  };
+  const vibrationWith = (masses: Diatomic) =>
+    fromLowestLevel(vibrationOn(solvable, masses, rotations, lambda), wellDepth);
   const others = isotopologues.flatMap((massNumbers): Isotopologue[] => {
     const masses = isotopologueOf(study, massNumbers);
     if (!masses) return [];

@@ -59,12 +59,13 @@ export function fragmentEnergy(
   };
 }
 
-function correlatedElectrons({ electrons, frozenOrbitals }: PreparedStudy): number {
+/** Electrons that a CI moves. */
+export function correlatedElectrons({ electrons, frozenOrbitals }: PreparedStudy): number {
   return electrons - 2 * frozenOrbitals;
 }
 
 /** Energy of nuclei that no electron is left to; undefined where there are electrons. */
-function bareNuclei(molecule: StudyMolecule & { readonly charge: number }): number | undefined {
+export function bareNuclei(molecule: StudyMolecule & { readonly charge: number }): number | undefined {
   const atoms = molecule.atoms.filter(({ ghost }) => !ghost);
   const nuclearCharge = atoms.reduce((sum, { element }) => sum + requireElement(element).atomicNumber, 0);
   if (nuclearCharge > molecule.charge) return undefined;

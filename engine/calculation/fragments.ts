@@ -1,7 +1,7 @@
-import { planMotions } from '../molecule/scan-motion';
 import { type RunControl, UNATTENDED } from '../termination';
 import { type FragmentEnergy, fragmentEnergy } from './fragment-energy';
 import { findLevel, type Level } from './levels';
+import { chargeShares, type Parts, partsOf, separateParts } from './parts';
 import type { PreparedStudy } from './prepare-study';
 import type { Dissociation, Fragment } from './result';
 
@@ -10,8 +10,6 @@ import type { Dissociation, Fragment } from './result';
  * correlated level: correlation shifts neither an electron affinity nor a spin splitting of light atoms by as much.
  */
 const WORTH_CORRELATING = 0.3;
-/** Fragments' charges differ from an even share by at most this. */
-const LARGEST_CHARGE_SHIFT = 1;
 
 /** A way to share charge and spin between the two parts. */
 interface Channel {
@@ -86,18 +84,6 @@ function none(reason: string): Dissociation {
 
 const sumOf = (pair: readonly FragmentEnergy[]): number => pair[0].energy + pair[1].energy;
 
-type Parts = readonly [readonly number[], readonly number[]];
-
-/** The atoms of either side of the one scanned bond; undefined for other scans, and with ghosts, which have no side. */
-function partsOf({ study }: PreparedStudy): Parts | undefined {
-  const { molecule, scan } = study;
-  if (!scan || !('bonds' in scan.coordinate) || scan.coordinate.bonds.length !== 1) return undefined;
-  if (molecule.atoms.some(({ ghost }) => ghost)) return undefined;
-  const { moved } = planMotions(molecule, scan.coordinate).motions[0];
-  const indices = molecule.atoms.map((_, index) => index);
-  return [indices.filter((index) => !moved.has(index)), indices.filter((index) => moved.has(index))];
-}
-
 function channelsOf(prepared: PreparedStudy, parts: Parts): Channel[] {
   const { charge, multiplicity } = prepared.study.molecule;
   const { atoms } = prepared.moleculeAt(prepared.coordinates[0]);
@@ -105,10 +91,7 @@ function channelsOf(prepared: PreparedStudy, parts: Parts): Channel[] {
     part.reduce((sum, index) => sum + atoms[index].nuclearCharge, 0),
   );
   const channels: Channel[] = [];
-  // + 0 makes 0 of −0
-  const from = Math.ceil(charge / 2 - LARGEST_CHARGE_SHIFT) + 0;
-  for (let first = from; first <= charge / 2 + LARGEST_CHARGE_SHIFT; first++) {
-    const charges = [first, charge - first] as const;
+  for (const charges of chargeShares(charge)) {
     const [one, other] = charges.map((value, part) => multiplicitiesOf(nuclearCharges[part] - value));
     for (const a of one) {
       for (const b of other) {
@@ -142,16 +125,13 @@ function pairOf(
 
 /** Computes each state of a fragment once; two equal atoms are one fragment. */
 function fragmentComputer(prepared: PreparedStudy, parts: Parts, farEnd: number | null, control: RunControl) {
-  const atoms = prepared.geometryAt(farEnd);
-  const molecules = parts.map((part) => part.map((index) => atoms[index]));
-  const areEqual =
-    parts.every((part) => part.length === 1) && molecules[0][0].element === molecules[1][0].element;
+  const { atoms, areEqual } = separateParts(prepared, parts, farEnd);
   const known = new Map<string, FragmentEnergy | undefined>();
   return (part: number, charge: number, multiplicity: number, level: Level): FragmentEnergy | undefined => {
     const own = areEqual ? 0 : part;
     const key = `${own} ${charge} ${multiplicity} ${level.name}`;
     if (!known.has(key)) {
-      known.set(key, fragmentEnergy(prepared, molecules[own], charge, multiplicity, level, control));
+      known.set(key, fragmentEnergy(prepared, atoms[own], charge, multiplicity, level, control));
     }
     return known.get(key);
   };

@@ -127,6 +127,7 @@ export interface ExcitedState {
   readonly wellDepth?: WellDepth;
   /** at the points of the scan where both states are known; empty where nothing is computed of them */
   readonly transitionMoments: readonly TransitionMoment[];
+  /** towards ions, whose attraction holds infinitely many, the levels below the end of the curve; D0 is against the ions */
   readonly vibration?: Vibration;
   readonly franckCondon?: FranckCondon;
 }

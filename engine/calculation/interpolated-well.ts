@@ -16,8 +16,10 @@ export interface InterpolatedReading extends WellReading {
 /**
  * The lowest well of a curve from the points that are there alone. Its derivatives are not read off: those of an
  * interpolant are far less certain than its values.
+ *
+ * @param limit - energy of the separate fragments, hartree; undefined: the curve ends at its last point
  */
-export function interpolatedWell(curve: LevelCurve): InterpolatedReading {
+export function interpolatedWell(curve: LevelCurve, limit?: number): InterpolatedReading {
   const toBohr = curve.bohrPerUnit;
   const points = curve.points();
   const interpolated = interpolateCurve(points.map(({ x, energy }) => ({ distance: x * toBohr, energy })));
@@ -40,7 +42,7 @@ export function interpolatedWell(curve: LevelCurve): InterpolatedReading {
     minimum: describeMinimum(minimum),
     well: {
       found: minimum,
-      solvable: solvableCurve(curve, found.energy, undefined, Number.POSITIVE_INFINITY),
+      solvable: solvableCurve(curve, found.energy, limit, Number.POSITIVE_INFINITY),
     },
     energyUncertainty: error,
   };

@@ -92,9 +92,10 @@ export function prepareFragment(
   { study, basisSet, memoryLimit }: PreparedStudy,
   molecule: StudyMolecule,
   level: string,
+  states = 1,
 ): Preparation {
   const { scan: _, active: __, ...rest } = study;
-  return prepare({ ...rest, molecule, levels: [level], states: 1 }, { memoryLimit }, basisSet);
+  return prepare({ ...rest, molecule, levels: [level], states }, { memoryLimit }, basisSet);
 }
 
 /** @param resolved - the basis set, where it is known already */

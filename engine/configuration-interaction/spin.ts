@@ -11,7 +11,8 @@ export type SpinName =
   | 'septet'
   | 'mixed';
 
-const NAMES: readonly SpinName[] = [
+/** Of 2S + 1 = 1, 2 … in turn. */
+export const SPIN_NAMES: readonly SpinName[] = [
   'singlet',
   'doublet',
   'triplet',
@@ -34,7 +35,7 @@ export function spinName(sSquared: number): SpinName {
   const twiceSpin = Math.round(Math.sqrt(Math.max(0, 1 + 4 * sSquared)) - 1);
   const exact = (twiceSpin / 2) * (twiceSpin / 2 + 1);
   if (Math.abs(sSquared - exact) > SPIN_NAME_TOLERANCE) return 'mixed';
-  return NAMES[twiceSpin] ?? 'mixed';
+  return SPIN_NAMES[twiceSpin] ?? 'mixed';
 }
 
 /**

@@ -100,6 +100,25 @@ describe('excited states of H2 by full CI', () => {
     expect(zeroPointToZeroPoint!.value).toBeCloseTo(adiabatic!.value + change, 9);
   });
 
+  it('identity: the well of ¹Σu⁺ is counted to the ions that it goes to, D0 from its lowest level', () => {
+    const { minimum, dissociation, wellDepth, vibration } = found(SINGLET_U);
+    if (minimum.kind !== 'found' || dissociation?.kind !== 'found') throw new Error('no well');
+    if (vibration?.kind !== 'found') throw new Error('no levels');
+    expect(dissociation.fragments.map(({ charge }) => Math.abs(charge))).toEqual([1, 1]);
+    const ion = correlated(compute(study([atom('H')], { ...HYDROGEN, states: 1, charge: -1 })));
+    expect(wellDepth).toMatchObject({ against: 'fragments', farEnd: 8 });
+    expect(wellDepth!.value).toBeCloseTo(ion.energy - minimum.energy, 9);
+    expect(vibration.d0! * HARTREE_IN_WAVENUMBERS).toBeCloseTo(
+      wellDepth!.value * HARTREE_IN_WAVENUMBERS - vibration.zeroPointPerCm,
+      6,
+    );
+    for (const { energyPerCm } of vibration.levels) {
+      expect(energyPerCm).toBeLessThan(wellDepth!.value * HARTREE_IN_WAVENUMBERS);
+    }
+    // levels without end towards ions are not continued beyond the curve
+    expect(vibration.boundLevels).toBeLessThan(60);
+  });
+
   it('identity: Franck–Condon factors are probabilities, and their sums stay below one by the continuum', () => {
     const { franckCondon, vibration } = found(SINGLET_U);
     if (vibration?.kind !== 'found') throw new Error('no levels');
