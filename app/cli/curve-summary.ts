@@ -1,6 +1,7 @@
-import { HARTREE_IN_EV, type LevelFindings, type StudyResults } from '#engine';
+import { type ExcitedState, HARTREE_IN_EV, type LevelFindings, type StudyResults } from '#engine';
 import { coordinateText } from '../calculation/coordinate-text';
 import { formula } from '../study/formula';
+import { depthReference, fragmentsText } from '../study/fragments-text';
 import { counted } from './wording';
 
 /** More excited states than this would hide everything else; the results file has them all. */
@@ -64,7 +65,7 @@ function stateTexts(
   level: string,
   { study, curves }: StudyResults,
 ): readonly string[] {
-  const texts = excitedStates.flatMap(({ curve, minimum, adiabatic, vertical }) => {
+  const texts = excitedStates.flatMap(({ curve, minimum, adiabatic, vertical, ...limit }) => {
     const parts = [
       ...(minimum.kind === 'found' && adiabatic
         ? [
@@ -73,12 +74,26 @@ function stateTexts(
           ]
         : []),
       ...(vertical ? [`vertical excitation ${inEv(vertical.energy.value)}`] : []),
+      ...limitParts(limit, study),
     ];
     const name = curves?.[level]?.[curve]?.name ?? `state ${curve + 1}`;
     return parts.length > 0 ? [`${name}: ${parts.join(', ')}`] : [];
   });
   const more = texts.length - MOST_STATES;
   return more > 1 ? [...texts.slice(0, MOST_STATES), `${more} more states, in the results file`] : texts;
+}
+
+/** What the curve tends to, with the depth of its well against that; without a well only where it is known. */
+function limitParts(
+  { wellDepth, dissociation }: Pick<ExcitedState, 'wellDepth' | 'dissociation'>,
+  study: StudyResults['study'],
+): readonly string[] {
+  if (wellDepth) {
+    const place = (x: number) => `its end at ${coordinateText(study, x)}`;
+    const limit = depthReference(study.molecule, wellDepth, dissociation, place);
+    return [`Dₑ = ${inEv(wellDepth.value)} below ${limit}`];
+  }
+  return dissociation?.kind === 'found' ? [`tends to ${fragmentsText(study.molecule, dissociation)}`] : [];
 }
 
 function fitTexts({ fits }: LevelFindings): readonly string[] {

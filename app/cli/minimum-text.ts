@@ -1,6 +1,6 @@
 import type { LevelFindings, StudyResults } from '#engine';
 import { coordinateText } from '../calculation/coordinate-text';
-import { fragmentsText } from '../study/fragments-text';
+import { depthReference } from '../study/fragments-text';
 
 /** Where a level has its minimum and how deep it is; undefined where there is nothing to say. */
 export function minimumText(findings: LevelFindings, study: StudyResults['study']): string | undefined {
@@ -29,10 +29,12 @@ function depthText(
   study: StudyResults['study'],
 ): string {
   if (!wellDepth) return '';
-  const below =
-    wellDepth.against === 'fragments' && dissociation?.kind === 'found'
-      ? fragmentsText(study.molecule, dissociation)
-      : `the curve at ${coordinateText(study, wellDepth.farEnd)}`;
+  const below = depthReference(
+    study.molecule,
+    wellDepth,
+    dissociation,
+    (x) => `the curve at ${coordinateText(study, x)}`,
+  );
   const corrected =
     counterpoise?.kind === 'found' ? `, ${counterpoise.wellDepth.toFixed(6)} with counterpoise` : '';
   return `, ${wellDepth.value.toFixed(6)} hartree below ${below}${corrected}`;

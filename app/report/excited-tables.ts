@@ -1,4 +1,4 @@
-import type { Estimate, ExcitedState, StudyResults } from '#engine';
+import type { Estimate, ExcitedState } from '#engine';
 import { HARTREE_IN_EV } from '#engine';
 import { coordinateCell } from './findings-table';
 import { fileGroup, type NamedResults } from './named-results';
@@ -21,8 +21,8 @@ export function excitedTable(
 ): TextTable | undefined {
   const rows = files.flatMap((file) => {
     const scale = coordinateScale(file.results, shared);
-    return statesOf(file.results).map(({ level, name, state }) => [
-      [...fileGroup(file), `${level} ${name}`].join(', '),
+    return namedStates(file).map(({ title, state }) => [
+      title,
       ...minimumCells(state, scale),
       electronvolts(state.vertical?.energy),
       state.vertical?.oscillatorStrength?.toFixed(STRENGTH_DECIMALS) ?? '',
@@ -56,7 +56,7 @@ export function excitedTable(
 
 /** Franck–Condon factors of the transitions between the levels of the lowest state and of each excited one. */
 export function franckCondonTables(file: NamedResults): readonly TextTable[] {
-  return statesOf(file.results).flatMap(({ level, name, state: { curve, franckCondon } }) => {
+  return namedStates(file).flatMap(({ title, level, state: { curve, franckCondon } }) => {
     const factors = franckCondon?.factors ?? [];
     const count = Math.min(UPPER_LEVELS, factors[0]?.length ?? 0);
     // between wells far apart nothing is left of what is printed
@@ -65,7 +65,7 @@ export function franckCondonTables(file: NamedResults): readonly TextTable[] {
     return [
       {
         id: ['franck-condon', ...fileGroup(file), level, String(curve + 1)].join('-'),
-        heading: `Franck–Condon factors, ${[...fileGroup(file), `${level} ${name}`].join(', ')}`,
+        heading: `Franck–Condon factors, ${title}`,
         columns: [
           { label: 'v″' },
           ...upper.map((v) => ({ groups: ['v′'], label: String(v) })),
@@ -86,19 +86,22 @@ export function franckCondonTables(file: NamedResults): readonly TextTable[] {
   });
 }
 
-interface NamedState {
+/** An excited state as tables name it. */
+export interface NamedState {
+  /** with the file where there are several, and the level: `FCI 1 ¹Σu⁺` */
+  readonly title: string;
   readonly level: string;
-  readonly name: string;
   readonly state: ExcitedState;
 }
 
-function statesOf({ study, findings, curves }: StudyResults): readonly NamedState[] {
+/** The excited states of a file, in the order of its levels. */
+export function namedStates(file: NamedResults): readonly NamedState[] {
+  const { study, findings, curves } = file.results;
   return study.levels.flatMap((level) =>
-    (findings[level]?.excitedStates ?? []).map((state) => ({
-      level,
-      name: curves?.[level]?.[state.curve]?.name ?? `state ${state.curve + 1}`,
-      state,
-    })),
+    (findings[level]?.excitedStates ?? []).map((state) => {
+      const name = curves?.[level]?.[state.curve]?.name ?? `state ${state.curve + 1}`;
+      return { title: [...fileGroup(file), `${level} ${name}`].join(', '), level, state };
+    }),
   );
 }
 

@@ -1,5 +1,5 @@
 import type { Estimate, LevelFindings, StudyResults } from '#engine';
-import { fragmentsText } from '../study/fragments-text';
+import { depthReference } from '../study/fragments-text';
 import { fileGroup, type NamedResults } from './named-results';
 import { coordinateScale, coordinateText, type ScannedCoordinate } from './scanned-coordinate';
 import { ended, percent } from './sentences';
@@ -68,9 +68,9 @@ const ROWS: readonly FindingsRow[] = [
     label: () => 'Well depth is against',
     cell: ({ findings: { wellDepth, dissociation }, results, scale, unit }) => {
       if (!wellDepth) return '';
-      return wellDepth.against === 'fragments' && dissociation?.kind === 'found'
-        ? fragmentsText(results.study.molecule, dissociation)
-        : coordinateText(wellDepth.farEnd * scale, unit);
+      return depthReference(results.study.molecule, wellDepth, dissociation, (x) =>
+        coordinateText(x * scale, unit),
+      );
     },
   },
   {

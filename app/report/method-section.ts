@@ -179,6 +179,13 @@ function findingsSentences(results: StudyResults, citations: Citations): string 
           'Well depths are against separate fragments at the same level and in their own basis functions: of all ways to share charge and spin the lowest; open shells by ROHF where the molecule has RHF.',
         ]
       : []),
+    ...(isAny(({ excitedStates }) =>
+      excitedStates?.some(({ dissociation }) => dissociation?.kind === 'found'),
+    )
+      ? [
+          'Limits of excited states are sums of energies of states of the separate fragments by full CI: the n-th state of a spin at the end of the scan has the n-th sum that couples to this spin, provided that it has come within 0.02 hartree of it and of no other nearer, but for the attraction of ions.',
+        ]
+      : []),
     ...(isAny(({ counterpoise }) => counterpoise?.kind === 'found')
       ? [
           `The superposition error of the basis was estimated by the counterpoise scheme ${citations.cite(PAPERS.counterpoise)}.`,

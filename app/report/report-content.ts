@@ -5,6 +5,7 @@ import { cautionSummary } from './caution-summary';
 import { comparabilityNotes } from './comparability';
 import { correlationTables } from './correlation-tables';
 import { energiesTables } from './energies-table';
+import { excitedLimitsTable } from './excited-limits-table';
 import { excitedTable, franckCondonTables } from './excited-tables';
 import { findingsTable } from './findings-table';
 import { fitsTable } from './fits-table';
@@ -68,7 +69,7 @@ export function reportDocument({ results, names, sentences, figure }: ReportInpu
       files.flatMap((file) => tables(...correlationTables(file, shared, citations))),
     ),
     ...section('Excited states', [
-      ...tables(excitedTable(files, shared)),
+      ...tables(excitedTable(files, shared), excitedLimitsTable(files, shared)),
       ...files.flatMap((file) => tables(...franckCondonTables(file))),
     ]),
     ...section('Basis sets', tables(basesTable(files, shared), limitTable(files, shared))),

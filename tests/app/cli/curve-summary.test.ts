@@ -80,6 +80,10 @@ describe('curveTexts', () => {
     expect(textsOf({ excitedStates: [state] }, curves)).toEqual([
       '1 ¹Σu⁺: Tₑ = 10.8846 eV, minimum at 1.25 Å, vertical excitation 13.6057 eV',
     ]);
+    const depth = { value: 0.1, against: 'farEnd', farEnd: 4 } as const;
+    expect(textsOf({ excitedStates: [{ ...state, wellDepth: depth }] }, curves)).toEqual([
+      expect.stringMatching(/, Dₑ = 2\.7211 eV below its end at 4 Å$/),
+    ]);
     const many = textsOf({ excitedStates: new Array(9).fill(state) }, curves);
     expect(many).toHaveLength(7);
     expect(many.at(-1)).toBe('3 more states, in the results file');

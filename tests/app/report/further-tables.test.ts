@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { ExcitedState, LevelFindings, StudyResults } from '#engine';
 import { basesTable, limitTable } from '../../../app/report/bases-table';
+import { excitedLimitsTable } from '../../../app/report/excited-limits-table';
 import { excitedTable, franckCondonTables } from '../../../app/report/excited-tables';
 import { fitsTable } from '../../../app/report/fits-table';
 import { isotopologuesTable, rotationTables } from '../../../app/report/further-levels-tables';
@@ -92,6 +93,34 @@ describe('tables of excited states', () => {
       ['FCI 1 ¹Σu⁺', '1.290', '', '12.5172', '0.2700', '', '', '', ''],
     ]);
     expect(excitedTable([named(withFindings({}))], shared)).toBeUndefined();
+  });
+
+  it('says what each state tends to, how deep its well is against that, and why a limit is not known', () => {
+    const part = { charge: 0, multiplicity: 2, energy: -0.5, level: 'FCI' };
+    const dissociation = {
+      kind: 'found',
+      energy: -0.6,
+      fragments: [
+        { ...part, atoms: [0], excitation: 0 },
+        { ...part, atoms: [1], excitation: 0.375 },
+      ],
+      farEndAbove: -0.01,
+    } as const;
+    const wellDepth = { value: 0.15, against: 'fragments', farEnd: 4, valueAgainstFarEnd: 0.14 } as const;
+    const withoutLimit: ExcitedState = {
+      ...state,
+      curve: 0,
+      dissociation: { kind: 'none', reason: 'Too short a range.' },
+      wellDepth: { value: 0.1, against: 'farEnd', farEnd: 4 },
+    };
+    const excitedStates = [{ ...state, dissociation, wellDepth }, withoutLimit];
+    const table = excitedLimitsTable([named(withFindings({ excitedStates }, { curves }))], shared);
+    expect(table?.rows).toEqual([
+      ['FCI 1 ¹Σu⁺', 'H + H (+10.204 eV)', '−0.2721', '4.0817', 'H + H (+10.204 eV)', ''],
+      ['FCI 1 ¹Σg⁺', '', '', '2.7211', '4 Å', ''],
+    ]);
+    expect(table?.notes.at(-1)).toBe('No limit of FCI 1 ¹Σg⁺: Too short a range.');
+    expect(excitedLimitsTable([named(results)], shared)).toBeUndefined();
   });
 
   it('prints Franck–Condon factors with the sums over all bound levels', () => {

@@ -1,4 +1,5 @@
 import type { ExcitedState, FranckCondon, StateCurve, Study } from '#engine';
+import { fragmentsText } from '../../../study/fragments-text';
 import { formatFixed } from '../../numbers';
 import { Facts } from '../facts';
 import { energyText, positionText, type ShownUnits, uncertaintyText } from './shown-units';
@@ -34,6 +35,7 @@ function StateFacts({
   energyUnit,
 }: { readonly state: ExcitedState; readonly study: Study } & ShownUnits) {
   const { minimum, minimumFrom, vertical, adiabatic, zeroPointToZeroPoint } = state;
+  const { dissociation, wellDepth, vibration } = state;
   const where = positionText(study, lengthUnit);
   const estimate = (key: string, { value, uncertainty }: { value: number; uncertainty: number }) => (
     <span key={key}>
@@ -75,9 +77,24 @@ function StateFacts({
             : ['Transition dipole there, e·a₀', formatFixed(vertical.transitionDipole, 5)],
           adiabatic && ['Tₑ, minimum to minimum', estimate('te', adiabatic)],
           zeroPointToZeroPoint && ['T₀, lowest level to lowest level', estimate('t0', zeroPointToZeroPoint)],
+          dissociation?.kind === 'found'
+            ? ['Tends to', fragmentsText(study.molecule, dissociation)]
+            : undefined,
+          wellDepth && [
+            wellDepth.against === 'fragments'
+              ? 'Well depth, against that'
+              : `Well depth, against ${where(wellDepth.farEnd, 5)}`,
+            energyText(wellDepth.value, energyUnit),
+          ],
+          vibration?.kind === 'found' && vibration.d0 !== undefined
+            ? ['D₀, from the lowest level', energyText(vibration.d0, energyUnit)]
+            : undefined,
         ]}
       />
       {minimum.kind !== 'found' && <p className="absent">{whyNoMinimum(minimum, where)}</p>}
+      {dissociation?.kind === 'none' && (
+        <p className="absent">No limit of separate fragments: {dissociation.reason}</p>
+      )}
     </>
   );
 }

@@ -1,5 +1,5 @@
 import type { LevelFindings, ReferenceWeightFinding, Study } from '#engine';
-import { fragmentsText } from '../../../study/fragments-text';
+import { depthReference } from '../../../study/fragments-text';
 import { formatPlain } from '../../numbers';
 import { type Fact, Facts } from '../facts';
 import { energyText, type PositionText, positionText, type ShownUnits } from './shown-units';
@@ -14,10 +14,7 @@ export function WellFacts({ findings, study, lengthUnit, energyUnit }: WellFacts
   const { minimum, wellDepth, dissociation, counterpoise, instabilityOnset, referenceWeight } = findings;
   const where = positionText(study, lengthUnit);
   const energy = (hartree: number) => energyText(hartree, energyUnit);
-  const limit =
-    wellDepth?.against === 'fragments' && dissociation?.kind === 'found'
-      ? fragmentsText(study.molecule, dissociation)
-      : wellDepth && where(wellDepth.farEnd, 5);
+  const limit = wellDepth && depthReference(study.molecule, wellDepth, dissociation, (x) => where(x, 5));
   const facts: readonly Fact[] = [
     ...(minimum.kind === 'found'
       ? ([
