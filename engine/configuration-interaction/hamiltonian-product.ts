@@ -2,6 +2,7 @@ import { type OrbitalIntegrals, packedPair } from '../integrals/orbital-integral
 import { kernelForm } from '../kernels/form';
 import { type KernelMemory, scratchMemory } from '../kernels/kernel-memory';
 import { addScaledInto } from '../linear-algebra/dense';
+import { isClosedShellDoubles, prepareClosedShellProduct } from './closed-shell-product';
 import { applyDense, buildDenseHamiltonians } from './dense-hamiltonian';
 import type { DeterminantSpace } from './determinant-space';
 import { prepareFastProduct } from './fast-product';
@@ -60,9 +61,10 @@ export function prepareHamiltonianProduct(
     isFast && space.dimension <= FEW_DETERMINANTS
       ? buildDenseHamiltonians(space, sectors, integrals, irreps)
       : undefined;
+  const prepareFast = isClosedShellDoubles(space, integrals) ? prepareClosedShellProduct : prepareFastProduct;
   const prepare = (): BareProduct =>
     isFast
-      ? prepareFastProduct(sectors, integrals, irreps, memory)
+      ? prepareFast(sectors, integrals, irreps, memory)
       : overSectors(space, preparePlainProduct(space, integrals));
   const product: BareProduct = dense
     ? (sector, vector, result) => applyDense(dense.get(sector)!, vector, result)
