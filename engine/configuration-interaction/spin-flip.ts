@@ -22,8 +22,9 @@ function forEachStretch(
     if (h < x) return;
     const imageRows = rowStart[x];
     const count = rows.length - 1;
-    const longest = count > 0 ? rows[1] - rows[0] : 0;
     for (let top = 0; top < count; top += TILE) {
+      // rows of higher rank, which stand below, are not longer
+      const longest = rows[top + 1] - rows[top];
       for (let left = 0; left < longest; left += TILE) {
         for (let row = top; row < Math.min(top + TILE, count); row++) {
           const end = Math.min(left + TILE, rows[row + 1] - rows[row], h === x ? row + 1 : longest);
