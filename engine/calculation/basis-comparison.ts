@@ -45,7 +45,7 @@ export interface BasisFamilyMember {
 
 /**
  * Hartree–Fock and correlation energy extrapolated each by its own formula. An uncertainty is half the spread over
- * all formulas that could be used, and never less than a tenth (with two members only, a third) of what extrapolation
+ * all formulas that could be used, and never less than all (of correlated levels, a third) of what extrapolation
  * added to the largest basis.
  */
 export interface LevelLimit {

@@ -1,4 +1,10 @@
-import { type BasisLimit, correlationLimit, hartreeFockLimit } from '../curves/basis-extrapolation';
+import {
+  type BasisLimit,
+  CORRELATION_LEAST_FRACTION,
+  correlationLimit,
+  HARTREE_FOCK_LEAST_FRACTION,
+  hartreeFockLimit,
+} from '../curves/basis-extrapolation';
 import type { LimitFormula } from './basis-comparison';
 import type { Estimate } from './result';
 
@@ -19,17 +25,12 @@ export interface ExtrapolationPlan {
   readonly hartreeFock: readonly LimitFormula[];
   /** absent for Hartree–Fock levels */
   readonly correlation?: readonly LimitFormula[];
-  /** least uncertainty as a fraction of what extrapolation added to the largest basis */
+  /**
+   * least uncertainty as a fraction of what extrapolation added to the largest basis; of correlated levels, whose energies
+   * gain mostly correlation from it, that of the correlation
+   */
   readonly leastFraction: number;
 }
-
-/** Least uncertainty as a fraction of what extrapolation added to the largest basis. */
-const LEAST_FRACTION = 0.1;
-/**
- * The same from two sets alone, where nothing shows how well they follow the formulas: of H2 in cc-pVDZ and cc-pVTZ
- * the limit of full CI is off the near-exact energy by 0.29 of it.
- */
-const LEAST_FRACTION_OF_TWO = 1 / 3;
 
 /** @returns undefined where no point is known in every basis */
 export function planExtrapolation(
@@ -41,7 +42,7 @@ export function planExtrapolation(
   return {
     hartreeFock: sharedFormulas(limits.map((limit) => limit.hartreeFock)),
     ...(correlation.length > 0 && { correlation: sharedFormulas(correlation) }),
-    leastFraction: places[0].length > 2 ? LEAST_FRACTION : LEAST_FRACTION_OF_TWO,
+    leastFraction: correlation.length > 0 ? CORRELATION_LEAST_FRACTION : HARTREE_FOCK_LEAST_FRACTION,
   };
 }
 

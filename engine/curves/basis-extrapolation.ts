@@ -9,7 +9,7 @@ export interface FamilyMember {
 export interface BasisLimit {
   /** hartree */
   readonly energy: number;
-  /** half the spread of the variants, hartree; never less than a tenth of the last step of the extrapolation */
+  /** half the spread of the variants, hartree; never less than the least fraction of what extrapolation added */
   readonly uncertainty: number;
   /** every formula that could be used, the first being the result */
   readonly variants: readonly LimitVariant[];
@@ -32,12 +32,19 @@ export interface LimitVariant {
 const HARTREE_FOCK_DECAY = 1.63;
 /** The same with √X: A. Karton, J. M. L. Martin, Theor. Chem. Acc. 115, 330 (2006), value from memory. */
 const HARTREE_FOCK_ROOT_DECAY = 9;
-/** Least uncertainty as a fraction of what extrapolation added to the largest basis. */
-const LEAST_FRACTION = 0.1;
+/**
+ * Least uncertainty of Hartree–Fock energies as a fraction of what extrapolation added to the largest basis: the limits
+ * of He and of H2 are off the numerical Hartree–Fock energies by up to 0.88 of it.
+ */
+export const HARTREE_FOCK_LEAST_FRACTION = 1;
+/** The same of correlation energies: those of He and H2 are off the near-exact ones by up to 0.27 of it. */
+export const CORRELATION_LEAST_FRACTION = 1 / 3;
 
 /**
- * Basis-set limit of Hartree–Fock energies. With three consecutive sets E_X = E + A·exp(−bX) with b fitted
- * (D. Feller, J. Chem. Phys. 96, 6104 (1992)); with two, b fixed. The other variants only serve the uncertainty.
+ * Basis-set limit of Hartree–Fock energies: E_X = E + A·exp(−bX) from the two largest sets with b fixed. The other
+ * variants only serve the uncertainty, among them b fitted to three consecutive sets (D. Feller, J. Chem. Phys. 96, 6104
+ * (1992)): the step from a double-zeta set is larger than the exponential has it, so that from it such a fit falls
+ * short – of H2 at 1.4 bohr by twice as much as the two larger sets alone, of He likewise.
  *
  * @param members - any order; the largest two or three are used
  * @returns undefined with fewer than two distinct cardinal numbers
@@ -56,7 +63,7 @@ export function hartreeFockLimit(members: readonly FamilyMember[]): BasisLimit |
     ),
   ];
   const threePoint = small && exponentialThreePoint(large, medium, small);
-  return limitOf(large, threePoint ? [threePoint, ...twoPoint] : twoPoint);
+  return limitOf(large, threePoint ? [...twoPoint, threePoint] : twoPoint, HARTREE_FOCK_LEAST_FRACTION);
 }
 
 /**
@@ -76,7 +83,8 @@ export function correlationLimit(members: readonly FamilyMember[]): BasisLimit |
     variant('inverseCube', large, medium, cube),
     variant('inverseFourth', large, medium, (x) => (x + 0.5) ** -4),
   ];
-  return limitOf(large, small ? [...variants, variant('inverseCube', medium, small, cube)] : variants);
+  const all = small ? [...variants, variant('inverseCube', medium, small, cube)] : variants;
+  return limitOf(large, all, CORRELATION_LEAST_FRACTION);
 }
 
 function byFallingCardinal(members: readonly FamilyMember[]): FamilyMember[] {
@@ -115,13 +123,13 @@ function exponentialThreePoint(
   };
 }
 
-function limitOf(large: FamilyMember, variants: readonly LimitVariant[]): BasisLimit {
+function limitOf(large: FamilyMember, variants: readonly LimitVariant[], leastFraction: number): BasisLimit {
   const energies = variants.map(({ energy }) => energy);
   const [energy] = energies;
   const spread = Math.max(...energies) - Math.min(...energies);
   return {
     energy,
-    uncertainty: Math.max(spread / 2, LEAST_FRACTION * Math.abs(energy - large.energy)),
+    uncertainty: Math.max(spread / 2, leastFraction * Math.abs(energy - large.energy)),
     variants,
   };
 }

@@ -17,7 +17,7 @@ const NAMES = ['cc-pVDZ', 'cc-pVTZ', 'cc-pVQZ'];
 function family(names: readonly string[] = NAMES): StudyInBasis[] {
   return names.map((name) => {
     const x = NAMES.indexOf(name) + 2;
-    const meanField = [0, 1, 2].map((p) => -1 - 0.1 * p + (0.3 + 0.05 * p) * Math.exp(-1.5 * x));
+    const meanField = [0, 1, 2].map((p) => -1 - 0.1 * p + (0.3 + 0.05 * p) * Math.exp(-1.63 * x));
     const correlation = [0, 1, 2].map((p) => -0.2 + (0.1 + 0.02 * p) * x ** -3);
     return made(name, {
       RHF: { energies: meanField },
@@ -37,7 +37,7 @@ describe('basisSetLimit', () => {
     const { levels, family: name, members } = limitOf(family().reverse());
     expect(name).toBe('cc-pVXZ');
     expect(members.map(({ cardinal }) => cardinal)).toEqual([2, 3, 4]);
-    expect(levels.RHF?.hartreeFock.formula).toBe('exponentialThreePoint');
+    expect(levels.RHF?.hartreeFock).toEqual({ formula: 'exponential', cardinals: [3, 4] });
     expect(levels.FCI?.correlation).toEqual({ formula: 'inverseCube', cardinals: [3, 4] });
     for (const p of [0, 1, 2]) {
       expect(levels.RHF?.energies[p]?.value).toBeCloseTo(-1 - 0.1 * p, 12);
@@ -45,25 +45,36 @@ describe('basisSetLimit', () => {
     }
   });
 
-  it('identity: the uncertainty is at least half the spread of the formulas and a tenth of the last step', () => {
+  it('identity: the uncertainty is at least all that extrapolation added to Hartree–Fock, a third with correlation', () => {
     const studies = family();
     const { levels } = limitOf(studies);
-    const limit = levels.FCI?.energies[0];
-    const largest = studies[2]?.levels.FCI?.energies[0];
-    if (!limit || largest == null) throw new Error('no limit');
-    expect(limit.uncertainty).toBeGreaterThanOrEqual(0.1 * Math.abs(limit.value - largest));
+    for (const [level, fraction] of [
+      ['RHF', 1],
+      ['FCI', 1 / 3],
+    ] as const) {
+      const limit = levels[level]?.energies[0];
+      const largest = studies[2]?.levels[level]?.energies[0];
+      if (!limit || largest == null) throw new Error('no limit');
+      expect(limit.uncertainty).toBeGreaterThanOrEqual(fraction * Math.abs(limit.value - largest) - 1e-15);
+    }
     const fromSmaller = limitOf(family(['cc-pVDZ', 'cc-pVTZ'])).levels.FCI?.energies[0];
-    expect(Math.abs((fromSmaller?.value ?? 0) - limit.value)).toBeLessThan(fromSmaller?.uncertainty ?? 0);
+    const limit = levels.FCI?.energies[0]?.value ?? Number.NaN;
+    expect(Math.abs((fromSmaller?.value ?? 0) - limit)).toBeLessThan(fromSmaller?.uncertainty ?? 0);
   });
 
-  it('identity: one formula serves a whole curve, though a better one could be used at some points', () => {
-    const studies = family();
-    // at the last point the second step is larger than the first, so that no exponential goes through all three
-    const odd = studies.map((study, k) => ({
-      ...study,
-      levels: { RHF: { energies: [...(study.levels.RHF?.energies.slice(0, 2) ?? []), -1 - k * k] } },
-    }));
-    expect(limitOf(odd).levels.RHF?.hartreeFock).toEqual({ formula: 'exponential', cardinals: [3, 4] });
+  it('identity: a formula that fails at one point of a curve serves at none, not even for the uncertainty', () => {
+    // steps of 0.1 and 0.09: an exponential through all three goes far beyond; growing steps have none
+    const slow = [-1, -1.1, -1.19];
+    const growing = [-1, -2, -5];
+    const uncertaintyOf = (...curve: readonly (readonly number[])[]) => {
+      const studies = family().map((study, k) => ({
+        ...study,
+        levels: { RHF: { energies: curve.map((place) => place[k]!) } },
+      }));
+      return limitOf(studies).levels.RHF?.energies[0]?.uncertainty;
+    };
+    expect(uncertaintyOf(slow)).toBeGreaterThan(0.3);
+    expect(uncertaintyOf(slow, growing)).toBeLessThan(0.1);
   });
 
   it('identity: a point missing in one basis has no limit, a level missing in one has none at all', () => {
