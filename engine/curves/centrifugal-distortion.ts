@@ -1,5 +1,5 @@
 import { HARTREE_IN_WAVENUMBERS } from '../constants';
-import { boundStates, integrateProduct, radialEquation } from './radial-equation';
+import { boundStates, integrateProduct, integrationWeights, radialEquation } from './radial-equation';
 import { intervalsFor, radialGrid } from './radial-grid';
 import { type RadialCurve, radialRange } from './radial-range';
 
@@ -29,16 +29,21 @@ export function centrifugalDistortions(
 ): readonly (number | undefined)[] {
   const { from, to, centre, phase } = radialRange(curve, mass);
   const grid = radialGrid(centre, from, to, intervalsFor(centre, from, to, phase, PHASE_PER_STEP));
+  const inverseMoment = integrationWeights(grid, (r) => 1 / (2 * mass * r * r));
+  const atRest = radialEquation(grid, (r) => curve.energyAt(r) - curve.limit, mass, 0);
   const solve = (rotation: number, guesses: readonly number[]) =>
     boundStates(
-      radialEquation(grid, (r) => curve.energyAt(r) - curve.limit + rotation / (2 * mass * r * r), mass, 0),
+      {
+        ...atRest,
+        potential: atRest.potential.map((value, i) => value + rotation / (2 * mass * grid.distances[i] ** 2)),
+      },
       0,
       mostLevels,
       0,
       guesses,
-    ).states.map(({ energy, amplitude }) => ({
-      energy,
-      constant: integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
+    ).states.map((state) => ({
+      energy: state.energy,
+      constant: integrateProduct(state, state, inverseMoment),
     }));
   const still = solve(
     0,

@@ -1,6 +1,12 @@
 import type { Termination } from '../termination';
-import { type BoundStates, boundStates, integrateProduct, radialEquation } from './radial-equation';
-import { intervalsFor, radialGrid } from './radial-grid';
+import {
+  type BoundStates,
+  boundStates,
+  integrateProduct,
+  integrationWeights,
+  radialEquation,
+} from './radial-equation';
+import { FOURTH_POWER, intervalsFor, radialGrid } from './radial-grid';
 import { type RadialCurve, radialRange } from './radial-range';
 
 export interface FranckCondonOptions {
@@ -27,15 +33,15 @@ export interface FranckCondonFactors {
    * sum of each row: 1 less what goes to the continuum of the final curve and to levels that were not asked for
    */
   readonly sums: readonly number[];
-  /** largest change of a factor with the last halving of the grid */
+  /** largest change of an extrapolated factor with the last halving of the grid */
   readonly uncertainty: number;
   readonly termination: Termination;
 }
 
 const MOST_LEVELS = 60;
 const TOLERANCE = 1e-6;
-/** Phase a step of the first grid, radian; waves converge as its fourth power. */
-const FIRST_PHASE = 0.1;
+/** Phase a step of the first grid, radian; waves converge as its fourth power, which an extrapolation removes. */
+const FIRST_PHASE = 0.2;
 const HALVINGS = 4;
 
 /**
@@ -72,48 +78,60 @@ export function franckCondonFactors(
       );
     const rows = statesOf(initial, Math.min(mostLevels, options.mostInitial ?? mostLevels), coarser?.rows);
     const columns = statesOf(final, mostLevels, coarser?.columns);
-    const squares = (f: (distance: number) => number) =>
-      rows.states.map((row) =>
-        columns.states.map((column) => integrateProduct(grid, row.amplitude, column.amplitude, f) ** 2),
+    const squares = (f: (distance: number) => number): Matrix => {
+      const weights = integrationWeights(grid, f);
+      return rows.states.map((row) =>
+        columns.states.map((column) => integrateProduct(row, column, weights) ** 2),
       );
+    };
     return {
       rows,
       columns,
       factors: squares(() => 1),
-      squares,
+      strengths: transitionMoment && squares(transitionMoment),
       isComplete: rows.isComplete && columns.isComplete,
     };
   };
 
   let current = solve();
+  let { factors, strengths } = current;
   let uncertainty = Number.POSITIVE_INFINITY;
   let termination: Termination = { kind: 'iterationLimit', limit: HALVINGS };
   for (let halving = 0; halving < HALVINGS && termination.kind !== 'converged'; halving++) {
     intervals *= 2;
     const finer = solve(current);
-    uncertainty = largestChange(current.factors, finer.factors);
+    const extrapolated = extrapolate(current.factors, finer.factors);
+    uncertainty = halving > 0 ? largestChange(factors, extrapolated) : Number.POSITIVE_INFINITY;
+    factors = extrapolated;
+    strengths = finer.strengths && extrapolate(current.strengths, finer.strengths);
     current = finer;
     if (uncertainty <= tolerance && finer.isComplete) termination = { kind: 'converged' };
   }
   return {
-    factors: current.factors,
-    strengths: transitionMoment && current.squares(transitionMoment),
-    sums: current.factors.map((row) => row.reduce((sum, factor) => sum + factor, 0)),
+    factors,
+    strengths,
+    sums: factors.map((row) => row.reduce((sum, factor) => sum + factor, 0)),
     uncertainty,
     termination,
   };
 }
+
+type Matrix = readonly (readonly number[])[];
 
 interface SolvedOnGrid {
   readonly rows: BoundStates;
   readonly columns: BoundStates;
 }
 
+/** Richardson's extrapolation; what the coarser grid lacks stays as it is. */
+function extrapolate(coarse: Matrix | undefined, fine: Matrix): Matrix {
+  return fine.map((row, i) =>
+    row.map((value, j) => value + (value - (coarse?.[i]?.[j] ?? value)) / FOURTH_POWER),
+  );
+}
+
 /** Infinite where the number of levels changed. */
-function largestChange(
-  before: readonly (readonly number[])[],
-  after: readonly (readonly number[])[],
-): number {
+function largestChange(before: Matrix, after: Matrix): number {
   if (before.length !== after.length || before[0]?.length !== after[0]?.length)
     return Number.POSITIVE_INFINITY;
   return Math.max(0, ...after.flatMap((row, i) => row.map((factor, j) => Math.abs(factor - before[i][j]))));

@@ -26,7 +26,11 @@ export interface RadialState {
   readonly energy: number;
   /** u(r_i), normalised so that ∫u²dr = 1, positive at its innermost lobe; bohr^(−1/2) */
   readonly amplitude: Float64Array;
+  /** first and last point at which the wave is not negligible; it is 0 elsewhere */
+  readonly support: Support;
 }
+
+type Support = readonly [first: number, last: number];
 
 /** Beyond a turning point the wave is followed until it has fallen by e to this power; the rest is below 1e-17. */
 const FORBIDDEN_ACTION = 42;
@@ -40,10 +44,10 @@ const SWEEPS = 200;
  */
 const ENERGY_RESOLUTION = 1e-12;
 /**
- * A guess is tried as right to these fractions of the well, one after the other: levels extrapolated from two coarser
- * grids are to the first, those of one to the second.
+ * So is one below this fraction of the distance to the next level, where that is known: what it leaves of the error is
+ * the square of the fraction in the energy, the fraction itself in the wave.
  */
-const GUESS_MARGINS: readonly number[] = [1e-9, 1e-6];
+const GAP_RESOLUTION = 1e-10;
 /** Corrections below this fraction of the well that no longer fall are rounding, and taken as the end. */
 const ENERGY_ROUNDING = 1e-11;
 
@@ -92,17 +96,33 @@ export function boundStates(
   const count = countLevelsBelow(sweeps, below);
   const wanted = Math.min(count, most);
   const lowest = equation.potential.reduce((a, b) => Math.min(a, b));
-  const brackets = Array.from(
-    { length: wanted },
-    (): Bracket => ({ low: lowest, high: below, levelsBelowLow: 0, levelsBelowHigh: count }),
-  );
+  const brackets = Array.from({ length: wanted }, (): Bracket => ({ low: lowest, high: below }));
   const states: RadialState[] = [];
   for (let v = first; v < wanted; v++) {
-    const state = solveLevel(sweeps, v, brackets, below - lowest, guesses[v]);
+    const expected = guesses[v] ?? continued(states);
+    const gap = gapAround(v, guesses, below);
+    const state = solveLevel(sweeps, v, brackets, below - lowest, expected, gap);
     if (!state) return { count, states, isComplete: false };
     states.push(state);
   }
   return { count, states, isComplete: true };
+}
+
+/** The next level as the last three, or two, lead on to it. */
+function continued(states: readonly RadialState[]): number | undefined {
+  const [last, second, third] = states.slice(-3).reverse();
+  if (!second) return undefined;
+  const step = last.energy - second.energy;
+  return last.energy + step + (third ? step - (second.energy - third.energy) : 0);
+}
+
+/** Distance from a level to the nearer of its neighbours, or to the end of all levels; 0: not known. */
+function gapAround(v: number, guesses: readonly number[], below: number): number {
+  if (guesses.length === 0) return 0;
+  const next = guesses[v + 1] ?? below;
+  return (
+    Math.max(0, Math.min(guesses[v] - (guesses[v - 1] ?? Number.NEGATIVE_INFINITY), next - guesses[v])) || 0
+  );
 }
 
 /** Number of levels below an energy. */
@@ -111,19 +131,17 @@ function countLevelsBelow(sweeps: Sweeps, energy: number): number {
   return window ? sweepForward(sweeps, energy, window) : 0;
 }
 
-/** Energies that one level lies between, and how many levels lie below each. */
+/** Energies that one level lies between. */
 interface Bracket {
   low: number;
   high: number;
-  levelsBelowLow: number;
-  levelsBelowHigh: number;
 }
 
 /** A sweep for one level tells something of all of them. */
 function narrow(brackets: readonly Bracket[], energy: number, count: number): void {
   brackets.forEach((bracket, v) => {
-    if (count > v && energy < bracket.high) [bracket.high, bracket.levelsBelowHigh] = [energy, count];
-    if (count <= v && energy > bracket.low) [bracket.low, bracket.levelsBelowLow] = [energy, count];
+    if (count > v) bracket.high = Math.min(bracket.high, energy);
+    else bracket.low = Math.max(bracket.low, energy);
   });
 }
 
@@ -133,6 +151,7 @@ interface Sweeps {
   /** 1/(1 − T) and U − 2 at the energy of the last sweep outwards */
   readonly reciprocal: Float64Array;
   readonly excess: Float64Array;
+  /** 1 − F_i/F_(i+1) of the sweep outwards, 1 − F_i/F_(i−1) of the one inwards */
   readonly outward: Float64Array;
   readonly inward: Float64Array;
   readonly wave: Float64Array;
@@ -154,6 +173,8 @@ function sweepsOf(equation: RadialEquation): Sweeps {
  * @param quantumNumber - v, counted from 0
  * @param brackets - of all levels; narrowed
  * @param well - depth of the well, hartree
+ * @param expected - where the level may be, hartree
+ * @param gap - distance to the next level, hartree; 0 where not known
  * @returns undefined if the level does not settle within the sweeps allowed
  */
 function solveLevel(
@@ -161,44 +182,38 @@ function solveLevel(
   quantumNumber: number,
   brackets: readonly Bracket[],
   well: number,
-  guess?: number,
+  expected: number | undefined,
+  gap: number,
 ): RadialState | undefined {
   const { equation } = sweeps;
   const bracket = brackets[quantumNumber];
-  const isInside = (energy: number) => energy > bracket.low && energy < bracket.high;
-  const trials =
-    guess === undefined
-      ? []
-      : GUESS_MARGINS.flatMap((margin) => [guess - margin * well, guess + margin * well]);
+  const smallEnough = Math.max(ENERGY_RESOLUTION * well, GAP_RESOLUTION * gap);
   let lastCorrection = Number.POSITIVE_INFINITY;
-  let corrected: number | undefined;
+  let trial = expected;
   for (let sweep = 0; sweep < SWEEPS; sweep++) {
-    let trial = corrected ?? trials.shift();
-    while (trial !== undefined && !isInside(trial)) trial = trials.shift();
-    const energy = trial ?? (bracket.low + bracket.high) / 2;
+    const isInside = trial !== undefined && trial > bracket.low && trial < bracket.high;
+    const energy = isInside ? trial! : (bracket.low + bracket.high) / 2;
     const window = windowOf(equation, energy);
     const count = window ? sweepForward(sweeps, energy, window) : 0;
     narrow(brackets, energy, count);
-    const isIsolated =
-      bracket.levelsBelowLow === quantumNumber && bracket.levelsBelowHigh === quantumNumber + 1;
-    corrected = undefined;
-    if (!window || !isIsolated) continue;
+    trial = undefined;
+    if (!window || count < quantumNumber || count > quantumNumber + 1) continue;
     const correction = join(sweeps, window);
+    // the wave that was joined has as many nodes as levels lie below the energy that it leads to
+    if (count === quantumNumber ? correction < 0 : correction > 0) continue;
     const size = Math.abs(correction);
     const isRounding = size <= ENERGY_ROUNDING * well && size >= lastCorrection / 2;
-    if (size <= ENERGY_RESOLUTION * well || isRounding) {
-      return { energy: energy + correction, amplitude: amplitudeOf(sweeps, window) };
+    if (size <= smallEnough || isRounding) {
+      return { energy: energy + correction, amplitude: amplitudeOf(sweeps, window), support: window };
     }
     lastCorrection = size;
-    corrected = energy + correction;
+    trial = energy + correction;
   }
   return undefined;
 }
 
-type Window = readonly [first: number, last: number];
-
 /** The points between which the wave of this energy is not negligible; undefined: the energy is below the well. */
-function windowOf({ potential, weights }: RadialEquation, energy: number): Window | undefined {
+function windowOf({ potential, weights }: RadialEquation, energy: number): Support | undefined {
   const reach = (turning: number, direction: -1 | 1): number => {
     let action = 0;
     let i = turning;
@@ -220,15 +235,15 @@ function windowOf({ potential, weights }: RadialEquation, energy: number): Windo
 }
 
 /**
- * d_i = F_(i+1)/F_i − 1 from the inside outwards, into `outward`; kept less one so that no digits of the small
- * q_i = U_i − 2 are lost beside it.
+ * With d_i = F_(i+1)/F_i − 1 from the inside outwards, d_i/(1 + d_i) into `outward`; less one so that no digits of the
+ * small q_i = U_i − 2 are lost beside it.
  *
  * @returns the number of negative ratios
  */
 function sweepForward(
   { equation: { potential, weights }, reciprocal, excess, outward }: Sweeps,
   energy: number,
-  [first, last]: Window,
+  [first, last]: Support,
 ): number {
   let count = 0;
   // beyond the window F = 0: the ratio is infinite and 1 − 1/ratio is 1
@@ -238,9 +253,9 @@ function sweepForward(
     reciprocal[i] = 1 / (1 - t);
     excess[i] = 12 * t * reciprocal[i];
     const d = excess[i] + carried;
-    outward[i] = d;
     if (d < -1) count++;
     carried = d / (1 + d);
+    outward[i] = carried;
   }
   return count;
 }
@@ -251,32 +266,43 @@ function sweepForward(
  */
 function join(
   { equation: { weights }, reciprocal, excess, outward, inward, wave }: Sweeps,
-  [first, last]: Window,
+  [first, last]: Support,
 ): number {
   let carried = 1;
   let joint = first;
   let mismatch = Number.POSITIVE_INFINITY;
   for (let i = last; i >= first; i--) {
-    inward[i] = excess[i] + carried;
-    carried = inward[i] / (1 + inward[i]);
-    const gap = outward[i] + inward[i] - excess[i];
-    if (Math.abs(gap) < Math.abs(mismatch)) [joint, mismatch] = [i, gap];
+    const d = excess[i] + carried;
+    const gap = d + (i > first ? outward[i - 1] : 1);
+    if (Math.abs(gap) < Math.abs(mismatch)) {
+      joint = i;
+      mismatch = gap;
+    }
+    carried = d / (1 + d);
+    inward[i] = carried;
   }
-  wave[joint] = 1;
-  for (let i = joint - 1; i >= first; i--) wave[i] = wave[i + 1] / (1 + outward[i]);
-  for (let i = joint + 1; i <= last; i++) wave[i] = wave[i - 1] / (1 + inward[i]);
   let denominator = 0;
-  for (let i = first; i <= last; i++) {
-    const phi = wave[i] * reciprocal[i];
-    denominator += 12 * weights[i] * phi * phi;
+  let value = 1;
+  for (let i = joint; i >= first; i--) {
+    if (i < joint) value *= 1 - outward[i];
+    wave[i] = value;
+    const phi = value * reciprocal[i];
+    denominator += weights[i] * phi * phi;
   }
-  return mismatch / denominator;
+  value = 1;
+  for (let i = joint + 1; i <= last; i++) {
+    value *= 1 - inward[i];
+    wave[i] = value;
+    const phi = value * reciprocal[i];
+    denominator += weights[i] * phi * phi;
+  }
+  return mismatch / (12 * denominator);
 }
 
 /** u of the wave that was joined last, normalised. */
 function amplitudeOf(
   { equation: { grid, potential }, reciprocal, wave }: Sweeps,
-  [first, last]: Window,
+  [first, last]: Support,
 ): Float64Array {
   const amplitude = new Float64Array(potential.length);
   let norm = 0;
@@ -290,21 +316,24 @@ function amplitudeOf(
   return amplitude;
 }
 
+/** f(r_i)·dr/dy·h: what `integrateProduct` takes for the operator f. */
+export function integrationWeights(
+  { distances, stretch, step }: RadialGrid,
+  f: (distance: number) => number,
+): Float64Array {
+  return distances.map((distance, i) => f(distance) * stretch[i] * step);
+}
+
 /**
  * ∫ f(r)·u₁(r)·u₂(r) dr by the trapezoidal rule, which converges faster than any power of h for waves that vanish
  * at both ends.
+ *
+ * @param weights - of f on the grid of both states
  */
-export function integrateProduct(
-  { distances, stretch, step }: RadialGrid,
-  first: Float64Array,
-  second: Float64Array,
-  f: (distance: number) => number,
-): number {
+export function integrateProduct(first: RadialState, second: RadialState, weights: Float64Array): number {
+  const [a, b] = [first.amplitude, second.amplitude];
+  const end = Math.min(first.support[1], second.support[1]);
   let sum = 0;
-  for (let i = 0; i < first.length; i++) {
-    const product = first[i] * second[i];
-    // outside the window f need not have a value
-    if (product !== 0) sum += product * f(distances[i]) * stretch[i];
-  }
-  return sum * step;
+  for (let i = Math.max(first.support[0], second.support[0]); i <= end; i++) sum += a[i] * b[i] * weights[i];
+  return sum;
 }

@@ -16,6 +16,9 @@ export interface RadialGrid {
   readonly stretch: Float64Array;
 }
 
+/** By how much halving the step divides an error of its fourth power, less one: for Richardson's extrapolation. */
+export const FOURTH_POWER = 15;
+
 /** dr/dy of the map at a distance; both in bohr. */
 export function stretchAt(distance: number, scale: number): number {
   return (distance + scale) ** 2 / (2 * scale);

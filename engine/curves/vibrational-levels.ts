@@ -9,11 +9,12 @@ import {
 import {
   boundStates,
   integrateProduct,
+  integrationWeights,
   type RadialEquation,
   type RadialState,
   radialEquation,
 } from './radial-equation';
-import { intervalsFor, type RadialGrid, radialGrid } from './radial-grid';
+import { FOURTH_POWER, intervalsFor, type RadialGrid, radialGrid } from './radial-grid';
 import { type RadialCurve, radialRange } from './radial-range';
 
 export interface VibrationalOptions {
@@ -80,7 +81,7 @@ export interface VibrationalLevels {
 /** Levels are to be right to 0.01 cm⁻¹ of the curve as given; asked for with some room. */
 export const LEVEL_TOLERANCE_PER_CM = 1e-3;
 /** Phase a step on the first grid, radian. */
-const FIRST_PHASE = 0.2;
+const FIRST_PHASE = 0.4;
 const MOST_LEVELS = 400;
 /** The grid is halved at most so often; three times are usual. */
 const HALVINGS = 6;
@@ -92,7 +93,9 @@ const MOST_INTERVALS = 130_000;
  * differ by the mass alone.
  *
  * Each grid is half as wide as the one before; the O(h⁴) error is removed by Richardson's extrapolation from two
- * grids, and the change between two extrapolations is the uncertainty.
+ * grids, and the change between two extrapolations is the uncertainty. Where three grids show that the error does fall as
+ * h⁴, the O(h⁶) error is removed from two extrapolations too, and what that changes is the uncertainty; on a curve
+ * with a kink, where its tail sets in, it does not.
  *
  * @param curve - with a minimum inside its computed distances
  * @param mass - reduced mass, electron masses
@@ -112,22 +115,23 @@ export function vibrationalLevels(
     const barrier = rotation > 0 ? centrifugalBarrier(equation, range.centre) : undefined;
     const held = barrier && levelsBehindBarrier(equation, barrier, mostLevels, bound.count, guesses);
     const states = [...bound.states, ...(held?.states ?? [])];
+    const inverseMoment = integrationWeights(grid, (r) => 1 / (2 * mass * r * r));
     return {
       boundCount: bound.count,
       states,
       isComplete: bound.isComplete && (held?.isComplete ?? true),
       equation,
       barrier,
-      rotationalConstants: states.map(({ amplitude }) =>
-        integrateProduct(grid, amplitude, amplitude, (r) => 1 / (2 * mass * r * r)),
-      ),
+      rotationalConstants: states.map((state) => integrateProduct(state, state, inverseMoment)),
     };
   };
   const tolerance = tolerancePerCm / HARTREE_IN_WAVENUMBERS;
 
   let intervals = intervalsFor(range.centre, range.from, range.to, range.phase, FIRST_PHASE);
   let grid = solve(intervals);
+  let coarser: GridSolution | undefined;
   let extrapolated: readonly Extrapolated[] = [];
+  let best: readonly Extrapolated[] = [];
   let change: readonly number[] = [];
   let termination: Termination = { kind: 'iterationLimit', limit: HALVINGS };
   for (let halving = 0; halving < HALVINGS; halving++) {
@@ -135,10 +139,14 @@ export function vibrationalLevels(
     if (halving >= 2 && intervals > MOST_INTERVALS) break;
     const finer = solve(intervals, expectedOnNext(grid, extrapolated));
     const next = extrapolate(grid, finer);
-    change = next.map(({ energy }, v) =>
-      Math.abs(energy - (extrapolated[v]?.energy ?? Number.POSITIVE_INFINITY)),
+    best = next.map((level, v) =>
+      fallsAsFourthPower([coarser, grid, finer], v) ? richardson(extrapolated[v], level, SIXTH_POWER) : level,
     );
-    [grid, extrapolated] = [finer, next];
+    change = next.map((level, v) => {
+      const before = best[v] === level ? extrapolated[v] : best[v];
+      return before ? Math.abs(level.energy - before.energy) : Number.POSITIVE_INFINITY;
+    });
+    [coarser, grid, extrapolated] = [grid, finer, next];
     if (!finer.isComplete) {
       termination = { kind: 'stagnated', iterationsWithoutProgress: 1 };
       break;
@@ -148,7 +156,8 @@ export function vibrationalLevels(
       break;
     }
   }
-  const all = extrapolated.map(({ energy, rotationalConstant }, v): VibrationalLevel => {
+  const beyond = extrapolationWeights(curve, grid.equation.grid);
+  const all = best.map(({ energy, rotationalConstant }, v): VibrationalLevel => {
     const state = grid.states[v];
     // the wave of a level behind a barrier does not reach the end of the grid
     const beyondEnds = v < grid.boundCount ? endError(grid.equation, state, mass) : 0;
@@ -160,7 +169,7 @@ export function vibrationalLevels(
       rotationalConstantPerCm: rotationalConstant * HARTREE_IN_WAVENUMBERS,
       uncertaintyPerCm: uncertainty * HARTREE_IN_WAVENUMBERS,
       converged: uncertainty <= tolerance,
-      extrapolatedPerCm: extrapolatedShare(curve, grid.equation.grid, state) * HARTREE_IN_WAVENUMBERS,
+      extrapolatedPerCm: integrateProduct(state, state, beyond) * HARTREE_IN_WAVENUMBERS,
     };
   });
   const levels = all.slice(0, grid.boundCount);
@@ -210,13 +219,33 @@ function expectedOnNext({ states }: GridSolution, extrapolated: readonly Extrapo
   });
 }
 
-/** Richardson's extrapolation of the levels that both grids have. */
+/** By how much halving the grid divides an error of its sixth power, less one. */
+const SIXTH_POWER = 63;
+/** How near to 16 the ratio of two changes must be for the error to fall as h⁴. */
+const RATIO_RANGE = [12, 20] as const;
+
+function fallsAsFourthPower(grids: readonly (GridSolution | undefined)[], v: number): boolean {
+  const [first, second, third] = grids.map((grid) => grid?.states[v]?.energy ?? Number.NaN);
+  const ratio = (first - second) / (second - third);
+  return ratio > RATIO_RANGE[0] && ratio < RATIO_RANGE[1];
+}
+
+/** Of the levels that both grids have. */
 function extrapolate(coarse: GridSolution, fine: GridSolution): Extrapolated[] {
-  const improve = (h: number, half: number) => half + (half - h) / 15;
-  return fine.states.slice(0, coarse.states.length).map(({ energy }, v) => ({
-    energy: improve(coarse.states[v].energy, energy),
-    rotationalConstant: improve(coarse.rotationalConstants[v], fine.rotationalConstants[v]),
-  }));
+  const levelsOf = ({ states, rotationalConstants }: GridSolution) =>
+    states.map(({ energy }, v): Extrapolated => ({ energy, rotationalConstant: rotationalConstants[v] }));
+  const coarseLevels = levelsOf(coarse);
+  return levelsOf(fine)
+    .slice(0, coarseLevels.length)
+    .map((level, v) => richardson(coarseLevels[v], level, FOURTH_POWER));
+}
+
+function richardson(coarse: Extrapolated, fine: Extrapolated, divisor: number): Extrapolated {
+  return {
+    energy: fine.energy + (fine.energy - coarse.energy) / divisor,
+    rotationalConstant:
+      fine.rotationalConstant + (fine.rotationalConstant - coarse.rotationalConstant) / divisor,
+  };
 }
 
 /**
@@ -239,13 +268,10 @@ function endError(
   return wall(0, 1) + wall(last, last - 1);
 }
 
-function extrapolatedShare(
-  { energyAt, limit, computed }: RadialCurve,
-  grid: RadialGrid,
-  state: RadialState,
-): number {
+/** Of |V − limit| beyond the computed points, and of the same about the first point's energy inside them. */
+function extrapolationWeights({ energyAt, limit, computed }: RadialCurve, grid: RadialGrid): Float64Array {
   const first = energyAt(computed.from);
-  return integrateProduct(grid, state.amplitude, state.amplitude, (r) => {
+  return integrationWeights(grid, (r) => {
     if (r < computed.from) return Math.abs(energyAt(r) - first);
     return r > computed.to ? Math.abs(energyAt(r) - limit) : 0;
   });

@@ -1,5 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import { boundStates, integrateProduct, radialEquation } from '../../../engine/curves/radial-equation';
+import {
+  boundStates,
+  integrateProduct,
+  integrationWeights,
+  radialEquation,
+} from '../../../engine/curves/radial-equation';
 import { radialGrid } from '../../../engine/curves/radial-grid';
 
 const MASS = 2000;
@@ -24,11 +29,12 @@ describe('boundStates', () => {
 
   it('identity: states are orthonormal and state v has v nodes', () => {
     const { grid, states, count, isComplete } = solved(3000);
+    const unity = integrationWeights(grid, () => 1);
     expect(isComplete).toBe(true);
     expect(states).toHaveLength(count);
     states.forEach((first, v) => {
       states.forEach((second, w) => {
-        const overlap = integrateProduct(grid, first.amplitude, second.amplitude, () => 1);
+        const overlap = integrateProduct(first, second, unity);
         expect(Math.abs(overlap - (v === w ? 1 : 0))).toBeLessThan(1e-6);
       });
       // below a millionth of the wave its sign is rounding
@@ -45,9 +51,10 @@ describe('boundStates', () => {
       const decay = Math.exp(-STEEPNESS * (r - CENTRE));
       return 2 * DEPTH * STEEPNESS * decay * (1 - decay);
     };
-    for (const { energy, amplitude } of states) {
-      const kinetic = energy - integrateProduct(grid, amplitude, amplitude, morse);
-      const virial = integrateProduct(grid, amplitude, amplitude, (r) => r * slope(r));
+    const [potential, ofSlope] = [morse, (r: number) => r * slope(r)].map((f) => integrationWeights(grid, f));
+    for (const state of states) {
+      const kinetic = state.energy - integrateProduct(state, state, potential);
+      const virial = integrateProduct(state, state, ofSlope);
       expect(Math.abs(2 * kinetic - virial)).toBeLessThan(1e-7);
     }
   });
