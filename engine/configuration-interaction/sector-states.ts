@@ -1,11 +1,12 @@
 import {
   type DavidsonOptions,
-  type DavidsonProblem,
   type DavidsonResult,
   DEGENERACY_TOLERANCE,
   lowestEigenpairs,
 } from '../linear-algebra/davidson';
 import { addScaledInto, dot } from '../linear-algebra/dense';
+import type { DavidsonProblem } from '../linear-algebra/subspace';
+import type { VectorAlgebra } from '../linear-algebra/vector-algebra';
 import type { RunControl } from '../termination';
 import {
   chooseGuesses,
@@ -35,6 +36,8 @@ export interface StateSettings {
   readonly maximumIterations: number;
   readonly control: RunControl;
   readonly stage: string;
+  /** what handles the vectors of the iteration; default: plain TypeScript */
+  readonly algebra?: VectorAlgebra;
 }
 
 export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iterations' | 'termination'>;
@@ -85,10 +88,11 @@ function iterate(
   const guesses = selectGuesses(problem, model, precondition, settings.states);
   const probing = probes(problem, model, precondition);
   const solve = (vectors: readonly Float64Array[]) =>
-    lowestEigenpairs(asDavidsonProblem(problem, precondition, vectors), {
+    lowestEigenpairs(asDavidsonProblem(problem, precondition, vectors, settings), {
       ...settings,
       roots: settings.states,
       ceiling,
+      trustsEstimates: (vector) => !isStronglyMixed(lowest ?? { value: 0, vector }),
       maximumVectors: basisVectorLimit(settings.states, problem.dimension),
     });
   const found = solve([...guesses.map((k) => spreadModelVector(model, k, problem.dimension)), ...probing]);
@@ -105,6 +109,7 @@ function asDavidsonProblem(
   problem: SectorProblem,
   precondition: ReturnType<typeof modelPreconditioner>,
   guesses: readonly Float64Array[],
+  { algebra }: StateSettings,
 ): DavidsonProblem {
   return {
     dimension: problem.dimension,
@@ -112,6 +117,7 @@ function asDavidsonProblem(
     precondition,
     restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
     guesses,
+    ...(algebra && { algebra }),
   };
 }
 
@@ -144,7 +150,7 @@ function lowerStatesOfOtherSpins(
     guesses: readonly Float64Array[],
     closeness: Pick<DavidsonOptions, 'residualTolerance' | 'ceiling' | 'guards'>,
   ) =>
-    lowestEigenpairs(asDavidsonProblem(problem, precondition, guesses), {
+    lowestEigenpairs(asDavidsonProblem(problem, precondition, guesses, settings), {
       ...settings,
       roots: 1,
       ...closeness,

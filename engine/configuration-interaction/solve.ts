@@ -1,7 +1,9 @@
 import { EngineError } from '../errors';
 import type { BetaIntegrals, OrbitalIntegrals } from '../integrals/orbital-integrals';
+import { kernelForm } from '../kernels/form';
 import { scratchMemory } from '../kernels/kernel-memory';
 import { addScaledInto, dot } from '../linear-algebra/dense';
+import { KernelVectors } from '../linear-algebra/kernel-vectors';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import { type CorrelationParts, correlationParts } from './correlation-parts';
 import type { DistinguishingOperator } from './degenerate-states';
@@ -68,6 +70,8 @@ const DEFAULTS = Object.freeze({
   control: UNATTENDED,
 });
 
+/** From here on kernels handle vectors faster than they are called. */
+const LONG_VECTORS = 5000;
 /** ⟨S²⟩ this close counts as the same spin when degenerate states are told apart. */
 const SAME_SPIN = 1e-3;
 
@@ -139,7 +143,17 @@ function solve(
       reference: 0,
       distinguishing: distinguishingOperators(space, symmetry, beta),
     },
-    { ...settings, stage: 'configuration interaction' },
+    {
+      ...settings,
+      stage: 'configuration interaction',
+      ...(kernelForm() === 'fast' &&
+        space.dimension >= LONG_VECTORS && {
+          algebra: new KernelVectors(
+            scratchMemory(),
+            Math.max(...product.sectors.map(({ sector }) => sector.dimension)),
+          ),
+        }),
+    },
   );
 
   const scratch = new Float64Array(space.dimension);

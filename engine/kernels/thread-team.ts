@@ -1,5 +1,6 @@
 import { determinantProductKernels } from './determinant-product';
 import { KernelMemory } from './kernel-memory';
+import { vectorAlgebraKernels } from './vector-algebra';
 import type { WasmMemory } from './web-assembly';
 
 /*
@@ -15,9 +16,15 @@ import type { WasmMemory } from './web-assembly';
 const SHARED = [
   (memory: KernelMemory) => determinantProductKernels(memory).rowTask,
   (memory: KernelMemory) => determinantProductKernels(memory).columnTask,
+  (memory: KernelMemory) => vectorAlgebraKernels(memory).dotTask,
+  (memory: KernelMemory) => vectorAlgebraKernels(memory).combineTask,
+  (memory: KernelMemory) => vectorAlgebraKernels(memory).rotateTask,
 ] as const;
 export const ROW_TASKS = 0;
 export const COLUMN_TASKS = 1;
+export const VECTOR_DOTS = 2;
+export const VECTOR_COMBINATIONS = 3;
+export const VECTOR_ROTATIONS = 4;
 
 /** Words that leader, helpers and host share. */
 const ROUND = 0;

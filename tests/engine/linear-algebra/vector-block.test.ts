@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { dot } from '../../../engine/linear-algebra/dense';
 import { symmetricEigen } from '../../../engine/linear-algebra/symmetric-eigen';
+import { plainVectors } from '../../../engine/linear-algebra/vector-algebra';
 import { VectorBlock } from '../../../engine/linear-algebra/vector-block';
 import { randomArray, randomSymmetric, seededRandom } from '../../support/random';
 
@@ -28,7 +29,7 @@ describe('VectorBlock', () => {
   it('identity: a combination of the block, and a zero vector, bring nothing new', () => {
     const block = randomBlock(200, 4, 2);
     const combination = new Float64Array(200);
-    block.combineInto(combination, Float64Array.from([1, -2, 3, 0.5]), 4, 1, 0);
+    plainVectors.combine(combination, 0, block.members, [1, -2, 3, 0.5]);
     expect(block.orthonormalise(combination, 1e-9)).toBe(false);
     expect(block.orthonormalise(new Float64Array(200), 1e-9)).toBe(false);
   });
@@ -38,11 +39,12 @@ describe('VectorBlock', () => {
     const { vectors } = symmetricEigen(randomSymmetric(5, seededRandom(9)), 5);
     const expected = Array.from({ length: 3 }, (_, k) => {
       const target = new Float64Array(1300);
-      block.combineInto(target, vectors, 5, 5, k);
+      const column = Array.from({ length: 5 }, (_, i) => vectors[i * 5 + k]);
+      plainVectors.combine(target, 0, block.members, column);
       return target;
     });
     const kept = Float64Array.from({ length: 15 }, (_, k) => vectors[Math.floor(k / 3) * 5 + (k % 3)]);
-    block.rotate(kept, 5, 3);
+    block.rotate(kept, 3);
     expect(block.size).toBe(3);
     expected.forEach((vector, k) => {
       vector.forEach((value, i) => {
