@@ -46,6 +46,8 @@ interface StateAtPoint {
   readonly energy: number;
   readonly spin: SpinName;
   readonly symmetry?: StateSymmetry;
+  /** of spin and symmetry together */
+  readonly kind: string;
   /** costs more than all the rest, and is seldom asked for */
   components(): readonly StateComponent[];
 }
@@ -115,15 +117,17 @@ export function stateReader(level: string): StateReader {
 function statesAt(point: PointResult, index: number, level: string, hasLabels: boolean): StateAtPoint[] {
   const result = point.levels[level];
   const common = { point: index, coordinate: point.coordinate ?? 0 };
-  const labelled = (symmetry: StateSymmetry | undefined) => (hasLabels && symmetry ? { symmetry } : {});
+  const kindWith = (spin: SpinName, symmetry: StateSymmetry | undefined) => {
+    const known = { spin, ...(hasLabels && symmetry && { symmetry }) };
+    return { ...known, kind: kindOf(known) };
+  };
   switch (result?.kind) {
     case 'correlated':
       return result.states.map(({ energy, spin, symmetry, leading }, place) => ({
         ...common,
         place,
         energy,
-        spin,
-        ...labelled(symmetry),
+        ...kindWith(spin, symmetry),
         components: () => leading,
       }));
     case 'singles':
@@ -131,8 +135,7 @@ function statesAt(point: PointResult, index: number, level: string, hasLabels: b
         ...common,
         place,
         energy,
-        spin,
-        ...labelled(symmetry),
+        ...kindWith(spin, symmetry),
         // an electron and the hole that it left: the same spin function for every pair
         components: once(() =>
           leading.map(({ from, to, weight }) => ({
@@ -168,7 +171,7 @@ function areAllLabelled(alongScan: readonly (readonly StateAtPoint[])[]): boolea
 
 /** The states of every kind together: they are shared out by energy, whichever of them would be matched. */
 function chainsOfKinds(alongScan: readonly (readonly StateAtPoint[])[]): readonly Chain[] {
-  return [...groupBy(alongScan.flat(), kindOf)].map(([, states]) => ({
+  return [...groupBy(alongScan.flat(), ({ kind }) => kind)].map(([, states]) => ({
     states,
     spin: states[0].spin,
     ...(states[0].symmetry && { symmetry: states[0].symmetry }),

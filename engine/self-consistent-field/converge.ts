@@ -25,6 +25,12 @@ const DESCENTS = 6;
 export const DESCENT_STEP = 0.2;
 /** Fock matrices that differ by no more than this, hartree, are those of one determinant. */
 const SAME_FOCK = 1e-5;
+/**
+ * An iteration whose Fock matrix is this near, hartree, to that of a known minimum whose Hessian is at least so steep is
+ * inside its basin: rotations beside it are a hundredth of those at which the energy stops being a parabola.
+ */
+const NEARBY_FOCK = 1e-3;
+const STEEP = 0.05;
 /** Of two solutions the later one wins only if it is lower by more than this, hartree. */
 const DISTINCT = 1e-9;
 
@@ -65,8 +71,19 @@ function isSame<P extends MeanFieldPoint>(one: Converged<P>, other: Converged<P>
     one.termination.kind === 'converged' &&
     other.termination.kind === 'converged' &&
     Math.abs(one.point.energy - other.point.energy) <= DISTINCT &&
-    one.point.fock.every((value, i) => Math.abs(value - other.point.fock[i]) <= SAME_FOCK)
+    areWithin(SAME_FOCK, one.point.fock, other.point.fock)
   );
+}
+
+/** Whether further iterations from here would end in the known determinant. */
+function leadsTo<P extends MeanFieldPoint>({ fock }: P, known: Converged<P>): boolean {
+  const { termination, stability = 0, point } = known;
+  return termination.kind === 'converged' && stability >= STEEP && areWithin(NEARBY_FOCK, fock, point.fock);
+}
+
+function areWithin(distance: number, one: Float64Array, other: Float64Array): boolean {
+  for (let i = 0; i < one.length; i++) if (!(Math.abs(one[i] - other[i]) <= distance)) return false;
+  return true;
 }
 
 /** Convergence of one problem from several starts, counting iterations over all. */
@@ -83,10 +100,10 @@ class Attempt<P extends MeanFieldPoint> {
   /**
    * From a Fock matrix to a determinant that no rotation lowers.
    *
-   * @param known - such a determinant: one start more that leads to it needs no more than the iterations
+   * @param known - such a determinant: one start more that leads to it needs no more than the iterations up to it
    */
   descend(firstFock: Float64Array, known?: Converged<P>): Converged<P> {
-    let current = this.converge(firstFock);
+    let current = this.converge(firstFock, known);
     if (known?.stability !== undefined && isSame(current, known)) return known;
     if (this.isKnownToBeStable(current)) return current;
     for (let descent = 0; descent < DESCENTS; descent++) {
@@ -114,8 +131,12 @@ class Attempt<P extends MeanFieldPoint> {
     );
   }
 
-  /** Extrapolated iterations; where they do not settle, the minimiser from the lowest determinant met. */
-  private converge(firstFock: Float64Array): Converged<P> {
+  /**
+   * Extrapolated iterations; where they do not settle, the minimiser from the lowest determinant met.
+   *
+   * @param known - taken for the end as soon as they come near it
+   */
+  private converge(firstFock: Float64Array, known?: Converged<P>): Converged<P> {
     const extrapolation = new CommutatorExtrapolation();
     let fock = firstFock;
     let lowest: P | undefined;
@@ -123,6 +144,7 @@ class Attempt<P extends MeanFieldPoint> {
     for (let iteration = 1; iteration <= this.options.extrapolatedIterations; iteration++) {
       this.iterations++;
       const point = this.functional.evaluate(this.functional.aufbau(fock));
+      if (known && leadsTo(point, known)) return known;
       const error = this.functional.commutator(point);
       const residual = maximumAbsolute(error);
       this.control.report({ stage: this.stage, iteration, residual });

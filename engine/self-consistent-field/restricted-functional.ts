@@ -37,6 +37,7 @@ export class RestrictedFunctional implements MeanFieldFunctional<RestrictedPoint
   readonly orbitalCount: number;
   private readonly coulomb: Float64Array;
   private readonly exchange: Float64Array;
+  private readonly ofSinglePairs = new WeakMap<RestrictedPoint, VirtualFields>();
 
   constructor(
     readonly problem: MeanFieldProblem,
@@ -77,22 +78,8 @@ export class RestrictedFunctional implements MeanFieldFunctional<RestrictedPoint
   }
 
   evaluate(coefficients: Float64Array): RestrictedPoint {
-    const { functionCount: n } = this.problem;
-    const m = this.orbitalCount;
-    const o = this.occupied;
-    const density = buildDensity(coefficients, n, m, o);
-    const { fock, energy } = this.fockAndEnergy(density);
-    const { orbitals, orbitalEnergies } = semicanonical(fock, coefficients, n, m, [o]);
-    const inOrbitals = congruence(fock, orbitals, n, m);
-    const gradient = new Float64Array((m - o) * o);
-    const curvature = new Float64Array((m - o) * o);
-    for (let a = o; a < m; a++) {
-      for (let i = 0; i < o; i++) {
-        gradient[(a - o) * o + i] = 4 * inOrbitals[a * m + i];
-        curvature[(a - o) * o + i] = 4 * (orbitalEnergies[a] - orbitalEnergies[i]);
-      }
-    }
-    return { coefficients: orbitals, orbitalEnergies, fock, density, energy, gradient, curvature };
+    const density = buildDensity(coefficients, this.problem.functionCount, this.orbitalCount, this.occupied);
+    return new EvaluatedPoint(this, coefficients, density, this.fockAndEnergy(density));
   }
 
   rotate(point: RestrictedPoint, rotation: Float64Array): Float64Array {
@@ -114,12 +101,38 @@ export class RestrictedFunctional implements MeanFieldFunctional<RestrictedPoint
    * (ε_a − ε_i)x + [4(ai|bj)] − (ab|ij) − (aj|bi), the bracket for singlets only.
    */
   responseProduct(point: RestrictedPoint, x: Float64Array, spin: 'singlet' | 'triplet'): Float64Array {
-    const { functionCount: n, repulsion } = this.problem;
+    const { functionCount: n } = this.problem;
     const m = this.orbitalCount;
     const o = this.occupied;
     const virtual = m - o;
-    const occupiedPart = columnRange(point.coefficients, n, m, 0, o);
-    const virtualPart = columnRange(point.coefficients, n, m, o, m);
+    const coulombFactor = spin === 'singlet' ? 2 : 0;
+    const product =
+      o === 1
+        ? this.singlePairResponse(point, x, coulombFactor)
+        : this.response(
+            columnRange(point.coefficients, n, m, 0, o),
+            columnRange(point.coefficients, n, m, o, m),
+            x,
+            coulombFactor,
+          );
+    for (let a = 0; a < virtual; a++) {
+      for (let i = 0; i < o; i++) {
+        product[a * o + i] += (point.orbitalEnergies[o + a] - point.orbitalEnergies[i]) * x[a * o + i];
+      }
+    }
+    return product;
+  }
+
+  /** The field of the density that x changes, between virtual and occupied orbitals. */
+  private response(
+    occupiedPart: Float64Array,
+    virtualPart: Float64Array,
+    x: Float64Array,
+    coulombFactor: number,
+  ): Float64Array {
+    const { functionCount: n, repulsion } = this.problem;
+    const o = this.occupied;
+    const virtual = this.orbitalCount - o;
     const half = multiply(
       virtualPart,
       multiply(x, transpose(occupiedPart, n, o), virtual, o, n),
@@ -131,20 +144,98 @@ export class RestrictedFunctional implements MeanFieldFunctional<RestrictedPoint
     for (let i = 0; i < n; i++)
       for (let j = 0; j < n; j++) change[i * n + j] = half[i * n + j] + half[j * n + i];
     coulombExchangeInto(change, repulsion, n, this.coulomb, this.exchange);
-    const coulombFactor = spin === 'singlet' ? 2 : 0;
     const field = this.coulomb.map((j, i) => coulombFactor * j - this.exchange[i]);
-    const product = multiplyLeftTransposed(
-      virtualPart,
-      multiply(field, occupiedPart, n, n, o),
-      virtual,
-      n,
-      o,
-    );
+    return multiplyLeftTransposed(virtualPart, multiply(field, occupiedPart, n, n, o), virtual, n, o);
+  }
+
+  /** The same of a single pair i: all that it takes, (ab|ii) and (ai|bi), is in the fields of the pair's own density. */
+  private singlePairResponse(point: RestrictedPoint, x: Float64Array, coulombFactor: number): Float64Array {
+    const { coulomb, exchange } = this.virtualFields(point);
+    const virtual = x.length;
+    const product = new Float64Array(virtual);
     for (let a = 0; a < virtual; a++) {
-      for (let i = 0; i < o; i++) {
-        product[a * o + i] += (point.orbitalEnergies[o + a] - point.orbitalEnergies[i]) * x[a * o + i];
+      for (let b = 0; b < virtual; b++) {
+        const place = a * virtual + b;
+        product[a] += ((2 * coulombFactor - 1) * exchange[place] - coulomb[place]) * x[b];
       }
     }
     return product;
+  }
+
+  private virtualFields(point: RestrictedPoint): VirtualFields {
+    const known = this.ofSinglePairs.get(point);
+    if (known) return known;
+    const { functionCount: n, repulsion } = this.problem;
+    const m = this.orbitalCount;
+    const virtualPart = columnRange(point.coefficients, n, m, 1, m);
+    coulombExchangeInto(point.density, repulsion, n, this.coulomb, this.exchange);
+    const [coulomb, exchange] = [this.coulomb, this.exchange].map((field) =>
+      congruence(field, virtualPart, n, m - 1),
+    );
+    this.ofSinglePairs.set(point, { coulomb, exchange });
+    return { coulomb, exchange };
+  }
+}
+
+/** J and K of a density among the virtual orbitals. */
+interface VirtualFields {
+  readonly coulomb: Float64Array;
+  readonly exchange: Float64Array;
+}
+
+/** Extrapolated iterations need energy and Fock matrix only: the rest is worked out when it is first asked for. */
+class EvaluatedPoint implements RestrictedPoint {
+  readonly fock: Float64Array;
+  readonly energy: number;
+  #semicanonical: ReturnType<typeof semicanonical> | undefined;
+  #gradient: Float64Array | undefined;
+
+  constructor(
+    private readonly functional: RestrictedFunctional,
+    private readonly given: Float64Array,
+    readonly density: Float64Array,
+    { fock, energy }: { fock: Float64Array; energy: number },
+  ) {
+    this.fock = fock;
+    this.energy = energy;
+  }
+
+  get coefficients(): Float64Array {
+    return this.turned.orbitals;
+  }
+
+  get orbitalEnergies(): Float64Array {
+    return this.turned.orbitalEnergies;
+  }
+
+  get gradient(): Float64Array {
+    const { problem, orbitalCount: m } = this.functional;
+    if (this.#gradient) return this.#gradient;
+    const inOrbitals = congruence(this.fock, this.coefficients, problem.functionCount, m);
+    this.#gradient = this.ofExcitations((a, i) => 4 * inOrbitals[a * m + i]);
+    return this.#gradient;
+  }
+
+  get curvature(): Float64Array {
+    const { orbitalEnergies } = this;
+    return this.ofExcitations((a, i) => 4 * (orbitalEnergies[a] - orbitalEnergies[i]));
+  }
+
+  private get turned(): ReturnType<typeof semicanonical> {
+    const { problem, orbitalCount, occupied } = this.functional;
+    this.#semicanonical ??= semicanonical(this.fock, this.given, problem.functionCount, orbitalCount, [
+      occupied,
+    ]);
+    return this.#semicanonical;
+  }
+
+  /** virtual × occupied */
+  private ofExcitations(value: (a: number, i: number) => number): Float64Array {
+    const { orbitalCount: m, occupied: o } = this.functional;
+    const values = new Float64Array((m - o) * o);
+    for (let a = o; a < m; a++) {
+      for (let i = 0; i < o; i++) values[(a - o) * o + i] = value(a, i);
+    }
+    return values;
   }
 }

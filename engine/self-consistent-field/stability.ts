@@ -10,6 +10,8 @@ const ITERATIONS = 60;
 const VECTORS = 40;
 /** Excitations with the lowest orbital-energy differences that the search starts from. */
 const UNIT_GUESSES = 5;
+/** Excitations of which the whole Hessian takes about as many products as the search. */
+const FEW_EXCITATIONS = 16;
 /** Keeps the preconditioner's denominators off zero, hartree. */
 const SMALLEST_DENOMINATOR = 1e-2;
 
@@ -46,7 +48,7 @@ export function lowestHessianEigenpair(
   diagonal: Float64Array,
   control: RunControl,
 ): HessianEigenpair {
-  if (diagonal.length <= UNIT_GUESSES) {
+  if (diagonal.length <= FEW_EXCITATIONS) {
     return inStage(control, 'stability', () => lowestDirectly(apply, diagonal.length));
   }
   const { values, vectors } = inStage(control, 'stability', () =>
@@ -76,7 +78,7 @@ export function lowestHessianEigenpair(
   return { value: values[0], vector: vectors[0] };
 }
 
-/** The Hessian column by column: so few that the search would begin with all of them. */
+/** The Hessian column by column. */
 function lowestDirectly(apply: (vector: Float64Array) => Float64Array, dimension: number): HessianEigenpair {
   const hessian = new Float64Array(dimension * dimension);
   const unit = new Float64Array(dimension);
@@ -101,5 +103,5 @@ function startingVectors(diagonal: Float64Array): Float64Array[] {
     unit[place] = 1;
     return unit;
   });
-  return diagonal.length > units.length ? [...units, everySymmetry] : units;
+  return [...units, everySymmetry];
 }
