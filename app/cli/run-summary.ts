@@ -1,5 +1,7 @@
 import type { LevelFindings, LevelResult, StudyResults } from '#engine';
 import { coordinateText } from '../calculation/coordinate-text';
+import { cautionGroups } from '../report/caution-summary';
+import { ended } from '../report/sentences';
 import { comparedConstants } from '../study/compared-constants';
 import { basesLines, unconvergedInBases } from './bases-summary';
 import { curveTexts } from './curve-summary';
@@ -102,16 +104,11 @@ function onsetText({ instabilityOnset }: LevelFindings, study: StudyResults['stu
   return `becomes unstable towards different orbitals for different spins at ${place}`;
 }
 
-/** What to mistrust about the curve, and whether there is more to read about single points. */
-function cautionLines({ cautions, points }: StudyResults): readonly string[] {
-  const withCautions = points.filter((point) => point.cautions.length > 0).length;
-  return [
-    ...cautions.flatMap(({ message, meaning, remedy }) => [
-      `Caution: ${meaning === undefined ? message : `${message} ${meaning}`}`,
-      ...(remedy === undefined ? [] : [`  ${remedy}`]),
-    ]),
-    ...(withCautions === 0
-      ? []
-      : [`Cautions at ${withCautions} of ${counted(points.length, 'point')}: see the results file.`]),
-  ];
+/** What to mistrust and where, what that means, and on a line of its own what to do. */
+function cautionLines(results: StudyResults): readonly string[] {
+  const groups = cautionGroups(results, (coordinate) => coordinateText(results.study, coordinate));
+  return groups.flatMap(({ lead, messages, meaning, remedy }) => {
+    const sentences = [...messages, ...(meaning ? [meaning] : [])].map(ended).join(' ');
+    return [`Caution: ${lead ? `${lead}: ` : ''}${sentences}`, ...(remedy ? [`  ${remedy}`] : [])];
+  });
 }

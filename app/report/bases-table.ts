@@ -141,7 +141,7 @@ function notesOf({ basisSetLimit, study }: StudyResults): readonly string[] {
     return curve?.kind === 'none' ? [`${level}, limit: ${ended(curve.reason)}`] : [];
   });
   return [
-    `Limit: Hartree–Fock and correlation energy extrapolated by themselves from ${basisSetLimit.members.map(({ name }) => name).join(', ')}; after ± half the spread of the formulas in use.`,
+    `Limit: Hartree–Fock and correlation energy extrapolated by themselves from ${basisSetLimit.members.map(({ name }) => name).join(', ')}; after ± half the spread of the formulas in use, and at least what extrapolation added to Hartree–Fock, of correlated levels a third of it.`,
     ...reasons,
   ];
 }

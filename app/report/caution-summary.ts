@@ -8,16 +8,25 @@ interface CautionAt {
   readonly coordinate: number | undefined;
 }
 
+/** One thing to mistrust, with where it holds. */
+export interface CautionGroup {
+  /** level and places, as `RHF between 2 Å and 4 Å (21 points)`; empty where it concerns everything */
+  readonly lead: string;
+  /** what is the case: where the words differ from point to point, at the first and at the last */
+  readonly messages: readonly string[];
+  readonly meaning?: string;
+  readonly remedy?: string;
+}
+
 /**
- * The cautions of a results file, each with what it means and what to do: those that many points share are said once,
- * with where they hold; where their words differ from point to point, as at the first and as at the last.
+ * The cautions of a results file, first those of the whole curve; those that many points share are said once.
  *
  * @param coordinateText - a coordinate of the study as printed, unit included
  */
-export function cautionSummary(
+export function cautionGroups(
   results: StudyResults,
   coordinateText: (coordinate: number) => string,
-): readonly ListItem[] {
+): readonly CautionGroup[] {
   const all: CautionAt[] = [
     ...results.cautions.map((caution) => ({ caution, coordinate: undefined })),
     ...results.points.flatMap(({ coordinate, cautions }) =>
@@ -31,10 +40,21 @@ export function cautionSummary(
     const key = [code, level, one.coordinate === undefined && message].join(' ');
     groups.set(key, [...(groups.get(key) ?? []), one]);
   }
-  return [...groups.values()].map((group) => itemOf(group, coordinateText));
+  return [...groups.values()].map((group) => groupOf(group, coordinateText));
 }
 
-function itemOf(group: readonly CautionAt[], coordinateText: (coordinate: number) => string): ListItem {
+/** The same as the report lists them, each with what it means and what to do. */
+export function cautionSummary(
+  results: StudyResults,
+  coordinateText: (coordinate: number) => string,
+): readonly ListItem[] {
+  return cautionGroups(results, coordinateText).map(({ lead, messages, meaning, remedy }) => ({
+    lead: capitalised(lead),
+    text: [...messages, ...(meaning ? [meaning] : []), ...(remedy ? [remedy] : [])].map(ended).join(' '),
+  }));
+}
+
+function groupOf(group: readonly CautionAt[], coordinateText: (coordinate: number) => string): CautionGroup {
   const first = group[0]!;
   const last = group.at(-1)!;
   const { level, range, message, meaning, remedy } = first.caution;
@@ -44,10 +64,11 @@ function itemOf(group: readonly CautionAt[], coordinateText: (coordinate: number
     last.caution.message !== message && last.coordinate !== undefined
       ? [`At ${coordinateText(last.coordinate)}: ${last.caution.message}`]
       : [];
-  const sentences = [message, ...changed, ...(meaning ? [meaning] : []), ...(remedy ? [remedy] : [])];
   return {
-    lead: capitalised([level, where].filter(Boolean).join(' ')),
-    text: sentences.map(ended).join(' '),
+    lead: [level, where].filter(Boolean).join(' '),
+    messages: [message, ...changed],
+    ...(meaning && { meaning }),
+    ...(remedy && { remedy }),
   };
 }
 

@@ -88,9 +88,14 @@ describe('summarise', () => {
     expect(summarise({ ...results, study, points: results.points.slice(0, 1) }).lines).toEqual([]);
   });
 
-  it('writes out the cautions for the whole curve and counts the points with cautions', () => {
+  it('writes out the cautions of the whole curve, then those of points once with the range that they cover', () => {
     expect(linesAbout(/^Caution/, { ...results, cautions: [{ code: 'a', message: 'Too coarse.' }] })).toEqual(
-      ['Caution: Too coarse.', 'Cautions at 20 of 37 points: see the results file.'],
+      [
+        'Caution: Too coarse.',
+        expect.stringMatching(
+          /^Caution: RHF between 2\.1 Å and 4 Å \(20 points\): The closed-shell solution/,
+        ),
+      ],
     );
   });
 
