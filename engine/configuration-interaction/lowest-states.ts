@@ -2,8 +2,15 @@ import { DEGENERACY_TOLERANCE } from '../linear-algebra/davidson';
 import { inStage } from '../stages';
 import type { Termination } from '../termination';
 import { type DistinguishingOperator, makeDegenerateStatesDefinite, splitRuns } from './degenerate-states';
+import { lowestDirectly } from './direct-states';
 import { buildModelSpace } from './model-space';
-import { findSectorStates, type LowestStates, type SectorProblem, type StateSettings } from './sector-states';
+import {
+  findSectorStates,
+  type KnownState,
+  type LowestStates,
+  type SectorProblem,
+  type StateSettings,
+} from './sector-states';
 
 /** A Hamiltonian over many basis states, of which the lowest eigenvectors are wanted. */
 export interface StateProblem {
@@ -72,25 +79,27 @@ function lowestOfSectors({ sectors }: StateProblem, settings: StateSettings): Lo
     MODEL_VECTORS_PER_STATE * states,
   );
   const started = sectors.map((sector) => {
+    const stage = <T>(work: () => T): T => inStage(control, 'CI model space', work);
+    if (sector.dimension <= Math.max(size, DIRECT_SECTOR_SIZE)) {
+      const found = stage(() => lowestDirectly(sector, states));
+      return { sector, lowestValue: found.values[0], solve: () => found };
+    }
+    const model = stage(() =>
+      buildModelSpace(sector.diagonal, size, (places) => sector.elementsAmong(places)),
+    );
     const apply: SectorProblem['apply'] = (vector, product) =>
       inStage(control, 'CI product', () => sector.apply(vector, product));
-    const model = inStage(control, 'CI model space', () =>
-      buildModelSpace(
-        sector.diagonal,
-        sector.dimension <= DIRECT_SECTOR_SIZE ? sector.dimension : size,
-        (places) => sector.elementsAmong(places),
-      ),
-    );
-    return { sector: { ...sector, apply }, model };
+    const solve = (ceiling: number, known: KnownState | undefined): LowestStates =>
+      findSectorStates({ ...sector, apply }, model, settings, ceiling, known);
+    return { sector, lowestValue: model.energies[0], solve };
   });
-  started.sort((a, b) => a.model.energies[0] - b.model.energies[0]);
+  started.sort((a, b) => a.lowestValue - b.lowestValue);
 
   let lowest: { value: number; vector: Float64Array; sector: StateProblem['sectors'][number] }[] = [];
   let iterations = 0;
   let termination: Termination = { kind: 'converged' };
-  for (const { sector, model } of started) {
-    const ceiling = lowest[states - 1]?.value ?? Number.POSITIVE_INFINITY;
-    const found = findSectorStates(sector, model, settings, ceiling, lowest[0]);
+  for (const { sector, solve } of started) {
+    const found = solve(lowest[states - 1]?.value ?? Number.POSITIVE_INFINITY, lowest[0]);
     iterations += found.iterations;
     if (termination.kind === 'converged') ({ termination } = found);
     found.vectors.forEach((vector, k) => {

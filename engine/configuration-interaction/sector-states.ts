@@ -1,9 +1,4 @@
-import {
-  type DavidsonOptions,
-  type DavidsonResult,
-  DEGENERACY_TOLERANCE,
-  lowestEigenpairs,
-} from '../linear-algebra/davidson';
+import { type DavidsonOptions, type DavidsonResult, lowestEigenpairs } from '../linear-algebra/davidson';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { DavidsonProblem } from '../linear-algebra/subspace';
 import type { VectorAlgebra } from '../linear-algebra/vector-algebra';
@@ -51,9 +46,9 @@ export interface KnownState {
 const PROBE_SHIFT = 0.5;
 
 /**
- * The lowest states of one sector, rising: directly where the model is the whole of it, by Davidson's method where not.
- * A degenerate set that `states` cuts is whole.
+ * The lowest states of one sector, rising, by Davidson's method. A degenerate set that `states` cuts is whole.
  *
+ * @param model - not of the whole sector
  * @param ceiling - states that lie above this, hartree, are not wanted, and need not be converged
  * @param lowest - the lowest state of the sectors before
  */
@@ -63,26 +58,6 @@ export function findSectorStates(
   settings: StateSettings,
   ceiling: number,
   lowest?: KnownState,
-): LowestStates {
-  return model.places.length === problem.dimension
-    ? takeLowest(model, settings.states)
-    : iterate(problem, model, settings, ceiling, lowest);
-}
-
-/** From a model space that is the whole space. */
-function takeLowest(model: ModelSpace, states: number): LowestStates {
-  const last = Math.min(states, model.energies.length) - 1;
-  const values = model.energies.filter((energy) => energy <= model.energies[last] + DEGENERACY_TOLERANCE);
-  const vectors = model.vectors.slice(0, values.length);
-  return { values, vectors, iterations: 0, termination: { kind: 'converged' } };
-}
-
-function iterate(
-  problem: SectorProblem,
-  model: ModelSpace,
-  settings: StateSettings,
-  ceiling: number,
-  lowest: KnownState | undefined,
 ): LowestStates {
   const precondition = modelPreconditioner(model, problem.diagonal);
   const guesses = selectGuesses(problem, model, precondition, settings.states);

@@ -15,7 +15,7 @@ import {
   leadingSign,
 } from './describe-state';
 import { buildDeterminantSpace, type DeterminantSpace, determinantAt } from './determinant-space';
-import { occupiedOrbitals } from './determinants';
+import { type Determinant, occupiedOrbitals } from './determinants';
 import { spinAveragedDiagonal, unrestrictedDiagonal } from './diagonal';
 import {
   type HamiltonianProduct,
@@ -114,15 +114,19 @@ function solve(
   const diagonal = beta ? unrestrictedDiagonal(space, integrals) : spinAveragedDiagonal(space, integrals);
   const elementsAmong = (places: Int32Array, { sector, matrix }: SectorProduct): ModelElements => {
     const spin = beta && unrestrictedSpin(beta, integrals.orbitalCount, [alphaElectrons, betaElectrons]);
-    const determinants = Array.from(placesInSpace(sector, places), (place) => determinantAt(space, place));
+    let made: readonly Determinant[] | undefined;
+    const determinant = (i: number): Determinant => {
+      made ??= Array.from(placesInSpace(sector, places), (place) => determinantAt(space, place));
+      return made[i];
+    };
     return {
       hamiltonian: matrix
         ? (i, j) => matrix[places[i] * sector.dimension + places[j]] + (i === j ? integrals.coreEnergy : 0)
-        : (i, j) => hamiltonianElement(determinants[i], determinants[j], integrals),
+        : (i, j) => hamiltonianElement(determinant(i), determinant(j), integrals),
       spinSquared: (i, j) =>
         spin
-          ? unrestrictedSpinSquaredElement(determinants[i], determinants[j], spin)
-          : spinSquaredElement(determinants[i], determinants[j]),
+          ? unrestrictedSpinSquaredElement(determinant(i), determinant(j), spin)
+          : spinSquaredElement(determinant(i), determinant(j)),
     };
   };
   const found = findLowestStates(
