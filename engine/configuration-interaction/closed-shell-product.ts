@@ -13,6 +13,7 @@ import { type ClosedShellIntegrals, layClosedShellIntegrals } from './closed-she
 import type { PairList } from './closed-shell-orbitals';
 import { type ClosedShellPlaces, closedShellPlaces } from './closed-shell-places';
 import { type ClosedShellRoom, takeClosedShellRoom } from './closed-shell-room';
+import { isClosedShellSpace } from './closed-shell-spin';
 import type { DeterminantSpace } from './determinant-space';
 import type { BareProduct } from './hamiltonian-product';
 import type { Sector } from './sector';
@@ -23,7 +24,7 @@ type Numbers = Block<Float64Array>;
 
 /** Whether `prepareClosedShellProduct` knows the space: single and double excitations of a closed shell. */
 export function isClosedShellDoubles(space: DeterminantSpace, integrals: OrbitalIntegrals): boolean {
-  return space.maximumRank === 2 && space.alpha === space.beta && !integrals.beta;
+  return isClosedShellSpace(space) && !integrals.beta;
 }
 
 /**

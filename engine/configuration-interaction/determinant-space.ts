@@ -46,8 +46,8 @@ export function buildDeterminantSpace(
   const sameStrings = alphaElectrons === betaElectrons;
   const beta = sameStrings ? alpha : buildStringSpace(orbitalCount, betaElectrons, rankLimit);
   const maximumRank = Math.min(rankLimit, alpha.maximumRank + beta.maximumRank);
-  const alphaReplacements = findSingleReplacements(alpha);
-  const betaReplacements = sameStrings ? alphaReplacements : findSingleReplacements(beta);
+  const alphaReplacements = onceCalled(() => findSingleReplacements(alpha));
+  const betaReplacements = sameStrings ? alphaReplacements : onceCalled(() => findSingleReplacements(beta));
   const rows = layRows(beta, alpha, maximumRank);
   const transposedRows = sameStrings ? rows : layRows(alpha, beta, maximumRank);
   return {
@@ -55,11 +55,24 @@ export function buildDeterminantSpace(
     maximumRank,
     alpha,
     beta,
-    alphaReplacements,
-    betaReplacements,
+    // long lists, which not every product and every property needs
+    get alphaReplacements() {
+      return alphaReplacements();
+    },
+    get betaReplacements() {
+      return betaReplacements();
+    },
     dimension: rows.start[beta.count],
     rows,
     transposedRows,
+  };
+}
+
+function onceCalled<Value>(make: () => Value): () => Value {
+  let value: Value | undefined;
+  return () => {
+    value ??= make();
+    return value;
   };
 }
 

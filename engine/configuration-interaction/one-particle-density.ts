@@ -2,6 +2,7 @@ import type { BetaIntegrals } from '../integrals/orbital-integrals';
 import { congruence, transpose } from '../linear-algebra/dense';
 import { type SymmetricEigen, symmetricEigen } from '../linear-algebra/symmetric-eigen';
 import { type DeterminantSpace, type Rows, transposeInto } from './determinant-space';
+import { doublesDensity } from './doubles-density';
 import { rankChange, type SingleReplacements } from './replacements';
 import type { StringSpace } from './string-space';
 
@@ -29,14 +30,20 @@ export function spinDensities(
     transposeInto(space, vector, turned);
     return turned;
   };
-  const { alpha, beta, alphaReplacements, betaReplacements, maximumRank } = space;
-  const ofAlpha = new Float64Array(space.orbitalCount ** 2);
-  addSpinDensity(ofAlpha, alpha, alphaReplacements, beta, space.rows, maximumRank, left, right);
-  const ofBeta = new Float64Array(space.orbitalCount ** 2);
+  const { alpha, beta, maximumRank, rows, transposedRows } = space;
   const turnedLeft = transposed(left);
   const turnedRight = left === right ? turnedLeft : transposed(right);
-  const rows = space.transposedRows;
-  addSpinDensity(ofBeta, beta, betaReplacements, alpha, rows, maximumRank, turnedLeft, turnedRight);
+  if (maximumRank === 2) {
+    return [
+      doublesDensity(alpha, beta, transposedRows, turnedLeft, turnedRight),
+      doublesDensity(beta, alpha, rows, left, right),
+    ];
+  }
+  const { alphaReplacements, betaReplacements } = space;
+  const ofAlpha = new Float64Array(space.orbitalCount ** 2);
+  addSpinDensity(ofAlpha, alpha, alphaReplacements, beta, rows, maximumRank, left, right);
+  const ofBeta = new Float64Array(space.orbitalCount ** 2);
+  addSpinDensity(ofBeta, beta, betaReplacements, alpha, transposedRows, maximumRank, turnedLeft, turnedRight);
   return [ofAlpha, ofBeta];
 }
 

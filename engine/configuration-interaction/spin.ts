@@ -1,3 +1,4 @@
+import { applyClosedShellSpinSquared, isClosedShellSpace } from './closed-shell-spin';
 import type { DeterminantSpace } from './determinant-space';
 import { rankChange } from './replacements';
 
@@ -45,6 +46,10 @@ export function spinName(sSquared: number): SpinName {
  * S² = M(M + 1) + N(β) − Σ over p, q of a†(qα)a(pα) a†(pβ)a(qβ), M = (N(α) − N(β))/2.
  */
 export function applySpinSquared(space: DeterminantSpace, vector: Float64Array, product: Float64Array): void {
+  if (isClosedShellSpace(space)) {
+    applyClosedShellSpinSquared(space, vector, product);
+    return;
+  }
   const { alpha, beta, betaReplacements, orbitalCount: n } = space;
   const projection = (alpha.electrons - beta.electrons) / 2;
   const diagonal = projection * (projection + 1) + beta.electrons;

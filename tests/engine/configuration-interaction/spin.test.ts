@@ -12,6 +12,8 @@ describe('applySpinSquared', () => {
   it.each([
     [4, 2, 2, Number.POSITIVE_INFINITY],
     [5, 2, 2, 2],
+    [6, 3, 3, 2],
+    [4, 1, 1, 2],
     [5, 3, 2, 2],
     [5, 3, 1, 3],
     [4, 1, 3, Number.POSITIVE_INFINITY],
