@@ -1,4 +1,5 @@
 import type { StudyResults } from '#engine';
+import { type BasisColumn, basisColumns } from '../study/basis-columns';
 import { energyColumns } from '../study/energy-columns';
 import { studySentence } from '../study/sentence';
 import { sharedCoordinate } from './scanned-coordinate';
@@ -10,7 +11,8 @@ import { sharedCoordinate } from './scanned-coordinate';
 export function pointsJson(results: StudyResults): string {
   const { label, kind, lengthUnit } = sharedCoordinate([results], ['']);
   const columns = energyColumns(results);
-  const points = results.points.map((point) => {
+  const further = basisColumns(results);
+  const points = results.points.map((point, index) => {
     const entries = columns.map((column) => ({ label: column.label, entry: column.entryAt(point) }));
     const numbers = (pick: (entry: NonNullable<(typeof entries)[number]['entry']>) => number | undefined) =>
       Object.fromEntries(
@@ -20,10 +22,23 @@ export function pointsJson(results: StudyResults): string {
           return [[name, entry?.converged && Number.isFinite(value) ? value : null]];
         }),
       );
+    const inBases = (pick: (column: BasisColumn) => readonly (number | null)[] | undefined) =>
+      Object.fromEntries(
+        further.flatMap((column) => {
+          const values = pick(column);
+          return values ? [[column.label, values[index] ?? null]] : [];
+        }),
+      );
     return {
       coordinate: point.coordinate,
-      energies: numbers(({ energy }) => energy),
-      correlationEnergies: numbers(({ correlation }) => correlation),
+      energies: { ...numbers(({ energy }) => energy), ...inBases(({ energies }) => energies) },
+      correlationEnergies: {
+        ...numbers(({ correlation }) => correlation),
+        ...inBases(({ correlation }) => correlation),
+      },
+      ...(further.some(({ uncertainties }) => uncertainties) && {
+        uncertainties: inBases(({ uncertainties }) => uncertainties),
+      }),
     };
   });
   const unit = kind === 'distance' ? lengthUnit : kind === 'none' ? null : 'degree';

@@ -30,6 +30,7 @@ export function studySentence(study: Study): string {
 /** The study sentence in pieces, so that a window can let each value be edited and show an issue at its word. */
 export function sentenceParts(study: Study): readonly SentencePart[] {
   const { molecule, scan, levels, states = 1, frozenCore, active, orbitals } = study;
+  const furtherBases = study.findings?.bases ?? [];
   const moleculePart = value('molecule', 'molecule', moleculeText(study));
   return [
     ...(scan
@@ -45,6 +46,7 @@ export function sentenceParts(study: Study): readonly SentencePart[] {
       : [plain('Compute '), moleculePart, plain(' at '), value('bonds', 'scan', 'the geometry given')]),
     plain(', in '),
     value('basis', 'basis', basisText(study.basis)),
+    ...(furtherBases.length > 0 ? [plain(`, also in ${enumerate(furtherBases.map(basisText))}`)] : []),
     plain(', with '),
     value('levels', 'levels', enumerate(levels)),
     ...(states > 1 ? [plain(', '), value('states', 'states', `${numeral(states)} states of each`)] : []),

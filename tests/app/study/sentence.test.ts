@@ -37,6 +37,16 @@ describe('studySentence', () => {
     );
   });
 
+  it('names further bases after the own one', () => {
+    const inBases = study('H H', undefined, {
+      basis: 'cc-pVDZ',
+      findings: { bases: ['cc-pVTZ', { name: 'STO-3G', scaleFactors: { H: { '1s': 1.2 } } }] },
+    });
+    expect(studySentence(inBases)).toBe(
+      'Compute H₂ at the geometry given, in cc-pVDZ, also in cc-pVTZ and STO-3G with chosen scale factors, with RHF.',
+    );
+  });
+
   it.each([
     ['O H H', bonds([0, 1], [0, 2]), 'Pull both O–H bonds of H₂O together'],
     ['O H H', bonds([0, 1]), 'Pull one O–H bond of H₂O'],
