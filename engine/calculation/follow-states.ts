@@ -99,6 +99,31 @@ function commonestGroup(points: readonly PointResult[]): string | undefined {
 
 const groupOf = ({ symmetry }: PointResult): string => `${symmetry?.pointGroup} ${symmetry?.linear}`;
 
+/**
+ * Where a followed state stands at a point beside those that it was followed along, if the kind of all states is known
+ * there and at those: the states of a kind go by their energy, whatever points there are.
+ *
+ * @param alongPoints - that it was followed along
+ * @returns undefined where it takes following
+ */
+export function placesByKind(
+  alongPoints: readonly PointResult[],
+  read: StateReader,
+): (followed: FollowedState, point: PointResult, index: number) => number | null | undefined {
+  const group = commonestGroup(alongPoints);
+  const along = alongPoints
+    .map((point, index) => read(point, index, groupOf(point) === group))
+    .filter(({ length }) => length > 0);
+  if (!areAllLabelled(along)) return () => undefined;
+  return ({ spin, symmetry, number }, point, index) => {
+    const states = read(point, index, groupOf(point) === group);
+    if (along.length === 0 || states.length === 0 || !areAllLabelled([along[0], states])) return undefined;
+    const kind = kindOf({ spin, ...(symmetry && { symmetry }) });
+    const ofKind = states.filter((state) => state.kind === kind).sort(byEnergy);
+    return ofKind[number - 1]?.place ?? null;
+  };
+}
+
 type StateReader = (point: PointResult, index: number, hasLabels: boolean) => readonly StateAtPoint[];
 
 /** Reads the states of every point once. */
@@ -275,12 +300,14 @@ function adiabatic(chains: readonly Chain[]): Chain[] {
       chains.flatMap(({ states }) => states),
       ({ point }) => point,
     ),
-  ].map(([, states]) => states.sort((a, b) => a.energy - b.energy || a.place - b.place));
+  ].map(([, states]) => states.sort(byEnergy));
   return Array.from({ length: Math.max(...byPoint.map(({ length }) => length)) }, (_, rank) => ({
     ...chains[0],
     states: byPoint.flatMap((states) => states[rank] ?? []).sort((a, b) => a.coordinate - b.coordinate),
   }));
 }
+
+const byEnergy = (a: StateAtPoint, b: StateAtPoint): number => a.energy - b.energy || a.place - b.place;
 
 /** The kind that curves are counted within. */
 const kindOf = ({ spin, symmetry }: Pick<Chain, 'spin' | 'symmetry'>): string =>

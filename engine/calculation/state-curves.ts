@@ -1,4 +1,4 @@
-import { type FollowedState, followStates, stateReader } from './follow-states';
+import { type FollowedState, followStates, placesByKind, stateReader } from './follow-states';
 import { curveThrough, type LevelCurve, type LevelPoints } from './level-curve';
 import type { CorrelatedState, PointResult, SinglesState } from './result';
 
@@ -32,10 +32,15 @@ export function curvesOfStates(points: LevelPoints): readonly CurveOfState[] {
     }
     return known;
   };
+  const placeByKind = placesByKind(scan, read);
   return alongScan.map((followed, index) => {
+    const placeAt = (point: number): number | null | undefined => {
+      if (point < scanned) return followed.states[point];
+      const place = placeByKind(followed, points.all()[point], point);
+      return place === undefined ? followedNow()[index]?.states[point] : place;
+    };
     const stateAt = (point: number) => {
-      const now = point < scanned ? followed : followedNow()[index];
-      const place = now?.states[point];
+      const place = placeAt(point);
       return place == null ? undefined : statesOf(points.all()[point], level)[place];
     };
     const curve = curveThrough(points, (point) => stateAt(point)?.energy);

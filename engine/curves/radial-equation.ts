@@ -24,10 +24,10 @@ export interface RadialEquation {
 export interface RadialState {
   /** hartree, same zero as the potential */
   readonly energy: number;
-  /** u(r_i), normalised so that ∫u²dr = 1, positive at its innermost lobe; bohr^(−1/2) */
-  readonly amplitude: Float64Array;
-  /** first and last point at which the wave is not negligible; it is 0 elsewhere */
+  /** first and last point at which the wave is not negligible */
   readonly support: Support;
+  /** u(r_i) at these and the points between, normalised so that ∫u²dr = 1, positive at its innermost lobe; bohr^(−1/2) */
+  readonly amplitude: Float64Array;
 }
 
 type Support = readonly [first: number, last: number];
@@ -300,19 +300,17 @@ function join(
 }
 
 /** u of the wave that was joined last, normalised. */
-function amplitudeOf(
-  { equation: { grid, potential }, reciprocal, wave }: Sweeps,
-  [first, last]: Support,
-): Float64Array {
-  const amplitude = new Float64Array(potential.length);
+function amplitudeOf({ equation: { grid }, reciprocal, wave }: Sweeps, [first, last]: Support): Float64Array {
+  const amplitude = new Float64Array(last - first + 1);
   let norm = 0;
   for (let i = first; i <= last; i++) {
     // u² dr = (dr/dy)²φ² dy
-    amplitude[i] = Math.sqrt(grid.stretch[i]) * wave[i] * reciprocal[i];
-    norm += amplitude[i] ** 2 * grid.stretch[i] * grid.step;
+    const value = Math.sqrt(grid.stretch[i]) * wave[i] * reciprocal[i];
+    amplitude[i - first] = value;
+    norm += value * value * grid.stretch[i] * grid.step;
   }
-  const scale = Math.sign(amplitude[first]) / Math.sqrt(norm);
-  for (let i = first; i <= last; i++) amplitude[i] *= scale;
+  const scale = Math.sign(amplitude[0]) / Math.sqrt(norm);
+  for (let i = 0; i < amplitude.length; i++) amplitude[i] *= scale;
   return amplitude;
 }
 
@@ -332,8 +330,11 @@ export function integrationWeights(
  */
 export function integrateProduct(first: RadialState, second: RadialState, weights: Float64Array): number {
   const [a, b] = [first.amplitude, second.amplitude];
+  const [startOfA, startOfB] = [first.support[0], second.support[0]];
   const end = Math.min(first.support[1], second.support[1]);
   let sum = 0;
-  for (let i = Math.max(first.support[0], second.support[0]); i <= end; i++) sum += a[i] * b[i] * weights[i];
+  for (let i = Math.max(startOfA, startOfB); i <= end; i++) {
+    sum += a[i - startOfA] * b[i - startOfB] * weights[i];
+  }
   return sum;
 }

@@ -70,9 +70,11 @@ export function radialRange(curve: RadialCurve, mass: number, outermost?: number
 /** The lowest of many points, then golden sections between its neighbours. */
 function lowestPoint(energyAt: (distance: number) => number, from: number, ratio: number): number {
   let lowest = from;
+  let energyThere = energyAt(from);
   for (let i = 1; i <= SEARCH_POINTS; i++) {
     const r = from * ratio ** i;
-    if (energyAt(r) < energyAt(lowest)) lowest = r;
+    const energy = energyAt(r);
+    if (energy < energyThere) [lowest, energyThere] = [r, energy];
   }
   let [left, right] = [lowest / ratio, lowest * ratio];
   for (let section = 0; section < SECTIONS; section++) {

@@ -34,29 +34,45 @@ export function predictFromOthers(
   values: readonly number[],
   degree: number,
 ): number[] {
+  const n = abscissas.length;
   const weights = abscissas.map((_, k) => blendingWeight(abscissas, k, degree));
-  const last = abscissas.length - 1;
   return values.map((value, left) => {
-    if (left === 0 || left === last) return value;
-    const others = abscissas.toSpliced(left, 1);
-    const ofOthers = others.map((_, k) => {
-      if (k < left - degree) return weights[k];
-      // one place further down, where the signs alternate the other way
-      return k >= left + degree ? -weights[k + 1] : blendingWeight(others, k, degree);
-    });
-    return blend(others, values.toSpliced(left, 1), ofOthers, abscissas[left]);
+    if (left === 0 || left === n - 1) return value;
+    let numerator = 0;
+    let denominator = 0;
+    for (let k = 0; k < n; k++) {
+      if (k === left) continue;
+      // among the others every point beyond stands one place further down, where the signs alternate the other way
+      let weight = k < left ? weights[k] : -weights[k];
+      if (Math.abs(k - left) <= degree) weight = blendingWeight(abscissas, k, degree, left);
+      const term = weight / (abscissas[left] - abscissas[k]);
+      numerator += term * values[k];
+      denominator += term;
+    }
+    return numerator / denominator;
   });
 }
 
-function blendingWeight(abscissas: readonly number[], k: number, d: number): number {
-  const last = abscissas.length - 1 - d;
-  let sum = 0;
-  for (let start = Math.max(0, k - d); start <= Math.min(k, last); start++) {
-    let product = 1;
-    for (let j = start; j <= start + d; j++) if (j !== k) product /= Math.abs(abscissas[k] - abscissas[j]);
+/**
+ * Σ over the polynomials that point k takes part in of Π 1/|x_k − x_j|, with alternating sign.
+ *
+ * @param left - a point that is left out, other than k
+ */
+function blendingWeight(abscissas: readonly number[], k: number, d: number, left = abscissas.length): number {
+  const at = (place: number) => abscissas[place < left ? place : place + 1];
+  const count = left < abscissas.length ? abscissas.length - 1 : abscissas.length;
+  const place = k < left ? k : k - 1;
+  const distance = (other: number) => Math.abs(abscissas[k] - at(other));
+  const first = Math.max(0, place - d);
+  let product = 1;
+  for (let j = first; j <= first + d; j++) if (j !== place) product /= distance(j);
+  let sum = product;
+  // the next polynomial loses its lowest point and gains the one above
+  for (let start = first; start < Math.min(place, count - 1 - d); start++) {
+    product *= distance(start) / distance(start + d + 1);
     sum += product;
   }
-  return k % 2 === 0 ? sum : -sum;
+  return place % 2 === 0 ? sum : -sum;
 }
 
 function blend(

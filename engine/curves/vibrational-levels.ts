@@ -254,13 +254,14 @@ function richardson(coarse: Extrapolated, fine: Extrapolated, divisor: number): 
  */
 function endError(
   { grid, potential }: RadialEquation,
-  { energy, amplitude }: RadialState,
+  { energy, amplitude, support }: RadialState,
   mass: number,
 ): number {
-  const last = amplitude.length - 1;
+  const last = potential.length - 1;
+  const amplitudeAt = (i: number) => amplitude[i - support[0]] ?? 0;
   // the wave vanishes one step beyond the last point of each end
   const wall = (end: number, next: number): number => {
-    const slope = amplitude[end] / (grid.distances[next] - grid.distances[end]);
+    const slope = amplitudeAt(end) / (grid.distances[next] - grid.distances[end]);
     if (slope === 0) return 0;
     const decay = Math.sqrt(2 * mass * Math.max(0, potential[end] - energy));
     return slope ** 2 / (4 * decay * mass);
