@@ -175,18 +175,25 @@ function layPairMatrices(
   const { orbitals } = list.orbitals;
   const sign = list.isStrict ? -1 : 1;
   return byIrrep((irrep) => {
-    const pairs = pairsOf(list, irrep).map(([x, y]) => [orbitals[x], orbitals[y]] as const);
+    const pairs = pairsOf(list, irrep);
     const count = pairs.length;
-    const block = memory.float64(count * count);
-    pairs.forEach(([x, y], row) => {
+    const [first, second] = [0, 1].map((k) => Int32Array.from(pairs, (pair) => orbitals[pair[k]]));
+    const { address, view } = memory.float64(count * count);
+    for (let row = 0; row < count; row++) {
+      const [x, y] = [first[row], second[row]];
       for (let column = 0; column <= row; column++) {
-        const [z, w] = pairs[column];
+        const [z, w] = [first[column], second[column]];
         const value = repulsion(x, z, y, w) + sign * repulsion(x, w, y, z);
-        const [ofRow, ofColumn] = [x === y ? value / 2 : value, z === w ? value / 2 : value];
-        block.view[row * count + column] = isOfColumn ? ofColumn : ofRow;
-        block.view[column * count + row] = isOfColumn ? ofRow : ofColumn;
+        view[row * count + column] = value;
+        view[column * count + row] = value;
       }
-    });
-    return block;
+    }
+    for (let k = 0; k < count; k++) {
+      if (first[k] !== second[k]) continue;
+      for (let other = 0; other < count; other++) {
+        view[isOfColumn ? other * count + k : k * count + other] /= 2;
+      }
+    }
+    return { address, view };
   });
 }

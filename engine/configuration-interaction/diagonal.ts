@@ -4,8 +4,8 @@ import {
   packedPair,
   type SameSpinIntegrals,
 } from '../integrals/orbital-integrals';
-import type { DeterminantSpace } from './determinant-space';
-import { isOccupied, occupiedOrbitals } from './determinants';
+import { type DeterminantSpace, rowLength } from './determinant-space';
+import { lowestBit, occupiedOrbitals } from './determinants';
 import { mixedRepulsion } from './matrix-elements';
 import { stringEnergy } from './same-spin';
 import { type StringSpace, stringAt } from './string-space';
@@ -35,25 +35,29 @@ export function spinAveragedDiagonal(space: DeterminantSpace, integrals: Orbital
   const openBeta = new Int32Array(n);
   const diagonal = new Float64Array(space.dimension);
 
+  const { words, electrons } = space.alpha;
   for (let b = 0; b < space.beta.count; b++) {
-    const betaOccupied = beta.occupied[b];
-    const betaString = stringAt(space.beta, b);
     for (let p = 0; p < n; p++) {
       let sum = 0;
-      for (const j of betaOccupied) sum += coulomb[p * n + j];
+      for (const j of beta.occupied[b]) sum += coulomb[p * n + j];
       betaCoulomb[p] = sum;
     }
     const start = space.rows.start[b];
-    for (let a = 0; start + a < space.rows.start[b + 1]; a++) {
+    const length = rowLength(space.rows, b);
+    for (let a = 0; a < length; a++) {
       let value = integrals.coreEnergy + alpha.energy[a] + beta.energy[b];
+      for (let k = a * electrons; k < (a + 1) * electrons; k++) value += betaCoulomb[alpha.orbitals[k]];
       let alphaOpen = 0;
       let betaOpen = 0;
-      for (const i of alpha.occupied[a]) {
-        value += betaCoulomb[i];
-        if (!isOccupied(betaString, i)) openAlpha[alphaOpen++] = i;
+      for (let w = 0; w < words; w++) {
+        const [ofAlpha, ofBeta] = [space.alpha.bits[a * words + w], space.beta.bits[b * words + w]];
+        for (let rest = ofAlpha & ~ofBeta; rest !== 0; rest &= rest - 1) {
+          openAlpha[alphaOpen++] = 32 * w + lowestBit(rest);
+        }
+        for (let rest = ofBeta & ~ofAlpha; rest !== 0; rest &= rest - 1) {
+          openBeta[betaOpen++] = 32 * w + lowestBit(rest);
+        }
       }
-      const alphaString = alpha.string[a];
-      for (const i of betaOccupied) if (!isOccupied(alphaString, i)) openBeta[betaOpen++] = i;
       diagonal[start + a] =
         value + averagingCorrection(exchange, n, openAlpha, alphaOpen, openBeta, betaOpen);
     }
@@ -82,11 +86,17 @@ export function unrestrictedDiagonal(space: DeterminantSpace, integrals: Orbital
   return diagonal;
 }
 
+/** Occupied orbitals of every string, apart and in one row, and its energy. */
 function describeStrings(space: StringSpace, integrals: SameSpinIntegrals) {
-  const string = Array.from({ length: space.count }, (_, place) => stringAt(space, place));
-  const occupied = string.map(occupiedOrbitals);
-  const energy = Float64Array.from(occupied, (orbitals) => stringEnergy(orbitals, integrals));
-  return { string, occupied, energy };
+  const occupied = Array.from({ length: space.count }, (_, place) =>
+    occupiedOrbitals(stringAt(space, place)),
+  );
+  const orbitals = new Int32Array(space.count * space.electrons);
+  occupied.forEach((ofString, place) => {
+    orbitals.set(ofString, place * space.electrons);
+  });
+  const energy = Float64Array.from(occupied, (ofString) => stringEnergy(ofString, integrals));
+  return { occupied, orbitals, energy };
 }
 
 /** Equal-spin exchange of the open shells as it is, against its average. */

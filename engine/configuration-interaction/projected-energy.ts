@@ -1,7 +1,7 @@
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { type DeterminantSpace, determinantAt, rowLength } from './determinant-space';
-import { orbitalsOnlyIn } from './determinants';
-import { hamiltonianElement } from './matrix-elements';
+import { orbitalsOnlyIn, replacementPhase } from './determinants';
+import { hamiltonianElement, mixedRepulsion } from './matrix-elements';
 import { type StringSpace, stringAt } from './string-space';
 
 /** E − E(reference) = Σ over single and double excitations I of ⟨0|H|I⟩ c(I)/c(0). */
@@ -102,32 +102,50 @@ function projectedParts(
     oppositeSpin: new Float64Array(occupied ** 2),
   };
   const reference = determinantAt(space, 0);
-  const alphaHoles = holesUpToRankTwo(space.alpha);
-  const betaHoles = holesUpToRankTwo(space.beta);
-  betaHoles.forEach((ofBeta, row) => {
-    const length = rowLength(space.rows, row);
-    for (let column = 0; column < Math.min(length, alphaHoles.length); column++) {
-      const ofAlpha = alphaHoles[column];
-      const place = space.rows.start[row] + column;
-      if (ofAlpha.length + ofBeta.length > 2) break;
+  const ofAlpha = excitationsUpToRankTwo(space.alpha);
+  const ofBeta = excitationsUpToRankTwo(space.beta);
+  ofBeta.forEach((beta, row) => {
+    const start = space.rows.start[row];
+    const length = Math.min(rowLength(space.rows, row), ofAlpha.length);
+    for (let column = 0; column < length; column++) {
+      const alpha = ofAlpha[column];
+      if (alpha.holes.length + beta.holes.length > 2) break;
+      const place = start + column;
       if (place === 0 || vector[place] === 0) continue;
+      if (alpha.holes.length === 1 && beta.holes.length === 1) {
+        const [i, j] = [alpha.holes[0], beta.holes[0]];
+        const element =
+          alpha.phase * beta.phase * mixedRepulsion(integrals, i, alpha.particles[0], j, beta.particles[0]);
+        const pair = i < j ? i * occupied + j : j * occupied + i;
+        parts.oppositeSpin[pair] += (element * vector[place]) / vector[0];
+        continue;
+      }
       const element = hamiltonianElement(reference, determinantAt(space, place), integrals);
       const energy = (element * vector[place]) / vector[0];
-      const [i, j] = [...ofAlpha, ...ofBeta].sort((a, b) => a - b);
+      const [i, j] = alpha.holes.length > 0 ? alpha.holes : beta.holes;
       if (j === undefined) parts.singles[i] += energy;
-      else if (ofAlpha.length === 1) parts.oppositeSpin[i * occupied + j] += energy;
       else parts.sameSpin[i * occupied + j] += energy;
     }
   });
   return parts;
 }
 
-/** Orbitals that electrons have left, of every string up to rank 2; these stand first. */
-function holesUpToRankTwo(strings: StringSpace): number[][] {
+/** What a string differs in from the reference: orbitals left and entered, rising; the sign of a single excitation. */
+interface StringExcitation {
+  readonly holes: readonly number[];
+  readonly particles: readonly number[];
+  readonly phase: number;
+}
+
+/** Of every string up to rank 2; these stand first. */
+function excitationsUpToRankTwo(strings: StringSpace): StringExcitation[] {
   const count = strings.rankStart[Math.min(2, strings.maximumRank) + 1];
-  return Array.from({ length: count }, (_, place) =>
-    orbitalsOnlyIn(strings.reference, stringAt(strings, place)),
-  );
+  return Array.from({ length: count }, (_, place) => {
+    const holes = orbitalsOnlyIn(strings.reference, stringAt(strings, place));
+    const particles = orbitalsOnlyIn(stringAt(strings, place), strings.reference);
+    const phase = holes.length === 1 ? replacementPhase(strings.reference, holes[0], particles[0]) : 1;
+    return { holes, particles, phase };
+  });
 }
 
 function listParts(
