@@ -24,9 +24,9 @@ export function excitedLimitsTable(
     columns: [
       { label: 'State', content: 'words' },
       { label: 'Tends to', content: 'words' },
-      { label: 'Last point above that (eV)' },
-      { label: 'Well depth (eV)' },
-      { label: 'Well depth is against', content: 'words' },
+      { label: 'Last point above (eV)' },
+      { label: 'Dₑ (eV)' },
+      { label: 'Dₑ is against', content: 'words' },
       { label: 'D₀ (eV)' },
     ],
     rows: states.map(({ file, named: { title, state } }) => {
@@ -46,7 +46,7 @@ export function excitedLimitsTable(
       ];
     }),
     notes: [
-      'In brackets, how far a fragment lies above its lowest state. Depths and D₀ have the same limit; the attraction of ions holds levels without end, of which those below the end of the curve are counted.',
+      'In brackets, how far a fragment lies above its lowest state; last point: of the scan, above that sum. Dₑ: depth of the well; D₀: the same from its lowest level, against the same limit; the attraction of ions holds levels without end, of which those below the end of the curve are counted.',
       ...reasonsOf(states.map(({ named }) => named)),
     ],
   };

@@ -1,16 +1,23 @@
 import { latexText } from './latex-text';
 import { type ReportDocument, tablesOf } from './report-document';
 import { ended } from './sentences';
-import { headSpans, NO_VALUE, splitTable, type TableColumn, type TextTable } from './text-table';
+import {
+  headSpans,
+  LONGEST_LINE,
+  NO_VALUE,
+  splitTable,
+  type TableColumn,
+  type TextTable,
+  tableWidth,
+} from './text-table';
 
-/** Wider tables are set in small type. */
-const COLUMNS_AT_FULL_SIZE = 6;
-/** Characters that a line holds in small type. */
-const LINE_LENGTH = 100;
+/** Characters that a line of 160 mm holds in small type, and in that of the text; wider tables take the first. */
+const LINE_LENGTH = 95;
+const LINE_LENGTH_AT_FULL_SIZE = 75;
 /** Longer tables are set with longtable, which breaks across pages. */
 const ROWS_ON_A_PAGE = 42;
-/** Longer words are broken into lines. */
-const LONGEST_WORDS = 40;
+/** Of a column whose words are broken into lines; about what `LONGEST_LINE` characters take. */
+const WRAPPED_COLUMN = 'p{0.26\\linewidth}';
 
 /**
  * All tables of a report for LaTeX (packages booktabs and, for what is longer than a page, longtable), each captioned
@@ -38,7 +45,7 @@ function setTable(table: TextTable, subject: string): string {
     ),
   );
   const caption = latexText([heading, subject, ...notes].map(ended).join(' '));
-  const size = columns.length > COLUMNS_AT_FULL_SIZE ? ['\\footnotesize'] : [];
+  const size = tableWidth(table, 'onOneLine') > LINE_LENGTH_AT_FULL_SIZE ? ['\\footnotesize'] : [];
   const head = [...spanningRows(columns), `${columns.map(({ label }) => latexText(label)).join(' & ')} \\\\`];
   const body = rows.map((row) => `${row.map(latexCell).join(' & ')} \\\\`);
   const lines = isLong(table)
@@ -76,7 +83,7 @@ function setTable(table: TextTable, subject: string): string {
 
 function alignmentOf({ content }: TableColumn, cells: readonly string[]): string {
   if (content !== 'words') return 'r';
-  return cells.some((cell) => cell.length > LONGEST_WORDS) ? 'p{0.4\\linewidth}' : 'l';
+  return cells.some((cell) => cell.length > LONGEST_LINE) ? WRAPPED_COLUMN : 'l';
 }
 
 /** For every row of heads that span columns one line, and one of rules beneath them. */

@@ -11,5 +11,6 @@ export const unescapeMarkup = (markup: string): string =>
     markup,
   );
 
-/** A printed number with a true minus sign. */
-export const withMinus = (number: string): string => number.replace(/^-/, '−');
+/** A printed number with a true minus sign, which zero has not. */
+export const withMinus = (number: string): string =>
+  /^-0(\.0*)?$/.test(number) ? number.slice(1) : number.replace(/^-/, '−');

@@ -47,46 +47,59 @@ export function headSpans(columns: readonly TableColumn[]): readonly (readonly H
 export const fullLabel = ({ groups = [], label }: TableColumn): string =>
   [...groups, label].filter(Boolean).join(', ');
 
+/** Whether heads of columns may be broken into lines. */
+export type HeadWrapping = 'wrapped' | 'onOneLine';
+
+/** Longer words in a cell are set in several lines of this length. */
+export const LONGEST_LINE = 24;
+const CELL_PADDING = 3;
+
+/** Characters that the widest cells of a row take together, with the space between columns and the heads above them. */
+export function tableWidth({ columns, rows }: TextTable, labels: HeadWrapping): number {
+  const headWidth = (text: string) =>
+    labels === 'wrapped' ? Math.max(...text.split(' ').map(({ length }) => length)) : text.length;
+  const widths = columns.map(({ label }, index) => {
+    const cells = rows.map((row) => Math.min(row[index]?.length ?? 0, LONGEST_LINE));
+    return CELL_PADDING + Math.max(headWidth(label), ...cells);
+  });
+  const excesses = headSpans(columns).map((spans) => {
+    let column = 0;
+    return spans.reduce((excess, { text, width }) => {
+      const below = sum(widths.slice(column, column + width));
+      column += width;
+      return excess + Math.max(0, CELL_PADDING + headWidth(text) - below);
+    }, 0);
+  });
+  return sum(widths) + Math.max(0, ...excesses);
+}
+
+const sum = (numbers: readonly number[]): number => numbers.reduce((a, b) => a + b, 0);
+
 /**
  * The table in parts that are narrow enough to be printed, each with the first column.
  *
- * @param mostCharacters - in the widest cells of a row together
- * @param labels - whether heads of columns may be broken into lines
+ * @param mostCharacters - largest width of a part
  */
 export function splitTable(
   table: TextTable,
   mostCharacters: number,
-  labels: 'wrapped' | 'onOneLine',
+  labels: HeadWrapping,
 ): readonly TextTable[] {
-  const headParts = (label: string) => (labels === 'wrapped' ? label.split(' ') : [label]);
-  const widthOf = (index: number) =>
-    CELL_PADDING +
-    Math.max(
-      ...headParts(table.columns[index]?.label ?? '').map(({ length }) => length),
-      ...table.rows.map((row) => Math.min(row[index]?.length ?? 0, LONGEST_LINE)),
-    );
-  const first = widthOf(0);
+  const withColumns = (indices: readonly number[]): TextTable => ({
+    ...table,
+    columns: [0, ...indices].map((index) => table.columns[index]!),
+    rows: table.rows.map((row) => [0, ...indices].map((index) => row[index] ?? '')),
+  });
   const parts: number[][] = [];
-  let width = 0;
   for (let index = 1; index < table.columns.length; index += 1) {
     const last = parts.at(-1);
-    if (last && width + widthOf(index) <= mostCharacters) last.push(index);
-    else {
-      parts.push([index]);
-      width = first;
-    }
-    width += widthOf(index);
+    if (last && tableWidth(withColumns([...last, index]), labels) <= mostCharacters) last.push(index);
+    else parts.push([index]);
   }
   if (parts.length < 2) return [table];
   return parts.map((indices, part) => ({
-    ...table,
+    ...withColumns(indices),
     heading: part === 0 ? table.heading : `${table.heading} (continued)`,
-    columns: [0, ...indices].map((index) => table.columns[index]!),
-    rows: table.rows.map((row) => [0, ...indices].map((index) => row[index] ?? '')),
     notes: part === parts.length - 1 ? table.notes : [],
   }));
 }
-
-const CELL_PADDING = 3;
-/** Longer words are set in several lines. */
-const LONGEST_LINE = 24;

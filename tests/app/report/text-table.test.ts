@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { headSpans, splitTable, type TextTable } from '../../../app/report/text-table';
+import { headSpans, splitTable, type TextTable, tableWidth } from '../../../app/report/text-table';
 
 const table: TextTable = {
   id: 't',
@@ -29,6 +29,19 @@ describe('headSpans', () => {
         { text: 'energy', width: 1 },
       ],
     ]);
+  });
+});
+
+describe('tableWidth', () => {
+  it('counts a head that is wider than the columns below it', () => {
+    const head = 'Correlation energy (hartree)';
+    const narrow = {
+      ...table,
+      columns: [{ label: 'r' }, { groups: [head], label: 'x' }],
+      rows: [['1', '2']],
+    };
+    expect(tableWidth(narrow, 'onOneLine')).toBe('r'.length + 3 + head.length + 3);
+    expect(tableWidth(narrow, 'wrapped')).toBe('r'.length + 3 + 'Correlation'.length + 3);
   });
 });
 
