@@ -1,8 +1,16 @@
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import type { KernelMemory } from '../kernels/kernel-memory';
-import { COLUMN_TASKS, mostThreads, ROW_TASKS, runTasks } from '../kernels/thread-team';
+import {
+  COLUMN_TASKS,
+  FULL_COLUMN_TASKS,
+  FULL_ROW_TASKS,
+  mostThreads,
+  ROW_TASKS,
+  runTasks,
+} from '../kernels/thread-team';
+import { layFullProductLists, layFullProductPlan } from './full-product-plan';
 import type { BareProduct } from './hamiltonian-product';
-import { layProductLists, laySectorPlan, type ProductLists } from './product-plan';
+import { layProductLists, laySectorPlan } from './product-plan';
 import type { Sector } from './sector';
 import { mirror } from './spin-flip';
 
@@ -21,18 +29,73 @@ export function prepareFastProduct(
   orbitalIrreps: readonly number[] | undefined,
   memory: KernelMemory,
 ): BareProduct {
-  let lists: ProductLists | undefined;
+  return prepareTasks(memory, [ROW_TASKS, COLUMN_TASKS], laySectorPlan, () =>
+    layProductLists(memory, sectors[0], integrals, orbitalIrreps),
+  );
+}
+
+/**
+ * The same by the kernels of engine/kernels/assembly/full-product.ts, which do more arithmetic, but dense: faster where
+ * no symmetry thins out the integrals.
+ *
+ * @param sector - of full CI, with all determinants in it
+ */
+export function prepareFullProduct(
+  sector: Sector,
+  integrals: OrbitalIntegrals,
+  memory: KernelMemory,
+): BareProduct {
+  return prepareTasks(memory, [FULL_ROW_TASKS, FULL_COLUMN_TASKS], layFullProductPlan, () =>
+    layFullProductLists(memory, sector, integrals),
+  );
+}
+
+interface TaskCounts {
+  readonly rowTaskCount: number;
+  readonly columnTaskCount: number;
+}
+
+/** What a plan is made for. */
+export interface PlannedProduct {
+  readonly sector: Sector;
+  /** addresses of the vectors in the memory of the lists */
+  readonly vector: number;
+  readonly product: number;
+  /** threads that may need working room */
+  readonly threads: number;
+  /** only the part of the product below the diagonal is wanted */
+  readonly isMirrored: boolean;
+}
+
+/** Rows, then columns; lists are laid when the first product needs them. Vectors that stand in the memory stay there. */
+function prepareTasks<Lists extends TaskCounts>(
+  memory: KernelMemory,
+  [rows, columns]: readonly [number, number],
+  layPlan: (lists: Lists, planned: PlannedProduct) => number,
+  layLists: () => Lists,
+): BareProduct {
+  let lists: Lists | undefined;
   return (sector, vector, product, parity) => {
-    lists ??= layProductLists(memory, sectors[0], integrals, orbitalIrreps);
-    const { columnTaskCount, rowTaskCount } = lists;
+    lists ??= layLists();
+    const { rowTaskCount, columnTaskCount } = lists;
     memory.scope(() => {
-      const plan = laySectorPlan(lists!, sector, mostThreads(), parity !== 0);
+      const [from, to] = [vector, product].map((numbers) => {
+        const address = memory.addressOf(numbers);
+        return address === undefined ? memory.float64(sector.dimension) : { address, view: numbers };
+      });
+      if (from.view !== vector) from.view.set(vector);
+      const plan = layPlan(lists!, {
+        sector,
+        vector: from.address,
+        product: to.address,
+        threads: mostThreads(),
+        isMirrored: parity !== 0,
+      });
       const isLarge = sector.dimension >= MANY_DETERMINANTS;
-      plan.vector.set(vector);
-      runTasks(memory, ROW_TASKS, plan.plan, rowTaskCount, isLarge);
-      runTasks(memory, COLUMN_TASKS, plan.plan, columnTaskCount, isLarge);
-      if (parity !== 0) mirror(sector, plan.product, parity);
-      product.set(plan.product);
+      runTasks(memory, rows, plan, rowTaskCount, isLarge);
+      runTasks(memory, columns, plan, columnTaskCount, isLarge);
+      if (parity !== 0) mirror(sector, to.view, parity);
+      if (to.view !== product) product.set(to.view);
     });
   };
 }

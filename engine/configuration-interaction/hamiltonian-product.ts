@@ -5,7 +5,7 @@ import { addScaledInto } from '../linear-algebra/dense';
 import { isClosedShellDoubles, prepareClosedShellProduct } from './closed-shell-product';
 import { applyDense, buildDenseHamiltonians } from './dense-hamiltonian';
 import type { DeterminantSpace } from './determinant-space';
-import { prepareFastProduct } from './fast-product';
+import { prepareFastProduct, prepareFullProduct } from './fast-product';
 import { preparePlainProduct } from './plain-product';
 import { buildSectors, putSector, type Sector, takeSector } from './sector';
 import { EXACT_PARITY, makeEvenOrOdd, NEAR_PARITY, spinFlipParity } from './spin-flip';
@@ -61,11 +61,14 @@ export function prepareHamiltonianProduct(
     isFast && space.dimension <= FEW_DETERMINANTS
       ? buildDenseHamiltonians(space, sectors, integrals, irreps)
       : undefined;
-  const prepareFast = isClosedShellDoubles(space, integrals) ? prepareClosedShellProduct : prepareFastProduct;
-  const prepare = (): BareProduct =>
-    isFast
-      ? prepareFast(sectors, integrals, irreps, memory)
-      : overSectors(space, preparePlainProduct(space, integrals));
+  const prepare = (): BareProduct => {
+    if (!isFast) return overSectors(space, preparePlainProduct(space, integrals));
+    if (isClosedShellDoubles(space, integrals)) {
+      return prepareClosedShellProduct(sectors, integrals, irreps, memory);
+    }
+    if (isFullWithoutSymmetry(space, sectors)) return prepareFullProduct(sectors[0], integrals, memory);
+    return prepareFastProduct(sectors, integrals, irreps, memory);
+  };
   const product: BareProduct = dense
     ? (sector, vector, result) => applyDense(dense.get(sector)!, vector, result)
     : prepare();
@@ -110,6 +113,15 @@ export function prepareHamiltonianProduct(
       }
     },
   };
+}
+
+/** Full CI without symmetry, and enough beta electrons for a pair of their orbitals to lead to many strings. */
+function isFullWithoutSymmetry(
+  { maximumRank, alpha, beta }: DeterminantSpace,
+  sectors: readonly Sector[],
+): boolean {
+  const isFull = maximumRank === alpha.maximumRank + beta.maximumRank;
+  return isFull && sectors.length === 1 && beta.electrons > 1;
 }
 
 /** H·c of one sector without the core energy. */

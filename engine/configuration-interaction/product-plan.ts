@@ -1,6 +1,8 @@
 import { betaPart, type OrbitalIntegrals, packedPair } from '../integrals/orbital-integrals';
-import type { KernelMemory } from '../kernels/kernel-memory';
-import { rankChange, type SingleReplacements } from './replacements';
+import { type KernelMemory, placeInt32 } from '../kernels/kernel-memory';
+import type { PlannedProduct } from './fast-product';
+import type { SingleReplacements } from './replacements';
+import { cutTasks, layRowTasks, type RowTasks } from './row-tasks';
 import { buildSameSpinHamiltonian, NEGLIGIBLE_FACTOR, type SameSpinHamiltonian } from './same-spin';
 import type { Sector } from './sector';
 import { countUpToRank, IRREPS, type StringClasses } from './string-classes';
@@ -19,7 +21,7 @@ const ROWS_AT_ONCE = 64;
 const THREAD_BYTES = 2 * PACKED_BYTES + 2 * 4 * WIDTH + PACKED_BYTES;
 
 /** Lists in a kernel memory that do not depend on the sector. */
-export interface ProductLists {
+export interface ProductLists extends RowTasks {
   readonly memory: KernelMemory;
   readonly maximumRank: number;
   readonly alpha: number;
@@ -28,12 +30,6 @@ export interface ProductLists {
   readonly integralRowBytes: number;
   readonly columnTasks: number;
   readonly columnTaskCount: number;
-  readonly groups: number;
-  readonly entrySource: number;
-  readonly entryTarget: number;
-  readonly entrySign: number;
-  readonly rowTasks: number;
-  readonly rowTaskCount: number;
   /** strings of the largest representation, of either spin */
   readonly mostStrings: number;
 }
@@ -72,43 +68,31 @@ export function layProductLists(
     alpha: alphaAddress,
     beta: betaAddress,
     ...layIntegrals(memory, integrals),
-    ...layRowTasks(memory, beta, isWhole, space.betaReplacements, pairIrreps),
-    columnTasks: put32(memory, columnTasks.flat()),
+    ...layRowTasks(memory, beta, isWhole, space.betaReplacements, pairIrreps, ROWS_AT_ONCE),
+    columnTasks: placeInt32(memory, columnTasks.flat()),
     columnTaskCount: columnTasks.length,
     mostStrings: Math.max(...[...alpha.members, ...beta.members].map((members) => members.length)),
   };
 }
 
-/** What one product of one sector needs beside the lists. */
-export interface SectorPlan {
-  /** address of the plan */
-  readonly plan: number;
-  readonly vector: Float64Array;
-  readonly product: Float64Array;
-}
-
-/** Takes two vectors and the working room of so many threads in the memory of the lists. */
+/** Takes the working room of the threads in the memory of the lists. @returns the address of the plan */
 export function laySectorPlan(
   lists: ProductLists,
-  sector: Sector,
-  threads: number,
-  isMirrored: boolean,
-): SectorPlan {
+  { sector, vector, product, threads, isMirrored }: PlannedProduct,
+): number {
   const { memory } = lists;
-  const vector = memory.float64(sector.dimension);
-  const product = memory.float64(sector.dimension);
-  const rowStart = put32(
+  const rowStart = placeInt32(
     memory,
     sector.rowStart.flatMap((starts) => Array.from(starts.subarray(0, -1))),
   );
   const scratchBytes = THREAD_BYTES + PACKED_BYTES * lists.mostStrings;
   const scratch = memory.float64((threads * scratchBytes) / 8);
-  const plan = put32(memory, [
+  return placeInt32(memory, [
     lists.maximumRank,
     sector.irrep,
     Number(isMirrored),
-    vector.address,
-    product.address,
+    vector,
+    product,
     rowStart,
     lists.integrals,
     lists.integralRowBytes,
@@ -123,19 +107,6 @@ export function laySectorPlan(
     scratch.address,
     scratchBytes,
   ]);
-  return { plan, vector: vector.view, product: product.view };
-}
-
-function put32(memory: KernelMemory, numbers: ArrayLike<number>): number {
-  const block = memory.int32(Math.max(1, numbers.length));
-  block.view.set(numbers);
-  return block.address;
-}
-
-function put64(memory: KernelMemory, numbers: ArrayLike<number>): number {
-  const block = memory.float64(Math.max(1, numbers.length));
-  block.view.set(numbers);
-  return block.address;
 }
 
 /** Representation of each ordered pair of orbitals. */
@@ -158,80 +129,6 @@ function layIntegrals(memory: KernelMemory, { orbitalCount: n, twoElectron, beta
     }
   }
   return { integrals: address, integralRowBytes: 16 * pairs };
-}
-
-/** Pieces of at most `most` strings of one representation and one rank: [irrep, rank, first, count]. */
-function cutTasks(classes: StringClasses, isWhole: boolean, most: number): number[][] {
-  const { maximumRank } = classes.strings;
-  const ranks = isWhole ? [maximumRank] : Array.from({ length: maximumRank + 1 }, (_, rank) => rank);
-  const tasks: number[][] = [];
-  classes.members.forEach((_, irrep) => {
-    let first = 0;
-    for (const rank of ranks) {
-      const end = countUpToRank(classes, irrep, rank);
-      for (; first < end; first += most) {
-        tasks.push([irrep, isWhole ? 0 : rank, first, Math.min(most, end - first)]);
-      }
-      first = end;
-    }
-  });
-  return tasks;
-}
-
-/** The beta strings in blocks, with the replacements that lead to them grouped by the pair of orbitals. */
-function layRowTasks(
-  memory: KernelMemory,
-  classes: StringClasses,
-  isWhole: boolean,
-  replacements: SingleReplacements,
-  pairIrreps: Uint8Array,
-) {
-  const { strings, members, places } = classes;
-  const n = strings.orbitalCount;
-  const tasks: number[][] = [];
-  const groups: number[][] = [];
-  const source: number[] = [];
-  const target: number[] = [];
-  const sign: number[] = [];
-  for (const task of cutTasks(classes, isWhole, ROWS_AT_ONCE)) {
-    const [irrep, , first, count] = task;
-    const byGroup = new Map<number, { pair: number; change: number; entries: number[]; targets: number[] }>();
-    for (let row = 0; row < count; row++) {
-      const string = members[irrep][first + row];
-      const end = replacements.byStringStart[string + 1];
-      for (let entry = replacements.byStringStart[string]; entry < end; entry++) {
-        const pair = replacements.pair[entry];
-        const [p, q] = [Math.trunc(pair / n), pair % n];
-        const change = isWhole ? 0 : rankChange(strings, p, q);
-        const key = 3 * packedPair(p, q) + change + 1;
-        let group = byGroup.get(key);
-        if (!group) {
-          group = { pair, change, entries: [], targets: [] };
-          byGroup.set(key, group);
-        }
-        group.entries.push(entry);
-        group.targets.push(row);
-      }
-    }
-    const firstGroup = groups.length;
-    for (const [key, { pair, change, entries, targets }] of [...byGroup].sort(([a], [b]) => a - b)) {
-      groups.push([Math.trunc(key / 3), pairIrreps[pair], change, source.length, entries.length]);
-      for (const entry of entries) {
-        source.push(places[replacements.source[entry]]);
-        sign.push(replacements.sign[entry]);
-      }
-      target.push(...targets);
-    }
-    tasks.push([...task, firstGroup, groups.length]);
-  }
-  return {
-    rowTasks: put32(memory, tasks.flat()),
-    rowTaskCount: tasks.length,
-    groups: put32(memory, groups.flat()),
-    entrySource: put32(memory, source),
-    entryTarget: put32(memory, target),
-    entrySign: put64(memory, sign),
-  };
 }
 
 /** Strings of one spin with the Hamiltonian among them and the single replacements that lead to each. */
@@ -300,12 +197,12 @@ function laySpin(
     });
   }
 
-  return put32(memory, [
+  return placeInt32(memory, [
     strings.count,
     ranks,
-    put32(memory, irrepStart),
-    put32(memory, upToRank),
-    put32(memory, order.map(rankOf)),
+    placeInt32(memory, irrepStart),
+    placeInt32(memory, upToRank),
+    placeInt32(memory, order.map(rankOf)),
     energyRuns.address,
     energies.address,
     singleRuns.address,

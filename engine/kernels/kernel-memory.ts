@@ -23,6 +23,8 @@ export class KernelMemory {
   #wasm: WasmMemory | undefined;
   // address 0 is left free, so that no block has it
   #top = ALIGNMENT;
+  /** every growth makes a new one, of which views may be around */
+  readonly #buffers = new WeakSet<SharedArrayBuffer>();
 
   /** @param wasm - memory of another thread to take part in; only that thread may then take blocks */
   constructor(wasm?: WasmMemory) {
@@ -44,7 +46,9 @@ export class KernelMemory {
   /** @throws KernelMemoryFull */
   float64(length: number): Block<Float64Array> {
     const address = this.#take(8 * length);
-    return { address, view: new Float64Array(this.wasm.buffer, address, length) };
+    const { buffer } = this.wasm;
+    this.#buffers.add(buffer);
+    return { address, view: new Float64Array(buffer, address, length) };
   }
 
   /** The same, or nothing where it does not fit. */
@@ -61,6 +65,11 @@ export class KernelMemory {
   int32(length: number): Block<Int32Array> {
     const address = this.#take(4 * length);
     return { address, view: new Int32Array(this.wasm.buffer, address, length) };
+  }
+
+  /** Where numbers stand that are a block of this memory, or a part of one; undefined for others. */
+  addressOf(view: Float64Array): number | undefined {
+    return this.#buffers.has(view.buffer as SharedArrayBuffer) ? view.byteOffset : undefined;
   }
 
   /** Gives back all blocks that were taken while `work` ran. */
@@ -87,6 +96,20 @@ export class KernelMemory {
     this.#top = end;
     return address;
   }
+}
+
+/** Copies numbers into a memory. @returns their address */
+export function placeInt32(memory: KernelMemory, numbers: ArrayLike<number>): number {
+  const block = memory.int32(Math.max(1, numbers.length));
+  block.view.set(numbers);
+  return block.address;
+}
+
+/** Copies numbers into a memory. @returns their address */
+export function placeFloat64(memory: KernelMemory, numbers: ArrayLike<number>): number {
+  const block = memory.float64(Math.max(1, numbers.length));
+  block.view.set(numbers);
+  return block.address;
 }
 
 let scratch: KernelMemory | undefined;

@@ -1,4 +1,5 @@
 import { determinantProductKernels } from './determinant-product';
+import { fullProductKernels } from './full-product';
 import { KernelMemory } from './kernel-memory';
 import { vectorAlgebraKernels } from './vector-algebra';
 import type { WasmMemory } from './web-assembly';
@@ -19,12 +20,16 @@ const SHARED = [
   (memory: KernelMemory) => vectorAlgebraKernels(memory).dotTask,
   (memory: KernelMemory) => vectorAlgebraKernels(memory).combineTask,
   (memory: KernelMemory) => vectorAlgebraKernels(memory).rotateTask,
+  (memory: KernelMemory) => fullProductKernels(memory).rowTask,
+  (memory: KernelMemory) => fullProductKernels(memory).columnTask,
 ] as const;
 export const ROW_TASKS = 0;
 export const COLUMN_TASKS = 1;
 export const VECTOR_DOTS = 2;
 export const VECTOR_COMBINATIONS = 3;
 export const VECTOR_ROTATIONS = 4;
+export const FULL_ROW_TASKS = 5;
+export const FULL_COLUMN_TASKS = 6;
 
 /** Words that leader, helpers and host share. */
 const ROUND = 0;

@@ -1,3 +1,5 @@
+import { packRows } from './shared/packed-rows';
+
 /*
  * σ = H·c over the determinants of one symmetry, a matrix with a row for every beta and a column for every alpha
  * string. Cut into tasks that share no element of σ: first blocks of rows, then blocks of columns. Every element is
@@ -158,46 +160,6 @@ const SUMS_BYTES: usize = 2 * PACKED_BYTES;
 const ADDRESSES_BYTES: usize = 2 * 4 * <usize>WIDTH;
 const SIGNS_BYTES: usize = PACKED_BYTES;
 
-/**
- * packed(column) ← the signed elements of so many rows, zero up to the width. Two columns of two rows at a time.
- *
- * @param rows - addresses of the rows, of the last one twice where their number is odd
- */
-function packRows(packed: usize, width: i32, rows: usize, signs: usize, present: i32, columns: i32): void {
-  const stretch = (<usize>width) << 3;
-  const pairs = (present + 1) >> 1;
-  const even = columns & ~1;
-  for (let j = 0; j < even; j += 2) {
-    const place = (<usize>j) << 3;
-    const to = packed + <usize>j * stretch;
-    for (let pair = 0; pair < pairs; pair++) {
-      const addresses = rows + ((<usize>pair) << 3);
-      const sign = signs + ((<usize>pair) << 4);
-      const a = f64x2.mul(v128.load64_splat(sign), v128.load(<usize>load<u32>(addresses) + place));
-      const b = f64x2.mul(v128.load64_splat(sign, 8), v128.load(<usize>load<u32>(addresses, 4) + place));
-      const target = to + ((<usize>pair) << 4);
-      v128.store(target, v128.shuffle<f64>(a, b, 0, 2));
-      v128.store(target + stretch, v128.shuffle<f64>(a, b, 1, 3));
-    }
-    for (let k = 2 * pairs; k < width; k += 2) {
-      const target = to + ((<usize>k) << 3);
-      v128.store(target, f64x2.splat(0));
-      v128.store(target + stretch, f64x2.splat(0));
-    }
-  }
-  if (even < columns) {
-    const place = (<usize>even) << 3;
-    const to = packed + <usize>even * stretch;
-    for (let k = 0; k < width; k++) {
-      const value =
-        k < present
-          ? load<f64>(signs + ((<usize>k) << 3)) * load<f64>(<usize>load<u32>(rows + ((<usize>k) << 2)) + place)
-          : 0;
-      store<f64>(to + ((<usize>k) << 3), value);
-    }
-  }
-}
-
 /** Adds sums to column `column` of so many rows, and those a packed stretch further to the next column. */
 // @ts-ignore: decorator
 @inline
@@ -276,7 +238,7 @@ function amongColumns(
     store<u32>(targets + ((<usize>k) << 2), rowAddress(plan, plan.product, row));
     store<f64>(signs + ((<usize>k) << 3), k < present ? 1 : 0);
   }
-  packRows(packed, width, sources, signs, present, length);
+  packRows(packed, (<usize>width) << 3, width, sources, signs, present, length);
   const start = number(strings.irrepStart, irrep);
   for (let i = 0; i < columns; i++) {
     const string = start + i;
@@ -327,7 +289,7 @@ function rowsWithColumns(
       const sign = load<f64>(plan.entrySign + ((<usize>entry) << 3));
       store<f64>(signs + ((<usize>k) << 3), k < present ? sign : 0);
     }
-    packRows(packed, width, sources, signs, present, sourceColumns);
+    packRows(packed, (<usize>width) << 3, width, sources, signs, present, sourceColumns);
     for (let i = 0; i < columns; i += 2) {
       const both = i + 1 < columns;
       for (let side = 0; side < 1 + <i32>both; side++) {

@@ -1,7 +1,10 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { buildDeterminantSpace } from '../../../engine/configuration-interaction/determinant-space';
-import { prepareFastProduct } from '../../../engine/configuration-interaction/fast-product';
+import {
+  prepareFastProduct,
+  prepareFullProduct,
+} from '../../../engine/configuration-interaction/fast-product';
 import { preparePlainProduct } from '../../../engine/configuration-interaction/plain-product';
 import { buildSectors, putSector, takeSector } from '../../../engine/configuration-interaction/sector';
 import { makeEvenOrOdd } from '../../../engine/configuration-interaction/spin-flip';
@@ -10,19 +13,23 @@ import { scratchMemory } from '../../../engine/kernels/kernel-memory';
 import { randomArray, seededRandom } from '../../support/random';
 import { randomOrbitalIntegrals, randomUnrestrictedIntegrals } from '../../support/random-orbital-integrals';
 
+const fullProduct: typeof prepareFastProduct = ([sector], integrals, _irreps, memory) =>
+  prepareFullProduct(sector, integrals, memory);
+
 /** Largest deviation from the plain product over all sectors, relative to the largest element. */
 function deviation(
   integrals: OrbitalIntegrals,
   [alpha, beta, rank]: readonly [number, number, number],
   species: readonly number[] | undefined,
   parity: number,
+  prepare = prepareFastProduct,
 ): number {
   const space = buildDeterminantSpace(integrals.orbitalCount, alpha, beta, rank);
   const sectors = buildSectors(space, species);
   const plain = preparePlainProduct(space, integrals);
   const memory = scratchMemory();
   return memory.scope(() => {
-    const fast = prepareFastProduct(sectors, integrals, species, memory);
+    const fast = prepare(sectors, integrals, species, memory);
     let largest = 0;
     let scale = 0;
     for (const sector of sectors) {
@@ -90,5 +97,57 @@ describe('prepareFastProduct', () => {
       expect(deviation(integrals, [4, 4, Number.POSITIVE_INFINITY], species, parity)).toBeLessThan(1e-11);
       expect(deviation(integrals, [4, 4, 4], species, parity)).toBeLessThan(1e-11);
     }
+  });
+});
+
+describe('prepareFullProduct', () => {
+  it('independent: equals the plain product for any electron counts, also over beta orbitals of their own', () => {
+    fc.assert(
+      fc.property(sizes, ({ n, alpha, beta, seed, parity }) => {
+        const of = (integrals: OrbitalIntegrals, kept: number) =>
+          deviation(integrals, [alpha, beta, Number.POSITIVE_INFINITY], undefined, kept, fullProduct);
+        expect(of(randomOrbitalIntegrals(n, seed), alpha === beta ? parity : 0)).toBeLessThan(1e-11);
+        expect(of(randomUnrestrictedIntegrals(n, seed), 0)).toBeLessThan(1e-11);
+      }),
+      { seed: 13, numRuns: 100 },
+    );
+  });
+
+  it.each([
+    [10, 4, 4],
+    [9, 2, 5],
+    [11, 6, 2],
+    // strings in two words
+    [34, 2, 0],
+    [34, 1, 1],
+  ])(
+    'independent: equals the plain product, %i orbitals, %i + %i electrons: several tasks and stretches',
+    (n, alpha, beta) => {
+      const integrals = randomOrbitalIntegrals(n, 6);
+      for (const parity of alpha === beta ? [0, 1, -1] : [0]) {
+        const size = [alpha, beta, Number.POSITIVE_INFINITY] as const;
+        expect(deviation(integrals, size, undefined, parity, fullProduct)).toBeLessThan(1e-11);
+      }
+    },
+  );
+
+  it('identity: vectors that stand in the memory of the kernels are worked on there, with the same result', () => {
+    const space = buildDeterminantSpace(8, 3, 3, Number.POSITIVE_INFINITY);
+    const [sector] = buildSectors(space, undefined);
+    const memory = scratchMemory();
+    memory.scope(() => {
+      const apply = prepareFullProduct(sector, randomOrbitalIntegrals(8, 4), memory);
+      const vector = randomArray(sector.dimension, seededRandom(5));
+      const expected = new Float64Array(sector.dimension);
+      apply(sector, vector, expected, 0);
+      const [placed, product] = [
+        memory.float64(sector.dimension).view,
+        memory.float64(sector.dimension).view,
+      ];
+      placed.set(vector);
+      apply(sector, placed, product, 0);
+      expect(product).toEqual(expected);
+      expect(placed).toEqual(vector);
+    });
   });
 });

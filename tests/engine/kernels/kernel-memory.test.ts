@@ -24,6 +24,16 @@ describe('KernelMemory', () => {
     expect(new Float64Array(memory.wasm.buffer, address, 2)[1]).toBe(7.25);
   });
 
+  it('identity: knows where its blocks and their parts stand, also from before it grew, and no other numbers', () => {
+    const memory = new KernelMemory();
+    const { address, view } = memory.float64(8);
+    memory.float64(1_000_000);
+    expect(memory.addressOf(view)).toBe(address);
+    expect(memory.addressOf(view.subarray(2, 5))).toBe(address + 16);
+    expect(memory.addressOf(view.slice())).toBeUndefined();
+    expect(memory.addressOf(new KernelMemory().float64(8).view)).toBeUndefined();
+  });
+
   it('identity: a scope gives its blocks back, also when it throws', () => {
     const memory = new KernelMemory();
     const first = memory.scope(() => memory.float64(10).address);
