@@ -43,7 +43,15 @@ export function explainStudy(prepared: PreparedStudy, speeds: Speeds = NOMINAL_S
           determinants: countDeterminants(active, alpha, beta, rank),
           bytes:
             transformedBytes +
-            configurationInteractionBytes(active, alpha, beta, rank, study.states, spinsDiffer),
+            configurationInteractionBytes(
+              active,
+              alpha,
+              beta,
+              rank,
+              study.states,
+              spinsDiffer,
+              prepared.memoryLimit - transformedBytes,
+            ),
         };
       }
     }

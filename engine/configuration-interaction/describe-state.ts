@@ -53,15 +53,19 @@ export interface ConfigurationInteractionState {
 export const LEADING_COUNT = 8;
 export const LEADING_WEIGHT = 1e-3;
 
-/** What one normalised CI vector says. Coefficients are given the sign that makes the largest positive. */
+/**
+ * What one normalised CI vector says. Coefficients are given the sign that makes the largest positive.
+ *
+ * @param product - room for a vector, its content lost
+ */
 export function describeState(
   space: DeterminantSpace,
   vector: Float64Array,
   energy: number,
   residual: number,
-  beta?: BetaIntegrals,
+  beta: BetaIntegrals | undefined,
+  product: Float64Array,
 ): ConfigurationInteractionState {
-  const product = new Float64Array(vector.length);
   applySpin(space, vector, product, beta);
   const sSquared = dot(vector, product);
   const densities = densitiesBetween(space, vector, vector, beta);

@@ -1,6 +1,6 @@
 import { DEGENERACY_TOLERANCE } from '../linear-algebra/davidson';
 import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
-import type { LowestStates, SectorProblem } from './sector-states';
+import type { LowestStates, SectorProblem } from './sector-problem';
 
 /**
  * The lowest states of a sector by diagonalising the whole of its matrix. A degenerate set that `states` cuts is whole,

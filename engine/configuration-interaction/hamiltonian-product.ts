@@ -7,7 +7,7 @@ import { applyDense, buildDenseHamiltonians } from './dense-hamiltonian';
 import type { DeterminantSpace } from './determinant-space';
 import { prepareFastProduct, prepareFullProduct } from './fast-product';
 import { preparePlainProduct } from './plain-product';
-import { buildSectors, putSector, type Sector, takeSector } from './sector';
+import { buildSectors, isWholeSpace, putSector, type Sector, takeSector } from './sector';
 import { EXACT_PARITY, makeEvenOrOdd, NEAR_PARITY, spinFlipParity } from './spin-flip';
 
 /** The product H·c over the determinants of one representation, which H does not join with others. */
@@ -103,6 +103,10 @@ export function prepareHamiltonianProduct(
     space,
     sectors: ofSectors,
     apply(vector, result) {
+      if (isWholeSpace(sectors[0])) {
+        ofSectors[0].apply(vector, result);
+        return;
+      }
       result.fill(0);
       for (const { sector, apply } of ofSectors) {
         const part = takeSector(sector, vector);

@@ -4,13 +4,8 @@ import type { Termination } from '../termination';
 import { type DistinguishingOperator, makeDegenerateStatesDefinite, splitRuns } from './degenerate-states';
 import { lowestDirectly } from './direct-states';
 import { buildModelSpace } from './model-space';
-import {
-  findSectorStates,
-  type KnownState,
-  type LowestStates,
-  type SectorProblem,
-  type StateSettings,
-} from './sector-states';
+import type { KnownState, LowestStates, SectorProblem, StateSettings } from './sector-problem';
+import { findSectorStates } from './sector-states';
 
 /** A Hamiltonian over many basis states, of which the lowest eigenvectors are wanted. */
 export interface StateProblem {
@@ -107,6 +102,7 @@ function lowestOfSectors({ sectors }: StateProblem, settings: StateSettings): Lo
     });
     lowest.sort((a, b) => a.value - b.value);
     const highest = (lowest[states - 1]?.value ?? Number.POSITIVE_INFINITY) + DEGENERACY_TOLERANCE;
+    for (const { value, vector } of lowest) if (value > highest) settings.algebra?.giveBack(vector);
     lowest = lowest.filter(({ value }) => value <= highest);
   }
   return {

@@ -249,12 +249,19 @@ export function chooseGuesses(model: ModelSpace, states: number): GuessChoice {
   return { lowest, guards };
 }
 
+/** Writes a model vector into a vector of the whole space that holds zeros. */
+export function writeModelVector(model: ModelSpace, k: number): (into: Float64Array) => void {
+  return (into) => {
+    model.places.forEach((place, i) => {
+      into[place] = model.vectors[k][i];
+    });
+  };
+}
+
 /** A model vector as a vector of the whole space. */
 export function spreadModelVector(model: ModelSpace, k: number, dimension: number): Float64Array {
   const vector = new Float64Array(dimension);
-  model.places.forEach((place, i) => {
-    vector[place] = model.vectors[k][i];
-  });
+  writeModelVector(model, k)(vector);
   return vector;
 }
 

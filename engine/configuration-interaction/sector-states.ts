@@ -1,46 +1,23 @@
-import { type DavidsonOptions, type DavidsonResult, lowestEigenpairs } from '../linear-algebra/davidson';
+import { type DavidsonOptions, lowestEigenpairs } from '../linear-algebra/davidson';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { DavidsonProblem } from '../linear-algebra/subspace';
-import type { VectorAlgebra } from '../linear-algebra/vector-algebra';
-import type { RunControl } from '../termination';
+import { findWithFewVectors } from './few-vectors';
 import {
   chooseGuesses,
-  type ModelElements,
   type ModelSpace,
   modelPreconditioner,
   spreadModelVector,
+  writeModelVector,
 } from './model-space';
+import {
+  asDavidsonProblem,
+  isStronglyMixed,
+  type KnownState,
+  type LowestStates,
+  type SectorProblem,
+  type StateSettings,
+} from './sector-problem';
 import { basisVectorLimit, guessLimit, PROBES } from './size';
-
-/** A Hamiltonian over basis states that it does not join with others. */
-export interface SectorProblem {
-  readonly dimension: number;
-  /** energies of the basis states, or what stands for them in a preconditioner, hartree */
-  readonly diagonal: Float64Array;
-  apply(vector: Float64Array, product: Float64Array): void;
-  /** as of `DavidsonProblem` */
-  restoreSymmetry?(direction: Float64Array): void;
-  /** parts of a vector that H does not join, as far as the iteration must keep them apart; default: the whole */
-  partsOf?(vector: Float64Array): readonly Float64Array[];
-  elementsAmong(places: Int32Array): ModelElements;
-}
-
-export interface StateSettings {
-  readonly states: number;
-  readonly residualTolerance: number;
-  readonly maximumIterations: number;
-  readonly control: RunControl;
-  readonly stage: string;
-  /** what handles the vectors of the iteration; default: plain TypeScript */
-  readonly algebra?: VectorAlgebra;
-}
-
-export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iterations' | 'termination'>;
-
-export interface KnownState {
-  readonly value: number;
-  readonly vector: Float64Array;
-}
 
 /** Below the model's lowest energy, hartree: what lies higher by this much keeps a quarter of its weight. */
 const PROBE_SHIFT = 0.5;
@@ -59,18 +36,28 @@ export function findSectorStates(
   ceiling: number,
   lowest?: KnownState,
 ): LowestStates {
+  const maximumVectors = basisVectorLimit(settings.states, problem.dimension);
+  if (settings.basisVectors !== undefined && settings.basisVectors < maximumVectors) {
+    return findWithFewVectors(
+      problem,
+      model,
+      { ...settings, basisVectors: settings.basisVectors },
+      ceiling,
+      lowest,
+    );
+  }
   const precondition = modelPreconditioner(model, problem.diagonal);
   const guesses = selectGuesses(problem, model, precondition, settings.states);
   const probing = probes(problem, model, precondition);
-  const solve = (vectors: readonly Float64Array[]) =>
+  const solve = (vectors: DavidsonProblem['guesses']) =>
     lowestEigenpairs(asDavidsonProblem(problem, precondition, vectors, settings), {
       ...settings,
       roots: settings.states,
       ceiling,
       trustsEstimates: (vector) => !isStronglyMixed(lowest ?? { value: 0, vector }),
-      maximumVectors: basisVectorLimit(settings.states, problem.dimension),
+      maximumVectors,
     });
-  const found = solve([...guesses.map((k) => spreadModelVector(model, k, problem.dimension)), ...probing]);
+  const found = solve([...guesses.map((k) => writeModelVector(model, k)), ...probing]);
   if (found.termination.kind !== 'converged') return found;
   const own = { value: found.values[0], vector: found.vectors[0] };
   if (!isStronglyMixed(lowest && lowest.value < own.value ? lowest : own)) return found;
@@ -80,24 +67,6 @@ export function findSectorStates(
   return { ...again, iterations: found.iterations + again.iterations };
 }
 
-function asDavidsonProblem(
-  problem: SectorProblem,
-  precondition: ReturnType<typeof modelPreconditioner>,
-  guesses: readonly Float64Array[],
-  { algebra }: StateSettings,
-): DavidsonProblem {
-  return {
-    dimension: problem.dimension,
-    apply: (vector, product) => problem.apply(vector, product),
-    precondition,
-    restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
-    guesses,
-    ...(algebra && { algebra }),
-  };
-}
-
-/** Of no determinant more than this: the model space says little about such a state, and guards can fail. */
-const STRONGLY_MIXED = 0.6;
 /** Seeds of one spin: one of every spatial symmetry that an Abelian point group can have. */
 const MOST_SEEDS = 8;
 /** Residuals, hartree, at which a spin's lowest state is looked at, first roughly and then, if it comes near, closely. */
@@ -122,7 +91,7 @@ function lowerStatesOfOtherSpins(
   const { lowest, guards } = chooseGuesses(model, settings.states);
   const highest = Math.min(ceiling, found.values[Math.min(settings.states, found.values.length) - 1]);
   const seek = (
-    guesses: readonly Float64Array[],
+    guesses: DavidsonProblem['guesses'],
     closeness: Pick<DavidsonOptions, 'residualTolerance' | 'ceiling' | 'guards'>,
   ) =>
     lowestEigenpairs(asDavidsonProblem(problem, precondition, guesses, settings), {
@@ -135,7 +104,7 @@ function lowerStatesOfOtherSpins(
   for (const spin of new Set([...lowest, ...guards].map((k) => model.spins[k]))) {
     const seeds = lowestOfEverySector(model, spin).slice(0, MOST_SEEDS);
     const start = [
-      ...seeds.map((k) => spreadModelVector(model, k, problem.dimension)),
+      ...seeds.map((k) => writeModelVector(model, k)),
       mixtureOfSpin(model, spin, problem.dimension),
     ];
     const rough = seek(start, { residualTolerance: ROUGH_RESIDUAL, ceiling: highest + ROUGH_ERROR });
@@ -176,10 +145,6 @@ function mixtureOfSpin(model: ModelSpace, spin: number, dimension: number): Floa
     });
   });
   return mixture;
-}
-
-function isStronglyMixed({ vector }: KnownState): boolean {
-  return vector.every((coefficient) => coefficient ** 2 <= STRONGLY_MIXED);
 }
 
 /**

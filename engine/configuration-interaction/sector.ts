@@ -45,6 +45,11 @@ function layRows(space: DeterminantSpace, irrep: number, alpha: StringClasses, b
   return { space, irrep, alpha, beta, dimension, rowStart };
 }
 
+/** Do vectors of the sector have the order of vectors over the whole space? */
+export function isWholeSpace({ space, alpha, beta }: Sector): boolean {
+  return alpha.members[0].length === space.alpha.count && beta.members[0].length === space.beta.count;
+}
+
 /** Calls for every row: where it starts, the alpha strings in order, and where its beta string's row starts in the space. */
 function forEachRow(
   { space, irrep, alpha, beta, rowStart }: Sector,

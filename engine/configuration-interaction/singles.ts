@@ -4,7 +4,7 @@ import type { Vector3 } from '../molecule/molecule';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import { LEADING_COUNT, LEADING_WEIGHT } from './describe-state';
 import { findLowestStates } from './lowest-states';
-import type { LowestStates } from './sector-states';
+import type { LowestStates } from './sector-problem';
 import {
   type OrbitalSpecies,
   type SpaceSymmetry,

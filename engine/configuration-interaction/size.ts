@@ -27,6 +27,27 @@ export function basisVectorLimit(states: number, dimension: number): number {
   return guessLimit(states) + 4 * (PROBES + states) + (dimension > LARGE ? 0 : 12);
 }
 
+/** Basis vectors with which a guard is looked at where memory is short: it, and a new direction. */
+export const GUARD_BASIS = 2;
+
+/**
+ * Basis vectors for so many vectors in all, at least one more than the states.
+ *
+ * @returns undefined where there is room for as many as are of use
+ */
+export function basisVectorsWithin(vectors: number, states: number, dimension: number): number | undefined {
+  const useful = basisVectorLimit(states, dimension);
+  if (vectors >= davidsonVectorCount(useful)) return undefined;
+  let count = states + 1;
+  while (count + 1 < useful && davidsonVectorCount(count + 1) <= vectors) count++;
+  return count;
+}
+
+/** Vectors that the eigensolver holds with so many basis vectors, fewer than are of use. */
+function fewVectorsHeld(basisVectors: number, states: number): number {
+  return Math.max(davidsonVectorCount(basisVectors), states + davidsonVectorCount(GUARD_BASIS));
+}
+
 /**
  * Number of determinants up to an excitation rank, counted in spin orbitals against the lowest determinant.
  *
@@ -69,10 +90,11 @@ const BYTES_PER_SAME_SPIN_ENTRY = 3 * (4 + 8);
 /** In kernels' lists, where the entries of a string stand. */
 const BYTES_PER_STRING = 4 * (4 + 8 * 4);
 /** Vectors beside the eigensolver's: the diagonal, whole and by sectors, two in the kernels' memory. */
-const WORKING_VECTORS = 4;
+export const WORKING_VECTORS = 4;
 
 /**
- * Upper bound of the memory that `solveConfigurationInteraction` takes, in bytes; integrals not included.
+ * Upper bound of the memory that `solveConfigurationInteraction` takes, in bytes; integrals not included. Within the
+ * limit as far as that can be: with few vectors, the eigensolver takes longer.
  *
  * @param spinsDiffer - beta electrons have orbitals of their own
  */
@@ -83,17 +105,35 @@ export function configurationInteractionBytes(
   rankLimit: number,
   states: number,
   spinsDiffer = false,
+  memoryLimit = Number.POSITIVE_INFINITY,
 ): number {
   const determinants = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, rankLimit);
+  const lists = listBytes(orbitalCount, alphaElectrons, betaElectrons, rankLimit, spinsDiffer);
   // a sector may be short enough for more vectors
   const numbers = [determinants, Math.min(determinants, LARGE)].map(
     (length) => length * davidsonVectorCount(basisVectorLimit(states, length)),
   );
+  const useful = lists + 8 * (Math.max(...numbers) + WORKING_VECTORS * determinants);
+  if (useful <= memoryLimit) return useful;
+  const vectors = (memoryLimit - lists) / (8 * determinants) - WORKING_VECTORS;
+  const held = fewVectorsHeld(basisVectorsWithin(vectors, states, determinants) ?? 0, states);
+  return Math.min(useful, lists + 8 * (held + WORKING_VECTORS) * determinants);
+}
+
+/** Of the lists that describe strings and the Hamiltonian, in bytes. */
+export function listBytes(
+  orbitalCount: number,
+  alphaElectrons: number,
+  betaElectrons: number,
+  rankLimit: number,
+  spinsDiffer: boolean,
+): number {
+  const determinants = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, rankLimit);
   const spins =
     alphaElectrons === betaElectrons && !spinsDiffer ? [alphaElectrons] : [alphaElectrons, betaElectrons];
   const pairs = (orbitalCount * (orbitalCount + 1)) / 2;
   // integrals stand in the kernels' memory with both signs
-  let bytes = 8 * (Math.max(...numbers) + WORKING_VECTORS * determinants) + 16 * pairs * pairs;
+  let bytes = 16 * pairs * pairs;
   if (determinants <= FEW_DETERMINANTS) bytes += 8 * determinants ** 2;
   for (const electrons of spins) {
     const virtuals = orbitalCount - electrons;

@@ -4,6 +4,7 @@ import { kernelForm } from '../kernels/form';
 import { scratchMemory } from '../kernels/kernel-memory';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import { KernelVectors } from '../linear-algebra/kernel-vectors';
+import { plainVectors } from '../linear-algebra/vector-algebra';
 import { type RunControl, type Termination, UNATTENDED } from '../termination';
 import { type CorrelationParts, correlationParts } from './correlation-parts';
 import type { DistinguishingOperator } from './degenerate-states';
@@ -26,8 +27,14 @@ import { findLowestStates } from './lowest-states';
 import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
 import type { ModelElements } from './model-space';
 import { spinSummed } from './one-particle-density';
-import { placesInSpace, putSector, takeSector } from './sector';
-import { configurationInteractionBytes, countDeterminants } from './size';
+import { isWholeSpace, placesInSpace, putSector, takeSector } from './sector';
+import {
+  basisVectorsWithin,
+  configurationInteractionBytes,
+  countDeterminants,
+  listBytes,
+  WORKING_VECTORS,
+} from './size';
 import { stringAt } from './string-space';
 import { unrestrictedSpin, unrestrictedSpinSquaredElement } from './unrestricted-spin';
 import { determinantSymmetry, type OrbitalSpecies, type SpaceSymmetry } from './vector-symmetry';
@@ -42,7 +49,7 @@ export interface ConfigurationInteractionOptions {
   /** largest ‖Hc − Ec‖ of a converged state, hartree; default 1e-6, which leaves about 1e-12 in the energy */
   readonly residualTolerance?: number;
   readonly maximumIterations?: number;
-  /** bytes that may be taken; default: no limit */
+  /** bytes that may be taken; where they are few, the eigensolver holds fewer vectors and takes longer; default: no limit */
   readonly memoryLimit?: number;
   /** labels the states, and makes degenerate ones of different symmetry definite */
   readonly species?: OrbitalSpecies;
@@ -111,7 +118,7 @@ function solve(
   const { species } = settings;
   const product = prepareHamiltonianProduct(space, integrals, species?.irreps);
   const symmetry = species && determinantSymmetry(space, species);
-  const diagonal = beta ? unrestrictedDiagonal(space, integrals) : spinAveragedDiagonal(space, integrals);
+  const diagonals = sectorDiagonals(product, integrals);
   const elementsAmong = (places: Int32Array, { sector, matrix }: SectorProduct): ModelElements => {
     const spin = beta && unrestrictedSpin(beta, integrals.orbitalCount, [alphaElectrons, betaElectrons]);
     let made: readonly Determinant[] | undefined;
@@ -129,20 +136,27 @@ function solve(
           : spinSquaredElement(determinant(i), determinant(j)),
     };
   };
+  const longest = Math.max(...product.sectors.map(({ sector }) => sector.dimension));
+  const algebra =
+    kernelForm() === 'fast' && longest >= LONG_VECTORS
+      ? new KernelVectors(scratchMemory(), longest)
+      : plainVectors;
   const found = findLowestStates(
     {
-      sectors: product.sectors.map((ofSector) => ({
+      sectors: product.sectors.map((ofSector, k) => ({
         dimension: ofSector.sector.dimension,
-        diagonal: takeSector(ofSector.sector, diagonal),
+        diagonal: diagonals[k],
         apply: ofSector.apply,
         restoreSymmetry: ofSector.restoreSpinFlip,
         partsOf: ofSector.spinFlipParts,
         elementsAmong: (places) => elementsAmong(places, ofSector),
-        widen: (vector) => {
-          const whole = new Float64Array(space.dimension);
-          putSector(ofSector.sector, vector, whole);
-          return whole;
-        },
+        ...(!isWholeSpace(ofSector.sector) && {
+          widen: (vector) => {
+            const whole = new Float64Array(space.dimension);
+            putSector(ofSector.sector, vector, whole);
+            return whole;
+          },
+        }),
       })),
       reference: 0,
       distinguishing: distinguishingOperators(space, symmetry, beta),
@@ -150,22 +164,17 @@ function solve(
     {
       ...settings,
       stage: 'configuration interaction',
-      ...(kernelForm() === 'fast' &&
-        space.dimension >= LONG_VECTORS && {
-          algebra: new KernelVectors(
-            scratchMemory(),
-            Math.max(...product.sectors.map(({ sector }) => sector.dimension)),
-          ),
-        }),
+      algebra,
+      basisVectors: basisVectorsWithin(vectorsWithin(integrals, settings, longest), settings.states, longest),
     },
   );
 
-  const scratch = new Float64Array(space.dimension);
+  const scratch = longest === space.dimension ? algebra.take(longest) : new Float64Array(space.dimension);
   const states = found.vectors.map((vector, k) => {
     const energy = found.values[k];
     const residual = residualNorm(product, vector, energy, scratch);
     return {
-      ...describeState(space, vector, energy, residual, beta),
+      ...describeState(space, vector, energy, residual, beta, scratch),
       ...(k > 0 && { transitionDensity: transitionFromLowest(space, found.vectors[0], vector, beta) }),
       ...(symmetry && { symmetry: symmetry.describe(vector) }),
     };
@@ -180,6 +189,29 @@ function solve(
     termination: found.termination,
     iterations: found.iterations,
   };
+}
+
+/** The diagonal of H, or what stands for it, by sectors. */
+function sectorDiagonals(
+  { space, sectors }: HamiltonianProduct,
+  integrals: OrbitalIntegrals,
+): Float64Array[] {
+  const diagonal = integrals.beta
+    ? unrestrictedDiagonal(space, integrals)
+    : spinAveragedDiagonal(space, integrals);
+  return sectors.map(({ sector }) => (isWholeSpace(sector) ? diagonal : takeSector(sector, diagonal)));
+}
+
+/** How many vectors of the eigensolver the memory allows. */
+function vectorsWithin(
+  { orbitalCount, beta }: OrbitalIntegrals,
+  options: ConfigurationInteractionOptions & { readonly memoryLimit: number },
+  longest: number,
+): number {
+  const { alphaElectrons, betaElectrons, maximumRank, memoryLimit } = options;
+  const space = [orbitalCount, alphaElectrons, betaElectrons, maximumRank] as const;
+  const bytes = memoryLimit - listBytes(...space, beta !== undefined);
+  return (bytes / 8 - WORKING_VECTORS * countDeterminants(...space)) / longest;
 }
 
 /** With the signs of both states as their leading determinants are given. */
@@ -212,6 +244,7 @@ function checkOptions(
     maximumRank,
     states,
     beta !== undefined,
+    options.memoryLimit,
   );
   // places in vectors and lists are 32-bit numbers
   const count = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, maximumRank);

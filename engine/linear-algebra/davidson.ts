@@ -25,7 +25,7 @@ export interface DavidsonOptions {
 export interface DavidsonResult {
   /** rising; `roots` of them, and those degenerate with the last one; fewer if it ended before there were any */
   readonly values: Float64Array;
-  /** orthonormal, one per value */
+  /** orthonormal, one per value; taken from the problem's algebra, and the caller's to give back */
   readonly vectors: readonly Float64Array[];
   readonly residuals: Float64Array;
   readonly iterations: number;
@@ -100,7 +100,8 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     if (!subspace.diagonalise()) return finish({ kind: 'notFinite', quantity: 'matrix–vector product' });
     const wanted = countWanted();
     if (subspace.size + room > maximumVectors) {
-      subspace.collapse(wanted, Math.floor(maximumVectors / 3), maximumVectors - 1);
+      const most = Math.min(maximumVectors - 1, Math.max(wanted, maximumVectors - room));
+      subspace.collapse(wanted, guards ? subspace.guards(wanted) : [], Math.floor(maximumVectors / 3), most);
     }
     const highest = Math.min(subspace.values[wanted - 1], ceiling);
     const limitOf = (k: number) => (k < wanted ? ceiling : highest);
@@ -132,6 +133,8 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     if (iteration >= options.maximumIterations) return finish({ kind: 'iterationLimit', limit: iteration });
     if (options.control.isCancelled()) return finish({ kind: 'cancelled' });
 
+    // where vectors are few, what the roots change by is worth more than directions for all of them at once
+    unfinished = unfinished.slice(0, Math.max(1, Math.floor((maximumVectors - wanted) / 2)));
     room = unfinished.length;
     let isExtended = false;
     for (const k of unfinished.slice(0, maximumVectors - subspace.size)) {

@@ -128,13 +128,12 @@ export class Subspace {
    * Replaces the basis by the lowest `wanted` eigenvectors, guards, other low ones up to `size` of them, and what the
    * wanted ones have changed by since the diagonalisation before, up to `most` in all.
    */
-  collapse(wanted: number, size: number, most: number): void {
-    const guards = new Set(this.guards(wanted));
-    let others = size - wanted - guards.size;
+  collapse(wanted: number, guards: readonly number[], size: number, most: number): void {
+    let others = size - wanted - guards.length;
     const kept = Array.from(this.values.keys())
-      .filter((k) => k < wanted || guards.has(k) || others-- > 0)
+      .filter((k) => k < wanted || guards.includes(k) || others-- > 0)
       .slice(0, most);
-    const changes = this.#changesOf(Math.min(wanted, most - kept.length), kept);
+    const changes = this.#changesOf(wanted, kept, most - kept.length);
     const count = kept.length + changes.length;
     const columns = this.#columns;
     const chosen = new Float64Array(columns * count);
@@ -160,12 +159,12 @@ export class Subspace {
   }
 
   /** Over the basis: the lowest eigenvectors of the diagonalisation before, less what lies in those kept. */
-  #changesOf(count: number, kept: readonly number[]): Float64Array[] {
+  #changesOf(wanted: number, kept: readonly number[], most: number): Float64Array[] {
     const columns = this.#columns;
     const { coefficients, columns: before } = this.#before!;
     const changes: Float64Array[] = [];
     const isKept = new Set(kept);
-    for (let k = 0; k < Math.min(count, before); k++) {
+    for (let k = 0; k < Math.min(wanted, before) && changes.length < most; k++) {
       const old = Float64Array.from({ length: columns }, (_, i) =>
         i < before ? coefficients[i * before + k] : 0,
       );
@@ -247,7 +246,7 @@ export class Subspace {
     return this.#extend(this.#groupOfValue[k]);
   }
 
-  /** The lowest eigenvectors; ends the use of the subspace, whose memory is given back. */
+  /** The lowest eigenvectors, in the vectors of the basis; ends the use of the subspace, whose other memory is given back. */
   result(count: number) {
     const residuals = Float64Array.from({ length: count }, (_, k) => this.#formResidual(k));
     const columns = this.#columns;
@@ -257,10 +256,8 @@ export class Subspace {
     }
     this.#basis.rotate(kept, count);
     if (this.#ritz) this.#algebra.giveBack(this.#ritz);
-    this.#products.release();
-    const vectors = this.#basis.members.map((vector) => vector.slice());
-    this.#basis.release();
-    return { values: this.values.slice(0, count), vectors, residuals };
+    for (const product of this.#products.release()) this.#algebra.giveBack(product);
+    return { values: this.values.slice(0, count), vectors: this.#basis.release(), residuals };
   }
 }
 

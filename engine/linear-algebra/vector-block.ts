@@ -40,10 +40,13 @@ export class VectorBlock {
     return vector;
   }
 
-  /** Gives the memory of all vectors back; ends the use of the block. */
-  release(): void {
-    for (const vector of this.#vectors.splice(0)) this.algebra.giveBack(vector);
+  /** Ends the use of the block: returns its vectors, and gives the memory of others back that it has held. */
+  release(): readonly Float64Array[] {
+    const held = this.#vectors.splice(0);
+    const members = held.splice(0, this.#size);
+    for (const vector of held) this.algebra.giveBack(vector);
     this.#size = 0;
+    return members;
   }
 
   /** The products of all vectors of the block with one. */
