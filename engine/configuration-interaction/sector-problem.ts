@@ -3,6 +3,7 @@ import type { DavidsonProblem } from '../linear-algebra/subspace';
 import type { VectorAlgebra } from '../linear-algebra/vector-algebra';
 import type { RunControl } from '../termination';
 import type { ModelElements, modelPreconditioner } from './model-space';
+import type { SpinOperator } from './spin-search';
 
 /** A Hamiltonian over basis states that it does not join with others. */
 export interface SectorProblem {
@@ -14,6 +15,8 @@ export interface SectorProblem {
   restoreSymmetry?(direction: Float64Array): void;
   /** parts of a vector that H does not join, as far as the iteration must keep them apart; default: the whole */
   partsOf?(vector: Float64Array): readonly Float64Array[];
+  /** absent where H joins vectors of different spin, or the states have none to tell */
+  readonly spin?: SpinOperator;
   elementsAmong(places: Int32Array): ModelElements;
 }
 
@@ -39,17 +42,22 @@ export interface KnownState {
   readonly vector: Float64Array;
 }
 
+/** @param keepSpin - takes from a direction, in place, what rounding has brought in of other spins */
 export function asDavidsonProblem(
   problem: SectorProblem,
   precondition: ReturnType<typeof modelPreconditioner>,
   guesses: DavidsonProblem['guesses'],
   { algebra }: StateSettings,
+  keepSpin?: (direction: Float64Array) => void,
 ): DavidsonProblem {
   return {
     dimension: problem.dimension,
     apply: (vector, product) => problem.apply(vector, product),
     precondition,
-    restoreSymmetry: (direction) => problem.restoreSymmetry?.(direction),
+    restoreSymmetry: (direction) => {
+      problem.restoreSymmetry?.(direction);
+      keepSpin?.(direction);
+    },
     guesses,
     ...(algebra && { algebra }),
   };

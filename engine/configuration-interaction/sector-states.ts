@@ -1,3 +1,4 @@
+import { arbitraryNumbers } from '../linear-algebra/arbitrary-numbers';
 import { type DavidsonOptions, lowestEigenpairs } from '../linear-algebra/davidson';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { DavidsonProblem } from '../linear-algebra/subspace';
@@ -18,7 +19,10 @@ import {
   type StateSettings,
 } from './sector-problem';
 import { basisVectorLimit, guessLimit, PROBES } from './size';
+import { statesBySpin } from './spin-by-spin';
 
+/** Where vectors are longer, a search by products alone takes too long: guards and `lowerStatesOfOtherSpins` must do. */
+const LONGEST_BY_SPIN = 100_000;
 /** Below the model's lowest energy, hartree: what lies higher by this much keeps a quarter of its weight. */
 const PROBE_SHIFT = 0.5;
 
@@ -47,20 +51,35 @@ export function findSectorStates(
     );
   }
   const precondition = modelPreconditioner(model, problem.diagonal);
-  const guesses = selectGuesses(problem, model, precondition, settings.states);
-  const probing = probes(problem, model, precondition);
-  const solve = (vectors: DavidsonProblem['guesses']) =>
-    lowestEigenpairs(asDavidsonProblem(problem, precondition, vectors, settings), {
+  const solve = (
+    vectors: DavidsonProblem['guesses'],
+    roots = settings.states,
+    highest = ceiling,
+    keepSpin?: (direction: Float64Array) => void,
+  ) =>
+    lowestEigenpairs(asDavidsonProblem(problem, precondition, vectors, settings, keepSpin), {
       ...settings,
-      roots: settings.states,
-      ceiling,
+      roots,
+      ceiling: highest,
       trustsEstimates: (vector) => !isStronglyMixed(lowest ?? { value: 0, vector }),
       maximumVectors,
     });
+  const { spin } = problem;
+  const isMixed = (state: KnownState) =>
+    isStronglyMixed(lowest && lowest.value < state.value ? lowest : state);
+  const seedsOf = (value: number) => seedsOfSpin(model, value).map((k) => writeModelVector(model, k));
+  const bySpin =
+    spin && problem.dimension <= LONGEST_BY_SPIN
+      ? () => statesBySpin(problem, spin, { seedsOf, solve }, settings.states, ceiling)
+      : undefined;
+  if (bySpin && isMixed({ value: model.energies[0], vector: model.vectors[0] })) return bySpin();
+
+  const guesses = selectGuesses(problem, model, precondition, settings.states);
+  const probing = probes(problem, model, precondition);
   const found = solve([...guesses.map((k) => writeModelVector(model, k)), ...probing]);
   if (found.termination.kind !== 'converged') return found;
-  const own = { value: found.values[0], vector: found.vectors[0] };
-  if (!isStronglyMixed(lowest && lowest.value < own.value ? lowest : own)) return found;
+  if (!isMixed({ value: found.values[0], vector: found.vectors[0] })) return found;
+  if (bySpin) return bySpin();
   const hidden = lowerStatesOfOtherSpins(problem, model, precondition, found, settings, ceiling);
   if (hidden.length === 0) return found;
   const again = solve([...found.vectors, ...hidden]);
@@ -79,6 +98,7 @@ const ROUGH_ERROR = 0.02;
  * States below the highest one found that it has missed. H and the preconditioner keep the spin of a vector, so the
  * lowest state of every spin is sought by itself: what spins compete for in one iteration, they cannot lose here.
  * Only where the lowest state of all sectors is strongly mixed, as at a stretched multiple bond; else guards are enough.
+ * Where H keeps spin exactly and the vectors are not too long, `statesBySpin` does it more thoroughly instead.
  */
 function lowerStatesOfOtherSpins(
   problem: SectorProblem,
@@ -102,9 +122,8 @@ function lowerStatesOfOtherSpins(
     });
   const hidden: Float64Array[] = [];
   for (const spin of new Set([...lowest, ...guards].map((k) => model.spins[k]))) {
-    const seeds = lowestOfEverySector(model, spin).slice(0, MOST_SEEDS);
     const start = [
-      ...seeds.map((k) => writeModelVector(model, k)),
+      ...seedsOfSpin(model, spin).map((k) => writeModelVector(model, k)),
       mixtureOfSpin(model, spin, problem.dimension),
     ];
     const rough = seek(start, { residualTolerance: ROUGH_RESIDUAL, ceiling: highest + ROUGH_ERROR });
@@ -120,14 +139,16 @@ function lowerStatesOfOtherSpins(
   return hidden;
 }
 
-/** The lowest model vector of every sector of one spin, rising. */
-function lowestOfEverySector(model: ModelSpace, spin: number): number[] {
+/** The lowest model vector of every sector of one spin, rising, at most `MOST_SEEDS`. */
+function seedsOfSpin(model: ModelSpace, spin: number): number[] {
   const seen = new Set<string>();
-  return Array.from(model.energies.keys()).filter((k) => {
-    if (model.spins[k] !== spin || seen.has(model.sectors[k])) return false;
-    seen.add(model.sectors[k]);
-    return true;
-  });
+  return Array.from(model.energies.keys())
+    .filter((k) => {
+      if (model.spins[k] !== Math.round(spin) || seen.has(model.sectors[k])) return false;
+      seen.add(model.sectors[k]);
+      return true;
+    })
+    .slice(0, MOST_SEEDS);
 }
 
 /**
@@ -167,11 +188,6 @@ function probes(
     precondition(between, shift, probe);
     return probe;
   });
-}
-
-/** Between −1 and 1 and always the same: the fractional parts of k²·√2 follow no pattern of the basis. */
-function arbitraryNumbers(count: number): Float64Array {
-  return Float64Array.from({ length: count }, (_, k) => 2 * ((((k + 1) ** 2 % 1e6) * Math.SQRT2) % 1) - 1);
 }
 
 /**

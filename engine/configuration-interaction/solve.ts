@@ -27,7 +27,7 @@ import { findLowestStates } from './lowest-states';
 import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
 import type { ModelElements } from './model-space';
 import { spinSummed } from './one-particle-density';
-import { isWholeSpace, placesInSpace, putSector, takeSector } from './sector';
+import { isWholeSpace, placesInSpace, putSector, type Sector, takeSector } from './sector';
 import {
   basisVectorsWithin,
   configurationInteractionBytes,
@@ -35,6 +35,7 @@ import {
   listBytes,
   WORKING_VECTORS,
 } from './size';
+import type { SpinOperator } from './spin-search';
 import { stringAt } from './string-space';
 import { unrestrictedSpin, unrestrictedSpinSquaredElement } from './unrestricted-spin';
 import { determinantSymmetry, type OrbitalSpecies, type SpaceSymmetry } from './vector-symmetry';
@@ -149,6 +150,7 @@ function solve(
         apply: ofSector.apply,
         restoreSymmetry: ofSector.restoreSpinFlip,
         partsOf: ofSector.spinFlipParts,
+        ...(closesUnderSpin(settings, beta) && { spin: spinOperator(space, ofSector.sector) }),
         elementsAmong: (places) => elementsAmong(places, ofSector),
         ...(!isWholeSpace(ofSector.sector) && {
           widen: (vector) => {
@@ -212,6 +214,35 @@ function vectorsWithin(
   const space = [orbitalCount, alphaElectrons, betaElectrons, maximumRank] as const;
   const bytes = memoryLimit - listBytes(...space, beta !== undefined);
   return (bytes / 8 - WORKING_VECTORS * countDeterminants(...space)) / longest;
+}
+
+/**
+ * H keeps the spin of a vector where every determinant's partners with other spins of the open-shell electrons are in the
+ * space too: ranks are counted over spin orbitals, so that of truncated spaces only closed-shell ones have them all.
+ */
+function closesUnderSpin(
+  { alphaElectrons, betaElectrons, maximumRank }: ConfigurationInteractionOptions,
+  beta: BetaIntegrals | undefined,
+): boolean {
+  return !beta && (alphaElectrons === betaElectrons || maximumRank >= alphaElectrons + betaElectrons);
+}
+
+/** S² on the vectors of a sector, and the values that it can have with so many electrons and orbitals. */
+function spinOperator(space: DeterminantSpace, sector: Sector): SpinOperator {
+  const { alpha, beta, orbitalCount } = space;
+  const electrons = alpha.electrons + beta.electrons;
+  const lowest = Math.abs(alpha.electrons - beta.electrons) / 2;
+  const highest = Math.min(electrons, 2 * orbitalCount - electrons) / 2;
+  return {
+    values: Array.from({ length: highest - lowest + 1 }, (_, k) => (lowest + k) * (lowest + k + 1)),
+    apply: (vector, product) => {
+      const whole = new Float64Array(space.dimension);
+      const applied = new Float64Array(space.dimension);
+      putSector(sector, vector, whole);
+      applySpin(space, whole, applied);
+      product.set(takeSector(sector, applied));
+    },
+  };
 }
 
 /** With the signs of both states as their leading determinants are given. */
