@@ -1,5 +1,5 @@
 import { placeBasis } from '../basis/place-basis';
-import { countDeterminants, guessLimit, PROBES } from '../configuration-interaction/size';
+import { countDeterminants, goesByAmplitudes, guessLimit, PROBES } from '../configuration-interaction/size';
 import type { Level } from './levels';
 import type { PreparedStudy } from './prepare-study';
 
@@ -35,6 +35,9 @@ const BUILD = 20_000;
 const PRODUCT = 2_000_000;
 const LEVEL = 2000;
 const LEVEL_PER_DETERMINANT = 20;
+
+/** Of what a multiplication in a list takes. */
+const IN_DENSE_PRODUCT = 1 / 3;
 
 /** Fock matrices built for one field: by iterations, and for the curvature that shows its stability. */
 const FIELD_BUILDS = 45;
@@ -154,7 +157,11 @@ function levelWork(prepared: PreparedStudy, level: Level): Work {
     case 'correlated': {
       const determinants = countDeterminants(active, alpha, beta, level.maximumRank);
       const model = Math.min(determinants, MODEL_SPACE);
-      const product = determinants * connections(active, alpha, beta, determinants) + PRODUCT;
+      const spinsDiffer = study.orbitals === 'unrestricted';
+      const elements = goesByAmplitudes(active, alpha, beta, level.maximumRank, spinsDiffer)
+        ? IN_DENSE_PRODUCT * amplitudeProducts(alpha, active - alpha)
+        : determinants * connections(active, alpha, beta, determinants);
+      const product = elements + PRODUCT;
       return {
         ...NONE,
         modelSpace: model ** 2 + model ** 3 / 100,
@@ -164,6 +171,13 @@ function levelWork(prepared: PreparedStudy, level: Level): Work {
       };
     }
   }
+}
+
+/** Multiplications of one product over the amplitudes of single and double excitations: see `prepareClosedShellProduct`. */
+function amplitudeProducts(holes: number, particles: number): number {
+  const [symmetric, antisymmetric] = [1, -1].map((sign) => (particles * (particles + sign)) / 2);
+  const ladders = ((holes * holes) / 2) * (symmetric ** 2 + 2 * antisymmetric ** 2);
+  return ladders + 4 * (holes * particles) ** 3 + 4 * holes ** 2 * particles ** 3;
 }
 
 /** Determinants that the Hamiltonian joins to one. */

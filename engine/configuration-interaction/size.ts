@@ -1,3 +1,4 @@
+import { kernelForm } from '../kernels/form';
 import { davidsonVectorCount } from '../linear-algebra/davidson';
 import { wordsOf } from './determinants';
 import { FEW_DETERMINANTS } from './hamiltonian-product';
@@ -83,8 +84,42 @@ function choose(n: number, k: number): bigint {
   return value;
 }
 
-/** Per replacement: two orders of a pair or target, a source and a sign; in kernels' lists eight bytes and sixteen. */
-const BYTES_PER_REPLACEMENT = 2 * (4 + 4 + 1) + 8 + 16;
+/**
+ * Whether the fast form of products with H is `prepareClosedShellProduct`, over amplitudes of single and double
+ * excitations, rather than lists over determinants.
+ */
+export function goesByAmplitudes(
+  orbitalCount: number,
+  alphaElectrons: number,
+  betaElectrons: number,
+  rankLimit: number,
+  spinsDiffer: boolean,
+): boolean {
+  const ofOneSpin = highestRank(orbitalCount, alphaElectrons, rankLimit);
+  return !spinsDiffer && alphaElectrons === betaElectrons && Math.min(rankLimit, 2 * ofOneSpin) === 2;
+}
+
+/** Numbers in the tables of `prepareClosedShellProduct` and in the room for one product, without symmetry. */
+function amplitudeNumbers(orbitalCount: number, holes: number): number {
+  const particles = orbitalCount - holes;
+  const singles = holes * particles;
+  const [ofHoles, ofParticles] = [holes, particles].map((count) => [
+    (count * (count + 1)) / 2,
+    (count * (count - 1)) / 2,
+  ]);
+  const among = (pairs: readonly number[]) => pairs[0] ** 2 + pairs[1] ** 2;
+  const tables =
+    among(ofHoles) + among(ofParticles) + 2 * singles ** 2 + singles * (holes ** 2 + particles ** 2);
+  // seven matrices over singles; amplitudes and results over pairs, those of one spin once more
+  const room =
+    7 * singles ** 2 + 2 * (ofHoles[0] * (ofParticles[0] + ofParticles[1]) + ofHoles[1] * ofParticles[1]);
+  return tables + room;
+}
+
+/** Per replacement: two orders of a pair or target, a source and a sign … */
+const BYTES_PER_REPLACEMENT = 2 * (4 + 4 + 1);
+/** … and in kernels' lists eight bytes and sixteen. */
+const KERNEL_BYTES_PER_REPLACEMENT = 8 + 16;
 /** Column and value, twice while the lists are cut to length, and once in kernels' lists. */
 const BYTES_PER_SAME_SPIN_ENTRY = 3 * (4 + 8);
 /** In kernels' lists, where the entries of a string stand. */
@@ -132,15 +167,21 @@ export function listBytes(
   const spins =
     alphaElectrons === betaElectrons && !spinsDiffer ? [alphaElectrons] : [alphaElectrons, betaElectrons];
   const pairs = (orbitalCount * (orbitalCount + 1)) / 2;
-  // integrals stand in the kernels' memory with both signs
-  let bytes = 16 * pairs * pairs;
+  const byAmplitudes =
+    kernelForm() === 'fast' &&
+    goesByAmplitudes(orbitalCount, alphaElectrons, betaElectrons, rankLimit, spinsDiffer);
+  // for lists over determinants, integrals stand in the kernels' memory with both signs
+  let bytes = byAmplitudes ? 8 * amplitudeNumbers(orbitalCount, alphaElectrons) : 16 * pairs * pairs;
   if (determinants <= FEW_DETERMINANTS) bytes += 8 * determinants ** 2;
   for (const electrons of spins) {
     const virtuals = orbitalCount - electrons;
     const strings = countStrings(orbitalCount, electrons, rankLimit).map(Number);
     const count = strings.reduce((sum, ofRank) => sum + ofRank, 0);
+    const replacements = countSingleReplacements(electrons, virtuals, strings);
     bytes += count * (4 * wordsOf(orbitalCount) + 4 * orbitalCount + BYTES_PER_STRING);
-    bytes += BYTES_PER_REPLACEMENT * countSingleReplacements(electrons, virtuals, strings);
+    bytes += BYTES_PER_REPLACEMENT * replacements;
+    if (byAmplitudes) continue;
+    bytes += KERNEL_BYTES_PER_REPLACEMENT * replacements;
     bytes += BYTES_PER_SAME_SPIN_ENTRY * countSameSpinEntries(electrons, virtuals, strings);
   }
   return bytes;

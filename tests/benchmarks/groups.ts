@@ -1,3 +1,4 @@
+import { closedShellDoubles } from './closed-shell-doubles';
 import { curvePoints } from './curve-points';
 import { denseAlgebra } from './dense-algebra';
 import { electronRepulsion } from './electron-repulsion';
@@ -14,6 +15,7 @@ export const GROUPS: readonly BenchmarkGroup[] = [
   { name: 'dense algebra', measure: denseAlgebra },
   { name: 'electron repulsion', measure: electronRepulsion },
   { name: 'Hamiltonian product', measure: hamiltonianProducts },
+  { name: 'CISD of closed shells', measure: closedShellDoubles },
   { name: 'curve points', measure: curvePoints },
   { name: 'whole runs', measure: wholeRuns },
 ];

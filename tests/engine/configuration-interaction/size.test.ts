@@ -47,4 +47,17 @@ describe('configurationInteractionBytes', () => {
     expect(one).toBeGreaterThan(20 * vector);
     expect(configurationInteractionBytes(12, 4, 4, 2, 1)).toBeLessThan(one);
   });
+
+  it('identity: CISD of a closed shell takes its integrals beside the vectors, and no lists of elements', () => {
+    const [orbitals, pairs] = [40, 4];
+    const particles = orbitals - pairs;
+    const determinants = countDeterminants(orbitals, pairs, pairs, 2);
+    // (ac|bd) by the symmetry of both pairs; matrices over single excitations
+    const integrals = 8 * (particles ** 4 / 2 + 9 * (pairs * particles) ** 2);
+    const taken = configurationInteractionBytes(orbitals, pairs, pairs, 2, 1);
+    expect(taken).toBeGreaterThan(integrals + 8 * 20 * determinants);
+    expect(taken).toBeLessThan(2 * integrals + 8 * 80 * determinants);
+    // over orbitals of their own the spins go by lists
+    expect(configurationInteractionBytes(orbitals, pairs, pairs, 2, 1, true)).toBeGreaterThan(3 * taken);
+  });
 });
