@@ -2,7 +2,7 @@ import { closedShellDoubles } from './closed-shell-doubles';
 import { curvePoints } from './curve-points';
 import { denseAlgebra } from './dense-algebra';
 import { electronRepulsion } from './electron-repulsion';
-import { hamiltonianProducts } from './hamiltonian-product';
+import { hamiltonianProducts, largeProduct } from './hamiltonian-product';
 import type { Measurement } from './measure';
 import { wholeRuns } from './whole-runs';
 
@@ -18,4 +18,9 @@ export const GROUPS: readonly BenchmarkGroup[] = [
   { name: 'CISD of closed shells', measure: closedShellDoubles },
   { name: 'curve points', measure: curvePoints },
   { name: 'whole runs', measure: wholeRuns },
+];
+
+/** Measured only when asked for: takes minutes. */
+export const LARGE_GROUPS: readonly BenchmarkGroup[] = [
+  { name: 'large Hamiltonian product', measure: largeProduct },
 ];

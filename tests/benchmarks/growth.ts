@@ -10,6 +10,7 @@ import { electronRepulsionTensor } from '../../engine/integrals/electron-repulsi
 import { transformTwoElectron } from '../../engine/integrals/orbital-transformation';
 import { randomOrbitalIntegrals } from '../support/random-orbital-integrals';
 import { atom, prepare, study } from '../support/studies';
+import { connections } from './connections';
 import { GROWTH_FIGURE_MILLIMETRES, growthFigure } from './growth-figure';
 import { fastestCall } from './measure';
 
@@ -80,10 +81,10 @@ export async function measureGrowth(say: Say): Promise<readonly Growth[]> {
       theoretical: 1,
       because: 'every determinant once, its connections divided out',
     },
-    [8, 9, 10, 11, 12, 13],
+    [8, 9, 10, 11, 12, 14, 16],
     (orbitals) => {
       const space = buildDeterminantSpace(orbitals, 4, 4, Number.POSITIVE_INFINITY);
-      const { apply } = prepareHamiltonianProduct(space, randomOrbitalIntegrals(orbitals, 1));
+      const [{ apply }] = prepareHamiltonianProduct(space, randomOrbitalIntegrals(orbitals, 1)).sectors;
       const vector = new Float64Array(space.dimension).map((_, i) => Math.cos(i * i));
       const product = new Float64Array(space.dimension);
       const seconds = fastestCall(() => apply(vector, product));
@@ -111,13 +112,6 @@ export async function measureGrowth(say: Say): Promise<readonly Growth[]> {
 function chain(atoms: number): PreparedStudy {
   const places = Array.from({ length: atoms }, (_, i) => atom('H', 0, 0, 2 * i));
   return prepare(study(places, { basis: '6-31G' }));
-}
-
-/** Determinants that H joins to one of full CI with so many electrons of either spin. */
-function connections(orbitals: number, electrons: number): number {
-  const singles = electrons * (orbitals - electrons);
-  const doubles = (singles * (electrons - 1) * (orbitals - electrons - 1)) / 4;
-  return 1 + 2 * singles + 2 * doubles + singles ** 2;
 }
 
 async function secondsOfPoints(points: number, workers: number): Promise<number> {
