@@ -116,10 +116,8 @@ function amplitudeNumbers(orbitalCount: number, holes: number): number {
   return tables + room;
 }
 
-/** Per replacement: two orders of a pair or target, a source and a sign … */
-const BYTES_PER_REPLACEMENT = 2 * (4 + 4 + 1);
-/** … and in kernels' lists eight bytes and sixteen. */
-const KERNEL_BYTES_PER_REPLACEMENT = 8 + 16;
+/** Per replacement: two orders of a pair or target, a source and a sign; in kernels' lists eight bytes and sixteen. */
+const BYTES_PER_REPLACEMENT = 2 * (4 + 4 + 1) + 8 + 16;
 /** Column and value, twice while the lists are cut to length, and once in kernels' lists. */
 const BYTES_PER_SAME_SPIN_ENTRY = 3 * (4 + 8);
 /** In kernels' lists, where the entries of a string stand. */
@@ -177,11 +175,9 @@ export function listBytes(
     const virtuals = orbitalCount - electrons;
     const strings = countStrings(orbitalCount, electrons, rankLimit).map(Number);
     const count = strings.reduce((sum, ofRank) => sum + ofRank, 0);
-    const replacements = countSingleReplacements(electrons, virtuals, strings);
     bytes += count * (4 * wordsOf(orbitalCount) + 4 * orbitalCount + BYTES_PER_STRING);
-    bytes += BYTES_PER_REPLACEMENT * replacements;
     if (byAmplitudes) continue;
-    bytes += KERNEL_BYTES_PER_REPLACEMENT * replacements;
+    bytes += BYTES_PER_REPLACEMENT * countSingleReplacements(electrons, virtuals, strings);
     bytes += BYTES_PER_SAME_SPIN_ENTRY * countSameSpinEntries(electrons, virtuals, strings);
   }
   return bytes;

@@ -1,9 +1,10 @@
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { DistinguishingOperator } from './degenerate-states';
 import { type DeterminantSpace, rowLength } from './determinant-space';
+import { isOccupied, moveElectron, occupiedOrbitals, replacementPhase } from './determinants';
 import { isFullSpace, orbitalMap } from './orbital-map';
-import type { SingleReplacements } from './replacements';
 import { stringIrreps } from './string-classes';
+import { placeOf, type StringSpace, stringAt } from './string-space';
 
 /** What is known of the symmetry of the orbitals that many-electron functions are made of. */
 export interface OrbitalSpecies {
@@ -179,8 +180,8 @@ export function singlesSymmetry(
 }
 
 function determinantRotation(space: DeterminantSpace, rotation: Float64Array): VectorOperator {
-  const ofAlpha = stringRotation(space.alphaReplacements, rotation);
-  const ofBeta = stringRotation(space.betaReplacements, rotation);
+  const ofAlpha = stringRotation(space.alpha, rotation);
+  const ofBeta = space.beta === space.alpha ? ofAlpha : stringRotation(space.beta, rotation);
   const { rows } = space;
   return (vector, product) => {
     product.fill(0);
@@ -194,34 +195,44 @@ function determinantRotation(space: DeterminantSpace, rotation: Float64Array): V
     for (let row = 0; row < space.beta.count; row++) {
       const start = rows.start[row];
       const length = rowLength(rows, row);
-      for (let k = 0; k < factor.length; k++) {
-        if (target[k] >= length || source[k] >= length) continue;
+      // targets rise
+      for (let k = 0; k < factor.length && target[k] < length; k++) {
+        if (source[k] >= length) continue;
         product[start + target[k]] += factor[k] * vector[start + source[k]];
       }
     }
   };
 }
 
-/** Elements of the axial rotation between strings; few, as it joins representations that differ by that of Rz only. */
-function stringRotation({ byStringStart, pair, source, sign }: SingleReplacements, rotation: Float64Array) {
-  let count = 0;
-  for (let entry = 0; entry < pair.length; entry++) if (isElement(rotation[pair[entry]])) count++;
-  const kept = {
-    target: new Int32Array(count),
-    source: new Int32Array(count),
-    factor: new Float64Array(count),
-  };
-  let k = 0;
-  for (let target = 0; target + 1 < byStringStart.length; target++) {
-    for (let entry = byStringStart[target]; entry < byStringStart[target + 1]; entry++) {
-      const element = rotation[pair[entry]];
-      if (!isElement(element)) continue;
-      kept.target[k] = target;
-      kept.source[k] = source[entry];
-      kept.factor[k++] = sign[entry] * element;
+/**
+ * Elements of the axial rotation between strings, by rising target; few, as it joins representations that differ by that
+ * of Rz only.
+ */
+function stringRotation(strings: StringSpace, rotation: Float64Array) {
+  const n = strings.orbitalCount;
+  const partners = Array.from({ length: n }, (_, p) =>
+    Array.from({ length: n }, (_, q) => q).filter((q) => isElement(rotation[p * n + q])),
+  );
+  const target: number[] = [];
+  const source: number[] = [];
+  const factor: number[] = [];
+  const moved = new Int32Array(strings.words);
+  for (let place = 0; place < strings.count; place++) {
+    const string = stringAt(strings, place);
+    for (const p of occupiedOrbitals(string)) {
+      for (const q of partners[p]) {
+        if (isOccupied(string, q)) continue;
+        moved.set(string);
+        moveElectron(moved, p, q);
+        const from = placeOf(strings, moved);
+        if (from < 0) continue;
+        target.push(place);
+        source.push(from);
+        factor.push(replacementPhase(string, p, q) * rotation[p * n + q]);
+      }
     }
   }
-  return kept;
+  return { target, source, factor };
 }
 
 function isElement(value: number): boolean {
