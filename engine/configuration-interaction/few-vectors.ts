@@ -1,9 +1,9 @@
 import { type DavidsonOptions, lowestEigenpairs } from '../linear-algebra/davidson';
-import { dot } from '../linear-algebra/dense';
 import type { DavidsonProblem } from '../linear-algebra/subspace';
 import { chooseGuesses, type ModelSpace, modelPreconditioner, writeModelVector } from './model-space';
 import {
   asDavidsonProblem,
+  isKnown,
   isStronglyMixed,
   type KnownState,
   type LowestStates,
@@ -14,8 +14,6 @@ import { GUARD_BASIS, guessLimit } from './size';
 
 /** Residual, hartree, at which a guard that has come below the states found counts as one of them. */
 const CLOSE_RESIDUAL = 1e-4;
-/** Of the same state two vectors have more than this in common, squared. */
-const SAME_STATE = 0.9;
 
 /**
  * The lowest states of one sector where memory has no room for guards beside them, for many determinants: first the
@@ -67,9 +65,7 @@ export function findWithFewVectors(
       trustsEstimates: () => isTrusted,
     });
     iterations += guard.iterations;
-    const [vector] = guard.vectors;
-    const isNew = found.vectors.every((other) => dot(other, vector) ** 2 < SAME_STATE);
-    if (guard.values[0] < highest && isNew) {
+    if (guard.values[0] < highest && !isKnown(guard.vectors[0], found.vectors)) {
       found = solve([...guard.vectors, ...found.vectors].map(handOver), {});
       iterations += found.iterations;
     } else {

@@ -77,14 +77,30 @@ export function buildModelSpace(
   };
 }
 
+/** The lowest values, rising: so many, or all. */
+function lowestValues(values: Float64Array, count: number): Float64Array {
+  const found = new Float64Array(Math.min(values.length, 8 * count));
+  let size = 0;
+  let highest = Number.POSITIVE_INFINITY;
+  for (const value of values) {
+    if (value >= highest) continue;
+    found[size++] = value;
+    if (size < found.length) continue;
+    found.sort();
+    size = Math.min(size, count);
+    highest = found[size - 1];
+  }
+  return found.subarray(0, size).sort().subarray(0, count);
+}
+
 /** About `size` places of lowest value, cut where the value makes a step. */
 function lowestPlaces(diagonal: Float64Array, size: number): Int32Array {
-  const sorted = diagonal.slice().sort();
-  let count = Math.min(size, sorted.length);
-  while (count > 1 && count < sorted.length && sorted[count] - sorted[count - 1] < SAME_CONFIGURATION)
-    count--;
+  const total = diagonal.length;
+  const sorted = lowestValues(diagonal, size + 1);
+  let count = Math.min(size, total);
+  while (count > 1 && count < total && sorted[count] - sorted[count - 1] < SAME_CONFIGURATION) count--;
   // one great degenerate set: no cut is better than another
-  const torn = count <= size / 2 && sorted.length > size;
+  const torn = count <= size / 2 && total > size;
   const highest = torn ? sorted[size - 1] : sorted[count - 1];
   const places: number[] = [];
   for (let place = 0; place < diagonal.length && places.length < Math.max(count, size); place++) {

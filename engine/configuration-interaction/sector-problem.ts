@@ -1,4 +1,5 @@
 import type { DavidsonResult } from '../linear-algebra/davidson';
+import { dot } from '../linear-algebra/dense';
 import type { DavidsonProblem } from '../linear-algebra/subspace';
 import type { VectorAlgebra } from '../linear-algebra/vector-algebra';
 import type { RunControl } from '../termination';
@@ -68,4 +69,12 @@ const STRONGLY_MIXED = 0.6;
 
 export function isStronglyMixed({ vector }: KnownState): boolean {
   return vector.every((coefficient) => coefficient ** 2 <= STRONGLY_MIXED);
+}
+
+/** A vector of which states hold less than this is another state. */
+const KNOWN_WEIGHT = 0.9;
+
+/** Do the states hold the vector, of a degenerate set in whatever mixture? */
+export function isKnown(vector: Float64Array, states: readonly Float64Array[]): boolean {
+  return states.reduce((weight, state) => weight + dot(state, vector) ** 2, 0) >= KNOWN_WEIGHT;
 }

@@ -12,6 +12,7 @@ import {
 } from './model-space';
 import {
   asDavidsonProblem,
+  isKnown,
   isStronglyMixed,
   type KnownState,
   type LowestStates,
@@ -133,8 +134,7 @@ function lowerStatesOfOtherSpins(
       ceiling: highest,
       guards: false,
     });
-    const isNew = found.vectors.every((vector) => dot(vector, vectors[0]) ** 2 < 0.9);
-    if (values[0] < highest && isNew) hidden.push(vectors[0]);
+    if (values[0] < highest && !isKnown(vectors[0], found.vectors)) hidden.push(vectors[0]);
   }
   return hidden;
 }

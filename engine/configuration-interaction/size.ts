@@ -122,8 +122,8 @@ const BYTES_PER_REPLACEMENT = 2 * (4 + 4 + 1) + 8 + 16;
 const BYTES_PER_SAME_SPIN_ENTRY = 3 * (4 + 8);
 /** In kernels' lists, where the entries of a string stand. */
 const BYTES_PER_STRING = 4 * (4 + 8 * 4);
-/** Vectors beside the eigensolver's: the diagonal, whole and by sectors, two in the kernels' memory. */
-export const WORKING_VECTORS = 4;
+/** Vectors beside the eigensolver's, in which products are formed in place: the diagonal, whole and by sectors. */
+export const WORKING_VECTORS = 2;
 
 /**
  * Upper bound of the memory that `solveConfigurationInteraction` takes, in bytes; integrals not included. Within the
