@@ -15,7 +15,7 @@ import {
 const LINE_LENGTH = 95;
 const LINE_LENGTH_AT_FULL_SIZE = 75;
 /** Longer tables are set with longtable, which breaks across pages. */
-const ROWS_ON_A_PAGE = 42;
+const LINES_ON_A_PAGE = 42;
 /** Of a column whose words are broken into lines; about what `LONGEST_LINE` characters take. */
 const WRAPPED_COLUMN = 'p{0.26\\linewidth}';
 
@@ -34,7 +34,11 @@ export function latexTables(document: ReportDocument): string {
     .concat('\n');
 }
 
-const isLong = ({ rows }: TextTable): boolean => rows.length > ROWS_ON_A_PAGE;
+/** Counts the lines that wrapped words take. */
+const isLong = ({ rows }: TextTable): boolean =>
+  rows.reduce((lines, row) => lines + Math.max(...row.map(linesOf)), 0) > LINES_ON_A_PAGE;
+
+const linesOf = (cell: string): number => Math.max(1, Math.ceil(cell.length / LONGEST_LINE));
 
 function setTable(table: TextTable, subject: string): string {
   const { heading, columns, rows, notes } = table;
@@ -47,7 +51,12 @@ function setTable(table: TextTable, subject: string): string {
   const caption = latexText([heading, subject, ...notes].map(ended).join(' '));
   const size = tableWidth(table, 'onOneLine') > LINE_LENGTH_AT_FULL_SIZE ? ['\\footnotesize'] : [];
   const head = [...spanningRows(columns), `${columns.map(({ label }) => latexText(label)).join(' & ')} \\\\`];
-  const body = rows.map((row) => `${row.map(latexCell).join(' & ')} \\\\`);
+  const body = rows.map((row) => {
+    const cells = row.map((cell, index) =>
+      alignment[index] === WRAPPED_COLUMN ? raggedCell(cell) : latexCell(cell),
+    );
+    return `${cells.join(' & ')} \\\\`;
+  });
   const lines = isLong(table)
     ? [
         '{',
@@ -68,6 +77,8 @@ function setTable(table: TextTable, subject: string): string {
         '\\begin{table}',
         '\\centering',
         `\\caption{${caption}}`,
+        // most classes leave no room below a caption
+        '\\medskip',
         ...size,
         `\\begin{tabular}{${alignment.join('')}}`,
         '\\toprule',
@@ -99,6 +110,9 @@ function spanningRows(columns: readonly TableColumn[]): string[] {
     return [`${cells.join(' & ')} \\\\`, rules.join(' ')];
   });
 }
+
+/** In braces, as raggedness gives the end of a row another meaning. */
+const raggedCell = (cell: string): string => `{\\raggedright ${latexCell(cell)}\\par}`;
 
 /** Numbers in mathematics, for their minus signs. */
 function latexCell(cell: string): string {

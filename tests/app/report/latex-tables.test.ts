@@ -6,8 +6,8 @@ import { sampleResults } from '../../support/sample-results';
 /** Commands of the LaTeX kernel, of booktabs and of longtable that tables may use; mathematics among them. */
 const COMMANDS = new Set(
   `AA alpha approx bar begin beta bottomrule caption cdot centering chi circ cmidrule delta Delta end endfoot endhead
-  footnotesize frac gamma Gamma infty lambda Lambda langle ldots leq geq linewidth midrule mu multicolumn nu omega
-  Phi phi pi Pi pm Psi psi rangle rho rightarrow Sigma sigma surd textasciicircum textasciitilde textbackslash textbar
+  footnotesize frac gamma Gamma infty lambda Lambda langle ldots leq geq linewidth medskip midrule mu multicolumn nu omega
+  Phi phi par pi Pi pm Psi psi raggedright rangle rho rightarrow Sigma sigma surd textasciicircum textasciitilde textbackslash textbar
   textgreater textless textsubscript textsuperscript theta times toprule varepsilon xi zeta`.split(/\s+/),
 );
 
@@ -87,6 +87,30 @@ describe('latexTables', () => {
     expect(table).toContain('\\begin{longtable}{rrr}');
     expect(table).toContain('\\multicolumn{1}{c}{a} & \\multicolumn{1}{c}{b}');
     expect(table).toMatch(/\$0\.40\$ & \$-\d\.\d{6}\$ & -- \\\\/);
+  });
+
+  it('breaks tables across pages by their lines, those of wrapped words counted', () => {
+    const tableOf = (words: string) =>
+      latexTables({
+        title: 't',
+        heading: 'A study',
+        blocks: [
+          {
+            kind: 'table',
+            table: {
+              id: 't',
+              heading: 'Words',
+              columns: [{ label: 'Words', content: 'words' }, { label: 'x' }],
+              rows: Array.from({ length: 12 }, () => [words, '1']),
+              notes: [],
+            },
+          },
+        ],
+      });
+    expect(tableOf('short')).not.toContain('longtable');
+    const wrapped = tableOf('words '.repeat(20));
+    expect(wrapped).toContain('\\begin{longtable}{p{0.26\\linewidth}r}');
+    expect(wrapped).toMatch(/^\{\\raggedright words .*\\par\} & \$1\$ \\\\$/m);
   });
 
   it.each([
