@@ -12,10 +12,11 @@ export function BasisComparison({ results, ...units }: BasisComparisonProps) {
   const { study, findings, basis, furtherBases = [], basisSetLimit } = results;
   if (furtherBases.length === 0) return null;
   const sets = [{ basis, findings }, ...furtherBases];
+  const hasMinimum = (level: string) => sets.some((set) => set.findings[level]?.minimum.kind === 'found');
   return (
     <section>
       <h3>Basis sets compared</h3>
-      {study.levels.map((level) => (
+      {study.levels.filter(hasMinimum).map((level) => (
         <table key={level} className="numbers">
           <caption>{level}</caption>
           <thead>
