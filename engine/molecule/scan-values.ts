@@ -3,6 +3,9 @@ import { EngineError } from '../errors';
 /** More points than this are taken for a mistake. */
 export const MOST_SCAN_POINTS = 10_000;
 
+/** Significant digits of evenly spaced values: as many as any double holds exactly. */
+const SCAN_DIGITS = 15;
+
 /** The scanned values as a study gives them. */
 export type ScanRange =
   | { readonly from: number; readonly to: number; readonly count: number }
@@ -42,9 +45,10 @@ function spacedValues({ from, to, count }: Extract<ScanRange, { count: number }>
     );
   }
   const last = count - 1;
-  // weighing both ends rounds better than adding steps: 0.5 to 2.5 in 21 gives 0.6, not 0.6000000000000001
+  // round numbers stay round: 0.4 to 5 in 24 gives 0.8, not 0.7999999999999999
+  const rounded = (value: number) => Number(value.toPrecision(SCAN_DIGITS));
   return Array.from({ length: count }, (_, i) =>
-    i === 0 ? from : i === last ? to : (from * (last - i) + to * i) / last,
+    i === 0 ? from : i === last ? to : rounded((from * (last - i) + to * i) / last),
   );
 }
 

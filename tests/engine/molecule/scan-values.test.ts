@@ -32,6 +32,8 @@ describe('scanValues', () => {
 
   it('identity: round numbers stay round', () => {
     expect(scanValues({ from: 0.5, to: 2.5, count: 21 })[1]).toBe(0.6);
+    expect(scanValues({ from: 0.4, to: 5, count: 24 })[2]).toBe(0.8);
+    expect(scanValues({ from: 0.8, to: 3.2, count: 33 })[3]).toBe(1.025);
   });
 
   it('identity: a list is taken in the order given', () => {
