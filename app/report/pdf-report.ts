@@ -34,7 +34,7 @@ export function pdfReport(
     pageSize: 'A4',
     pageMargins: [MARGIN, MARGIN, MARGIN, MARGIN],
     info: { title, subject: heading, creator: 'farwell' },
-    defaultStyle: { font: 'body', fontSize: TEXT_SIZE, lineHeight: 1.25 },
+    defaultStyle: { font: 'body', fontSize: TEXT_SIZE, lineHeight: 1.1 },
     footer: (page, pages) => ({
       text: `${page} / ${pages}`,
       alignment: 'right',
