@@ -34,8 +34,7 @@ export function excitationIntegrals(
       n,
       left: ket.virtual,
       right: ket.occupied,
-      take: (first, width, results) =>
-        half.keep(first, width, 0, results.subarray(0, ketExcitations * width)),
+      take: (first, width, results) => half.keep(first, width, results),
     });
     const result = new Float64Array(braOccupied * braVirtual * ketExcitations);
     transformMatrices({

@@ -2,6 +2,9 @@ import { kernelForm } from '../kernels/form';
 import { scratchMemory } from '../kernels/kernel-memory';
 import type { PackedMatrices } from './matrix-transformation';
 
+/** Results that are turned round together: the numbers of one line of the cache. */
+const TOGETHER = 8;
+
 /**
  * What the first of two sweeps leaves: for each pair of functions μν a row of results x, to be read for each x as a
  * symmetric matrix over μν. It is kept in the blocks in which it comes, and turned a block at a time.
@@ -40,18 +43,23 @@ export class HalfTransformed implements PackedMatrices {
     return memory.scope(() => workOn(memory.float64IfThereIsRoom(length)?.view ?? new Float64Array(length)));
   }
 
-  /** Results `at` … of the matrices first … first + width, result by result. */
-  keep(first: number, width: number, at: number, results: Float64Array): void {
+  /** All results of the matrices first … first + width, result by result. */
+  keep(first: number, width: number, results: Float64Array): void {
     if (first === 0) this.#blockWidth = width;
-    this.#data.set(results, this.count * first + at * width);
+    this.#data.set(results.subarray(0, this.count * width), this.count * first);
   }
 
   loadInto(block: Float64Array, first: number, width: number): void {
+    const data = this.#data;
     for (let pair = 0; pair < this.functionPairs; pair += this.#blockWidth) {
       const length = Math.min(this.#blockWidth, this.functionPairs - pair);
-      for (let k = 0; k < width; k++) {
-        const source = this.count * pair + (first + k) * length;
-        for (let i = 0; i < length; i++) block[(pair + i) * width + k] = this.#data[source + i];
+      const source = this.count * pair + first * length;
+      for (let from = 0; from < width; from += TOGETHER) {
+        const to = Math.min(from + TOGETHER, width);
+        for (let i = 0; i < length; i++) {
+          const target = (pair + i) * width;
+          for (let k = from; k < to; k++) block[target + k] = data[source + k * length + i];
+        }
       }
     }
   }

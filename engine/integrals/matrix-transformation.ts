@@ -3,6 +3,7 @@ import { scratchMemory } from '../kernels/kernel-memory';
 import { productIn, rowsAt, transposed } from '../kernels/matrix-product';
 import { packedMatricesKernels } from '../kernels/packed-matrices';
 import { transposedProductInto } from './contraction';
+import { packedPair } from './orbital-integrals';
 
 /** A row of symmetric n×n matrices, read a few at a time. */
 export interface PackedMatrices {
@@ -11,8 +12,11 @@ export interface PackedMatrices {
   loadInto(block: Float64Array, first: number, width: number): void;
 }
 
-/** Results of `width` matrices: element (p, q) of matrix first + k stands at (p·columns + q)·width + k. */
-export type TakeTransformed = (first: number, width: number, results: Float64Array, columns: number) => void;
+/**
+ * Results of `width` matrices: element (p, q) of matrix first + k stands at (p·columns + q)·width + k; of LᵀML those with
+ * p ≥ q, at (p(p + 1)/2 + q)·width + k.
+ */
+export type TakeTransformed = (first: number, width: number, results: Float64Array) => void;
 
 export interface MatrixTransformation {
   readonly matrices: PackedMatrices;
@@ -20,7 +24,7 @@ export interface MatrixTransformation {
   readonly n: number;
   /** n × rows of the result */
   readonly left: Float64Array;
-  /** n × columns of the result; the smaller one, if there is a choice. The same array as `left`: p ≥ q only */
+  /** n × columns of the result; the smaller one, if there is a choice. The same array as `left`: LᵀML */
   readonly right: Float64Array;
   readonly take: TakeTransformed;
   /** where `left` and `right` are the same: how many orbitals matter for the matrices up to this one; default all */
@@ -60,13 +64,21 @@ function transformOneByOne({ matrices, n, left, right, take }: MatrixTransformat
     }
     transposedProductInto(square, n, right, columns, n, half);
     transposedProductInto(left, rows, half, columns, n, result, left === right);
-    take(index, 1, result, columns);
+    if (left === right) packLowerTriangle(result, rows);
+    take(index, 1, result);
+  }
+}
+
+/** The lower triangle of a square matrix, row by row from its beginning on. */
+function packLowerTriangle(matrix: Float64Array, n: number): void {
+  for (let row = 1; row < n; row++) {
+    matrix.copyWithin(packedPair(row, 0), row * n, row * n + row + 1);
   }
 }
 
 /**
  * The same for `width` matrices in every product: X(μ; q, k) = Σ_ν R(ν, q)·M_k(μ, ν) for one μ after another, then
- * Σ_μ L(μ, p)·X(μ; q, k) for one q after another.
+ * Σ_μ L(μ, p)·X(μ; q, k), of LᵀML for q ≤ p only.
  */
 function transformTogether(transformation: MatrixTransformation): void {
   const { matrices, n, left, right, take, orbitalsNeeded } = transformation;
@@ -88,7 +100,6 @@ function transformTogether(transformation: MatrixTransformation): void {
     for (let first = 0; first < matrices.count; first += TOGETHER) {
       const width = Math.min(TOGETHER, matrices.count - first);
       const needed = isSymmetric && orbitalsNeeded ? orbitalsNeeded(first + width - 1) : undefined;
-      const rows = needed ?? allRows;
       const columns = needed ?? allColumns;
       const rowLength = columns * width;
       matrices.loadInto(packed.view, first, width);
@@ -103,18 +114,22 @@ function transformTogether(transformation: MatrixTransformation): void {
           width,
         );
       }
-      for (let q = 0; q < columns; q++) {
-        const start = isSymmetric ? q : 0;
+      // the orbitals before `end` with that of one stretch of X
+      const multiply = (end: number, orbital: number, target: number, targetRow: number) =>
         productInto(
-          rowsAt(results.address + 8 * (start * rowLength + q * width), rowLength),
-          transposed(rowsAt(leftBlock.address + 8 * start, allRows)),
-          rowsAt(half.address + 8 * q * width, rowLength),
-          rows - start,
+          rowsAt(results.address + 8 * target, targetRow),
+          transposed(rowsAt(leftBlock.address, allRows)),
+          rowsAt(half.address + 8 * orbital * width, rowLength),
+          end,
           n,
           width,
         );
+      if (isSymmetric) {
+        for (let p = 0; p < columns; p++) multiply(p + 1, p, packedPair(p, 0) * width, width);
+      } else {
+        for (let q = 0; q < columns; q++) multiply(allRows, q, q * width, rowLength);
       }
-      take(first, width, results.view, columns);
+      take(first, width, results.view);
     }
   });
 }

@@ -97,13 +97,7 @@ export function transformFirstPair<Result>(
       n,
       left: orbitals,
       right: orbitals,
-      take: (first, width, results) => {
-        for (let p = 0; p < m; p++) {
-          const row = p * m * width;
-          const lowerTriangle = results.subarray(row, row + (p + 1) * width);
-          halfTransformed.keep(first, width, packedPair(p, 0), lowerTriangle);
-        }
-      },
+      take: (first, width, results) => halfTransformed.keep(first, width, results),
     });
     return use(halfTransformed);
   });
@@ -124,19 +118,14 @@ export function transformEqualPair(
     right: orbitals,
     // rs ≤ pq, so that r is at most the higher orbital of the last pq
     orbitalsNeeded: (last) => Math.floor((Math.sqrt(8 * last + 1) - 1) / 2) + 1,
-    take: (first, width, results, columns) => {
-      for (let r = 0, other = 0; r < columns; r++) {
-        for (let s = 0; s <= r; s++, other++) {
-          const source = (r * columns + s) * width;
-          const start = Math.max(0, other - first);
-          let target = packedPair(first + start, other);
-          for (let k = start; k < width; k++) {
-            result[target] = results[source + k];
-            target += first + k + 1;
-          }
-        }
-      }
-    },
+    take: (first, width, results) =>
+      turnRoundInto(
+        result,
+        results,
+        width,
+        (k) => packedPair(first + k, 0),
+        (k) => first + k + 1,
+      ),
   });
   return result;
 }
@@ -146,7 +135,6 @@ export function transformOtherPair(
   halfTransformed: HalfTransformed,
   orbitals: Float64Array,
   n: number,
-  m: number,
 ): Float64Array {
   const orbitalPairs = halfTransformed.count;
   const result = new Float64Array(orbitalPairs ** 2);
@@ -155,16 +143,42 @@ export function transformOtherPair(
     n,
     left: orbitals,
     right: orbitals,
-    take: (first, width, results) => {
-      for (let r = 0, other = first * orbitalPairs; r < m; r++) {
-        for (let s = 0; s <= r; s++, other++) {
-          const source = (r * m + s) * width;
-          for (let k = 0; k < width; k++) result[other + k * orbitalPairs] = results[source + k];
-        }
-      }
-    },
+    take: (first, width, results) =>
+      turnRoundInto(
+        result,
+        results,
+        width,
+        (k) => (first + k) * orbitalPairs,
+        () => orbitalPairs,
+      ),
   });
   return result;
+}
+
+/** Columns that are turned into rows together: the numbers of one line of the cache. */
+const TOGETHER = 8;
+
+/** target[start(k) + i] ← results[i·width + k], for i below length(k), which never falls from one k to the next. */
+function turnRoundInto(
+  target: Float64Array,
+  results: Float64Array,
+  width: number,
+  start: (k: number) => number,
+  length: (k: number) => number,
+): void {
+  for (let first = 0; first < width; first += TOGETHER) {
+    const end = Math.min(first + TOGETHER, width);
+    const starts = Array.from({ length: end - first }, (_, j) => start(first + j));
+    const common = length(first);
+    for (let i = 0; i < common; i++) {
+      const source = i * width + first;
+      for (let j = 0; j < starts.length; j++) target[starts[j] + i] = results[source + j];
+    }
+    for (let k = first + 1; k < end; k++) {
+      const row = start(k);
+      for (let i = common; i < length(k); i++) target[row + i] = results[i * width + k];
+    }
+  }
 }
 
 /** Σ_f C_f C_fᵀ over n functions. */

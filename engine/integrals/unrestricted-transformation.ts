@@ -40,7 +40,7 @@ export function transformToSpinOrbitals(input: UnrestrictedTransformationInput):
   const [alpha, beta] = orbitals;
   const [alphaPairs, mixed] = transformFirstPair(repulsion, alpha, n, active, (half) => [
     transformEqualPair(half, alpha, n),
-    transformOtherPair(half, beta, n, active),
+    transformOtherPair(half, beta, n),
   ]);
   return {
     orbitalCount: active,

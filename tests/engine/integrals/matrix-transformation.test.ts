@@ -24,14 +24,15 @@ function transformed(
     ...orbitals,
     matrices: { ...rowsOfPacked(triangle, pairsOf(n)), count },
     n,
-    take: (first, width, results, columns) => {
-      const length = orbitals.right.length / n;
-      for (let p = 0; p < orbitals.left.length / n; p++) {
-        for (let q = 0; q < columns; q++) {
-          // of LᵀML the upper triangle is not promised, nor what was said not to be needed
-          if (orbitals.left === orbitals.right && (q > p || p >= columns)) continue;
+    take: (first, width, results) => {
+      const columns = orbitals.right.length / n;
+      const isSymmetric = orbitals.left === orbitals.right;
+      const rows = orbitals.orbitalsNeeded?.(first + width - 1) ?? orbitals.left.length / n;
+      for (let p = 0; p < rows; p++) {
+        for (let q = 0; q < (isSymmetric ? p + 1 : columns); q++) {
+          const source = isSymmetric ? packedPair(p, q) : p * columns + q;
           for (let k = 0; k < width; k++) {
-            all[(first + k) * size + p * length + q] = results[(p * columns + q) * width + k];
+            all[(first + k) * size + p * columns + q] = results[source * width + k];
           }
         }
       }
