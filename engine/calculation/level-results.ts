@@ -384,6 +384,7 @@ function activeBlock(
   matrix: Float64Array,
   { integrals: { orbitalCount: size }, orbitalCount, frozen }: OrbitalRange,
 ): Float64Array {
+  if (size === orbitalCount) return matrix;
   const block = new Float64Array(size * size);
   for (let p = 0; p < size; p++) {
     const start = (p + frozen) * orbitalCount + frozen;

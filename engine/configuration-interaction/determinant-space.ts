@@ -33,10 +33,33 @@ export function rowLength(rows: Rows, string: number): number {
   return rows.start[string + 1] - rows.start[string];
 }
 
+/** Spaces of no more determinants are kept for the next point of a scan, a few of them. */
+const SMALL_SPACE = 1000;
+const MOST_KEPT = 8;
+const kept = new Map<string, DeterminantSpace>();
+
 /**
  * @param rankLimit - highest excitation rank; Infinity for full CI
+ * @returns the same for the same numbers, where it is small
  */
 export function buildDeterminantSpace(
+  orbitalCount: number,
+  alphaElectrons: number,
+  betaElectrons: number,
+  rankLimit: number,
+): DeterminantSpace {
+  const key = `${orbitalCount} ${alphaElectrons} ${betaElectrons} ${rankLimit}`;
+  const known = kept.get(key);
+  if (known) return known;
+  const space = layOut(orbitalCount, alphaElectrons, betaElectrons, rankLimit);
+  if (space.dimension <= SMALL_SPACE) {
+    if (kept.size >= MOST_KEPT) kept.clear();
+    kept.set(key, space);
+  }
+  return space;
+}
+
+function layOut(
   orbitalCount: number,
   alphaElectrons: number,
   betaElectrons: number,

@@ -76,6 +76,7 @@ export function padDensity(
   occupation: number,
 ): Float64Array {
   const n = Math.sqrt(density.length);
+  if (n === m) return density;
   const padded = new Float64Array(m * m);
   for (let i = 0; i < frozen; i++) padded[i * m + i] = occupation;
   for (let p = 0; p < n; p++) {
