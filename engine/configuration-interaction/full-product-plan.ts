@@ -5,12 +5,13 @@ import {
   type SameSpinIntegrals,
 } from '../integrals/orbital-integrals';
 import { type KernelMemory, placeInt32 } from '../kernels/kernel-memory';
+import { occupiedOrbitals } from './determinants';
 import type { PlannedProduct } from './fast-product';
 import { layRowTasks, type RowTasks } from './row-tasks';
 import { NEGLIGIBLE_FACTOR } from './same-spin';
 import type { Sector } from './sector';
 import { findFamilies } from './string-families';
-import type { StringSpace } from './string-space';
+import { type StringSpace, stringAt } from './string-space';
 
 /*
  * What engine/kernels/assembly/full-product.ts works on: families of strings and integrals in a kernel memory, once
@@ -39,6 +40,8 @@ export interface FullProductLists extends RowTasks {
   readonly columnSingles: number;
   readonly alpha: SameSpinLists;
   readonly beta: SameSpinLists;
+  /** of every beta string */
+  readonly rowOrbitals: number;
   /** integrals of alpha with beta electrons */
   readonly mixed: number;
 }
@@ -64,11 +67,18 @@ export function layFullProductLists(
   return {
     memory,
     width,
-    ...layRowTasks(memory, betaClasses, true, space.betaReplacements, pairIrreps, rowsAtOnce),
+    ...layRowTasks(memory, betaClasses, true, space.betaReplacements, pairIrreps, {
+      rowsAtOnce,
+      isMoving: true,
+    }),
     columnTaskCount: Math.ceil(alpha.count / width),
     columnSingles: layFamilies(memory, alpha, 1, width),
     alpha: alphaLists,
     beta: isSame ? alphaLists : laySameSpin(memory, beta, betaPart(integrals), width),
+    rowOrbitals: placeInt32(
+      memory,
+      Array.from({ length: beta.count }, (_, string) => occupiedOrbitals(stringAt(beta, string))).flat(),
+    ),
     mixed: layMixed(memory, integrals),
   };
 }
@@ -80,7 +90,7 @@ export function layFullProductPlan(
 ): number {
   const { memory } = lists;
   const packedBytes = 8 * lists.width * Math.max(space.alpha.count, space.beta.count);
-  const scratchBytes = THREAD_BYTES + 24 * space.orbitalCount ** 2 + 2 * packedBytes;
+  const scratchBytes = THREAD_BYTES + 24 * lists.width * space.orbitalCount ** 2 + 2 * packedBytes;
   const scratch = memory.float64((threads * scratchBytes) / 8);
   return placeInt32(memory, [
     space.beta.count,
@@ -96,6 +106,8 @@ export function layFullProductPlan(
     lists.alpha.factors,
     lists.beta.doubles,
     lists.beta.factors,
+    lists.rowOrbitals,
+    space.beta.electrons,
     lists.rowTaskCount,
     lists.rowTasks,
     lists.groups,

@@ -68,7 +68,7 @@ export function layProductLists(
     alpha: alphaAddress,
     beta: betaAddress,
     ...layIntegrals(memory, integrals),
-    ...layRowTasks(memory, beta, isWhole, space.betaReplacements, pairIrreps, ROWS_AT_ONCE),
+    ...layRowTasks(memory, beta, isWhole, space.betaReplacements, pairIrreps, { rowsAtOnce: ROWS_AT_ONCE }),
     columnTasks: placeInt32(memory, columnTasks.flat()),
     columnTaskCount: columnTasks.length,
     mostStrings: Math.max(...[...alpha.members, ...beta.members].map((members) => members.length)),

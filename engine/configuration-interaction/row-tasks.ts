@@ -36,14 +36,17 @@ export function cutTasks(classes: StringClasses, isWhole: boolean, most: number)
   return tasks;
 }
 
-/** The beta strings in blocks, with the replacements that lead to them grouped by the pair of orbitals. */
+/**
+ * The beta strings in blocks, with the replacements that lead to them grouped by the pair of orbitals; those that leave
+ * every electron where it is are left out if `isMoving`.
+ */
 export function layRowTasks(
   memory: KernelMemory,
   classes: StringClasses,
   isWhole: boolean,
   replacements: SingleReplacements,
   pairIrreps: Uint8Array,
-  rowsAtOnce: number,
+  { rowsAtOnce, isMoving = false }: { readonly rowsAtOnce: number; readonly isMoving?: boolean },
 ): RowTasks {
   const { strings, members, places } = classes;
   const n = strings.orbitalCount;
@@ -61,6 +64,7 @@ export function layRowTasks(
       for (let entry = replacements.byStringStart[string]; entry < end; entry++) {
         const pair = replacements.pair[entry];
         const [p, q] = [Math.trunc(pair / n), pair % n];
+        if (isMoving && p === q) continue;
         const change = isWhole ? 0 : rankChange(strings, p, q);
         const key = 3 * packedPair(p, q) + change + 1;
         let group = byGroup.get(key);

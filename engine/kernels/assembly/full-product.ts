@@ -43,10 +43,13 @@ class Plan {
   columnFactors: usize;
   rowDoubles: usize;
   rowFactors: usize;
+  /** i32[electrons] for every row: its orbitals */
+  rowOrbitals: usize;
+  rowElectrons: i32;
   rowTaskCount: i32;
   /** i32[6] each, of which the last four matter here: first, count, first group, end of groups */
   rowTasks: usize;
-  /** i32[5] each: pair of orbitals, two that do not matter here, first entry, count */
+  /** i32[5] each: pair of different orbitals, two that do not matter here, first entry, count */
   groups: usize;
   entrySource: usize;
   /** target row, counted from the first of the task */
@@ -77,7 +80,7 @@ function usedWidth(present: i32): i32 {
 // @ts-ignore: decorator
 @inline
 function packedPlace(plan: Plan, scratch: usize): usize {
-  return scratch + FACTORS + 24 * <usize>(plan.orbitals * plan.orbitals);
+  return scratch + FACTORS + 24 * <usize>(plan.orbitals * plan.orbitals * plan.width);
 }
 
 // @ts-ignore: decorator
@@ -86,7 +89,7 @@ function number(address: usize, index: i32): i32 {
   return load<i32>(address + ((<usize>index) << 2));
 }
 
-/** The beta electrons of a block of rows: alpha ones beside them among themselves, then both together. */
+/** A block of rows: the alpha electrons among themselves and beside beta ones that stay, then with beta ones that move. */
 export function rowTask(address: usize, task: i32, thread: i32): void {
   const plan = changetype<Plan>(address);
   // below the diagonal the last rows are the longest: they go first, so that threads end together
@@ -125,11 +128,15 @@ function amongColumns(plan: Plan, scratch: usize, firstRow: i32, present: i32, c
   const used = usedWidth(present);
   packRows(packed, stretch, used, scratch, scratch + SIGNS, present, plan.columns);
   memory.fill(sums, 0, <usize>columns * stretch);
-  addFamilies(plan.columnDoubles, plan.columnFactors, 0, <u32>(<usize>columns * stretch), packed, sums, used);
+  const end = <u32>(<usize>columns * stretch);
+  addFamilies(plan.columnDoubles, plan.columnFactors, 0, end, packed, sums, used);
+  const factors = scratch + FACTORS;
+  factorsOfRows(plan, firstRow, present, factors);
+  addFamiliesOfRows(plan.columnSingles, factors, width, end, packed, sums, used);
   unpackRows(false, sums, stretch, scratch + TARGETS, present, columns);
 }
 
-/** Adds what replacements of one pair of orbitals among the rows, in both directions, bring with all among the columns. */
+/** Adds what replacements of one pair of different orbitals among the rows, in both directions, bring with all among the columns. */
 function rowsWithColumns(plan: Plan, scratch: usize, group: usize, firstRow: i32, columns: i32): void {
   const pair = number(group, 0);
   const factors = scratch + FACTORS;
@@ -210,6 +217,83 @@ function signedFactors(plan: Plan, pair: i32, factors: usize): void {
         store<f64>(at + 2 * size, value);
       }
       from += 8;
+    }
+  }
+}
+
+/**
+ * The same for beta electrons that stay where they are, those of a row together: Σ (pp|rs) over its orbitals p. For every
+ * r and s a stretch, with a number for each of so many rows.
+ */
+function factorsOfRows(plan: Plan, firstRow: i32, present: i32, factors: usize): void {
+  const n = plan.orbitals;
+  const electrons = plan.rowElectrons;
+  const stretch = (<usize>plan.width) << 3;
+  const size = <usize>(n * n) * stretch;
+  const pairBytes = (<usize>((n * (n + 1)) >> 1)) << 3;
+  let from = plan.mixed;
+  for (let r = 0; r < n; r++) {
+    for (let s = 0; s <= r; s++) {
+      const ofRow = factors + <usize>(r * n + s) * stretch;
+      const ofColumn = factors + <usize>(s * n + r) * stretch;
+      for (let k = 0; k < plan.width; k++) {
+        let value: f64 = 0;
+        if (k < present) {
+          for (let i = 0; i < electrons; i++) {
+            const p = number(plan.rowOrbitals, (firstRow + k) * electrons + i);
+            value += load<f64>(from + <usize>((p * (p + 3)) >> 1) * pairBytes);
+          }
+        }
+        if ((r + s) & 1) value = -value;
+        const place = (<usize>k) << 3;
+        for (let copy = 0; copy < 3; copy++) {
+          const shift = <usize>copy * size + place;
+          store<f64>(ofRow + shift, copy == 1 ? -value : value);
+          store<f64>(ofColumn + shift, copy == 1 ? -value : value);
+        }
+      }
+      from += 8;
+    }
+  }
+}
+
+/** As `addFamilies` from the first string on, where every number of a stretch has factors of its own. */
+function addFamiliesOfRows(
+  address: usize,
+  factors: usize,
+  width: i32,
+  end: u32,
+  packed: usize,
+  sums: usize,
+  used: i32,
+): void {
+  const families = changetype<Families>(address);
+  const bytes = <usize>families.members * 12;
+  const familiesEnd = families.entries + <usize>families.count * bytes;
+  const columns = (<usize>used) << 3;
+  for (let first = families.entries; first < familiesEnd; first += bytes) {
+    const last = first + bytes;
+    for (let target = first; target < last && load<u32>(target, 8) < end; target += 12) {
+      const row = factors + <usize>load<u32>(target) * <usize>width;
+      const to = sums + <usize>load<u32>(target, 8);
+      for (let column: usize = 0; column < columns; column += 8 * ACROSS) {
+        let a0 = v128.load(to + column);
+        let a1 = v128.load(to + column, 16);
+        let a2 = v128.load(to + column, 32);
+        let a3 = v128.load(to + column, 48);
+        for (let entry = first; entry < last; entry += 12) {
+          const x = row + <usize>load<u32>(entry, 4) * <usize>width + column;
+          const source = packed + <usize>load<u32>(entry, 8) + column;
+          a0 = f64x2.add(a0, f64x2.mul(v128.load(x), v128.load(source)));
+          a1 = f64x2.add(a1, f64x2.mul(v128.load(x, 16), v128.load(source, 16)));
+          a2 = f64x2.add(a2, f64x2.mul(v128.load(x, 32), v128.load(source, 32)));
+          a3 = f64x2.add(a3, f64x2.mul(v128.load(x, 48), v128.load(source, 48)));
+        }
+        v128.store(to + column, a0);
+        v128.store(to + column, a1, 16);
+        v128.store(to + column, a2, 32);
+        v128.store(to + column, a3, 48);
+      }
     }
   }
 }
