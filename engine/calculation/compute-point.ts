@@ -176,8 +176,10 @@ function correlationInput(
     dipole: dipole.map((matrix) => transformOneElectron(matrix, coefficients, n, m)),
     nuclearDipole: nuclearDipole(molecule),
     chargesOf: (density) => chargesOf([overFunctions(density)]),
-    partsOf: (energy, [alpha, beta]) =>
-      energyParts(energy, [overFunctions(alpha), overFunctions(beta)], integrals),
+    partsOf: (energy, [alpha, beta]) => {
+      const ofAlpha = overFunctions(alpha);
+      return energyParts(energy, [ofAlpha, alpha === beta ? ofAlpha : overFunctions(beta)], integrals);
+    },
     ...(describesStates &&
       wantsNaturalOrbitals(prepared) && {
         naturalOrbitalsOf: (density) =>

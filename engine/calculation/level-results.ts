@@ -1,7 +1,12 @@
 import type { CorrelationParts } from '../configuration-interaction/correlation-parts';
 import type { ConfigurationInteractionState } from '../configuration-interaction/describe-state';
-import { padDensity, type SpinDensities } from '../configuration-interaction/one-particle-density';
-import { solveSingles } from '../configuration-interaction/singles';
+import {
+  naturalOrbitals,
+  padDensity,
+  type SpinDensities,
+} from '../configuration-interaction/one-particle-density';
+import { type SinglesSolution, solveSingles } from '../configuration-interaction/singles';
+import { singlesDensity } from '../configuration-interaction/singles-density';
 import { sizeCorrections } from '../configuration-interaction/size-corrections';
 import { solveConfigurationInteraction } from '../configuration-interaction/solve';
 import { unpairedElectrons } from '../configuration-interaction/unpaired-electrons';
@@ -37,6 +42,7 @@ import type {
   NaturalOrbitals,
   PerturbationResult,
   SinglesResult,
+  SinglesState,
 } from './result';
 
 /** What configuration interaction is built on. */
@@ -192,7 +198,26 @@ export function computeSingles(input: CorrelationInput): SinglesResult {
         to: to + frozen,
         weight,
       })),
+      ...(input.wantsParts && singlesDescription(state, input)),
     })),
+  };
+}
+
+/** What the density of a state says of it; the orbitals are those of RHF and not relaxed. */
+function singlesDescription(
+  { energy, amplitudes }: SinglesSolution,
+  input: CorrelationInput,
+): Pick<SinglesState, 'naturalOccupations' | 'unpairedElectrons' | 'dipole' | 'energyParts'> {
+  const { integrals, frozen, dipole, nuclearDipole: nuclear } = input;
+  const active = singlesDensity(amplitudes, input.activeElectrons[0], integrals.orbitalCount);
+  const occupations = Array.from(naturalOrbitals(active, integrals.orbitalCount).values);
+  const density = overAllOrbitals(active, input);
+  const half = density.map((value) => value / 2);
+  return {
+    naturalOccupations: [...Array.from({ length: frozen }, () => 2), ...occupations],
+    unpairedElectrons: unpairedElectrons(occupations),
+    dipole: vector((axis) => nuclear[axis] - dot(density, dipole[axis])),
+    energyParts: input.partsOf(energy, [half, half]),
   };
 }
 

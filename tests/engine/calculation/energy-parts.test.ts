@@ -4,7 +4,16 @@ import { placeBasis } from '../../../engine/basis/place-basis';
 import { type EnergyParts, energyParts } from '../../../engine/calculation/energy-parts';
 import { molecularIntegrals } from '../../../engine/calculation/molecular-integrals';
 import { transformToOrbitals } from '../../../engine/integrals/orbital-transformation';
-import { atom, compute, correlated, hartreeFock, prepare, study, waterAtoms } from '../../support/studies';
+import {
+  atom,
+  compute,
+  correlated,
+  hartreeFock,
+  prepare,
+  singles,
+  study,
+  waterAtoms,
+} from '../../support/studies';
 
 function total(parts: EnergyParts): number {
   return parts.kinetic + parts.nuclearAttraction + parts.electronRepulsion + parts.nuclearRepulsion;
@@ -210,5 +219,36 @@ describe('transitions of CI states', () => {
       expect(Math.abs(state.oscillatorStrength! - turned[k + 1].oscillatorStrength!)).toBeLessThan(1e-9);
     });
     expect(Math.max(...home.slice(1).map((state) => state.oscillatorStrength!))).toBeGreaterThan(1e-3);
+  });
+
+  it('identity: the triplet of H2 in a minimal basis is one excitation, so that CIS has the parts of full CI', () => {
+    const atoms = [atom('H'), atom('H', 0, 0, 1.7)];
+    const [state] = singles(compute(study(atoms, { levels: ['CIS'] }))).states;
+    const molecule = { unit: 'bohr', atoms, multiplicity: 3 } as const;
+    const exact = correlated(compute({ ...study(atoms, { levels: ['FCI'] }), molecule }));
+    expect(state!.spin).toBe('triplet');
+    expect(state!.naturalOccupations).toEqual(exact.naturalOccupations.map((n) => expect.closeTo(n, 9)));
+    expect(state!.unpairedElectrons!.linear).toBeCloseTo(2, 9);
+    for (const part of [
+      'kinetic',
+      'nuclearAttraction',
+      'coulomb',
+      'electronRepulsion',
+      'virialRatio',
+    ] as const) {
+      expect(state!.energyParts![part], part).toBeCloseTo(exact.energyParts![part], 8);
+    }
+    expect(total(state!.energyParts!)).toBeCloseTo(state!.energy, 9);
+  });
+
+  it('identity: states of CIS keep their frozen cores, and their dipoles do not depend on the origin', () => {
+    const along = (shift: number) => [atom('Li', 0, 0, shift), atom('H', 0, 0, 3 + shift)];
+    const at = (shift: number) =>
+      singles(compute(study(along(shift), { levels: ['CIS'], frozenCore: true, states: 2 }))).states;
+    for (const [k, state] of at(0).entries()) {
+      expect(state.naturalOccupations![0]).toBe(2);
+      expect(state.naturalOccupations!.reduce((sum, n) => sum + n, 0)).toBeCloseTo(4, 9);
+      expect(at(5)[k]!.dipole![2]).toBeCloseTo(state.dipole![2], 6);
+    }
   });
 });

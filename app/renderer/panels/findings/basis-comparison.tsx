@@ -104,7 +104,8 @@ function LimitNote({ limit }: { readonly limit: BasisSetLimit }) {
   return (
     <p className="hint">
       The limit is extrapolated from {limit.members.map(({ name }) => name).join(', ')}, Hartree–Fock and
-      correlation each by itself; its uncertainty is the spread between formulas.
+      correlation each by itself; its uncertainty covers the spread between formulas and a fair part of what
+      extrapolation added.
     </p>
   );
 }

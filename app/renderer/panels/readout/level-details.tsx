@@ -4,19 +4,20 @@ import type {
   HartreeFockResult,
   LevelResult,
   PerturbationResult,
-  SinglesResult,
 } from '#engine';
 import { stateName } from '../../../study/state-name';
 import { LevelSwatch } from '../../charts/level-swatch';
 import { numbered } from '../../numbered';
 import { formatFixed, formatScientific } from '../../numbers';
 import { ENERGY_UNITS, type EnergyUnit, toEnergyUnit } from '../../units';
-import { type Fact, Facts } from '../facts';
+import { Facts } from '../facts';
 import { energyText } from '../findings/shown-units';
 import { CorrelationPartsTables } from './correlation-parts';
 import { describeDeterminant } from './describe-determinant';
 import { describeTermination } from './describe-termination';
 import { LeadingConfigurations } from './leading-configurations';
+import { SinglesStates } from './singles-states';
+import { dipoleFact, EnergyPartsList, NumberList, unpairedFact, virialFact } from './state-facts';
 
 interface LevelDetailsProps {
   readonly level: string;
@@ -37,65 +38,6 @@ export function LevelDetails({ level, result, energyUnit }: LevelDetailsProps) {
       {result.kind === 'singles' && <SinglesStates result={result} unit={energyUnit} />}
       {result.kind === 'correlated' && <CorrelatedFacts result={result} unit={energyUnit} />}
     </details>
-  );
-}
-
-function dipoleFact([x, y, z]: readonly [number, number, number]): Fact {
-  const size = formatFixed(Math.hypot(x, y, z), 5);
-  return [
-    <abbr key="dipole" title="About the origin of the study’s coordinates">
-      Dipole moment, e·a₀
-    </abbr>,
-    `${size}  (${[x, y, z].map((component) => formatFixed(component, 5)).join(', ')})`,
-  ];
-}
-
-function virialFact(parts: HartreeFockResult['energyParts']): Fact {
-  if (parts === undefined) return undefined;
-  return [
-    <abbr key="virial" title="2 for exact wave functions at the minimum of the curve">
-      Virial ratio −V/T
-    </abbr>,
-    formatFixed(parts.virialRatio, 6),
-  ];
-}
-
-/** The parts of the energy, in the order in which they add up. */
-function EnergyPartsList({
-  result,
-  unit,
-}: {
-  readonly result: HartreeFockResult | CorrelatedResult;
-  readonly unit: EnergyUnit;
-}) {
-  const { energyParts: parts } = result;
-  if (parts === undefined) return null;
-  const undivided = result.kind === 'hartreeFock' ? 'Exchange' : 'Exchange and correlation';
-  return (
-    <Facts
-      facts={[
-        ['Kinetic energy', energyText(parts.kinetic, unit)],
-        ['Nuclear attraction', energyText(parts.nuclearAttraction, unit)],
-        ['Coulomb', energyText(parts.coulomb, unit)],
-        ...(parts.exchange !== undefined && parts.correlation !== undefined
-          ? ([
-              ['Exchange', energyText(parts.exchange, unit)],
-              result.kind === 'hartreeFock'
-                ? undefined
-                : [
-                    <abbr
-                      key="correlation"
-                      title="Of the repulsion alone: what no one-particle density gives"
-                    >
-                      Correlation of the repulsion
-                    </abbr>,
-                    energyText(parts.correlation, unit),
-                  ],
-            ] satisfies Fact[])
-          : ([[undivided, energyText(parts.exchangeCorrelation, unit)]] satisfies Fact[])),
-        ['Nuclear repulsion', energyText(parts.nuclearRepulsion, unit)],
-      ]}
-    />
   );
 }
 
@@ -126,7 +68,7 @@ function HartreeFockFacts({
           ],
         ]}
       />
-      <EnergyPartsList result={result} unit={unit} />
+      <EnergyPartsList parts={result.energyParts} isDeterminant unit={unit} />
       {orbitalSets(result).map(({ name, energies, labels }) => (
         <NumberList
           key={name}
@@ -172,61 +114,6 @@ function PerturbationFacts({
   );
 }
 
-/** Numbers counted from 0, as the results file counts them. */
-function NumberList({ name, values }: { readonly name: string; readonly values: readonly string[] }) {
-  return (
-    <div className="numberList">
-      <h3>{name}</h3>
-      <ol start={0}>
-        {numbered(values).map(({ number, item: value }) => (
-          <li key={number}>
-            <span className="ordinal">{number}</span> {value}
-          </li>
-        ))}
-      </ol>
-    </div>
-  );
-}
-
-function SinglesStates({ result, unit }: { readonly result: SinglesResult; readonly unit: EnergyUnit }) {
-  const { symbol, decimals } = ENERGY_UNITS[unit];
-  return (
-    <table className="numbers">
-      <thead>
-        <tr>
-          <th scope="col">State</th>
-          <th scope="col">Energy, {symbol}</th>
-          <th scope="col">
-            <abbr title="Above the RHF energy">Excitation</abbr>
-          </th>
-          <th scope="col">
-            <abbr title="Oscillator strength, length form">f</abbr>
-          </th>
-          <th scope="col">Leading</th>
-        </tr>
-      </thead>
-      <tbody>
-        {numbered(result.states).map(({ number, item: state }) => (
-          <tr key={number}>
-            <th scope="row">
-              {number + 1} {stateName(state.spin, state.symmetry)}
-            </th>
-            <td>{formatFixed(toEnergyUnit(state.energy, unit), decimals)}</td>
-            <td>{formatFixed(toEnergyUnit(state.excitation, unit), Math.min(decimals, 6))}</td>
-            <td>{formatFixed(state.oscillatorStrength, 4)}</td>
-            <td className="words">
-              {state.leading
-                .slice(0, 2)
-                .map(({ from, to, weight }) => `${from} → ${to} (${formatFixed(weight, 2)})`)
-                .join(', ')}
-            </td>
-          </tr>
-        ))}
-      </tbody>
-    </table>
-  );
-}
-
 function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; readonly unit: EnergyUnit }) {
   const [ground] = result.states;
   return (
@@ -239,15 +126,7 @@ function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; 
           ground && ['Residual, Eₕ', formatScientific(ground.residual)],
           dipoleFact(result.dipole),
           virialFact(result.energyParts),
-          result.unpairedElectrons && [
-            <abbr
-              key="unpaired"
-              title={`Σ min(n, 2 − n) over natural occupations (Head-Gordon 2003); Σ n(2 − n) gives ${formatFixed(result.unpairedElectrons.quadratic, 4)}, Σ n²(2 − n)² ${formatFixed(result.unpairedElectrons.quartic, 4)}`}
-            >
-              Effectively unpaired electrons
-            </abbr>,
-            formatFixed(result.unpairedElectrons.linear, 4),
-          ],
+          unpairedFact(result.unpairedElectrons),
           result.davidsonCorrected === undefined
             ? undefined
             : [
@@ -265,7 +144,7 @@ function CorrelatedFacts({ result, unit }: { readonly result: CorrelatedResult; 
         name="Natural occupations"
         values={result.naturalOccupations.map((occupation) => formatFixed(occupation, 5))}
       />
-      <EnergyPartsList result={result} unit={unit} />
+      <EnergyPartsList parts={result.energyParts} unit={unit} />
       {result.sizeCorrections && <SizeCorrectionsList corrections={result.sizeCorrections} unit={unit} />}
       {result.correlationParts && <CorrelationPartsTables parts={result.correlationParts} unit={unit} />}
       {ground !== undefined && <LeadingDeterminants state={ground} />}
