@@ -83,10 +83,15 @@ export function layClosedShellIntegrals(
       });
       return block;
     });
+  const pairsOfExcitations = excitations.map((list) => Int32Array.from(list, ([j, b]) => pairs[j * n + b]));
   /** (xy|jb) of two orbitals of one class */
-  const withSingle = (orbitals: OrbitalClass) =>
+  const withSingle = ({ orbitals, start }: OrbitalClass) =>
     byIrrep((ofX) =>
-      byIrrep((ofY) => layWithSingle(memory, orbitals, ofX, ofY, excitations[ofX ^ ofY], repulsion)),
+      byIrrep((ofY) => {
+        const [first, second] = [ofX, ofY].map((irrep) => orbitals.slice(start[irrep], start[irrep + 1]));
+        const xyPairs = Int32Array.from(first.flatMap((x) => second.map((y) => pairs[x * n + y])));
+        return layWithSingle(memory, xyPairs, pairsOfExcitations[ofX ^ ofY], twoElectron);
+      }),
     );
 
   const pairLists = (orbitals: OrbitalClass) => ({
@@ -146,23 +151,20 @@ function excitationsOf(holes: OrbitalClass, particles: OrbitalClass, irrep: numb
   });
 }
 
+/** (xy|jb), by pairs: [x][y] a row each, the jb of a list. */
 function layWithSingle(
   memory: KernelMemory,
-  { orbitals, start }: OrbitalClass,
-  ofX: number,
-  ofY: number,
-  excitations: readonly (readonly [number, number])[],
-  repulsion: Repulsion,
+  xyPairs: Int32Array,
+  jbPairs: Int32Array,
+  twoElectron: Float64Array,
 ): Numbers {
-  const [ofFirst, ofSecond] = [ofX, ofY].map((irrep) => orbitals.slice(start[irrep], start[irrep + 1]));
-  const block = memory.float64(ofFirst.length * ofSecond.length * excitations.length);
+  const { address, view } = memory.float64(xyPairs.length * jbPairs.length);
   let place = 0;
-  for (const x of ofFirst) {
-    for (const y of ofSecond) {
-      for (const [j, b] of excitations) block.view[place++] = repulsion(x, y, j, b);
-    }
+  for (let row = 0; row < xyPairs.length; row++) {
+    const xy = xyPairs[row];
+    for (let k = 0; k < jbPairs.length; k++) view[place++] = twoElectron[packedPair(xy, jbPairs[k])];
   }
-  return block;
+  return { address, view };
 }
 
 /** (xz|yw) ± (xw|yz) among the pairs xy and zw of each representation; those of equal orbitals, of row or column, halved. */

@@ -5,10 +5,10 @@ import {
   type SameSpinIntegrals,
 } from '../integrals/orbital-integrals';
 import { type DeterminantSpace, rowLength } from './determinant-space';
-import { lowestBit, occupiedOrbitals } from './determinants';
+import { lowestBit } from './determinants';
 import { mixedRepulsion } from './matrix-elements';
 import { stringEnergy } from './same-spin';
-import { type StringSpace, stringAt } from './string-space';
+import type { StringSpace } from './string-space';
 
 /**
  * ⟨D|H|D⟩ averaged over all ways to give the open shells of D their spins (M fixed), for every determinant of the
@@ -35,11 +35,14 @@ export function spinAveragedDiagonal(space: DeterminantSpace, integrals: Orbital
   const openBeta = new Int32Array(n);
   const diagonal = new Float64Array(space.dimension);
 
-  const { words, electrons } = space.alpha;
+  const { words } = space.alpha;
+  const { electrons } = alpha;
   for (let b = 0; b < space.beta.count; b++) {
     for (let p = 0; p < n; p++) {
       let sum = 0;
-      for (const j of beta.occupied[b]) sum += coulomb[p * n + j];
+      for (let k = b * beta.electrons; k < (b + 1) * beta.electrons; k++) {
+        sum += coulomb[p * n + beta.orbitals[k]];
+      }
       betaCoulomb[p] = sum;
     }
     const start = space.rows.start[b];
@@ -74,29 +77,39 @@ export function unrestrictedDiagonal(space: DeterminantSpace, integrals: Orbital
   const diagonal = new Float64Array(space.dimension);
   for (let b = 0; b < space.beta.count; b++) {
     for (let p = 0; p < n; p++) {
-      betaCoulomb[p] = beta.occupied[b].reduce((sum, j) => sum + mixedRepulsion(integrals, p, p, j, j), 0);
+      betaCoulomb[p] = occupiedBy(beta, b).reduce((sum, j) => sum + mixedRepulsion(integrals, p, p, j, j), 0);
     }
     const start = space.rows.start[b];
     for (let a = 0; start + a < space.rows.start[b + 1]; a++) {
       let value = integrals.coreEnergy + alpha.energy[a] + beta.energy[b];
-      for (const i of alpha.occupied[a]) value += betaCoulomb[i];
+      for (const i of occupiedBy(alpha, a)) value += betaCoulomb[i];
       diagonal[start + a] = value;
     }
   }
   return diagonal;
 }
 
-/** Occupied orbitals of every string, apart and in one row, and its energy. */
+/** Occupied orbitals of all strings in one row, and the energy of each. */
 function describeStrings(space: StringSpace, integrals: SameSpinIntegrals) {
-  const occupied = Array.from({ length: space.count }, (_, place) =>
-    occupiedOrbitals(stringAt(space, place)),
-  );
-  const orbitals = new Int32Array(space.count * space.electrons);
-  occupied.forEach((ofString, place) => {
-    orbitals.set(ofString, place * space.electrons);
-  });
-  const energy = Float64Array.from(occupied, (ofString) => stringEnergy(ofString, integrals));
-  return { occupied, orbitals, energy };
+  const { count, electrons, words, bits } = space;
+  const orbitals = new Int32Array(count * electrons);
+  const energy = new Float64Array(count);
+  const occupied: number[] = Array(electrons).fill(0);
+  for (let string = 0; string < count; string++) {
+    let place = 0;
+    for (let w = 0; w < words; w++) {
+      for (let rest = bits[string * words + w]; rest !== 0; rest &= rest - 1) {
+        occupied[place++] = 32 * w + lowestBit(rest);
+      }
+    }
+    orbitals.set(occupied, string * electrons);
+    energy[string] = stringEnergy(occupied, integrals);
+  }
+  return { electrons, orbitals, energy };
+}
+
+function occupiedBy({ electrons, orbitals }: ReturnType<typeof describeStrings>, string: number): Int32Array {
+  return orbitals.subarray(string * electrons, (string + 1) * electrons);
 }
 
 /** Equal-spin exchange of the open shells as it is, against its average. */

@@ -1,8 +1,8 @@
 import type { OrbitalIntegrals } from '../integrals/orbital-integrals';
 import { type DeterminantSpace, determinantAt, rowLength } from './determinant-space';
-import { orbitalsOnlyIn, replacementPhase } from './determinants';
+import { occupiedOrbitals, replacementPhase } from './determinants';
 import { hamiltonianElement, mixedRepulsion } from './matrix-elements';
-import { type StringSpace, stringAt } from './string-space';
+import type { StringSpace } from './string-space';
 
 /** E − E(reference) = Σ over single and double excitations I of ⟨0|H|I⟩ c(I)/c(0). */
 export type ProjectedEnergy =
@@ -103,7 +103,7 @@ function projectedParts(
   };
   const reference = determinantAt(space, 0);
   const ofAlpha = excitationsUpToRankTwo(space.alpha);
-  const ofBeta = excitationsUpToRankTwo(space.beta);
+  const ofBeta = space.beta === space.alpha ? ofAlpha : excitationsUpToRankTwo(space.beta);
   ofBeta.forEach((beta, row) => {
     const start = space.rows.start[row];
     const length = Math.min(rowLength(space.rows, row), ofAlpha.length);
@@ -112,10 +112,10 @@ function projectedParts(
       if (alpha.holes.length + beta.holes.length > 2) break;
       const place = start + column;
       if (place === 0 || vector[place] === 0) continue;
-      if (alpha.holes.length === 1 && beta.holes.length === 1) {
+      if (alpha.particle !== undefined && beta.particle !== undefined) {
         const [i, j] = [alpha.holes[0], beta.holes[0]];
         const element =
-          alpha.phase * beta.phase * mixedRepulsion(integrals, i, alpha.particles[0], j, beta.particles[0]);
+          alpha.phase! * beta.phase! * mixedRepulsion(integrals, i, alpha.particle, j, beta.particle);
         const pair = i < j ? i * occupied + j : j * occupied + i;
         parts.oppositeSpin[pair] += (element * vector[place]) / vector[0];
         continue;
@@ -130,21 +130,27 @@ function projectedParts(
   return parts;
 }
 
-/** What a string differs in from the reference: orbitals left and entered, rising; the sign of a single excitation. */
+/** What a string differs in from the reference. */
 interface StringExcitation {
+  /** orbitals left, rising */
   readonly holes: readonly number[];
-  readonly particles: readonly number[];
-  readonly phase: number;
+  /** of a single excitation: the orbital entered, and the sign */
+  readonly particle?: number;
+  readonly phase?: number;
 }
 
 /** Of every string up to rank 2; these stand first. */
 function excitationsUpToRankTwo(strings: StringSpace): StringExcitation[] {
+  const { reference, words, bits } = strings;
   const count = strings.rankStart[Math.min(2, strings.maximumRank) + 1];
+  const only = new Int32Array(words);
   return Array.from({ length: count }, (_, place) => {
-    const holes = orbitalsOnlyIn(strings.reference, stringAt(strings, place));
-    const particles = orbitalsOnlyIn(stringAt(strings, place), strings.reference);
-    const phase = holes.length === 1 ? replacementPhase(strings.reference, holes[0], particles[0]) : 1;
-    return { holes, particles, phase };
+    for (let w = 0; w < words; w++) only[w] = reference[w] & ~bits[place * words + w];
+    const holes = occupiedOrbitals(only);
+    if (holes.length !== 1) return { holes };
+    for (let w = 0; w < words; w++) only[w] = bits[place * words + w] & ~reference[w];
+    const [particle] = occupiedOrbitals(only);
+    return { holes, particle, phase: replacementPhase(reference, holes[0], particle) };
   });
 }
 

@@ -1,5 +1,5 @@
-import { occupiedOrbitals } from './determinants';
-import { type StringSpace, stringAt } from './string-space';
+import { lowestBit } from './determinants';
+import type { StringSpace } from './string-space';
 
 /** Representations have numbers below this. */
 export const IRREPS = 8;
@@ -32,9 +32,16 @@ export function classifyStrings(
 
 /** The product of the representations of the occupied orbitals. */
 export function stringIrreps(strings: StringSpace, orbitalIrreps: readonly number[]): Uint8Array {
-  return Uint8Array.from({ length: strings.count }, (_, string) =>
-    occupiedOrbitals(stringAt(strings, string)).reduce((product, p) => product ^ orbitalIrreps[p], 0),
-  );
+  const { words, bits } = strings;
+  const irreps = new Uint8Array(strings.count);
+  for (let string = 0; string < strings.count; string++) {
+    for (let w = 0; w < words; w++) {
+      for (let rest = bits[string * words + w]; rest !== 0; rest &= rest - 1) {
+        irreps[string] ^= orbitalIrreps[32 * w + lowestBit(rest)];
+      }
+    }
+  }
+  return irreps;
 }
 
 /** How many strings of a representation have a rank of at most so much. */
