@@ -9,6 +9,7 @@ import { prepareFastProduct, prepareFullProduct } from './fast-product';
 import { preparePlainProduct } from './plain-product';
 import { buildSectors, isWholeSpace, putSector, type Sector, takeSector } from './sector';
 import { EXACT_PARITY, makeEvenOrOdd, NEAR_PARITY, spinFlipParity } from './spin-flip';
+import { isTwoElectronSpace, prepareTwoElectronProduct } from './two-electron-product';
 
 /** The product H·c over the determinants of one representation, which H does not join with others. */
 export interface SectorProduct {
@@ -63,6 +64,7 @@ export function prepareHamiltonianProduct(
       : undefined;
   const prepare = (): BareProduct => {
     if (!isFast) return overSectors(space, preparePlainProduct(space, integrals));
+    if (isTwoElectronSpace(space, integrals)) return prepareTwoElectronProduct(space, integrals);
     if (isClosedShellDoubles(space, integrals)) {
       return prepareClosedShellProduct(sectors, integrals, irreps, memory);
     }

@@ -28,10 +28,37 @@ export function coulombExchangeInto(
   coulomb: Float64Array,
   exchange: Float64Array,
 ): void {
+  halfSums(density, repulsion, n, coulomb, exchange);
+  addTransposeInto(coulomb, n, 1);
+  addTransposeInto(exchange, n, 1);
+}
+
+/**
+ * The exchange matrix alone, also of an antisymmetric density.
+ *
+ * @param parity - 1 if the density is symmetric, −1 if antisymmetric
+ */
+export function exchangeInto(
+  density: Float64Array,
+  parity: number,
+  repulsion: Float64Array,
+  n: number,
+  exchange: Float64Array,
+): void {
+  halfSums(density, repulsion, n, new Float64Array(n * n), exchange);
+  addTransposeInto(exchange, n, parity);
+}
+
+/** What each integral (ij|kl) gives, without its equal (kl|ij), which gives the transposes. */
+function halfSums(
+  density: Float64Array,
+  repulsion: Float64Array,
+  n: number,
+  coulomb: Float64Array,
+  exchange: Float64Array,
+): void {
   if (n >= FEWEST_FAST && kernelForm() === 'fast') fastSums(density, repulsion, n, coulomb, exchange);
   else plainSums(density, repulsion, n, coulomb, exchange);
-  addTransposeInto(coulomb, n);
-  addTransposeInto(exchange, n);
 }
 
 /** Rows of pairs in pieces of many, each a call of the kernel. */
@@ -117,14 +144,14 @@ function plainSums(
   }
 }
 
-/** A ← A + Aᵀ. */
-function addTransposeInto(matrix: Float64Array, n: number): void {
+/** A ← A + parity·Aᵀ. */
+function addTransposeInto(matrix: Float64Array, n: number, parity: number): void {
   for (let i = 0; i < n; i++) {
-    matrix[i * n + i] *= 2;
+    matrix[i * n + i] *= 1 + parity;
     for (let j = 0; j < i; j++) {
-      const sum = matrix[i * n + j] + matrix[j * n + i];
+      const sum = matrix[i * n + j] + parity * matrix[j * n + i];
       matrix[i * n + j] = sum;
-      matrix[j * n + i] = sum;
+      matrix[j * n + i] = parity * sum;
     }
   }
 }
