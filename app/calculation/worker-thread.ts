@@ -16,12 +16,44 @@ export interface WorkerConnection {
 
 export type StartWorker = (start: WorkerStart) => WorkerConnection;
 
+/** Threads that have read the program, or are about to, and wait for what to compute; they keep no process alive. */
+const ahead = new Set<Worker>();
+
+/** Starts threads for workers to come, so that they read the program while this one reads the study. */
+export function startThreadsAhead(count: number): void {
+  while (ahead.size < count) {
+    const thread = new Worker(WORKER_FILE);
+    thread.unref();
+    ahead.add(thread);
+    // a worker that gets none of these starts a thread of its own, and tells what is wrong with it
+    thread.on('error', () => undefined);
+    thread.once('exit', () => ahead.delete(thread));
+  }
+}
+
+/** Ends those of them that no worker has taken, but for so many. */
+export function endThreadsAhead(left = 0): void {
+  for (const thread of [...ahead].slice(left)) {
+    ahead.delete(thread);
+    void thread.terminate();
+  }
+}
+
+function takeThread(): Worker {
+  const [thread] = ahead;
+  if (!thread) return new Worker(WORKER_FILE);
+  ahead.delete(thread);
+  thread.ref();
+  return thread;
+}
+
 /** Starts a worker as a thread of this process, from the built file. */
 export const startWorkerThread: StartWorker = (start) => startComputing(start, startHelperThread);
 
 /** The same, with helpers of the caller's. */
 export function startComputing(start: WorkerStart, startHelper: StartHelper): WorkerConnection {
-  const thread = new Worker(WORKER_FILE, { workerData: start });
+  const thread = takeThread();
+  thread.postMessage(start);
   let reason: string | undefined;
   let onReply: (reply: WorkerReply) => void = () => undefined;
   let onDeath: (reason: string) => void = () => undefined;

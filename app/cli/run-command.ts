@@ -8,6 +8,8 @@ import { acquireLock } from '../calculation/output-lock';
 import { readStudyFile, type StudyFile } from '../calculation/read-study-file';
 import { type RunOutcome, runStudy } from '../calculation/run-study';
 import { studyKey } from '../calculation/study-key';
+import { endThreadsAhead, startThreadsAhead } from '../calculation/worker-thread';
+import { usualWorkers } from '../calculation/workers';
 import { resultsJson, writeResults } from '../calculation/write-results';
 import type { SerializedError, StudyIssue } from '../contract/requests';
 import { studySentence } from '../study/sentence';
@@ -22,12 +24,16 @@ import { counted, refusalText } from './wording';
 type RunInvocation = Extract<Invocation, { kind: 'run' }>;
 type ReadableStudy = Extract<StudyFile, { ok: true }>;
 
+/** Threads that are started before the study is read: few, as it may have a single point. */
+const MOST_AHEAD = 2;
+
 /** `farwell run`: computes a study, and writes its results or prints them. */
 export async function runCommand(
   invocation: RunInvocation,
   terminal: Terminal,
   signal: AbortSignal,
 ): Promise<ExitCode> {
+  startThreadsAhead(Math.min(invocation.workers ?? usualWorkers(), MOST_AHEAD));
   const file = await readStudyFile(invocation.study);
   if (!file.ok) {
     terminal.say(refusalText(invocation.study, file.issues));
@@ -166,6 +172,7 @@ async function compute(
 ): Promise<RunOutcome> {
   const workers = affordableWorkers(prepared, invocation.workers);
   if (workers.notice) terminal.say(workers.notice);
+  endThreadsAhead(workers.count);
   const cache = invocation.cache ? cacheSettings() : undefined;
   const display = progressDisplay(terminal);
   let outcome: RunOutcome;

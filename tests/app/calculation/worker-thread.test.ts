@@ -2,7 +2,12 @@ import { describe, expect, it } from 'vitest';
 import { prepareStudy } from '#engine';
 import type { WorkerReply, WorkerStart } from '../../../app/calculation/messages';
 import { runStudy } from '../../../app/calculation/run-study';
-import { type StartWorker, startWorkerThread } from '../../../app/calculation/worker-thread';
+import {
+  endThreadsAhead,
+  type StartWorker,
+  startThreadsAhead,
+  startWorkerThread,
+} from '../../../app/calculation/worker-thread';
 import { helium, water } from '../../support/end-to-end-studies';
 import { prepare } from '../../support/studies';
 
@@ -40,6 +45,22 @@ describe('startWorkerThread', () => {
       expect.objectContaining({ kind: 'point', index: 3 }),
       { kind: 'free' },
     ]);
+  });
+
+  it('answers the same from a thread that was started ahead, and ends one that nobody takes', async () => {
+    const answer = async () => {
+      const worker = startWorkerThread({ study });
+      const reply = await new Promise<WorkerReply>((resolve, reject) => {
+        worker.listen({ onReply: resolve, onDeath: reject });
+        worker.post({ kind: 'points', basis: 0, indices: [1] });
+      });
+      worker.end();
+      return { ...reply, seconds: 0 };
+    };
+    startThreadsAhead(2);
+    const ahead = await answer();
+    endThreadsAhead();
+    expect(ahead).toEqual(await answer());
   });
 
   it('says why a request cannot be answered', async () => {
