@@ -1,5 +1,11 @@
 import { placeBasis } from '../basis/place-basis';
-import { countDeterminants, goesByAmplitudes, guessLimit, PROBES } from '../configuration-interaction/size';
+import {
+  countDeterminants,
+  goesByAmplitudes,
+  guessLimit,
+  isTwoElectrons,
+  PROBES,
+} from '../configuration-interaction/size';
 import type { Level } from './levels';
 import type { PreparedStudy } from './prepare-study';
 
@@ -164,9 +170,7 @@ function levelWork(prepared: PreparedStudy, level: Level): Work {
       const determinants = countDeterminants(active, alpha, beta, level.maximumRank);
       const model = Math.min(determinants, MODEL_SPACE);
       const spinsDiffer = study.orbitals === 'unrestricted';
-      const elements = goesByAmplitudes(active, alpha, beta, level.maximumRank, spinsDiffer)
-        ? IN_DENSE_PRODUCT * amplitudeProducts(alpha, active - alpha)
-        : determinants * connections(active, alpha, beta, determinants);
+      const elements = elementsOfProduct(active, [alpha, beta], level.maximumRank, spinsDiffer);
       const product = elements + PRODUCT;
       return {
         ...NONE,
@@ -177,6 +181,21 @@ function levelWork(prepared: PreparedStudy, level: Level): Work {
       };
     }
   }
+}
+
+/** What one product with H takes, in multiplications of a list. */
+function elementsOfProduct(
+  active: number,
+  [alpha, beta]: readonly [number, number],
+  rank: number,
+  spinsDiffer: boolean,
+): number {
+  if (isTwoElectrons(alpha, beta, rank, spinsDiffer)) return (IN_DENSE_PRODUCT * active ** 4) / 4;
+  if (goesByAmplitudes(active, alpha, beta, rank, spinsDiffer)) {
+    return IN_DENSE_PRODUCT * amplitudeProducts(alpha, active - alpha);
+  }
+  const determinants = countDeterminants(active, alpha, beta, rank);
+  return determinants * connections(active, alpha, beta, determinants);
 }
 
 /** Multiplications of one product over the amplitudes of single and double excitations: see `prepareClosedShellProduct`. */

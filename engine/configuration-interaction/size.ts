@@ -95,9 +95,23 @@ export function goesByAmplitudes(
   rankLimit: number,
   spinsDiffer: boolean,
 ): boolean {
+  if (isTwoElectrons(alphaElectrons, betaElectrons, rankLimit, spinsDiffer)) return false;
   const ofOneSpin = highestRank(orbitalCount, alphaElectrons, rankLimit);
   return !spinsDiffer && alphaElectrons === betaElectrons && Math.min(rankLimit, 2 * ofOneSpin) === 2;
 }
+
+/** Full CI of one alpha and one beta electron, whose fast form is `prepareTwoElectronProduct`, over the integrals as they stand. */
+export function isTwoElectrons(
+  alphaElectrons: number,
+  betaElectrons: number,
+  rankLimit: number,
+  spinsDiffer: boolean,
+): boolean {
+  return !spinsDiffer && alphaElectrons === 1 && betaElectrons === 1 && rankLimit >= 2;
+}
+
+/** Matrices over orbitals that `prepareTwoElectronProduct` takes. */
+const TWO_ELECTRON_MATRICES = 10;
 
 /** Numbers in the tables of `prepareClosedShellProduct` and in the room for one product, without symmetry. */
 function amplitudeNumbers(orbitalCount: number, holes: number): number {
@@ -162,15 +176,19 @@ export function listBytes(
   spinsDiffer: boolean,
 ): number {
   const determinants = countDeterminants(orbitalCount, alphaElectrons, betaElectrons, rankLimit);
+  const isFast = kernelForm() === 'fast';
+  const matrix = determinants <= FEW_DETERMINANTS ? 8 * determinants ** 2 : 0;
+  if (isFast && isTwoElectrons(alphaElectrons, betaElectrons, rankLimit, spinsDiffer)) {
+    return matrix + 8 * TWO_ELECTRON_MATRICES * determinants;
+  }
   const spins =
     alphaElectrons === betaElectrons && !spinsDiffer ? [alphaElectrons] : [alphaElectrons, betaElectrons];
   const pairs = (orbitalCount * (orbitalCount + 1)) / 2;
   const byAmplitudes =
-    kernelForm() === 'fast' &&
-    goesByAmplitudes(orbitalCount, alphaElectrons, betaElectrons, rankLimit, spinsDiffer);
+    isFast && goesByAmplitudes(orbitalCount, alphaElectrons, betaElectrons, rankLimit, spinsDiffer);
   // for lists over determinants, integrals stand in the kernels' memory with both signs
-  let bytes = byAmplitudes ? 8 * amplitudeNumbers(orbitalCount, alphaElectrons) : 16 * pairs * pairs;
-  if (determinants <= FEW_DETERMINANTS) bytes += 8 * determinants ** 2;
+  let bytes =
+    matrix + (byAmplitudes ? 8 * amplitudeNumbers(orbitalCount, alphaElectrons) : 16 * pairs * pairs);
   for (const electrons of spins) {
     const virtuals = orbitalCount - electrons;
     const strings = countStrings(orbitalCount, electrons, rankLimit).map(Number);

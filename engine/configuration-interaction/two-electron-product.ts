@@ -4,14 +4,13 @@ import { addScaledInto, multiply } from '../linear-algebra/dense';
 import type { DeterminantSpace } from './determinant-space';
 import type { BareProduct } from './hamiltonian-product';
 import { putSector, takeSector } from './sector';
+import { isTwoElectrons } from './size';
 
-/** Full CI of one alpha and one beta electron in the same orbitals: a determinant for each of every two orbitals. */
 export function isTwoElectronSpace(
   { alpha, beta, maximumRank }: DeterminantSpace,
   integrals: OrbitalIntegrals,
 ): boolean {
-  const isFull = maximumRank === alpha.maximumRank + beta.maximumRank;
-  return isFull && alpha.electrons === 1 && beta.electrons === 1 && !integrals.beta;
+  return isTwoElectrons(alpha.electrons, beta.electrons, maximumRank, integrals.beta !== undefined);
 }
 
 /**

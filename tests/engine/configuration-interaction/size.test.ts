@@ -48,6 +48,13 @@ describe('configurationInteractionBytes', () => {
     expect(configurationInteractionBytes(12, 4, 4, 2, 1)).toBeLessThan(one);
   });
 
+  it('identity: two electrons take a few matrices over orbitals beside the vectors, and no lists', () => {
+    const orbitals = 100;
+    const taken = configurationInteractionBytes(orbitals, 1, 1, FULL, 1);
+    expect(taken).toBe(configurationInteractionBytes(orbitals, 1, 1, 2, 1));
+    expect(taken).toBeLessThan(8 * 80 * orbitals ** 2);
+  });
+
   it('identity: CISD of a closed shell takes its integrals beside the vectors, and no lists of elements', () => {
     const [orbitals, pairs] = [40, 4];
     const particles = orbitals - pairs;
