@@ -183,7 +183,7 @@ function findingsSentences(results: StudyResults, citations: Citations): string 
       excitedStates?.some(({ dissociation }) => dissociation?.kind === 'found'),
     )
       ? [
-          'Limits of excited states are sums of energies of states of the separate fragments by full CI: the n-th state of a spin at the end of the scan has the n-th sum that couples to this spin, provided that it has come within 0.02 hartree of it and of no other nearer, but for the attraction of ions.',
+          'Limits of excited states are sums of energies of states of the separate fragments by full CI, for CIS by CIS and orbital energies of closed shells: the n-th state of a spin at the end of the scan has the n-th sum that couples to this spin, provided that it has come within 0.02 hartree of it and of no other nearer, but for the attraction of ions.',
         ]
       : []),
     ...(isAny(({ counterpoise }) => counterpoise?.kind === 'found')

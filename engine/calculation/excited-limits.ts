@@ -1,29 +1,20 @@
 import { SPIN_NAMES } from '../configuration-interaction/spin';
 import type { Vector3 } from '../molecule/molecule';
 import { type RunControl, UNATTENDED } from '../termination';
-import { type FragmentState, type FragmentStates, fragmentStates } from './fragment-states';
+import { type FragmentStates, fragmentStates } from './fragment-states';
 import type { LevelPoints } from './level-curve';
 import { findLevel } from './levels';
-import { chargeShares, type Parts, partsOf, separateParts } from './parts';
+import { chargeShares, type Parts, partsOf, type SeparateParts, separateParts } from './parts';
 import type { PreparedStudy } from './prepare-study';
+import { couplings, type ProductState } from './product-states';
 import type { Dissociation, Fragment, PointResult } from './result';
+import { closedShellPart, singlesProducts } from './singles-limits';
 import { type CurveOfState, statesOf } from './state-curves';
 
 /** Limits nearer to one another than this are one, hartree. */
 const SAME_LIMIT = 1e-5;
 /** A curve whose end lies further from its limit, but for the attraction of charges, has not reached it, hartree. */
 const FAR_ENOUGH = 0.02;
-
-/** A state of both fragments at infinite distance. */
-interface ProductState {
-  readonly energy: number;
-  /** what the charges of the fragments add at the far end of the scan, hartree */
-  readonly attraction: number;
-  readonly charges: readonly [number, number];
-  readonly states: readonly [FragmentState, FragmentState];
-  /** of each fragment with this charge */
-  readonly lowest: readonly [number, number];
-}
 
 interface Products {
   readonly kind: 'found';
@@ -36,11 +27,11 @@ interface Products {
 type NoProducts = Extract<Dissociation, { readonly kind: 'none' }>;
 
 /**
- * What the curves of a CI level's excited states tend to. At large distance the states of one spin lie in the order of
+ * What the curves of a level's excited states tend to. At large distance the states of one spin lie in the order of
  * the sums of the fragments' energies, each sum as often as their spins and degeneracies allow; the n-th state goes to
  * the n-th sum. As a scan ends before that distance, the end of the curve must also be near that sum, and
  * nearer than to any other, the attraction of charged fragments allowed for. The fragments' states are computed by
- * full CI, when they are first asked for.
+ * full CI, for CIS by RHF and CIS of closed shells, when they are first asked for.
  *
  * @returns undefined where the scan does not part the molecule in two
  */
@@ -82,7 +73,7 @@ function assign(
   const own = state.stateAt(farEnd);
   if (!own) return none('This state is not among those computed at the far end of the range.');
   const multiplicity = SPIN_NAMES.indexOf(own.spin) + 1;
-  const ofSpin = all.filter((product) => couplesTo(product.states, multiplicity));
+  const ofSpin = all.filter(({ multiplicities }) => multiplicities.includes(multiplicity));
   const rank = statesOf(points.all()[farEnd], points.level)
     .filter(({ spin }) => spin === own.spin)
     .indexOf(own);
@@ -115,12 +106,6 @@ function assign(
   };
 }
 
-function couplesTo([one, other]: ProductState['states'], multiplicity: number): boolean {
-  const [a, b] = [one.multiplicity, other.multiplicity];
-  const isOfParity = (a + b - 1 - multiplicity) % 2 === 0;
-  return isOfParity && multiplicity >= Math.abs(a - b) + 1 && multiplicity <= a + b - 1;
-}
-
 function productStates(
   prepared: PreparedStudy,
   points: LevelPoints,
@@ -129,13 +114,13 @@ function productStates(
   control: RunControl,
 ): Products | NoProducts {
   const level = findLevel(points.level, 'levels');
-  if (level.kind !== 'correlated') {
-    return none(`${level.name} gives no states of open-shell fragments that its curves could tend to.`);
-  }
   if (prepared.study.active) {
     return none('The active orbitals chosen for the molecule say nothing of those of its parts.');
   }
-  const { atoms, areEqual } = separateParts(prepared, parts, farEnd.coordinate);
+  const separate = separateParts(prepared, parts, farEnd.coordinate);
+  const distance = distanceBetween(prepared, parts, farEnd.coordinate);
+  if (level.kind !== 'correlated') return closedShellProducts(prepared, separate, farEnd, distance, control);
+  const { atoms, areEqual } = separate;
   const known = new Map<string, FragmentStates>();
   const statesFor = (part: number, charge: number): FragmentStates => {
     const own = areEqual ? 0 : part;
@@ -144,7 +129,6 @@ function productStates(
     known.set(key, states);
     return states;
   };
-  const distance = distanceBetween(prepared, parts, farEnd.coordinate);
   const all: ProductState[] = [];
   let completeBelow = Number.POSITIVE_INFINITY;
   for (const charges of chargeShares(prepared.study.molecule.charge ?? 0)) {
@@ -159,6 +143,7 @@ function productStates(
         all.push({
           energy,
           attraction: (charges[0] * charges[1]) / distance,
+          multiplicities: couplings(a.multiplicity, b.multiplicity),
           charges,
           states: [a, b],
           lowest,
@@ -169,6 +154,27 @@ function productStates(
     if (!other.isComplete) completeBelow = Math.min(completeBelow, lowest[0] + other.states.at(-1)!.energy);
   }
   return { kind: 'found', all: all.sort((a, b) => a.energy - b.energy), completeBelow };
+}
+
+/** Of CIS, where the RHF determinant that it stands on parts into closed shells. */
+function closedShellProducts(
+  prepared: PreparedStudy,
+  { atoms }: SeparateParts,
+  farEnd: PointResult,
+  distance: number,
+  control: RunControl,
+): Products | NoProducts {
+  const [state] = statesOf(farEnd, 'CIS');
+  const reference = state.energy - state.excitation;
+  const { charge = 0 } = prepared.study.molecule;
+  for (const charges of chargeShares(charge)) {
+    const [one, other] = charges.map((own, part) => closedShellPart(prepared, atoms[part], own, control));
+    if (!one || !other) continue;
+    const missedBy = reference - one.energy - other.energy - (charges[0] * charges[1]) / distance;
+    if (Math.abs(missedBy) <= FAR_ENOUGH)
+      return { kind: 'found', ...singlesProducts([one, other], distance) };
+  }
+  return none('The RHF determinant of CIS does not part into closed shells.');
 }
 
 /** Between the centres of the parts' nuclear charges, bohr. */

@@ -8,7 +8,7 @@ import { type PreparedStudy, prepareFragment } from './prepare-study';
 import type { StudyAtom } from './study';
 
 /** Enough for all terms of a 2p shell that lie below the next shell: ⁴S, ²D and ²P of nitrogen are nine states. */
-const STATES = 10;
+export const STATES_OF_A_FRAGMENT = 10;
 /** A fragment whose states take longer is left, seconds as estimated. */
 const MOST_SECONDS = 2;
 
@@ -48,7 +48,7 @@ export function fragmentStates(
   if (nuclei !== undefined) return only({ multiplicity: 1, energy: nuclei });
   const { unit } = prepared.study.molecule;
   // without a multiplicity the lowest: its determinants have states of every spin among them
-  const preparation = prepareFragment(prepared, { unit, atoms, charge }, level.name, STATES);
+  const preparation = prepareFragment(prepared, { unit, atoms, charge }, level.name, STATES_OF_A_FRAGMENT);
   if (!preparation.ok) {
     const isImpossible = preparation.errors.every(({ code }) => code === 'basis.tooFewFunctions');
     return isImpossible ? { kind: 'impossible' } : unknown(preparation.errors[0].message);
@@ -69,7 +69,7 @@ export function fragmentStates(
     spin === 'mixed' ? [] : [{ multiplicity: SPIN_NAMES.indexOf(spin) + 1, energy }],
   );
   if (states.length < result.states.length) return unknown('A state of a fragment has no definite spin.');
-  return { kind: 'found', states, isComplete: states.length < STATES };
+  return { kind: 'found', states, isComplete: states.length < STATES_OF_A_FRAGMENT };
 }
 
 /** All electrons frozen: there is one state, that of Hartree–Fock. */

@@ -4,7 +4,7 @@ import { excitedLimits } from '../../../engine/calculation/excited-limits';
 import { dissociationLimit } from '../../../engine/calculation/fragments';
 import { levelPoints } from '../../../engine/calculation/level-curve';
 import { type CurveOfState, curvesOfStates } from '../../../engine/calculation/state-curves';
-import { atom, compute, correlated, prepare, study } from '../../support/studies';
+import { atom, compute, correlated, prepare, singles, study } from '../../support/studies';
 
 type Found = Extract<Dissociation, { readonly kind: 'found' }>;
 
@@ -91,7 +91,7 @@ describe('excitedLimits', () => {
 
   it('identity: two nitrogen atoms in ⁴S couple to one state each of S = 0, 1, 2 and 3', () => {
     const states = onlyFound(
-      limitsAt([atom('N'), atom('N', 0, 0, 9)], [15], { frozenCore: true, states: 4 }),
+      limitsAt([atom('N'), atom('N', 0, 0, 9)], [20], { frozenCore: true, states: 4 }),
     );
     expect(states.map(({ state }) => state.followed.spin).sort()).toEqual([
       'quintet',
@@ -121,6 +121,33 @@ describe('excitedLimits', () => {
     }
     const withoutCore = limitsAt([atom('Li'), atom('H', 0, 0, 3)], [14], { ...request, frozenCore: true });
     expect(onlyFound(withoutCore).length).toBe(withoutCore.length);
+  });
+
+  it('identity: CIS of closed shells tends to excitations within one and from one to the other', () => {
+    const request = { basis: '6-31G', levels: ['CIS'], states: 2 };
+    const ionic = onlyFound(limitsAt(HELIUM_HYDRIDE, [14], { ...request, charge: 1 }));
+    expect(ionic).toHaveLength(4);
+    for (const { limit, farEnd } of ionic) {
+      expect(farEnd).toBeCloseTo(limit.energy, 6);
+      // an electron of helium goes to the proton
+      expect(charges(limit)).toEqual([1, 0]);
+    }
+    const neutral = onlyFound(limitsAt([atom('He'), atom('He', 0, 0, 9)], [12], request));
+    expect(neutral).toHaveLength(4);
+    const helium = singles(compute(study([atom('He')], request))).states;
+    for (const { state, limit, farEnd } of neutral) {
+      expect(farEnd).toBeCloseTo(limit.energy, 3);
+      const excited = helium.find(({ spin }) => spin === state.followed.spin)!;
+      const excitations = limit.fragments.map(({ excitation }) => excitation!).toSorted((a, b) => a - b);
+      expect(excitations[0]).toBeCloseTo(0, 10);
+      expect(excitations[1]).toBeCloseTo(excited.excitation, 9);
+    }
+  });
+
+  it('identity: RHF of H2 does not part into closed shells, so that states of CIS get no limit', () => {
+    for (const { limit } of limitsAt(HYDROGEN, [14], { levels: ['CIS'], states: 1 })) {
+      expect(limit).toMatchObject({ kind: 'none', reason: expect.stringContaining('closed shells') });
+    }
   });
 
   it('identity: scans that part no molecule have no limits', () => {
