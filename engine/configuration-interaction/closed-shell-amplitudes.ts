@@ -1,16 +1,10 @@
 import { type PairList, pairPlace, placeOfRun } from './closed-shell-orbitals';
 import type { ClosedShellPlaces, ParticlePairPlaces } from './closed-shell-places';
-import {
-  type ClosedShellRoom,
-  forEachStretch,
-  fourPlaces,
-  type PairMatrices,
-  type PairStretch,
-} from './closed-shell-room';
+import type { ClosedShellRoom, PairMatrices, PairStretch } from './closed-shell-room';
 
 /** Takes the amplitudes from a vector over determinants that is even or odd under the exchange of spins. */
 export function readAmplitudes(room: ClosedShellRoom, places: ClosedShellPlaces, vector: Float64Array): void {
-  const { integrals, layout, parity, pairs } = room;
+  const { parity, pairs } = room;
   const [opposite, exchanged, same, both] = [room.opposite, room.exchanged, room.same, room.both].map(
     ({ view }) => view,
   );
@@ -22,13 +16,9 @@ export function readAmplitudes(room: ClosedShellRoom, places: ClosedShellPlaces,
     for (let k = 0; k < place.length; k++) row[place[k]] = ofHoles * sign[k] * vector[start + k];
   });
 
-  forEachStretch(room, (stretch) => {
-    const { i, j, count } = stretch;
-    const from = fourPlaces(places.mixed, stretch, integrals.holes);
-    const to = fourPlaces(layout, stretch, integrals.holes);
-    const sign = places.signs[i] * places.signs[j];
+  for (const { stretch, inVector: from, inRoom: to, sign } of places.stretches) {
     const [symmetric, antisymmetric, equal] = pairRows(room, stretch, 'amplitudes');
-    for (let y = 0; y < count; y++) {
+    for (let y = 0; y < stretch.count; y++) {
       const u = sign * vector[from.straight + y];
       const v = sign * vector[from.crossed + y * from.crossedStep];
       const crossed = to.crossed + y * to.crossedStep;
@@ -53,12 +43,12 @@ export function readAmplitudes(room: ClosedShellRoom, places: ClosedShellPlaces,
       both[to.turned + y] = parity * v - d;
       both[mirrored] = parity * u + d;
     }
-  });
+  }
 }
 
 /** Puts together what H makes of the amplitudes, by the symmetries that each kind of excitation has. */
 export function writeProduct(room: ClosedShellRoom, places: ClosedShellPlaces, product: Float64Array): void {
-  const { integrals, layout, parity, pairs } = room;
+  const { parity, pairs } = room;
   const [opposite, exchanged, same] = [room.ofOpposite, room.ofExchanged, room.ofSame].map(
     ({ view }) => view,
   );
@@ -68,13 +58,9 @@ export function writeProduct(room: ClosedShellRoom, places: ClosedShellPlaces, p
     product[places.alphaSingles + single] = parity * value;
   });
 
-  forEachStretch(room, (stretch) => {
-    const { i, j, count } = stretch;
-    const from = fourPlaces(layout, stretch, integrals.holes);
-    const to = fourPlaces(places.mixed, stretch, integrals.holes);
-    const sign = places.signs[i] * places.signs[j];
+  for (const { stretch, inRoom: from, inVector: to, sign } of places.stretches) {
     const [symmetric, antisymmetric, equal] = pairRows(room, stretch, 'results');
-    for (let y = 0; y < count; y++) {
+    for (let y = 0; y < stretch.count; y++) {
       const crossed = from.crossed + y * from.crossedStep;
       const mirrored = from.mirrored + y * from.mirroredStep;
       const straight = from.straight + y;
@@ -103,7 +89,7 @@ export function writeProduct(room: ClosedShellRoom, places: ClosedShellPlaces, p
         equal.view[equal.first + y] += same[straight] - same[crossed] - same[turned] + same[mirrored];
       }
     }
-  });
+  }
   forEachHolePair(room, places, pairs.antisymmetric.results, (row, first, { place, sign }, ofHoles) => {
     for (let k = 0; k < place.length; k++) {
       const value = ofHoles * sign[k] * row[place[k]];

@@ -1,6 +1,13 @@
 import type { ClosedShellIntegrals } from './closed-shell-integrals';
 import { byIrrep, type OrbitalClass, pairPlace } from './closed-shell-orbitals';
-import type { SinglesLayout } from './closed-shell-room';
+import {
+  type FourPlaces,
+  fourPlaces,
+  listStretches,
+  type PairStretch,
+  roomLayout,
+  type SinglesLayout,
+} from './closed-shell-room';
 import type { Sector } from './sector';
 
 /**
@@ -23,6 +30,15 @@ export interface ClosedShellPlaces {
   readonly pairs: readonly HolePairPlaces[];
   /** by representation of a pair of particles */
   readonly particlePairs: readonly ParticlePairPlaces[];
+  readonly stretches: readonly PlacedStretch[];
+}
+
+/** A stretch of determinants excited in both spins: where it stands in the vector, and in the matrices of the room. */
+export interface PlacedStretch {
+  readonly stretch: PairStretch;
+  readonly inVector: FourPlaces;
+  readonly inRoom: FourPlaces;
+  readonly sign: number;
 }
 
 /** Double excitations of one spin out of one pair of holes: a run of all pairs of particles. */
@@ -41,18 +57,18 @@ export interface ParticlePairPlaces {
   readonly sign: Float64Array;
 }
 
+/** @param ofParticles - of `particlePairPlaces`, the same for all sectors */
 export function closedShellPlaces(
   sector: Sector,
-  { holes, particles, singles, holePairs, particlePairs }: ClosedShellIntegrals,
+  integrals: ClosedShellIntegrals,
+  ofParticles: readonly ParticlePairPlaces[],
 ): ClosedShellPlaces {
+  const { holes, particles, singles, holePairs, particlePairs } = integrals;
   const { irrep, rowStart, beta } = sector;
   const ofReference = beta.irreps[0];
   const hasReference = irrep === 0;
   const first = rowStart[ofReference][0];
   const rowsBefore = (ofRow: number) => Number(ofRow === 0);
-  const ofParticles = byIrrep((pairIrrep) =>
-    particlePairPlaces(particles, pairIrrep, particlePairs.antisymmetric),
-  );
   let start = 0;
   const pairs = colexPairs(holes).map(([i, j]): HolePairPlaces => {
     const holeIrrep = holes.irreps[i] ^ holes.irreps[j];
@@ -67,16 +83,17 @@ export function closedShellPlaces(
   });
   const rowOf = (ofRow: number, row: number) => rowStart[ofReference ^ ofRow][rowsBefore(ofRow) + row];
   const stride = byIrrep((ofRow) => singles.size[ofRow ^ irrep] + rowsBefore(ofRow ^ irrep));
+  const signs = holes.orbitals.map((i) => ((holes.count - 1 - i) % 2 === 0 ? 1 : -1));
+  const mixed: SinglesLayout = {
+    start: byIrrep((ofRow) => (singles.size[ofRow] === 0 ? 0 : rowOf(ofRow, 0) + rowsBefore(ofRow ^ irrep))),
+    stride,
+    runs: byIrrep((ofSingle) => runsInStrings(holes, particles, ofSingle)),
+  };
+  const layout = roomLayout(integrals, irrep);
   return {
     ...(hasReference && { reference: first }),
-    signs: holes.orbitals.map((i) => ((holes.count - 1 - i) % 2 === 0 ? 1 : -1)),
-    mixed: {
-      start: byIrrep((ofRow) =>
-        singles.size[ofRow] === 0 ? 0 : rowOf(ofRow, 0) + rowsBefore(ofRow ^ irrep),
-      ),
-      stride,
-      runs: byIrrep((ofSingle) => runsInStrings(holes, particles, ofSingle)),
-    },
+    signs,
+    mixed,
     alphaSingles: first + Number(hasReference),
     betaSingles: singles.size[irrep] === 0 ? 0 : rowOf(irrep, 0),
     betaSinglesStride: stride[irrep],
@@ -84,6 +101,12 @@ export function closedShellPlaces(
     betaDoubles: start === 0 ? 0 : rowOf(irrep, singles.size[irrep]),
     pairs,
     particlePairs: ofParticles,
+    stretches: listStretches(integrals, irrep).map((stretch) => ({
+      stretch,
+      inVector: fourPlaces(mixed, stretch, holes),
+      inRoom: fourPlaces(layout, stretch, holes),
+      sign: signs[stretch.i] * signs[stretch.j],
+    })),
   };
 }
 
@@ -93,18 +116,21 @@ function colexPairs({ orbitals }: OrbitalClass): [number, number][] {
   return rising.flatMap((q, k) => rising.slice(0, k).map((p): [number, number] => [p, q]));
 }
 
-function particlePairPlaces(
-  particles: OrbitalClass,
-  irrep: number,
-  list: Parameters<typeof pairPlace>[0],
-): ParticlePairPlaces {
-  const pairs = colexPairs(particles).filter(
-    ([a, b]) => (particles.irreps[a] ^ particles.irreps[b]) === irrep,
-  );
-  return {
-    place: Int32Array.from(pairs, ([a, b]) => pairPlace(list, Math.max(a, b), Math.min(a, b))),
-    sign: Float64Array.from(pairs, ([a, b]) => (a < b ? 1 : -1)),
-  };
+/** By representation of the pair. */
+export function particlePairPlaces({
+  particles,
+  particlePairs: { antisymmetric },
+}: ClosedShellIntegrals): readonly ParticlePairPlaces[] {
+  const found = byIrrep((): { place: number[]; sign: number[] } => ({ place: [], sign: [] }));
+  for (const [a, b] of colexPairs(particles)) {
+    const { place, sign } = found[particles.irreps[a] ^ particles.irreps[b]];
+    place.push(pairPlace(antisymmetric, Math.max(a, b), Math.min(a, b)));
+    sign.push(a < b ? 1 : -1);
+  }
+  return found.map(({ place, sign }) => ({
+    place: Int32Array.from(place),
+    sign: Float64Array.from(sign),
+  }));
 }
 
 /** In the strings, holes run in the order of the orbitals. */

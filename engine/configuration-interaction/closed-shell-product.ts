@@ -11,7 +11,12 @@ import { addScaledInto, dot } from '../linear-algebra/dense';
 import { readAmplitudes, writeProduct } from './closed-shell-amplitudes';
 import { type ClosedShellIntegrals, layClosedShellIntegrals } from './closed-shell-integrals';
 import type { PairList } from './closed-shell-orbitals';
-import { type ClosedShellPlaces, closedShellPlaces } from './closed-shell-places';
+import {
+  type ClosedShellPlaces,
+  closedShellPlaces,
+  type ParticlePairPlaces,
+  particlePairPlaces,
+} from './closed-shell-places';
 import { type ClosedShellRoom, takeClosedShellRoom } from './closed-shell-room';
 import { isClosedShellSpace } from './closed-shell-spin';
 import type { DeterminantSpace } from './determinant-space';
@@ -62,16 +67,13 @@ export function prepareClosedShellProduct(
   orbitalIrreps: readonly number[] | undefined,
   memory: KernelMemory,
 ): BareProduct {
-  let tables: { readonly integrals: ClosedShellIntegrals; readonly productInto: ProductInto } | undefined;
+  let tables: Tables | undefined;
   const places = new Map<Sector, ClosedShellPlaces>();
   const ofParity = (sector: Sector, vector: Float64Array, product: Float64Array, parity: 1 | -1) => {
-    tables ??= {
-      integrals: layClosedShellIntegrals(memory, integrals, sectors[0].space.alpha.electrons, orbitalIrreps),
-      productInto: productIn(memory),
-    };
+    tables ??= layTables(memory, integrals, sectors[0].space.alpha.electrons, orbitalIrreps);
     let ofSector = places.get(sector);
     if (!ofSector) {
-      ofSector = closedShellPlaces(sector, tables.integrals);
+      ofSector = closedShellPlaces(sector, tables.integrals, tables.particlePairs);
       places.set(sector, ofSector);
     }
     const { productInto } = tables;
@@ -101,6 +103,19 @@ export function prepareClosedShellProduct(
       addScaledInto(product, 1, ofPart);
     }
   };
+}
+
+/** What all products share. */
+interface Tables {
+  readonly integrals: ClosedShellIntegrals;
+  readonly particlePairs: readonly ParticlePairPlaces[];
+  readonly productInto: ProductInto;
+}
+
+function layTables(...given: Parameters<typeof layClosedShellIntegrals>): Tables {
+  const [memory] = given;
+  const integrals = layClosedShellIntegrals(...given);
+  return { integrals, particlePairs: particlePairPlaces(integrals), productInto: productIn(memory) };
 }
 
 /** All parts of the product but that of the reference and the reference energy. */

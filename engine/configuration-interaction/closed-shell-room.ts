@@ -51,12 +51,8 @@ export function takeClosedShellRoom(
   parity: 1 | -1,
 ): ClosedShellRoom {
   const { singles, holePairs, particlePairs } = integrals;
-  let total = 0;
-  const start = singles.size.map((size, ofRow) => {
-    const before = total;
-    total += size * singles.size[ofRow ^ irrep];
-    return before;
-  });
+  const layout = roomLayout(integrals, irrep);
+  const total = singles.size.reduce((sum, size, ofRow) => sum + size * singles.size[ofRow ^ irrep], 0);
   const overPairs = (kind: PairSymmetry, ofHoles: PairList): PairMatrices => {
     const ofEqualSpin = (e: number) => (kind === 'antisymmetric' ? holePairs.antisymmetric.size[e] : 0);
     const take = () =>
@@ -73,7 +69,7 @@ export function takeClosedShellRoom(
     parity,
     singles: memory.float64(singles.size[irrep]),
     ofSingles: memory.float64(singles.size[irrep]),
-    layout: { start, stride: byIrrep((ofRow) => singles.size[ofRow ^ irrep]), runs: singles.start },
+    layout,
     opposite: memory.float64(total),
     exchanged: memory.float64(total),
     same: memory.float64(total),
@@ -86,6 +82,17 @@ export function takeClosedShellRoom(
       antisymmetric: overPairs('antisymmetric', isEven ? holePairs.antisymmetric : holePairs.symmetric),
     },
   };
+}
+
+/** How the matrices over single excitations of one sector lie. */
+export function roomLayout({ singles }: ClosedShellIntegrals, irrep: number): SinglesLayout {
+  let total = 0;
+  const start = singles.size.map((size, ofRow) => {
+    const before = total;
+    total += size * singles.size[ofRow ^ irrep];
+    return before;
+  });
+  return { start, stride: byIrrep((ofRow) => singles.size[ofRow ^ irrep]), runs: singles.start };
 }
 
 /** How elements over pairs of single excitations lie. */
@@ -110,10 +117,12 @@ export interface PairStretch {
   readonly count: number;
 }
 
-export function forEachStretch(
-  { integrals: { holes, particles }, irrep }: ClosedShellRoom,
-  take: (stretch: PairStretch) => void,
-): void {
+/** All that a sector has. */
+export function listStretches(
+  { holes, particles }: ClosedShellIntegrals,
+  irrep: number,
+): readonly PairStretch[] {
+  const stretches: PairStretch[] = [];
   for (let i = 0; i < holes.count; i++) {
     for (let j = 0; j <= i; j++) {
       const ofParticles = holes.irreps[i] ^ holes.irreps[j] ^ irrep;
@@ -121,11 +130,12 @@ export function forEachStretch(
         const ofY = ofX ^ ofParticles;
         if (ofY > ofX || particles.counts[ofY] === 0) return;
         for (let x = 0; x < count; x++) {
-          take({ i, j, ofX, ofY, x, count: ofX === ofY ? x + 1 : particles.counts[ofY] });
+          stretches.push({ i, j, ofX, ofY, x, count: ofX === ofY ? x + 1 : particles.counts[ofY] });
         }
       });
     }
   }
+  return stretches;
 }
 
 /** Where the elements of a stretch stand in a layout, and those with particles, holes or both exchanged. */
