@@ -1,6 +1,6 @@
-import type { LevelFindings, LevelResult, StudyResults } from '#engine';
+import type { Caution, LevelFindings, LevelResult, StudyResults } from '#engine';
 import { coordinateText } from '../calculation/coordinate-text';
-import { cautionGroups } from '../report/caution-summary';
+import { type CautionGroup, cautionGroups } from '../report/caution-summary';
 import { ended } from '../report/sentences';
 import { comparedConstants } from '../study/compared-constants';
 import { basesLines, unconvergedInBases } from './bases-summary';
@@ -106,9 +106,22 @@ function onsetText({ instabilityOnset }: LevelFindings, study: StudyResults['stu
 
 /** What to mistrust and where, what that means, and on a line of its own what to do. */
 function cautionLines(results: StudyResults): readonly string[] {
-  const groups = cautionGroups(results, (coordinate) => coordinateText(results.study, coordinate));
-  return groups.flatMap(({ lead, messages, meaning, remedy }) => {
-    const sentences = [...messages, ...(meaning ? [meaning] : [])].map(ended).join(' ');
-    return [`Caution: ${lead ? `${lead}: ` : ''}${sentences}`, ...(remedy ? [`  ${remedy}`] : [])];
-  });
+  const { study, cautions, furtherBases = [] } = results;
+  const places = (coordinate: number) => coordinateText(study, Number(coordinate.toPrecision(5)));
+  const isSaid = ({ code, level }: Caution) =>
+    cautions.some((other) => other.code === code && other.level === level);
+  return [
+    ...cautionGroups(results, places).flatMap((group) => groupLines('Caution', group)),
+    // only what the study's own basis has not raised
+    ...furtherBases.flatMap(({ basis, cautions: inBasis }) =>
+      cautionGroups({ cautions: inBasis.filter((caution) => !isSaid(caution)), points: [] }, places).flatMap(
+        (group) => groupLines(`Caution in ${basis.name}`, group),
+      ),
+    ),
+  ];
+}
+
+function groupLines(head: string, { lead, messages, meaning, remedy }: CautionGroup): readonly string[] {
+  const sentences = [...messages, ...(meaning ? [meaning] : [])].map(ended).join(' ');
+  return [`${head}: ${lead ? `${lead}: ` : ''}${sentences}`, ...(remedy ? [`  ${remedy}`] : [])];
 }

@@ -24,7 +24,7 @@ export interface CautionGroup {
  * @param coordinateText - a coordinate of the study as printed, unit included
  */
 export function cautionGroups(
-  results: StudyResults,
+  results: Pick<StudyResults, 'cautions' | 'points'>,
   coordinateText: (coordinate: number) => string,
 ): readonly CautionGroup[] {
   const all: CautionAt[] = [

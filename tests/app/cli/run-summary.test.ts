@@ -99,6 +99,19 @@ describe('summarise', () => {
     );
   });
 
+  it('says of a further basis only the cautions that the own one has not', () => {
+    const cautions = [{ code: 'a', level: 'FCI', message: 'Too coarse.' }];
+    const further = [...cautions, { code: 'b', level: 'FCI', message: 'A kink.', range: [1, 2.0000001] }];
+    const inBasis = {
+      ...studyInBasis(results),
+      basis: { ...results.basis, name: 'cc-pVTZ' },
+      cautions: further as StudyResults['cautions'],
+    };
+    expect(linesAbout(/^Caution in/, { ...results, cautions, furtherBases: [inBasis] })).toEqual([
+      'Caution in cc-pVTZ: FCI between 1 Å and 2 Å: A kink.',
+    ]);
+  });
+
   it('says of a caution what it means, and below that what to do', () => {
     const cautions = [
       { code: 'a', message: 'It ends early.', meaning: 'It is too short.', remedy: 'Go on.' },
