@@ -1,4 +1,5 @@
 import { Worker } from 'node:worker_threads';
+import { compileLater } from './compile-later';
 import { type HelpWanted, openHelpers, type StartHelper, startHelperThread } from './helpers';
 import type { WorkerReply, WorkerRequest, WorkerStart } from './messages';
 import { WORKER_FILE } from './program';
@@ -22,7 +23,7 @@ const ahead = new Set<Worker>();
 /** Starts threads for workers to come, so that they read the program while this one reads the study. */
 export function startThreadsAhead(count: number): void {
   while (ahead.size < count) {
-    const thread = new Worker(WORKER_FILE);
+    const thread = newThread();
     thread.unref();
     ahead.add(thread);
     // a worker that gets none of these starts a thread of its own, and tells what is wrong with it
@@ -39,9 +40,14 @@ export function endThreadsAhead(left = 0): void {
   }
 }
 
+function newThread(): Worker {
+  compileLater();
+  return new Worker(WORKER_FILE);
+}
+
 function takeThread(): Worker {
   const [thread] = ahead;
-  if (!thread) return new Worker(WORKER_FILE);
+  if (!thread) return newThread();
   ahead.delete(thread);
   thread.ref();
   return thread;
