@@ -77,7 +77,7 @@ function lowestOfSectors({ sectors }: StateProblem, settings: StateSettings): Lo
     const stage = <T>(work: () => T): T => inStage(control, 'CI model space', work);
     if (sector.dimension <= Math.max(size, DIRECT_SECTOR_SIZE)) {
       const found = stage(() => lowestDirectly(sector, states));
-      return { sector, lowestValue: found.values[0], solve: () => found };
+      return { sector, lowestValue: found.values[0], isModel: false, solve: () => found };
     }
     const model = stage(() =>
       buildModelSpace(sector.diagonal, size, (places) => sector.elementsAmong(places)),
@@ -86,19 +86,20 @@ function lowestOfSectors({ sectors }: StateProblem, settings: StateSettings): Lo
       inStage(control, 'CI product', () => sector.apply(vector, product));
     const solve = (ceiling: number, known: KnownState | undefined): LowestStates =>
       findSectorStates({ ...sector, apply }, model, settings, ceiling, known);
-    return { sector, lowestValue: model.energies[0], solve };
+    return { sector, lowestValue: model.energies[0], isModel: true, solve };
   });
   started.sort((a, b) => a.lowestValue - b.lowestValue);
 
-  let lowest: { value: number; vector: Float64Array; sector: StateProblem['sectors'][number] }[] = [];
+  let lowest: (KnownState & { readonly sector: StateProblem['sectors'][number] })[] = [];
   let iterations = 0;
   let termination: Termination = { kind: 'converged' };
-  for (const { sector, solve } of started) {
+  for (const { sector, lowestValue, isModel, solve } of started) {
     const found = solve(lowest[states - 1]?.value ?? Number.POSITIVE_INFINITY, lowest[0]);
     iterations += found.iterations;
     if (termination.kind === 'converged') ({ termination } = found);
+    const lowering = isModel ? lowestValue - found.values[0] : undefined;
     found.vectors.forEach((vector, k) => {
-      lowest.push({ value: found.values[k], vector, sector });
+      lowest.push({ value: found.values[k], vector, lowering, sector });
     });
     lowest.sort((a, b) => a.value - b.value);
     const highest = (lowest[states - 1]?.value ?? Number.POSITIVE_INFINITY) + DEGENERACY_TOLERANCE;

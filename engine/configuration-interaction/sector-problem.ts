@@ -41,6 +41,8 @@ export type LowestStates = Pick<DavidsonResult, 'values' | 'vectors' | 'iteratio
 export interface KnownState {
   readonly value: number;
   readonly vector: Float64Array;
+  /** by how much the lowest state of its sector lies below what a model space of that sector gave, hartree */
+  readonly lowering?: number | undefined;
 }
 
 /** @param keepSpin - takes from a direction, in place, what rounding has brought in of other spins */

@@ -75,11 +75,21 @@ export function findSectorStates(
       : undefined;
   if (bySpin && isMixed({ value: model.energies[0], vector: model.vectors[0] })) return bySpin();
 
-  const guesses = selectGuesses(problem, model, precondition, settings.states);
   const probing = probes(problem, model, precondition);
-  const found = solve([...guesses.map((k) => writeModelVector(model, k)), ...probing]);
+  const { first, later } = divideGuesses(model, settings.states, ceiling, lowest, isMixed);
+  const select = (candidates: readonly number[], count: number) =>
+    selectGuesses(problem, model, precondition, candidates, count).map((k) => writeModelVector(model, k));
+  const places = guessLimit(settings.states);
+  const found = solve([...select(first, places), ...probing]);
   if (found.termination.kind !== 'converged') return found;
-  if (!isMixed({ value: found.values[0], vector: found.vectors[0] })) return found;
+  const own = { value: found.values[0], vector: found.vectors[0] };
+  if (!isMixed(own)) {
+    const highest = found.values[Math.min(settings.states, found.values.length) - 1];
+    const low = comingBelow(model, later, Math.min(ceiling, highest), model.energies[0] - own.value);
+    if (low.length === 0) return found;
+    const guarded = solve([...found.vectors, ...select(low, places - settings.states)]);
+    return { ...guarded, iterations: found.iterations + guarded.iterations };
+  }
   if (bySpin) return bySpin();
   const hidden = lowerStatesOfOtherSpins(problem, model, precondition, found, settings, ceiling);
   if (hidden.length === 0) return found;
@@ -190,23 +200,55 @@ function probes(
   });
 }
 
+/** A state may come down from its model by so many times what the lowest state has come down from its own. */
+const LOWERING_FACTOR = 3;
+
+/** Model vectors of the list that may come down below a value. */
+function comingBelow(
+  model: ModelSpace,
+  list: readonly number[],
+  highest: number,
+  lowering: number,
+): readonly number[] {
+  return list.filter((k) => model.energies[k] - LOWERING_FACTOR * lowering <= highest);
+}
+
 /**
- * The lowest model vectors and as many guards as are allowed. Where there are more, one product with H tells by
- * second-order perturbation theory which of them lead to the lowest states.
+ * Model vectors to start from at once, and guards that wait until the states are known: where one determinant dominates
+ * the lowest state, what that has come down from its model tells which of the others can come so far.
+ */
+function divideGuesses(
+  model: ModelSpace,
+  states: number,
+  ceiling: number,
+  known: KnownState | undefined,
+  isMixed: (state: KnownState) => boolean,
+): { readonly first: readonly number[]; readonly later: readonly number[] } {
+  const { lowest, guards } = chooseGuesses(model, states);
+  const all = [...lowest, ...guards];
+  if (isMixed({ value: model.energies[0], vector: model.vectors[0] })) return { first: all, later: [] };
+  if (!known) return { first: all.slice(0, states), later: all.slice(states) };
+  if (known.lowering === undefined) return { first: all, later: [] };
+  const further = comingBelow(model, all.slice(states), ceiling, known.lowering);
+  return { first: [...all.slice(0, states), ...further], later: [] };
+}
+
+/**
+ * The first of the model vectors, as many as are allowed. Where there are more, one product with H tells by second-order
+ * perturbation theory which of them lead to the lowest states.
  */
 function selectGuesses(
   problem: SectorProblem,
   model: ModelSpace,
   precondition: ReturnType<typeof modelPreconditioner>,
-  states: number,
-): number[] {
-  const { lowest, guards } = chooseGuesses(model, states);
-  const places = guessLimit(states) - lowest.length;
-  if (guards.length <= places) return [...lowest, ...guards];
+  candidates: readonly number[],
+  places: number,
+): readonly number[] {
+  if (candidates.length <= places) return candidates;
 
   const residual = new Float64Array(problem.dimension);
   const correction = new Float64Array(problem.dimension);
-  const estimated = guards.map((k) => {
+  const estimated = candidates.map((k) => {
     const guess = spreadModelVector(model, k, problem.dimension);
     problem.apply(guess, residual);
     addScaledInto(residual, -model.energies[k], guess);
@@ -217,5 +259,5 @@ function selectGuesses(
     };
   });
   estimated.sort((a, b) => a.energy - b.energy);
-  return [...lowest, ...estimated.slice(0, places).map(({ k }) => k)];
+  return estimated.slice(0, places).map(({ k }) => k);
 }
