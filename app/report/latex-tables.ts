@@ -25,39 +25,50 @@ const WRAPPED_COLUMN = 'p{0.26\\linewidth}';
  */
 export function latexTables(document: ReportDocument): string {
   const tables = tablesOf(document).flatMap((table) => splitTable(table, LINE_LENGTH, 'onOneLine'));
-  const hasLong = tables.some(isLong);
+  const subject = document.heading;
+  const hasLong = tables.some((table) => isLong(table, subject));
   return [
     `% \\usepackage{booktabs${hasLong ? ',longtable' : ''}}`,
-    ...tables.map((table) => setTable(table, document.heading)),
+    ...tables.map((table) => setTable(table, subject)),
   ]
     .join('\n\n')
     .concat('\n');
 }
 
-/** Counts the lines that wrapped words take. */
-const isLong = ({ rows }: TextTable): boolean =>
-  rows.reduce((lines, row) => lines + Math.max(...row.map(linesOf)), 0) > LINES_ON_A_PAGE;
+/** Counts the lines that the caption and wrapped words take. */
+function isLong(table: TextTable, subject: string): boolean {
+  const lines = table.rows.reduce(
+    (sum, row) => sum + Math.max(...row.map((cell) => linesOf(cell, LONGEST_LINE))),
+    linesOf(captionOf(table, subject), LINE_LENGTH),
+  );
+  return lines > LINES_ON_A_PAGE;
+}
 
-const linesOf = (cell: string): number => Math.max(1, Math.ceil(cell.length / LONGEST_LINE));
+const linesOf = (text: string, length: number): number => Math.max(1, Math.ceil(text.length / length));
+
+const captionOf = ({ heading, notes }: TextTable, subject: string): string =>
+  [heading, subject, ...notes].map(ended).join(' ');
 
 function setTable(table: TextTable, subject: string): string {
-  const { heading, columns, rows, notes } = table;
+  const { columns, rows } = table;
   const alignment = columns.map((column, index) =>
     alignmentOf(
       column,
       rows.map((row) => row[index] ?? ''),
     ),
   );
-  const caption = latexText([heading, subject, ...notes].map(ended).join(' '));
+  const caption = latexText(captionOf(table, subject));
   const size = tableWidth(table, 'onOneLine') > LINE_LENGTH_AT_FULL_SIZE ? ['\\footnotesize'] : [];
   const head = [...spanningRows(columns), `${columns.map(({ label }) => latexText(label)).join(' & ')} \\\\`];
+  // in a ragged cell the usual end of a row only breaks the line
+  const endOfRow = alignment.at(-1) === WRAPPED_COLUMN ? '\\tabularnewline' : '\\\\';
   const body = rows.map((row) => {
     const cells = row.map((cell, index) =>
       alignment[index] === WRAPPED_COLUMN ? raggedCell(cell) : latexCell(cell),
     );
-    return `${cells.join(' & ')} \\\\`;
+    return `${cells.join(' & ')} ${endOfRow}`;
   });
-  const lines = isLong(table)
+  const lines = isLong(table, subject)
     ? [
         '{',
         ...size,
@@ -111,8 +122,7 @@ function spanningRows(columns: readonly TableColumn[]): string[] {
   });
 }
 
-/** In braces, as raggedness gives the end of a row another meaning. */
-const raggedCell = (cell: string): string => `{\\raggedright ${latexCell(cell)}\\par}`;
+const raggedCell = (cell: string): string => `\\raggedright ${latexCell(cell)}`;
 
 /** Numbers in mathematics, for their minus signs. */
 function latexCell(cell: string): string {
