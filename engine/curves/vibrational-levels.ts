@@ -222,7 +222,7 @@ function expectedOnNext({ states }: GridSolution, extrapolated: readonly Extrapo
 /** By how much halving the grid divides an error of its sixth power, less one. */
 const SIXTH_POWER = 63;
 /** How near to 16 the ratio of two changes must be for the error to fall as h⁴. */
-const RATIO_RANGE = [12, 20] as const;
+const RATIO_RANGE = [15, 17] as const;
 
 function fallsAsFourthPower(grids: readonly (GridSolution | undefined)[], v: number): boolean {
   const [first, second, third] = grids.map((grid) => grid?.states[v]?.energy ?? Number.NaN);
