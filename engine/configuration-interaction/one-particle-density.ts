@@ -42,6 +42,8 @@ export function spinDensities(
   const { alphaReplacements, betaReplacements } = space;
   const ofAlpha = new Float64Array(space.orbitalCount ** 2);
   addSpinDensity(ofAlpha, alpha, alphaReplacements, beta, rows, maximumRank, left, right);
+  const parity = alpha === beta ? parityBetween(left, turnedLeft) * parityBetween(right, turnedRight) : 0;
+  if (parity !== 0) return [ofAlpha, ofAlpha.map((value) => parity * value)];
   const ofBeta = new Float64Array(space.orbitalCount ** 2);
   addSpinDensity(ofBeta, beta, betaReplacements, alpha, transposedRows, maximumRank, turnedLeft, turnedRight);
   return [ofAlpha, ofBeta];
@@ -99,27 +101,44 @@ function addSpinDensity(
   const n = inner.orbitalCount;
   const { byPairStart, pairSource, pairTarget, pairSign, pairCountUpToRank } = replacements;
   const ranks = inner.maximumRank + 1;
-  for (let p = 0; p < n; p++) {
-    for (let q = 0; q <= p; q++) {
-      const pair = p * n + q;
-      const first = byPairStart[pair];
-      const change = rankChange(inner, p, q);
-      let sum = 0;
-      for (let row = 0; row < outer.count; row++) {
-        const limit = maximumRank - outer.ranks[row] + Math.min(0, change);
-        if (limit < 0) break;
+  const isSame = left === right;
+  // row by row, so that one row stays in the fast cache for all pairs
+  for (let row = 0; row < outer.count; row++) {
+    const start = rows.start[row];
+    for (let p = 0; p < n; p++) {
+      for (let q = 0; q <= p; q++) {
+        const pair = p * n + q;
+        const limit = maximumRank - outer.ranks[row] + Math.min(0, rankChange(inner, p, q));
+        if (limit < 0) continue;
+        const first = byPairStart[pair];
         const last = first + pairCountUpToRank[pair * ranks + Math.min(limit, ranks - 1)];
-        const start = rows.start[row];
+        let sum = 0;
         for (let k = first; k < last; k++) {
           const target = start + pairTarget[k];
           const source = start + pairSource[k];
-          sum += 0.5 * pairSign[k] * (left[target] * right[source] + left[source] * right[target]);
+          const product = left[target] * right[source];
+          sum += 0.5 * pairSign[k] * (product + (isSame ? product : left[source] * right[target]));
         }
+        density[pair] += sum;
+        if (p !== q) density[q * n + p] += sum;
       }
-      density[pair] += sum;
-      if (p !== q) density[q * n + p] += sum;
     }
   }
+}
+
+/** Differences between a vector and its image that are rounding, against its largest element. */
+const SAME_ELEMENTS = 1e-12;
+
+/** 1 or −1 if exchanging alpha and beta multiplies the vector by that, 0 if neither. */
+function parityBetween(vector: Float64Array, turned: Float64Array): -1 | 0 | 1 {
+  let [largest, difference, sum] = [0, 0, 0];
+  for (let i = 0; i < vector.length; i++) {
+    largest = Math.max(largest, Math.abs(vector[i]));
+    difference = Math.max(difference, Math.abs(vector[i] - turned[i]));
+    sum = Math.max(sum, Math.abs(vector[i] + turned[i]));
+  }
+  if (difference <= SAME_ELEMENTS * largest) return 1;
+  return sum <= SAME_ELEMENTS * largest ? -1 : 0;
 }
 
 /** Natural occupations, falling, and the natural orbitals as columns in the same order. */

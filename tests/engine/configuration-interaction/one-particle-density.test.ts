@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import {
   buildDeterminantSpace,
   determinantAt,
+  transposeInto,
 } from '../../../engine/configuration-interaction/determinant-space';
 import { occupiedOrbitals } from '../../../engine/configuration-interaction/determinants';
 import {
@@ -58,6 +59,26 @@ describe('spinDensities', () => {
         expect(ofAlpha[pair]).toBeCloseTo(inAlpha, 12);
         expect(ofBeta[pair]).toBeCloseTo(inBeta, 12);
       }
+    },
+  );
+
+  it.each([3, Number.POSITIVE_INFINITY])(
+    'identity: rank %d: densities of and between vectors with a parity under the exchange of spins add up to those without',
+    (rank) => {
+      const { space, vector } = randomState(5, 3, 3, rank);
+      const turned = new Float64Array(vector.length);
+      transposeInto(space, vector, turned);
+      const even = vector.map((value, i) => (value + turned[i]) / 2);
+      const odd = vector.map((value, i) => (value - turned[i]) / 2);
+      const parts = [spinDensities(space, even, even), spinDensities(space, odd, odd)];
+      const between = spinDensities(space, even, odd);
+      spinDensities(space, vector, vector).forEach((density, spin) => {
+        expect(Math.max(...between[spin].map(Math.abs))).toBeGreaterThan(0.01);
+        density.forEach((value, pair) => {
+          const sum = parts[0][spin][pair] + parts[1][spin][pair] + 2 * between[spin][pair];
+          expect(Math.abs(value - sum)).toBeLessThan(1e-13);
+        });
+      });
     },
   );
 
