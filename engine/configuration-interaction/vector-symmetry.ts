@@ -48,18 +48,25 @@ export class SpaceSymmetry {
   /**
    * @param operations - commuting operations of order two, whose characters make the bits of representations
    * @param rotate - ∂/∂φ about the axis of a linear molecule
+   * @param irreps - representation of each function, where each has one
    */
   constructor(
     private readonly operations: readonly VectorOperator[],
     private readonly rotate: VectorOperator | undefined,
+    private readonly irreps?: Uint8Array,
   ) {}
 
   /** @param vector - of norm 1 */
   describe(vector: Float64Array): VectorSymmetry {
     const irrepWeights = new Float64Array(8);
-    this.split(vector, (part, irrep) => {
-      irrepWeights[irrep] = dot(part, part);
-    });
+    const { irreps } = this;
+    if (irreps) {
+      for (let i = 0; i < vector.length; i++) irrepWeights[irreps[i]] += vector[i] ** 2;
+    } else {
+      this.split(vector, (part, irrep) => {
+        irrepWeights[irrep] = dot(part, part);
+      });
+    }
     if (!this.rotate) return { irrepWeights };
     const turned = new Float64Array(vector.length);
     this.rotate(vector, turned);
@@ -139,7 +146,7 @@ export function determinantSymmetry(
     const length = rowLength(space.rows, row);
     for (let a = 0; a < length; a++) irreps[start + a] = ofAlpha[a] ^ ofBeta[row];
   }
-  return new SpaceSymmetry(characters(irreps), rotate);
+  return new SpaceSymmetry(characters(irreps), rotate, irreps);
 }
 
 /** The operations where every function belongs to a representation: signs. */
@@ -176,7 +183,7 @@ export function singlesSymmetry(
       }
     }
   };
-  return new SpaceSymmetry(characters(ofExcitations), axialRotation && rotate);
+  return new SpaceSymmetry(characters(ofExcitations), axialRotation && rotate, ofExcitations);
 }
 
 function determinantRotation(space: DeterminantSpace, rotation: Float64Array): VectorOperator {
