@@ -68,7 +68,8 @@ export function findSectorStates(
   const { spin } = problem;
   const isMixed = (state: KnownState) =>
     isStronglyMixed(lowest && lowest.value < state.value ? lowest : state);
-  const seedsOf = (value: number) => seedsOfSpin(model, value).map((k) => writeModelVector(model, k));
+  const seedsOf = (value: number) =>
+    seedsOfSpin(model, value).map((k) => spreadModelVector(model, k, problem.dimension));
   const bySpin =
     spin && problem.dimension <= LONGEST_BY_SPIN
       ? () => statesBySpin(problem, spin, { seedsOf, solve }, settings.states, ceiling)

@@ -1,5 +1,6 @@
 import { arbitraryNumbers } from '../linear-algebra/arbitrary-numbers';
 import { DEGENERACY_TOLERANCE } from '../linear-algebra/davidson';
+import { addScaledInto, dot } from '../linear-algebra/dense';
 import type { DavidsonProblem } from '../linear-algebra/subspace';
 import type { LowestStates, SectorProblem } from './sector-problem';
 import { projectOnSpin, type SpinOperator, searchSpin } from './spin-search';
@@ -9,8 +10,8 @@ const FURTHER_VECTORS = 2;
 
 /** How the states of one spin are found from vectors of that spin. */
 export interface SpinSolver {
-  /** guesses from determinants */
-  seedsOf(value: number): DavidsonProblem['guesses'];
+  /** guesses from determinants, normalised */
+  seedsOf(value: number): readonly Float64Array[];
   /**
    * the lowest states that the guesses lead to; those above `ceiling` need not be converged
    *
@@ -38,20 +39,21 @@ export function statesBySpin(
   states: number,
   ceiling: number,
 ): LowestStates {
-  const start = arbitraryNumbers(problem.dimension);
-  const searches = spin.values.map((value) => ({
-    value,
-    ...searchSpin(problem, spin, start, value, states + FURTHER_VECTORS),
-  }));
+  const searches = spin.values.map((value) => {
+    const seeds = seedsOf(value);
+    const start = startWith(seeds, problem.dimension);
+    return { value, seeds, ...searchSpin(problem, spin, start, value, states + FURTHER_VECTORS) };
+  });
+  // none of these lies below the state in its place, so that the last one wanted lies no higher
   const rough = searches.flatMap(({ values }) => Array.from(values)).sort((a, b) => a - b);
   let found: { value: number; vector: Float64Array }[] = [];
   let iterations = searches.reduce((sum, { products }) => sum + products, 0);
   let termination: LowestStates['termination'] = { kind: 'converged' };
-  for (const { value, ...search } of searches) {
-    const highest = Math.min(ceiling, (found[states - 1] ?? { value: rough[states - 1] ?? ceiling }).value);
+  for (const { value, seeds, ...search } of searches) {
+    const highest = Math.min(ceiling, rough[states - 1] ?? ceiling, found[states - 1]?.value ?? ceiling);
     if (search.lowerBound > highest + DEGENERACY_TOLERANCE) continue;
     const roots = Math.min(states, search.vectors.length);
-    const ofSpin = solve([...search.vectors, ...seedsOf(value)], roots, highest, (direction) =>
+    const ofSpin = solve([...search.vectors, ...seeds], roots, highest, (direction) =>
       projectOnSpin(spin, direction, value),
     );
     iterations += ofSpin.iterations;
@@ -69,4 +71,13 @@ export function statesBySpin(
     iterations,
     termination,
   };
+}
+
+/** An arbitrary vector of unit length, and every seed beside it. */
+function startWith(seeds: readonly Float64Array[], dimension: number): Float64Array {
+  const arbitrary = arbitraryNumbers(dimension);
+  const length = Math.sqrt(dot(arbitrary, arbitrary));
+  const start = arbitrary.map((element) => element / length);
+  for (const seed of seeds) addScaledInto(start, 1, seed);
+  return start;
 }

@@ -1,3 +1,4 @@
+import { SMALLEST_WEIGHT } from '../linear-algebra/davidson';
 import { addScaledInto, dot } from '../linear-algebra/dense';
 import { symmetricEigen } from '../linear-algebra/symmetric-eigen';
 
@@ -15,7 +16,10 @@ export interface SpinSearch {
   readonly vectors: readonly Float64Array[];
   /** their energies, rising, hartree: none lies below that of the state in its place */
   readonly values: Float64Array;
-  /** below the lowest state of the spin, by all that the search has shown, hartree; Infinity where there is none */
+  /**
+   * below the lowest state of the spin, as far as the lowest vector holds `SMALLEST_WEIGHT` of it, hartree; Infinity where
+   * there is none
+   */
   readonly lowerBound: number;
   /** products with H */
   readonly products: number;
@@ -23,10 +27,12 @@ export interface SpinSearch {
 
 /** Steps, at most: they bring out what lies a hundredth of the width of H below the rest. */
 const MOST_STEPS = 60;
-/** ‖r‖ of the lowest vector, hartree, at which it tells enough; its energy can still fall by about ‖r‖² over a gap. */
+/** … and at least: before, the start's chance share of higher states can pass for the lowest. */
+const FEWEST_STEPS = 24;
+/** A step this short, hartree, has nowhere left to go. */
+const SHORTEST_STEP = 1e-8;
+/** ‖r‖ of the lowest vector, hartree, at which it tells enough. */
 const ROUGH_RESIDUAL = 0.03;
-/** … of this many hartree, or less where states crowd. */
-const SMALLEST_GAP = 0.03;
 /** A vector that loses this much of its square in a projection has nothing of that spin. */
 const NOTHING_LEFT = 1e-16;
 
@@ -38,7 +44,7 @@ const NOTHING_LEFT = 1e-16;
  *
  * Source: C. Lanczos, J. Res. Natl. Bur. Stand. 45, 255 (1950); here with full orthogonalisation.
  *
- * @param start - arbitrary, of the space's length
+ * @param start - arbitrary, of the space's length; better with a share of what is known of the lowest states
  * @param value - S(S + 1), one of `spin.values`
  * @param count - rough vectors wanted
  */
@@ -69,17 +75,21 @@ export function searchSpin(
     apply(last, next);
     diagonal.push(dot(last, next));
     // twice: once leaves what rounding has spared
-    for (let pass = 0; pass < 2; pass++)
+    for (let pass = 0; pass < 2; pass++) {
       for (const vector of basis) addScaledInto(next, -dot(vector, next), vector);
+    }
+    // last, as what rounding has left of other spins in the basis comes back with it, and would grow from step to step
+    projectOnSpin(spin, next, value);
     const length = Math.sqrt(dot(next, next));
     const size = basis.length;
     const { values, vectors } = symmetricEigen(tridiagonal(diagonal, beside), size);
     const residual = length * Math.abs(vectors[(size - 1) * size]);
-    if (residual < ROUGH_RESIDUAL || size === MOST_STEPS) {
+    const isEnough = size >= FEWEST_STEPS && residual < ROUGH_RESIDUAL;
+    if (isEnough || length < SHORTEST_STEP || size === MOST_STEPS) {
       return {
         vectors: Array.from({ length: Math.min(count, size) }, (_, k) => combine(basis, vectors, k)),
         values: values.slice(0, count),
-        lowerBound: values[0] - residual ** 2 / SMALLEST_GAP,
+        lowerBound: values[0] - residual / Math.sqrt(SMALLEST_WEIGHT),
         products: size,
       };
     }

@@ -35,7 +35,7 @@ export interface DavidsonResult {
 /** Roots this close to the last wanted one, in the matrix's unit, are converged along with it. */
 export const DEGENERACY_TOLERANCE = 1e-6;
 /** What a guard that lies above a missed root is taken to hold of it, at least. */
-const SMALLEST_WEIGHT = 0.05;
+export const SMALLEST_WEIGHT = 0.05;
 /** A value may come down by so many times what second order says. */
 const ESTIMATE_FACTOR = 2;
 /** Guards improved in one iteration, lowest first: all at once would leave no room between two collapses. */

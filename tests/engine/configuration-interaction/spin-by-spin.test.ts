@@ -39,4 +39,32 @@ describe('states of a strongly mixed space, spin by spin', () => {
     expect((quintet - singlet) / exchange / 6).toBeCloseTo(1, 2);
     expect((septet - singlet) / exchange / 12).toBeCloseTo(1, 2);
   });
+
+  it.each([
+    ['N', 'O', 2, 2.4],
+    ['B', 'F', 1, 3.2],
+  ])(
+    'identity: %s–%s, multiplicity %i, at %d Å: of four states the lowest two are those of two',
+    (one, other, multiplicity, distance) => {
+      const of = (states: number) => {
+        const { molecule, ...rest } = study([atom(one), atom(other, 0, 0, distance)], { unit: 'angstrom' });
+        const request: Study = {
+          ...rest,
+          molecule: { ...molecule, multiplicity },
+          levels: [multiplicity === 1 ? 'RHF' : 'ROHF', 'FCI'],
+          states,
+          frozenCore: true,
+        };
+        const result = correlated(computePoint(prepare(request), null).result, 'FCI');
+        expect(result.converged).toBe(true);
+        return (result.states ?? []).map(({ energy }) => energy);
+      };
+      const two = of(2);
+      of(4)
+        .slice(0, 2)
+        .forEach((energy, k) => {
+          expect(Math.abs(energy - two[k])).toBeLessThan(1e-9);
+        });
+    },
+  );
 });
