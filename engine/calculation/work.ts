@@ -6,6 +6,8 @@ import {
   isTwoElectrons,
   PROBES,
 } from '../configuration-interaction/size';
+import { findSymmetry } from '../symmetry/point-group';
+import { POINT_GROUPS } from '../symmetry/point-groups';
 import type { Level } from './levels';
 import type { PreparedStudy } from './prepare-study';
 
@@ -42,6 +44,7 @@ const PRODUCT = 2_000_000;
 const TRANSFORMATION = 20_000_000;
 const LEVEL = 2000;
 const LEVEL_PER_DETERMINANT = 20;
+const PER_DETERMINANT = 0.1;
 
 /**
  * What a multiplication in a product over amplitudes takes, in connections between determinants: of these a kernel sums
@@ -54,6 +57,8 @@ const FIELD_BUILDS = 45;
 const FIELDS = { RHF: 1, ROHF: 2, UHF: 3 } as const;
 /** Of the eigensolver. */
 const ITERATIONS = 12;
+/** Products with guards, for each state. */
+const GUARDS = 2;
 /** Determinants of the model space that starts the eigensolver. */
 const MODEL_SPACE = 300;
 /** Of a search for scale factors. */
@@ -172,15 +177,31 @@ function levelWork(prepared: PreparedStudy, level: Level): Work {
       const spinsDiffer = study.orbitals === 'unrestricted';
       const elements = elementsOfProduct(active, [alpha, beta], level.maximumRank, spinsDiffer);
       const product = elements + PRODUCT;
+      const isByLists =
+        !isTwoElectrons(alpha, beta, level.maximumRank, spinsDiffer) &&
+        !goesByAmplitudes(active, alpha, beta, level.maximumRank, spinsDiffer);
       return {
         ...NONE,
         modelSpace: model ** 2 + model ** 3 / 100,
-        products: (determinants <= MODEL_SPACE ? 0 : vectors) * product,
+        products: (determinants <= MODEL_SPACE ? 0 : isByLists ? countVectors(prepared) : vectors) * product,
         // vectors are combined and made orthogonal, states described
-        rest: study.states * (determinants + Math.min(LEVEL, LEVEL_PER_DETERMINANT * determinants)),
+        rest:
+          study.states *
+          (PER_DETERMINANT * determinants + Math.min(LEVEL, LEVEL_PER_DETERMINANT * determinants)),
       };
     }
   }
+}
+
+/**
+ * Products with vectors of all determinants, or what stands for so many: one symmetry is iterated in, and of the others
+ * a few vectors show that they hold nothing lower.
+ */
+function countVectors({ study, coordinates, moleculeAt }: PreparedStudy): number {
+  const { pointGroup } = findSymmetry(moleculeAt(coordinates[0]));
+  const symmetries = study.orbitals === 'unrestricted' ? 1 : POINT_GROUPS[pointGroup].irreps.length;
+  const looks = (study.states + PROBES) * (symmetries - 1);
+  return (PROBES + (ITERATIONS + GUARDS) * study.states + looks) / symmetries;
 }
 
 /** What one product with H takes, in multiplications of a list. */
