@@ -42,6 +42,11 @@ const ESTIMATE_FACTOR = 2;
 const GUARDS_AT_ONCE = 4;
 /** Stagnated: so many iterations without a new lowest residual or sum of the wanted roots. */
 const PATIENCE = 30;
+/**
+ * After so many of them the residual itself is the new direction: M − θ is indefinite where M has values below θ, and
+ * (M − θ)⁻¹r may then have nothing of r and lead nowhere.
+ */
+const STEPS_TO_DESCENT = 3;
 /** Sums of values that differ by less than this fraction are equal. */
 const ROUNDING = 1e-12;
 
@@ -136,9 +141,13 @@ export function lowestEigenpairs(problem: DavidsonProblem, options: DavidsonOpti
     // where vectors are few, what the roots change by is worth more than directions for all of them at once
     unfinished = unfinished.slice(0, Math.max(1, Math.floor((maximumVectors - wanted) / 2)));
     room = unfinished.length;
+    const isDescent = withoutProgress > 0 && withoutProgress % STEPS_TO_DESCENT === 0;
     let isExtended = false;
     for (const k of unfinished.slice(0, maximumVectors - subspace.size)) {
-      if (subspace.correct(k, Math.min(subspace.values[k], limitOf(k)))) isExtended = true;
+      const isNew = isDescent
+        ? subspace.descend(k)
+        : subspace.correct(k, Math.min(subspace.values[k], limitOf(k)));
+      if (isNew) isExtended = true;
     }
     if (!isExtended || withoutProgress >= PATIENCE) {
       return finish({ kind: 'stagnated', iterationsWithoutProgress: withoutProgress });

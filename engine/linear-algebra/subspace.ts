@@ -141,7 +141,7 @@ export class Subspace {
       kept.forEach((k, column) => {
         chosen[i * count + column] = this.#coefficients[i * columns + k];
       });
-      changes.forEach((change, c) => {
+      changes.forEach(({ change }, c) => {
         chosen[i * count + kept.length + c] = change[i];
       });
     }
@@ -151,20 +151,31 @@ export class Subspace {
     this.#squared = congruence(this.#squared, chosen, columns, count);
     this.#groups = [
       ...kept.map((k) => this.#groupOfValue[k]),
-      ...changes.map((_, k) => this.#groupOfValue[k]),
+      ...changes.map(({ root }) => this.#groupOfValue[root]),
     ];
     this.#coefficients = new Float64Array(0);
     this.#columns = 0;
     this.diagonalise();
   }
 
-  /** Over the basis: the lowest eigenvectors of the diagonalisation before, less what lies in those kept. */
-  #changesOf(wanted: number, kept: readonly number[], most: number): Float64Array[] {
+  /** Over the basis: the lowest eigenvectors of the diagonalisation before, less what lies in those kept; the least converged first. */
+  #changesOf(
+    wanted: number,
+    kept: readonly number[],
+    most: number,
+  ): { root: number; change: Float64Array }[] {
     const columns = this.#columns;
     const { coefficients, columns: before } = this.#before!;
-    const changes: Float64Array[] = [];
+    const changes: { root: number; change: Float64Array }[] = [];
     const isKept = new Set(kept);
-    for (let k = 0; k < Math.min(wanted, before) && changes.length < most; k++) {
+    // roots that are done change by no more than rounding, and must not take the places of others
+    const squares = Array.from(
+      { length: Math.min(wanted, before) },
+      (_, k) => this.#residualSquare(k).estimate,
+    );
+    const roots = Array.from(squares.keys()).sort((a, b) => squares[b] - squares[a]);
+    for (const k of roots) {
+      if (changes.length >= most) break;
       const old = Float64Array.from({ length: columns }, (_, i) =>
         i < before ? coefficients[i * before + k] : 0,
       );
@@ -174,8 +185,8 @@ export class Subspace {
       );
       const change = multiply(this.#coefficients, part, columns, columns, 1);
       const block = new VectorBlock(columns);
-      for (const other of changes) block.append().set(other);
-      if (block.orthonormalise(change, SMALLEST_CHANGE)) changes.push(change);
+      for (const other of changes) block.append().set(other.change);
+      if (block.orthonormalise(change, SMALLEST_CHANGE)) changes.push({ root: k, change });
     }
     return changes;
   }
@@ -199,9 +210,14 @@ export class Subspace {
 
   /** Length of the residual of eigenvector k, without forming it as long as it is well above rounding: ‖Ax‖² − θ². */
   residualNorm(k: number): number {
-    const [square] = congruence(this.#squared, this.#column(k), this.#columns, 1);
-    const estimate = square - this.values[k] ** 2;
+    const { square, estimate } = this.#residualSquare(k);
     return estimate > ROUNDED_SQUARE * square ? Math.sqrt(estimate) : this.#formResidual(k);
+  }
+
+  /** ‖Ax‖² of eigenvector k, and ‖Ax‖² − θ², whose rounding errors are those of the former. */
+  #residualSquare(k: number): { square: number; estimate: number } {
+    const [square] = congruence(this.#squared, this.#column(k), this.#columns, 1);
+    return { square, estimate: square - this.values[k] ** 2 };
   }
 
   /** Leaves the residual of eigenvector k in the spare product, unless it stands there; returns its length. */
@@ -243,6 +259,13 @@ export class Subspace {
   /** Extends the basis by the correction of eigenvector k; false if that brought nothing new. */
   correct(k: number, shift: number): boolean {
     this.formCorrection(k, shift);
+    return this.#extend(this.#groupOfValue[k]);
+  }
+
+  /** Extends the basis by the residual of eigenvector k; false if that brought nothing new. */
+  descend(k: number): boolean {
+    this.#formResidual(k);
+    this.#basis.spare().set(this.#products.spare());
     return this.#extend(this.#groupOfValue[k]);
   }
 
