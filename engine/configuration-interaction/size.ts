@@ -44,9 +44,11 @@ export function basisVectorsWithin(vectors: number, states: number, dimension: n
   return count;
 }
 
-/** Vectors that the eigensolver holds with so many basis vectors, fewer than are of use. */
-function fewVectorsHeld(basisVectors: number, states: number): number {
-  return Math.max(davidsonVectorCount(basisVectors), states + davidsonVectorCount(GUARD_BASIS));
+/** Vectors that the eigensolver holds at most; `basisVectors` where they are fewer than are of use. */
+export function vectorsHeld(states: number, dimension: number, basisVectors: number | undefined): number {
+  return basisVectors === undefined
+    ? states + davidsonVectorCount(basisVectorLimit(states, dimension))
+    : Math.max(davidsonVectorCount(basisVectors), states + davidsonVectorCount(GUARD_BASIS));
 }
 
 /**
@@ -163,7 +165,7 @@ export function configurationInteractionBytes(
   const useful = lists + 8 * (Math.max(...numbers) + WORKING_VECTORS * determinants);
   if (useful <= memoryLimit) return useful;
   const vectors = (memoryLimit - lists) / (8 * determinants) - WORKING_VECTORS;
-  const held = fewVectorsHeld(basisVectorsWithin(vectors, states, determinants) ?? 0, states);
+  const held = vectorsHeld(states, determinants, basisVectorsWithin(vectors, states, determinants));
   return Math.min(useful, lists + 8 * (held + WORKING_VECTORS) * determinants);
 }
 

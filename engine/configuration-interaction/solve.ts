@@ -33,6 +33,7 @@ import {
   configurationInteractionBytes,
   countDeterminants,
   listBytes,
+  vectorsHeld,
   WORKING_VECTORS,
 } from './size';
 import type { SpinOperator } from './spin-search';
@@ -138,9 +139,14 @@ function solve(
     };
   };
   const longest = Math.max(...product.sectors.map(({ sector }) => sector.dimension));
+  const basisVectors = basisVectorsWithin(
+    vectorsWithin(integrals, settings, longest),
+    settings.states,
+    longest,
+  );
   const algebra =
     kernelForm() === 'fast' && longest >= LONG_VECTORS
-      ? new KernelVectors(scratchMemory(), longest)
+      ? new KernelVectors(scratchMemory(), longest, vectorsHeld(settings.states, longest, basisVectors))
       : plainVectors;
   const found = findLowestStates(
     {
@@ -167,7 +173,7 @@ function solve(
       ...settings,
       stage: 'configuration interaction',
       algebra,
-      basisVectors: basisVectorsWithin(vectorsWithin(integrals, settings, longest), settings.states, longest),
+      basisVectors,
     },
   );
 

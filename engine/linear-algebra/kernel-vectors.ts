@@ -12,6 +12,11 @@ import { plainVectors, type VectorAlgebra } from './vector-algebra';
 /** From here on a pass over ten vectors takes a millisecond, and threads are worth waking for it. */
 const LONG = 200_000;
 
+/** Of a kernel memory, what vectors may take; the rest is for all others that work in it. */
+const ROOM_BYTES = 3.25 * 2 ** 30;
+/** Vectors that a product copies into the memory where they stand outside. */
+const COPIES = 2;
+
 /**
  * The same by the kernels of engine/kernels/assembly/vector-algebra.ts, long vectors shared among threads; results
  * do not depend on who takes part. The vectors stand in a kernel memory as long as they fit, and stay there until the
@@ -22,18 +27,34 @@ export class KernelVectors implements VectorAlgebra {
   readonly #addresses = new Map<Float64Array, number>();
   readonly #free: { readonly address: number; readonly view: Float64Array }[] = [];
 
-  /** @param longest - length of the longest vector that will be taken */
+  /** vectors that may still come into the memory */
+  #left: number;
+
+  /**
+   * @param longest - length of the longest vector that will be taken
+   * @param expected - vectors that will be held at most; if they do not all fit, some stand outside
+   */
   constructor(
     private readonly memory: KernelMemory,
     private readonly longest: number,
-  ) {}
+    expected: number,
+  ) {
+    const fitting = Math.floor(ROOM_BYTES / (8 * longest));
+    this.#left = expected <= fitting ? fitting : fitting - COPIES;
+  }
 
   take(dimension: number): Float64Array {
-    const block = this.#free.pop() ?? this.memory.float64IfThereIsRoom(this.longest);
+    const block = this.#free.pop() ?? this.#takeBlock();
     if (!block) return plainVectors.take(dimension);
     const vector = block.view.subarray(0, dimension);
     this.#addresses.set(vector, block.address);
     return vector;
+  }
+
+  #takeBlock() {
+    if (this.#left <= 0) return undefined;
+    this.#left--;
+    return this.memory.float64IfThereIsRoom(this.longest);
   }
 
   giveBack(vector: Float64Array): void {

@@ -62,7 +62,7 @@ function differences(left: readonly Float64Array[], right: readonly Float64Array
 
 describe('KernelVectors', () => {
   it('independent: combinations, scalar products and rotations are those of plain TypeScript, for any lengths and counts', () => {
-    const kernels = new KernelVectors(new KernelMemory(), 33001);
+    const kernels = new KernelVectors(new KernelMemory(), 33001, 11);
     fc.assert(
       fc.property(sizes, ({ dimension, count, own, seed }) => {
         const fast = results(kernels, dimension, count, own, seed);
@@ -75,7 +75,7 @@ describe('KernelVectors', () => {
 
   it('identity: vectors given back are taken again, and one from elsewhere is handled too', () => {
     const memory = new KernelMemory();
-    const kernels = new KernelVectors(memory, 100);
+    const kernels = new KernelVectors(memory, 100, 3);
     const first = takeRandom(kernels, 100, 1);
     const outside = randomArray(100, seededRandom(2));
     const expected = plainVectors.dots([first.slice()], outside);
@@ -87,9 +87,21 @@ describe('KernelVectors', () => {
     expect(kernels.take(100).byteOffset).not.toBe(place);
   });
 
+  it('identity: long vectors beyond what fits stand outside, and leave room for two copies of them', () => {
+    const memory = new KernelMemory();
+    const gibibyte = 2 ** 27;
+    const kernels = new KernelVectors(memory, gibibyte, 4);
+    const vectors = [1, 2].map((seed) => takeRandom(kernels, 1000, seed));
+    expect(vectors.map((vector) => memory.addressOf(vector) !== undefined)).toEqual([true, false]);
+    const expected = plainVectors.dots([vectors[1]], vectors[0].slice());
+    expect(kernels.dots([vectors[1]], vectors[0])).toEqual(expected);
+    const all = new KernelVectors(new KernelMemory(), gibibyte, 3);
+    expect([1, 2, 3].every(() => all.take(10).buffer instanceof SharedArrayBuffer)).toBe(true);
+  });
+
   it('independent: work shared among three threads gives the same, to the last bit', async () => {
     const dimension = 220_001;
-    const alone = results(new KernelVectors(new KernelMemory(), dimension), dimension, 3, -0.3, 5);
+    const alone = results(new KernelVectors(new KernelMemory(), dimension, 5), dimension, 3, -0.3, 5);
     const helpers: Worker[] = [];
     let shared: SharedArrayBuffer | undefined;
     acceptHelpers({
@@ -102,7 +114,7 @@ describe('KernelVectors', () => {
       },
     });
     try {
-      const together = new KernelVectors(new KernelMemory(), dimension);
+      const together = new KernelVectors(new KernelMemory(), dimension, 5);
       expect(differences(results(together, dimension, 3, -0.3, 5), alone)).toBe(0);
       allowHelpers(shared!, 2);
       await Promise.all(helpers.map((helper) => new Promise((resolve) => helper.once('online', resolve))));
