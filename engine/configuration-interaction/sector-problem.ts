@@ -16,7 +16,10 @@ export interface SectorProblem {
   restoreSymmetry?(direction: Float64Array): void;
   /** parts of a vector that H does not join, as far as the iteration must keep them apart; default: the whole */
   partsOf?(vector: Float64Array): readonly Float64Array[];
-  /** absent where H joins vectors of different spin, or the states have none to tell */
+  /**
+   * absent where H joins vectors of different spin, the states have none to tell, or the sectors are those of all
+   * symmetries that they can have
+   */
   readonly spin?: SpinOperator;
   elementsAmong(places: Int32Array): ModelElements;
 }

@@ -27,7 +27,7 @@ import { findLowestStates } from './lowest-states';
 import { hamiltonianElement, spinSquaredElement } from './matrix-elements';
 import type { ModelElements } from './model-space';
 import { spinSummed } from './one-particle-density';
-import { isWholeSpace, placesInSpace, putSector, type Sector, takeSector } from './sector';
+import { isWholeSpace, placesInSpace, putSector, takeSector } from './sector';
 import {
   basisVectorsWithin,
   configurationInteractionBytes,
@@ -156,7 +156,9 @@ function solve(
         apply: ofSector.apply,
         restoreSymmetry: ofSector.restoreSpinFlip,
         partsOf: ofSector.spinFlipParts,
-        ...(closesUnderSpin(settings, beta) && { spin: spinOperator(space, ofSector.sector) }),
+        // where the orbitals show the symmetry of the states, guesses of every representation are enough
+        ...(isWholeSpace(ofSector.sector) &&
+          closesUnderSpin(settings, beta) && { spin: spinOperator(space) }),
         elementsAmong: (places) => elementsAmong(places, ofSector),
         ...(!isWholeSpace(ofSector.sector) && {
           widen: (vector) => {
@@ -233,21 +235,15 @@ function closesUnderSpin(
   return !beta && (alphaElectrons === betaElectrons || maximumRank >= alphaElectrons + betaElectrons);
 }
 
-/** S² on the vectors of a sector, and the values that it can have with so many electrons and orbitals. */
-function spinOperator(space: DeterminantSpace, sector: Sector): SpinOperator {
+/** S², and the values that it can have with so many electrons and orbitals. */
+function spinOperator(space: DeterminantSpace): SpinOperator {
   const { alpha, beta, orbitalCount } = space;
   const electrons = alpha.electrons + beta.electrons;
   const lowest = Math.abs(alpha.electrons - beta.electrons) / 2;
   const highest = Math.min(electrons, 2 * orbitalCount - electrons) / 2;
   return {
     values: Array.from({ length: highest - lowest + 1 }, (_, k) => (lowest + k) * (lowest + k + 1)),
-    apply: (vector, product) => {
-      const whole = new Float64Array(space.dimension);
-      const applied = new Float64Array(space.dimension);
-      putSector(sector, vector, whole);
-      applySpin(space, whole, applied);
-      product.set(takeSector(sector, applied));
-    },
+    apply: (vector, product) => applySpin(space, vector, product),
   };
 }
 

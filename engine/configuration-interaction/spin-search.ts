@@ -33,6 +33,8 @@ const FEWEST_STEPS = 24;
 const SHORTEST_STEP = 1e-8;
 /** ‖r‖ of the lowest vector, hartree, at which it tells enough. */
 const ROUGH_RESIDUAL = 0.03;
+/** What a vector may have of other spins, of its own length. */
+const PURE = 1e-11;
 /** A vector that loses this much of its square in a projection has nothing of that spin. */
 const NOTHING_LEFT = 1e-16;
 
@@ -101,11 +103,24 @@ export function searchSpin(
 /** Leaves of a vector the part of one spin, in place: S² minus the value of every other spin leaves nothing of those. */
 export function projectOnSpin({ values, apply }: SpinOperator, vector: Float64Array, value: number): void {
   const product = new Float64Array(vector.length);
-  for (const other of values) {
-    if (other === value) continue;
-    apply(vector, product);
-    for (let i = 0; i < vector.length; i++) vector[i] = (product[i] - other * vector[i]) / (value - other);
+  apply(vector, product);
+  if (isEigenvector(vector, product, value)) return;
+  values
+    .filter((other) => other !== value)
+    .forEach((other, k) => {
+      if (k > 0) apply(vector, product);
+      for (let i = 0; i < vector.length; i++) vector[i] = (product[i] - other * vector[i]) / (value - other);
+    });
+}
+
+function isEigenvector(vector: Float64Array, product: Float64Array, value: number): boolean {
+  let apart = 0;
+  let square = 0;
+  for (let i = 0; i < vector.length; i++) {
+    apart += (product[i] - value * vector[i]) ** 2;
+    square += vector[i] ** 2;
   }
+  return apart <= PURE ** 2 * square;
 }
 
 function tridiagonal(diagonal: readonly number[], beside: readonly number[]): Float64Array {
