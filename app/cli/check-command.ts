@@ -3,7 +3,7 @@ import { affordableWorkers, programBytes } from '../calculation/memory';
 import { readStudyFile } from '../calculation/read-study-file';
 import { machineSpeeds } from '../calculation/speeds';
 import { studySentence } from '../study/sentence';
-import { wholeStudy } from '../study/whole-study';
+import { programSeconds } from '../study/whole-study';
 import type { Invocation } from './arguments';
 import { EXIT, type ExitCode } from './exit-codes';
 import type { Terminal } from './terminal';
@@ -43,7 +43,7 @@ export function explanationText(explanation: StudyExplanation, cores: number): s
     ['points', grouped(points)],
   ];
   const lanes = Math.min(cores, points);
-  const total = wholeStudy(explanation).seconds / lanes;
+  const total = programSeconds(explanation, lanes);
   const memory = programBytes(explanation, lanes);
   return [
     alignedTable(facts),

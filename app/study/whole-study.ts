@@ -18,3 +18,11 @@ export function wholeStudy(explanation: StudyExplanation): WholeStudy {
     bytes: Math.max(0, ...bases.flatMap(({ levels }) => levels.map(({ bytes }) => bytes))),
   };
 }
+
+/** Until a program runs and its code is compiled, seconds; fitted to the samples (tests/benchmarks/predictions.ts). */
+const START_SECONDS = 1;
+
+/** What `farwell run` takes by the clock on so many cores, seconds. */
+export function programSeconds(explanation: StudyExplanation, cores: number): number {
+  return START_SECONDS + wholeStudy(explanation).seconds / cores;
+}

@@ -6,6 +6,7 @@ import { explainStudy, prepareStudy, type Study } from '#engine';
 import { programBytes } from '../../app/calculation/memory';
 import { measureSpeeds } from '../../app/calculation/speeds';
 import { alignedTable } from '../../app/cli/wording';
+import { programSeconds } from '../../app/study/whole-study';
 
 const SAMPLES = 'sample-molecules';
 
@@ -21,7 +22,7 @@ export function comparePredictions(pattern: string): string {
       const explanation = explainStudy(preparation.prepared, speeds);
       const workers = Math.min(availableParallelism(), explanation.points);
       const predicted = {
-        seconds: (explanation.pointSeconds * explanation.points + explanation.afterwardsSeconds) / workers,
+        seconds: programSeconds(explanation, workers),
         megabytes: programBytes(explanation, workers) / 1e6,
       };
       const real = run(path);

@@ -23,6 +23,24 @@ describe('countWork', () => {
     expect(alone.map(({ transformation }) => transformation > 0)).toEqual([false, true, true, true]);
   });
 
+  it('identity: a point of a scan takes the more, the more bonds it breaks at once', () => {
+    const modelOf = (one: string, other: string, isScan: boolean) => {
+      const scan = { coordinate: { bonds: [[0, 1]] as const }, from: 1.8, to: 6, count: 9 };
+      const atoms = [atom(one), atom(other, 0, 0, 2.2)];
+      return countWork(prepare({ ...study(atoms, { levels: ['RHF', 'FCI'] }), ...(isScan && { scan }) }))
+        .together.products;
+    };
+    const factors = [
+      ['F', 'H'],
+      ['C', 'O'],
+      ['N', 'N'],
+    ].map(([one, other]) => modelOf(one!, other!, true) / modelOf(one!, other!, false));
+    expect(factors[1]).toBeCloseTo(2, 12);
+    expect(factors[2]).toBeCloseTo(3, 12);
+    expect(factors[0]).toBeGreaterThan(1);
+    expect(factors[0]).toBeLessThan(factors[1]!);
+  });
+
   it('identity: a larger basis, higher rank or more states are never less work', () => {
     const small = workOf();
     for (const more of [
