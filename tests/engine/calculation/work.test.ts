@@ -28,7 +28,7 @@ describe('countWork', () => {
       const scan = { coordinate: { bonds: [[0, 1]] as const }, from: 1.8, to: 6, count: 9 };
       const atoms = [atom(one), atom(other, 0, 0, 2.2)];
       return countWork(prepare({ ...study(atoms, { levels: ['RHF', 'FCI'] }), ...(isScan && { scan }) }))
-        .together.products;
+        .together.modelSpace;
     };
     const factors = [
       ['F', 'H'],
