@@ -1,46 +1,17 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { prepareClosedShellProduct } from '../../../engine/configuration-interaction/closed-shell-product';
-import { buildDeterminantSpace } from '../../../engine/configuration-interaction/determinant-space';
-import { preparePlainProduct } from '../../../engine/configuration-interaction/plain-product';
-import { buildSectors, putSector, takeSector } from '../../../engine/configuration-interaction/sector';
-import { makeEvenOrOdd } from '../../../engine/configuration-interaction/spin-flip';
-import { scratchMemory } from '../../../engine/kernels/kernel-memory';
-import { randomArray, seededRandom } from '../../support/random';
+import { productDeviation } from '../../support/product-deviation';
 import { randomOrbitalIntegrals } from '../../support/random-orbital-integrals';
 
-/** Largest deviation from the plain product over all sectors, relative to the largest element. */
+/** Of `pairs` electrons of each spin in n orbitals, up to double excitations. */
 function deviation(
   { n, pairs, seed }: { n: number; pairs: number; seed: number },
   species: readonly number[] | undefined,
   parity: number,
 ): number {
   const integrals = randomOrbitalIntegrals(n, seed, { species: species ?? [] });
-  const space = buildDeterminantSpace(n, pairs, pairs, 2);
-  const sectors = buildSectors(space, species);
-  const plain = preparePlainProduct(space, integrals);
-  const memory = scratchMemory();
-  return memory.scope(() => {
-    const dense = prepareClosedShellProduct(sectors, integrals, species, memory);
-    let largest = 0;
-    let scale = 0;
-    for (const sector of sectors) {
-      const vector = randomArray(sector.dimension, seededRandom(sector.irrep + 1));
-      if (parity !== 0) makeEvenOrOdd(sector, vector, parity);
-      const product = new Float64Array(sector.dimension).fill(Number.NaN);
-      dense(sector, vector, product, parity);
-      const whole = new Float64Array(space.dimension);
-      putSector(sector, vector, whole);
-      const ofWhole = new Float64Array(space.dimension);
-      plain(whole, ofWhole, 0);
-      takeSector(sector, ofWhole).forEach((value, i) => {
-        // not a number must not pass
-        if (!(Math.abs(product[i] - value) <= largest)) largest = Math.abs(product[i] - value);
-        scale = Math.max(scale, Math.abs(value));
-      });
-    }
-    return scale === 0 ? largest : largest / scale;
-  });
+  return productDeviation(integrals, [pairs, pairs, 2], species, parity, prepareClosedShellProduct);
 }
 
 const sizes = fc.integer({ min: 2, max: 8 }).chain((n) =>

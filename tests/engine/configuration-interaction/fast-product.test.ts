@@ -5,51 +5,15 @@ import {
   prepareFastProduct,
   prepareFullProduct,
 } from '../../../engine/configuration-interaction/fast-product';
-import { preparePlainProduct } from '../../../engine/configuration-interaction/plain-product';
-import { buildSectors, putSector, takeSector } from '../../../engine/configuration-interaction/sector';
-import { makeEvenOrOdd } from '../../../engine/configuration-interaction/spin-flip';
+import { buildSectors } from '../../../engine/configuration-interaction/sector';
 import type { OrbitalIntegrals } from '../../../engine/integrals/orbital-integrals';
 import { scratchMemory } from '../../../engine/kernels/kernel-memory';
+import { productDeviation } from '../../support/product-deviation';
 import { randomArray, seededRandom } from '../../support/random';
 import { randomOrbitalIntegrals, randomUnrestrictedIntegrals } from '../../support/random-orbital-integrals';
 
 const fullProduct: typeof prepareFastProduct = ([sector], integrals, _irreps, memory) =>
   prepareFullProduct(sector, integrals, memory);
-
-/** Largest deviation from the plain product over all sectors, relative to the largest element. */
-function deviation(
-  integrals: OrbitalIntegrals,
-  [alpha, beta, rank]: readonly [number, number, number],
-  species: readonly number[] | undefined,
-  parity: number,
-  prepare = prepareFastProduct,
-): number {
-  const space = buildDeterminantSpace(integrals.orbitalCount, alpha, beta, rank);
-  const sectors = buildSectors(space, species);
-  const plain = preparePlainProduct(space, integrals);
-  const memory = scratchMemory();
-  return memory.scope(() => {
-    const fast = prepare(sectors, integrals, species, memory);
-    let largest = 0;
-    let scale = 0;
-    for (const sector of sectors) {
-      const vector = randomArray(sector.dimension, seededRandom(sector.irrep + 1));
-      if (parity !== 0) makeEvenOrOdd(sector, vector, parity);
-      const product = new Float64Array(sector.dimension).fill(Number.NaN);
-      fast(sector, vector, product, parity);
-      const whole = new Float64Array(space.dimension);
-      putSector(sector, vector, whole);
-      const ofWhole = new Float64Array(space.dimension);
-      plain(whole, ofWhole, 0);
-      takeSector(sector, ofWhole).forEach((value, i) => {
-        // not a number must not pass
-        if (!(Math.abs(product[i] - value) <= largest)) largest = Math.abs(product[i] - value);
-        scale = Math.max(scale, Math.abs(value));
-      });
-    }
-    return scale === 0 ? largest : largest / scale;
-  });
-}
 
 const sizes = fc.integer({ min: 1, max: 7 }).chain((n) =>
   fc.record({
@@ -69,7 +33,9 @@ describe('prepareFastProduct', () => {
       fc.property(sizes, ({ n, alpha, beta, rank, species, seed, parity }) => {
         const integrals = randomOrbitalIntegrals(n, seed, { species });
         const kept = alpha === beta ? parity : 0;
-        expect(deviation(integrals, [alpha, beta, rank], species, kept)).toBeLessThan(1e-11);
+        expect(
+          productDeviation(integrals, [alpha, beta, rank], species, kept, prepareFastProduct),
+        ).toBeLessThan(1e-11);
       }),
       { seed: 11, numRuns: 150 },
     );
@@ -79,11 +45,23 @@ describe('prepareFastProduct', () => {
     fc.assert(
       fc.property(sizes, ({ n, alpha, beta, rank, seed, parity }) => {
         const kept = alpha === beta ? parity : 0;
-        expect(deviation(randomOrbitalIntegrals(n, seed), [alpha, beta, rank], undefined, kept)).toBeLessThan(
-          1e-11,
-        );
         expect(
-          deviation(randomUnrestrictedIntegrals(n, seed), [alpha, beta, rank], undefined, 0),
+          productDeviation(
+            randomOrbitalIntegrals(n, seed),
+            [alpha, beta, rank],
+            undefined,
+            kept,
+            prepareFastProduct,
+          ),
+        ).toBeLessThan(1e-11);
+        expect(
+          productDeviation(
+            randomUnrestrictedIntegrals(n, seed),
+            [alpha, beta, rank],
+            undefined,
+            0,
+            prepareFastProduct,
+          ),
         ).toBeLessThan(1e-11);
       }),
       { seed: 12, numRuns: 80 },
@@ -94,8 +72,10 @@ describe('prepareFastProduct', () => {
     for (const parity of [0, 1, -1]) {
       const species = [0, 1, 2, 3, 0, 0, 1, 2, 3];
       const integrals = randomOrbitalIntegrals(9, 5, { species });
-      expect(deviation(integrals, [4, 4, Number.POSITIVE_INFINITY], species, parity)).toBeLessThan(1e-11);
-      expect(deviation(integrals, [4, 4, 4], species, parity)).toBeLessThan(1e-11);
+      expect(
+        productDeviation(integrals, [4, 4, Number.POSITIVE_INFINITY], species, parity, prepareFastProduct),
+      ).toBeLessThan(1e-11);
+      expect(productDeviation(integrals, [4, 4, 4], species, parity, prepareFastProduct)).toBeLessThan(1e-11);
     }
   });
 });
@@ -105,7 +85,7 @@ describe('prepareFullProduct', () => {
     fc.assert(
       fc.property(sizes, ({ n, alpha, beta, seed, parity }) => {
         const of = (integrals: OrbitalIntegrals, kept: number) =>
-          deviation(integrals, [alpha, beta, Number.POSITIVE_INFINITY], undefined, kept, fullProduct);
+          productDeviation(integrals, [alpha, beta, Number.POSITIVE_INFINITY], undefined, kept, fullProduct);
         expect(of(randomOrbitalIntegrals(n, seed), alpha === beta ? parity : 0)).toBeLessThan(1e-11);
         expect(of(randomUnrestrictedIntegrals(n, seed), 0)).toBeLessThan(1e-11);
       }),
@@ -126,7 +106,7 @@ describe('prepareFullProduct', () => {
       const integrals = randomOrbitalIntegrals(n, 6);
       for (const parity of alpha === beta ? [0, 1, -1] : [0]) {
         const size = [alpha, beta, Number.POSITIVE_INFINITY] as const;
-        expect(deviation(integrals, size, undefined, parity, fullProduct)).toBeLessThan(1e-11);
+        expect(productDeviation(integrals, size, undefined, parity, fullProduct)).toBeLessThan(1e-11);
       }
     },
   );
