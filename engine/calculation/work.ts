@@ -26,12 +26,12 @@ export type Speeds = Work;
  * every machine.
  */
 export const NOMINAL_SPEEDS: Speeds = Object.freeze({
-  integrals: 2e-8,
-  fields: 6e-9,
-  transformation: 1.5e-10,
-  modelSpace: 1e-7,
-  products: 3e-10,
-  rest: 2e-5,
+  integrals: 1.4e-8,
+  fields: 1e-8,
+  transformation: 2e-11,
+  modelSpace: 6e-8,
+  products: 2e-10,
+  rest: 8e-6,
 });
 
 /*
