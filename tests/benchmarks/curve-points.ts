@@ -17,9 +17,9 @@ const WARM_UP_SECONDS = 6;
 const NITROGEN = prepare(
   study([atom('N'), atom('N', 0, 0, 2.07)], {
     basis: '6-31G',
-    levels: ['RHF', 'CISD'],
+    levels: ['RHF', 'CISDT'],
     frozenCore: true,
-    scan: { coordinate: { bonds: [[0, 1]] }, from: 1.8, to: 3, count: 24 },
+    scan: { coordinate: { bonds: [[0, 1]] }, from: 1.8, to: 3, count: 20 },
   }),
 );
 
@@ -34,7 +34,7 @@ export async function curvePoints(): Promise<readonly Measurement[]> {
       against: 'the same with plain kernels',
     },
     {
-      name: 'points of N2, 6-31G, RHF + CISD, two workers',
+      name: 'points of N2, 6-31G, RHF + CISDT, two workers',
       ours: two,
       yardstick: one,
       unit: 'points/s',
