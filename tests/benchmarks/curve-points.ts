@@ -1,8 +1,8 @@
 import { computePoint, type PreparedStudy } from '#engine';
-import { runStudy } from '../../app/calculation/run-study';
 import { inForm } from '../support/kernel-forms';
 import { atom, prepare, study } from '../support/studies';
 import { callsPerSecond, type Measurement } from './measure';
+import { secondsOfPoints } from './scan-points';
 
 /** H2 in a minimal basis with every level, as fast as the mouse moves and much faster. */
 const HYDROGEN = prepare(
@@ -13,18 +13,12 @@ const HYDROGEN = prepare(
 );
 /** The compiler goes on improving code as varied as a whole point's for seconds. */
 const WARM_UP_SECONDS = 6;
-/** A point takes long enough that starting threads does not count; the number of points is a multiple of two. */
-const NITROGEN = prepare(
-  study([atom('N'), atom('N', 0, 0, 2.07)], {
-    basis: '6-31G',
-    levels: ['RHF', 'CISDT'],
-    frozenCore: true,
-    scan: { coordinate: { bonds: [[0, 1]] }, from: 1.8, to: 3, count: 20 },
-  }),
-);
+/** Of N2, a multiple of two. */
+const POINTS = 20;
 
 export async function curvePoints(): Promise<readonly Measurement[]> {
-  const [two, one] = [await pointsPerSecond(2), await pointsPerSecond(1)];
+  const rate = async (workers: number) => POINTS / (await secondsOfPoints(POINTS, workers));
+  const [two, one] = [await rate(2), await rate(1)];
   return [
     {
       name: 'points of H2, STO-3G, RHF + CIS + CISD + full CI',
@@ -53,24 +47,4 @@ function pointRate(prepared: PreparedStudy): number {
     1.5,
     WARM_UP_SECONDS,
   );
-}
-
-/** From the first finished point to the last, so that the start of the workers is left out. */
-async function pointsPerSecond(workers: number): Promise<number> {
-  const finished: number[] = [];
-  const done = new AbortController();
-  await runStudy(
-    { prepared: NITROGEN },
-    {
-      workers,
-      signal: done.signal,
-      onPoint: () => {
-        finished.push(performance.now());
-        // what comes after the points is not asked for
-        if (finished.length === NITROGEN.coordinates.length) done.abort();
-      },
-    },
-  );
-  const seconds = ((finished.at(-1) ?? Number.NaN) - finished[workers - 1]) / 1000;
-  return (finished.length - workers) / seconds;
 }

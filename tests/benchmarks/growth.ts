@@ -1,7 +1,6 @@
 import { mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import type { PreparedStudy } from '#engine';
-import { runStudy } from '../../app/calculation/run-study';
 import { drawFigure, renderSvg } from '../../app/report/render-figure';
 import { placeBasis } from '../../engine/basis/place-basis';
 import { buildDeterminantSpace } from '../../engine/configuration-interaction/determinant-space';
@@ -13,6 +12,7 @@ import { atom, prepare, study } from '../support/studies';
 import { connections } from './connections';
 import { GROWTH_FIGURE_MILLIMETRES, growthFigure } from './growth-figure';
 import { fastestCall } from './measure';
+import { secondsOfPoints } from './scan-points';
 
 /** How the time of one kind of work grows with one size. */
 export interface Growth {
@@ -93,7 +93,7 @@ export async function measureGrowth(say: Say): Promise<readonly Growth[]> {
   );
   await measure(
     { work: 'points of a scan, one worker', size: 'points', theoretical: 1, because: 'each by itself' },
-    [4, 8, 16, 32],
+    [4, 8, 16],
     async (points) => ({ size: points, seconds: await secondsOfPoints(points, 1) }),
   );
   await measure(
@@ -112,29 +112,6 @@ export async function measureGrowth(say: Say): Promise<readonly Growth[]> {
 function chain(atoms: number): PreparedStudy {
   const places = Array.from({ length: atoms }, (_, i) => atom('H', 0, 0, 2 * i));
   return prepare(study(places, { basis: '6-31G' }));
-}
-
-async function secondsOfPoints(points: number, workers: number): Promise<number> {
-  const prepared = prepare(
-    study([atom('N'), atom('N', 0, 0, 2.07)], {
-      basis: '6-31G',
-      levels: ['RHF', 'CISD'],
-      frozenCore: true,
-      scan: { coordinate: { bonds: [[0, 1]] }, from: 1.8, to: 3, count: points + workers },
-    }),
-  );
-  const done = new AbortController();
-  const finished: number[] = [];
-  await runStudy(
-    { prepared },
-    {
-      workers,
-      signal: done.signal,
-      onPoint: () => void (finished.push(performance.now()) === points + workers && done.abort()),
-    },
-  );
-  // each worker's first point holds its start
-  return ((finished.at(-1) ?? Number.NaN) - (finished[workers - 1] ?? Number.NaN)) / 1000;
 }
 
 /** Slope of a straight line through ln(seconds) against ln(size), by least squares. */
