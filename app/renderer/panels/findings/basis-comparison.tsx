@@ -32,7 +32,7 @@ export function BasisComparison({ results, ...units }: BasisComparisonProps) {
             {sets.map((set) => (
               <tr key={set.basis.name}>
                 <th scope="row">
-                  {set.basis.name} <span className="hint">{set.basis.functions} functions</span>
+                  {set.basis.name} <span className="hint below">{set.basis.functions} functions</span>
                 </th>
                 <SetCells findings={set.findings[level]} study={study} {...units} />
               </tr>
@@ -80,7 +80,7 @@ function LimitRow({
   const cell = (value: number, uncertainty: number) => (
     <td>
       {formatFixed(toEnergyUnit(value, energyUnit), decimals)}
-      <span className="hint"> {uncertaintyText(uncertainty, energyUnit)}</span>
+      <span className="hint below">{uncertaintyText(uncertainty, energyUnit)}</span>
     </td>
   );
   const where = positionText(study, lengthUnit);
@@ -90,11 +90,14 @@ function LimitRow({
       <th scope="row">limit</th>
       <td>
         {where(equilibriumDistance.value, 6)}
-        <span className="hint"> ± {where(equilibriumDistance.uncertainty, 1)}</span>
+        <span className="hint below">± {where(equilibriumDistance.uncertainty, 1)}</span>
       </td>
       {cell(energy.value, energy.uncertainty)}
       {wellDepth ? cell(wellDepth.value, wellDepth.uncertainty) : <td>–</td>}
-      <td>{wavenumber ? formatFixed(wavenumber.value, 1) : '–'}</td>
+      <td>
+        {wavenumber ? formatFixed(wavenumber.value, 1) : '–'}
+        {wavenumber && <span className="hint below">± {formatFixed(wavenumber.uncertainty, 1)}</span>}
+      </td>
     </tr>
   );
 }
