@@ -8,7 +8,8 @@ export function frozenOrbitalCount(molecule: Molecule): number {
   return molecule.atoms.reduce((sum, atom) => sum + coreOrbitals(atom.nuclearCharge), 0);
 }
 
-function coreOrbitals(nuclearCharge: number): number {
+/** Doubly occupied orbitals of the noble-gas core of an atom. */
+export function coreOrbitals(nuclearCharge: number): number {
   if (nuclearCharge <= 2) return 0;
   return nuclearCharge <= 10 ? 1 : 5;
 }

@@ -8,6 +8,7 @@ import {
 } from '../configuration-interaction/size';
 import { findSymmetry } from '../symmetry/point-group';
 import { POINT_GROUPS } from '../symmetry/point-groups';
+import { coreOrbitals } from './frozen-core';
 import type { Level } from './levels';
 import type { PreparedStudy } from './prepare-study';
 
@@ -212,16 +213,12 @@ function mixingOf({ study, moleculeAt, coordinates }: PreparedStudy): number {
   return Math.max(STRETCHED, ...orders);
 }
 
-/** Unpaired electrons of a main-group atom: by its place between two noble gases. */
+/** Unpaired electrons of an atom outside its core, H to Ar. */
 function valenceOf(atomicNumber: number): number {
-  const before = NOBLE_GASES.filter((noble) => noble < atomicNumber);
-  const outer = atomicNumber - (before.at(-1) ?? 0);
-  // helium's shell has two places, the others' eight
-  if (before.length === 0) return outer % 2;
-  return outer <= 2 ? outer % 2 : outer <= 5 ? outer - 2 : Math.max(0, 8 - outer);
+  const outer = atomicNumber - 2 * coreOrbitals(atomicNumber);
+  if (outer <= 2) return outer % 2;
+  return outer <= 5 ? outer - 2 : 8 - outer;
 }
-
-const NOBLE_GASES = [2, 10, 18, 36];
 
 /**
  * Products with vectors of all determinants, or what stands for so many: one symmetry is iterated in, and of the others
